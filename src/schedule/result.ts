@@ -1,0 +1,197 @@
+/** The published result, `format: "drainwright-result"`, exactly as CONTRACT names it. Plain JSON, lengths in metres. */
+export interface Result {
+  readonly format: 'drainwright-result';
+  readonly version: 1;
+  readonly program: { readonly name: 'drainwright'; readonly version: string };
+  readonly model: ResultModel;
+  /** Set when several files were read as one building: all of them, the first is `model`. */
+  readonly models?: readonly ResultModel[];
+  readonly code: {
+    readonly id: string;
+    readonly title: string;
+    readonly edition: string;
+    readonly unit: string;
+    readonly localTables?: readonly string[];
+  };
+  readonly settings: Readonly<Record<string, unknown>>;
+  readonly counts: ResultCounts;
+  /** By file, then STEP id. */
+  readonly elements: readonly ResultElement[];
+  readonly fixtures: readonly ResultFixture[];
+  readonly pipes: readonly ResultPipe[];
+  readonly batteries: readonly ResultBattery[];
+  readonly joints: { readonly ports: number; readonly geometry: number; readonly inferred: readonly ResultJoint[] };
+  readonly systems: readonly ResultSystem[];
+  /** Errors first, then warnings, then notes; inside by code, then first GlobalId. */
+  readonly findings: readonly ResultFinding[];
+  readonly unresolved: readonly { readonly globalId: string; readonly stepId: number; readonly reason: string }[];
+  readonly caution: string;
+}
+
+export interface ResultModel {
+  readonly file: string;
+  readonly sha256: string;
+  readonly schema: string;
+  readonly lengthUnit: string;
+  readonly remarks?: readonly string[];
+}
+
+export interface ResultCounts {
+  readonly elements: number;
+  readonly pipes: number;
+  readonly fittings: number;
+  readonly fixtures: number;
+  readonly terminals: number;
+  readonly leftOut: Readonly<Record<string, number>>;
+  readonly unresolved: number;
+}
+
+export interface ResultElement {
+  readonly globalId: string;
+  readonly stepId: number;
+  readonly file: string;
+  readonly class: string;
+  readonly use: 'pipe' | 'fitting' | 'fixture' | 'terminal' | 'left-out' | 'unresolved';
+  readonly reason?: string;
+}
+
+/** A connected piece of drainage and where it leaves. */
+export interface ResultSystem {
+  readonly sewerEnd: {
+    readonly at: readonly [number, number, number] | null;
+    readonly pipe: string | null;
+    readonly how: string;
+  };
+  readonly pipes: number;
+  readonly fixtures: number;
+  readonly load: LoadRange;
+}
+
+export interface SizeLabel {
+  readonly label: string;
+  readonly dn: number;
+}
+export interface SizeRange {
+  readonly least: SizeLabel | null;
+  readonly most: SizeLabel | null;
+}
+export interface LoadRange {
+  readonly least: number;
+  readonly most: number;
+}
+
+export interface ResultFixture {
+  readonly globalId: string;
+  readonly stepId: number;
+  readonly name: string | null;
+  readonly kind: string | null;
+  readonly detail: {
+    readonly flush: string | null;
+    readonly style: string | null;
+    readonly heads: number | null;
+    readonly emergency: boolean | null;
+    readonly domestic: boolean | null;
+  };
+  /** Row of the code's fixture table; null when unidentified. */
+  readonly row: string | null;
+  readonly evidence: string;
+  readonly load: LoadRange;
+  readonly trapSize: SizeLabel | null;
+  readonly storey: string | null;
+  readonly waterPath?: readonly string[];
+  readonly airPath?: readonly string[];
+  readonly ventedBy: { readonly how: string; readonly vents: readonly string[]; readonly rule?: string };
+  readonly trap: { readonly at: readonly [number, number, number] | null; readonly how: string };
+  readonly trapArm: {
+    readonly length: number | null;
+    readonly fall: number | null;
+    readonly slope: number | null;
+    readonly turn: number | null;
+    readonly limit: number | null;
+  } | null;
+}
+
+export type Verdict = 'undersized' | 'agrees' | 'oversized' | 'unknown';
+
+export interface PipeState {
+  readonly role: string;
+  readonly also: readonly string[];
+  readonly portion?: 'wet' | 'dry' | 'outlet';
+  readonly storey: string | null;
+  readonly orientation: 'vertical' | 'horizontal' | 'unknown';
+  readonly slope: {
+    readonly value: number | null;
+    readonly ground: 'geometry' | 'property' | 'answer' | 'unknown';
+  } | null;
+  readonly length: number | null;
+  readonly developedLength?: number;
+  readonly next: string | null;
+  readonly load: LoadRange;
+  readonly ventLoad?: LoadRange;
+  readonly servesWater?: readonly string[];
+  readonly servesAir?: readonly string[];
+  readonly modelled: (SizeLabel & { readonly from: string }) | null;
+  readonly required: SizeRange | null;
+  readonly provisional: boolean;
+  readonly verdict: Verdict;
+  /** Of `unknown`, and what settles it. */
+  readonly reason?: string;
+  readonly battery?: string;
+  readonly trail: readonly TrailStep[];
+}
+
+export interface ResultPipe extends PipeState {
+  readonly globalId: string;
+  readonly stepId: number;
+  readonly name: string | null;
+  readonly system: string | null;
+  readonly sections?: readonly (PipeState & { readonly from: number; readonly to: number })[];
+}
+
+export interface TrailStep {
+  readonly rule: string;
+  readonly clause: string;
+  readonly table: string | null;
+  readonly row: string | null;
+  readonly facts: Readonly<Record<string, unknown>>;
+  /** null: no size of the table holds it. */
+  readonly asks: SizeLabel | null;
+  readonly governs: boolean;
+  readonly trust: string;
+}
+
+export interface ResultBattery {
+  readonly id: string;
+  readonly fixtures: readonly string[];
+  readonly pipes: readonly string[];
+  readonly reading: string;
+  readonly why: string;
+  /** What the chosen reading breaks, if anything. */
+  readonly broken: readonly BrokenCondition[];
+  readonly others: readonly {
+    readonly reading: string;
+    readonly holds: boolean;
+    readonly broken: readonly BrokenCondition[];
+  }[];
+}
+
+export interface BrokenCondition {
+  readonly rule: string;
+  readonly clause: string;
+  readonly facts: Readonly<Record<string, unknown>>;
+}
+
+export interface ResultJoint {
+  readonly about: readonly string[];
+  readonly how: string;
+  readonly gap: number;
+}
+
+export interface ResultFinding {
+  readonly code: string;
+  readonly severity: 'error' | 'warning' | 'note';
+  readonly about: readonly string[];
+  readonly facts: Readonly<Record<string, unknown>>;
+  readonly clause: string | null;
+  readonly sentence: string;
+}
