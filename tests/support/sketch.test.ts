@@ -1,0 +1,139 @@
+import { expect, test } from 'vitest';
+import { InputError } from '../../src/findings/input-error.ts';
+import { distance, length } from '../../src/geometry/vector.ts';
+import { elementIdOf, idOf, modelOf } from './model-of.ts';
+import { sketch } from './sketch.ts';
+
+const two = sketch(`
+  model "Two lavatories"
+  storey "Ground floor" at 0
+  lavatory L1 at 0 0 0.5, trap 1 1/4 in
+  lavatory L2 at 1 0 0.5, trap 1¼ in
+  drain 1¼ in: L1 > T1 (north 0.3) > J1 (to -0.3)       # an arm, then a drop
+  drain 1¼ in: L2 > T2 (north 0.3) > J2 (from J1 over T2 fall 1:50)
+  drain Branch 2 in: J1 > J2 > OUT (east 2 fall 1:50)
+  vent DN 40: T1 > (up 1) > VT (at 0 0.3 4)
+  terminal VT
+  sewer OUT
+`);
+
+test('moves, falls and places', () => {
+  const at = (name: string) => two.nodes.get(name)?.at;
+  expect(at('T1')).toEqual([0, 0.3, 0.5]);
+  expect(at('J2')?.map((value) => Math.round(value * 1e6) / 1e6)).toEqual([1, 0.3, -0.32]);
+  expect(at('OUT')?.[2]).toBeCloseTo(-0.36, 9);
+  expect(at('T1+1')).toEqual([0, 0.3, 1.5]);
+});
+
+test('pipes are named by their nodes or numbered by their own name', () => {
+  expect(two.pipes.map(({ name, size }) => `${name} ${size.label}`)).toEqual([
+    'L1-T1 1¼ in',
+    'T1-J1 1¼ in',
+    'L2-T2 1¼ in',
+    'T2-J2 1¼ in',
+    'Branch.1 2 in',
+    'Branch.2 2 in',
+    'T1-T1+1 DN 40',
+    'T1+1-VT DN 40',
+  ]);
+});
+
+test('a model has the pipes, one fitting where pipes meet, and the parts', () => {
+  const model = modelOf(two);
+  expect(model.elements.map(({ name, typeName }) => `${name} ${typeName}`).slice(8)).toEqual([
+    'T1 Junction',
+    'J1 Bend',
+    'T2 Bend',
+    'J2 Junction',
+    'T1+1 Coupling',
+    'L1 Lavatory',
+    'L2 Lavatory',
+    'VT Vent terminal',
+    'OUT Sewer connection',
+  ]);
+  const joint = model.elements[elementIdOf(two, 'J2')]!;
+  expect(joint.globalId).toBe(idOf(two, 'J2'));
+  expect(joint.globalId).toMatch(/^[0-3][0-9A-Za-z_$]{21}$/);
+  expect(joint.ports).toHaveLength(3);
+  for (const id of joint.ports) {
+    const port = model.ports[id]!;
+    expect(port.connected).toHaveLength(1);
+    const other = model.ports[port.connected[0]!]!;
+    expect(other.connected).toEqual([id]);
+    expect(distance(port.at!, other.at!)).toBe(0);
+    expect(model.elements[other.owner!]!.kind).toBe('segment');
+  }
+});
+
+test('without ports and sizes the outside diameter is left, from ASTM D2665: 2 in is 60.3 mm', () => {
+  const model = modelOf(two, { ports: false, sizes: false });
+  expect(model.ports).toEqual([]);
+  const branch = model.elements[elementIdOf(two, 'Branch.2')]!;
+  expect(branch.ports).toEqual([]);
+  expect(branch.sizes.map(({ means, mm }) => [means, mm?.toFixed(1)])).toEqual([['outer', '60.3']]);
+  expect(branch.slopes[0]?.slope).toBeCloseTo(1 / 50, 9);
+});
+
+test('a solid that runs past a node takes the branch on its wall', () => {
+  const stack = sketch(`
+    drain Stack 4 in whole: TOP (at 0 0 6) > A (down 3) > FOOT (down 3)
+    drain Side 2 in: S (at 2 0 3.04) > A
+  `);
+  const model = modelOf(stack);
+  expect(model.elements.map(({ name }) => name)).toEqual(['Stack', 'Side']);
+  expect(model.elements[0]?.centreLine?.points).toEqual([
+    [0, 0, 6],
+    [0, 0, 0],
+  ]);
+  const end = model.elements[1]!.centreLine!.points.at(-1)!;
+  expect(length([end[0], end[1], end[2] - 3])).toBeCloseTo(0.1143 / 2, 6);
+  expect(model.ports.filter(({ connected }) => connected.length > 0)).toHaveLength(2);
+});
+
+test('a block is placed as often as it is needed', () => {
+  const block = sketch(`
+    storey "1" at 0
+    typical room
+      space "Washroom" from -1 -1 to 3 3 height 2.5
+      lavatory L at 0 0 0.5
+      drain 1¼ in: L > J (north 0.3)
+      drain 2 in: J > STACK
+    end
+    node STACK at 5 0.3 0.4
+    place room as A at 0 0 0
+    place room as B at 1 0 0
+  `);
+  expect(block.pipes.map(({ name }) => name)).toEqual(['A.L-A.J', 'A.J-STACK', 'B.L-B.J', 'B.J-STACK']);
+  expect(block.nodes.get('B.J')?.at).toEqual([1, 0.3, 0.5]);
+  expect(modelOf(block).elements.find(({ name }) => name === 'B.L')?.space).toBe(0);
+});
+
+const faults: readonly (readonly [text: string, where: string, problem: RegExp])[] = [
+  ['\ndrain 3 in: A > B', 'line 2', /where A lies/],
+  ['drain 7 in: A (at 0 0 0) > B (east 1)', 'line 1', /7 in is not in the table/],
+  ['node A at 0 0', 'line 1', /z is missing/],
+  ['node A from B east 1\nnode B from A east 1', 'line 1', /placed from itself|placed from/],
+  ['node A at 0 0 0\nnode A at 1 0 0', 'line 2', /placed before, on line 1/],
+  ['urinal U at 0 0 0, purple', 'line 1', /"purple" is no detail/],
+  ['gurgle X', 'line 1', /begins no line/],
+  ['space "A" from 0 0 to 1 1 height 3', 'line 1', /storey line/],
+  ['typical x\nnode A at 0 0 0', 'line 1', /without "end"/],
+  ['place x as A at 0 0 0', 'line 1', /no block "x"/],
+  ['model "open', 'line 1', /quote/],
+  ['drain 3 in A > B', 'line 1', /":" expected/],
+  ['drain 3 in: A (at 0 0 0)', 'line 1', /two nodes/],
+  ['drain P 3 in: A (at 0 0 0) > B (east 1)\ndrain P 3 in: B > C (east 1)', 'line 2', /name P is taken/],
+];
+
+for (const [text, where, problem] of faults)
+  test(`refused: ${text.replace(/\n/g, ' / ')}`, () => {
+    let caught: unknown;
+    try {
+      sketch(text);
+    } catch (error) {
+      caught = error;
+    }
+    expect(caught).toBeInstanceOf(InputError);
+    expect((caught as InputError).where).toBe(where);
+    expect((caught as InputError).message).toMatch(problem);
+  });
