@@ -46,7 +46,7 @@ export const padded = (text: string, columns: number): string =>
 
 /**
  * Breaks at spaces into lines of at most `columns`; the first begins with `lead`, the others are indented as far.
- * A word that is wider than a line is cut across lines, never lost.
+ * A word that is wider than a line is cut across lines, never lost. What `unbroken` joined stays on one line.
  */
 export function wrapped(text: string, columns: number, lead = ''): string[] {
   const indent = ' '.repeat(columnsOf(lead));
@@ -62,8 +62,12 @@ export function wrapped(text: string, columns: number, lead = ''): string[] {
     }
   }
   lines.push(line);
-  return lines.map((text, place) => (place === 0 ? lead : indent) + text);
+  return lines.map((text, place) => (place === 0 ? lead : indent) + text.replaceAll(noBreak, ' '));
 }
+
+/** Keeps the words of a text together when it is wrapped. */
+export const unbroken = (text: string): string => text.replaceAll(' ', noBreak);
+const noBreak = '\u00A0';
 
 function pieces(word: string, columns: number): string[] {
   const cut: string[] = [];

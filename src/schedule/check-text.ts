@@ -1,0 +1,101 @@
+import type { Result, ResultFinding } from './result.ts';
+import { shownText } from './shown-text.ts';
+import { blank, heading, paragraph, type TextLine, type Tone } from './text-line.ts';
+import { counted, plainWords, tally } from './trade-words.ts';
+import { undersizedText } from './undersized-text.ts';
+import { understoodText } from './understood-text.ts';
+
+/**
+ * What a coordinator needs on one screen: what was understood, the undersized pipes by cause, the other errors,
+ * warnings folded to counts, then the sums and how far to trust them. Model text comes out harmless.
+ */
+export function checkText(result: Result): TextLine[] {
+  return [
+    ...understoodText(result),
+    ...undersizedText(result),
+    ...otherErrors(result.findings),
+    ...foldedText(result.findings, 'warning', 'Warnings'),
+    ...foldedText(result.findings, 'note', 'Notes'),
+    blank,
+    ...sumsText(result),
+    ...paragraph(shownText(result.caution), '', 'quiet'),
+  ];
+}
+
+/** Errors, warnings and verdicts in two lines, and what the sizes rest on. */
+export function sumsText({ pipes, findings, code }: Result): TextLine[] {
+  const count = (severity: string): number => findings.filter((finding) => finding.severity === severity).length;
+  const verdicts = { undersized: 0, agrees: 0, oversized: 0, unknown: 0 };
+  for (const { verdict } of pipes) verdicts[verdict]++;
+  const errors = count('error');
+  const unsure = tally(pipes.flatMap(({ reason, verdict }) => (verdict === 'unknown' && reason ? [reason] : [])));
+  const provisional = pipes.filter((pipe) => pipe.provisional).length;
+  const memory = pipes.filter(({ trail }) => trail.some(({ governs, trust }) => governs && trust === 'memory')).length;
+  const tone: Tone = errors > 0 ? 'error' : 'good';
+  return [
+    ...paragraph(
+      `${counted(errors, 'error')}, ${counted(count('warning'), 'warning')}, ${counted(count('note'), 'note')}. ` +
+        `Of ${counted(pipes.length, 'pipe')} ${verdicts.undersized} undersized, ${verdicts.agrees} as required, ` +
+        `${verdicts.oversized} oversized, ${verdicts.unknown} unknown.`,
+      '',
+      tone,
+    ),
+    ...unsure
+      .slice(0, mostReasons)
+      .flatMap(([reason, times]) => paragraph(`${times} unknown: ${shownText(reason)}`, '  ', 'warning')),
+    ...(provisional === 0
+      ? []
+      : paragraph(
+          `${counted(provisional, 'size')} provisional: a figure of the code could not be read.`,
+          '',
+          'warning',
+        )),
+    ...(memory === 0
+      ? []
+      : paragraph(
+          `${memory} of ${counted(pipes.length, 'size')} rest on figures not yet checked against print ` +
+            `(drainwright codes ${code.id}).`,
+          '',
+          'quiet',
+        )),
+  ];
+}
+
+const mostReasons = 4;
+const mostSentences = 3;
+const mostCodes = 12;
+
+function otherErrors(findings: readonly ResultFinding[]): TextLine[] {
+  const errors = findings.filter(({ severity, code }) => severity === 'error' && code !== 'undersized');
+  if (errors.length === 0) return [];
+  const codes = tally(errors.map(({ code }) => code));
+  return [
+    blank,
+    ...heading(`Other errors: ${errors.length}`),
+    ...codes.slice(0, mostCodes).flatMap(([code, count]) => {
+      const some = errors.filter((error) => error.code === code).slice(0, mostSentences);
+      const more = count - some.length;
+      return [
+        ...some.flatMap((error) => paragraph(sentenceText(error), '  - ', 'error')),
+        ...(more === 0 ? [] : paragraph(`and ${more} more ${plainWords(code)}`, '    ', 'quiet')),
+      ];
+    }),
+    ...(codes.length > mostCodes
+      ? paragraph(`and ${codes.length - mostCodes} more kinds of error`, '  ', 'quiet')
+      : []),
+  ];
+}
+
+/** A sentence names its clause itself, or gets it behind. */
+function sentenceText({ sentence, clause }: ResultFinding): string {
+  const text = shownText(sentence);
+  return clause === null || text.includes(clause) ? text : `${text} (${clause})`;
+}
+
+function foldedText(findings: readonly ResultFinding[], severity: string, title: string): TextLine[] {
+  const some = findings.filter((finding) => finding.severity === severity);
+  if (some.length === 0) return [];
+  const kinds = tally(some.map(({ code }) => code)).map(([code, count]) => `${count} ${plainWords(code)}`);
+  const tone = severity === 'warning' ? 'warning' : 'quiet';
+  return [...(severity === 'warning' ? [blank] : []), ...paragraph(`${title}: ${kinds.join(', ')}.`, '', tone)];
+}

@@ -1,0 +1,31 @@
+import type { LoadRange, SizeRange } from './result.ts';
+
+/** At most `decimals` places, none that are zero: `2.4`, `12`, `0.9`. */
+export function decimal(value: number, decimals: number): string {
+  const text = value.toFixed(decimals);
+  const short = text.includes('.') ? text.replace(/\.?0+$/, '') : text;
+  return short === '-0' ? '0' : short;
+}
+
+/** `14 fixture units`; `12 to 16 fixture units` where the model leaves it open. */
+export function loadText({ least, most }: LoadRange, unit: string): string {
+  return least === most ? `${decimal(most, 2)} ${unit}` : `${decimal(least, 2)} to ${decimal(most, 2)} ${unit}`;
+}
+
+/** Metres as a person reads them: millimetres below one metre. */
+export const lengthText = (metres: number): string =>
+  Math.abs(metres) < 1 ? `${decimal(metres * 1000, 0)} mm` : `${decimal(metres, 2)} m`;
+
+/** `2 % (1:50)`; `level` for zero. */
+export function slopeText(slope: number): string {
+  return slope === 0 ? 'level' : `${decimal(slope * 100, 2)} % (1:${decimal(1 / Math.abs(slope), 0)})`;
+}
+
+/** `4 in`; `2 in to 3 in` where the model leaves it open; null: no size of the tables holds it. */
+export function sizeText(range: SizeRange | null): string {
+  if (range === null) return 'not sized';
+  const least = range.least?.label ?? null;
+  const most = range.most?.label ?? null;
+  if (most === null) return least === null ? 'no size of the table' : `${least} or more`;
+  return least === null || least === most ? most : `${least} to ${most}`;
+}

@@ -1,0 +1,126 @@
+import { type ElementNames, elementNames } from './element-names.ts';
+import { factsText } from './facts-text.ts';
+import { lengthText, loadText } from './number-text.ts';
+import type { BrokenCondition, Result, ResultBattery, ResultSystem } from './result.ts';
+import { padded, shownText } from './shown-text.ts';
+import { heading, paragraph, type TextLine } from './text-line.ts';
+import { counted, countedKinds, listed, plainWords, tally } from './trade-words.ts';
+
+/** What the program took the model to be, before any judgement: fixtures, systems, batteries, joints, what it left out. */
+export function understoodText(result: Result): TextLine[] {
+  const { counts, fixtures, joints, batteries, systems, unresolved, model } = result;
+  const names = elementNames(result);
+  const kindOf = new Map(fixtures.map(({ globalId, kind }) => [globalId, plainWords(kind ?? 'unidentified')]));
+  const left = Object.values(counts.leftOut).reduce((sum, count) => sum + count, 0);
+  const widest = Math.max(0, ...joints.inferred.map(({ gap }) => gap));
+  return [
+    ...titleText(result),
+    ...(model.remarks ?? []).flatMap((remark) => paragraph(shownText(remark), row('File'), 'warning')),
+    ...paragraph(
+      fixtures.length === 0 ? 'none' : `${fixtures.length}: ${countedKinds([...kindOf.values()])}`,
+      row('Fixtures'),
+    ),
+    ...paragraph(
+      `${counts.pipes}: ${tally(result.pipes.map(({ role }) => role))
+        .map(([role, count]) => `${count} ${plainWords(role)}`)
+        .join(', ')}`,
+      row('Pipes'),
+    ),
+    ...folded(systems, mostSystems, 'more systems').flatMap((system, place) =>
+      typeof system === 'string'
+        ? paragraph(system, row(''))
+        : paragraph(systemText(system, result.code.unit, names), row(place === 0 ? 'Systems' : '')),
+    ),
+    ...folded(batteries, mostBatteries, 'more batteries').flatMap((battery, place) =>
+      typeof battery === 'string'
+        ? paragraph(battery, row(''))
+        : batteryText(battery, row(place === 0 ? 'Batteries' : ''), kindOf, result.code.unit, names),
+    ),
+    ...paragraph(
+      `${counted(joints.ports, 'joint')} by ports, ${joints.geometry} by geometry` +
+        (joints.inferred.length === 0 ? '' : `; the widest gap bridged is ${lengthText(widest)}`),
+      row('Joints'),
+    ),
+    ...(left === 0 ? [] : paragraph(`${left}: ${reasons(counts.leftOut)}`, row('Left out'))),
+    ...(unresolved.length === 0
+      ? []
+      : paragraph(
+          `${unresolved.length}: ${tally(unresolved.map(({ reason }) => reason))
+            .map(([reason, count]) => `${count} ${shownText(reason)}`)
+            .join(', ')}`,
+          row('Not placed'),
+          'warning',
+        )),
+  ];
+}
+
+/** File, schema, unit, code; a model without drainage says so here, on the first line. */
+export function titleText({ model, models, code, fixtures, pipes, counts }: Result): TextLine[] {
+  const files = (models ?? [model]).map(({ file }) => shownText(file));
+  const about = `${shownText(model.schema)}, ${shownText(model.lengthUnit)}; ${code.title} ${code.edition} (${code.id})`;
+  const local = code.localTables === undefined ? '' : `, with local tables ${listed(code.localTables.map(shownText))}`;
+  if (fixtures.length > 0 || pipes.length > 0) return heading(`${listed(files)}: ${about}${local}`);
+  return [
+    ...heading(`${listed(files)}: no sanitary drainage in this model (${counted(counts.elements, 'element')} read)`),
+    ...paragraph(`${about}${local}`),
+  ];
+}
+
+const row = (label: string): string => `  ${padded(label, 11)} `;
+const mostSystems = 6;
+const mostBatteries = 10;
+
+function folded<T>(list: readonly T[], most: number, rest: string): (T | string)[] {
+  return list.length <= most ? [...list] : [...list.slice(0, most), `and ${list.length - most} ${rest}`];
+}
+
+const reasons = (counts: Readonly<Record<string, number>>): string =>
+  Object.entries(counts)
+    .sort(([a, m], [b, n]) => n - m || (a < b ? -1 : 1))
+    .map(([reason, count]) => `${count} ${shownText(reason)}`)
+    .join(', ');
+
+function systemText({ pipes, fixtures, load, sewerEnd }: ResultSystem, unit: string, names: ElementNames): string {
+  const where = sewerEnd.pipe === null ? 'its only joint' : names.of(sewerEnd.pipe);
+  return `${counted(fixtures, 'fixture')}, ${counted(pipes, 'pipe')}, ${loadText(load, unit)}; to the sewer at ${where} (${sewerEnds[sewerEnd.how] ?? shownText(sewerEnd.how)})`;
+}
+
+const sewerEnds: Readonly<Record<string, string>> = {
+  answer: 'as answered',
+  named: 'the model names it',
+  ports: 'where the ports lead',
+  lowest: 'assumed: the lowest open end',
+  largest: 'assumed: the largest of the low open ends',
+  first: 'assumed: one of several equal open ends',
+};
+
+function batteryText(
+  { id, fixtures, reading, why, broken, others }: ResultBattery,
+  lead: string,
+  kindOf: ReadonlyMap<string, string>,
+  unit: string,
+  names: ElementNames,
+): TextLine[] {
+  const who = countedKinds(fixtures.map((fixture) => kindOf.get(fixture) ?? 'unidentified'));
+  const nots = others.map((other) =>
+    other.holds
+      ? `${plainWords(other.reading)} would hold as well`
+      : `no ${plainWords(other.reading)}: ${conditionsText(other.broken, unit, names)}`,
+  );
+  return [
+    ...paragraph(`${id}, ${who}: ${plainWords(reading)}, since ${shownText(why)}`, lead),
+    ...(broken.length === 0 ? [] : paragraph(`breaks ${conditionsText(broken, unit, names)}`, row(''), 'error')),
+    ...(nots.length === 0 ? [] : paragraph(nots.join('; '), row(''), 'quiet')),
+  ];
+}
+
+/** `relief vent (2.5.3.1.)`: the conditions that a reading breaks, each with its clause; only the first with its facts. */
+export function conditionsText(broken: readonly BrokenCondition[], unit: string, names: ElementNames): string {
+  if (broken.length === 0) return 'not found';
+  return broken
+    .map(({ rule, clause, facts }, place) => {
+      const numbers = place === 0 ? factsText(facts, unit, names.short) : '';
+      return `${plainWords(rule)}${numbers === '' ? '' : `, ${numbers}`} (${clause})`;
+    })
+    .join(', ');
+}
