@@ -1,0 +1,80 @@
+import type { NominalSize } from '../units/nominal-size.ts';
+import { type Candidate, firstThatHolds, noneOmitted, type SizeFound, sizedRows } from './find-size.ts';
+import type { Amount, Cell, Column, Row, Table } from './table.ts';
+
+/** A decimal slope is the printed 1:n when they agree this closely: models write 0.0075 for 1:133. */
+export const slopeAgreement = 0.005;
+
+export interface SizeAtSlope extends SizeFound {
+  /** Column that was read for the size found, m/m. */
+  readonly slope: number | null;
+  /** The drawn slope is flatter than any at which the table lets the size be laid. */
+  readonly tooFlat: boolean;
+  /** Least slope at which the table has a figure for the size found. */
+  readonly leastSlope: number | null;
+}
+
+/**
+ * Smallest drain whose figure holds the load, each size read at the steeper of the drawn slope and its own least slope:
+ * a pipe laid too flat is a fault of its slope, not of its size. Between columns the flatter counts; null: not drawn.
+ */
+export function sizeAtSlope(
+  table: Table,
+  load: number,
+  drawn: number | null,
+  omit: ReadonlySet<NominalSize> = noneOmitted,
+): SizeAtSlope {
+  const read = sizedRows(table, omit).map(({ size, row }) => ({ size, row, ...columnFor(table, row, drawn) }));
+  const candidates: Candidate[] = read.map(({ size, row, column }) => ({
+    size,
+    cell: column === null ? notPermitted(row, table) : row.amount(column.id),
+    instead: null,
+  }));
+  const found = firstThatHolds(candidates, load);
+  const chosen = read.find(({ size }) => size === found.size);
+  return {
+    ...found,
+    slope: chosen?.column?.slope ?? null,
+    leastSlope: chosen?.least ?? null,
+    tooFlat: drawn !== null && chosen !== undefined && chosen.least !== null && !reachesSlope(drawn, chosen.least),
+  };
+}
+
+/** Flattest slope at which the table has a figure for the size; null where it has none. */
+export function leastSlopeOf(
+  table: Table,
+  size: NominalSize,
+): { readonly slope: number; readonly cell: Cell<Amount> } | null {
+  const row = sizedRows(table).find((one) => one.size === size)?.row;
+  const column = row === undefined ? undefined : flattest(table, row);
+  return row === undefined || column?.slope === undefined || column.slope === null
+    ? null
+    : { slope: column.slope, cell: row.amount(column.id) };
+}
+
+/** True where `slope` is the printed one or steeper, within the agreement of a decimal with its 1:n. */
+export const reachesSlope = (slope: number, printed: number): boolean => slope >= printed * (1 - slopeAgreement);
+
+function columnFor(
+  table: Table,
+  row: Row,
+  drawn: number | null,
+): { readonly column: Column | null; readonly least: number | null } {
+  const least = flattest(table, row);
+  if (least === undefined) return { column: null, least: null };
+  const reached = drawn === null ? [] : sloped(table).filter(({ slope }) => reachesSlope(drawn, slope ?? 0));
+  const steepest = reached.at(-1);
+  const column = steepest === undefined || (steepest.slope ?? 0) < (least.slope ?? 0) ? least : steepest;
+  return { column, least: least.slope };
+}
+
+const sloped = (table: Table): readonly Column[] => table.columns.filter(({ slope }) => slope !== null);
+
+const flattest = (table: Table, row: Row): Column | undefined =>
+  sloped(table).find(({ id }) => typeof row.amount(id).value === 'number');
+
+function notPermitted(row: Row, table: Table): Cell<Amount> {
+  const first = sloped(table)[0];
+  if (first === undefined) throw new Error(`table ${table.id} has no columns of slope`);
+  return row.amount(first.id);
+}
