@@ -29,12 +29,12 @@ export function modelOf(sketch: Sketch, options: ModelOptions = { ports: true, s
     joined[b]!.push(a as PortId);
   }
   const storeys = storeyOrder(sketch);
-  const fabric = (kind: string, { name, storey, min, max }: SketchFabric, stepId: number) => ({
+  const fabric = (kind: keyof typeof fabricTypes, { name, storey, min, max }: SketchFabric, index: number) => ({
     file: 0,
-    stepId,
-    globalId: globalIdOf(sketch.title, kind, name),
+    stepId: fabricSteps[kind] + index,
+    globalId: globalIdOf(sketch.title, kind, String(index), name),
     name,
-    predefinedType: null,
+    predefinedType: fabricTypes[kind],
     storey: storeys.idOf(storey),
     box: { min, max },
     outline: rectangle(min, max),
@@ -82,9 +82,9 @@ export function modelOf(sketch: Sketch, options: ModelOptions = { ports: true, s
     spaces: sketch.spaces.map(({ name, storey, min, max }, index) => ({
       id: index as SpaceId,
       file: 0,
-      globalId: globalIdOf(sketch.title, 'space', name),
+      globalId: globalIdOf(sketch.title, 'space', String(index), name),
       name,
-      longName: null,
+      longName: name,
       storey: storeys.idOf(storey),
       box: { min, max },
     })),
@@ -97,7 +97,7 @@ export function modelOf(sketch: Sketch, options: ModelOptions = { ports: true, s
         ...fabric(
           'wall',
           { name: wall.name, storey: wall.storey, min, max: [max[0], max[1], min[2] + wall.height] },
-          500 + index,
+          index,
         ),
         outline,
         layers: wall.layers.map(({ name, thickness }) => ({ name, thickness: metres(thickness) })),
@@ -105,11 +105,14 @@ export function modelOf(sketch: Sketch, options: ModelOptions = { ports: true, s
         external: wall.external,
       };
     }),
-    slabs: sketch.slabs.map((slab, index) => fabric('slab', slab, 700 + index)),
-    roofs: sketch.roofs.map((roof, index) => fabric('roof', roof, 800 + index)),
+    slabs: sketch.slabs.map((slab, index) => fabric('slab', slab, index)),
+    roofs: sketch.roofs.map((roof, index) => fabric('roof', roof, index)),
     findings: [],
   };
 }
+
+const fabricTypes = { wall: 'SOLIDWALL', slab: 'FLOOR', roof: 'FLAT_ROOF' } as const;
+const fabricSteps = { wall: 500, slab: 700, roof: 800 } as const;
 
 function told(
   sketch: Sketch,
@@ -130,7 +133,7 @@ function told(
     predefinedType: element.predefined,
     kind: element.kind,
     name: element.name,
-    objectType: null,
+    objectType: element.predefined === 'USERDEFINED' ? element.typeName : null,
     description: null,
     tag: null,
     typeName: element.typeName,

@@ -1,5 +1,5 @@
 import type { SketchFabric, SketchSpace, SketchWall } from './sketch.ts';
-import type { Scope, Sheet } from './sketch-reader.ts';
+import type { Scope, Sheet } from './sketch-sheet.ts';
 import type { Cursor } from './sketch-tokens.ts';
 
 /** `space "Washroom" from 0 0 to 6 4 height 3`, on the storey above it. */

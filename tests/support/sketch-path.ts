@@ -1,4 +1,4 @@
-import { putNode, type Scope, type Sheet } from './sketch-reader.ts';
+import { putNode, type Scope, type Sheet } from './sketch-sheet.ts';
 import type { Cursor } from './sketch-tokens.ts';
 
 /**

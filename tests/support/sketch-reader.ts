@@ -1,46 +1,13 @@
 import { InputError } from '../../src/findings/input-error.ts';
 import type { Vec3 } from '../../src/geometry/vector.ts';
 import type { PipeSize } from './pipe-sizes.ts';
-import type {
-  Sketch,
-  SketchFabric,
-  SketchMedium,
-  SketchPart,
-  SketchPipe,
-  SketchSpace,
-  SketchSystem,
-  SketchWall,
-} from './sketch.ts';
+import type { Sketch, SketchMedium, SketchSystem } from './sketch.ts';
 import { readFabric, readSpace, readWall } from './sketch-building.ts';
 import { isPartWord, readFitting, readFixture } from './sketch-part-lines.ts';
 import { readPath } from './sketch-path.ts';
-import { type NameOf, type Place, readPlace, readPoint, resolvePlaces } from './sketch-places.ts';
+import { type NameOf, readPoint, resolvePlaces } from './sketch-places.ts';
+import { putNode, type Scope, type Sheet } from './sketch-sheet.ts';
 import { Cursor, type Statement, statements } from './sketch-tokens.ts';
-
-/** What has been read so far. */
-export interface Sheet {
-  title: string;
-  material: string;
-  storey: number | null;
-  readonly storeys: { name: string; elevation: number }[];
-  readonly spaces: SketchSpace[];
-  readonly walls: SketchWall[];
-  readonly slabs: SketchFabric[];
-  readonly roofs: SketchFabric[];
-  readonly systems: SketchSystem[];
-  readonly places: Map<string, Place>;
-  readonly nodeStoreys: Map<string, number | null>;
-  readonly bare: Set<string>;
-  readonly pipes: (SketchPipe & { readonly line: number })[];
-  readonly parts: SketchPart[];
-}
-
-/** A placed block: its names carry a prefix, its coordinates an origin. The sheet itself has neither. */
-export interface Scope {
-  readonly prefix: string;
-  readonly origin: Vec3;
-  readonly nameOf: NameOf;
-}
 
 const media: Readonly<Record<string, SketchSystem>> = {
   drain: { medium: 'drain', name: 'Sanitary drainage', predefined: 'SEWAGE' },
@@ -122,6 +89,7 @@ function readLine(statement: Statement, sheet: Sheet, scope: Scope): void {
     case 'storey': {
       const name = cursor.text('name of the storey');
       cursor.need('at');
+      if (sheet.storeys.some((storey) => storey.name === name)) cursor.fail(`storey "${name}" stands above already`);
       sheet.storeys.push({ name, elevation: cursor.number('elevation') });
       sheet.storey = sheet.storeys.length - 1;
       break;
@@ -167,22 +135,6 @@ function readLine(statement: Statement, sheet: Sheet, scope: Scope): void {
       else cursor.fail(`"${keyword}" begins no line of the notation`);
   }
   cursor.end();
-}
-
-/** Places the node if the line says where; a second place for one name is refused. */
-export function putNode(
-  sheet: Sheet,
-  cursor: Cursor,
-  scope: Scope,
-  name: string,
-  previous: string | null = null,
-): void {
-  const place = readPlace(cursor, scope.origin, scope.nameOf, previous);
-  if (place === null) return;
-  const before = sheet.places.get(name);
-  if (before !== undefined) cursor.fail(`${name} was placed before, on line ${before.line}`);
-  sheet.places.set(name, place);
-  sheet.nodeStoreys.set(name, sheet.storey);
 }
 
 function readPart(cursor: Cursor, keyword: string, sheet: Sheet, scope: Scope): void {
