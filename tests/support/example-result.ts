@@ -1,5 +1,6 @@
 import type {
   Result,
+  ResultElement,
   ResultFinding,
   ResultFixture,
   ResultPipe,
@@ -135,6 +136,15 @@ const undersized = (about: number, cause: string, facts: ResultFinding['facts'])
   sentence: `Pipe ${about} is 3 in; the code asks for 4 in.`,
 });
 
+const element = (stepId: number, ifcClass: string, use: ResultElement['use'], reason?: string): ResultElement => ({
+  globalId: id(stepId),
+  stepId,
+  file: 'community-hall.ifc',
+  class: ifcClass,
+  use,
+  ...(reason === undefined ? {} : { reason }),
+});
+
 export const exampleResult: Result = {
   format: 'drainwright-result',
   version: 1,
@@ -152,28 +162,14 @@ export const exampleResult: Result = {
     unresolved: 0,
   },
   elements: [
-    ...[...line.slice(0, 7), 2108, 2201, 2301].map((stepId) => ({
-      globalId: id(stepId),
-      stepId,
-      file: 'community-hall.ifc',
-      class: 'IfcPipeSegment',
-      use: 'pipe' as const,
-    })),
-    ...fixtureIds.map((stepId) => ({
-      globalId: id(stepId),
-      stepId,
-      file: 'community-hall.ifc',
-      class: 'IfcSanitaryTerminal',
-      use: 'fixture' as const,
-    })),
-    {
-      globalId: id(5001),
-      stepId: 5001,
-      file: 'community-hall.ifc',
-      class: 'IfcPipeSegment',
-      use: 'left-out' as const,
-      reason: 'rainwater',
-    },
+    ...[...fixtureIds.map((_, place) => armOf(place)), ...line, 2201, 2301].map((stepId) =>
+      element(stepId, 'IfcPipeSegment', 'pipe'),
+    ),
+    ...fixtureIds.map((stepId) => element(stepId, 'IfcSanitaryTerminal', 'fixture')),
+    ...Array.from({ length: 8 }, (_, place) => element(4001 + place, 'IfcPipeFitting', 'fitting')),
+    element(4101, 'IfcStackTerminal', 'terminal'),
+    ...[5001, 5002, 5003, 5004].map((stepId) => element(stepId, 'IfcPipeSegment', 'left-out', 'rainwater')),
+    element(5005, 'IfcPipeSegment', 'left-out', 'supply'),
   ],
   fixtures: fixtureIds.map((_, place) => fixture(place)),
   pipes: [

@@ -1,0 +1,138 @@
+import type { PropertySetToWrite, PropertyToWrite, ValueToWrite } from '../model/property-set.ts';
+import { demandText, governing, governingClauses } from '../schedule/demand-text.ts';
+import { elementNames } from '../schedule/element-names.ts';
+import type { Result, ResultFixture, ResultPipe, SizeLabel, SizeRange } from '../schedule/result.ts';
+import { plainWords } from '../schedule/trade-words.ts';
+import { plainLabel } from '../tables/column-unit.ts';
+
+/** The file that the sets are for: its name in the result, and how many metres its length unit is. */
+export interface TargetFile {
+  readonly file: string;
+  readonly metresPerUnit: number;
+}
+
+/**
+ * What is written into one file of the model: a set for each of its pipes and fixtures, in the order of the result,
+ * and one for the building. Loads are the heaviest reading; lengths are in the file's unit. Nothing is written where
+ * nothing is known.
+ */
+export function propertySets(result: Result, target: TargetFile): PropertySetToWrite[] {
+  const inFile = new Set(result.elements.filter(({ file }) => file === target.file).map(({ globalId }) => globalId));
+  const here = <T extends { readonly globalId: string }>(list: readonly T[]): T[] =>
+    list.filter(({ globalId }) => inFile.has(globalId));
+  const names = elementNames(result);
+  return [
+    ...here(result.pipes).map((pipe) => ({
+      name: 'Drainwright_Pipe',
+      on: pipe.stepId,
+      properties: pipeProperties(pipe, result, target.metresPerUnit, names.of),
+    })),
+    ...here(result.fixtures).map((fixture) => ({
+      name: 'Drainwright_Fixture',
+      on: fixture.stepId,
+      properties: fixtureProperties(fixture, result.code.unit, target.metresPerUnit),
+    })),
+    { name: 'Drainwright_Model', on: 'building', properties: modelProperties(result, target.file) },
+  ];
+}
+
+function pipeProperties(
+  pipe: ResultPipe,
+  { code }: Result,
+  metresPerUnit: number,
+  nameOf: (globalId: string) => string,
+): PropertyToWrite[] {
+  const { least, most } = pipe.required ?? { least: null, most: null };
+  const because = governing(pipe).map((step) => demandText(step, code.unit, nameOf));
+  const length = (metres: number | undefined): ValueToWrite | null => lengthIn(metres, metresPerUnit);
+  return present({
+    Role: label(pipe.role),
+    AlsoRole: label(pipe.also.join(', ')),
+    Portion: label(pipe.portion ?? ''),
+    Load: real(pipe.load.most),
+    LoadUnit: label(code.unit),
+    VentLoad: pipe.ventLoad === undefined ? null : real(pipe.ventLoad.most),
+    DevelopedLength: length(pipe.developedLength),
+    ModelledSize: sizeLabel(pipe.modelled),
+    RequiredSize: sizeLabel(most),
+    RequiredSizeLeast: differ(pipe.required) ? sizeLabel(least) : null,
+    RequiredNominalDiameter: most === null ? null : nominalDiameter(most, metresPerUnit),
+    Verdict: label(pipe.verdict),
+    GoverningClause: label(governingClauses(pipe).join('; ')),
+    Because: text([...(pipe.reason === undefined ? [] : [pipe.reason]), ...because].join('. ')),
+    Code: label(code.id),
+    Edition: label(code.edition),
+  });
+}
+
+function fixtureProperties(fixture: ResultFixture, unit: string, metresPerUnit: number): PropertyToWrite[] {
+  const { kind, load, trapSize, ventedBy, trapArm } = fixture;
+  return present({
+    Kind: label(plainWords(kind ?? 'unidentified')),
+    Load: real(load.most),
+    LoadUnit: label(unit),
+    TrapSize: sizeLabel(trapSize),
+    VentedBy: label(ventedBy.how),
+    TrapArmLength: lengthIn(trapArm?.length, metresPerUnit),
+    TrapArmLimit: lengthIn(trapArm?.limit, metresPerUnit),
+  });
+}
+
+function modelProperties(
+  { program, code, model, models, findings, pipes, caution }: Result,
+  file: string,
+): PropertyToWrite[] {
+  const sha256 = (models ?? [model]).find((one) => one.file === file)?.sha256 ?? model.sha256;
+  const count = (severity: string): number => findings.filter((finding) => finding.severity === severity).length;
+  return present({
+    Program: label(program.name),
+    Version: label(program.version),
+    Code: label(code.id),
+    Edition: label(code.edition),
+    InputSha256: label(sha256),
+    Errors: integer(count('error')),
+    Warnings: integer(count('warning')),
+    Undersized: integer(pipes.filter(({ verdict }) => verdict === 'undersized').length),
+    Caution: text(caution),
+  });
+}
+
+const present = (properties: Readonly<Record<string, ValueToWrite | null>>): PropertyToWrite[] =>
+  Object.entries(properties).flatMap(([name, value]) =>
+    value === null || value.value === '' ? [] : [{ name, value }],
+  );
+
+const label = (value: string): ValueToWrite => ({ as: 'label', value: plainLabel(value) });
+const text = (value: string): ValueToWrite => ({ as: 'text', value: plainLabel(value) });
+const real = (value: number): ValueToWrite => ({ as: 'real', value });
+const integer = (value: number): ValueToWrite => ({ as: 'integer', value });
+const sizeLabel = (size: SizeLabel | null): ValueToWrite | null => (size === null ? null : label(size.label));
+const differ = (range: SizeRange | null): boolean => range !== null && range.least?.label !== range.most?.label;
+
+function lengthIn(metres: number | null | undefined, metresPerUnit: number): ValueToWrite | null {
+  return metres === null || metres === undefined ? null : { as: 'length', value: rounded(metres / metresPerUnit) };
+}
+
+/** Whole inches in a file that counts in inches or feet, the DN elsewhere: each reads back as the size it stands for. */
+function nominalDiameter({ label: name, dn }: SizeLabel, metresPerUnit: number): ValueToWrite {
+  const inches = inchesOf(name);
+  const isImperial = Math.abs(metresPerUnit / inch - Math.round(metresPerUnit / inch)) < surveyFoot;
+  const metres = isImperial && inches !== null ? inches * inch : dn / 1000;
+  return { as: 'positive-length', value: rounded(metres / metresPerUnit) };
+}
+
+const inch = 0.0254;
+/** The survey foot is two millionths longer than twelve inches. */
+const surveyFoot = 1e-4;
+
+/** 1.5 of `1½ in`; null for a label in another unit. */
+function inchesOf(name: string): number | null {
+  const read = /^(?:(\d+) ?)?(?:(\d+)\/(\d+) )?in$/.exec(plainLabel(name).replace(/(\d) in$/, '$1 in'));
+  if (read === null) return null;
+  const [, whole = '0', above = '0', below = '1'] = read;
+  const inches = Number(whole) + Number(above) / Number(below);
+  return inches > 0 ? inches : null;
+}
+
+/** Free of the last digits that a division leaves: a file says 101.6, not 101.60000000000001. */
+const rounded = (value: number): number => Number(value.toPrecision(12));
