@@ -1,0 +1,98 @@
+import { type Finding, finding } from '../findings/finding.ts';
+import { boxCentre, grown } from '../geometry/box.ts';
+import { boxGrid } from '../geometry/box-grid.ts';
+import { type Box, distance } from '../geometry/vector.ts';
+import type { Identity } from '../model/identity.ts';
+import type { Element, ElementId, Model } from '../model/model.ts';
+import { doubled } from './tolerance.ts';
+
+/**
+ * Elements drawn twice at one place. Returns by element id the one that stands for it: itself, or the one it doubles.
+ * Kept is the one with more connected ports, then the one whose system says drainage, then the lowest GlobalId.
+ */
+export function findDoubles(
+  model: Model,
+  identities: readonly Identity[],
+  takesPart: readonly boolean[],
+): { keeper: Int32Array; findings: readonly Finding[] } {
+  const keeper = Int32Array.from(model.elements, (_, id) => id);
+  const findings: Finding[] = [];
+  const marks = model.elements.map((element) => (takesPart[element.id] ? markOf(element, identities) : null));
+  const grid = boxGrid(marks);
+  const better = preference(model, identities);
+  for (const element of [...model.elements].sort(better)) {
+    const mark = marks[element.id];
+    if (mark === null || mark === undefined || keeper[element.id] !== element.id) continue;
+    const found: ElementId[] = [];
+    grid.touching(grown(mark, doubled), (other) => {
+      const it = model.elements[other]!;
+      if (better(element, it) < 0 && keeper[other] === other && isDouble(element, it, identities, model))
+        found.push(it.id);
+    });
+    for (const other of found.sort((a, b) => a - b)) {
+      keeper[other] = element.id;
+      findings.push(finding('doubled-element', [other, element.id], { part: identities[other]!.part }));
+    }
+  }
+  return { keeper, findings: findings.sort((a, b) => a.about[0]! - b.about[0]!) };
+}
+
+/** The small region in which a double's own must lie: the middle of a pipe or body; a fixture's whole box. */
+function markOf(element: Element, identities: readonly Identity[]): Box | null {
+  const { part } = identities[element.id]!;
+  if (part === 'pipe') {
+    const line = element.centreLine?.points;
+    if (line === undefined || line.length < 2) return null;
+    const [a, b] = [line[0]!, line[line.length - 1]!];
+    const middle = boxCentre({ min: a, max: b });
+    return { min: middle, max: middle };
+  }
+  if (element.box === null) return null;
+  if (part === 'fixture') return element.box;
+  const centre = boxCentre(element.box);
+  return { min: centre, max: centre };
+}
+
+function isDouble(a: Element, b: Element, identities: readonly Identity[], model: Model): boolean {
+  const [x, y] = [identities[a.id]!, identities[b.id]!];
+  if (x.part !== y.part || areConnected(a, b, model)) return false;
+  if (x.part === 'pipe') return samePipe(a, b);
+  if (a.box === null || b.box === null) return false;
+  if (x.part === 'fixture') return x.kind !== null && x.kind === y.kind && onePlace(a.box, b.box);
+  return sameBox(a.box, b.box);
+}
+
+function samePipe(a: Element, b: Element): boolean {
+  const [p, q] = [a.centreLine!, b.centreLine!];
+  const [dp, dq] = [p.outerDiameter ?? q.outerDiameter ?? 0, q.outerDiameter ?? p.outerDiameter ?? 0];
+  if (Math.abs(dp - dq) > 0.1 * Math.max(dp, dq)) return false;
+  const near = (i: number, j: number): boolean => distance(p.points.at(i)!, q.points.at(j)!) <= doubled;
+  return (near(0, 0) && near(-1, -1)) || (near(0, -1) && near(-1, 0));
+}
+
+const sameBox = (a: Box, b: Box): boolean =>
+  [0, 1, 2].every((i) => Math.abs(a.min[i]! - b.min[i]!) <= doubled && Math.abs(a.max[i]! - b.max[i]!) <= doubled);
+
+/** Two fixtures of one kind stand at one place when the smaller plan lies nearly whole in the larger, heights touching. */
+const sharedPlan = 0.8;
+function onePlace(a: Box, b: Box): boolean {
+  const shared = (i: number): number => Math.min(a.max[i]!, b.max[i]!) - Math.max(a.min[i]!, b.min[i]!);
+  const plan = ({ min, max }: Box): number => (max[0] - min[0]) * (max[1] - min[1]);
+  const [dx, dy, dz] = [shared(0), shared(1), shared(2)];
+  return dx > 0 && dy > 0 && dz > -0.05 && dx * dy >= sharedPlan * Math.min(plan(a), plan(b));
+}
+
+function areConnected(a: Element, b: Element, model: Model): boolean {
+  return a.ports.some((port) => model.ports[port]?.connected.some((other) => model.ports[other]?.owner === b.id));
+}
+
+function preference(model: Model, identities: readonly Identity[]): (a: Element, b: Element) => number {
+  const joined = model.elements.map((element) =>
+    element.ports.reduce((n, port) => n + ((model.ports[port]?.connected.length ?? 0) > 0 ? 1 : 0), 0),
+  );
+  const said = (element: Element): number => (identities[element.id]!.medium === null ? 0 : 1);
+  return (a, b) =>
+    joined[b.id]! - joined[a.id]! ||
+    said(b) - said(a) ||
+    (a.globalId < b.globalId ? -1 : a.globalId > b.globalId ? 1 : a.id - b.id);
+}

@@ -1,0 +1,107 @@
+import { distance } from '../geometry/vector.ts';
+import type { Model } from '../model/model.ts';
+import { bodyNode, endPoint, isEnd, type Piping } from './piping.ts';
+import type { Proposal } from './propose-joins.ts';
+import { type Reach, samePlace } from './tolerance.ts';
+import type { Welds } from './welds.ts';
+
+/**
+ * Decides between proposals over the whole model at once: nearest first, so that the order of elements in the file never
+ * matters; equal ones by GlobalId. An end joins one thing; ends that meet at one point must all be within reach of each other.
+ */
+export function settleJoins(
+  proposals: readonly Proposal[],
+  model: Model,
+  piping: Piping,
+  welds: Welds,
+  reach: Reach,
+): void {
+  const order = proposals.filter(({ within }) => within).sort(byCost(model, piping, welds));
+  const mates = new Map<number, number[]>();
+  for (const proposal of order) {
+    const { end, to, gap } = proposal;
+    if (to.is === 'body') {
+      const { capacity } = piping.bodies[to.body]!;
+      if (welds.isHeld(end) || (capacity !== null && welds.degree[to.body]! >= capacity)) continue;
+      welds.join(end, bodyNode(piping, to.body), 'end-in-fitting', gap);
+    } else if (to.is === 'end') joinEnds(end, to.end, gap, mates, piping, welds, reach);
+    else if (!welds.isHeld(end)) joinWall(end, to.pipe, to.at, gap, piping, welds, reach);
+  }
+}
+
+function joinEnds(
+  a: number,
+  b: number,
+  gap: number,
+  mates: Map<number, number[]>,
+  piping: Piping,
+  welds: Welds,
+  reach: Reach,
+): void {
+  if (welds.isHeld(a) && welds.isHeld(b)) return;
+  const [free, other] = welds.isHeld(a) ? [b, a] : [a, b];
+  if (welds.isHeld(other) && welds.bodyOf(other) >= 0) return;
+  const group = mates.get(other) ?? [other];
+  if (group.length > 1 && !group.every((mate) => withinReach(free, mate, piping, reach))) return;
+  const grown = [...group, free];
+  for (const mate of grown) mates.set(mate, grown);
+  welds.join(free, other, 'end-to-end', gap);
+}
+
+function withinReach(a: number, b: number, { pipes }: Piping, reach: Reach): boolean {
+  const [p, q] = [pipes[a >> 1]!, pipes[b >> 1]!];
+  if (p.axis === null || q.axis === null) return true;
+  const apart = distance(endPoint(p.axis, (a & 1) as 0 | 1), endPoint(q.axis, (b & 1) as 0 | 1));
+  return apart <= Math.max(reach.ofEnd(p.diameter), reach.ofEnd(q.diameter));
+}
+
+/** An end on a wall close to that pipe's own end meets it there: a corner, or a tee whose run is drawn in two. */
+function joinWall(
+  end: number,
+  pipe: number,
+  at: number,
+  gap: number,
+  piping: Piping,
+  welds: Welds,
+  reach: Reach,
+): void {
+  const run = piping.pipes[pipe]!;
+  const { diameter } = piping.pipes[end >> 1]!;
+  const side = at <= run.axis!.length / 2 ? 0 : 1;
+  const toEnd = side === 0 ? at : run.axis!.length - at;
+  const near = 2 * pipe + side;
+  const bare = welds.bodyOf(near) < 0;
+  if (toEnd <= (bare ? Math.max(diameter / 2 + reach.ofEnd(diameter), samePlace) : samePlace)) {
+    welds.join(end, near, 'end-on-wall', gap);
+    return;
+  }
+  welds.join(end, welds.wall(pipe, at), 'end-on-wall', gap);
+}
+
+function byCost(model: Model, piping: Piping, welds: Welds): (a: Proposal, b: Proposal) => number {
+  const name = (node: number): string => model.elements[welds.elementOf(node)]!.globalId;
+  const target = ({ to }: Proposal): string =>
+    to.is === 'body'
+      ? model.elements[piping.bodies[to.body]!.element]!.globalId
+      : to.is === 'end'
+        ? name(to.end)
+        : model.elements[piping.pipes[to.pipe]!.element]!.globalId;
+  const kind = { body: 0, end: 1, wall: 2 } as const;
+  // Costs that differ by less than a micrometre are equal: turning a model must not decide.
+  return (a, b) => {
+    const difference = Math.round(a.cost * 1e6) - Math.round(b.cost * 1e6);
+    if (difference !== 0) return difference;
+    if (a.to.is !== b.to.is) return kind[a.to.is] - kind[b.to.is];
+    const [na, nb] = [name(a.end), name(b.end)];
+    if (na !== nb) return na < nb ? -1 : 1;
+    const [ta, tb] = [target(a), target(b)];
+    if (ta !== tb) return ta < tb ? -1 : 1;
+    return a.end - b.end;
+  };
+}
+
+/** Ends that nothing has been joined to. */
+export const freeEnds = (piping: Piping, welds: Welds): number[] =>
+  Array.from({ length: 2 * piping.pipes.length }, (_, node) => node).filter(
+    (node) => isEnd(piping, node) && !welds.isHeld(node) && piping.pipes[node >> 1]!.axis !== null,
+  );
