@@ -19,7 +19,7 @@ const widest = 3;
  * are not finite are never found.
  */
 export function boxGrid(given: readonly (Box | null)[]): BoxGrid {
-  const boxes = given.map((box) => (box === null || !isFinite(box) ? null : box));
+  const boxes = given.map((box) => (box === null || !hasNumbers(box) ? null : box));
   const level = new Int8Array(boxes.length).fill(-1);
   const onLevel: number[][] = Array.from({ length: levels }, () => []);
   let entries = 0;
@@ -52,7 +52,7 @@ export function boxGrid(given: readonly (Box | null)[]): BoxGrid {
   let turn = 0;
   return {
     touching(where, visit) {
-      if (!isFinite(where)) return;
+      if (!hasNumbers(where)) return;
       const now = ++turn;
       const meet = (item: number): void => {
         if (seen[item] === now || !touch(boxes[item]!, where)) return;
@@ -73,7 +73,7 @@ export function boxGrid(given: readonly (Box | null)[]): BoxGrid {
   };
 }
 
-const isFinite = ({ min, max }: Box): boolean => [...min, ...max].every(Number.isFinite);
+const hasNumbers = ({ min, max }: Box): boolean => [...min, ...max].every(Number.isFinite);
 
 function cellCount({ min, max }: Box, level: number): number {
   const cell = finest * step ** level;

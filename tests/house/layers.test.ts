@@ -42,7 +42,7 @@ const mayImport: Record<string, readonly string[]> = {
 };
 /** No file, clock, randomness, console or global of a host in the core. */
 const impure =
-  /\bnode:|\bprocess\.|\bconsole\.|\bDate\b|Math\.random|\bdocument\.|\bwindow\.|\bfetch\(|setTimeout|performance\./;
+  /\bprocess\.|\bconsole\.|\bDate\b|Math\.random|\bdocument\.|\bwindow\.|\bfetch\(|setTimeout|performance\./;
 const allowedPackages: Record<string, readonly string[]> = {
   'ifc/shapes': ['web-ifc'],
   ifc: ['fflate'],
