@@ -4,7 +4,7 @@ import { at, fieldsOf, type JsonObject, listAt, objectAt, textAt, textsAt } from
 import type { Table } from './table.ts';
 
 /** A word or a yes-no that must be met, one of several words, or a count from the first to the last, both included. */
-export type FactTest = string | boolean | readonly string[] | { readonly from: number; readonly to: number };
+export type FactTest = string | boolean | readonly string[] | { readonly least: number; readonly most: number };
 
 /** Which of our fixture kinds a row of the printed fixture table stands for. */
 export interface KindEntry {
@@ -69,8 +69,11 @@ function readTest(test: unknown, where: string): FactTest {
   if (typeof test === 'string' || typeof test === 'boolean') return test;
   const list = listAt(test, where);
   if (list.every((word) => typeof word === 'string') && list.length > 0) return textsAt(list, where);
-  const [from, to] = list;
-  if (list.length !== 2 || typeof from !== 'number' || (typeof to !== 'number' && to !== null))
-    throw new InputError(where, `is ${show(test)}, expected words or [from, to], to being null where there is no end`);
-  return { from, to: to ?? Number.POSITIVE_INFINITY };
+  const [least, most] = list;
+  if (list.length !== 2 || typeof least !== 'number' || (typeof most !== 'number' && most !== null))
+    throw new InputError(
+      where,
+      `is ${show(test)}, expected words or [least, most], most being null where there is no end`,
+    );
+  return { least, most: most ?? Number.POSITIVE_INFINITY };
 }

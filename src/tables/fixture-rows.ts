@@ -75,7 +75,7 @@ function fits(entry: KindEntry, facts: FixtureFacts): boolean {
 
 function meets(value: string | number | boolean, test: FactTest): boolean {
   if (typeof test === 'string' || typeof test === 'boolean') return value === test;
-  if ('from' in test) return typeof value === 'number' && value >= test.from && value <= test.to;
+  if ('least' in test) return typeof value === 'number' && value >= test.least && value <= test.most;
   return test.some((word) => word === value);
 }
 

@@ -180,7 +180,8 @@ function readCell(value: unknown, where: string, column: Column, row: Context & 
 function rowName(fields: Readonly<Record<string, unknown>>, where: string, table: Context): string {
   const parts = table.key.map((id) => {
     const column = table.columns.find((one) => one.id === id);
-    const value = fields[id];
+    const printed = fields[id];
+    const value = typeof printed === 'object' && printed !== null && 'value' in printed ? printed.value : printed;
     if (value === null || value === undefined)
       throw new InputError(at(where, id), 'is empty, and the row is named by it');
     if (column?.dimension === 'load' || column?.dimension === 'flow') return `up to ${String(value)}`;

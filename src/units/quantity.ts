@@ -15,8 +15,8 @@ export type Load = Quantity<'load/60'>;
 
 export const noLoad = 0 as Load;
 const sixtieths = 60;
-/** Printed figures are exact in sixtieths; what is not (continuous flow) is rounded up, never down. */
-export const loadOf = (units: number): Load => Math.ceil(units * sixtieths - 1e-6) as Load;
+/** Printed figures are exact in sixtieths; what is not (continuous flow) is rounded up, never down. Nothing is 0, not -0. */
+export const loadOf = (units: number): Load => (Math.ceil(units * sixtieths - 1e-6) + 0) as Load;
 export const unitsOf = (load: Load): number => load / sixtieths;
 export const plusLoad = (a: Load, b: Load): Load => (a + b) as Load;
 
