@@ -148,12 +148,13 @@ function openTable(
   family: string,
 ): Table {
   if (!laid.local) {
+    const over = overlays.filter(({ tables }) => tables[id] !== undefined);
     const json = overlays.reduce(
       (file: unknown, overlay) => overTable(file, id, laid.where, series, overlay),
       laid.json,
     );
-    const changed = overlays.some((overlay) => overlay.local && overlay.tables[id] !== undefined);
-    return readTable(json, changed ? `${id} (local)` : id, laid.where, series);
+    const where = [...over.map((overlay) => overlay.where).reverse(), laid.where].join(' over ');
+    return readTable(json, over.some(({ local }) => local) ? `${id} (local)` : id, where, series);
   }
   const table = readTable(laid.json, `${id} (local)`, laid.where, series);
   const ours = readTable(source.read(`${family}/${id}.json`), id, placeOf(source, `${family}/${id}.json`), series);

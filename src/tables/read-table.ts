@@ -159,7 +159,7 @@ function readCell(value: unknown, where: string, column: Column, row: Context & 
   if (column.dimension === 'load-by-trap' && typeof printed === 'object' && printed !== null) {
     const byTrap = Object.entries(objectAt(printed, where)).map(([label, load]): LoadAtTrap => {
       const trap = sizeIn(row.series, label);
-      if (trap === undefined) throw new InputError(at(where, label), 'is no size of the code’s series');
+      if (trap === undefined) throw new InputError(at(where, label), "is no size of the code's series");
       return { trap, load: { value: loadOf(numberAt(load, at(where, label))), trust, place } };
     });
     const first = byTrap[0];
