@@ -2,11 +2,11 @@ import type { Box } from './vector.ts';
 
 /** Finds the boxes that touch a box. Items keep the numbers they were given in. */
 export interface BoxGrid {
-  /** Calls `visit` once for each item whose box touches `where`, in no stated order. */
+  /** Calls `visit` once for each item whose box touches `where`, in no stated order. Not to be called from `visit`. */
   touching(where: Box, visit: (item: number) => void): void;
 }
 
-const finest = 0.25;
+const finest = 0.5;
 const step = 4;
 /** Enough for a box of any size that a number can mean in metres on Earth. */
 const levels = 24;
@@ -18,85 +18,106 @@ const widest = 3;
  * takes time in proportion to the number of boxes and asking to what is found. null boxes and boxes of numbers that
  * are not finite are never found.
  */
-export function boxGrid(given: readonly (Box | null)[]): BoxGrid {
-  const boxes = given.map((box) => (box === null || !hasNumbers(box) ? null : box));
+export function boxGrid(boxes: readonly (Box | null)[]): BoxGrid {
   const level = new Int8Array(boxes.length).fill(-1);
+  const bounds = new Float64Array(6 * boxes.length);
   const onLevel: number[][] = Array.from({ length: levels }, () => []);
-  let entries = 0;
   boxes.forEach((box, item) => {
-    if (box === null) return;
+    if (box === null || !hasNumbers(box)) return;
+    bounds.set(box.min, 6 * item);
+    bounds.set(box.max, 6 * item + 3);
     const size = Math.max(box.max[0] - box.min[0], box.max[1] - box.min[1], box.max[2] - box.min[2]);
     let l = 0;
     while (l < levels - 1 && size > finest * step ** l * (widest - 1)) l++;
     level[item] = l;
     onLevel[l]!.push(item);
-    eachCell(box, l, () => entries++);
   });
 
-  const mask = 2 ** Math.max(4, Math.ceil(Math.log2(entries + 1))) - 1;
+  // First count what falls into each bucket, then fill: one block of memory, no lists.
+  const cells = new Int32Array(6);
+  let entries = 0;
+  onLevel.forEach((items, l) => {
+    for (const item of items) {
+      cellsOf(bounds, 6 * item, l, cells);
+      entries += cellCount(cells);
+    }
+  });
+  const mask = 2 ** Math.max(4, Math.ceil(Math.log2(entries + 1)) + 1) - 1;
   const start = new Uint32Array(mask + 2);
-  boxes.forEach((box, item) => {
-    if (box !== null) eachCell(box, level[item]!, (hash) => start[(hash & mask) + 1]!++);
-  });
-  for (let i = 0; i <= mask; i++) start[i + 1]! += start[i]!;
-  const fill = start.slice();
   const items = new Uint32Array(entries);
-  boxes.forEach((box, item) => {
-    if (box !== null)
-      eachCell(box, level[item]!, (hash) => {
-        items[fill[hash & mask]!++] = item;
-      });
-  });
+  for (const filling of [false, true]) {
+    onLevel.forEach((here, l) => {
+      for (const item of here) {
+        cellsOf(bounds, 6 * item, l, cells);
+        for (let x = cells[0]!; x <= cells[3]!; x++)
+          for (let y = cells[1]!; y <= cells[4]!; y++)
+            for (let z = cells[2]!; z <= cells[5]!; z++) {
+              const bucket = hash(x, y, z, l) & mask;
+              if (filling) items[--start[bucket]!] = item;
+              else start[bucket]!++;
+            }
+      }
+    });
+    if (!filling) for (let bucket = 1; bucket < start.length; bucket++) start[bucket]! += start[bucket - 1]!;
+  }
 
   const seen = new Uint32Array(boxes.length);
+  const wanted = new Float64Array(6);
   let turn = 0;
+  const meet = (item: number, visit: (item: number) => void): void => {
+    if (seen[item] === turn) return;
+    seen[item] = turn;
+    const at = 6 * item;
+    if (
+      bounds[at]! <= wanted[3]! &&
+      bounds[at + 1]! <= wanted[4]! &&
+      bounds[at + 2]! <= wanted[5]! &&
+      bounds[at + 3]! >= wanted[0]! &&
+      bounds[at + 4]! >= wanted[1]! &&
+      bounds[at + 5]! >= wanted[2]!
+    )
+      visit(item);
+  };
   return {
     touching(where, visit) {
       if (!hasNumbers(where)) return;
-      const now = ++turn;
-      const meet = (item: number): void => {
-        if (seen[item] === now || !touch(boxes[item]!, where)) return;
-        seen[item] = now;
-        visit(item);
-      };
+      turn++;
+      wanted.set(where.min, 0);
+      wanted.set(where.max, 3);
       for (let l = 0; l < levels; l++) {
         const here = onLevel[l]!;
         if (here.length === 0) continue;
-        if (cellCount(where, l) > here.length) here.forEach(meet);
-        else
-          eachCell(where, l, (hash) => {
-            const bucket = hash & mask;
-            for (let i = start[bucket]!; i < start[bucket + 1]!; i++) meet(items[i]!);
-          });
+        cellsOf(wanted, 0, l, cells);
+        if (cellCount(cells) > here.length) {
+          for (const item of here) meet(item, visit);
+          continue;
+        }
+        for (let x = cells[0]!; x <= cells[3]!; x++)
+          for (let y = cells[1]!; y <= cells[4]!; y++)
+            for (let z = cells[2]!; z <= cells[5]!; z++) {
+              const bucket = hash(x, y, z, l) & mask;
+              for (let i = start[bucket]!; i < start[bucket + 1]!; i++) meet(items[i]!, visit);
+            }
       }
     },
   };
 }
 
-const hasNumbers = ({ min, max }: Box): boolean => [...min, ...max].every(Number.isFinite);
+const hasNumbers = ({ min, max }: Box): boolean =>
+  Number.isFinite(min[0] + min[1] + min[2]) && Number.isFinite(max[0] + max[1] + max[2]);
 
-function cellCount({ min, max }: Box, level: number): number {
+/** First and last cell along each axis. Cells past 32 bits wrap: they only share buckets, and boxes are compared anyway. */
+function cellsOf(bounds: Float64Array, at: number, level: number, cells: Int32Array): void {
   const cell = finest * step ** level;
-  return [0, 1, 2].reduce((n, i) => n * (Math.floor(max[i]! / cell) - Math.floor(min[i]! / cell) + 1), 1);
+  for (let i = 0; i < 6; i++) cells[i] = Math.floor(bounds[at + i]! / cell);
 }
 
-function touch(a: Box, b: Box): boolean {
-  return (
-    a.min[0] <= b.max[0] &&
-    b.min[0] <= a.max[0] &&
-    a.min[1] <= b.max[1] &&
-    b.min[1] <= a.max[1] &&
-    a.min[2] <= b.max[2] &&
-    b.min[2] <= a.max[2]
-  );
-}
+const cellCount = (cells: Int32Array): number =>
+  (cells[3]! - cells[0]! + 1) * (cells[4]! - cells[1]! + 1) * (cells[5]! - cells[2]! + 1);
 
-function eachCell({ min, max }: Box, level: number, visit: (hash: number) => void): void {
-  const cell = finest * step ** level;
-  const [x0, y0, z0] = [Math.floor(min[0] / cell), Math.floor(min[1] / cell), Math.floor(min[2] / cell)];
-  const [x1, y1, z1] = [Math.floor(max[0] / cell), Math.floor(max[1] / cell), Math.floor(max[2] / cell)];
-  for (let x = x0; x <= x1; x++)
-    for (let y = y0; y <= y1; y++)
-      for (let z = z0; z <= z1; z++)
-        visit(Math.imul(x, 73856093) ^ Math.imul(y, 19349663) ^ Math.imul(z, 83492791) ^ Math.imul(level, 668265263));
+function hash(x: number, y: number, z: number, level: number): number {
+  const mixed = Math.imul(x, 73856093) ^ Math.imul(y, 19349663) ^ Math.imul(z, 83492791) ^ Math.imul(level, 668265263);
+  // Buildings repeat at round distances: without stirring, whole storeys would share a bucket.
+  const stirred = Math.imul(mixed ^ (mixed >>> 15), 0x2c1b3c6d);
+  return stirred ^ (stirred >>> 13);
 }

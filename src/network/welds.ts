@@ -40,10 +40,12 @@ export class Welds {
   private readonly held: boolean[];
   private readonly onPipe = new Map<number, readonly number[]>();
   private readonly piping: Piping;
+  private readonly firstWall: number;
 
   constructor(piping: Piping) {
     this.piping = piping;
     const nodes = 2 * piping.pipes.length + piping.bodies.length;
+    this.firstWall = nodes;
     this.parent = Array.from({ length: nodes }, (_, node) => node);
     this.bodyAt = Array.from({ length: nodes }, (_, node) => Math.max(-1, node - 2 * piping.pipes.length));
     this.held = new Array<boolean>(nodes).fill(false);
@@ -97,7 +99,8 @@ export class Welds {
   }
 
   wallOf(node: number): WallPlace | null {
-    return this.walls[node - 2 * this.piping.pipes.length - this.piping.bodies.length] ?? null;
+    const place = node - this.firstWall;
+    return place < 0 ? null : this.walls[place]!;
   }
 
   elementOf(node: number): ElementId {
