@@ -1,5 +1,6 @@
 import { InputError } from '../findings/input-error.ts';
-import { show } from './column-unit.ts';
+import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
+import { show, sizeIn } from './column-unit.ts';
 import { at, fieldsOf, type JsonObject, listAt, objectAt, textAt, textsAt } from './read-json.ts';
 import type { Table } from './table.ts';
 
@@ -19,6 +20,8 @@ export interface KindEntry {
   readonly onlyIfSaid: boolean;
   /** Table that gives the load by trap size, where the row itself has none or the trap is past its largest. */
   readonly loadFrom: string | null;
+  /** Trap of the fixture as it is made, where the printed row says no size. */
+  readonly usualTrap: NominalSize | null;
 }
 
 export interface FixtureKinds {
@@ -30,7 +33,7 @@ export interface FixtureKinds {
   readonly unlisted: string | null;
 }
 
-export function readKinds(json: unknown, where: string, tables: readonly Table[]): FixtureKinds {
+export function readKinds(json: unknown, where: string, tables: readonly Table[], series: SizeSeries): FixtureKinds {
   const file = fieldsOf(json, where, ['table', 'unlisted', 'kinds'], ['note']);
   const tableOrNull = (value: unknown, place: string): string | null => {
     if (value === null || value === undefined) return null;
@@ -44,7 +47,12 @@ export function readKinds(json: unknown, where: string, tables: readonly Table[]
   const known = new Set(table?.rows.map(({ name: row }) => row));
   const entries = listAt(file.kinds, at(where, 'kinds')).map((entry, index): KindEntry => {
     const place = `${where}: kinds[${index}]`;
-    const fields = fieldsOf(entry, place, ['rows', 'kind'], ['where', 'unless', 'onlyIfSaid', 'loadFrom', 'note']);
+    const fields = fieldsOf(
+      entry,
+      place,
+      ['rows', 'kind'],
+      ['where', 'unless', 'onlyIfSaid', 'loadFrom', 'usualTrap', 'note'],
+    );
     const rows = textsAt(fields.rows, at(place, 'rows'));
     for (const row of rows)
       if (!known.has(row)) throw new InputError(at(place, 'rows'), `${show(row)} is no row of ${name}`);
@@ -55,9 +63,17 @@ export function readKinds(json: unknown, where: string, tables: readonly Table[]
       unless: readTests(fields.unless, at(place, 'unless')),
       onlyIfSaid: fields.onlyIfSaid === true,
       loadFrom: tableOrNull(fields.loadFrom, at(place, 'loadFrom')),
+      usualTrap: readTrap(fields.usualTrap, at(place, 'usualTrap'), series),
     };
   });
   return { table: name, entries, unlisted: tableOrNull(file.unlisted, at(where, 'unlisted')) };
+}
+
+function readTrap(value: unknown, where: string, series: SizeSeries): NominalSize | null {
+  if (value === undefined) return null;
+  const size = sizeIn(series, textAt(value, where));
+  if (size === undefined) throw new InputError(where, `is ${show(value)}, expected a size of the code's series`);
+  return size;
 }
 
 function readTests(value: unknown, where: string): ReadonlyMap<string, FactTest> {

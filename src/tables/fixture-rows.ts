@@ -1,4 +1,6 @@
 import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
+import { rowAtSize } from './find-row.ts';
+import { sizeColumn } from './find-size.ts';
 import type { FactTest, FixtureKinds, KindEntry } from './fixture-kinds.ts';
 import type { Cell, LoadAtTrap, Row, Table, Word } from './table.ts';
 
@@ -17,6 +19,8 @@ export interface FixtureRow {
   readonly loads: readonly (LoadAtTrap | { readonly trap: null; readonly load: Cell<number> })[];
   /** Table that gives the load by trap where the row does not. */
   readonly loadFrom: string | null;
+  /** Trap of the fixture as it is made, where print says no more than "as the fixture's outlet". */
+  readonly usualTrap: NominalSize | null;
   readonly note: string | null;
 }
 
@@ -39,27 +43,85 @@ export function fixtureRowsFor(
   return kinds.entries
     .filter((entry) => fits(entry, facts))
     .flatMap((entry) => {
-      const rows = entry.rows.flatMap((key) => table.rows.find(({ name }) => name === key) ?? []);
-      const row = joined(entry, rows, columns);
+      const row = joined(entry, rowsOfEntry(entry, table), columns);
       return row === null ? [] : [row];
     });
 }
 
-/**
- * Load of the row for a trap: print's own figure for it, between two the larger, past the largest the largest. null:
- * the row has none for it and `loadFrom` names the table that does.
- */
-export function loadAtTrap(row: FixtureRow, trap: NominalSize | null, series: SizeSeries): Cell<number> | null {
-  const first = row.loads[0];
-  if (first === undefined) return null;
-  if (first.trap === null || trap === null) return first.load;
-  const reached = row.loads.find((one) => one.trap !== null && series.rank(one.trap) >= series.rank(trap));
-  if (reached === undefined && row.loadFrom !== null) return null;
-  return (reached ?? row.loads.at(-1) ?? first).load;
+/** All rows that any fixture may be: what an unidentified one is measured by. Groups of fixtures are none of them. */
+export function allFixtureRows(
+  kinds: FixtureKinds,
+  table: Table,
+  columns: FixtureColumns = { load: 'load', outlet: 'outlet' },
+): readonly (FixtureRow & { readonly kind: string })[] {
+  return kinds.entries.flatMap((entry) => {
+    const row = joined(entry, rowsOfEntry(entry, table), columns);
+    return row === null ? [] : [{ ...row, kind: entry.kind }];
+  });
 }
 
-/** Largest trap that the row prints a load for; null where the load does not depend on the trap. */
-export const largestTrap = (row: FixtureRow): NominalSize | null => row.loads.at(-1)?.trap ?? null;
+/** Stands for a fixture that the code does not list: its load by its trap. null where the code has no such table. */
+export function unlistedFixture(family: TrapTables): FixtureRow | null {
+  const { unlisted } = family.kinds;
+  const first = unlisted === null ? undefined : family.table(unlisted).rows[0];
+  if (unlisted === null || first === undefined) return null;
+  const outlet = first.size(sizeColumn(family.table(unlisted)));
+  const title = family.table(unlisted).title;
+  return { key: 'unlisted', title, outlet, loads: [], loadFrom: unlisted, usualTrap: null, note: null };
+}
+
+/** What of a family the trap look-ups need. */
+export interface TrapTables {
+  readonly series: SizeSeries;
+  readonly kinds: FixtureKinds;
+  table(id: string): Table;
+}
+
+/**
+ * Load of the row for a trap: print's own figure for it, between two the larger; past the largest the table that the
+ * row refers to, else the largest. null: that table ends before the trap, or the row has no load at all.
+ */
+export function loadAtTrap(row: FixtureRow, trap: NominalSize | null, family: TrapTables): Cell<number> | null {
+  const first = row.loads[0];
+  if (first !== undefined) {
+    if (first.trap === null || trap === null) return first.load;
+    const { series } = family;
+    const reached = row.loads.find((one) => one.trap !== null && series.rank(one.trap) >= series.rank(trap));
+    if (reached !== undefined || row.loadFrom === null) return (reached ?? row.loads.at(-1) ?? first).load;
+  }
+  if (row.loadFrom === null) return null;
+  const table = family.table(row.loadFrom);
+  const column = sizeColumn(table);
+  const found = trap === null ? table.rows[0] : rowAtSize(table, column, trap, 'larger', family.series);
+  const load = found?.amount(loadColumn(table));
+  return load === undefined || typeof load.value !== 'number' ? null : (load as Cell<number>);
+}
+
+/**
+ * Smallest and largest trap that print gives the row: its outlet, the traps of its loads, the table it refers to. The
+ * usual trap of the fixture as made where print says no more than that.
+ */
+export function trapRange(
+  row: FixtureRow,
+  family: TrapTables,
+): { readonly least: NominalSize; readonly largest: NominalSize } {
+  const { series } = family;
+  const referred = row.loadFrom === null ? [] : family.table(row.loadFrom).sizes;
+  const printed = row.loads.flatMap(({ trap }) => trap ?? []);
+  const outlet = row.outlet.value;
+  const least = isSize(outlet) ? outlet : (printed[0] ?? row.usualTrap ?? referred[0] ?? series.sizes[0]?.label);
+  if (least === undefined) throw new Error('a code without sizes');
+  return { least, largest: [...printed, ...referred].reduce(series.larger, least) };
+}
+
+const rowsOfEntry = (entry: KindEntry, table: Table): readonly Row[] =>
+  entry.rows.flatMap((key) => table.rows.find(({ name }) => name === key) ?? []);
+
+function loadColumn(table: Table): string {
+  const column = table.columns.find(({ dimension }) => dimension === 'load');
+  if (column === undefined) throw new Error(`table ${table.id} has no column of loads`);
+  return column.id;
+}
 
 function fits(entry: KindEntry, facts: FixtureFacts): boolean {
   if (entry.kind !== facts.kind) return false;
@@ -97,6 +159,7 @@ function joined(entry: KindEntry, rows: readonly Row[], columns: FixtureColumns)
     outlet: first.size(columns.outlet),
     loads,
     loadFrom: entry.loadFrom,
+    usualTrap: entry.usualTrap,
     note: first.note,
   };
 }

@@ -73,7 +73,7 @@ export function openFamily(source: TableSource, family: string, edition: string,
   const ruleFile = listOf('rules', `${family}/rules.json`);
   const rules = readRules(ruleFile.json, ruleFile.where);
   const settings = readSettings(source.read(`${family}/settings.json`), placeOf(source, `${family}/settings.json`));
-  const kinds = readKinds(source.read(`${family}/kinds.json`), placeOf(source, `${family}/kinds.json`), tables);
+  const kinds = readKinds(source.read(`${family}/kinds.json`), placeOf(source, `${family}/kinds.json`), tables, series);
   const verify = readVerifyList(
     source.read(`${family}/verify.json`),
     placeOf(source, `${family}/verify.json`),

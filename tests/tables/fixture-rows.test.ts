@@ -1,5 +1,12 @@
 import { describe, expect, test } from 'vitest';
-import { type FixtureFacts, fixtureRowsFor, largestTrap, loadAtTrap } from '../../src/tables/fixture-rows.ts';
+import {
+  allFixtureRows,
+  type FixtureFacts,
+  fixtureRowsFor,
+  loadAtTrap,
+  trapRange,
+  unlistedFixture,
+} from '../../src/tables/fixture-rows.ts';
 import { inches, openOwn } from '../support/table-files.ts';
 
 const npc = openOwn('npc-2020');
@@ -39,34 +46,49 @@ describe('which rows of Table 2.4.9.3. a fixture may be', () => {
 });
 
 describe('the load of a row by its trap', () => {
-  const cases: readonly [facts: FixtureFacts, trap: string | null, fu: number | null, why: string][] = [
-    [{ kind: 'floor-drain' }, '2', 2, 'printed'],
-    [{ kind: 'floor-drain' }, '3', 3, 'printed'],
-    [{ kind: 'floor-drain' }, '2 1/2', 3, 'between two, the larger'],
-    [{ kind: 'floor-drain' }, '4', null, 'past 3 in: Table 2.4.10.2.'],
-    [{ kind: 'mop-sink' }, '3', 3, 'RULES example: a mop sink with a 3 in trap'],
-    [{ kind: 'mop-sink' }, '4', 3, 'past the largest: its load'],
-    [{ kind: 'lavatory' }, '1 1/2', 1.5, 'printed'],
-    [{ kind: 'lavatory' }, null, 1, 'trap unknown: the smallest'],
-    [{ kind: 'bathtub' }, '2', 1.5, 'one load for every trap'],
-    [{ kind: 'wash-fountain' }, '1 1/2', null, 'by trap, Table 2.4.10.2.'],
+  const cases: readonly [facts: FixtureFacts, trap: string | null, fu: number | null, table: string, why: string][] = [
+    [{ kind: 'floor-drain' }, '2', 2, 'fixtures', 'printed'],
+    [{ kind: 'floor-drain' }, '3', 3, 'fixtures', 'printed'],
+    [{ kind: 'floor-drain' }, '2 1/2', 3, 'fixtures', 'between two, the larger'],
+    [{ kind: 'floor-drain' }, '4', 6, 'loads-by-trap', 'past 3 in: Table 2.4.10.2.'],
+    [{ kind: 'floor-drain' }, '5', null, '', 'past that table too'],
+    [{ kind: 'mop-sink' }, '3', 3, 'fixtures', 'RULES example: a mop sink with a 3 in trap'],
+    [{ kind: 'mop-sink' }, '4', 3, 'fixtures', 'past the largest: its load'],
+    [{ kind: 'lavatory' }, '1 1/2', 1.5, 'fixtures', 'printed'],
+    [{ kind: 'lavatory' }, null, 1, 'fixtures', 'trap unknown: the smallest'],
+    [{ kind: 'bathtub' }, '2', 1.5, 'fixtures', 'one load for every trap'],
+    [{ kind: 'wash-fountain' }, '1 1/2', 2, 'loads-by-trap', 'by trap, Table 2.4.10.2.'],
   ];
-  for (const [facts, trap, fu, why] of cases)
-    test(`${facts.kind}, trap ${trap ?? 'unknown'}: ${fu ?? 'another table'} (${why})`, () => {
-      const row = rowsFor(facts)[0]!;
-      const load = loadAtTrap(row, trap === null ? null : inches(trap), npc.series);
+  for (const [facts, trap, fu, table, why] of cases)
+    test(`${facts.kind}, trap ${trap ?? 'unknown'}: ${fu ?? 'no figure'} (${why})`, () => {
+      const load = loadAtTrap(rowsFor(facts)[0]!, trap === null ? null : inches(trap), npc);
       expect(load === null ? null : load.value / 60).toBe(fu);
-      if (fu === null) expect(row.loadFrom).toBe('loads-by-trap');
+      if (load !== null) expect(load.place.table).toBe(table);
     });
 
-  test('largest trap that is printed', () => {
-    expect(largestTrap(rowsFor({ kind: 'mop-sink' })[0]!)).toBe('3 in');
-    expect(largestTrap(rowsFor({ kind: 'bathtub' })[0]!)).toBeNull();
+  test('RULES example: a laboratory sink of an odd kind on a 2 in trap counts 3', () => {
+    const row = unlistedFixture(npc)!;
+    expect(loadAtTrap(row, inches('2'), npc)?.value).toBe(180);
+    expect(trapRange(row, npc)).toEqual({ least: '1¼ in', largest: '4 in' });
   });
 
-  test('a fixture of no row takes the table by trap', () => {
-    expect(npc.kinds.unlisted).toBe('loads-by-trap');
-  });
+  const ranges: readonly [facts: FixtureFacts, least: string, largest: string, why: string][] = [
+    [{ kind: 'mop-sink' }, '1 1/2', '3', 'loads for three traps'],
+    [{ kind: 'bathtub' }, '1 1/2', '1 1/2', 'print names one'],
+    [{ kind: 'floor-drain' }, '2', '4', 'past 3 in by Table 2.4.10.2.'],
+    [{ kind: 'clothes-washer', domestic: true }, '2', '2', 'no outlet size, a 2 in trap'],
+  ];
+  for (const [facts, least, largest, why] of ranges)
+    test(`traps of a ${facts.kind}: ${least} to ${largest} in (${why})`, () => {
+      expect(trapRange(rowsFor(facts)[0]!, npc)).toEqual({ least: inches(least), largest: inches(largest) });
+    });
+});
+
+test('an unidentified fixture is measured by every row, groups apart', () => {
+  const all = allFixtureRows(npc.kinds, npc.table('fixtures'));
+  expect(new Set(all.map(({ key }) => key)).size).toBe(34);
+  expect(all.some(({ kind }) => kind === 'water-closet')).toBe(true);
+  expect(all.some(({ key }) => key.startsWith('bathroom-group'))).toBe(false);
 });
 
 test('every row of the printed table is reached by some kind, groups apart', () => {
