@@ -6,11 +6,12 @@ import type { FixtureKind } from './identity.ts';
 
 export const answersFormat = 'drainwright-answers';
 const readings = ['wet-vent', 'circuit-vent', 'individual-vent'] as const;
-const parts = ['settings', 'sewerEnds', 'fixtures', 'pipes', 'batteries', 'leaveOut', 'cleanouts'];
+/** `questions` tells people what to fill in and is not read. */
+const parts = ['questions', 'settings', 'sewerEnds', 'fixtures', 'pipes', 'batteries', 'leaveOut', 'cleanouts'];
 
 /** Answers from the text of an answers file. `where` is its path; whatever is wrong is named at its place. */
 export function readAnswers(text: string, where: string): Answers {
-  const file = fieldsOf(parsed(text, where), where, ['format', 'version'], parts);
+  const file = fieldsOf(answered(parsed(text, where)), where, ['format', 'version'], parts);
   if (file.format !== answersFormat)
     throw new InputError(at(where, 'format'), `is ${show(file.format)}, expected "${answersFormat}"`);
   if (file.version !== 1) throw new InputError(at(where, 'version'), `is ${show(file.version)}, expected 1`);
@@ -42,6 +43,21 @@ function parsed(text: string, where: string): unknown {
     });
   }
 }
+
+/** Without what is still null: a question that nobody answered is as if it were not there. */
+function answered(value: unknown): unknown {
+  if (typeof value !== 'object' || value === null || Array.isArray(value)) return value;
+  const kept = Object.entries(value).flatMap(([key, part]): [string, unknown][] => {
+    const rest = answered(part);
+    const isEmptied =
+      isRecord(part) && isRecord(rest) && Object.keys(part).length > 0 && Object.keys(rest).length === 0;
+    return rest === null || isEmptied ? [] : [[key, rest]];
+  });
+  return Object.fromEntries(kept);
+}
+
+const isRecord = (value: unknown): value is object =>
+  typeof value === 'object' && value !== null && !Array.isArray(value);
 
 /** A code names the settings that it knows and what they may be; here only the shape is checked. */
 function settingAt(value: unknown, place: string): Settings[string] {

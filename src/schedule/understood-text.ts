@@ -66,7 +66,8 @@ export function titleText({ model, models, code, fixtures, pipes, counts }: Resu
   ];
 }
 
-const row = (label: string): string => `  ${padded(label, 11)} `;
+/** The label that stands before a line of what was understood. */
+export const row = (label: string): string => `  ${padded(label, 11)} `;
 const mostSystems = 6;
 const mostBatteries = 10;
 

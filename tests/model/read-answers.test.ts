@@ -38,6 +38,18 @@ test('a file with nothing but its format leaves everything open', () => {
   expect(read({}).sewerEnds).toEqual([]);
 });
 
+test('what is still null is not answered, and the questions are for people', () => {
+  const answers = read({
+    questions: [{ ask: 'What is Basin 1?' }],
+    settings: { assumedSlope: null },
+    fixtures: { a: { kind: null }, b: { kind: 'sink', detail: { flush: null } } },
+    batteries: { B1: { reading: null } },
+  });
+  expect(answers.settings).toEqual({});
+  expect([...answers.fixtures]).toEqual([['b', { kind: 'sink' }]]);
+  expect(answers.batteries.size).toBe(0);
+});
+
 const wrong = [
   { file: { format: 'other' }, says: 'answers.json: format: is "other", expected "drainwright-answers"' },
   { file: { version: 2 }, says: 'answers.json: version: is 2, expected 1' },
@@ -51,7 +63,7 @@ const wrong = [
   { file: { pipes: { x: { slope: '2 %' } } }, says: 'answers.json: pipes.x.slope: is "2 %", expected a number' },
   { file: { batteries: { B1: { reading: 'loop' } } }, says: 'answers.json: batteries.B1.reading: is "loop"' },
   { file: { sewerEnds: 'x' }, says: 'answers.json: sewerEnds: is a string, expected a list' },
-  { file: { settings: { K: null } }, says: 'answers.json: settings.K: is null, expected a number' },
+  { file: { settings: { K: {} } }, says: 'answers.json: settings.K: is {}, expected a number' },
 ];
 for (const { file, says } of wrong) test(`refused: ${says}`, () => expect(() => read(file)).toThrow(says));
 

@@ -1,0 +1,50 @@
+import { explainFixture } from './explain-fixture.ts';
+import { explainPipe } from './explain-pipe.ts';
+import type { Found } from './find-in-result.ts';
+import type { Result, ResultFixture, ResultPipe, SizeLabel, TrailStep } from './result.ts';
+
+/** `format: "drainwright-explain"`: everything about one pipe or fixture, as data and as sentences. */
+export interface Explanation {
+  readonly format: 'drainwright-explain';
+  readonly version: 1;
+  readonly model: Result['model'];
+  readonly code: Result['code'];
+  readonly pipe?: ResultPipe;
+  readonly fixture?: ResultFixture;
+  /** Whole sentences, in the order they are to be read. */
+  readonly story: readonly string[];
+  /** Of pipes: the next smaller size of the code, and the first demand of the trail that it fails. */
+  readonly nextSmaller: NextSmaller | null;
+  readonly caution: string;
+}
+
+export interface NextSmaller {
+  readonly size: SizeLabel;
+  readonly fails: TrailStep;
+}
+
+/** `sizes` are those the code offers, smallest first. */
+export function explain(result: Result, found: Found, sizes: readonly SizeLabel[]): Explanation {
+  const { model, code, caution } = result;
+  const head = { format: 'drainwright-explain', version: 1, model, code } as const;
+  if (found.kind === 'fixture') {
+    return {
+      ...head,
+      fixture: found.fixture,
+      story: explainFixture(result, found.fixture),
+      nextSmaller: null,
+      caution,
+    };
+  }
+  const nextSmaller = nextSmallerOf(found.pipe, sizes);
+  return { ...head, pipe: found.pipe, story: explainPipe(result, found.pipe, nextSmaller), nextSmaller, caution };
+}
+
+/** null where no size is required, or none is smaller. */
+export function nextSmallerOf({ required, trail }: ResultPipe, sizes: readonly SizeLabel[]): NextSmaller | null {
+  const most = required?.most ?? null;
+  if (most === null) return null;
+  const size = sizes.filter(({ dn }) => dn < most.dn).at(-1);
+  const fails = trail.find(({ asks }) => asks === null || (size !== undefined && asks.dn > size.dn));
+  return size === undefined || fails === undefined ? null : { size, fails };
+}

@@ -1,0 +1,143 @@
+import { fixtureKinds } from '../model/read-answers.ts';
+import { elementNames } from './element-names.ts';
+import type { Result, ResultBattery, ResultFixture } from './result.ts';
+import { counted, listed, plainWords } from './trade-words.ts';
+
+/** Something the model does not say and a person can: what to ask, and where the answer goes in an answers file. */
+export interface Question {
+  /** GlobalIds, the thing in question first. */
+  readonly about: readonly string[];
+  readonly ask: string;
+  /** How many pipes may get another size or verdict by the answer. */
+  readonly weight: number;
+  /** What may be answered; empty where any size, slope or name may. */
+  readonly choices: readonly string[];
+  readonly answer: AnswerPlace;
+}
+
+export interface AnswerPlace {
+  readonly part: 'settings' | 'sewerEnds' | 'fixtures' | 'pipes' | 'batteries';
+  readonly key: string | null;
+  /** `kind`; a dot leads further in: `detail.flush`. */
+  readonly field: string | null;
+}
+
+/** Most weighty first; equal weights by part, then by GlobalId. */
+export function questionsOf(result: Result): Question[] {
+  const questions = [
+    ...sewerQuestions(result),
+    ...fixtureQuestions(result),
+    ...batteryQuestions(result),
+    ...slopeQuestion(result),
+    ...sizeQuestions(result),
+  ];
+  return questions.sort(
+    (a, b) => b.weight - a.weight || order(a.answer.part, b.answer.part) || order(a.about[0] ?? '', b.about[0] ?? ''),
+  );
+}
+
+const order = (a: string, b: string): number => (a < b ? -1 : a > b ? 1 : 0);
+
+function sewerQuestions(result: Result): Question[] {
+  const names = elementNames(result);
+  return result.findings
+    .filter(({ code }) => code === 'sewer-end-assumed')
+    .flatMap(({ about }) => {
+      const [end] = about;
+      if (end === undefined) return [];
+      const system = result.systems.find(({ sewerEnd }) => sewerEnd.pipe === end);
+      return [
+        {
+          about,
+          ask: `Does the water leave at ${names.of(end)}? If not, name the pipe that goes to the sewer.`,
+          weight: system?.pipes ?? result.pipes.length,
+          choices: [],
+          answer: { part: 'sewerEnds', key: null, field: null },
+        } as const,
+      ];
+    });
+}
+
+function fixtureQuestions(result: Result): Question[] {
+  const names = elementNames(result);
+  const open = result.fixtures.filter(({ kind, load }) => kind === null || load.least !== load.most);
+  return open.map((fixture) => {
+    const name = names.of(fixture.globalId);
+    const weight = openPipes(result, fixture);
+    const key = fixture.globalId;
+    const about = [fixture.globalId];
+    if (fixture.kind === null) {
+      const ask = `What is ${name}? Nothing in the model tells its kind.`;
+      return { about, ask, weight, choices: fixtureKinds, answer: { part: 'fixtures', key, field: 'kind' } } as const;
+    }
+    const { field, choices } = openDetail(fixture);
+    const ask = `Which ${plainWords(fixture.kind)} is ${name}? The code counts them from ${fixture.load.least} to ${fixture.load.most} ${result.code.unit}.`;
+    return { about, ask, weight, choices, answer: { part: 'fixtures', key, field: `detail.${field}` } } as const;
+  });
+}
+
+/** The detail that tells the rows of a kind apart. */
+function openDetail({ kind, detail }: ResultFixture): { readonly field: string; readonly choices: readonly string[] } {
+  if (kind === 'water-closet' && detail.flush === null) return { field: 'flush', choices: ['tank', 'valve'] };
+  if (kind === 'urinal' && detail.style === null)
+    return { field: 'style', choices: ['stall', 'wall-washout', 'wall-other', 'pedestal'] };
+  if (kind === 'shower' && detail.heads === null) return { field: 'heads', choices: [] };
+  return { field: 'style', choices: [] };
+}
+
+/** Pipes downstream of a fixture, and those that carry its air, whose size is open. */
+function openPipes({ pipes }: Result, { globalId }: ResultFixture): number {
+  return pipes.filter(
+    ({ required, verdict, servesWater, servesAir }) =>
+      (verdict === 'unknown' || required?.least?.label !== required?.most?.label) &&
+      (servesWater?.includes(globalId) === true || servesAir?.includes(globalId) === true),
+  ).length;
+}
+
+function batteryQuestions({ batteries }: Result): Question[] {
+  return batteries.flatMap((battery): Question[] => {
+    const holding = battery.others.filter(({ holds }) => holds).map(({ reading }) => reading);
+    if (holding.length === 0) return [];
+    return [
+      {
+        about: battery.fixtures,
+        ask: `How is ${battery.id} (${counted(battery.fixtures.length, 'fixture')}) meant? It is read as ${plainWords(battery.reading)}; ${listed(holding.map(plainWords))} would hold as well.`,
+        weight: battery.pipes.length,
+        choices: [battery.reading, ...holding],
+        answer: { part: 'batteries', key: batteryKey(battery), field: 'reading' },
+      },
+    ];
+  });
+}
+
+/** An answer names a battery by its first fixture, which stays the same when others come and go. */
+const batteryKey = ({ fixtures, id }: ResultBattery): string => fixtures[0] ?? id;
+
+function slopeQuestion({ pipes, findings }: Result): Question[] {
+  const about = findings.filter(({ code }) => code === 'slope-unknown').flatMap(({ about: [pipe] }) => pipe ?? []);
+  const open = new Set(about);
+  const weight = pipes.filter(({ globalId }) => open.has(globalId)).length;
+  if (weight === 0) return [];
+  return [
+    {
+      about: [...open],
+      ask: `At what slope are level-drawn drains laid (${counted(weight, 'pipe')})? Metres a metre, such as 0.02.`,
+      weight,
+      choices: [],
+      answer: { part: 'settings', key: 'assumedSlope', field: null },
+    },
+  ];
+}
+
+function sizeQuestions(result: Result): Question[] {
+  const names = elementNames(result);
+  return result.pipes
+    .filter(({ modelled, required }) => modelled === null && required !== null)
+    .map(({ globalId, reason }) => ({
+      about: [globalId],
+      ask: `What size is ${names.of(globalId)}?${reason === undefined ? '' : ` ${reason}.`}`,
+      weight: 1,
+      choices: [],
+      answer: { part: 'pipes', key: globalId, field: 'size' },
+    }));
+}
