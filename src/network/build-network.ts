@@ -1,11 +1,12 @@
 import type { Finding, WithFindings } from '../findings/finding.ts';
 import type { Identity } from '../model/identity.ts';
-import type { Model } from '../model/model.ts';
+import type { ElementId, Model } from '../model/model.ts';
 import { assemble } from './assemble.ts';
 import { findDoubles } from './doubles.ts';
 import { fatesOf } from './fates.ts';
 import { joinFixtures, joinRunsThrough, joinTouching } from './join-bodies.ts';
-import { isAnsweredOut, leftOutReason } from './left-out-reason.ts';
+import { isAnsweredOut, type LeftOutReason, leftOutReason } from './left-out-reason.ts';
+import { misfiledByPlace, misfiledByPorts, misfiledFindings } from './misfiled.ts';
 import type { Network } from './network.ts';
 import { contradictedJoints, inferredJoints, openEnds, unconnectedFixtures } from './network-findings.ts';
 import { findPieces } from './pieces.ts';
@@ -13,7 +14,7 @@ import { endNode, pipingOf } from './piping.ts';
 import { joinPorts } from './port-joins.ts';
 import { proposeJoins } from './propose-joins.ts';
 import { freeEnds, settleJoins } from './settle-joins.ts';
-import { reachOf } from './tolerance.ts';
+import { type Reach, reachOf } from './tolerance.ts';
 import { Welds } from './welds.ts';
 
 export interface NetworkOptions {
@@ -32,10 +33,48 @@ export function buildNetwork(
   identities: readonly Identity[],
   options: NetworkOptions = {},
 ): WithFindings<Network> {
-  const leaveOut = options.leaveOut ?? [];
+  const reach = reachOf(options.maxGap ?? null);
   const reasons = model.elements.map((element) =>
-    isAnsweredOut(element, model, leaveOut) ? 'answer' : leftOutReason(element, identities[element.id]!, model),
+    isAnsweredOut(element, model, options.leaveOut ?? [])
+      ? 'answer'
+      : leftOutReason(element, identities[element.id]!, model),
   );
+  const byPorts = misfiledByPorts(model, identities, reasons);
+  let joining = joinAll(model, identities, without(reasons, byPorts), reach);
+  const byPlace = misfiledPipes(model, identities, joining, reach);
+  if (byPlace.length > 0) joining = joinAll(model, identities, without(joining.reasons, byPlace), reach);
+
+  const { piping, welds, flows, proposals } = joining;
+  const pieces = findPieces(identities, piping, welds);
+  const fates = fatesOf(model, identities, { ...joining, pieces });
+  const stays = (node: number): boolean => {
+    const { use } = fates[welds.elementOf(node)]!;
+    return use !== 'left-out' && use !== 'unresolved';
+  };
+  const assembly = assemble(model, piping, welds, flows, stays);
+  const kept = welds.all.filter(({ nodes }) => stays(nodes[0]));
+  const ported = kept.filter(({ how }) => how === 'ports').length;
+
+  const findings: Finding[] = [
+    ...joining.doubles,
+    ...misfiledFindings([...byPorts, ...byPlace], identities, model),
+    ...contradictedJoints(joining.contradictions.filter(({ between }) => fates[between[0]]!.use !== 'left-out')),
+    ...inferredJoints(welds, stays),
+    ...openEnds(proposals, piping, welds, stays),
+    ...(assembly.pipes.length > 0 ? unconnectedFixtures(identities, piping, welds, freeEnds(piping, welds)) : []),
+  ];
+  return { value: { ...assembly, fates, joined: { ports: ported, geometry: kept.length - ported } }, findings };
+}
+
+type Reasons = readonly (LeftOutReason | null)[];
+
+const without = (reasons: Reasons, readmitted: readonly ElementId[]): Reasons => {
+  const back = new Set<number>(readmitted);
+  return reasons.map((reason, id) => (back.has(id) ? null : reason));
+};
+
+/** Ports first, then geometry, from what lies in a fitting to what lies under a fixture. */
+function joinAll(model: Model, identities: readonly Identity[], reasons: Reasons, reach: Reach) {
   const candidates = reasons.map((reason) => reason === null);
   const { keeper, findings: doubles } = findDoubles(model, identities, candidates);
   const piping = pipingOf(
@@ -45,32 +84,34 @@ export function buildNetwork(
   );
   const welds = new Welds(piping);
   const { contradictions, flows } = joinPorts(model, identities, piping, keeper, welds);
-
-  const reach = reachOf(options.maxGap ?? null);
   const everyEnd = piping.pipes.flatMap((_, pipe) => [endNode(pipe, 0), endNode(pipe, 1)]);
   const proposals = proposeJoins(piping, freeEnds(piping, welds), everyEnd, reach);
   settleJoins(proposals, model, piping, welds, reach);
   joinTouching(model, piping, welds, reach);
   joinRunsThrough(model, piping, welds);
   joinFixtures(model, identities, piping, welds, reach);
+  return { reasons, keeper, doubles, piping, welds, contradictions, flows, proposals };
+}
 
-  const pieces = findPieces(identities, piping, welds);
-  const fates = fatesOf(model, identities, { reasons, keeper, piping, welds, pieces });
-  const stays = (node: number): boolean => {
-    const { use } = fates[welds.elementOf(node)]!;
-    return use !== 'left-out' && use !== 'unresolved';
-  };
-  const assembly = assemble(model, piping, welds, flows, stays);
-  const kept = welds.all.filter(({ nodes }) => stays(nodes[0]));
-  const byPorts = kept.filter(({ how }) => how === 'ports').length;
-
-  const findings: Finding[] = [
-    ...doubles,
-    ...contradictedJoints(contradictions.filter(({ between }) => fates[between[0]]!.use !== 'left-out')),
-    ...inferredJoints(welds, stays),
-    ...openEnds(proposals, piping, welds, stays),
-    ...(assembly.pipes.length > 0 ? unconnectedFixtures(identities, piping, welds, freeEnds(piping, welds)) : []),
-  ];
-  const joined = { ports: byPorts, geometry: kept.length - byPorts };
-  return { value: { ...assembly, fates, joined }, findings };
+function misfiledPipes(
+  model: Model,
+  identities: readonly Identity[],
+  { reasons, piping, welds }: ReturnType<typeof joinAll>,
+  reach: Reach,
+): readonly ElementId[] {
+  const suspects = new Set(
+    model.elements
+      .filter(({ id }) => {
+        const filed = reasons[id] ?? null;
+        return filed !== null && filed !== 'answer' && identities[id]!.part === 'pipe';
+      })
+      .map(({ id }) => id),
+  );
+  if (suspects.size === 0 || freeEnds(piping, welds).length === 0) return [];
+  const all = pipingOf(
+    model,
+    identities,
+    reasons.map((reason, id) => reason === null || suspects.has(id as ElementId)),
+  );
+  return misfiledByPlace(all, piping, welds, suspects, reach);
 }

@@ -14,203 +14,70 @@ interface Case {
 const cases: readonly Case[] = [
   {
     name: 'two pipes end to end',
-    parts: [
-      pipe('A', [
-        [0, 0, 0],
-        [2, 0, 0],
-      ]),
-      pipe('B', [
-        [2, 0, 0],
-        [4, 0, 0],
-      ]),
-    ],
+    parts: [pipe('A', '0 0 0 > 2 0 0'), pipe('B', '2 0 0 > 4 0 0')],
     joints: ['A', 'A+B', 'B'],
   },
   {
     name: 'a gap of a quarter of the diameter (27 mm at 110 mm) is bridged',
-    parts: [
-      pipe('A', [
-        [0, 0, 0],
-        [2, 0, 0],
-      ]),
-      pipe('B', [
-        [2.027, 0, 0],
-        [4, 0, 0],
-      ]),
-    ],
+    parts: [pipe('A', '0 0 0 > 2 0 0'), pipe('B', '2.027 0 0 > 4 0 0')],
     joints: ['A', 'A+B', 'B'],
   },
   {
     name: 'a gap of 29 mm at 110 mm is not',
-    parts: [
-      pipe('A', [
-        [0, 0, 0],
-        [2, 0, 0],
-      ]),
-      pipe('B', [
-        [2.029, 0, 0],
-        [4, 0, 0],
-      ]),
-    ],
+    parts: [pipe('A', '0 0 0 > 2 0 0'), pipe('B', '2.029 0 0 > 4 0 0')],
     joints: ['A', 'A', 'B', 'B'],
   },
   {
     name: 'thin pipes still bridge 10 mm',
-    parts: [
-      pipe(
-        'A',
-        [
-          [0, 0, 0],
-          [2, 0, 0],
-        ],
-        { diameter: 0.032 },
-      ),
-      pipe(
-        'B',
-        [
-          [2.0099, 0, 0],
-          [4, 0, 0],
-        ],
-        { diameter: 0.032 },
-      ),
-    ],
+    parts: [pipe('A', '0 0 0 > 2 0 0', { diameter: 0.032 }), pipe('B', '2.0099 0 0 > 4 0 0', { diameter: 0.032 })],
     joints: ['A', 'A+B', 'B'],
   },
   {
     name: 'wide pipes bridge 50 mm at most',
-    parts: [
-      pipe(
-        'A',
-        [
-          [0, 0, 0],
-          [2, 0, 0],
-        ],
-        { diameter: 0.4 },
-      ),
-      pipe(
-        'B',
-        [
-          [2.051, 0, 0],
-          [4, 0, 0],
-        ],
-        { diameter: 0.4 },
-      ),
-    ],
+    parts: [pipe('A', '0 0 0 > 2 0 0', { diameter: 0.4 }), pipe('B', '2.051 0 0 > 4 0 0', { diameter: 0.4 })],
     joints: ['A', 'A', 'B', 'B'],
   },
   {
     name: 'a spigot stands 75 mm in its socket (sewer pipes of 600 mm)',
-    parts: [
-      pipe(
-        'A',
-        [
-          [0, 0, 0],
-          [2.575, 0, 0],
-        ],
-        { diameter: 0.6 },
-      ),
-      pipe(
-        'B',
-        [
-          [2.5, 0, 0],
-          [5.075, 0, 0],
-        ],
-        { diameter: 0.6 },
-      ),
-    ],
+    parts: [pipe('A', '0 0 0 > 2.575 0 0', { diameter: 0.6 }), pipe('B', '2.5 0 0 > 5.075 0 0', { diameter: 0.6 })],
     joints: ['A', 'A+B', 'B'],
   },
   {
     name: 'a branch that ends on a wall cuts the run',
-    parts: [
-      pipe('run', [
-        [0, 0, 0],
-        [4, 0, 0],
-      ]),
-      pipe('branch', [
-        [2, 3, 0],
-        [2, 0.055, 0],
-      ]),
-    ],
+    parts: [pipe('run', '0 0 0 > 4 0 0'), pipe('branch', '2 3 0 > 2 0.055 0')],
     joints: ['branch', 'branch+run1+run2', 'run1', 'run2'],
   },
   {
     name: 'a branch drawn to the axis of the run',
-    parts: [
-      pipe('run', [
-        [0, 0, 0],
-        [4, 0, 0],
-      ]),
-      pipe('branch', [
-        [2, 3, 0],
-        [2, 0, 0],
-      ]),
-    ],
+    parts: [pipe('run', '0 0 0 > 4 0 0'), pipe('branch', '2 3 0 > 2 0 0')],
     joints: ['branch', 'branch+run1+run2', 'run1', 'run2'],
   },
   {
     name: 'pipes that cross 5 mm apart do not meet',
-    parts: [
-      pipe('A', [
-        [0, 0, 0],
-        [4, 0, 0],
-      ]),
-      pipe('B', [
-        [2, -2, 0.115],
-        [2, 2, 0.115],
-      ]),
-    ],
+    parts: [pipe('A', '0 0 0 > 4 0 0'), pipe('B', '2 -2 0.115 > 2 2 0.115')],
     joints: ['A', 'A', 'B', 'B'],
   },
   {
     name: 'a fitting joins the three ends in its body',
     parts: [
-      pipe('A', [
-        [0, 0, 0],
-        [1.9, 0, 0],
-      ]),
-      pipe('B', [
-        [2.1, 0, 0],
-        [4, 0, 0],
-      ]),
-      pipe('C', [
-        [2, 2, 0],
-        [2, 0.1, 0],
-      ]),
+      pipe('A', '0 0 0 > 1.9 0 0'),
+      pipe('B', '2.1 0 0 > 4 0 0'),
+      pipe('C', '2 2 0 > 2 0.1 0'),
       body('tee', 'fitting', [2, 0, 0], 0.2),
     ],
     joints: ['A', 'A+B+C@tee', 'B', 'C'],
   },
   {
     name: 'a coupling over two ends that touch takes both',
-    parts: [
-      pipe('A', [
-        [0, 0, 0],
-        [2, 0, 0],
-      ]),
-      pipe('B', [
-        [2, 0, 0],
-        [4, 0, 0],
-      ]),
-      body('coupling', 'fitting', [2, 0, 0], 0.14),
-    ],
+    parts: [pipe('A', '0 0 0 > 2 0 0'), pipe('B', '2 0 0 > 4 0 0'), body('coupling', 'fitting', [2, 0, 0], 0.14)],
     joints: ['A', 'A+B@coupling', 'B'],
   },
   {
     name: 'a chamber takes all ends that lie in it, and they are not joined to each other besides',
     parts: [
-      pipe('A', [
-        [-3, 0, 0],
-        [0, 0, 0],
-      ]),
-      pipe('B', [
-        [0, 0, 0],
-        [3, 0, -0.05],
-      ]),
-      pipe('C', [
-        [0, 3, 0],
-        [0, 0.3, 0],
-      ]),
+      pipe('A', '-3 0 0 > 0 0 0'),
+      pipe('B', '0 0 0 > 3 0 -0.05'),
+      pipe('C', '0 3 0 > 0 0.3 0'),
       body('manhole', 'chamber', [0, 0, 0], 0.8),
     ],
     joints: ['A', 'A+B+C@manhole', 'B', 'C'],
@@ -218,16 +85,8 @@ const cases: readonly Case[] = [
   {
     name: 'a stack drawn as one solid is cut by its four branches',
     parts: [
-      pipe('stack', [
-        [0, 0, 0],
-        [0, 0, 12],
-      ]),
-      ...[1, 4, 7, 10].map((z, i) =>
-        pipe(`b${i + 1}`, [
-          [2, 0, z],
-          [0.055, 0, z],
-        ]),
-      ),
+      pipe('stack', '0 0 0 > 0 0 12'),
+      ...[1, 4, 7, 10].map((z, i) => pipe(`b${i + 1}`, `2 0 ${z} > 0.055 0 ${z}`)),
     ],
     joints: [
       'b1',
@@ -245,63 +104,27 @@ const cases: readonly Case[] = [
   {
     name: 'two branches at one height enter at one joint',
     parts: [
-      pipe('stack', [
-        [0, 0, 0],
-        [0, 0, 6],
-      ]),
-      pipe('east', [
-        [2, 0, 3],
-        [0.055, 0, 3],
-      ]),
-      pipe('west', [
-        [-2, 0, 3.004],
-        [-0.055, 0, 3.004],
-      ]),
+      pipe('stack', '0 0 0 > 0 0 6'),
+      pipe('east', '2 0 3 > 0.055 0 3'),
+      pipe('west', '-2 0 3.004 > -0.055 0 3.004'),
     ],
     joints: ['east', 'east+stack1+stack2+west', 'stack1', 'stack2', 'west'],
   },
   {
     name: 'a bent pipe is cut where vertical and horizontal meet, not at its other corners',
-    parts: [
-      pipe('A', [
-        [0, 0, 3],
-        [0, 0, 0],
-        [2, 0, 0],
-        [2, 2, 0],
-      ]),
-    ],
+    parts: [pipe('A', '0 0 3 > 0 0 0 > 2 0 0 > 2 2 0')],
     joints: ['A1', 'A1+A2', 'A2'],
   },
   {
     name: 'a closet stands over the end of its pipe',
-    parts: [
-      pipe('drop', [
-        [0, 0, -1],
-        [0, 0, -0.02],
-      ]),
-      body('closet', 'fixture', [0, 0, 0.2], 0.4, { kind: 'water-closet' }),
-    ],
+    parts: [pipe('drop', '0 0 -1 > 0 0 -0.02'), body('closet', 'fixture', [0, 0, 0.2], 0.4, { kind: 'water-closet' })],
     joints: ['drop', 'drop@closet'],
   },
   {
     name: 'of two ends in a fixture the lowest drains it',
     parts: [
-      pipe(
-        'waste',
-        [
-          [0, -2, 0.1],
-          [0, -0.1, 0.1],
-        ],
-        { diameter: 0.05 },
-      ),
-      pipe(
-        'other',
-        [
-          [0.1, -2, 0.3],
-          [0.1, -0.1, 0.3],
-        ],
-        { diameter: 0.05, medium: null },
-      ),
+      pipe('waste', '0 -2 0.1 > 0 -0.1 0.1', { diameter: 0.05 }),
+      pipe('other', '0.1 -2 0.3 > 0.1 -0.1 0.3', { diameter: 0.05, medium: null }),
       body('basin', 'fixture', [0, 0, 0.25], 0.5, { kind: 'lavatory' }),
     ],
     joints: ['waste', 'waste@basin'],
@@ -309,38 +132,18 @@ const cases: readonly Case[] = [
   {
     name: 'fittings that touch are linked',
     parts: [
-      pipe('A', [
-        [0, 0, 0],
-        [1.9, 0, 0],
-      ]),
+      pipe('A', '0 0 0 > 1.9 0 0'),
       body('bend', 'fitting', [2, 0, 0], 0.2),
       body('next', 'fitting', [2, 0.202, 0], 0.2),
-      pipe('B', [
-        [2, 0.302, 0],
-        [2, 2, 0],
-      ]),
+      pipe('B', '2 0.302 0 > 2 2 0'),
     ],
     joints: ['A', 'A+link@bend', 'B', 'B+link@next'],
   },
   {
     name: 'ports decide, however far apart they are drawn',
     parts: [
-      pipe(
-        'A',
-        [
-          [0, 0, 0],
-          [2, 0, 0],
-        ],
-        { ports: [{ at: [0, 0, 0] }, { at: [2, 0, 0] }] },
-      ),
-      pipe(
-        'B',
-        [
-          [2.6, 0, 0],
-          [4, 0, 0],
-        ],
-        { ports: [{ at: [2.6, 0, 0] }, { at: [4, 0, 0] }] },
-      ),
+      pipe('A', '0 0 0 > 2 0 0', { ports: [{ at: [0, 0, 0] }, { at: [2, 0, 0] }] }),
+      pipe('B', '2.6 0 0 > 4 0 0', { ports: [{ at: [2.6, 0, 0] }, { at: [4, 0, 0] }] }),
     ],
     connected: [['A.1', 'B.0']],
     joints: ['A', 'A+B', 'B'],
@@ -348,23 +151,10 @@ const cases: readonly Case[] = [
   {
     name: 'ports of some, geometry for the rest',
     parts: [
-      pipe(
-        'A',
-        [
-          [0, 0, 0],
-          [1.9, 0, 0],
-        ],
-        { ports: [{ at: [1.9, 0, 0] }] },
-      ),
+      pipe('A', '0 0 0 > 1.9 0 0', { ports: [{ at: [1.9, 0, 0] }] }),
       body('tee', 'fitting', [2, 0, 0], 0.2, { ports: [{ at: [1.9, 0, 0] }] }),
-      pipe('B', [
-        [2.1, 0, 0],
-        [4, 0, 0],
-      ]),
-      pipe('C', [
-        [2, 2, 0],
-        [2, 0.1, 0],
-      ]),
+      pipe('B', '2.1 0 0 > 4 0 0'),
+      pipe('C', '2 2 0 > 2 0.1 0'),
     ],
     connected: [['A.0', 'tee.0']],
     joints: ['A', 'A+B+C@tee', 'B', 'C'],
@@ -372,22 +162,8 @@ const cases: readonly Case[] = [
   {
     name: 'a port in the middle of a pipe is a tap on its wall',
     parts: [
-      pipe(
-        'run',
-        [
-          [0, 0, 0],
-          [4, 0, 0],
-        ],
-        { ports: [{ at: [0, 0, 0] }, { at: [4, 0, 0] }, { at: [2, 0.055, 0] }] },
-      ),
-      pipe(
-        'branch',
-        [
-          [2, 3, 0],
-          [2, 0.055, 0],
-        ],
-        { ports: [{ at: [2, 0.055, 0] }] },
-      ),
+      pipe('run', '0 0 0 > 4 0 0', { ports: [{ at: [0, 0, 0] }, { at: [4, 0, 0] }, { at: [2, 0.055, 0] }] }),
+      pipe('branch', '2 3 0 > 2 0.055 0', { ports: [{ at: [2, 0.055, 0] }] }),
     ],
     connected: [['run.2', 'branch.0']],
     joints: ['branch', 'branch+run1+run2', 'run1', 'run2'],
@@ -423,34 +199,12 @@ const cases: readonly Case[] = [
   },
   {
     name: 'a doubled pipe is merged',
-    parts: [
-      pipe('A', [
-        [0, 0, 0],
-        [2, 0, 0],
-      ]),
-      pipe('A2', [
-        [2, 0.001, 0],
-        [0, 0.001, 0],
-      ]),
-      pipe('B', [
-        [2, 0, 0],
-        [4, 0, 0],
-      ]),
-    ],
+    parts: [pipe('A', '0 0 0 > 2 0 0'), pipe('A2', '2 0.001 0 > 0 0.001 0'), pipe('B', '2 0 0 > 4 0 0')],
     joints: ['A', 'A+B', 'B'],
   },
   {
     name: 'a pipe of no length is set aside',
-    parts: [
-      pipe('A', [
-        [0, 0, 0],
-        [2, 0, 0],
-      ]),
-      pipe('B', [
-        [2, 0, 0],
-        [2, 0, 0.0001],
-      ]),
-    ],
+    parts: [pipe('A', '0 0 0 > 2 0 0'), pipe('B', '2 0 0 > 2 0 0.0001')],
     joints: ['A', 'A'],
   },
 ];

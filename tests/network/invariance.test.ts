@@ -8,88 +8,18 @@ import { moved } from '../support/moved.ts';
 
 /** Everything that geometry has to decide, close together: wall tees, sockets, gaps, a coupling, a manhole, a closet. */
 const yard: readonly DrawnPart[] = [
-  pipe(
-    'sewer',
-    [
-      [-6, 0, -1],
-      [-0.3, 0, -0.95],
-    ],
-    { diameter: 0.16 },
-  ),
+  pipe('sewer', '-6 0 -1 > -0.3 0 -0.95', { diameter: 0.16 }),
   body('manhole', 'chamber', [0, 0, -0.7], 0.8),
-  pipe(
-    'drain',
-    [
-      [0.3, 0, -0.94],
-      [6, 0, -0.85],
-    ],
-    { diameter: 0.16 },
-  ),
-  pipe(
-    'next',
-    [
-      [5.94, 0, -0.8507],
-      [9, 0, -0.8],
-    ],
-    { diameter: 0.16 },
-  ),
-  pipe(
-    'wye',
-    [
-      [4.2, 1.5, -0.8],
-      [3.1, 0.06, -0.89],
-    ],
-    { diameter: 0.11 },
-  ),
-  pipe(
-    'stack',
-    [
-      [9.1, 0, -0.72],
-      [9.1, 0, 6],
-    ],
-    { diameter: 0.11 },
-  ),
+  pipe('drain', '0.3 0 -0.94 > 6 0 -0.85', { diameter: 0.16 }),
+  pipe('next', '5.94 0 -0.8507 > 9 0 -0.8', { diameter: 0.16 }),
+  pipe('wye', '4.2 1.5 -0.8 > 3.1 0.06 -0.89', { diameter: 0.11 }),
+  pipe('stack', '9.1 0 -0.72 > 9.1 0 6', { diameter: 0.11 }),
   body('bend', 'fitting', [9.07, 0, -0.77], 0.16),
-  pipe(
-    'branch',
-    [
-      [9.1, 2, 2.04],
-      [9.1, 0.058, 2],
-    ],
-    { diameter: 0.075 },
-  ),
-  pipe(
-    'opposite',
-    [
-      [9.1, -2, 2.04],
-      [9.1, -0.058, 2.003],
-    ],
-    { diameter: 0.075 },
-  ),
-  pipe(
-    'by',
-    [
-      [9.22, -3, 2.4],
-      [9.22, 3, 2.4],
-    ],
-    { diameter: 0.11 },
-  ),
-  pipe(
-    'gapped',
-    [
-      [9.1, 4, 2.08],
-      [9.1, 2.009, 2.041],
-    ],
-    { diameter: 0.075 },
-  ),
-  pipe(
-    'stub',
-    [
-      [7, 2, 0],
-      [7, 2, 1],
-    ],
-    { diameter: 0.11 },
-  ),
+  pipe('branch', '9.1 2 2.04 > 9.1 0.058 2', { diameter: 0.075 }),
+  pipe('opposite', '9.1 -2 2.04 > 9.1 -0.058 2.003', { diameter: 0.075 }),
+  pipe('by', '9.22 -3 2.4 > 9.22 3 2.4', { diameter: 0.11 }),
+  pipe('gapped', '9.1 4 2.08 > 9.1 2.009 2.041', { diameter: 0.075 }),
+  pipe('stub', '7 2 0 > 7 2 1', { diameter: 0.11 }),
   body('closet', 'fixture', [7, 2, 1.2], 0.38, { kind: 'water-closet' }),
 ];
 

@@ -33,15 +33,22 @@ export interface DrawnPort {
 
 type More = Omit<Partial<DrawnPart>, 'name' | 'part' | 'line'>;
 
-/** A pipe of 110 mm outside diameter unless said otherwise. */
-export const pipe = (name: string, line: readonly Vec3[], more: More = {}): DrawnPart => ({
+/** A pipe of 110 mm outside diameter unless said otherwise, along points in metres: `0 0 0 > 2 0 0`. */
+export const pipe = (name: string, line: string, more: More = {}): DrawnPart => ({
   name,
   part: 'pipe',
-  line,
+  line: line.split('>').map(point),
   diameter: 0.11,
   medium: 'sanitary',
   ...more,
 });
+
+function point(text: string): Vec3 {
+  const [x, y, z, more] = text.trim().split(/\s+/).map(Number);
+  if (x === undefined || y === undefined || z === undefined || more !== undefined || Number.isNaN(x + y + z))
+    throw new Error(`no point: ${text}`);
+  return [x, y, z];
+}
 
 /** A body of `size` metres a side round its middle. */
 export const body = (name: string, part: Part, middle: Vec3, size: number, more: More = {}): DrawnPart => ({

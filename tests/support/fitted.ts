@@ -66,7 +66,7 @@ export function fitted(
       { at: line[0]!, direction: 'sink' },
       { at: line[1]!, direction: 'source' },
     ];
-    return pipe(name, line, { diameter, ports, medium: vent ? 'vent' : 'sanitary' });
+    return { ...pipe(name, '0 0 0 > 1 0 0', { diameter, ports, medium: vent ? 'vent' : 'sanitary' }), line };
   });
   return { parts: [...pipes, ...fittings], connected };
 }
