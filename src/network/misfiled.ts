@@ -1,0 +1,120 @@
+import { type Finding, finding } from '../findings/finding.ts';
+import type { Identity, Part } from '../model/identity.ts';
+import type { Element, ElementId, Model } from '../model/model.ts';
+import type { LeftOutReason } from './left-out-reason.ts';
+import type { PipePart, Piping } from './piping.ts';
+import { type Proposal, proposeJoins } from './propose-joins.ts';
+import type { Reach } from './tolerance.ts';
+import type { Welds } from './welds.ts';
+
+/**
+ * Piping that its system files elsewhere (rainwater, supply) although everything it connects to is sanitary: a run with
+ * a piece of another system in its middle is a run with a wrong system, not two runs.
+ */
+export function misfiledByPorts(
+  model: Model,
+  identities: readonly Identity[],
+  reasons: readonly (LeftOutReason | null)[],
+): readonly ElementId[] {
+  const isFiledElsewhere = (id: number): boolean => isPiping(identities[id]!.part) && bySystem(reasons[id] ?? null);
+  const seen = new Set<number>();
+  const found: ElementId[] = [];
+  for (const { id } of model.elements) {
+    if (seen.has(id) || !isFiledElsewhere(id)) continue;
+    const group = [id];
+    seen.add(id);
+    const around = new Set<number>();
+    let closed = true;
+    for (let at = 0; at < group.length; at++) {
+      const neighbours = neighboursOf(model.elements[group[at]!]!, model);
+      if (neighbours === null) closed = false;
+      for (const other of neighbours ?? []) {
+        if (isFiledElsewhere(other)) {
+          if (!seen.has(other)) group.push(other as ElementId);
+          seen.add(other);
+        } else if (reasons[other] === null) around.add(other);
+        else closed = false;
+      }
+    }
+    const drained = [...around].some((other) => {
+      const { part, medium } = identities[other]!;
+      return isPiping(part) && (medium === 'sanitary' || medium === 'vent');
+    });
+    if (closed && drained && around.size >= 2) found.push(...group);
+  }
+  return found.sort((a, b) => a - b);
+}
+
+const isPiping = (part: Part): boolean => part === 'pipe' || part === 'fitting' || part === 'valve';
+const bySystem = (reason: LeftOutReason | null): boolean =>
+  reason !== null && reason !== 'answer' && reason !== 'double';
+
+/** Elements at the other side of each port; null when a port leads nowhere or there are fewer than two. */
+function neighboursOf({ ports }: Element, model: Model): readonly number[] | null {
+  const found: number[] = [];
+  for (const id of ports) {
+    const owners = (model.ports[id]?.connected ?? []).map((other) => model.ports[other]?.owner ?? null);
+    const owned = owners.filter((owner) => owner !== null);
+    if (owned.length === 0) return null;
+    found.push(...owned);
+  }
+  return ports.length < 2 ? null : found;
+}
+
+/** Two pipes of one run differ in diameter by less than this share. */
+const alike = 0.35;
+
+/**
+ * The same without ports: a pipe filed elsewhere, both of whose ends meet ends of the network that are open, or fittings
+ * that lack a connection.
+ */
+export function misfiledByPlace(
+  all: Piping,
+  piping: Piping,
+  welds: Welds,
+  suspects: ReadonlySet<ElementId>,
+  reach: Reach,
+): readonly ElementId[] {
+  const ends = all.pipes.flatMap(({ element, axis }, pipe) =>
+    suspects.has(element) && axis !== null ? [2 * pipe, 2 * pipe + 1] : [],
+  );
+  if (ends.length === 0) return [];
+  const everyEnd = all.pipes.flatMap((_, pipe) => [2 * pipe, 2 * pipe + 1]);
+  const met = new Map<number, Proposal[]>();
+  for (const proposal of proposeJoins(all, ends, everyEnd, reach)) {
+    if (proposal.within && isOpenHere(proposal, all, piping, welds))
+      met.set(proposal.end, [...(met.get(proposal.end) ?? []), proposal]);
+  }
+  const found = ends.filter((end) => end % 2 === 0 && met.has(end) && met.has(end + 1));
+  return found.map((end) => all.pipes[end >> 1]!.element).sort((a, b) => a - b);
+}
+
+function isOpenHere({ end, to }: Proposal, all: Piping, piping: Piping, welds: Welds): boolean {
+  const own = all.pipes[end >> 1]!;
+  if (to.is === 'wall') return false;
+  if (to.is === 'end') {
+    const other = all.pipes[to.end >> 1]!;
+    const pipe = piping.pipeOf[other.element]!;
+    return pipe >= 0 && !welds.isHeld(2 * pipe + (to.end & 1)) && similar(own, other);
+  }
+  const body = piping.bodyOf[all.bodies[to.body]!.element]!;
+  return body >= 0 && piping.bodies[body]!.part === 'fitting' && welds.degree[body]! < 2 && welds.degree[body]! > 0;
+}
+
+const similar = (a: PipePart, b: PipePart): boolean =>
+  a.diameter === 0 || b.diameter === 0 || Math.abs(a.diameter - b.diameter) <= alike * Math.max(a.diameter, b.diameter);
+
+export function misfiledFindings(
+  misfiled: readonly ElementId[],
+  identities: readonly Identity[],
+  model: Model,
+): readonly Finding[] {
+  return misfiled.map((id) => {
+    const system = model.elements[id]!.systems.map((at) => model.systems[at]?.name).find((name) => name);
+    return finding('wrong-system', [id], {
+      system: system ?? null,
+      medium: identities[id]!.medium,
+      expected: 'sanitary',
+    });
+  });
+}
