@@ -1,4 +1,4 @@
-import { IfcParser } from '@ifc-lite/parser';
+import { IfcParser, SCHEMA_REGISTRY } from '@ifc-lite/parser';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import * as W from 'web-ifc';
 import { draftOf } from './draft.ts';
@@ -123,6 +123,57 @@ describe.each(variants)('%o', (options) => {
     expect(count('IFCSPACE')).toBe(1);
     expect(store.entityCount).toBe([...text.matchAll(/^#\d+=/gm)].length);
   });
+});
+
+/** Top-level arguments of each line, split at commas outside strings and brackets. */
+function linesOf(text: string): readonly { readonly keyword: string; readonly args: readonly string[] }[] {
+  return [...text.matchAll(/^#\d+=(\w+)\((.*)\);$/gm)].map(([, keyword, inside]) => {
+    const args = [''];
+    let depth = 0;
+    for (const [piece] of inside!.matchAll(/'(?:[^']|'')*'|[(),]|[^'(),]+/g)) {
+      if (piece === ',' && depth === 0) args.push('');
+      else args[args.length - 1] += piece;
+      if (piece === '(') depth += 1;
+      if (piece === ')') depth -= 1;
+    }
+    return { keyword: keyword!, args };
+  });
+}
+
+const schemaClasses: Readonly<Record<string, Record<string, { readonly length: number }>>> = {
+  IFC2X3: { ...W.IFC2X3 },
+  IFC4: { ...W.IFC4 },
+  IFC4X3_ADD2: { ...W.IFC4X3 },
+};
+
+test.each(['IFC2X3', 'IFC4', 'IFC4X3_ADD2'] as const)('%s: every line has the attributes of its class', (schema) => {
+  const classes = new Map(
+    Object.entries(schemaClasses[schema]!).map(([name, made]) => [name.toUpperCase(), made.length]),
+  );
+  const lines = linesOf(ifcOf(everything, { schema }));
+  expect(lines.length).toBeGreaterThan(500);
+  // The library's constructors leave derived attributes (`*`) out.
+  const given = (args: readonly string[]): number => args.filter((arg) => arg !== '*').length;
+  const wrong = lines.filter(({ keyword, args }) => classes.get(keyword) !== given(args));
+  expect(wrong.map(({ keyword, args }) => `${keyword} ${args.length}, schema ${classes.get(keyword)}`)).toEqual([]);
+});
+
+test('IFC4: no attribute that must be given is empty, and enumerations hold known words', () => {
+  const known = new Map(Object.values(SCHEMA_REGISTRY.entities).map((entity) => [entity.name.toUpperCase(), entity]));
+  const lines = linesOf(ifcOf(everything, { schema: 'IFC4' }));
+  const wrong: string[] = [];
+  let seen = 0;
+  for (const { keyword, args } of lines)
+    for (const [index, attribute] of (known.get(keyword)?.allAttributes ?? []).entries()) {
+      seen += 1;
+      const value = args[index]!;
+      if (!attribute.optional && value === '$') wrong.push(`${keyword}.${attribute.name} is empty`);
+      const words = SCHEMA_REGISTRY.enums[attribute.type];
+      if (words && value !== '$' && !words.includes(value.slice(1, -1)))
+        wrong.push(`${keyword}.${attribute.name} ${value}`);
+    }
+  expect(seen).toBeGreaterThan(2000);
+  expect(wrong).toEqual([]);
 });
 
 function meshPoints(api: W.IfcAPI, model: number, id: number): (readonly [number, number, number])[] {
