@@ -65,6 +65,9 @@ export function wrapped(text: string, columns: number, lead = ''): string[] {
   return lines.map((text, place) => (place === 0 ? lead : indent) + text.replaceAll(noBreak, ' '));
 }
 
+/** `shownText` for a text whose parts are joined already: what `unbroken` joined stays joined. */
+export const oneLine = (text: string): string => visible(text.replace(/[^\S\u00A0]+/gu, ' '));
+
 /** Keeps the words of a text together when it is wrapped. */
 export const unbroken = (text: string): string => text.replaceAll(' ', noBreak);
 const noBreak = '\u00A0';

@@ -1,4 +1,4 @@
-import { wrapped } from './shown-text.ts';
+import { oneLine, wrapped } from './shown-text.ts';
 
 /** One line for a person to read, at most `pageColumns` wide. The tone is for colour; the words alone say everything. */
 export interface TextLine {
@@ -13,9 +13,12 @@ export const pageColumns = 100;
 export const blank: TextLine = { text: '', tone: 'plain' };
 export const heading = (text: string): TextLine[] => paragraph(text, '', 'heading');
 
-/** `text` broken to the width of the page, behind `lead` on the first line and as far in on the others. */
+/**
+ * `text` broken to the width of the page, behind `lead` on the first line and as far in on the others. Whatever model
+ * text has got into it stays within these lines and comes out harmless.
+ */
 export const paragraph = (text: string, lead = '  ', tone: Tone = 'plain'): TextLine[] =>
-  wrapped(text, pageColumns, lead).map((line) => ({ text: line, tone }));
+  wrapped(oneLine(text), pageColumns, lead).map((line) => ({ text: line, tone }));
 
 export const plainText = (lines: readonly TextLine[]): string =>
   lines.map(({ text }) => `${text.trimEnd()}\n`).join('');

@@ -1,0 +1,107 @@
+import { describe, expect, test } from 'vitest';
+import { checkText } from '../../src/schedule/check-text.ts';
+import type { Result, ResultFinding } from '../../src/schedule/result.ts';
+import { columnsOf } from '../../src/schedule/shown-text.ts';
+import { plainText } from '../../src/schedule/text-line.ts';
+import { undersizedGroups } from '../../src/schedule/undersized-text.ts';
+import { exampleResult } from '../support/example-result.ts';
+
+const textOf = (result: Result): string => plainText(checkText(result));
+const text = textOf(exampleResult);
+const finding = (over: Partial<ResultFinding>): ResultFinding => ({
+  code: 'unvented-trap',
+  severity: 'error',
+  about: ['1Dr4inExample000003001'],
+  facts: {},
+  clause: '2.5.1.1.',
+  sentence: 'The trap of Lavatory 1 has no vent.',
+  ...over,
+});
+
+test('first what was understood, then the undersized pipes, then the sums and the caution', () => {
+  const order = [
+    'community-hall.ifc: IFC4, millimetre; National Plumbing Code of Canada 2020 (npc-2020)',
+    '7 urinals, 2 lavatories',
+    'to the sewer at Pipe 2201 #2201',
+    'B1, 7 urinals, 2 lavatories: wet vent, since no dry relief vent is drawn',
+    'no circuit vent: relief vent',
+    'Undersized: 8 of 19 pipes',
+    'Drawn 3 in, needs 4 in: 7 wet vents of battery B1',
+    'Wet vent load: 14 fixture units; 4 in holds 36; 2.5.8.1., Table 2.5.8.1.',
+    'Drawn 3 in, needs 4 in: 1 branch',
+    'Not smaller downstream: 16 fixture units; after Pipe 2107 #2107; 2.4.9.1.',
+    'Warnings: 1 cleanout missing.',
+    '8 errors, 1 warning, 1 note.',
+    'sewer gas',
+  ].map((words) => text.replace(/\s+/g, ' ').indexOf(words));
+  expect(order).not.toContain(-1);
+  expect(order).toEqual(order.toSorted((a, b) => a - b));
+});
+
+test('one screen: forty lines of at most a hundred columns', () => {
+  const lines = text.split('\n');
+  expect(lines.length).toBeLessThanOrEqual(40);
+  expect(Math.max(...lines.map(columnsOf))).toBeLessThanOrEqual(100);
+});
+
+test('undersized pipes are grouped by cause, most pipes first; every one is in one group', () => {
+  const groups = undersizedGroups(exampleResult);
+  expect(groups.map(({ cause, pipes }) => [cause, pipes.map(({ stepId }) => stepId)])).toEqual([
+    ['wet-vent-load', [2101, 2102, 2103, 2104, 2105, 2106, 2107]],
+    ['not-smaller-downstream', [2108]],
+  ]);
+});
+
+test('other errors stand with their sentence and clause, many of one kind are folded', () => {
+  const many = Array.from({ length: 9 }, (_, place) =>
+    finding({ sentence: `The trap of Lavatory ${place} has no vent.` }),
+  );
+  const shown = textOf({ ...exampleResult, findings: [...exampleResult.findings, ...many] });
+  expect(shown).toContain('Other errors: 9');
+  expect(shown).toContain('- The trap of Lavatory 0 has no vent. (2.5.1.1.)');
+  expect(shown).toContain('and 6 more unvented trap');
+  expect(shown).not.toContain('Lavatory 5 has no vent');
+});
+
+test('a model without drainage says so on the first line', () => {
+  const empty: Result = { ...exampleResult, fixtures: [], pipes: [], batteries: [], systems: [], findings: [] };
+  expect(textOf(empty).split('\n')[0]).toBe(
+    'community-hall.ifc: no sanitary drainage in this model (42 elements read)',
+  );
+});
+
+describe('what is unsure is said', () => {
+  const change = (over: Partial<Result['pipes'][number]>): Result => ({
+    ...exampleResult,
+    pipes: exampleResult.pipes.map((pipe) => (pipe.stepId === 2001 ? { ...pipe, ...over } : pipe)),
+  });
+  test('a verdict that is unknown, with its reason', () => {
+    const shown = textOf(change({ verdict: 'unknown', reason: 'the drawn size cannot be read' }));
+    expect(shown).toContain('1 unknown: the drawn size cannot be read');
+  });
+  test('a provisional size', () => expect(textOf(change({ provisional: true }))).toContain('1 size provisional'));
+  test('damage to the file', () => {
+    const damaged = {
+      ...exampleResult,
+      model: { ...exampleResult.model, remarks: ['the file is cut off in an instance'] },
+    };
+    expect(textOf(damaged)).toContain('File        the file is cut off in an instance');
+  });
+});
+
+test('hostile names come out as text, on their own lines', () => {
+  const hostile = '\u001B[2J\u0007fake\nUndersized: 0 of 0 pipes\u202E';
+  const result: Result = {
+    ...exampleResult,
+    model: { ...exampleResult.model, file: hostile },
+    pipes: exampleResult.pipes.map((pipe) => ({ ...pipe, name: hostile })),
+    fixtures: exampleResult.fixtures.map((fixture) => ({ ...fixture, name: hostile, kind: hostile })),
+    batteries: exampleResult.batteries.map((battery) => ({ ...battery, why: hostile })),
+    findings: [...exampleResult.findings, finding({ sentence: hostile })],
+    unresolved: [{ globalId: 'x', stepId: 1, reason: hostile }],
+  };
+  const shown = textOf(result);
+  // biome-ignore lint/suspicious/noControlCharactersInRegex: the test looks for control characters
+  expect(shown).not.toMatch(/[\u0000-\u0009\u000B-\u001F\u007F-\u009F\u202A-\u202E]/);
+  expect(shown.match(/^Undersized:/gm)).toHaveLength(1);
+});
