@@ -4,6 +4,7 @@ import type { ElementId, Model } from '../model/model.ts';
 import { assemble } from './assemble.ts';
 import { findDoubles } from './doubles.ts';
 import { fatesOf } from './fates.ts';
+import { gapHabit } from './gap-habit.ts';
 import { joinFixtures, joinRunsThrough, joinTouching } from './join-bodies.ts';
 import { isAnsweredOut, type LeftOutReason, leftOutReason } from './left-out-reason.ts';
 import { misfiledByPlace, misfiledByPorts, misfiledFindings } from './misfiled.ts';
@@ -14,7 +15,7 @@ import { endNode, pipingOf } from './piping.ts';
 import { joinPorts } from './port-joins.ts';
 import { proposeJoins } from './propose-joins.ts';
 import { freeEnds, settleJoins } from './settle-joins.ts';
-import { type Reach, reachOf } from './tolerance.ts';
+import { reachOf } from './tolerance.ts';
 import { Welds } from './welds.ts';
 
 export interface NetworkOptions {
@@ -33,16 +34,16 @@ export function buildNetwork(
   identities: readonly Identity[],
   options: NetworkOptions = {},
 ): WithFindings<Network> {
-  const reach = reachOf(options.maxGap ?? null);
+  const maxGap = options.maxGap ?? null;
   const reasons = model.elements.map((element) =>
     isAnsweredOut(element, model, options.leaveOut ?? [])
       ? 'answer'
       : leftOutReason(element, identities[element.id]!, model),
   );
   const byPorts = misfiledByPorts(model, identities, reasons);
-  let joining = joinAll(model, identities, without(reasons, byPorts), reach);
-  const byPlace = misfiledPipes(model, identities, joining, reach);
-  if (byPlace.length > 0) joining = joinAll(model, identities, without(joining.reasons, byPlace), reach);
+  let joining = joinAll(model, identities, without(reasons, byPorts), maxGap);
+  const byPlace = misfiledPipes(model, identities, joining);
+  if (byPlace.length > 0) joining = joinAll(model, identities, without(joining.reasons, byPlace), maxGap);
 
   const { piping, welds, flows, proposals } = joining;
   const pieces = findPieces(identities, piping, welds);
@@ -59,7 +60,7 @@ export function buildNetwork(
     ...joining.doubles,
     ...misfiledFindings([...byPorts, ...byPlace], identities, model),
     ...contradictedJoints(joining.contradictions.filter(({ between }) => fates[between[0]]!.use !== 'left-out')),
-    ...inferredJoints(welds, stays),
+    ...inferredJoints(welds, stays, joining.habit),
     ...openEnds(proposals, piping, welds, stays),
     ...(assembly.pipes.length > 0 ? unconnectedFixtures(identities, piping, welds, freeEnds(piping, welds)) : []),
   ];
@@ -74,7 +75,8 @@ const without = (reasons: Reasons, readmitted: readonly ElementId[]): Reasons =>
 };
 
 /** Ports first, then geometry, from what lies in a fitting to what lies under a fixture. */
-function joinAll(model: Model, identities: readonly Identity[], reasons: Reasons, reach: Reach) {
+function joinAll(model: Model, identities: readonly Identity[], reasons: Reasons, maxGap: number | null) {
+  let reach = reachOf(maxGap);
   const candidates = reasons.map((reason) => reason === null);
   const { keeper, findings: doubles } = findDoubles(model, identities, candidates);
   const piping = pipingOf(
@@ -85,19 +87,24 @@ function joinAll(model: Model, identities: readonly Identity[], reasons: Reasons
   const welds = new Welds(piping);
   const { contradictions, flows } = joinPorts(model, identities, piping, keeper, welds);
   const everyEnd = piping.pipes.flatMap((_, pipe) => [endNode(pipe, 0), endNode(pipe, 1)]);
-  const proposals = proposeJoins(piping, freeEnds(piping, welds), everyEnd, reach);
+  const free = freeEnds(piping, welds);
+  let proposals = proposeJoins(piping, free, everyEnd, reach);
+  const habit = gapHabit(proposals);
+  if (habit > 0) {
+    reach = reachOf(maxGap, habit);
+    proposals = proposeJoins(piping, free, everyEnd, reach);
+  }
   settleJoins(proposals, model, piping, welds, reach);
   joinTouching(model, piping, welds, reach);
   joinRunsThrough(model, piping, welds);
   joinFixtures(model, identities, piping, welds, reach);
-  return { reasons, keeper, doubles, piping, welds, contradictions, flows, proposals };
+  return { reasons, keeper, doubles, piping, welds, contradictions, flows, proposals, reach, habit };
 }
 
 function misfiledPipes(
   model: Model,
   identities: readonly Identity[],
-  { reasons, piping, welds }: ReturnType<typeof joinAll>,
-  reach: Reach,
+  { reasons, piping, welds, reach }: ReturnType<typeof joinAll>,
 ): readonly ElementId[] {
   const suspects = new Set(
     model.elements

@@ -8,7 +8,7 @@ import type { Proposal } from './propose-joins.ts';
 import type { Welds } from './welds.ts';
 
 /** One note for the whole model: how many joints geometry inferred, by ground, and the widest gap it bridged. */
-export function inferredJoints(welds: Welds, stays: (node: number) => boolean): readonly Finding[] {
+export function inferredJoints(welds: Welds, stays: (node: number) => boolean, habit: number): readonly Finding[] {
   const inferred = welds.all.filter(({ how, nodes }) => how !== 'ports' && stays(nodes[0]));
   if (inferred.length === 0) return [];
   const count = (ground: string): number => inferred.filter(({ how }) => how === ground).length;
@@ -22,6 +22,7 @@ export function inferredJoints(welds: Welds, stays: (node: number) => boolean): 
       outlet: count('outlet'),
       boxContact: count('box-contact'),
       gapM: widest.gap,
+      ...(habit > 0 ? { habitM: habit } : {}),
     }),
   ];
 }

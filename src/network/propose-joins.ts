@@ -1,4 +1,4 @@
-import { boxCentre, distanceToBox, grown, nearestInBox } from '../geometry/box.ts';
+import { boxCentre, grown, nearestInBox } from '../geometry/box.ts';
 import { boxGrid } from '../geometry/box-grid.ts';
 import { directionOf, footOn, type Polyline } from '../geometry/polyline.ts';
 import { type Box, cross, distance, dot, length, scale, subtract, type Vec3 } from '../geometry/vector.ts';
@@ -99,12 +99,27 @@ function preferBodies(proposals: readonly Proposal[]): readonly Proposal[] {
 
 /** An end that stops short of a body must at least look toward it. */
 const looksToward = 0.3;
+/** A body is wide enough for the bore of the pipe that ends in it; walls and sockets may be drawn thinner. */
+const boreShare = 0.6;
+
+/**
+ * Metres by which an end sticks out of a body's box, its bore counted: whatever way a model is turned, the box of a
+ * fitting holds the bore of its own pipes, and seldom that of the pipe beside it.
+ */
+function outOfBox({ at, outward, diameter }: EndView, { min, max }: Box): number {
+  const out = [0, 1, 2].map((i) => {
+    const wide = (boreShare * diameter * Math.sqrt(Math.max(0, 1 - outward[i]! ** 2))) / 2;
+    const half = Math.min(wide, (max[i]! - min[i]!) / 2);
+    return Math.max(0, min[i]! - at[i]! + half, at[i]! + half - max[i]!);
+  });
+  return Math.hypot(out[0]!, out[1]!, out[2]!);
+}
 
 function toBody(end: EndView, index: number, { bodies }: Piping, reach: Reach): Proposal | null {
   const body = bodies[index]!;
   const box = body.box!;
   const toSpot = Math.min(...body.spots.map((spot) => distance(spot, end.at)));
-  const gap = Math.min(distanceToBox(end.at, box), toSpot);
+  const gap = Math.min(outOfBox(end, box), toSpot);
   const toward = subtract(nearestInBox(end.at, box), end.at);
   const off = length(toward);
   if (gap > 0.001 && off > 0 && dot(toward, end.outward) < looksToward * off) return null;

@@ -16,14 +16,14 @@ export interface Reach {
   readonly ofBodies: number;
 }
 
-/** `maxGap`: the user's own limit, or null. */
-export function reachOf(maxGap: number | null): Reach {
+/** `maxGap`: the user's own limit, or null. `habit`: a gap that this model leaves at many of its ends, else 0. */
+export function reachOf(maxGap: number | null, habit = 0): Reach {
   const most = maxGap ?? largestReach;
   return {
     ofEnd: (outerDiameter) =>
       maxGap !== null && maxGap > largestReach
         ? maxGap
-        : Math.min(most, Math.max(leastReach, shareOfDiameter * outerDiameter)),
+        : Math.min(most, Math.max(leastReach, habit, shareOfDiameter * outerDiameter)),
     ofFixture: most,
     ofBodies: Math.min(most, 0.005),
   };

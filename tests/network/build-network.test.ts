@@ -58,6 +58,26 @@ const cases: readonly Case[] = [
     joints: ['A', 'A', 'B', 'B'],
   },
   {
+    name: 'of two stacks 5 mm apart at 45 degrees, each coupling takes the ends of its own',
+    parts: [0, 0.0814].flatMap((d, i) => [
+      pipe(`low${i}`, `${d} ${d} 0 > ${d} ${d} 2`),
+      pipe(`high${i}`, `${d} ${d} 2.02 > ${d} ${d} 4`),
+      body(`coupling${i}`, 'fitting', [d, d, 2.01], 0.17),
+    ]),
+    joints: ['high0', 'high0+low0@coupling0', 'high1', 'high1+low1@coupling1', 'low0', 'low1'],
+  },
+  {
+    name: 'the coupling of the one is not the joint of the other',
+    parts: [
+      pipe('low', '0 0 0 > 0 0 2'),
+      pipe('high', '0 0 2.02 > 0 0 4'),
+      body('coupling', 'fitting', [0, 0, 2.01], 0.17),
+      pipe('beside', '0.0814 0.0814 0 > 0.0814 0.0814 2'),
+      pipe('beside it', '0.0814 0.0814 2 > 0.0814 0.0814 4'),
+    ],
+    joints: ['beside', 'beside it', 'beside+beside it', 'high', 'high+low@coupling', 'low'],
+  },
+  {
     name: 'a fitting joins the three ends in its body',
     parts: [
       pipe('A', '0 0 0 > 1.9 0 0'),

@@ -10,6 +10,7 @@ describe('a building drawn with ports and its twin without', () => {
     ['no gaps', () => 0],
     ['gaps of 2 mm', () => 0.002],
     ['gaps of 10 mm', () => 0.01],
+    ['gaps of 25 mm, out of habit', () => 0.025],
     ['gaps of 0 to 10 mm', (end) => ((end * 7919) % 11) / 1000],
   ];
   for (const [name, gap] of gaps)
