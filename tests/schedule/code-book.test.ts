@@ -5,6 +5,7 @@ import { columnsOf } from '../../src/schedule/shown-text.ts';
 import { pageColumns } from '../../src/schedule/text-line.ts';
 import { verifyBook } from '../../src/schedule/verify-book.ts';
 import { codesOf, openCode } from '../../src/tables/open-family.ts';
+import { faults } from '../support/schemas.ts';
 import { openOwn, ownTables, writtenTables } from '../support/table-files.ts';
 
 const npc = openOwn('npc-2020');
@@ -130,6 +131,21 @@ describe('what to look at first', () => {
     const text = verifyText(verifyBook(npc, 'vent-by-trap')).map((line) => line.text);
     expect(text.join(' ')).toContain('Nothing: every figure was read in print or confirmed.');
   });
+});
+
+test('everything is valid against its schema', () => {
+  expect(faults('codes', codeList(families))).toEqual([]);
+  let seen = 0;
+  for (const family of families) {
+    const book = codeTables(family);
+    expect(faults('codes', book), family.code).toEqual([]);
+    expect(faults('codes', verifyBook(family)), family.code).toEqual([]);
+    for (const { id } of book.tables ?? []) {
+      seen += 1;
+      expect(faults('codes', codeTable(family, id)), `${family.code} ${id}`).toEqual([]);
+    }
+  }
+  expect(seen).toBeGreaterThanOrEqual(4 * 13);
 });
 
 describe('as text', () => {
