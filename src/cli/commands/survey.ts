@@ -1,0 +1,37 @@
+import type { Command } from 'commander';
+import { type ModelOptions, modelArgument, modelOptions } from '../options.ts';
+
+interface SurveyOptions extends ModelOptions {
+  readonly questions?: string;
+}
+
+export function addSurvey(program: Command): void {
+  const command = program
+    .command('survey')
+    .summary('what is in a model, what of it can be used, and what to ask the designer')
+    .description('Tells what a model holds and what the program can and cannot use of it, before anything is judged.')
+    .argument('<model>', modelArgument)
+    .option('--questions <file>', 'write an answers file to fill in, most weighty question first')
+    .action(async (model: string, options: SurveyOptions) => {
+      const { outputPlace } = await import('../output-place.ts');
+      const { runModel } = await import('../run-model.ts');
+      const { printJson } = await import('../print-result.ts');
+      const { printLines } = await import('../terminal.ts');
+      const { writeNew } = await import('../write-new.ts');
+      const { answersForm } = await import('../../schedule/answers-form.ts');
+      const { surveyOf } = await import('../../schedule/survey.ts');
+      const { surveyText } = await import('../../schedule/survey-text.ts');
+      const { questions: file } = options;
+      const run = await runModel(model, options, (input) =>
+        file === undefined ? null : outputPlace(file, input.identity, false),
+      );
+      const survey = surveyOf(run.model, run.result);
+      if (run.place !== null && file !== undefined) {
+        const form = `${JSON.stringify(answersForm(survey.questions), null, 2)}\n`;
+        await writeNew(run.place, [new TextEncoder().encode(form)], file);
+      }
+      if (options.json === true) await printJson({ ...survey });
+      else await printLines(surveyText(survey, run.result));
+    });
+  for (const option of modelOptions()) command.addOption(option);
+}
