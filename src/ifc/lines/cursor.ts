@@ -114,21 +114,45 @@ export class Cursor {
     return this.inner(() => this.number());
   }
 
-  /** Adds all numbers of a list, nested lists in order, to `into`. */
+  /** Adds all numbers of a list, nested lists in order, to `into`; references and texts between them are no numbers. */
   numbers(into: number[]): number[] {
-    const b = this.bytes;
     const end = this.endOfArgument();
-    let i = this.pos;
-    while (i < end) {
-      const c = b[i] as number;
-      if ((c >= 48 && c <= 57) || c === 45 || c === 43) {
-        into.push(readNumber(b, i));
-        for (i++; i < end; i++) if (b[i] === 44 || b[i] === 41) break;
-      } else i++;
-    }
+    numbersBetween(this.bytes, this.pos, end, into);
     this.pos = end;
     this.toNext();
     return into;
+  }
+
+  /** References and numbers of a list that holds both, such as `(#12,IFCPARAMETERVALUE(0.5))`. */
+  mixed(): { readonly ids: number[]; readonly numbers: number[] } {
+    const start = this.offset;
+    const ids = this.ids();
+    this.pos = start;
+    return { ids, numbers: this.numbers([]) };
+  }
+
+  /** Typed lists of numbers, such as `(IFCLINEINDEX((1,2)),IFCARCINDEX((2,3,4)))`; none for `$`. */
+  typedLists(): { readonly type: string; readonly numbers: number[] }[] {
+    const b = this.bytes;
+    const end = this.endOfArgument();
+    const found: { readonly type: string; readonly numbers: number[] }[] = [];
+    let i = this.pos;
+    while (i < end) {
+      if (!isLetter(b[i])) {
+        i++;
+        continue;
+      }
+      const from = i;
+      while (i < end && b[i] !== 40) i++;
+      const type = (shortText(b, from, i) ?? '').trim().toUpperCase();
+      let close = i;
+      while (close < end && b[close] !== 41) close++;
+      found.push({ type, numbers: numbersBetween(b, i, close, []) });
+      i = close;
+    }
+    this.pos = end;
+    this.toNext();
+    return found;
   }
 
   /** `.X.` as `X` in upper case; null for `$` and anything else. */
@@ -171,6 +195,24 @@ export class Cursor {
     let i = this.pos;
     while (isLetter(this.bytes[i]) || isDigit(this.bytes[i]) || this.bytes[i] === 95) i++;
     return shortText(this.bytes, this.pos, i)?.toUpperCase() ?? null;
+  }
+
+  /** First byte within the brackets of the typed value that stands here, without moving; 0 where there is none. */
+  firstByteWithin(): number {
+    const b = this.bytes;
+    let i = this.offset;
+    while (i < b.length && b[i] !== 40 && b[i] !== 44 && b[i] !== 41) i++;
+    if (b[i] !== 40) return 0;
+    for (i++; i < b.length && b[i]! <= 32; ) i++;
+    return b[i] ?? 0;
+  }
+
+  /** Moves on past a list; gives a cursor in front of its first entry, null for an empty list. */
+  firstOfList(): Cursor | null {
+    const open = this.offset;
+    this.pass();
+    const inside = new Cursor(this.bytes, this.watch).at(open);
+    return inside.more ? inside : null;
   }
 
   /** Offset where the argument that stands here begins. */
@@ -251,6 +293,21 @@ function endOfQuoted(b: Uint8Array, open: number): number {
     }
   }
   return n;
+}
+
+function numbersBetween(b: Uint8Array, from: number, end: number, into: number[]): number[] {
+  let i = from;
+  while (i < end) {
+    const c = b[i]!;
+    if ((c >= 48 && c <= 57) || c === 45 || c === 43) {
+      into.push(readNumber(b, i));
+      for (i++; i < end; i++) if (b[i] === 44 || b[i] === 41) break;
+    } else if (c === 35 || isLetter(c)) {
+      for (i++; i < end; i++) if (b[i] === 44 || b[i] === 40 || b[i] === 41) break;
+    } else if (c === 39) i = endOfQuoted(b, i) + 1;
+    else i++;
+  }
+  return into;
 }
 
 const codes: number[] = [];

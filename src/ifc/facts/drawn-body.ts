@@ -1,0 +1,57 @@
+import type { Box, Vec3 } from '../../geometry/vector.ts';
+import type { CentreLine, ElementClass, SizeWitness } from '../../model/model.ts';
+import type { Reader } from '../reader.ts';
+import { boundsOf } from '../solids/bounds.ts';
+import { centreLineOf } from '../solids/centre-line.ts';
+import { identity, originOf } from '../solids/frame.ts';
+import type { Placements } from '../solids/placements.ts';
+import { type ProductShape, readShape } from '../solids/product-shape.ts';
+import type { Solids } from '../solids/solids.ts';
+import type { ElementRecord } from './elements.ts';
+
+/** What is drawn of an element. */
+export interface Drawn {
+  readonly kind: ElementClass;
+  readonly origin: Vec3 | null;
+  readonly centreLine: CentreLine | null;
+  readonly box: Box | null;
+}
+
+/** Shapes are read of what carries water only; of the rest, where it stands. */
+export function drawnBody(reader: Reader, placements: Placements, solids: Solids, element: ElementRecord): Drawn {
+  const { kind, placement, shape: definition, isDoubtful } = element;
+  if (kind === 'other') return { kind, origin: placements.worldOrigin(placement), centreLine: null, box: null };
+  // Without a placement a product stands in the world's own coordinates; with one that cannot be followed, nowhere.
+  const world = placement < 0 ? identity : placements.world(placement);
+  const origin = world === null || placement < 0 ? null : originOf(world);
+  if (world === null || definition < 0) return { kind, origin, centreLine: null, box: null };
+  const shape = readShape(reader, solids, definition);
+  // A flow segment that no type calls a pipe and that is no round thing is a duct or a cable tray.
+  if (isDoubtful && shape.body.length > 0 && shape.body.every((piece) => piece.shape.kind === 'prism')) {
+    return { kind: 'other', origin, centreLine: null, box: null };
+  }
+  const box = boundsOf(shape.body.length > 0 ? shape.body : shape.box, world);
+  const hasLine = kind === 'segment' || (kind === 'fitting' && isOneSweep(shape));
+  return { kind, origin, centreLine: hasLine ? centreLineOf(shape, world) : null, box };
+}
+
+const isOneSweep = ({ body }: ProductShape): boolean => body.length === 1 && body[0]!.shape.kind === 'tube';
+
+/** The drawn diameters as witnesses: exact where the file states a profile, measured where a mesh was fitted. */
+export function drawnSizes({ centreLine }: Drawn): SizeWitness[] {
+  if (centreLine === null) return [];
+  const { outerDiameter, innerDiameter, ground } = centreLine;
+  const isProfile = ground === 'extrusion' || ground === 'swept-disk';
+  const found: SizeWitness[] = [];
+  const add = (means: 'outer' | 'inner', diameter: number | null): void => {
+    if (diameter === null) return;
+    const from = isProfile ? 'profile' : 'measured on the body';
+    found.push({ means, mm: roundedMm(diameter * 1000), text: null, ground: isProfile ? 'profile' : 'measured', from });
+  };
+  add('outer', outerDiameter);
+  add('inner', innerDiameter);
+  return found;
+}
+
+/** Millionths of a millimetre are the dust of arithmetic. */
+export const roundedMm = (mm: number): number => Math.round(mm * 1e6) / 1e6;
