@@ -26,7 +26,7 @@ export function fixtureBody(
       }
       case 'urinal':
         return fixture.details.style === 'stall'
-          ? [{ box: put(-half, half, -0.28, 0.06, floor, floor + 1.1) }]
+          ? [{ box: put(-half, half, -0.22, 0.18, floor, floor + 1.1) }]
           : [{ bowl: put(-half, half, -0.28, 0.06, top - 0.15, top + height - 0.15) }];
       case 'bathtub':
         return [{ bowl: put(-half, half, -depth + 0.2, 0.2, floor, top) }];

@@ -57,7 +57,7 @@ export function readSketch(text: string): Sketch {
       const scope: Scope = {
         prefix: `${prefix}.`,
         origin: readPoint(cursor),
-        nameOf: scopedNames(block, `${prefix}.`),
+        nameOf: scopedNames(block, `${prefix}.`, sheet),
       };
       cursor.end();
       for (const line of block) readLine(line, sheet, scope);
@@ -66,14 +66,14 @@ export function readSketch(text: string): Sketch {
   return closed(sheet);
 }
 
-/** Names that the block itself places carry the prefix; all others are names of the sheet. */
-function scopedNames(block: readonly Statement[], prefix: string): NameOf {
+/** Names that the block, or another one of the same prefix, places carry the prefix; all others are names of the sheet. */
+function scopedNames(block: readonly Statement[], prefix: string, { places }: Sheet): NameOf {
   const own = new Set<string>();
   for (const { words } of block) {
     if (words[0] === 'node' || isPartWord(words[0])) own.add(words[1] ?? '');
     for (const [index, word] of words.entries()) if (words[index + 1] === '(') own.add(word);
   }
-  return (name) => (own.has(name) ? prefix + name : name);
+  return (name) => (own.has(name) || places.has(prefix + name) ? prefix + name : name);
 }
 
 function readLine(statement: Statement, sheet: Sheet, scope: Scope): void {

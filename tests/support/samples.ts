@@ -1,0 +1,15 @@
+import { sketch } from './sketch.ts';
+import { type IfcOptions, ifcOf } from './write-ifc.ts';
+
+/** The models of sample-models/: each is a `.piping` text and the `.ifc` file that the writer makes of it. */
+export const samples: readonly { readonly name: string; readonly options: Partial<IfcOptions> }[] = [
+  { name: 'bathroom-group', options: { schema: 'IFC4', unit: 'm' } },
+  { name: 'dwelling', options: { schema: 'IFC2X3', unit: 'ft' } },
+  { name: 'five-storey-core', options: { schema: 'IFC4', unit: 'mm' } },
+  { name: 'hall-circuit-vented', options: { schema: 'IFC4X3_ADD2', unit: 'm' } },
+  { name: 'hall-wet-vented', options: { schema: 'IFC4', unit: 'mm' } },
+  { name: 'school', options: { schema: 'IFC4', unit: 'mm' } },
+  { name: 'sports-hall', options: { schema: 'IFC4', unit: 'm' } },
+];
+
+export const ifcOfSample = (piping: string, options: Partial<IfcOptions>): string => ifcOf(sketch(piping), options);
