@@ -124,9 +124,13 @@ function toBody(end: EndView, index: number, { bodies }: Piping, reach: Reach): 
   const off = length(toward);
   if (gap > 0.001 && off > 0 && dot(toward, end.outward) < looksToward * off) return null;
   const within = gap <= reach.ofEnd(end.diameter);
-  const aside = body.spots.length > 0 ? toSpot : distanceFromLine(boxCentre(box), end.at, end.outward);
+  const aside = body.spots.length > 0 ? toSpot : offCourse(end, boxCentre(box));
   return { end: end.node, to: { is: 'body', body: index }, gap, cost: gap + 0.1 * Math.min(aside, 1), within };
 }
+
+/** How far the middle of a body lies from an end; one that lies behind it is not what the pipe runs to. */
+const offCourse = ({ at, outward }: EndView, middle: Vec3): number =>
+  distance(middle, at) + 2 * Math.max(0, -dot(subtract(middle, at), outward));
 
 const distanceFromLine = (point: Vec3, on: Vec3, direction: Vec3): number =>
   length(cross(subtract(point, on), direction));

@@ -22,8 +22,11 @@ export function settleJoins(
     const { end, to, gap } = proposal;
     if (to.is === 'body') {
       const { capacity } = piping.bodies[to.body]!;
-      if (welds.isHeld(end) || (capacity !== null && welds.degree[to.body]! >= capacity)) continue;
-      welds.join(end, bodyNode(piping, to.body), 'end-in-fitting', gap);
+      const node = bodyNode(piping, to.body);
+      const full = capacity !== null && welds.degree[to.body]! >= capacity;
+      // A short pipe between two fittings may lie in the box of one with both its ends.
+      if (welds.isHeld(end) || full || welds.root(end ^ 1) === welds.root(node)) continue;
+      welds.join(end, node, 'end-in-fitting', gap);
     } else if (to.is === 'end') joinEnds(end, to.end, gap, mates, piping, welds, reach);
     else if (!welds.isHeld(end)) joinWall(end, to.pipe, to.at, gap, piping, welds, reach);
   }
