@@ -22,6 +22,8 @@ export interface Paths {
   readonly pieces: readonly DryPiece[];
   /** Piece of a dry pipe; null for wet pipes. By pipe id. */
   readonly pieceOf: readonly (number | null)[];
+  /** Pipe to take from a dry joint, or from a foot of the piece, toward open air; null at mouths and where there is none. */
+  readonly wayUp: (joint: JointId, piece: number) => PipeId | null;
   readonly vertical: readonly (boolean | null)[];
   readonly slopes: readonly PipeSlope[];
 }

@@ -150,6 +150,8 @@ export interface ResultPipe extends PipeState {
 
 export interface TrailStep {
   readonly rule: string;
+  /** What the rule is about, in words of the trade. */
+  readonly title: string;
   readonly clause: string;
   readonly table: string | null;
   readonly row: string | null;
@@ -177,6 +179,7 @@ export interface ResultBattery {
 
 export interface BrokenCondition {
   readonly rule: string;
+  readonly title: string;
   readonly clause: string;
   readonly facts: Readonly<Record<string, unknown>>;
 }

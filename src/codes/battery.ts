@@ -1,0 +1,115 @@
+import type { JointId, PipeId } from '../network/network.ts';
+import type { FixtureId } from '../paths/paths.ts';
+import type { NominalSize } from '../units/nominal-size.ts';
+import type { Load } from '../units/quantity.ts';
+import type { Reading } from './use.ts';
+
+/** Two or more traps on one wet line that breathe through one foot. Facts only: a code's readings judge them. */
+export interface BatteryFacts {
+  readonly id: number;
+  readonly foot: JointId;
+  /** Wet pipes from the foot to the joint of the last trap, in flow order. */
+  readonly line: readonly PipeId[];
+  /** From upstream to downstream, by their joint on the line. */
+  readonly traps: readonly BatteryTrap[];
+  readonly guests: readonly Guest[];
+  /** What the line looks like when the battery is wet vented. */
+  readonly wet: WetLine;
+  /** What it looks like when it is circuit vented. */
+  readonly circuit: CircuitLine;
+  /** The designer's own word, from names, systems and properties. */
+  readonly word: Reading | null;
+}
+
+export interface BatteryTrap {
+  readonly fixture: FixtureId;
+  readonly size: NominalSize;
+  readonly load: Load;
+  readonly closet: boolean;
+  readonly emergency: boolean;
+  /** Needs no vent by a rule of its own. */
+  readonly free: boolean;
+  /** A dry vent stands on its own drain. */
+  readonly ownVent: boolean;
+  /** Joint on the line where its arm ends, and its place: 0 is the foot. */
+  readonly joins: JointId;
+  readonly place: number;
+  /** Storey of plumbing, 0 lowest. */
+  readonly storey: number;
+}
+
+/** A fixture with a vent of its own whose drain joins the line. */
+export interface Guest {
+  readonly fixture: FixtureId;
+  readonly load: Load;
+  readonly storey: number;
+  readonly joins: JointId;
+}
+
+export interface WetLine {
+  /** Everything that drains into the wet vent, one by one; the most downstream trap or pair left out; closets apart. */
+  readonly load: Load;
+  /** Of all its traps, the last one and closets too, guests not: the load on the dry vent above. */
+  readonly airLoad: Load;
+  readonly leftOut: readonly FixtureId[];
+  /** Closets among its traps. */
+  readonly closets: number;
+  readonly storeys: number;
+  /** Load of each storey above the lowest. */
+  readonly upperStoreys: readonly { readonly storey: number; readonly load: Load }[];
+  /** Level pieces between vertical ones. */
+  readonly offsets: readonly { readonly length: number; readonly joined: boolean }[];
+  /** The line runs through a stack. */
+  readonly stack: boolean;
+}
+
+export interface CircuitLine {
+  /** Where the circuit vent, wet portion included, meets the branch. */
+  readonly start: JointId;
+  /** Vertical wet pipes between the foot and the branch; empty when the circuit vent is dry to the branch. */
+  readonly wetPortion: readonly PipeId[];
+  /** Fixtures that drain into the circuit vent: listed, not circuit vented. */
+  readonly onVent: readonly { readonly fixture: FixtureId; readonly load: Load; readonly joins: JointId }[];
+  readonly traps: readonly BatteryTrap[];
+  /** Pipes from the start to the end of the circuit-vented branch, in flow order. */
+  readonly branch: readonly PipeId[];
+  /** Part of the branch from the start to the joint of the last circuit-vented trap. */
+  readonly toLastTrap: readonly PipeId[];
+  readonly vertical: number;
+  readonly stackUpstream: boolean;
+  /** Traps whose arms reach the start before any other trap joins. */
+  readonly trapsAtStart: number;
+  readonly relief: Relief | null;
+  readonly additional: readonly { readonly joint: JointId; readonly by: PipeId; readonly dry: boolean }[];
+  /** Between two vent joints that follow one another. */
+  readonly stretches: readonly {
+    readonly traps: number;
+    readonly turnDegrees: number;
+    readonly from: JointId;
+    readonly to: JointId;
+  }[];
+}
+
+export interface Relief {
+  readonly joint: JointId;
+  readonly by: PipeId;
+  readonly kind: 'dry' | 'drain' | 'shared';
+  /** Of a drain: what drains through it; else 0. */
+  readonly load: Load;
+  readonly fixtures: readonly FixtureId[];
+}
+
+/** One condition of a reading that the battery breaks. */
+export interface Broken {
+  readonly rule: string;
+  readonly clause: string;
+  readonly facts: Readonly<Record<string, string | number | boolean | null>>;
+  /** What the finding is called when this reading is chosen. */
+  readonly finding:
+    | 'wet-vent-not-allowed'
+    | 'wet-vent-overloaded'
+    | 'circuit-vent-not-allowed'
+    | 'relief-vent-missing'
+    | 'additional-circuit-vent-missing'
+    | 'unvented-trap';
+}

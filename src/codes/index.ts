@@ -1,0 +1,51 @@
+import { InputError } from '../findings/input-error.ts';
+import type { Settings } from '../model/answers.ts';
+import { openCode } from '../tables/open-family.ts';
+import type { PipeDimensions } from '../tables/pipe-dimensions.ts';
+import type { TableSource } from '../tables/table-source.ts';
+import type { NominalSize } from '../units/nominal-size.ts';
+import { codeSettings } from './code-settings.ts';
+import { npc } from './npc/npc.ts';
+import type { PlumbingCode } from './plumbing-code.ts';
+import type { Tools } from './tools.ts';
+
+/** The rule module of each family; its tables stand in `tables/<family>/`. */
+const modules: Readonly<Record<string, (tools: Tools) => ReturnType<typeof npc>>> = { npc };
+
+export interface CodeSources {
+  readonly tables: TableSource;
+  readonly dimensions: PipeDimensions;
+  readonly local?: TableSource;
+}
+
+/** One code ready to size with. An unknown code is wrong usage; a setting that it does not know is refused with its place. */
+export function plumbingCode(
+  id: string,
+  { tables, dimensions, local }: CodeSources,
+  settings: Settings,
+  where: string,
+): PlumbingCode {
+  const family = openCode(tables, id, local);
+  const bind = modules[family.id];
+  if (bind === undefined) {
+    throw new InputError(`code ${id}`, `has tables but no rules yet; built are ${Object.keys(modules).join(', ')}`, {
+      exit: 2,
+    });
+  }
+  const chosen = codeSettings(family, settings, where);
+  const omit = new Set((Array.isArray(chosen.omitSizes) ? chosen.omitSizes : []) as NominalSize[]);
+  return {
+    id: family.code,
+    family: family.id,
+    title: family.title,
+    edition: family.edition,
+    unit: family.unit,
+    series: family.series,
+    dimensions,
+    omitSizes: omit,
+    settings: chosen,
+    localTables: family.localTables,
+    ruleTitle: (rule) => family.rules.get(rule.replace(/^([A-Z]+-R\d+).*$/, '$1'))?.title ?? rule,
+    ...bind({ family, omit, settings: chosen }),
+  };
+}

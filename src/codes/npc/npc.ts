@@ -1,0 +1,49 @@
+import { rowAtSize } from '../../tables/find-row.ts';
+import type { Load } from '../../units/quantity.ts';
+import type { PlumbingCode } from '../plumbing-code.ts';
+import type { Tools } from '../tools.ts';
+import { checks } from './checks.ts';
+import { drainRules } from './drain-rules.ts';
+import { bathroomGroup, fixtureRows, freeOfVent } from './fixtures.ts';
+import { readings, whenNoneHolds } from './readings.ts';
+import { ventRules } from './vent-rules.ts';
+import { wetVentRules } from './wet-vent-rules.ts';
+
+/** National Plumbing Code of Canada: which rule reads which table, the book's contents page. */
+export function npc(
+  tools: Tools,
+): Pick<
+  PlumbingCode,
+  | 'fixtures'
+  | 'armLimit'
+  | 'readings'
+  | 'whenNoneHolds'
+  | 'rules'
+  | 'checks'
+  | 'freeOfVent'
+  | 'stackOffset'
+  | 'batteryLimits'
+  | 'group'
+> {
+  const { family } = tools;
+  const arms = family.table('trap-arm');
+  return {
+    fixtures: fixtureRows(tools),
+    readings: readings(tools),
+    whenNoneHolds: whenNoneHolds(tools),
+    rules: [...drainRules(tools), ...wetVentRules(tools), ...ventRules(tools)],
+    checks: checks(tools),
+    freeOfVent: freeOfVent(tools),
+    armLimit: (trap, { closet }) => {
+      const longest = rowAtSize(arms, 'trap', trap, 'smaller', family.series)?.amount('longest').value;
+      return closet || typeof longest !== 'number' ? null : longest;
+    },
+    stackOffset: family.number('stack-offset-length', 'length').value,
+    batteryLimits: {
+      reliefDrainLoad: family.number('relief-drain-load', 'load').value as Load,
+      additionalAfter: family.number('additional-fixtures', 'count').value,
+      turnDegrees: family.number('additional-turn', 'angle').value,
+    },
+    group: bathroomGroup(tools),
+  };
+}

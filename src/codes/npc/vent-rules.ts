@@ -1,0 +1,184 @@
+import { sizeForLength } from '../../tables/find-length.ts';
+import { oneSizeBelow, rowAtSize } from '../../tables/find-row.ts';
+import type { NominalSize } from '../../units/nominal-size.ts';
+import { unitsOf } from '../../units/quantity.ts';
+import type { Role } from '../role.ts';
+import { followStep, tableStep } from '../rules/steps.ts';
+import type { SizesSoFar, SizingRule, Step } from '../sizing-rule.ts';
+import type { Tools } from '../tools.ts';
+import type { PipeUse } from '../use.ts';
+
+const byLength: ReadonlySet<Role> = new Set(['branch-vent', 'vent-header', 'circuit-vent', 'continuous-vent']);
+const byStack: ReadonlySet<Role> = new Set(['stack-vent', 'vent-stack']);
+/** Vents whose size follows another's; where traps breathe through one as well, its own load and length bind too. */
+const followers: ReadonlySet<Role> = new Set([
+  'relief-vent',
+  'additional-circuit-vent',
+  'yoke-vent',
+  'offset-relief-vent',
+]);
+const growsToSky: ReadonlySet<Role> = new Set([
+  'branch-vent',
+  'stack-vent',
+  'vent-stack',
+  'vent-header',
+  'circuit-vent',
+  'continuous-vent',
+]);
+
+/** Sizes of dry vents: National Plumbing Code 2.5.7. and 2.5.8., rules R51, R65, R73 to R80. */
+export function ventRules({ family, omit }: Tools): SizingRule[] {
+  const trapTable = family.table('vent-by-trap');
+  const lengthTable = family.table('vent-length');
+  const stackTable = family.table('stack-vent');
+  const rule = family.rule;
+  const { series } = family;
+  const { rank } = series;
+  const reliefMost = family.size('relief-most');
+  const mainVent = family.size('main-vent');
+
+  const lengthRule = (pipe: PipeUse): string =>
+    pipe.role === 'continuous-vent' ? 'NPC-R51' : pipe.role === 'circuit-vent' ? 'NPC-R65' : 'NPC-R76';
+
+  return [
+    {
+      id: 'NPC-R75',
+      reads: 'use',
+      ask: (pipe) => {
+        const trap = pipe.vent?.largestTrap ?? null;
+        if (trap === null || pipe.role === 'idle' || pipe.portion === 'wet') return undefined;
+        const cell = rowAtSize(trapTable, 'trap', trap, 'larger', series)?.size('vent');
+        if (cell === undefined) return { ...followStep(rule('NPC-R75'), trap, { trap }), asks: null };
+        return { ...followStep(rule('NPC-R75'), cell.value as NominalSize, { trap }), cell, trust: cell.trust };
+      },
+    },
+    {
+      id: 'NPC-R76',
+      reads: 'use',
+      ask: (pipe) => {
+        const { vent } = pipe;
+        if (vent === null || vent.length === null || pipe.portion === 'wet') return undefined;
+        const asFollower = followers.has(pipe.role) && vent.load > 0;
+        if (!byLength.has(pipe.role) && !asFollower) return undefined;
+        const found = sizeForLength(lengthTable, 'load', vent.load, vent.length, { omit });
+        const facts = { loadUnits: unitsOf(vent.load), lengthM: vent.length };
+        if (found === null) return pastTable(lengthRule(pipe), facts);
+        return tableStep(rule(lengthRule(pipe)), found, { ...facts, row: found.row.name }, 'm');
+      },
+    },
+    {
+      id: 'NPC-R77',
+      reads: 'sizes',
+      ask: (pipe, soFar) => {
+        const { vent } = pipe;
+        if (!byStack.has(pipe.role) || vent?.stack === null || vent === null || vent.length === null) return undefined;
+        const size = soFar(vent.stack.foot);
+        if (size === null) return undefined;
+        const facts = { stackSize: size, loadUnits: unitsOf(vent.load), lengthM: vent.length };
+        const found = sizeForLength(stackTable, 'load', vent.load, vent.length, {
+          group: { column: 'stack', size: stackRow(size) },
+          omit,
+        });
+        if (found === null) return pastTable('NPC-R77', facts);
+        return tableStep(rule('NPC-R77'), found, { ...facts, row: found.row.name }, 'm');
+      },
+    },
+    {
+      id: 'NPC-R77-half',
+      reads: 'sizes',
+      ask: (pipe, soFar) => {
+        if (!byStack.has(pipe.role) || pipe.vent?.stack === null || pipe.vent === null) return undefined;
+        const size = soFar(pipe.vent.stack.foot);
+        return size === null
+          ? undefined
+          : followStep(rule('NPC-R77'), halfOf(size), { stackSize: size, demand: 'half the stack' });
+      },
+    },
+    { id: 'NPC-R73', reads: 'sizes', ask: (pipe, soFar) => relief(pipe, soFar) },
+    { id: 'NPC-R74', reads: 'sizes', ask: (pipe, soFar) => noStepDown(pipe, soFar) },
+    {
+      id: 'NPC-R78',
+      reads: 'sizes',
+      ask: (pipe, soFar) => {
+        const main = pipe.mainVent;
+        const foot = pipe.vent?.stack?.foot;
+        if (main === null || foot === undefined) return undefined;
+        const holds = (size: NominalSize | null): boolean => size !== null && rank(size) >= rank(mainVent.value);
+        if (holds(main.drawn) || main.others.some((way) => way.every((one) => holds(soFar(one))))) return undefined;
+        if (!holds(soFar(foot)) || main.before.some((one) => holds(soFar(one)))) return undefined;
+        return { ...followStep(rule('NPC-R78'), mainVent.value, {}), cell: mainVent, trust: mainVent.trust };
+      },
+    },
+    {
+      id: 'NPC-R79',
+      reads: 'sizes',
+      ask: (pipe, soFar) => {
+        const ends = pipe.role === 'yoke-vent' ? pipe.vent?.between : null;
+        const sizes = (ends ?? []).flatMap((one) => soFar(one) ?? []);
+        if (ends === null || ends === undefined || sizes.length < 2) return undefined;
+        const smaller = sizes.reduce((a, b) => (rank(a) <= rank(b) ? a : b));
+        return below('NPC-R79', smaller, { smallerOfBoth: smaller });
+      },
+    },
+    {
+      id: 'NPC-R80',
+      reads: 'sizes',
+      ask: (pipe, soFar) => {
+        const leader = pipe.role === 'offset-relief-vent' ? pipe.vent?.follows : null;
+        const size = leader === null || leader === undefined ? null : soFar(leader);
+        return size === null ? undefined : below('NPC-R80', size, { stackVent: size });
+      },
+    },
+  ];
+
+  /** One size below the circuit vent, never asked above the printed most (2.5.7.3.(1)); the trap's own floor is R75. */
+  function relief(pipe: PipeUse, soFar: SizesSoFar): Step | undefined {
+    if (pipe.role !== 'relief-vent' && pipe.role !== 'additional-circuit-vent') return undefined;
+    const leader = pipe.vent?.follows ?? null;
+    const circuit = leader === null ? null : soFar(leader);
+    if (circuit === null) return undefined;
+    const smaller = oneSizeBelow(lengthTable, circuit, series, omit) ?? circuit;
+    const asks = rank(smaller) > rank(reliefMost.value) ? reliefMost.value : smaller;
+    return followStep(rule('NPC-R73'), asks, { circuitVent: circuit, most: reliefMost.value });
+  }
+
+  function below(id: string, size: NominalSize, facts: Step['facts']): Step {
+    return followStep(rule(id), oneSizeBelow(stackTable, size, series, omit) ?? size, facts);
+  }
+
+  /** Not smaller than any vent that joins it on the way to the sky (2.5.7.2.). */
+  function noStepDown(pipe: PipeUse, soFar: SizesSoFar): Step | undefined {
+    if (!growsToSky.has(pipe.role) || pipe.drain !== null) return undefined;
+    let largest: { size: NominalSize; from: number } | null = null;
+    for (const from of pipe.joining) {
+      const size = soFar(from);
+      if (size !== null && (largest === null || rank(size) > rank(largest.size))) largest = { size, from };
+    }
+    return largest === null ? undefined : followStep(rule('NPC-R74'), largest.size, { fromPipe: largest.from });
+  }
+
+  /** A stack between printed sizes takes the next larger row. */
+  function stackRow(size: NominalSize): NominalSize {
+    const printed = [...new Set(stackTable.rows.flatMap((row) => row.size('stack').value ?? []))] as NominalSize[];
+    return printed.filter((one) => rank(one) >= rank(size)).sort((a, b) => rank(a) - rank(b))[0] ?? size;
+  }
+
+  function halfOf(size: NominalSize): NominalSize {
+    const width = (one: NominalSize): number => series.sizes[rank(one)]!.lengthsMm[0]!;
+    const half = width(size) / 2;
+    return stackTable.sizes.find((one) => !omit.has(one) && width(one) >= half - 0.1) ?? size;
+  }
+
+  function pastTable(id: string, facts: Step['facts']): Step {
+    const { clause, trust } = rule(id);
+    return {
+      rule: id,
+      clause,
+      cell: null,
+      trust,
+      facts: { ...facts, pastTable: true },
+      asks: null,
+      provisional: false,
+    };
+  }
+}

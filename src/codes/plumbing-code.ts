@@ -1,0 +1,87 @@
+import type { FixtureDetail, FixtureKind } from '../model/identity.ts';
+import type { PipeDimensions } from '../tables/pipe-dimensions.ts';
+import type { Cell } from '../tables/table.ts';
+import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
+import type { Load } from '../units/quantity.ts';
+import type { BatteryFacts, Broken } from './battery.ts';
+import type { Check } from './check.ts';
+import type { SizingRule } from './sizing-rule.ts';
+import type { Reading } from './use.ts';
+
+/** One edition of one code, ready to size with: tables bound to rules. */
+export interface PlumbingCode {
+  readonly id: string;
+  readonly family: string;
+  readonly title: string;
+  readonly edition: string;
+  /** Word for the load: `fixture units`, `l/s`. */
+  readonly unit: string;
+  readonly series: SizeSeries;
+  /** Outside diameters by which a measured pipe is read. */
+  readonly dimensions: PipeDimensions;
+  readonly fixtures: FixtureRows;
+  readonly omitSizes: ReadonlySet<NominalSize>;
+  /** What the user set, defaults filled in: shown on every deliverable. */
+  readonly settings: Readonly<Record<string, string | number | boolean | readonly string[]>>;
+  /** Local table files laid over ours. */
+  readonly localTables: readonly string[];
+  readonly readings: readonly ReadingRule[];
+  /** Which of two readings stands when neither holds and both break equally many conditions. */
+  readonly whenNoneHolds: (facts: BatteryFacts) => Reading;
+  readonly rules: readonly SizingRule[];
+  /** What a rule is about, in words of the trade. */
+  readonly ruleTitle: (id: string) => string;
+  readonly checks: readonly Check[];
+  /** Longest trap arm in metres; null where the row has a limit of another kind or the code prints none. */
+  readonly armLimit: (trap: NominalSize, row: FixtureRow) => number | null;
+  /** The rule that frees a fixture's trap of a vent, or null. */
+  readonly freeOfVent: (trap: FreeTrapFacts) => { readonly rule: string; readonly clause: string } | null;
+  /** Horizontal offsets of a stack shorter than this, metres, count as stack. */
+  readonly stackOffset: number;
+  readonly batteryLimits: {
+    readonly reliefDrainLoad: Load;
+    readonly additionalAfter: number;
+    readonly turnDegrees: number;
+  };
+  /** Fixtures in one space that count less together than one by one; null where the code has no such rule. */
+  readonly group: GroupRule | null;
+}
+
+export interface FreeTrapFacts {
+  readonly kind: FixtureKind | null;
+  readonly emergency: boolean | null;
+  readonly trap: NominalSize;
+  /** Of the fixture drain: developed length and fall in metres, null where unknown. */
+  readonly length: number | null;
+  readonly fall: number | null;
+}
+
+export interface FixtureRow {
+  readonly id: string;
+  readonly title: string;
+  readonly closet: boolean;
+  readonly emergency: boolean;
+  /** Least and largest trap that the row prints. */
+  readonly leastTrap: NominalSize;
+  readonly largestTrap: NominalSize;
+  /** Load on a trap of this size. */
+  loadAt(trap: NominalSize): { readonly load: Load; readonly cell: Cell };
+}
+
+export interface FixtureRows {
+  /** Rows that fit what is known of a fixture, lightest first; all rows of the code when the kind is null. */
+  rowsFor(kind: FixtureKind | null, detail: FixtureDetail): readonly FixtureRow[];
+}
+
+export interface GroupRule {
+  readonly clause: string;
+  /** Part of a group that a row is, or null. */
+  readonly memberOf: (row: FixtureRow, detail: FixtureDetail) => 'closet' | 'lavatory' | 'bath' | null;
+  readonly figure: (closet: FixtureRow) => { readonly load: Load; readonly cell: Cell };
+}
+
+/** One way to read a battery, and the conditions that the code sets on it. */
+export interface ReadingRule {
+  readonly reading: Reading;
+  readonly broken: (facts: BatteryFacts) => readonly Broken[];
+}

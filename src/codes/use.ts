@@ -1,0 +1,91 @@
+import type { JointId, PipeId } from '../network/network.ts';
+import type { FixtureId } from '../paths/paths.ts';
+import type { NominalSize } from '../units/nominal-size.ts';
+import type { Load } from '../units/quantity.ts';
+import type { BatteryFacts } from './battery.ts';
+import type { DrainRole, Portion, Role } from './role.ts';
+
+/** Everything a sizing rule may know of one pipe, besides the sizes found so far. */
+export interface PipeUse {
+  readonly pipe: PipeId;
+  readonly role: Role;
+  readonly also: readonly Role[];
+  readonly portion: Portion | null;
+  /** Of everything whose water passes, group figures applied. */
+  readonly load: Load;
+  readonly closets: number;
+  /** Fixtures whose water passes. */
+  readonly fixtures: number;
+  readonly vertical: boolean;
+  /** Fall downstream in m/m; null when vertical or unknown. */
+  readonly slope: number | null;
+  /** Largest trap among the fixtures of a fixture drain; null on other pipes. */
+  readonly trap: NominalSize | null;
+  /** Least fixture outlet pipe that the fixture's own row prints; of portion `outlet` only. */
+  readonly outlet: NominalSize | null;
+  /** Wet pipes that flow in at the upstream joint. */
+  readonly inflows: readonly PipeId[];
+  /** Of a wet pipe: dry vents whose foot stands at its upstream joint. Of a dry one: vents that join at its lower joint. */
+  readonly joining: readonly PipeId[];
+  readonly stack: StackUse | null;
+  /** Horizontal length in metres of the offset that the pipe is part of; null when it is part of none. */
+  readonly offset: number | null;
+  readonly battery: BatteryUse | null;
+  readonly vent: VentUse | null;
+  /** Set on a drain that stands in for a relief or additional circuit vent. */
+  readonly standsIn: StandIn | null;
+  /** What a wet pipe is as a drain, whatever it also vents; null for dry pipes. */
+  readonly drain: DrainRole | null;
+  /** Of a stack vent to the sky: what decides whether it must be the large vent of its building drain. */
+  readonly mainVent: MainVentUse | null;
+}
+
+export interface MainVentUse {
+  /** Ways to the sky of every other vent of the building drain: pipes from foot to mouth. */
+  readonly others: readonly (readonly PipeId[])[];
+  /** Some vent of the building drain is drawn this large all the way, by nominal size: the widest such. */
+  readonly drawn: NominalSize | null;
+  /** Feet of stacks that come before this one as bearer of the large vent. */
+  readonly before: readonly PipeId[];
+}
+
+/** A stack, seen from one of its sections. */
+export interface StackUse {
+  readonly id: number;
+  /** The most that any one storey puts in above the foot of this section. */
+  readonly heaviestStorey: { readonly storey: number; readonly load: Load };
+  /** Last section before the drain: its size and load stand for the stack. */
+  readonly foot: PipeId;
+  readonly footLoad: Load;
+}
+
+export interface BatteryUse {
+  readonly facts: BatteryFacts;
+  readonly reading: Reading;
+}
+export type Reading = 'wet-vent' | 'circuit-vent' | 'individual-vent';
+
+export interface VentUse {
+  /** Load that enters a vent table, what the code leaves out left out. */
+  readonly load: Load;
+  /** Developed length in metres that enters a vent table; null where the code ignores it. */
+  readonly length: number | null;
+  readonly largestTrap: NominalSize | null;
+  /** Stack whose foot selects the row, of stack vents and vent stacks. */
+  readonly stack: StackUse | null;
+  /** Vent whose size this one follows: the circuit vent of a relief vent, the stack vent of an offset relief vent. */
+  readonly follows: PipeId | null;
+  /** Stack and vent stack that a yoke vent joins. */
+  readonly between: readonly [PipeId, PipeId] | null;
+  readonly foot: JointId;
+  /** Storeys of the wet vent that a stack vent serves, 0 when it serves none. */
+  readonly wetVentStoreys: number;
+}
+
+/** A drain that stands in for a relief or additional circuit vent. */
+export interface StandIn {
+  readonly as: 'relief-vent' | 'additional-circuit-vent';
+  readonly load: Load;
+  readonly largestTrap: NominalSize;
+  readonly fixtures: readonly FixtureId[];
+}

@@ -1,0 +1,173 @@
+import type { Facts, FindingCode } from './finding.ts';
+
+/** What a sentence is built from. Names and numbers come ready to print; `clause` carries its brackets or is empty. */
+export interface SentenceFacts {
+  readonly facts: Facts;
+  /** Names of the elements the finding is about, the thing at fault first. */
+  readonly about: readonly string[];
+  readonly clause: string;
+  readonly unit: string;
+  length(metres: number): string;
+  slope(value: number): string;
+  number(value: number): string;
+}
+
+type Sentence = (given: SentenceFacts) => string;
+
+const plain = (value: unknown): string => String(value).replaceAll('-', ' ');
+const num = ({ facts }: SentenceFacts, key: string): number =>
+  typeof facts[key] === 'number' ? (facts[key] as number) : 0;
+const text = ({ facts }: SentenceFacts, key: string): string =>
+  facts[key] === null || facts[key] === undefined ? '?' : String(facts[key]);
+const has = ({ facts }: SentenceFacts, key: string): boolean => facts[key] !== undefined && facts[key] !== null;
+const first = ({ about }: SentenceFacts): string => about[0] ?? 'The model';
+const many = ({ about }: SentenceFacts, one: string, several: string): string =>
+  about.length === 1
+    ? `${about[0]} ${one}`
+    : `${about.length} elements (${about.slice(0, 3).join(', ')}${about.length > 3 ? ', …' : ''}) ${several}`;
+const load = (given: SentenceFacts, key = 'loadUnits'): string => `${given.number(num(given, key))} ${given.unit}`;
+
+/** The condition of a reading that a battery breaks, in words; the finding adds whose and where. */
+export function brokenText(given: SentenceFacts): string {
+  const { facts } = given;
+  if (has(given, 'guestUnits'))
+    return `fixtures with vents of their own bring ${load(given, 'guestUnits')}, at most ${given.number(num(given, 'guestUnitsMost'))} may join`;
+  if (has(given, 'closetsMost'))
+    return `${text(given, 'closets')} water closets are served, at most ${text(given, 'closetsMost')} may be`;
+  if (facts.closetsApart === true) return 'its two water closets do not join at one level by a double fitting';
+  if (facts.closetUpstream === true) return 'a water closet joins upstream of another wet-vented fixture';
+  if (has(given, 'armMost')) return `an arm of ${text(given, 'arm')} joins, at most ${text(given, 'armMost')} may`;
+  if (has(given, 'storey') && has(given, 'limitUnits'))
+    return `storey ${num(given, 'storey') + 1} brings ${load(given)}, at most ${given.number(num(given, 'limitUnits'))} may come from one above the lowest`;
+  if (has(given, 'offsetsMost'))
+    return `it has ${text(given, 'offsets')} horizontal offsets, at most ${text(given, 'offsetsMost')}`;
+  if (has(given, 'offsetMostM'))
+    return `its offset is ${given.length(num(given, 'offsetM'))} long, at most ${given.length(num(given, 'offsetMostM'))}`;
+  if (facts.joinedInOffset === true) return 'a drain joins in its horizontal offset';
+  if (has(given, 'verticalPipes')) return 'the branch has a vertical piece';
+  if (has(given, 'storeys')) return `its fixtures stand on ${text(given, 'storeys')} storeys`;
+  if (facts.stackUpstream === true) return 'a stack joins upstream of a circuit-vented fixture';
+  if (has(given, 'trapsAtStart'))
+    return num(given, 'trapsAtStart') === 0
+      ? 'the vent does not join on the drain of the most upstream fixture'
+      : 'more than one fixture joins upstream of the vent';
+  if (has(given, 'smallOutlets'))
+    return `${text(given, 'smallOutlets')} outlets below ${text(given, 'smallBelow')} stand beside larger ones`;
+  if (has(given, 'trapsMost'))
+    return `${text(given, 'traps')} fixtures join between two vents, at most ${text(given, 'trapsMost')} may`;
+  if (has(given, 'turnMostDeg'))
+    return `the branch turns ${given.number(num(given, 'turnDeg'))}° in plan between two vents, at most ${text(given, 'turnMostDeg')}°`;
+  if (has(given, 'fixturesMost'))
+    return `${text(given, 'fixturesOnVent')} fixtures drain into the vent, at most ${text(given, 'fixturesMost')} may`;
+  if (facts.fixturesApart === true) return 'the two fixtures on the vent do not join by one double fitting';
+  if (has(given, 'limitUnits'))
+    return `${load(given)} are counted, the limit is ${given.number(num(given, 'limitUnits'))}`;
+  if (has(given, 'loadUnits')) return `${load(given)} are more than any size holds`;
+  return 'a condition is broken';
+}
+
+const row = (given: SentenceFacts): string =>
+  `The row of ${text(given, 'fixtures')} fixtures (${text(given, 'battery') === '?' ? '' : `battery ${num(given, 'battery') + 1}`})`;
+
+/** One sentence a code, that a designer can act on: the thing, the number, the limit, the clause. */
+export const sentences: Readonly<Record<FindingCode, Sentence>> = {
+  undersized: (f) =>
+    `${first(f)} (${plain(f.facts.role)}) is drawn ${text(f, 'modelled')} and needs ${f.facts.requiredLeast !== f.facts.required && has(f, 'requiredLeast') ? `${text(f, 'requiredLeast')} to ` : ''}${text(f, 'required')} for ${load(f)}${f.clause}${f.facts.provisional === true ? '; provisional, a figure of the code could not be read' : ''}.`,
+  oversized: (f) =>
+    `${first(f)} (${plain(f.facts.role)}) is drawn ${text(f, 'modelled')}; ${text(f, 'required')} is enough${f.clause}.`,
+  'size-unknown': (f) =>
+    f.facts.said === null || f.facts.said === undefined
+      ? `${many(f, 'has', 'have')} no size in the model: sized, but nothing to compare.`
+      : `${first(f)} says its size is ${text(f, 'said')} (${text(f, 'from')}), which is no size of the code.`,
+  'size-contradicted': (f) =>
+    `${first(f)} is ${text(f, 'size')} by ${text(f, 'from')} but ${text(f, 'other')} by ${text(f, 'otherFrom')}; the first is used.`,
+  'smaller-downstream': (f) =>
+    `${first(f)} is drawn ${text(f, 'modelled')}, smaller than ${f.about[1] ?? 'the pipe'} (${text(f, 'upstream')}) that drains into it${f.clause}.`,
+  'unvented-trap': (f) =>
+    `The trap of ${first(f)} has no air path: no vent on its own drain, and none upstream that the code allows${f.clause}.`,
+  'wet-vent-overloaded': (f) => `${row(f)}: no wet vent size holds it, ${brokenText(f)}${f.clause}.`,
+  'wet-vent-not-allowed': (f) => `${row(f)} may not be wet vented: ${brokenText(f)}${f.clause}.`,
+  'circuit-vent-not-allowed': (f) => `${row(f)} may not be circuit vented: ${brokenText(f)}${f.clause}.`,
+  'relief-vent-missing': (f) =>
+    `${row(f)} is circuit vented and no relief vent, nor a vented drain that may stand in, joins downstream of its last fixture${f.clause}.`,
+  'additional-circuit-vent-missing': (f) => `${row(f)} needs an additional circuit vent: ${brokenText(f)}${f.clause}.`,
+  'stack-vent-missing': (f) =>
+    `The stack ${first(f)} carries ${load(f)} and does not go on upward as a stack vent${f.clause}.`,
+  'vent-stack-missing': (f) =>
+    `The stack ${first(f)} takes fixtures from ${text(f, 'storeys')} storeys; beyond ${text(f, 'storeysMost')} it needs a vent stack from its foot${f.clause}.`,
+  'vent-stack-misplaced': (f) =>
+    `The vent stack ${first(f)} does not start at or below the lowest connection of its stack${f.clause}.`,
+  'yoke-vent-missing': (f) =>
+    `The stack ${first(f)} takes fixtures from ${text(f, 'storeys')} storeys and has no yoke vent at storey ${num(f, 'storey') + 1}${f.clause}.`,
+  'yoke-vent-misplaced': (f) => `The yoke vent ${first(f)} does not join where the code asks${f.clause}.`,
+  'offset-relief-vent-missing': (f) =>
+    `The offset ${first(f)} is ${f.length(num(f, 'offsetM'))} long below ${text(f, 'storeys')} storeys with ${load(f)}; it has ${text(f, 'reliefVents')} of two offset relief vents${f.clause}.`,
+  'frost-enlargement-missing': (f) =>
+    `${first(f)} goes through the roof at ${text(f, 'size')}; frost may close it below ${text(f, 'least')}${f.clause}.`,
+  'trap-arm-too-long': (f) =>
+    has(f, 'turnDeg')
+      ? `The trap arm of ${first(f)} turns ${f.number(num(f, 'turnDeg'))}°, at most ${f.number(num(f, 'limitDeg'))}°${f.clause}.`
+      : f.facts.what === 'too short'
+        ? `The trap arm of ${first(f)} is ${f.length(num(f, 'lengthM'))} long, at least ${f.length(num(f, 'limitM'))} on a ${text(f, 'trap')} trap${f.clause}.`
+        : `From the trap of ${first(f)} to its vent it is ${f.length(num(f, 'lengthM'))}${f.facts.what === 'closet height' ? ' in height' : ''}, at most ${f.length(num(f, 'limitM'))} on a ${text(f, 'trap')} trap${f.clause}.`,
+  'trap-arm-too-steep': (f) =>
+    `The trap arm of ${first(f)} falls ${f.length(num(f, 'fallM'))} before its vent, at most ${f.length(num(f, 'limitM'))} on a ${text(f, 'trap')} trap: it would empty the trap${f.clause}.`,
+  'outlet-pipe-too-long': (f) =>
+    `The pipe between ${first(f)} and its trap is ${f.length(num(f, 'lengthM'))} long, at most ${f.length(num(f, 'limitM'))}${f.clause}.`,
+  'slope-too-small': (f) =>
+    `${first(f)} falls ${f.slope(num(f, 'slope'))}; ${text(f, 'size')} needs ${f.slope(num(f, 'least'))}${f.clause}.`,
+  'slope-unknown': (f) =>
+    `${many(f, 'has', 'have')} no slope, neither drawn nor stated: each size is read at its own least slope. What slope are they laid to?`,
+  backfall: (f) => `${first(f)} climbs ${f.length(num(f, 'climbM'))} on the way of its water.`,
+  'vent-joins-too-low': (f) =>
+    `${first(f)} joins another vent below the flood level of a fixture it serves${f.clause}.`,
+  'dry-vent-too-flat': (f) => `${first(f)} runs too flat before it has risen above the flood level${f.clause}.`,
+  'no-open-air': (f) =>
+    `${first(f)} ends ${has(f, 'topM') ? `inside, at ${f.length(num(f, 'topM'))},` : 'closed'} and not in open air: the traps that count on it are not vented.`,
+  'open-air-assumed': () =>
+    'No roof is modelled: vents that end 2 m above the highest floor with fixtures are taken to reach open air.',
+  'storeys-assumed': (f) =>
+    `The model has no storeys: one is counted for each ${f.length(num(f, 'heightM'))} of height.`,
+  'cleanout-missing': (f) => `${first(f)} has no cleanout${f.clause}.`,
+  'cleanout-too-small': (f) =>
+    `The cleanout ${first(f)} is ${text(f, 'modelled')}, at least ${text(f, 'least')}${f.clause}.`,
+  'closet-needs-larger': (f) =>
+    `${first(f)} carries ${text(f, 'closets')} water closets and needs a larger size${f.clause}.`,
+  'branch-too-long': (f) =>
+    `${first(f)} is ${f.length(num(f, 'lengthM'))} long, at most ${f.length(num(f, 'limitM'))}${f.clause}.`,
+  'appliance-not-allowed': (f) => `${first(f)} may not drain here${f.clause}.`,
+  'vent-area-too-small': (f) => `The vents of ${first(f)} have too little area together${f.clause}.`,
+  'main-vent-missing': (f) =>
+    `No vent of the building drain reaches open air at ${text(f, 'least')} or larger${has(f, 'widest') ? `; the widest is ${text(f, 'widest')}` : ''}${f.clause}.`,
+  'fixture-unidentified': (f) =>
+    f.facts.kind === null || f.facts.kind === undefined
+      ? `${first(f)} drains, but nothing in the model says what it is: sizes are given from the lightest to the heaviest it may be.`
+      : `${first(f)} is a ${plain(f.facts.kind)}, but a detail that decides its load is missing: sizes are given for both.`,
+  'fixture-unconnected': (f) => `${first(f)} has no drain pipe.`,
+  'kind-contradicted': (f) =>
+    `${first(f)} is called one thing by its ${text(f, 'first')} and another by its ${text(f, 'other')}.`,
+  'open-end': (f) =>
+    `${first(f)} has an open end${has(f, 'gapM') ? `; the nearest thing is ${f.length(num(f, 'gapM'))} away` : ''}.`,
+  'dead-end': (f) => `${first(f)} leads nowhere: no water and no air passes.`,
+  'joint-inferred': (f) =>
+    `${text(f, 'joints')} joints without connected ports were found by geometry; the widest gap is ${f.length(num(f, 'gapM'))}.`,
+  'joint-contradicted': (f) =>
+    f.facts.what === 'direction'
+      ? `The ports of ${first(f)} and ${f.about[1] ?? 'another element'} are joined against their flow directions.`
+      : `Ports join ${first(f)} to ${f.about[1] ?? 'another element'}, but they lie ${f.length(num(f, 'gapM'))} apart.`,
+  loop: (f) => `${many(f, 'closes', 'close')} a loop between drains.`,
+  'no-sewer-end': (f) =>
+    `${many(f, 'drains', 'drain')} into piping that has no end to leave by: no sewer end was found.`,
+  'sewer-end-assumed': (f) =>
+    `The sewer end is taken at ${first(f)} (${plain(f.facts.how)}, of ${text(f, 'candidates')} open ends): say so in the answers file if it is another.`,
+  'wrong-system': (f) => `${first(f)} is filed under a system it does not belong to by its piping.`,
+  'fit-in-wall': (f) => `${first(f)} does not fit in its wall at ${text(f, 'required')}.`,
+  'double-water-path': (f) => `${first(f)} has two ways for its water.`,
+  'doubled-element': (f) => `${first(f)} stands twice at one place; one is used.`,
+  'group-not-applied': (f) =>
+    `${text(f, 'fixtures')} fixtures may form bathroom groups, but the model puts them in no room: their loads are added one by one${f.clause}.`,
+  'file-damaged': (f) =>
+    `${text(f, 'file')} is damaged: ${plain(f.facts.problem)}, ${text(f, 'count')} times, first at line ${text(f, 'line')}.`,
+  'text-damaged': (f) =>
+    `${text(f, 'file')} has ${text(f, 'count')} damaged texts (${plain(f.facts.problem)}), first at line ${text(f, 'line')}.`,
+};

@@ -1,0 +1,98 @@
+import type { FixtureRow, PlumbingCode } from '../codes/plumbing-code.ts';
+import { keyMatches } from '../model/answer-keys.ts';
+import type { Answers } from '../model/answers.ts';
+import type { Identity } from '../model/identity.ts';
+import type { Model } from '../model/model.ts';
+import type { Network } from '../network/network.ts';
+import type { FixturePath, Paths } from '../paths/paths.ts';
+import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
+import type { FixtureLoad, Scenario } from './loads.ts';
+import { type ModelledSize, readSize, sizeOfLength } from './read-size.ts';
+
+export interface FixtureFacts {
+  readonly model: Model;
+  readonly identities: readonly Identity[];
+  readonly network: Network;
+  readonly paths: Paths;
+  readonly code: PlumbingCode;
+  readonly answers: Answers;
+  readonly modelled: readonly ModelledSize[];
+}
+
+/** Row, trap and load of every fixture in one scenario, by fixture id. */
+export function fixtureLoads(facts: FixtureFacts, scenario: Scenario): FixtureLoad[] {
+  return facts.paths.fixtures.map((fixture) => {
+    const { kind, detail } = facts.identities[fixture.element]!;
+    const rows = facts.code.fixtures.rowsFor(kind, detail);
+    const witnessed = trapWitness(facts, fixture);
+    const sized = rows.map((row) => ({ row, ...trapOf(row, witnessed, facts.code.series) }));
+    const chosen = choose(
+      sized.map((one) => ({ ...one, ...one.row.loadAt(one.trap) })),
+      scenario,
+      kind === null,
+    );
+    return { ...chosen, settled: rows.length === 1 };
+  });
+}
+
+interface Candidate {
+  readonly row: FixtureRow;
+  readonly trap: NominalSize;
+  readonly trapFrom: FixtureLoad['trapFrom'];
+  readonly load: FixtureLoad['load'];
+  readonly cell: FixtureLoad['cell'];
+}
+
+/** Lightest and heaviest of what the fixture may be; an unidentified one is a closet only where the scenario says so. */
+function choose(rows: readonly Candidate[], scenario: Scenario, unidentified: boolean): Candidate {
+  const byLoad = [...rows].sort((a, b) => a.load - b.load);
+  if (scenario === 'lightest') return byLoad[0]!;
+  if (unidentified && scenario === 'closet') return byLoad.findLast(({ row }) => row.closet) ?? byLoad.at(-1)!;
+  if (unidentified) return byLoad.findLast(({ row }) => !row.closet) ?? byLoad.at(-1)!;
+  return byLoad.at(-1)!;
+}
+
+interface TrapWitness {
+  readonly size: NominalSize;
+  readonly from: 'drawn' | 'property' | 'answer' | 'pipe';
+}
+
+/** Drawn trap, stated outlet or the user's word decide; a pipe's size counts only within what the row prints. */
+function trapOf(
+  row: FixtureRow,
+  witness: TrapWitness | null,
+  series: SizeSeries,
+): { trap: NominalSize; trapFrom: FixtureLoad['trapFrom'] } {
+  if (witness === null) return { trap: row.leastTrap, trapFrom: 'assumed' };
+  if (witness.from !== 'pipe') return { trap: witness.size, trapFrom: witness.from };
+  const rank = series.rank(witness.size);
+  if (rank <= series.rank(row.leastTrap))
+    return { trap: row.leastTrap, trapFrom: rank === series.rank(row.leastTrap) ? 'pipe' : 'assumed' };
+  return rank > series.rank(row.largestTrap)
+    ? { trap: row.largestTrap, trapFrom: 'assumed' }
+    : { trap: witness.size, trapFrom: 'pipe' };
+}
+
+function trapWitness(facts: FixtureFacts, fixture: FixturePath): TrapWitness | null {
+  const { model, network, paths, code, answers, modelled, identities } = facts;
+  const element = model.elements[fixture.element]!;
+  for (const [key, answer] of answers.fixtures) {
+    if (answer.trapSize !== undefined && keyMatches(key, element) && code.series.has(answer.trapSize)) {
+      return { size: answer.trapSize as NominalSize, from: 'answer' };
+    }
+  }
+  const trap = paths.traps[fixture.id]!;
+  if (trap.how === 'drawn') {
+    const drawn = network.joints[trap.at]!.elements.find(
+      (one) => identities[one]?.part === 'trap' && one !== fixture.element,
+    );
+    const size = drawn === undefined ? null : readSize(model.elements[drawn]!, code.series, code.dimensions).size;
+    if (size !== null) return { size, from: 'drawn' };
+  }
+  const stated = identities[fixture.element]!.outletMm;
+  const outlet = stated === null ? null : sizeOfLength(stated, code.series, code.dimensions);
+  if (outlet !== null) return { size: outlet, from: 'property' };
+  const begins = fixture.water[trap.after];
+  const pipe = begins === undefined ? null : modelled[begins]!.size;
+  return pipe === null ? null : { size: pipe, from: 'pipe' };
+}

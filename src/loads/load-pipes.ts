@@ -1,0 +1,129 @@
+import { type Finding, finding, type WithFindings } from '../findings/finding.ts';
+import type { ElementId } from '../model/model.ts';
+import type { FixtureId } from '../paths/paths.ts';
+import { type Load, noLoad, plusLoad } from '../units/quantity.ts';
+import { bathroomGroups } from './bathroom-groups.ts';
+import { type FixtureFacts, fixtureLoads } from './fixture-loads.ts';
+import type { Loads, PipeLoad, Scenario } from './loads.ts';
+
+/**
+ * The load on every pipe in one scenario: what its fixtures put in, plus what the pipes upstream carry, in one pass
+ * with the flow. A bathroom group counts its own figure on every pipe that carries all of it, and never more on a part.
+ */
+export function loadPipes(facts: FixtureFacts, scenario: Scenario): WithFindings<Loads> {
+  const { paths, network, modelled } = facts;
+  const findings: Finding[] = [];
+  const fixtures = fixtureLoads(facts, scenario);
+  const { groups, findings: groupFindings } = bathroomGroups(facts, fixtures);
+  findings.push(...groupFindings);
+  const groupOf = new Map<FixtureId, number>();
+  groups.forEach(({ members }, group) => {
+    for (const member of members) groupOf.set(member, group);
+  });
+
+  const single: Load[] = network.pipes.map(() => noLoad);
+  const closets = new Int32Array(network.pipes.length);
+  const open: (Map<number, { sum: Load; members: number }> | null)[] = network.pipes.map(() => null);
+  const loads: Load[] = network.pipes.map(() => noLoad);
+  const settle = (pipe: number): void => {
+    const parts = open[pipe];
+    let load = single[pipe]!;
+    for (const [group, { sum, members }] of parts ?? []) {
+      const { figure, members: all } = groups[group]!;
+      load = plusLoad(load, Math.min(sum, figure) as Load);
+      if (members === all.length) {
+        single[pipe] = plusLoad(single[pipe]!, Math.min(sum, figure) as Load);
+        parts!.delete(group);
+      }
+    }
+    loads[pipe] = load;
+  };
+  const put = (pipe: number, group: number, sum: Load, members: number): void => {
+    const parts = open[pipe] ?? new Map<number, { sum: Load; members: number }>();
+    const known = parts.get(group);
+    parts.set(group, { sum: plusLoad(known?.sum ?? noLoad, sum), members: (known?.members ?? 0) + members });
+    open[pipe] = parts;
+  };
+  for (const pipe of paths.inFlowOrder) {
+    for (const fixture of paths.entering[pipe]!) {
+      const { load, row } = fixtures[fixture]!;
+      if (row.closet) closets[pipe]!++;
+      const group = groupOf.get(fixture);
+      if (group === undefined) single[pipe] = plusLoad(single[pipe]!, load);
+      else put(pipe, group, load, 1);
+    }
+    settle(pipe);
+    const next = paths.next[pipe];
+    if (next === null || next === undefined) continue;
+    single[next] = plusLoad(single[next]!, single[pipe]!);
+    closets[next]! += closets[pipe]!;
+    for (const [group, { sum, members }] of open[pipe] ?? []) put(next, group, sum, members);
+  }
+
+  const { order, from, to } = fixtureOrder(facts);
+  const pipes: PipeLoad[] = network.pipes.map(({ id }) => ({
+    load: loads[id]!,
+    closets: closets[id]!,
+    from: from[id]!,
+    to: to[id]!,
+  }));
+  findings.push(...sizeFindings(facts));
+  return { value: { scenario, fixtures, pipes, modelled, order, groups }, findings };
+}
+
+/** Fixtures in a walk up every tree of water, so that those of one pipe stand side by side. */
+function fixtureOrder({ paths, network }: FixtureFacts): { order: FixtureId[]; from: Int32Array; to: Int32Array } {
+  const count = new Int32Array(network.pipes.length);
+  for (const pipe of paths.inFlowOrder) {
+    count[pipe]! += paths.entering[pipe]!.length;
+    const next = paths.next[pipe];
+    if (next !== null && next !== undefined) count[next]! += count[pipe]!;
+  }
+  const from = new Int32Array(network.pipes.length);
+  const to = new Int32Array(network.pipes.length);
+  const free = new Int32Array(network.pipes.length);
+  const order: FixtureId[] = [];
+  let start = 0;
+  for (const pipe of [...paths.inFlowOrder].reverse()) {
+    const next = paths.next[pipe];
+    if (next === null || next === undefined) {
+      from[pipe] = start;
+      start += count[pipe]!;
+    } else {
+      from[pipe] = free[next]!;
+      free[next]! += count[pipe]!;
+    }
+    to[pipe] = from[pipe]! + count[pipe]!;
+    free[pipe] = from[pipe]!;
+    for (const fixture of paths.entering[pipe]!) {
+      order[free[pipe]!] = fixture;
+      free[pipe]!++;
+    }
+  }
+  return { order, from, to };
+}
+
+function sizeFindings({ network, modelled }: FixtureFacts): Finding[] {
+  const findings: Finding[] = [];
+  const told = new Set<ElementId>();
+  const unsized: ElementId[] = [];
+  for (const { id, element } of network.pipes) {
+    if (element === null || told.has(element)) continue;
+    told.add(element);
+    const { reason, said, from, size, contradictedBy } = modelled[id]!;
+    if (reason === 'no size in the model') unsized.push(element);
+    if (reason === 'size cannot be read') findings.push(finding('size-unknown', [element], { said, from }));
+    if (size !== null && contradictedBy !== null) {
+      findings.push(
+        finding('size-contradicted', [element], {
+          size,
+          from,
+          other: contradictedBy.size,
+          otherFrom: contradictedBy.from,
+        }),
+      );
+    }
+  }
+  if (unsized.length > 0) findings.push(finding('size-unknown', unsized, { said: null, from: null }));
+  return findings;
+}

@@ -1,0 +1,45 @@
+import type { FixtureRow } from '../codes/plumbing-code.ts';
+import type { FixtureId } from '../paths/paths.ts';
+import type { Cell } from '../tables/table.ts';
+import type { NominalSize } from '../units/nominal-size.ts';
+import type { Load } from '../units/quantity.ts';
+import type { ModelledSize } from './read-size.ts';
+
+/** How a fixture that the model does not settle is read in one run of the stages. */
+export type Scenario = 'as-modelled' | 'lightest' | 'heaviest' | 'closet';
+
+export interface Loads {
+  readonly scenario: Scenario;
+  readonly fixtures: readonly FixtureLoad[];
+  /** By pipe id. */
+  readonly pipes: readonly PipeLoad[];
+  /** Size the model gives each pipe, by pipe id; sections share their element's. */
+  readonly modelled: readonly ModelledSize[];
+  /** Fixtures in the order of a walk up the trees of water: each pipe's own are one stretch of it. */
+  readonly order: readonly FixtureId[];
+  /** Bathroom groups, by their closet. */
+  readonly groups: readonly BathroomGroup[];
+}
+
+export interface BathroomGroup {
+  readonly members: readonly FixtureId[];
+  readonly figure: Load;
+}
+
+export interface FixtureLoad {
+  readonly row: FixtureRow;
+  readonly load: Load;
+  readonly cell: Cell;
+  readonly trap: NominalSize;
+  readonly trapFrom: 'drawn' | 'property' | 'answer' | 'pipe' | 'assumed';
+  /** Kind and row are beyond doubt. */
+  readonly settled: boolean;
+}
+
+export interface PipeLoad {
+  readonly load: Load;
+  readonly closets: number;
+  /** Stretch of `Loads.order`: from, up to but without. Empty for dry pipes. */
+  readonly from: number;
+  readonly to: number;
+}

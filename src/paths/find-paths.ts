@@ -1,0 +1,41 @@
+import type { Finding, WithFindings } from '../findings/finding.ts';
+import type { Answers } from '../model/answers.ts';
+import type { Identity } from '../model/identity.ts';
+import type { Model } from '../model/model.ts';
+import type { Network } from '../network/network.ts';
+import { ventTraps } from './air.ts';
+import { dryPieces } from './dry-pieces.ts';
+import type { Paths } from './paths.ts';
+import { orientations, pipeSlopes } from './slopes.ts';
+import { seatTraps } from './traps.ts';
+import { waterPaths } from './water.ts';
+
+/**
+ * Water from every fixture to its sewer end, and air from every trap to the open sky.
+ * A fault of the model (no sewer end, a climb, a piece without open air) is a finding; the paths go as far as they can.
+ */
+export function findPaths(
+  model: Model,
+  identities: readonly Identity[],
+  network: Network,
+  answers: Answers,
+): WithFindings<Paths> {
+  const findings: Finding[] = [];
+  const vertical = orientations(model, network);
+  const water = waterPaths(model, identities, network, answers, findings);
+  const slopes = pipeSlopes(model, network, water, vertical, answers, findings);
+  const seats = seatTraps(model, identities, network, water, vertical);
+  const dry = dryPieces(model, identities, network, water.wet, findings);
+  const traps = ventTraps(network, water, dry, vertical, seats);
+  return {
+    value: {
+      ...water,
+      traps,
+      ...dry,
+      toward: water.toward.map((joint, pipe) => joint ?? dry.skyward[pipe] ?? null),
+      vertical,
+      slopes,
+    },
+    findings,
+  };
+}

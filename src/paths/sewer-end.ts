@@ -1,0 +1,113 @@
+import type { Answers } from '../model/answers.ts';
+import type { Identity } from '../model/identity.ts';
+import type { Model } from '../model/model.ts';
+import type { JointId, Network, PipeId } from '../network/network.ts';
+import type { DrainSystem } from './paths.ts';
+import type { Piece } from './water.ts';
+
+export interface SewerEndFacts {
+  readonly model: Model;
+  readonly identities: readonly Identity[];
+  readonly network: Network;
+  readonly answers: Answers;
+  readonly isVent: readonly boolean[];
+}
+
+/** Ends whose heights differ by less count as equally low. */
+const equalHeight = 0.01;
+
+/**
+ * Where one connected piece leaves: the user's answer, an element that says so, the end of the ports' directions, the
+ * lowest open end outside vent systems, the largest, the lowest GlobalId. null: the piece has no end to leave by.
+ */
+export function sewerEndOf(
+  piece: Piece,
+  facts: SewerEndFacts,
+): { joint: JointId; how: DrainSystem['how']; candidates: number } | null {
+  const { network, identities } = facts;
+  const answered = piece.joints.filter((joint) => isAnswered(joint, facts));
+  if (answered.length > 0) return { joint: openFirst(answered, network), how: 'answer', candidates: answered.length };
+
+  const named = piece.joints.filter((joint) =>
+    network.joints[joint]!.elements.some((element) => identities[element]?.part === 'sewer-connection'),
+  );
+  if (named.length > 0) return { joint: lowestOf(named, facts)[0]!, how: 'named', candidates: named.length };
+
+  const open = piece.joints.filter((joint) => isOpenEnd(joint, facts));
+  if (open.length === 0) return null;
+  const outward = open.filter((joint) => portsLeave(joint, network));
+  if (outward.length === 1) return { joint: outward[0]!, how: 'ports', candidates: open.length };
+  const pool = outward.length > 1 ? outward : open;
+
+  const lowest = lowestOf(pool, facts);
+  if (lowest.length === 1)
+    return { joint: lowest[0]!, how: pool === outward ? 'ports' : 'lowest', candidates: open.length };
+  const widths = lowest.map((joint) => widthAt(joint, facts));
+  const widest = Math.max(...widths);
+  const largest = lowest.filter((_, at) => widths[at] === widest);
+  if (largest.length === 1) return { joint: largest[0]!, how: 'largest', candidates: open.length };
+  const first = [...largest].sort((a, b) => (globalIdAt(a, facts) < globalIdAt(b, facts) ? -1 : 1))[0]!;
+  return { joint: first, how: 'first', candidates: open.length };
+}
+
+/** One pipe ends here, it is no vent, and nothing that drains, closes or vents stands at it. */
+function isOpenEnd(joint: JointId, { network, identities, isVent }: SewerEndFacts): boolean {
+  const { pipes, elements } = network.joints[joint]!;
+  if (pipes.length !== 1 || isVent[pipes[0]!]) return false;
+  return elements.every((element) => {
+    const part = identities[element]?.part;
+    return part === 'chamber' || part === 'fitting' || part === 'pipe';
+  });
+}
+
+function portsLeave(joint: JointId, network: Network): boolean {
+  const pipe = network.pipes[network.joints[joint]!.pipes[0]!]!;
+  return pipe.portFlow !== null && (pipe.portFlow === 'forward' ? pipe.ends[1] : pipe.ends[0]) === joint;
+}
+
+function lowestOf(joints: readonly JointId[], { network }: SewerEndFacts): JointId[] {
+  const heights = joints.map((joint) => endHeight(joint, network));
+  const floor = Math.min(...heights);
+  return joints.filter((_, at) => heights[at]! <= floor + equalHeight);
+}
+
+function endHeight(joint: JointId, network: Network): number {
+  const at = network.joints[joint]!;
+  return at.at?.[2] ?? 0;
+}
+
+function widthAt(joint: JointId, { network, model }: SewerEndFacts): number {
+  const widths = network.joints[joint]!.pipes.map((pipe) => pipeWidth(network, model, pipe));
+  return Math.max(0, ...widths);
+}
+
+/** A length in millimetres that stands for the pipe's size, good enough to compare two ends of one model. */
+function pipeWidth(network: Network, model: Model, pipe: PipeId): number {
+  const element = network.pipes[pipe]!.element;
+  if (element === null) return 0;
+  const { sizes, centreLine } = model.elements[element]!;
+  const outer = centreLine?.outerDiameter;
+  return outer !== null && outer !== undefined ? outer * 1000 : (sizes.find(({ mm }) => mm !== null)?.mm ?? 0);
+}
+
+function isAnswered(joint: JointId, { network, model, answers }: SewerEndFacts): boolean {
+  if (answers.sewerEnds.length === 0) return false;
+  const { elements, pipes } = network.joints[joint]!;
+  const named = (element: number | null): boolean =>
+    element !== null && answers.sewerEnds.includes(model.elements[element]!.globalId);
+  return elements.some(named) || (pipes.length === 1 && named(network.pipes[pipes[0]!]!.element));
+}
+
+const openFirst = (joints: readonly JointId[], network: Network): JointId =>
+  [...joints].sort(
+    (a, b) =>
+      network.joints[a]!.pipes.length - network.joints[b]!.pipes.length ||
+      endHeight(a, network) - endHeight(b, network) ||
+      a - b,
+  )[0]!;
+
+function globalIdAt(joint: JointId, { network, model }: SewerEndFacts): string {
+  const { pipes, elements } = network.joints[joint]!;
+  const element = pipes[0] === undefined ? elements[0] : network.pipes[pipes[0]]!.element;
+  return element === null || element === undefined ? '~' : (model.elements[element]?.globalId ?? '~');
+}

@@ -1,0 +1,190 @@
+import type { Finding } from '../findings/finding.ts';
+import { finding } from '../findings/finding.ts';
+import type { Answers } from '../model/answers.ts';
+import type { Identity } from '../model/identity.ts';
+import type { ElementId, Model } from '../model/model.ts';
+import type { JointId, Network, Pipe, PipeId } from '../network/network.ts';
+import { cheapestWays } from './cheapest-ways.ts';
+import type { DrainSystem, FixtureId, FixturePath } from './paths.ts';
+import { sewerEndOf } from './sewer-end.ts';
+
+export interface Water {
+  readonly systems: readonly DrainSystem[];
+  readonly fixtures: readonly FixturePath[];
+  readonly next: readonly (PipeId | null)[];
+  /** Downstream joint of wet pipes; null for dry ones. */
+  readonly toward: readonly (JointId | null)[];
+  readonly wet: readonly boolean[];
+  readonly inFlowOrder: readonly PipeId[];
+  readonly entering: readonly (readonly FixtureId[])[];
+}
+
+/** Costs that order the ways of water: a metre of climb outweighs any length; ports and vent systems are dear. */
+const climbPerMetre = 1000;
+const lengthPerMetre = 0.001;
+const againstPorts = 50;
+const throughVent = 100;
+/** Coordinates carry 1 mm at each end: a smaller climb is not one. */
+const coordinateUncertainty = 0.001;
+
+/** Rise in metres along the way from `from`, over what coordinates can tell. */
+export function climbOf(pipe: Pipe, from: JointId): number {
+  if (pipe.points === null) return 0;
+  const first = pipe.points[0]!;
+  const last = pipe.points[pipe.points.length - 1]!;
+  const rise = pipe.ends[0] === from ? last[2] - first[2] : first[2] - last[2];
+  return Math.max(0, rise - coordinateUncertainty);
+}
+
+export function waterPaths(
+  model: Model,
+  identities: readonly Identity[],
+  network: Network,
+  answers: Answers,
+  findings: Finding[],
+): Water {
+  const { pipes, joints } = network;
+  const rank = pipeRanks(model, network);
+  const drainers = drainFixtures(identities, network);
+  const next: (PipeId | null)[] = pipes.map(() => null);
+  const downJoint: (JointId | null)[] = pipes.map(() => null);
+  const wet: boolean[] = pipes.map(() => false);
+  const entering: FixtureId[][] = pipes.map(() => []);
+  const systems: DrainSystem[] = [];
+  const fixtures: FixturePath[] = [];
+  const byJoint = new Map<JointId, { element: ElementId; id: FixtureId }[]>();
+  drainers.forEach(({ element, outlet }, index) => {
+    byJoint.set(outlet, [...(byJoint.get(outlet) ?? []), { element, id: index as FixtureId }]);
+  });
+
+  const isVent = pipes.map((pipe) => pipe.element !== null && identities[pipe.element]?.medium === 'vent');
+  const cost = (pipe: PipeId, from: JointId): number => {
+    const it = pipes[pipe]!;
+    const against = it.portFlow === null ? false : (it.portFlow === 'forward') !== (it.ends[0] === from);
+    return (
+      climbOf(it, from) * climbPerMetre +
+      (it.length + it.reach[0] + it.reach[1]) * lengthPerMetre +
+      (against ? againstPorts : 0) +
+      (isVent[pipe] ? throughVent : 0)
+    );
+  };
+
+  /** First pipe of the way to the sewer, by joint. */
+  const wayOut: (PipeId | null)[] = joints.map(() => null);
+  for (const piece of connectedPieces(network)) {
+    if (!piece.joints.some((joint) => byJoint.has(joint))) continue;
+    const end = sewerEndOf(piece, { model, identities, network, answers, isVent });
+    if (end === null) {
+      const about = piece.joints.flatMap((joint) => (byJoint.get(joint) ?? []).map(({ element }) => element));
+      findings.push(finding('no-sewer-end', about, { fixtures: about.length }));
+      continue;
+    }
+    systems.push({ sewerEnd: end.joint, how: end.how, pipes: piece.pipes });
+    const ways = cheapestWays(network, [end.joint], (pipe, _to, from) => cost(pipe, from), rank);
+    for (const joint of piece.joints) wayOut[joint] = ways.via[joint] ?? null;
+    if (end.how !== 'answer' && end.how !== 'named') {
+      const at = joints[end.joint]!;
+      const pipe = at.pipes[0];
+      const element = pipe === undefined ? at.elements[0] : (pipes[pipe]!.element ?? at.elements[0]);
+      findings.push(
+        finding('sewer-end-assumed', element === undefined ? [] : [element], {
+          how: end.how,
+          z: at.at?.[2] ?? null,
+          candidates: end.candidates,
+        }),
+      );
+    }
+  }
+
+  const otherEnd = (pipe: PipeId, joint: JointId): JointId => {
+    const [a, b] = pipes[pipe]!.ends;
+    return a === joint ? b : a;
+  };
+  drainers.forEach(({ element, outlet }, index) => {
+    const path: PipeId[] = [];
+    let joint = outlet;
+    for (let pipe = wayOut[joint] ?? null; pipe !== null; pipe = wayOut[joint] ?? null) {
+      path.push(pipe);
+      wet[pipe] = true;
+      joint = otherEnd(pipe, joint);
+      downJoint[pipe] = joint;
+      next[pipe] = wayOut[joint] ?? null;
+    }
+    if (path[0] !== undefined) entering[path[0]]!.push(index as FixtureId);
+    fixtures.push({ id: index as FixtureId, element, outlet, water: path });
+  });
+
+  return { systems, fixtures, next, toward: downJoint, wet, inFlowOrder: flowOrder(network, wet, next), entering };
+}
+
+/** Every wet pipe after those that flow into it; ties by pipe id. */
+function flowOrder(network: Network, wet: readonly boolean[], next: readonly (PipeId | null)[]): PipeId[] {
+  const waiting = new Int32Array(network.pipes.length);
+  for (const { id } of network.pipes) {
+    const down = next[id];
+    if (wet[id] && down !== null && down !== undefined) waiting[down]!++;
+  }
+  const order: PipeId[] = network.pipes.filter(({ id }) => wet[id] && waiting[id] === 0).map(({ id }) => id);
+  for (let at = 0; at < order.length; at++) {
+    const down = next[order[at]!];
+    if (down !== null && down !== undefined && --waiting[down]! === 0) order.push(down);
+  }
+  return order;
+}
+
+function drainFixtures(identities: readonly Identity[], network: Network): { element: ElementId; outlet: JointId }[] {
+  const found: { element: ElementId; outlet: JointId }[] = [];
+  for (const [element, where] of [...network.jointsOf].sort(([a], [b]) => a - b)) {
+    const part = identities[element]?.part;
+    if (part !== 'fixture' && part !== 'unknown-terminal') continue;
+    if (network.fates[element]?.use !== 'fixture') continue;
+    const piped = where.filter((joint) => network.joints[joint]!.pipes.length > 0);
+    const lowest = [...piped].sort((a, b) => heightOf(network, a) - heightOf(network, b) || a - b)[0];
+    if (lowest !== undefined) found.push({ element, outlet: lowest });
+  }
+  return found;
+}
+
+const heightOf = (network: Network, joint: JointId): number => network.joints[joint]!.at?.[2] ?? 0;
+
+/** Order of pipes that does not depend on lines or numbering: by GlobalId of the element, then place along it. */
+export function pipeRanks(model: Model, network: Network): Int32Array {
+  const key = (pipe: Pipe): string => (pipe.element === null ? '~' : (model.elements[pipe.element]?.globalId ?? '~'));
+  const order = network.pipes
+    .map((pipe) => ({ id: pipe.id, key: key(pipe), from: pipe.from, length: pipe.length }))
+    .sort((a, b) => (a.key < b.key ? -1 : a.key > b.key ? 1 : a.from - b.from || a.length - b.length || a.id - b.id));
+  const rank = new Int32Array(network.pipes.length);
+  order.forEach(({ id }, place) => {
+    rank[id] = place;
+  });
+  return rank;
+}
+
+export interface Piece {
+  readonly joints: readonly JointId[];
+  readonly pipes: readonly PipeId[];
+}
+
+/** Joints and pipes that hang together, by lowest joint. */
+export function connectedPieces(network: Network): Piece[] {
+  const seen = new Uint8Array(network.joints.length);
+  const pieces: Piece[] = [];
+  for (const { id } of network.joints) {
+    if (seen[id]) continue;
+    const joints: JointId[] = [id];
+    const pipes = new Set<PipeId>();
+    seen[id] = 1;
+    for (let at = 0; at < joints.length; at++) {
+      for (const pipe of network.joints[joints[at]!]!.pipes) {
+        pipes.add(pipe);
+        for (const end of network.pipes[pipe]!.ends) {
+          if (seen[end]) continue;
+          seen[end] = 1;
+          joints.push(end);
+        }
+      }
+    }
+    pieces.push({ joints: joints.sort((a, b) => a - b), pipes: [...pipes].sort((a, b) => a - b) });
+  }
+  return pieces;
+}

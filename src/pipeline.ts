@@ -1,0 +1,53 @@
+import type { PlumbingCode } from './codes/plumbing-code.ts';
+import type { Finding } from './findings/finding.ts';
+import type { FixtureFacts } from './loads/fixture-loads.ts';
+import { loadPipes } from './loads/load-pipes.ts';
+import type { Scenario } from './loads/loads.ts';
+import { modelledSizes } from './loads/modelled-sizes.ts';
+import type { Answers } from './model/answers.ts';
+import { identify } from './model/identify.ts';
+import type { Model } from './model/model.ts';
+import type { NamesTable } from './model/names-table.ts';
+import { buildNetwork } from './network/build-network.ts';
+import { findPaths } from './paths/find-paths.ts';
+import { assignRoles } from './roles/assign-roles.ts';
+import { sizePipes } from './sizes/size-pipes.ts';
+import type { Outcome, Run } from './verdicts/outcome.ts';
+import { reachVerdicts } from './verdicts/reach-verdicts.ts';
+
+/** The stages in order, from a model to verdicts. Pure: the same input gives the same outcome, in Node and in the page. */
+export function run(model: Model, code: PlumbingCode, answers: Answers, names: NamesTable): Outcome {
+  const identified = identify(model, answers, names);
+  const identities = identified.value;
+  const maxGap = code.settings.maxGap;
+  const built = buildNetwork(
+    model,
+    identities,
+    typeof maxGap === 'number' && answers.settings.maxGap !== undefined ? { maxGap } : {},
+  );
+  const network = built.value;
+  const found = findPaths(model, identities, network, answers);
+  const paths = found.value;
+  const modelled = modelledSizes(model, network, code, answers);
+  const facts: FixtureFacts = { model, identities, network, paths, code, answers, modelled };
+
+  const shared: Finding[] = [...model.findings, ...identified.findings, ...built.findings, ...found.findings];
+  const runs: Run[] = [];
+  const scenarios = scenariosFor(facts);
+  for (const scenario of scenarios) {
+    const loads = loadPipes(facts, scenario);
+    const roles = assignRoles({ model, identities, network, paths, loads: loads.value, code, answers });
+    runs.push({ loads: loads.value, roles: roles.value, sizes: sizePipes(roles.value.uses, code) });
+    if (scenario === scenarios.at(-1)) shared.push(...loads.findings, ...roles.findings);
+  }
+  return reachVerdicts({ model, identities, network, paths, code, answers, runs, findings: shared });
+}
+
+/** One run where nothing is open; the lightest and the heaviest where details are; a closet too where a kind is. */
+function scenariosFor({ paths, identities, code }: FixtureFacts): Scenario[] {
+  const kinds = paths.fixtures.map(({ element }) => identities[element]!);
+  const anyKind = kinds.some(({ kind }) => kind === null);
+  const anyDetail = kinds.some(({ kind, detail }) => kind !== null && code.fixtures.rowsFor(kind, detail).length > 1);
+  if (anyKind) return ['lightest', 'heaviest', 'closet'];
+  return anyDetail ? ['lightest', 'heaviest'] : ['as-modelled'];
+}

@@ -1,0 +1,217 @@
+import type { PlumbingCode } from '../codes/plumbing-code.ts';
+import type { Role } from '../codes/role.ts';
+import type { PipeUse, Reading, StackUse } from '../codes/use.ts';
+import { type Finding, finding, type WithFindings } from '../findings/finding.ts';
+import type { Loads } from '../loads/loads.ts';
+import { keyMatches } from '../model/answer-keys.ts';
+import type { Answers } from '../model/answers.ts';
+import type { Identity } from '../model/identity.ts';
+import type { Model } from '../model/model.ts';
+import type { JointId, Network, PipeId } from '../network/network.ts';
+import type { FixtureId, Paths } from '../paths/paths.ts';
+import { streamOf } from '../paths/stream.ts';
+import type { BatteryContext } from './battery-facts.ts';
+import { drainRoles } from './drain-roles.ts';
+import { dryRoles, ventTree } from './dry-roles.ts';
+import { freeTraps } from './feet.ts';
+import { findStacks, type Stack, stackUseAt } from './find-stacks.ts';
+import { floorsOf } from './floors.ts';
+import { formBatteries } from './form-batteries.ts';
+import { mainVentUses } from './main-vent.ts';
+import { outsideBuilding } from './outline.ts';
+import type { Battery, Roles, VentFoot } from './roles.ts';
+import { trapArms } from './trap-arms.ts';
+import { ventUses } from './vent-uses.ts';
+import { venting } from './venting.ts';
+import { wetUses } from './wet-uses.ts';
+
+export interface RoleFacts {
+  readonly model: Model;
+  readonly identities: readonly Identity[];
+  readonly network: Network;
+  readonly paths: Paths;
+  readonly loads: Loads;
+  readonly code: PlumbingCode;
+  readonly answers: Answers;
+}
+
+/** What each pipe is, who uses it, and how each row of fixtures is read, in one scenario. */
+export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
+  const { model, identities, network, paths, loads, code } = facts;
+  const findings: Finding[] = [];
+  const stream = streamOf(network, paths);
+  const floors = floorsOf(model, network, paths.fixtures);
+  const outlet = outletPipes(network, paths);
+  const stackContext = { network, paths, stream, loads, floors };
+  const stacks = findStacks(stackContext, outlet);
+  if (floors.assumed && stacks.length > 0) findings.push(finding('storeys-assumed', [], { heightM: 3 }));
+  const inStack: (Stack | null)[] = network.pipes.map(() => null);
+  for (const stack of stacks) for (const pipe of stack.pipes) inStack[pipe] = stack;
+  const identityOf = (fixture: FixtureId): Identity => identities[paths.fixtures[fixture]!.element]!;
+  const feet = ventFeet(network, paths);
+  const liveAt = new Map<JointId, PipeId>(feet.map(({ joint, path }) => [joint, path[0]!]));
+  const context: BatteryContext = {
+    ...stackContext,
+    code,
+    stacks,
+    inStack,
+    stackAbove: stackAbove(paths, stacks),
+    free: freeTraps(network, paths, stream, loads, code, (fixture) => {
+      const { kind, detail } = identityOf(fixture);
+      return { kind, emergency: detail.emergency };
+    }),
+    live: (joint) => liveAt.get(joint) ?? null,
+    wordOf: (fixtures, pipes) => designersWord(facts, fixtures, pipes),
+  };
+  const batteries = formBatteries(context, (battery) => answeredReading(facts, battery));
+  const tree = ventTree(feet);
+  const dry = dryRoles(context, tree, batteries);
+  const vents = ventUses(context, tree, dry, batteries);
+  const drains = drainRoles(stackContext, outlet, inStack, stacks, batteries, outsideBuilding(model, network, paths));
+  const wet = wetUses(context, drains, batteries);
+
+  const mainVents = mainVentUses(context, feet, dry);
+  const stackUses = new Map<PipeId, StackUse>();
+  const offsets = new Map<PipeId, number>();
+  for (const stack of stacks) {
+    for (const pipe of stack.pipes) stackUses.set(pipe, stackUseAt(stackContext, stack, pipe));
+    for (const { pipes, length } of stack.offsets) for (const pipe of pipes) offsets.set(pipe, length);
+  }
+  const uses = network.pipes.map(({ id }): PipeUse => {
+    const { load, closets, from, to } = loads.pipes[id]!;
+    const isWet = paths.wet[id]!;
+    const own = wet.get(id);
+    const vent = dry.get(id);
+    const role: Role = isWet ? (own?.role ?? drains[id]!) : (vent?.role ?? 'idle');
+    const battery = own?.battery ?? vent?.battery ?? null;
+    const fixtures = loads.order.slice(from, Math.min(to, from + 3));
+    const traps = to - from <= 2 ? fixtures.map((fixture) => loads.fixtures[fixture]!.trap) : [];
+    const drain = drains[id];
+    return {
+      pipe: id,
+      role,
+      also: own?.also ?? [],
+      portion: isWet
+        ? outlet[id]
+          ? 'outlet'
+          : (own?.portion ?? null)
+        : own === undefined && vent !== undefined && hasWetPortion(batteries, vent)
+          ? 'dry'
+          : null,
+      load,
+      closets,
+      fixtures: to - from,
+      vertical: paths.vertical[id] === true,
+      slope: paths.slopes[id]!.slope,
+      trap: drain === 'fixture-drain' && traps.length > 0 ? traps.reduce((a, b) => code.series.larger(a, b)) : null,
+      outlet: outlet[id] && fixtures.length > 0 ? largestOutlet(loads, code, fixtures) : null,
+      inflows: isWet ? stream.inflows[stream.up(id)]! : [],
+      joining: isWet ? stream.dry[stream.up(id)]!.filter((pipe) => dry.has(pipe)) : (tree.below.get(id) ?? []),
+      stack: stackUses.get(id) ?? null,
+      offset: offsets.get(id) ?? null,
+      battery: battery === null ? null : { facts: batteries[battery]!.facts, reading: batteries[battery]!.reading },
+      vent: vents.get(id) ?? null,
+      standsIn: own?.standsIn ?? null,
+      drain: drain ?? null,
+      mainVent: mainVents.get(id) ?? null,
+    };
+  });
+  return {
+    value: {
+      uses,
+      stacks,
+      batteries,
+      venting: venting(context, feet, dry, batteries),
+      arms: trapArms(network, paths, stream),
+      feet,
+      floors,
+    },
+    findings,
+  };
+}
+
+/** Pipes between a fixture and its trap. */
+function outletPipes(network: Network, paths: Paths): boolean[] {
+  const outlet = network.pipes.map(() => false);
+  for (const { fixture, after } of paths.traps) {
+    for (const pipe of paths.fixtures[fixture]!.water.slice(0, after)) outlet[pipe] = true;
+  }
+  return outlet;
+}
+
+/** Every dry foot from which air reaches the sky, with the traps that breathe through it. */
+function ventFeet(network: Network, paths: Paths): VentFoot[] {
+  const traps = new Map<JointId, FixtureId[]>();
+  for (const { foot, fixture } of paths.traps) {
+    if (foot !== null) traps.set(foot, [...(traps.get(foot) ?? []), fixture]);
+  }
+  const feet: VentFoot[] = [];
+  for (const { id, feet: joints, mouths } of paths.pieces) {
+    if (mouths.length === 0) continue;
+    for (const joint of joints) {
+      const path = pathUp(network, paths, joint, id);
+      if (path.length > 0) feet.push({ joint, piece: id, path, traps: traps.get(joint) ?? [] });
+    }
+  }
+  return feet.sort((a, b) => a.joint - b.joint || a.piece - b.piece);
+}
+
+function pathUp(network: Network, paths: Paths, foot: JointId, piece: number): PipeId[] {
+  const path: PipeId[] = [];
+  let joint = foot;
+  for (let pipe = paths.wayUp(joint, piece); pipe !== null; pipe = paths.wayUp(joint, piece)) {
+    path.push(pipe);
+    const [a, b] = network.pipes[pipe]!.ends;
+    joint = a === joint ? b : a;
+  }
+  return path;
+}
+
+function stackAbove(paths: Paths, stacks: readonly Stack[]): boolean[] {
+  const above = paths.wet.map(() => false);
+  for (const { foot } of stacks) {
+    for (let pipe = paths.next[foot] ?? null; pipe !== null && !above[pipe]; pipe = paths.next[pipe] ?? null)
+      above[pipe] = true;
+  }
+  return above;
+}
+
+const hasWetPortion = (
+  batteries: readonly Battery[],
+  { role, battery }: { role: Role; battery: number | null },
+): boolean => role === 'circuit-vent' && battery !== null && batteries[battery]!.facts.circuit.wetPortion.length > 0;
+
+function largestOutlet(loads: Loads, code: PlumbingCode, fixtures: readonly FixtureId[]) {
+  return fixtures.map((fixture) => loads.fixtures[fixture]!.row.leastTrap).reduce((a, b) => code.series.larger(a, b));
+}
+
+/** What the designer calls the row, where names, systems or properties of its parts say one thing. */
+function designersWord(
+  { identities, network, paths }: RoleFacts,
+  fixtures: readonly FixtureId[],
+  pipes: readonly PipeId[],
+): Reading | null {
+  const words = new Set<string>();
+  for (const fixture of fixtures) {
+    const { reading } = identities[paths.fixtures[fixture]!.element]!;
+    if (reading !== null) words.add(reading);
+  }
+  for (const pipe of pipes) {
+    const { element } = network.pipes[pipe]!;
+    const reading = element === null ? null : identities[element]!.reading;
+    if (reading !== null) words.add(reading);
+  }
+  const [only] = words;
+  return words.size === 1 && (only === 'wet-vent' || only === 'circuit-vent' || only === 'individual-vent')
+    ? only
+    : null;
+}
+
+function answeredReading({ model, paths, answers }: RoleFacts, { facts }: Battery): Reading | null {
+  for (const [key, { reading }] of answers.batteries) {
+    if (reading !== 'wet-vent' && reading !== 'circuit-vent' && reading !== 'individual-vent') continue;
+    if (facts.traps.some(({ fixture }) => keyMatches(key, model.elements[paths.fixtures[fixture]!.element]!)))
+      return reading;
+  }
+  return null;
+}

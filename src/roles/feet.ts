@@ -1,0 +1,59 @@
+import type { FreeTrapFacts, PlumbingCode } from '../codes/plumbing-code.ts';
+import type { Loads } from '../loads/loads.ts';
+import type { JointId, Network, PipeId } from '../network/network.ts';
+import type { FixtureId, Paths, TrapAir } from '../paths/paths.ts';
+import type { Stream } from '../paths/stream.ts';
+
+/** The traps that breathe through one foot, those with their own vent and those upstream of which it stands. */
+export interface FootTraps {
+  readonly foot: JointId;
+  readonly piece: number;
+  readonly traps: readonly TrapAir[];
+}
+
+/** By foot, in the order of joints; traps by fixture. */
+export function trapsByFoot(paths: Paths): FootTraps[] {
+  const feet = new Map<JointId, TrapAir[]>();
+  for (const trap of paths.traps) {
+    if (trap.foot === null) continue;
+    const there = feet.get(trap.foot);
+    if (there === undefined) feet.set(trap.foot, [trap]);
+    else there.push(trap);
+  }
+  return [...feet].sort(([a], [b]) => a - b).map(([foot, traps]) => ({ foot, piece: traps[0]!.piece ?? 0, traps }));
+}
+
+export interface FreeTrap {
+  readonly rule: string;
+  readonly clause: string;
+}
+
+/** Traps that a rule of the code frees of a vent, by fixture; null for all others. */
+export function freeTraps(
+  network: Network,
+  paths: Paths,
+  stream: Stream,
+  loads: Loads,
+  code: PlumbingCode,
+  identity: (fixture: FixtureId) => Pick<FreeTrapFacts, 'kind' | 'emergency'>,
+): (FreeTrap | null)[] {
+  return paths.traps.map(({ fixture, after }) => {
+    const { water } = paths.fixtures[fixture]!;
+    const drain: PipeId[] = [];
+    for (const pipe of water.slice(after)) {
+      drain.push(pipe);
+      if (stream.inflows[stream.down(pipe)]!.length > 1) break;
+    }
+    const first = drain[0];
+    const last = drain.at(-1);
+    const z = (joint: JointId): number | null => network.joints[joint]!.at?.[2] ?? null;
+    const top = first === undefined ? null : z(stream.up(first));
+    const bottom = last === undefined ? null : z(stream.down(last));
+    return code.freeOfVent({
+      ...identity(fixture),
+      trap: loads.fixtures[fixture]!.trap,
+      length: drain.length === 0 ? null : drain.reduce((sum, pipe) => sum + stream.span(pipe), 0),
+      fall: top === null || bottom === null ? null : Math.max(0, top - bottom),
+    });
+  });
+}

@@ -1,0 +1,141 @@
+import type { Broken } from '../codes/battery.ts';
+import type { Reading } from '../codes/use.ts';
+import type { JointId } from '../network/network.ts';
+import { type BatteryContext, batteryFacts, type Draft } from './battery-facts.ts';
+import { trapsByFoot } from './feet.ts';
+import type { Battery, ReadingGround } from './roles.ts';
+
+/**
+ * Rows of traps that breathe through one foot, each judged under every reading of the code. A foot further down the
+ * same level line joins its traps to the row above when the longer row holds as circuit vented and ends at a relief vent.
+ */
+export function formBatteries(context: BatteryContext, answered: (battery: Battery) => Reading | null): Battery[] {
+  const drafts = trapsByFoot(context.paths)
+    .map(({ foot, traps }): Draft => ({ foot, traps, additional: [] }))
+    .filter(({ traps }) => traps.some(({ through }) => through.length > 0));
+  const batteries: Battery[] = [];
+  const taken = new Set<JointId>();
+  for (const draft of inFlowOrder(context, drafts)) {
+    if (taken.has(draft.foot)) continue;
+    const row = lengthen(
+      context,
+      draft,
+      drafts.filter(({ foot }) => foot !== draft.foot && !taken.has(foot)),
+    );
+    for (const joint of row.additional) taken.add(joint);
+    const judged = withoutFreeTraps(context, row, batteries.length);
+    if (judged === null) continue;
+    const word = answered(judged);
+    batteries.push(word === null || word === judged.reading ? judged : readAs(judged, word));
+  }
+  return batteries;
+}
+
+/** Upstream feet first, so that a row finds the feet below it untaken. */
+function inFlowOrder({ paths, stream }: BatteryContext, drafts: readonly Draft[]): Draft[] {
+  const place = new Map(paths.inFlowOrder.map((pipe, at) => [pipe, at]));
+  const at = ({ foot }: Draft): number => place.get(stream.outflow[foot]!) ?? 0;
+  return [...drafts].sort((a, b) => at(a) - at(b) || a.foot - b.foot);
+}
+
+/** The row with the feet below it taken in as additional circuit vents, as long as it holds as circuit vented. */
+function lengthen(context: BatteryContext, draft: Draft, others: readonly Draft[]): Draft {
+  const { paths, stream } = context;
+  const byFoot = new Map(others.map((other) => [other.foot, other]));
+  let best = draft;
+  let traps = draft.traps;
+  const additional: JointId[] = [];
+  let joint = draft.foot;
+  for (let pipe = stream.outflow[joint] ?? null; pipe !== null; pipe = stream.outflow[joint] ?? null) {
+    joint = stream.down(pipe);
+    const other = byFoot.get(joint) ?? guestRow(context, byFoot, joint, pipe);
+    if (other === undefined) {
+      if (context.inStack[pipe] !== null) break;
+      continue;
+    }
+    if (paths.vertical[pipe] === true) break;
+    const onLine = other.foot === joint;
+    if (onLine) additional.push(joint);
+    traps = [...traps, ...other.traps.filter(({ through }) => onLine || through.length > 0)];
+    const longer: Draft = { foot: draft.foot, traps, additional: [...additional] };
+    const facts = batteryFacts(context, longer, 0);
+    const relief = facts.circuit.relief;
+    if ((relief?.kind === 'dry' || relief?.kind === 'shared') && brokenOf(context, 'circuit-vent', facts).length === 0)
+      best = longer;
+  }
+  return best;
+}
+
+/** A row whose foot stands on a drain of its own that joins this line here, and whose other traps lie on the line. */
+function guestRow(
+  { stream, loads, paths }: BatteryContext,
+  byFoot: ReadonlyMap<JointId, Draft>,
+  joint: JointId,
+  line: number,
+): Draft | undefined {
+  for (const inflow of stream.inflows[joint]!) {
+    if (inflow === line) continue;
+    const { from, to } = loads.pipes[inflow]!;
+    for (const fixture of loads.order.slice(from, to)) {
+      const { foot, through } = paths.traps[fixture]!;
+      if (foot !== null && through.length === 0 && byFoot.has(foot)) return byFoot.get(foot);
+    }
+  }
+  return undefined;
+}
+
+/** A trap that a rule frees of a vent stays in the row only where the row holds with it. */
+function withoutFreeTraps(context: BatteryContext, draft: Draft, id: number): Battery | null {
+  const whole = judge(context, draft, id);
+  const free = draft.traps.filter(({ fixture, through }) => context.free[fixture] !== null && through.length > 0);
+  if (whole.broken.length === 0 || free.length === 0) return whole;
+  const traps = draft.traps.filter((trap) => !free.includes(trap));
+  if (!traps.some(({ through }) => through.length > 0)) return null;
+  return judge(context, { ...draft, traps }, id);
+}
+
+function brokenOf({ code }: BatteryContext, reading: Reading, facts: Battery['facts']): readonly Broken[] {
+  return code.readings.find((rule) => rule.reading === reading)?.broken(facts) ?? [];
+}
+
+function judge(context: BatteryContext, draft: Draft, id: number): Battery {
+  const facts = batteryFacts(context, draft, id);
+  const judged = context.code.readings.map(({ reading, broken }) => ({ reading, broken: broken(facts) }));
+  const of = (reading: Reading) => judged.find((one) => one.reading === reading) ?? { reading, broken: [] };
+  const wet = of('wet-vent');
+  const circuit = of('circuit-vent');
+  const choose = (reading: Reading, why: ReadingGround): Battery => ({
+    facts,
+    reading,
+    why,
+    broken: of(reading).broken,
+    others: judged.filter((one) => one.reading !== reading),
+  });
+  const word = facts.word;
+  if (word !== null && of(word).broken.length === 0) return choose(word, 'designer-says');
+  const [wetHolds, circuitHolds] = [wet.broken.length === 0, circuit.broken.length === 0];
+  if (wetHolds !== circuitHolds) return choose(wetHolds ? 'wet-vent' : 'circuit-vent', 'only-one-holds');
+  if (wetHolds) {
+    const dry = facts.circuit.relief !== null && facts.circuit.relief.kind !== 'drain';
+    return dry ? choose('circuit-vent', 'dry-relief-vent') : choose('wet-vent', 'no-dry-relief-vent');
+  }
+  if (wet.broken.length !== circuit.broken.length) {
+    return choose(wet.broken.length < circuit.broken.length ? 'wet-vent' : 'circuit-vent', 'fewer-broken');
+  }
+  return choose(context.code.whenNoneHolds(facts), 'tie');
+}
+
+function readAs(battery: Battery, reading: Reading): Battery {
+  const chosen = battery.others.find((one) => one.reading === reading);
+  if (chosen === undefined) return battery;
+  return {
+    facts: battery.facts,
+    reading,
+    why: 'answer',
+    broken: chosen.broken,
+    others: [
+      ...battery.others.filter((one) => one.reading !== reading),
+      { reading: battery.reading, broken: battery.broken },
+    ],
+  };
+}

@@ -1,0 +1,132 @@
+import type { CheckedDrain, CheckedPipe, CheckedStack, CheckedTrap, CheckFacts } from '../codes/check.ts';
+import type { PlumbingCode } from '../codes/plumbing-code.ts';
+import type { ElementId } from '../model/model.ts';
+import type { Network, PipeId } from '../network/network.ts';
+import type { Paths } from '../paths/paths.ts';
+import { streamOf } from '../paths/stream.ts';
+import type { Stack } from '../roles/find-stacks.ts';
+import { widestDrawn } from '../roles/main-vent.ts';
+import type { NominalSize } from '../units/nominal-size.ts';
+import type { Run } from './outcome.ts';
+
+/** What a code's checks look at, gathered from one run. */
+export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, run: Run): CheckFacts {
+  const stream = streamOf(network, paths);
+  const { roles, loads, sizes } = run;
+  const elementsOf = (pipes: readonly PipeId[]): ElementId[] => [
+    ...new Set(pipes.flatMap((pipe) => network.pipes[pipe]!.element ?? [])),
+  ];
+
+  const pipes = network.pipes.map(({ id, element, length }): CheckedPipe => {
+    const { uncertainty, ground } = paths.slopes[id]!;
+    return {
+      use: roles.uses[id]!,
+      element,
+      required: sizes[id]!.size,
+      modelled: loads.modelled[id]!.size,
+      slopeUncertainty: uncertainty,
+      slopeGround: ground,
+      length,
+    };
+  });
+
+  const traps = paths.traps.map(({ fixture, after, arm }): CheckedTrap => {
+    const path = paths.fixtures[fixture]!;
+    const measured = roles.arms[fixture] ?? null;
+    const uncertain = Math.max(0, ...arm.map((pipe) => paths.slopes[pipe]!.uncertainty));
+    return {
+      element: path.element,
+      size: loads.fixtures[fixture]!.trap,
+      closet: loads.fixtures[fixture]!.row.closet,
+      how: roles.venting[fixture]!.how,
+      arm:
+        measured === null
+          ? null
+          : {
+              length: measured.length,
+              fall: measured.fall,
+              plan: measured.plan,
+              height: measured.fall,
+              slope: arm.some((pipe) => paths.vertical[pipe] === true) ? null : measured.slope,
+              slopeUncertainty: uncertain,
+              turn: measured.turn,
+            },
+      outletLength: path.water.slice(0, after).reduce((sum, pipe) => sum + stream.span(pipe), 0),
+      kind: loads.fixtures[fixture]!.row.title,
+    };
+  });
+
+  return { pipes, traps, stacks: roles.stacks.map((stack) => checkedStack(stack)), drains: buildingDrains() };
+
+  function checkedStack(stack: Stack): CheckedStack {
+    const vents = roles.uses.filter(({ vent }) => vent?.stack?.id === stack.id);
+    const yokes = roles.uses.filter(
+      ({ role, vent }) =>
+        role === 'yoke-vent' &&
+        vent?.between !== null &&
+        vent?.between !== undefined &&
+        stack.pipes.includes(vent.between[0]),
+    );
+    const heightAt = (use: (typeof yokes)[number]): number => network.joints[use.vent!.foot]!.at?.[2] ?? 0;
+    return {
+      elements: elementsOf(stack.pipes),
+      footLoad: loads.pipes[stack.foot]!.load,
+      storeysServed: stack.served.length,
+      height: stack.height,
+      hasStackVent: vents.some(({ role }) => role === 'stack-vent'),
+      hasVentStack: vents.some(({ role }) => role === 'vent-stack'),
+      isWetVent: roles.batteries.some(
+        ({ facts, reading, broken }) =>
+          reading === 'wet-vent' &&
+          broken.length === 0 &&
+          facts.wet.stack &&
+          facts.line.some((pipe) => stack.pipes.includes(pipe)),
+      ),
+      yokes: [...new Set(yokes.map((use) => roles.floors.at(heightAt(use))))].sort((a, b) => b - a),
+      topStorey: stack.served.at(-1) ?? 0,
+      offsets: stack.offsets.map(({ pipes: level, length }) => {
+        const first = stack.pipes.indexOf(level[0]!);
+        const above = stack.pipes.slice(0, first);
+        const heights = above.flatMap((pipe) =>
+          network.pipes[pipe]!.ends.map((joint) => network.joints[joint]!.at?.[2] ?? 0),
+        );
+        const [low, high] = [Math.min(...heights), Math.max(...heights)];
+        const floors = roles.floors.elevations.filter((floor, storey) => {
+          const top = roles.floors.elevations[storey + 1] ?? floor + 3;
+          return Math.min(high, top) - Math.max(low, floor) >= (top - floor) / 2;
+        });
+        return {
+          elements: elementsOf(level),
+          length,
+          storeysAbove: floors.length,
+          loadAbove: loads.pipes[above.at(-1) ?? stack.top]!.load,
+          reliefVents: roles.feet.filter(
+            ({ path }) =>
+              roles.uses[path[0]!]!.role === 'offset-relief-vent' && roles.uses[path[0]!]!.vent?.follows !== undefined,
+          ).length,
+        };
+      }),
+    };
+  }
+
+  function buildingDrains(): CheckedDrain[] {
+    return paths.systems.flatMap(({ pipes: own }) => {
+      const drain = own.filter((pipe) => roles.uses[pipe]!.drain === 'building-drain');
+      if (drain.length === 0) return [];
+      const inside = new Set(own);
+      const feet = roles.feet.filter(({ path }) => inside.has(path[0]!));
+      const drawn = widestDrawn({ loads, code }, feet);
+      const sized = feet.map(({ path }) => narrowest(path.map((pipe) => sizes[pipe]!.size)));
+      const widest = [drawn, ...sized].reduce(
+        (a, b) => (a === null ? b : b === null ? a : code.series.larger(a, b)),
+        null,
+      );
+      return [{ elements: elementsOf(drain), pipes: drain, widestVent: widest }];
+    });
+  }
+
+  function narrowest(list: readonly (NominalSize | null)[]): NominalSize | null {
+    if (list.some((size) => size === null)) return null;
+    return (list as NominalSize[]).reduce((a, b) => (code.series.rank(a) <= code.series.rank(b) ? a : b));
+  }
+}

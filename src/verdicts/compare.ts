@@ -1,0 +1,71 @@
+import type { PlumbingCode } from '../codes/plumbing-code.ts';
+import type { Network } from '../network/network.ts';
+import type { NominalSize } from '../units/nominal-size.ts';
+import type { Load, Range } from '../units/quantity.ts';
+import type { PipeVerdict, Run } from './outcome.ts';
+
+/** The size each pipe needs, over all runs, against the size the model gives it. By pipe id. */
+export function comparePipes(network: Network, code: PlumbingCode, runs: readonly Run[], shown: Run): PipeVerdict[] {
+  return network.pipes.map(({ id }): PipeVerdict => {
+    const load = extremes(runs.map(({ loads }) => loads.pipes[id]!.load));
+    const vents = runs.map(({ roles }) => enteringLoad(roles.uses[id]!));
+    const ventLoad = vents.some((one) => one === null) ? null : extremes(vents as Load[]);
+    const sizes = runs.map((run) => run.sizes[id]!);
+    const asked = sizes.some(({ trail }) => trail.length > 0);
+    const required = asked
+      ? sizeRange(
+          sizes.map(({ size }) => size),
+          code,
+        )
+      : null;
+    const provisional = sizes.some((one) => one.provisional);
+    const { size: modelled, reason } = shown.loads.modelled[id]!;
+    return { load, ventLoad, required, provisional, ...verdictOf(modelled, reason, required, shown, id, code) };
+  });
+}
+
+function verdictOf(
+  modelled: NominalSize | null,
+  unread: string | null,
+  required: Range<NominalSize | null> | null,
+  shown: Run,
+  pipe: number,
+  { series: { rank } }: PlumbingCode,
+): Pick<PipeVerdict, 'verdict' | 'reason'> {
+  if (required === null) {
+    const idle = shown.roles.uses[pipe]!.role === 'idle';
+    return { verdict: 'unknown', reason: idle ? 'no water and no air of a trap passes' : 'no rule asks for a size' };
+  }
+  const { least, most } = required;
+  if (least === null || most === null) {
+    const unreadCells = shown.sizes[pipe]!.trail.some(({ asks, provisional }) => asks === null && provisional);
+    return {
+      verdict: 'unknown',
+      reason: unreadCells
+        ? 'the cells of the table that might hold it are not known'
+        : 'no size of the table holds the load',
+    };
+  }
+  if (modelled === null) return { verdict: 'unknown', reason: unread ?? 'no size in the model' };
+  if (rank(modelled) < rank(least)) return { verdict: 'undersized', reason: null };
+  if (rank(modelled) < rank(most)) return { verdict: 'unknown', reason: 'depends on a fixture that is not identified' };
+  return { verdict: rank(modelled) === rank(most) ? 'agrees' : 'oversized', reason: null };
+}
+
+/** What entered a vent table: for a wet vent the whole vent's load, for a dry one its own; null where no vent table is read. */
+function enteringLoad(use: Run['roles']['uses'][number]): Load | null {
+  if (use.role === 'wet-vent') return use.battery?.facts.wet.load ?? null;
+  if (use.role === 'circuit-vent' && use.portion === 'wet') {
+    return (use.battery?.facts.circuit.onVent.reduce((sum, { load }) => sum + load, 0) ?? 0) as Load;
+  }
+  return use.vent === null || use.role === 'idle' ? null : use.vent.load;
+}
+
+function extremes(loads: readonly Load[]): Range<Load> {
+  return { least: Math.min(...loads) as Load, most: Math.max(...loads) as Load };
+}
+
+function sizeRange(sizes: readonly (NominalSize | null)[], { series }: PlumbingCode): Range<NominalSize | null> {
+  const found = sizes.flatMap((size) => size ?? []).sort((a, b) => series.rank(a) - series.rank(b));
+  return { least: found[0] ?? null, most: sizes.includes(null) ? null : (found.at(-1) ?? null) };
+}

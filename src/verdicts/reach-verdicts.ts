@@ -1,0 +1,61 @@
+import type { PlumbingCode } from '../codes/plumbing-code.ts';
+import { type Finding, finding } from '../findings/finding.ts';
+import type { Answers } from '../model/answers.ts';
+import type { Identity } from '../model/identity.ts';
+import type { Model } from '../model/model.ts';
+import type { Network } from '../network/network.ts';
+import type { Paths } from '../paths/paths.ts';
+import type { Load } from '../units/quantity.ts';
+import { batteryFindings } from './battery-findings.ts';
+import { checkFacts } from './check-facts.ts';
+import { comparePipes } from './compare.ts';
+import type { Outcome, Run } from './outcome.ts';
+import { sizeFindings } from './size-findings.ts';
+
+export interface VerdictFacts {
+  readonly model: Model;
+  readonly identities: readonly Identity[];
+  readonly network: Network;
+  readonly paths: Paths;
+  readonly code: PlumbingCode;
+  readonly answers: Answers;
+  /** The heaviest reading last. */
+  readonly runs: readonly Run[];
+  readonly findings: readonly Finding[];
+}
+
+/** Sizes against the model, the code's checks, and all findings together: closes the outcome. */
+export function reachVerdicts({ findings, runs, ...facts }: VerdictFacts): Outcome {
+  const { network, paths, code, identities } = facts;
+  const shown = runs.at(-1)!;
+  const pipes = comparePipes(network, code, runs, shown);
+  const checked = checkFacts(network, paths, code, shown);
+  return {
+    ...facts,
+    shown,
+    runs,
+    pipes,
+    fixtureLoads: paths.fixtures.map(({ id }) => {
+      const loads = runs.map((run) => run.loads.fixtures[id]!.load);
+      return { least: Math.min(...loads) as Load, most: Math.max(...loads) as Load };
+    }),
+    findings: [
+      ...findings,
+      ...unidentified(identities, paths, shown),
+      ...batteryFindings(network, paths, shown.roles.batteries),
+      ...code.checks.flatMap(({ run }) => run(checked)),
+      ...sizeFindings(network, paths, code, shown, pipes),
+    ],
+  };
+}
+
+/** Fixtures whose kind or row nobody can settle: they run as a range. */
+function unidentified(identities: readonly Identity[], paths: Paths, { loads }: Run): Finding[] {
+  return paths.fixtures.flatMap(({ id, element }) => {
+    const { kind, evidence } = identities[element]!;
+    const { settled, row } = loads.fixtures[id]!;
+    return kind === null || !settled
+      ? [finding('fixture-unidentified', [element], { kind, evidence, readAs: row.title })]
+      : [];
+  });
+}
