@@ -1,6 +1,7 @@
 import type { PropertySetToWrite, PropertyToWrite, ValueToWrite } from '../model/property-set.ts';
 import { demandText, governing, governingClauses } from '../schedule/demand-text.ts';
 import { elementNames } from '../schedule/element-names.ts';
+import { elementRows } from '../schedule/element-rows.ts';
 import type { Result, ResultFixture, ResultPipe, SizeLabel, SizeRange } from '../schedule/result.ts';
 import { plainWords } from '../schedule/trade-words.ts';
 import { plainLabel } from '../tables/column-unit.ts';
@@ -17,9 +18,9 @@ export interface TargetFile {
  * nothing is known.
  */
 export function propertySets(result: Result, target: TargetFile): PropertySetToWrite[] {
-  const inFile = new Set(result.elements.filter(({ file }) => file === target.file).map(({ globalId }) => globalId));
+  const rows = elementRows(result);
   const here = <T extends { readonly globalId: string }>(list: readonly T[]): T[] =>
-    list.filter(({ globalId }) => inFile.has(globalId));
+    list.filter(({ globalId }) => rows.get(globalId)?.file === target.file);
   const names = elementNames(result);
   return [
     ...here(result.pipes).map((pipe) => ({

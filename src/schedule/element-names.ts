@@ -1,3 +1,4 @@
+import { elementRows } from './element-rows.ts';
 import type { Result } from './result.ts';
 import { shortened, shownText } from './shown-text.ts';
 
@@ -8,12 +9,10 @@ export interface ElementNames {
   readonly short: (globalId: string) => string;
 }
 
-export function elementNames({ elements, fixtures, pipes }: Result): ElementNames {
-  const names = new Map<string, string | null>([...fixtures, ...pipes].map(({ globalId, name }) => [globalId, name]));
-  const known = new Map(elements.map((element) => [element.globalId, element]));
-  for (const { globalId, stepId } of [...fixtures, ...pipes]) {
-    if (!known.has(globalId)) known.set(globalId, { globalId, stepId, file: '', class: '', use: 'unresolved' });
-  }
+export function elementNames(result: Result): ElementNames {
+  const rows = [...result.fixtures, ...result.pipes];
+  const names = new Map<string, string | null>(rows.map(({ globalId, name }) => [globalId, name]));
+  const known = elementRows(result);
   const nameOf = (globalId: string): string => shortened(shownText(names.get(globalId) ?? ''), longestName);
   return {
     of: (globalId) => {

@@ -1,4 +1,5 @@
 import type { Element, Model } from '../model/model.ts';
+import { elementRows } from './element-rows.ts';
 import { type Question, questionsOf } from './questions.ts';
 import type { Result, ResultElement, ResultFinding, ResultModel } from './result.ts';
 
@@ -122,17 +123,18 @@ function systems(model: Model, rowOf: (element: Element) => ResultElement | unde
 
 function terminals(
   model: Model,
-  { fixtures }: Result,
+  result: Result,
   rowOf: (element: Element) => ResultElement | undefined,
 ): SurveyTerminal[] {
-  const known = new Map(fixtures.map((fixture) => [fixture.globalId, fixture]));
+  const byId = elementRows(result);
+  const known = new Map(result.fixtures.map((fixture) => [byId.get(fixture.globalId), fixture]));
   return model.elements.flatMap((element) => {
     const row = rowOf(element);
-    const fixture = row === undefined ? undefined : known.get(row.globalId);
+    const fixture = row === undefined ? undefined : known.get(row);
     if (row === undefined || (element.kind !== 'terminal' && fixture === undefined)) return [];
     return [
       {
-        globalId: row.globalId,
+        globalId: fixture?.globalId ?? row.globalId,
         stepId: row.stepId,
         name: element.name,
         class: row.class,

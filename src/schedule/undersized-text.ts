@@ -1,39 +1,38 @@
 import { type ElementNames, elementNames } from './element-names.ts';
 import { decimal, lengthText, loadText, sizeText } from './number-text.ts';
-import type { Result, ResultFinding, ResultPipe, TrailStep } from './result.ts';
+import type { Result, ResultPipe, TrailStep } from './result.ts';
 import { unbroken } from './shown-text.ts';
 import { blank, heading, paragraph, type TextLine } from './text-line.ts';
-import { counted, plainWords } from './trade-words.ts';
+import { counted, countedKinds, plainWords } from './trade-words.ts';
 
-/** Undersized pipes that share a cause, both sizes, the clause and the load that decided. */
+/** Undersized pipes that share a cause: the rule, and the battery, stack or pipe that it comes from. */
 export interface UndersizedGroup {
   readonly cause: string;
+  /** In the order of the findings. */
   readonly pipes: readonly ResultPipe[];
-  readonly governing: TrailStep | null;
-  readonly battery: string | null;
+  /** The pipe where the cause lies: its own demand governs, not one that a pipe before it hands on. */
+  readonly root: ResultPipe;
 }
 
-/** Groups of the undersized pipes: most pipes first, then by the first pipe's place in the result. */
+/** Groups of the undersized pipes: most pipes first, then by the first finding. */
 export function undersizedGroups({ findings, pipes }: Result): UndersizedGroup[] {
   const byId = new Map(pipes.map((pipe) => [pipe.globalId, pipe]));
-  const groups = new Map<
-    string,
-    { cause: string; pipes: ResultPipe[]; governing: TrailStep | null; battery: string | null }
-  >();
-  for (const finding of findings) {
-    const pipe = byId.get(finding.about[0] ?? '');
-    if (finding.code !== 'undersized' || pipe === undefined) continue;
-    const cause = causeOf(finding);
-    const governing = pipe.trail.find(({ governs }) => governs) ?? null;
-    const battery = pipe.battery ?? null;
-    const load = pipe.ventLoad ?? (battery === null ? pipe.load : null);
-    const key = JSON.stringify([cause, pipe.modelled?.label, pipe.required, governing?.clause, battery, load]);
-    const group = groups.get(key);
-    if (group === undefined) groups.set(key, { cause, pipes: [pipe], governing, battery });
-    else group.pipes.push(pipe);
+  const groups = new Map<string, ResultPipe[]>();
+  for (const { code, about, facts } of findings) {
+    const pipe = byId.get(about[0] ?? '');
+    if (code !== 'undersized' || pipe === undefined) continue;
+    const cause = typeof facts.cause === 'string' ? facts.cause : 'too small';
+    groups.set(cause, [...(groups.get(cause) ?? []), pipe]);
   }
-  return [...groups.values()].sort((a, b) => b.pipes.length - a.pipes.length);
+  return [...groups]
+    .flatMap(([cause, group]) => {
+      const root = group.find((pipe) => cause.startsWith(`${governingOf(pipe)?.rule} `)) ?? group[0];
+      return root === undefined ? [] : [{ cause, pipes: group, root }];
+    })
+    .sort((a, b) => b.pipes.length - a.pipes.length);
 }
+
+const governingOf = ({ trail }: ResultPipe): TrailStep | undefined => trail.find(({ governs }) => governs);
 
 /** The undersized pipes grouped by cause: modelled size, required size, load, clause, and which pipes they are. */
 export function undersizedText(result: Result): TextLine[] {
@@ -42,51 +41,55 @@ export function undersizedText(result: Result): TextLine[] {
   const names = elementNames(result);
   const pipes = groups.reduce((sum, group) => sum + group.pipes.length, 0);
   const shown = groups.slice(0, mostGroups);
+  const rest = groups.length - shown.length;
   return [
     blank,
     ...heading(`Undersized: ${pipes} of ${counted(result.counts.pipes, 'pipe')}, by cause`),
     ...shown.flatMap((group, place) => groupText(group, place + 1, result.code.unit, names)),
-    ...(groups.length === shown.length
+    ...(rest === 0
       ? []
-      : paragraph(`and ${groups.length - shown.length} smaller groups; --json lists every pipe`, '      ', 'quiet')),
+      : paragraph(`and ${counted(rest, 'smaller group')}; --json lists every pipe`, '      ', 'quiet')),
   ];
 }
 
 const mostGroups = 12;
 const mostPipes = 8;
 
-function groupText(group: UndersizedGroup, place: number, unit: string, names: ElementNames): TextLine[] {
-  const { cause, pipes, governing, battery } = group;
-  const first = pipes[0];
-  if (first === undefined) return [];
-  const sizes = `Drawn ${first.modelled?.label ?? '?'}, needs ${sizeText(first.required)}`;
-  const whose = battery === null ? '' : ` of battery ${battery}`;
+function groupText({ pipes, root }: UndersizedGroup, place: number, unit: string, names: ElementNames): TextLine[] {
+  const bySizes = new Map<string, ResultPipe[]>();
+  for (const pipe of pipes) {
+    const sizes = `Drawn ${pipe.modelled?.label ?? '?'}, needs ${sizeText(pipe.required)}`;
+    bySizes.set(sizes, [...(bySizes.get(sizes) ?? []), pipe]);
+  }
+  const whose = root.battery === undefined ? '' : `, ${root.battery}`;
   const named = pipes.slice(0, mostPipes).map(({ globalId }) => unbroken(names.of(globalId)));
   const more = pipes.length - named.length;
   return [
-    ...paragraph(
-      `${sizes}: ${counted(pipes.length, plainWords(first.role))}${whose}`,
-      `  ${place}. `.padStart(6),
-      'error',
+    ...[...bySizes].flatMap(([sizes, some], line) =>
+      paragraph(
+        `${sizes}: ${countedKinds(some.map(({ role }) => plainWords(role)))}${whose}`,
+        line === 0 ? `${place}. `.padStart(6) : '      ',
+        'error',
+      ),
     ),
-    ...paragraph(`${capital(plainWords(cause))}: ${reasonText(first, governing, unit, names)}`, '      '),
+    ...paragraph(reasonText(root, unit, names), '      '),
     ...paragraph(named.join(', ') + (more > 0 ? ` and ${more} more` : ''), '      ', 'quiet'),
   ];
 }
 
-/** The load and the length that chose the row, and where it is printed. */
-function reasonText(pipe: ResultPipe, step: TrailStep | null, unit: string, names: ElementNames): string {
-  const parts = [loadText(pipe.ventLoad ?? pipe.load, unit)];
-  if (pipe.developedLength !== undefined) parts.push(`${lengthText(pipe.developedLength)} developed length`);
-  if (step !== null) {
-    const limit = step.facts.limitUnits;
-    if (typeof limit === 'number' && step.asks !== null) parts.push(`${step.asks.label} holds ${decimal(limit, 2)}`);
-    const upstream = step.facts.upstream;
-    if (typeof upstream === 'string') parts.push(`after ${names.of(upstream)}`);
-    parts.push(step.table === null ? step.clause : `${step.clause}, Table ${step.table.replace(/^Table /, '')}`);
-  }
-  return parts.join('; ') + (pipe.provisional ? '; provisional' : '');
+/** The rule, the load and length that chose the row, and where it is printed. */
+function reasonText(pipe: ResultPipe, unit: string, names: ElementNames): string {
+  const { load, ventLoad, developedLength, provisional } = pipe;
+  const step = governingOf(pipe);
+  const limit = step?.facts.limitUnits;
+  const upstream = step?.facts.upstream;
+  const parts = [
+    `${step === undefined ? '' : `${step.title}: `}${loadText(ventLoad ?? load, unit)}`,
+    ...(developedLength === undefined ? [] : [`${lengthText(developedLength)} developed length`]),
+    ...(typeof limit === 'number' && step?.asks != null ? [`${step.asks.label} holds ${decimal(limit, 2)}`] : []),
+    ...(typeof upstream === 'string' ? [`after ${names.of(upstream)}`] : []),
+    ...(step === undefined ? [] : [step.clause]),
+    ...(provisional ? ['provisional'] : []),
+  ];
+  return parts.join('; ');
 }
-
-const causeOf = ({ facts }: ResultFinding): string => (typeof facts.cause === 'string' ? facts.cause : 'too small');
-const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);

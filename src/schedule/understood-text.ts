@@ -119,9 +119,11 @@ function batteryText(
 export function conditionsText(broken: readonly BrokenCondition[], unit: string, names: ElementNames): string {
   if (broken.length === 0) return 'not found';
   return broken
-    .map(({ rule, clause, facts }, place) => {
+    .map(({ title, clause, facts }, place) => {
       const numbers = place === 0 ? factsText(facts, unit, names.short) : '';
-      return `${plainWords(rule)}${numbers === '' ? '' : `, ${numbers}`} (${clause})`;
+      return `${lowerFirst(shownText(title))}${numbers === '' ? '' : `, ${numbers}`} (${clause})`;
     })
     .join(', ');
 }
+
+const lowerFirst = (text: string): string => text.charAt(0).toLowerCase() + text.slice(1);

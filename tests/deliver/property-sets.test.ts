@@ -27,7 +27,7 @@ test('a wet vent that is too small: names and values as the contract lists them'
     RequiredSize: '4 in',
     RequiredNominalDiameter: 100,
     Verdict: 'undersized',
-    GoverningClause: '2.5.8.1.',
+    GoverningClause: 'Table 2.5.8.1.',
     Because: expect.stringContaining('load 14 fixture units'),
     Code: 'npc-2020',
     Edition: '2020',

@@ -23,13 +23,11 @@ test('first what was understood, then the undersized pipes, then the sums and th
     'community-hall.ifc: IFC4, millimetre; National Plumbing Code of Canada 2020 (npc-2020)',
     '7 urinals, 2 lavatories',
     'to the sewer at Pipe 2201 #2201',
-    'B1, 7 urinals, 2 lavatories: wet vent, since no dry relief vent is drawn',
+    'battery-1, 7 urinals, 2 lavatories: wet vent, since no dry relief vent is drawn',
     'no circuit vent: relief vent',
     'Undersized: 8 of 19 pipes',
-    'Drawn 3 in, needs 4 in: 7 wet vents of battery B1',
-    'Wet vent load: 14 fixture units; 4 in holds 36; 2.5.8.1., Table 2.5.8.1.',
-    'Drawn 3 in, needs 4 in: 1 branch',
-    'Not smaller downstream: 16 fixture units; after Pipe 2107 #2107; 2.4.9.1.',
+    'Drawn 3 in, needs 4 in: 7 wet vents, 1 branch, battery-1',
+    'Wet vent size: 14 fixture units; 4 in holds 36; Table 2.5.8.1.',
     'Warnings: 1 cleanout missing.',
     '8 errors, 1 warning, 1 note.',
     'sewer gas',
@@ -44,11 +42,18 @@ test('one screen: forty lines of at most a hundred columns', () => {
   expect(Math.max(...lines.map(columnsOf))).toBeLessThanOrEqual(100);
 });
 
-test('undersized pipes are grouped by cause, most pipes first; every one is in one group', () => {
+test('undersized pipes are grouped by cause; every one is in one group, most pipes first', () => {
   const groups = undersizedGroups(exampleResult);
-  expect(groups.map(({ cause, pipes }) => [cause, pipes.map(({ stepId }) => stepId)])).toEqual([
-    ['wet-vent-load', [2101, 2102, 2103, 2104, 2105, 2106, 2107]],
-    ['not-smaller-downstream', [2108]],
+  expect(groups.map(({ cause, pipes, root }) => [cause, pipes.map(({ stepId }) => stepId), root.stepId])).toEqual([
+    ['NPC-R50 battery 1', [2101, 2102, 2103, 2104, 2105, 2106, 2107, 2108], 2101],
+  ]);
+  const alone = exampleResult.findings.map((one) =>
+    one.about[0] === '1Dr4inExample000002108' ? { ...one, facts: { cause: 'NPC-R20 pipe 3' } } : one,
+  );
+  const two = undersizedGroups({ ...exampleResult, findings: alone.toReversed() });
+  expect(two.map(({ cause, pipes }) => [cause, pipes.length])).toEqual([
+    ['NPC-R50 battery 1', 7],
+    ['NPC-R20 pipe 3', 1],
   ]);
 });
 

@@ -26,9 +26,10 @@ const armOf = (place: number): number => 2001 + place;
 const fixtureIds = Array.from({ length: 9 }, (_, place) => 3001 + place);
 
 const step = (over: Partial<TrailStep>): TrailStep => ({
-  rule: 'wet-vent-load',
-  clause: '2.5.8.1.',
-  table: '2.5.8.1.',
+  rule: 'NPC-R50',
+  title: 'Wet vent size',
+  clause: 'Table 2.5.8.1.',
+  table: 'wet-vent',
   row: '4 in',
   facts: { loadUnits: 14, limitUnits: 36, leftOut: id(3009) },
   asks: in4,
@@ -98,7 +99,17 @@ const drain = (place: number): ResultPipe => {
     modelled: { ...(trapSize ?? in2), from: 'Pset_PipeSegmentTypeCommon.NominalDiameter (type)' },
     required: { least: trapSize, most: trapSize },
     verdict: 'agrees',
-    trail: [step({ rule: 'trap-size', clause: '2.4.9.3.', table: '2.4.9.3.', row: null, facts: {}, asks: trapSize })],
+    trail: [
+      step({
+        rule: 'NPC-R14',
+        title: 'Fixture outlet pipe size',
+        clause: 'Table 2.4.9.3.',
+        table: 'fixtures',
+        row: null,
+        facts: {},
+        asks: trapSize,
+      }),
+    ],
   });
 };
 
@@ -112,12 +123,13 @@ const wet = (place: number): ResultPipe =>
     ventLoad: { least: 14, most: 14 },
     servesWater: fixtureIds.slice(0, place + 2).map(id),
     servesAir: fixtureIds.slice(place + 2).map(id),
-    battery: 'B1',
+    battery: 'battery-1',
     trail: [
       step({
-        rule: 'branch-load',
-        clause: '2.4.10.6.',
-        table: '2.4.10.6.-B',
+        rule: 'NPC-R16',
+        title: 'Branch size',
+        clause: 'Table 2.4.10.6.-B',
+        table: 'branch',
         row: '2 in',
         asks: in2,
         governs: false,
@@ -132,7 +144,7 @@ const undersized = (about: number, cause: string, facts: ResultFinding['facts'])
   severity: 'error',
   about: [id(about)],
   facts: { cause, modelled: '3 in', required: '4 in', ...facts },
-  clause: '2.5.8.1.',
+  clause: 'Table 2.5.8.1.',
   sentence: `Pipe ${about} is 3 in; the code asks for 4 in.`,
 });
 
@@ -179,7 +191,8 @@ export const exampleResult: Result = {
       next: id(2201),
       trail: [
         step({
-          rule: 'not-smaller-downstream',
+          rule: 'NPC-R20',
+          title: 'No reduction downstream',
           clause: '2.4.9.1.',
           table: null,
           row: null,
@@ -206,9 +219,10 @@ export const exampleResult: Result = {
       verdict: 'agrees',
       trail: [
         step({
-          rule: 'vent-load',
-          clause: '2.5.8.3.',
-          table: '2.5.8.3.',
+          rule: 'NPC-R75',
+          title: 'Vent by length',
+          clause: 'Table 2.5.8.3.',
+          table: 'vent-length',
           row: '2 in',
           asks: in2,
           facts: { loadUnits: 16, limitUnits: 20, lengthM: 6.4, limitM: 36 },
@@ -218,7 +232,7 @@ export const exampleResult: Result = {
   ],
   batteries: [
     {
-      id: 'B1',
+      id: 'battery-1',
       fixtures: fixtureIds.map(id),
       pipes: line.slice(0, 7).map(id),
       reading: 'wet-vent',
@@ -228,12 +242,14 @@ export const exampleResult: Result = {
         {
           reading: 'circuit-vent',
           holds: false,
-          broken: [{ rule: 'relief-vent', clause: '2.5.3.1.', facts: { fixtures: 9 } }],
+          broken: [
+            { rule: 'NPC-R55', title: 'Relief vent of a circuit vent', clause: '2.5.3.1.', facts: { fixtures: 9 } },
+          ],
         },
         {
           reading: 'individual-vent',
           holds: false,
-          broken: [{ rule: 'vent-per-trap', clause: '2.5.1.1.', facts: { vents: 1 } }],
+          broken: [{ rule: 'NPC-R36', title: 'A vent for each trap', clause: '2.5.1.1.', facts: { vents: 1 } }],
         },
       ],
     },
@@ -248,8 +264,8 @@ export const exampleResult: Result = {
     },
   ],
   findings: [
-    ...line.slice(0, 7).map((stepId) => undersized(stepId, 'wet-vent-load', { loadUnits: 14, limitUnits: 12 })),
-    undersized(2108, 'not-smaller-downstream', {}),
+    ...line.slice(0, 7).map((stepId) => undersized(stepId, 'NPC-R50 battery 1', { loadUnits: 14, limitUnits: 12 })),
+    undersized(2108, 'NPC-R50 battery 1', {}),
     {
       code: 'cleanout-missing',
       severity: 'warning',
