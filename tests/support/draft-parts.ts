@@ -1,6 +1,6 @@
-import { add, type Box, dot, type Vec3 } from '../../src/geometry/vector.ts';
+import { add, type Box, dot, scale, type Vec3 } from '../../src/geometry/vector.ts';
 import type { ElementClass, PropertyFact } from '../../src/model/model.ts';
-import { around, type DraftElement, type Solid } from './draft.ts';
+import { barBox, type DraftElement, joined, type Solid } from './draft.ts';
 import type { DraftJoint } from './draft-joints.ts';
 import { fixtureBody } from './fixture-body.ts';
 import type { PipeSize } from './pipe-sizes.ts';
@@ -172,25 +172,26 @@ function partBody(is: PartWord, joint: DraftJoint, size: PipeSize | null): Solid
     case 'roof-drain':
       return [{ box: box(0.3, 0.3, 0, 0.1) }];
     default:
-      return joint.ends.length > 1 ? arms(joint) : [{ bar: capped(joint), radius: wide / 2 }];
+      return joint.ends.length > 1
+        ? arms(joint)
+        : [
+            { bar: capped(joint, 0.03), radius: wide / 2 },
+            { bar: capped(joint, 0.05), radius: wide / 4 },
+          ];
   }
 }
 
 /** A plug or cap looks away from its pipe. */
-function capped({ node, ends: [end] }: DraftJoint): readonly [Vec3, Vec3] {
-  const into: Vec3 = end?.into ?? [0, 0, -1];
-  return [node.at, add(node.at, [into[0] * -0.05, into[1] * -0.05, into[2] * -0.05])];
+function capped({ node, ends: [end] }: DraftJoint, high: number): readonly [Vec3, Vec3] {
+  return [node.at, add(node.at, scale(end?.into ?? [0, 0, -1], -high))];
 }
 
-export function boxOf(solids: readonly Solid[]): Box {
-  const boxes = solids.map((solid) =>
-    'bar' in solid ? around(solid.bar, solid.radius) : 'box' in solid ? solid.box : solid.bowl,
+const boxOf = (solids: readonly Solid[]): Box =>
+  joined(
+    solids.map((solid) =>
+      'bar' in solid ? barBox(...solid.bar, solid.radius) : 'box' in solid ? solid.box : solid.bowl,
+    ),
   );
-  return around(
-    boxes.flatMap(({ min, max }) => [min, max]),
-    0,
-  );
-}
 
 function spaceOf(sketch: Sketch, { node }: DraftJoint): number | null {
   /** Outlets of closets, tubs and floor drains lie in or under the floor. */

@@ -56,6 +56,17 @@ export interface DraftPort {
 }
 
 export function draftOf(sketch: Sketch): Draft {
+  const known = drafts.get(sketch);
+  if (known !== undefined) return known;
+  const made = makeDraft(sketch);
+  drafts.set(sketch, made);
+  return made;
+}
+
+/** A sketch never changes, and tests ask it for names one by one. */
+const drafts = new WeakMap<Sketch, Draft>();
+
+function makeDraft(sketch: Sketch): Draft {
   const joints = meetPipes(sketch);
   const elements: Omit<DraftElement, 'ports'>[] = sketch.pipes.map((pipe, index) =>
     draftPipe(sketch, pipe, joints, index),
@@ -91,7 +102,7 @@ function draftPipe(sketch: Sketch, pipe: SketchPipe, joints: Joints, index: numb
     ifcClass: 'IfcPipeSegment',
     predefined: 'RIGIDSEGMENT',
     kind: 'segment',
-    typeName: `${pipe.material} pipe, ${pipe.size.label}`,
+    typeName: `${pipe.material} pipe`,
     medium: pipe.medium,
     storey: pipe.storey,
     space: null,
@@ -100,7 +111,7 @@ function draftPipe(sketch: Sketch, pipe: SketchPipe, joints: Joints, index: numb
     origin: first,
     line,
     solids: [],
-    box: around(line, radius),
+    box: joined(line.slice(1).map((to, leg) => barBox(line[leg]!, to, radius))),
     properties: [],
     slope: pipe.states ?? (drawn > 1e-6 ? drawn : null),
   };
@@ -116,11 +127,21 @@ function withoutStraightPoints(line: readonly Vec3[]): readonly Vec3[] {
   });
 }
 
-/** Box round points, `reach` metres wider on every side. */
-export function around(points: readonly Vec3[], reach: number): Box {
-  const of = (axis: 0 | 1 | 2) => points.map((point) => point[axis]);
-  const least = (axis: 0 | 1 | 2) => Math.min(...of(axis)) - reach;
-  const most = (axis: 0 | 1 | 2) => Math.max(...of(axis)) + reach;
+/** Box of a round bar, exact: flat ends reach out only as far as the bar is tilted. */
+export function barBox(from: Vec3, to: Vec3, radius: number): Box {
+  const along = unit(subtract(to, from));
+  const reach = along.map((part) => radius * Math.sqrt(Math.max(0, 1 - part * part)));
+  const of = (choose: (a: number, b: number) => number, sign: 1 | -1) => (axis: 0 | 1 | 2) =>
+    choose(from[axis], to[axis]) + sign * reach[axis]!;
+  const least = of(Math.min, -1);
+  const most = of(Math.max, 1);
+  return { min: [least(0), least(1), least(2)], max: [most(0), most(1), most(2)] };
+}
+
+/** The box round boxes. */
+export function joined(boxes: readonly Box[]): Box {
+  const least = (axis: 0 | 1 | 2) => Math.min(...boxes.map(({ min }) => min[axis]));
+  const most = (axis: 0 | 1 | 2) => Math.max(...boxes.map(({ max }) => max[axis]));
   return { min: [least(0), least(1), least(2)], max: [most(0), most(1), most(2)] };
 }
 

@@ -3,7 +3,7 @@ import { prism, rectangle, shapeOf } from './ifc-shapes.ts';
 import { type Axes, type IfcSheet, placed, point } from './ifc-sheet.ts';
 import { wallOutline } from './model-of.ts';
 import type { SketchFabric, SketchWall } from './sketch.ts';
-import { type Arg, flag, type Ref, typed, word } from './step-file.ts';
+import { type Arg, type Ref, raw, word } from './step-file.ts';
 
 /** Where elements hang: their spatial record, its placement, and the placement's origin in the building's frame. */
 export interface Level {
@@ -184,7 +184,7 @@ function writeWall(sheet: IfcSheet, wall: SketchWall, level: Level, key: string)
   const facts = said
     .filter(([, value]) => value !== null)
     .map(([name, value]) =>
-      file.share('IFCPROPERTYSINGLEVALUE', name, null, typed('IFCBOOLEAN', flag(value).raw), null),
+      file.share('IFCPROPERTYSINGLEVALUE', name, null, raw(`IFCBOOLEAN(${value ? '.T.' : '.F.'})`), null),
     );
   if (facts.length > 0) {
     const common = file.add('IFCPROPERTYSET', id('wall set', key, wall.name), owner, 'Pset_WallCommon', null, facts);

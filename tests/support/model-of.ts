@@ -172,6 +172,7 @@ function told(
                 ]
               : []),
             { means: 'outer', mm: pipe.outer * 1000, text: null, ground: 'profile', from: 'profile' },
+            { means: 'inner', mm: pipe.inner * 1000, text: null, ground: 'profile', from: 'profile' },
           ],
     slopes: element.slope === null ? [] : [{ slope: element.slope, from: 'Pset_PipeSegmentOccurrence.Gradient' }],
     statedLength: null,

@@ -70,7 +70,10 @@ test('without ports and sizes the outside diameter is left, from ASTM D2665: 2 i
   expect(model.ports).toEqual([]);
   const branch = model.elements[elementIdOf(two, 'Branch.2')]!;
   expect(branch.ports).toEqual([]);
-  expect(branch.sizes.map(({ means, mm }) => [means, mm?.toFixed(1)])).toEqual([['outer', '60.3']]);
+  expect(branch.sizes.map(({ means, mm }) => [means, mm?.toFixed(1)])).toEqual([
+    ['outer', '60.3'],
+    ['inner', '52.5'],
+  ]);
   expect(branch.slopes[0]?.slope).toBeCloseTo(1 / 50, 9);
 });
 

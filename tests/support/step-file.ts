@@ -8,9 +8,7 @@ interface Raw {
 
 /** Text written as it stands: `.T.`, `IFCLABEL('x')`, integers. */
 export const raw = (text: string): Raw => ({ raw: text });
-export const integer = (value: number): Raw => raw(String(Math.trunc(value)));
 export const word = (value: string): Raw => raw(`.${value}.`);
-export const flag = (value: boolean | null): Raw => raw(value === null ? '$' : value ? '.T.' : '.F.');
 export const typed = (type: string, value: number | string): Raw => raw(`${type}(${encode(value)})`);
 
 export class StepFile {
