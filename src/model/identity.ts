@@ -41,11 +41,17 @@ export type FixtureKind =
 
 export interface FixtureDetail {
   readonly flush: 'tank' | 'valve' | null;
-  /** Urinal: `stall`, `wall-washout`, `wall-other`, `pedestal`. Lavatory, sink: as the names table says. */
+  /**
+   * Urinal: `stall`, `wall-washout`, `wall-other`, `pedestal`, `wall` (either of the wall ones), `washout` (stall or wall),
+   * `trough`, `waterless`. Lavatory: `multiple`, `dental`, `barber`. Other kinds: as the names table says. Not of fixtures:
+   * pipe `building-sewer`; tank `interceptor`, `sump`, `pump`; valve `backwater-valve`; fitting `garbage-grinder`.
+   */
   readonly style: string | null;
   readonly heads: number | null;
   readonly emergency: boolean | null;
   readonly domestic: boolean | null;
+  /** Litres to a flush of closets and urinals, where a text gives them (`6.1 Lpf`, `1.6 gpf`); absent where none does. */
+  readonly flushLitres?: number;
 }
 
 export const noDetail: FixtureDetail = { flush: null, style: null, heads: null, emergency: null, domestic: null };

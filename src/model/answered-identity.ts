@@ -1,0 +1,70 @@
+import { keyMatches } from './answer-keys.ts';
+import type { Answers, FixtureAnswer } from './answers.ts';
+import { type FixtureDetail, type FixtureKind, type Identity, noDetail } from './identity.ts';
+import { fixtureKinds } from './identity-words.ts';
+import type { Element } from './model.ts';
+
+/** The user's answers on what things are, ready to be asked for each element. */
+export interface AnswerBook {
+  fixture(element: Element): FixtureAnswer | null;
+  isCleanout(element: Element): boolean;
+}
+
+export function answerBook({ fixtures, cleanouts }: Answers): AnswerBook {
+  const isPattern = (key: string): boolean => key.startsWith('name:');
+  // The more of a name a pattern spells out, the more it counts; of two alike the first.
+  const patterns = [...fixtures]
+    .filter(([key]) => isPattern(key))
+    .toSorted(([a], [b]) => b.replaceAll('*', '').length - a.replaceAll('*', '').length);
+  const cleanoutIds = new Set(cleanouts.filter((key) => !isPattern(key)));
+  const cleanoutPatterns = cleanouts.filter(isPattern);
+  return {
+    fixture: (element) =>
+      fixtures.get(element.globalId) ?? patterns.find(([key]) => keyMatches(key, element))?.[1] ?? null,
+    isCleanout: (element) =>
+      cleanoutIds.has(element.globalId) || cleanoutPatterns.some((key) => keyMatches(key, element)),
+  };
+}
+
+/** What the user says the element is, on top of what was read; null where the user says nothing on it. */
+export function answeredIdentity(book: AnswerBook, element: Element, read: Identity): Identity | null {
+  if (read.part === 'pipe') return null;
+  if (book.isCleanout(element))
+    return { ...read, part: 'cleanout', kind: null, detail: noDetail, evidence, weak: false };
+  const answer = book.fixture(element);
+  if (answer === null || (read.part === 'fitting' && answer.kind === undefined)) return null;
+  const kind = fixtureKinds.find((one) => one === answer.kind) ?? read.kind;
+  if (answer.kind === undefined && read.part !== 'fixture') return null;
+  return {
+    ...read,
+    part: 'fixture',
+    kind,
+    detail: answeredDetail(kind === read.kind ? read.detail : startOf(kind, read.detail), answer),
+    medium: 'sanitary',
+    evidence: answer.kind === undefined ? `${read.evidence}, ${evidence}` : evidence,
+    weak: answer.kind === undefined ? read.weak : false,
+  };
+}
+
+const evidence = 'answers file';
+
+/** Of a fixture that turns out to be another kind, only its use is kept. */
+const startOf = (kind: FixtureKind | null, { domestic }: FixtureDetail): FixtureDetail => ({
+  ...noDetail,
+  domestic,
+  heads: kind === 'shower' ? 1 : null,
+  emergency: kind === 'floor-drain' ? false : null,
+});
+
+function answeredDetail(read: FixtureDetail, { detail = {} }: FixtureAnswer): FixtureDetail {
+  const { flush, style, heads, emergency, domestic, flushLitres } = detail;
+  return {
+    ...read,
+    ...(flush === 'tank' || flush === 'valve' ? { flush } : {}),
+    ...(typeof style === 'string' ? { style } : {}),
+    ...(typeof heads === 'number' ? { heads } : {}),
+    ...(typeof emergency === 'boolean' ? { emergency } : {}),
+    ...(typeof domestic === 'boolean' ? { domestic } : {}),
+    ...(typeof flushLitres === 'number' ? { flushLitres } : {}),
+  };
+}
