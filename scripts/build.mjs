@@ -1,12 +1,14 @@
 // Builds dist/ from src/: types and modules by tsc, then the schemas and whatever the page needs beside them.
 import { spawnSync } from 'node:child_process';
-import { chmodSync, copyFileSync, existsSync, mkdirSync, readdirSync, rmSync } from 'node:fs';
+import { chmodSync, copyFileSync, existsSync, mkdirSync, readdirSync, renameSync, rmSync } from 'node:fs';
 import { dirname, join } from 'node:path';
 import { fileURLToPath, pathToFileURL } from 'node:url';
 
 const root = fileURLToPath(new URL('..', import.meta.url));
 const src = join(root, 'src');
-const dist = join(root, process.argv[2] ?? 'dist');
+const target = join(root, 'dist');
+// Built beside and then moved: whoever runs the program meanwhile has the old one or the new one, never a part.
+const dist = join(root, `dist.${process.pid}.tmp`);
 
 rmSync(dist, { recursive: true, force: true });
 const tsc = join(root, 'node_modules/typescript/bin/tsc');
@@ -26,4 +28,9 @@ if (existsSync(page)) await (await import(pathToFileURL(page).href)).buildPage({
 
 const main = join(dist, 'cli/main.js');
 if (existsSync(main)) chmodSync(main, 0o755);
+
+const old = `${target}.${process.pid}.old.tmp`;
+if (existsSync(target)) renameSync(target, old);
+renameSync(dist, target);
+rmSync(old, { recursive: true, force: true });
 process.exitCode = types.status ?? 1;

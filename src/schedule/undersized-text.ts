@@ -12,6 +12,9 @@ export interface UndersizedGroup {
   readonly pipes: readonly ResultPipe[];
   /** The pipe where the cause lies: its own demand governs, not one that a pipe before it hands on. */
   readonly root: ResultPipe;
+  /** Of the root: the demand that governs, and its battery. */
+  readonly governing: TrailStep | null;
+  readonly battery: string | null;
 }
 
 /** Groups of the undersized pipes: most pipes first, then by the first finding. */
@@ -27,7 +30,8 @@ export function undersizedGroups({ findings, pipes }: Result): UndersizedGroup[]
   return [...groups]
     .flatMap(([cause, group]) => {
       const root = group.find((pipe) => cause.startsWith(`${governingOf(pipe)?.rule} `)) ?? group[0];
-      return root === undefined ? [] : [{ cause, pipes: group, root }];
+      if (root === undefined) return [];
+      return [{ cause, pipes: group, root, governing: governingOf(root) ?? null, battery: root.battery ?? null }];
     })
     .sort((a, b) => b.pipes.length - a.pipes.length);
 }
@@ -55,13 +59,18 @@ export function undersizedText(result: Result): TextLine[] {
 const mostGroups = 12;
 const mostPipes = 8;
 
-function groupText({ pipes, root }: UndersizedGroup, place: number, unit: string, names: ElementNames): TextLine[] {
+function groupText(
+  { pipes, root, battery }: UndersizedGroup,
+  place: number,
+  unit: string,
+  names: ElementNames,
+): TextLine[] {
   const bySizes = new Map<string, ResultPipe[]>();
   for (const pipe of pipes) {
     const sizes = `Drawn ${pipe.modelled?.label ?? '?'}, needs ${sizeText(pipe.required)}`;
     bySizes.set(sizes, [...(bySizes.get(sizes) ?? []), pipe]);
   }
-  const whose = root.battery === undefined ? '' : `, ${root.battery}`;
+  const whose = battery === null ? '' : `, ${battery}`;
   const named = pipes.slice(0, mostPipes).map(({ globalId }) => unbroken(names.of(globalId)));
   const more = pipes.length - named.length;
   return [
