@@ -15,6 +15,7 @@ const lineName = (place: number): string => `Line ${place + 1}`;
 const wetTrail = (load: number): readonly TrailStep[] => [
   {
     rule: 'wet-vent-load',
+    title: 'wet vent load',
     clause: '2.5.8.1.',
     table: '2.5.8.1.',
     row: '4 in',
@@ -25,6 +26,7 @@ const wetTrail = (load: number): readonly TrailStep[] => [
   },
   {
     rule: 'branch-load',
+    title: 'branch load',
     clause: '2.4.10.6.',
     table: '2.4.10.6.-B',
     row: load > 12 ? '3 in' : load > 6 ? '2½ in' : '2 in',
@@ -282,12 +284,16 @@ export const communityHall: BuildingSpec = {
         {
           reading: 'circuit-vent',
           holds: false,
-          broken: [{ rule: 'relief-vent', clause: '2.5.3.1.', facts: { fixtures: 9, reliefVents: 0 } }],
+          broken: [
+            { rule: 'relief-vent', title: 'relief vent', clause: '2.5.3.1.', facts: { fixtures: 9, reliefVents: 0 } },
+          ],
         },
         {
           reading: 'individual-vent',
           holds: false,
-          broken: [{ rule: 'vent-per-trap', clause: '2.5.1.1.', facts: { vents: 1, traps: 9 } }],
+          broken: [
+            { rule: 'vent-per-trap', title: 'a vent for each trap', clause: '2.5.1.1.', facts: { vents: 1, traps: 9 } },
+          ],
         },
       ],
     },

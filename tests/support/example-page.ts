@@ -228,6 +228,7 @@ export function examplePage(spec: BuildingSpec): ExamplePage {
     entering: [],
     traps,
     pieces,
+    wayUp: () => null,
     pieceOf: runNames.map((name) => (wet(name) ? null : 0)),
     vertical: runNames.map((name) => isVertical(at(run(name).from), at(run(name).to))),
     slopes: [],
@@ -256,7 +257,11 @@ export function examplePage(spec: BuildingSpec): ExamplePage {
       length: distance(a, b),
       next: nextOf(name) === null ? null : idOf.get(nextOf(name)!)!,
       load: { least: load, most: load },
-      ...(air > 0 ? { ventLoad: { least: air, most: air } } : {}),
+      ...(role === 'wet-vent' && trail !== undefined
+        ? { ventLoad: { least: 14, most: 14 } }
+        : air > 0
+          ? { ventLoad: { least: air, most: air } }
+          : {}),
       servesWater: ids(drains.map((fixture) => fixture.name)),
       servesAir: ids(breathes.map((fixture) => fixture.name)),
       system: system ?? 'Sanitary',
@@ -269,6 +274,7 @@ export function examplePage(spec: BuildingSpec): ExamplePage {
       trail: trail ?? [
         {
           rule: wet(name) ? 'branch-load' : 'vent-load',
+          title: wet(name) ? 'branch load' : 'vent load',
           clause: wet(name) ? '2.4.10.6.' : '2.5.8.3.',
           table: wet(name) ? '2.4.10.6.-B' : '2.5.8.3.',
           row: need,

@@ -1,0 +1,86 @@
+import type { Vec3 } from '../geometry/vector.ts';
+import type { Model } from '../model/model.ts';
+import type { Network } from '../network/network.ts';
+import type { Paths } from '../paths/paths.ts';
+import type { Result, ResultFixture, ResultPipe } from '../schedule/result.ts';
+import type { Riser } from '../schedule/riser.ts';
+import { type FabricColumns, fabricColumns } from './page-fabric.ts';
+import { type PathColumns, pathColumns } from './page-paths.ts';
+import { type FixtureColumns, fixtureBoxes, originOf, type PipeColumns, pipeColumns } from './page-pipes.ts';
+
+/** All that the page knows: the result as people read it, and numbers to draw it with. */
+export interface PageData {
+  readonly format: 'drainwright-page';
+  readonly version: 1;
+  /** Lean: without `elements` and the lists of ids, which the page finds again from the paths in `scene`. */
+  readonly result: Result;
+  readonly scene: PageScene;
+  /** Line drawings, one for each drain system, the one with most fixtures first. */
+  readonly risers: readonly Riser[];
+}
+
+export interface PageScene {
+  /** World metres of the scene's zero, whole millimetres; the scene itself is in millimetres from here, z up. */
+  readonly origin: Vec3;
+  /** Lowest first; elevations in millimetres above the origin. */
+  readonly storeys: readonly { readonly name: string | null; readonly elevation: number }[];
+  readonly pipes: PipeColumns;
+  readonly fixtures: FixtureColumns;
+  readonly paths: PathColumns;
+  readonly fabric: FabricColumns;
+  /** Names of walls, slabs, roofs and spaces, in the order of `fabric`. */
+  readonly fabricNames: readonly (string | null)[];
+  /** Of elements that stand at joints, in the order of `pipes.jointFitting`. */
+  readonly fittings: readonly { readonly globalId: string; readonly name: string | null; readonly class: string }[];
+}
+
+/** Everything for the page from one run. Sections of `scene` are the pipes of `network`, in the same order. */
+export function pageData(
+  result: Result,
+  model: Model,
+  network: Network,
+  paths: Paths,
+  risers: readonly Riser[] = [],
+): PageData {
+  const origin = originOf(model, network);
+  const pipeAt = indexOf(result.pipes);
+  const fixtureAt = indexOf(result.fixtures);
+  const { columns, fittings } = pipeColumns(model, network, result.pipes, pipeAt, origin);
+  const fabric = fabricColumns(model, origin);
+  return {
+    format: 'drainwright-page',
+    version: 1,
+    result: lean(result),
+    scene: {
+      origin,
+      storeys: model.storeys.map(({ name, elevation }) => ({ name, elevation: millimetres(elevation - origin[2]) })),
+      pipes: columns,
+      fixtures: fixtureBoxes(model, network, result.fixtures, fixtureAt, origin),
+      paths: pathColumns(model, network, paths, result.fixtures, fixtureAt),
+      fabric: fabric.columns,
+      fabricNames: fabric.names,
+      fittings,
+    },
+    risers,
+  };
+}
+
+const millimetres = (value: number): number => Math.round(value * 1000);
+
+/** Where a row of the result stands, by file-independent key; a doubled GlobalId is told apart by its STEP id. */
+function indexOf(rows: readonly { readonly globalId: string; readonly stepId: number }[]): ReadonlyMap<string, number> {
+  return new Map(rows.map(({ globalId, stepId }, index) => [`${globalId} ${stepId}`, index]));
+}
+
+function lean(result: Result): Result {
+  return { ...result, elements: [], fixtures: result.fixtures.map(leanFixture), pipes: result.pipes.map(leanPipe) };
+}
+
+function leanFixture({ waterPath: _water, airPath: _air, ...rest }: ResultFixture): ResultFixture {
+  return rest;
+}
+
+function leanPipe({ servesWater: _water, servesAir: _air, sections, ...rest }: ResultPipe): ResultPipe {
+  if (sections === undefined) return rest;
+  return { ...rest, sections: sections.map(({ servesWater: _w, servesAir: _a, ...section }) => section) };
+}

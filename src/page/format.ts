@@ -1,0 +1,36 @@
+import type { LoadRange, SizeRange } from '../schedule/result.ts';
+import type { Words } from './words/words.ts';
+
+/** Numbers as the page's language writes them: a point in English, a comma in French; at most `places` decimals. */
+export function decimal(words: Words, value: number, places: number): string {
+  const text = value.toFixed(places);
+  const short = text.includes('.') ? text.replace(/\.?0+$/, '') : text;
+  const plain = short === '-0' ? '0' : short;
+  return words.language === 'fr' ? plain.replace('.', ',') : plain;
+}
+
+/** Millimetres below one metre. */
+export const lengthText = (words: Words, metres: number): string =>
+  Math.abs(metres) < 1 ? `${decimal(words, metres * 1000, 0)} mm` : `${decimal(words, metres, 2)} m`;
+
+export const slopeText = (words: Words, slope: number): string =>
+  slope === 0 ? words.level : `${decimal(words, slope * 100, 2)} % (1:${decimal(words, 1 / Math.abs(slope), 0)})`;
+
+export function loadText(words: Words, { least, most }: LoadRange, unit: string): string {
+  const range =
+    least === most ? decimal(words, most, 2) : `${decimal(words, least, 2)} ${words.to} ${decimal(words, most, 2)}`;
+  return `${range} ${words.unit(unit)}`;
+}
+
+export function shortLoad(words: Words, { least, most }: LoadRange, unit: string): string {
+  const range = least === most ? decimal(words, most, 2) : `${decimal(words, least, 2)}–${decimal(words, most, 2)}`;
+  return `${range} ${words.shortUnit(unit)}`;
+}
+
+/** `4 in`, `2 in to 3 in`; where no size of the table holds it the words say so. */
+export function sizeText(words: Words, range: SizeRange | null): string {
+  const least = range?.least?.label;
+  const most = range?.most?.label;
+  if (most === undefined) return least === undefined ? words.pipe.noSize : `${least} …`;
+  return least === undefined || least === most ? most : `${least} ${words.to} ${most}`;
+}

@@ -1,0 +1,102 @@
+import type { BrokenCondition, ResultBattery } from '../../schedule/result.ts';
+import { countedKind, named, ruleName } from '../words/words.ts';
+import type { Desk } from './desk.ts';
+import { make, modelText } from './element.ts';
+import { factTexts } from './facts.ts';
+import { capital, shown } from './names.ts';
+
+/** Each battery with all its readings side by side: which one was taken, and what stands against each. */
+export function batteryList(desk: Desk): HTMLElement {
+  const { building, words } = desk;
+  const { batteries } = building.result;
+  if (batteries.length === 0) return make('p', { class: 'quiet' }, words.battery.none);
+  return make('div', {}, ...batteries.map((battery) => batteryCard(desk, battery)));
+}
+
+export function batteryCard(desk: Desk, battery: ResultBattery): HTMLElement {
+  const { building, words } = desk;
+  const rows = battery.pipes.flatMap((id) => building.pipeAt.get(id) ?? []);
+  const kinds = new Map<string | null, number>();
+  for (const id of battery.fixtures) {
+    const row = building.fixtureAt.get(id);
+    const kind = row === undefined ? null : (building.result.fixtures[row]?.kind ?? null);
+    kinds.set(kind, (kinds.get(kind) ?? 0) + 1);
+  }
+  const readings = [
+    { reading: battery.reading, holds: battery.broken.length === 0, broken: battery.broken, chosen: true },
+    ...battery.others.map((other) => ({ ...other, chosen: false })),
+  ];
+  return make(
+    'section',
+    { class: 'battery' },
+    make('h3', {}, words.battery.one(battery.id)),
+    make('p', { class: 'kinds' }, [...kinds].map(([kind, count]) => countedKind(words, kind, count)).join(', ')),
+    make(
+      'table',
+      { class: 'readings' },
+      make(
+        'thead',
+        {},
+        make(
+          'tr',
+          {},
+          make('th', { scope: 'col' }, words.battery.reading),
+          make('th', { scope: 'col' }, words.battery.condition),
+        ),
+      ),
+      make(
+        'tbody',
+        {},
+        ...readings.map(({ reading, holds, broken, chosen }) =>
+          make(
+            'tr',
+            { class: chosen ? 'chosen' : '' },
+            make(
+              'th',
+              { scope: 'row' },
+              capital(named(words.roles, reading)),
+              chosen && make('span', { class: 'tag' }, words.battery.chosen),
+            ),
+            make(
+              'td',
+              {},
+              make(
+                'span',
+                { class: holds ? 'holds' : 'breaks' },
+                holds ? `✓ ${words.battery.holds}` : `✕ ${words.battery.broken}`,
+              ),
+              broken.length > 0 && make('ul', {}, ...broken.map((condition) => brokenLine(desk, condition))),
+            ),
+          ),
+        ),
+      ),
+    ),
+    battery.why !== '' && make('p', { class: 'quiet' }, `${words.battery.why} `, modelText(shown(battery.why)), '.'),
+    rows.length > 0 &&
+      make(
+        'button',
+        {
+          type: 'button',
+          class: 'button',
+          onclick: () => {
+            const first = rows[0];
+            if (first !== undefined) desk.choosePipe(first, rows);
+          },
+        },
+        words.battery.show,
+      ),
+  );
+}
+
+function brokenLine(desk: Desk, broken: BrokenCondition): HTMLElement {
+  const { building, words } = desk;
+  const { clause, facts } = broken;
+  const numbers = factTexts(building, words, facts);
+  return make(
+    'li',
+    {},
+    capital(ruleName(words, broken)),
+    numbers.length > 0 ? `: ${numbers.map(shown).join(', ')} ` : ' ',
+    make('span', { class: 'clause' }, clause),
+  );
+}

@@ -1,0 +1,18 @@
+import type { Building } from '../building.ts';
+import type { Theme } from '../colours.ts';
+import type { SceneView } from '../scene/scene-view.ts';
+import type { Store } from '../state.ts';
+import type { Words } from '../words/words.ts';
+
+/** What every part of the page works with. `scene` is null where the browser or the model gives no picture. */
+export interface Desk {
+  readonly building: Building;
+  readonly store: Store;
+  readonly words: Words;
+  scene: SceneView | null;
+  theme(): Theme;
+  /** Says it to whoever cannot see the change. */
+  announce(text: string): void;
+  choosePipe(row: number, frame?: readonly number[]): void;
+  chooseFixture(row: number): void;
+}

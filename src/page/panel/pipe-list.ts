@@ -1,0 +1,138 @@
+import { sizeText } from '../format.ts';
+import { kindName, named } from '../words/words.ts';
+import { verdictMark } from './chips.ts';
+import type { Desk } from './desk.ts';
+import { make, modelText } from './element.ts';
+import { fixtureSymbol } from './fixture-symbol.ts';
+import { fixtureName, pipeName, shown } from './names.ts';
+
+const page = 120;
+
+/** Pipes and fixtures that answer a search, worst verdict first; all pipes where nothing is searched. */
+export function pipeList(desk: Desk, search: string): HTMLElement {
+  const { building, words } = desk;
+  const wanted = folded(search).trim();
+  const pipes = rankedPipes(desk).filter((row) => wanted === '' || pipeWords(desk, row).includes(wanted));
+  const fixtures =
+    wanted === ''
+      ? []
+      : building.result.fixtures.flatMap((_, row) => (fixtureWords(desk, row).includes(wanted) ? row : []));
+  const lines = [
+    ...fixtures.map((row) => () => fixtureLine(desk, row)),
+    ...pipes.map((row) => () => pipeLine(desk, row)),
+  ];
+  const list = make('ul', { class: 'pipe-list' });
+  const add = (from: number): void => {
+    list.append(...lines.slice(from, from + page).map((line) => line()));
+    const left = lines.length - from - page;
+    if (left <= 0) return;
+    const more: HTMLElement = make(
+      'button',
+      {
+        type: 'button',
+        class: 'link',
+        onclick: () => {
+          more.parentElement?.remove();
+          add(from + page);
+        },
+      },
+      words.page.more(Math.min(left, page)),
+    );
+    list.append(make('li', {}, more));
+  };
+  add(0);
+  return make(
+    'div',
+    {},
+    wanted !== '' &&
+      make(
+        'p',
+        { class: 'quiet', role: 'status' },
+        lines.length === 0 ? words.search.none : words.search.found(lines.length),
+      ),
+    list,
+  );
+}
+
+const worst = { undersized: 0, unknown: 1, oversized: 2, agrees: 3 } as const;
+
+function rankedPipes({ building }: Desk): readonly number[] {
+  const { pipes } = building.result;
+  return pipes.map((_, row) => row).sort((a, b) => worst[pipes[a]!.verdict] - worst[pipes[b]!.verdict] || a - b);
+}
+
+/** Accents and case make no difference to a search. */
+const folded = (text: string): string => text.normalize('NFD').replace(/\p{M}/gu, '').toLowerCase();
+
+function pipeWords({ building, words }: Desk, row: number): string {
+  const pipe = building.result.pipes[row]!;
+  return folded(
+    [
+      pipe.name,
+      pipe.globalId,
+      `#${pipe.stepId}`,
+      named(words.roles, pipe.role),
+      ...pipe.also.map((role) => named(words.roles, role)),
+      pipe.storey,
+      pipe.system,
+      pipe.modelled?.label,
+      words.verdict[pipe.verdict],
+      pipe.battery,
+      ...pipe.trail.filter(({ governs }) => governs).map(({ clause }) => clause),
+    ].join('\n'),
+  );
+}
+
+function fixtureWords({ building, words }: Desk, row: number): string {
+  const fixture = building.result.fixtures[row]!;
+  return folded(
+    [fixture.name, fixture.globalId, `#${fixture.stepId}`, kindName(words, fixture.kind), fixture.storey].join('\n'),
+  );
+}
+
+function pipeLine(desk: Desk, row: number): HTMLElement {
+  const { building, words } = desk;
+  const pipe = building.result.pipes[row]!;
+  const drawn = pipe.modelled?.label ?? '?';
+  const size =
+    pipe.verdict === 'undersized' || pipe.verdict === 'oversized'
+      ? `${drawn} → ${sizeText(words, pipe.required)}`
+      : drawn;
+  return make(
+    'li',
+    {},
+    make(
+      'button',
+      { type: 'button', class: 'line', onclick: () => desk.choosePipe(row) },
+      verdictMark(pipe.verdict),
+      make('span', { class: 'line-name' }, modelText(pipeName(building, words, row))),
+      make('span', { class: 'line-size' }, size),
+      make(
+        'span',
+        { class: 'line-more' },
+        [named(words.roles, pipe.role), shown(pipe.storey)].filter((text) => text !== '').join(' · '),
+      ),
+    ),
+  );
+}
+
+function fixtureLine(desk: Desk, row: number): HTMLElement {
+  const { building, words } = desk;
+  const fixture = building.result.fixtures[row]!;
+  return make(
+    'li',
+    {},
+    make(
+      'button',
+      { type: 'button', class: 'line', onclick: () => desk.chooseFixture(row) },
+      fixtureSymbol(fixture.kind),
+      make('span', { class: 'line-name' }, modelText(fixtureName(building, words, row))),
+      make('span', { class: 'line-size' }, fixture.trapSize?.label ?? ''),
+      make(
+        'span',
+        { class: 'line-more' },
+        [kindName(words, fixture.kind), shown(fixture.storey)].filter((text) => text !== '').join(' · '),
+      ),
+    ),
+  );
+}

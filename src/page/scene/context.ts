@@ -1,0 +1,69 @@
+import { Group, LineSegments, Mesh } from 'three';
+import type { Building } from '../building.ts';
+import type { Rgb, Theme } from '../colours.ts';
+import { fabricShape } from './fabric-shape.ts';
+import { fixtureShape } from './fixture-shape.ts';
+import { lineGeometry } from './mesh-draft.ts';
+import type { SharedUniforms } from './pipe-material.ts';
+import { lineMaterial, type SolidMaterial, solidMaterial } from './solid-material.ts';
+
+/** The quiet building round the piping: walls, floors, fixtures. */
+export interface Context {
+  readonly group: Group;
+  show(theme: Theme, shown: boolean, chosenFixture: number | null): void;
+  /** While the eye moves on a slow machine, large translucent faces are left out and edges stay. */
+  setCheap(cheap: boolean): void;
+  dispose(): void;
+}
+
+export function contextOf(building: Building, shared: SharedUniforms): Context {
+  const group = new Group();
+  const fabric = fabricShape(building);
+  const walls = new Mesh(fabric.walls.geometry(), solidMaterial(shared, true));
+  const floors = new Mesh(fabric.floors.geometry(), solidMaterial(shared, true));
+  const edges = new LineSegments(lineGeometry(fabric.edges), lineMaterial(shared));
+  const fixtures = new Mesh(fixtureShape(building, () => true).geometry(), solidMaterial(shared, false));
+  const chosen = new Mesh(undefined, solidMaterial(shared, false));
+  floors.renderOrder = 5;
+  walls.renderOrder = 6;
+  edges.renderOrder = 7;
+  for (const mesh of [fixtures, chosen, floors, walls, edges]) {
+    mesh.frustumCulled = false;
+    group.add(mesh);
+  }
+  let shownFixture: number | null = null;
+  chosen.visible = false;
+  return {
+    group,
+    show(theme, shown, fixture) {
+      tint(walls.material, theme.wall, theme.name === 'light' ? 0.13 : 0.08);
+      tint(floors.material, theme.wall, theme.name === 'light' ? 0.09 : 0.055);
+      tint(edges.material, theme.edge, theme.name === 'light' ? 0.34 : 0.3);
+      tint(fixtures.material, theme.fixture, 1);
+      tint(chosen.material, theme.chosen, 1);
+      walls.visible = floors.visible = edges.visible = shown;
+      if (fixture === shownFixture) return;
+      shownFixture = fixture;
+      chosen.geometry.dispose();
+      chosen.geometry = fixtureShape(building, (row) => row === fixture).geometry();
+      chosen.visible = fixture !== null;
+      fixtures.geometry.dispose();
+      fixtures.geometry = fixtureShape(building, (row) => row !== fixture).geometry();
+    },
+    setCheap(cheap) {
+      walls.material.visible = !cheap;
+      floors.material.visible = !cheap;
+    },
+    dispose() {
+      for (const mesh of [walls, floors, edges, fixtures, chosen]) {
+        mesh.geometry.dispose();
+        mesh.material.dispose();
+      }
+    },
+  };
+}
+
+function tint(material: SolidMaterial, colour: Rgb, alpha: number): void {
+  material.uniforms.colour.value.setRGB(colour[0] / 255, colour[1] / 255, colour[2] / 255);
+  material.uniforms.alpha.value = alpha;
+}

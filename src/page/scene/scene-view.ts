@@ -1,0 +1,268 @@
+import type { Building } from '../building.ts';
+import { lookOf } from '../colouring.ts';
+import { type Theme, themes } from '../colours.ts';
+import type { PageState, Store } from '../state.ts';
+import { contextOf } from './context.ts';
+import { eyeControl } from './eye-control.ts';
+import { type LabelText, labelWishes } from './label-wishes.ts';
+import { labelsIn } from './labels.ts';
+import { type Measure, measureIn } from './measure.ts';
+import { type Bounds, type Eye, framing, type NamedView, namedViews } from './orbit.ts';
+import { type Hit, pick } from './pick.ts';
+import { pipingOf } from './piping.ts';
+import type { Point } from './polylines.ts';
+import { routeOf, type Way, wayOf } from './route.ts';
+import { stageIn } from './stage.ts';
+
+export interface SceneView {
+  readonly stats: { frames: number; lastMs: number; calls: number; software: boolean };
+  /** Frames the pipes of these rows with some of what is round them. */
+  framePipes(rows: readonly number[]): void;
+  frameFixture(row: number): void;
+  frameWay(): void;
+  fit(): void;
+  view(name: NamedView): void;
+  readonly eye: Eye;
+  setEye(eye: Eye): void;
+  /** CSS pixels of the canvas; null where the point lies behind the eye. */
+  project(at: Point): { readonly x: number; readonly y: number } | null;
+  middleOf(row: number): Point | null;
+  resize(): void;
+  dispose(): void;
+}
+
+export interface SceneParts {
+  readonly canvas: HTMLCanvasElement;
+  readonly labelLayer: HTMLElement;
+  readonly tip: HTMLElement;
+  /** What to say of a thing under the pointer. */
+  readonly tipText: (hit: Hit) => string;
+  readonly labelText: LabelText;
+}
+
+const margin = 0.9;
+
+export function sceneView(building: Building, store: Store, parts: SceneParts): SceneView {
+  const { canvas } = parts;
+  const stage = stageIn(canvas, building.sectionCount);
+  const piping = pipingOf(building, stage.shared);
+  const context = contextOf(building, stage.shared);
+  const route = routeOf(building, stage.shared);
+  const labels = labelsIn(parts.labelLayer);
+  stage.scene.add(context.group, piping.group, route.group);
+  const all = Array.from({ length: building.sectionCount }, (_, section) => section);
+  const whole = widened(piping.bounds(all) ?? fixtureBounds(building) ?? { min: [-2, -2, 0], max: [2, 2, 3] }, 0.3);
+  const reach = Math.hypot(...([0, 1, 2] as const).map((axis) => whole.max[axis] - whole.min[axis]));
+  const reduced = window.matchMedia('(prefers-reduced-motion: reduce)');
+  let way: Way | null = null;
+  let clip: Bounds | null = null;
+  let ticking = 0;
+  const inside = (at: Point): boolean =>
+    clip === null || ([0, 1, 2] as const).every((axis) => at[axis] >= clip!.min[axis] && at[axis] <= clip!.max[axis]);
+  const aspect = (): number => canvas.clientWidth / Math.max(1, canvas.clientHeight);
+  const hitAt = (x: number, y: number, slackPixels: number): Hit | null =>
+    pick(building, piping.polylines, stage.ray(x, y), slackPixels * stage.shared.pixel.value, inside, piping.visible);
+  const theme = (): Theme => themes[store.state.theme];
+
+  const still = (): void => {
+    piping.setDetail('full');
+    context.setCheap(false);
+    stage.drawStill();
+    placeLabels();
+  };
+  const moving = (): void => {
+    piping.setDetail(stage.detail);
+    context.setCheap(stage.detail !== 'full');
+    stage.look(control.eye, reach);
+    labels.hide();
+    measure.move();
+    stage.draw();
+  };
+  const control = eyeControl(
+    canvas,
+    framing(whole, namedViews.home.yaw, namedViews.home.pitch, 1.5),
+    () => reduced.matches,
+    {
+      moved: moving,
+      settled: still,
+      clicked(x, y) {
+        const hit = hitAt(x, y, 5);
+        if (store.state.measuring) {
+          measure.add(hit);
+          return;
+        }
+        store.set({ chosen: chosenBy(building, hit), follow: null });
+      },
+      hovered(x, y) {
+        const hit = hitAt(x, y, 3);
+        parts.tip.hidden = hit === null;
+        canvas.classList.toggle('over', hit !== null);
+        if (hit === null) return;
+        parts.tip.textContent = parts.tipText(hit);
+        parts.tip.style.transform = `translate(${Math.min(x + 14, canvas.clientWidth - parts.tip.offsetWidth - 8)}px, ${y + 16}px)`;
+      },
+      under: (x, y) => hitAt(x, y, 12)?.at ?? null,
+    },
+  );
+  canvas.addEventListener('pointerleave', () => {
+    parts.tip.hidden = true;
+  });
+  const measure: Measure = measureIn(
+    parts.labelLayer.parentElement ?? document.body,
+    (at) => stage.project(at),
+    (text) => parts.labelText.measure(text),
+  );
+  const placeLabels = (): void => {
+    measure.move();
+    labels.show(labelWishes(building, store.state, piping, way, parts.labelText, inside), (at) => stage.project(at));
+  };
+
+  const show = (state: PageState): void => {
+    piping.show(lookOf(building, state, theme()));
+    context.show(theme(), state.context, state.chosen?.is === 'fixture' ? state.chosen.row : null);
+    stage.setTheme(theme());
+    clip = storeyBox(building, state.storey);
+    stage.shared.clipMin.value.set(...(clip?.min ?? [-1e9, -1e9, -1e9]));
+    stage.shared.clipMax.value.set(...(clip?.max ?? [1e9, 1e9, 1e9]));
+    way = state.follow === null ? null : wayOf(building, piping.polylines, state.follow);
+    route.show(way, state.follow?.what ?? 'water', state.follow?.step ?? 0, theme());
+    if (!state.measuring) measure.clear();
+    stage.look(control.eye, reach);
+    run(way !== null && !reduced.matches);
+    still();
+  };
+  /** Only a followed way moves by itself; everything else is drawn when it changes. */
+  const run = (wanted: boolean): void => {
+    cancelAnimationFrame(ticking);
+    ticking = 0;
+    if (!wanted) {
+      route.setTime(0);
+      return;
+    }
+    const tick = (now: number): void => {
+      route.setTime((now / 1000) * 0.9);
+      if (!document.hidden && canvas.clientWidth > 0) stage.draw();
+      // A slow machine is given time to answer the reader between frames.
+      ticking = requestAnimationFrame(stage.stats.lastMs > 60 ? () => requestAnimationFrame(tick) : tick);
+    };
+    ticking = requestAnimationFrame(tick);
+  };
+  store.watch((now, before) => {
+    if (now.view === 'model' && now !== before) show(now);
+  });
+
+  const fly = (bounds: Bounds | null, turnTo?: { yaw: number; pitch: number }): void => {
+    if (bounds === null) return;
+    const { yaw, pitch } = turnTo ?? { yaw: control.eye.yaw, pitch: Math.max(0.2, Math.min(1.1, control.eye.pitch)) };
+    control.fly(framing(bounds, yaw, pitch, aspect()));
+  };
+  const sectionsOf = (rows: readonly number[]): number[] => rows.flatMap((row) => building.sectionsOf[row] ?? []);
+  const view: SceneView = {
+    stats: stage.stats,
+    framePipes(rows) {
+      const bounds = piping.bounds(sectionsOf(rows));
+      if (bounds !== null) fly(widened(bounds, margin));
+    },
+    frameFixture(row) {
+      const box = boxOf(building, row);
+      if (box !== null) fly(widened(box, margin * 1.3));
+    },
+    frameWay() {
+      if (way !== null) fly(piping.bounds(way.sections) && widened(piping.bounds(way.sections)!, 0.6));
+    },
+    fit() {
+      const shown = all.filter((section) => piping.visible[section] === 1);
+      const bounds = piping.bounds(shown) ?? whole;
+      fly(clip === null ? widened(bounds, 0.3) : within(bounds, clip), {
+        yaw: control.eye.yaw,
+        pitch: control.eye.pitch,
+      });
+    },
+    view(name) {
+      fly(clip === null ? whole : within(whole, clip), namedViews[name]);
+    },
+    get eye() {
+      return control.eye;
+    },
+    setEye(eye) {
+      control.eye = eye;
+    },
+    project: (at) => stage.project(at),
+    middleOf(row) {
+      const bounds = piping.bounds(sectionsOf([row]));
+      if (bounds === null) return null;
+      const middle = (axis: 0 | 1 | 2): number => (bounds.min[axis] + bounds.max[axis]) / 2;
+      return [middle(0), middle(1), middle(2)];
+    },
+    resize() {
+      stage.resize();
+      stage.look(control.eye, reach);
+      still();
+    },
+    dispose() {
+      run(false);
+      control.dispose();
+      piping.dispose();
+      context.dispose();
+      route.dispose();
+      stage.dispose();
+    },
+  };
+  stage.resize();
+  control.eye = framing(whole, namedViews.home.yaw, namedViews.home.pitch, aspect());
+  show(store.state);
+  new ResizeObserver(() => {
+    if (canvas.clientWidth > 0) view.resize();
+  }).observe(canvas);
+  return view;
+}
+
+function chosenBy(building: Building, hit: Hit | null): PageState['chosen'] {
+  if (hit === null) return null;
+  if (hit.is === 'fixture') return { is: 'fixture', row: hit.index };
+  const row = building.data.scene.pipes.pipe[hit.index] ?? -1;
+  return row < 0 ? null : { is: 'pipe', row };
+}
+
+function boxOf(building: Building, fixture: number): Bounds | null {
+  const { minX, minY, minZ, maxX, maxY, maxZ } = building.data.scene.fixtures;
+  if (maxX[fixture]! <= minX[fixture]!) return null;
+  return {
+    min: [minX[fixture]! / 1000, minY[fixture]! / 1000, minZ[fixture]! / 1000],
+    max: [maxX[fixture]! / 1000, maxY[fixture]! / 1000, maxZ[fixture]! / 1000],
+  };
+}
+
+function fixtureBounds(building: Building): Bounds | null {
+  const boxes = building.result.fixtures.flatMap((_, row) => boxOf(building, row) ?? []);
+  if (boxes.length === 0) return null;
+  const edge = (end: 'min' | 'max', of: (...values: number[]) => number) => (axis: 0 | 1 | 2) =>
+    of(...boxes.map((box) => box[end][axis]));
+  const [low, high] = [edge('min', Math.min), edge('max', Math.max)];
+  return { min: [low(0), low(1), low(2)], max: [high(0), high(1), high(2)] };
+}
+
+const widened = ({ min, max }: Bounds, by: number): Bounds => ({
+  min: [min[0] - by, min[1] - by, min[2] - by],
+  max: [max[0] + by, max[1] + by, max[2] + by],
+});
+
+const within = (a: Bounds, b: Bounds): Bounds => ({
+  min: [Math.max(a.min[0], b.min[0]), Math.max(a.min[1], b.min[1]), Math.max(a.min[2], b.min[2])],
+  max: [Math.min(a.max[0], b.max[0]), Math.min(a.max[1], b.max[1]), Math.min(a.max[2], b.max[2])],
+});
+
+/** How far below a floor the pipes hang that serve it, and so how far below the next one a storey's picture ends. */
+const underFloor = 0.6;
+
+/** What is seen of one storey: from the pipes under its floor to just under those of the next. */
+function storeyBox(building: Building, storey: number | null): Bounds | null {
+  if (storey === null) return null;
+  const { storeys } = building.data.scene;
+  const floor = (index: number): number | undefined => {
+    const elevation = storeys[index]?.elevation;
+    return elevation === undefined ? undefined : elevation / 1000 - underFloor;
+  };
+  const low = storey === 0 ? -1e9 : (floor(storey) ?? -1e9);
+  return { min: [-1e9, -1e9, low], max: [1e9, 1e9, floor(storey + 1) ?? 1e9] };
+}

@@ -1,0 +1,149 @@
+import { Color, PerspectiveCamera, Scene, Vector3, WebGLRenderer } from 'three';
+import type { Theme } from '../colours.ts';
+import { type Eye, fieldOfView, outward, place } from './orbit.ts';
+import type { Ray } from './pick.ts';
+import { type SharedUniforms, sharedUniforms } from './pipe-material.ts';
+import type { Detail } from './piping.ts';
+import type { Point } from './polylines.ts';
+
+export interface Stage {
+  readonly scene: Scene;
+  readonly shared: SharedUniforms;
+  readonly canvas: HTMLCanvasElement;
+  /** What the last frames took, for the tests and for the choice of detail. */
+  readonly stats: { frames: number; lastMs: number; calls: number; software: boolean };
+  look(eye: Eye, reach: number): void;
+  setTheme(theme: Theme): void;
+  /** Draws once at the next frame, however often it is called before. */
+  draw(): void;
+  /** Draws now, finely: what stands still may take its time. */
+  drawStill(): void;
+  project(at: Point): { readonly x: number; readonly y: number } | null;
+  ray(x: number, y: number): Ray;
+  resize(): void;
+  /** How much to draw while moving, by what frames have cost so far. */
+  readonly detail: Detail;
+  onFrame: () => void;
+  dispose(): void;
+}
+
+/** Milliseconds: a frame dearer than this while moving asks for less detail, one far cheaper for more. */
+const dear = 42;
+const dearStill = 400;
+
+/** The renderer and its camera. Nothing runs while nothing changes. Throws where the browser has no WebGL 2. */
+export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
+  const software = drawsInSoftware();
+  const renderer = new WebGLRenderer({ canvas, antialias: !software, powerPreference: 'high-performance' });
+  const scene = new Scene();
+  scene.background = new Color();
+  const camera = new PerspectiveCamera(fieldOfView, 1);
+  const shared = sharedUniforms();
+  const stats = { frames: 0, lastMs: 0, calls: 0, software };
+  const ladder: readonly Detail[] = ['full', 'light', 'lines'];
+  let rung = software && sections > 20_000 ? 2 : software && sections > 3000 ? 1 : 0;
+  let ratio = 1;
+  let asked = 0;
+  let fine = 1;
+  const reading = new Uint8Array(4);
+  const paint = (scale: number): number => {
+    const began = performance.now();
+    if (scale !== ratio) {
+      ratio = scale;
+      renderer.setPixelRatio(scale);
+    }
+    renderer.render(scene, camera);
+    // Software drawing is only done when somebody looks at it: without this the measure would be of an empty promise.
+    if (software) renderer.getContext().readPixels(0, 0, 1, 1, 0x1908, 0x1401, reading);
+    stats.frames++;
+    stats.calls = renderer.info.render.calls;
+    stats.lastMs = performance.now() - began;
+    return stats.lastMs;
+  };
+  const stage: Stage = {
+    scene,
+    shared,
+    canvas,
+    stats,
+    onFrame: () => undefined,
+    get detail() {
+      return ladder[rung] ?? 'full';
+    },
+    look(eye, reach) {
+      place(camera, eye, reach);
+      shared.pixel.value = (2 * Math.tan((fieldOfView * Math.PI) / 360)) / Math.max(1, canvas.clientHeight);
+      // A mark every 26 pixels or so, in steps of two, so that patterns do not crawl while zooming.
+      const wished = 26 * shared.pixel.value * eye.distance;
+      shared.period.value = 2 ** Math.round(Math.log2(Math.max(0.02, wished)));
+    },
+    setTheme(theme) {
+      // The ground is set as it is written: three would take it for linear light.
+      (scene.background as Color).setRGB(...asShown(theme.ground));
+      shared.light.value = theme.name === 'light' ? 1 : 0;
+    },
+    draw() {
+      if (asked !== 0) return;
+      asked = requestAnimationFrame(() => {
+        asked = 0;
+        const took = paint(software ? 1 : Math.min(2, window.devicePixelRatio));
+        if (took > dear && rung < ladder.length - 1 && sections > 500) rung++;
+        stage.onFrame();
+      });
+    },
+    drawStill() {
+      cancelAnimationFrame(asked);
+      asked = 0;
+      if (fine > 1 && stats.lastMs > dearStill) fine = 1;
+      const wanted = software ? Math.max(fine, window.devicePixelRatio) : Math.min(2, window.devicePixelRatio);
+      const took = paint(wanted);
+      if (software) fine = took * 4 < dearStill ? 2 : took > dearStill ? 1 : fine;
+      if (software && fine > wanted && took * 4 < dearStill) paint(fine);
+      stage.onFrame();
+    },
+    project(at) {
+      const point = new Vector3(...at).project(camera);
+      if (point.z > 1) return null;
+      return { x: ((point.x + 1) / 2) * canvas.clientWidth, y: ((1 - point.y) / 2) * canvas.clientHeight };
+    },
+    ray(x, y) {
+      const far = new Vector3((x / canvas.clientWidth) * 2 - 1, 1 - (y / canvas.clientHeight) * 2, 0.5).unproject(
+        camera,
+      );
+      const toward = far.sub(camera.position).normalize();
+      return {
+        from: camera.position.toArray() as [number, number, number],
+        toward: toward.toArray() as [number, number, number],
+      };
+    },
+    resize() {
+      const { clientWidth, clientHeight } = canvas;
+      renderer.setSize(clientWidth, clientHeight, false);
+      camera.aspect = clientWidth / Math.max(1, clientHeight);
+      camera.updateProjectionMatrix();
+    },
+    dispose() {
+      cancelAnimationFrame(asked);
+      renderer.dispose();
+    },
+  };
+  return stage;
+}
+
+const asShown = (colour: readonly [number, number, number]): [number, number, number] =>
+  colour.map((part) => {
+    const c = part / 255;
+    return c <= 0.04045 ? c / 12.92 : ((c + 0.055) / 1.055) ** 2.4;
+  }) as [number, number, number];
+
+/** Smoothing edges costs a software renderer half its speed, so it must be known before the real canvas is set up. */
+function drawsInSoftware(): boolean {
+  const context = document.createElement('canvas').getContext('webgl2');
+  if (context === null) throw new Error('no WebGL 2');
+  const info = context.getExtension('WEBGL_debug_renderer_info');
+  const name = String(context.getParameter(info?.UNMASKED_RENDERER_WEBGL ?? context.RENDERER));
+  context.getExtension('WEBGL_lose_context')?.loseContext();
+  return /swiftshader|llvmpipe|softpipe|software|basic render/i.test(name);
+}
+
+/** The corner of the eye toward the viewer, for those who only need a direction. */
+export const eyeDirection = (eye: Eye): Point => outward(eye).toArray() as [number, number, number];

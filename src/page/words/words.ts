@@ -1,0 +1,249 @@
+import type { Language } from '../state.ts';
+import { english } from './english.ts';
+import { french } from './french.ts';
+
+/** Every word of the page in one language. Names of roles, kinds, findings and rules fall back to the id in plain words. */
+export interface Words {
+  readonly language: Language;
+  readonly page: {
+    readonly about: string;
+    readonly model: string;
+    readonly riser: string;
+    readonly panel: string;
+    readonly views: string;
+    readonly tools: string;
+    readonly otherLanguage: string;
+    readonly dark: string;
+    readonly light: string;
+    readonly copyLink: string;
+    readonly copied: string;
+    readonly copy: string;
+    readonly keys: string;
+    readonly close: string;
+    readonly back: string;
+    readonly more: (count: number) => string;
+    readonly noPicture: string;
+    readonly noShapes: string;
+    readonly picture: string;
+    readonly keyHelp: readonly (readonly [keys: string, what: string])[];
+    readonly skip: string;
+  };
+  readonly summary: {
+    readonly understood: string;
+    readonly fixtures: (count: number) => string;
+    readonly allReach: (count: number) => string;
+    readonly notReach: (count: number) => string;
+    readonly sanitary: (pipes: number, systems: number) => string;
+    readonly leftOut: (count: number, reasons: string) => string;
+    readonly unplaced: (count: number) => string;
+    readonly batteries: (count: number) => string;
+    readonly tooSmall: (pipes: number, causes: number) => string;
+    readonly noneTooSmall: string;
+    readonly unvented: (count: number) => string;
+    readonly nothing: string;
+    readonly share: string;
+  };
+  readonly tabs: Readonly<Record<'findings' | 'batteries' | 'pipes' | 'model', string>>;
+  readonly search: {
+    readonly label: string;
+    readonly hint: string;
+    readonly none: string;
+    readonly found: (count: number) => string;
+  };
+  readonly findings: {
+    readonly all: string;
+    readonly severity: Readonly<Record<'error' | 'warning' | 'note', string>>;
+    readonly undersized: (pipes: number, drawn: string, needed: string) => string;
+    readonly ofBattery: (battery: string) => string;
+    readonly none: string;
+    readonly filter: string;
+    readonly noJudgement: string;
+  };
+  readonly pipe: {
+    readonly one: string;
+    readonly tooSmall: (drawn: string, needed: string) => string;
+    readonly agrees: (size: string) => string;
+    readonly oversized: (drawn: string, needed: string) => string;
+    readonly unknown: (needed: string) => string;
+    readonly provisional: string;
+    readonly why: (size: string) => string;
+    readonly whyNot: string;
+    readonly failsBelow: (size: string, rules: string) => string;
+    readonly nextDemand: (size: string, rule: string) => string;
+    readonly onlyDemand: string;
+    readonly demands: string;
+    readonly demand: string;
+    readonly numbers: string;
+    readonly asks: string;
+    readonly clause: string;
+    readonly governs: string;
+    readonly noSize: string;
+    readonly fromMemory: string;
+    readonly row: (row: string) => string;
+    readonly table: (table: string) => string;
+    readonly noTrail: string;
+    readonly water: (count: number) => string;
+    readonly air: (count: number) => string;
+    readonly noWater: string;
+    readonly noAir: string;
+    readonly load: string;
+    readonly ventLoad: string;
+    readonly facts: string;
+    readonly length: string;
+    readonly developedLength: string;
+    readonly slope: string;
+    readonly slopeGround: Readonly<Record<'geometry' | 'property' | 'answer' | 'unknown', string>>;
+    readonly vertical: string;
+    readonly storey: string;
+    readonly system: string;
+    readonly drawn: string;
+    readonly drawnFrom: (from: string) => string;
+    readonly notDrawn: string;
+    readonly needed: string;
+    readonly next: string;
+    readonly sections: string;
+    readonly section: (from: string, to: string) => string;
+    readonly also: (roles: string) => string;
+    readonly portion: Readonly<Record<'wet' | 'dry' | 'outlet', string>>;
+    readonly isolate: string;
+    readonly showAll: string;
+    readonly battery: string;
+    readonly upstream: string;
+    readonly about: string;
+  };
+  readonly fixture: {
+    readonly one: string;
+    readonly flush: string;
+    readonly air: string;
+    readonly row: string;
+    readonly known: string;
+    readonly trapSize: string;
+    readonly trapAt: string;
+    readonly trapArm: string;
+    readonly armLimit: (limit: string) => string;
+    readonly ventedBy: string;
+    readonly unvented: string;
+    readonly free: string;
+    readonly unidentified: string;
+    readonly path: string;
+  };
+  readonly follow: {
+    readonly water: (name: string) => string;
+    readonly air: (name: string) => string;
+    readonly step: string;
+    readonly stopped: string;
+    readonly reaches: string;
+    readonly sewer: string;
+    readonly parts: Readonly<Record<'arm' | 'through' | 'dry', string>>;
+    readonly profile: string;
+    readonly start: string;
+  };
+  readonly battery: {
+    readonly one: (id: string) => string;
+    readonly reading: string;
+    readonly holds: string;
+    readonly broken: string;
+    readonly chosen: string;
+    readonly why: string;
+    readonly condition: string;
+    readonly none: string;
+    readonly show: string;
+  };
+  readonly model: {
+    readonly file: string;
+    readonly sha256: string;
+    readonly schema: string;
+    readonly unit: string;
+    readonly code: string;
+    readonly edition: string;
+    readonly localTables: string;
+    readonly program: string;
+    readonly settings: string;
+    readonly counts: string;
+    readonly elements: string;
+    readonly adds: string;
+    readonly joints: string;
+    readonly jointLine: (ports: number, geometry: number, widest: string) => string;
+    readonly sewer: string;
+    readonly remarks: string;
+    readonly caution: string;
+    readonly unresolved: string;
+    readonly proof: string;
+    readonly proofHint: string;
+    readonly proofSame: (file: string) => string;
+    readonly proofOther: (file: string) => string;
+    readonly proofReading: string;
+    readonly pipes: string;
+    readonly fittings: string;
+    readonly fixtures: string;
+    readonly terminals: string;
+    readonly leftOut: string;
+  };
+  readonly legend: {
+    readonly colourBy: string;
+    readonly by: Readonly<Record<'verdict' | 'role' | 'system' | 'size' | 'storey' | 'load', string>>;
+    readonly noSystem: string;
+    readonly noSize: string;
+    readonly noStorey: string;
+    readonly loadOver: (from: string, unit: string) => string;
+    readonly loadStep: (from: string, to: string, unit: string) => string;
+    readonly hide: (name: string) => string;
+  };
+  readonly tools: {
+    readonly fit: string;
+    readonly view: string;
+    readonly views: Readonly<Record<'home' | 'top' | 'front' | 'right' | 'back' | 'left' | 'below', string>>;
+    readonly storey: string;
+    readonly wholeBuilding: string;
+    readonly labels: string;
+    readonly context: string;
+    readonly measure: string;
+    readonly measureHint: string;
+    readonly distances: (length: string, plan: string, rise: string) => string;
+  };
+  readonly riser: {
+    readonly name: string;
+    readonly print: string;
+    readonly none: string;
+    readonly which: string;
+    readonly zoomIn: string;
+    readonly zoomOut: string;
+  };
+  readonly verdict: Readonly<Record<'undersized' | 'agrees' | 'oversized' | 'unknown', string>>;
+  readonly roles: Readonly<Record<string, string>>;
+  readonly kinds: Readonly<Record<string, readonly [one: string, many: string]>>;
+  readonly codes: Readonly<Record<string, string>>;
+  readonly rules: Readonly<Record<string, string>>;
+  readonly factWords: Readonly<Record<string, string>>;
+  readonly unit: (unit: string) => string;
+  readonly shortUnit: (unit: string) => string;
+  readonly caution: string;
+  readonly yes: string;
+  readonly no: string;
+  readonly and: string;
+  readonly to: string;
+  readonly level: string;
+}
+
+export const wordsIn = (language: Language): Words => (language === 'fr' ? french : english);
+
+/** An id as its language names it; unknown ids stand as plain words, so nothing is lost when a code adds its own. */
+export const named = (names: Readonly<Record<string, string>>, id: string): string =>
+  Object.hasOwn(names, id) ? (names[id] ?? id) : id.replaceAll('-', ' ');
+
+export function countedKind(words: Words, kind: string | null, count: number): string {
+  const names = kind !== null && Object.hasOwn(words.kinds, kind) ? words.kinds[kind] : undefined;
+  const [one, many] =
+    names ?? (kind === null ? [words.fixture.unidentified, words.fixture.unidentified] : [kind, kind]);
+  return `${count} ${count === 1 ? one : many}`;
+}
+
+export function kindName(words: Words, kind: string | null): string {
+  if (kind === null) return words.fixture.unidentified;
+  return (Object.hasOwn(words.kinds, kind) ? words.kinds[kind]?.[0] : undefined) ?? kind.replaceAll('-', ' ');
+}
+
+/** What a rule is about: its own title, or the language's name for it where it has one. */
+export function ruleName(words: Words, { rule, title }: { readonly rule: string; readonly title: string }): string {
+  return (Object.hasOwn(words.rules, rule) ? words.rules[rule] : undefined) ?? title;
+}

@@ -1,0 +1,3 @@
+export interface Riser {
+  readonly title: string;
+}
