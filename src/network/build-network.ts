@@ -5,7 +5,9 @@ import { assemble } from './assemble.ts';
 import { findDoubles } from './doubles.ts';
 import { fatesOf } from './fates.ts';
 import { gapHabit } from './gap-habit.ts';
-import { joinFixtures, joinRunsThrough, joinTouching } from './join-bodies.ts';
+import { joinFixtures } from './join-fixtures.ts';
+import { joinRunsThrough } from './join-runs-through.ts';
+import { joinTouching } from './join-touching.ts';
 import { isAnsweredOut, type LeftOutReason, leftOutReason } from './left-out-reason.ts';
 import { misfiledByPlace, misfiledByPorts, misfiledFindings } from './misfiled.ts';
 import type { Network } from './network.ts';
@@ -95,8 +97,8 @@ function joinAll(model: Model, identities: readonly Identity[], reasons: Reasons
     proposals = proposeJoins(piping, free, everyEnd, reach);
   }
   settleJoins(proposals, model, piping, welds, reach);
-  joinTouching(model, piping, welds, reach);
   joinRunsThrough(model, piping, welds);
+  joinTouching(model, piping, welds, reach);
   joinFixtures(model, identities, piping, welds, reach);
   return { reasons, keeper, doubles, piping, welds, contradictions, flows, proposals, reach, habit };
 }

@@ -2,6 +2,7 @@ import { boxCentre, grown, nearestInBox } from '../geometry/box.ts';
 import { boxGrid } from '../geometry/box-grid.ts';
 import { directionOf, footOn, type Polyline } from '../geometry/polyline.ts';
 import { type Box, cross, distance, dot, length, scale, subtract, type Vec3 } from '../geometry/vector.ts';
+import { legsOf } from './legs.ts';
 import { endPoint, type Piping } from './piping.ts';
 import { leastSocket, lookAround, type Reach } from './tolerance.ts';
 
@@ -48,16 +49,13 @@ export function proposeJoins(
   allEnds: readonly number[],
   reach: Reach,
 ): Proposal[] {
-  const { pipes, bodies } = piping;
+  if (ends.length === 0) return [];
+  const { bodies } = piping;
   const bodyGrid = boxGrid(bodies.map(({ part, box }) => (takesEnds(part) ? box : null)));
   const views = allEnds.map((node) => endView(piping, node));
   const endGrid = boxGrid(views.map((view) => (view === null ? null : { min: view.at, max: view.at })));
-  const legs: { pipe: number; box: Box }[] = [];
-  pipes.forEach(({ axis, diameter }, pipe) => {
-    for (let leg = 0; axis !== null && leg + 1 < axis.points.length; leg++)
-      legs.push({ pipe, box: grown(boxOf(axis.points[leg]!, axis.points[leg + 1]!), diameter / 2) });
-  });
-  const legGrid = boxGrid(legs.map(({ box }) => box));
+  const legs = legsOf(piping);
+  const legGrid = boxGrid(legs.boxes);
 
   const proposals: Proposal[] = [];
   for (const node of ends) {
@@ -73,7 +71,7 @@ export function proposeJoins(
     });
     const looked = new Set<number>([end.pipe]);
     legGrid.touching(around, (i) => {
-      const { pipe } = legs[i]!;
+      const pipe = legs.pipe[i]!;
       if (looked.has(pipe)) return;
       looked.add(pipe);
       add1(mine, toWall(end, pipe, piping, reach));
@@ -194,8 +192,3 @@ function meetingAlong(end: EndView, axis: Polyline, foot: ReturnType<typeof foot
   if (Math.abs(along) > limit) return foot.at;
   return Math.min(Math.max(foot.at + along, start), stop);
 }
-
-const boxOf = (a: Vec3, b: Vec3): Box => ({
-  min: [Math.min(a[0], b[0]), Math.min(a[1], b[1]), Math.min(a[2], b[2])],
-  max: [Math.max(a[0], b[0]), Math.max(a[1], b[1]), Math.max(a[2], b[2])],
-});

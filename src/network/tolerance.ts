@@ -16,14 +16,17 @@ export interface Reach {
   readonly ofBodies: number;
 }
 
+/** What coordinates can tell, metres: a gap that exceeds its limit by less is held to keep it. */
+const coordinateUncertainty = 0.001;
+
 /** `maxGap`: the user's own limit, or null. `habit`: a gap that this model leaves at many of its ends, else 0. */
 export function reachOf(maxGap: number | null, habit = 0): Reach {
-  const most = maxGap ?? largestReach;
+  const most = (maxGap ?? largestReach) + coordinateUncertainty;
   return {
     ofEnd: (outerDiameter) =>
       maxGap !== null && maxGap > largestReach
-        ? maxGap
-        : Math.min(most, Math.max(leastReach, habit, shareOfDiameter * outerDiameter)),
+        ? most
+        : Math.min(most, Math.max(leastReach, habit, shareOfDiameter * outerDiameter) + coordinateUncertainty),
     ofFixture: most,
     ofBodies: Math.min(most, 0.005),
   };

@@ -34,7 +34,7 @@ const cases: readonly Case[] = [
   },
   {
     name: 'wide pipes bridge 50 mm at most',
-    parts: [pipe('A', '0 0 0 > 2 0 0', { diameter: 0.4 }), pipe('B', '2.051 0 0 > 4 0 0', { diameter: 0.4 })],
+    parts: [pipe('A', '0 0 0 > 2 0 0', { diameter: 0.4 }), pipe('B', '2.052 0 0 > 4 0 0', { diameter: 0.4 })],
     joints: ['A', 'A', 'B', 'B'],
   },
   {
