@@ -1,6 +1,6 @@
 import type { PlumbingCode } from './codes/plumbing-code.ts';
 import type { Finding } from './findings/finding.ts';
-import type { FixtureFacts } from './loads/fixture-loads.ts';
+import { type FixtureFacts, fixtureLoads } from './loads/fixture-loads.ts';
 import { loadPipes } from './loads/load-pipes.ts';
 import type { Scenario } from './loads/loads.ts';
 import { modelledSizes } from './loads/modelled-sizes.ts';
@@ -9,6 +9,7 @@ import { identify } from './model/identify.ts';
 import type { Model } from './model/model.ts';
 import type { NamesTable } from './model/names-table.ts';
 import { buildNetwork } from './network/build-network.ts';
+import { cutAtOutline } from './network/building-outline.ts';
 import { findPaths } from './paths/find-paths.ts';
 import { assignRoles } from './roles/assign-roles.ts';
 import { sizePipes } from './sizes/size-pipes.ts';
@@ -25,7 +26,7 @@ export function run(model: Model, code: PlumbingCode, answers: Answers, names: N
     identities,
     typeof maxGap === 'number' && answers.settings.maxGap !== undefined ? { maxGap } : {},
   );
-  const network = built.value;
+  const network = cutAtOutline(model, identities, built.value, code.sewerBegins);
   const found = findPaths(model, identities, network, answers);
   const paths = found.value;
   const modelled = modelledSizes(model, network, code, answers);
@@ -43,11 +44,9 @@ export function run(model: Model, code: PlumbingCode, answers: Answers, names: N
   return reachVerdicts({ model, identities, network, paths, code, answers, runs, findings: shared });
 }
 
-/** One run where nothing is open; the lightest and the heaviest where details are; a closet too where a kind is. */
-function scenariosFor({ paths, identities, code }: FixtureFacts): Scenario[] {
-  const kinds = paths.fixtures.map(({ element }) => identities[element]!);
-  const anyKind = kinds.some(({ kind }) => kind === null);
-  const anyDetail = kinds.some(({ kind, detail }) => kind !== null && code.fixtures.rowsFor(kind, detail).length > 1);
-  if (anyKind) return ['lightest', 'heaviest', 'closet'];
-  return anyDetail ? ['lightest', 'heaviest'] : ['as-modelled'];
+/** One run where nothing is open; the lightest and the heaviest where a detail is; a closet too where a kind is. */
+function scenariosFor(facts: FixtureFacts): Scenario[] {
+  const { paths, identities } = facts;
+  if (paths.fixtures.some(({ element }) => identities[element]!.kind === null)) return ['lightest', 'heaviest', 'closet'];
+  return fixtureLoads(facts, 'heaviest').every(({ settled }) => settled) ? ['as-modelled'] : ['lightest', 'heaviest'];
 }

@@ -36,6 +36,8 @@ export interface PlumbingCode {
   readonly armLimit: (trap: NominalSize, row: FixtureRow) => number | null;
   /** The rule that frees a fixture's trap of a vent, or null. */
   readonly freeOfVent: (trap: FreeTrapFacts) => { readonly rule: string; readonly clause: string } | null;
+  /** The building sewer begins this far outside the wall, metres. */
+  readonly sewerBegins: number;
   /** Horizontal offsets of a stack shorter than this, metres, count as stack. */
   readonly stackOffset: number;
   readonly batteryLimits: {

@@ -38,6 +38,8 @@ export interface PipeUse {
   readonly drain: DrainRole | null;
   /** Of a stack vent to the sky: what decides whether it must be the large vent of its building drain. */
   readonly mainVent: MainVentUse | null;
+  /** As drawn, the one way to the sky that is as large as every building drain must have. */
+  readonly isMainVent: boolean;
 }
 
 export interface MainVentUse {

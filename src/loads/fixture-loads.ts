@@ -26,12 +26,10 @@ export function fixtureLoads(facts: FixtureFacts, scenario: Scenario): FixtureLo
     const rows = facts.code.fixtures.rowsFor(kind, detail);
     const witnessed = trapWitness(facts, fixture);
     const sized = rows.map((row) => ({ row, ...trapOf(row, witnessed, facts.code.series) }));
-    const chosen = choose(
-      sized.map((one) => ({ ...one, ...one.row.loadAt(one.trap) })),
-      scenario,
-      kind === null,
-    );
-    return { ...chosen, settled: rows.length === 1 };
+    const candidates = sized.map((one) => ({ ...one, ...one.row.loadAt(one.trap) }));
+    const chosen = choose(candidates, scenario, kind === null);
+    const alike = candidates.every((one) => one.load === chosen.load && one.trap === chosen.trap && one.row.closet === chosen.row.closet);
+    return { ...chosen, settled: kind !== null && alike };
   });
 }
 

@@ -32,7 +32,7 @@ export interface FixtureLoad {
   readonly cell: Cell;
   readonly trap: NominalSize;
   readonly trapFrom: 'drawn' | 'property' | 'answer' | 'pipe' | 'assumed';
-  /** Kind and row are beyond doubt. */
+  /** The kind is known, and every row it may be puts in the same load through the same trap. */
   readonly settled: boolean;
 }
 

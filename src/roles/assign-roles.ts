@@ -17,7 +17,7 @@ import { freeTraps } from './feet.ts';
 import { findStacks, type Stack, stackUseAt } from './find-stacks.ts';
 import { floorsOf } from './floors.ts';
 import { formBatteries } from './form-batteries.ts';
-import { mainVentUses } from './main-vent.ts';
+import { mainVentUses, onlyWidestVents } from './main-vent.ts';
 import { outsideBuilding } from './outline.ts';
 import type { Battery, Roles, VentFoot } from './roles.ts';
 import { trapArms } from './trap-arms.ts';
@@ -67,10 +67,18 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
   const tree = ventTree(feet);
   const dry = dryRoles(context, tree, batteries);
   const vents = ventUses(context, tree, dry, batteries);
-  const drains = drainRoles(stackContext, outlet, inStack, stacks, batteries, outsideBuilding(model, network, paths));
+  const drains = drainRoles(
+    stackContext,
+    outlet,
+    inStack,
+    stacks,
+    batteries,
+    outsideBuilding(model, network, paths, code.sewerBegins),
+  );
   const wet = wetUses(context, drains, batteries);
 
   const mainVents = mainVentUses(context, feet, dry);
+  const largest = onlyWidestVents(context, feet);
   const stackUses = new Map<PipeId, StackUse>();
   const offsets = new Map<PipeId, number>();
   for (const stack of stacks) {
@@ -114,6 +122,7 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
       standsIn: own?.standsIn ?? null,
       drain: drain ?? null,
       mainVent: mainVents.get(id) ?? null,
+      isMainVent: largest.has(id),
     };
   });
   return {

@@ -135,6 +135,7 @@ export function stackUseAt({ loads, paths, floors }: StackContext, stack: Stack,
   }
   for (const { members, figure } of loads.groups) {
     const first = members[0]!;
+    if (!inside.has(first)) continue;
     const storey = floors.of(paths.fixtures[first]!);
     if (!members.every((member) => inside.has(member) && floors.of(paths.fixtures[member]!) === storey)) continue;
     const sum = members.reduce((total, member) => total + loads.fixtures[member]!.load, 0);

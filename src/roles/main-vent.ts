@@ -61,3 +61,24 @@ function systemOfPipe({ paths }: BatteryContext, pipe: PipeId): number | null {
   }
   return known.get(pipe) ?? null;
 }
+
+/** Pipes of the single widest way to the sky of each system, as drawn: the others are narrower or of unknown size. */
+export function onlyWidestVents(context: BatteryContext, feet: readonly VentFoot[]): Set<PipeId> {
+  const { code } = context;
+  const best = new Map<number | null, { rank: number; paths: (readonly PipeId[])[] }>();
+  for (const foot of feet) {
+    const width = widestDrawn(context, [foot]);
+    if (width === null) continue;
+    const system = systemOfPipe(context, foot.path[0]!);
+    const rank = code.series.rank(width);
+    const known = best.get(system);
+    if (known === undefined || rank > known.rank) best.set(system, { rank, paths: [foot.path] });
+    else if (rank === known.rank) known.paths.push(foot.path);
+  }
+  const only = new Set<PipeId>();
+  for (const { paths } of best.values()) {
+    const shared = paths[0]!.filter((pipe) => paths.every((path) => path.includes(pipe)));
+    for (const pipe of paths.length === 1 ? paths[0]! : shared) only.add(pipe);
+  }
+  return only;
+}

@@ -1,4 +1,5 @@
-import type { Network } from '../network/network.ts';
+import { planDistance } from '../geometry/vector.ts';
+import type { Network, PipeId } from '../network/network.ts';
 import type { Paths, TrapAir } from '../paths/paths.ts';
 import type { Stream } from '../paths/stream.ts';
 import { spaceTurn } from '../paths/turns.ts';
@@ -33,11 +34,18 @@ function armOf(network: Network, paths: Paths, stream: Stream, { arm, at, armEnd
     };
   }
   const fall = from[2] - to[2];
-  const plan = arm.reduce((sum, pipe) => {
-    const { points } = network.pipes[pipe]!;
-    const [a, b] = [points![0]!, points!.at(-1)!];
-    return sum + Math.hypot(b[0] - a[0], b[1] - a[1]);
-  }, 0);
-  const slope = plan > 0 ? fall / Math.max(plan, 1e-9) : null;
+  const plan = arm.reduce((sum, pipe) => sum + planSpan(network, pipe), 0);
+  const slope = plan > 0 ? fall / plan : null;
   return { length, rise: Math.max(0, -fall), fall: Math.max(0, fall), plan, slope, turn: spaceTurn(network, arm, at) };
+}
+
+/** Length of a pipe in plan from joint to joint: a bend keeps its own way, the halves of the fittings follow its ends. */
+function planSpan(network: Network, pipe: PipeId): number {
+  const { points, ends, reach } = network.pipes[pipe]!;
+  const [from, to] = ends.map((joint) => network.joints[joint]!.at);
+  if (points === null) return 0;
+  if (points.length === 2 && from != null && to != null) return planDistance(from, to);
+  let sum = 0;
+  for (let at = 1; at < points.length; at++) sum += planDistance(points[at - 1]!, points[at]!);
+  return sum + reach[0] + reach[1];
 }

@@ -21,6 +21,7 @@ export function npc(
   | 'rules'
   | 'checks'
   | 'freeOfVent'
+  | 'sewerBegins'
   | 'stackOffset'
   | 'batteryLimits'
   | 'group'
@@ -38,6 +39,7 @@ export function npc(
       const longest = rowAtSize(arms, 'trap', trap, 'smaller', family.series)?.amount('longest').value;
       return closet || typeof longest !== 'number' ? null : longest;
     },
+    sewerBegins: family.number('sewer-start', 'length').value,
     stackOffset: family.number('stack-offset-length', 'length').value,
     batteryLimits: {
       reliefDrainLoad: family.number('relief-drain-load', 'load').value as Load,
