@@ -20,14 +20,25 @@ export function fixtureBody(
   const solids = ((): Solid[] => {
     switch (fixture.word.kind) {
       case 'water-closet': {
-        const bowl: Solid = { bowl: put(-half, half, -0.45, 0.08, floor, top) };
-        const tank: Solid = { box: put(-half, half, 0.1, 0.28, top, floor + height) };
-        return fixture.details.flush === 'valve' ? [bowl] : [bowl, tank];
+        const pan: Solid[] = [
+          { bowl: put(-half, half, -0.45, 0.08, floor, top) },
+          { box: put(-0.11, 0.11, 0, 0.26, floor, top) },
+        ];
+        const tank: Solid = { box: put(-half, half, 0.09, 0.28, top, floor + height) };
+        return fixture.details.flush === 'valve' ? pan : [...pan, tank];
       }
       case 'urinal':
         return fixture.details.style === 'stall'
-          ? [{ box: put(-half, half, -0.22, 0.18, floor, floor + 1.1) }]
-          : [{ bowl: put(-half, half, -0.28, 0.06, top - 0.15, top + height - 0.15) }];
+          ? [
+              { box: put(-half, half, 0.11, 0.18, floor, floor + 1.1) },
+              { box: put(-half, -half + 0.05, -0.22, 0.11, floor, floor + 1.1) },
+              { box: put(half - 0.05, half, -0.22, 0.11, floor, floor + 1.1) },
+              { box: put(-half + 0.05, half - 0.05, -0.22, 0.11, floor, floor + 0.08) },
+            ]
+          : [
+              { bowl: put(-half, half, -0.28, 0.02, top - 0.15, top + 0.1) },
+              { box: put(-half, half, 0.02, 0.06, top - 0.15, top + height - 0.15) },
+            ];
       case 'bathtub':
         return [{ bowl: put(-half, half, -depth + 0.2, 0.2, floor, top) }];
       case 'shower':
@@ -35,7 +46,7 @@ export function fixtureBody(
       case 'floor-drain':
         return [{ box: put(-half, half, -depth / 2, depth / 2, floor - height, floor) }];
       case 'mop-sink':
-        return [{ box: put(-half, half, -depth / 2, depth / 2, floor, top) }];
+        return [{ bowl: put(-half, half, -depth / 2, depth / 2, floor, top) }];
       case 'bidet':
         return [{ bowl: put(-half, half, -depth + 0.15, 0.15, floor, top) }];
       default:
