@@ -61,7 +61,10 @@ export function mediumOfPiping(
   if (bySystems !== null && !bySystems.weak) return bySystems;
   const own = ownMedium(element, names);
   if (own !== null && !own.weak) return own;
-  return mediumOfType(element, names) ?? bySystems ?? own;
+  // A culvert is a rain pipe only where its system is of drainage at large; alone it may be a plain sewer pipe.
+  const byType = mediumOfType(element, names);
+  if (byType !== null && !(byType.weak && bySystems === null)) return byType;
+  return bySystems ?? own;
 }
 
 function ownMedium(element: Element, names: NamesTable): MediumSaid | null {

@@ -15,10 +15,8 @@ const mostWordsOfName = 12;
 /** Texts on what the element is, the most telling first. Each text once: exporters repeat type names. */
 export function textsOf(element: Element, names: NamesTable): readonly ElementText[] {
   const texts: ElementText[] = [];
-  const seen = new Set<string>();
   const add = (from: string, text: string | null): void => {
-    if (text === null || text === '' || seen.has(text)) return;
-    seen.add(text);
+    if (text === null || text === '' || texts.some((known) => known.text === text)) return;
     texts.push({ from, text, isProse: from.endsWith('description') && wordCount(text) > mostWordsOfName });
   };
   add('type name', element.typeName);

@@ -66,7 +66,8 @@ function saidKinds(element: Element, names: NamesTable): readonly Said[] {
   for (const { from, text, isProse } of textsOf(element, names)) {
     const read = names.readThing(text);
     if (read === null || tellsNothing(read) || (from === 'tag' && read.strength > 0 && read.rank < 50)) continue;
-    const strength = isProse ? 0 : read.strength;
+    const isCategory = from.startsWith('property');
+    const strength = isProse || isCategory ? 0 : read.strength;
     said.push({ kind: read.kind, from: quoted(from, text), strength });
   }
   for (const text of element.classifications) {
@@ -114,11 +115,12 @@ function combine(element: Element, type: TypeSaid | null, said: Said | null, nam
   const nameWins =
     type.trust === 'open' || (said.strength === 2 && (type.trust === 'likely' || isAccessory(element, said, names)));
   const [taken, other] = nameWins ? [said, type] : [type, said];
-  const isSilent = type.trust === 'open' || said.strength === 0;
+  const concernsFixtures = [said.kind, type.kind].some((kind) => names.meaning(kind).part === 'fixture');
+  const isSilent = type.trust === 'open' || said.strength === 0 || !concernsFixtures;
   return {
     kind: taken.kind,
     evidence: taken.from,
-    weak: !isSilent,
+    weak: !isSilent || said.strength === 0,
     contradiction: isSilent
       ? null
       : { taken: taken.kind, takenFrom: taken.from, other: other.kind, otherFrom: other.from },

@@ -34,6 +34,8 @@ const headRank = 101;
 /** Bare words such as `soil` and `drain` are enough for a system, never for a thing. */
 const leastPipeRank = 30;
 const pipePhraseRank = 80;
+/** `Pump discharge` and `tank vent` say nothing of what flows by their general noun. */
+const leastSpeakingRank = 60;
 const pipeRankAsThing = 15;
 const notHeads: ReadonlySet<string> = new Set(['type', 'style', 'model', 'mounted', 'mount', 'height', 'typ', 'tipo']);
 
@@ -119,7 +121,10 @@ function asThing(reader: Reader, hit: Hit): Hit[] {
 function readMedium(reader: Reader, words: readonly Word[]): TextReading | null {
   return best(
     reader,
-    hitsIn(reader, words).filter(({ entry }) => speaksOfMedium(meaningOf(reader, entry.kind))),
+    hitsIn(reader, words).filter(
+      ({ entry, rank }) =>
+        speaksOfMedium(meaningOf(reader, entry.kind)) && (entry.kind !== 'not-plumbing' || rank >= leastSpeakingRank),
+    ),
   );
 }
 
