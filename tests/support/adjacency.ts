@@ -22,7 +22,10 @@ export function adjacency(network: Network): ReadonlySet<string> {
 }
 
 /** How much of the truth was found, and how much of what was found is true, from 0 to 1. */
-export function agreement(found: ReadonlySet<string>, truth: ReadonlySet<string>): { recall: number; precision: number } {
+export function agreement(
+  found: ReadonlySet<string>,
+  truth: ReadonlySet<string>,
+): { recall: number; precision: number } {
   const shared = [...found].filter((pair) => truth.has(pair)).length;
   return { recall: truth.size === 0 ? 1 : shared / truth.size, precision: found.size === 0 ? 1 : shared / found.size };
 }
