@@ -25,8 +25,8 @@ export type LeftOutReason =
  */
 export function leftOutReason(element: Element, identity: Identity, model: Model): LeftOutReason | null {
   const { part, medium } = identity;
-  if (part === 'not-drainage') return reasonByClass(element) ?? reasonBySystem(element, model) ?? reasonByKind(element);
   if (medium === 'storm') return 'rainwater';
+  if (part === 'not-drainage') return reasonByClass(element) ?? reasonBySystem(element, model) ?? reasonByKind(element);
   if (part === 'fixture') return null;
   if (medium === 'supply') return reasonBySystem(element, model) ?? 'supply';
   if (medium === 'other') return reasonBySystem(element, model) ?? reasonByClass(element) ?? 'other system';
