@@ -47,6 +47,7 @@ export function run(model: Model, code: PlumbingCode, answers: Answers, names: N
 /** One run where nothing is open; the lightest and the heaviest where a detail is; a closet too where a kind is. */
 function scenariosFor(facts: FixtureFacts): Scenario[] {
   const { paths, identities } = facts;
-  if (paths.fixtures.some(({ element }) => identities[element]!.kind === null)) return ['lightest', 'heaviest', 'closet'];
+  if (paths.fixtures.some(({ element }) => identities[element]!.kind === null))
+    return ['lightest', 'heaviest', 'closet'];
   return fixtureLoads(facts, 'heaviest').every(({ settled }) => settled) ? ['as-modelled'] : ['lightest', 'heaviest'];
 }

@@ -78,7 +78,7 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
   'size-unknown': (f) =>
     f.facts.said === null || f.facts.said === undefined
       ? `${many(f, 'has', 'have')} no size in the model: sized, but nothing to compare.`
-      : `${first(f)} says its size is ${text(f, 'said')} (${text(f, 'from')}), which is no size of the code.`,
+      : `${many(f, 'says its size is', 'say their size is')} ${text(f, 'said')} (${text(f, 'from')}), which is no size of the code.`,
   'size-contradicted': (f) =>
     `${first(f)} is ${text(f, 'size')} by ${text(f, 'from')} but ${text(f, 'other')} by ${text(f, 'otherFrom')}; the first is used.`,
   'smaller-downstream': (f) =>
@@ -148,7 +148,10 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
     `${first(f)} is called one thing by its ${text(f, 'first')} and another by its ${text(f, 'other')}.`,
   'open-end': (f) =>
     `${first(f)} has an open end${has(f, 'gapM') ? `; the nearest thing is ${f.length(num(f, 'gapM'))} away` : ''}.`,
-  'dead-end': (f) => `${first(f)} leads nowhere: no water and no air passes.`,
+  'dead-end': (f) =>
+    f.facts.noFixtures === true
+      ? `${many(f, 'belongs', 'belong')} to drainage that no fixture of the model drains into: nothing to size.`
+      : `${first(f)} leads nowhere: no water and no air passes.`,
   'joint-inferred': (f) =>
     `${text(f, 'joints')} joints without connected ports were found by geometry; the widest gap is ${f.length(num(f, 'gapM'))}.`,
   'joint-contradicted': (f) =>

@@ -28,7 +28,9 @@ export function fixtureLoads(facts: FixtureFacts, scenario: Scenario): FixtureLo
     const sized = rows.map((row) => ({ row, ...trapOf(row, witnessed, facts.code.series) }));
     const candidates = sized.map((one) => ({ ...one, ...one.row.loadAt(one.trap) }));
     const chosen = choose(candidates, scenario, kind === null);
-    const alike = candidates.every((one) => one.load === chosen.load && one.trap === chosen.trap && one.row.closet === chosen.row.closet);
+    const alike = candidates.every(
+      (one) => one.load === chosen.load && one.trap === chosen.trap && one.row.closet === chosen.row.closet,
+    );
     return { ...chosen, settled: kind !== null && alike };
   });
 }

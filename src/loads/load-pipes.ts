@@ -106,24 +106,23 @@ function fixtureOrder({ paths, network }: FixtureFacts): { order: FixtureId[]; f
 function sizeFindings({ network, modelled }: FixtureFacts): Finding[] {
   const findings: Finding[] = [];
   const told = new Set<ElementId>();
-  const unsized: ElementId[] = [];
+  const unread = new Map<string, ElementId[]>();
   for (const { id, element } of network.pipes) {
     if (element === null || told.has(element)) continue;
     told.add(element);
     const { reason, said, from, size, contradictedBy } = modelled[id]!;
-    if (reason === 'no size in the model') unsized.push(element);
-    if (reason === 'size cannot be read') findings.push(finding('size-unknown', [element], { said, from }));
+    if (reason !== null) {
+      const key = JSON.stringify([said, from]);
+      unread.set(key, [...(unread.get(key) ?? []), element]);
+    }
     if (size !== null && contradictedBy !== null) {
-      findings.push(
-        finding('size-contradicted', [element], {
-          size,
-          from,
-          other: contradictedBy.size,
-          otherFrom: contradictedBy.from,
-        }),
-      );
+      const { size: other, from: otherFrom } = contradictedBy;
+      findings.push(finding('size-contradicted', [element], { size, from, other, otherFrom }));
     }
   }
-  if (unsized.length > 0) findings.push(finding('size-unknown', unsized, { said: null, from: null }));
+  for (const [key, elements] of unread) {
+    const [said, from] = JSON.parse(key) as [string | null, string | null];
+    findings.push(finding('size-unknown', elements, { said, from, pipes: elements.length }));
+  }
   return findings;
 }

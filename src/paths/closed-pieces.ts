@@ -18,8 +18,10 @@ export function reportClosedPieces(
   assumed: boolean,
 ): Finding[] {
   const findings: Finding[] = [];
+  const unused: ElementId[] = [];
   for (const { pipes, feet, mouths } of pieces) {
-    if (mouths.length > 0) continue;
+    if (feet.length === 0) unused.push(...elementsOf(network, pipes));
+    if (mouths.length > 0 || feet.length === 0) continue;
     const elements = elementsOf(network, pipes);
     if (elements.length === 0) continue;
     const ends = looseEnds(network, pipes, feet);
@@ -44,6 +46,14 @@ export function reportClosedPieces(
       findings.push(finding('dead-end', elements, { feet: feet.length }));
     }
   }
+  if (unused.length > 0)
+    findings.push(
+      finding(
+        'dead-end',
+        [...new Set(unused)].sort((a, b) => a - b),
+        { noFixtures: true },
+      ),
+    );
   if (assumed) findings.push(finding('open-air-assumed', [], {}));
   return findings;
 }

@@ -60,7 +60,8 @@ function pipe(
   };
 }
 
-const worse: Readonly<Record<Verdict, number>> = { undersized: 3, unknown: 2, oversized: 1, agrees: 0 };
+/** One pipe has one size: a section that could be smaller is no fault where another section needs what is drawn. */
+const worse: Readonly<Record<Verdict, number>> = { undersized: 3, unknown: 2, agrees: 1, oversized: 0 };
 
 /** The section with the largest required size, then load, then the most downstream. */
 function shownSection({ pipes, code, paths }: Outcome, sections: readonly PipeId[]): PipeId {
