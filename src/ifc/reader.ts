@@ -1,4 +1,4 @@
-import { Cursor } from './lines/cursor.ts';
+import { Cursor, textTable } from './lines/cursor.ts';
 import type { LineIndex } from './lines/line-index.ts';
 import { newTextWatch, type TextWatch } from './lines/text.ts';
 
@@ -32,13 +32,14 @@ const mostDangling = 10_000;
 
 export function readerOf(index: LineIndex): Reader {
   const watch = newTextWatch();
+  const texts = textTable(index.bytes);
   const { ids, typeOf, types, find } = index;
   const dangling: Troubles['dangling'] = [];
   return {
     index,
     watch,
     troubles: { dangling, endlessPlacements: [], endlessShapes: [] },
-    cursor: () => new Cursor(index.bytes, watch),
+    cursor: () => new Cursor(index.bytes, watch, texts),
     type: (record) => (record < 0 ? '' : types[typeOf[record]!]!),
     follow: (id, from) => {
       if (id === 0) return -1;

@@ -41,6 +41,7 @@ export function damageFindings({ index, reader }: Source, file: string): Finding
     ids: hashes(endlessPlacements.map((record) => ids[record]!)),
   });
   damaged('endless-shape', endlessShapes.map(at), { ids: hashes(endlessShapes.map((record) => ids[record]!)) });
+  if (watch.tooDeep > 0) damaged('brackets-too-deep', [watch.firstTooDeep], { count: watch.tooDeep });
   const first = (): number => lineNumber(bytes, watch.first);
   if (watch.brokenEscapes > 0) {
     found.push(

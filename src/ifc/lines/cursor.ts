@@ -1,8 +1,9 @@
 import { isDigit } from './end-of-statement.ts';
-import { readNumber } from './number.ts';
+import { type NameTable, nameTable } from './name-table.ts';
+import { readNumber, readNumbers } from './number.ts';
 import { decodeText, newTextWatch, type TextWatch } from './text.ts';
 
-/** Brackets deeper than this are damage: what stands in them is passed over. */
+/** Brackets deeper than this are damage: what stands in them reads as absent. */
 export const deepest = 100;
 
 /**
@@ -13,13 +14,15 @@ export const deepest = 100;
 export class Cursor {
   readonly bytes: Uint8Array;
   readonly watch: TextWatch;
-  /** Brackets deeper than `deepest` that were met. */
-  tooDeep = 0;
+  private readonly texts_: NameTable<null>;
   private pos = 0;
+  private depth = 0;
 
-  constructor(bytes: Uint8Array, watch: TextWatch = newTextWatch()) {
+  /** `texts`: short texts of the file that were decoded before. */
+  constructor(bytes: Uint8Array, watch: TextWatch = newTextWatch(), texts: NameTable<null> = textTable(bytes)) {
     this.bytes = bytes;
     this.watch = watch;
+    this.texts_ = texts;
   }
 
   /** In front of the first argument of the record whose `(` stands at `open`. */
@@ -28,62 +31,103 @@ export class Cursor {
     return this;
   }
 
-  /** Passes over so many arguments. */
+  /** Passes over so many arguments; stays behind the last one where there are fewer. */
   skip(count: number): this {
-    for (let k = 0; k < count; k++) this.pass();
+    const b = this.bytes;
+    const n = b.length;
+    let i = this.pos;
+    let left = count;
+    let depth = 0;
+    for (; left > 0 && i < n; i++) {
+      const c = b[i]!;
+      if (c === 39) i = endOfQuoted(b, i);
+      else if (c === 44) {
+        if (depth === 0) left--;
+      } else if (c === 40) depth++;
+      else if (c === 41) {
+        if (depth === 0) break;
+        depth--;
+      } else if (c === 47) i = pastComment(b, i) - 1;
+      else if (c === 59) break;
+    }
+    this.pos = i;
     return this;
   }
 
   /** True where another argument stands here: not past the last one. */
   get more(): boolean {
-    return this.next() !== 41 && this.pos < this.bytes.length;
+    const c = this.next();
+    return c !== 41 && c !== 59 && this.pos < this.bytes.length;
   }
 
   /** STEP id of a reference; 0 for `$` and anything else. */
   id(): number {
-    if (this.next() !== 35) {
-      this.pass();
-      return 0;
-    }
     const b = this.bytes;
-    let i = this.pos + 1;
+    let i = this.pos;
+    if (b[i] !== 35) {
+      if (this.next() !== 35) {
+        this.skip(1);
+        return 0;
+      }
+      i = this.pos;
+    }
     let id = 0;
-    for (let c = b[i] as number; c >= 48 && c <= 57; c = b[++i] as number) id = id * 10 + c - 48;
+    let c = b[++i]!;
+    for (; c >= 48 && c <= 57; c = b[++i]!) id = id * 10 + c - 48;
     this.pos = i;
-    this.toNext();
+    this.skip(1);
     return id;
   }
 
   /** STEP ids of all references in a list, in order; none for `$`. A lone reference counts as a list of one. */
   ids(): number[] {
-    const found: number[] = [];
     const b = this.bytes;
-    const end = this.endOfArgument();
-    for (let i = this.pos; i < end; i++) {
-      const c = b[i];
+    const n = b.length;
+    const found: number[] = [];
+    let depth = 0;
+    let i = this.pos;
+    for (; i < n; i++) {
+      const c = b[i]!;
       if (c === 35) {
         let id = 0;
-        for (let d = b[++i] as number; d >= 48 && d <= 57; d = b[++i] as number) id = id * 10 + d - 48;
+        let d = b[++i]!;
+        for (; d >= 48 && d <= 57; d = b[++i]!) id = id * 10 + d - 48;
         i--;
         if (id !== 0) found.push(id);
+      } else if (c === 44) {
+        if (depth === 0) break;
+      } else if (c === 40) depth++;
+      else if (c === 41) {
+        if (depth === 0) break;
+        depth--;
       } else if (c === 39) i = endOfQuoted(b, i);
+      else if (c === 47) i = pastComment(b, i) - 1;
+      else if (c === 59) break;
     }
-    this.pos = end;
-    this.toNext();
+    this.pos = b[i] === 44 ? i + 1 : i;
     return found;
   }
 
   /** Text, decoded; null for `$` and what is no text. */
   text(): string | null {
-    const c = this.next();
-    if (c === 39) {
-      const from = this.pos + 1;
-      const end = endOfQuoted(this.bytes, this.pos);
-      this.pos = end + 1;
-      this.toNext();
-      return shortText(this.bytes, from, end) ?? decodeText(this.bytes, from, end, this.watch);
-    }
-    return this.inner(() => this.text());
+    if (this.next() !== 39) return this.inner(readText);
+    const from = this.pos + 1;
+    const end = endOfQuoted(this.bytes, this.pos);
+    this.pos = end + 1;
+    this.skip(1);
+    if (end - from > longestRemembered) return decodeText(this.bytes, from, end, this.watch);
+    const known = this.texts_.at(from, end);
+    return known.isOdd ? decodeText(this.bytes, from, end, this.watch) : known.name;
+  }
+
+  /** GlobalId or another text that stands only once: decoded, and not remembered. */
+  unique(): string | null {
+    if (this.next() !== 39) return this.text();
+    const from = this.pos + 1;
+    const end = endOfQuoted(this.bytes, this.pos);
+    this.pos = end + 1;
+    this.skip(1);
+    return plainText(this.bytes, from, end) ?? decodeText(this.bytes, from, end, this.watch);
   }
 
   /** All texts in a list, in order. */
@@ -98,34 +142,31 @@ export class Cursor {
       i = close;
     }
     this.pos = end;
-    this.toNext();
+    this.skip(1);
     return found;
   }
 
   /** Number, integer or real; null for `$` and what is none. */
   number(): number | null {
     const c = this.next();
-    if (isDigit(c) || c === 45 || c === 43 || c === 46) {
-      if (c === 46 && !isDigit(this.bytes[this.pos + 1])) return this.pass();
-      const value = readNumber(this.bytes, this.pos);
-      this.pass();
-      return Number.isFinite(value) ? value : null;
+    if (!isDigit(c) && c !== 45 && c !== 43 && (c !== 46 || !isDigit(this.bytes[this.pos + 1]))) {
+      return this.inner(readOneNumber);
     }
-    return this.inner(() => this.number());
+    const value = readNumber(this.bytes, this.pos);
+    this.skip(1);
+    return Number.isFinite(value) ? value : null;
   }
 
   /** Adds all numbers of a list, nested lists in order, to `into`; references and texts between them are no numbers. */
   numbers(into: number[]): number[] {
-    const end = this.endOfArgument();
-    numbersBetween(this.bytes, this.pos, end, into);
-    this.pos = end;
-    this.toNext();
+    const end = readNumbers(this.bytes, this.pos, into);
+    this.pos = this.bytes[end] === 44 ? end + 1 : end;
     return into;
   }
 
   /** References and numbers of a list that holds both, such as `(#12,IFCPARAMETERVALUE(0.5))`. */
   mixed(): { readonly ids: number[]; readonly numbers: number[] } {
-    const start = this.offset;
+    const start = this.pos;
     const ids = this.ids();
     this.pos = start;
     return { ids, numbers: this.numbers([]) };
@@ -144,29 +185,29 @@ export class Cursor {
       }
       const from = i;
       while (i < end && b[i] !== 40) i++;
-      const type = (shortText(b, from, i) ?? '').trim().toUpperCase();
-      let close = i;
-      while (close < end && b[close] !== 41) close++;
-      found.push({ type, numbers: numbersBetween(b, i, close, []) });
-      i = close;
+      const numbers: number[] = [];
+      found.push({ type: (plainText(b, from, i) ?? '').trim().toUpperCase(), numbers });
+      i = readNumbers(b, i + 1, numbers);
+      // The list within the brackets has its own: its end is the bracket that closes it.
+      while (i < end && b[i] !== 41) i++;
     }
     this.pos = end;
-    this.toNext();
+    this.skip(1);
     return found;
   }
 
   /** `.X.` as `X` in upper case; null for `$` and anything else. */
   enumeration(): string | null {
-    if (this.next() === 46) {
-      const b = this.bytes;
-      const from = this.pos + 1;
-      let i = from;
-      while (i < b.length && b[i] !== 46 && b[i] !== 44 && b[i] !== 41) i++;
-      this.pos = i + (b[i] === 46 ? 1 : 0);
-      this.toNext();
-      return shortText(b, from, i)?.toUpperCase() ?? null;
-    }
-    return this.inner(() => this.enumeration());
+    if (this.next() !== 46) return this.inner(readEnumeration);
+    const b = this.bytes;
+    const from = this.pos + 1;
+    let i = from;
+    while (i < b.length && b[i] !== 46 && b[i] !== 44 && b[i] !== 41 && b[i] !== 59) i++;
+    this.pos = b[i] === 46 ? i + 1 : i;
+    this.skip(1);
+    if (i - from > longestRemembered) return null;
+    const { name } = this.texts_.at(from, i);
+    return isUpper(name) ? name : name.toUpperCase();
   }
 
   /** `.T.` and `.F.`; null for `.U.`, `$` and anything else. */
@@ -181,26 +222,27 @@ export class Cursor {
     for (;;) {
       const c = b[this.pos] as number;
       if (c <= 32) this.pos++;
-      else if (c === 47 && b[this.pos + 1] === 42) {
-        const end = b.indexOf(47, this.pos + 3);
-        this.pos = end < 0 ? b.length : end + 1;
-      } else return c;
+      else if (c === 47 && b[this.pos + 1] === 42) this.pos = pastComment(b, this.pos);
+      else return c;
     }
   }
 
   /** Class name of a typed value such as `IFCLABEL('x')`, upper case, without moving; null where none stands. */
   typeName(): string | null {
-    const c = this.next();
-    if (!isLetter(c)) return null;
+    if (!isLetter(this.next())) return null;
+    const b = this.bytes;
     let i = this.pos;
-    while (isLetter(this.bytes[i]) || isDigit(this.bytes[i]) || this.bytes[i] === 95) i++;
-    return shortText(this.bytes, this.pos, i)?.toUpperCase() ?? null;
+    while (isLetter(b[i]) || isDigit(b[i]) || b[i] === 95) i++;
+    if (i - this.pos > longestRemembered) return null;
+    const { name } = this.texts_.at(this.pos, i);
+    return isUpper(name) ? name : name.toUpperCase();
   }
 
   /** First byte within the brackets of the typed value that stands here, without moving; 0 where there is none. */
   firstByteWithin(): number {
     const b = this.bytes;
-    let i = this.offset;
+    this.next();
+    let i = this.pos;
     while (i < b.length && b[i] !== 40 && b[i] !== 44 && b[i] !== 41) i++;
     if (b[i] !== 40) return 0;
     for (i++; i < b.length && b[i]! <= 32; ) i++;
@@ -209,9 +251,9 @@ export class Cursor {
 
   /** Moves on past a list; gives a cursor in front of its first entry, null for an empty list. */
   firstOfList(): Cursor | null {
-    const open = this.offset;
-    this.pass();
-    const inside = new Cursor(this.bytes, this.watch).at(open);
+    this.next();
+    const inside = new Cursor(this.bytes, this.watch, this.texts_).at(this.pos);
+    this.skip(1);
     return inside.more ? inside : null;
   }
 
@@ -221,32 +263,22 @@ export class Cursor {
     return this.pos;
   }
 
-  /** Passes over one argument, and reads it as absent. */
-  private pass(): null {
-    this.pos = this.endOfArgument();
-    this.toNext();
-    return null;
-  }
-
   /** What `read` finds within the brackets of a typed value or of a list's first entry; null for anything else. */
-  private inner<T>(read: () => T | null): T | null {
+  private inner<T>(read: (within: Cursor) => T | null): T | null {
     const end = this.endOfArgument();
     let open = this.pos;
     while (open < end && this.bytes[open] !== 40) open++;
-    const within = open < end && end - open > 2 && this.depthBelow < deepest;
     let value: T | null = null;
-    if (within) {
+    if (open < end && end - open > 2 && this.depth < deepest) {
       this.pos = open + 1;
-      this.depthBelow++;
-      value = read();
-      this.depthBelow--;
+      this.depth++;
+      value = read(this);
+      this.depth--;
     }
     this.pos = end;
-    this.toNext();
+    this.skip(1);
     return value;
   }
-
-  private depthBelow = 0;
 
   /** Offset of the `,` or `)` behind the argument that stands here. */
   private endOfArgument(): number {
@@ -254,36 +286,50 @@ export class Cursor {
     const b = this.bytes;
     const n = b.length;
     let depth = 0;
-    let deep = false;
+    let most = 0;
     let i = this.pos;
     for (; i < n; i++) {
       const c = b[i];
       if (c === 39) i = endOfQuoted(b, i);
       else if (c === 40) {
-        if (++depth > deepest) deep = true;
+        if (++depth > most) most = depth;
       } else if (c === 41) {
         if (depth === 0) break;
         depth--;
       } else if (c === 44) {
         if (depth === 0) break;
-      } else if (c === 59) break;
+      } else if (c === 47) i = pastComment(b, i) - 1;
+      else if (c === 59) break;
     }
-    if (deep) this.tooDeep++;
+    if (most > deepest) {
+      this.watch.tooDeep++;
+      if (this.watch.firstTooDeep < 0) this.watch.firstTooDeep = this.pos;
+    }
     return i;
-  }
-
-  /** From behind an argument to the front of the next; stays in front of the closing bracket. */
-  private toNext(): void {
-    const b = this.bytes;
-    let c = b[this.pos] as number;
-    while (c !== 44 && c !== 41 && c !== 59 && this.pos < b.length) c = b[++this.pos] as number;
-    if (c === 44) this.pos++;
   }
 }
 
-const isLetter = (c: number | undefined): boolean => c !== undefined && ((c >= 65 && c <= 90) || (c >= 97 && c <= 122));
+const readText = (within: Cursor): string | null => within.text();
+const readOneNumber = (within: Cursor): number | null => within.number();
+const readEnumeration = (within: Cursor): string | null => within.enumeration();
 
-/** Offset of the quote that ends a string opened at `open`; a doubled quote is part of the string. */
+const isLetter = (c: number | undefined): boolean => c !== undefined && ((c >= 65 && c <= 90) || (c >= 97 && c <= 122));
+const isUpper = (text: string): boolean => {
+  for (let k = 0; k < text.length; k++) if (text.charCodeAt(k) >= 97) return false;
+  return true;
+};
+
+/** Texts longer than this are seldom said twice. */
+const longestRemembered = 64;
+
+/** Short texts of a file by their bytes. A text with escapes is odd: it is decoded each time, so that it is counted. */
+export const textTable = (b: Uint8Array): NameTable<null> =>
+  nameTable(b, (from, to) => {
+    const plain = plainText(b, from, to);
+    return plain === null ? { name: '', meaning: null, isOdd: true } : { name: plain, meaning: null };
+  });
+
+/** Offset of the quote that closes a string opened at `open`; a doubled quote is part of the string. */
 function endOfQuoted(b: Uint8Array, open: number): number {
   const n = b.length;
   for (let i = open + 1; i < n; i++) {
@@ -295,29 +341,22 @@ function endOfQuoted(b: Uint8Array, open: number): number {
   return n;
 }
 
-function numbersBetween(b: Uint8Array, from: number, end: number, into: number[]): number[] {
-  let i = from;
-  while (i < end) {
-    const c = b[i]!;
-    if ((c >= 48 && c <= 57) || c === 45 || c === 43) {
-      into.push(readNumber(b, i));
-      for (i++; i < end; i++) if (b[i] === 44 || b[i] === 41) break;
-    } else if (c === 35 || isLetter(c)) {
-      for (i++; i < end; i++) if (b[i] === 44 || b[i] === 40 || b[i] === 41) break;
-    } else if (c === 39) i = endOfQuoted(b, i) + 1;
-    else i++;
-  }
-  return into;
+/** Past a comment that begins here; past the one byte where none does. */
+function pastComment(b: Uint8Array, at: number): number {
+  if (b[at + 1] !== 42) return at + 1;
+  for (let i = b.indexOf(47, at + 3); i > 0; i = b.indexOf(47, i + 1)) if (b[i - 1] === 42) return i + 1;
+  return b.length;
 }
 
-const codes: number[] = [];
+/** Arrays of character codes by length, filled anew each time: making them costs more than filling them. */
+const codesOfLength: number[][] = Array.from({ length: 65 }, (_, length) => Array<number>(length).fill(0));
+
 /** Plain short texts as they stand; null where something must be decoded or the text is long. */
-function shortText(b: Uint8Array, from: number, to: number): string | null {
-  const length = to - from;
-  if (length > 64) return null;
-  codes.length = length;
-  for (let k = 0; k < length; k++) {
-    const c = b[from + k] as number;
+export function plainText(b: Uint8Array, from: number, to: number): string | null {
+  const codes = codesOfLength[to - from];
+  if (codes === undefined) return null;
+  for (let k = 0; k < codes.length; k++) {
+    const c = b[from + k]!;
     if (c === 92 || c === 39 || c >= 128) return null;
     codes[k] = c;
   }

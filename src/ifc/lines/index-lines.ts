@@ -11,7 +11,7 @@ import { atMark, beginMark, endMark, pastLineEnd } from './own-block.ts';
  * Never throws; what is wrong with the bytes stands in `damage`. Files of 4 GiB and more are refused before this.
  */
 export function indexLines(source: Uint8Array): LineIndex {
-  const bytes = aligned(source);
+  const bytes = new Uint8Array(source.buffer, source.byteOffset, source.length);
   const plain = scan(bytes, false);
   // A missing quote turns text and lines inside out until the end. Then the beginnings of lines decide.
   return finish(bytes, plain.cutOff?.where === 'in a string' ? scan(bytes, true) : plain);
@@ -32,8 +32,8 @@ const sections = new Set(['HEADER', 'DATA', 'ANCHOR', 'REFERENCE', 'SIGNATURE'])
 
 function scan(b: Uint8Array, lineGuided: boolean): Scan {
   const watch: StringWatch = { lineGuided, openStrings: [], oddStrings: [] };
-  const words = new Int32Array(b.buffer, b.byteOffset, b.length >> 2);
-  const records = newRecordList(b);
+  const view = new DataView(b.buffer, b.byteOffset, b.length);
+  const records = newRecordList(view);
   const header = new Map<string, number>();
   const unreadable: number[] = [];
   let section = '';
@@ -48,7 +48,7 @@ function scan(b: Uint8Array, lineGuided: boolean): Scan {
   let i = b[0] === 0xef && b[1] === 0xbb && b[2] === 0xbf ? 3 : 0;
   while (cutOff === null) {
     const before = records.count;
-    i = instances(b, words, i, records, watch);
+    i = instances(b, view, i, records, watch);
     if (section !== 'DATA') outsideData += records.count - before;
     const at = i;
     if (records.cut !== 0) cutOff = { offset: at, where: whereCut(records.cut) };
@@ -67,7 +67,7 @@ function scan(b: Uint8Array, lineGuided: boolean): Scan {
         own = null;
       }
     } else {
-      const end = endOfStatement(b, words, at + 1, watch);
+      const end = endOfStatement(b, view, at + 1, watch);
       if (end < 0) {
         cutOff = { offset: at, where: whereCut(end) };
         break;
@@ -152,12 +152,6 @@ function grouped(typeOf: Uint16Array, types: number): readonly Uint32Array[] {
     next[code] = (next[code] as number) + 1;
   }
   return lists;
-}
-
-/** The same bytes where words of four can be read from their beginning. */
-function aligned(bytes: Uint8Array): Uint8Array {
-  if (bytes.byteOffset % 4 !== 0) return Uint8Array.from(bytes);
-  return new Uint8Array(bytes.buffer, bytes.byteOffset, bytes.length);
 }
 
 function whereCut(reason: number): CutOff {

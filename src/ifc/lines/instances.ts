@@ -15,16 +15,16 @@ export interface RecordList {
   cut: number;
 }
 
-export function newRecordList(b: Uint8Array): RecordList {
+export function newRecordList(view: DataView): RecordList {
   // Instances of real models take 50 to 60 bytes on average; a denser file makes the arrays grow.
-  const capacity = 1024 + Math.floor(b.length / 48);
+  const capacity = 1024 + Math.floor(view.byteLength / 48);
   return {
     count: 0,
     ids: new Uint32Array(capacity),
     typeOf: new Uint16Array(capacity),
     args: new Uint32Array(capacity),
     maxId: 0,
-    table: typeTable(b),
+    table: typeTable(view),
     merged: [],
     idsTooLarge: [],
     cut: 0,
@@ -32,19 +32,20 @@ export function newRecordList(b: Uint8Array): RecordList {
 }
 
 const largestId = 4_294_967_295;
+/** A class name ends within so many bytes; the longest of the schema has 56. */
+const longestName = 240;
+const bracket = 40;
+const brackets = 0x28282828;
+const ones = 0x01010101;
+const high = 0x80808080 | 0;
 
 /**
  * Reads instances one after the other and stops in front of the first thing that is none: a keyword, a comment, an
  * unreadable statement, the end of the bytes, or the instance that the end cuts off (then `list.cut` says so).
  */
-export function instances(
-  b: Uint8Array,
-  words: Int32Array,
-  from: number,
-  list: RecordList,
-  watch: StringWatch,
-): number {
+export function instances(b: Uint8Array, view: DataView, from: number, list: RecordList, watch: StringWatch): number {
   const n = b.length;
+  const lastWord = n - 4;
   const { table } = list;
   let { ids, typeOf, args, count, maxId } = list;
   let at = from;
@@ -67,18 +68,36 @@ export function instances(
     if (b[i] !== 61) break;
     i++;
     if ((b[i] as number) <= 32 || b[i] === 47) i = pastBlanks(b, i);
+
+    // The class name, four bytes at a time, up to its bracket.
     const name = i;
     let hash = 0;
-    c = b[i] as number;
-    while ((c >= 65 && c <= 90) || (c >= 97 && c <= 122) || (c >= 48 && c <= 57) || c === 95) {
-      hash = (Math.imul(hash, 31) + (c >= 97 ? c - 32 : c)) | 0;
-      c = b[++i] as number;
+    let word = 0;
+    let mark = 0;
+    while (i <= lastWord && i - name < longestName) {
+      word = view.getInt32(i, true);
+      const p = word ^ brackets;
+      mark = (p - ones) & ~p & high;
+      if (mark !== 0) break;
+      hash = Math.imul(hash ^ word, 0x9e3779b1);
+      i += 4;
     }
-    const nameEnd = i;
-    if (c !== 40) i = pastBlanks(b, i);
-    if (b[i] !== 40) break;
+    if (mark === 0) {
+      // No bracket: nearly always no instance either, but the last few bytes of a file do not fill a word.
+      while (i < n && b[i] !== bracket && i - name < longestName) i++;
+      if (b[i] !== bracket) break;
+      word = tailBefore(b, name, i);
+    } else {
+      const before = (31 - Math.clz32(mark & -mark)) >> 3;
+      word = before === 0 ? 0 : word & ((1 << (before << 3)) - 1);
+      i += before;
+    }
+    hash = Math.imul(hash ^ word, 0x9e3779b1);
+    const type = table.code(hash, name, i, word);
+    if (type < 0) break;
+
     const opened = watch.openStrings.length;
-    const end = endOfStatement(b, words, i + 1, watch);
+    const end = endOfStatement(b, view, i + 1, watch);
     if (end < 0) {
       list.cut = end;
       break;
@@ -91,7 +110,7 @@ export function instances(
         args = grown(args, new Uint32Array(count * 2));
       }
       ids[count] = id;
-      typeOf[count] = table.code(hash, name, nameEnd);
+      typeOf[count] = type;
       args[count] = i;
       count++;
       if (id > maxId) maxId = id;
@@ -109,6 +128,13 @@ export function instances(
 function grown<T extends Uint32Array | Uint16Array>(old: T, larger: T): T {
   larger.set(old);
   return larger;
+}
+
+/** Bytes after the last whole word of a name, little-endian. */
+function tailBefore(b: Uint8Array, name: number, end: number): number {
+  let tail = 0;
+  for (let i = end - ((end - name) & 3), shift = 0; i < end; i++, shift += 8) tail |= (b[i] as number) << shift;
+  return tail;
 }
 
 function pastBlanks(b: Uint8Array, from: number): number {

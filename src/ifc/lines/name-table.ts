@@ -7,13 +7,15 @@ export interface NameTable<T> {
 export interface NamedMeaning<T> {
   readonly name: string;
   readonly meaning: T;
+  /** True where the name cannot be taken as remembered. */
+  readonly isOdd?: boolean;
 }
 
 const slots = 1 << 12;
 /** A file with more distinct names than this has them read anew each time. */
 const mostNames = 40_000;
 
-export function nameTable<T>(b: Uint8Array, read: (from: number, to: number) => NamedMeaning<T>): NameTable<T> {
+export function nameTable<T>(b: Uint8Array, learn: (from: number, to: number) => NamedMeaning<T>): NameTable<T> {
   interface Known extends NamedMeaning<T> {
     readonly from: number;
     readonly length: number;
@@ -33,9 +35,10 @@ export function nameTable<T>(b: Uint8Array, read: (from: number, to: number) => 
         while (k < length && b[known.from + k] === b[from + k]) k++;
         if (k === length) return known;
       }
-      const { name, meaning } = read(from, to);
-      if (++count > mostNames) return { name, meaning };
-      const fresh: Known = { name, meaning, from, length, next: first[slot] ?? null };
+      const read = learn(from, to);
+      if (++count > mostNames) return read;
+      const { name, meaning, isOdd = false } = read;
+      const fresh: Known = { name, meaning, isOdd, from, length, next: first[slot] ?? null };
       first[slot] = fresh;
       return fresh;
     },

@@ -6,9 +6,19 @@ export interface TextWatch {
   notUtf8: number;
   /** Offset of the first such text; -1 while there is none. */
   first: number;
+  /** Arguments whose brackets go deeper than is read. */
+  tooDeep: number;
+  /** Offset of the first of them; -1 while there is none. */
+  firstTooDeep: number;
 }
 
-export const newTextWatch = (): TextWatch => ({ brokenEscapes: 0, notUtf8: 0, first: -1 });
+export const newTextWatch = (): TextWatch => ({
+  brokenEscapes: 0,
+  notUtf8: 0,
+  first: -1,
+  tooDeep: 0,
+  firstTooDeep: -1,
+});
 
 const backslash = 92;
 const quote = 39;

@@ -2,41 +2,72 @@
 export interface TypeTable {
   /** By code, upper case. Code 0 is nobody's; the empty name of a complex instance has the name `(`. */
   readonly names: readonly string[];
-  /** Code of the name that stands at [from, to) and whose upper-case bytes give this hash. */
-  readonly code: (hash: number, from: number, to: number) => number;
+  /**
+   * Code of the name that stands at [from, to), or -1 where that is no name. `hash` is any number that the same bytes
+   * always give; `tail` holds the bytes after the last whole word of four, little-endian.
+   */
+  readonly code: (hash: number, from: number, to: number, tail: number) => number;
+}
+
+/** One way to spell a class name: letters may be small, blanks may follow. */
+interface Spelling {
+  readonly words: readonly number[];
+  readonly length: number;
+  readonly code: number;
+  readonly next: Spelling | null;
 }
 
 /** More classes than this are no IFC: the rest share code 0 and are never asked for. */
 const mostTypes = 65_000;
+const mostSpellings = 100_000;
 const slots = 1 << 14;
 
-export function typeTable(b: Uint8Array): TypeTable {
+export function typeTable(view: DataView): TypeTable {
   const names: string[] = [''];
-  const spelled: Uint8Array[] = [new Uint8Array(0)];
-  const first = new Uint16Array(slots);
-  const next: number[] = [0];
+  const codes = new Map<string, number>();
+  const table: (Spelling | null)[] = Array<Spelling | null>(slots).fill(null);
+  let spellings = 0;
 
-  const isAt = (code: number, from: number, to: number): boolean => {
-    const name = spelled[code] as Uint8Array;
-    if (name.length !== to - from) return false;
-    for (let i = 0; i < name.length; i++) {
-      const c = b[from + i] as number;
-      if (name[i] !== c && name[i] !== c - 32) return false;
+  const learn = (slot: number, from: number, to: number, tail: number): number => {
+    const text = textBetween(view, from, to)
+      .replace(/\/\*.*?\*\//gs, ' ')
+      .trim()
+      .toUpperCase();
+    if (!/^[A-Z0-9_]*$/.test(text)) return -1;
+    const name = text === '' ? '(' : text;
+    let code = codes.get(name);
+    if (code === undefined) {
+      if (names.length === mostTypes) return 0;
+      code = names.length;
+      names.push(name);
+      codes.set(name, code);
     }
-    return true;
+    if (spellings++ < mostSpellings) {
+      const words: number[] = [];
+      for (let i = from; i + 4 <= to; i += 4) words.push(view.getInt32(i, true));
+      words.push(tail);
+      table[slot] = { words, length: to - from, code, next: table[slot] ?? null };
+    }
+    return code;
   };
-  const code = (hash: number, from: number, to: number): number => {
-    const slot = (hash ^ (hash >>> 14)) & (slots - 1);
-    for (let known = first[slot] as number; known !== 0; known = next[known] as number) {
-      if (isAt(known, from, to)) return known;
+  const code = (hash: number, from: number, to: number, tail: number): number => {
+    const slot = (hash ^ (hash >>> 15)) & (slots - 1);
+    const length = to - from;
+    const whole = length >> 2;
+    for (let known = table[slot] ?? null; known !== null; known = known.next) {
+      if (known.length !== length) continue;
+      const { words } = known;
+      let k = 0;
+      while (k < whole && words[k] === view.getInt32(from + (k << 2), true)) k++;
+      if (k === whole && words[k] === tail) return known.code;
     }
-    if (names.length === mostTypes) return 0;
-    const name = String.fromCharCode(...b.subarray(from, Math.min(to, from + 200))).toUpperCase();
-    names.push(to === from ? '(' : name);
-    spelled.push(Uint8Array.from(b.subarray(from, to), (c) => (c >= 97 ? c - 32 : c)));
-    next.push(first[slot] as number);
-    first[slot] = names.length - 1;
-    return names.length - 1;
+    return learn(slot, from, to, tail);
   };
   return { names, code };
+}
+
+function textBetween(view: DataView, from: number, to: number): string {
+  let text = '';
+  for (let i = from; i < to; i++) text += String.fromCharCode(view.getUint8(i));
+  return text;
 }

@@ -38,9 +38,9 @@ export function strayRecords(index: LineIndex, digest: Digest): readonly number[
 /** From the `#` of a record past its `;` and the line end behind it. */
 export function extentOf(index: LineIndex, record: number): { readonly from: number; readonly to: number } {
   const { bytes } = index;
-  const words = new Int32Array(bytes.buffer, bytes.byteOffset, bytes.length >> 2);
+  const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.length);
   const watch = { lineGuided: false, openStrings: [], oddStrings: [] };
-  const end = endOfStatement(bytes, words, (index.args[record] ?? 0) + 1, watch);
+  const end = endOfStatement(bytes, view, (index.args[record] ?? 0) + 1, watch);
   const from = startOf(index, record);
   return { from, to: end < 0 || bytes[end] !== semicolon ? Math.max(end, from) : pastLineEnd(bytes, end + 1) };
 }
