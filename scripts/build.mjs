@@ -2,7 +2,8 @@
 import { spawnSync } from 'node:child_process';
 import { chmodSync, copyFileSync, existsSync, mkdirSync, readdirSync, renameSync, rmSync } from 'node:fs';
 import { dirname, join } from 'node:path';
-import { fileURLToPath, pathToFileURL } from 'node:url';
+import { fileURLToPath } from 'node:url';
+import { buildPage } from './build-page.mjs';
 
 const root = fileURLToPath(new URL('..', import.meta.url));
 const src = join(root, 'src');
@@ -22,9 +23,14 @@ for (const name of readdirSync(src, { recursive: true, encoding: 'utf8' })) {
   copyFileSync(join(src, name), join(dist, name));
 }
 
-// The page is one script for the browser; its own folder knows how it is bundled.
-const page = join(root, 'scripts/build-page.mjs');
-if (existsSync(page)) await (await import(pathToFileURL(page).href)).buildPage({ root, dist });
+// The page is one script for the browser; its own file knows how it is bundled.
+const page = await buildPage({ root, dist }).then(
+  () => true,
+  (error) => {
+    console.error(error);
+    return false;
+  },
+);
 
 const main = join(dist, 'cli/main.js');
 if (existsSync(main)) chmodSync(main, 0o755);
@@ -33,4 +39,4 @@ const old = `${target}.${process.pid}.old.tmp`;
 if (existsSync(target)) renameSync(target, old);
 renameSync(dist, target);
 rmSync(old, { recursive: true, force: true });
-process.exitCode = types.status ?? 1;
+process.exitCode = types.status === 0 && page ? 0 : 1;

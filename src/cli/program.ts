@@ -17,7 +17,6 @@ export function program(): Command {
     .showHelpAfterError('(--help shows what can be asked)')
     .exitOverride()
     .configureHelp({ sortSubcommands: false, helpWidth: 100 });
-  command.action(() => command.help({ error: true }));
   for (const add of [addCheck, addSize, addView, addSurvey, addExplain, addCodes]) add(command);
   command.addHelpText('after', exitHelp);
   return command;

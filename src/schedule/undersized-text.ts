@@ -8,7 +8,7 @@ import { counted, countedKinds, plainWords } from './trade-words.ts';
 /** Undersized pipes that share a cause: the rule, and the battery, stack or pipe that it comes from. */
 export interface UndersizedGroup {
   readonly cause: string;
-  /** In the order of the findings. */
+  /** In the order of the result. */
   readonly pipes: readonly ResultPipe[];
   /** The pipe where the cause lies: its own demand governs, not one that a pipe before it hands on. */
   readonly root: ResultPipe;
@@ -17,15 +17,15 @@ export interface UndersizedGroup {
   readonly battery: string | null;
 }
 
-/** Groups of the undersized pipes: most pipes first, then by the first finding. */
+/** Groups of the undersized pipes: most pipes first, then by the first pipe. */
 export function undersizedGroups({ findings, pipes }: Result): UndersizedGroup[] {
-  const byId = new Map(pipes.map((pipe) => [pipe.globalId, pipe]));
+  const causes = new Map(
+    findings.flatMap(({ code, about, facts }) => (code === 'undersized' ? [[about[0], String(facts.cause)]] : [])),
+  );
   const groups = new Map<string, ResultPipe[]>();
-  for (const { code, about, facts } of findings) {
-    const pipe = byId.get(about[0] ?? '');
-    if (code !== 'undersized' || pipe === undefined) continue;
-    const cause = typeof facts.cause === 'string' ? facts.cause : 'too small';
-    groups.set(cause, [...(groups.get(cause) ?? []), pipe]);
+  for (const pipe of pipes) {
+    const cause = causes.get(pipe.globalId);
+    if (cause !== undefined) groups.set(cause, [...(groups.get(cause) ?? []), pipe]);
   }
   return [...groups]
     .flatMap(([cause, group]) => {

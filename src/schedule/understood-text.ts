@@ -57,7 +57,7 @@ export function understoodText(result: Result): TextLine[] {
 /** File, schema, unit, code; a model without drainage says so here, on the first line. */
 export function titleText({ model, models, code, fixtures, pipes, counts }: Result): TextLine[] {
   const files = (models ?? [model]).map(({ file }) => shownText(file));
-  const about = `${shownText(model.schema)}, ${shownText(model.lengthUnit)}; ${code.title} ${code.edition} (${code.id})`;
+  const about = `${shownText(model.schema)}, ${shownText(model.lengthUnit).toLowerCase()}; ${code.title} ${code.edition} (${code.id})`;
   const local = code.localTables === undefined ? '' : `, with local tables ${listed(code.localTables.map(shownText))}`;
   if (fixtures.length > 0 || pipes.length > 0) return heading(`${listed(files)}: ${about}${local}`);
   return [
@@ -115,15 +115,19 @@ function batteryText(
   ];
 }
 
-/** `relief vent (2.5.3.1.)`: the conditions that a reading breaks, each with its clause; only the first with its facts. */
+/** `relief vent (fixtures 9; 2.5.3.1.)`: the conditions that a reading breaks, each once. */
 export function conditionsText(broken: readonly BrokenCondition[], unit: string, names: ElementNames): string {
   if (broken.length === 0) return 'not found';
-  return broken
-    .map(({ title, clause, facts }, place) => {
-      const numbers = place === 0 ? factsText(facts, unit, names.short) : '';
-      return `${lowerFirst(shownText(title))}${numbers === '' ? '' : `, ${numbers}`} (${clause})`;
-    })
-    .join(', ');
+  const texts = broken.map(({ title, clause, facts }) => {
+    const numbers = factsText(facts, unit, names.short);
+    return `${lowerFirst(shownText(title))} (${numbers === '' ? '' : `${numbers}; `}${clause})`;
+  });
+  const each = [...new Set(texts)];
+  return each.length <= mostConditions
+    ? each.join(', ')
+    : `${each.slice(0, mostConditions).join(', ')} and ${each.length - mostConditions} more`;
 }
+
+const mostConditions = 3;
 
 const lowerFirst = (text: string): string => text.charAt(0).toLowerCase() + text.slice(1);
