@@ -41,7 +41,7 @@ export function draftFixture(sketch: Sketch, fixture: SketchFixture, joint: Draf
   const facts: PropertyFact[] = [];
   const say = (set: string | null, name: string, value: PropertyFact['value'], measure: PropertyFact['measure']) =>
     facts.push({ set: set ?? 'Plumbing', name, value, measure, from: 'own' });
-  const styles: Record<string, string> = { stall: 'STALL', washout: 'WALLHUNG', wall: 'WALLHUNG' };
+  const styles: Record<string, string> = { stall: 'STALL', washout: 'WALLHUNG', wall: 'WALLHUNG', siphon: 'WALLHUNG' };
   const style = word.kind === 'urinal' && details.style !== null ? styles[details.style] : undefined;
   if (style !== undefined) say(word.set, 'UrinalType', style, 'text');
   if (word.kind === 'water-closet') say(word.set, 'ToiletPanType', 'WASHDOWN', 'text');

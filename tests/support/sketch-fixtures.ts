@@ -122,6 +122,7 @@ export function typeNameOf(word: FixtureWord, { flush, style, heads, emergency }
     stall: 'Stall urinal',
     washout: 'Wall urinal, washout',
     wall: 'Wall urinal',
+    siphon: 'Wall urinal, siphon jet',
     pedestal: 'Pedestal urinal',
   };
   if (word.kind === 'urinal') return styled[style ?? ''] ?? word.type;

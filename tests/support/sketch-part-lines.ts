@@ -19,6 +19,9 @@ const partWords: readonly string[] = [
   'roof-drain',
 ] satisfies PartWord[];
 
+/** `wall` says no more than that it hangs there; `washout` and `siphon` hang there too. */
+const urinalStyles: readonly string[] = ['stall', 'washout', 'siphon', 'wall', 'pedestal'];
+
 const fixtureWord = (keyword: string): FixtureWord | undefined => fixtureWords[alias[keyword] ?? keyword];
 
 export const isPartWord = (keyword: string | undefined): boolean =>
@@ -41,7 +44,7 @@ export function readFixture(cursor: Cursor, keyword: string, name: string): Sket
   while (cursor.took(',')) {
     const detail = cursor.take('detail');
     if (detail === 'tank' || detail === 'valve') flush = detail;
-    else if (detail === 'stall' || detail === 'washout' || detail === 'wall' || detail === 'pedestal') style = detail;
+    else if (urinalStyles.includes(detail)) style = detail;
     else if (detail === 'style') style = cursor.text('style');
     else if (detail === 'heads') heads = cursor.number('number of heads');
     else if (detail === 'emergency') emergency = true;
