@@ -9,7 +9,7 @@ import { identify } from './model/identify.ts';
 import type { Model } from './model/model.ts';
 import type { NamesTable } from './model/names-table.ts';
 import { buildNetwork } from './network/build-network.ts';
-import { cutAtOutline } from './network/building-outline.ts';
+import { buildingOutline, cutAtOutline } from './network/building-outline.ts';
 import { findPaths } from './paths/find-paths.ts';
 import { assignRoles } from './roles/assign-roles.ts';
 import { sizePipes } from './sizes/size-pipes.ts';
@@ -26,7 +26,8 @@ export function run(model: Model, code: PlumbingCode, answers: Answers, names: N
     identities,
     typeof maxGap === 'number' && answers.settings.maxGap !== undefined ? { maxGap } : {},
   );
-  const network = cutAtOutline(model, identities, built.value, code.sewerBegins);
+  const outline = buildingOutline(model);
+  const network = cutAtOutline(outline, identities, built.value, code.sewerBegins);
   const found = findPaths(model, identities, network, answers);
   const paths = found.value;
   const modelled = modelledSizes(model, network, code, answers);
@@ -37,7 +38,7 @@ export function run(model: Model, code: PlumbingCode, answers: Answers, names: N
   const scenarios = scenariosFor(facts);
   for (const scenario of scenarios) {
     const loads = loadPipes(facts, scenario);
-    const roles = assignRoles({ model, identities, network, paths, loads: loads.value, code, answers });
+    const roles = assignRoles({ model, identities, network, paths, loads: loads.value, code, answers, outline });
     runs.push({ loads: loads.value, roles: roles.value, sizes: sizePipes(roles.value.uses, code) });
     if (scenario === scenarios.at(-1)) shared.push(...loads.findings, ...roles.findings);
   }

@@ -24,11 +24,10 @@ const crossOf = (o: PlanPoint, a: PlanPoint, b: PlanPoint): number =>
 /** Distance in plan from a convex outline, metres; 0 inside. */
 export function distanceFromHull(hull: readonly PlanPoint[], at: Vec3 | PlanPoint): number {
   const point: PlanPoint = [at[0], at[1]];
+  if (hull.every((a, index) => crossOf(a, hull[(index + 1) % hull.length]!, point) >= 0)) return 0;
   let nearest = Number.POSITIVE_INFINITY;
-  let inside = true;
   hull.forEach((a, index) => {
     const b = hull[(index + 1) % hull.length]!;
-    if (crossOf(a, b, point) < 0) inside = false;
     const [dx, dy] = [b[0] - a[0], b[1] - a[1]];
     const along = Math.min(
       1,
@@ -36,5 +35,5 @@ export function distanceFromHull(hull: readonly PlanPoint[], at: Vec3 | PlanPoin
     );
     nearest = Math.min(nearest, Math.hypot(point[0] - a[0] - dx * along, point[1] - a[1] - dy * along));
   });
-  return inside ? 0 : nearest;
+  return nearest;
 }

@@ -51,7 +51,22 @@ export function readSize(
 const rankOf = ({ ground, means }: SizeWitness): number =>
   trustOrder.indexOf(ground) * 4 + ['nominal', 'unknown', 'outer', 'inner'].indexOf(means);
 
+/** The same few lengths and texts come back thousands of times in one model. */
+const known = new WeakMap<SizeSeries, Map<string, NominalSize | null>>();
+
 function sizeOf(witness: SizeWitness, series: SizeSeries, dimensions: PipeDimensions): NominalSize | null {
+  const sizes = known.get(series) ?? new Map<string, NominalSize | null>();
+  known.set(series, sizes);
+  const key = `${witness.means} ${witness.mm} ${witness.text}`;
+  let size = sizes.get(key);
+  if (size === undefined) {
+    size = witnessedSize(witness, series, dimensions);
+    sizes.set(key, size);
+  }
+  return size;
+}
+
+function witnessedSize(witness: SizeWitness, series: SizeSeries, dimensions: PipeDimensions): NominalSize | null {
   if (witness.means === 'inner') return null;
   const said =
     witness.mm !== null

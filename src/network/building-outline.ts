@@ -25,12 +25,17 @@ function cornersOf({ outline, box }: Fabric): PlanPoint[] {
 }
 
 /** Level pipes that leave the building are cut where the building sewer begins: `beyond` metres past the outline. */
-export function cutAtOutline(model: Model, identities: readonly Identity[], network: Network, beyond: number): Network {
-  const outline = buildingOutline(model);
+export function cutAtOutline(
+  outline: readonly PlanPoint[] | null,
+  identities: readonly Identity[],
+  network: Network,
+  beyond: number,
+): Network {
   if (outline === null) return network;
   const cuts: Cut[] = [];
   for (const { id, element, points } of network.pipes) {
     if (element === null || points === null || identities[element]?.medium === 'vent') continue;
+    if (points.every((point) => distanceFromHull(outline, point) === 0)) continue;
     const away = points.map((point) => distanceFromHull(outline, point) - beyond);
     for (let at = 1; at < points.length; at++) {
       const [a, b] = [away[at - 1]!, away[at]!];

@@ -6,7 +6,6 @@ import { cheapestWays } from './cheapest-ways.ts';
 import { reportClosedPieces } from './closed-pieces.ts';
 import { openAirAt } from './open-air.ts';
 import type { DryPiece } from './paths.ts';
-import { pipeRanks } from './water.ts';
 
 export interface Dry {
   readonly pieces: readonly DryPiece[];
@@ -27,6 +26,7 @@ export function dryPieces(
   identities: readonly Identity[],
   network: Network,
   wet: readonly boolean[],
+  rank: Int32Array,
   findings: Finding[],
 ): Dry {
   const { joints, pipes } = network;
@@ -35,7 +35,6 @@ export function dryPieces(
   const { pieces, pieceOf } = collectPieces(network, wet, isWetJoint, sky);
   findings.push(...reportClosedPieces(network, identities, pieces, sky.assumed()));
 
-  const rank = pipeRanks(model, network);
   // One search serves all pieces: their dry joints are apart, and wet joints close the way.
   const search = cheapestWays(
     network,

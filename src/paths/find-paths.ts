@@ -8,7 +8,7 @@ import { dryPieces } from './dry-pieces.ts';
 import type { Paths } from './paths.ts';
 import { orientations, pipeSlopes } from './slopes.ts';
 import { seatTraps } from './traps.ts';
-import { waterPaths } from './water.ts';
+import { pipeRanks, waterPaths } from './water.ts';
 
 /**
  * Water from every fixture to its sewer end, and air from every trap to the open sky.
@@ -21,11 +21,12 @@ export function findPaths(
   answers: Answers,
 ): WithFindings<Paths> {
   const findings: Finding[] = [];
+  const rank = pipeRanks(model, network);
   const vertical = orientations(model, network);
-  const water = waterPaths(model, identities, network, answers, findings);
+  const water = waterPaths(model, identities, network, answers, rank, findings);
   const slopes = pipeSlopes(model, network, water, vertical, answers, findings);
   const seats = seatTraps(model, identities, network, water, vertical);
-  const dry = dryPieces(model, identities, network, water.wet, findings);
+  const dry = dryPieces(model, identities, network, water.wet, rank, findings);
   const traps = ventTraps(network, water, dry, vertical, seats);
   return {
     value: {

@@ -41,10 +41,10 @@ export function waterPaths(
   identities: readonly Identity[],
   network: Network,
   answers: Answers,
+  rank: Int32Array,
   findings: Finding[],
 ): Water {
   const { pipes, joints } = network;
-  const rank = pipeRanks(model, network);
   const drainers = drainFixtures(identities, network);
   const next: (PipeId | null)[] = pipes.map(() => null);
   const downJoint: (JointId | null)[] = pipes.map(() => null);

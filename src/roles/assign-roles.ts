@@ -2,6 +2,7 @@ import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import type { Role } from '../codes/role.ts';
 import type { PipeUse, Reading, StackUse } from '../codes/use.ts';
 import { type Finding, finding, type WithFindings } from '../findings/finding.ts';
+import type { PlanPoint } from '../geometry/plan-outline.ts';
 import type { Loads } from '../loads/loads.ts';
 import { keyMatches } from '../model/answer-keys.ts';
 import type { Answers } from '../model/answers.ts';
@@ -33,11 +34,13 @@ export interface RoleFacts {
   readonly loads: Loads;
   readonly code: PlumbingCode;
   readonly answers: Answers;
+  /** Of the building in plan; null where the model draws none. */
+  readonly outline: readonly PlanPoint[] | null;
 }
 
 /** What each pipe is, who uses it, and how each row of fixtures is read, in one scenario. */
 export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
-  const { model, identities, network, paths, loads, code } = facts;
+  const { model, identities, network, paths, loads, code, outline } = facts;
   const findings: Finding[] = [];
   const stream = streamOf(network, paths);
   const floors = floorsOf(model, network, paths.fixtures);
@@ -73,7 +76,7 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
     inStack,
     stacks,
     batteries,
-    outsideBuilding(model, network, paths, code.sewerBegins),
+    outsideBuilding(outline, network, paths, code.sewerBegins),
   );
   const wet = wetUses(context, drains, batteries);
 

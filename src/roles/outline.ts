@@ -1,6 +1,4 @@
-import { distanceFromHull } from '../geometry/plan-outline.ts';
-import type { Model } from '../model/model.ts';
-import { buildingOutline } from '../network/building-outline.ts';
+import { distanceFromHull, type PlanPoint } from '../geometry/plan-outline.ts';
 import type { Network } from '../network/network.ts';
 import type { Paths } from '../paths/paths.ts';
 
@@ -8,9 +6,13 @@ import type { Paths } from '../paths/paths.ts';
 const coordinate = 0.005;
 
 /** Wet pipes past the point where the building sewer begins, and everything downstream of one. By pipe id. */
-export function outsideBuilding(model: Model, network: Network, paths: Paths, sewerBegins: number): boolean[] {
+export function outsideBuilding(
+  outline: readonly PlanPoint[] | null,
+  network: Network,
+  paths: Paths,
+  sewerBegins: number,
+): boolean[] {
   const outside = network.pipes.map(() => false);
-  const outline = buildingOutline(model);
   if (outline === null) return outside;
   for (const pipe of paths.inFlowOrder) {
     const { points, ends } = network.pipes[pipe]!;
