@@ -1,6 +1,7 @@
 import { readdirSync, readFileSync } from 'node:fs';
 import { join, relative } from 'node:path';
 import { plumbingCode } from '../../src/codes/index.ts';
+import type { PlumbingCode } from '../../src/codes/plumbing-code.ts';
 import { type Answers, noAnswers } from '../../src/model/answers.ts';
 import type { Model } from '../../src/model/model.ts';
 import { readNamesTable } from '../../src/model/read-names-table.ts';
@@ -44,12 +45,22 @@ export interface SketchRun {
   findings(code?: string): readonly ResultFinding[];
 }
 
+const codes = new Map<string, PlumbingCode>();
+
+/** A code reads a score of files: one reading serves all sketches. */
+export function codeOf(id: string, settings: Answers['settings'] = {}): PlumbingCode {
+  const key = JSON.stringify([id, settings]);
+  const known = codes.get(key) ?? plumbingCode(id, { tables, dimensions }, settings, 'answers');
+  codes.set(key, known);
+  return known;
+}
+
 export const runSketch = (text: string, options: RunOptions = {}): SketchRun =>
   runModel(modelOf(sketch(text), { ports: options.ports ?? true, sizes: options.sizes ?? true }), options);
 
 export function runModel(model: Model, options: RunOptions = {}): SketchRun {
   const answers: Answers = { ...noAnswers, ...options.answers };
-  const code = plumbingCode(options.code ?? 'npc-2020', { tables, dimensions }, answers.settings, 'answers');
+  const code = codeOf(options.code ?? 'npc-2020', answers.settings);
   const result = resultOf(run(model, code, answers, names), '0.0.0');
   const named = <T extends { readonly name: string | null }>(list: readonly T[], name: string): T => {
     const found = list.filter((one) => one.name === name);

@@ -1,0 +1,94 @@
+/** Rows of fixtures in the piping notation, as the tests of the codes draw them again and again. */
+
+/**
+ * Fixture `F<n>` at the joint `J<n>`: a trap under the floor and a level arm from the south. `what` is a line of the
+ * notation without its place: `urinal, stall, trap 2 in`. A closet has its trap inside.
+ */
+export function armOf(n: number | string, what: string, length = 0.3): string {
+  const [word = '', ...details] = what.split(', ');
+  const bore = /trap ([^,]*) in/.exec(what)?.[1] ?? '3';
+  const rest = details.length === 0 ? '' : `, ${details.join(', ')}`;
+  if (word === 'closet' || what.includes('pedestal')) {
+    return `
+node B${n} from J${n} south ${length} rise 1:50
+${word} F${n} from B${n} to 0${rest}
+drain ${bore} in: F${n} > B${n} > J${n}`;
+  }
+  const open = word === 'floor-drain' ? ', untrapped' : '';
+  return `
+trap T${n} from J${n} south ${length} rise 1:50
+${word} F${n} from T${n} to 0${rest}${open}
+drain ${bore} in: F${n} > T${n} > J${n}`;
+}
+
+/** The joints `J<first>` to `J<last>` in a line to the east, 0.7 m apart, after the node that stands in front. */
+export const lineOf = (first: number, last: number): string =>
+  Array.from({ length: last - first + 1 }, (_, at) => ` > J${first + at} (east 0.7 fall 1:50)`).join('');
+
+/** Floor, slab and roof of a hall; the drawing goes between. */
+const hall = (title: string, piping: string): string => `model "${title}"
+storey "Ground floor" at 0
+${piping}
+roof "Roof" from -5 -5 to 40 10 top 3.6 thick 0.3
+`;
+
+/** Two lavatories of 1 by a double fitting on the vertical pipe at `at`, traps drawn. */
+export const lavatoryPair = (at: string): string => `
+trap TL1 from ${at} west 0.4 north 0.15 rise 1:50
+trap TL2 from ${at} east 0.4 north 0.15 rise 1:50
+lavatory L1 from TL1 up 0.12, trap 1 1/4 in
+lavatory L2 from TL2 up 0.12, trap 1 1/4 in
+drain 1 1/4 in: L1 > TL1 > ${at}
+drain 1 1/4 in: L2 > TL2 > ${at}`;
+
+/**
+ * A row wet vented through two lavatories: `LJ` where their arms meet, down to `LF`, level through `J1` to the last
+ * joint, on to a drop `K`-`BF` and out. The dry vent is `LJ-VT`.
+ */
+export const wetVentedRow = (fixtures: readonly string[], vent = '3 in'): string =>
+  hall(
+    'A wet vented row',
+    `node LJ at 0 0 0.5
+${lavatoryPair('LJ')}
+drain 3 in: LJ > LF (to -0.4)${lineOf(1, fixtures.length)} > K (east 0.7 fall 1:50) > BF (to -1.2) > OUT (east 9 fall 1:50)
+${fixtures.map((what, at) => armOf(at + 1, what)).join('')}
+vent ${vent}: LJ > VT (to 4.2)
+terminal VT
+sewer OUT`,
+  );
+
+export interface CircuitRow {
+  /** Vents of the notation: `vent 1 1/2 in: RV > RT (to 2.5) > VJ (over CV)` is the standard one. */
+  readonly relief?: string;
+  /** Two lavatories on the vertical part of the circuit vent. */
+  readonly lavatories?: boolean;
+  /** Metres that the vents run level under the roof before they go out. */
+  readonly run?: number;
+  readonly more?: string;
+}
+
+/**
+ * A row circuit vented: the first fixture's own drain `J0-CV`, the circuit vent's foot `CV`, the others at `J2` on, the
+ * relief vent's foot `RV`, on to a drop and out. With lavatories the circuit vent is wet from `LJ` to `CV`.
+ */
+export function circuitVentedRow(fixtures: readonly string[], options: CircuitRow = {}): string {
+  const { relief = 'vent 3 in: RV > RT (to 2.5) > VJ (over CV rise 1:100)', lavatories = false, more = '' } = options;
+  const out = options.run === undefined ? 'VT (to 4.2)' : `VR (to 3 east ${options.run} rise 1:100) > VT (to 4.2)`;
+  const foot = lavatories ? 'LJ' : 'CV';
+  return hall(
+    'A circuit vented row',
+    `node J1 at 0 0 -0.4
+drain 3 in: J1 > CV (east 0.4 fall 1:50)${lineOf(2, fixtures.length)} > RV (east 0.4 fall 1:50) > K (east 0.7 fall 1:50) >
+  BF (to -1.2) > OUT (east 9 fall 1:50)
+${fixtures.map((what, at) => armOf(at + 1, what)).join('')}
+${lavatories ? `node LJ from CV to 0.5\n${lavatoryPair('LJ')}\ndrain 3 in: LJ > CV` : ''}
+${relief === '' ? '' : relief}
+vent 3 in: ${foot}${relief.includes('VJ') ? ' > VJ' : ''} > ${out}
+terminal VT
+sewer OUT
+${more}`,
+  );
+}
+
+/** So many of one kind. */
+export const times = (count: number, what: string): string[] => Array.from({ length: count }, () => what);
