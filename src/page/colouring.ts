@@ -81,7 +81,7 @@ export function categoriesOf(building: Building, by: ColourBy, theme: Theme): re
 }
 
 function rank(building: Building, by: ColourBy, key: string): number {
-  if (by === 'verdict') return verdicts.findIndex((verdict) => verdict === key);
+  if (by === 'verdict') return verdicts.indexOf(key as (typeof verdicts)[number]);
   if (by === 'role') return roleOrder.includes(key) ? roleOrder.indexOf(key) : roleOrder.length;
   if (by === 'storey') return key === '-1' ? Number.POSITIVE_INFINITY : -Number(key);
   if (by === 'load') return Number(key);
@@ -134,6 +134,7 @@ export interface SectionLook {
   readonly hidden: boolean;
   /** Drawn once more, glowing, through whatever stands before it. */
   readonly lit: boolean;
+  readonly chosen: boolean;
 }
 
 /** Follows `state` alone: chosen and undersized pipes stand out, the rest steps back toward the ground. */
@@ -148,9 +149,10 @@ export function lookOf(building: Building, state: PageState, theme: Theme): (sec
     const category = key === null ? undefined : categories.get(key);
     const hidden = (key !== null && state.hidden.has(key)) || (isolated !== null && !isolated.has(pipe[section]!));
     const undersized = building.state(section)?.verdict === 'undersized';
-    const lit = (state.colourBy === 'verdict' && undersized) || chosen.has(section);
+    const isChosen = chosen.has(section) && state.follow === null;
+    const lit = state.follow === null && ((state.colourBy === 'verdict' && undersized) || isChosen);
     const base = chosen.has(section) && !undersized ? theme.chosen : (category?.colour ?? theme.idle);
     const fade = lit ? 0 : state.follow !== null ? 0.82 : chosen.size > 0 ? 0.6 : anyUndersized ? 0.42 : 0;
-    return { colour: mix(base, theme.ground, fade), pattern: category?.pattern ?? 0, hidden, lit };
+    return { colour: mix(base, theme.ground, fade), pattern: category?.pattern ?? 0, hidden, lit, chosen: isChosen };
   };
 }

@@ -41,10 +41,10 @@ export const mix = (a: Rgb, b: Rgb, t: number): Rgb => [
 export const themes: Readonly<Record<'light' | 'dark', Theme>> = {
   light: {
     name: 'light',
-    ground: rgb('#f4f2ed'),
-    wall: rgb('#8d8a80'),
-    edge: rgb('#6f6c64'),
-    fixture: rgb('#f2f0ea'),
+    ground: rgb('#ebe8e1'),
+    wall: rgb('#ffffff'),
+    edge: rgb('#7b776d'),
+    fixture: rgb('#ffffff'),
     chosen: rgb('#1348b8'),
     water: rgb('#0b74c4'),
     air: rgb('#0b8a6a'),

@@ -27,10 +27,20 @@ export function shortLoad(words: Words, { least, most }: LoadRange, unit: string
   return `${range} ${words.shortUnit(unit)}`;
 }
 
+/** Nominal sizes as the trade writes them: `4 in`, in French `4 po`. */
+export const sizeLabel = (words: Words, label: string): string =>
+  words.language === 'fr' ? label.replace(/ in$/, ' po') : label;
+
+/** The same for a size that may be missing. */
+export const oneSize = (words: Words, size: { readonly label: string } | null | undefined, missing = '?'): string =>
+  size == null ? missing : sizeLabel(words, size.label);
+
 /** `4 in`, `2 in to 3 in`; where no size of the table holds it the words say so. */
 export function sizeText(words: Words, range: SizeRange | null): string {
-  const least = range?.least?.label;
-  const most = range?.most?.label;
+  const label = (size: { readonly label: string } | null | undefined): string | undefined =>
+    size == null ? undefined : sizeLabel(words, size.label);
+  const least = label(range?.least);
+  const most = label(range?.most);
   if (most === undefined) return least === undefined ? words.pipe.noSize : `${least} …`;
   return least === undefined || least === most ? most : `${least} ${words.to} ${most}`;
 }

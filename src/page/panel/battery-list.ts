@@ -1,9 +1,9 @@
 import type { BrokenCondition, ResultBattery } from '../../schedule/result.ts';
-import { countedKind, named, ruleName } from '../words/words.ts';
+import { countedKind, named, phrase, ruleName } from '../words/words.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
-import { factTexts } from './facts.ts';
-import { capital, shown } from './names.ts';
+import { factsLine } from './facts.ts';
+import { batteryName, capital, shown } from './names.ts';
 
 /** Each battery with all its readings side by side: which one was taken, and what stands against each. */
 export function batteryList(desk: Desk): HTMLElement {
@@ -29,7 +29,7 @@ export function batteryCard(desk: Desk, battery: ResultBattery): HTMLElement {
   return make(
     'section',
     { class: 'battery' },
-    make('h3', {}, words.battery.one(battery.id)),
+    make('h3', {}, words.battery.one(batteryName(battery.id))),
     make('p', { class: 'kinds' }, [...kinds].map(([kind, count]) => countedKind(words, kind, count)).join(', ')),
     make(
       'table',
@@ -71,7 +71,8 @@ export function batteryCard(desk: Desk, battery: ResultBattery): HTMLElement {
         ),
       ),
     ),
-    battery.why !== '' && make('p', { class: 'quiet' }, `${words.battery.why} `, modelText(shown(battery.why)), '.'),
+    battery.why !== '' &&
+      make('p', { class: 'quiet' }, `${words.battery.why} `, modelText(shown(phrase(words, battery.why))), '.'),
     rows.length > 0 &&
       make(
         'button',
@@ -91,12 +92,12 @@ export function batteryCard(desk: Desk, battery: ResultBattery): HTMLElement {
 function brokenLine(desk: Desk, broken: BrokenCondition): HTMLElement {
   const { building, words } = desk;
   const { clause, facts } = broken;
-  const numbers = factTexts(building, words, facts);
+  const numbers = factsLine(building, words, facts);
   return make(
     'li',
     {},
     capital(ruleName(words, broken)),
-    numbers.length > 0 ? `: ${numbers.map(shown).join(', ')} ` : ' ',
+    numbers === '' ? ' ' : `: ${shown(numbers)} `,
     make('span', { class: 'clause' }, clause),
   );
 }

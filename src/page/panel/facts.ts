@@ -1,27 +1,39 @@
 import type { Building } from '../building.ts';
-import { decimal, lengthText, slopeText } from '../format.ts';
+import { decimal, lengthText, sizeLabel, slopeText } from '../format.ts';
 import { named, type Words } from '../words/words.ts';
 import { nameOfId } from './names.ts';
 
 type Facts = Readonly<Record<string, unknown>>;
 
-/** The numbers behind a demand, each with its own words, in the order of the trail: `load 14 fixture units`. */
-export function factTexts(building: Building, words: Words, facts: Facts): string[] {
+export interface FactText {
+  readonly label: string;
+  readonly value: string;
+}
+
+/** The numbers behind a demand, each with its own words, in the order of the trail: `load`, `14 FU`. */
+export function factTexts(building: Building, words: Words, facts: Facts): FactText[] {
   return Object.entries(facts)
     .filter(([, value]) => value !== null && value !== undefined && !(Array.isArray(value) && value.length === 0))
     .map(([key, value]) => factText(building, words, key, value));
 }
 
-function factText(building: Building, words: Words, key: string, value: unknown): string {
+/** The same in one line of text. */
+export const factsLine = (building: Building, words: Words, facts: Facts): string =>
+  factTexts(building, words, facts)
+    .map(({ label, value }) => `${label} ${value}`)
+    .join(', ');
+
+function factText(building: Building, words: Words, key: string, value: unknown): FactText {
   const parts = key.split(/(?=[A-Z])/).map((part) => part.toLowerCase());
   const unit = parts.at(-1) ?? '';
-  const say = (names: readonly string[]): string => names.map((name) => named(words.factWords, name)).join(' ');
-  if (typeof value === 'boolean')
-    return `${say(parts)} : ${value ? words.yes : words.no}`.replace(' :', words.language === 'fr' ? ' :' : ':');
-  if (typeof value !== 'number') return `${say(parts)} ${otherText(building, words, value)}`;
+  const whole = Object.hasOwn(words.factWords, key) ? words.factWords[key] : undefined;
+  const label = (names: readonly string[]): string =>
+    whole ?? names.map((name) => named(words.factWords, name)).join(' ');
+  if (typeof value === 'boolean') return { label: label(parts), value: value ? words.yes : words.no };
+  if (typeof value !== 'number') return { label: label(parts), value: otherText(building, words, value) };
   const measured = measure(building, words, unit, value);
-  if (measured === null) return `${say(parts)} ${decimal(words, value, 4)}`;
-  return `${say(parts.length > 1 ? parts.slice(0, -1) : parts)} ${measured}`;
+  if (measured === null) return { label: label(parts), value: decimal(words, value, 4) };
+  return { label: label(parts.length > 1 ? parts.slice(0, -1) : parts), value: measured };
 }
 
 /** The unit stands in the last word of a fact's name. */
@@ -51,5 +63,6 @@ function otherText(building: Building, words: Words, value: unknown): string {
     const texts = value.slice(0, mostListed).map((entry) => otherText(building, words, entry));
     return texts.join(', ') + (value.length > mostListed ? ` … (${value.length})` : '');
   }
-  return typeof value === 'string' ? nameOfId(building, words, value) : String(JSON.stringify(value));
+  if (typeof value !== 'string') return String(JSON.stringify(value));
+  return nameOfId(building, words, / in$/.test(value) ? sizeLabel(words, value) : value);
 }

@@ -1,12 +1,12 @@
 import type { ResultFinding } from '../../schedule/result.ts';
 import { type UndersizedGroup, undersizedGroups } from '../../schedule/undersized-text.ts';
-import { sizeText } from '../format.ts';
+import { oneSize, sizeText } from '../format.ts';
 import { named } from '../words/words.ts';
 import { severityMarks } from './chips.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
 import { findingSentence } from './finding-sentence.ts';
-import { capital, pipeName } from './names.ts';
+import { batteryName, capital, pipeName } from './names.ts';
 import { reasonText } from './reason.ts';
 
 const mostShown = 60;
@@ -68,7 +68,7 @@ function undersizedGroup(desk: Desk, group: UndersizedGroup): HTMLElement {
   const first = group.root;
   const title = words.findings.undersized(
     group.pipes.length,
-    first.modelled?.label ?? '?',
+    oneSize(words, first.modelled),
     sizeText(words, first.required),
   );
   return make(
@@ -83,7 +83,7 @@ function undersizedGroup(desk: Desk, group: UndersizedGroup): HTMLElement {
         'span',
         { class: 'finding-why' },
         [
-          group.battery === null ? null : capital(words.findings.ofBattery(group.battery)),
+          group.battery === null ? null : capital(words.findings.ofBattery(batteryName(group.battery))),
           capital(named(words.roles, first.role)),
           reasonText(desk, first, group.governing),
         ]
@@ -94,6 +94,7 @@ function undersizedGroup(desk: Desk, group: UndersizedGroup): HTMLElement {
     rowsOf(
       desk,
       rows.map((row) => ({ label: pipeName(building, words, row), open: () => desk.choosePipe(row) })),
+      rows.every((row) => pipeName(building, words, row).length < 16),
     ),
   );
 }
@@ -139,8 +140,8 @@ interface Row {
   readonly open: (() => void) | null;
 }
 
-function rowsOf({ words }: Desk, rows: readonly Row[]): HTMLElement {
-  const list = make('ul', { class: 'finding-rows' });
+function rowsOf({ words }: Desk, rows: readonly Row[], short = false): HTMLElement {
+  const list = make('ul', { class: short ? 'finding-rows short' : 'finding-rows' });
   const line = ({ label, open }: Row): HTMLElement =>
     make(
       'li',

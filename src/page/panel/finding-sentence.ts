@@ -2,7 +2,7 @@ import type { ResultFinding } from '../../schedule/result.ts';
 import { visible } from '../../schedule/shown-text.ts';
 import { named } from '../words/words.ts';
 import type { Desk } from './desk.ts';
-import { factTexts } from './facts.ts';
+import { factsLine } from './facts.ts';
 import { nameOfId } from './names.ts';
 
 /** The finding's own sentence; in French made from its code, its thing and its facts. */
@@ -10,7 +10,7 @@ export function findingSentence(desk: Desk, finding: ResultFinding): string {
   const { building, words } = desk;
   if (words.language === 'en') return visible(finding.sentence);
   const about = finding.about[0] === undefined ? '' : `${nameOfId(building, words, finding.about[0])} : `;
-  const facts = factTexts(building, words, finding.facts);
+  const facts = factsLine(building, words, finding.facts);
   const clause = finding.clause === null ? '' : ` (${building.result.code.id}, ${finding.clause})`;
-  return `${about}${named(words.codes, finding.code)}${facts.length === 0 ? '' : ` – ${facts.join('; ')}`}${clause}.`;
+  return `${about}${named(words.codes, finding.code)}${facts === '' ? '' : ` – ${facts}`}${clause}.`;
 }

@@ -1,4 +1,4 @@
-import { lengthText, loadText } from '../format.ts';
+import { lengthText, loadText, oneSize } from '../format.ts';
 import { kindName, named } from '../words/words.ts';
 import { copyButton, pipeButton } from './chips.ts';
 import type { Desk } from './desk.ts';
@@ -64,10 +64,13 @@ export function fixtureCard(desk: Desk, row: number): HTMLElement {
       'dl',
       { class: 'facts' },
       line(words.pipe.load, loadText(words, fixture.load, building.result.code.unit)),
-      line(words.fixture.row, fixture.row === null ? words.fixture.unidentified : shown(fixture.row)),
+      line(
+        words.fixture.row,
+        fixture.row === null ? words.fixture.unidentified : shown(fixture.row.replaceAll('-', ' ')),
+      ),
       line(words.fixture.known, modelText(shown(fixture.evidence))),
-      line(words.fixture.trapSize, fixture.trapSize?.label ?? words.pipe.noSize),
-      line(words.fixture.trapAt, shown(fixture.trap.how)),
+      line(words.fixture.trapSize, oneSize(words, fixture.trapSize, words.pipe.noSize)),
+      line(words.fixture.trapAt, named(words.trapHow, fixture.trap.how)),
       ...(arm === null || arm.length === null
         ? []
         : [

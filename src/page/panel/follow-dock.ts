@@ -1,4 +1,4 @@
-import { decimal, shortLoad } from '../format.ts';
+import { decimal, oneSize, shortLoad } from '../format.ts';
 import type { Follow } from '../state.ts';
 import { named } from '../words/words.ts';
 import type { Desk } from './desk.ts';
@@ -66,8 +66,8 @@ export function stepText({ building, words }: Desk, follow: Follow, sections: re
     capital(named(words.roles, state.role)),
     part,
     shortLoad(words, load, building.result.code.unit),
-    state.modelled?.label,
-    state.verdict === 'undersized' ? `▲ ${state.required?.most?.label ?? ''}` : null,
+    oneSize(words, state.modelled, ''),
+    state.verdict === 'undersized' ? `▲ ${oneSize(words, state.required?.most, '')}` : null,
   ]
     .filter((text) => text != null && text !== '')
     .join(' · ');

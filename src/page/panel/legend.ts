@@ -1,6 +1,6 @@
 import { type Category, categoriesOf, loadStep } from '../colouring.ts';
 import { hex } from '../colours.ts';
-import { decimal } from '../format.ts';
+import { decimal, sizeLabel } from '../format.ts';
 import type { ColourBy } from '../state.ts';
 import { named } from '../words/words.ts';
 import { verdictMarks } from './chips.ts';
@@ -73,7 +73,7 @@ export function categoryName({ building, words }: Desk, by: ColourBy, key: strin
     case 'system':
       return key === '' ? words.legend.noSystem : shown(key);
     case 'size':
-      return key === '' ? words.legend.noSize : key;
+      return key === '' ? words.legend.noSize : sizeLabel(words, key);
     case 'storey':
       return key === '-1'
         ? words.legend.noStorey

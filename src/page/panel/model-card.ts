@@ -1,4 +1,5 @@
 import { lengthText } from '../format.ts';
+import { named } from '../words/words.ts';
 import { copyButton, pipeButton } from './chips.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
@@ -37,7 +38,7 @@ export function modelCard(desk: Desk): HTMLElement {
     make(
       'dl',
       { class: 'facts' },
-      line(words.model.code, `${code.title} (${code.id})`),
+      line(words.model.code, `${words.codeTitle(code.id, code.title)} (${code.id})`),
       line(words.model.edition, code.edition),
       ...(code.localTables === undefined
         ? []
@@ -87,7 +88,11 @@ export function modelCard(desk: Desk): HTMLElement {
       ),
       ...result.systems.map(({ sewerEnd }) => {
         const row = sewerEnd.pipe === null ? undefined : building.pipeAt.get(sewerEnd.pipe);
-        return line(words.model.sewer, row === undefined ? null : pipeButton(desk, row), ` (${shown(sewerEnd.how)})`);
+        return line(
+          words.model.sewer,
+          row === undefined ? null : pipeButton(desk, row),
+          ` (${named(words.sewerHow, sewerEnd.how)})`,
+        );
       }),
     ),
     result.unresolved.length > 0

@@ -34,4 +34,7 @@ export function shown(text: string | null | undefined): string {
   return plain.length > longest ? `${plain.slice(0, longest)}…` : plain;
 }
 
+/** `battery-1` of the result is battery 1 to people. */
+export const batteryName = (id: string): string => id.replace(/^battery-/, '');
+
 export const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);

@@ -1,13 +1,13 @@
 import type { PipeState, ResultPipe, TrailStep } from '../../schedule/result.ts';
-import { lengthText, loadText, sizeText, slopeText } from '../format.ts';
-import { countedKind, named, ruleName } from '../words/words.ts';
+import { lengthText, loadText, oneSize, shortLoad, sizeText, slopeText } from '../format.ts';
+import { countedKind, named, phrase, ruleName } from '../words/words.ts';
 import { copyButton, fixtureButton, pipeButton, verdictMarks } from './chips.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
 import { factTexts } from './facts.ts';
 import { opener } from './finding-list.ts';
 import { findingSentence } from './finding-sentence.ts';
-import { capital, pipeName, shown } from './names.ts';
+import { batteryName, capital, pipeName, shown } from './names.ts';
 import { clauseText } from './reason.ts';
 
 /** A pipe's case, in the order of an argument: verdict, what it is, why that size, why not smaller, whose it is. */
@@ -40,7 +40,7 @@ function roleText({ words }: Desk, pipe: PipeState): string {
 }
 
 function verdictBanner({ words }: Desk, pipe: ResultPipe): HTMLElement {
-  const drawn = pipe.modelled?.label ?? '?';
+  const drawn = oneSize(words, pipe.modelled);
   const needed = sizeText(words, pipe.required);
   const text = {
     undersized: words.pipe.tooSmall(drawn, needed),
@@ -53,7 +53,7 @@ function verdictBanner({ words }: Desk, pipe: ResultPipe): HTMLElement {
     { class: `banner banner-${pipe.verdict}` },
     make('span', { class: 'mark', 'aria-hidden': 'true' }, verdictMarks[pipe.verdict]),
     make('strong', {}, text),
-    pipe.reason !== undefined && make('p', {}, modelText(shown(pipe.reason))),
+    pipe.reason !== undefined && make('p', {}, modelText(shown(phrase(words, pipe.reason)))),
     pipe.provisional && make('p', {}, words.pipe.provisional),
   );
 }
@@ -147,7 +147,7 @@ function argument(desk: Desk, pipe: ResultPipe): HTMLElement {
       governing.length === 0 ? '' : `${words.pipe.failsBelow(size, rules)} `,
       second === null || second.asks === null
         ? words.pipe.onlyDemand
-        : words.pipe.nextDemand(second.asks.label, ruleName(words, second)),
+        : words.pipe.nextDemand(oneSize(words, second.asks), ruleName(words, second)),
     ),
     make(
       'details',
@@ -168,15 +168,19 @@ function demand(desk: Desk, step: TrailStep): HTMLElement {
       'div',
       { class: 'step-head' },
       make('span', { class: 'step-rule' }, capital(ruleName(words, step))),
-      make('span', { class: 'step-size' }, step.asks?.label ?? words.pipe.noSize),
+      make('span', { class: 'step-size' }, oneSize(words, step.asks, words.pipe.noSize)),
     ),
     facts.length > 0 &&
-      make('ul', { class: 'step-facts' }, ...facts.map((fact) => make('li', {}, modelText(shown(fact))))),
+      make(
+        'ul',
+        { class: 'step-facts' },
+        ...facts.map(({ label, value }) => make('li', {}, `${label} `, make('b', {}, modelText(shown(value))))),
+      ),
     make(
       'div',
       { class: 'step-clause' },
       clauseText(words, step),
-      step.trust === 'memory' && make('span', { class: 'trust' }, ` ${words.pipe.fromMemory}`),
+      step.trust === 'memory' && make('span', { class: 'trust' }, ` · ${words.pipe.fromMemory}`),
     ),
   );
 }
@@ -202,7 +206,7 @@ function users(desk: Desk, row: number): HTMLElement {
               'li',
               {},
               fixtureButton(desk, fixture),
-              make('span', { class: 'amount' }, loadText(words, building.result.fixtures[fixture]!.load, unit)),
+              make('span', { class: 'amount' }, shortLoad(words, building.result.fixtures[fixture]!.load, unit)),
             ),
           ),
         rows.length > mostUsers && make('li', { class: 'quiet' }, `… ${rows.length - mostUsers}`),
@@ -218,13 +222,13 @@ function users(desk: Desk, row: number): HTMLElement {
       words.pipe.water(water.length),
       words.pipe.noWater,
       water,
-      water.length === 0 ? '' : loadText(words, pipe.load, unit),
+      water.length === 0 ? '' : shortLoad(words, pipe.load, unit),
     ),
     list(
       words.pipe.air(air.length),
       words.pipe.noAir,
       air,
-      pipe.ventLoad === undefined ? '' : loadText(words, pipe.ventLoad, unit),
+      pipe.ventLoad === undefined ? '' : shortLoad(words, pipe.ventLoad, unit),
     ),
   );
 }
@@ -308,7 +312,7 @@ function facts(desk: Desk, row: number, pipe: ResultPipe): HTMLElement {
       { class: 'facts' },
       line(
         words.pipe.drawn,
-        pipe.modelled?.label ?? words.pipe.notDrawn,
+        oneSize(words, pipe.modelled, words.pipe.notDrawn),
         pipe.modelled !== null && make('small', {}, modelText(` ${words.pipe.drawnFrom(shown(pipe.modelled.from))}`)),
       ),
       line(words.pipe.needed, sizeText(words, pipe.required)),
@@ -322,7 +326,7 @@ function facts(desk: Desk, row: number, pipe: ResultPipe): HTMLElement {
         : [line(words.pipe.developedLength, lengthText(words, pipe.developedLength))]),
       line(words.pipe.slope, slope),
       ...(pipe.system === null ? [] : [line(words.pipe.system, modelText(shown(pipe.system)))]),
-      ...(pipe.battery === undefined ? [] : [line(words.pipe.battery, pipe.battery)]),
+      ...(pipe.battery === undefined ? [] : [line(words.pipe.battery, batteryName(pipe.battery))]),
       ...(next === undefined ? [] : [line(words.pipe.next, pipeButton(desk, next))]),
       line('GlobalId', make('code', {}, modelText(shown(pipe.globalId))), copyButton(desk, pipe.globalId, 'GlobalId')),
       line('STEP', make('code', {}, `#${pipe.stepId}`)),

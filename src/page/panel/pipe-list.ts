@@ -1,4 +1,4 @@
-import { sizeText } from '../format.ts';
+import { oneSize, sizeText } from '../format.ts';
 import { kindName, named } from '../words/words.ts';
 import { verdictMark } from './chips.ts';
 import type { Desk } from './desk.ts';
@@ -75,7 +75,7 @@ function pipeWords({ building, words }: Desk, row: number): string {
       ...pipe.also.map((role) => named(words.roles, role)),
       pipe.storey,
       pipe.system,
-      pipe.modelled?.label,
+      oneSize(words, pipe.modelled, ''),
       words.verdict[pipe.verdict],
       pipe.battery,
       ...pipe.trail.filter(({ governs }) => governs).map(({ clause }) => clause),
@@ -93,7 +93,7 @@ function fixtureWords({ building, words }: Desk, row: number): string {
 function pipeLine(desk: Desk, row: number): HTMLElement {
   const { building, words } = desk;
   const pipe = building.result.pipes[row]!;
-  const drawn = pipe.modelled?.label ?? '?';
+  const drawn = oneSize(words, pipe.modelled);
   const size =
     pipe.verdict === 'undersized' || pipe.verdict === 'oversized'
       ? `${drawn} → ${sizeText(words, pipe.required)}`
@@ -127,7 +127,7 @@ function fixtureLine(desk: Desk, row: number): HTMLElement {
       { type: 'button', class: 'line', onclick: () => desk.chooseFixture(row) },
       fixtureSymbol(fixture.kind),
       make('span', { class: 'line-name' }, modelText(fixtureName(building, words, row))),
-      make('span', { class: 'line-size' }, fixture.trapSize?.label ?? ''),
+      make('span', { class: 'line-size' }, oneSize(words, fixture.trapSize, '')),
       make(
         'span',
         { class: 'line-more' },

@@ -1,6 +1,6 @@
 import { placeText } from '../../schedule/demand-text.ts';
 import type { PipeState, TrailStep } from '../../schedule/result.ts';
-import { decimal, lengthText, shortLoad } from '../format.ts';
+import { decimal, lengthText, oneSize, shortLoad } from '../format.ts';
 import { ruleName } from '../words/words.ts';
 import type { Desk } from './desk.ts';
 import { nameOfId } from './names.ts';
@@ -15,7 +15,7 @@ export function reasonText({ building, words }: Desk, pipe: PipeState, step: Tra
   if (pipe.developedLength !== undefined) parts.push(lengthText(words, pipe.developedLength));
   const limit = step?.facts.limitUnits;
   if (step !== null && typeof limit === 'number' && step.asks !== null)
-    parts.push(`${step.asks.label} ≤ ${decimal(words, limit, 2)} ${words.shortUnit(unit)}`);
+    parts.push(words.pipe.holds(oneSize(words, step.asks), `${decimal(words, limit, 2)} ${words.shortUnit(unit)}`));
   if (step !== null) parts.push(clauseText(words, step));
   return parts.join(' · ');
 }

@@ -1,4 +1,4 @@
-import { lengthText, shortLoad } from '../format.ts';
+import { lengthText, oneSize, shortLoad, sizeText } from '../format.ts';
 import type { Hit } from '../scene/pick.ts';
 import { sceneView } from '../scene/scene-view.ts';
 import type { PageState, Tab } from '../state.ts';
@@ -74,7 +74,14 @@ export function shell(desk: Desk): Shell {
   const top = header(desk);
   const skip = make(
     'a',
-    { class: 'skip', href: '#panel-body', onclick: (event: Event) => (event.preventDefault(), body.focus()) },
+    {
+      class: 'skip',
+      href: '#panel-body',
+      onclick: (event: Event) => {
+        event.preventDefault();
+        body.focus();
+      },
+    },
     words.page.skip,
   );
 
@@ -151,8 +158,10 @@ export function shell(desk: Desk): Shell {
           labelLayer,
           tip,
           tipText: (hit) => tipText(desk, hit),
+          covered: () => (dockHost.firstElementChild as HTMLElement | null)?.offsetHeight ?? 0,
           labelText: {
             pipe: (section) => labelText(desk, section),
+            run: (section) => runText(desk, section),
             step: (section) => labelText(desk, section),
             stopped: () => `▲ ${words.follow.stopped}`,
             measure: ({ length, plan, rise }) =>
@@ -239,7 +248,12 @@ function header(desk: Desk): { readonly root: HTMLElement; show(state: PageState
       'div',
       { class: 'title' },
       make('h1', {}, modelText(shown(result.model.file))),
-      make('p', {}, `${result.code.title} ${result.code.edition} `, make('span', { class: 'tag' }, result.code.id)),
+      make(
+        'p',
+        {},
+        `${words.codeTitle(result.code.id, result.code.title)} ${result.code.edition} `,
+        make('span', { class: 'tag' }, result.code.id),
+      ),
     ),
     make('nav', { class: 'views', 'aria-label': words.page.views }, ...views),
     make(
@@ -338,7 +352,7 @@ function tipText({ building, words }: Desk, hit: Hit): string {
   return [
     pipeName(building, words, row),
     state === undefined ? '' : capital(named(words.roles, state.role)),
-    state?.modelled?.label ?? '',
+    oneSize(words, state?.modelled, ''),
   ]
     .filter((text) => text !== '')
     .join(' · ');
@@ -348,8 +362,12 @@ function labelText({ building, words }: Desk, section: number): string {
   const state = building.state(section);
   if (state === undefined) return '';
   const load = state.ventLoad !== undefined && state.load.most === 0 ? state.ventLoad : state.load;
-  const drawn = state.modelled?.label ?? '?';
-  const need = state.required?.most?.label;
-  const size = state.verdict === 'undersized' && need !== undefined ? `▲ ${drawn} → ${need}` : drawn;
-  return `${size} · ${shortLoad(words, load, building.result.code.unit)}`;
+  const drawn = oneSize(words, state.modelled);
+  return `${drawn} · ${shortLoad(words, load, building.result.code.unit)}`;
+}
+
+function runText({ building, words }: Desk, section: number): string {
+  const state = building.state(section);
+  const drawn = oneSize(words, state?.modelled);
+  return `▲ ${drawn} → ${sizeText(words, state?.required ?? null)}`;
 }

@@ -45,7 +45,7 @@ export function summary(desk: Desk): HTMLElement {
           'li',
           {},
           make('b', {}, words.summary.fixtures(result.fixtures.length)),
-          `: ${kindTexts.join(', ')}; `,
+          `${words.colon}${kindTexts.join(', ')}; `,
           reach,
         ),
       make(

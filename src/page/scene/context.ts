@@ -36,8 +36,8 @@ export function contextOf(building: Building, shared: SharedUniforms): Context {
   return {
     group,
     show(theme, shown, fixture) {
-      tint(walls.material, theme.wall, theme.name === 'light' ? 0.13 : 0.08);
-      tint(floors.material, theme.wall, theme.name === 'light' ? 0.09 : 0.055);
+      tint(walls.material, theme.wall, theme.name === 'light' ? 0.22 : 0.07);
+      tint(floors.material, theme.wall, theme.name === 'light' ? 0.16 : 0.05);
       tint(edges.material, theme.edge, theme.name === 'light' ? 0.34 : 0.3);
       tint(fixtures.material, theme.fixture, 1);
       tint(chosen.material, theme.chosen, 1);

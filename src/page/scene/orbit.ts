@@ -16,7 +16,7 @@ export interface Bounds {
   readonly max: Point;
 }
 
-export const fieldOfView = 32;
+export const fieldOfView = 26;
 const steepest = Math.PI / 2 - 0.001;
 
 /** Named views; `home` shows the building as an isometric drawing would. */
@@ -50,28 +50,55 @@ export function place(camera: PerspectiveCamera, eye: Eye, reach: number): void 
   camera.updateMatrixWorld();
 }
 
-/** The eye that sees all of `bounds` in a view as wide as `aspect` times its height. */
+/** The eye that sees all of `bounds` in a view as wide as `aspect` times its height, its corners evenly about the middle. */
 export function framing(bounds: Bounds, yaw: number, pitch: number, aspect: number, margin = 1.12): Eye {
-  const target: Point = [
-    (bounds.min[0] + bounds.max[0]) / 2,
-    (bounds.min[1] + bounds.max[1]) / 2,
-    (bounds.min[2] + bounds.max[2]) / 2,
-  ];
-  const eye = { target, distance: 1, yaw, pitch };
-  const camera = new PerspectiveCamera(fieldOfView, aspect);
+  const middle = (axis: 0 | 1 | 2): number => (bounds.min[axis] + bounds.max[axis]) / 2;
+  let eye: Eye = { target: [middle(0), middle(1), middle(2)], distance: 1, yaw, pitch };
+  // What is near looks larger, so the middle of the box is not the middle of the picture: a few rounds settle it.
+  for (let round = 0; round < 4; round++) {
+    const fitted = { ...eye, distance: fittingDistance(bounds, eye, aspect, margin) };
+    eye = { ...fitted, target: seenMiddle(bounds, fitted) };
+  }
+  return { ...eye, distance: fittingDistance(bounds, eye, aspect, margin) };
+}
+
+/** Corners of the box as the eye sees them: right, up and away from it, metres. */
+function corners(bounds: Bounds, eye: Eye): readonly Vector3[] {
+  const camera = new PerspectiveCamera(fieldOfView, 1);
   place(camera, eye, 1);
   const toEye = new Matrix4().copy(camera.matrixWorld).invert();
+  return [bounds.min[0], bounds.max[0]].flatMap((x) =>
+    [bounds.min[1], bounds.max[1]].flatMap((y) =>
+      [bounds.min[2], bounds.max[2]].map((z) => {
+        const { x: right, y: up, z: back } = new Vector3(x, y, z).applyMatrix4(toEye);
+        return new Vector3(right, up, -back);
+      }),
+    ),
+  );
+}
+
+function fittingDistance(bounds: Bounds, eye: Eye, aspect: number, margin: number): number {
   const tall = Math.tan((fieldOfView * Math.PI) / 360) / margin;
-  let distance = 0.5;
-  for (const x of [bounds.min[0], bounds.max[0]])
-    for (const y of [bounds.min[1], bounds.max[1]])
-      for (const z of [bounds.min[2], bounds.max[2]]) {
-        const corner = new Vector3(x, y, z).applyMatrix4(toEye);
-        // The camera stood one metre off: depth beyond the target is -z - 1.
-        const depth = -corner.z - 1;
-        distance = Math.max(distance, Math.abs(corner.y) / tall - depth, Math.abs(corner.x) / (tall * aspect) - depth);
-      }
-  return { ...eye, distance };
+  return Math.max(
+    0.5,
+    ...corners(bounds, eye).map(({ x, y, z }) => {
+      const beyond = z - eye.distance;
+      return Math.max(Math.abs(y) / tall, Math.abs(x) / (tall * aspect)) - beyond;
+    }),
+  );
+}
+
+function seenMiddle(bounds: Bounds, eye: Eye): Point {
+  const seen = corners(bounds, eye).map(({ x, y, z }) => ({ x: x / z, y: y / z }));
+  const centre = (axis: 'x' | 'y'): number =>
+    ((Math.min(...seen.map((it) => it[axis])) + Math.max(...seen.map((it) => it[axis]))) / 2) * eye.distance;
+  const [cy, sy, cp, sp] = [Math.cos(eye.yaw), Math.sin(eye.yaw), Math.cos(eye.pitch), Math.sin(eye.pitch)];
+  const [right, up] = [centre('x'), centre('y')];
+  return [
+    eye.target[0] + cy * right - sy * sp * up,
+    eye.target[1] + sy * right + cy * sp * up,
+    eye.target[2] + cp * up,
+  ];
 }
 
 export const clampPitch = (pitch: number): number => Math.max(-steepest, Math.min(steepest, pitch));

@@ -1,6 +1,7 @@
 import { BufferAttribute, type BufferGeometry, Group, LineSegments, Mesh, type RawShaderMaterial } from 'three';
 import type { Building } from '../building.ts';
 import type { SectionLook } from '../colouring.ts';
+import type { Rgb } from '../colours.ts';
 import { glowOf } from './glow.ts';
 import { lineGeometry } from './mesh-draft.ts';
 import type { Bounds } from './orbit.ts';
@@ -18,7 +19,7 @@ export interface Piping {
   /** Sections that are not hidden, by index. */
   readonly visible: Uint8Array;
   /** Repaints all sections; what is lit is drawn again over everything else. */
-  show(look: (section: number) => SectionLook): void;
+  show(look: (section: number) => SectionLook, outline: Rgb): void;
   setDetail(detail: Detail): void;
   bounds(sections: Iterable<number>): Bounds | null;
   dispose(): void;
@@ -31,16 +32,14 @@ export function pipingOf(building: Building, shared: SharedUniforms): Piping {
   const count = building.sectionCount;
   const polylines = Array.from({ length: count }, (_, section) => polylineOf(building, section));
   const paint = paintOf(count);
+  const outlinePaint = paintOf(count);
   const visible = new Uint8Array(count).fill(1);
   const group = new Group();
   const rich = count <= 3000 ? 16 : count <= 12_000 ? 9 : 6;
   const tubes = tubesOf(building, polylines);
+  const collars = count <= 12_000 ? collarsOf(building, polylines) : [];
   const full = new Mesh(
-    tubeGeometry(
-      count <= 12_000 ? [...tubes, ...collarsOf(building, polylines)] : tubes,
-      ballsOf(building, polylines),
-      rich,
-    ),
+    tubeGeometry([...tubes, ...collars], ballsOf(building, polylines), rich),
     pipeMaterial(paint, shared, { grow: 1, leastPixels: 0.75, morePixels: 0, alpha: 1, halo: false }),
   );
   full.frustumCulled = false;
@@ -58,23 +57,28 @@ export function pipingOf(building: Building, shared: SharedUniforms): Piping {
     group.add(made);
     return made;
   };
-  const glow = glowOf(tubes, paint, shared);
+  const glow = glowOf(tubes, collars, paint, outlinePaint, shared);
   group.add(glow.group);
   return {
     group,
     polylines,
     paint,
     visible,
-    show(look) {
+    show(look, outline) {
       const lit: number[] = [];
+      const chosen: number[] = [];
       for (let section = 0; section < count; section++) {
-        const { colour, pattern, hidden, lit: isLit } = look(section);
+        const { colour, pattern, hidden, lit: isLit, chosen: isChosen } = look(section);
         paint.set(section, colour, pattern, hidden);
         visible[section] = hidden ? 0 : 1;
         if (isLit && !hidden) lit.push(section);
+        if (!isChosen || hidden) continue;
+        chosen.push(section);
+        outlinePaint.set(section, outline, 0, false);
       }
       paint.commit();
-      glow.show(lit);
+      if (chosen.length > 0) outlinePaint.commit();
+      glow.show(lit, chosen);
     },
     setDetail(detail) {
       full.visible = detail === 'full';
@@ -88,8 +92,7 @@ export function pipingOf(building: Building, shared: SharedUniforms): Piping {
         (mesh.material as RawShaderMaterial).dispose();
       }
       glow.dispose();
-      paint.colours.dispose();
-      paint.marks.dispose();
+      for (const texture of [paint.colours, paint.marks, outlinePaint.colours, outlinePaint.marks]) texture.dispose();
     },
   };
 }

@@ -67,9 +67,11 @@ export interface Route {
 export function routeOf(building: Building, shared: SharedUniforms): Route {
   const group = new Group();
   const core = new Mesh(undefined, routeMaterial(shared, 1));
+  const small = new Mesh(undefined, routeMaterial(shared, 1));
   const shell = new Mesh(undefined, routeMaterial(shared, 0.22));
   const marker = new Mesh(undefined, routeMaterial(shared, 1));
-  [core, shell, marker].forEach((mesh, order) => {
+  const meshes = [core, small, shell, marker];
+  meshes.forEach((mesh, order) => {
     mesh.frustumCulled = false;
     mesh.renderOrder = 30 + order;
     mesh.visible = false;
@@ -78,39 +80,50 @@ export function routeOf(building: Building, shared: SharedUniforms): Route {
   return {
     group,
     show(way, what, step, theme) {
-      for (const mesh of [core, shell, marker]) mesh.visible = way !== null && way.sections.length > 0;
+      for (const mesh of meshes) mesh.visible = way !== null && way.sections.length > 0;
       if (way === null) return;
       const colour: Rgb = what === 'water' ? theme.water : theme.air;
-      const tube = (radius: (section: number) => number): Tube[] =>
+      const tube = (wanted: (section: number) => boolean, radius: (section: number) => number): Tube[] =>
         way.sections.flatMap((section, place) => {
           const points = way.points[place]!;
-          return points.length < 2 ? [] : [{ section, points, radius: radius(section), alongFrom: way.start[place]! }];
+          return points.length < 2 || !wanted(section)
+            ? []
+            : [{ section, points, radius: radius(section), alongFrom: way.start[place]! }];
         });
+      const isSmall = (section: number): boolean =>
+        what === 'water' && building.state(section)?.verdict === 'undersized';
+      const width = (section: number): number =>
+        (what === 'water' ? building.needRadius[section]! : building.radius[section]!) * 0.94;
       replace(
         core,
-        tube((section) => (what === 'water' ? building.needRadius[section]! : building.radius[section]!) * 0.94),
+        tube((section) => !isSmall(section), width),
       );
+      replace(small, tube(isSmall, width));
       replace(
         shell,
-        tube((section) => building.radius[section]! * 1.3),
+        tube(
+          () => true,
+          (section) => building.radius[section]! * 1.3,
+        ),
       );
       const at = way.points[step]?.at(-1) ?? way.points.at(-1)?.at(-1);
       const radius = (building.radius[way.sections[step] ?? -1] ?? 0.05) * 2.1;
       marker.geometry.dispose();
       marker.geometry = tubeGeometry([], at === undefined ? [] : [{ section: 0, at, radius }], 16);
       marker.visible = at !== undefined;
-      for (const mesh of [core, shell, marker]) {
+      for (const mesh of meshes) {
         const { uniforms } = mesh.material;
-        uniforms.colour!.value.setRGB(colour[0] / 255, colour[1] / 255, colour[2] / 255);
-        uniforms.marks!.value = mesh === core ? 1 : 0;
+        const [r, g, b] = mesh === small ? theme.undersized : colour;
+        uniforms.colour!.value.setRGB(r / 255, g / 255, b / 255);
+        uniforms.marks!.value = mesh === core || mesh === small ? 1 : 0;
         uniforms.reached!.value = way.start[step + 1] ?? way.start.at(-1) ?? 0;
       }
     },
     setTime(seconds) {
-      core.material.uniforms.time!.value = seconds;
+      for (const mesh of [core, small]) mesh.material.uniforms.time!.value = seconds;
     },
     dispose() {
-      for (const mesh of [core, shell, marker]) {
+      for (const mesh of meshes) {
         mesh.geometry.dispose();
         mesh.material.dispose();
       }

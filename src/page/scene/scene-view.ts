@@ -13,6 +13,7 @@ import { pipingOf } from './piping.ts';
 import type { Point } from './polylines.ts';
 import { routeOf, type Way, wayOf } from './route.ts';
 import { stageIn } from './stage.ts';
+import { undersizedRuns } from './undersized-runs.ts';
 
 export interface SceneView {
   readonly stats: { frames: number; lastMs: number; calls: number; software: boolean };
@@ -38,6 +39,8 @@ export interface SceneParts {
   /** What to say of a thing under the pointer. */
   readonly tipText: (hit: Hit) => string;
   readonly labelText: LabelText;
+  /** Pixels at the bottom that something else covers. */
+  readonly covered: () => number;
 }
 
 const margin = 0.9;
@@ -51,8 +54,10 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
   const labels = labelsIn(parts.labelLayer);
   stage.scene.add(context.group, piping.group, route.group);
   const all = Array.from({ length: building.sectionCount }, (_, section) => section);
-  const whole = widened(piping.bounds(all) ?? fixtureBounds(building) ?? { min: [-2, -2, 0], max: [2, 2, 3] }, 0.3);
+  const piped = piping.bounds(all) ?? fixtureBounds(building) ?? { min: [-2, -2, 0], max: [2, 2, 3] };
+  const whole = widened(withFabric(building, piped), 0.3);
   const reach = Math.hypot(...([0, 1, 2] as const).map((axis) => whole.max[axis] - whole.min[axis]));
+  const runs = undersizedRuns(building);
   const reduced = window.matchMedia('(prefers-reduced-motion: reduce)');
   let way: Way | null = null;
   let clip: Bounds | null = null;
@@ -114,11 +119,13 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
   );
   const placeLabels = (): void => {
     measure.move();
-    labels.show(labelWishes(building, store.state, piping, way, parts.labelText, inside), (at) => stage.project(at));
+    labels.show(labelWishes(building, store.state, piping, runs, way, parts.labelText, inside), (at) =>
+      stage.project(at),
+    );
   };
 
   const show = (state: PageState): void => {
-    piping.show(lookOf(building, state, theme()));
+    piping.show(lookOf(building, state, theme()), theme().name === 'light' ? [27, 33, 41] : [231, 235, 239]);
     context.show(theme(), state.context, state.chosen?.is === 'fixture' ? state.chosen.row : null);
     stage.setTheme(theme());
     clip = storeyBox(building, state.storey);
@@ -154,9 +161,19 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
   const fly = (bounds: Bounds | null, turnTo?: { yaw: number; pitch: number }): void => {
     if (bounds === null) return;
     const { yaw, pitch } = turnTo ?? { yaw: control.eye.yaw, pitch: Math.max(0.2, Math.min(1.1, control.eye.pitch)) };
-    control.fly(framing(bounds, yaw, pitch, aspect()));
+    control.fly(clearOf(parts.covered(), framing(bounds, yaw, pitch, aspect())));
   };
   const sectionsOf = (rows: readonly number[]): number[] => rows.flatMap((row) => building.sectionsOf[row] ?? []);
+  /** The same view in the part of the picture that nothing covers. */
+  const clearOf = (covered: number, eye: Eye): Eye => {
+    const height = Math.max(1, canvas.clientHeight);
+    const free = Math.max(height * 0.3, height - covered);
+    const distance = eye.distance * (height / free);
+    const lower = ((height - free) / 2) * stage.shared.pixel.value * distance;
+    const [cy, sy, cp, sp] = [Math.cos(eye.yaw), Math.sin(eye.yaw), Math.cos(eye.pitch), Math.sin(eye.pitch)];
+    const [x, y, z] = eye.target;
+    return { ...eye, distance, target: [x + sy * sp * lower, y - cy * sp * lower, z - cp * lower] };
+  };
   const view: SceneView = {
     stats: stage.stats,
     framePipes(rows) {
@@ -240,6 +257,24 @@ function fixtureBounds(building: Building): Bounds | null {
     of(...boxes.map((box) => box[end][axis]));
   const [low, high] = [edge('min', Math.min), edge('max', Math.max)];
   return { min: [low(0), low(1), low(2)], max: [high(0), high(1), high(2)] };
+}
+
+/** The walls round the piping belong to the first picture; a whole site beside it does not. */
+function withFabric(building: Building, piped: Bounds): Bounds {
+  const { fabric } = building.data.scene;
+  const span = Math.max(...([0, 1, 2] as const).map((axis) => piped.max[axis] - piped.min[axis]), 4);
+  const min: [number, number, number] = [...piped.min];
+  const max: [number, number, number] = [...piped.max];
+  const stretch = (axis: 0 | 1 | 2, millimetres: number): void => {
+    const metres = millimetres / 1000;
+    if (metres < piped.min[axis] - span || metres > piped.max[axis] + span) return;
+    min[axis] = Math.min(min[axis], metres);
+    max[axis] = Math.max(max[axis], metres);
+  };
+  for (const x of fabric.x) stretch(0, x);
+  for (const y of fabric.y) stretch(1, y);
+  for (const z of [...fabric.base, ...fabric.top]) stretch(2, z);
+  return { min, max };
 }
 
 const widened = ({ min, max }: Bounds, by: number): Bounds => ({

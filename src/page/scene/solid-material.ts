@@ -53,7 +53,7 @@ void main() {
   vec3 n = normalize(vNormal);
   if (!gl_FrontFacing) n = -n;
   float sun = 0.5 + 0.5 * dot(n, normalize(vec3(-0.35, 0.65, 0.67)));
-  outColour = vec4(colour * min(0.7 + 0.36 * sun, 1.04), alpha);
+  outColour = vec4(colour * min(0.55 + 0.47 * sun, 1.0), alpha);
 }`;
 
 const lineVertex = /* glsl */ `

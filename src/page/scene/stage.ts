@@ -5,6 +5,7 @@ import type { Ray } from './pick.ts';
 import { type SharedUniforms, sharedUniforms } from './pipe-material.ts';
 import type { Detail } from './piping.ts';
 import type { Point } from './polylines.ts';
+import { smoothStill } from './smooth-still.ts';
 
 export interface Stage {
   readonly scene: Scene;
@@ -16,25 +17,26 @@ export interface Stage {
   setTheme(theme: Theme): void;
   /** Draws once at the next frame, however often it is called before. */
   draw(): void;
-  /** Draws now, finely: what stands still may take its time. */
+  /** Draws now and finely: what stands still may take its time. */
   drawStill(): void;
   project(at: Point): { readonly x: number; readonly y: number } | null;
   ray(x: number, y: number): Ray;
   resize(): void;
   /** How much to draw while moving, by what frames have cost so far. */
   readonly detail: Detail;
-  onFrame: () => void;
   dispose(): void;
 }
 
-/** Milliseconds: a frame dearer than this while moving asks for less detail, one far cheaper for more. */
+/** Milliseconds: a frame dearer than this while moving asks for less detail. */
 const dear = 42;
+/** A picture dearer than this is not drawn eight times only to smooth its edges. */
 const dearStill = 400;
 
 /** The renderer and its camera. Nothing runs while nothing changes. Throws where the browser has no WebGL 2. */
 export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
   const software = drawsInSoftware();
   const renderer = new WebGLRenderer({ canvas, antialias: !software, powerPreference: 'high-performance' });
+  renderer.setPixelRatio(software ? 1 : Math.min(2, window.devicePixelRatio));
   const scene = new Scene();
   scene.background = new Color();
   const camera = new PerspectiveCamera(fieldOfView, 1);
@@ -42,30 +44,23 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
   const stats = { frames: 0, lastMs: 0, calls: 0, software };
   const ladder: readonly Detail[] = ['full', 'light', 'lines'];
   let rung = software && sections > 20_000 ? 2 : software && sections > 3000 ? 1 : 0;
-  let ratio = 1;
   let asked = 0;
-  let fine = 1;
   const reading = new Uint8Array(4);
-  const paint = (scale: number): number => {
+  const paint = (): void => {
     const began = performance.now();
-    if (scale !== ratio) {
-      ratio = scale;
-      renderer.setPixelRatio(scale);
-    }
     renderer.render(scene, camera);
     // Software drawing is only done when somebody looks at it: without this the measure would be of an empty promise.
     if (software) renderer.getContext().readPixels(0, 0, 1, 1, 0x1908, 0x1401, reading);
     stats.frames++;
     stats.calls = renderer.info.render.calls;
     stats.lastMs = performance.now() - began;
-    return stats.lastMs;
   };
+  const smooth = software ? smoothStill(canvas, camera, paint) : null;
   const stage: Stage = {
     scene,
     shared,
     canvas,
     stats,
-    onFrame: () => undefined,
     get detail() {
       return ladder[rung] ?? 'full';
     },
@@ -82,23 +77,20 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
       shared.light.value = theme.name === 'light' ? 1 : 0;
     },
     draw() {
+      smooth?.end();
       if (asked !== 0) return;
       asked = requestAnimationFrame(() => {
         asked = 0;
-        const took = paint(software ? 1 : Math.min(2, window.devicePixelRatio));
-        if (took > dear && rung < ladder.length - 1 && sections > 500) rung++;
-        stage.onFrame();
+        paint();
+        if (stats.lastMs > dear && rung < ladder.length - 1 && sections > 500) rung++;
       });
     },
     drawStill() {
       cancelAnimationFrame(asked);
       asked = 0;
-      if (fine > 1 && stats.lastMs > dearStill) fine = 1;
-      const wanted = software ? Math.max(fine, window.devicePixelRatio) : Math.min(2, window.devicePixelRatio);
-      const took = paint(wanted);
-      if (software) fine = took * 4 < dearStill ? 2 : took > dearStill ? 1 : fine;
-      if (software && fine > wanted && took * 4 < dearStill) paint(fine);
-      stage.onFrame();
+      smooth?.end();
+      if (smooth !== null && stats.lastMs < dearStill) smooth.begin();
+      else paint();
     },
     project(at) {
       const point = new Vector3(...at).project(camera);
@@ -123,6 +115,7 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
     },
     dispose() {
       cancelAnimationFrame(asked);
+      smooth?.end();
       renderer.dispose();
     },
   };

@@ -1,4 +1,4 @@
-import { frenchCodes, frenchFactWords, frenchKinds, frenchRoles, frenchRules } from './french-trade.ts';
+import { frenchCodes, frenchFactWords, frenchKinds, frenchPhrases, frenchRoles, frenchRules } from './french-trade.ts';
 import type { Words } from './words.ts';
 
 const some = (count: number, one: string, many: string): string =>
@@ -90,8 +90,9 @@ export const french: Words = {
       'Provisoire : un chiffre du tableau n’a pas pu être lu; la prochaine ligne plus lourde qui en a un a été prise.',
     why: (size) => `Pourquoi ${size}`,
     whyNot: 'Pourquoi pas plus petit',
-    failsBelow: (size, rules) => `Sous ${size}, une exigence n’est plus satisfaite : ${rules}.`,
-    nextDemand: (size, rule) => `Sans cela, « ${rule} » demanderait encore ${size}.`,
+    failsBelow: (size, rules) => `Sous ${size}, « ${rules} » n’est plus satisfait.`,
+    nextDemand: (size, rule) => `L’exigence suivante, « ${rule} », demande ${size}.`,
+    holds: (size, load) => `${size} tient ${load}`,
     onlyDemand: 'Aucune autre exigence ne vise ce tuyau.',
     demands: 'Toutes les exigences pour ce tuyau',
     demand: 'Exigence',
@@ -273,4 +274,21 @@ export const french: Words = {
   and: 'et',
   to: 'à',
   level: 'de niveau',
+  colon: ' : ',
+  codeTitle: (id, title) => (id.startsWith('npc-') ? 'Code national de la plomberie – Canada' : title),
+  trapHow: {
+    drawn: 'dessiné',
+    'built-in': 'intégré à l’appareil',
+    outlet: 'supposé à la sortie de l’appareil',
+    'foot-of-drop': 'supposé au pied de la chute',
+  },
+  sewerHow: {
+    answer: 'selon votre réponse',
+    named: 'nommée ainsi dans la maquette',
+    ports: 'là où mènent les ports',
+    lowest: 'le bout ouvert le plus bas',
+    largest: 'le plus grand bout ouvert',
+    first: 'retenue faute de mieux',
+  },
+  phrases: frenchPhrases,
 };

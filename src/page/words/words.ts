@@ -71,6 +71,8 @@ export interface Words {
     readonly failsBelow: (size: string, rules: string) => string;
     readonly nextDemand: (size: string, rule: string) => string;
     readonly onlyDemand: string;
+    /** `4 in holds 36 FU` */
+    readonly holds: (size: string, load: string) => string;
     readonly demands: string;
     readonly demand: string;
     readonly numbers: string;
@@ -223,6 +225,14 @@ export interface Words {
   readonly and: string;
   readonly to: string;
   readonly level: string;
+  /** Before a list: French sets a space before its colon. */
+  readonly colon: string;
+  readonly codeTitle: (id: string, title: string) => string;
+  /** Where a trap is known to be, by the result's word for it. */
+  readonly trapHow: Readonly<Record<string, string>>;
+  readonly sewerHow: Readonly<Record<string, string>>;
+  /** Sentences of the result that come from a fixed list. */
+  readonly phrases: Readonly<Record<string, string>>;
 }
 
 export const wordsIn = (language: Language): Words => (language === 'fr' ? french : english);
@@ -247,3 +257,7 @@ export function kindName(words: Words, kind: string | null): string {
 export function ruleName(words: Words, { rule, title }: { readonly rule: string; readonly title: string }): string {
   return (Object.hasOwn(words.rules, rule) ? words.rules[rule] : undefined) ?? title;
 }
+
+/** A sentence of the result that its maker took from a fixed list, in the page's language where the list is known. */
+export const phrase = (words: Words, text: string): string =>
+  (Object.hasOwn(words.phrases, text) ? words.phrases[text] : undefined) ?? text;
