@@ -8,6 +8,7 @@ import type { Placements } from '../solids/placements.ts';
 import { type ProductShape, readShape } from '../solids/product-shape.ts';
 import type { Solids } from '../solids/solids.ts';
 import type { ElementRecord } from './elements.ts';
+import { roundedMm } from './judge.ts';
 
 /** What is drawn of an element. */
 export interface Drawn {
@@ -52,6 +53,3 @@ export function drawnSizes({ centreLine }: Drawn): SizeWitness[] {
   add('inner', innerDiameter);
   return found;
 }
-
-/** Millionths of a millimetre are the dust of arithmetic. */
-export const roundedMm = (mm: number): number => Math.round(mm * 1e6) / 1e6;

@@ -46,7 +46,7 @@ export function elementRecords(reader: Reader, tiesOf: (record: number) => Ties,
 export function readElement(reader: Reader, record: number, ties: Ties, types: Types): ElementRecord {
   const { index, follow } = reader;
   const cursor = reader.cursor().at(index.args[record]!);
-  const globalId = cursor.text() ?? '';
+  const globalId = cursor.unique() ?? '';
   const name = cursor.skip(1).text();
   const description = cursor.text();
   const objectType = cursor.text();

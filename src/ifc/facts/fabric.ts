@@ -58,7 +58,7 @@ const inOrder = (reader: Reader, classes: readonly string[]): number[] =>
 function fabric({ file, reader, placements, solids, storeyOf }: FabricSources, record: number): Fabric {
   const { index, follow } = reader;
   const cursor = reader.cursor().at(index.args[record]!);
-  const globalId = cursor.text() ?? '';
+  const globalId = cursor.unique() ?? '';
   const name = cursor.skip(1).text();
   const placement = follow(cursor.skip(2).id(), record);
   const shape = follow(cursor.id(), record);

@@ -24,6 +24,9 @@ export const nothingWitnessed: Witnessed = { sizes: [], slopes: [], statedLength
 /** Nothing under a millimetre is a pipe's size: zero and 0.000001 stand for "not known" in many models. */
 const leastSize = 0.001;
 
+/** Millionths of a millimetre are the dust of arithmetic. */
+export const roundedMm = (mm: number): number => Math.round(mm * 1e6) / 1e6;
+
 /** Merges property by property: where occurrence and type state the same one, the occurrence's holds. */
 export function judged({ own, ofType, ofPorts }: Sources, kind: ElementClass): Witnessed {
   if (own.length === 0 && ofType.length === 0 && ofPorts.length === 0) return nothingWitnessed;
@@ -60,12 +63,8 @@ export function judged({ own, ofType, ofPorts }: Sources, kind: ElementClass): W
         properties.push(propertyFact(reading, from));
     }
   };
-  const stated = new Set<string>();
-  for (const reading of own) {
-    stated.add(keyOf(reading));
-    take(reading, 'own');
-  }
-  for (const reading of ofType) if (!stated.has(keyOf(reading))) take(reading, 'type');
+  for (const reading of own) take(reading, 'own');
+  for (const reading of ofType) if (!own.some((one) => isSame(one, reading))) take(reading, 'type');
 
   const { width, depth } = sides;
   // Two sides alike are how some programs state a round section.
@@ -82,14 +81,14 @@ export function judged({ own, ofType, ofPorts }: Sources, kind: ElementClass): W
   return { sizes, slopes, statedLength, properties };
 }
 
-const keyOf = ({ set, name }: Reading): string => `${set}\n${name}`;
+const isSame = (a: Reading, b: Reading): boolean => a.name === b.name && a.set === b.set;
 
 function sizeWitness(reading: Reading, means: SizeWitness['means'], from: string): SizeWitness | null {
   const { value, measure, hasUnit, isQuantity } = reading;
   const ground = isQuantity ? 'quantity' : 'property';
   if (typeof value === 'string') return { means, mm: null, text: value, ground, from };
   if (typeof value !== 'number' || measure === 'angle') return null;
-  if (hasUnit) return value > leastSize ? { means, mm: value * 1000, text: null, ground, from } : null;
+  if (hasUnit) return value > leastSize ? { means, mm: roundedMm(value * 1000), text: null, ground, from } : null;
   // A bare number: DN and Nennweite are millimetres by their meaning; others are left to whoever knows the sizes.
   if (!(value > 0)) return null;
   const isMillimetres = means === 'nominal' && value >= 15 && value <= 3000;

@@ -1,5 +1,5 @@
 import type { Reader } from '../reader.ts';
-import type { Ports } from './ports.ts';
+import type { PortLinks } from './ports.ts';
 import type { PropertySets, Reading } from './property-sets.ts';
 import { eachRelation } from './relations.ts';
 import type { Types } from './type-objects.ts';
@@ -21,7 +21,7 @@ export function propertyReadings(
   sets: PropertySets,
   types: Types,
   elements: Uint32Array,
-  ports: Ports,
+  ports: PortLinks,
   walls: readonly number[],
 ): PropertyReadings {
   const { index, follow, type } = reader;
@@ -45,10 +45,12 @@ export function propertyReadings(
     } else if (types.addSet(thing, set)) {
       if (type(thing) === 'IFCWALLTYPE') give(thing, set);
     } else {
-      const port = ports.of(thing);
-      if (port === undefined || port.owner < 0) return;
-      const readings = sets.read(set).map((reading) => ({ port: port.name ?? String(port.stepId), reading }));
-      if (readings.length > 0) byOwner.set(port.owner, [...(byOwner.get(port.owner) ?? []), ...readings]);
+      const port = ports.placeOf(thing);
+      const owner = port < 0 ? -1 : ports.ownerOf[port]!;
+      const readings = owner < 0 ? none : sets.read(set);
+      if (readings.length === 0) return;
+      const name = reader.cursor().at(index.args[thing]!).skip(2).text() ?? `#${index.ids[thing]}`;
+      byOwner.set(owner, [...(byOwner.get(owner) ?? []), ...readings.map((reading) => ({ port: name, reading }))]);
     }
   };
   for (const relation of ['IFCRELDEFINESBYPROPERTIES', 'IFCRELOVERRIDESPROPERTIES']) {

@@ -3,7 +3,7 @@ import type { Cursor } from '../lines/cursor.ts';
 import { nameTable } from '../lines/name-table.ts';
 import { decodeText } from '../lines/text.ts';
 import type { Reader } from '../reader.ts';
-import { statedValue } from './property-value.ts';
+import { type StatedValue, statedValue } from './property-value.ts';
 import type { Units } from './units.ts';
 
 /** One property or quantity that bears on drainage, its lengths in metres and angles in radians. */
@@ -81,15 +81,19 @@ export function propertySetsOf(reader: Reader, units: Units): PropertySets {
     if (stated === null) return;
     const { value, measure, unit, isQuantity } = stated;
     if (typeof value === 'string' && value === name) return; // a template's placeholder
-    const ownUnit = meaning.metres ?? unitFactor(unit, record);
+    const bears = meaning.meaning;
     if (typeof value !== 'number') {
-      into.push({ set, name, meaning: meaning.meaning, value, measure, hasUnit: false, isQuantity });
+      into.push({ set, name, meaning: bears, value, measure, hasUnit: false, isQuantity });
       return;
     }
-    const isLength = measure === 'length' || (measure === 'number' && ownUnit !== null);
-    const factor = isLength ? (ownUnit ?? metres) : measure === 'angle' ? angleFactor(unit, record) : 1;
-    const read = { set, name, meaning: meaning.meaning, value: value * factor, hasUnit: isLength, isQuantity };
-    into.push({ ...read, measure: isLength ? 'length' : measure });
+    const ownUnit = meaning.metres ?? (unit === 0 ? null : unitFactor(unit, record));
+    if (measure === 'length' || (measure === 'number' && ownUnit !== null)) {
+      const length = value * (ownUnit ?? metres);
+      into.push({ set, name, meaning: bears, value: length, measure: 'length', hasUnit: true, isQuantity });
+    } else {
+      const number = measure === 'angle' ? value * angleFactor(unit, record) : value;
+      into.push({ set, name, meaning: bears, value: number, measure, hasUnit: false, isQuantity });
+    }
   };
   const read = (record: number): readonly Reading[] => {
     const known = readings.get(record);
@@ -132,20 +136,25 @@ export function propertySetsOf(reader: Reader, units: Units): PropertySets {
   return { read, named };
 }
 
-/** Value and unit reference of a property or quantity of any kind; the first value of a list. */
-function statedIn(cursor: Cursor, kind: string) {
+interface StatedProperty {
+  readonly value: string | number | boolean;
+  readonly measure: StatedValue['measure'];
+  /** STEP id of the property's own unit; 0 for none. */
+  readonly unit: number;
+  readonly isQuantity: boolean;
+}
+
+/** Value and unit of a property or quantity of any kind; the first value of a list. */
+function statedIn(cursor: Cursor, kind: string): StatedProperty | null {
   switch (kind) {
-    case 'IFCPROPERTYSINGLEVALUE': {
+    case 'IFCPROPERTYSINGLEVALUE':
+    case 'IFCPROPERTYLISTVALUE': {
       const stated = statedValue(cursor.skip(2));
-      return stated === null ? null : { ...stated, unit: cursor.id(), isQuantity: false };
+      return stated === null ? null : withUnit(stated, cursor.id());
     }
     case 'IFCPROPERTYENUMERATEDVALUE': {
       const stated = statedValue(cursor.skip(2));
-      return stated === null ? null : { ...stated, unit: 0, isQuantity: false };
-    }
-    case 'IFCPROPERTYLISTVALUE': {
-      const stated = statedValue(cursor.skip(2));
-      return stated === null ? null : { ...stated, unit: cursor.id(), isQuantity: false };
+      return stated === null ? null : withUnit(stated, 0);
     }
     case 'IFCPROPERTYBOUNDEDVALUE': {
       const upper = statedValue(cursor.skip(2));
@@ -154,19 +163,26 @@ function statedIn(cursor: Cursor, kind: string) {
       const setPoint = cursor.more ? statedValue(cursor) : null;
       // Two bounds that differ are no value.
       const stated = setPoint ?? (upper !== null && upper.value === lower?.value ? upper : null);
-      return stated === null ? null : { ...stated, unit, isQuantity: false };
+      return stated === null ? null : withUnit(stated, unit);
     }
     case 'IFCQUANTITYLENGTH': {
       const unit = cursor.skip(2).id();
       const value = cursor.number();
-      return value === null ? null : { value, measure: 'length' as const, unit, isQuantity: true };
+      return value === null ? null : { value, measure: 'length', unit, isQuantity: true };
     }
     case 'IFCQUANTITYNUMBER':
     case 'IFCQUANTITYCOUNT': {
       const value = cursor.skip(3).number();
-      return value === null ? null : { value, measure: 'number' as const, unit: 0, isQuantity: true };
+      return value === null ? null : { value, measure: 'number', unit: 0, isQuantity: true };
     }
     default:
       return null;
   }
 }
+
+const withUnit = ({ value, measure }: StatedValue, unit: number): StatedProperty => ({
+  value,
+  measure,
+  unit,
+  isQuantity: false,
+});

@@ -1,4 +1,4 @@
-import type { Element, ElementId, Fabric, Port, PortId, Space, StoreyId, System, Wall } from '../../model/model.ts';
+import type { Element, ElementId, Fabric, Port, Space, StoreyId, System, Wall } from '../../model/model.ts';
 import { solidsOf } from '../solids/solids.ts';
 import { associationsOf } from './associations.ts';
 import { drawnBody, drawnSizes } from './drawn-body.ts';
@@ -6,7 +6,7 @@ import { type ElementRecord, elementRecords, readElement, type Ties } from './el
 import { fabricOf, wallRecords } from './fabric.ts';
 import type { JoinedStoreys } from './join-storeys.ts';
 import { judged, sizesInNames } from './judge.ts';
-import { type PortRecord, type Ports, portsOf, threadThrough } from './ports.ts';
+import { portLinks, readPorts } from './ports.ts';
 import { propertyReadings } from './property-readings.ts';
 import { propertySetsOf } from './property-sets.ts';
 import type { Source } from './source.ts';
@@ -37,7 +37,7 @@ export function readFacts(source: Source, storeys: JoinedStoreys, first: FirstId
   const solids = solidsOf(reader, placements, units.radians);
   const sets = propertySetsOf(reader, units);
   const types = typesOf(reader, sets);
-  const portRecords = portsOf(reader, placements);
+  const links = portLinks(reader);
   const { systems, membersOf } = systemsOf(reader, file, first.systems);
   const associations = associationsOf(reader, units.length.metres);
   const storeyOf = (record: number): StoreyId | null => {
@@ -52,16 +52,21 @@ export function readFacts(source: Source, storeys: JoinedStoreys, first: FirstId
     return [];
   };
   const tiesOf = (record: number): Ties => ({
-    ports: portRecords.ownedBy.get(record)?.length ?? 0,
+    ports: links.countOf(record),
     isInSystem: membersOf.has(record),
   });
 
   const records = elementRecords(reader, tiesOf, types);
   const read = Array.from(records, (record) => readElement(reader, record, tiesOf(record), types));
-  const numbers = new Map(Array.from(records, (record, k) => [record, (first.elements + k) as ElementId]));
-  const { ports, ofElement } = numberedPorts(withRealized(reader, portRecords, read), numbers, first.ports);
+  const places = new Map(read.map(({ record }, k) => [record, k]));
+  const elementOf = (record: number): ElementId | null => {
+    const place = places.get(record);
+    return place === undefined ? null : ((first.elements + place) as ElementId);
+  };
+  const isPiping = (record: number): boolean => carriesSize.has(read[places.get(record) ?? -1]?.kind ?? 'other');
+  const { ports, portsOf } = readPorts(reader, placements, links, first.ports, elementOf, isPiping);
   const walls = wallRecords(reader);
-  const readings = propertyReadings(reader, sets, types, records, portRecords, walls);
+  const readings = propertyReadings(reader, sets, types, records, links, walls);
   const { spaces, idOf: spaceIdOf } = spacesOf(source, solids, storeyOf, first.spaces);
 
   const elements = read.map((one, k): Element => {
@@ -90,7 +95,7 @@ export function readFacts(source: Source, storeys: JoinedStoreys, first: FirstId
       systems: systemsAt(record),
       storey: storeyOf(record),
       space: spaceIdOf(spatial.spaceOf(record)),
-      ports: ofElement[k]!,
+      ports: portsOf((first.elements + k) as ElementId),
       material: associations.material(record) ?? associations.material(typeRecord),
       origin: drawn.origin,
       centreLine: drawn.centreLine,
@@ -123,30 +128,3 @@ const namedSizes = ({ type, objectType, name }: ElementRecord): Element['sizes']
     ['ObjectType', objectType, true],
     ['Name', name, false],
   ]);
-
-/** All ports, with the ends of pipes that lie between two ports as their joint's realizing element. */
-function withRealized(
-  reader: Source['reader'],
-  { ports, ownedBy, realized }: Ports,
-  elements: readonly ElementRecord[],
-) {
-  if (realized.length === 0) return ports;
-  const piping = new Set(elements.filter(({ kind }) => carriesSize.has(kind)).map(({ record }) => record));
-  const between = realized.filter(({ element }) => piping.has(element) && !ownedBy.has(element));
-  const ends = between.flatMap((one) => threadThrough(reader, one));
-  return [...ports, ...ends].sort((a, b) => a.stepId - b.stepId);
-}
-
-function numberedPorts(records: readonly PortRecord[], numbers: ReadonlyMap<number, ElementId>, first: number) {
-  const ids = new Map(records.map((port, k) => [port, (first + k) as PortId]));
-  const ofElement: PortId[][] = Array.from(numbers, () => []);
-  const [lowest = 0] = numbers.values();
-  const ports = records.map((port, k): Port => {
-    const owner = numbers.get(port.owner) ?? null;
-    const id = (first + k) as PortId;
-    if (owner !== null) ofElement[owner - lowest]!.push(id);
-    const { stepId, globalId, at, direction, connected, name } = port;
-    return { id, stepId, globalId, owner, at, direction, connected: connected.map((one) => ids.get(one)!), name };
-  });
-  return { ports, ofElement };
-}

@@ -22,7 +22,7 @@ export function spacesOf(
   const cursor = reader.cursor();
   const ids = new Map<number, SpaceId>();
   const spaces = Array.from(spatial.spaces, (record, k): Space => {
-    const globalId = cursor.at(index.args[record]!).text() ?? '';
+    const globalId = cursor.at(index.args[record]!).unique() ?? '';
     const name = cursor.skip(1).text();
     const placement = reader.follow(cursor.skip(2).id(), record);
     const definition = reader.follow(cursor.id(), record);

@@ -74,7 +74,7 @@ export function spatialOf(reader: Reader, placements: Placements): Spatial {
 function storeyRecords(reader: Reader, placements: Placements, records: Uint32Array): StoreyRecord[] {
   const cursor = reader.cursor();
   const found = Array.from(records, (record) => {
-    const globalId = cursor.at(reader.index.args[record]!).text() ?? '';
+    const globalId = cursor.at(reader.index.args[record]!).unique() ?? '';
     const name = cursor.skip(1).text();
     const placement = reader.follow(cursor.skip(2).id(), record);
     const stated = cursor.skip(3).number();

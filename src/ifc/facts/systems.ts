@@ -17,7 +17,7 @@ export function systemsOf(reader: Reader, file: number, first: number): Systems 
   const records = classes.flatMap((name) => [...reader.all(name)]).sort((a, b) => index.ids[a]! - index.ids[b]!);
   const cursor = reader.cursor();
   const systems = records.map((record, k): System => {
-    const globalId = cursor.at(index.args[record]!).text() ?? '';
+    const globalId = cursor.at(index.args[record]!).unique() ?? '';
     const name = cursor.skip(1).text();
     const objectType = cursor.skip(1).text();
     const longName = cursor.more ? cursor.text() : null;

@@ -1,4 +1,5 @@
 import { cross, dot, length, scale, subtract, type Vec3 } from '../../geometry/vector.ts';
+import { readNumbers } from '../lines/number.ts';
 import type { Reader } from '../reader.ts';
 import { compose, type Frame, identity } from './frame.ts';
 
@@ -23,7 +24,7 @@ export interface Placements {
 
 export function placementsOf(reader: Reader, metres: number): Placements {
   const { index, follow, type } = reader;
-  const { args } = index;
+  const { args, bytes } = index;
   const cursor = reader.cursor();
   const numbers: number[] = [];
   const worlds = new Map<number, Frame | null>();
@@ -31,15 +32,18 @@ export function placementsOf(reader: Reader, metres: number): Placements {
   const point = (record: number): Vec3 => {
     if (record < 0) return [0, 0, 0];
     numbers.length = 0;
-    cursor.at(args[record]!).numbers(numbers);
-    const [x = 0, y = 0, z = 0] = numbers;
-    return [x * metres, y * metres, z * metres];
+    readNumbers(bytes, args[record]! + 1, numbers);
+    const n = numbers.length;
+    return [n > 0 ? numbers[0]! * metres : 0, n > 1 ? numbers[1]! * metres : 0, n > 2 ? numbers[2]! * metres : 0];
   };
   const direction = (record: number): Vec3 | null => {
     if (record < 0) return null;
     numbers.length = 0;
-    cursor.at(args[record]!).numbers(numbers);
-    const [x = 0, y = 0, z = 0] = numbers;
+    readNumbers(bytes, args[record]! + 1, numbers);
+    const n = numbers.length;
+    const x = n > 0 ? numbers[0]! : 0;
+    const y = n > 1 ? numbers[1]! : 0;
+    const z = n > 2 ? numbers[2]! : 0;
     const size = Math.hypot(x, y, z);
     return size > 0 && Number.isFinite(size) ? [x / size, y / size, z / size] : null;
   };
@@ -98,13 +102,13 @@ export function placementsOf(reader: Reader, metres: number): Placements {
     return frame;
   };
   const worldOrigin = (record: number): Vec3 | null => {
-    if (record < 0) return null;
-    const here = step(record);
-    if (here === null) return null;
-    const parent = here.parent < 0 ? identity : world(here.parent);
-    if (parent === null) return null;
-    if (here.axes < 0) return [parent[9], parent[10], parent[11]];
-    const [x, y, z] = point(follow(cursor.at(args[here.axes]!).id(), here.axes));
+    if (type(record) !== 'IFCLOCALPLACEMENT') return originIn(world(record));
+    cursor.at(args[record]!);
+    const parentId = cursor.id();
+    const own = follow(cursor.id(), record);
+    const parent = parentId === 0 ? identity : world(follow(parentId, record));
+    if (parent === null || own < 0) return originIn(parent);
+    const [x, y, z] = point(follow(cursor.at(args[own]!).id(), own));
     return [
       parent[0] * x + parent[3] * y + parent[6] * z + parent[9],
       parent[1] * x + parent[4] * y + parent[7] * z + parent[10],
@@ -113,6 +117,8 @@ export function placementsOf(reader: Reader, metres: number): Placements {
   };
   return { metres, point, direction, axes, world, worldOrigin };
 }
+
+const originIn = (frame: Frame | null): Vec3 | null => (frame === null ? null : [frame[9], frame[10], frame[11]]);
 
 /** Frame at `o` with z along `axis` and x as near to `ref` as a right angle allows; defaults as the standard has them. */
 export function rightAngled(o: Vec3, axis: Vec3 | null, ref: Vec3 | null): Frame {
