@@ -20,7 +20,7 @@ const longestName = 1000;
 export function foldText(text: string): readonly Word[] {
   const spread = repairDoubleEncoding(text.slice(0, longestName))
     .normalize('NFKC')
-    .replace(/(?<![\p{L}\p{N}])(?:c?\/?w|m)\/|\s\+\s?/giu, ' with ')
+    .replace(/(?<![\p{L}\p{N}])(?:[wm]\/|c\/w(?![\p{L}\p{N}]))|\s\+\s?/giu, ' with ')
     .replace(/(?<=\p{Ll})(?=\p{Lu})|(?<=\p{Lu})(?=\p{Lu}\p{Ll}{2})/gu, ' ');
   const words: Word[] = [];
   let segment = 0;
