@@ -145,7 +145,7 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
       : `${first(f)} is a ${plain(f.facts.kind)}, but a detail that decides its load is missing: sizes are given for both.`,
   'fixture-unconnected': (f) => `${first(f)} has no drain pipe.`,
   'kind-contradicted': (f) =>
-    `${first(f)} is called one thing by its ${text(f, 'first')} and another by its ${text(f, 'other')}.`,
+    `${first(f)} is taken for a ${plain(f.facts.taken)} by ${text(f, 'takenFrom')}, but ${text(f, 'otherFrom')} says ${plain(f.facts.other)}.`,
   'open-end': (f) =>
     `${first(f)} has an open end${has(f, 'gapM') ? `; the nearest thing is ${f.length(num(f, 'gapM'))} away` : ''}.`,
   'dead-end': (f) =>
