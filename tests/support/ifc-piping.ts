@@ -83,8 +83,12 @@ function colour({ file, old }: IfcSheet, item: Ref, { kind, medium }: DraftEleme
 
 function writeMaterials(sheet: IfcSheet, draft: Draft, refs: readonly Ref[]): void {
   const made = new Map<string, Ref[]>();
-  for (const [index, { material }] of draft.elements.entries())
-    if (material !== null) made.set(material, [...(made.get(material) ?? []), refs[index]!]);
+  for (const [index, { material }] of draft.elements.entries()) {
+    if (material === null) continue;
+    const of = made.get(material) ?? [];
+    of.push(refs[index]!);
+    made.set(material, of);
+  }
   for (const [material, of] of made)
     sheet.file.add(
       'IFCRELASSOCIATESMATERIAL',

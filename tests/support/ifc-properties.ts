@@ -31,7 +31,9 @@ export function writeType(sheet: IfcSheet, elements: readonly DraftElement[], re
   for (const [index, element] of elements.entries()) {
     const carried = setsOf(sheet, element).filter(({ name }) => onType(sheet, name));
     const key = JSON.stringify([element.ifcClass, element.predefined, element.typeName, carried]);
-    alike.set(key, [...(alike.get(key) ?? []), index]);
+    const members = alike.get(key) ?? [];
+    members.push(index);
+    alike.set(key, members);
   }
   for (const [key, members] of alike) {
     const element = elements[members[0]!]!;

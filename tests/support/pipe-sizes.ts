@@ -33,7 +33,7 @@ const inch = 0.0254;
 
 export function sizeOfInches(inches: number): PipeSize | undefined {
   const row = rows.find(([size]) => size === inches);
-  return row && made(row, `${row[1]} in`, row[0] * inch);
+  return row && made(row, `${row[1]} in`, Math.round(row[0] * inch * 1e6) / 1e6);
 }
 
 export function sizeOfDn(dn: number): PipeSize | undefined {

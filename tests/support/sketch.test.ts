@@ -1,3 +1,5 @@
+import { readFileSync } from 'node:fs';
+import { resolve } from 'node:path';
 import { expect, test } from 'vitest';
 import { InputError } from '../../src/findings/input-error.ts';
 import { distance, length } from '../../src/geometry/vector.ts';
@@ -109,6 +111,76 @@ test('a block is placed as often as it is needed', () => {
   expect(block.pipes.map(({ name }) => name)).toEqual(['A.L-A.J', 'A.J-STACK', 'B.L-B.J', 'B.J-STACK']);
   expect(block.nodes.get('B.J')?.at).toEqual([1, 0.3, 0.5]);
   expect(modelOf(block).elements.find(({ name }) => name === 'B.L')?.space).toBe(0);
+});
+
+test('the notation page shows a drawing that can be read', () => {
+  const page = readFileSync(resolve(import.meta.dirname, '../../sample-models/NOTATION.md'), 'utf8');
+  const blocks = [...page.matchAll(/```text\n([\s\S]*?)```/g)].map((match) => match[1]!);
+  expect(blocks).toHaveLength(1);
+  const drawn = sketch(blocks[0]!);
+  expect(drawn.pipes.map(({ name }) => name)).toEqual(['L1-T1', 'T1-J1', 'J1-F1', 'F1-OUT', 'J1-TOP']);
+  expect(
+    modelOf(drawn)
+      .elements.filter(({ kind }) => kind === 'fitting')
+      .map(({ name }) => name),
+  ).toEqual(['J1', 'F1', 'OUT']);
+});
+
+test('systems, materials, stated slopes and bare joints', () => {
+  const drawn = sketch(`
+    system drain "Soil and waste" wastewater
+    material "cast iron"
+    node A at 0 0 0 bare
+    drain 3 in states 1:100: B (at 2 0 0.04) > A
+    drain 3 in material "copper": A > C (from A west 2 fall 1:50)
+    rain 4 in: R (at 0 5 3) > S (down 3)
+  `);
+  const model = modelOf(drawn);
+  expect(model.systems.map(({ name, predefinedType }) => `${name} ${predefinedType}`)).toEqual([
+    'Soil and waste WASTEWATER',
+    'Rainwater RAINWATER',
+  ]);
+  const told = model.elements.map(
+    ({ name, material, slopes }) => `${name} ${material} ${slopes.map(({ slope }) => slope.toFixed(3))}`,
+  );
+  expect(told).toEqual(['B-A cast iron 0.010', 'A-C copper 0.020', 'R-S cast iron ']);
+  const [first, second] = model.elements;
+  const partners = first!.ports.flatMap((port) =>
+    model.ports[port]!.connected.map((other) => model.ports[other]!.owner),
+  );
+  expect(partners).toEqual([second!.id]);
+});
+
+test('what a fixture says of itself, as a reader would find it', () => {
+  const drawn = sketch(`
+    urinal U1 at 0 0 0.5, stall, trap 2 in, reading circuit-vent
+    urinal U2 at 1 0 0.5, siphon
+    closet W1 at 2 0 0, tank
+    closet W2 at 3 0 0, valve
+    shower S at 4 0 0, heads 3, trap DN 80
+    floor-drain F1 at 5 0 0, emergency, trap 3 in
+    floor-drain F2 at 6 0 0, untrapped
+    lavatory L at 7 0 0.6, style "dental", named "Basin 12"
+    thing X at 8 0 0.4, named "object-03"
+    trap T at 9 0 0, 1 1/2 in
+    admittance-valve V at 9 0 1
+  `);
+  const told = modelOf(drawn).elements.map(({ name, ifcClass, predefinedType, typeName, properties }) =>
+    [name, ifcClass, predefinedType, typeName, ...properties.map((fact) => `${fact.name} ${fact.value}`)].join(' | '),
+  );
+  expect(told).toEqual([
+    'U1 | IfcSanitaryTerminal | URINAL | Stall urinal | UrinalType STALL | TrapSize 0.0508 | Venting circuit-vent',
+    'U2 | IfcSanitaryTerminal | URINAL | Wall urinal, siphon jet | UrinalType WALLHUNG',
+    'W1 | IfcSanitaryTerminal | TOILETPAN | Water closet, flush tank | ToiletPanType WASHDOWN | ToiletType CLOSECOUPLED | FlushType Flush tank',
+    'W2 | IfcSanitaryTerminal | TOILETPAN | Water closet, flush valve | ToiletPanType WASHDOWN | FlushType Flush valve',
+    'S | IfcSanitaryTerminal | SHOWER | Shower, 3 heads | NumberOfHeads 3 | DrainSize 0.08',
+    'F1 | IfcWasteTerminal | FLOORTRAP | Emergency floor drain | Emergency true | OutletConnectionSize 0.0762',
+    'F2 | IfcWasteTerminal | FLOORWASTE | Floor drain',
+    'L | IfcSanitaryTerminal | WASHHANDBASIN | Basin 12',
+    'X | IfcSanitaryTerminal |  | object-03',
+    'T | IfcWasteTerminal | WASTETRAP | P-trap | OutletConnectionSize 0.0381',
+    'V | IfcValve | ANTIVACUUM | Air admittance valve',
+  ]);
 });
 
 const faults: readonly (readonly [text: string, where: string, problem: RegExp])[] = [
