@@ -24,8 +24,7 @@ export function boxGrid(boxes: readonly (Box | null)[]): BoxGrid {
   const onLevel: number[][] = Array.from({ length: levels }, () => []);
   boxes.forEach((box, item) => {
     if (box === null || !hasNumbers(box)) return;
-    bounds.set(box.min, 6 * item);
-    bounds.set(box.max, 6 * item + 3);
+    setBounds(bounds, 6 * item, box);
     const size = Math.max(box.max[0] - box.min[0], box.max[1] - box.min[1], box.max[2] - box.min[2]);
     let l = 0;
     while (l < levels - 1 && size > finest * step ** l * (widest - 1)) l++;
@@ -82,8 +81,7 @@ export function boxGrid(boxes: readonly (Box | null)[]): BoxGrid {
     touching(where, visit) {
       if (!hasNumbers(where)) return;
       turn++;
-      wanted.set(where.min, 0);
-      wanted.set(where.max, 3);
+      setBounds(wanted, 0, where);
       for (let l = 0; l < levels; l++) {
         const here = onLevel[l]!;
         if (here.length === 0) continue;
@@ -105,6 +103,15 @@ export function boxGrid(boxes: readonly (Box | null)[]): BoxGrid {
 
 const hasNumbers = ({ min, max }: Box): boolean =>
   Number.isFinite(min[0] + min[1] + min[2]) && Number.isFinite(max[0] + max[1] + max[2]);
+
+function setBounds(bounds: Float64Array, at: number, { min, max }: Box): void {
+  bounds[at] = min[0];
+  bounds[at + 1] = min[1];
+  bounds[at + 2] = min[2];
+  bounds[at + 3] = max[0];
+  bounds[at + 4] = max[1];
+  bounds[at + 5] = max[2];
+}
 
 /** First and last cell along each axis. Cells past 32 bits wrap: they only share buckets, and boxes are compared anyway. */
 function cellsOf(bounds: Float64Array, at: number, level: number, cells: Int32Array): void {

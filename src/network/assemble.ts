@@ -189,15 +189,23 @@ function inferences(
   jointAt: (node: number) => number,
   stays: (node: number) => boolean,
 ): ReadonlyMap<number, NonNullable<Joint['inferred']>> {
-  const found = new Map<number, NonNullable<Joint['inferred']>>();
+  const at = new Map<number, Weld[]>();
+  const note = (joint: number, weld: Weld): void => {
+    const known = at.get(joint);
+    if (known === undefined) at.set(joint, [weld]);
+    else known.push(weld);
+  };
   for (const weld of welds.all) {
     if (weld.how === 'ports' || !stays(weld.nodes[0])) continue;
-    for (const joint of new Set(weld.nodes.map(jointAt))) found.set(joint, widened(found.get(joint), weld, weld.how));
+    const [a, b] = [jointAt(weld.nodes[0]), jointAt(weld.nodes[1])];
+    note(a, weld);
+    if (b !== a) note(b, weld);
+  }
+  const found = new Map<number, NonNullable<Joint['inferred']>>();
+  for (const [joint, inferred] of at) {
+    const widest = inferred.reduce((a, b) => (b.gap > a.gap ? b : a));
+    const between = [...new Set(inferred.flatMap((weld) => weld.between))].sort((a, b) => a - b);
+    found.set(joint, { how: widest.how as JointGround, gap: metres(widest.gap), between });
   }
   return found;
-}
-
-function widened(known: Joint['inferred'] | undefined, weld: Weld, how: JointGround): NonNullable<Joint['inferred']> {
-  const between = [...new Set([...(known?.between ?? []), ...weld.between])].sort((a, b) => a - b);
-  return known && known.gap >= weld.gap ? { ...known, between } : { how, gap: metres(weld.gap), between };
 }

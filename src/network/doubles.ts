@@ -3,7 +3,7 @@ import { boxCentre, grown } from '../geometry/box.ts';
 import { boxGrid } from '../geometry/box-grid.ts';
 import { type Box, distance } from '../geometry/vector.ts';
 import type { Identity } from '../model/identity.ts';
-import type { Element, ElementId, Model } from '../model/model.ts';
+import type { Element, Model } from '../model/model.ts';
 import { doubled } from './tolerance.ts';
 
 /**
@@ -19,20 +19,23 @@ export function findDoubles(
   const findings: Finding[] = [];
   const marks = model.elements.map((element) => (takesPart[element.id] ? markOf(element, identities) : null));
   const grid = boxGrid(marks);
-  const better = preference(model, identities);
-  for (const element of [...model.elements].sort(better)) {
-    const mark = marks[element.id];
-    if (mark === null || mark === undefined || keeper[element.id] !== element.id) continue;
-    const found: ElementId[] = [];
+  const pairs: [Element, Element][] = [];
+  for (const [id, mark] of marks.entries()) {
+    if (mark === null) continue;
+    const element = model.elements[id]!;
     grid.touching(grown(mark, doubled), (other) => {
       const it = model.elements[other]!;
-      if (better(element, it) < 0 && keeper[other] === other && isDouble(element, it, identities, model))
-        found.push(it.id);
+      if (other > id && isDouble(element, it, identities, model)) pairs.push([element, it]);
     });
-    for (const other of found.sort((a, b) => a - b)) {
-      keeper[other] = element.id;
-      findings.push(finding('doubled-element', [other, element.id], { part: identities[other]!.part }));
-    }
+  }
+  const better = preference(model, identities);
+  const inOrder = pairs
+    .map(([a, b]) => (better(a, b) < 0 ? ([a, b] as const) : ([b, a] as const)))
+    .sort(([a, x], [b, y]) => better(a, b) || better(x, y));
+  for (const [kept, other] of inOrder) {
+    if (keeper[kept.id] !== kept.id || keeper[other.id] !== other.id) continue;
+    keeper[other.id] = kept.id;
+    findings.push(finding('doubled-element', [other.id, kept.id], { part: identities[other.id]!.part }));
   }
   return { keeper, findings: findings.sort((a, b) => a.about[0]! - b.about[0]!) };
 }
@@ -87,12 +90,11 @@ function areConnected(a: Element, b: Element, model: Model): boolean {
 }
 
 function preference(model: Model, identities: readonly Identity[]): (a: Element, b: Element) => number {
-  const joined = model.elements.map((element) =>
-    element.ports.reduce((n, port) => n + ((model.ports[port]?.connected.length ?? 0) > 0 ? 1 : 0), 0),
-  );
+  const joined = ({ ports }: Element): number =>
+    ports.filter((port) => (model.ports[port]?.connected.length ?? 0) > 0).length;
   const said = (element: Element): number => (identities[element.id]!.medium === null ? 0 : 1);
   return (a, b) =>
-    joined[b.id]! - joined[a.id]! ||
+    joined(b) - joined(a) ||
     said(b) - said(a) ||
     (a.globalId < b.globalId ? -1 : a.globalId > b.globalId ? 1 : a.id - b.id);
 }

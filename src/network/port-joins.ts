@@ -35,21 +35,20 @@ export function joinPorts(
 ): PortJoins {
   const nodes = nodesOfPorts(model, piping, keeper, welds);
   const contradictions: Contradiction[] = [];
-  const done = new Set<number>();
   for (const port of model.ports) {
     const a = nodes[port.id]!;
     if (a < 0 || suppliesOnly(port, model, identities)) continue;
-    for (const id of port.connected) {
+    for (const [place, id] of port.connected.entries()) {
       const partner = model.ports[id];
       if (partner === undefined || suppliesOnly(partner, model, identities)) continue;
+      const told = (id < port.id && partner.connected.includes(port.id)) || port.connected.indexOf(id) < place;
+      if (told) continue;
       const b = nodes[id]!;
       if (b < 0) {
         if (partner.owner !== null) welds.hold(a);
         continue;
       }
-      const pair = Math.min(port.id, id) * model.ports.length + Math.max(port.id, id);
-      if (done.has(pair) || welds.elementOf(a) === welds.elementOf(b)) continue;
-      done.add(pair);
+      if (welds.elementOf(a) === welds.elementOf(b)) continue;
       const apart = port.at !== null && partner.at !== null ? distance(port.at, partner.at) : null;
       const drawn = gapOf(a, b, piping, welds);
       const gap = Math.min(apart ?? drawn ?? 0, drawn ?? apart ?? 0);
@@ -78,16 +77,17 @@ function saidDirection(port: Port, partner: Port | undefined): 'source' | 'sink'
 
 function nodesOfPorts(model: Model, piping: Piping, keeper: Int32Array, welds: Welds): Int32Array {
   const nodes = new Int32Array(model.ports.length).fill(-1);
-  const ofPipe = new Map<number, Port[]>();
+  const ofPipe: Port[][] = piping.pipes.map(() => []);
   for (const port of model.ports) {
     if (port.owner === null) continue;
     const owner = keeper[port.owner]!;
     const pipe = piping.pipeOf[owner]!;
     const body = piping.bodyOf[owner]!;
     if (body >= 0) nodes[port.id] = bodyNode(piping, body);
-    if (pipe >= 0) ofPipe.set(pipe, [...(ofPipe.get(pipe) ?? []), port]);
+    if (pipe >= 0) ofPipe[pipe]!.push(port);
   }
-  for (const [pipe, ports] of [...ofPipe].sort(([a], [b]) => a - b)) {
+  for (const [pipe, ports] of ofPipe.entries()) {
+    if (ports.length === 0) continue;
     const part = piping.pipes[pipe]!;
     portPlaces(part, ports, model).forEach((place, i) => {
       const port = ports[i]!;

@@ -65,6 +65,10 @@ export function proposeJoins(
     const mine: Proposal[] = [];
     const around = grown({ min: end.at, max: end.at }, far);
     bodyGrid.touching(around, (body) => add1(mine, toBody(end, body, piping, reach)));
+    if (mine.some(({ within, gap }) => within && gap <= asNear)) {
+      proposals.push(...mine);
+      continue;
+    }
     endGrid.touching(grown(around, Math.max(end.diameter, leastSocket)), (i) => {
       const other = views[i];
       if (other) add1(mine, toEnd(end, other, piping, reach));

@@ -2,6 +2,7 @@ import { distance } from '../geometry/vector.ts';
 import type { Model } from '../model/model.ts';
 import { bodyNode, endPoint, isEnd, type Piping } from './piping.ts';
 import type { Proposal } from './propose-joins.ts';
+import { tieBreaker } from './tie-breaker.ts';
 import { type Reach, samePlace } from './tolerance.ts';
 import type { Welds } from './welds.ts';
 
@@ -16,7 +17,12 @@ export function settleJoins(
   welds: Welds,
   reach: Reach,
 ): void {
-  const order = proposals.filter(({ within }) => within).sort(byCost(model, piping, welds));
+  const order = inOrder(
+    proposals.filter(({ within }) => within),
+    model,
+    piping,
+    welds,
+  );
   const mates = new Map<number, number[]>();
   for (const proposal of order) {
     const { end, to, gap } = proposal;
@@ -81,26 +87,24 @@ function joinWall(
   welds.join(end, welds.wall(pipe, at), 'end-on-wall', gap);
 }
 
-function byCost(model: Model, piping: Piping, welds: Welds): (a: Proposal, b: Proposal) => number {
-  const name = (node: number): string => model.elements[welds.elementOf(node)]!.globalId;
-  const target = ({ to }: Proposal): string =>
+function inOrder(proposals: Proposal[], model: Model, piping: Piping, welds: Welds): readonly Proposal[] {
+  const tie = tieBreaker(model);
+  const target = ({ to }: Proposal): number =>
     to.is === 'body'
-      ? model.elements[piping.bodies[to.body]!.element]!.globalId
+      ? piping.bodies[to.body]!.element
       : to.is === 'end'
-        ? name(to.end)
-        : model.elements[piping.pipes[to.pipe]!.element]!.globalId;
+        ? welds.elementOf(to.end)
+        : piping.pipes[to.pipe]!.element;
   const kind = { body: 0, end: 1, wall: 2 } as const;
   // Costs that differ by less than a micrometre are equal: turning a model must not decide.
-  return (a, b) => {
-    const difference = Math.round(a.cost * 1e6) - Math.round(b.cost * 1e6);
+  const cost = Float64Array.from(proposals, (proposal) => 4 * Math.round(proposal.cost * 1e6) + kind[proposal.to.is]);
+  const order = Int32Array.from(proposals, (_, i) => i).sort((i, j) => {
+    const difference = cost[i]! - cost[j]!;
     if (difference !== 0) return difference;
-    if (a.to.is !== b.to.is) return kind[a.to.is] - kind[b.to.is];
-    const [na, nb] = [name(a.end), name(b.end)];
-    if (na !== nb) return na < nb ? -1 : 1;
-    const [ta, tb] = [target(a), target(b)];
-    if (ta !== tb) return ta < tb ? -1 : 1;
-    return a.end - b.end;
-  };
+    const [a, b] = [proposals[i]!, proposals[j]!];
+    return tie(welds.elementOf(a.end), welds.elementOf(b.end)) || tie(target(a), target(b)) || a.end - b.end;
+  });
+  return Array.from(order, (i) => proposals[i]!);
 }
 
 /** Ends that nothing has been joined to. */
