@@ -1,5 +1,6 @@
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import type { Finding } from '../findings/finding.ts';
+import type { PlanPoint } from '../geometry/plan-outline.ts';
 import type { Loads } from '../loads/loads.ts';
 import type { Answers } from '../model/answers.ts';
 import type { Identity } from '../model/identity.ts';
@@ -23,6 +24,8 @@ export interface Outcome {
   readonly model: Model;
   readonly identities: readonly Identity[];
   readonly network: Network;
+  /** Of the building in plan; null where the model draws none. */
+  readonly outline: readonly PlanPoint[] | null;
   readonly paths: Paths;
   readonly code: PlumbingCode;
   readonly answers: Answers;

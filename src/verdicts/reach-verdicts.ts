@@ -1,5 +1,6 @@
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import { type Finding, finding } from '../findings/finding.ts';
+import type { PlanPoint } from '../geometry/plan-outline.ts';
 import type { Answers } from '../model/answers.ts';
 import type { Identity } from '../model/identity.ts';
 import type { Model } from '../model/model.ts';
@@ -16,6 +17,7 @@ export interface VerdictFacts {
   readonly model: Model;
   readonly identities: readonly Identity[];
   readonly network: Network;
+  readonly outline: readonly PlanPoint[] | null;
   readonly paths: Paths;
   readonly code: PlumbingCode;
   readonly answers: Answers;
