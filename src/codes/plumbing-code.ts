@@ -47,7 +47,19 @@ export interface PlumbingCode {
   };
   /** Fixtures in one space that count less together than one by one; null where the code has no such rule. */
   readonly group: GroupRule | null;
+  /** Which of several fixtures on one trap put their load in; null where the code counts each by itself. */
+  readonly sharedTrap: SharedTrapRule | null;
 }
+
+/** One answer for each fixture: false where another one on the trap counts for it. */
+export type SharedTrapRule = (
+  fixtures: readonly {
+    readonly kind: FixtureKind | null;
+    readonly domestic: boolean | null;
+    readonly row: FixtureRow;
+    readonly load: Load;
+  }[],
+) => readonly boolean[];
 
 export interface FreeTrapFacts {
   readonly kind: FixtureKind | null;

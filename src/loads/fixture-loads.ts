@@ -8,6 +8,7 @@ import type { FixturePath, Paths } from '../paths/paths.ts';
 import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
 import type { FixtureLoad, Scenario } from './loads.ts';
 import { type ModelledSize, readSize, sizeOfLength } from './read-size.ts';
+import { countSharedTraps } from './shared-traps.ts';
 
 export interface FixtureFacts {
   readonly model: Model;
@@ -21,7 +22,7 @@ export interface FixtureFacts {
 
 /** Row, trap and load of every fixture in one scenario, by fixture id. */
 export function fixtureLoads(facts: FixtureFacts, scenario: Scenario): FixtureLoad[] {
-  return facts.paths.fixtures.map((fixture) => {
+  const single = facts.paths.fixtures.map((fixture): FixtureLoad => {
     const { kind, detail } = facts.identities[fixture.element]!;
     const rows = facts.code.fixtures.rowsFor(kind, detail);
     const witnessed = trapWitness(facts, fixture);
@@ -33,6 +34,7 @@ export function fixtureLoads(facts: FixtureFacts, scenario: Scenario): FixtureLo
     );
     return { ...chosen, settled: kind !== null && alike };
   });
+  return countSharedTraps(facts, single);
 }
 
 interface Candidate {

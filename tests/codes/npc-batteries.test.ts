@@ -79,7 +79,10 @@ describe('circuit vented: the branch carries everything (Table 2.4.10.6.-B), and
     const trail = run.pipe('J4-RV').trail.map(({ rule, asks, governs }) => `${rule} ${asks?.label} ${governs}`);
     expect(trail).toContain('NPC-R16 2½ in false');
     expect(trail).toContain('NPC-R63 3 in true');
-    expect(line(run, ['CV-J2', 'J4-RV'])).toEqual(['CV-J2: circuit-vented-branch, 3 in', 'J4-RV: circuit-vented-branch, 3 in']);
+    expect(line(run, ['CV-J2', 'J4-RV'])).toEqual([
+      'CV-J2: circuit-vented-branch, 3 in',
+      'J4-RV: circuit-vented-branch, 3 in',
+    ]);
   });
 
   test('six wall urinals with 1½ in traps: 9, Table -B 2½ in; with that size left out 3 in', () => {
@@ -96,19 +99,64 @@ describe('circuit vented: the branch carries everything (Table 2.4.10.6.-B), and
 describe('the relief vent: one size below the circuit vent, at most 2 in, never below the trap’s own (2.5.7.3.(1), R73)', () => {
   // Table 2.5.8.3. by load and length of the circuit vent, Table 2.5.7.1. by the largest trap.
   test.each([
-    { fixture: stall, count: 7, run: 0, circuit: '1½ in', relief: '1½ in', why: '14: row 20, 1¼ in; trap 2 in: 1½ in; one below is 1¼ in, the trap asks 1½ in' },
-    { fixture: washout, count: 6, run: 8, circuit: '1½ in', relief: '1¼ in', why: '9: row 20, past 7.5 m 1½ in to 15 m; trap 1½ in: 1¼ in' },
-    { fixture: washout, count: 6, run: 0, circuit: '1¼ in', relief: '1¼ in', why: '9: row 20, 1¼ in to 7.5 m; nothing below 1¼ in' },
-    { fixture: pedestal, count: 8, run: 12, circuit: '2 in', relief: '1½ in', why: '32: row 42, 1½ in to 9 m, 2 in to 30 m' },
-    { fixture: pedestal, count: 8, run: 32, circuit: '3 in', relief: '2 in', why: '32: row 42, past 30 m 3 in, no limit' },
-    { fixture: valveCloset, count: 8, run: 130, circuit: '4 in', relief: '2 in', why: '48: row 60, 3 in to 120 m, then 4 in; never asked above 2 in' },
-  ])('$count of $fixture, vents run $run m: circuit $circuit, relief $relief', ({ fixture, count, run: level, ...size }) => {
-    const run = runSketch(circuitVentedRow(times(count, fixture), level === 0 ? {} : { run: level }));
-    expect(only(run).reading).toBe('circuit-vent');
-    expect(line(run, ['CV-VJ', 'RV-RT', 'RT-VJ'])).toEqual([
-      `CV-VJ: circuit-vent, ${size.circuit}`,
-      `RV-RT: relief-vent, ${size.relief}`,
-      `RT-VJ: relief-vent, ${size.relief}`,
-    ]);
-  });
+    {
+      fixture: stall,
+      count: 7,
+      run: 0,
+      circuit: '1½ in',
+      relief: '1½ in',
+      why: '14: row 20, 1¼ in; trap 2 in: 1½ in; one below is 1¼ in, the trap asks 1½ in',
+    },
+    {
+      fixture: washout,
+      count: 6,
+      run: 8,
+      circuit: '1½ in',
+      relief: '1¼ in',
+      why: '9: row 20, past 7.5 m 1½ in to 15 m; trap 1½ in: 1¼ in',
+    },
+    {
+      fixture: washout,
+      count: 6,
+      run: 0,
+      circuit: '1¼ in',
+      relief: '1¼ in',
+      why: '9: row 20, 1¼ in to 7.5 m; nothing below 1¼ in',
+    },
+    {
+      fixture: pedestal,
+      count: 8,
+      run: 12,
+      circuit: '2 in',
+      relief: '1½ in',
+      why: '32: row 42, 1½ in to 9 m, 2 in to 30 m',
+    },
+    {
+      fixture: pedestal,
+      count: 8,
+      run: 32,
+      circuit: '3 in',
+      relief: '2 in',
+      why: '32: row 42, past 30 m 3 in, no limit',
+    },
+    {
+      fixture: valveCloset,
+      count: 8,
+      run: 130,
+      circuit: '4 in',
+      relief: '2 in',
+      why: '48: row 60, 3 in to 120 m, then 4 in; never asked above 2 in',
+    },
+  ])(
+    '$count of $fixture, vents run $run m: circuit $circuit, relief $relief',
+    ({ fixture, count, run: level, ...size }) => {
+      const run = runSketch(circuitVentedRow(times(count, fixture), level === 0 ? {} : { run: level }));
+      expect(only(run).reading).toBe('circuit-vent');
+      expect(line(run, ['CV-VJ', 'RV-RT', 'RT-VJ'])).toEqual([
+        `CV-VJ: circuit-vent, ${size.circuit}`,
+        `RV-RT: relief-vent, ${size.relief}`,
+        `RT-VJ: relief-vent, ${size.relief}`,
+      ]);
+    },
+  );
 });

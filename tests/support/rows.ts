@@ -1,35 +1,44 @@
 /** Rows of fixtures in the piping notation, as the tests of the codes draw them again and again. */
 
+export interface Arm {
+  /** Height of the floor it stands on. */
+  readonly floor?: number;
+  readonly length?: number;
+  /** A dry vent of its own, `V<n>-VT<n>`, in the middle of the arm. */
+  readonly vented?: boolean;
+}
+
 /**
- * Fixture `F<n>` at the joint `J<n>`: a trap under the floor and a level arm from the south. `what` is a line of the
- * notation without its place: `urinal, stall, trap 2 in`. A closet has its trap inside.
+ * Fixture `F<n>` at the joint `J<n>`: a trap `T<n>` under the floor and a level arm from the south. `what` is a line of
+ * the notation without its place: `urinal, stall, trap 2 in`. A closet has its trap inside and a bend `B<n>` instead.
  */
-export function armOf(n: number | string, what: string, length = 0.3): string {
+export function armOf(n: number | string, what: string, { floor = 0, length = 0.3, vented = false }: Arm = {}): string {
   const [word = '', ...details] = what.split(', ');
   const bore = /trap ([^,]*) in/.exec(what)?.[1] ?? '3';
   const rest = details.length === 0 ? '' : `, ${details.join(', ')}`;
-  if (word === 'closet' || what.includes('pedestal')) {
-    return `
-node B${n} from J${n} south ${length} rise 1:50
-${word} F${n} from B${n} to 0${rest}
-drain ${bore} in: F${n} > B${n} > J${n}`;
-  }
+  const inside = word === 'closet' || what.includes('pedestal');
+  const end = inside ? `B${n}` : `T${n}`;
   const open = word === 'floor-drain' ? ', untrapped' : '';
   return `
-trap T${n} from J${n} south ${length} rise 1:50
-${word} F${n} from T${n} to 0${rest}${open}
-drain ${bore} in: F${n} > T${n} > J${n}`;
+${vented ? `node V${n} from J${n} south ${length} rise 1:50` : ''}
+${inside ? 'node' : 'trap'} ${end} from ${vented ? 'V' : 'J'}${n} south ${length} rise 1:50
+${word} F${n} from ${end} to ${floor}${rest}${open}
+drain ${bore} in: F${n} > ${end}${vented ? ` > V${n}` : ''} > J${n}
+${vented ? `vent 1 1/2 in: V${n} > VT${n} (to ${roofLine})\nterminal VT${n}` : ''}`;
 }
+
+/** Vents end here, above every roof that these drawings have. */
+const roofLine = 90;
 
 /** The joints `J<first>` to `J<last>` in a line to the east, 0.7 m apart, after the node that stands in front. */
 export const lineOf = (first: number, last: number): string =>
   Array.from({ length: last - first + 1 }, (_, at) => ` > J${first + at} (east 0.7 fall 1:50)`).join('');
 
 /** Floor, slab and roof of a hall; the drawing goes between. */
-const hall = (title: string, piping: string): string => `model "${title}"
+export const hall = (title: string, piping: string): string => `model "${title}"
 storey "Ground floor" at 0
 ${piping}
-roof "Roof" from -5 -5 to 40 10 top 3.6 thick 0.3
+roof "Roof" from -5 -5 to 60 10 top 3.6 thick 0.3
 `;
 
 /** Two lavatories of 1 by a double fitting on the vertical pipe at `at`, traps drawn. */
@@ -89,6 +98,20 @@ sewer OUT
 ${more}`,
   );
 }
+
+/**
+ * A branch whose fixtures all have vents of their own: level from `J1` through the last joint, on to a drop `K`-`BF` and
+ * out. `more` is drawn beside it.
+ */
+export const ventedRow = (fixtures: readonly string[], more = ''): string =>
+  hall(
+    'A branch of vented fixtures',
+    `node J1 at 0 0 -0.4
+drain 3 in: J1${lineOf(2, fixtures.length)} > K (east 0.7 fall 1:50) > BF (to -1.2) > OUT (east 9 fall 1:50)
+${fixtures.map((what, at) => armOf(at + 1, what, { vented: true })).join('')}
+sewer OUT
+${more}`,
+  );
 
 /** So many of one kind. */
 export const times = (count: number, what: string): string[] => Array.from({ length: count }, () => what);

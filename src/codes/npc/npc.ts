@@ -5,6 +5,7 @@ import type { Tools } from '../tools.ts';
 import { checks } from './checks.ts';
 import { drainRules } from './drain-rules.ts';
 import { bathroomGroup, fixtureRows, freeOfVent } from './fixtures.ts';
+import { countOnOneTrap } from './one-trap.ts';
 import { readings, whenNoneHolds } from './readings.ts';
 import { ventRules } from './vent-rules.ts';
 import { wetVentRules } from './wet-vent-rules.ts';
@@ -25,6 +26,7 @@ export function npc(
   | 'stackOffset'
   | 'batteryLimits'
   | 'group'
+  | 'sharedTrap'
 > {
   const { family } = tools;
   const arms = family.table('trap-arm');
@@ -47,5 +49,6 @@ export function npc(
       turnDegrees: family.number('additional-turn', 'angle').value,
     },
     group: bathroomGroup(tools),
+    sharedTrap: countOnOneTrap,
   };
 }
