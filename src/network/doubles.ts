@@ -1,6 +1,7 @@
 import { type Finding, finding } from '../findings/finding.ts';
-import { boxCentre, grown } from '../geometry/box.ts';
+import { boxAround, boxCentre, grown } from '../geometry/box.ts';
 import { boxGrid } from '../geometry/box-grid.ts';
+import { footOn, polyline } from '../geometry/polyline.ts';
 import { type Box, distance } from '../geometry/vector.ts';
 import type { Identity } from '../model/identity.ts';
 import type { Element, Model } from '../model/model.ts';
@@ -18,21 +19,23 @@ export function findDoubles(
   const keeper = Int32Array.from(model.elements, (_, id) => id);
   const findings: Finding[] = [];
   const marks = model.elements.map((element) => (takesPart[element.id] ? markOf(element, identities) : null));
-  const grid = boxGrid(marks);
+  const grid = boxGrid(model.elements.map((element) => (takesPart[element.id] ? wholeOf(element, identities) : null)));
   const pairs: [Element, Element][] = [];
+  const parts: [Element, Element][] = [];
   for (const [id, mark] of marks.entries()) {
     if (mark === null) continue;
     const element = model.elements[id]!;
     grid.touching(grown(mark, doubled), (other) => {
       const it = model.elements[other]!;
       if (other > id && isDouble(element, it, identities, model)) pairs.push([element, it]);
+      else if (other !== id && isPartOf(element, it, identities, model)) parts.push([it, element]);
     });
   }
   const better = preference(model, identities);
   const inOrder = pairs
     .map(([a, b]) => (better(a, b) < 0 ? ([a, b] as const) : ([b, a] as const)))
     .sort(([a, x], [b, y]) => better(a, b) || better(x, y));
-  for (const [kept, other] of inOrder) {
+  for (const [kept, other] of [...inOrder, ...parts]) {
     if (keeper[kept.id] !== kept.id || keeper[other.id] !== other.id) continue;
     keeper[other.id] = kept.id;
     findings.push(finding('doubled-element', [other.id, kept.id], { part: identities[other.id]!.part }));
@@ -56,6 +59,34 @@ function markOf(element: Element, identities: readonly Identity[]): Box | null {
   return { min: centre, max: centre };
 }
 
+/** Where the middle of an element's double may lie: along a pipe, in the middle of a body. */
+function wholeOf(element: Element, identities: readonly Identity[]): Box | null {
+  const { part } = identities[element.id]!;
+  return part === 'pipe' ? boxAround(element.centreLine?.points ?? []) : markOf(element, identities);
+}
+
+/** A pipe drawn once more over part of a longer one, of the same diameter, with no ports joined to it. */
+function isPartOf(short: Element, long: Element, identities: readonly Identity[], model: Model): boolean {
+  if (identities[short.id]!.part !== 'pipe' || identities[long.id]!.part !== 'pipe') return false;
+  const [p, q] = [short.centreLine!, long.centreLine!];
+  if (!alike(p.outerDiameter, q.outerDiameter) || connections(short, model) > 0) return false;
+  const line = polyline(q.points);
+  if (line.length === 0 || polyline(p.points).length >= line.length) return false;
+  return (
+    p.points.every((point) => {
+      const foot = footOn(line, point);
+      return foot.off <= doubled && foot.at > 0 && foot.at < line.length;
+    }) &&
+    p.points.length === 2 &&
+    q.points.length === 2
+  );
+}
+
+const alike = (a: number | null, b: number | null): boolean => {
+  const [x, y] = [a ?? b ?? 0, b ?? a ?? 0];
+  return Math.abs(x - y) <= 0.1 * Math.max(x, y);
+};
+
 function isDouble(a: Element, b: Element, identities: readonly Identity[], model: Model): boolean {
   const [x, y] = [identities[a.id]!, identities[b.id]!];
   if (x.part !== y.part || areConnected(a, b, model)) return false;
@@ -67,8 +98,7 @@ function isDouble(a: Element, b: Element, identities: readonly Identity[], model
 
 function samePipe(a: Element, b: Element): boolean {
   const [p, q] = [a.centreLine!, b.centreLine!];
-  const [dp, dq] = [p.outerDiameter ?? q.outerDiameter ?? 0, q.outerDiameter ?? p.outerDiameter ?? 0];
-  if (Math.abs(dp - dq) > 0.1 * Math.max(dp, dq)) return false;
+  if (!alike(p.outerDiameter, q.outerDiameter)) return false;
   const near = (i: number, j: number): boolean => distance(p.points.at(i)!, q.points.at(j)!) <= doubled;
   return (near(0, 0) && near(-1, -1)) || (near(0, -1) && near(-1, 0));
 }
@@ -89,12 +119,13 @@ function areConnected(a: Element, b: Element, model: Model): boolean {
   return a.ports.some((port) => model.ports[port]?.connected.some((other) => model.ports[other]?.owner === b.id));
 }
 
+const connections = ({ ports }: Element, model: Model): number =>
+  ports.filter((port) => (model.ports[port]?.connected.length ?? 0) > 0).length;
+
 function preference(model: Model, identities: readonly Identity[]): (a: Element, b: Element) => number {
-  const joined = ({ ports }: Element): number =>
-    ports.filter((port) => (model.ports[port]?.connected.length ?? 0) > 0).length;
   const said = (element: Element): number => (identities[element.id]!.medium === null ? 0 : 1);
   return (a, b) =>
-    joined(b) - joined(a) ||
+    connections(b, model) - connections(a, model) ||
     said(b) - said(a) ||
     (a.globalId < b.globalId ? -1 : a.globalId > b.globalId ? 1 : a.id - b.id);
 }

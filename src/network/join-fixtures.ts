@@ -1,6 +1,6 @@
 import { boxCentre, distanceOfBoxes, distanceToBox, grown } from '../geometry/box.ts';
 import { boxGrid } from '../geometry/box-grid.ts';
-import { type Box, planDistance } from '../geometry/vector.ts';
+import { type Box, distance, planDistance, type Vec3 } from '../geometry/vector.ts';
 import type { Identity, Medium } from '../model/identity.ts';
 import type { Model } from '../model/model.ts';
 import { wanted } from './join-touching.ts';
@@ -24,10 +24,13 @@ const unsaid: Readonly<Record<NonNullable<Medium> | 'null', number>> = {
   other: 0.05,
 };
 
+/** Two fixtures share an outlet that lies in or at the bodies of both, metres. */
+const sharedReach = 0.01;
+
 /**
  * Outlets of fixtures: the free end in, at or just under the body; the lowest, and the one whose system says drainage,
  * where several offer. A trap or fitting that touches the fixture serves as well as an end. What is left of sanitary ends
- * inside a fixture are its further outlets.
+ * inside a fixture are its further outlets; a fixture that found none shares the end in its body with the one that did.
  */
 export function joinFixtures(
   model: Model,
@@ -48,25 +51,36 @@ export function joinFixtures(
   const name = (node: number): string => model.elements[welds.elementOf(node)]!.globalId;
   const first: Pair[] = [];
   const further: Pair[] = [];
+  const shared: Pair[] = [];
   for (const index of askers) {
     const box = outletBox(bodies[index]!, model);
     if (box === null) continue;
     const self = bodyNode(piping, index);
     const around = grown(box, reach.ofFixture);
     const centre = boxCentre(box);
+    const { spots } = bodies[index]!;
+    /** From where it is known to connect, else from the middle. */
+    const aside = (at: Vec3): number =>
+      spots.length > 0 ? Math.min(...spots.map((spot) => distance(spot, at))) : planDistance(at, centre);
     endGrid.touching(around, (i) => {
       const [at, end] = [points[i]!, ends[i]!];
       const gap = distanceToBox(at, box);
       if (gap > reach.ofFixture) return;
       const { medium } = identities[pipes[end >> 1]!.element]!;
       const up = Math.max(0, at[2] - box.min[2]);
-      const cost = gap + perMetreUp * up + perMetreAside * planDistance(at, centre) + unsaid[medium ?? 'null'];
+      const cost = gap + perMetreUp * up + perMetreAside * aside(at) + unsaid[medium ?? 'null'];
       const names: [string, string] = [name(self), name(end)];
       const join = (): void => {
         if (!welds.isHeld(end)) welds.join(end, self, 'outlet', gap);
       };
       first.push({ cost, names, settle: () => (welds.isHeld(self) ? undefined : join()) });
       if (gap === 0 && medium === 'sanitary') further.push({ cost, names, settle: join });
+      if (gap <= sharedReach)
+        shared.push({
+          cost,
+          names,
+          settle: () => (welds.isHeld(self) ? undefined : welds.join(end, self, 'outlet', gap)),
+        });
     });
     bodyGrid.touching(around, (b) => {
       const other = bodies[b]!;
@@ -74,9 +88,8 @@ export function joinFixtures(
       const need = wanted(other, model.elements[other.element]!.predefinedType);
       const limit = welds.degree[b]! <= 1 ? reach.ofFixture : reach.ofBodies;
       if (gap > limit || welds.degree[b]! >= need) return;
-      const aside = planDistance(boxCentre(other.box!), centre);
       first.push({
-        cost: gap + perMetreAside * aside + (other.part === 'trap' ? 0 : 0.01),
+        cost: gap + perMetreAside * planDistance(boxCentre(other.box!), centre) + (other.part === 'trap' ? 0 : 0.01),
         names: [name(self), name(bodyNode(piping, b))],
         settle: () => {
           if (!welds.isHeld(self) && welds.degree[b]! < need) welds.join(self, bodyNode(piping, b), 'outlet', gap);
@@ -86,6 +99,7 @@ export function joinFixtures(
   }
   settlePairs(first);
   settlePairs(further);
+  settlePairs(shared);
 }
 
 function outletBox(fixture: BodyPart, model: Model): Box | null {

@@ -4,7 +4,6 @@ import type { Identity } from '../model/identity.ts';
 import type { ElementId } from '../model/model.ts';
 import { bodyNode, endPoint, type Piping } from './piping.ts';
 import type { Contradiction } from './port-joins.ts';
-import type { Proposal } from './propose-joins.ts';
 import type { Welds } from './welds.ts';
 
 /** One note for the whole model: how many joints geometry inferred, by ground, and the widest gap it bridged. */
@@ -60,32 +59,6 @@ function grouped(contradictions: readonly Contradiction[]): readonly (readonly C
     for (const id of merged.flatMap(({ between }) => between)) groupOf.set(id, merged);
   }
   return [...new Set(groupOf.values())];
-}
-
-/** Ends that stay open although something is near: one finding for a gap, though both its sides are open. */
-export function openEnds(
-  proposals: readonly Proposal[],
-  piping: Piping,
-  welds: Welds,
-  stays: (node: number) => boolean,
-): readonly Finding[] {
-  const nearest = new Map<number, Proposal>();
-  for (const proposal of proposals) {
-    if (welds.isHeld(proposal.end) || !stays(proposal.end)) continue;
-    const known = nearest.get(proposal.end);
-    if (known === undefined || proposal.gap < known.gap) nearest.set(proposal.end, proposal);
-  }
-  const findings: Finding[] = [];
-  const told = new Set<string>();
-  for (const [end, { to, gap }] of [...nearest].sort(([a], [b]) => a - b)) {
-    const other =
-      to.is === 'body' ? piping.bodies[to.body]!.element : welds.elementOf(to.is === 'end' ? to.end : 2 * to.pipe);
-    const key = [welds.elementOf(end), other].sort((a, b) => a - b).join(' ');
-    if (told.has(key)) continue;
-    told.add(key);
-    findings.push(finding('open-end', [welds.elementOf(end), other], { gapM: gap, nearest: to.is }));
-  }
-  return findings;
 }
 
 /** Fixtures that nothing drains, where the model has drains at all. */

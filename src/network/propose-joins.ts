@@ -69,7 +69,7 @@ export function proposeJoins(
       proposals.push(...mine);
       continue;
     }
-    endGrid.touching(grown(around, Math.max(end.diameter, leastSocket)), (i) => {
+    endGrid.touching(grown(around, Math.max(fittingLength * end.diameter, leastSocket)), (i) => {
       const other = views[i];
       if (other) add1(mine, toEnd(end, other, piping, reach));
     });
@@ -154,9 +154,22 @@ function toEnd(end: EndView, other: EndView, { pipes }: Piping, reach: Reach): P
     if (past > 0 && past <= deepest && aside <= limit)
       return { end: end.node, to, gap: aside, cost: aside, within: true };
   }
-  if (apart > Math.max(limit, lookAround)) return null;
+  if (apart > Math.max(limit, lookAround) && !facesOver(end, other, apart)) return null;
   return { end: end.node, to, gap: apart, cost: apart, within: apart <= limit };
 }
+
+/** Two ends that look at each other over the length of a fitting: one is missing there. */
+function facesOver(end: EndView, other: EndView, apart: number): boolean {
+  const way = subtract(other.at, end.at);
+  return (
+    apart <= fittingLength * Math.max(end.diameter, other.diameter) &&
+    dot(way, end.outward) > looksToward * apart &&
+    dot(way, other.outward) < -looksToward * apart
+  );
+}
+
+/** Longest way through a fitting, in outside diameters (common practice, no source). */
+export const fittingLength = 2;
 
 /** Flatter than this (sine of about ten degrees) two pipes run beside each other. */
 const steepEnough = 0.17;

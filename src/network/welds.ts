@@ -113,7 +113,8 @@ export class Welds {
   join(a: number, b: number, how: Weld['how'], gap: number, flow: Link['flow'] = null): void {
     this.held[a] = true;
     this.held[b] = true;
-    this.all.push({ nodes: [a, b], how, gap, between: [this.elementOf(a), this.elementOf(b)] });
+    const between = [this.elementOf(a), this.elementOf(b)] as const;
+    this.all.push({ nodes: [a, b], how, gap: gap < noGap ? 0 : gap, between });
     for (const node of [a, b]) this.count(node);
     const [x, y] = [this.root(a), this.root(b)];
     if (x === y) return;
@@ -142,6 +143,9 @@ export class Welds {
     return bodyNode(this.piping, body);
   }
 }
+
+/** What arithmetic leaves where drawing left nothing, metres. */
+const noGap = 1e-6;
 
 export const turned = (flow: Link['flow']): Link['flow'] =>
   flow === null ? null : flow === 'forward' ? 'backward' : 'forward';

@@ -150,6 +150,24 @@ const cases: readonly Case[] = [
     joints: ['waste', 'waste@basin'],
   },
   {
+    name: 'two bowls over one waste share it',
+    parts: [
+      pipe('waste', '0 0 -1 > 0 0 0', { diameter: 0.05 }),
+      body('left', 'fixture', [-0.2, 0, 0.2], 0.4, { kind: 'sink' }),
+      body('right', 'fixture', [0.201, 0, 0.2], 0.4, { kind: 'sink' }),
+    ],
+    joints: ['link+waste@left', 'link@right', 'waste'],
+  },
+  {
+    name: 'a bath has two outlets when two sanitary ends stop in it',
+    parts: [
+      pipe('waste', '0 0 -1 > 0 0 0.05', { diameter: 0.05 }),
+      pipe('overflow', '0.3 0 -1 > 0.3 0 0.4', { diameter: 0.04 }),
+      body('bath', 'fixture', [0, 0, 0.4], 0.8, { kind: 'bathtub' }),
+    ],
+    joints: ['overflow', 'overflow+waste@bath', 'waste'],
+  },
+  {
     name: 'fittings that touch are linked',
     parts: [
       pipe('A', '0 0 0 > 1.9 0 0'),

@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest';
+import type { SystemId } from '../../src/model/model.ts';
 import { buildNetwork } from '../../src/network/build-network.ts';
 import { body, type DrawnPart, drawn, joinsOf, pipe } from '../support/drawn.ts';
 
@@ -51,6 +52,19 @@ describe('what the network says', () => {
     expect(told[0]!.facts.gapM).toBeCloseTo(0.08, 9);
   });
 
+  test('a tee that is missing between three pipes is told once', () => {
+    const { told } = findingsOf([
+      pipe('A', '0 0 0 > 1.92 0 0'),
+      pipe('B', '2.08 0 0 > 4 0 0'),
+      pipe('C', '2 2 0 > 2 0.08 0'),
+    ]);
+    expect(told.map(({ code, about }) => [code, [...about].sort()])).toEqual([['open-end', ['A', 'B', 'C']]]);
+  });
+
+  test('ends that turn their backs on each other are just ends', () => {
+    expect(findingsOf([pipe('A', '0 0 0 > 2 0 0'), pipe('B', '0 0.2 0 > 0 2 0')]).told).toEqual([]);
+  });
+
   test('a pipe of another system in the middle of a run is a wrong system', () => {
     const parts = (medium: 'storm' | 'sanitary') => [
       pipe('A', '0 0 0 > 2 0 0'),
@@ -90,6 +104,38 @@ describe('what the network says', () => {
     ]);
     expect(told.filter(({ code }) => code === 'doubled-element')).toMatchObject([{ about: ['tray', 'cabin'] }]);
     expect(value.fates.map(({ use, reason }) => reason ?? use)).toEqual(['pipe', 'double', 'fixture']);
+  });
+
+  test('a pipe drawn over part of a longer one is one with it', () => {
+    const { told, value } = findingsOf([
+      pipe('A', '0 0 0 > 6 0 0'),
+      pipe('over', '1 0.001 0 > 3 0.001 0'),
+      pipe('branch', '2 2 0 > 2 0 0'),
+    ]);
+    expect(told.find(({ code }) => code === 'doubled-element')).toMatchObject({ about: ['over', 'A'] });
+    expect(value.joints.map(({ pipes }) => pipes.length).sort()).toEqual([1, 1, 1, 3]);
+  });
+
+  test('a system that the answers leave out is out, whatever it is', () => {
+    const { model, identities } = drawn([pipe('A', '0 0 0 > 2 0 0'), pipe('B', '2 0 0 > 4 0 0')]);
+    const system = { file: 0, stepId: 9, globalId: 'id-lab', name: 'Lab waste', longName: null, objectType: null };
+    const grouped = {
+      ...model,
+      systems: [{ ...system, id: 0 as SystemId, predefinedType: 'WASTEWATER' }],
+      elements: model.elements.map((element) =>
+        element.name === 'B' ? { ...element, systems: [0 as SystemId] } : element,
+      ),
+    };
+    for (const leaveOut of [['Lab waste'], ['id-lab']]) {
+      const { value } = buildNetwork(grouped, identities, { leaveOut });
+      expect(value.fates.map(({ use, reason }) => reason ?? use)).toEqual(['pipe', 'answer']);
+    }
+  });
+
+  test('the user may bridge wider gaps', () => {
+    const { model, identities } = drawn([pipe('A', '0 0 0 > 2 0 0'), pipe('B', '2.15 0 0 > 4 0 0')]);
+    expect(buildNetwork(model, identities).value.joined.geometry).toBe(0);
+    expect(buildNetwork(model, identities, { maxGap: 0.15 }).value.joined.geometry).toBe(1);
   });
 
   test('every element has one fate', () => {
