@@ -25,7 +25,7 @@ export interface Network {
 
 export interface Fate {
   readonly use: 'pipe' | 'fitting' | 'fixture' | 'terminal' | 'left-out' | 'unresolved';
-  /** For left-out and unresolved: a short reason of a fixed list: `rainwater`, `supply`, `duct`, `no position`, … */
+  /** For left-out and unresolved: a `LeftOutReason` or an `UnresolvedReason`; null for what takes part. */
   readonly reason: string | null;
 }
 
@@ -36,7 +36,10 @@ export interface Pipe {
   readonly ends: readonly [JointId, JointId];
   /** Own length along the axis, without the fittings at its ends. */
   readonly length: Metres;
-  /** From each end of the pipe to the centre of its joint: the half of the fitting that developed length adds here. */
+  /**
+   * From each end of the pipe to the centre of its joint: the half of the fitting that developed length adds here.
+   * Negative where the end runs past the centre, as a spigot in its socket.
+   */
   readonly reach: readonly [Metres, Metres];
   /** From end 0 to end 1 in world metres; null where the model has no geometry. */
   readonly points: readonly Vec3[] | null;
