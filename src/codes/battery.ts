@@ -49,8 +49,6 @@ export interface Guest {
 export interface WetLine {
   /** Everything that drains into the wet vent, one by one; the most downstream trap or pair left out; closets apart. */
   readonly load: Load;
-  /** Of all its traps, the last one and closets too, guests not: the load on the dry vent above. */
-  readonly airLoad: Load;
   readonly leftOut: readonly FixtureId[];
   /** Closets among its traps. */
   readonly closets: number;

@@ -16,9 +16,9 @@ export function loadPipes(facts: FixtureFacts, scenario: Scenario): WithFindings
   const fixtures = fixtureLoads(facts, scenario);
   const { groups, findings: groupFindings } = bathroomGroups(facts, fixtures);
   findings.push(...groupFindings);
-  const groupOf = new Map<FixtureId, number>();
+  const groupOf: (number | null)[] = fixtures.map(() => null);
   groups.forEach(({ members }, group) => {
-    for (const member of members) groupOf.set(member, group);
+    for (const member of members) groupOf[member] = group;
   });
 
   const single: Load[] = network.pipes.map(() => noLoad);
@@ -48,8 +48,8 @@ export function loadPipes(facts: FixtureFacts, scenario: Scenario): WithFindings
     for (const fixture of paths.entering[pipe]!) {
       const { load, row } = fixtures[fixture]!;
       if (row.closet) closets[pipe]!++;
-      const group = groupOf.get(fixture);
-      if (group === undefined) single[pipe] = plusLoad(single[pipe]!, load);
+      const group = groupOf[fixture] ?? null;
+      if (group === null) single[pipe] = plusLoad(single[pipe]!, load);
       else put(pipe, group, load, 1);
     }
     settle(pipe);
@@ -68,7 +68,7 @@ export function loadPipes(facts: FixtureFacts, scenario: Scenario): WithFindings
     to: to[id]!,
   }));
   findings.push(...sizeFindings(facts));
-  return { value: { scenario, fixtures, pipes, modelled, order, groups }, findings };
+  return { value: { scenario, fixtures, pipes, modelled, order, groups, groupOf }, findings };
 }
 
 /** Fixtures in a walk up every tree of water, so that those of one pipe stand side by side. */

@@ -19,6 +19,8 @@ export interface Loads {
   readonly order: readonly FixtureId[];
   /** Bathroom groups, by their closet. */
   readonly groups: readonly BathroomGroup[];
+  /** Index into `groups`; null for fixtures in none. By fixture id. */
+  readonly groupOf: readonly (number | null)[];
 }
 
 export interface BathroomGroup {

@@ -96,8 +96,8 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
     const role: Role = isWet ? (own?.role ?? drains[id]!) : (vent?.role ?? 'idle');
     const battery = own?.battery ?? vent?.battery ?? null;
     const fixtures = loads.order.slice(from, Math.min(to, from + 3));
-    const traps = to - from <= 2 ? fixtures.map((fixture) => loads.fixtures[fixture]!.trap) : [];
     const drain = drains[id];
+    const first = drain === 'fixture-drain' ? fixtures[0] : undefined;
     return {
       pipe: id,
       role,
@@ -114,7 +114,7 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
       fixtures: to - from,
       vertical: paths.vertical[id] === true,
       slope: paths.slopes[id]!.slope,
-      trap: drain === 'fixture-drain' && traps.length > 0 ? traps.reduce((a, b) => code.series.larger(a, b)) : null,
+      trap: first === undefined ? null : loads.fixtures[first]!.trap,
       outlet: outlet[id] && fixtures.length > 0 ? largestOutlet(loads, code, fixtures) : null,
       inflows: isWet ? stream.inflows[stream.up(id)]! : [],
       joining: isWet ? stream.dry[stream.up(id)]!.filter((pipe) => dry.has(pipe)) : (tree.below.get(id) ?? []),

@@ -138,7 +138,6 @@ function wetLine(
   const upper = [...new Set(all.map(({ storey }) => storey))].filter((storey) => storey > lowest).sort((a, b) => a - b);
   return {
     load: sum(counted),
-    airLoad: sum(traps),
     leftOut,
     closets,
     storeys: upper.length + 1,

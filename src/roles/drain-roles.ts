@@ -1,5 +1,6 @@
 import type { DrainRole } from '../codes/role.ts';
 import type { JointId, PipeId } from '../network/network.ts';
+import type { Paths } from '../paths/paths.ts';
 import type { Stack, StackContext } from './find-stacks.ts';
 import type { Battery } from './roles.ts';
 
@@ -13,13 +14,14 @@ export function drainRoles(
   outside: readonly boolean[],
 ): (DrainRole | null)[] {
   const { network, paths, loads } = context;
+  const oneTrap = throughOneTrap(paths);
   const roles: (DrainRole | null)[] = network.pipes.map(({ id }) => {
     if (!paths.wet[id]) return null;
     if (outlet[id]) return 'fixture-drain';
     const stack = inStack[id];
     if (stack !== null && stack !== undefined) return 'stack';
     const { from, to } = loads.pipes[id]!;
-    return to - from < 2 ? 'fixture-drain' : 'branch';
+    return to - from < 2 || oneTrap[id] ? 'fixture-drain' : 'branch';
   });
   const inBattery = new Set(batteries.flatMap(({ facts }) => facts.line));
   for (const pipe of buildingDrain(context, inStack, stacks, batteries)) {
@@ -27,6 +29,25 @@ export function drainRoles(
   }
   for (const { id } of network.pipes) if (roles[id] !== null && outside[id]) roles[id] = 'building-sewer';
   return roles;
+}
+
+/** By pipe id: all water that passes came through one drawn trap, whatever number of fixtures stand over it. */
+function throughOneTrap({ inFlowOrder, entering, traps, next, wet }: Paths): boolean[] {
+  const none = -1;
+  const several = -2;
+  const trapOf = new Int32Array(wet.length).fill(none);
+  const add = (pipe: PipeId, trap: number): void => {
+    trapOf[pipe] = trapOf[pipe] === none || trapOf[pipe] === trap ? trap : several;
+  };
+  for (const pipe of inFlowOrder) {
+    for (const fixture of entering[pipe]!) {
+      const { how, at } = traps[fixture]!;
+      add(pipe, how === 'drawn' ? at : several);
+    }
+    const down = next[pipe];
+    if (down !== null && down !== undefined) add(down, trapOf[pipe]!);
+  }
+  return Array.from(trapOf, (trap) => trap >= 0);
 }
 
 /** From the feet of the stacks to the sewer; without stacks from below the last row or drop (DESIGN, roles). */

@@ -133,9 +133,10 @@ export function stackUseAt({ loads, paths, floors }: StackContext, stack: Stack,
     const storey = floors.of(paths.fixtures[fixture]!);
     byStorey.set(storey, plusLoad(byStorey.get(storey) ?? noLoad, loads.fixtures[fixture]!.load));
   }
-  for (const { members, figure } of loads.groups) {
+  const groups = new Set([...inside].flatMap((fixture) => loads.groupOf[fixture] ?? []));
+  for (const group of groups) {
+    const { members, figure } = loads.groups[group]!;
     const first = members[0]!;
-    if (!inside.has(first)) continue;
     const storey = floors.of(paths.fixtures[first]!);
     if (!members.every((member) => inside.has(member) && floors.of(paths.fixtures[member]!) === storey)) continue;
     const sum = members.reduce((total, member) => total + loads.fixtures[member]!.load, 0);

@@ -120,15 +120,26 @@ function gatheredAt(foot: VentFoot, { role, stack, battery }: DryRole, batteries
   };
 }
 
-/** Whole loads at the feet of the stacks, and the fixtures of other vents that drain into none of them. */
+/**
+ * Whole loads at the feet of the stacks, and the fixtures of other vents that drain into none of them. A bathroom group
+ * whose air passes whole counts its own figure, as on a drain.
+ */
 function loadOf({ loads }: BatteryContext, sum: Gathered, stacks: readonly Stack[]): Load {
   let total = 0;
   const drained = [...sum.stacks].map((id) => loads.pipes[stacks[id]!.foot]!);
   for (const { load } of withoutNested(drained)) total += load;
   const place = placeInOrder(loads.order);
+  const counted = new Set<FixtureId>();
   for (const fixture of sum.fixtures) {
     const at = place.get(fixture)!;
-    if (!drained.some(({ from, to }) => at >= from && at < to)) total += loads.fixtures[fixture]!.load;
+    if (!drained.some(({ from, to }) => at >= from && at < to)) counted.add(fixture);
+  }
+  for (const fixture of counted) total += loads.fixtures[fixture]!.load;
+  const groups = new Set([...counted].flatMap((fixture) => loads.groupOf[fixture] ?? []));
+  for (const group of groups) {
+    const { members, figure } = loads.groups[group]!;
+    if (!members.every((member) => counted.has(member))) continue;
+    total -= Math.max(0, members.reduce((all, member) => all + loads.fixtures[member]!.load, 0) - figure);
   }
   return total as Load;
 }

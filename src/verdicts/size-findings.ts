@@ -21,7 +21,9 @@ export function sizeFindings(
     const worst = [...sections].sort((a, b) => weight(verdicts[b]!) - weight(verdicts[a]!) || a - b)[0];
     if (worst === undefined) continue;
     const { verdict, required, load, provisional } = verdicts[worst]!;
-    if (verdict === 'undersized' || verdict === 'oversized') {
+    // An outlet pipe as wide as its trap is what people lay, whatever less its table allows.
+    const asTrap = verdict === 'oversized' && run.roles.uses[worst]!.portion === 'outlet';
+    if ((verdict === 'undersized' || verdict === 'oversized') && !asTrap) {
       const step = run.sizes[worst]!.governing[0]!;
       findings.push(
         finding(

@@ -39,7 +39,7 @@ const worked: Readonly<Record<string, { readonly pipes: readonly string[]; reado
       'WJ-ST branch 6, 3 in',
       'ST-CO1 stack 6, 3 in',
       'SF-CB building-drain 6, 3 in',
-      'LT-SV continuous-vent 6.5, 1½ in',
+      'LT-SV continuous-vent 6, 1½ in',
     ],
     errors: [],
   },
