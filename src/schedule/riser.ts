@@ -1,3 +1,150 @@
+import type { Vec3 } from '../geometry/vector.ts';
+import type { JointId, Network, Pipe, PipeId } from '../network/network.ts';
+import type { Outcome } from '../verdicts/outcome.ts';
+import type { PipeState, Result, Verdict } from './result.ts';
+import { type Flat, isometry } from './riser-isometry.ts';
+import { riserPieces } from './riser-pieces.ts';
+import { labelRuns, type RiserRun } from './riser-runs.ts';
+import { type RiserSymbol, riserSymbols } from './riser-symbols.ts';
+
+/** What a riser is drawn from. */
+export type RiserSource = Pick<Outcome, 'model' | 'network' | 'paths' | 'identities'>;
+
+/** How a line is drawn: drains whole, vents dashed, what is both with both. */
+export type RiserLook = 'drain' | 'vent' | 'both' | 'link';
+
+export interface RiserLine {
+  /** Pipe of the network. */
+  readonly section: PipeId;
+  /** Row of the result's pipes; -1 for a link between fittings. */
+  readonly pipe: number;
+  readonly look: RiserLook;
+  readonly verdict: Verdict | null;
+  /** Line width in drawing units. */
+  readonly width: number;
+  readonly points: readonly Flat[];
+}
+
+/** Where a stack passes a floor. */
+export interface RiserFloor {
+  readonly storey: number;
+  readonly name: string | null;
+  readonly at: Flat;
+}
+
+/**
+ * An isometric line drawing of one drain system, not to scale: long straight runs are shortened so that what hangs on
+ * them stays apart. In drawing units (one CSS pixel at full size), x to the right, y down; lines from back to front.
+ */
 export interface Riser {
-  readonly title: string;
+  /** Index into the result's systems; null for piping that reaches no sewer. */
+  readonly system: number | null;
+  /** Row of the pipe that names a part of a large system; null where the drawing shows a whole one. */
+  readonly stack: number | null;
+  readonly lines: readonly RiserLine[];
+  readonly symbols: readonly RiserSymbol[];
+  readonly floors: readonly RiserFloor[];
+  /** What asks for words, most important first. */
+  readonly runs: readonly RiserRun[];
+}
+
+/** Line drawings of all drain systems in their order, then of pieces with fixtures that reach no sewer. */
+export function risersOf(result: Result, source: RiserSource): readonly Riser[] {
+  const { model, network } = source;
+  const rowOf = new Map(result.pipes.map(({ globalId, stepId }, row) => [`${globalId} ${stepId}`, row]));
+  const rowOfPipe = ({ element }: Pipe): number => {
+    const found = element === null ? undefined : model.elements[element];
+    return found === undefined ? -1 : (rowOf.get(`${found.globalId} ${found.stepId}`) ?? -1);
+  };
+  return riserPieces(source).flatMap(({ system, stack, pipes }) => {
+    const drawn = pipes.flatMap((id) => {
+      const pipe = network.pipes[id]!;
+      const points = way(network, pipe);
+      return points === null ? [] : [{ pipe, points, row: rowOfPipe(pipe) }];
+    });
+    if (drawn.length === 0) return [];
+    const flat = isometry(drawn.map(({ points }) => points));
+    const lines = drawn.map(({ pipe, points, row }): RiserLine & { readonly depth: number } => {
+      const state = stateOf(result, network, pipe, row);
+      return {
+        section: pipe.id,
+        pipe: row,
+        look: lookOf(source, pipe, state),
+        verdict: state?.verdict ?? null,
+        width: widthOf(state),
+        points: points.map((point) => flat.at(point)),
+        depth: Math.min(...points.map((point) => flat.depth(point))),
+      };
+    });
+    lines.sort((a, b) => a.depth - b.depth || a.section - b.section);
+    const inside = new Set<JointId>(drawn.flatMap(({ pipe }) => pipe.ends));
+    const symbols = riserSymbols(result, source, inside, flat);
+    return [
+      {
+        system,
+        stack: stack === null ? null : rowOfPipe(network.pipes[stack]!),
+        lines: lines.map(({ depth: _, ...line }) => line),
+        symbols,
+        floors: floorsOf(source, drawn, flat),
+        runs: labelRuns(result, source, lines),
+      },
+    ];
+  });
+}
+
+/** From joint to joint; null where the model gives a pipe no place. */
+function way(network: Network, { ends, points }: Pipe): readonly Vec3[] | null {
+  const [a, b] = [network.joints[ends[0]]?.at ?? null, network.joints[ends[1]]?.at ?? null];
+  const own = points ?? [];
+  const whole = [...(a === null ? [] : [a]), ...own, ...(b === null ? [] : [b])];
+  return whole.length < 2 ? null : whole;
+}
+
+/** The section's own state where an element is cut into sections as the network cuts it, else the element's. */
+export function stateOf(result: Result, network: Network, pipe: Pipe, row: number): PipeState | null {
+  const whole = result.pipes[row];
+  if (whole === undefined) return null;
+  const own = pipe.element === null ? [] : (network.pipesOf.get(pipe.element) ?? []);
+  const { sections } = whole;
+  if (sections === undefined) return whole;
+  if (sections.length === own.length) return sections[own.indexOf(pipe.id)] ?? whole;
+  const middle = (pipe.from + pipe.to) / 2;
+  return sections.find(({ from, to }) => middle >= from && middle <= to) ?? whole;
+}
+
+function lookOf({ paths }: RiserSource, pipe: Pipe, state: PipeState | null): RiserLook {
+  if (state === null) return paths.wet[pipe.id] === true ? 'link' : 'vent';
+  const wet = state.load.most > 0 || paths.wet[pipe.id] === true;
+  const airs = state.role.includes('vent');
+  return wet ? (airs ? 'both' : 'drain') : 'vent';
+}
+
+const widthOf = (state: PipeState | null): number => {
+  const dn = state?.modelled?.dn ?? state?.required?.most?.dn ?? 50;
+  return Math.round((1.1 + Math.min(dn, 300) / 75) * 10) / 10;
+};
+
+/** A mark where a stack or its vent passes a floor; one for each stack and floor. */
+function floorsOf(
+  { model }: RiserSource,
+  drawn: readonly { readonly points: readonly Vec3[] }[],
+  flat: ReturnType<typeof isometry>,
+): readonly RiserFloor[] {
+  const floors: RiserFloor[] = [];
+  const seen = new Set<string>();
+  model.storeys.forEach(({ name, elevation }, storey) => {
+    for (const { points } of drawn) {
+      for (let place = 1; place < points.length; place++) {
+        const [a, b] = [points[place - 1]!, points[place]!];
+        const rise = Math.abs(a[2] - b[2]);
+        const plumb = rise > 0.6 && rise > 8 * Math.hypot(a[0] - b[0], a[1] - b[1]);
+        if (!plumb || (a[2] - elevation) * (b[2] - elevation) >= 0) continue;
+        const key = `${storey} ${a[0].toFixed(1)} ${a[1].toFixed(1)}`;
+        if (seen.has(key)) continue;
+        seen.add(key);
+        floors.push({ storey, name, at: flat.at([a[0], a[1], elevation]) });
+      }
+    }
+  });
+  return floors;
 }

@@ -1,5 +1,6 @@
 import { type PageData, pageData } from '../../src/deliver/page-data.ts';
 import { type Box, distance, type Vec3 } from '../../src/geometry/vector.ts';
+import { type Identity, noDetail } from '../../src/model/identity.ts';
 import type { Element, ElementId, Fabric, Model, Space, Storey, Wall } from '../../src/model/model.ts';
 import type { Joint, JointId, Network, Pipe, PipeId } from '../../src/network/network.ts';
 import type { DryPiece, FixtureId, Paths, TrapAir } from '../../src/paths/paths.ts';
@@ -11,6 +12,7 @@ import type {
   SizeLabel,
   TrailStep,
 } from '../../src/schedule/result.ts';
+import { risersOf } from '../../src/schedule/riser.ts';
 import { metres } from '../../src/units/quantity.ts';
 
 /** Model, network, paths and result of one small building that agree with each other, for trying the page on. */
@@ -19,6 +21,7 @@ export interface ExamplePage {
   readonly model: Model;
   readonly network: Network;
   readonly paths: Paths;
+  readonly identities: readonly Identity[];
 }
 
 export interface RunSpec {
@@ -402,11 +405,28 @@ export function examplePage(spec: BuildingSpec): ExamplePage {
     caution:
       'An undersized drain or vent lets sewer gas into the building. Sizes here are a calculation aid: local code, the authority having jurisdiction and a licensed person decide.',
   };
-  return { result, model, network, paths };
+  const identities = elements.map(
+    ({ kind }): Identity => ({ ...plainIdentity, part: parts[kind] ?? 'unknown-terminal' }),
+  );
+  return { result, model, network, paths, identities };
 }
 
-export const exampleData = ({ result, model, network, paths }: ExamplePage): PageData =>
-  pageData(result, model, network, paths);
+export const exampleData = (example: ExamplePage): PageData => {
+  const { result, model, network, paths } = example;
+  return pageData(result, model, network, paths, risersOf(result, example));
+};
+
+const parts: Readonly<Record<string, Identity['part']>> = { segment: 'pipe', fitting: 'fitting', terminal: 'fixture' };
+const plainIdentity: Identity = {
+  part: 'pipe',
+  kind: null,
+  detail: noDetail,
+  medium: 'sanitary',
+  evidence: '',
+  weak: false,
+  outletMm: null,
+  reading: null,
+};
 
 /** Vertical: at 45 degrees or less to the plumb line. */
 const isVertical = (a: Vec3, b: Vec3): boolean => Math.abs(a[2] - b[2]) >= Math.hypot(a[0] - b[0], a[1] - b[1]);

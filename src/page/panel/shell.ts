@@ -1,4 +1,5 @@
 import { lengthText, oneSize, shortLoad, sizeText } from '../format.ts';
+import { markChosen, riserOf, riserView } from '../riser/riser-view.ts';
 import type { Hit } from '../scene/pick.ts';
 import { sceneView } from '../scene/scene-view.ts';
 import type { PageState, Tab } from '../state.ts';
@@ -15,7 +16,6 @@ import { modelCard } from './model-card.ts';
 import { capital, fixtureName, pipeName, shown } from './names.ts';
 import { pipeCard } from './pipe-card.ts';
 import { pipeList } from './pipe-list.ts';
-import { riserView } from './riser-view.ts';
 import { summary } from './summary.ts';
 import { toolbar } from './toolbar.ts';
 
@@ -135,7 +135,12 @@ export function shell(desk: Desk): Shell {
       picture.hidden = legendHost.hidden = toolHost.hidden = now.view === 'riser';
       top.show(now);
     }
-    if (now.view === 'riser' && changed('view', 'riser', 'chosen')) riserHost.replaceChildren(riserView(desk));
+    if (now.view === 'riser') {
+      if (changed('view', 'riser')) riserHost.replaceChildren(riserView(desk));
+      const other = changed('view', 'chosen') ? riserOf(desk) : null;
+      if (other !== null) store.set({ riser: other });
+      else markChosen(desk, riserHost);
+    }
     canvas.classList.toggle('measuring', now.measuring);
   };
 

@@ -232,6 +232,20 @@ export const english: Words = {
     distances: (length, plan, rise) => `${length} · in plan ${plan} · rise ${rise}`,
   },
   riser: {
+    whole: (system) => `Drain system ${system}`,
+    part: (name) => `Upstream of ${name}`,
+    lost: 'Piping without a sewer',
+    looks: { drain: 'drain', vent: 'vent', both: 'drain that also vents', undersized: '▲ too small' },
+    marks: {
+      cleanout: 'cleanout',
+      'open-air': 'open air',
+      'admittance-valve': 'air admittance valve',
+      sewer: 'to the sewer',
+      'no-air': 'trap without a vent',
+    },
+    fit: 'Fit',
+    picture:
+      'Isometric line drawing of the drains and vents, not to scale. The list of pipes beside it says the same in words.',
     name: 'Riser diagram',
     print: 'Print',
     none: 'There is no drain system to draw.',

@@ -247,6 +247,25 @@ export const french: Words = {
     distances: (length, plan, rise) => `${length} · en plan ${plan} · dénivelé ${rise}`,
   },
   riser: {
+    whole: (system) => `Réseau d’évacuation ${system}`,
+    part: (name) => `En amont de ${name}`,
+    lost: 'Tuyauterie sans égout',
+    looks: {
+      drain: 'évacuation',
+      vent: 'ventilation',
+      both: 'évacuation qui ventile aussi',
+      undersized: '▲ trop petit',
+    },
+    marks: {
+      cleanout: 'regard de nettoyage',
+      'open-air': 'air libre',
+      'admittance-valve': 'clapet d’admission d’air',
+      sewer: 'vers l’égout',
+      'no-air': 'siphon sans ventilation',
+    },
+    fit: 'Cadrer',
+    picture:
+      'Dessin isométrique des évacuations et ventilations, sans échelle. La liste des tuyaux à côté dit la même chose en mots.',
     name: 'Schéma vertical',
     print: 'Imprimer',
     none: 'Il n’y a pas de réseau d’évacuation à dessiner.',

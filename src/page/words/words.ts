@@ -204,6 +204,13 @@ export interface Words {
     readonly distances: (length: string, plan: string, rise: string) => string;
   };
   readonly riser: {
+    readonly whole: (system: number) => string;
+    readonly part: (name: string) => string;
+    readonly lost: string;
+    readonly looks: Readonly<Record<'drain' | 'vent' | 'both' | 'undersized', string>>;
+    readonly marks: Readonly<Record<'cleanout' | 'open-air' | 'admittance-valve' | 'sewer' | 'no-air', string>>;
+    readonly fit: string;
+    readonly picture: string;
     readonly name: string;
     readonly print: string;
     readonly none: string;
