@@ -7,6 +7,8 @@ export interface Tower {
   readonly stack?: string;
   /** `false`: the stack ends at its highest branch. */
   readonly stackVent?: boolean;
+  /** Metres that the stack steps aside to the east, in `OA-OB`, between its lowest branch and its foot. */
+  readonly offset?: number;
   /** A vent stack from just below the lowest branch, with a foot `VF`, to the stack vent. */
   readonly ventStack?: boolean;
 }
@@ -21,14 +23,15 @@ export const floorOf = (storey: number): number => storeyHeight * (storey - 1);
  * without fixtures are passed by. The stack vent is `S<top>-VH`, `VH-VT`; the vent stack comes in at `VH`.
  */
 export function tower(storeys: readonly (readonly string[])[], options: Tower = {}): string {
-  const { more = '', stack = '4 in', stackVent = true, ventStack = false } = options;
+  const { more = '', stack = '4 in', stackVent = true, ventStack = false, offset } = options;
   const top = storeys.findLastIndex((fixtures) => fixtures.length > 0) + 1;
   const used = storeys.flatMap((fixtures, at) => (fixtures.length > 0 ? [at + 1] : [])).reverse();
   const roof = floorOf(storeys.length + 1);
   const floors = storeys.map((_, at) => `storey "Storey ${at + 1}" at ${floorOf(at + 1)}`);
   const joints = used.map((storey) => `node S${storey} at 0 0 ${floorOf(storey) - 0.4}`);
   const foot = ventStack ? ['VF (down 0.3)'] : [];
-  const down = [...used.map((storey) => `S${storey}`), ...foot, 'SF (to -1.6)', 'OUT (east 9 fall 1:50)'];
+  const aside = offset === undefined ? [] : ['OA (down 1.2)', `OB (east ${offset} fall 1:50)`];
+  const down = [...used.map((storey) => `S${storey}`), ...foot, ...aside, 'SF (to -1.6)', 'OUT (east 9 fall 1:50)'];
   return `model "A stack"
 ${floors.join('\n')}
 ${joints.join('\n')}

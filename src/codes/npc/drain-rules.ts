@@ -1,3 +1,4 @@
+import { oneSizeAbove } from '../../tables/find-row.ts';
 import { sizeForLoad } from '../../tables/find-size.ts';
 import { sizeAtSlope } from '../../tables/find-slope.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
@@ -6,6 +7,9 @@ import { floorStep, followStep, tableStep } from '../rules/steps.ts';
 import type { SizesSoFar, SizingRule, Step } from '../sizing-rule.ts';
 import type { Tools } from '../tools.ts';
 import type { PipeUse } from '../use.ts';
+
+/** A sink of three compartments: the pipe that takes its outlets is one size larger (2.4.9.3.(2)). */
+const compartments = 3;
 
 /** Sizes of pipes that carry water: National Plumbing Code 2.4.9. and 2.4.10., rules R14 to R25. */
 export function drainRules({ family, omit, settings }: Tools): SizingRule[] {
@@ -35,10 +39,17 @@ export function drainRules({ family, omit, settings }: Tools): SizingRule[] {
     {
       id: 'NPC-R14',
       reads: 'use',
-      ask: (pipe) =>
-        pipe.outlet === null
-          ? undefined
-          : followStep(rule('NPC-R14'), pipe.outlet, { outlet: pipe.outlet, demand: 'outlet' }),
+      ask: (pipe) => {
+        if (pipe.outlet === null) return undefined;
+        if (pipe.fixtures < compartments)
+          return followStep(rule('NPC-R14'), pipe.outlet, { outlet: pipe.outlet, demand: 'outlet' });
+        const larger = oneSizeAbove(branch, pipe.outlet, family.series, omit) ?? pipe.outlet;
+        return followStep(rule('NPC-R14'), larger, {
+          outlet: pipe.outlet,
+          outlets: pipe.fixtures,
+          demand: 'common outlet',
+        });
+      },
     },
     {
       id: 'NPC-R14-trap',
