@@ -60,7 +60,7 @@ export function buildNetwork(
   const ported = kept.filter(({ how }) => how === 'ports').length;
 
   const findings: Finding[] = [
-    ...joining.doubles,
+    ...joining.doubles.filter(({ about }) => fates[about[1]!]!.use !== 'left-out'),
     ...misfiledFindings([...byPorts, ...byPlace], identities, model),
     ...contradictedJoints(joining.contradictions.filter(({ between }) => fates[between[0]]!.use !== 'left-out')),
     ...inferredJoints(welds, stays, joining.habit),
@@ -109,19 +109,8 @@ function misfiledPipes(
   identities: readonly Identity[],
   { reasons, piping, welds, reach }: ReturnType<typeof joinAll>,
 ): readonly ElementId[] {
-  const suspects = new Set(
-    model.elements
-      .filter(({ id }) => {
-        const filed = reasons[id] ?? null;
-        return filed !== null && filed !== 'answer' && identities[id]!.part === 'pipe';
-      })
-      .map(({ id }) => id),
+  const suspects = reasons.map(
+    (reason, id) => reason !== null && reason !== 'answer' && identities[id]!.part === 'pipe',
   );
-  if (suspects.size === 0 || freeEnds(piping, welds).length === 0) return [];
-  const all = pipingOf(
-    model,
-    identities,
-    reasons.map((reason, id) => reason === null || suspects.has(id as ElementId)),
-  );
-  return misfiledByPlace(all, piping, welds, suspects, reach);
+  return misfiledByPlace(pipingOf(model, identities, suspects).pipes, piping, welds, reach);
 }

@@ -1,9 +1,12 @@
 import { type Finding, finding } from '../findings/finding.ts';
+import { grown } from '../geometry/box.ts';
+import { boxGrid } from '../geometry/box-grid.ts';
+import { distance } from '../geometry/vector.ts';
 import type { Identity, Part } from '../model/identity.ts';
 import type { Element, ElementId, Model } from '../model/model.ts';
 import type { LeftOutReason } from './left-out-reason.ts';
-import type { PipePart, Piping } from './piping.ts';
-import { type Proposal, proposeJoins } from './propose-joins.ts';
+import { endPoint, type PipePart, type Piping } from './piping.ts';
+import { freeEnds } from './settle-joins.ts';
 import type { Reach } from './tolerance.ts';
 import type { Welds } from './welds.ts';
 
@@ -69,36 +72,32 @@ const alike = 0.35;
  * that lack a connection.
  */
 export function misfiledByPlace(
-  all: Piping,
+  suspects: readonly PipePart[],
   piping: Piping,
   welds: Welds,
-  suspects: ReadonlySet<ElementId>,
   reach: Reach,
 ): readonly ElementId[] {
-  const ends = all.pipes.flatMap(({ element, axis }, pipe) =>
-    suspects.has(element) && axis !== null ? [2 * pipe, 2 * pipe + 1] : [],
+  const places = suspects.flatMap(({ axis }) =>
+    axis === null ? [null, null] : [endPoint(axis, 0), endPoint(axis, 1)],
   );
-  if (ends.length === 0) return [];
-  const everyEnd = all.pipes.flatMap((_, pipe) => [2 * pipe, 2 * pipe + 1]);
-  const met = new Map<number, Proposal[]>();
-  for (const proposal of proposeJoins(all, ends, everyEnd, reach)) {
-    if (proposal.within && isOpenHere(proposal, all, piping, welds))
-      met.set(proposal.end, [...(met.get(proposal.end) ?? []), proposal]);
+  const grid = boxGrid(places.map((at) => at && { min: at, max: at }));
+  const met = new Uint8Array(places.length);
+  for (const node of freeEnds(piping, welds)) {
+    const own = piping.pipes[node >> 1]!;
+    const at = endPoint(own.axis!, (node & 1) as 0 | 1);
+    const far = reach.ofEnd(own.diameter);
+    grid.touching(grown({ min: at, max: at }, far), (i) => {
+      if (distance(places[i]!, at) <= far && similar(suspects[i >> 1]!, own)) met[i] = 1;
+    });
   }
-  const found = ends.filter((end) => end % 2 === 0 && met.has(end) && met.has(end + 1));
-  return found.map((end) => all.pipes[end >> 1]!.element).sort((a, b) => a - b);
-}
-
-function isOpenHere({ end, to }: Proposal, all: Piping, piping: Piping, welds: Welds): boolean {
-  const own = all.pipes[end >> 1]!;
-  if (to.is === 'wall') return false;
-  if (to.is === 'end') {
-    const other = all.pipes[to.end >> 1]!;
-    const pipe = piping.pipeOf[other.element]!;
-    return pipe >= 0 && !welds.isHeld(2 * pipe + (to.end & 1)) && similar(own, other);
+  for (const [body, { part, box }] of piping.bodies.entries()) {
+    if (part !== 'fitting' || box === null || welds.degree[body] !== 1) continue;
+    grid.touching(grown(box, reach.ofEnd(0)), (i) => {
+      met[i] = 1;
+    });
   }
-  const body = piping.bodyOf[all.bodies[to.body]!.element]!;
-  return body >= 0 && piping.bodies[body]!.part === 'fitting' && welds.degree[body]! < 2 && welds.degree[body]! > 0;
+  const found = suspects.filter((_, i) => met[2 * i] === 1 && met[2 * i + 1] === 1);
+  return found.map(({ element }) => element).sort((a, b) => a - b);
 }
 
 const similar = (a: PipePart, b: PipePart): boolean =>

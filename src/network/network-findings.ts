@@ -1,5 +1,6 @@
 import { type Finding, finding } from '../findings/finding.ts';
-import { distanceToBox } from '../geometry/box.ts';
+import { distanceToBox, grown } from '../geometry/box.ts';
+import { boxGrid } from '../geometry/box-grid.ts';
 import type { Identity } from '../model/identity.ts';
 import type { ElementId } from '../model/model.ts';
 import { bodyNode, endPoint, type Piping } from './piping.ts';
@@ -61,26 +62,31 @@ function grouped(contradictions: readonly Contradiction[]): readonly (readonly C
   return [...new Set(groupOf.values())];
 }
 
-/** Fixtures that nothing drains, where the model has drains at all. */
+/** An end farther from a fixture than this has nothing to do with it, metres. */
+const nearby = 1;
+
+/** Fixtures that nothing drains, each with the nearest free end, if one is near. */
 export function unconnectedFixtures(
   identities: readonly Identity[],
   piping: Piping,
   welds: Welds,
   ends: readonly number[],
 ): readonly Finding[] {
-  const free = ends.map((node) => ({ node, at: endPoint(piping.pipes[node >> 1]!.axis!, (node & 1) as 0 | 1) }));
+  const points = ends.map((node) => endPoint(piping.pipes[node >> 1]!.axis!, (node & 1) as 0 | 1));
+  const grid = boxGrid(points.map((at) => ({ min: at, max: at })));
   return piping.bodies.flatMap(({ element, box }, body) => {
     if (identities[element]!.part !== 'fixture' || welds.isHeld(bodyNode(piping, body))) return [];
-    const near = box === null ? [] : free.map(({ node, at }) => ({ node, gap: distanceToBox(at, box) }));
-    const best = near.reduce<{ node: number; gap: number } | null>(
-      (a, b) => (a === null || b.gap < a.gap ? b : a),
-      null,
-    );
-    const close = best !== null && best.gap <= 1;
-    return [
-      finding('fixture-unconnected', close ? [element, welds.elementOf(best.node)] : [element], {
-        gapM: close ? best.gap : null,
-      }),
-    ];
+    let best: { readonly end: number; readonly gap: number } | null = null;
+    if (box !== null)
+      grid.touching(grown(box, nearby), (i) => {
+        const gap = distanceToBox(points[i]!, box);
+        if (best === null || gap < best.gap) best = { end: ends[i]!, gap };
+      });
+    return [unconnected(element, best, welds)];
   });
+}
+
+function unconnected(element: ElementId, near: { end: number; gap: number } | null, welds: Welds): Finding {
+  const about = near === null ? [element] : [element, welds.elementOf(near.end)];
+  return finding('fixture-unconnected', about, { gapM: near?.gap ?? null });
 }

@@ -65,7 +65,7 @@ export function proposeJoins(
     const mine: Proposal[] = [];
     const around = grown({ min: end.at, max: end.at }, far);
     bodyGrid.touching(around, (body) => add1(mine, toBody(end, body, piping, reach)));
-    if (mine.some(({ within, gap }) => within && gap <= asNear)) {
+    if (mine.some(({ to, within, gap }) => within && gap <= asNear && takesAny(to, piping))) {
       proposals.push(...mine);
       continue;
     }
@@ -89,15 +89,25 @@ function add1(list: Proposal[], proposal: Proposal | null): void {
   if (proposal !== null) list.push(proposal);
 }
 
-/** What lies in a fitting is not joined pipe to pipe besides: a body as near as the rest, or nearly, is the answer. */
-const asNear = 0.002;
+const takesAny = (to: Proposal['to'], { bodies }: Piping): boolean =>
+  to.is === 'body' && bodies[to.body]!.capacity === null;
+
+/**
+ * What lies in a fitting is not joined pipe to pipe besides: where a body is as near as the rest, or nearly, the rest
+ * waits until that body has turned out to be full.
+ */
 function preferBodies(proposals: readonly Proposal[]): readonly Proposal[] {
   const nearest = (is: boolean): number =>
     Math.min(...proposals.filter(({ to, within }) => within && (to.is === 'body') === is).map(({ gap }) => gap));
-  return nearest(true) <= nearest(false) + asNear
-    ? proposals.filter(({ to, within }) => to.is === 'body' || !within)
-    : proposals;
+  if (nearest(true) > nearest(false) + asNear) return proposals;
+  return proposals.map((proposal) =>
+    proposal.to.is === 'body' || !proposal.within ? proposal : { ...proposal, cost: proposal.cost + lastResort },
+  );
 }
+
+const asNear = 0.002;
+/** Metres of cost beyond any that a gap makes. */
+const lastResort = 10;
 
 /** An end that stops short of a body must at least look toward it. */
 const looksToward = 0.3;
