@@ -14,6 +14,12 @@ export function wanted({ part }: BodyPart, predefinedType: string | null): numbe
   return part === 'trap' || part === 'valve' ? 2 : 1;
 }
 
+/** Metres between the places where two bodies are known to connect; null where one of them shows none. */
+function nearestSpots(a: BodyPart, b: BodyPart): number | null {
+  if (a.spots.length === 0 || b.spots.length === 0) return null;
+  return Math.min(...a.spots.map((spot) => Math.min(...b.spots.map((other) => distance(spot, other)))));
+}
+
 /** Fittings, valves and terminals that touch each other with no pipe between. */
 export function joinTouching(model: Model, piping: Piping, welds: Welds, reach: Reach): void {
   const { bodies } = piping;
@@ -32,10 +38,11 @@ export function joinTouching(model: Model, piping: Piping, welds: Welds, reach: 
     grid.touching(grown(box, reach.ofBodies), (b) => {
       if (b === a || (lacks(b) && b < a)) return;
       const other = bodies[b]!.box!;
-      const gap = distanceOfBoxes(box, other);
-      if (gap > reach.ofBodies) return;
+      const spots = nearestSpots(bodies[a]!, bodies[b]!);
+      const gap = spots ?? distanceOfBoxes(box, other);
+      if (gap > (spots === null ? reach.ofBodies : reach.ofEnd(0))) return;
       pairs.push({
-        cost: gap + 0.1 * distance(boxCentre(box), boxCentre(other)),
+        cost: gap + (spots === null ? 0.1 * distance(boxCentre(box), boxCentre(other)) : 0),
         names: name(a) < name(b) ? [name(a), name(b)] : [name(b), name(a)],
         settle: () => {
           if ((lacks(a) || lacks(b)) && !full(a) && !full(b))

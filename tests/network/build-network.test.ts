@@ -178,6 +178,26 @@ const cases: readonly Case[] = [
     joints: ['A', 'A+link@bend', 'B', 'B+link@next'],
   },
   {
+    name: 'fittings whose bodies overlap are not linked when their ports say that they do not meet',
+    parts: [
+      pipe('A', '0 0 0 > 1.9 0 0'),
+      body('bend', 'fitting', [2, 0, 0], 0.2, { ports: [{ at: [1.9, 0, 0] }, { at: [2, 0, 0.1] }] }),
+      body('beside', 'fitting', [2, 0.15, 0], 0.2, { ports: [{ at: [2.1, 0.15, 0] }, { at: [2, 0.25, 0] }] }),
+      pipe('B', '2.1 0.15 0 > 4 0.15 0'),
+    ],
+    joints: ['A', 'A@bend', 'B', 'B@beside'],
+  },
+  {
+    name: 'ports at one place meet, though no relation says so',
+    parts: [
+      pipe('A', '0 0 0 > 1.9 0 0'),
+      body('bend', 'fitting', [2, 0, 0], 0.2, { ports: [{ at: [1.9, 0, 0] }, { at: [2, 0.1, 0] }] }),
+      body('next', 'fitting', [2, 0.2, 0], 0.2, { ports: [{ at: [2, 0.1, 0] }, { at: [2.1, 0.2, 0] }] }),
+      pipe('B', '2.1 0.2 0 > 4 0.2 0'),
+    ],
+    joints: ['A', 'A+link@bend', 'B', 'B+link@next'],
+  },
+  {
     name: 'ports decide, however far apart they are drawn',
     parts: [
       pipe('A', '0 0 0 > 2 0 0', { ports: [{ at: [0, 0, 0] }, { at: [2, 0, 0] }] }),
