@@ -71,7 +71,9 @@ function otherErrors(findings: readonly ResultFinding[]): TextLine[] {
   const codes = tally(errors.map(({ code }) => code));
   return [
     blank,
-    ...heading(`Other errors: ${errors.length}`),
+    ...heading(
+      `${errors.length < findings.filter(({ severity }) => severity === 'error').length ? 'Other errors' : 'Errors'}: ${errors.length}`,
+    ),
     ...codes.slice(0, mostCodes).flatMap(([code, count]) => {
       const some = errors.filter((error) => error.code === code).slice(0, mostSentences);
       const more = count - some.length;

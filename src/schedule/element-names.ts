@@ -20,7 +20,10 @@ export function elementNames(result: Result): ElementNames {
       if (element === undefined) return shownText(globalId);
       return `${nameOf(globalId) || element.class.replace(/^Ifc/, '')} #${element.stepId}`.trim();
     },
-    short: (globalId) => nameOf(globalId) || `#${known.get(globalId)?.stepId ?? shownText(globalId)}`,
+    short: (globalId) => {
+      const element = known.get(globalId);
+      return nameOf(globalId) || (element === undefined ? shownText(globalId) : `#${element.stepId}`);
+    },
   };
 }
 

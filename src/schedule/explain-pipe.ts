@@ -1,10 +1,10 @@
 import { demandText } from './demand-text.ts';
 import { type ElementNames, elementNames } from './element-names.ts';
 import type { NextSmaller } from './explain.ts';
-import { decimal, lengthText, loadText, sizeText, slopeText } from './number-text.ts';
+import { decimal, lengthText, limitText, loadText, sizeText, slopeText } from './number-text.ts';
 import type { Result, ResultPipe } from './result.ts';
 import { shownText } from './shown-text.ts';
-import { counted, countedKinds, listed, plainWords } from './trade-words.ts';
+import { counted, countedKinds, listed, plainWords, sentence } from './trade-words.ts';
 
 /** The story of one pipe: what it is, whose water, whose air, why that role, each demand, the verdict, what is wrong. */
 export function explainPipe(result: Result, pipe: ResultPipe, smaller: NextSmaller | null): string[] {
@@ -18,7 +18,7 @@ export function explainPipe(result: Result, pipe: ResultPipe, smaller: NextSmall
     roleReason(pipe),
     ...(battery === undefined
       ? []
-      : [`Battery ${battery.id} is read as ${plainWords(battery.reading)}, since ${shownText(battery.why)}.`]),
+      : [`Its battery, ${battery.id}, is read as ${plainWords(battery.reading)}, since ${shownText(battery.why)}.`]),
     ...demands(pipe, unit, names),
     verdict(pipe),
     ...smallerSize(smaller, unit, names),
@@ -28,7 +28,7 @@ export function explainPipe(result: Result, pipe: ResultPipe, smaller: NextSmall
     ...sections(pipe),
     ...result.findings
       .filter(({ about, code }) => about[0] === pipe.globalId && code !== 'undersized')
-      .map(({ sentence }) => shownText(sentence)),
+      .map((finding) => shownText(finding.sentence)),
   ];
 }
 
@@ -55,8 +55,9 @@ const slopeGround: Readonly<Record<string, string>> = {
   answer: 'as answered',
 };
 
-function water(result: Result, { servesWater = [], load, next }: ResultPipe, names: ElementNames): string {
-  const to = next === null ? 'and on to the sewer or nowhere' : `and on through ${names.of(next)}`;
+function water(result: Result, { globalId, servesWater = [], load, next }: ResultPipe, names: ElementNames): string {
+  const isEnd = result.systems.some(({ sewerEnd }) => sewerEnd.pipe === globalId);
+  const to = next === null ? (isEnd ? 'and out to the sewer' : 'and ends there') : `and on through ${names.of(next)}`;
   if (servesWater.length === 0) return 'No water runs through it.';
   return `Water: ${whose(result, servesWater, names)}; ${loadText(load, result.code.unit)}, ${to}.`;
 }
@@ -90,7 +91,7 @@ function roleReason({ servesWater = [], servesAir = [], role }: ResultPipe): str
 
 function demands({ trail }: ResultPipe, unit: string, names: ElementNames): string[] {
   if (trail.length === 0) return ['No rule of the code asks anything of it.'];
-  return trail.map((step) => `${demandText(step, unit, names.short)}${step.governs ? '. This governs.' : '.'}`);
+  return trail.map((step) => `${sentence(demandText(step, unit, names.short))}${step.governs ? ' This governs.' : ''}`);
 }
 
 function verdict({ modelled, required, verdict: word, reason }: ResultPipe): string {
@@ -106,9 +107,12 @@ const verdicts = {
   unknown: 'no verdict',
 } as const;
 
-function smallerSize(smaller: NextSmaller | null, unit: string, names: ElementNames): string[] {
-  if (smaller === null) return [];
-  return [`Why not ${smaller.size.label}? It fails this demand: ${demandText(smaller.fails, unit, names.short)}.`];
+function smallerSize(next: NextSmaller | null, unit: string, names: ElementNames): string[] {
+  if (next === null) return [];
+  const { size, fails } = next;
+  const limit = fails.smaller?.size.dn === size.dn ? fails.smaller.limit : null;
+  const holds = limit === null ? '' : ` ${size.label} holds ${limitText(limit)}.`;
+  return [`Why not ${size.label}?${holds} It fails this demand: ${sentence(demandText(fails, unit, names.short))}`];
 }
 
 function sections({ sections: parts }: ResultPipe): string[] {

@@ -3,7 +3,7 @@ import { decimal, lengthText, slopeText } from './number-text.ts';
 /**
  * The numbers behind a demand or a broken condition, read from the unit that each fact's name carries:
  * `{loadUnits: 14, limitUnits: 12}` gives `load 14 fixture units, limit 12 fixture units`.
- * `nameOf` turns a GlobalId into what people call the thing.
+ * What is null, false or empty says nothing and is left out. `nameOf` turns a GlobalId into what people call the thing.
  */
 export function factsText(
   facts: Readonly<Record<string, unknown>>,
@@ -11,7 +11,8 @@ export function factsText(
   nameOf: (globalId: string) => string,
 ): string {
   return Object.entries(facts)
-    .filter(([, value]) => value !== null && value !== undefined && !(Array.isArray(value) && value.length === 0))
+    .filter(([, value]) => value !== null && value !== undefined && value !== false)
+    .filter(([, value]) => !(Array.isArray(value) && value.length === 0))
     .map(([key, value]) => factText(key, value, unit, nameOf))
     .join(', ');
 }
@@ -19,7 +20,7 @@ export function factsText(
 function factText(key: string, value: unknown, unit: string, nameOf: (globalId: string) => string): string {
   const words = key.split(/(?=[A-Z])/).map((word) => word.toLowerCase());
   const last = words.at(-1) ?? '';
-  if (typeof value === 'boolean') return `${words.join(' ')}: ${value ? 'yes' : 'no'}`;
+  if (value === true) return words.join(' ');
   if (typeof value !== 'number') return `${words.join(' ')} ${textOf(value, nameOf)}`;
   const thing = words.length > 1 && last in measures ? words.slice(0, -1).join(' ') : words.join(' ');
   const measure = measures[last];

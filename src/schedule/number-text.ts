@@ -29,3 +29,10 @@ export function sizeText(range: SizeRange | null): string {
   if (most === null) return least === null ? 'no size of the table' : `${least} or more`;
   return least === null || least === most ? most : `${least} to ${most}`;
 }
+
+/** A limit of a table as it is printed, the three words of the tables in plain ones; null: nobody could read it. */
+export function limitText(limit: number | string | null): string {
+  if (limit === null) return 'an unread figure';
+  if (typeof limit === 'number') return decimal(limit, 2);
+  return limit === 'NP' ? 'nothing: it is not permitted' : limit;
+}

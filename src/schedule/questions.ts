@@ -133,9 +133,9 @@ function sizeQuestions(result: Result): Question[] {
   const names = elementNames(result);
   return result.pipes
     .filter(({ modelled, required }) => modelled === null && required !== null)
-    .map(({ globalId, reason }) => ({
+    .map(({ globalId }) => ({
       about: [globalId],
-      ask: `What size is ${names.of(globalId)}?${reason === undefined ? '' : ` ${reason}.`}`,
+      ask: `What size is ${names.of(globalId)}?`,
       weight: 1,
       choices: [],
       answer: { part: 'pipes', key: globalId, field: 'size' },

@@ -17,6 +17,7 @@ export function resultTrail(outcome: Outcome, index: ResultIndex, pipe: PipeId):
     asks: step.asks === null ? null : index.size(step.asks),
     governs: governing.includes(step),
     trust: step.provisional ? 'provisional' : (step.cell?.trust ?? step.trust),
+    ...(step.smaller == null ? {} : { smaller: { size: index.size(step.smaller.size), limit: step.smaller.limit } }),
   }));
 }
 

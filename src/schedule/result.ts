@@ -160,6 +160,8 @@ export interface TrailStep {
   readonly asks: SizeLabel | null;
   readonly governs: boolean;
   readonly trust: string;
+  /** The next smaller size of the table and what it holds, as it is printed; absent where the rule cannot tell. */
+  readonly smaller?: { readonly size: SizeLabel; readonly limit: number | string | null };
 }
 
 export interface ResultBattery {

@@ -2,6 +2,7 @@ import type { Question } from './questions.ts';
 import type { Result } from './result.ts';
 import { shownText } from './shown-text.ts';
 import type { Survey, SurveySystem } from './survey.ts';
+import { terminalsText } from './terminals-text.ts';
 import { blank, heading, paragraph, type TextLine } from './text-line.ts';
 import { counted, plainWords } from './trade-words.ts';
 import { row, understoodText } from './understood-text.ts';
@@ -10,6 +11,7 @@ import { row, understoodText } from './understood-text.ts';
 export function surveyText(survey: Survey, result: Result): TextLine[] {
   return [
     ...understoodText(result),
+    ...terminalsText(survey),
     ...paragraph(inModel(survey), row('In the file')),
     ...some(survey.systems, mostSystems, 'more systems').flatMap((system, place) =>
       paragraph(typeof system === 'string' ? system : systemText(system), row(place === 0 ? 'IFC systems' : '')),
@@ -71,13 +73,20 @@ function listText(title: string, texts: readonly string[]): TextLine[] {
 
 function questionsText(questions: readonly Question[]): TextLine[] {
   if (questions.length === 0) return [blank, ...paragraph('Nothing to ask: no unknown can change a size.', '', 'good')];
+  const sizes = questions.filter(isSizeQuestion);
+  const others = questions.filter((question) => !isSizeQuestion(question));
+  const asked = [
+    ...others.map(({ ask, weight }) => `${shownText(ask)} (${counted(weight, 'pipe')})`),
+    ...(sizes.length < 2
+      ? sizes.map(({ ask }) => shownText(ask))
+      : [`What sizes are the ${sizes.length} pipes that show none?`]),
+  ];
   return [
     blank,
     ...heading(`To ask the designer: ${questions.length}, most weighty first`),
-    ...some(questions, mostQuestions, 'more; --questions FILE writes all of them to fill in').flatMap((question) =>
-      typeof question === 'string'
-        ? paragraph(question, '    ', 'quiet')
-        : paragraph(`${shownText(question.ask)} (${counted(question.weight, 'pipe')})`, '  - '),
-    ),
+    ...some(asked, mostQuestions, 'more').flatMap((ask) => paragraph(ask, '  - ')),
+    ...paragraph('--questions FILE writes all of them to fill in.', '    ', 'quiet'),
   ];
 }
+
+const isSizeQuestion = ({ answer }: Question): boolean => answer.part === 'pipes' && answer.field === 'size';

@@ -20,6 +20,9 @@ export function tally(texts: readonly string[]): [text: string, count: number][]
   return [...counts].sort(([a, m], [b, n]) => n - m || (a < b ? -1 : 1));
 }
 
+/** A sentence with one full stop: clauses often end in one of their own. */
+export const sentence = (text: string): string => (/[.?!]$/.test(text) ? text : `${text}.`);
+
 /** `a`, `a and b`, `a, b and c`. */
 export function listed(texts: readonly string[]): string {
   return texts.length < 2 ? texts.join('') : `${texts.slice(0, -1).join(', ')} and ${texts.at(-1)}`;

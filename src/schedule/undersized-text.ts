@@ -90,15 +90,24 @@ function groupText(
 function reasonText(pipe: ResultPipe, unit: string, names: ElementNames): string {
   const { load, ventLoad, developedLength, provisional } = pipe;
   const step = governingOf(pipe);
-  const limit = step?.facts.limitUnits;
   const upstream = step?.facts.upstream;
   const parts = [
     `${step === undefined ? '' : `${step.title}: `}${loadText(ventLoad ?? load, unit)}`,
     ...(developedLength === undefined ? [] : [`${lengthText(developedLength)} developed length`]),
-    ...(typeof limit === 'number' && step?.asks != null ? [`${step.asks.label} holds ${decimal(limit, 2)}`] : []),
+    ...holdsText(step),
     ...(typeof upstream === 'string' ? [`after ${names.of(upstream)}`] : []),
     ...(step === undefined ? [] : [step.clause]),
     ...(provisional ? ['provisional'] : []),
   ];
   return parts.join('; ');
+}
+
+/** `3 in holds 12, 4 in 36`: what the table gives the next smaller size and the one that it asks for. */
+function holdsText(step: TrailStep | undefined): string[] {
+  const limit = step?.facts.limitUnits;
+  if (step === undefined || step.asks === null || typeof limit !== 'number') return [];
+  const { asks, smaller } = step;
+  return typeof smaller?.limit === 'number'
+    ? [`${smaller.size.label} holds ${decimal(smaller.limit, 2)}, ${asks.label} ${decimal(limit, 2)}`]
+    : [`${asks.label} holds ${decimal(limit, 2)}`];
 }

@@ -1,10 +1,9 @@
 import { type ElementNames, elementNames } from './element-names.ts';
-import { factsText } from './facts-text.ts';
 import { lengthText, loadText } from './number-text.ts';
 import type { BrokenCondition, Result, ResultBattery, ResultSystem } from './result.ts';
 import { padded, shownText } from './shown-text.ts';
 import { heading, paragraph, type TextLine } from './text-line.ts';
-import { counted, countedKinds, listed, plainWords, tally } from './trade-words.ts';
+import { counted, countedKinds, listed, plainWords, sentence, tally } from './trade-words.ts';
 
 /** What the program took the model to be, before any judgement: fixtures, systems, batteries, joints, what it left out. */
 export function understoodText(result: Result): TextLine[] {
@@ -31,10 +30,8 @@ export function understoodText(result: Result): TextLine[] {
         ? paragraph(system, row(''))
         : paragraph(systemText(system, result.code.unit, names), row(place === 0 ? 'Systems' : '')),
     ),
-    ...folded(batteries, mostBatteries, 'more batteries').flatMap((battery, place) =>
-      typeof battery === 'string'
-        ? paragraph(battery, row(''))
-        : batteryText(battery, row(place === 0 ? 'Batteries' : ''), kindOf, result.code.unit, names),
+    ...folded(alike(batteries, kindOf), mostBatteries, 'more kinds of battery').flatMap((group, place) =>
+      typeof group === 'string' ? paragraph(group, row('')) : batteryText(group, row(place === 0 ? 'Batteries' : '')),
     ),
     ...paragraph(
       `${counted(joints.ports, 'joint')} by ports, ${joints.geometry} by geometry` +
@@ -95,36 +92,53 @@ const sewerEnds: Readonly<Record<string, string>> = {
   first: 'assumed: one of several equal open ends',
 };
 
-function batteryText(
-  { id, fixtures, reading, why, broken, others }: ResultBattery,
-  lead: string,
-  kindOf: ReadonlyMap<string, string>,
-  unit: string,
-  names: ElementNames,
-): TextLine[] {
-  const who = countedKinds(fixtures.map((fixture) => kindOf.get(fixture) ?? 'unidentified'));
+interface AlikeBatteries {
+  readonly ids: readonly string[];
+  readonly who: string;
+  readonly first: ResultBattery;
+}
+
+/** Batteries of the same fixtures, read the same way for the same reasons, told once: tall buildings repeat them. */
+function alike(batteries: readonly ResultBattery[], kindOf: ReadonlyMap<string, string>): AlikeBatteries[] {
+  const groups = new Map<string, { ids: string[]; who: string; first: ResultBattery }>();
+  for (const battery of batteries) {
+    const who = countedKinds(battery.fixtures.map((fixture) => kindOf.get(fixture) ?? 'unidentified'));
+    const { reading, why, broken, others } = battery;
+    const told = others.map((other) => [other.reading, other.holds, conditionsText(other.broken)]);
+    const key = JSON.stringify([who, reading, why, conditionsText(broken), told]);
+    const group = groups.get(key);
+    if (group === undefined) groups.set(key, { ids: [battery.id], who, first: battery });
+    else group.ids.push(battery.id);
+  }
+  return [...groups.values()];
+}
+
+function batteryText({ ids, who, first }: AlikeBatteries, lead: string): TextLine[] {
+  const { reading, why, broken, others } = first;
   const nots = others.map((other) =>
     other.holds
-      ? `${plainWords(other.reading)} would hold as well`
-      : `no ${plainWords(other.reading)}: ${conditionsText(other.broken, unit, names)}`,
+      ? `As ${plainWords(other.reading)} it would hold too.`
+      : `As ${plainWords(other.reading)} it would break ${sentence(conditionsText(other.broken))}`,
   );
+  const name =
+    ids.length === 1
+      ? ids[0]
+      : `${listed(ids.slice(0, mostAlike).map(shownText))}${ids.length > mostAlike ? ` and ${ids.length - mostAlike} more` : ''} alike`;
   return [
-    ...paragraph(`${id}, ${who}: ${plainWords(reading)}, since ${shownText(why)}`, lead),
-    ...(broken.length === 0 ? [] : paragraph(`breaks ${conditionsText(broken, unit, names)}`, row(''), 'error')),
-    ...(nots.length === 0 ? [] : paragraph(nots.join('; '), row(''), 'quiet')),
+    ...paragraph(`${name}: ${who}; ${plainWords(reading)}, since ${shownText(why)}`, lead),
+    ...(broken.length === 0 ? [] : paragraph(`It breaks ${sentence(conditionsText(broken))}`, row(''), 'error')),
+    ...(nots.length === 0 ? [] : paragraph(nots.join(' '), row(''), 'quiet')),
   ];
 }
 
-/** `relief vent (fixtures 9; 2.5.3.1.)`: the conditions that a reading breaks, each once. */
-export function conditionsText(broken: readonly BrokenCondition[], unit: string, names: ElementNames): string {
-  if (broken.length === 0) return 'not found';
-  const texts = broken.map(({ title, clause, facts }) => {
-    const numbers = factsText(facts, unit, names.short);
-    return `${lowerFirst(shownText(title))} (${numbers === '' ? '' : `${numbers}; `}${clause})`;
-  });
-  const each = [...new Set(texts)];
+const mostAlike = 3;
+
+/** `relief vent required (2.5.3.1.(3))`: the conditions that a reading breaks, each once. */
+export function conditionsText(broken: readonly BrokenCondition[]): string {
+  if (broken.length === 0) return 'a condition that is not told';
+  const each = [...new Set(broken.map(({ title, clause }) => `"${lowerFirst(shownText(title))}" (${clause})`))];
   return each.length <= mostConditions
-    ? each.join(', ')
+    ? listed(each)
     : `${each.slice(0, mostConditions).join(', ')} and ${each.length - mostConditions} more`;
 }
 

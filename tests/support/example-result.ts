@@ -35,6 +35,7 @@ const step = (over: Partial<TrailStep>): TrailStep => ({
   asks: in4,
   governs: true,
   trust: 'memory',
+  ...(over.rule === undefined ? { smaller: { size: in3, limit: 12 } } : {}),
   ...over,
 });
 
