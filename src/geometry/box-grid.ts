@@ -1,3 +1,4 @@
+import { isSound } from './box.ts';
 import type { Box } from './vector.ts';
 
 /** Finds the boxes that touch a box. Items keep the numbers they were given in. */
@@ -15,15 +16,15 @@ const widest = 3;
 
 /**
  * A hashed grid of several levels: small things in small cells, a long pipe in a few large ones, so that building
- * takes time in proportion to the number of boxes and asking to what is found. null boxes and boxes of numbers that
- * are not finite are never found.
+ * takes time in proportion to the number of boxes and asking to what is found. null boxes and boxes that are not
+ * sound are never found.
  */
 export function boxGrid(boxes: readonly (Box | null)[]): BoxGrid {
   const level = new Int8Array(boxes.length).fill(-1);
   const bounds = new Float64Array(6 * boxes.length);
   const onLevel: number[][] = Array.from({ length: levels }, () => []);
   boxes.forEach((box, item) => {
-    if (box === null || !hasNumbers(box)) return;
+    if (box === null || !isSound(box)) return;
     setBounds(bounds, 6 * item, box);
     const size = Math.max(box.max[0] - box.min[0], box.max[1] - box.min[1], box.max[2] - box.min[2]);
     let l = 0;
@@ -79,7 +80,7 @@ export function boxGrid(boxes: readonly (Box | null)[]): BoxGrid {
   };
   return {
     touching(where, visit) {
-      if (!hasNumbers(where)) return;
+      if (!isSound(where)) return;
       turn++;
       setBounds(wanted, 0, where);
       for (let l = 0; l < levels; l++) {
@@ -101,9 +102,6 @@ export function boxGrid(boxes: readonly (Box | null)[]): BoxGrid {
   };
 }
 
-const hasNumbers = ({ min, max }: Box): boolean =>
-  Number.isFinite(min[0] + min[1] + min[2]) && Number.isFinite(max[0] + max[1] + max[2]);
-
 function setBounds(bounds: Float64Array, at: number, { min, max }: Box): void {
   bounds[at] = min[0];
   bounds[at + 1] = min[1];
@@ -120,7 +118,8 @@ function cellsOf(bounds: Float64Array, at: number, level: number, cells: Int32Ar
 }
 
 const cellCount = (cells: Int32Array): number =>
-  (cells[3]! - cells[0]! + 1) * (cells[4]! - cells[1]! + 1) * (cells[5]! - cells[2]! + 1);
+  span(cells[0]!, cells[3]!) * span(cells[1]!, cells[4]!) * span(cells[2]!, cells[5]!);
+const span = (first: number, last: number): number => Math.max(0, last - first + 1);
 
 function hash(x: number, y: number, z: number, level: number): number {
   const mixed = Math.imul(x, 73856093) ^ Math.imul(y, 19349663) ^ Math.imul(z, 83492791) ^ Math.imul(level, 668265263);

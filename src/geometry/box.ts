@@ -15,6 +15,12 @@ export function boxAround(points: Iterable<Vec3>): Box | null {
   return x1 < x0 ? null : { min: [x0, y0, z0], max: [x1, y1, z1] };
 }
 
+/** True for a box of finite numbers whose corners stand the right way round. */
+export const isSound = ({ min, max }: Box): boolean =>
+  [0, 1, 2].every(
+    (i) => min[i]! <= max[i]! && min[i]! > Number.NEGATIVE_INFINITY && max[i]! < Number.POSITIVE_INFINITY,
+  );
+
 /** The box grown by `by` metres on every side. */
 export const grown = ({ min, max }: Box, by: number): Box => ({
   min: [min[0] - by, min[1] - by, min[2] - by],

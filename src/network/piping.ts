@@ -1,4 +1,4 @@
-import { boxAround, boxCentre } from '../geometry/box.ts';
+import { boxAround, boxCentre, isSound } from '../geometry/box.ts';
 import { type Polyline, polyline } from '../geometry/polyline.ts';
 import type { Box, Vec3 } from '../geometry/vector.ts';
 import type { Identity, Part } from '../model/identity.ts';
@@ -77,14 +77,17 @@ function diameterOf({ centreLine, sizes }: Element): number {
 }
 
 function bodyPart(element: Element, part: Part, model: Model): BodyPart {
-  const ports = element.ports.map((port) => model.ports[port]?.at ?? null).filter((at) => at !== null);
-  const line = element.centreLine?.points ?? [];
+  const ports = element.ports.flatMap((port) => {
+    const at = model.ports[port]?.at ?? null;
+    return at?.every(Number.isFinite) ? [at] : [];
+  });
+  const line = element.centreLine?.points.filter((at) => at.every(Number.isFinite)) ?? [];
   const ends = line.length >= 2 ? [line[0]!, line[line.length - 1]!] : [];
   const spots = apart([...ports, ...ends]);
   return {
     element: element.id,
     part,
-    box: element.box ?? boxAround(spots),
+    box: element.box !== null && isSound(element.box) ? element.box : boxAround(spots),
     spots,
     capacity: capacityOf(element, part),
   };
