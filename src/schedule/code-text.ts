@@ -64,8 +64,9 @@ function tableText(table: ShownTable, code: CodeEntry | undefined): TextLine[] {
   const { source } = table;
   const columns = table.columns.filter(({ is }) => is !== 'names');
   const heads = columns.map(({ title, unit, is }) => {
-    const bare = is === 'head' || unit === title || ['text', 'size', '1:n', 'value', 'clause'].includes(unit);
-    return bare ? title : `${title}, ${unit}`;
+    const bare =
+      is === 'head' || unit === title || ['text', 'size', '1:n', 'value', 'clause', 'count', 'factor'].includes(unit);
+    return bare ? title : `${title}, ${unit.replace(' by trap', '')}`;
   });
   const lines = table.rows.map((row) => [row.name, ...columns.map((column) => cellText(row.cells[column.id], column))]);
   const unit = columns.find(({ is }) => is === 'head')?.unit;
@@ -107,18 +108,25 @@ const valueText = (value: unknown): string =>
           .join(', ')
       : String(value);
 
-/** Columns as wide as they need; where the page is too narrow the widest gives way and its words break into lines. */
+/**
+ * Columns as wide as they need; where the page is too narrow the widest give way and break between words. A table that
+ * no breaking fits to the page is told row by row.
+ */
 function tabular(rows: readonly (readonly string[])[]): TextLine[] {
   const count = rows[0]?.length ?? 0;
-  const widths = Array.from({ length: count }, (_, column) =>
-    Math.max(...rows.map((row) => columnsOf(row[column] ?? ''))),
-  );
+  const widest = (part: (text: string) => number): number[] =>
+    Array.from({ length: count }, (_, column) => Math.max(...rows.map((row) => part(row[column] ?? ''))));
+  const widths = widest(columnsOf);
+  // The name of a row is what the eye runs down: it stays on one line.
+  const least = widest((text) => Math.max(...text.split(' ').map(columnsOf)));
+  least[0] = widths[0] ?? 0;
   const room = pageColumns - 2 * count;
   for (let over = total(widths) - room; over > 0; over = total(widths) - room) {
-    const widest = widths.indexOf(Math.max(...widths));
-    const width = Math.max(narrowest, (widths[widest] ?? 0) - over);
-    if (width >= (widths[widest] ?? 0)) break;
-    widths[widest] = width;
+    const spare = widths.map((width, column) => width - (least[column] ?? 0));
+    const most = Math.max(...spare);
+    if (most === 0) return told(rows);
+    const column = spare.indexOf(most);
+    widths[column] = (widths[column] ?? 0) - Math.min(over, Math.ceil(most / 2));
   }
   return rows.flatMap((row, line) => {
     const broken = row.map((text, column) => brokenText(text, widths[column] ?? 0));
@@ -130,7 +138,14 @@ function tabular(rows: readonly (readonly string[])[]): TextLine[] {
   });
 }
 
-const narrowest = 14;
+/** `3 in: load 27, length 12`: what is empty is left out. */
+function told([heads = [], ...rows]: readonly (readonly string[])[]): TextLine[] {
+  return rows.flatMap(([name, ...cells]) => {
+    const parts = cells.flatMap((cell, column) => (cell === '' ? [] : `${heads[column + 1]} ${cell}`));
+    return paragraph(`${name}: ${parts.join('; ')}`);
+  });
+}
+
 const total = (widths: readonly number[]): number => widths.reduce((sum, width) => sum + width, 0);
 
 const brokenText = (text: string, width: number): string[] =>

@@ -11,6 +11,7 @@ export type Dimension =
   | 'length'
   | 'slope'
   | 'flow'
+  | 'speed'
   | 'angle'
   | 'count'
   | 'factor'
@@ -41,6 +42,8 @@ const units = {
   '%': { dimension: 'slope', factor: 0.01 },
   'l/s': { dimension: 'flow', factor: 1 },
   gpm: { dimension: 'flow', factor: gallonPerMinute },
+  'm/s': { dimension: 'speed', factor: 1 },
+  'm2/s': { dimension: 'factor', factor: 1 },
   deg: { dimension: 'angle', factor: 1 },
   count: { dimension: 'count', factor: 1 },
   'pipe sizes': { dimension: 'factor', factor: 1 },
@@ -81,8 +84,11 @@ export function convert(printed: unknown, unit: ColumnUnit, series: SizeSeries):
   if (dimension === 'count' && !Number.isInteger(printed)) return { wrong: `is ${printed}, expected a whole number` };
   if (dimension === 'load') return { value: loadOf(printed) };
   const known: { readonly dimension: Dimension; readonly factor?: number } = units[unit];
-  return { value: printed * (known.factor ?? 1) };
+  return { value: Number((printed * (known.factor ?? 1)).toPrecision(exactDigits)) };
 }
+
+/** Printed figures have few digits: what multiplying by an inch or a foot adds behind these is noise, and `<=` would see it. */
+const exactDigits = 12;
 
 /** The 50 of `1:50`; undefined for anything else. */
 export function slopeRun(text: string): number | undefined {

@@ -2,7 +2,7 @@ import { InputError } from '../findings/input-error.ts';
 import type { SizeSeries } from '../units/nominal-size.ts';
 import { show } from './column-unit.ts';
 import { at, fieldsOf, type JsonObject, listAt, objectAt, textAt } from './read-json.ts';
-import { readTable } from './read-table.ts';
+import { readTable, trustWords } from './read-table.ts';
 
 /**
  * `editions/<edition>.json`: what an edition, or a local set of tables, prints differently from the base, cell by cell
@@ -53,7 +53,7 @@ export function overTable(json: unknown, id: string, where: string, series: Size
     const column = textAt(cell.column, at(spot, 'column'));
     if (!table.columns.some((one) => one.id === column))
       throw new InputError(at(spot, 'column'), `${show(column)} is no column of ${id}`);
-    Object.assign(row, { [column]: changedCell(cell) });
+    Object.assign(row, { [column]: changedCell(cell, overlay) });
   }
   const trusted = fields.trust === undefined ? rows : rows.map((row) => withTrust(row, fields.trust));
   return {
@@ -84,18 +84,24 @@ export function overList(json: unknown, list: 'numbers' | 'rules', where: string
   return { ...file, [list]: changed };
 }
 
-function changedCell(cell: JsonObject): JsonObject {
-  return { value: cell.value, ...taken(cell, ['trust', 'note']) };
+/** A user who corrects a figure and says no more has read it in print. */
+function changedCell(cell: JsonObject, { local }: Overlay): JsonObject {
+  return { value: cell.value, ...(local ? { trust: 'published' } : {}), ...taken(cell, ['trust', 'note']) };
 }
 
-/** The whole table is known less well in this edition: no row and no cell keeps a word of its own. */
+/** The whole table is known less well in this edition: what was trusted more comes down, what was less stays. */
 function withTrust(row: JsonObject, trust: unknown): JsonObject {
+  const own = row.trust ?? trust;
   const bare = Object.entries(row).map(([key, value]) => {
     const wrapped = typeof value === 'object' && value !== null && 'value' in value;
-    return [key, wrapped ? { ...value, trust } : value];
+    const word = wrapped && 'trust' in value ? value.trust : own;
+    return [key, wrapped ? { ...value, trust: lower(word, trust) } : value];
   });
-  return { ...Object.fromEntries(bare), trust };
+  return { ...Object.fromEntries(bare), trust: lower(own, trust) };
 }
+
+const falling: readonly unknown[] = trustWords;
+const lower = (a: unknown, b: unknown): unknown => (falling.indexOf(a) > falling.indexOf(b) ? a : b);
 
 const taken = (fields: JsonObject, keys: readonly string[]): JsonObject =>
   Object.fromEntries(keys.flatMap((key) => (fields[key] === undefined ? [] : [[key, fields[key]]])));

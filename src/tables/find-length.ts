@@ -1,5 +1,5 @@
 import type { NominalSize } from '../units/nominal-size.ts';
-import { type Candidate, firstThatHolds, noneOmitted, type SizeFound } from './find-size.ts';
+import { type Candidate, firstThatHolds, noneOmitted, reaches, type SizeFound } from './find-size.ts';
 import type { Amount, Cell, Row, Table } from './table.ts';
 
 /**
@@ -16,7 +16,7 @@ export function sizeForLength(
   options: { readonly group?: RowGroup; readonly omit?: ReadonlySet<NominalSize> } = {},
 ): (SizeFound & { readonly row: Row }) | null {
   const rows = rowsOf(table, options.group);
-  const start = rows.findIndex((row) => holds(row.amount(loadColumn).value, load));
+  const start = rows.findIndex((row) => reaches(row.amount(loadColumn).value, load));
   const row = rows[start];
   if (row === undefined) return null;
   const heavier = rows.slice(start + 1);
@@ -41,8 +41,6 @@ export const rowsOf = (table: Table, group?: RowGroup): readonly Row[] =>
 export function heaviest(table: Table, loadColumn: string, group?: RowGroup): Cell<Amount> | null {
   return rowsOf(table, group).at(-1)?.amount(loadColumn) ?? null;
 }
-
-const holds = (limit: Amount, load: number): boolean => limit === 'NL' || (typeof limit === 'number' && load <= limit);
 
 const firstRead = (rows: readonly Row[], column: string): Cell<Amount> | null =>
   rows.map((row) => row.amount(column)).find(({ value }) => value !== null) ?? null;

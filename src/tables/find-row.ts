@@ -1,9 +1,19 @@
 import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
+import { reaches } from './find-size.ts';
 import type { Row, Table } from './table.ts';
 
 /** Row whose key is the text; undefined when the table does not list it. */
 export const rowNamed = (table: Table, column: string, text: string): Row | undefined =>
   table.rows.find((row) => row.text(column) === text);
+
+/**
+ * Rows from the first whose limit in the column holds the amount, in printed order; none past the last. For tables whose
+ * rows are steps of load or flow and whose cells say what each takes.
+ */
+export function rowsHolding(table: Table, column: string, amount: number): readonly Row[] {
+  const first = table.rows.findIndex((row) => reaches(row.amount(column).value, amount));
+  return first < 0 ? [] : table.rows.slice(first);
+}
 
 /**
  * Row for a size, such as a trap. Between printed rows `smaller` takes the next smaller one (lengths), `larger` the next

@@ -53,7 +53,8 @@ export function firstThatHolds(candidates: readonly Candidate[], amount: number)
   return { size: null, cell: last, provisional: unread.length > 0, unread, smaller };
 }
 
-const reaches = (limit: Amount, amount: number): boolean =>
+/** A limit itself is allowed; `NL` holds everything, `NP`, `NA` and an unread cell nothing. */
+export const reaches = (limit: Amount, amount: number): boolean =>
   limit === 'NL' || (typeof limit === 'number' && amount <= limit);
 
 /** Smallest row whose limit in the column holds the load; the row's size stands in the table's first size column. */

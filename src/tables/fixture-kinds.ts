@@ -1,7 +1,7 @@
 import { InputError } from '../findings/input-error.ts';
 import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
 import { show, sizeIn } from './column-unit.ts';
-import { at, fieldsOf, type JsonObject, listAt, objectAt, textAt, textsAt } from './read-json.ts';
+import { at, fieldsOf, type JsonObject, listAt, numberAt, objectAt, textAt, textsAt } from './read-json.ts';
 import type { Table } from './table.ts';
 
 /** A word or a yes-no that must be met, one of several words, or a count from the first to the last, both included. */
@@ -22,6 +22,8 @@ export interface KindEntry {
   readonly loadFrom: string | null;
   /** Trap of the fixture as it is made, where the printed row says no size. */
   readonly usualTrap: NominalSize | null;
+  /** A row that is added for each one of a counted fact beyond so many: further shower heads. */
+  readonly more: { readonly fact: string; readonly beyond: number; readonly row: string } | null;
 }
 
 export interface FixtureKinds {
@@ -51,7 +53,7 @@ export function readKinds(json: unknown, where: string, tables: readonly Table[]
       entry,
       place,
       ['rows', 'kind'],
-      ['where', 'unless', 'onlyIfSaid', 'loadFrom', 'usualTrap', 'note'],
+      ['where', 'unless', 'onlyIfSaid', 'loadFrom', 'usualTrap', 'more', 'note'],
     );
     const rows = textsAt(fields.rows, at(place, 'rows'));
     for (const row of rows)
@@ -64,6 +66,7 @@ export function readKinds(json: unknown, where: string, tables: readonly Table[]
       onlyIfSaid: fields.onlyIfSaid === true,
       loadFrom: tableOrNull(fields.loadFrom, at(place, 'loadFrom')),
       usualTrap: readTrap(fields.usualTrap, at(place, 'usualTrap'), series),
+      more: readMore(fields.more, at(place, 'more'), known),
     };
   });
   return { table: name, entries, unlisted: tableOrNull(file.unlisted, at(where, 'unlisted')) };
@@ -74,6 +77,14 @@ function readTrap(value: unknown, where: string, series: SizeSeries): NominalSiz
   const size = sizeIn(series, textAt(value, where));
   if (size === undefined) throw new InputError(where, `is ${show(value)}, expected a size of the code's series`);
   return size;
+}
+
+function readMore(value: unknown, where: string, known: ReadonlySet<string>): KindEntry['more'] {
+  if (value === undefined) return null;
+  const fields = fieldsOf(value, where, ['fact', 'beyond', 'row']);
+  const row = textAt(fields.row, at(where, 'row'));
+  if (!known.has(row)) throw new InputError(at(where, 'row'), `${show(row)} is no row of the fixture table`);
+  return { fact: textAt(fields.fact, at(where, 'fact')), beyond: numberAt(fields.beyond, at(where, 'beyond')), row };
 }
 
 function readTests(value: unknown, where: string): ReadonlyMap<string, FactTest> {

@@ -2,7 +2,7 @@ import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
 import { rowAtSize } from './find-row.ts';
 import { sizeColumn } from './find-size.ts';
 import type { FactTest, FixtureKinds, KindEntry } from './fixture-kinds.ts';
-import type { Cell, LoadAtTrap, Row, Table, Word } from './table.ts';
+import type { Cell, LoadAtTrap, Table, Trust, Word } from './table.ts';
 
 type Fact = string | number | boolean | null;
 
@@ -43,7 +43,7 @@ export function fixtureRowsFor(
   return kinds.entries
     .filter((entry) => fits(entry, facts))
     .flatMap((entry) => {
-      const row = joined(entry, rowsOfEntry(entry, table), columns);
+      const row = joined(entry, table, columns, facts);
       return row === null ? [] : [row];
     });
 }
@@ -55,7 +55,7 @@ export function allFixtureRows(
   columns: FixtureColumns = { load: 'load', outlet: 'outlet' },
 ): readonly (FixtureRow & { readonly kind: string })[] {
   return kinds.entries.flatMap((entry) => {
-    const row = joined(entry, rowsOfEntry(entry, table), columns);
+    const row = joined(entry, table, columns);
     return row === null ? [] : [{ ...row, kind: entry.kind }];
   });
 }
@@ -114,9 +114,6 @@ export function trapRange(
   return { least, largest: [...printed, ...referred].reduce(series.larger, least) };
 }
 
-const rowsOfEntry = (entry: KindEntry, table: Table): readonly Row[] =>
-  entry.rows.flatMap((key) => table.rows.find(({ name }) => name === key) ?? []);
-
 function loadColumn(table: Table): string {
   const column = table.columns.find(({ dimension }) => dimension === 'load');
   if (column === undefined) throw new Error(`table ${table.id} has no column of loads`);
@@ -141,7 +138,9 @@ function meets(value: string | number | boolean, test: FactTest): boolean {
   return test.some((word) => word === value);
 }
 
-function joined(entry: KindEntry, rows: readonly Row[], columns: FixtureColumns): FixtureRow | null {
+/** null: the row prints no load in this column and names no other table. */
+function joined(entry: KindEntry, table: Table, columns: FixtureColumns, facts?: FixtureFacts): FixtureRow | null {
+  const rows = entry.rows.flatMap((key) => table.rows.find(({ name }) => name === key) ?? []);
   const first = rows[0];
   if (first === undefined) return null;
   const loads = rows.flatMap((row): FixtureRow['loads'] => {
@@ -149,10 +148,11 @@ function joined(entry: KindEntry, rows: readonly Row[], columns: FixtureColumns)
     if (byTrap.length > 0) return byTrap;
     const load = row.amount(columns.load);
     if (typeof load.value !== 'number') return [];
-    const own = load as Cell<number>;
+    const own = withMore(load as Cell<number>, entry, table, columns, facts);
     const trap = row.size(columns.outlet).value;
     return [rows.length > 1 && isSize(trap) ? { trap, load: own } : { trap: null, load: own }];
   });
+  if (loads.length === 0 && entry.loadFrom === null) return null;
   return {
     key: rows.map(({ name }) => name).join(' / '),
     title: first.text('title') ?? first.name,
@@ -163,6 +163,24 @@ function joined(entry: KindEntry, rows: readonly Row[], columns: FixtureColumns)
     note: first.note,
   };
 }
+
+/** The load with what is added for each further head; it is trusted no more than the row that it adds. */
+function withMore(
+  load: Cell<number>,
+  { more }: KindEntry,
+  table: Table,
+  columns: FixtureColumns,
+  facts?: FixtureFacts,
+): Cell<number> {
+  const count = more === null ? null : (facts?.[more.fact] ?? null);
+  const each = table.rows.find(({ name }) => name === more?.row)?.amount(columns.load);
+  if (more === null || typeof count !== 'number' || count <= more.beyond || typeof each?.value !== 'number')
+    return load;
+  const trust = trustOrder.indexOf(each.trust) > trustOrder.indexOf(load.trust) ? each.trust : load.trust;
+  return { ...load, value: load.value + (count - more.beyond) * each.value, trust };
+}
+
+const trustOrder: readonly Trust[] = ['published', 'cross-checked', 'memory'];
 
 const isSize = (value: NominalSize | Word | null): value is NominalSize =>
   value !== null && value !== 'NP' && value !== 'NL' && value !== 'NA';

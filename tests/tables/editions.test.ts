@@ -44,6 +44,13 @@ describe('editions of the National Plumbing Code', () => {
     expect(old.notes.join()).toContain('unverified for 2005');
   });
 
+  test('2018 of the International Plumbing Code: Table 906.1 was read in 2015 only; what was memory stays memory', () => {
+    const [old, now] = ['ipc-2015', 'ipc-2018'].map((code) => openOwn(code).table('stack-vent'));
+    expect(cellAt(old!, '4 in, up to 140', '3 in').trust).toBe('published');
+    expect(cellAt(now!, '4 in, up to 140', '3 in').trust).toBe('cross-checked');
+    for (const table of [old!, now!]) expect(cellAt(table, '10 in, up to 4000', '10 in').trust).toBe('memory');
+  });
+
   test('2010 and 2015: the 2 in arms of a wet vent are trusted less than in 2020', () => {
     const trusts = ['2005', '2010', '2015', '2020'].map((edition) => openOwn(`npc-${edition}`).rule('NPC-R45').trust);
     expect(trusts).toEqual(['published', 'cross-checked', 'cross-checked', 'published']);
@@ -89,6 +96,11 @@ describe('tables of the user’s own, laid over ours', () => {
     expect(valueAt(family.table('branch'), '4 in', 'load')).toBe(10800);
     expect(family.localTables).toEqual(['npc/editions/2020.json']);
     expect(family.table('stack').id).toBe('stack');
+  });
+
+  test('a corrected figure that says no more counts as read in print', () => {
+    const family = openWith(overlay({ branch: { cells: [{ row: '15 in', column: 'load', value: 7000 }] } }));
+    expect(cellAt(family.table('branch'), '15 in', 'load').trust).toBe('published');
   });
 
   test('a whole table: of any edition, with a source of its own', () => {
