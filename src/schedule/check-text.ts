@@ -14,9 +14,9 @@ export function checkText(result: Result): TextLine[] {
     ...understoodText(result),
     ...undersizedText(result),
     ...otherErrors(result.findings),
+    blank,
     ...foldedText(result.findings, 'warning', 'Warnings'),
     ...foldedText(result.findings, 'note', 'Notes'),
-    blank,
     ...sumsText(result),
     ...paragraph(shownText(result.caution), '', 'quiet'),
   ];
@@ -99,5 +99,5 @@ function foldedText(findings: readonly ResultFinding[], severity: string, title:
   if (some.length === 0) return [];
   const kinds = tally(some.map(({ code }) => code)).map(([code, count]) => `${count} ${plainWords(code)}`);
   const tone = severity === 'warning' ? 'warning' : 'quiet';
-  return [...(severity === 'warning' ? [blank] : []), ...paragraph(`${title}: ${kinds.join(', ')}.`, '', tone)];
+  return paragraph(`${title}: ${kinds.join(', ')}.`, '', tone);
 }

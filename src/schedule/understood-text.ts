@@ -19,12 +19,7 @@ export function understoodText(result: Result): TextLine[] {
       fixtures.length === 0 ? 'none' : `${fixtures.length}: ${countedKinds([...kindOf.values()])}`,
       row('Fixtures'),
     ),
-    ...paragraph(
-      `${counts.pipes}: ${tally(result.pipes.map(({ role }) => role))
-        .map(([role, count]) => `${count} ${plainWords(role)}`)
-        .join(', ')}`,
-      row('Pipes'),
-    ),
+    ...paragraph(`${counts.pipes}: ${countedKinds(result.pipes.map(({ role }) => plainWords(role)))}`, row('Pipes')),
     ...folded(systems, mostSystems, 'more systems').flatMap((system, place) =>
       typeof system === 'string'
         ? paragraph(system, row(''))
@@ -120,18 +115,13 @@ function batteryText({ ids, who, first }: AlikeBatteries, lead: string): TextLin
       ? `As ${plainWords(other.reading)} it would hold too.`
       : `As ${plainWords(other.reading)} it would break ${sentence(conditionsText(other.broken))}`,
   );
-  const name =
-    ids.length === 1
-      ? ids[0]
-      : `${listed(ids.slice(0, mostAlike).map(shownText))}${ids.length > mostAlike ? ` and ${ids.length - mostAlike} more` : ''} alike`;
+  const name = `${shownText(ids[0] ?? '')}${ids.length === 1 ? '' : ` and ${ids.length - 1} alike`}`;
   return [
     ...paragraph(`${name}: ${who}; ${plainWords(reading)}, since ${shownText(why)}`, lead),
     ...(broken.length === 0 ? [] : paragraph(`It breaks ${sentence(conditionsText(broken))}`, row(''), 'error')),
     ...(nots.length === 0 ? [] : paragraph(nots.join(' '), row(''), 'quiet')),
   ];
 }
-
-const mostAlike = 3;
 
 /** `relief vent required (2.5.3.1.(3))`: the conditions that a reading breaks, each once. */
 export function conditionsText(broken: readonly BrokenCondition[]): string {
