@@ -1,3 +1,4 @@
+import type { Identity, Part } from '../model/identity.ts';
 import type { Element, Model } from '../model/model.ts';
 import { elementRows } from './element-rows.ts';
 import { type Question, questionsOf } from './questions.ts';
@@ -48,13 +49,20 @@ export interface SurveyTerminal {
   readonly stepId: number;
   readonly name: string | null;
   readonly class: string;
+  readonly part: Part;
   /** Of fixtures; null when unidentified, or no fixture. */
   readonly kind: string | null;
   readonly use: ResultElement['use'];
+  /** What decided: `PredefinedType SINK, name "Mop sink"`. */
   readonly evidence: string;
+  /** The kind came from an abbreviation or one bare word, or its witnesses disagree: to be looked at. */
+  readonly weak: boolean;
+  /** A fixture that has a drain. */
+  readonly joined: boolean;
 }
 
-export function surveyOf(model: Model, result: Result): Survey {
+/** `identities` are those of the model's elements, by element id. */
+export function surveyOf(model: Model, identities: readonly Identity[], result: Result): Survey {
   const rows = new Map(result.elements.map((row) => [keyOf(row.file, row.stepId), row]));
   const rowOf = (element: Element): ResultElement | undefined =>
     rows.get(keyOf(model.files[element.file]?.name ?? '', element.stepId));
@@ -82,7 +90,7 @@ export function surveyOf(model: Model, result: Result): Survey {
         .length,
       withShape: result.pipes.filter(({ length }) => length !== null).length,
     },
-    terminals: terminals(model, result, rowOf),
+    terminals: terminals(model, identities, result, rowOf),
     joints: result.joints,
     openEnds: openEnds(result.findings),
     unresolved: result.unresolved,
@@ -121,26 +129,35 @@ function systems(model: Model, rowOf: (element: Element) => ResultElement | unde
   });
 }
 
+/** Terminals by class, and whatever else turned out to be a fixture. */
 function terminals(
   model: Model,
+  identities: readonly Identity[],
   result: Result,
   rowOf: (element: Element) => ResultElement | undefined,
 ): SurveyTerminal[] {
-  const byId = elementRows(result);
-  const known = new Map(result.fixtures.map((fixture) => [byId.get(fixture.globalId), fixture]));
-  return model.elements.flatMap((element) => {
+  const rows = elementRows(result);
+  const drained = new Map(result.fixtures.map(({ globalId }) => [rows.get(globalId), globalId]));
+  return model.elements.flatMap((element): SurveyTerminal[] => {
     const row = rowOf(element);
-    const fixture = row === undefined ? undefined : known.get(row);
-    if (row === undefined || (element.kind !== 'terminal' && fixture === undefined)) return [];
+    const identity = identities[element.id];
+    if (row === undefined || identity === undefined) return [];
+    if (element.kind !== 'terminal' && identity.part !== 'fixture') return [];
+    const { part, kind, evidence, weak } = identity;
+    const joined = drained.has(row);
+    const { name } = element;
     return [
       {
-        globalId: fixture?.globalId ?? row.globalId,
+        globalId: drained.get(row) ?? row.globalId,
         stepId: row.stepId,
-        name: element.name,
+        name,
         class: row.class,
-        kind: fixture?.kind ?? null,
+        part,
+        kind,
         use: row.use,
-        evidence: fixture?.evidence ?? row.reason ?? row.class,
+        evidence,
+        weak,
+        joined,
       },
     ];
   });

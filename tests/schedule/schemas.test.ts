@@ -26,7 +26,7 @@ test('the example result is valid, and so is what is made of it', () => {
     roofs: [],
     findings: [],
   };
-  expect(faults('survey', surveyOf(empty, exampleResult))).toEqual([]);
+  expect(faults('survey', surveyOf(empty, [], exampleResult))).toEqual([]);
 });
 
 /** Every object and list in a value, with the way to it. */

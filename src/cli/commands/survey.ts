@@ -25,7 +25,7 @@ export function addSurvey(program: Command): void {
       const run = await runModel(model, options, (input) =>
         file === undefined ? null : outputPlace(file, input.identity, false),
       );
-      const survey = surveyOf(run.model, run.result);
+      const survey = surveyOf(run.model, run.outcome.identities, run.result);
       if (run.place !== null && file !== undefined) {
         const form = `${JSON.stringify(answersForm(survey.questions), null, 2)}\n`;
         await writeNew(run.place, [new TextEncoder().encode(form)], file);
