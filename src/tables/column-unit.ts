@@ -98,7 +98,8 @@ export function slopeRun(text: string): number | undefined {
 
 /** A label of the series, also typed without the fraction signs: `1 1/2 in`. */
 export function sizeIn(series: SizeSeries, text: string): NominalSize | undefined {
-  return series.sizes.find(({ label }) => label === text || plainLabel(label) === text)?.label;
+  if (series.has(text)) return text as NominalSize;
+  return text.includes('/') ? series.sizes.find(({ label }) => plainLabel(label) === text)?.label : undefined;
 }
 
 const fractions: Readonly<Record<string, string>> = { '¼': '1/4', '½': '1/2', '¾': '3/4', '⅛': '1/8' };
