@@ -53,7 +53,7 @@ export interface CheckedStack {
 export interface CheckedTrap {
   readonly element: ElementId;
   readonly size: NominalSize;
-  readonly closet: boolean;
+  readonly siphonic: boolean;
   /** Role of the vent, or `unvented`, `free`. */
   readonly how: string;
   readonly arm: {

@@ -74,6 +74,8 @@ export interface FixtureRow {
   readonly id: string;
   readonly title: string;
   readonly closet: boolean;
+  /** Works by siphonage and carries its trap: the distance to its vent has limits of its own. */
+  readonly siphonic: boolean;
   readonly emergency: boolean;
   /** Least and largest trap that the row prints. */
   readonly leastTrap: NominalSize;

@@ -2,7 +2,7 @@ import type { FixtureRow, PlumbingCode } from '../codes/plumbing-code.ts';
 import { keyMatches } from '../model/answer-keys.ts';
 import type { Answers } from '../model/answers.ts';
 import type { Identity } from '../model/identity.ts';
-import type { Model } from '../model/model.ts';
+import type { ElementId, Model } from '../model/model.ts';
 import type { Network } from '../network/network.ts';
 import type { FixturePath, Paths } from '../paths/paths.ts';
 import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
@@ -88,7 +88,7 @@ function trapWitness(facts: FixtureFacts, fixture: FixturePath): TrapWitness | n
     const drawn = network.joints[trap.at]!.elements.find(
       (one) => identities[one]?.part === 'trap' && one !== fixture.element,
     );
-    const size = drawn === undefined ? null : readSize(model.elements[drawn]!, code.series, code.dimensions).size;
+    const size = drawn === undefined ? null : sizeOfTrap(facts, drawn);
     if (size !== null) return { size, from: 'drawn' };
   }
   const stated = identities[fixture.element]!.outletMm;
@@ -97,4 +97,14 @@ function trapWitness(facts: FixtureFacts, fixture: FixturePath): TrapWitness | n
   const begins = fixture.water[trap.after];
   const pipe = begins === undefined ? null : modelled[begins]!.size;
   return pipe === null ? null : { size: pipe, from: 'pipe' };
+}
+
+/** A drawn trap says its size as a terminal does, by its outlet, or as a fitting does. */
+function sizeOfTrap(
+  { model, identities, code: { series, dimensions } }: FixtureFacts,
+  trap: ElementId,
+): NominalSize | null {
+  const stated = identities[trap]!.outletMm;
+  const outlet = stated === null ? null : sizeOfLength(stated, series, dimensions);
+  return outlet ?? readSize(model.elements[trap]!, series, dimensions).size;
 }

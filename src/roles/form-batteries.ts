@@ -4,6 +4,7 @@ import type { JointId } from '../network/network.ts';
 import { type BatteryContext, batteryFacts, type Draft } from './battery-facts.ts';
 import { trapsByFoot } from './feet.ts';
 import type { Battery, ReadingGround } from './roles.ts';
+import { stackJoints } from './stack-joints.ts';
 
 /**
  * Rows of traps that breathe through one foot, each judged under every reading of the code. A foot further down the
@@ -13,23 +14,28 @@ export function formBatteries(context: BatteryContext, answered: (battery: Batte
   const drafts = trapsByFoot(context.paths)
     .map(({ foot, traps }): Draft => ({ foot, traps, additional: [] }))
     .filter(({ traps }) => traps.some(({ through }) => through.length > 0));
+  const byFoot = new Map(drafts.map((draft) => [draft.foot, draft]));
+  const onStackVents = stackJoints(context);
   const batteries: Battery[] = [];
-  const taken = new Set<JointId>();
   for (const draft of inFlowOrder(context, drafts)) {
-    if (taken.has(draft.foot)) continue;
-    const row = lengthen(
-      context,
-      draft,
-      drafts.filter(({ foot }) => foot !== draft.foot && !taken.has(foot)),
-    );
-    for (const joint of row.additional) taken.add(joint);
+    if (!byFoot.delete(draft.foot)) continue;
+    const { row, joined } = lengthen(context, draft, byFoot);
+    for (const foot of joined) byFoot.delete(foot);
     const judged = withoutFreeTraps(context, row, batteries.length);
     if (judged === null) continue;
     const word = answered(judged);
+    if (word === null && judged.facts.word === null && !isRow(judged, onStackVents.has(draft.foot))) continue;
     batteries.push(word === null || word === judged.reading ? judged : readAs(judged, word));
   }
   return batteries;
 }
+
+/**
+ * A drawing that breaks its own conditions is still a row with faults where two traps or more share a vent. One trap
+ * whose air would come past other fixtures, or traps that would breathe through a stack or its vent stack, have no vent.
+ */
+const isRow = ({ facts, broken }: Battery, footOnStack: boolean): boolean =>
+  broken.length === 0 || (facts.traps.length > 1 && !facts.wet.stack && !footOnStack);
 
 /** Upstream feet first, so that a row finds the feet below it untaken. */
 function inFlowOrder({ paths, stream }: BatteryContext, drafts: readonly Draft[]): Draft[] {
@@ -38,30 +44,35 @@ function inFlowOrder({ paths, stream }: BatteryContext, drafts: readonly Draft[]
   return [...drafts].sort((a, b) => at(a) - at(b) || a.foot - b.foot);
 }
 
-/** The row with the feet below it taken in as additional circuit vents, as long as it holds as circuit vented. */
-function lengthen(context: BatteryContext, draft: Draft, others: readonly Draft[]): Draft {
+/** The row with the feet below it on the same level line, as long as it holds as circuit vented. */
+function lengthen(
+  context: BatteryContext,
+  draft: Draft,
+  byFoot: ReadonlyMap<JointId, Draft>,
+): { row: Draft; joined: readonly JointId[] } {
   const { paths, stream } = context;
-  const byFoot = new Map(others.map((other) => [other.foot, other]));
-  let best = draft;
+  let best: { row: Draft; joined: readonly JointId[] } = { row: draft, joined: [] };
   let traps = draft.traps;
   const additional: JointId[] = [];
+  const joined: JointId[] = [];
+  let level = false;
   let joint = draft.foot;
   for (let pipe = stream.outflow[joint] ?? null; pipe !== null; pipe = stream.outflow[joint] ?? null) {
+    // Past the vertical part of the circuit vent the branch is level, and a drop ends it.
+    if (context.inStack[pipe] !== null || (level && paths.vertical[pipe] === true)) break;
+    level ||= paths.vertical[pipe] !== true;
     joint = stream.down(pipe);
     const other = byFoot.get(joint) ?? guestRow(context, byFoot, joint, pipe);
-    if (other === undefined) {
-      if (context.inStack[pipe] !== null) break;
-      continue;
-    }
-    if (paths.vertical[pipe] === true) break;
+    if (other === undefined) continue;
     const onLine = other.foot === joint;
     if (onLine) additional.push(joint);
+    joined.push(other.foot);
     traps = [...traps, ...other.traps.filter(({ through }) => onLine || through.length > 0)];
     const longer: Draft = { foot: draft.foot, traps, additional: [...additional] };
     const facts = batteryFacts(context, longer, 0);
     const relief = facts.circuit.relief;
     if ((relief?.kind === 'dry' || relief?.kind === 'shared') && brokenOf(context, 'circuit-vent', facts).length === 0)
-      best = longer;
+      best = { row: longer, joined: [...joined] };
   }
   return best;
 }

@@ -24,10 +24,6 @@ export function venting(
     if (foot === null || (row === null && !own)) {
       return { how: freed === null ? 'unvented' : 'free', vents: [], free: freed, battery: null };
     }
-    // A stack that must not be a wet vent brings no air to the traps below its top (NPC RULES 4.1).
-    if (row !== null && !own && row.reading === 'wet-vent' && row.facts.wet.stack && row.broken.length > 0) {
-      return { how: freed === null ? 'unvented' : 'free', vents: [], free: freed, battery: index };
-    }
     if (row !== null && (!own || row.reading === 'circuit-vent')) {
       return {
         how: row.reading === 'individual-vent' && !own ? 'unvented' : row.reading,

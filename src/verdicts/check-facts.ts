@@ -37,7 +37,7 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
     return {
       element: path.element,
       size: loads.fixtures[fixture]!.trap,
-      closet: loads.fixtures[fixture]!.row.closet,
+      siphonic: loads.fixtures[fixture]!.row.siphonic,
       how: roles.venting[fixture]!.how,
       arm:
         measured === null

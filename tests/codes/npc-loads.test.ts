@@ -61,7 +61,7 @@ describe('what the model leaves open is a range', () => {
   });
 
   test('a thing nobody named: as the lightest, as the heaviest, and as a closet', () => {
-    const run = runSketch(ventedRow(['thing', lavatory]));
+    const run = runSketch(ventedRow(['thing, trap 1 1/4 in', lavatory]));
     // Lightest row: emergency floor drain 0; a closet with a valve 6, or a shower of six heads 6.
     expect(run.fixture('F1').load).toEqual({ least: 0, most: 6 });
     expect(run.findings('fixture-unidentified')).toHaveLength(1);

@@ -182,7 +182,7 @@ function trapArms({ family }: Tools): Check {
     run: ({ traps }) =>
       traps
         .filter(({ how }) => how !== 'unvented' && how !== 'free')
-        .flatMap((trap) => (trap.closet ? ofCloset(trap) : ofArm(trap))),
+        .flatMap((trap) => (trap.siphonic ? ofCloset(trap) : ofArm(trap))),
   };
 }
 

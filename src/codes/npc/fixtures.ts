@@ -20,6 +20,7 @@ export function fixtureRows({ family }: Tools): FixtureRows {
       id: row.key,
       title: row.title,
       closet: kind === 'water-closet',
+      siphonic: kind === 'water-closet' || row.key === 'urinal-pedestal',
       emergency: row.key === 'emergency-floor-drain',
       leastTrap: least,
       largestTrap: largest,

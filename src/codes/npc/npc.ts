@@ -37,9 +37,9 @@ export function npc(
     rules: [...drainRules(tools), ...wetVentRules(tools), ...ventRules(tools)],
     checks: checks(tools),
     freeOfVent: freeOfVent(tools),
-    armLimit: (trap, { closet }) => {
+    armLimit: (trap, { siphonic }) => {
       const longest = rowAtSize(arms, 'trap', trap, 'smaller', family.series)?.amount('longest').value;
-      return closet || typeof longest !== 'number' ? null : longest;
+      return siphonic || typeof longest !== 'number' ? null : longest;
     },
     sewerBegins: family.number('sewer-start', 'length').value,
     stackOffset: family.number('stack-offset-length', 'length').value,
