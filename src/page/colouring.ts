@@ -56,11 +56,9 @@ export function categoryKey(building: Building, section: number, by: ColourBy): 
   }
 }
 
-/** `1–3`, `over 540`: the two ends of a step of load; `to` null is without end. */
-export function loadStep(key: string): { readonly from: number; readonly to: number | null } {
-  const step = Number(key);
-  return { from: (loadSteps[step - 1] ?? -1) + 1, to: loadSteps[step] ?? null };
-}
+/** Upper end of a step of load; null: over the last one, which is `last`. */
+export const loadStepEnd = (key: string): number | null => loadSteps[Number(key)] ?? null;
+export const lastLoadStep = loadSteps.at(-1) ?? 0;
 
 /** The categories that occur, in the order of the legend, each with its count of pipes. */
 export function categoriesOf(building: Building, by: ColourBy, theme: Theme): readonly Category[] {

@@ -1,4 +1,4 @@
-import { type Category, categoriesOf, loadStep } from '../colouring.ts';
+import { type Category, categoriesOf, lastLoadStep, loadStepEnd } from '../colouring.ts';
 import { hex } from '../colours.ts';
 import { decimal, sizeLabel } from '../format.ts';
 import type { ColourBy } from '../state.ts';
@@ -79,9 +79,9 @@ export function categoryName({ building, words }: Desk, by: ColourBy, key: strin
         ? words.legend.noStorey
         : shown(building.data.scene.storeys[Number(key)]?.name ?? `${Number(key) + 1}`);
     case 'load': {
-      const { from, to } = loadStep(key);
-      if (to === null) return words.legend.loadOver(decimal(words, from, 0), unit);
-      return words.legend.loadStep(decimal(words, from, 0), decimal(words, to, 0), unit);
+      const to = loadStepEnd(key);
+      if (to === null) return words.legend.loadOver(decimal(words, lastLoadStep, 0), unit);
+      return words.legend.loadStep(decimal(words, to, 0), unit);
     }
   }
 }

@@ -87,13 +87,15 @@ function actions(desk: Desk, row: number): HTMLElement {
   );
 }
 
-/** The pipe that brings it most; the first in the result's order where several bring the same. */
+/** The pipe that brings it most; of equal ones the one of the same role, then the last in the result's order. */
 export function upstreamOf({ building }: Desk, row: number): number | undefined {
-  const id = building.result.pipes[row]?.globalId;
+  const own = building.result.pipes[row];
+  const id = own?.globalId;
   let best: number | undefined;
-  building.result.pipes.forEach(({ next, load }, index) => {
+  building.result.pipes.forEach(({ next, load, role }, index) => {
     if (next !== id || index === row) return;
     if (best === undefined || load.most > building.result.pipes[best]!.load.most) best = index;
+    else if (load.most === building.result.pipes[best]!.load.most && role === own?.role) best = index;
   });
   return best;
 }

@@ -207,8 +207,8 @@ export const english: Words = {
     noSystem: 'no system',
     noSize: 'no size drawn',
     noStorey: 'no storey',
-    loadOver: (from, unit) => `${from} ${unit} and more`,
-    loadStep: (from, to, unit) => (from === to ? `${to} ${unit}` : `${from} to ${to} ${unit}`),
+    loadOver: (from, unit) => `over ${from} ${unit}`,
+    loadStep: (to, unit) => (to === '0' ? `0 ${unit}` : `up to ${to} ${unit}`),
     hide: (name) => `Show ${name}`,
   },
   tools: {

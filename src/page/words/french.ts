@@ -222,8 +222,8 @@ export const french: Words = {
     noSystem: 'sans réseau',
     noSize: 'sans diamètre dessiné',
     noStorey: 'sans étage',
-    loadOver: (from, unit) => `${from} ${unit} et plus`,
-    loadStep: (from, to, unit) => (from === to ? `${to} ${unit}` : `${from} à ${to} ${unit}`),
+    loadOver: (from, unit) => `plus de ${from} ${unit}`,
+    loadStep: (to, unit) => (to === '0' ? `0 ${unit}` : `jusqu’à ${to} ${unit}`),
     hide: (name) => `Montrer ${name}`,
   },
   tools: {

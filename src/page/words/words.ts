@@ -188,7 +188,7 @@ export interface Words {
     readonly noSize: string;
     readonly noStorey: string;
     readonly loadOver: (from: string, unit: string) => string;
-    readonly loadStep: (from: string, to: string, unit: string) => string;
+    readonly loadStep: (to: string, unit: string) => string;
     readonly hide: (name: string) => string;
   };
   readonly tools: {
