@@ -1,4 +1,4 @@
-import { decimal, lengthText, slopeText } from './number-text.ts';
+import { decimal, lengthText, slopeText, unitsText } from './number-text.ts';
 
 /**
  * The numbers behind a demand or a broken condition, read from the unit that each fact's name carries:
@@ -30,7 +30,7 @@ function factText(key: string, value: unknown, unit: string, nameOf: (globalId: 
 
 /** By the last word of a fact's name. */
 const measures: Readonly<Record<string, (value: number, unit: string) => string>> = {
-  units: (value, unit) => `${decimal(value, 2)} ${unit}`,
+  units: unitsText,
   m: lengthText,
   mm: (value) => `${decimal(value, 1)} mm`,
   deg: (value) => `${decimal(value, 1)}°`,

@@ -9,8 +9,12 @@ export function decimal(value: number, decimals: number): string {
 
 /** `14 fixture units`; `12 to 16 fixture units` where the model leaves it open. */
 export function loadText({ least, most }: LoadRange, unit: string): string {
-  return least === most ? `${decimal(most, 2)} ${unit}` : `${decimal(least, 2)} to ${decimal(most, 2)} ${unit}`;
+  return least === most ? unitsText(most, unit) : `${decimal(least, 2)} to ${decimal(most, 2)} ${unit}`;
 }
+
+/** `1 fixture unit`, `14 fixture units`, `0.8 l/s`. */
+export const unitsText = (value: number, unit: string): string =>
+  `${decimal(value, 2)} ${value === 1 ? unit.replace(/units$/, 'unit') : unit}`;
 
 /** Metres as a person reads them: millimetres below one metre. */
 export const lengthText = (metres: number): string =>

@@ -1,6 +1,7 @@
 import { sumsText } from './check-text.ts';
 import type { Result } from './result.ts';
-import { paragraph, type TextLine } from './text-line.ts';
+import { blank, paragraph, type TextLine } from './text-line.ts';
+import { counted } from './trade-words.ts';
 import { undersizedText } from './undersized-text.ts';
 import { titleText } from './understood-text.ts';
 
@@ -14,17 +15,22 @@ export interface WrittenFile {
 /** What `size` tells: the undersized pipes, the sums, and what was written where. */
 export function sizeText(result: Result, file: WrittenFile): TextLine[] {
   const { pipes, fixtures } = result;
-  const sets = `property sets on ${pipes.length} pipes and ${fixtures.length} fixtures`;
-  return [...summary(result), ...paragraph(`Written: ${writtenText(file)}; ${sets}.`, '', 'good'), ...caution(result)];
+  const sets = `property sets on ${counted(pipes.length, 'pipe')} and ${counted(fixtures.length, 'fixture')}`;
+  return [
+    ...titleText(result),
+    ...undersizedText(result),
+    blank,
+    ...sumsText(result),
+    ...paragraph(`Written: ${writtenText(file)}; ${sets}.`, '', 'good'),
+    ...caution(result),
+  ];
 }
 
 /** What `view` tells: the sums, and where the page is. */
 export function viewText(result: Result, file: WrittenFile): TextLine[] {
   const page = `Written: ${writtenText(file)}; open it in a browser, it needs no network.`;
-  return [...summary(result), ...paragraph(page, '', 'good'), ...caution(result)];
+  return [...titleText(result), ...sumsText(result), ...paragraph(page, '', 'good'), ...caution(result)];
 }
-
-const summary = (result: Result): TextLine[] => [...titleText(result), ...undersizedText(result), ...sumsText(result)];
 
 const writtenText = ({ path, bytes, sha256 }: WrittenFile): string => `${path} (${bytes} bytes, SHA-256 ${sha256})`;
 
