@@ -23,7 +23,8 @@ import { reachVerdicts } from './verdicts/reach-verdicts.ts';
 export function run(model: Model, code: PlumbingCode, answers: Answers, names: NamesTable): Outcome {
   const { value: identities, findings: identified } = identify(model, answers, names);
   const { maxGap } = answers.settings;
-  const built = buildNetwork(model, identities, typeof maxGap === 'number' ? { maxGap } : {});
+  const { leaveOut } = answers;
+  const built = buildNetwork(model, identities, typeof maxGap === 'number' ? { maxGap, leaveOut } : { leaveOut });
   const outline = buildingOutline(model);
   const network = cutAtOutline(outline, identities, built.value, code.sewerBegins);
   const findings = [...model.findings, ...identified, ...built.findings];

@@ -5,6 +5,7 @@ import { lineNumber } from '../ifc/lines/line-index.ts';
 import { modelOf, type OpenedFile, openFiles } from '../ifc/open.ts';
 import { withoutOurLines } from '../ifc/write/append-sets.ts';
 import { type Answers, noAnswers } from '../model/answers.ts';
+import { matchAnswers } from '../model/match-answers.ts';
 import type { Model } from '../model/model.ts';
 import { readAnswers } from '../model/read-answers.ts';
 import { readNamesTable } from '../model/read-names-table.ts';
@@ -39,15 +40,16 @@ export async function runModel<P>(
   options: ModelOptions,
   before: (input: InputFile) => P | Promise<P> = () => undefined as P,
 ): Promise<ModelRun<P>> {
-  const answers = await answersOf(options);
+  const said = await answersOf(options);
   const tables = ownTables();
   const local = options.tables === undefined ? {} : { local: localTables(options.tables) };
   const sources = { tables, dimensions: readPipeDimensions(tables), ...local };
-  const code = plumbingCode(options.code, sources, answers.settings, options.answers ?? 'answers');
+  const code = plumbingCode(options.code, sources, said.settings, options.answers ?? 'answers');
   const input = await readInput(path);
   const place = await before(input);
   const file = opened(input);
   const model = modelOf([file]);
+  const answers = matchAnswers(said, model, code.series, options.answers ?? 'answers');
   const outcome = run(model, code, answers, readNamesTable(tables));
   const result = resultOf(outcome, programVersion());
   if (options.json === true && options.quiet !== true) warn(result);

@@ -2,12 +2,17 @@ import type { Element } from './model.ts';
 
 const namePrefix = 'name:';
 
-/** A key of the answers file meets an element by GlobalId, or by name where it says `name:` with `*` as wildcard. */
+/**
+ * A key of the answers file meets an element by GlobalId, or by name where it says `name:` with `*` as wildcard. Where
+ * a model doubles or lacks the GlobalId, results write `GlobalId#file.STEP id`, and answers may.
+ */
 export function keyMatches(key: string, element: Element): boolean {
-  if (!key.startsWith(namePrefix)) return key === element.globalId;
+  if (!key.startsWith(namePrefix)) return key === element.globalId || (key.includes('#') && key === fullId(element));
   const name = element.name;
   return name !== null && wildcardMatches(key.slice(namePrefix.length), name);
 }
+
+export const fullId = ({ globalId, file, stepId }: Element): string => `${globalId}#${file}.${stepId}`;
 
 /** Linear in both lengths: no pattern of a user can hang the program. */
 export function wildcardMatches(pattern: string, text: string): boolean {

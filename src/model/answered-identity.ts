@@ -1,4 +1,4 @@
-import { keyMatches } from './answer-keys.ts';
+import { fullId, keyMatches } from './answer-keys.ts';
 import type { Answers, FixtureAnswer } from './answers.ts';
 import { type FixtureDetail, type FixtureKind, type Identity, noDetail } from './identity.ts';
 import { fixtureKinds } from './identity-words.ts';
@@ -16,13 +16,20 @@ export function answerBook({ fixtures, cleanouts }: Answers): AnswerBook {
   const patterns = [...fixtures]
     .filter(([key]) => isPattern(key))
     .toSorted(([a], [b]) => b.replaceAll('*', '').length - a.replaceAll('*', '').length);
+  const hasFullIds = [...fixtures.keys()].some((key) => key.includes('#') && !isPattern(key));
   const cleanoutIds = new Set(cleanouts.filter((key) => !isPattern(key)));
   const cleanoutPatterns = cleanouts.filter(isPattern);
   return {
     fixture: (element) =>
-      fixtures.get(element.globalId) ?? patterns.find(([key]) => keyMatches(key, element))?.[1] ?? null,
+      fixtures.get(element.globalId) ??
+      (hasFullIds ? fixtures.get(fullId(element)) : undefined) ??
+      patterns.find(([key]) => keyMatches(key, element))?.[1] ??
+      null,
     isCleanout: (element) =>
-      cleanoutIds.has(element.globalId) || cleanoutPatterns.some((key) => keyMatches(key, element)),
+      cleanouts.length > 0 &&
+      (cleanoutIds.has(element.globalId) ||
+        cleanoutIds.has(fullId(element)) ||
+        cleanoutPatterns.some((key) => keyMatches(key, element))),
   };
 }
 

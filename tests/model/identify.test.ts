@@ -662,6 +662,13 @@ describe('answers', () => {
     });
   });
 
+  test('one of two elements that share a GlobalId', () => {
+    const fixtures = new Map([['twice#0.101', { kind: 'bidet' }]]);
+    const model = plainModel([1, 2].map(() => ({ ...sanitary, predefinedType: 'SINK', globalId: 'twice' })));
+    const kinds = identify(model, { ...noAnswers, fixtures }, names).value.map(({ kind }) => kind);
+    expect(kinds).toEqual(['sink', 'bidet']);
+  });
+
   test('an answer silences the contradiction it settles', () => {
     const element = { ...sanitary, predefinedType: 'TOILETPAN', name: 'Urinal' };
     const fixtures = new Map([['e0', { kind: 'urinal' }]]);

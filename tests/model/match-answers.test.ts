@@ -41,6 +41,12 @@ test('names become GlobalIds, and sizes the labels of the code', () => {
   expect(matched.leaveOut).toEqual(['s0', 's1']);
 });
 
+test('an id with file and STEP id, as results write it where a GlobalId is doubled', () => {
+  const fixtures = new Map([['1Dr4inExample000002202#0.101', { kind: 'sink' }]]);
+  expect(match({ fixtures }).fixtures).toEqual(fixtures);
+  expect(() => match({ fixtures: new Map([['1Dr4inExample000002202#0.999', { kind: 'sink' }]]) })).toThrow(InputError);
+});
+
 describe('what meets nothing, or cannot be', () => {
   const wrong: readonly { answers: Partial<Answers>; says: string }[] = [
     {
