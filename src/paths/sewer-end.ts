@@ -28,8 +28,10 @@ export function sewerEndOf(
   const answered = piece.joints.filter((joint) => isAnswered(joint, facts));
   if (answered.length > 0) return { joint: openFirst(answered, network), how: 'answer', candidates: answered.length };
 
-  const named = piece.joints.filter((joint) =>
-    network.joints[joint]!.elements.some((element) => identities[element]?.part === 'sewer-connection'),
+  const named = piece.joints.filter(
+    (joint) =>
+      endsInNamedPipe(joint, facts) ||
+      network.joints[joint]!.elements.some((element) => identities[element]?.part === 'sewer-connection'),
   );
   if (named.length > 0) return { joint: lowestOf(named, facts)[0]!, how: 'named', candidates: named.length };
 
@@ -58,6 +60,13 @@ function isOpenEnd(joint: JointId, { network, identities, isVent }: SewerEndFact
     const part = identities[element]?.part;
     return part === 'chamber' || part === 'fitting' || part === 'pipe';
   });
+}
+
+/** The open end of a pipe that the model calls building sewer. */
+function endsInNamedPipe(joint: JointId, { network, identities }: SewerEndFacts): boolean {
+  const { pipes } = network.joints[joint]!;
+  const element = pipes.length === 1 ? network.pipes[pipes[0]!]!.element : null;
+  return element !== null && identities[element]!.detail.style === 'building-sewer';
 }
 
 function portsLeave(joint: JointId, network: Network): boolean {

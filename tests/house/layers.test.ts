@@ -55,7 +55,9 @@ const src = resolve(import.meta.dirname, '../../src');
 const files = readdirSync(src, { recursive: true, encoding: 'utf8' }).filter((name) => name.endsWith('.ts'));
 const folderOf = (path: string): string => path.split('/')[0] ?? path;
 const imports = (text: string): string[] =>
-  [...text.matchAll(/\b(?:from|import)\s*\(?\s*['"]([^'"]+)['"]/g)].map((match) => match[1] ?? '');
+  [...text.matchAll(/(?:^(?:import|export|\}).*\bfrom|^import|\bimport\s*\()\s*['"]([^'"\n]+)['"]/gm)].map(
+    (match) => match[1] ?? '',
+  );
 
 test(`imports run one way (${files.length} files)`, () => {
   expect(files.length).toBeGreaterThan(10);
