@@ -1,5 +1,6 @@
 import { Cursor, textTable } from './lines/cursor.ts';
 import type { LineIndex } from './lines/line-index.ts';
+import type { NameTable } from './lines/name-table.ts';
 import { newTextWatch, type TextWatch } from './lines/text.ts';
 
 /** What went wrong while records were followed; the index knows what is wrong with the bytes themselves. */
@@ -12,47 +13,68 @@ export interface Troubles {
   readonly endlessShapes: number[];
 }
 
-/** One file's lines, opened record by record. All that reads a file shares its texts' and references' troubles. */
-export interface Reader {
-  readonly index: LineIndex;
-  readonly watch: TextWatch;
-  readonly troubles: Troubles;
-  /** A cursor of one's own: a reader that follows references must not use the cursor that it stands on. */
-  readonly cursor: () => Cursor;
-  /** Class of a record in upper case; '' for -1. */
-  readonly type: (record: number) => string;
-  /** Record with this id; -1 for 0 and for a reference into nothing, which is noted as said by record `from`. */
-  readonly follow: (id: number, from: number) => number;
-  /** Records of a class in order of their STEP ids, whatever order the lines stand in. */
-  readonly all: (type: string) => Uint32Array;
-}
-
 /** More dangling references than this are counted no further. */
 const mostDangling = 10_000;
 
-export function readerOf(index: LineIndex): Reader {
-  const watch = newTextWatch();
-  const texts = textTable(index.bytes);
-  const { ids, typeOf, types, find } = index;
-  const dangling: Troubles['dangling'] = [];
-  return {
-    index,
-    watch,
-    troubles: { dangling, endlessPlacements: [], endlessShapes: [] },
-    cursor: () => new Cursor(index.bytes, watch, texts),
-    type: (record) => (record < 0 ? '' : types[typeOf[record]!]!),
-    follow: (id, from) => {
-      if (id === 0) return -1;
-      const record = find(id);
-      if (record < 0 && dangling.length < mostDangling) dangling.push({ record: from, id });
-      return record;
-    },
-    all: (type) => {
-      const records = index.recordsOf(type);
-      for (let k = 1; k < records.length; k++) {
-        if (ids[records[k]!]! < ids[records[k - 1]!]!) return records.slice().sort((a, b) => ids[a]! - ids[b]!);
-      }
-      return records;
-    },
-  };
+/**
+ * One file's lines, opened record by record. All that reads a file shares its texts' and references' troubles.
+ * The readers of this folder are classes, not closures: a process that reads many models keeps their compiled code.
+ */
+export class Reader {
+  readonly index: LineIndex;
+  readonly args: Uint32Array;
+  readonly watch: TextWatch = newTextWatch();
+  readonly troubles: Troubles = { dangling: [], endlessPlacements: [], endlessShapes: [] };
+  private readonly texts: NameTable<null>;
+
+  constructor(index: LineIndex) {
+    this.index = index;
+    this.args = index.args;
+    this.texts = textTable(index.bytes);
+  }
+
+  /** A cursor of one's own: a reader that follows references must not use the cursor that it stands on. */
+  cursor(): Cursor {
+    return new Cursor(this.index.bytes, this.watch, this.texts);
+  }
+
+  /** A cursor of one's own in front of a record's first argument. */
+  open(record: number): Cursor {
+    return this.cursor().at(this.args[record]!);
+  }
+
+  /** Class of a record in upper case; '' for -1. */
+  type(record: number): string {
+    const { index } = this;
+    return record < 0 ? '' : index.types[index.typeOf[record]!]!;
+  }
+
+  /** Record with this id; -1 for 0 and for a reference into nothing, which is noted as said by record `from`. */
+  follow(id: number, from: number): number {
+    if (id === 0) return -1;
+    const record = this.index.find(id);
+    if (record < 0 && this.troubles.dangling.length < mostDangling) this.troubles.dangling.push({ record: from, id });
+    return record;
+  }
+
+  /** Records of a class in order of their STEP ids, whatever order the lines stand in. */
+  all(type: string): Uint32Array {
+    const { ids } = this.index;
+    const records = this.index.recordsOf(type);
+    for (let k = 1; k < records.length; k++) {
+      if (ids[records[k]!]! < ids[records[k - 1]!]!) return records.slice().sort((a, b) => ids[a]! - ids[b]!);
+    }
+    return records;
+  }
+
+  /** Records of several classes together, in order of their STEP ids. */
+  allOf(types: Iterable<string>): number[] {
+    const { ids } = this.index;
+    const found: number[] = [];
+    for (const type of types) {
+      const records = this.index.recordsOf(type);
+      for (let k = 0; k < records.length; k++) found.push(records[k]!);
+    }
+    return found.sort((a, b) => ids[a]! - ids[b]!);
+  }
 }

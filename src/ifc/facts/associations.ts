@@ -1,59 +1,95 @@
 import type { Reader } from '../reader.ts';
-import { eachRelation } from './relations.ts';
-
-/** Materials and classifications, by the records of the things that have them. */
-export interface Associations {
-  /** Name of the material, of the first where there are several; null for none. */
-  readonly material: (record: number) => string | null;
-  /** `system:code title`, in order of the relations. */
-  readonly classifications: (record: number) => readonly string[];
-  /** Layers from the first to the last, thickness in metres; none where the material is no layer set. */
-  readonly layers: (record: number) => readonly { readonly name: string | null; readonly thickness: number }[];
-}
 
 const deepest = 10;
+const noTexts: readonly string[] = [];
 
-export function associationsOf(reader: Reader, metres: number): Associations {
-  const { index, follow, type } = reader;
-  const { args } = index;
-  const materialOf = new Map<number, number>();
-  const classOf = new Map<number, number[]>();
-  eachRelation(reader, 'IFCRELASSOCIATESMATERIAL', (cursor, record) => {
-    const things = cursor.ids();
-    const material = follow(cursor.id(), record);
-    if (material < 0) return;
-    for (const id of things) {
-      const thing = follow(id, record);
-      if (thing >= 0 && !materialOf.has(thing)) materialOf.set(thing, material);
-    }
-  });
-  eachRelation(reader, 'IFCRELASSOCIATESCLASSIFICATION', (cursor, record) => {
-    const things = cursor.ids();
-    const reference = follow(cursor.id(), record);
-    if (reference < 0) return;
-    for (const id of things) {
-      const thing = follow(id, record);
-      if (thing < 0) continue;
-      const list = classOf.get(thing);
-      if (list === undefined) classOf.set(thing, [reference]);
-      else list.push(reference);
-    }
-  });
+export interface Layer {
+  readonly name: string | null;
+  /** Metres. */
+  readonly thickness: number;
+}
 
-  const names = new Map<number, string | null>();
-  const materialName = (record: number, depth: number): string | null => {
+/** Materials and classifications of one file, by the records of the things that have them. */
+export class Associations {
+  private readonly reader: Reader;
+  private readonly metres: number;
+  private readonly materialOf = new Map<number, number>();
+  private readonly classesOf = new Map<number, number[]>();
+  private readonly names = new Map<number, string | null>();
+  private readonly texts = new Map<number, string>();
+
+  constructor(reader: Reader, metres: number) {
+    this.reader = reader;
+    this.metres = metres;
+    const cursor = reader.cursor();
+    for (const record of reader.all('IFCRELASSOCIATESMATERIAL')) {
+      const things = cursor.at(reader.args[record]!).skip(4).ids();
+      const material = reader.follow(cursor.id(), record);
+      if (material < 0) continue;
+      for (const id of things) {
+        const thing = reader.follow(id, record);
+        if (thing >= 0 && !this.materialOf.has(thing)) this.materialOf.set(thing, material);
+      }
+    }
+    for (const record of reader.all('IFCRELASSOCIATESCLASSIFICATION')) {
+      const things = cursor.at(reader.args[record]!).skip(4).ids();
+      const reference = reader.follow(cursor.id(), record);
+      if (reference < 0) continue;
+      for (const id of things) {
+        const thing = reader.follow(id, record);
+        const list = this.classesOf.get(thing);
+        if (list !== undefined) list.push(reference);
+        else if (thing >= 0) this.classesOf.set(thing, [reference]);
+      }
+    }
+  }
+
+  /** Name of the material, of the first where there are several; null for none. */
+  material(record: number): string | null {
+    const material = this.materialOf.get(record);
+    return material === undefined ? null : this.materialName(material, 0);
+  }
+
+  /** `system:code title`, in order of the relations. */
+  classifications(record: number): readonly string[] {
+    const references = this.classesOf.get(record);
+    if (references === undefined) return noTexts;
+    return references.map((reference) => this.classificationText(reference)).filter((text) => text !== ':');
+  }
+
+  /** Layers from the first to the last; none where the material is no layer set. */
+  layers(record: number): Layer[] {
+    const { reader } = this;
+    let set = this.materialOf.get(record) ?? -1;
+    if (reader.type(set) === 'IFCMATERIALLAYERSETUSAGE') set = reader.follow(reader.open(set).id(), set);
+    if (reader.type(set) !== 'IFCMATERIALLAYERSET') return [];
+    return reader
+      .open(set)
+      .ids()
+      .flatMap((id) => {
+        const layer = reader.follow(id, set);
+        if (layer < 0) return [];
+        const cursor = reader.open(layer);
+        const material = reader.follow(cursor.id(), layer);
+        const thickness = cursor.number() ?? 0;
+        return [{ name: this.materialName(material, 0), thickness: thickness * this.metres }];
+      });
+  }
+
+  private materialName(record: number, depth: number): string | null {
     if (record < 0 || depth > deepest) return null;
-    const known = names.get(record);
+    const known = this.names.get(record);
     if (known !== undefined) return known;
-    const name = nameOfMaterial(record, depth);
-    names.set(record, name);
+    const name = this.readName(record, depth);
+    this.names.set(record, name);
     return name;
-  };
-  const nameOfMaterial = (record: number, depth: number): string | null => {
-    const cursor = reader.cursor().at(args[record]!);
-    const within = (id: number | undefined): string | null =>
-      materialName(id === undefined ? -1 : follow(id, record), depth + 1);
-    switch (type(record)) {
+  }
+
+  private readName(record: number, depth: number): string | null {
+    const { reader } = this;
+    const cursor = reader.open(record);
+    const within = (id: number): string | null => this.materialName(reader.follow(id, record), depth + 1);
+    switch (reader.type(record)) {
       case 'IFCMATERIAL':
         return cursor.text();
       case 'IFCMATERIALLIST':
@@ -62,56 +98,35 @@ export function associationsOf(reader: Reader, metres: number): Associations {
       case 'IFCMATERIALPROFILESETUSAGE':
       case 'IFCMATERIALPROFILESETUSAGETAPERING':
       case 'IFCMATERIALLAYER':
-        return within(cursor.ids()[0]);
+        return within(cursor.ids()[0] ?? 0);
       case 'IFCMATERIALPROFILESET':
       case 'IFCMATERIALCONSTITUENTSET':
-        return within(cursor.skip(2).ids()[0]);
+        return within(cursor.skip(2).ids()[0] ?? 0);
       case 'IFCMATERIALPROFILE':
       case 'IFCMATERIALCONSTITUENT':
         return within(cursor.skip(2).id());
       default:
         return null;
     }
-  };
-  const referenceText = (record: number, depth: number): { readonly system: string | null; readonly said: string } => {
-    if (record < 0 || depth > deepest) return { system: null, said: '' };
-    const cursor = reader.cursor().at(args[record]!);
-    if (type(record) === 'IFCCLASSIFICATION') return { system: cursor.skip(3).text(), said: '' };
-    cursor.skip(1);
-    const code = cursor.text();
-    const title = cursor.text();
-    const { system } = referenceText(follow(cursor.id(), record), depth + 1);
-    return { system, said: [code, title].filter((one) => one !== null && one !== '').join(' ') };
-  };
-  const texts = new Map<number, string>();
-  const classificationText = (record: number): string => {
-    const known = texts.get(record);
+  }
+
+  private classificationText(reference: number): string {
+    const known = this.texts.get(reference);
     if (known !== undefined) return known;
-    const { system, said } = referenceText(record, 0);
+    const { system, said } = this.referenceText(reference, 0);
     const text = `${system ?? ''}:${said}`;
-    texts.set(record, text);
+    this.texts.set(reference, text);
     return text;
-  };
-  const layers = (record: number): { readonly name: string | null; readonly thickness: number }[] => {
-    let set = materialOf.get(record) ?? -1;
-    if (type(set) === 'IFCMATERIALLAYERSETUSAGE') set = follow(reader.cursor().at(args[set]!).id(), set);
-    if (type(set) !== 'IFCMATERIALLAYERSET') return [];
-    return reader
-      .cursor()
-      .at(args[set]!)
-      .ids()
-      .flatMap((id) => {
-        const layer = follow(id, set);
-        if (layer < 0) return [];
-        const cursor = reader.cursor().at(args[layer]!);
-        const material = follow(cursor.id(), layer);
-        const thickness = cursor.number() ?? 0;
-        return [{ name: materialName(material, 0), thickness: thickness * metres }];
-      });
-  };
-  return {
-    material: (record) => materialName(materialOf.get(record) ?? -1, 0),
-    classifications: (record) => (classOf.get(record) ?? []).map(classificationText).filter((text) => text !== ':'),
-    layers,
-  };
+  }
+
+  private referenceText(record: number, depth: number): { readonly system: string | null; readonly said: string } {
+    const { reader } = this;
+    if (record < 0 || depth > deepest) return { system: null, said: '' };
+    const cursor = reader.open(record);
+    if (reader.type(record) === 'IFCCLASSIFICATION') return { system: cursor.skip(3).text(), said: '' };
+    const code = cursor.skip(1).text();
+    const title = cursor.text();
+    const { system } = this.referenceText(reader.follow(cursor.id(), record), depth + 1);
+    return { system, said: [code, title].filter((one) => one !== null && one !== '').join(' ') };
+  }
 }

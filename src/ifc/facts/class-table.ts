@@ -87,7 +87,7 @@ const drainingAppliances = new Set(['DISHWASHER', 'WASHINGMACHINE', 'FREESTANDIN
 const drainingNames =
   /\bwash|dish ?wash|laundry machine|waschmaschine|sp(?:ü|ue)lmaschine|geschirrsp|lave[- ]?linge|lave[- ]?vaisselle|wasautomaat|wasmachine|vaatwas|lavadora|lavavajillas|lavatrice|lavastoviglie|lavar roupa|lavar lou|tvättmaskin|diskmaskin|vaskemaskin|oppvask|opvask|pralk|zmywark/i;
 
-export function drains(predefinedType: string | null, texts: readonly (string | null)[]): boolean {
+export function drains(predefinedType: string | null, texts: readonly (string | null | undefined)[]): boolean {
   if (predefinedType !== null && predefinedType !== 'USERDEFINED') return drainingAppliances.has(predefinedType);
-  return texts.some((text) => text !== null && drainingNames.test(text));
+  return texts.some((text) => text != null && drainingNames.test(text));
 }

@@ -38,18 +38,13 @@ export function drawnBody(reader: Reader, placements: Placements, solids: Solids
 
 const isOneSweep = ({ body }: ProductShape): boolean => body.length === 1 && body[0]!.shape.kind === 'tube';
 
-/** The drawn diameters as witnesses: exact where the file states a profile, measured where a mesh was fitted. */
-export function drawnSizes({ centreLine }: Drawn): SizeWitness[] {
-  if (centreLine === null) return [];
+/** Adds the drawn diameters as witnesses: exact where the file states a profile, measured where a mesh was fitted. */
+export function addDrawnSizes(into: SizeWitness[], { centreLine }: Drawn): void {
+  if (centreLine === null) return;
   const { outerDiameter, innerDiameter, ground } = centreLine;
   const isProfile = ground === 'extrusion' || ground === 'swept-disk';
-  const found: SizeWitness[] = [];
-  const add = (means: 'outer' | 'inner', diameter: number | null): void => {
-    if (diameter === null) return;
-    const from = isProfile ? 'profile' : 'measured on the body';
-    found.push({ means, mm: roundedMm(diameter * 1000), text: null, ground: isProfile ? 'profile' : 'measured', from });
-  };
-  add('outer', outerDiameter);
-  add('inner', innerDiameter);
-  return found;
+  const from = isProfile ? 'profile' : 'measured on the body';
+  const told = { text: null, ground: isProfile ? 'profile' : 'measured', from } as const;
+  if (outerDiameter !== null) into.push({ means: 'outer', mm: roundedMm(outerDiameter * 1000), ...told });
+  if (innerDiameter !== null) into.push({ means: 'inner', mm: roundedMm(innerDiameter * 1000), ...told });
 }

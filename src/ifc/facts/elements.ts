@@ -1,6 +1,8 @@
 import type { ElementClass } from '../../model/model.ts';
 import type { Reader } from '../reader.ts';
 import { borrowedClasses, drains, elementClasses, typeClasses } from './class-table.ts';
+import type { PortLinks } from './ports.ts';
+import type { Systems } from './systems.ts';
 import type { TypeFacts, Types } from './type-objects.ts';
 
 /** What an element's own record says. */
@@ -22,30 +24,19 @@ export interface ElementRecord {
   readonly isDoubtful: boolean;
 }
 
-/** How a product that may be one of ours is tied to piping. */
-export interface Ties {
-  readonly ports: number;
-  readonly isInSystem: boolean;
-}
-
 /** Records of all distribution elements and of the borrowed ones that are tied to piping, in order of STEP ids. */
-export function elementRecords(reader: Reader, tiesOf: (record: number) => Ties, types: Types): Uint32Array {
-  const { index } = reader;
-  const found: number[] = [];
-  for (const name of elementClasses.keys()) for (const record of index.recordsOf(name)) found.push(record);
-  const typed = new Set(types.distributionOccurrences());
-  for (const name of borrowedClasses.keys()) {
-    for (const record of index.recordsOf(name)) {
-      const { ports, isInSystem } = tiesOf(record);
-      if (ports > 0 || isInSystem || typed.has(record)) found.push(record);
-    }
-  }
-  return Uint32Array.from(found).sort((a, b) => index.ids[a]! - index.ids[b]!);
+export function elementRecords(reader: Reader, links: PortLinks, systems: Systems, types: Types): number[] {
+  const found = reader.allOf(elementClasses.keys());
+  const borrowed = reader.allOf(borrowedClasses.keys());
+  if (borrowed.length === 0) return found;
+  const typed = new Set(types.distributionOccurrences);
+  const isTied = (record: number): boolean => links.countOf(record) > 0 || systems.has(record) || typed.has(record);
+  const { ids } = reader.index;
+  return [...found, ...borrowed.filter(isTied)].sort((a, b) => ids[a]! - ids[b]!);
 }
 
-export function readElement(reader: Reader, record: number, ties: Ties, types: Types): ElementRecord {
-  const { index, follow } = reader;
-  const cursor = reader.cursor().at(index.args[record]!);
+export function readElement(reader: Reader, record: number, ports: number, types: Types): ElementRecord {
+  const cursor = reader.open(record);
   const globalId = cursor.unique() ?? '';
   const name = cursor.skip(1).text();
   const description = cursor.text();
@@ -59,7 +50,6 @@ export function readElement(reader: Reader, record: number, ties: Ties, types: T
   const own = word === 'NOTDEFINED' ? null : word;
   const ofType = type?.predefinedType ?? null;
   const predefinedType = own !== null && own !== 'USERDEFINED' ? own : (ofType ?? own);
-  const texts = [name, objectType, type?.name ?? null, description, type?.description ?? null];
   return {
     record,
     globalId,
@@ -68,11 +58,17 @@ export function readElement(reader: Reader, record: number, ties: Ties, types: T
     description,
     objectType,
     tag,
-    placement: follow(placement, record),
-    shape: follow(shape, record),
+    placement: reader.follow(placement, record),
+    shape: reader.follow(shape, record),
     type,
     predefinedType,
-    kind: kindOf(className, type, predefinedType, texts, ties),
+    kind: kindOf(className, type, predefinedType, ports, () => [
+      name,
+      objectType,
+      type?.name,
+      description,
+      type?.description,
+    ]),
     isDoubtful: className === 'IFCFLOWSEGMENT' && (type === null || !typeClasses.has(type.className.toUpperCase())),
   };
 }
@@ -80,16 +76,17 @@ export function readElement(reader: Reader, record: number, ties: Ties, types: T
 const chamberWords =
   /manhole|inspection chamber|chamber|schacht|regard|\bput\b|pozzett|arqueta|\bbrunn|\bkum\b|studzienk|caixa de inspe/i;
 
+/** `ports`: how many ports the product has. */
 function kindOf(
   className: string,
   type: TypeFacts | null,
   predefinedType: string | null,
-  texts: readonly (string | null)[],
-  { ports }: Ties,
+  ports: number,
+  texts: () => readonly (string | null | undefined)[],
 ): ElementClass {
   const typeName = type?.className.toUpperCase() ?? '';
   if (className === 'IFCELECTRICAPPLIANCE' || typeName === 'IFCELECTRICAPPLIANCETYPE') {
-    return drains(predefinedType, texts) ? 'terminal' : 'other';
+    return drains(predefinedType, texts()) ? 'terminal' : 'other';
   }
   const byClass = elementClasses.get(className);
   if (byClass !== undefined && byClass.kind !== 'typed') return byClass.kind;
@@ -98,7 +95,7 @@ function kindOf(
   if (byClass !== undefined && byClass.untyped !== 'other') return byClass.untyped;
   if (byType !== undefined && byType.untyped !== 'other') return byType.untyped;
   // A distribution element without a class of its own, or a thing of the building that carries plumbing.
-  if (texts.some((text) => text !== null && chamberWords.test(text))) return 'chamber';
+  if (texts().some((text) => text != null && chamberWords.test(text))) return 'chamber';
   if (ports > 1) return 'fitting';
   return ports === 1 || byClass === undefined ? 'terminal' : 'other';
 }

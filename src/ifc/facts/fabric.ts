@@ -9,6 +9,8 @@ import type { Placements } from '../solids/placements.ts';
 import { readShape } from '../solids/product-shape.ts';
 import type { Solids } from '../solids/solids.ts';
 import type { Associations } from './associations.ts';
+import type { PropertyReadings } from './property-readings.ts';
+import type { Types } from './type-objects.ts';
 
 const wallClasses = ['IFCWALL', 'IFCWALLSTANDARDCASE', 'IFCWALLELEMENTEDCASE'];
 const slabClasses = ['IFCSLAB', 'IFCSLABSTANDARDCASE', 'IFCSLABELEMENTEDCASE'];
@@ -21,9 +23,8 @@ export interface FabricSources {
   readonly solids: Solids;
   readonly associations: Associations;
   readonly storeyOf: (record: number) => StoreyId | null;
-  readonly typeRecordOf: (record: number) => number;
-  /** Values of `Pset_WallCommon` that stand on an occurrence or a type; null for none. */
-  readonly wallCommon: (record: number) => ReadonlyMap<string, string | number | boolean> | null;
+  readonly types: Types;
+  readonly readings: PropertyReadings;
 }
 
 export interface BuildingFabric {
@@ -34,14 +35,14 @@ export interface BuildingFabric {
 
 /** Records whose common sets `fabricOf` will ask for. */
 export function wallRecords(reader: Reader): readonly number[] {
-  return inOrder(reader, wallClasses);
+  return reader.allOf(wallClasses);
 }
 
 /** Walls, slabs and roofs, each list in order of STEP ids. A slab that is said to be a roof stands among the roofs. */
 export function fabricOf(sources: FabricSources): BuildingFabric {
   const { reader } = sources;
-  const slabs = inOrder(reader, slabClasses).map((record) => fabric(sources, record));
-  const roofs = inOrder(reader, roofClasses).map((record) => fabric(sources, record));
+  const slabs = reader.allOf(slabClasses).map((record) => fabric(sources, record));
+  const roofs = reader.allOf(roofClasses).map((record) => fabric(sources, record));
   const roofSlabs = slabs.filter(({ predefinedType }) => predefinedType === 'ROOF');
   return {
     walls: wallRecords(reader).map((record) => wall(sources, record)),
@@ -50,24 +51,18 @@ export function fabricOf(sources: FabricSources): BuildingFabric {
   };
 }
 
-const inOrder = (reader: Reader, classes: readonly string[]): number[] =>
-  classes
-    .flatMap((name) => [...reader.index.recordsOf(name)])
-    .sort((a, b) => reader.index.ids[a]! - reader.index.ids[b]!);
-
 function fabric({ file, reader, placements, solids, storeyOf }: FabricSources, record: number): Fabric {
-  const { index, follow } = reader;
-  const cursor = reader.cursor().at(index.args[record]!);
+  const cursor = reader.open(record);
   const globalId = cursor.unique() ?? '';
   const name = cursor.skip(1).text();
-  const placement = follow(cursor.skip(2).id(), record);
-  const shape = follow(cursor.id(), record);
+  const placement = reader.follow(cursor.skip(2).id(), record);
+  const shape = reader.follow(cursor.id(), record);
   const word = cursor.skip(1).more ? cursor.enumeration() : null;
   const world = placement < 0 ? identity : placements.world(placement);
   const body = world === null ? [] : readShape(reader, solids, shape).body;
   return {
     file,
-    stepId: index.ids[record]!,
+    stepId: reader.index.ids[record]!,
     globalId,
     name,
     predefinedType: word === 'NOTDEFINED' ? null : word,
@@ -78,12 +73,12 @@ function fabric({ file, reader, placements, solids, storeyOf }: FabricSources, r
 }
 
 function wall(sources: FabricSources, record: number): Wall {
-  const { associations, typeRecordOf, wallCommon } = sources;
-  const typeRecord = typeRecordOf(record);
+  const { associations, types, readings } = sources;
+  const typeRecord = types.recordOf(record);
   const own = associations.layers(record);
   const layers = own.length > 0 || typeRecord < 0 ? own : associations.layers(typeRecord);
-  const common = wallCommon(record);
-  const ofType = typeRecord < 0 ? null : wallCommon(typeRecord);
+  const common = readings.wallCommon(record);
+  const ofType = typeRecord < 0 ? null : readings.wallCommon(typeRecord);
   const flag = (name: string): boolean | null => {
     const value = common?.get(name) ?? ofType?.get(name);
     return typeof value === 'boolean' ? value : null;

@@ -2,24 +2,16 @@ import type { ElementClass, PropertyFact, SizeWitness } from '../../model/model.
 import { sizeInName } from '../../model/size-in-name.ts';
 import { slopeOfAngle, slopeOfNumber, slopeOfText } from '../../model/slope-value.ts';
 import { type Metres, metres } from '../../units/quantity.ts';
+import type { PortReading } from './property-readings.ts';
 import type { Reading } from './property-sets.ts';
 
-/** What the properties of one element come to, occurrence before type. */
+/** What the properties of one element come to, occurrence before type. `sizes` is the element's own list to add to. */
 export interface Witnessed {
-  readonly sizes: readonly SizeWitness[];
+  readonly sizes: SizeWitness[];
   readonly slopes: readonly { readonly slope: number; readonly from: string }[];
   readonly statedLength: Metres | null;
   readonly properties: readonly PropertyFact[];
 }
-
-export interface Sources {
-  readonly own: readonly Reading[];
-  readonly ofType: readonly Reading[];
-  /** Readings of the element's ports, with the port's name. */
-  readonly ofPorts: readonly { readonly port: string; readonly reading: Reading }[];
-}
-
-export const nothingWitnessed: Witnessed = { sizes: [], slopes: [], statedLength: null, properties: [] };
 
 /** Nothing under a millimetre is a pipe's size: zero and 0.000001 stand for "not known" in many models. */
 const leastSize = 0.001;
@@ -27,70 +19,108 @@ const leastSize = 0.001;
 /** Millionths of a millimetre are the dust of arithmetic. */
 export const roundedMm = (mm: number): number => Math.round(mm * 1e6) / 1e6;
 
+const noSlopes: Witnessed['slopes'] = [];
+const noFacts: readonly PropertyFact[] = [];
+
 /** Merges property by property: where occurrence and type state the same one, the occurrence's holds. */
-export function judged({ own, ofType, ofPorts }: Sources, kind: ElementClass): Witnessed {
-  if (own.length === 0 && ofType.length === 0 && ofPorts.length === 0) return nothingWitnessed;
-  const sizes: SizeWitness[] = [];
-  const quantities: SizeWitness[] = [];
-  const slopes: { readonly slope: number; readonly from: string }[] = [];
-  const properties: PropertyFact[] = [];
-  const sides: Partial<Record<'width' | 'depth', { readonly reading: Reading; readonly from: string }>> = {};
-  let statedLength: Metres | null = null;
-
-  const take = (reading: Reading, from: 'own' | 'type'): void => {
-    const { meaning } = reading;
-    const where = `${reading.set}.${reading.name}${from === 'type' ? ' (type)' : ''}`;
-    switch (meaning.bears) {
-      case 'size': {
-        const witness = sizeWitness(reading, meaning.means, where);
-        if (witness === null) break;
-        (reading.isQuantity ? quantities : sizes).push(witness);
-        break;
-      }
-      case 'side':
-        if (kind === 'segment') sides[meaning.side] ??= { reading, from: where };
-        break;
-      case 'slope': {
-        const slope = slopeOf(reading, meaning.form);
-        if (slope !== null) slopes.push({ slope, from: where });
-        break;
-      }
-      case 'length':
-        if (typeof reading.value === 'number' && reading.value > 0 && reading.hasUnit)
-          statedLength ??= metres(reading.value);
-        break;
-      case 'fact':
-        properties.push(propertyFact(reading, from));
-    }
-  };
-  for (const reading of own) take(reading, 'own');
-  for (const reading of ofType) if (!own.some((one) => isSame(one, reading))) take(reading, 'type');
-
-  const { width, depth } = sides;
-  // Two sides alike are how some programs state a round section.
-  if (width !== undefined && width.reading.value === depth?.reading.value) {
-    const witness = sizeWitness(width.reading, 'unknown', width.from);
-    if (witness !== null) sizes.push(witness);
+export function judged(
+  own: readonly Reading[],
+  ofType: readonly Reading[],
+  ofPorts: readonly PortReading[],
+  kind: ElementClass,
+): Witnessed {
+  if (own.length === 0 && ofType.length === 0 && ofPorts.length === 0) {
+    return { sizes: [], slopes: noSlopes, statedLength: null, properties: noFacts };
   }
-  sizes.push(...quantities);
-  for (const { port, reading } of ofPorts) {
-    if (reading.meaning.bears !== 'size') continue;
-    const witness = sizeWitness(reading, reading.meaning.means, `${reading.set}.${reading.name} (port ${port})`);
-    if (witness !== null) sizes.push({ ...witness, ground: 'port' });
-  }
-  return { sizes, slopes, statedLength, properties };
+  const verdict = new Verdict(kind);
+  for (let k = 0; k < own.length; k++) verdict.take(own[k]!, false);
+  for (let k = 0; k < ofType.length; k++) if (!states(own, ofType[k]!)) verdict.take(ofType[k]!, true);
+  return verdict.close(ofPorts);
 }
 
-const isSame = (a: Reading, b: Reading): boolean => a.name === b.name && a.set === b.set;
+function states(own: readonly Reading[], { set, name }: Reading): boolean {
+  for (let k = 0; k < own.length; k++) if (own[k]!.name === name && own[k]!.set === set) return true;
+  return false;
+}
+
+/** Gathers the witnesses of one element. */
+class Verdict {
+  private readonly kind: ElementClass;
+  private readonly sizes: SizeWitness[] = [];
+  private quantities: SizeWitness[] | null = null;
+  private slopes: { readonly slope: number; readonly from: string }[] | null = null;
+  private properties: PropertyFact[] | null = null;
+  private statedLength: Metres | null = null;
+  private width: SizeWitness | null = null;
+  private depth: SizeWitness | null = null;
+
+  constructor(kind: ElementClass) {
+    this.kind = kind;
+  }
+
+  take(reading: Reading, isOfType: boolean): void {
+    const { meaning } = reading;
+    switch (meaning.bears) {
+      case 'size': {
+        const witness = sizeWitness(reading, meaning.means, placeOf(reading, isOfType));
+        if (witness === null) return;
+        if (!reading.isQuantity) this.sizes.push(witness);
+        else if (this.quantities === null) this.quantities = [witness];
+        else this.quantities.push(witness);
+        return;
+      }
+      case 'side': {
+        if (this.kind !== 'segment') return;
+        const witness = sizeWitness(reading, 'unknown', placeOf(reading, isOfType));
+        if (meaning.side === 'width') this.width ??= witness;
+        else this.depth ??= witness;
+        return;
+      }
+      case 'slope': {
+        const slope = slopeOf(reading, meaning.form);
+        if (slope === null) return;
+        this.slopes ??= [];
+        this.slopes.push({ slope, from: placeOf(reading, isOfType) });
+        return;
+      }
+      case 'length':
+        if (typeof reading.value === 'number' && reading.value > 0 && reading.hasUnit) {
+          this.statedLength ??= metres(reading.value);
+        }
+        return;
+      case 'fact':
+        // Of elements that carry no water only the fact that they are there counts.
+        if (this.kind === 'other') return;
+        this.properties ??= [];
+        this.properties.push(propertyFact(reading, isOfType ? 'type' : 'own'));
+    }
+  }
+
+  close(ofPorts: readonly PortReading[]): Witnessed {
+    const { sizes, width, depth, slopes, statedLength, properties } = this;
+    // Two sides alike are how some programs state a round section.
+    if (width !== null && depth !== null && width.mm === depth.mm && width.text === depth.text) sizes.push(width);
+    if (this.quantities !== null) sizes.push(...this.quantities);
+    for (const { port, reading } of ofPorts) {
+      const { meaning, set, name } = reading;
+      if (meaning.bears !== 'size') continue;
+      const witness = sizeWitness(reading, meaning.means, `${set}.${name} (port ${port})`);
+      if (witness !== null) sizes.push({ ...witness, ground: 'port' });
+    }
+    return { sizes, slopes: slopes ?? noSlopes, statedLength, properties: properties ?? noFacts };
+  }
+}
+
+const placeOf = ({ set, name }: Reading, isOfType: boolean): string =>
+  isOfType ? `${set}.${name} (type)` : `${set}.${name}`;
 
 function sizeWitness(reading: Reading, means: SizeWitness['means'], from: string): SizeWitness | null {
   const { value, measure, hasUnit, isQuantity } = reading;
   const ground = isQuantity ? 'quantity' : 'property';
   if (typeof value === 'string') return { means, mm: null, text: value, ground, from };
-  if (typeof value !== 'number' || measure === 'angle') return null;
+  if (typeof value !== 'number' || measure === 'angle' || !(value > 0)) return null;
   if (hasUnit) return value > leastSize ? { means, mm: roundedMm(value * 1000), text: null, ground, from } : null;
   // A bare number: DN and Nennweite are millimetres by their meaning; others are left to whoever knows the sizes.
-  if (!(value > 0)) return null;
   const isMillimetres = means === 'nominal' && value >= 15 && value <= 3000;
   return { means, mm: isMillimetres ? value : null, text: isMillimetres ? null : String(value), ground, from };
 }
@@ -105,15 +135,26 @@ function propertyFact({ set, name, value, measure }: Reading, from: 'own' | 'typ
   return { set, name, value, measure: measure === 'angle' ? 'number' : measure, from };
 }
 
-/** Size claims in the texts of an element: type name before object type before its own name. */
-export function sizesInNames(
-  texts: readonly (readonly [from: string, text: string | null, isType: boolean])[],
-): SizeWitness[] {
-  const found: SizeWitness[] = [];
-  for (const [from, text, isType] of texts) {
-    const claim = text === null ? null : sizeInName(text, isType);
-    if (claim === null || found.some((one) => one.text === claim)) continue;
-    found.push({ means: 'unknown', mm: null, text: claim, ground: 'name', from });
+const mostRemembered = 20_000;
+
+/** Remembers which texts claim a size: the same few stand on every pipe. */
+export class NamedSizes {
+  private readonly typeNames = new Map<string, string | null>();
+  private readonly names = new Map<string, string | null>();
+
+  /** The claim in a text, see `sizeInName`. */
+  of(text: string, isType: boolean): string | null {
+    const memory = isType ? this.typeNames : this.names;
+    const known = memory.get(text);
+    if (known !== undefined) return known;
+    const claim = sizeInName(text, isType);
+    if (memory.size < mostRemembered) memory.set(text, claim);
+    return claim;
   }
-  return found;
+}
+
+/** Adds the size that a text claims, unless another text claimed the same. */
+export function addNamedSize(into: SizeWitness[], claim: string | null, from: string): void {
+  if (claim === null || into.some((one) => one.ground === 'name' && one.text === claim)) return;
+  into.push({ means: 'unknown', mm: null, text: claim, ground: 'name', from });
 }

@@ -1,76 +1,114 @@
 import type { Reader } from '../reader.ts';
 import type { PortLinks } from './ports.ts';
 import type { PropertySets, Reading } from './property-sets.ts';
-import { eachRelation } from './relations.ts';
 import type { Types } from './type-objects.ts';
 
-/** Properties by the things that have them. Sets of a type are given to the type on the way. */
-export interface PropertyReadings {
-  /** By place in the list of element records. */
-  readonly ofElement: (place: number) => readonly Reading[];
-  /** Of the ports that a product owns. */
-  readonly ofPorts: (record: number) => readonly { readonly port: string; readonly reading: Reading }[];
-  readonly wallCommon: (record: number) => ReadonlyMap<string, string | number | boolean> | null;
+const none: readonly Reading[] = [];
+const noPorts: readonly PortReading[] = [];
+
+export interface PortReading {
+  readonly port: string;
+  readonly reading: Reading;
 }
 
-const none: readonly Reading[] = [];
-const noPorts: readonly { readonly port: string; readonly reading: Reading }[] = [];
+type Values = ReadonlyMap<string, string | number | boolean>;
 
-export function propertyReadings(
-  reader: Reader,
-  sets: PropertySets,
-  types: Types,
-  elements: Uint32Array,
-  ports: PortLinks,
-  walls: readonly number[],
-): PropertyReadings {
-  const { index, follow, type } = reader;
-  /** 0: nobody of ours; k + 1: element at place k; `aWall`: a wall. */
-  const places = new Uint32Array(index.count);
-  const aWall = 0xffffffff;
-  for (const record of walls) places[record] = aWall;
-  for (const [k, record] of elements.entries()) places[record] = k + 1;
-  const own: (Reading[] | undefined)[] = Array(elements.length);
-  const common = new Map<number, ReadonlyMap<string, string | number | boolean>>();
-  const byOwner = new Map<number, { readonly port: string; readonly reading: Reading }[]>();
+const aWall = 0xffffffff;
 
-  const give = (thing: number, set: number): void => {
-    const place = places[thing]!;
-    if (place === aWall) {
-      const values = sets.named(set, 'Pset_WallCommon');
-      if (values !== null) common.set(thing, values);
-    } else if (place > 0) {
-      const readings = sets.read(set);
-      if (readings.length > 0) own[place - 1] = own[place - 1]?.concat(readings) ?? [...readings];
-    } else if (types.addSet(thing, set)) {
-      if (type(thing) === 'IFCWALLTYPE') give(thing, set);
-    } else {
-      const port = ports.placeOf(thing);
-      const owner = port < 0 ? -1 : ports.ownerOf[port]!;
-      const readings = owner < 0 ? none : sets.read(set);
-      if (readings.length === 0) return;
-      const name = reader.cursor().at(index.args[thing]!).skip(2).text() ?? `#${index.ids[thing]}`;
-      byOwner.set(owner, [...(byOwner.get(owner) ?? []), ...readings.map((reading) => ({ port: name, reading }))]);
-    }
-  };
-  for (const relation of ['IFCRELDEFINESBYPROPERTIES', 'IFCRELOVERRIDESPROPERTIES']) {
-    eachRelation(reader, relation, (cursor, record) => {
-      const things = cursor.ids();
-      let setIds: number[] | null = null;
-      for (const id of things) {
-        const thing = follow(id, record);
+/** Properties by the things that have them. Sets of a type are given to the type on the way. */
+export class PropertyReadings {
+  private readonly reader: Reader;
+  private readonly sets: PropertySets;
+  private readonly types: Types;
+  private readonly ports: PortLinks;
+  /** By record. 0: nobody of ours; k + 1: element at place k; `aWall`: a wall. */
+  private readonly places: Uint32Array;
+  private readonly own: (readonly Reading[] | undefined)[];
+  private readonly common = new Map<number, Values>();
+  private readonly byOwner = new Map<number, PortReading[]>();
+
+  constructor(
+    reader: Reader,
+    sets: PropertySets,
+    types: Types,
+    elements: readonly number[],
+    ports: PortLinks,
+    walls: readonly number[],
+  ) {
+    this.reader = reader;
+    this.sets = sets;
+    this.types = types;
+    this.ports = ports;
+    this.places = new Uint32Array(reader.index.count);
+    for (const record of walls) this.places[record] = aWall;
+    for (let k = 0; k < elements.length; k++) this.places[elements[k]!] = k + 1;
+    this.own = Array<readonly Reading[] | undefined>(elements.length).fill(undefined);
+    this.relate('IFCRELDEFINESBYPROPERTIES');
+    this.relate('IFCRELOVERRIDESPROPERTIES');
+  }
+
+  /** By place in the list of element records. */
+  ofElement(place: number): readonly Reading[] {
+    return this.own[place] ?? none;
+  }
+
+  /** Of the ports that a product owns. */
+  ofPorts(record: number): readonly PortReading[] {
+    return this.byOwner.get(record) ?? noPorts;
+  }
+
+  /** Values of the common set of a wall or a wall's type; null for none. */
+  wallCommon(record: number): Values | null {
+    return this.common.get(record) ?? null;
+  }
+
+  private relate(relation: string): void {
+    const { reader } = this;
+    const cursor = reader.cursor();
+    const relations = reader.all(relation);
+    for (let k = 0; k < relations.length; k++) {
+      const record = relations[k]!;
+      const things = cursor.at(reader.args[record]!).skip(4).ids();
+      let sets: readonly number[] | null = null;
+      for (let j = 0; j < things.length; j++) {
+        const thing = reader.follow(things[j]!, record);
         if (thing < 0) continue;
-        setIds ??= cursor.ids();
-        for (const setId of setIds) {
-          const set = follow(setId, record);
-          if (set >= 0) give(thing, set);
+        sets ??= cursor.ids();
+        for (let i = 0; i < sets.length; i++) {
+          const set = reader.follow(sets[i]!, record);
+          if (set >= 0) this.give(thing, set);
         }
       }
-    });
+    }
   }
-  return {
-    ofElement: (place) => own[place] ?? none,
-    ofPorts: (record) => byOwner.get(record) ?? noPorts,
-    wallCommon: (record) => common.get(record) ?? null,
-  };
+
+  private give(thing: number, set: number): void {
+    const place = this.places[thing]!;
+    if (place === aWall) this.giveWall(thing, set);
+    else if (place > 0) {
+      const readings = this.sets.read(set);
+      if (readings.length === 0) return;
+      const before = this.own[place - 1];
+      this.own[place - 1] = before === undefined ? readings : before.concat(readings);
+    } else if (this.types.addSet(thing, set)) {
+      if (this.reader.type(thing) === 'IFCWALLTYPE') this.giveWall(thing, set);
+    } else this.givePort(thing, set);
+  }
+
+  private giveWall(thing: number, set: number): void {
+    const values = this.sets.named(set, 'Pset_WallCommon');
+    if (values !== null) this.common.set(thing, values);
+  }
+
+  private givePort(thing: number, set: number): void {
+    const { reader, ports } = this;
+    const place = ports.placeOf(thing);
+    const owner = place < 0 ? -1 : ports.ownerOf[place]!;
+    const readings = owner < 0 ? none : this.sets.read(set);
+    if (readings.length === 0) return;
+    const port = reader.open(thing).skip(2).text() ?? `#${reader.index.ids[thing]}`;
+    const list = this.byOwner.get(owner) ?? [];
+    for (const reading of readings) list.push({ port, reading });
+    this.byOwner.set(owner, list);
+  }
 }

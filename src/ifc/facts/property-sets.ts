@@ -1,6 +1,6 @@
 import { metresInName, type PropertyMeaning, propertyMeaning } from '../../model/witness.ts';
 import type { Cursor } from '../lines/cursor.ts';
-import { nameTable } from '../lines/name-table.ts';
+import { NameTable, type Remembered } from '../lines/name-table.ts';
 import { decodeText } from '../lines/text.ts';
 import type { Reader } from '../reader.ts';
 import { type StatedValue, statedValue } from './property-value.ts';
@@ -18,123 +18,150 @@ export interface Reading {
   readonly isQuantity: boolean;
 }
 
-export interface PropertySets {
-  /** What a property set or element quantity says of drainage, in its own order. Our own sets say nothing. */
-  readonly read: (record: number) => readonly Reading[];
-  /** Values of one set by property name, whatever they mean; null unless the set has this name. */
-  readonly named: (record: number, set: string) => ReadonlyMap<string, string | number | boolean> | null;
-}
-
 const ownPrefix = 'Drainwright_';
 const none: readonly Reading[] = [];
 const deepestComplex = 10;
+/** Readings of one set that are kept: complex properties of complex properties can grow without end. */
+const mostReadings = 2000;
 
-interface Named {
+interface NameSays {
   readonly meaning: PropertyMeaning | null;
   readonly metres: number | null;
 }
 
-export function propertySetsOf(reader: Reader, units: Units): PropertySets {
-  const { index, follow, type } = reader;
-  const { args, bytes } = index;
-  const metres = units.length.metres;
-  const names = nameTable<Named>(bytes, (from, to) => {
-    const name = decodeText(bytes, from, to, reader.watch).trim();
-    return { name, meaning: { meaning: propertyMeaning(name), metres: metresInName(name) } };
-  });
-  const cursor = reader.cursor();
-  const inner = reader.cursor();
-  const readings = new Map<number, readonly Reading[]>();
+/** Property sets and element quantities of one file. */
+export class PropertySets {
+  private readonly reader: Reader;
+  private readonly units: Units;
+  private readonly names: NameTable<NameSays>;
+  private readonly cursor: Cursor;
+  private readonly inner: Cursor;
+  private readonly known = new Map<number, readonly Reading[]>();
 
-  /** Name and meaning of a property, whose name is always its first argument; null where nothing is of use. */
-  const nameOf = (record: number) => {
-    let open = args[record]! + 1;
-    while (bytes[open]! <= 32) open++;
-    if (bytes[open] !== 39) return null;
-    let end = open + 1;
-    while (end < bytes.length && (bytes[end] !== 39 || bytes[end + 1] === 39)) end += bytes[end] === 39 ? 2 : 1;
-    return names.at(open + 1, end);
-  };
-  const unitFactor = (id: number, from: number): number | null => {
-    if (id === 0) return null;
-    const unit = units.read(follow(id, from));
-    return unit !== null && unit.quantity === 'LENGTHUNIT' ? unit.factor : null;
-  };
-  const angleFactor = (id: number, from: number): number => {
-    const unit = id === 0 ? null : units.read(follow(id, from));
-    return unit !== null && unit.quantity === 'PLANEANGLEUNIT' ? unit.factor : units.radians;
-  };
-  const property = (record: number, set: string, depth: number, into: Reading[]): void => {
-    const named = nameOf(record);
-    if (named === null) return;
-    const kind = type(record);
-    if (kind === 'IFCCOMPLEXPROPERTY' && depth < deepestComplex) {
-      for (const id of reader.cursor().at(args[record]!).skip(3).ids()) {
-        const part = follow(id, record);
-        if (part >= 0) property(part, set, depth + 1, into);
-      }
-      return;
-    }
-    const { name, meaning } = named;
-    if (meaning.meaning === null) return;
-    const stated = statedIn(inner.at(args[record]!), kind);
-    if (stated === null) return;
-    const { value, measure, unit, isQuantity } = stated;
-    if (typeof value === 'string' && value === name) return; // a template's placeholder
-    const bears = meaning.meaning;
-    if (typeof value !== 'number') {
-      into.push({ set, name, meaning: bears, value, measure, hasUnit: false, isQuantity });
-      return;
-    }
-    const ownUnit = meaning.metres ?? (unit === 0 ? null : unitFactor(unit, record));
-    if (measure === 'length' || (measure === 'number' && ownUnit !== null)) {
-      const length = value * (ownUnit ?? metres);
-      into.push({ set, name, meaning: bears, value: length, measure: 'length', hasUnit: true, isQuantity });
-    } else {
-      const number = measure === 'angle' ? value * angleFactor(unit, record) : value;
-      into.push({ set, name, meaning: bears, value: number, measure, hasUnit: false, isQuantity });
-    }
-  };
-  const read = (record: number): readonly Reading[] => {
-    const known = readings.get(record);
-    if (known !== undefined) return known;
-    const kind = type(record);
+  constructor(reader: Reader, units: Units) {
+    this.reader = reader;
+    this.units = units;
+    this.cursor = reader.cursor();
+    this.inner = reader.cursor();
+    const { bytes } = reader.index;
+    this.names = new NameTable<NameSays>(bytes, (from, to) => {
+      const name = decodeText(bytes, from, to, reader.watch).trim();
+      return { name, meaning: { meaning: propertyMeaning(name), metres: metresInName(name) }, isOdd: false };
+    });
+  }
+
+  /** What a set says of drainage, in its own order. Our own sets say nothing. */
+  read(record: number): readonly Reading[] {
+    const kind = this.reader.type(record);
     if (kind !== 'IFCPROPERTYSET' && kind !== 'IFCELEMENTQUANTITY') return none;
+    const known = this.known.get(record);
+    if (known !== undefined) return known;
+    const { cursor, reader } = this;
     const ids = cursor
-      .at(args[record]!)
+      .at(reader.args[record]!)
       .skip(kind === 'IFCPROPERTYSET' ? 4 : 5)
       .ids();
-    const found: Reading[] = [];
-    let set: string | null = null;
-    for (const id of ids) {
-      const one = follow(id, record);
-      if (one < 0) continue;
+    let found: Reading[] | null = null;
+    let set = '';
+    for (let k = 0; k < ids.length; k++) {
+      const property = reader.follow(ids[k]!, record);
+      if (property < 0) continue;
+      const named = this.nameOf(property);
+      if (named === null || (named.meaning.meaning === null && reader.type(property) !== 'IFCCOMPLEXPROPERTY'))
+        continue;
       // The set's own name is wanted only where one of its properties is.
-      const named = nameOf(one);
-      if (named === null || (named.meaning.meaning === null && type(one) !== 'IFCCOMPLEXPROPERTY')) continue;
-      set ??= cursor.at(args[record]!).skip(2).text() ?? '';
-      if (set.startsWith(ownPrefix)) break;
-      property(one, set, 0, found);
+      if (found === null) {
+        found = [];
+        set = cursor.at(reader.args[record]!).skip(2).text() ?? '';
+        if (set.startsWith(ownPrefix)) break;
+      }
+      this.property(property, named, set, 0, found);
     }
-    const result = found.length === 0 ? none : found;
-    readings.set(record, result);
+    const result = found === null || found.length === 0 ? none : found;
+    if (result !== none) this.known.set(record, result);
     return result;
-  };
-  const named = (record: number, set: string): ReadonlyMap<string, string | number | boolean> | null => {
-    if (type(record) !== 'IFCPROPERTYSET') return null;
-    if (cursor.at(args[record]!).skip(2).text() !== set) return null;
+  }
+
+  /** Values of one set by property name, whatever they mean; null unless the set has this name. */
+  named(record: number, set: string): ReadonlyMap<string, string | number | boolean> | null {
+    const { cursor, inner, reader } = this;
+    if (reader.type(record) !== 'IFCPROPERTYSET') return null;
+    if (cursor.at(reader.args[record]!).skip(2).text() !== set) return null;
     const values = new Map<string, string | number | boolean>();
     for (const id of cursor.skip(1).ids()) {
-      const one = follow(id, record);
-      if (type(one) !== 'IFCPROPERTYSINGLEVALUE') continue;
-      const name = inner.at(args[one]!).text();
+      const property = reader.follow(id, record);
+      if (reader.type(property) !== 'IFCPROPERTYSINGLEVALUE') continue;
+      const name = inner.at(reader.args[property]!).text();
       const stated = statedValue(inner.skip(1));
       if (name !== null && stated !== null) values.set(name, stated.value);
     }
     return values;
-  };
-  return { read, named };
+  }
+
+  private property(record: number, named: Remembered<NameSays>, set: string, depth: number, into: Reading[]): void {
+    const { inner, reader } = this;
+    const kind = reader.type(record);
+    if (into.length >= mostReadings) return;
+    if (kind === 'IFCCOMPLEXPROPERTY') {
+      if (depth >= deepestComplex) return;
+      for (const id of reader.open(record).skip(3).ids()) {
+        const part = reader.follow(id, record);
+        const partName = part < 0 ? null : this.nameOf(part);
+        if (partName !== null) this.property(part, partName, set, depth + 1, into);
+      }
+      return;
+    }
+    const { name } = named;
+    const { meaning, metres } = named.meaning;
+    if (meaning === null) return;
+    const stated = statedIn(inner.at(reader.args[record]!), kind);
+    if (stated === null) return;
+    const { value, measure, unit, isQuantity } = stated;
+    if (typeof value !== 'number') {
+      // A text that repeats the property's name is a template's placeholder.
+      if (value !== name) into.push(readingOf(set, name, meaning, value, measure, false, isQuantity));
+      return;
+    }
+    const ownUnit = metres ?? (unit === 0 ? null : this.unitFactor(unit, record, 'LENGTHUNIT'));
+    if (measure === 'length' || (measure === 'number' && ownUnit !== null)) {
+      const length = value * (ownUnit ?? this.units.length.metres);
+      into.push(readingOf(set, name, meaning, length, 'length', true, isQuantity));
+    } else {
+      const factor = measure === 'angle' ? this.radians(unit, record) : 1;
+      into.push(readingOf(set, name, meaning, value * factor, measure, false, isQuantity));
+    }
+  }
+
+  /** Name of a property, always its first argument, with what it says; null where there is none. */
+  private nameOf(record: number): Remembered<NameSays> | null {
+    const { bytes } = this.cursor;
+    let open = this.reader.args[record]! + 1;
+    while (bytes[open]! <= 32) open++;
+    if (bytes[open] !== 39) return null;
+    let end = open + 1;
+    while (end < bytes.length && (bytes[end] !== 39 || bytes[end + 1] === 39)) end += bytes[end] === 39 ? 2 : 1;
+    return this.names.at(open + 1, end);
+  }
+
+  private unitFactor(id: number, from: number, quantity: string): number | null {
+    const unit = this.units.read(this.reader.follow(id, from));
+    return unit !== null && unit.quantity === quantity ? unit.factor : null;
+  }
+
+  private radians(unit: number, from: number): number {
+    return (unit === 0 ? null : this.unitFactor(unit, from, 'PLANEANGLEUNIT')) ?? this.units.radians;
+  }
 }
+
+const readingOf = (
+  set: string,
+  name: string,
+  meaning: PropertyMeaning,
+  value: string | number | boolean,
+  measure: Reading['measure'],
+  hasUnit: boolean,
+  isQuantity: boolean,
+): Reading => ({ set, name, meaning, value, measure, hasUnit, isQuantity });
 
 interface StatedProperty {
   readonly value: string | number | boolean;

@@ -1,18 +1,18 @@
-import type { Element, ElementId, Fabric, Port, Space, StoreyId, System, Wall } from '../../model/model.ts';
-import { solidsOf } from '../solids/solids.ts';
-import { associationsOf } from './associations.ts';
-import { drawnBody, drawnSizes } from './drawn-body.ts';
-import { type ElementRecord, elementRecords, readElement, type Ties } from './elements.ts';
+import type { Element, ElementId, Fabric, Port, PortId, Space, StoreyId, System, Wall } from '../../model/model.ts';
+import { Solids } from '../solids/solids.ts';
+import { Associations } from './associations.ts';
+import { addDrawnSizes, drawnBody } from './drawn-body.ts';
+import { type ElementRecord, elementRecords, readElement } from './elements.ts';
 import { fabricOf, wallRecords } from './fabric.ts';
 import type { JoinedStoreys } from './join-storeys.ts';
-import { judged, sizesInNames } from './judge.ts';
-import { portLinks, readPorts } from './ports.ts';
-import { propertyReadings } from './property-readings.ts';
-import { propertySetsOf } from './property-sets.ts';
+import { addNamedSize, judged, NamedSizes } from './judge.ts';
+import { PortLinks, readPorts } from './ports.ts';
+import { PropertyReadings } from './property-readings.ts';
+import { PropertySets, type Reading } from './property-sets.ts';
 import type { Source } from './source.ts';
-import { spacesOf } from './spaces.ts';
-import { systemsOf } from './systems.ts';
-import { typesOf } from './type-objects.ts';
+import { Spaces } from './spaces.ts';
+import { Systems } from './systems.ts';
+import { Types } from './type-objects.ts';
 
 /** All that one file says, its ids counted on from those of the files before it. */
 export interface Facts {
@@ -33,98 +33,145 @@ export interface FirstIds {
 }
 
 export function readFacts(source: Source, storeys: JoinedStoreys, first: FirstIds): Facts {
-  const { file, index, reader, units, placements, spatial } = source;
-  const solids = solidsOf(reader, placements, units.radians);
-  const sets = propertySetsOf(reader, units);
-  const types = typesOf(reader, sets);
-  const links = portLinks(reader);
-  const { systems, membersOf } = systemsOf(reader, file, first.systems);
-  const associations = associationsOf(reader, units.length.metres);
-  const storeyOf = (record: number): StoreyId | null => {
-    const storey = spatial.storeyOf(record);
-    return storey < 0 ? null : storeys.idOf(file, storey);
-  };
-  const systemsAt = (record: number): Element['systems'] => {
-    for (let at = record, depth = 0; at >= 0 && depth < deepestAssembly; at = spatial.wholeOf(at), depth++) {
-      const own = membersOf.get(at);
-      if (own !== undefined) return own;
-    }
-    return [];
-  };
-  const tiesOf = (record: number): Ties => ({
-    ports: links.countOf(record),
-    isInSystem: membersOf.has(record),
-  });
-
-  const records = elementRecords(reader, tiesOf, types);
-  const read = Array.from(records, (record) => readElement(reader, record, tiesOf(record), types));
-  const places = new Map(read.map(({ record }, k) => [record, k]));
-  const elementOf = (record: number): ElementId | null => {
-    const place = places.get(record);
-    return place === undefined ? null : ((first.elements + place) as ElementId);
-  };
-  const isPiping = (record: number): boolean => carriesSize.has(read[places.get(record) ?? -1]?.kind ?? 'other');
-  const { ports, portsOf } = readPorts(reader, placements, links, first.ports, elementOf, isPiping);
-  const walls = wallRecords(reader);
-  const readings = propertyReadings(reader, sets, types, records, links, walls);
-  const { spaces, idOf: spaceIdOf } = spacesOf(source, solids, storeyOf, first.spaces);
-
-  const elements = read.map((one, k): Element => {
-    const { record, type } = one;
-    const drawn = drawnBody(reader, placements, solids, one);
-    const own = readings.ofElement(k);
-    const witnessed = judged({ own, ofType: type?.readings ?? [], ofPorts: readings.ofPorts(record) }, drawn.kind);
-    const named = carriesSize.has(drawn.kind) ? namedSizes(one) : [];
-    const typeRecord = type?.record ?? -1;
-    return {
-      id: (first.elements + k) as ElementId,
-      file,
-      stepId: index.ids[record]!,
-      globalId: one.globalId,
-      ifcClass: one.ifcClass,
-      typeClass: type?.className ?? null,
-      predefinedType: one.predefinedType,
-      kind: drawn.kind,
-      name: one.name,
-      objectType: one.objectType,
-      description: one.description,
-      tag: one.tag,
-      typeName: type?.name ?? null,
-      typeDescription: type?.description ?? null,
-      classifications: [...associations.classifications(record), ...associations.classifications(typeRecord)],
-      systems: systemsAt(record),
-      storey: storeyOf(record),
-      space: spaceIdOf(spatial.spaceOf(record)),
-      ports: portsOf((first.elements + k) as ElementId),
-      material: associations.material(record) ?? associations.material(typeRecord),
-      origin: drawn.origin,
-      centreLine: drawn.centreLine,
-      box: drawn.box,
-      sizes: [...witnessed.sizes, ...drawnSizes(drawn), ...named],
-      slopes: witnessed.slopes,
-      statedLength: witnessed.statedLength,
-      properties: drawn.kind === 'other' ? [] : witnessed.properties,
-    };
-  });
-  const fabric = fabricOf({
-    file,
-    reader,
-    placements,
-    solids,
-    associations,
-    storeyOf,
-    typeRecordOf: (record) => types.of(record)?.record ?? -1,
-    wallCommon: readings.wallCommon,
-  });
-  return { elements, ports, systems, spaces, ...fabric };
+  return new FactsReader(source, storeys, first).read();
 }
 
 const deepestAssembly = 20;
 const carriesSize = new Set<Element['kind']>(['segment', 'fitting', 'valve']);
+const noPorts: readonly PortId[] = [];
+const noSystems: Element['systems'] = [];
 
-const namedSizes = ({ type, objectType, name }: ElementRecord): Element['sizes'] =>
-  sizesInNames([
-    ['type name', type?.name ?? null, true],
-    ['ObjectType', objectType, true],
-    ['Name', name, false],
-  ]);
+class FactsReader {
+  private readonly source: Source;
+  private readonly storeys: JoinedStoreys;
+  private readonly first: FirstIds;
+  private readonly solids: Solids;
+  private readonly types: Types;
+  private readonly links: PortLinks;
+  private readonly systems: Systems;
+  private readonly associations: Associations;
+  private readonly spaces: Spaces;
+  private readonly claims = new NamedSizes();
+  private readonly records: readonly ElementRecord[];
+  private readonly readings: PropertyReadings;
+  /** Place + 1 of an element by its record; 0 for none. */
+  private readonly places: Uint32Array;
+  private readonly portsOf: PortId[][] = [];
+
+  constructor(source: Source, storeys: JoinedStoreys, first: FirstIds) {
+    this.source = source;
+    this.storeys = storeys;
+    this.first = first;
+    const { file, reader, units, placements } = source;
+    this.solids = new Solids(reader, placements, units.radians);
+    const sets = new PropertySets(reader, units);
+    this.types = new Types(reader, sets);
+    this.links = new PortLinks(reader);
+    this.systems = new Systems(reader, file, first.systems);
+    this.associations = new Associations(reader, units.length.metres);
+    this.spaces = new Spaces(source, this.solids, storeys, first.spaces);
+    const records = elementRecords(reader, this.links, this.systems, this.types);
+    this.places = new Uint32Array(reader.index.count);
+    for (let k = 0; k < records.length; k++) this.places[records[k]!] = k + 1;
+    // Sets reach their types before the first type is read.
+    this.readings = new PropertyReadings(reader, sets, this.types, records, this.links, wallRecords(reader));
+    this.records = records.map((record) => readElement(reader, record, this.links.countOf(record), this.types));
+  }
+
+  read(): Facts {
+    const { source, links, first, systems, spaces, solids, types, associations, readings } = this;
+    const { file, reader, placements } = source;
+    const ports = readPorts(reader, placements, links, first.ports, this);
+    for (let k = 0; k < ports.length; k++) this.keepPort(ports[k]!);
+    const elements: Element[] = [];
+    for (let k = 0; k < this.records.length; k++) elements.push(this.element(this.records[k]!, k));
+    const storeyOf = (record: number): StoreyId | null => this.storeyOf(record);
+    const fabric = fabricOf({ file, reader, placements, solids, associations, storeyOf, types, readings });
+    return { elements, ports, systems: systems.systems, spaces: spaces.spaces, ...fabric };
+  }
+
+  elementAt(record: number): ElementId | null {
+    const place = this.places[record]! - 1;
+    return place < 0 ? null : ((this.first.elements + place) as ElementId);
+  }
+
+  isPiping(record: number): boolean {
+    const place = this.places[record]! - 1;
+    return place >= 0 && carriesSize.has(this.records[place]!.kind);
+  }
+
+  private keepPort({ id, owner }: Port): void {
+    if (owner === null) return;
+    const place = owner - this.first.elements;
+    const list = this.portsOf[place];
+    if (list === undefined) this.portsOf[place] = [id];
+    else list.push(id);
+  }
+
+  private storeyOf(record: number): StoreyId | null {
+    const storey = this.source.spatial.storeyOf(record);
+    return storey < 0 ? null : this.storeys.idOf(this.source.file, storey);
+  }
+
+  /** Systems of a product; of the assembly that it is a part of, where it is in none itself. */
+  private systemsOf(record: number): Element['systems'] {
+    let at = record;
+    for (let depth = 0; at >= 0 && depth < deepestAssembly; depth++) {
+      if (this.systems.has(at)) return this.systems.of(at);
+      at = this.source.spatial.wholeOf(at);
+    }
+    return noSystems;
+  }
+
+  private element(one: ElementRecord, place: number): Element {
+    const { source, associations, readings, claims } = this;
+    const { file, reader, placements, spatial } = source;
+    const { record, type, name, objectType } = one;
+    const drawn = drawnBody(reader, placements, this.solids, one);
+    const { kind } = drawn;
+    const ofType = type === null ? noReadings : type.readings;
+    const witnessed = judged(readings.ofElement(place), ofType, readings.ofPorts(record), kind);
+    const { sizes } = witnessed;
+    addDrawnSizes(sizes, drawn);
+    if (carriesSize.has(kind)) {
+      if (type !== null && type.name !== null) addNamedSize(sizes, claims.of(type.name, true), 'type name');
+      if (objectType !== null) addNamedSize(sizes, claims.of(objectType, true), 'ObjectType');
+      if (name !== null) addNamedSize(sizes, claims.of(name, false), 'Name');
+    }
+    const typeRecord = type === null ? -1 : type.record;
+    return {
+      id: (this.first.elements + place) as ElementId,
+      file,
+      stepId: reader.index.ids[record]!,
+      globalId: one.globalId,
+      ifcClass: one.ifcClass,
+      typeClass: type === null ? null : type.className,
+      predefinedType: one.predefinedType,
+      kind,
+      name,
+      objectType,
+      description: one.description,
+      tag: one.tag,
+      typeName: type === null ? null : type.name,
+      typeDescription: type === null ? null : type.description,
+      classifications: joined(associations.classifications(record), associations.classifications(typeRecord)),
+      systems: this.systemsOf(record),
+      storey: this.storeyOf(record),
+      space: this.spaces.idOf(spatial.spaceOf(record)),
+      ports: this.portsOf[place] ?? noPorts,
+      material: associations.material(record) ?? associations.material(typeRecord),
+      origin: drawn.origin,
+      centreLine: drawn.centreLine,
+      box: drawn.box,
+      sizes,
+      slopes: witnessed.slopes,
+      statedLength: witnessed.statedLength,
+      properties: witnessed.properties,
+    };
+  }
+}
+
+const noReadings: readonly Reading[] = [];
+
+const joined = (own: readonly string[], ofType: readonly string[]): readonly string[] =>
+  ofType.length === 0 ? own : own.length === 0 ? ofType : [...own, ...ofType];

@@ -1,7 +1,7 @@
 import type { LineIndex } from '../lines/line-index.ts';
-import { type Reader, readerOf } from '../reader.ts';
-import { type Placements, placementsOf } from '../solids/placements.ts';
-import { type Spatial, spatialOf } from './spatial.ts';
+import { Reader } from '../reader.ts';
+import { Placements } from '../solids/placements.ts';
+import { Spatial } from './spatial.ts';
 import { type Units, unitsOf } from './units.ts';
 
 /** One file, ready to be asked for its facts. */
@@ -15,8 +15,8 @@ export interface Source {
 }
 
 export function sourceOf(index: LineIndex, file: number): Source {
-  const reader = readerOf(index);
+  const reader = new Reader(index);
   const units = unitsOf(reader);
-  const placements = placementsOf(reader, units.length.metres);
-  return { file, index, reader, units, placements, spatial: spatialOf(reader, placements) };
+  const placements = new Placements(reader, units.length.metres);
+  return { file, index, reader, units, placements, spatial: new Spatial(reader, placements) };
 }

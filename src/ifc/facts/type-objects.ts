@@ -1,7 +1,6 @@
 import type { Reader } from '../reader.ts';
 import { typeClasses } from './class-table.ts';
 import type { PropertySets, Reading } from './property-sets.ts';
-import { eachRelation } from './relations.ts';
 
 /** A type object, as far as its occurrences take over what it says. */
 export interface TypeFacts {
@@ -15,67 +14,83 @@ export interface TypeFacts {
   readonly readings: readonly Reading[];
 }
 
-export interface Types {
-  /** Type object of an occurrence; null for none. */
-  readonly of: (record: number) => TypeFacts | null;
+/** Type objects of one file and their occurrences. */
+export class Types {
   /** Records of the occurrences that have a type of a distribution class. */
-  readonly distributionOccurrences: () => readonly number[];
-  /** Adds a set that a relation gives to a type object; false where the record is none. */
-  readonly addSet: (record: number, set: number) => boolean;
-}
+  readonly distributionOccurrences: readonly number[];
+  private readonly reader: Reader;
+  private readonly sets: PropertySets;
+  /** Record + 1 of the type by record; 0 for none. */
+  private readonly typeOf: Uint32Array;
+  /** Sets that relations give to a type, by its record. Holds every type that has occurrences. */
+  private readonly added = new Map<number, number[]>();
+  private readonly facts = new Map<number, TypeFacts>();
 
-export function typesOf(reader: Reader, sets: PropertySets): Types {
-  const { index, follow, type } = reader;
-  const typeOf = new Uint32Array(index.count);
-  const added = new Map<number, number[]>();
-  const facts = new Map<number, TypeFacts>();
-  const distribution: number[] = [];
-  eachRelation(reader, 'IFCRELDEFINESBYTYPE', (cursor, record) => {
-    const occurrences = cursor.ids();
-    const typeRecord = follow(cursor.id(), record);
-    if (typeRecord < 0) return;
-    if (!added.has(typeRecord)) added.set(typeRecord, []);
-    const isDistribution = typeClasses.has(type(typeRecord));
-    for (const id of occurrences) {
-      const occurrence = follow(id, record);
-      if (occurrence < 0) continue;
-      typeOf[occurrence] = typeRecord + 1;
-      if (isDistribution) distribution.push(occurrence);
+  constructor(reader: Reader, sets: PropertySets) {
+    this.reader = reader;
+    this.sets = sets;
+    this.typeOf = new Uint32Array(reader.index.count);
+    const distribution: number[] = [];
+    this.distributionOccurrences = distribution;
+    const cursor = reader.cursor();
+    const relations = reader.all('IFCRELDEFINESBYTYPE');
+    for (let k = 0; k < relations.length; k++) {
+      const record = relations[k]!;
+      const occurrences = cursor.at(reader.args[record]!).skip(4).ids();
+      const type = reader.follow(cursor.id(), record);
+      if (type < 0) continue;
+      if (!this.added.has(type)) this.added.set(type, []);
+      const isDistribution = typeClasses.has(reader.type(type));
+      for (let j = 0; j < occurrences.length; j++) {
+        const occurrence = reader.follow(occurrences[j]!, record);
+        if (occurrence < 0) continue;
+        this.typeOf[occurrence] = type + 1;
+        if (isDistribution) distribution.push(occurrence);
+      }
     }
-  });
+  }
 
-  const read = (record: number): TypeFacts => {
-    const cursor = reader.cursor().at(index.args[record]!).skip(2);
+  /** Record of an occurrence's type; -1 for none. */
+  recordOf(occurrence: number): number {
+    return this.typeOf[occurrence]! - 1;
+  }
+
+  /** Type object of an occurrence; null for none. */
+  of(occurrence: number): TypeFacts | null {
+    const record = this.recordOf(occurrence);
+    if (record < 0) return null;
+    const known = this.facts.get(record);
+    if (known !== undefined) return known;
+    const facts = this.read(record);
+    this.facts.set(record, facts);
+    return facts;
+  }
+
+  /** Adds a set that a relation gives to a type object; false where the record is none that has occurrences. */
+  addSet(record: number, set: number): boolean {
+    const list = this.added.get(record);
+    list?.push(set);
+    return list !== undefined;
+  }
+
+  private read(record: number): TypeFacts {
+    const { reader, sets } = this;
+    const cursor = reader.open(record).skip(2);
     const name = cursor.text();
     const description = cursor.text();
     const own = cursor.skip(1).ids();
     const elementType = cursor.skip(2).text();
     const word = cursor.more ? cursor.enumeration() : null;
     const readings: Reading[] = [];
-    for (const id of own) readings.push(...sets.read(follow(id, record)));
-    for (const set of added.get(record) ?? []) readings.push(...sets.read(set));
+    for (const id of own) readings.push(...sets.read(reader.follow(id, record)));
+    for (const set of this.added.get(record) ?? []) readings.push(...sets.read(set));
     return {
       record,
-      className: typeClasses.get(type(record))?.name ?? type(record),
+      className: typeClasses.get(reader.type(record))?.name ?? reader.type(record),
       name: name ?? elementType,
       description,
       predefinedType: word === 'NOTDEFINED' ? null : word,
       readings,
     };
-  };
-  return {
-    of: (record) => {
-      const typeRecord = typeOf[record]! - 1;
-      if (typeRecord < 0) return null;
-      const known = facts.get(typeRecord) ?? read(typeRecord);
-      facts.set(typeRecord, known);
-      return known;
-    },
-    distributionOccurrences: () => distribution,
-    addSet: (record, set) => {
-      const list = added.get(record);
-      list?.push(set);
-      return list !== undefined;
-    },
-  };
+  }
 }

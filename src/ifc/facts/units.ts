@@ -50,14 +50,11 @@ const knownLengths: Readonly<Record<string, number>> = {
 const deepestConversion = 10;
 
 export function unitsOf(reader: Reader): Units {
-  const { index, follow, type, all } = reader;
-  const { args } = index;
-
   const read = (record: number, depth: number): Unit | null => {
     if (record < 0 || depth > deepestConversion) return null;
-    const cursor = reader.cursor().at(args[record]!).skip(1);
+    const cursor = reader.open(record).skip(1);
     const quantity = cursor.enumeration() ?? '';
-    switch (type(record)) {
+    switch (reader.type(record)) {
       case 'IFCSIUNIT': {
         const prefix = cursor.enumeration() ?? '';
         const name = cursor.enumeration() ?? '';
@@ -66,11 +63,11 @@ export function unitsOf(reader: Reader): Units {
       case 'IFCCONVERSIONBASEDUNIT':
       case 'IFCCONVERSIONBASEDUNITWITHOFFSET': {
         const name = cursor.text() ?? '';
-        const measure = follow(cursor.id(), record);
+        const measure = reader.follow(cursor.id(), record);
         if (measure < 0) return named(quantity, name);
-        const value = reader.cursor().at(args[measure]!);
+        const value = reader.open(measure);
         const factor = value.number();
-        const base = read(follow(value.id(), measure), depth + 1);
+        const base = read(reader.follow(value.id(), measure), depth + 1);
         return factor === null || !(factor > 0)
           ? named(quantity, name)
           : { quantity, name, factor: factor * (base?.factor ?? 1) };
@@ -82,20 +79,19 @@ export function unitsOf(reader: Reader): Units {
     }
   };
   const assigned = (): Unit[] => {
-    const contexts = [...all('IFCPROJECT'), ...all('IFCPROJECTLIBRARY')];
+    const contexts = [...reader.all('IFCPROJECT'), ...reader.all('IFCPROJECTLIBRARY')];
     for (const context of contexts) {
-      const assignment = follow(reader.cursor().at(args[context]!).skip(8).id(), context);
+      const assignment = reader.follow(reader.open(context).skip(8).id(), context);
       if (assignment >= 0) return unitsIn(assignment);
     }
-    const [lone] = all('IFCUNITASSIGNMENT');
+    const [lone] = reader.all('IFCUNITASSIGNMENT');
     return lone === undefined ? [] : unitsIn(lone);
   };
   const unitsIn = (assignment: number): Unit[] =>
     reader
-      .cursor()
-      .at(args[assignment]!)
+      .open(assignment)
       .ids()
-      .map((id) => read(follow(id, assignment), 0))
+      .map((id) => read(reader.follow(id, assignment), 0))
       .filter((unit) => unit !== null);
 
   const units = assigned();

@@ -1,5 +1,5 @@
 import { isDigit } from './end-of-statement.ts';
-import { type NameTable, nameTable } from './name-table.ts';
+import { NameTable } from './name-table.ts';
 import { readNumber, readNumbers } from './number.ts';
 import { decodeText, newTextWatch, type TextWatch } from './text.ts';
 
@@ -14,7 +14,7 @@ export const deepest = 100;
 export class Cursor {
   readonly bytes: Uint8Array;
   readonly watch: TextWatch;
-  private readonly texts_: NameTable<null>;
+  private readonly remembered: NameTable<null>;
   private pos = 0;
   private depth = 0;
 
@@ -22,7 +22,7 @@ export class Cursor {
   constructor(bytes: Uint8Array, watch: TextWatch = newTextWatch(), texts: NameTable<null> = textTable(bytes)) {
     this.bytes = bytes;
     this.watch = watch;
-    this.texts_ = texts;
+    this.remembered = texts;
   }
 
   /** In front of the first argument of the record whose `(` stands at `open`. */
@@ -83,7 +83,8 @@ export class Cursor {
   ids(): number[] {
     const b = this.bytes;
     const n = b.length;
-    const found: number[] = [];
+    const found = gathered;
+    let count = 0;
     let depth = 0;
     let i = this.pos;
     for (; i < n; i++) {
@@ -93,7 +94,7 @@ export class Cursor {
         let d = b[++i]!;
         for (; d >= 48 && d <= 57; d = b[++i]!) id = id * 10 + d - 48;
         i--;
-        if (id !== 0) found.push(id);
+        if (id !== 0) found[count++] = id;
       } else if (c === 44) {
         if (depth === 0) break;
       } else if (c === 40) depth++;
@@ -105,7 +106,7 @@ export class Cursor {
       else if (c === 59) break;
     }
     this.pos = b[i] === 44 ? i + 1 : i;
-    return found;
+    return found.slice(0, count);
   }
 
   /** Text, decoded; null for `$` and what is no text. */
@@ -116,7 +117,7 @@ export class Cursor {
     this.pos = end + 1;
     this.skip(1);
     if (end - from > longestRemembered) return decodeText(this.bytes, from, end, this.watch);
-    const known = this.texts_.at(from, end);
+    const known = this.remembered.at(from, end);
     return known.isOdd ? decodeText(this.bytes, from, end, this.watch) : known.name;
   }
 
@@ -206,7 +207,7 @@ export class Cursor {
     this.pos = b[i] === 46 ? i + 1 : i;
     this.skip(1);
     if (i - from > longestRemembered) return null;
-    const { name } = this.texts_.at(from, i);
+    const { name } = this.remembered.at(from, i);
     return isUpper(name) ? name : name.toUpperCase();
   }
 
@@ -234,7 +235,7 @@ export class Cursor {
     let i = this.pos;
     while (isLetter(b[i]) || isDigit(b[i]) || b[i] === 95) i++;
     if (i - this.pos > longestRemembered) return null;
-    const { name } = this.texts_.at(this.pos, i);
+    const { name } = this.remembered.at(this.pos, i);
     return isUpper(name) ? name : name.toUpperCase();
   }
 
@@ -252,7 +253,7 @@ export class Cursor {
   /** Moves on past a list; gives a cursor in front of its first entry, null for an empty list. */
   firstOfList(): Cursor | null {
     this.next();
-    const inside = new Cursor(this.bytes, this.watch, this.texts_).at(this.pos);
+    const inside = new Cursor(this.bytes, this.watch, this.remembered).at(this.pos);
     this.skip(1);
     return inside.more ? inside : null;
   }
@@ -309,6 +310,9 @@ export class Cursor {
   }
 }
 
+/** Ids are gathered here first, so that the list is made once and as long as it must be. */
+const gathered: number[] = [];
+
 const readText = (within: Cursor): string | null => within.text();
 const readOneNumber = (within: Cursor): number | null => within.number();
 const readEnumeration = (within: Cursor): string | null => within.enumeration();
@@ -324,9 +328,9 @@ const longestRemembered = 64;
 
 /** Short texts of a file by their bytes. A text with escapes is odd: it is decoded each time, so that it is counted. */
 export const textTable = (b: Uint8Array): NameTable<null> =>
-  nameTable(b, (from, to) => {
+  new NameTable(b, (from, to) => {
     const plain = plainText(b, from, to);
-    return plain === null ? { name: '', meaning: null, isOdd: true } : { name: plain, meaning: null };
+    return { name: plain ?? '', meaning: null, isOdd: plain === null };
   });
 
 /** Offset of the quote that closes a string opened at `open`; a doubled quote is part of the string. */

@@ -1,46 +1,43 @@
 /** Record by STEP id, the last one where an id stands more than once. */
-export interface ById {
-  /** -1 when no record has the id. */
-  readonly find: (id: number) => number;
+export class ById {
   /** Records that a later one with the same id replaces, in the order they were found out. */
   readonly doubled: readonly number[];
-}
+  private readonly ids: Uint32Array;
+  /** Record + 1 by id where ids fill their range well, else by hash; 0 for none. */
+  private readonly table: Uint32Array;
+  /** 0 where the table goes by id. */
+  private readonly bits: number;
 
-/** Ids of nearly all models fill their range well: one table then. Scattered ids take a table of hashes. */
-export function findByLastId(ids: Uint32Array, maxId: number): ById {
-  return maxId <= ids.length * 8 + 4096 ? denseTable(ids, maxId) : hashTable(ids);
-}
-
-function denseTable(ids: Uint32Array, maxId: number): ById {
-  const recordPlusOne = new Uint32Array(maxId + 1);
-  const doubled: number[] = [];
-  for (let record = 0; record < ids.length; record++) {
-    const id = ids[record] as number;
-    const before = recordPlusOne[id] as number;
-    if (before !== 0) doubled.push(before - 1);
-    recordPlusOne[id] = record + 1;
+  constructor(ids: Uint32Array, maxId: number) {
+    this.ids = ids;
+    const isDense = maxId <= ids.length * 8 + 4096;
+    this.bits = isDense ? 0 : Math.max(4, 33 - Math.clz32(ids.length));
+    this.table = new Uint32Array(isDense ? maxId + 1 : 2 ** this.bits);
+    const doubled: number[] = [];
+    for (let record = 0; record < ids.length; record++) {
+      const id = ids[record]!;
+      const slot = isDense ? id : this.slotOf(id);
+      const before = this.table[slot]!;
+      if (before !== 0) doubled.push(before - 1);
+      this.table[slot] = record + 1;
+    }
+    this.doubled = doubled;
   }
-  return { find: (id) => (id <= maxId ? (recordPlusOne[id] as number) - 1 : -1), doubled };
-}
 
-function hashTable(ids: Uint32Array): ById {
-  const bits = Math.max(4, 33 - Math.clz32(ids.length));
-  const mask = 2 ** bits - 1;
-  const recordPlusOne = new Uint32Array(2 ** bits);
-  const doubled: number[] = [];
-  const slotOf = (id: number): number => {
+  /** -1 when no record has the id. */
+  find(id: number): number {
+    if (this.bits !== 0) return this.table[this.slotOf(id)]! - 1;
+    return id < this.table.length ? this.table[id]! - 1 : -1;
+  }
+
+  /** Where the id stands, or would: the first free slot from its hash on. */
+  private slotOf(id: number): number {
+    const { ids, table, bits } = this;
     let slot = Math.imul(id, 0x9e3779b1) >>> (32 - bits);
     for (;;) {
-      const record = recordPlusOne[slot] as number;
+      const record = table[slot]!;
       if (record === 0 || ids[record - 1] === id) return slot;
-      slot = (slot + 1) & mask;
+      slot = (slot + 1) & (table.length - 1);
     }
-  };
-  for (let record = 0; record < ids.length; record++) {
-    const slot = slotOf(ids[record] as number);
-    const before = recordPlusOne[slot] as number;
-    if (before !== 0) doubled.push(before - 1);
-    recordPlusOne[slot] = record + 1;
   }
-  return { find: (id) => (recordPlusOne[slotOf(id)] as number) - 1, doubled };
 }

@@ -1,9 +1,9 @@
 import type { CutOff, Damage } from './damage.ts';
 import { cutInComment, cutInString, endOfComment, endOfStatement, type StringWatch } from './end-of-statement.ts';
-import { findByLastId } from './find-by-id.ts';
+import { ById } from './find-by-id.ts';
 import { schemaNames } from './header.ts';
 import { instances, newRecordList, type RecordList } from './instances.ts';
-import type { LineIndex } from './line-index.ts';
+import { IndexedLines, type LineIndex } from './line-index.ts';
 import { atMark, beginMark, endMark, pastLineEnd } from './own-block.ts';
 
 /**
@@ -101,38 +101,37 @@ function finish(bytes: Uint8Array, found: Scan): LineIndex {
   const { count, maxId } = records;
   const ids = records.ids.subarray(0, count);
   const typeOf = records.typeOf.subarray(0, count);
-  const { find, doubled } = findByLastId(ids, maxId);
-  for (const record of doubled) typeOf[record] = 0;
+  const byId = new ById(ids, maxId);
+  for (const record of byId.doubled) typeOf[record] = 0;
   const types = records.table.names;
-  const byType = grouped(typeOf, types.length);
-  const codes = new Map(types.map((name, code) => [name, code]));
-  const none = new Uint32Array(0);
-  return {
-    bytes,
-    count,
-    ids,
-    typeOf,
-    args: records.args.subarray(0, count),
-    types,
-    schemas: schemaNames(bytes, header.get('FILE_SCHEMA')),
-    header,
-    maxId,
-    dataEnd: found.dataEnd,
-    eol: lineEnd(bytes),
-    ownBlock: found.ownBlock,
-    damage: {
-      cutOff: found.cutOff,
-      merged: records.merged,
-      openStrings: watch.openStrings,
-      oddStrings: watch.oddStrings,
-      unreadable: found.unreadable,
-      idsTooLarge: records.idsTooLarge,
-      doubledIds: doubled.map((record) => ids[record] as number),
-      outsideData: found.outsideData,
+  return new IndexedLines(
+    {
+      bytes,
+      count,
+      ids,
+      typeOf,
+      args: records.args.subarray(0, count),
+      types,
+      schemas: schemaNames(bytes, header.get('FILE_SCHEMA')),
+      header,
+      maxId,
+      dataEnd: found.dataEnd,
+      eol: lineEnd(bytes),
+      ownBlock: found.ownBlock,
+      damage: {
+        cutOff: found.cutOff,
+        merged: records.merged,
+        openStrings: watch.openStrings,
+        oddStrings: watch.oddStrings,
+        unreadable: found.unreadable,
+        idsTooLarge: records.idsTooLarge,
+        doubledIds: byId.doubled.map((record) => ids[record] as number),
+        outsideData: found.outsideData,
+      },
     },
-    find,
-    recordsOf: (type) => byType[codes.get(type) ?? -1] ?? none,
-  };
+    byId,
+    grouped(typeOf, types.length),
+  );
 }
 
 function forgetSince(records: RecordList, mark: { readonly count: number; readonly maxId: number }): void {

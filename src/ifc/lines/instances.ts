@@ -1,5 +1,5 @@
 import { endOfComment, endOfStatement, type StringWatch } from './end-of-statement.ts';
-import { type TypeTable, typeTable } from './type-table.ts';
+import { TypeTable } from './type-table.ts';
 
 /** What the scan gathers about instances; arrays longer than `count`. */
 export interface RecordList {
@@ -24,7 +24,7 @@ export function newRecordList(view: DataView): RecordList {
     typeOf: new Uint16Array(capacity),
     args: new Uint32Array(capacity),
     maxId: 0,
-    table: typeTable(view),
+    table: new TypeTable(view),
     merged: [],
     idsTooLarge: [],
     cut: 0,

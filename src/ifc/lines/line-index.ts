@@ -1,10 +1,11 @@
 import type { Damage } from './damage.ts';
+import type { ById } from './find-by-id.ts';
 
 /**
  * Where every instance of a STEP file stands. Instances are counted as *records* in file order (0, 1, 2 …);
  * a record's arguments are read from the bytes when somebody asks for them.
  */
-export interface LineIndex {
+export interface IndexedFacts {
   readonly bytes: Uint8Array;
   /** Records found, our own block left out. */
   readonly count: number;
@@ -28,10 +29,61 @@ export interface LineIndex {
   /** Our own block, from the first byte of its opening mark past the line end behind its closing mark. */
   readonly ownBlock: { readonly from: number; readonly to: number } | null;
   readonly damage: Damage;
+}
+
+/** The facts, and the two ways to look a record up. */
+export interface LineIndex extends IndexedFacts {
   /** Record with this STEP id, the last one where the file doubles it; -1 when there is none. */
-  readonly find: (id: number) => number;
+  find(id: number): number;
   /** Records of one class (upper case, exact), in file order. */
-  readonly recordsOf: (type: string) => Uint32Array;
+  recordsOf(type: string): Uint32Array;
+}
+
+const noRecords = new Uint32Array(0);
+
+export class IndexedLines implements LineIndex {
+  readonly bytes: Uint8Array;
+  readonly count: number;
+  readonly ids: Uint32Array;
+  readonly typeOf: Uint16Array;
+  readonly args: Uint32Array;
+  readonly types: readonly string[];
+  readonly schemas: readonly string[];
+  readonly header: ReadonlyMap<string, number>;
+  readonly maxId: number;
+  readonly dataEnd: number | null;
+  readonly eol: LineIndex['eol'];
+  readonly ownBlock: LineIndex['ownBlock'];
+  readonly damage: Damage;
+  private readonly byId: ById;
+  private readonly byType: ReadonlyMap<string, Uint32Array>;
+
+  /** `byType`: records by class code. */
+  constructor(facts: IndexedFacts, byId: ById, byType: readonly Uint32Array[]) {
+    this.bytes = facts.bytes;
+    this.count = facts.count;
+    this.ids = facts.ids;
+    this.typeOf = facts.typeOf;
+    this.args = facts.args;
+    this.types = facts.types;
+    this.schemas = facts.schemas;
+    this.header = facts.header;
+    this.maxId = facts.maxId;
+    this.dataEnd = facts.dataEnd;
+    this.eol = facts.eol;
+    this.ownBlock = facts.ownBlock;
+    this.damage = facts.damage;
+    this.byId = byId;
+    this.byType = new Map(facts.types.map((name, code) => [name, byType[code] ?? noRecords]));
+  }
+
+  find(id: number): number {
+    return this.byId.find(id);
+  }
+
+  recordsOf(type: string): Uint32Array {
+    return this.byType.get(type) ?? noRecords;
+  }
 }
 
 /** Offset of the `#` that begins a record. */

@@ -1,14 +1,3 @@
-/** Class names met so far, each with a small number. */
-export interface TypeTable {
-  /** By code, upper case. Code 0 is nobody's; the empty name of a complex instance has the name `(`. */
-  readonly names: readonly string[];
-  /**
-   * Code of the name that stands at [from, to), or -1 where that is no name. `hash` is any number that the same bytes
-   * always give; `tail` holds the bytes after the last whole word of four, little-endian.
-   */
-  readonly code: (hash: number, from: number, to: number, tail: number) => number;
-}
-
 /** One way to spell a class name: letters may be small, blanks may follow. */
 interface Spelling {
   readonly words: readonly number[];
@@ -22,48 +11,61 @@ const mostTypes = 65_000;
 const mostSpellings = 100_000;
 const slots = 1 << 14;
 
-export function typeTable(view: DataView): TypeTable {
-  const names: string[] = [''];
-  const codes = new Map<string, number>();
-  const table: (Spelling | null)[] = Array<Spelling | null>(slots).fill(null);
-  let spellings = 0;
+/** Class names met so far, each with a small number. */
+export class TypeTable {
+  /** By code, upper case. Code 0 is nobody's; the empty name of a complex instance has the name `(`. */
+  readonly names: string[] = [''];
+  private readonly view: DataView;
+  private readonly codes = new Map<string, number>();
+  private readonly table: (Spelling | null)[] = Array<Spelling | null>(slots).fill(null);
+  private spellings = 0;
 
-  const learn = (slot: number, from: number, to: number, tail: number): number => {
-    const text = textBetween(view, from, to)
-      .replace(/\/\*.*?\*\//gs, ' ')
-      .trim()
-      .toUpperCase();
-    if (!/^[A-Z0-9_]*$/.test(text)) return -1;
-    const name = text === '' ? '(' : text;
-    let code = codes.get(name);
-    if (code === undefined) {
-      if (names.length === mostTypes) return 0;
-      code = names.length;
-      names.push(name);
-      codes.set(name, code);
-    }
-    if (spellings++ < mostSpellings) {
-      const words: number[] = [];
-      for (let i = from; i + 4 <= to; i += 4) words.push(view.getInt32(i, true));
-      words.push(tail);
-      table[slot] = { words, length: to - from, code, next: table[slot] ?? null };
-    }
-    return code;
-  };
-  const code = (hash: number, from: number, to: number, tail: number): number => {
+  constructor(view: DataView) {
+    this.view = view;
+  }
+
+  /**
+   * Code of the name that stands at [from, to), or -1 where that is no name. `hash` is any number that the same bytes
+   * always give; `tail` holds the bytes after the last whole word of four, little-endian.
+   */
+  code(hash: number, from: number, to: number, tail: number): number {
+    const { view } = this;
     const slot = (hash ^ (hash >>> 15)) & (slots - 1);
     const length = to - from;
     const whole = length >> 2;
-    for (let known = table[slot] ?? null; known !== null; known = known.next) {
+    for (let known = this.table[slot] ?? null; known !== null; known = known.next) {
       if (known.length !== length) continue;
       const { words } = known;
       let k = 0;
       while (k < whole && words[k] === view.getInt32(from + (k << 2), true)) k++;
       if (k === whole && words[k] === tail) return known.code;
     }
-    return learn(slot, from, to, tail);
-  };
-  return { names, code };
+    return this.learn(slot, from, to, tail);
+  }
+
+  private learn(slot: number, from: number, to: number, tail: number): number {
+    const { view } = this;
+    const text = textBetween(view, from, to)
+      .replace(/\/\*.*?\*\//gs, ' ')
+      .trim()
+      .toUpperCase();
+    if (!/^[A-Z0-9_]*$/.test(text)) return -1;
+    const name = text === '' ? '(' : text;
+    let code = this.codes.get(name);
+    if (code === undefined) {
+      if (this.names.length === mostTypes) return 0;
+      code = this.names.length;
+      this.names.push(name);
+      this.codes.set(name, code);
+    }
+    if (this.spellings++ < mostSpellings) {
+      const words: number[] = [];
+      for (let i = from; i + 4 <= to; i += 4) words.push(view.getInt32(i, true));
+      words.push(tail);
+      this.table[slot] = { words, length: to - from, code, next: this.table[slot] ?? null };
+    }
+    return code;
+  }
 }
 
 function textBetween(view: DataView, from: number, to: number): string {

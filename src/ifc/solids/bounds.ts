@@ -1,4 +1,4 @@
-import { type Box, subtract, unit } from '../../geometry/vector.ts';
+import type { Box } from '../../geometry/vector.ts';
 import { boxOf, compose, emptyBox, type Frame, type GrowingBox, include, includeAll, moved, scaleOf } from './frame.ts';
 import type { Piece, Tube } from './piece.ts';
 
@@ -22,17 +22,23 @@ export function boundsOf(pieces: readonly Piece[], world: Frame): Box | null {
 }
 
 function includeTube(box: GrowingBox, f: Frame, { points, outerRadius }: Tube): void {
-  const path = points.map((one) => moved(f, one));
   const radius = outerRadius * scaleOf(f);
-  for (let k = 1; k < path.length; k++) {
-    const [a, b] = [path[k - 1]!, path[k]!];
-    const d = unit(subtract(b, a));
-    // A disk at right angles to d reaches r·√(1 − dᵢ²) along axis i.
-    const [rx, ry, rz] = [reach(radius, d[0]), reach(radius, d[1]), reach(radius, d[2])];
-    for (const [x, y, z] of [a, b]) {
-      include(box, x - rx, y - ry, z - rz);
-      include(box, x + rx, y + ry, z + rz);
-    }
+  let a = moved(f, points[0]!);
+  for (let k = 1; k < points.length; k++) {
+    const b = moved(f, points[k]!);
+    const x = b[0] - a[0];
+    const y = b[1] - a[1];
+    const z = b[2] - a[2];
+    const size = Math.sqrt(x * x + y * y + z * z) || 1;
+    // A disk at right angles to a unit vector d reaches r·√(1 − dᵢ²) along axis i.
+    const rx = reach(radius, x / size);
+    const ry = reach(radius, y / size);
+    const rz = reach(radius, z / size);
+    include(box, a[0] - rx, a[1] - ry, a[2] - rz);
+    include(box, a[0] + rx, a[1] + ry, a[2] + rz);
+    include(box, b[0] - rx, b[1] - ry, b[2] - rz);
+    include(box, b[0] + rx, b[1] + ry, b[2] + rz);
+    a = b;
   }
 }
 

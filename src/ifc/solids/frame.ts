@@ -41,11 +41,16 @@ export function compose(a: Frame, b: Frame): Frame {
   ];
 }
 
-export const moved = (f: Frame, [x, y, z]: Vec3): Vec3 => [
-  f[0] * x + f[3] * y + f[6] * z + f[9],
-  f[1] * x + f[4] * y + f[7] * z + f[10],
-  f[2] * x + f[5] * y + f[8] * z + f[11],
-];
+export function moved(f: Frame, point: Vec3): Vec3 {
+  const x = point[0];
+  const y = point[1];
+  const z = point[2];
+  return [
+    f[0] * x + f[3] * y + f[6] * z + f[9],
+    f[1] * x + f[4] * y + f[7] * z + f[10],
+    f[2] * x + f[5] * y + f[8] * z + f[11],
+  ];
+}
 
 /** A direction, turned (and scaled, where the frame scales) but not shifted. */
 export const turned = (f: Frame, [x, y, z]: Vec3): Vec3 => [
@@ -106,4 +111,12 @@ export function includeAll(box: GrowingBox, f: Frame, flat: readonly number[]): 
 export function boxOf({ min, max }: GrowingBox): Box | null {
   for (let k = 0; k < 3; k++) if (!Number.isFinite(min[k]!) || !Number.isFinite(max[k]!)) return null;
   return { min: [...min], max: [...max] };
+}
+
+/** Coordinates of a world point within a turned frame that does not scale. */
+export function seenFrom(f: Frame, point: Vec3): Vec3 {
+  const x = point[0] - f[9];
+  const y = point[1] - f[10];
+  const z = point[2] - f[11];
+  return [f[0] * x + f[1] * y + f[2] * z, f[3] * x + f[4] * y + f[5] * z, f[6] * x + f[7] * y + f[8] * z];
 }

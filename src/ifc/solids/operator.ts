@@ -1,13 +1,12 @@
 import { cross, dot, scale, subtract, unit, type Vec3 } from '../../geometry/vector.ts';
 import type { Reader } from '../reader.ts';
-import type { Frame } from './frame.ts';
+import { type Frame, identity } from './frame.ts';
 import type { Placements } from './placements.ts';
 
 /** Frame of an IfcCartesianTransformationOperator, 2D or 3D, with its scale or its three scales. */
 export function operatorFrame(reader: Reader, placements: Placements, record: number): Frame {
-  const { follow, type } = reader;
-  const kind = type(record);
-  const cursor = reader.cursor().at(reader.index.args[record]!);
+  const kind = reader.type(record);
+  const cursor = reader.open(record);
   const axis1 = cursor.id();
   const axis2 = cursor.id();
   const origin = cursor.id();
@@ -18,10 +17,12 @@ export function operatorFrame(reader: Reader, placements: Placements, record: nu
   const scale2 = isUneven ? (cursor.number() ?? scale1) : scale1;
   const scale3 = isUneven && !isPlane ? (cursor.number() ?? scale1) : scale1;
 
-  const o = placements.point(follow(origin, record));
-  const first = placements.direction(follow(axis1, record));
-  const second = placements.direction(follow(axis2, record));
-  const z: Vec3 = isPlane ? [0, 0, 1] : (placements.direction(follow(axis3, record)) ?? upright(first, second));
+  const o = placements.point(reader.follow(origin, record));
+  const isShifted = o[0] !== 0 || o[1] !== 0 || o[2] !== 0;
+  if (axis1 === 0 && axis2 === 0 && axis3 === 0 && !isUneven && scale1 === 1 && !isShifted) return identity;
+  const first = placements.direction(reader.follow(axis1, record));
+  const second = placements.direction(reader.follow(axis2, record));
+  const z: Vec3 = isPlane ? [0, 0, 1] : (placements.direction(reader.follow(axis3, record)) ?? upright(first, second));
   const x = across(first ?? (second === null ? [1, 0, 0] : cross(second, z)), z);
   // A mirror is an operator whose second axis points against the right-handed one.
   const right = cross(z, x);

@@ -29,3 +29,22 @@ export interface Prism {
   /** From the base to the top. */
   readonly shift: Vec3;
 }
+
+// Made in one place each, so that all have their fields in one order: the reader's inner loops run on that.
+export const pieceOf = (shape: Piece['shape'], frame: Frame): Piece => ({ shape, frame });
+
+export const tubeOf = (
+  points: readonly Vec3[],
+  outerRadius: number,
+  innerRadius: number | null,
+  ground: Tube['ground'],
+): Tube => ({ kind: 'tube', points, outerRadius, innerRadius, ground });
+
+export const prismOf = (base: readonly number[], shift: Vec3): Prism => ({ kind: 'prism', base, shift });
+
+/** An upright box as a prism. */
+export const boxPrism = (min: Vec3, max: Vec3): Prism =>
+  prismOf(
+    [min[0], min[1], min[2], max[0], min[1], min[2], max[0], max[1], min[2], min[0], max[1], min[2]],
+    [0, 0, max[2] - min[2]],
+  );

@@ -31,31 +31,33 @@ export const noShape: ProductShape = { body: [], axis: null, box: [] };
 /** Reads the IfcProductDefinitionShape of a product. */
 export function readShape(reader: Reader, solids: Solids, definition: number): ProductShape {
   if (definition < 0) return noShape;
-  const { index, follow } = reader;
+  const { args } = reader;
   const cursor = reader.cursor();
-  const representations = cursor.at(index.args[definition]!).skip(2).ids();
-  const bodies: { readonly isBody: boolean; readonly record: number; readonly items: readonly number[] }[] = [];
-  let axis: Vec3[] | null = null;
+  const body: Piece[] = [];
+  const others: Piece[] = [];
   const box: Piece[] = [];
-  for (const id of representations) {
-    const record = follow(id, definition);
+  let axis: readonly Vec3[] | null = null;
+  for (const id of cursor.at(args[definition]!).skip(2).ids()) {
+    const record = reader.follow(id, definition);
     if (record < 0) continue;
-    const name = cursor.at(index.args[record]!).skip(1).text() ?? '';
-    const items = cursor.skip(1).ids();
-    if (name === 'Axis')
+    const name = cursor.at(args[record]!).skip(1).text() ?? '';
+    if (name === 'Body') gather(solids, cursor.skip(1).ids(), reader, record, body);
+    else if (name === 'Axis')
       axis ??= longestCurve(
         solids,
-        items.map((item) => follow(item, record)),
+        cursor
+          .skip(1)
+          .ids()
+          .map((item) => reader.follow(item, record)),
       );
-    else if (name === 'Box') for (const item of items) box.push(...solids.pieces(follow(item, record)));
-    else if (!notTheBody.has(name)) bodies.push({ isBody: name === 'Body', record, items });
+    else if (name === 'Box') gather(solids, cursor.skip(1).ids(), reader, record, box);
+    else if (!notTheBody.has(name)) gather(solids, cursor.skip(1).ids(), reader, record, others);
   }
-  const named = bodies.filter(({ isBody }) => isBody);
-  const body: Piece[] = [];
-  for (const { record, items } of named.length > 0 ? named : bodies) {
-    for (const item of items) body.push(...solids.pieces(follow(item, record)));
-  }
-  return { body, axis, box };
+  return { body: body.length > 0 ? body : others, axis, box };
+}
+
+function gather(solids: Solids, items: readonly number[], reader: Reader, from: number, into: Piece[]): void {
+  for (const id of items) for (const piece of solids.pieces(reader.follow(id, from))) into.push(piece);
 }
 
 function longestCurve(solids: Solids, items: readonly number[]): Vec3[] | null {

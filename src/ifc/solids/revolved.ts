@@ -1,25 +1,25 @@
 import { add, cross, dot, scale, subtract, type Vec3 } from '../../geometry/vector.ts';
-import type { Piece } from './piece.ts';
-import type { Profile } from './profiles.ts';
-
-/** Largest turn between two neighbouring points of the centre line. */
-const step = Math.PI / 24;
+import { arcSteps } from './arc.ts';
+import { type Piece, prismOf, tubeOf } from './piece.ts';
+import { outlineOf, type Profile } from './profiles.ts';
 
 /**
  * A profile turned around an axis in its plane. A round profile gives a bend, with the arc of its centre as centre
  * line; any other profile the cloud of its outline at every step.
  */
 export function revolved(profile: Profile, centre: Vec3, axis: Vec3, angle: number): Piece['shape'] {
-  const steps = Math.max(1, Math.ceil(Math.abs(angle) / step - 1e-9));
+  const steps = arcSteps(angle);
   const turns = Array.from({ length: steps + 1 }, (_, k) => (angle * k) / steps);
   const { round } = profile;
   if (round !== null && off(round.centre, centre, axis) > round.outer * 1e-3) {
     const points = turns.map((turn) => turnedAround(round.centre, centre, axis, turn));
-    return { kind: 'tube', points, outerRadius: round.outer, innerRadius: round.inner, ground: 'swept-disk' };
+    return tubeOf(points, round.outer, round.inner, 'swept-disk');
   }
-  const outline = profile.outline();
-  const base = turns.flatMap((turn) => outline.flatMap((one) => [...turnedAround(one, centre, axis, turn)]));
-  return { kind: 'prism', base, shift: [0, 0, 0] };
+  const outline = outlineOf(profile);
+  return prismOf(
+    turns.flatMap((turn) => outline.flatMap((one) => [...turnedAround(one, centre, axis, turn)])),
+    [0, 0, 0],
+  );
 }
 
 /** Rodrigues' rotation of a point around a line. */

@@ -8,7 +8,7 @@ const largestDegree = 10;
 
 /** Points along a B-spline or Bezier curve, its ends included; null where its numbers do not fit together. */
 export function splinePoints(reader: Reader, placements: Placements, record: number): Vec3[] | null {
-  const cursor = reader.cursor().at(reader.index.args[record]!);
+  const cursor = reader.open(record);
   const degree = cursor.number() ?? 0;
   const control = cursor.ids().map((id) => placements.point(reader.follow(id, record)));
   cursor.skip(3);

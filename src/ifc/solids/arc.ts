@@ -1,0 +1,32 @@
+import { add, cross, dot, scale, subtract, type Vec3 } from '../../geometry/vector.ts';
+
+/** Largest angle between two neighbouring points of an arc: its length is then right to a thousandth. */
+const arcStep = Math.PI / 24;
+
+/** Chords that stand for an arc of so many radians. */
+export const arcSteps = (angle: number): number => Math.max(2, Math.ceil(Math.abs(angle) / arcStep - 1e-9));
+
+/** Points on the arc that begins at `a`, passes `b` and ends at `c`; the three themselves when they stand in a line. */
+export function arcThrough(a: Vec3, b: Vec3, c: Vec3): Vec3[] {
+  const ab = subtract(b, a);
+  const ac = subtract(c, a);
+  const n = cross(ab, ac);
+  const nn = dot(n, n);
+  if (nn <= 1e-12 * dot(ab, ab) * dot(ac, ac)) return [a, b, c];
+  // Centre of the circle through three points, seen from the first.
+  const sum = add(scale(cross(n, ab), dot(ac, ac)), scale(cross(ac, n), dot(ab, ab)));
+  const toCentre = scale(sum, 1 / (2 * nn));
+  const centre = add(a, toCentre);
+  const radius = Math.hypot(...toCentre);
+  const x = scale(toCentre, -1 / radius);
+  const y = cross(scale(n, 1 / Math.sqrt(nn)), x);
+  const end = subtract(c, centre);
+  const turned = Math.atan2(dot(end, y), dot(end, x));
+  const sweep = turned <= 1e-9 ? turned + 2 * Math.PI : turned;
+  const steps = arcSteps(sweep);
+  return Array.from({ length: steps + 1 }, (_, k) => {
+    if (k === steps) return c;
+    const t = (sweep * k) / steps;
+    return add(centre, add(scale(x, radius * Math.cos(t)), scale(y, radius * Math.sin(t))));
+  });
+}

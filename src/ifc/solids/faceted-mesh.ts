@@ -1,0 +1,152 @@
+import type { Vec3 } from '../../geometry/vector.ts';
+import type { Cursor } from '../lines/cursor.ts';
+import { readNumbers } from '../lines/number.ts';
+import type { Reader } from '../reader.ts';
+import type { Curves } from './curves.ts';
+import type { Cylinder, Mesh } from './mesh.ts';
+import type { Placements } from './placements.ts';
+
+/** Bodies with more corners than this are read no further: no pipe or fixture needs them, and one file may hold many. */
+const mostPoints = 200_000;
+
+/** Shells of faces with bounds and loops, plain or with curved edges. */
+export class FacetedMesh implements Mesh {
+  readonly kind = 'mesh';
+  private readonly reader: Reader;
+  private readonly placements: Placements;
+  private readonly curves: Curves;
+  private readonly shells: readonly number[];
+  private flat: number[] | null = null;
+  private readonly loops: number[][] = [];
+  private readonly round: Cylinder[] = [];
+  /** Numbers of corners by the records of their points: a corner that many faces share is read once. */
+  private readonly corners = new Map<number, number>();
+  private readonly numbers: number[] = [];
+
+  constructor(reader: Reader, placements: Placements, curves: Curves, shells: readonly number[]) {
+    this.reader = reader;
+    this.placements = placements;
+    this.curves = curves;
+    this.shells = shells;
+  }
+
+  points(): readonly number[] {
+    return this.read();
+  }
+
+  faces(): readonly (readonly number[])[] {
+    this.read();
+    return this.loops;
+  }
+
+  cylinders(): readonly Cylinder[] {
+    this.read();
+    return this.round;
+  }
+
+  private read(): number[] {
+    if (this.flat !== null) return this.flat;
+    const flat: number[] = [];
+    this.flat = flat;
+    const { reader } = this;
+    const cursor = reader.cursor();
+    for (const shell of this.shells) {
+      for (const id of cursor.at(reader.args[shell]!).ids()) {
+        if (flat.length > mostPoints * 3) break;
+        const face = reader.follow(id, shell);
+        if (face >= 0) this.face(face, cursor, flat);
+      }
+    }
+    this.corners.clear();
+    return flat;
+  }
+
+  private face(face: number, cursor: Cursor, flat: number[]): void {
+    const { reader } = this;
+    const bounds = cursor.at(reader.args[face]!).ids();
+    const surface = cursor.more ? reader.follow(cursor.id(), face) : -1;
+    if (reader.type(surface) === 'IFCCYLINDRICALSURFACE') this.cylinder(surface, cursor);
+    let outer = -1;
+    for (let k = 0; k < bounds.length; k++) {
+      const bound = reader.follow(bounds[k]!, face);
+      if (bound < 0) continue;
+      const isOuter = outer < 0 || reader.type(bound) === 'IFCFACEOUTERBOUND';
+      const loop = reader.follow(cursor.at(reader.args[bound]!).id(), bound);
+      const ring: number[] = [];
+      this.loop(loop, cursor, ring, flat);
+      if (!isOuter) continue;
+      if (outer < 0) {
+        outer = this.loops.length;
+        this.loops.push(ring);
+      } else this.loops[outer] = ring;
+    }
+  }
+
+  private loop(loop: number, cursor: Cursor, ring: number[], flat: number[]): void {
+    const { reader } = this;
+    const kind = reader.type(loop);
+    if (kind === 'IFCPOLYLOOP') {
+      const ids = cursor.at(reader.args[loop]!).ids();
+      for (let k = 0; k < ids.length; k++) ring.push(this.corner(reader.follow(ids[k]!, loop), flat));
+    } else if (kind === 'IFCEDGELOOP') {
+      for (const id of cursor.at(reader.args[loop]!).ids()) this.edge(reader.follow(id, loop), cursor, ring, flat);
+    } else if (kind === 'IFCVERTEXLOOP') {
+      ring.push(this.corner(this.vertexPoint(cursor.at(reader.args[loop]!).id(), loop, cursor), flat));
+    }
+  }
+
+  private corner(record: number, flat: number[]): number {
+    const known = this.corners.get(record);
+    if (known !== undefined) return known;
+    const { numbers, reader } = this;
+    const { metres } = this.placements;
+    numbers.length = 0;
+    if (record >= 0) readNumbers(reader.index.bytes, reader.args[record]! + 1, numbers);
+    const number = flat.length / 3;
+    for (let k = 0; k < 3; k++) flat.push(k < numbers.length ? numbers[k]! * metres : 0);
+    this.corners.set(record, number);
+    return number;
+  }
+
+  private vertexPoint(id: number, from: number, cursor: Cursor): number {
+    const vertex = this.reader.follow(id, from);
+    return vertex < 0 ? -1 : this.reader.follow(cursor.at(this.reader.args[vertex]!).id(), vertex);
+  }
+
+  /** An oriented edge: its first vertex, and where it is round the points of its bulge. */
+  private edge(oriented: number, cursor: Cursor, ring: number[], flat: number[]): void {
+    if (oriented < 0) return;
+    const { reader, placements } = this;
+    cursor.at(reader.args[oriented]!).skip(2);
+    const edge = reader.follow(cursor.id(), oriented);
+    const isForward = cursor.flag() !== false;
+    if (edge < 0) return;
+    cursor.at(reader.args[edge]!);
+    const startId = cursor.id();
+    const endId = cursor.id();
+    const curve = cursor.more ? reader.follow(cursor.id(), edge) : -1;
+    const sameSense = cursor.more ? cursor.flag() !== false : true;
+    const start = this.vertexPoint(startId, edge, cursor);
+    const end = this.vertexPoint(endId, edge, cursor);
+    const first = isForward ? start : end;
+    if (first >= 0) ring.push(this.corner(first, flat));
+    // All other curved edges are taken as straight.
+    const kind = reader.type(curve);
+    if (kind !== 'IFCCIRCLE' && kind !== 'IFCELLIPSE') return;
+    const bulge = this.curves.arcBetween(curve, placements.point(start), placements.point(end), sameSense).slice(1, -1);
+    for (const one of isForward ? bulge : bulge.reverse()) ring.push(loose(one, flat));
+  }
+
+  private cylinder(surface: number, cursor: Cursor): void {
+    const { reader, placements } = this;
+    const position = cursor.at(reader.args[surface]!).id();
+    const radius = (cursor.number() ?? 0) * placements.metres;
+    const f = placements.axes(reader.follow(position, surface));
+    if (radius > 0) this.round.push({ at: [f[9], f[10], f[11]], along: [f[6], f[7], f[8]], radius });
+  }
+}
+
+function loose(one: Vec3, flat: number[]): number {
+  flat.push(one[0], one[1], one[2]);
+  return flat.length / 3 - 1;
+}
