@@ -26,3 +26,21 @@ describe('a building drawn with ports and its twin without', () => {
       expect(found.findings.map(({ code }) => code)).toEqual(['joint-inferred']);
     });
 });
+
+test('a building drawn twice over is one building', () => {
+  const once = tower(1, 3);
+  const again = once.parts.map((part) => ({ ...part, name: `${part.name} again` }));
+  const relations = once.connected.map(([a, b]) => [renamed(a), renamed(b)] as const);
+  for (const withPorts of [true, false]) {
+    const parts = [...once.parts, ...again].map((part) => (withPorts ? part : { ...part, ports: [] }));
+    const single = drawn(parts.slice(0, once.parts.length), withPorts ? once.connected : []);
+    const double = drawn(parts, withPorts ? [...once.connected, ...relations] : []);
+    const truth = buildNetwork(single.model, single.identities).value;
+    const { value, findings } = buildNetwork(double.model, double.identities);
+    expect(joinsOf(double, value)).toEqual(joinsOf(single, truth));
+    expect(findings.filter(({ code }) => code === 'doubled-element').length).toBe(once.parts.length);
+    expect(value.fates.slice(once.parts.length).every(({ reason }) => reason === 'double')).toBe(true);
+  }
+});
+
+const renamed = (port: string): string => port.replace(/\.(\d+)$/, ' again.$1');
