@@ -3,7 +3,7 @@ import { shownText } from './shown-text.ts';
 import { blank, heading, paragraph, type TextLine, type Tone } from './text-line.ts';
 import { counted, plainWords, tally } from './trade-words.ts';
 import { undersizedText } from './undersized-text.ts';
-import { understoodText } from './understood-text.ts';
+import { isEmpty, understoodText } from './understood-text.ts';
 
 /**
  * What a coordinator needs on one screen: what was understood, the undersized pipes by cause, the other errors,
@@ -14,11 +14,10 @@ export function checkText(result: Result): TextLine[] {
     ...understoodText(result),
     ...undersizedText(result),
     ...otherErrors(result.findings),
-    blank,
+    ...(isEmpty(result) ? [] : [blank]),
     ...foldedText(result.findings, 'warning', 'Warnings'),
     ...foldedText(result.findings, 'note', 'Notes'),
-    ...sumsText(result),
-    ...paragraph(shownText(result.caution), '', 'quiet'),
+    ...(isEmpty(result) ? [] : [...sumsText(result), ...paragraph(shownText(result.caution), '', 'quiet')]),
   ];
 }
 

@@ -14,7 +14,7 @@ export function resultFindings(outcome: Outcome, index: ResultIndex): ResultFind
   const { model, code } = outcome;
   const name = (element: ElementId): string => {
     const { name: own, objectType, ifcClass, stepId } = model.elements[element]!;
-    return shortened(shownText(own ?? objectType ?? `${ifcClass.replace(/^Ifc/, '')} #${stepId}`), 48);
+    return shortened(shownText(own || objectType || `${ifcClass.replace(/^Ifc/, '')} #${stepId}`), 48);
   };
   return outcome.findings
     .map((finding): ResultFinding => {

@@ -17,7 +17,7 @@ export function surveyText(survey: Survey, result: Result): TextLine[] {
       paragraph(typeof system === 'string' ? system : systemText(system), row(place === 0 ? 'IFC systems' : '')),
     ),
     ...paragraph(portsText(survey), row('Ports')),
-    ...paragraph(knownText(survey), row('Known')),
+    ...(survey.pipes.total === 0 ? [] : paragraph(knownText(survey), row('Known'))),
     ...listText(
       'Open ends',
       survey.openEnds.map(({ sentence }) => shownText(sentence)),
@@ -48,7 +48,9 @@ function inModel({ classes, storeys, counts }: Survey): string {
 
 function systemText({ name, predefinedType, elements, uses }: SurveySystem): string {
   const type = predefinedType === null ? '' : ` (${shownText(predefinedType)})`;
-  const split = Object.entries(uses).map(([use, count]) => `${count} ${plainWords(use)}`);
+  const split = Object.entries(uses).map(([use, count]) =>
+    use === 'left-out' || use === 'unresolved' ? `${count} ${plainWords(use)}` : counted(count, use),
+  );
   return `${shownText(name ?? 'without a name')}${type}: ${counted(elements, 'element')}${split.length === 0 ? '' : `, ${split.join(', ')}`}`;
 }
 

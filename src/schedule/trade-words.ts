@@ -29,7 +29,7 @@ export function listed(texts: readonly string[]): string {
 }
 
 function plural(thing: string): string {
-  if (/^unidentified\b/.test(thing)) return thing;
+  if (/^(?:unidentified|idle|unknown)\b/.test(thing)) return thing;
   if (/[^aeiou]y$/.test(thing)) return `${thing.slice(0, -1)}ies`;
   return /(?:s|sh|ch|x)$/.test(thing) ? `${thing}es` : `${thing}s`;
 }

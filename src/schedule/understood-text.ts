@@ -7,14 +7,16 @@ import { counted, countedKinds, listed, plainWords, sentence, tally } from './tr
 
 /** What the program took the model to be, before any judgement: fixtures, systems, batteries, joints, what it left out. */
 export function understoodText(result: Result): TextLine[] {
-  const { counts, fixtures, joints, batteries, systems, unresolved, model } = result;
+  const { counts, fixtures, joints, batteries, systems } = result;
   const names = elementNames(result);
   const kindOf = new Map(fixtures.map(({ globalId, kind }) => [globalId, plainWords(kind ?? 'unidentified')]));
   const left = Object.values(counts.leftOut).reduce((sum, count) => sum + count, 0);
   const widest = Math.max(0, ...joints.inferred.map(({ gap }) => gap));
+  const leftOut = left === 0 ? [] : paragraph(`${left}: ${reasons(counts.leftOut)}`, row('Left out'));
+  if (isEmpty(result)) return [...titleText(result), ...remarksText(result), ...leftOut, ...notPlaced(result)];
   return [
     ...titleText(result),
-    ...(model.remarks ?? []).flatMap((remark) => paragraph(shownText(remark), row('File'), 'warning')),
+    ...remarksText(result),
     ...paragraph(
       fixtures.length === 0 ? 'none' : `${fixtures.length}: ${countedKinds([...kindOf.values()])}`,
       row('Fixtures'),
@@ -33,27 +35,35 @@ export function understoodText(result: Result): TextLine[] {
         (joints.inferred.length === 0 ? '' : `; the widest gap bridged is ${lengthText(widest)}`),
       row('Joints'),
     ),
-    ...(left === 0 ? [] : paragraph(`${left}: ${reasons(counts.leftOut)}`, row('Left out'))),
-    ...(unresolved.length === 0
-      ? []
-      : paragraph(
-          `${unresolved.length}: ${tally(unresolved.map(({ reason }) => reason))
-            .map(([reason, count]) => `${count} ${shownText(reason)}`)
-            .join(', ')}`,
-          row('Not placed'),
-          'warning',
-        )),
+    ...leftOut,
+    ...notPlaced(result),
   ];
 }
 
+const remarksText = ({ model, models }: Result): TextLine[] =>
+  (models ?? [model])
+    .flatMap(({ remarks }) => remarks ?? [])
+    .flatMap((remark) => paragraph(shownText(remark), row('File'), 'warning'));
+
+function notPlaced({ unresolved }: Result): TextLine[] {
+  if (unresolved.length === 0) return [];
+  const why = tally(unresolved.map(({ reason }) => reason)).map(([reason, count]) => `${count} ${shownText(reason)}`);
+  return paragraph(`${unresolved.length}: ${why.join(', ')}`, row('Not placed'), 'warning');
+}
+
+/** No pipe and no fixture with a drain: there is nothing to size. */
+export const isEmpty = ({ fixtures, pipes }: Result): boolean => fixtures.length + pipes.length === 0;
+
 /** File, schema, unit, code; a model without drainage says so here, on the first line. */
-export function titleText({ model, models, code, fixtures, pipes, counts }: Result): TextLine[] {
-  const files = (models ?? [model]).map(({ file }) => shownText(file));
+export function titleText(result: Result): TextLine[] {
+  const { model, models, code, counts } = result;
+  const files = listed((models ?? [model]).map(({ file }) => shownText(file)));
   const about = `${shownText(model.schema)}, ${shownText(model.lengthUnit).toLowerCase()}; ${code.title} ${code.edition} (${code.id})`;
   const local = code.localTables === undefined ? '' : `, with local tables ${listed(code.localTables.map(shownText))}`;
-  if (fixtures.length > 0 || pipes.length > 0) return heading(`${listed(files)}: ${about}${local}`);
+  if (!isEmpty(result)) return heading(`${files}: ${about}${local}`);
+  const dry = counts.fixtures === 0 ? '' : `; ${counted(counts.fixtures, 'fixture')}, but no drain at any`;
   return [
-    ...heading(`${listed(files)}: no sanitary drainage in this model (${counted(counts.elements, 'element')} read)`),
+    ...heading(`${files}: no sanitary drainage in this model (${counted(counts.elements, 'element')} read${dry})`),
     ...paragraph(`${about}${local}`),
   ];
 }

@@ -68,11 +68,14 @@ test('other errors stand with their sentence and clause, many of one kind are fo
   expect(shown).not.toContain('Lavatory 5 has no vent');
 });
 
-test('a model without drainage says so on the first line', () => {
+test('a model without drainage says so on the first line, and nothing of sizes', () => {
   const empty: Result = { ...exampleResult, fixtures: [], pipes: [], batteries: [], systems: [], findings: [] };
-  expect(textOf(empty).split('\n')[0]).toBe(
-    'community-hall.ifc: no sanitary drainage in this model (42 elements read)',
-  );
+  const without = { ...empty, counts: { ...empty.counts, fixtures: 0 } };
+  const shown = textOf(without);
+  expect(shown.split('\n')[0]).toBe('community-hall.ifc: no sanitary drainage in this model (42 elements read)');
+  expect(shown).not.toContain('undersized');
+  // Fixtures that no pipe reaches are told, since somebody may have left the piping out of the export.
+  expect(textOf(empty).replace(/\s+/g, ' ')).toContain('9 fixtures, but no drain at any');
 });
 
 describe('what is unsure is said', () => {
