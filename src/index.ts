@@ -1,0 +1,28 @@
+// The library, name by name: from the bytes of a model to a result, property sets, a sized copy and the page.
+export { plumbingCode } from './codes/index.ts';
+export type { PlumbingCode } from './codes/plumbing-code.ts';
+export { pageData } from './deliver/page-data.ts';
+export { type PageBundle, pageHtml } from './deliver/page-html.ts';
+export { propertySets } from './deliver/property-sets.ts';
+export { InputError } from './findings/input-error.ts';
+export { type ModelInput, modelOf, type OpenedFile, openFiles, readModel } from './ifc/open.ts';
+export { appendSets, withoutOurLines } from './ifc/write/append-sets.ts';
+export { type Answers, noAnswers } from './model/answers.ts';
+export type { Model } from './model/model.ts';
+export type { PropertySetToWrite } from './model/property-set.ts';
+export { readAnswers } from './model/read-answers.ts';
+export { readNamesTable } from './model/read-names-table.ts';
+export { run } from './pipeline.ts';
+export { checkText } from './schedule/check-text.ts';
+export { type Explanation, explain } from './schedule/explain.ts';
+export { findInResult } from './schedule/find-in-result.ts';
+export { jsonText } from './schedule/json-text.ts';
+export { leanResult } from './schedule/lean-result.ts';
+export type { Result } from './schedule/result.ts';
+export { resultOf } from './schedule/result-of.ts';
+export { risersOf } from './schedule/riser.ts';
+export { type Survey, surveyOf } from './schedule/survey.ts';
+export { plainText } from './schedule/text-line.ts';
+export { readPipeDimensions } from './tables/read-pipe-dimensions.ts';
+export type { TableSource } from './tables/table-source.ts';
+export type { Outcome } from './verdicts/outcome.ts';
