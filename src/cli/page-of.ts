@@ -6,7 +6,13 @@ import type { ModelRun } from './run-model.ts';
 
 /** The page of a run as the bytes of one HTML file. Its script and style are those that the build made. */
 export function pageOf({ result, model, outcome }: ModelRun<unknown>): Uint8Array {
-  const data = pageData(result, model, outcome.network, outcome.paths, risersOf(result, outcome));
+  const data = pageData(
+    result,
+    model,
+    outcome.network,
+    { ...outcome.paths, traps: outcome.shown.roles.air },
+    risersOf(result, outcome),
+  );
   return new TextEncoder().encode(pageHtml(data, { js: built('bundle.js'), css: built('bundle.css') }));
 }
 

@@ -8,6 +8,8 @@ import type { Reading } from './use.ts';
 export interface BatteryFacts {
   readonly id: number;
   readonly foot: JointId;
+  /** Further feet of dry vents on the line that serve the row as well. */
+  readonly feet: readonly JointId[];
   /** Wet pipes from the foot to the joint of the last trap, in flow order. */
   readonly line: readonly PipeId[];
   /** From upstream to downstream, by their joint on the line. */

@@ -9,8 +9,9 @@ import type { Answers } from '../model/answers.ts';
 import type { Identity } from '../model/identity.ts';
 import type { Model } from '../model/model.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
-import type { FixtureId, Paths } from '../paths/paths.ts';
+import type { FixtureId, Paths, TrapAir } from '../paths/paths.ts';
 import { streamOf } from '../paths/stream.ts';
+import { airOfRows } from './battery-air.ts';
 import type { BatteryContext } from './battery-facts.ts';
 import { drainRoles } from './drain-roles.ts';
 import { dryRoles, ventTree } from './dry-roles.ts';
@@ -51,8 +52,8 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
   const inStack: (Stack | null)[] = network.pipes.map(() => null);
   for (const stack of stacks) for (const pipe of stack.pipes) inStack[pipe] = stack;
   const identityOf = (fixture: FixtureId): Identity => identities[paths.fixtures[fixture]!.element]!;
-  const feet = ventFeet(network, paths);
-  const liveAt = new Map<JointId, PipeId>(feet.map(({ joint, path }) => [joint, path[0]!]));
+  const drawn = ventFeet(network, paths, paths.traps);
+  const liveAt = new Map<JointId, PipeId>(drawn.map(({ joint, path }) => [joint, path[0]!]));
   const context: BatteryContext = {
     ...stackContext,
     code,
@@ -67,6 +68,8 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
     wordOf: (fixtures, pipes) => designersWord(facts, fixtures, pipes),
   };
   const batteries = formBatteries(context, (battery) => answeredReading(facts, battery));
+  const air = airOfRows(paths, batteries);
+  const feet = ventFeet(network, paths, air);
   const tree = ventTree(feet);
   const dry = dryRoles(context, tree, batteries);
   const vents = ventUses(context, tree, dry, batteries);
@@ -133,7 +136,8 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
       uses,
       stacks,
       batteries,
-      venting: venting(context, feet, dry, batteries),
+      air,
+      venting: venting(context, air, feet, dry, batteries),
       arms: trapArms(network, paths, stream),
       feet,
       floors,
@@ -152,9 +156,9 @@ function outletPipes(network: Network, paths: Paths): boolean[] {
 }
 
 /** Every dry foot from which air reaches the sky, with the traps that breathe through it. */
-function ventFeet(network: Network, paths: Paths): VentFoot[] {
+function ventFeet(network: Network, paths: Paths, air: readonly TrapAir[]): VentFoot[] {
   const traps = new Map<JointId, FixtureId[]>();
-  for (const { foot, fixture } of paths.traps) {
+  for (const { foot, fixture } of air) {
     if (foot !== null) traps.set(foot, [...(traps.get(foot) ?? []), fixture]);
   }
   const feet: VentFoot[] = [];

@@ -25,7 +25,7 @@ export interface BatteryContext extends StackContext {
 export interface Draft {
   readonly foot: JointId;
   readonly traps: readonly TrapAir[];
-  /** Feet on the line that stand as additional circuit vents, in flow order. */
+  /** Further feet on the line, in flow order: those of additional circuit vents, where it is circuit vented. */
   readonly additional: readonly JointId[];
 }
 
@@ -39,6 +39,7 @@ export function batteryFacts(context: BatteryContext, draft: Draft, id: number):
   return {
     id,
     foot: draft.foot,
+    feet: draft.additional,
     line,
     traps,
     guests,
@@ -128,7 +129,7 @@ function wetLine(
   const atEnd = traps.filter(({ place, free }) => place === lastPlace && !free);
   // The most downstream one, or the two that join there symmetrically, do not pass the wet vent.
   const leftOut = atEnd.slice(0, 2).map(({ fixture }) => fixture);
-  const closets = traps.filter(({ closet, place }) => closet && place > 0).length;
+  const closets = traps.filter(({ closet }) => closet).length;
   const draining = [...traps, ...guests].filter(({ fixture }) => !leftOut.includes(fixture));
   const counted = draining.filter((one) => closets === 0 || !context.loads.fixtures[one.fixture]!.row.closet);
   const sum = (list: readonly { load: Load }[]): Load =>

@@ -69,12 +69,23 @@ function lengthen(
     joined.push(other.foot);
     traps = [...traps, ...other.traps.filter(({ through }) => onLine || through.length > 0)];
     const longer: Draft = { foot: draft.foot, traps, additional: [...additional] };
-    const facts = batteryFacts(context, longer, 0);
-    const relief = facts.circuit.relief;
-    if ((relief?.kind === 'dry' || relief?.kind === 'shared') && brokenOf(context, 'circuit-vent', facts).length === 0)
-      best = { row: longer, joined: [...joined] };
+    if (isOneRow(context, longer, other, onLine)) best = { row: longer, joined: [...joined] };
   }
   return best;
+}
+
+/**
+ * The longer row holds as circuit vented down to a dry relief vent; or it holds as a wet vent, and the row below the
+ * further foot does not hold alone. Where that foot is a guest's, its vent stands nearer to the traps below it than
+ * their own: they belong to the longer row also where both break as much.
+ */
+function isOneRow(context: BatteryContext, longer: Draft, below: Draft, onLine: boolean): boolean {
+  const facts = batteryFacts(context, longer, 0);
+  const relief = facts.circuit.relief?.kind;
+  if ((relief === 'dry' || relief === 'shared') && brokenOf(context, 'circuit-vent', facts).length === 0) return true;
+  const alone = judge(context, below, 0).broken.length;
+  const together = brokenOf(context, 'wet-vent', facts).length;
+  return alone > 0 && together <= (onLine ? 0 : alone);
 }
 
 /** A row whose foot stands on a drain of its own that joins this line here, and whose other traps lie on the line. */

@@ -1,7 +1,7 @@
 import type { BatteryFacts, Broken } from '../codes/battery.ts';
 import type { PipeUse, Reading } from '../codes/use.ts';
 import type { JointId, PipeId } from '../network/network.ts';
-import type { FixtureId } from '../paths/paths.ts';
+import type { FixtureId, TrapAir } from '../paths/paths.ts';
 import type { Stack } from './find-stacks.ts';
 import type { Floors } from './floors.ts';
 import type { TrapArm } from './trap-arms.ts';
@@ -11,6 +11,8 @@ export interface Roles {
   readonly uses: readonly PipeUse[];
   readonly stacks: readonly Stack[];
   readonly batteries: readonly Battery[];
+  /** By fixture id: the way of air as the rows have it. */
+  readonly air: readonly TrapAir[];
   /** By fixture id. */
   readonly venting: readonly Venting[];
   /** By fixture id; null for unvented traps. */

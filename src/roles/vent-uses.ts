@@ -106,11 +106,11 @@ function join(sum: Gathered, other: Gathered): void {
 
 function gatheredAt(foot: VentFoot, { role, stack, battery }: DryRole, batteries: readonly Battery[]): Gathered {
   const row = battery === null ? null : batteries[battery]!;
-  // A battery's own list counts: guests are not in it, and a longer row reaches past its first foot.
+  const members = row?.facts.traps.map(({ fixture }) => fixture) ?? [];
+  // A battery's own list counts: guests are not in it, and a longer row reaches past its first foot. Vents that follow
+  // the circuit vent are sized without the row; only a trap past it that breathes here counts.
   const traps =
-    row === null || role === 'relief-vent' || role === 'additional-circuit-vent'
-      ? foot.traps
-      : row.facts.traps.map(({ fixture }) => fixture);
+    row === null ? foot.traps : followers.has(role) ? foot.traps.filter((trap) => !members.includes(trap)) : members;
   const isStack = role === 'stack-vent' || role === 'vent-stack';
   return {
     fixtures: new Set(traps),

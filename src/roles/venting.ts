@@ -1,11 +1,13 @@
 import type { PipeId } from '../network/network.ts';
+import type { TrapAir } from '../paths/paths.ts';
 import type { BatteryContext } from './battery-facts.ts';
 import type { DryRole } from './dry-roles.ts';
 import type { Battery, VentFoot, Venting } from './roles.ts';
 
 /** How each trap is vented, by fixture: the role of its vent, the rule that frees it, or unvented. */
 export function venting(
-  { paths, free }: BatteryContext,
+  { free }: BatteryContext,
+  air: readonly TrapAir[],
   feet: readonly VentFoot[],
   dry: ReadonlyMap<PipeId, DryRole>,
   batteries: readonly Battery[],
@@ -15,7 +17,7 @@ export function venting(
     for (const { fixture } of facts.traps) batteryOf.set(fixture, index);
   });
   const footAt = new Map(feet.map((foot) => [`${foot.joint}/${foot.piece}`, foot]));
-  return paths.traps.map(({ fixture, foot, piece, through }): Venting => {
+  return air.map(({ fixture, foot, piece, through }): Venting => {
     const freed = free[fixture] ?? null;
     const index = batteryOf.get(fixture) ?? null;
     const vents = foot === null ? [] : (footAt.get(`${foot}/${piece}`)?.path ?? []);

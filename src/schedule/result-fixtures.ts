@@ -18,7 +18,7 @@ function fixture(
   const path = paths.fixtures[id]!;
   const element = model.elements[path.element]!;
   const { kind, detail, evidence } = identities[path.element]!;
-  const trap = paths.traps[id]!;
+  const trap = shown.roles.air[id]!;
   const venting = shown.roles.venting[id]!;
   const arm = shown.roles.arms[id] ?? null;
   const { row, trap: trapSize } = shown.loads.fixtures[id]!;

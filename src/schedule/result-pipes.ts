@@ -131,9 +131,9 @@ function state(
 }
 
 /** Traps whose air passes each pipe: through wet pipes and up the dry ones; their own arms not. By pipe id. */
-function trapsThrough({ network, paths, shown }: Outcome): FixtureId[][] {
+function trapsThrough({ network, shown }: Outcome): FixtureId[][] {
   const through: FixtureId[][] = network.pipes.map(() => []);
-  for (const { fixture, through: wet } of paths.traps) {
+  for (const { fixture, through: wet } of shown.roles.air) {
     const { how, vents } = shown.roles.venting[fixture]!;
     if (how === 'unvented' || how === 'free') continue;
     for (const pipe of [...wet, ...vents]) through[pipe]!.push(fixture);

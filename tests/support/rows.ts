@@ -6,13 +6,19 @@ export interface Arm {
   readonly length?: number;
   /** A dry vent of its own, `V<n>-VT<n>`, in the middle of the arm. */
   readonly vented?: boolean;
+  /** Where that vent ends. */
+  readonly sky?: number;
 }
 
 /**
  * Fixture `F<n>` at the joint `J<n>`: a trap `T<n>` under the floor and a level arm from the south. `what` is a line of
  * the notation without its place: `urinal, stall, trap 2 in`. A closet has its trap inside and a bend `B<n>` instead.
  */
-export function armOf(n: number | string, what: string, { floor = 0, length = 0.3, vented = false }: Arm = {}): string {
+export function armOf(
+  n: number | string,
+  what: string,
+  { floor = 0, length = 0.3, vented = false, sky = 4.2 }: Arm = {},
+): string {
   const [word = '', ...details] = what.split(', ');
   const bore = /trap ([^,]*) in/.exec(what)?.[1] ?? '3';
   const rest = details.length === 0 ? '' : `, ${details.join(', ')}`;
@@ -24,11 +30,8 @@ ${vented ? `node V${n} from J${n} south ${length} rise 1:50` : ''}
 ${inside ? 'node' : 'trap'} ${end} from ${vented ? 'V' : 'J'}${n} south ${length} rise 1:50
 ${word} F${n} from ${end} to ${floor}${rest}${open}
 drain ${bore} in: F${n} > ${end}${vented ? ` > V${n}` : ''} > J${n}
-${vented ? `vent 1 1/2 in: V${n} > VT${n} (to ${roofLine})\nterminal VT${n}` : ''}`;
+${vented ? `vent 1 1/2 in: V${n} > VT${n} (to ${sky})\nterminal VT${n}` : ''}`;
 }
-
-/** Vents end here, above every roof that these drawings have. */
-const roofLine = 90;
 
 /** The joints `J<first>` to `J<last>` in a line to the east, 0.7 m apart, after the node that stands in front. */
 export const lineOf = (first: number, last: number): string =>
@@ -50,21 +53,36 @@ lavatory L2 from TL2 up 0.12, trap 1 1/4 in
 drain 1 1/4 in: L1 > TL1 > ${at}
 drain 1 1/4 in: L2 > TL2 > ${at}`;
 
+export interface WetRow {
+  /** At the head: two lavatories by a double fitting, or one. */
+  readonly lavatories?: 1 | 2;
+  /** From the head's joint `LJ` down to `LF`; the standard way is straight down. */
+  readonly down?: string;
+  readonly vent?: string;
+  readonly more?: string;
+}
+
 /**
- * A row wet vented through two lavatories: `LJ` where their arms meet, down to `LF`, level through `J1` to the last
- * joint, on to a drop `K`-`BF` and out. The dry vent is `LJ-VT`.
+ * A row wet vented through lavatories: `LJ` where their arms meet, down to `LF`, level through `J1` to the last joint, on
+ * to a drop `K`-`BF` and out. The dry vent is `LJ-VT`.
  */
-export const wetVentedRow = (fixtures: readonly string[], vent = '3 in'): string =>
-  hall(
+export function wetVentedRow(fixtures: readonly string[], options: WetRow = {}): string {
+  const { lavatories = 2, down = 'LF (to -0.4)', vent = 'vent 3 in: LJ > VT (to 4.2)', more = '' } = options;
+  const one = `trap TL1 from LJ north 0.4 rise 1:50
+lavatory L1 from TL1 up 0.12, trap 1 1/4 in
+drain 1 1/4 in: L1 > TL1 > LJ`;
+  return hall(
     'A wet vented row',
     `node LJ at 0 0 0.5
-${lavatoryPair('LJ')}
-drain 3 in: LJ > LF (to -0.4)${lineOf(1, fixtures.length)} > K (east 0.7 fall 1:50) > BF (to -1.2) > OUT (east 9 fall 1:50)
+${lavatories === 2 ? lavatoryPair('LJ') : one}
+drain 3 in: LJ > ${down}${lineOf(1, fixtures.length)} > K (east 0.7 fall 1:50) > BF (to -1.2) > OUT (east 9 fall 1:50)
 ${fixtures.map((what, at) => armOf(at + 1, what)).join('')}
-vent ${vent}: LJ > VT (to 4.2)
+${vent}
 terminal VT
-sewer OUT`,
+sewer OUT
+${more}`,
   );
+}
 
 export interface CircuitRow {
   /** Vents of the notation: `vent 1 1/2 in: RV > RT (to 2.5) > VJ (over CV)` is the standard one. */
@@ -109,6 +127,17 @@ export const ventedRow = (fixtures: readonly string[], more = ''): string =>
     `node J1 at 0 0 -0.4
 drain 3 in: J1${lineOf(2, fixtures.length)} > K (east 0.7 fall 1:50) > BF (to -1.2) > OUT (east 9 fall 1:50)
 ${fixtures.map((what, at) => armOf(at + 1, what, { vented: true })).join('')}
+sewer OUT
+${more}`,
+  );
+
+/** The row of `ventedRow`, but only the first fixture has a vent, `V1-VT1`: the others breathe through its drain. */
+export const rowBehindVent = (fixtures: readonly string[], more = ''): string =>
+  hall(
+    'A row behind one vent',
+    `node J1 at 0 0 -0.4
+drain 3 in: J1${lineOf(2, fixtures.length)} > K (east 0.7 fall 1:50) > BF (to -1.2) > OUT (east 9 fall 1:50)
+${fixtures.map((what, at) => armOf(at + 1, what, { vented: at === 0 })).join('')}
 sewer OUT
 ${more}`,
   );

@@ -37,7 +37,7 @@ ${floors.join('\n')}
 ${joints.join('\n')}
 drain ${stack}: ${down.join(' > ')}
 sewer OUT
-${used.map((storey) => branchOf(storey, storeys[storey - 1]!)).join('\n')}
+${used.map((storey) => branchOf(storey, storeys[storey - 1]!, roof + 1)).join('\n')}
 ${stackVent ? `vent 3 in: S${top} > VH (to ${roof + 0.2}) > VT (to ${roof + 0.8})\nterminal VT` : ''}
 ${ventStack ? `vent 3 in: VF > VB (north 0.5 rise 1:50) > VU (to ${roof + 0.15}) > VH` : ''}
 on "Storey 1"
@@ -46,11 +46,13 @@ roof "Roof" from -20 -20 to 20 20 top ${roof} thick 0.3
 `;
 }
 
-function branchOf(storey: number, fixtures: readonly string[]): string {
+function branchOf(storey: number, fixtures: readonly string[], sky: number): string {
   const at = (n: number): string => `J${storey}.${n}`;
   const last = fixtures.length;
   const nodes = fixtures.map((_, n) => `node ${at(n + 1)} from S${storey} west ${(last - n) * 0.7} rise 1:50`);
   const line = [...fixtures.map((_, n) => at(n + 1)), `S${storey}`].join(' > ');
-  const arms = fixtures.map((what, n) => armOf(`${storey}.${n + 1}`, what, { floor: floorOf(storey), vented: true }));
+  const arms = fixtures.map((what, n) =>
+    armOf(`${storey}.${n + 1}`, what, { floor: floorOf(storey), vented: true, sky }),
+  );
   return `on "Storey ${storey}"\n${nodes.join('\n')}\ndrain 3 in: ${line}${arms.join('')}`;
 }

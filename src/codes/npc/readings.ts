@@ -61,7 +61,8 @@ function wetVentBreaks({ family, omit, settings }: Tools): Breaks {
         'wet-vent-overloaded',
       );
     }
-    const closets = traps.filter(({ closet, place }) => closet && place > 0);
+    // A closet at the head, with the vent on its own drain, drains into the wet vent like the others.
+    const closets = traps.filter(({ closet }) => closet);
     if (closets.length > mostClosets.value)
       breaks('NPC-R44', { closets: closets.length, closetsMost: mostClosets.value });
     else if (closets.length === 2 && closets[0]!.joins !== closets[1]!.joins) breaks('NPC-R44', { closetsApart: true });
@@ -98,7 +99,7 @@ function wetVentBreaks({ family, omit, settings }: Tools): Breaks {
 const coordinate = 0.001;
 
 const closetBeforeOthers = (traps: readonly BatteryTrap[]): boolean => {
-  const firstCloset = traps.find(({ closet, place }) => closet && place > 0);
+  const firstCloset = traps.find(({ closet }) => closet);
   return firstCloset !== undefined && traps.some(({ closet, place }) => !closet && place > firstCloset.place);
 };
 
