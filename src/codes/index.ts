@@ -2,6 +2,7 @@ import { InputError } from '../findings/input-error.ts';
 import type { Settings } from '../model/answers.ts';
 import { openCode } from '../tables/open-family.ts';
 import type { PipeDimensions } from '../tables/pipe-dimensions.ts';
+import { readWallRules } from '../tables/read-wall-rules.ts';
 import type { TableSource } from '../tables/table-source.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import { codeSettings } from './code-settings.ts';
@@ -42,6 +43,7 @@ export function plumbingCode(
     unit: family.unit,
     series: family.series,
     dimensions,
+    walls: readWallRules(tables, family.id, dimensions),
     omitSizes: omit,
     settings: chosen,
     localTables: family.localTables,

@@ -1,6 +1,7 @@
 import type { FixtureDetail, FixtureKind } from '../model/identity.ts';
 import type { PipeDimensions } from '../tables/pipe-dimensions.ts';
 import type { Cell } from '../tables/table.ts';
+import type { WallRules } from '../tables/wall-rules.ts';
 import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
 import type { Load } from '../units/quantity.ts';
 import type { BatteryFacts, Broken } from './battery.ts';
@@ -19,6 +20,8 @@ export interface PlumbingCode {
   readonly series: SizeSeries;
   /** Outside diameters by which a measured pipe is read. */
   readonly dimensions: PipeDimensions;
+  /** Studs, holes in them, and what the layers of a wall are. */
+  readonly walls: WallRules;
   readonly fixtures: FixtureRows;
   readonly omitSizes: ReadonlySet<NominalSize>;
   /** What the user set, defaults filled in: shown on every deliverable. */

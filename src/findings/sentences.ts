@@ -164,7 +164,20 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
   'sewer-end-assumed': (f) =>
     `The sewer end is taken at ${first(f)} (${plain(f.facts.how)}, of ${text(f, 'candidates')} open ends): say so in the answers file if it is another.`,
   'wrong-system': (f) => `${first(f)} is filed under a system it does not belong to by its piping.`,
-  'fit-in-wall': (f) => `${first(f)} does not fit in its wall at ${text(f, 'required')}.`,
+  'fit-in-wall': (f) => {
+    const wall = has(f, 'wall') ? text(f, 'wall') : 'its wall';
+    const takes = has(f, 'stud')
+      ? `studs of ${text(f, 'stud')} take it${has(f, 'studIfNotLoadbearing') ? ` (${text(f, 'studIfNotLoadbearing')} if the wall bears no load)` : ''}`
+      : has(f, 'studIfNotLoadbearing')
+        ? `studs of ${text(f, 'studIfNotLoadbearing')} take it if the wall bears no load`
+        : 'no usual stud takes it: a chase, or another place';
+    const mm = (key: string): string => `${f.number(num(f, key))} mm`;
+    if (f.facts.what !== 'hole')
+      return `${first(f)} at ${text(f, 'required')} does not fit in ${wall}: ${f.facts.what === 'fitting' ? 'its fittings are' : 'it is'} ${mm('needsMm')} wide, the wall has room for ${mm('cavityMm')}; ${takes}.`;
+    const bears =
+      f.facts.loadBearing === true ? ' and bears load' : f.facts.loadBearing === false ? '' : ' if it bears load';
+    return `${first(f)} at ${text(f, 'required')} runs along ${wall} through its studs: a hole of ${mm('holeMm')}, at most ${mm('holeMostMm')} in a stud that is ${mm('cavityMm')} deep${bears} and not reinforced (${text(f, 'holeClause')}); ${takes}.`;
+  },
   'double-water-path': (f) => `${first(f)} has two ways for its water.`,
   'doubled-element': (f) => `${first(f)} stands twice at one place; one is used.`,
   'group-not-applied': (f) =>

@@ -12,6 +12,7 @@ import { checkFacts } from './check-facts.ts';
 import { comparePipes } from './compare.ts';
 import type { Outcome, Run } from './outcome.ts';
 import { sizeFindings } from './size-findings.ts';
+import { wallFindings } from './wall-findings.ts';
 
 export interface VerdictFacts {
   readonly model: Model;
@@ -47,6 +48,7 @@ export function reachVerdicts({ findings, runs, ...facts }: VerdictFacts): Outco
       ...batteryFindings(network, paths, shown.roles.batteries),
       ...code.checks.flatMap(({ run }) => run(checked)),
       ...sizeFindings(network, paths, code, shown, pipes),
+      ...wallFindings(facts.model, network, code, pipes),
     ],
   };
 }
