@@ -76,8 +76,8 @@ function resolvedSets(index: LineIndex, sets: readonly PropertySetToWrite[]): Re
   });
 }
 
-function buildingOf({ ids, recordsOf }: LineIndex): number | null {
-  const buildings = recordsOf('IFCBUILDING');
-  const [record] = buildings.length === 1 ? buildings : recordsOf('IFCPROJECT');
-  return record === undefined ? null : (ids[record] ?? null);
+function buildingOf(index: LineIndex): number | null {
+  const buildings = index.recordsOf('IFCBUILDING');
+  const [record] = buildings.length === 1 ? buildings : index.recordsOf('IFCPROJECT');
+  return record === undefined ? null : (index.ids[record] ?? null);
 }
