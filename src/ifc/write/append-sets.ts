@@ -1,5 +1,6 @@
 import { InputError } from '../../findings/input-error.ts';
 import type { PropertySetToWrite } from '../../model/property-set.ts';
+import { Cursor } from '../lines/cursor.ts';
 import type { LineIndex } from '../lines/line-index.ts';
 import type { Digest } from './derive-global-id.ts';
 import { targetAt } from './our-ids.ts';
@@ -66,11 +67,12 @@ function without(bytes: Uint8Array, cuts: readonly Cut[]): Uint8Array[] {
 
 /** Sets with the record that they go on, in the order given; one for the building falls away where the file has none. */
 function resolvedSets(index: LineIndex, sets: readonly PropertySetToWrite[]): ResolvedSet[] {
+  const cursor = new Cursor(index.bytes);
   return sets.flatMap((set) => {
     if (set.properties.length === 0) return [];
     const stepId = set.on === 'building' ? buildingOf(index) : set.on;
     if (stepId === null) return [];
-    const target = targetAt(index, stepId);
+    const target = targetAt(index, stepId, cursor);
     if (target === null) throw new Error(`no record #${stepId} to write ${set.name} on`);
     return { ...set, target };
   });

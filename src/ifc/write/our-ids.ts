@@ -1,4 +1,4 @@
-import { Cursor } from '../lines/cursor.ts';
+import type { Cursor } from '../lines/cursor.ts';
 import type { LineIndex } from '../lines/line-index.ts';
 import { type Digest, deriveGlobalId } from './derive-global-id.ts';
 
@@ -14,11 +14,11 @@ export interface Target {
   readonly globalId: string;
 }
 
-/** GlobalId of the record with this STEP id; null when there is no such record. */
-export function targetAt(index: LineIndex, stepId: number): Target | null {
+/** GlobalId of the record with this STEP id, read with a cursor of the caller's; null when there is no such record. */
+export function targetAt(index: LineIndex, stepId: number, cursor: Cursor): Target | null {
   const record = index.find(stepId);
   if (record < 0) return null;
-  return { stepId, globalId: new Cursor(index.bytes).at(index.args[record] ?? 0).text() ?? '' };
+  return { stepId, globalId: cursor.at(index.args[record] ?? 0).text() ?? '' };
 }
 
 /** GlobalId of our line of this class about the set `name` on `target`; `alone` when no other target shares its GlobalId. */

@@ -14,6 +14,7 @@ export function strayRecords(index: LineIndex, digest: Digest): readonly number[
   const sets = ourSets(index);
   if (sets.size === 0) return [];
   const cursor = new Cursor(index.bytes);
+  const second = new Cursor(index.bytes);
   const found = new Set<number>();
   const values = new Set<number>();
   for (const relation of index.recordsOf('IFCRELDEFINESBYPROPERTIES')) {
@@ -22,7 +23,7 @@ export function strayRecords(index: LineIndex, digest: Digest): readonly number[
       .skip(4)
       .ids();
     const set = sets.get(cursor.id());
-    if (set === undefined || !related.some((stepId) => isOurs(index, digest, set, stepId))) continue;
+    if (set === undefined || !related.some((stepId) => isOurs(index, digest, set, stepId, second))) continue;
     found.add(relation).add(set.record);
     for (const value of set.values) values.add(value);
   }
@@ -64,8 +65,8 @@ function ourSets(index: LineIndex): ReadonlyMap<number, OurSet> {
   return sets;
 }
 
-function isOurs(index: LineIndex, digest: Digest, { name, globalId }: OurSet, stepId: number): boolean {
-  const target = targetAt(index, stepId);
+function isOurs(index: LineIndex, digest: Digest, { name, globalId }: OurSet, stepId: number, cursor: Cursor): boolean {
+  const target = targetAt(index, stepId, cursor);
   if (target === null) return false;
   return [true, false].some((alone) => ourGlobalId(digest, target, name, 'IFCPROPERTYSET', alone) === globalId);
 }
