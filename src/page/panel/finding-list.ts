@@ -5,11 +5,13 @@ import { named } from '../words/words.ts';
 import { severityMarks } from './chips.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
+import { fill } from './fill.ts';
 import { findingSentence } from './finding-sentence.ts';
 import { batteryName, capital, pipeName } from './names.ts';
 import { reasonText } from './reason.ts';
 
 const mostShown = 60;
+const mostGroups = 30;
 
 /** Findings by cause: undersized pipes that share one stand together, everything else by its code; errors first. */
 export function findingList(desk: Desk): HTMLElement {
@@ -56,8 +58,15 @@ export function findingList(desk: Desk): HTMLElement {
       ),
     ),
     findings.length === 0 && make('p', { class: 'quiet' }, words.findings.none),
-    ...groups.map((group) => undersizedGroup(desk, group)),
-    ...[...byCode.values()].map((list) => codeGroup(desk, list)),
+    paged(
+      desk,
+      [
+        ...groups.map((group) => () => undersizedGroup(desk, group)),
+        ...[...byCode.values()].map((list) => () => codeGroup(desk, list)),
+      ],
+      mostGroups,
+      (more) => more,
+    ),
     make('p', { class: 'quiet' }, words.findings.noJudgement),
   );
 }
@@ -140,8 +149,7 @@ interface Row {
   readonly open: (() => void) | null;
 }
 
-function rowsOf({ words }: Desk, rows: readonly Row[], short = false): HTMLElement {
-  const list = make('ul', { class: short ? 'finding-rows short' : 'finding-rows' });
+function rowsOf(desk: Desk, rows: readonly Row[], short = false): HTMLElement {
   const line = ({ label, open }: Row): HTMLElement =>
     make(
       'li',
@@ -150,26 +158,26 @@ function rowsOf({ words }: Desk, rows: readonly Row[], short = false): HTMLEleme
         ? make('span', { class: 'finding-row' }, modelText(shownLong(label)))
         : make('button', { type: 'button', class: 'finding-row', onclick: open }, modelText(shownLong(label))),
     );
-  const add = (from: number): void => {
-    list.append(...rows.slice(from, from + mostShown).map(line));
-    const left = rows.length - from - mostShown;
-    if (left <= 0) return;
-    const more: HTMLElement = make(
-      'button',
-      {
-        type: 'button',
-        class: 'link',
-        onclick: () => {
-          more.parentElement?.remove();
-          add(from + mostShown);
-        },
-      },
-      words.page.more(Math.min(left, mostShown)),
-    );
-    list.append(make('li', {}, more));
-  };
-  add(0);
+  const list = make('ul', { class: short ? 'finding-rows short' : 'finding-rows' });
+  fill(
+    desk,
+    list,
+    rows.map((row) => () => line(row)),
+    mostShown,
+    (more) => make('li', {}, more),
+  );
   return list;
+}
+
+function paged(
+  desk: Desk,
+  items: readonly (() => HTMLElement)[],
+  most: number,
+  wrap: (more: HTMLElement) => HTMLElement,
+): HTMLElement {
+  const host = make('div', {});
+  fill(desk, host, items, most, wrap);
+  return host;
 }
 
 const shownLong = (text: string): string => (text.length > 600 ? `${text.slice(0, 600)}…` : text);

@@ -3,6 +3,7 @@ import { kindName, named } from '../words/words.ts';
 import { verdictMark } from './chips.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
+import { fill } from './fill.ts';
 import { fixtureSymbol } from './fixture-symbol.ts';
 import { fixtureName, pipeName, shown } from './names.ts';
 
@@ -22,25 +23,7 @@ export function pipeList(desk: Desk, search: string): HTMLElement {
     ...pipes.map((row) => () => pipeLine(desk, row)),
   ];
   const list = make('ul', { class: 'pipe-list' });
-  const add = (from: number): void => {
-    list.append(...lines.slice(from, from + page).map((line) => line()));
-    const left = lines.length - from - page;
-    if (left <= 0) return;
-    const more: HTMLElement = make(
-      'button',
-      {
-        type: 'button',
-        class: 'link',
-        onclick: () => {
-          more.parentElement?.remove();
-          add(from + page);
-        },
-      },
-      words.page.more(Math.min(left, page)),
-    );
-    list.append(make('li', {}, more));
-  };
-  add(0);
+  fill(desk, list, lines, page, (more) => make('li', {}, more));
   return make(
     'div',
     {},

@@ -16,14 +16,19 @@ export interface Context {
   dispose(): void;
 }
 
+/** More fixtures, or bodies with their edges, than this are left out while the eye moves on a slow machine. */
+const manyFixtures = 300;
+const manyBodies = 600;
+
 export function contextOf(building: Building, shared: SharedUniforms): Context {
   const group = new Group();
   const fabric = fabricShape(building);
   const walls = new Mesh(fabric.walls.geometry(), solidMaterial(shared, true));
   const floors = new Mesh(fabric.floors.geometry(), solidMaterial(shared, true));
   const edges = new LineSegments(lineGeometry(fabric.edges), lineMaterial(shared));
-  const fixtures = new Mesh(fixtureShape(building, () => true).geometry(), solidMaterial(shared, false));
+  const fixtures = new Mesh(undefined, solidMaterial(shared, false));
   const chosen = new Mesh(undefined, solidMaterial(shared, false));
+  chosen.renderOrder = 1; // over the same fixture in white
   floors.renderOrder = 5;
   walls.renderOrder = 6;
   edges.renderOrder = 7;
@@ -31,7 +36,7 @@ export function contextOf(building: Building, shared: SharedUniforms): Context {
     mesh.frustumCulled = false;
     group.add(mesh);
   }
-  let shownFixture: number | null = null;
+  let [shownFixture, built] = [null as number | null, false];
   chosen.visible = false;
   return {
     group,
@@ -47,12 +52,15 @@ export function contextOf(building: Building, shared: SharedUniforms): Context {
       chosen.geometry.dispose();
       chosen.geometry = fixtureShape(building, (row) => row === fixture).geometry();
       chosen.visible = fixture !== null;
-      fixtures.geometry.dispose();
-      fixtures.geometry = fixtureShape(building, (row) => row !== fixture).geometry();
     },
     setCheap(cheap) {
       walls.material.visible = !cheap;
       floors.material.visible = !cheap;
+      edges.material.visible = !cheap || building.data.scene.fabric.kind.length <= manyBodies;
+      fixtures.visible = !cheap || building.result.fixtures.length <= manyFixtures;
+      if (!fixtures.visible || built) return;
+      built = true;
+      fixtures.geometry = fixtureShape(building, () => true).geometry();
     },
     dispose() {
       for (const mesh of [walls, floors, edges, fixtures, chosen]) {

@@ -82,9 +82,14 @@ for (const basin of [
   });
 const plain: readonly Part[] = [block(0, 1, 0, 1, 1)];
 
-/** All fixtures as one body. A fixture without a place in the model is not drawn. */
+/**
+ * All fixtures as one body. A fixture without a place in the model is not drawn. Where there are very many, corners
+ * are saved: nobody sees a basin's curve among thousands.
+ */
 export function fixtureShape(building: Building, shown: (fixture: number) => boolean): MeshDraft {
   const draft = new MeshDraft();
+  const count = building.result.fixtures.length;
+  const corners = count <= 400 ? 16 : 8;
   const { fixtures } = building.data.scene;
   building.result.fixtures.forEach(({ kind }, fixture) => {
     const size = [
@@ -106,14 +111,17 @@ export function fixtureShape(building: Building, shown: (fixture: number) => boo
               : [across, 1 - out];
       return [low[0]! + fx * size[0], low[1]! + fy * size[1], low[2]! + up * size[2]];
     };
-    for (const part of bodies[kind ?? ''] ?? plain) loft(draft, part, place);
+    for (const part of count > 4000 ? plain : (bodies[kind ?? ''] ?? plain)) loft(draft, part, place, corners);
   });
   return draft;
 }
 
-const corners = 16;
-
-function loft(draft: MeshDraft, part: Part, place: (across: number, out: number, up: number) => number[]): void {
+function loft(
+  draft: MeshDraft,
+  part: Part,
+  place: (across: number, out: number, up: number) => number[],
+  corners: number,
+): void {
   const rings = part.map((it) =>
     Array.from({ length: corners }, (_, corner) => {
       const turn = (corner / corners) * Math.PI * 2;

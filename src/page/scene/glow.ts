@@ -1,4 +1,4 @@
-import { FrontSide, GreaterDepth, Group, Mesh } from 'three';
+import { type BufferGeometry, FrontSide, GreaterDepth, Group, Mesh } from 'three';
 import { type Paint, pipeMaterial, type SharedUniforms } from './pipe-material.ts';
 import { type Tube, tubeGeometry } from './tubes.ts';
 
@@ -6,6 +6,8 @@ export interface Glow {
   readonly group: Group;
   /** `lit` by rising index; `chosen` of them get a firm outline besides. */
   show(lit: readonly number[], chosen: readonly number[]): void;
+  /** While the eye moves on a slow machine only the lit body itself is drawn, as plainly as can be. */
+  setCheap(cheap: boolean): void;
   dispose(): void;
 }
 
@@ -16,6 +18,7 @@ export function glowOf(
   paint: Paint,
   outlinePaint: Paint,
   shared: SharedUniforms,
+  roundness: number,
 ): Glow {
   const group = new Group();
   const wide = pipeMaterial(paint, shared, { grow: 1.5, leastPixels: 4, morePixels: 9, alpha: 0.3, halo: true });
@@ -41,30 +44,47 @@ export function glowOf(
     group.add(mesh);
     return mesh;
   });
-  let shown = '';
+  const plain = new Mesh(undefined, core);
+  plain.renderOrder = 24;
+  plain.frustumCulled = false;
+  plain.visible = false;
+  group.add(plain);
+  let [shown, cheapNow, litCount, chosenCount] = ['', false, 0, 0];
+  const reveal = (): void => {
+    for (const mesh of meshes) mesh.visible = !cheapNow && (mesh.material === outline ? chosenCount : litCount) > 0;
+    plain.visible = cheapNow && litCount > 0;
+  };
+  const replace = (mesh: Mesh, geometry: BufferGeometry): void => {
+    mesh.geometry.dispose();
+    mesh.geometry = geometry;
+  };
   return {
     group,
     show(sections, chosen) {
       const name = `${sections.join()};${chosen.join()}`;
       if (name === shown) return;
       shown = name;
-      const sides = sections.length > 2000 ? 6 : 14;
       const of = (from: readonly Tube[], wanted: ReadonlySet<number>): Tube[] =>
         from.filter(({ section }) => wanted.has(section));
-      const lit = new Set(sections);
-      const marked = new Set(chosen);
-      const light = tubeGeometry(of(tubes, lit), [], sides);
-      const bodies = tubeGeometry([...of(tubes, lit), ...of(collars, lit)], [], sides);
-      const lines = tubeGeometry(of(tubes, marked), [], sides);
-      const geometries = [light, light, lines, bodies, bodies];
+      const [lit, marked] = [new Set(sections), new Set(chosen)];
+      const round = { tube: Math.min(roundness, lit.size > 2000 ? 5 : 14), ball: 4 };
+      const bodies = of(tubes, lit);
+      const light = tubeGeometry(bodies, [], round);
+      const solid = tubeGeometry([...bodies, ...of(collars, lit)], [], round);
+      const geometries = [light, light, tubeGeometry(of(tubes, marked), [], round), solid, solid];
       meshes.forEach((mesh, place) => {
-        mesh.geometry.dispose();
-        mesh.geometry = geometries[place]!;
-        mesh.visible = (mesh.material === outline ? marked : lit).size > 0;
+        replace(mesh, geometries[place]!);
       });
+      replace(plain, tubeGeometry(bodies, [], { tube: 4, ball: 4 }));
+      [litCount, chosenCount] = [lit.size, marked.size];
+      reveal();
+    },
+    setCheap(cheap) {
+      cheapNow = cheap;
+      reveal();
     },
     dispose() {
-      for (const mesh of meshes) {
+      for (const mesh of [...meshes, plain]) {
         mesh.geometry.dispose();
         mesh.material.dispose();
       }

@@ -49,9 +49,12 @@ export function labelWishes(
     rest.push({ section, length: lengthOf(line.points) });
   }
   rest.sort((a, b) => b.length - a.length || a.section - b.section);
-  for (const { section } of rest) add(section, text.pipe(section), 'plain');
+  for (const { section } of rest.slice(0, mostTried)) add(section, text.pipe(section), 'plain');
   return wishes;
 }
+
+/** Longest pipes first: what comes after so many is too short on the screen to bear words. */
+const mostTried = 1500;
 
 function wayWish(way: Way, asked: number, text: LabelText): readonly LabelWish[] {
   const step = Math.min(asked, way.sections.length - 1);

@@ -21,10 +21,9 @@ export const sharedUniforms = (): SharedUniforms => ({
 
 const paintWidth = 1024;
 
-/** Colour and pattern of each section: two texels in a texture, so that a new colouring rewrites no geometry. */
+/** Colour and pattern of each section: one texel in a texture, so that a new colouring rewrites no geometry. */
 export interface Paint {
-  readonly colours: DataTexture;
-  readonly marks: DataTexture;
+  readonly texture: DataTexture;
   /** `rgb` 0 to 255; hidden sections are not drawn at all. */
   set(section: number, rgb: readonly [number, number, number], pattern: number, hidden: boolean): void;
   commit(): void;
@@ -33,30 +32,22 @@ export interface Paint {
 export function paintOf(count: number): Paint {
   const height = Math.max(1, Math.ceil(count / paintWidth));
   const bytes = new Uint8Array(paintWidth * height * 4);
-  const marks = new Uint8Array(paintWidth * height * 4);
-  const texture = (data: Uint8Array<ArrayBuffer>): DataTexture => {
-    const made = new DataTexture(data, paintWidth, height, RGBAFormat);
-    made.magFilter = NearestFilter;
-    made.minFilter = NearestFilter;
-    made.needsUpdate = true;
-    return made;
-  };
-  const colourTexture = texture(bytes);
-  const markTexture = texture(marks);
+  const texture = new DataTexture(bytes, paintWidth, height, RGBAFormat);
+  texture.magFilter = NearestFilter;
+  texture.minFilter = NearestFilter;
+  texture.needsUpdate = true;
   return {
-    colours: colourTexture,
-    marks: markTexture,
+    texture,
     set(section, rgb, pattern, hidden) {
       const at = section * 4;
       bytes[at] = rgb[0];
       bytes[at + 1] = rgb[1];
       bytes[at + 2] = rgb[2];
-      bytes[at + 3] = hidden ? 0 : 255;
-      marks[at] = pattern;
+      // The fourth byte is no opacity: 0 hides, else it is the pattern's number plus one.
+      bytes[at + 3] = hidden ? 0 : pattern + 1;
     },
     commit() {
-      colourTexture.needsUpdate = true;
-      markTexture.needsUpdate = true;
+      texture.needsUpdate = true;
     },
   };
 }
@@ -86,8 +77,7 @@ export function pipeMaterial(paint: Paint, shared: SharedUniforms, look: TubeLoo
     blending: NormalBlending,
     uniforms: {
       ...shared,
-      colours: { value: paint.colours },
-      marks: { value: paint.marks },
+      paint: { value: paint.texture },
       grow: { value: look.grow },
       leastPixels: { value: look.leastPixels },
       morePixels: { value: look.morePixels },
@@ -103,7 +93,7 @@ export function pipeLineMaterial(paint: Paint, shared: SharedUniforms): RawShade
     glslVersion: GLSL3,
     vertexShader: lineVertexShader,
     fragmentShader: lineFragmentShader,
-    uniforms: { ...shared, colours: { value: paint.colours } },
+    uniforms: { ...shared, paint: { value: paint.texture } },
   });
 }
 
@@ -112,14 +102,14 @@ precision highp float;
 precision highp int;
 in vec3 position; in float section;
 uniform mat4 modelViewMatrix, projectionMatrix;
-uniform highp sampler2D colours;
+uniform highp sampler2D paint;
 out vec3 vPlace; flat out vec3 vColour;
 void main() {
   int row = int(section + 0.5);
-  vec4 colour = texelFetch(colours, ivec2(row % ${paintWidth}, row / ${paintWidth}), 0);
+  vec4 colour = texelFetch(paint, ivec2(row % ${paintWidth}, row / ${paintWidth}), 0);
   vColour = colour.rgb;
   vPlace = position;
-  gl_Position = colour.a < 0.5 ? vec4(2.0, 2.0, 2.0, 1.0) : projectionMatrix * modelViewMatrix * vec4(position, 1.0);
+  gl_Position = colour.a == 0.0 ? vec4(2.0, 2.0, 2.0, 1.0) : projectionMatrix * modelViewMatrix * vec4(position, 1.0);
 }`;
 
 const lineFragmentShader = /* glsl */ `
@@ -138,16 +128,20 @@ precision highp int;
 in vec3 position; in vec4 normal; in float radius; in float along; in float section;
 uniform mat4 modelViewMatrix, projectionMatrix, modelMatrix;
 uniform mat3 normalMatrix;
-uniform highp sampler2D colours, marks;
+uniform highp sampler2D paint;
 uniform float grow, leastPixels, morePixels, pixel;
 out vec3 vNormal; out vec3 vPlace; out float vAlong; out float vDepth;
 flat out vec3 vColour; flat out int vPattern;
 void main() {
   int row = int(section + 0.5);
-  ivec2 at = ivec2(row % ${paintWidth}, row / ${paintWidth});
-  vec4 colour = texelFetch(colours, at, 0);
+  vec4 colour = texelFetch(paint, ivec2(row % ${paintWidth}, row / ${paintWidth}), 0);
+  int code = int(colour.a * 255.0 + 0.5);
+  if (code == 0) {
+    gl_Position = vec4(2.0, 2.0, 2.0, 1.0);
+    return;
+  }
   vColour = colour.rgb;
-  vPattern = int(texelFetch(marks, at, 0).r * 255.0 + 0.5);
+  vPattern = code - 1;
   vec4 axis = modelViewMatrix * vec4(position, 1.0);
   float perPixel = pixel * max(0.05, -axis.z);
   float r = max(radius * grow, leastPixels * perPixel) + morePixels * perPixel;
@@ -156,7 +150,7 @@ void main() {
   vPlace = position + normalize(normal.xyz) * radius;
   vAlong = along;
   vDepth = -place.z;
-  gl_Position = colour.a < 0.5 ? vec4(2.0, 2.0, 2.0, 1.0) : projectionMatrix * place;
+  gl_Position = projectionMatrix * place;
 }`;
 
 // Patterns are the second sign beside colour: 1 dashes, 2 rings, 3 dots, 4 long and short.

@@ -3,11 +3,12 @@ import type { Building } from '../building.ts';
 import type { SectionLook } from '../colouring.ts';
 import type { Rgb } from '../colours.ts';
 import { glowOf } from './glow.ts';
+import { ballsOf, collarsOf } from './hubs.ts';
 import { lineGeometry } from './mesh-draft.ts';
 import type { Bounds } from './orbit.ts';
 import { type Paint, paintOf, pipeLineMaterial, pipeMaterial, type SharedUniforms } from './pipe-material.ts';
-import { between, jointPoint, type Point, type Polyline, polylineOf } from './polylines.ts';
-import { type Ball, type Tube, tubeGeometry } from './tubes.ts';
+import { type Polyline, polylineOf } from './polylines.ts';
+import { type Tube, tubeGeometry } from './tubes.ts';
 
 /** How much of the piping is drawn while the eye moves: everything, thin tubes without fittings, or plain lines. */
 export type Detail = 'full' | 'light' | 'lines';
@@ -21,12 +22,18 @@ export interface Piping {
   /** Repaints all sections; what is lit is drawn again over everything else. */
   show(look: (section: number) => SectionLook, outline: Rgb): void;
   setDetail(detail: Detail): void;
+  /** Whether this detail is built already. */
+  has(detail: Detail): boolean;
   bounds(sections: Iterable<number>): Bounds | null;
   dispose(): void;
 }
 
-const hubGrow = 1.16;
-const collarOver = 0.012;
+/** Sides of a tube and of a fitting's ball, by how many pipes there are: roundness is dear without a graphics card. */
+function roundness(count: number): { readonly tube: number; readonly ball: number; readonly collars: boolean } {
+  if (count <= 600) return { tube: 16, ball: 12, collars: true };
+  if (count <= 3000) return { tube: 10, ball: 8, collars: true };
+  return count <= 15_000 ? { tube: 7, ball: 6, collars: false } : { tube: 5, ball: 5, collars: false };
+}
 
 export function pipingOf(building: Building, shared: SharedUniforms): Piping {
   const count = building.sectionCount;
@@ -35,30 +42,24 @@ export function pipingOf(building: Building, shared: SharedUniforms): Piping {
   const outlinePaint = paintOf(count);
   const visible = new Uint8Array(count).fill(1);
   const group = new Group();
-  const rich = count <= 3000 ? 16 : count <= 12_000 ? 9 : 6;
+  const round = roundness(count);
   const tubes = tubesOf(building, polylines);
-  const collars = count <= 12_000 ? collarsOf(building, polylines) : [];
-  const full = new Mesh(
-    tubeGeometry([...tubes, ...collars], ballsOf(building, polylines), rich),
-    pipeMaterial(paint, shared, { grow: 1, leastPixels: 0.75, morePixels: 0, alpha: 1, halo: false }),
-  );
-  full.frustumCulled = false;
-  group.add(full);
-  const cheap = new Map<Detail, Mesh | LineSegments>();
-  const cheapOf = (detail: Detail): Mesh | LineSegments => {
-    const known = cheap.get(detail);
-    if (known !== undefined) return known;
-    const made =
-      detail === 'light'
-        ? new Mesh(tubeGeometry(tubes, [], 4), full.material)
-        : new LineSegments(segmentLines(polylines), pipeLineMaterial(paint, shared));
-    made.frustumCulled = false;
-    cheap.set(detail, made);
-    group.add(made);
-    return made;
-  };
-  const glow = glowOf(tubes, collars, paint, outlinePaint, shared);
+  const collars = round.collars ? collarsOf(building, polylines) : [];
+  const solid = pipeMaterial(paint, shared, { grow: 1, leastPixels: 0.75, morePixels: 0, alpha: 1, halo: false });
+  const glow = glowOf(tubes, collars, paint, outlinePaint, shared, round.tube);
   group.add(glow.group);
+  // Each detail is built when it is first asked for: the first picture of a large model need not wait for the last.
+  const made = new Map<Detail, Mesh | LineSegments>();
+  const build = (detail: Detail): Mesh | LineSegments => {
+    switch (detail) {
+      case 'full':
+        return new Mesh(tubeGeometry([...tubes, ...collars], ballsOf(building, polylines), round), solid);
+      case 'light':
+        return new Mesh(tubeGeometry(tubes, [], { tube: 4, ball: 4 }), solid);
+      case 'lines':
+        return new LineSegments(segmentLines(polylines), pipeLineMaterial(paint, shared));
+    }
+  };
   return {
     group,
     polylines,
@@ -81,18 +82,26 @@ export function pipingOf(building: Building, shared: SharedUniforms): Piping {
       glow.show(lit, chosen);
     },
     setDetail(detail) {
-      full.visible = detail === 'full';
-      if (detail !== 'full') cheapOf(detail);
-      for (const [of, mesh] of cheap) mesh.visible = of === detail;
+      if (!made.has(detail)) {
+        const mesh = build(detail);
+        mesh.frustumCulled = false;
+        made.set(detail, mesh);
+        group.add(mesh);
+      }
+      for (const [of, mesh] of made) mesh.visible = of === detail;
+      glow.setCheap(detail !== 'full');
     },
+    has: (detail) => made.has(detail),
     bounds: (sections) => boundsOf(polylines, sections),
     dispose() {
-      for (const mesh of [full, ...cheap.values()]) {
+      for (const mesh of made.values()) {
         mesh.geometry.dispose();
         (mesh.material as RawShaderMaterial).dispose();
       }
+      solid.dispose();
       glow.dispose();
-      for (const texture of [paint.colours, paint.marks, outlinePaint.colours, outlinePaint.marks]) texture.dispose();
+      paint.texture.dispose();
+      outlinePaint.texture.dispose();
     },
   };
 }
@@ -101,49 +110,6 @@ function tubesOf(building: Building, polylines: readonly (Polyline | null)[]): T
   return polylines.flatMap((line, section) =>
     line === null ? [] : [{ section, points: line.points, radius: building.radius[section]!, alongFrom: 0 }],
   );
-}
-
-/** The hub of a fitting round the end of each pipe. */
-function collarsOf(building: Building, polylines: readonly (Polyline | null)[]): Tube[] {
-  const collars: Tube[] = [];
-  const add = (section: number, joint: Point, end: Point, inner: Point): void => {
-    const over = collarOver / Math.max(0.02, Math.hypot(inner[0] - end[0], inner[1] - end[1], inner[2] - end[2]));
-    const points = [joint, end, between(end, inner, Math.min(0.4, over))];
-    collars.push({ section, points, radius: building.radius[section]! * hubGrow, alongFrom: 0 });
-  };
-  for (const line of polylines) {
-    if (line === null) continue;
-    const { section, points, bodyFrom, bodyTo } = line;
-    if (bodyFrom === 1) add(section, points[0]!, points[1]!, points[2]!);
-    if (bodyTo === points.length - 2) add(section, points.at(-1)!, points.at(-2)!, points.at(-3)!);
-  }
-  return collars;
-}
-
-/** A ball closes the corner where pipes meet, as wide as the widest of them; it is painted as that one. */
-function ballsOf(building: Building, polylines: readonly (Polyline | null)[]): Ball[] {
-  const { pipes } = building.data.scene;
-  const widest = new Map<number, { section: number; radius: number; ends: number }>();
-  polylines.forEach((line, section) => {
-    if (line === null) return;
-    for (const joint of [pipes.jointA[section]!, pipes.jointB[section]!]) {
-      const radius = building.radius[section]!;
-      const known = widest.get(joint);
-      if (known === undefined) widest.set(joint, { section, radius, ends: 1 });
-      else {
-        known.ends++;
-        if (radius > known.radius) Object.assign(known, { section, radius });
-      }
-    }
-  });
-  const balls: Ball[] = [];
-  for (const [joint, { section, radius, ends }] of widest) {
-    const at = jointPoint(building, joint);
-    if (at === null || ends < 2) continue;
-    const fitted = pipes.jointFitting[joint]! >= 0;
-    balls.push({ section, at, radius: radius * (fitted ? hubGrow : 1) });
-  }
-  return balls;
 }
 
 export function boundsOf(polylines: readonly (Polyline | null)[], sections: Iterable<number>): Bounds | null {

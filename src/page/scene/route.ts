@@ -109,7 +109,7 @@ export function routeOf(building: Building, shared: SharedUniforms): Route {
       const at = way.points[step]?.at(-1) ?? way.points.at(-1)?.at(-1);
       const radius = (building.radius[way.sections[step] ?? -1] ?? 0.05) * 2.1;
       marker.geometry.dispose();
-      marker.geometry = tubeGeometry([], at === undefined ? [] : [{ section: 0, at, radius }], 16);
+      marker.geometry = tubeGeometry([], at === undefined ? [] : [{ section: 0, at, radius }], round);
       marker.visible = at !== undefined;
       for (const mesh of meshes) {
         const { uniforms } = mesh.material;
@@ -137,9 +137,11 @@ export function trapPoint(building: Building, fixture: number): Point | null {
   return joint < 0 ? null : jointPoint(building, joint);
 }
 
+const round = { tube: 14, ball: 16 };
+
 function replace(mesh: Mesh, tubes: readonly Tube[]): void {
   mesh.geometry.dispose();
-  mesh.geometry = tubeGeometry(tubes, [], 14);
+  mesh.geometry = tubeGeometry(tubes, [], round);
 }
 
 function routeMaterial(shared: SharedUniforms, alpha: number): RawShaderMaterial {

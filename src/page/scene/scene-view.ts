@@ -12,11 +12,11 @@ import { type Hit, pick } from './pick.ts';
 import { pipingOf } from './piping.ts';
 import type { Point } from './polylines.ts';
 import { routeOf, type Way, wayOf } from './route.ts';
-import { stageIn } from './stage.ts';
+import { type DrawStats, stageIn } from './stage.ts';
 import { undersizedRuns } from './undersized-runs.ts';
 
 export interface SceneView {
-  readonly stats: { frames: number; lastMs: number; calls: number; software: boolean };
+  readonly stats: DrawStats;
   /** Frames the pipes of these rows with some of what is round them. */
   framePipes(rows: readonly number[]): void;
   frameFixture(row: number): void;
@@ -44,6 +44,8 @@ export interface SceneParts {
 }
 
 const margin = 0.9;
+/** A model of more sections than this is drawn in lines first. */
+const firstInLines = 4000;
 
 export function sceneView(building: Building, store: Store, parts: SceneParts): SceneView {
   const { canvas } = parts;
@@ -69,13 +71,27 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
     pick(building, piping.polylines, stage.ray(x, y), slackPixels * stage.shared.pixel.value, inside, piping.visible);
   const theme = (): Theme => themes[store.state.theme];
 
+  let finishing = 0;
   const still = (): void => {
+    window.clearTimeout(finishing);
+    if (building.sectionCount > firstInLines && !piping.has('full')) {
+      // The first picture of a large model comes at once, in lines; the tubes are built behind it.
+      piping.setDetail('lines');
+      context.setCheap(true);
+      stage.draw();
+      finishing = window.setTimeout(finish, 60);
+      return;
+    }
+    finish();
+  };
+  const finish = (): void => {
     piping.setDetail('full');
     context.setCheap(false);
     stage.drawStill();
     placeLabels();
   };
   const moving = (): void => {
+    window.clearTimeout(finishing);
     piping.setDetail(stage.detail);
     context.setCheap(stage.detail !== 'full');
     stage.look(control.eye, reach);
@@ -218,6 +234,7 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
     },
     dispose() {
       run(false);
+      window.clearTimeout(finishing);
       control.dispose();
       piping.dispose();
       context.dispose();

@@ -7,12 +7,20 @@ import type { Detail } from './piping.ts';
 import type { Point } from './polylines.ts';
 import { smoothStill } from './smooth-still.ts';
 
+/** What drawing has cost, for the tests and for the choice of detail. Milliseconds; `firstAt` since navigation. */
+export interface DrawStats {
+  frames: number;
+  lastMs: number;
+  firstAt: number;
+  calls: number;
+  readonly software: boolean;
+}
+
 export interface Stage {
   readonly scene: Scene;
   readonly shared: SharedUniforms;
   readonly canvas: HTMLCanvasElement;
-  /** What the last frames took, for the tests and for the choice of detail. */
-  readonly stats: { frames: number; lastMs: number; calls: number; software: boolean };
+  readonly stats: DrawStats;
   look(eye: Eye, reach: number): void;
   setTheme(theme: Theme): void;
   /** Draws once at the next frame, however often it is called before. */
@@ -30,7 +38,7 @@ export interface Stage {
 /** Milliseconds: a frame dearer than this while moving asks for less detail. */
 const dear = 42;
 /** A picture dearer than this is not drawn eight times only to smooth its edges. */
-const dearStill = 400;
+const dearStill = 160;
 
 /** The renderer and its camera. Nothing runs while nothing changes. Throws where the browser has no WebGL 2. */
 export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
@@ -41,7 +49,7 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
   scene.background = new Color();
   const camera = new PerspectiveCamera(fieldOfView, 1);
   const shared = sharedUniforms();
-  const stats = { frames: 0, lastMs: 0, calls: 0, software };
+  const stats = { frames: 0, lastMs: 0, firstAt: 0, calls: 0, software };
   const ladder: readonly Detail[] = ['full', 'light', 'lines'];
   let rung = software && sections > 20_000 ? 2 : software && sections > 3000 ? 1 : 0;
   let asked = 0;
@@ -52,6 +60,7 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
     // Software drawing is only done when somebody looks at it: without this the measure would be of an empty promise.
     if (software) renderer.getContext().readPixels(0, 0, 1, 1, 0x1908, 0x1401, reading);
     stats.frames++;
+    if (stats.frames === 1) stats.firstAt = performance.now();
     stats.calls = renderer.info.render.calls;
     stats.lastMs = performance.now() - began;
   };

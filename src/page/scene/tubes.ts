@@ -19,10 +19,14 @@ export interface Ball {
  * Tubes and balls as one geometry: one draw call however many pipes. `position` is the point on the axis and `normal`
  * the way out from it, so that the shader can keep a thin pipe at least a pixel wide.
  */
-export function tubeGeometry(tubes: readonly Tube[], balls: readonly Ball[], sides: number): BufferGeometry {
+export function tubeGeometry(
+  tubes: readonly Tube[],
+  balls: readonly Ball[],
+  { tube: sides, ball: ballSides }: { readonly tube: number; readonly ball: number },
+): BufferGeometry {
   const rings = tubes.reduce((sum, { points }) => sum + points.length, 0);
   const spans = tubes.reduce((sum, { points }) => sum + points.length - 1, 0);
-  const ball = ballShape(sides);
+  const ball = ballShape(ballSides);
   const vertices = rings * sides + balls.length * ball.directions.length;
   const indices = spans * sides * 6 + balls.length * ball.triangles.length;
   const position = new Float32Array(vertices * 3);
