@@ -1,7 +1,7 @@
 import type { Box, Vec3 } from '../../geometry/vector.ts';
 import type { CentreLine, ElementClass, SizeWitness } from '../../model/model.ts';
 import type { Reader } from '../reader.ts';
-import { boundsOf } from '../solids/bounds.ts';
+import { boundsOf, inWorld } from '../solids/bounds.ts';
 import { centreLineOf } from '../solids/centre-line.ts';
 import { identity, originOf } from '../solids/frame.ts';
 import type { Placements } from '../solids/placements.ts';
@@ -31,9 +31,10 @@ export function drawnBody(reader: Reader, placements: Placements, solids: Solids
   if (isDoubtful && shape.body.length > 0 && shape.body.every((piece) => piece.shape.kind === 'prism')) {
     return { kind: 'other', origin, centreLine: null, box: null };
   }
-  const box = boundsOf(shape.body.length > 0 ? shape.body : shape.box, world);
+  const body = inWorld(shape.body, world);
+  const box = boundsOf(body.length > 0 ? body : inWorld(shape.box, world));
   const hasLine = kind === 'segment' || (kind === 'fitting' && isOneSweep(shape));
-  return { kind, origin, centreLine: hasLine ? centreLineOf(shape, world) : null, box };
+  return { kind, origin, centreLine: hasLine ? centreLineOf(body, shape.axis, world) : null, box };
 }
 
 const isOneSweep = ({ body }: ProductShape): boolean => body.length === 1 && body[0]!.shape.kind === 'tube';

@@ -2,7 +2,7 @@ import type { Vec3 } from '../../geometry/vector.ts';
 import type { Fabric, StoreyId, Wall } from '../../model/model.ts';
 import { metres } from '../../units/quantity.ts';
 import type { Reader } from '../reader.ts';
-import { boundsOf } from '../solids/bounds.ts';
+import { boundsOf, inWorld } from '../solids/bounds.ts';
 import { compose, type Frame, identity, moved, turned } from '../solids/frame.ts';
 import type { Piece } from '../solids/piece.ts';
 import type { Placements } from '../solids/placements.ts';
@@ -67,7 +67,7 @@ function fabric({ file, reader, placements, solids, storeyOf }: FabricSources, r
     name,
     predefinedType: word === 'NOTDEFINED' ? null : word,
     storey: storeyOf(record),
-    box: world === null ? null : boundsOf(body, world),
+    box: world === null ? null : boundsOf(inWorld(body, world)),
     outline: world === null ? null : planOutline(body, world),
   };
 }

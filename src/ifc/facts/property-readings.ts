@@ -1,3 +1,4 @@
+import type { Cursor } from '../lines/cursor.ts';
 import type { Reader } from '../reader.ts';
 import type { PortLinks } from './ports.ts';
 import type { PropertySets, Reading } from './property-sets.ts';
@@ -13,7 +14,8 @@ export interface PortReading {
 
 type Values = ReadonlyMap<string, string | number | boolean>;
 
-const aWall = 0xffffffff;
+/** Place of a wall: of walls only one set is read. */
+export const aWall = 0xffffffff;
 
 /** Properties by the things that have them. Sets of a type are given to the type on the way. */
 export class PropertyReadings {
@@ -27,22 +29,21 @@ export class PropertyReadings {
   private readonly common = new Map<number, Values>();
   private readonly byOwner = new Map<number, PortReading[]>();
 
+  /** `places` by record, 0 for nobody of ours; see the field. */
   constructor(
     reader: Reader,
     sets: PropertySets,
     types: Types,
-    elements: readonly number[],
+    elements: number,
+    places: Uint32Array,
     ports: PortLinks,
-    walls: readonly number[],
   ) {
     this.reader = reader;
     this.sets = sets;
     this.types = types;
     this.ports = ports;
-    this.places = new Uint32Array(reader.index.count);
-    for (const record of walls) this.places[record] = aWall;
-    for (let k = 0; k < elements.length; k++) this.places[elements[k]!] = k + 1;
-    this.own = Array<readonly Reading[] | undefined>(elements.length).fill(undefined);
+    this.places = places;
+    this.own = Array<readonly Reading[] | undefined>(elements).fill(undefined);
     this.relate('IFCRELDEFINESBYPROPERTIES');
     this.relate('IFCRELOVERRIDESPROPERTIES');
   }
@@ -69,20 +70,30 @@ export class PropertyReadings {
     for (let k = 0; k < relations.length; k++) {
       const record = relations[k]!;
       const things = cursor.at(reader.args[record]!).skip(4).ids();
-      let sets: readonly number[] | null = null;
-      for (let j = 0; j < things.length; j++) {
-        const thing = reader.follow(things[j]!, record);
-        if (thing < 0) continue;
-        sets ??= cursor.ids();
-        for (let i = 0; i < sets.length; i++) {
-          const set = reader.follow(sets[i]!, record);
-          if (set >= 0) this.give(thing, set);
-        }
+      this.give(things, cursor, record);
+    }
+  }
+
+  private give(things: readonly number[], cursor: Cursor, record: number): void {
+    const { reader } = this;
+    let sets: readonly number[] | null = null;
+    for (let j = 0; j < things.length; j++) {
+      const thing = reader.follow(things[j]!, record);
+      // Of most relations nobody of ours is part: then the set's reference is not even read.
+      if (thing < 0 || !this.isOurs(thing)) continue;
+      sets ??= cursor.ids();
+      for (let i = 0; i < sets.length; i++) {
+        const set = reader.follow(sets[i]!, record);
+        if (set >= 0) this.giveOne(thing, set);
       }
     }
   }
 
-  private give(thing: number, set: number): void {
+  private isOurs(thing: number): boolean {
+    return this.places[thing] !== 0 || this.types.has(thing) || this.ports.placeOf(thing) >= 0;
+  }
+
+  private giveOne(thing: number, set: number): void {
     const place = this.places[thing]!;
     if (place === aWall) this.giveWall(thing, set);
     else if (place > 0) {
@@ -90,7 +101,8 @@ export class PropertyReadings {
       if (readings.length === 0) return;
       const before = this.own[place - 1];
       this.own[place - 1] = before === undefined ? readings : before.concat(readings);
-    } else if (this.types.addSet(thing, set)) {
+    } else if (this.types.has(thing)) {
+      this.types.addSet(thing, set);
       if (this.reader.type(thing) === 'IFCWALLTYPE') this.giveWall(thing, set);
     } else this.givePort(thing, set);
   }

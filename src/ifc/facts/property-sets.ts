@@ -36,7 +36,9 @@ export class PropertySets {
   private readonly names: NameTable<NameSays>;
   private readonly cursor: Cursor;
   private readonly inner: Cursor;
-  private readonly known = new Map<number, readonly Reading[]>();
+  /** The set read last: one relation often gives it to many things, one after the other. */
+  private last = -1;
+  private lastReadings = none;
 
   constructor(reader: Reader, units: Units) {
     this.reader = reader;
@@ -54,8 +56,7 @@ export class PropertySets {
   read(record: number): readonly Reading[] {
     const kind = this.reader.type(record);
     if (kind !== 'IFCPROPERTYSET' && kind !== 'IFCELEMENTQUANTITY') return none;
-    const known = this.known.get(record);
-    if (known !== undefined) return known;
+    if (record === this.last) return this.lastReadings;
     const { cursor, reader } = this;
     const ids = cursor
       .at(reader.args[record]!)
@@ -78,7 +79,8 @@ export class PropertySets {
       this.property(property, named, set, 0, found);
     }
     const result = found === null || found.length === 0 ? none : found;
-    if (result !== none) this.known.set(record, result);
+    this.last = record;
+    this.lastReadings = result;
     return result;
   }
 

@@ -7,7 +7,7 @@ import { fabricOf, wallRecords } from './fabric.ts';
 import type { JoinedStoreys } from './join-storeys.ts';
 import { addNamedSize, judged, NamedSizes } from './judge.ts';
 import { PortLinks, readPorts } from './ports.ts';
-import { PropertyReadings } from './property-readings.ts';
+import { aWall, PropertyReadings } from './property-readings.ts';
 import { PropertySets, type Reading } from './property-sets.ts';
 import type { Source } from './source.ts';
 import { Spaces } from './spaces.ts';
@@ -54,7 +54,7 @@ class FactsReader {
   private readonly claims = new NamedSizes();
   private readonly records: readonly ElementRecord[];
   private readonly readings: PropertyReadings;
-  /** Place + 1 of an element by its record; 0 for none. */
+  /** By record. 0: nobody of ours; k + 1: element at place k; `aWall`: a wall. */
   private readonly places: Uint32Array;
   private readonly portsOf: PortId[][] = [];
 
@@ -72,9 +72,10 @@ class FactsReader {
     this.spaces = new Spaces(source, this.solids, storeys, first.spaces);
     const records = elementRecords(reader, this.links, this.systems, this.types);
     this.places = new Uint32Array(reader.index.count);
+    for (const record of wallRecords(reader)) this.places[record] = aWall;
     for (let k = 0; k < records.length; k++) this.places[records[k]!] = k + 1;
     // Sets reach their types before the first type is read.
-    this.readings = new PropertyReadings(reader, sets, this.types, records, this.links, wallRecords(reader));
+    this.readings = new PropertyReadings(reader, sets, this.types, records.length, this.places, this.links);
     this.records = records.map((record) => readElement(reader, record, this.links.countOf(record), this.types));
   }
 
@@ -83,21 +84,25 @@ class FactsReader {
     const { file, reader, placements } = source;
     const ports = readPorts(reader, placements, links, first.ports, this);
     for (let k = 0; k < ports.length; k++) this.keepPort(ports[k]!);
-    const elements: Element[] = [];
-    for (let k = 0; k < this.records.length; k++) elements.push(this.element(this.records[k]!, k));
+    const elements = this.records.map((record, k) => this.element(record, k));
     const storeyOf = (record: number): StoreyId | null => this.storeyOf(record);
     const fabric = fabricOf({ file, reader, placements, solids, associations, storeyOf, types, readings });
     return { elements, ports, systems: systems.systems, spaces: spaces.spaces, ...fabric };
   }
 
   elementAt(record: number): ElementId | null {
-    const place = this.places[record]! - 1;
+    const place = this.placeOf(record);
     return place < 0 ? null : ((this.first.elements + place) as ElementId);
   }
 
   isPiping(record: number): boolean {
-    const place = this.places[record]! - 1;
+    const place = this.placeOf(record);
     return place >= 0 && carriesSize.has(this.records[place]!.kind);
+  }
+
+  private placeOf(record: number): number {
+    const place = this.places[record]!;
+    return place === aWall ? -1 : place - 1;
   }
 
   private keepPort({ id, owner }: Port): void {

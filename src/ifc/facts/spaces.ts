@@ -1,5 +1,5 @@
 import type { Space, SpaceId } from '../../model/model.ts';
-import { boundsOf } from '../solids/bounds.ts';
+import { boundsOf, inWorld } from '../solids/bounds.ts';
 import { identity } from '../solids/frame.ts';
 import { readShape } from '../solids/product-shape.ts';
 import type { Solids } from '../solids/solids.ts';
@@ -21,7 +21,7 @@ export class Spaces {
       const definition = reader.follow(cursor.id(), record);
       const longName = cursor.text();
       const world = placement < 0 ? identity : placements.world(placement);
-      const box = world === null ? null : boundsOf(readShape(reader, solids, definition).body, world);
+      const box = world === null ? null : boundsOf(inWorld(readShape(reader, solids, definition).body, world));
       const id = (first + k) as SpaceId;
       this.ids.set(record, id);
       const storey = spatial.storeyOf(record);

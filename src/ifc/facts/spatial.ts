@@ -17,14 +17,12 @@ export class Spatial {
   readonly storeys: readonly StoreyRecord[];
   readonly spaces: Uint32Array;
   private readonly reader: Reader;
-  /** Record + 1 of the container, and of the whole, by record; 0 for none. */
-  private readonly containers: Uint32Array;
-  private readonly wholes: Uint32Array;
+  /** Record of the container, and of the whole, by record. */
+  private readonly containers = new Map<number, number>();
+  private readonly wholes = new Map<number, number>();
 
   constructor(reader: Reader, placements: Placements) {
     this.reader = reader;
-    this.containers = new Uint32Array(reader.index.count);
-    this.wholes = new Uint32Array(reader.index.count);
     // A product may be referenced in further storeys; the one that contains it comes first.
     this.contain('IFCRELCONTAINEDINSPATIALSTRUCTURE');
     this.contain('IFCRELREFERENCEDINSPATIALSTRUCTURE');
@@ -36,7 +34,7 @@ export class Spatial {
 
   /** The thing that a record is a part of; -1 for none. */
   wholeOf(record: number): number {
-    return this.wholes[record]! - 1;
+    return this.wholes.get(record) ?? -1;
   }
 
   /** Storey that a product or space belongs to, through its container and its wholes; -1 for none. */
@@ -53,8 +51,7 @@ export class Spatial {
     let at = record;
     for (let depth = 0; at >= 0 && depth < deepestTree; depth++) {
       if (this.reader.type(at) === wanted) return at;
-      const container = this.containers[at]! - 1;
-      at = container >= 0 ? container : this.wholes[at]! - 1;
+      at = this.containers.get(at) ?? this.wholes.get(at) ?? -1;
     }
     return -1;
   }
@@ -82,10 +79,10 @@ export class Spatial {
     }
   }
 
-  private give(to: Uint32Array, things: readonly number[], owner: number, from: number): void {
+  private give(to: Map<number, number>, things: readonly number[], owner: number, from: number): void {
     for (let k = 0; k < things.length; k++) {
       const thing = this.reader.follow(things[k]!, from);
-      if (thing >= 0 && to[thing] === 0) to[thing] = owner + 1;
+      if (thing >= 0 && !to.has(thing)) to.set(thing, owner);
     }
   }
 }

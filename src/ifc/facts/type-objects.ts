@@ -20,8 +20,7 @@ export class Types {
   readonly distributionOccurrences: readonly number[];
   private readonly reader: Reader;
   private readonly sets: PropertySets;
-  /** Record + 1 of the type by record; 0 for none. */
-  private readonly typeOf: Uint32Array;
+  private readonly typeOf = new Map<number, number>();
   /** Sets that relations give to a type, by its record. Holds every type that has occurrences. */
   private readonly added = new Map<number, number[]>();
   private readonly facts = new Map<number, TypeFacts>();
@@ -29,7 +28,6 @@ export class Types {
   constructor(reader: Reader, sets: PropertySets) {
     this.reader = reader;
     this.sets = sets;
-    this.typeOf = new Uint32Array(reader.index.count);
     const distribution: number[] = [];
     this.distributionOccurrences = distribution;
     const cursor = reader.cursor();
@@ -44,7 +42,7 @@ export class Types {
       for (let j = 0; j < occurrences.length; j++) {
         const occurrence = reader.follow(occurrences[j]!, record);
         if (occurrence < 0) continue;
-        this.typeOf[occurrence] = type + 1;
+        this.typeOf.set(occurrence, type);
         if (isDistribution) distribution.push(occurrence);
       }
     }
@@ -52,7 +50,7 @@ export class Types {
 
   /** Record of an occurrence's type; -1 for none. */
   recordOf(occurrence: number): number {
-    return this.typeOf[occurrence]! - 1;
+    return this.typeOf.get(occurrence) ?? -1;
   }
 
   /** Type object of an occurrence; null for none. */
@@ -66,11 +64,14 @@ export class Types {
     return facts;
   }
 
-  /** Adds a set that a relation gives to a type object; false where the record is none that has occurrences. */
-  addSet(record: number, set: number): boolean {
-    const list = this.added.get(record);
-    list?.push(set);
-    return list !== undefined;
+  /** True for a type object that has occurrences. */
+  has(record: number): boolean {
+    return this.added.has(record);
+  }
+
+  /** Adds a set that a relation gives to a type object. */
+  addSet(record: number, set: number): void {
+    this.added.get(record)?.push(set);
   }
 
   private read(record: number): TypeFacts {

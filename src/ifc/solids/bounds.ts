@@ -1,24 +1,31 @@
 import type { Box } from '../../geometry/vector.ts';
 import { boxOf, compose, emptyBox, type Frame, type GrowingBox, include, includeAll, moved, scaleOf } from './frame.ts';
-import type { Piece, Tube } from './piece.ts';
+import { type Piece, pieceOf, type Tube } from './piece.ts';
 
-/** World box around parts of a shape; null for none. Round sweeps by their exact extent, all others by their points. */
-export function boundsOf(pieces: readonly Piece[], world: Frame): Box | null {
+/** Box around parts of a shape; null for none. Round sweeps by their exact extent, all others by their points. */
+export function boundsOf(pieces: readonly Piece[]): Box | null {
+  if (pieces.length === 0) return null;
   const box = emptyBox();
-  for (const { shape, frame } of pieces) {
-    const f = compose(world, frame);
-    if (shape.kind === 'tube') includeTube(box, f, shape);
-    else if (shape.kind === 'mesh') includeAll(box, f, shape.points());
+  for (let k = 0; k < pieces.length; k++) {
+    const { shape, frame } = pieces[k]!;
+    if (shape.kind === 'tube') includeTube(box, frame, shape);
+    else if (shape.kind === 'mesh') includeAll(box, frame, shape.points());
     else {
       const { base, shift } = shape;
-      includeAll(box, f, base);
+      includeAll(box, frame, base);
       if (shift[0] !== 0 || shift[1] !== 0 || shift[2] !== 0) {
-        const top: Frame = compose(f, [1, 0, 0, 0, 1, 0, 0, 0, 1, shift[0], shift[1], shift[2]]);
-        includeAll(box, top, base);
+        includeAll(box, compose(frame, [1, 0, 0, 0, 1, 0, 0, 0, 1, shift[0], shift[1], shift[2]]), base);
       }
     }
   }
   return boxOf(box);
+}
+
+/** Parts with frames that carry them into the world. */
+export function inWorld(pieces: readonly Piece[], world: Frame): Piece[] {
+  const placed: Piece[] = [];
+  for (let k = 0; k < pieces.length; k++) placed.push(pieceOf(pieces[k]!.shape, compose(world, pieces[k]!.frame)));
+  return placed;
 }
 
 function includeTube(box: GrowingBox, f: Frame, { points, outerRadius }: Tube): void {

@@ -3,51 +3,35 @@ import type { CentreLine } from '../../model/model.ts';
 import { metres } from '../../units/quantity.ts';
 import { radiusAround } from './fit-around.ts';
 import { type FittedTube, fitStraight } from './fit-tube.ts';
-import { compose, type Frame, moved, scaleOf } from './frame.ts';
+import { type Frame, moved, scaleOf } from './frame.ts';
 import { type JoinedTube, joinTubes } from './join-tubes.ts';
 import type { Piece } from './piece.ts';
-import type { ProductShape } from './product-shape.ts';
 
 /**
- * The centre line of a round body in world metres: from its sweep, else from its Axis with the body's radius, else
- * fitted to its mesh. null where none of them gives one, as for a duct.
+ * The centre line of a round body whose parts lie in the world, in metres: from its sweep, else from its Axis with the body's radius, else
+ * fitted to its mesh. `world` places the axis. null where none of them gives one, as for a duct.
  */
-export function centreLineOf(shape: ProductShape, world: Frame): CentreLine | null {
+export function centreLineOf(body: readonly Piece[], axis: readonly Vec3[] | null, world: Frame): CentreLine | null {
   const tubes: JoinedTube[] = [];
-  for (const { shape: part, frame } of shape.body) {
-    if (part.kind !== 'tube') continue;
-    const f = compose(world, frame);
-    const k = scaleOf(f);
-    const inner = part.innerRadius === null ? null : part.innerRadius * k;
-    const points = part.points.map((point) => moved(f, point));
-    tubes.push({ points, outer: part.outerRadius * k, inner, ground: part.ground });
+  for (let i = 0; i < body.length; i++) {
+    const { shape, frame } = body[i]!;
+    if (shape.kind !== 'tube') continue;
+    const k = scaleOf(frame);
+    const inner = shape.innerRadius === null ? null : shape.innerRadius * k;
+    const points = shape.points.map((point) => moved(frame, point));
+    tubes.push({ points, outer: shape.outerRadius * k, inner, ground: shape.ground });
   }
   if (tubes.length > 0) {
     const { points, outer, inner, ground } = joinTubes(tubes);
     return line(points, outer, inner, ground, 0);
   }
-  const k = scaleOf(world);
-  if (shape.axis !== null) {
-    const around = radiusAround(shape.axis, shape.body);
-    const outer = around === null ? null : around.outer * k;
-    return line(
-      shape.axis.map((point) => moved(world, point)),
-      outer,
-      null,
-      'axis',
-      (around?.residual ?? 0) * k,
-    );
+  if (axis !== null) {
+    const points = axis.map((point) => moved(world, point));
+    const around = radiusAround(points, body);
+    return line(points, around?.outer ?? null, null, 'axis', around?.residual ?? 0);
   }
-  const fitted = largestFit(shape.body);
-  if (fitted === null) return null;
-  const inner = fitted.inner === null ? null : fitted.inner * k;
-  return line(
-    fitted.points.map((point) => moved(world, point)),
-    fitted.outer * k,
-    inner,
-    'mesh',
-    fitted.residual * k,
-  );
+  const fitted = largestFit(body);
+  return fitted === null ? null : line(fitted.points, fitted.outer, fitted.inner, 'mesh', fitted.residual);
 }
 
 /** Of several bodies the outermost is the pipe: what fills or lines it is drawn inside. */

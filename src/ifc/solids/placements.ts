@@ -56,7 +56,10 @@ export class Placements {
     const first = reader.follow(cursor.id(), record);
     const second = isPlane ? -1 : reader.follow(cursor.id(), record);
     const o = this.point(location);
-    if (first < 0 && second < 0) return [1, 0, 0, 0, 1, 0, 0, 0, 1, o[0], o[1], o[2]];
+    if (first < 0 && second < 0) {
+      if (o[0] === 0 && o[1] === 0 && o[2] === 0) return identity;
+      return [1, 0, 0, 0, 1, 0, 0, 0, 1, o[0], o[1], o[2]];
+    }
     return isPlane
       ? rightAngled(o, null, this.direction(first))
       : rightAngled(o, this.direction(first), this.direction(second));
