@@ -9,7 +9,7 @@ export function answersForm(questions: readonly Question[]): Readonly<Record<str
   const parts: Record<string, Record<string, unknown>> = { settings: {}, fixtures: {}, pipes: {}, batteries: {} };
   for (const { answer } of questions) {
     const entries = parts[answer.part];
-    if (entries === undefined || answer.key === null) continue;
+    if (entries === undefined || answer.key === null || doubled.test(answer.key)) continue;
     if (answer.field === null) entries[answer.key] = null;
     else entries[answer.key] = withNull(entries[answer.key], answer.field.split('.'));
   }
@@ -26,6 +26,9 @@ export function answersForm(questions: readonly Question[]): Readonly<Record<str
     cleanouts: [],
   };
 }
+
+/** The result's own id of an element whose GlobalId the model doubles or lacks: no key of an answers file meets it. */
+const doubled = /#\d+\.\d+$/;
 
 function withNull(entry: unknown, [field = '', ...deeper]: readonly string[]): Readonly<Record<string, unknown>> {
   const fields: Readonly<Record<string, unknown>> = typeof entry === 'object' && entry !== null ? { ...entry } : {};
