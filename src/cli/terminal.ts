@@ -27,7 +27,7 @@ export async function print(pieces: Iterable<string>): Promise<void> {
 
 /** Lines for a person, in colour where standard output is a terminal and nobody asked for none. */
 export async function printLines(lines: readonly TextLine[]): Promise<void> {
-  const paint = hasColour(process.stdout) ? painted : ({ text }: TextLine): string => visible(text);
+  const paint = wantsColour(process.stdout, process.env) ? painted : ({ text }: TextLine): string => visible(text);
   await print(lines.map((line) => `${paint(line).trimEnd()}\n`));
 }
 
@@ -47,8 +47,8 @@ async function write(text: string): Promise<void> {
 }
 
 /** https://no-color.org: a NO_COLOR that is not empty means none, whatever else is set. */
-const hasColour = (stream: NodeJS.WriteStream): boolean =>
-  stream.isTTY && !process.env.NO_COLOR && process.env.TERM !== 'dumb';
+export const wantsColour = ({ isTTY }: { readonly isTTY?: boolean }, env: NodeJS.ProcessEnv): boolean =>
+  isTTY === true && !env.NO_COLOR && env.TERM !== 'dumb';
 
 const painted = ({ text, tone }: TextLine): string =>
   tone === 'plain' ? visible(text) : `\u001B[${colours[tone]}m${visible(text)}\u001B[0m`;
