@@ -15,29 +15,35 @@ export interface FittedTube {
 const goodFit = 1e-4;
 const fewestPoints = 12;
 
-/** Straight tube that the corners of a mesh lie on; null where they lie on none. */
+/**
+ * Straight tube that the corners of a mesh lie on; null where they lie on none. Where no direction fits well, one is
+ * taken that fits loosely, as for coordinates rounded to centimetres: the residual says how loosely.
+ */
 export function fitStraight(mesh: Mesh): FittedTube | null {
   const flat = mesh.points();
   if (flat.length < fewestPoints * 3) return null;
-  let best: StraightFit | null = null;
-  const isGood = (): boolean => best !== null && best.residual < goodFit * best.walls.at(-1)!;
-  const attempt = (directions: readonly Vec3[]): void => {
-    for (const along of directions) {
-      if (isGood()) return;
-      const fit = straightFit(flat, along);
-      if (fit !== null && (best === null || fit.residual < best.residual)) best = fit;
-    }
-  };
-  attempt(
-    mesh
-      .cylinders()
-      .slice(0, 4)
-      .map(({ along }) => along),
-  );
-  attempt(principalDirections(flat));
-  if (!isGood()) attempt(longEdges(mesh, flat));
-  return best === null ? null : tubeOf(best, mesh, flat);
+  const named = mesh.cylinders().slice(0, 4);
+  const likely = [...named.map(({ along }) => along), ...principalDirections(flat)];
+  let fit = best(flat, likely, straightFit);
+  if (!isGood(fit)) fit = better(fit, best(flat, longEdges(mesh, flat), straightFit));
+  fit ??= best(flat, likely, looseFit);
+  return fit === null ? null : tubeOf(fit, mesh, flat);
 }
+
+type Fit = (flat: readonly number[], along: Vec3) => StraightFit | null;
+
+function best(flat: readonly number[], directions: readonly Vec3[], fitter: Fit): StraightFit | null {
+  let found: StraightFit | null = null;
+  for (const along of directions) {
+    found = better(found, fitter(flat, along));
+    if (isGood(found)) break;
+  }
+  return found;
+}
+
+const isGood = (fit: StraightFit | null): boolean => fit !== null && fit.residual < goodFit * fit.walls.at(-1)!;
+const better = (a: StraightFit | null, b: StraightFit | null): StraightFit | null =>
+  a === null || (b !== null && b.residual < a.residual) ? b : a;
 
 const mostEdges = 12;
 
@@ -83,11 +89,65 @@ interface StraightFit {
 const wallTolerance = 0.015;
 /** Corners whose distances from the axis differ by less than this belong to one wall. */
 const sameWall = 0.0015;
-/** Fewest directions, seen along the axis, in which a wall must have corners: four make a duct. */
-const fewestSides = 6;
 const mostWalls = 12;
 
+/** Walls are rings of corners that share a distance from the axis; every corner belongs to one. */
 function straightFit(flat: readonly number[], along: Vec3): StraightFit | null {
+  const seen = seenAlong(flat, along);
+  if (seen === null) return null;
+  const { radii, largest } = seen;
+  const sorted = radii.slice().sort();
+  const walls: number[] = [];
+  let squares = 0;
+  for (let k = 0; k < sorted.length; ) {
+    const first = sorted[k]!;
+    let end = k + 1;
+    let sum = first;
+    while (end < sorted.length && sorted[end]! - sorted[end - 1]! < sameWall * largest) sum += sorted[end++]!;
+    const last = sorted[end - 1]!;
+    const mean = sum / (end - k);
+    // Corners on the axis close the ends of a solid pipe.
+    if (mean > 0.05 * largest) {
+      if (last - first > 2 * wallTolerance * largest) return null;
+      if (walls.length === mostWalls || !goesRound(seen, first, last)) return null;
+      for (let j = k; j < end; j++) squares += (sorted[j]! - mean) ** 2;
+      walls.push(mean);
+    }
+    k = end;
+  }
+  if (walls.length === 0) return null;
+  const { x, y, u, v, from, to } = seen;
+  return { along, x, y, u, v, from, to, walls, residual: Math.sqrt(squares / radii.length) };
+}
+
+/** Root mean square distance from the wall, as a part of the radius, that a loose fit may have. */
+const looseTolerance = 0.12;
+
+/** One wall at the mean distance of all corners. */
+function looseFit(flat: readonly number[], along: Vec3): StraightFit | null {
+  const seen = seenAlong(flat, along);
+  if (seen === null || !goesRound(seen, 0, Infinity)) return null;
+  const { radii, x, y, u, v, from, to } = seen;
+  const mean = radii.reduce((sum, radius) => sum + radius, 0) / radii.length;
+  const residual = Math.sqrt(radii.reduce((sum, radius) => sum + (radius - mean) ** 2, 0) / radii.length);
+  return residual > looseTolerance * mean ? null : { along, x, y, u, v, from, to, walls: [mean], residual };
+}
+
+/** Points as seen along a direction, around the centre that fits them best. */
+interface Seen {
+  readonly x: Vec3;
+  readonly y: Vec3;
+  readonly u: number;
+  readonly v: number;
+  readonly from: number;
+  readonly to: number;
+  readonly across: Float64Array;
+  readonly up: Float64Array;
+  readonly radii: Float64Array;
+  readonly largest: number;
+}
+
+function seenAlong(flat: readonly number[], along: Vec3): Seen | null {
   const n = flat.length / 3;
   const x = unit(cross(along, Math.abs(along[2]) < 0.9 ? [0, 0, 1] : [1, 0, 0]));
   const y = cross(along, x);
@@ -119,50 +179,29 @@ function straightFit(flat: readonly number[], along: Vec3): StraightFit | null {
     radii[k] = radius;
     if (radius > largest) largest = radius;
   }
-  if (!(largest > 0)) return null;
-  const sorted = radii.slice().sort();
-  const walls: number[] = [];
-  let squares = 0;
-  for (let k = 0; k < n; ) {
-    const first = sorted[k]!;
-    let end = k + 1;
-    let sum = first;
-    while (end < n && sorted[end]! - sorted[end - 1]! < sameWall * largest) sum += sorted[end++]!;
-    const last = sorted[end - 1]!;
-    const mean = sum / (end - k);
-    // Corners on the axis close the ends of a solid pipe.
-    if (mean > 0.05 * largest) {
-      if (last - first > 2 * wallTolerance * largest) return null;
-      if (walls.length === mostWalls || sides(across, up, radii, u, v, first, last) < fewestSides) return null;
-      for (let j = k; j < end; j++) squares += (sorted[j]! - mean) ** 2;
-      walls.push(mean);
-    }
-    k = end;
-  }
-  return walls.length === 0 ? null : { along, x, y, u, v, from, to, walls, residual: Math.sqrt(squares / n) };
+  return largest > 0 ? { x, y, u, v, from, to, across, up, radii, largest } : null;
 }
 
-const seen = new Uint8Array(72);
+const steps = 72;
+/** Widest gap between neighbouring corners of a wall, seen along the axis, in steps of five degrees: a hexagon has 60°. */
+const widestGap = 14;
+const taken = new Uint8Array(steps);
 
-/** Number of different directions, in steps of five degrees, in which the corners of one wall stand. */
-function sides(
-  across: Float64Array,
-  up: Float64Array,
-  radii: Float64Array,
-  u: number,
-  v: number,
-  least: number,
-  most: number,
-): number {
-  seen.fill(0);
-  let count = 0;
+/** True where the corners between two radii stand all around the centre; four of them make a duct. */
+function goesRound({ across, up, radii, u, v }: Seen, least: number, most: number): boolean {
+  taken.fill(0);
   for (let k = 0; k < radii.length; k++) {
     if (radii[k]! < least || radii[k]! > most) continue;
-    const step = (Math.round(Math.atan2(up[k]! - v, across[k]! - u) * (36 / Math.PI)) + 72) % 72;
-    if (seen[step] === 0) count++;
-    seen[step] = 1;
+    taken[(Math.round(Math.atan2(up[k]! - v, across[k]! - u) * (steps / 2 / Math.PI)) + steps) % steps] = 1;
   }
-  return count;
+  const first = taken.indexOf(1);
+  if (first < 0) return false;
+  let gap = 0;
+  for (let k = first + 1; k <= first + steps; k++) {
+    gap = taken[k % steps] === 1 ? 0 : gap + 1;
+    if (gap > widestGap) return false;
+  }
+  return true;
 }
 
 /** Centre of the circle that fits points in a plane best (Kåsa's linear least squares); null for points on a line. */
@@ -192,8 +231,11 @@ function circleCentre(
   return { u: mu + (ur * vv - vr * uv) / (2 * determinant), v: mv + (vr * uu - ur * uv) / (2 * determinant) };
 }
 
+/** Part of a tube's length that some wall must cover: a ball and a cone have rings of corners, too. */
+const leastCoverage = 0.4;
+
 /** Outer and inner wall: of several steps in the wall those that run along most of the pipe. */
-function tubeOf(fit: StraightFit, mesh: Mesh, flat: readonly number[]): FittedTube {
+function tubeOf(fit: StraightFit, mesh: Mesh, flat: readonly number[]): FittedTube | null {
   const { along, x, y, u, v, from, to, walls, residual } = fit;
   const at = (t: number): Vec3 => [
     x[0] * u + y[0] * v + along[0] * t,
@@ -203,8 +245,10 @@ function tubeOf(fit: StraightFit, mesh: Mesh, flat: readonly number[]): FittedTu
   const points = [at(from), at(to)];
   if (walls.length === 1) return { points, outer: walls[0]!, inner: null, residual };
   const covered = coverage(fit, mesh, flat);
+  const most = Math.max(...covered);
+  if (most < leastCoverage) return null;
   const long = walls.filter((_, k) => covered[k]! >= 0.5);
-  const outer = long.at(-1) ?? walls[covered.indexOf(Math.max(...covered))]!;
+  const outer = long.at(-1) ?? walls[covered.indexOf(most)]!;
   return { points, outer, inner: long.filter((radius) => radius < outer).at(-1) ?? null, residual };
 }
 
