@@ -1,7 +1,9 @@
+import type { FixtureKind } from '../model/identity.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import type { FixtureId } from '../paths/paths.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Load } from '../units/quantity.ts';
+import type { FixtureRow } from './plumbing-code.ts';
 import type { Reading } from './use.ts';
 
 /** Two or more traps on one wet line that breathe through one foot. Facts only: a code's readings judge them. */
@@ -25,6 +27,8 @@ export interface BatteryFacts {
 
 export interface BatteryTrap {
   readonly fixture: FixtureId;
+  readonly kind: FixtureKind | null;
+  readonly row: FixtureRow;
   readonly size: NominalSize;
   readonly load: Load;
   readonly closet: boolean;
@@ -33,6 +37,8 @@ export interface BatteryTrap {
   readonly free: boolean;
   /** A dry vent stands on its own drain. */
   readonly ownVent: boolean;
+  /** Vertical pipes of its own drain between the trap and the line, and their height in metres. */
+  readonly drops: { readonly pipes: number; readonly height: number };
   /** Joint on the line where its arm ends, and its place: 0 is the foot. */
   readonly joins: JointId;
   readonly place: number;
@@ -43,6 +49,8 @@ export interface BatteryTrap {
 /** A fixture with a vent of its own whose drain joins the line. */
 export interface Guest {
   readonly fixture: FixtureId;
+  readonly kind: FixtureKind | null;
+  readonly row: FixtureRow;
   readonly load: Load;
   readonly storey: number;
   readonly joins: JointId;
@@ -61,6 +69,10 @@ export interface WetLine {
   readonly offsets: readonly { readonly length: number; readonly joined: boolean }[];
   /** The line runs through a stack. */
   readonly stack: boolean;
+  /** Pipes of the line that are vertical and level, and the length of the whole in metres. */
+  readonly vertical: number;
+  readonly level: number;
+  readonly length: number;
 }
 
 export interface CircuitLine {
@@ -77,6 +89,11 @@ export interface CircuitLine {
   readonly toLastTrap: readonly PipeId[];
   readonly vertical: number;
   readonly stackUpstream: boolean;
+  /** Everything that drains through the last pipe of the branch, additional fixtures too, and the closets among it. */
+  readonly load: Load;
+  readonly closets: number;
+  /** The branch ends at a stack that carries water from above. */
+  readonly soilAbove: boolean;
   /** Traps whose arms reach the start before any other trap joins. */
   readonly trapsAtStart: number;
   readonly relief: Relief | null;

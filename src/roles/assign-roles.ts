@@ -64,6 +64,7 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
       const { kind, detail } = identityOf(fixture);
       return { kind, emergency: detail.emergency };
     }),
+    kindOf: (fixture) => identityOf(fixture).kind,
     live: (joint) => liveAt.get(joint) ?? null,
     wordOf: (fixtures, pipes) => designersWord(facts, fixtures, pipes),
   };

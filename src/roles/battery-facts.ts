@@ -1,6 +1,7 @@
 import type { BatteryFacts, BatteryTrap, CircuitLine, Guest, Relief, WetLine } from '../codes/battery.ts';
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import type { Reading } from '../codes/use.ts';
+import type { FixtureKind } from '../model/identity.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import type { FixtureId, TrapAir } from '../paths/paths.ts';
 import { planTurn } from '../paths/turns.ts';
@@ -16,6 +17,7 @@ export interface BatteryContext extends StackContext {
   /** A stack's foot lies upstream of the pipe. By pipe id. */
   readonly stackAbove: readonly boolean[];
   readonly free: readonly (FreeTrap | null)[];
+  readonly kindOf: (fixture: FixtureId) => FixtureKind | null;
   /** Joint with a live dry vent standing on it. By joint id. */
   readonly live: (joint: JointId) => PipeId | null;
   readonly wordOf: (fixtures: readonly FixtureId[], pipes: readonly PipeId[]) => Reading | null;
@@ -75,17 +77,21 @@ function placesOf({ stream }: BatteryContext, foot: JointId, line: readonly Pipe
 }
 
 function batteryTrap(context: BatteryContext, trap: TrapAir, places: ReadonlyMap<JointId, number>): BatteryTrap {
-  const { loads, paths, floors, free } = context;
+  const { loads, paths, floors, free, stream } = context;
   const { row, load, trap: size } = loads.fixtures[trap.fixture]!;
   const joins = trap.armEnd!;
+  const drops = trap.arm.filter((pipe) => paths.vertical[pipe] === true);
   return {
     fixture: trap.fixture,
+    kind: context.kindOf(trap.fixture),
+    row,
     size,
     load,
     closet: row.closet,
     emergency: row.emergency,
     free: free[trap.fixture] !== null,
     ownVent: trap.through.length === 0,
+    drops: { pipes: drops.length, height: drops.reduce((sum, pipe) => sum + stream.span(pipe), 0) },
     joins,
     place: places.get(joins) ?? 0,
     storey: floors.of(paths.fixtures[trap.fixture]!),
@@ -94,7 +100,7 @@ function batteryTrap(context: BatteryContext, trap: TrapAir, places: ReadonlyMap
 
 /** Fixtures that drain into the line and breathe elsewhere. */
 function guestsOf(
-  { loads, paths, floors, stream }: BatteryContext,
+  { loads, paths, floors, stream, kindOf }: BatteryContext,
   { foot, traps }: Draft,
   line: readonly PipeId[],
   places: ReadonlyMap<JointId, number>,
@@ -113,7 +119,8 @@ function guestsOf(
       joins = joint;
       break;
     }
-    guests.push({ fixture, load: loads.fixtures[fixture]!.load, storey: floors.of(paths.fixtures[fixture]!), joins });
+    const { load, row } = loads.fixtures[fixture]!;
+    guests.push({ fixture, kind: kindOf(fixture), row, load, storey: floors.of(paths.fixtures[fixture]!), joins });
   }
   return guests.sort((a, b) => a.fixture - b.fixture);
 }
@@ -124,7 +131,7 @@ function wetLine(
   traps: readonly BatteryTrap[],
   guests: readonly Guest[],
 ): WetLine {
-  const { inStack } = context;
+  const { inStack, paths, stream } = context;
   const lastPlace = Math.max(...traps.map(({ place }) => place));
   const atEnd = traps.filter(({ place, free }) => place === lastPlace && !free);
   // The most downstream one, or the two that join there symmetrically, do not pass the wet vent.
@@ -145,6 +152,9 @@ function wetLine(
     upperStoreys: upper.map((storey) => ({ storey, load: sum(all.filter((one) => one.storey === storey)) })),
     offsets: offsetsOf(context, line),
     stack: line.some((pipe) => inStack[pipe] !== null),
+    vertical: line.filter((pipe) => paths.vertical[pipe] === true).length,
+    level: line.filter((pipe) => paths.vertical[pipe] !== true).length,
+    length: line.reduce((total, pipe) => total + stream.span(pipe), 0),
   };
 }
 
@@ -208,11 +218,24 @@ function circuitLine(
     toLastTrap,
     vertical: toLastTrap.filter((pipe) => paths.vertical[pipe] === true).length,
     stackUpstream: toLastTrap.some((pipe) => inStack[pipe] !== null || stackAbove[pipe]),
+    ...carried(context, end),
     trapsAtStart: served.filter(({ joins }) => joins === start).length,
     relief,
     additional,
     stretches: stretchesWith(additional),
   };
+}
+
+/** What the branch carries past its last trap, and whether the stack it ends at has drainage from above. */
+function carried(
+  { stream, loads, inStack, paths }: BatteryContext,
+  end: JointId,
+): Pick<CircuitLine, 'load' | 'closets' | 'soilAbove'> {
+  let last = stream.outflow[end] ?? null;
+  const { load, closets } = last === null ? { load: noLoad, closets: 0 } : loads.pipes[last]!;
+  while (last !== null && inStack[last] === null) last = paths.next[last] ?? null;
+  const above = last === null ? [] : stream.inflows[stream.up(last)]!;
+  return { load, closets, soilAbove: above.some((pipe) => inStack[pipe] !== null) };
 }
 
 function stretchesOf(
