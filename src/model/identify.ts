@@ -11,7 +11,7 @@ import type { Contradiction } from './judge-kind.ts';
 import type { Identified } from './made-identity.ts';
 import type { Element, Model } from './model.ts';
 import type { NamesTable } from './names-table.ts';
-import { ventingOfSystems } from './venting-word.ts';
+import { ventingOfSystems, ventingWord } from './venting-word.ts';
 
 /** What all elements of a model share while they are identified. */
 export interface IdentifyFacts {
@@ -34,7 +34,9 @@ export function identify(model: Model, answers: Answers, names: NamesTable): Wit
   const book = answerBook(answers);
   const findings: Finding[] = [];
   const identities = model.elements.map((element) => {
-    const { identity, contradiction } = identifyElement(element, facts);
+    const { identity: found, contradiction } = identifyElement(element, facts);
+    const reading = found.part === 'fixture' ? ventingWord(element, facts.venting, names) : null;
+    const identity = reading === null ? found : { ...found, reading };
     const answered = answeredBy(book, element, identity);
     if (contradiction !== null && answered === identity) findings.push(contradicted(element, contradiction));
     return answered;

@@ -1,6 +1,6 @@
 import type { Broken } from '../codes/battery.ts';
 import type { Reading } from '../codes/use.ts';
-import type { JointId } from '../network/network.ts';
+import type { JointId, PipeId } from '../network/network.ts';
 import { type BatteryContext, batteryFacts, type Draft } from './battery-facts.ts';
 import { trapsByFoot } from './feet.ts';
 import type { Battery, ReadingGround } from './roles.ts';
@@ -14,17 +14,13 @@ export function formBatteries(context: BatteryContext, answered: (battery: Batte
   const drafts = trapsByFoot(context.paths)
     .map(({ foot, traps }): Draft => ({ foot, traps, additional: [] }))
     .filter(({ traps }) => traps.some(({ through }) => through.length > 0));
-  const byFoot = new Map(drafts.map((draft) => [draft.foot, draft]));
   const onStackVents = stackJoints(context);
   const batteries: Battery[] = [];
-  for (const draft of inFlowOrder(context, drafts)) {
-    if (!byFoot.delete(draft.foot)) continue;
-    const { row, joined } = lengthen(context, draft, byFoot);
-    for (const foot of joined) byFoot.delete(foot);
+  for (const row of longestRows(context, drafts)) {
     const judged = withoutFreeTraps(context, row, batteries.length);
     if (judged === null) continue;
     const word = answered(judged);
-    if (word === null && judged.facts.word === null && !isRow(judged, onStackVents.has(draft.foot))) continue;
+    if (word === null && judged.facts.word === null && !isRow(judged, onStackVents.has(row.foot))) continue;
     batteries.push(word === null || word === judged.reading ? judged : readAs(judged, word));
   }
   return batteries;
@@ -37,41 +33,72 @@ export function formBatteries(context: BatteryContext, answered: (battery: Batte
 const isRow = ({ facts, broken }: Battery, footOnStack: boolean): boolean =>
   broken.length === 0 || (facts.traps.length > 1 && !facts.wet.stack && !footOnStack);
 
-/** Upstream feet first, so that a row finds the feet below it untaken. */
+/** Every row as long as it holds; a foot that a longer row takes in makes no row of its own. In flow order. */
+function longestRows(context: BatteryContext, drafts: readonly Draft[]): Draft[] {
+  const byFoot = new Map(drafts.map((draft) => [draft.foot, draft]));
+  const ordered = inFlowOrder(context, drafts);
+  const rows = new Map(ordered.map((draft) => [draft.foot, lengthen(context, draft, byFoot)]));
+  const takers = new Map<JointId, number>();
+  for (const { joined } of rows.values()) for (const foot of joined) takers.set(foot, (takers.get(foot) ?? 0) + 1);
+  const taken = new Set<JointId>();
+  const free = ordered.map(({ foot }) => foot).filter((foot) => !takers.has(foot));
+  // Rows that nobody takes in stand; what they take in falls, and what only those would have taken in stands again.
+  for (let at = 0; at < free.length; at++) {
+    const foot = free[at]!;
+    for (const below of rows.get(foot)!.joined) {
+      if (!taken.has(foot)) taken.add(below);
+      const left = takers.get(below)! - 1;
+      takers.set(below, left);
+      if (left === 0) free.push(below);
+    }
+  }
+  return ordered.filter(({ foot }) => !taken.has(foot)).map(({ foot }) => rows.get(foot)!.row);
+}
+
+/** By the place of their foot in the flow. */
 function inFlowOrder({ paths, stream }: BatteryContext, drafts: readonly Draft[]): Draft[] {
   const place = new Map(paths.inFlowOrder.map((pipe, at) => [pipe, at]));
   const at = ({ foot }: Draft): number => place.get(stream.outflow[foot]!) ?? 0;
   return [...drafts].sort((a, b) => at(a) - at(b) || a.foot - b.foot);
 }
 
-/** The row with the feet below it on the same level line, as long as it holds as circuit vented. */
+/** The row with the feet below it on the same level line, as long as it holds. */
 function lengthen(
   context: BatteryContext,
   draft: Draft,
   byFoot: ReadonlyMap<JointId, Draft>,
 ): { row: Draft; joined: readonly JointId[] } {
-  const { paths, stream } = context;
+  const { stream } = context;
+  const line = levelLine(context, draft.foot);
+  const onLine = new Set(line.map((pipe) => stream.down(pipe)));
   let best: { row: Draft; joined: readonly JointId[] } = { row: draft, joined: [] };
   let traps = draft.traps;
   const additional: JointId[] = [];
   const joined: JointId[] = [];
-  let level = false;
-  let joint = draft.foot;
-  for (let pipe = stream.outflow[joint] ?? null; pipe !== null; pipe = stream.outflow[joint] ?? null) {
-    // Past the vertical part of the circuit vent the branch is level, and a drop ends it.
-    if (context.inStack[pipe] !== null || (level && paths.vertical[pipe] === true)) break;
-    level ||= paths.vertical[pipe] !== true;
-    joint = stream.down(pipe);
-    const other = byFoot.get(joint) ?? guestRow(context, byFoot, joint, pipe);
+  for (const pipe of line) {
+    const joint = stream.down(pipe);
+    const other = byFoot.get(joint) ?? guestRow(context, byFoot, joint, pipe, onLine);
     if (other === undefined) continue;
-    const onLine = other.foot === joint;
-    if (onLine) additional.push(joint);
+    const stands = other.foot === joint;
+    if (stands) additional.push(joint);
     joined.push(other.foot);
-    traps = [...traps, ...other.traps.filter(({ through }) => onLine || through.length > 0)];
+    traps = [...traps, ...other.traps.filter(({ through }) => stands || through.length > 0)];
     const longer: Draft = { foot: draft.foot, traps, additional: [...additional] };
-    if (isOneRow(context, longer, other, onLine)) best = { row: longer, joined: [...joined] };
+    if (isOneRow(context, longer, other, stands)) best = { row: longer, joined: [...joined] };
   }
   return best;
+}
+
+/** From a foot down with the water: the vertical part of a circuit vent, then level pipes up to a drop or a stack. */
+function levelLine({ stream, paths, inStack }: BatteryContext, foot: JointId): PipeId[] {
+  const line: PipeId[] = [];
+  let level = false;
+  for (let pipe = stream.outflow[foot] ?? null; pipe !== null; pipe = paths.next[pipe] ?? null) {
+    if (inStack[pipe] !== null || (level && paths.vertical[pipe] === true)) break;
+    level ||= paths.vertical[pipe] !== true;
+    line.push(pipe);
+  }
+  return line;
 }
 
 /**
@@ -93,18 +120,23 @@ function guestRow(
   { stream, loads, paths }: BatteryContext,
   byFoot: ReadonlyMap<JointId, Draft>,
   joint: JointId,
-  line: number,
+  line: PipeId,
+  onLine: ReadonlySet<JointId | null>,
 ): Draft | undefined {
   for (const inflow of stream.inflows[joint]!) {
     if (inflow === line) continue;
     const { from, to } = loads.pipes[inflow]!;
-    for (const fixture of loads.order.slice(from, to)) {
+    for (const fixture of loads.order.slice(from, Math.min(to, from + mostGuests))) {
       const { foot, through } = paths.traps[fixture]!;
-      if (foot !== null && through.length === 0 && byFoot.has(foot)) return byFoot.get(foot);
+      const row = foot !== null && through.length === 0 ? byFoot.get(foot) : undefined;
+      if (row?.traps.every(({ through: ways, armEnd }) => ways.length === 0 || onLine.has(armEnd))) return row;
     }
   }
   return undefined;
 }
+
+/** A drain that carries more fixtures than this is a branch of its own, no guest. */
+const mostGuests = 12;
 
 /** A trap that a rule frees of a vent stays in the row only where the row holds with it. */
 function withoutFreeTraps(context: BatteryContext, draft: Draft, id: number): Battery | null {
