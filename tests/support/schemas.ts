@@ -12,7 +12,13 @@ const schemaFiles = {
 } as const;
 
 const read = (file: string): object => JSON.parse(readFileSync(resolve(src, file), 'utf8'));
-const ajv = new Ajv2020({ allErrors: true, strict: true, strictTypes: false, strictRequired: false, allowUnionTypes: true });
+const ajv = new Ajv2020({
+  allErrors: true,
+  strict: true,
+  strictTypes: false,
+  strictRequired: false,
+  allowUnionTypes: true,
+});
 const validators = new Map<string, ValidateFunction>();
 
 /** What the published schema says against a value: one line a fault, none for a good one. */
