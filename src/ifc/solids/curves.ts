@@ -33,11 +33,23 @@ export class Curves {
     if (kind === 'IFCLINE') {
       return from === null || to === null ? null : [this.onLine(record, from), this.onLine(record, to)];
     }
-    const whole = this.curve(record, 0);
+    const arc = from === null || to === null ? null : this.partOfCircle(record, from, to);
+    const whole = arc ?? this.curve(record, 0);
     if (whole === null || kind !== 'IFCPOLYLINE' || from === null || to === null) return whole;
     // On a polyline one is the length of one leg. Many writers put 0 and 1 for "all of it", so that is what it means.
     const legs = whole.length - 1;
     return (from === 0 && to === 1) || from < 0 || to > legs || from >= to ? whole : legsBetween(whole, from, to);
+  }
+
+  /** The part of a trimmed circle that a sweep asks for by the circle's own parameter; null for all round and other curves. */
+  private partOfCircle(record: number, from: number, to: number): Vec3[] | null {
+    const { reader, radians } = this;
+    if (reader.type(record) !== 'IFCTRIMMEDCURVE') return null;
+    const basis = reader.follow(reader.open(record).id(), record);
+    const angle = (to - from) * radians;
+    if (reader.type(basis) !== 'IFCCIRCLE' || angle <= 1e-6 || angle >= 2 * Math.PI - 1e-6) return null;
+    // A sweep from 0 to 1 says "all of it", whatever the unit of angles.
+    return from === 0 && to === 1 ? null : this.arc(basis, from * radians, to * radians);
   }
 
   /** Points of a circle or ellipse from one point on it to another, counter-clockwise where `sense` holds. */

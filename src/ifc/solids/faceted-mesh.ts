@@ -130,11 +130,27 @@ export class FacetedMesh implements Mesh {
     const end = this.vertexPoint(endId, edge, cursor);
     const first = isForward ? start : end;
     if (first >= 0) ring.push(this.corner(first, flat));
-    // All other curved edges are taken as straight.
-    const kind = reader.type(curve);
-    if (kind !== 'IFCCIRCLE' && kind !== 'IFCELLIPSE') return;
-    const bulge = this.curves.arcBetween(curve, placements.point(start), placements.point(end), sameSense).slice(1, -1);
+    const bulge = this.bulge(curve, placements.point(start), placements.point(end), sameSense);
     for (const one of isForward ? bulge : bulge.reverse()) ring.push(loose(one, flat));
+  }
+
+  /** Points of a curved edge between its vertices; none for straight ones. */
+  private bulge(curve: number, start: Vec3, end: Vec3, sameSense: boolean): Vec3[] {
+    switch (this.reader.type(curve)) {
+      case 'IFCCIRCLE':
+      case 'IFCELLIPSE':
+        return this.curves.arcBetween(curve, start, end, sameSense).slice(1, -1);
+      case 'IFCBSPLINECURVE':
+      case 'IFCBSPLINECURVEWITHKNOTS':
+      case 'IFCRATIONALBSPLINECURVEWITHKNOTS':
+      case 'IFCPOLYLINE':
+      case 'IFCTRIMMEDCURVE': {
+        const points = (this.curves.points(curve) ?? []).slice(1, -1);
+        return sameSense ? points : points.reverse();
+      }
+      default:
+        return [];
+    }
   }
 
   private cylinder(surface: number, cursor: Cursor): void {

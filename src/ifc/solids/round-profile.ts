@@ -6,6 +6,8 @@ const fewestCorners = 6;
 const roundTolerance = 0.01;
 /** Widest chord of an outline that still goes round, as a part of the radius: a hexagon's is 1. */
 const widestChord = 1.1;
+/** Least length of an outline that goes round, as a part of the radius: a hexagon's is 6, a flat arc's much less. */
+const leastLength = 5;
 
 /** Centre and radius of an outline whose points all lie on one circle and leave no wide gap; else null. */
 export function roundness(points: readonly Vec3[]): { readonly centre: Vec3; readonly radius: number } | null {
@@ -14,15 +16,17 @@ export function roundness(points: readonly Vec3[]): { readonly centre: Vec3; rea
   if (ring.length < fewestCorners) return null;
   const centre = circleThrough(ring);
   if (centre === null) return null;
-  let [least, most, widest] = [Infinity, 0, 0];
+  let [least, most, widest, total] = [Infinity, 0, 0, 0];
   for (const [k, one] of ring.entries()) {
     const radius = distance(one, centre);
     least = Math.min(least, radius);
     most = Math.max(most, radius);
-    widest = Math.max(widest, distance(one, ring[(k + 1) % ring.length]!));
+    const chord = distance(one, ring[(k + 1) % ring.length]!);
+    widest = Math.max(widest, chord);
+    total += chord;
   }
-  const isRound = most > 0 && most - least <= roundTolerance * most && widest <= widestChord * most;
-  return isRound ? { centre, radius: most } : null;
+  const isRound = most - least <= roundTolerance * most && widest <= widestChord * most && total >= leastLength * most;
+  return most > 0 && isRound ? { centre, radius: most } : null;
 }
 
 /** Centre of the circle through three points far apart on a ring. */

@@ -1,6 +1,7 @@
 import { add, type Vec3 } from '../../geometry/vector.ts';
 import type { Cursor } from '../lines/cursor.ts';
 import type { Reader } from '../reader.ts';
+import { besideArc } from './arc.ts';
 import { Curves } from './curves.ts';
 import { compose, type Frame, identity } from './frame.ts';
 import { Meshes } from './meshes.ts';
@@ -138,7 +139,10 @@ export class Solids {
     if (profile === null || points === null || points.length < 2) return none;
     const frame = this.axesAt(position, record);
     const { round } = profile;
-    if (round !== null) return [pieceOf(tubeOf(points, round.outer, round.inner, 'swept-disk'), frame)];
+    if (round !== null) {
+      const path = besideArc(points, Math.hypot(round.centre[0], round.centre[1]));
+      return [pieceOf(tubeOf(path, round.outer, round.inner, 'swept-disk'), frame)];
+    }
     const reach = Math.max(...outlineOf(profile).map(([x, y]) => Math.hypot(x, y)));
     const around = points.flatMap(([x, y, z]) => [x - reach, y - reach, z - reach, x + reach, y + reach, z + reach]);
     return [pieceOf(prismOf(around, [0, 0, 0]), frame)];
