@@ -7,11 +7,11 @@ import type { TableSource } from '../tables/table-source.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import { codeSettings } from './code-settings.ts';
 import { npc } from './npc/npc.ts';
-import type { PlumbingCode } from './plumbing-code.ts';
+import type { CodeRules, PlumbingCode } from './plumbing-code.ts';
 import type { Tools } from './tools.ts';
 
 /** The rule module of each family; its tables stand in `tables/<family>/`. */
-const modules: Readonly<Record<string, (tools: Tools) => ReturnType<typeof npc>>> = { npc };
+const modules: Readonly<Record<string, (tools: Tools) => CodeRules>> = { npc };
 
 export interface CodeSources {
   readonly tables: TableSource;

@@ -4,8 +4,9 @@ import type { Cell } from '../tables/table.ts';
 import type { WallRules } from '../tables/wall-rules.ts';
 import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
 import type { Load } from '../units/quantity.ts';
-import type { BatteryFacts, Broken } from './battery.ts';
+import type { BatteryFacts, Broken, CircuitLine } from './battery.ts';
 import type { Check } from './check.ts';
+import type { Role } from './role.ts';
 import type { SizingRule } from './sizing-rule.ts';
 import type { Reading } from './use.ts';
 
@@ -43,16 +44,56 @@ export interface PlumbingCode {
   readonly sewerBegins: number;
   /** Horizontal offsets of a stack shorter than this, metres, count as stack. */
   readonly stackOffset: number;
-  readonly batteryLimits: {
-    readonly reliefDrainLoad: Load;
-    readonly additionalAfter: number;
-    readonly turnDegrees: number;
-  };
+  readonly batteryLimits: BatteryLimits;
+  /** How far a dry vent is measured; null where the code asks nothing of its length. */
+  readonly ventLength: (role: Role) => VentLengthTo | null;
+  /** Load that enters the wet vent table: what the whole wet vent takes, or what passes each section of it. */
+  readonly wetVentLoad: 'whole' | 'section';
+  /** A vent that turns down before it goes up is one the code knows, with conditions of its own. */
+  readonly islandVents: boolean;
   /** Fixtures in one space that count less together than one by one; null where the code has no such rule. */
   readonly group: GroupRule | null;
+  /** Fixtures in a row that count more together than one by one; null where the code has no such rule. */
+  readonly row: RowLoadRule | null;
+  /** What the code counts among the fixtures of a pipe besides water closets. */
+  readonly counts: readonly FixtureCount[];
   /** Which of several fixtures on one trap put their load in; null where the code counts each by itself. */
   readonly sharedTrap: SharedTrapRule | null;
 }
+
+/** A family of codes as its module gives it: what does not come from its tables and settings alone. */
+export type CodeRules = Omit<
+  PlumbingCode,
+  | 'id'
+  | 'family'
+  | 'title'
+  | 'edition'
+  | 'unit'
+  | 'series'
+  | 'dimensions'
+  | 'omitSizes'
+  | 'settings'
+  | 'localTables'
+  | 'ruleTitle'
+  | 'walls'
+>;
+
+/** What a code allows and asks of rows of fixtures. */
+export interface BatteryLimits {
+  /** Most load of a drain that stands in for a relief vent. */
+  readonly reliefDrainLoad: Load;
+  /** Whether a circuit-vented branch must have a relief vent. */
+  readonly reliefDue: (branch: Pick<CircuitLine, 'closets' | 'soilAbove'>) => boolean;
+  /** From how many fixtures and what turn on a branch needs a further circuit vent; infinite where the code knows none. */
+  readonly additionalAfter: number;
+  readonly turnDegrees: number;
+}
+
+/**
+ * End of a vent's length, counted from its foot: where it meets another vent that carries more air; the first stack
+ * vent, vent stack or header; open air.
+ */
+export type VentLengthTo = 'join' | 'stack' | 'sky';
 
 /** One answer for each fixture: false where another one on the trap counts for it. */
 export type SharedTrapRule = (
@@ -92,6 +133,28 @@ export interface FixtureRows {
   rowsFor(kind: FixtureKind | null, detail: FixtureDetail): readonly FixtureRow[];
 }
 
+/** Fixtures of one kind side by side: from `least` of them on, each counts `each` on the drains they share. */
+export interface RowLoadRule {
+  readonly clause: string;
+  readonly kind: FixtureKind;
+  readonly least: number;
+  readonly each: Load;
+}
+
+/** What a count may look at of one fixture. */
+export interface CountedFixture {
+  readonly kind: FixtureKind | null;
+  readonly row: FixtureRow;
+  readonly trap: NominalSize;
+  readonly load: Load;
+}
+
+/** A name and what it counts: `PipeUse.counts` and `VentUse.counts` hold the number by this name. */
+export interface FixtureCount {
+  readonly id: string;
+  readonly takes: (fixture: CountedFixture) => boolean;
+}
+
 export interface GroupRule {
   readonly clause: string;
   /** Part of a group that a row is, or null. */
@@ -102,5 +165,7 @@ export interface GroupRule {
 /** One way to read a battery, and the conditions that the code sets on it. */
 export interface ReadingRule {
   readonly reading: Reading;
+  /** Whether the drawing is of the sort that this reading is about; absent: every row that breathes from upstream. */
+  readonly applies?: (facts: BatteryFacts) => boolean;
   readonly broken: (facts: BatteryFacts) => readonly Broken[];
 }

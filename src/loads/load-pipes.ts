@@ -3,12 +3,15 @@ import type { ElementId } from '../model/model.ts';
 import type { FixtureId } from '../paths/paths.ts';
 import { type Load, noLoad, plusLoad } from '../units/quantity.ts';
 import { bathroomGroups } from './bathroom-groups.ts';
+import { countFixtures } from './count-fixtures.ts';
 import { type FixtureFacts, fixtureLoads } from './fixture-loads.ts';
-import type { Loads, PipeLoad, Scenario } from './loads.ts';
+import { fixturesInRows } from './fixtures-in-rows.ts';
+import type { BathroomGroup, Bundle, Loads, PipeLoad, Scenario } from './loads.ts';
 
 /**
  * The load on every pipe in one scenario: what its fixtures put in, plus what the pipes upstream carry, in one pass
- * with the flow. A bathroom group counts its own figure on every pipe that carries all of it, and never more on a part.
+ * with the flow. A bathroom group counts its own figure on every pipe that carries all of it, and never more on a part;
+ * fixtures in a row count more where they share a drain.
  */
 export function loadPipes(facts: FixtureFacts, scenario: Scenario): WithFindings<Loads> {
   const { paths, network, modelled } = facts;
@@ -20,6 +23,11 @@ export function loadPipes(facts: FixtureFacts, scenario: Scenario): WithFindings
   groups.forEach(({ members }, group) => {
     for (const member of members) groupOf[member] = group;
   });
+  const bundles: Bundle[] = [...groups.map(asBundle), ...fixturesInRows(facts)];
+  const bundleOf: (number | null)[] = [...groupOf];
+  bundles.slice(groups.length).forEach(({ members }, at) => {
+    for (const member of members) bundleOf[member] = groups.length + at;
+  });
 
   const single: Load[] = network.pipes.map(() => noLoad);
   const closets = new Int32Array(network.pipes.length);
@@ -29,10 +37,10 @@ export function loadPipes(facts: FixtureFacts, scenario: Scenario): WithFindings
     const parts = open[pipe];
     let load = single[pipe]!;
     for (const [group, { sum, members }] of parts ?? []) {
-      const { figure, members: all } = groups[group]!;
-      load = plusLoad(load, Math.min(sum, figure) as Load);
+      const { together, members: all } = bundles[group]!;
+      load = plusLoad(load, together(sum, members));
       if (members === all.length) {
-        single[pipe] = plusLoad(single[pipe]!, Math.min(sum, figure) as Load);
+        single[pipe] = plusLoad(single[pipe]!, together(sum, members));
         parts!.delete(group);
       }
     }
@@ -48,7 +56,7 @@ export function loadPipes(facts: FixtureFacts, scenario: Scenario): WithFindings
     for (const fixture of paths.entering[pipe]!) {
       const { load, row } = fixtures[fixture]!;
       if (row.closet) closets[pipe]!++;
-      const group = groupOf[fixture] ?? null;
+      const group = bundleOf[fixture] ?? null;
       if (group === null) single[pipe] = plusLoad(single[pipe]!, load);
       else put(pipe, group, load, 1);
     }
@@ -61,15 +69,22 @@ export function loadPipes(facts: FixtureFacts, scenario: Scenario): WithFindings
   }
 
   const { order, from, to } = fixtureOrder(facts);
+  const counts = countFixtures(facts, fixtures);
   const pipes: PipeLoad[] = network.pipes.map(({ id }) => ({
     load: loads[id]!,
     closets: closets[id]!,
+    counts: counts[id]!,
     from: from[id]!,
     to: to[id]!,
   }));
   findings.push(...sizeFindings(facts));
   return { value: { scenario, fixtures, pipes, modelled, order, groups, groupOf }, findings };
 }
+
+const asBundle = ({ members, figure }: BathroomGroup): Bundle => ({
+  members,
+  together: (sum) => Math.min(sum, figure) as Load,
+});
 
 /** Fixtures in a walk up every tree of water, so that those of one pipe stand side by side. */
 function fixtureOrder({ paths, network }: FixtureFacts): { order: FixtureId[]; from: Int32Array; to: Int32Array } {

@@ -28,6 +28,13 @@ export interface BathroomGroup {
   readonly figure: Load;
 }
 
+/** Fixtures whose loads do not simply add up on a pipe that carries several of them. */
+export interface Bundle {
+  readonly members: readonly FixtureId[];
+  /** Load of so many of them on one pipe, `sum` being what they put in one by one. */
+  readonly together: (sum: Load, count: number) => Load;
+}
+
 export interface FixtureLoad {
   readonly row: FixtureRow;
   readonly load: Load;
@@ -41,6 +48,8 @@ export interface FixtureLoad {
 export interface PipeLoad {
   readonly load: Load;
   readonly closets: number;
+  /** What else the code counts, by the names it gives. */
+  readonly counts: Readonly<Record<string, number>>;
   /** Stretch of `Loads.order`: from, up to but without. Empty for dry pipes. */
   readonly from: number;
   readonly to: number;

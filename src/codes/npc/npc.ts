@@ -1,33 +1,17 @@
 import { rowAtSize } from '../../tables/find-row.ts';
 import type { Load } from '../../units/quantity.ts';
-import type { PlumbingCode } from '../plumbing-code.ts';
+import type { CodeRules } from '../plumbing-code.ts';
 import type { Tools } from '../tools.ts';
 import { checks } from './checks.ts';
 import { drainRules } from './drain-rules.ts';
 import { bathroomGroup, fixtureRows, freeOfVent } from './fixtures.ts';
 import { countOnOneTrap } from './one-trap.ts';
 import { readings, whenNoneHolds } from './readings.ts';
-import { ventRules } from './vent-rules.ts';
+import { ventLength, ventRules } from './vent-rules.ts';
 import { wetVentRules } from './wet-vent-rules.ts';
 
 /** National Plumbing Code of Canada: which rule reads which table, the book's contents page. */
-export function npc(
-  tools: Tools,
-): Pick<
-  PlumbingCode,
-  | 'fixtures'
-  | 'armLimit'
-  | 'readings'
-  | 'whenNoneHolds'
-  | 'rules'
-  | 'checks'
-  | 'freeOfVent'
-  | 'sewerBegins'
-  | 'stackOffset'
-  | 'batteryLimits'
-  | 'group'
-  | 'sharedTrap'
-> {
+export function npc(tools: Tools): CodeRules {
   const { family } = tools;
   const arms = family.table('trap-arm');
   return {
@@ -45,10 +29,16 @@ export function npc(
     stackOffset: family.number('stack-offset-length', 'length').value,
     batteryLimits: {
       reliefDrainLoad: family.number('relief-drain-load', 'load').value as Load,
+      reliefDue: () => true,
       additionalAfter: family.number('additional-fixtures', 'count').value,
       turnDegrees: family.number('additional-turn', 'angle').value,
     },
+    ventLength,
+    wetVentLoad: 'whole',
+    islandVents: false,
     group: bathroomGroup(tools),
+    row: null,
+    counts: [],
     sharedTrap: countOnOneTrap,
   };
 }

@@ -2,6 +2,7 @@ import { sizeForLength } from '../../tables/find-length.ts';
 import { oneSizeBelow, rowAtSize } from '../../tables/find-row.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
 import { unitsOf } from '../../units/quantity.ts';
+import type { VentLengthTo } from '../plumbing-code.ts';
 import type { Role } from '../role.ts';
 import { followStep, tableStep } from '../rules/steps.ts';
 import type { SizesSoFar, SizingRule, Step } from '../sizing-rule.ts';
@@ -25,6 +26,10 @@ const growsToSky: ReadonlySet<Role> = new Set([
   'circuit-vent',
   'continuous-vent',
 ]);
+
+/** Individual and dual vents carry no length; the vents of a stack are measured to open air (R76, R77). */
+export const ventLength = (role: Role): VentLengthTo | null =>
+  byStack.has(role) || role === 'vent-header' ? 'sky' : byLength.has(role) || followers.has(role) ? 'stack' : null;
 
 /** Sizes of dry vents: National Plumbing Code 2.5.7. and 2.5.8., rules R51, R65, R73 to R80. */
 export function ventRules({ family, omit }: Tools): SizingRule[] {
