@@ -5,6 +5,7 @@ import type { PipeDimensions } from '../tables/pipe-dimensions.ts';
 import { readWallRules } from '../tables/read-wall-rules.ts';
 import type { TableSource } from '../tables/table-source.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
+import { cleanoutRules } from './cleanouts.ts';
 import { codeSettings } from './code-settings.ts';
 import { npc } from './npc/npc.ts';
 import type { CodeRules, PlumbingCode } from './plumbing-code.ts';
@@ -44,6 +45,7 @@ export function plumbingCode(
     series: family.series,
     dimensions,
     walls: readWallRules(tables, family.id, dimensions),
+    cleanouts: cleanoutRules(family),
     omitSizes: omit,
     settings: chosen,
     localTables: family.localTables,

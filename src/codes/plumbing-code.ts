@@ -6,6 +6,7 @@ import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
 import type { Load } from '../units/quantity.ts';
 import type { BatteryFacts, Broken, CircuitLine } from './battery.ts';
 import type { Check } from './check.ts';
+import type { CleanoutRules } from './cleanouts.ts';
 import type { Role } from './role.ts';
 import type { SizingRule } from './sizing-rule.ts';
 import type { Reading } from './use.ts';
@@ -23,6 +24,8 @@ export interface PlumbingCode {
   readonly dimensions: PipeDimensions;
   /** Studs, holes in them, and what the layers of a wall are. */
   readonly walls: WallRules;
+  /** null where the family has no table of their places. */
+  readonly cleanouts: CleanoutRules | null;
   readonly fixtures: FixtureRows;
   readonly omitSizes: ReadonlySet<NominalSize>;
   /** What the user set, defaults filled in: shown on every deliverable. */
@@ -45,8 +48,8 @@ export interface PlumbingCode {
   /** Horizontal offsets of a stack shorter than this, metres, count as stack. */
   readonly stackOffset: number;
   readonly batteryLimits: BatteryLimits;
-  /** How far a dry vent is measured; null where the code asks nothing of its length. */
-  readonly ventLength: (role: Role) => VentLengthTo | null;
+  /** How far a dry vent is measured; null where the code asks nothing of its length. Some count only where traps breathe through. */
+  readonly ventLength: (role: Role, breathes: boolean) => VentLengthTo | null;
   /** Load that enters the wet vent table: what the whole wet vent takes, or what passes each section of it. */
   readonly wetVentLoad: 'whole' | 'section';
   /** A vent that turns down before it goes up is one the code knows, with conditions of its own. */
@@ -76,6 +79,7 @@ export type CodeRules = Omit<
   | 'localTables'
   | 'ruleTitle'
   | 'walls'
+  | 'cleanouts'
 >;
 
 /** What a code allows and asks of rows of fixtures. */

@@ -108,7 +108,9 @@ describe.skipIf(!referenceThere)(
       });
 
     test('every table of the code has been compared', () => {
-      expect(cases.map(({ table }) => table).sort()).toEqual(npc.tables.map(({ id }) => id).sort());
+      // Where cleanouts stand is told in clauses, not in a printed table.
+      const printed = npc.tables.filter(({ id }) => id !== 'cleanout-places');
+      expect(cases.map(({ table }) => table).sort()).toEqual(printed.map(({ id }) => id).sort());
     });
 
     test('trap arm slopes are the reference’s decimals', () => {

@@ -9,7 +9,7 @@ const cavity = (depthMm: number): Cavity => ({ depthMm, ground: 'layers', framin
 
 describe('between studs: judged by the fitting, not the pipe', () => {
   // Outside diameters: ASTM D2661, D2665, D2949, A74, B306; CISPI 301. Fittings: socket or hub, as tables/shared says.
-  test.each([
+  test.each<[string | null, string, number, boolean, string]>([
     ['copper', '3 in', 89, true, '79.4, fitting 85.7: 3.3 mm left (copper industry page)'],
     ['ABS', '3 in', 89, false, '88.9 passes by 0.1 mm, its socket of 100.6 does not'],
     ['ABS', '2 in', 89, true, '60.3 and 68.6'],

@@ -1,0 +1,153 @@
+import type { BatteryTrap, Broken } from '../codes/battery.ts';
+import { planTurn } from '../paths/turns.ts';
+import type { NominalSize } from '../units/nominal-size.ts';
+import { type Attempt, asModelled, attempt, type Obstacle, obstacleOf } from './attempt.ts';
+import { type ChangedPiping, unchanged } from './changed-piping.ts';
+import { nameOf } from './fixture-name.ts';
+import type { Row } from './row.ts';
+import { type Foot, footBehind, footOfTrap, isFreeAbove } from './vent-feet.ts';
+import { ventFrom, ventsFrom } from './vent-route.ts';
+
+/**
+ * The row circuit vented. Where its main vent may stay as the circuit vent, only relief and additional circuit vents are
+ * added; else a circuit vent rises from the drain of the first fixture on the level line, and what may not be circuit
+ * vented gets vents of its own. What cannot be built comes back as the conditions that no added pipe mends.
+ */
+export function circuitAlternative(row: Row): Attempt | readonly Obstacle[] {
+  const { battery, outcome } = row;
+  if (battery.reading === 'circuit-vent') return asModelled(row);
+  const broken = battery.others.find(({ reading }) => reading === 'circuit-vent')?.broken ?? [];
+  const vents = broken.every(({ finding }) => byAnotherVent.has(finding));
+  if (vents) return withReliefAndMore(row, unchanged(outcome), battery.facts.circuit.traps);
+  const chosen = circuitVented(row);
+  if ('unmended' in chosen) return unmended(broken, chosen.unmended);
+  const piping = ventsFrom(row, unchanged(outcome), chosen.feet);
+  return piping === null ? unmended(broken, {}) : withReliefAndMore(row, piping, chosen.traps);
+}
+
+/** Of the conditions broken as modelled, the one that carries the facts; all but those that another vent mends else. */
+function unmended(broken: readonly Broken[], facts: Broken['facts']): Obstacle[] {
+  const [key] = Object.keys(facts);
+  const own = broken.filter((one) => key !== undefined && one.facts[key] !== undefined);
+  const others = broken.filter(({ finding }) => !byAnotherVent.has(finding));
+  return (own.length > 0 ? own : others).map((one) => obstacleOf({ ...one, facts: { ...one.facts, ...facts } }));
+}
+
+const byAnotherVent: ReadonlySet<string> = new Set(['relief-vent-missing', 'additional-circuit-vent-missing']);
+
+/** The fixtures on the last level stretch that may share one circuit vent, and the vents that this asks for. */
+function circuitVented(
+  row: Row,
+): { traps: BatteryTrap[]; feet: { foot: Foot; name: string }[] } | { unmended: Broken['facts'] } {
+  const { battery, outcome } = row;
+  const { facts } = battery;
+  const drop = facts.line.findLastIndex((pipe) => outcome.paths.vertical[pipe] === true);
+  const level = facts.traps.filter(({ place }) => place > drop);
+  if (level.length < 2) return { unmended: { verticalPipes: verticalOf(row), levelFixtures: level.length } };
+  const traps = ofOneKind(row, level);
+  const first = traps[0];
+  if (first === undefined) return { unmended: { smallOutlets: smallOutlets(row) } };
+  const feet: { foot: Foot; name: string }[] = [];
+  for (const trap of facts.traps) {
+    if (traps.includes(trap) || trap.ownVent || trap.free) continue;
+    const foot = footOfTrap(row, trap, true);
+    if (foot === null) return { unmended: {} };
+    feet.push({ foot, name: `Vent of ${nameOf(row, trap)}` });
+  }
+  const alone = traps.filter(({ joins }) => joins === first.joins).length === 1;
+  const start: Foot | null =
+    alone && isFreeAbove(row, first.joins) ? { joint: first.joins } : footOfTrap(row, first, true);
+  if (start === null) return { unmended: {} };
+  return { traps, feet: [...feet, { foot: start, name: 'Circuit vent' }] };
+}
+
+const verticalOf = ({ battery, outcome }: Row): number =>
+  battery.facts.line.filter((pipe) => outcome.paths.vertical[pipe] === true).length;
+
+const smallOutlets = ({ battery }: Row): number =>
+  battery.others
+    .flatMap(({ broken }) => broken)
+    .reduce((most, { facts }) => Math.max(most, Number(facts.smallOutlets ?? 0)), 0);
+
+/** Small outlets and larger ones need circuit vents apart: the larger ones stay, unless there is only one. */
+function ofOneKind({ battery, outcome }: Row, traps: readonly BatteryTrap[]): BatteryTrap[] {
+  const { rank } = outcome.code.series;
+  const mixed = battery.others
+    .flatMap(({ broken }) => broken)
+    .find(({ facts }) => typeof facts.smallBelow === 'string');
+  if (mixed === undefined) return [...traps];
+  const border = rank(mixed.facts.smallBelow as NominalSize);
+  const large = traps.filter(({ size }) => rank(size) >= border);
+  const small = traps.filter(({ size }) => rank(size) < border);
+  return large.length >= 2 ? large : small.length >= 2 ? small : [];
+}
+
+/** As it is; else with a relief vent; else with additional circuit vents too. The last one tried, where none holds. */
+function withReliefAndMore(row: Row, piping: ChangedPiping, traps: readonly BatteryTrap[]): Attempt {
+  let tried = attempt(row, piping, 'circuit-vent');
+  const asks = (finding: string): boolean => tried.obstacles.some((one) => one.finding === finding);
+  const reliefAsked = (): boolean => {
+    const relief = tried.battery?.facts.circuit.relief ?? null;
+    return asks('relief-vent-missing') || (asks('additional-circuit-vent-missing') && relief?.kind === 'drain');
+  };
+  if (reliefAsked()) {
+    const last = traps.at(-1);
+    const foot = last === undefined ? null : footBehind(row, last.joins);
+    const relieved = foot === null ? null : ventFrom(row, tried.piping, foot, 'Relief vent');
+    if (relieved !== null) tried = attempt(row, relieved, 'circuit-vent');
+  }
+  if (asks('additional-circuit-vent-missing')) {
+    const feet = additionalFeet(row, tried).map((foot, at) => ({ foot, name: `Additional circuit vent ${at + 1}` }));
+    const more = feet.length === 0 ? null : ventsFrom(row, tried.piping, feet);
+    const vented = more === null ? null : attempt(row, more, 'circuit-vent');
+    // A vent where the first two fixtures meet would leave each with its own: no circuit vent at all.
+    if (vented?.battery?.reading === 'circuit-vent') tried = vented;
+  }
+  return tried;
+}
+
+/** Behind every so many fixtures, evenly; and at the bends beyond which the branch would turn too far. */
+function additionalFeet(row: Row, { battery, outcome }: Attempt): Foot[] {
+  if (battery === null) return [];
+  const { additionalAfter, turnDegrees } = row.outcome.code.batteryLimits;
+  const { branch, start, stretches, traps } = battery.facts.circuit;
+  const { stream } = row;
+  const places = new Map([[start, 0]]);
+  const downOf = (pipe: (typeof branch)[number]) => outcome.paths.toward[pipe]!;
+  branch.forEach((pipe, at) => {
+    places.set(downOf(pipe), at + 1);
+  });
+  const placeAt = (joint: typeof start): number => places.get(joint) ?? branch.length;
+  const feet: Foot[] = [];
+  for (const [index, stretch] of stretches.entries()) {
+    const [from, to] = [placeAt(stretch.from), placeAt(stretch.to)];
+    const inside = traps.filter(({ joins }) => {
+      const place = placeAt(joins);
+      return place <= to && (index === 0 ? place >= from : place > from);
+    });
+    if (inside.length > additionalAfter) {
+      const parts = Math.ceil(inside.length / additionalAfter);
+      for (let part = 1; part < parts; part++) {
+        const behind = inside[Math.ceil((part * inside.length) / parts) - 1]!;
+        const foot = footBehind(row, behind.joins);
+        if (foot !== null) feet.push(foot);
+      }
+    }
+    let turned = 0;
+    for (let at = from; at + 1 < to; at++) {
+      const joint = downOf(branch[at]!);
+      turned += planTurn(
+        outcome.network,
+        [branch[at]!, branch[at + 1]!],
+        at === from ? stretch.from : downOf(branch[at - 1]!),
+      );
+      if (turned <= turnDegrees + angle) continue;
+      turned = 0;
+      if (joint < stream.outflow.length && isFreeAbove(row, joint)) feet.push({ joint });
+    }
+  }
+  return feet;
+}
+
+/** Angles carry a hundredth of a degree at each bend. */
+const angle = 0.05;

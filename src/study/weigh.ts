@@ -1,0 +1,46 @@
+import type { Reading } from '../codes/use.ts';
+import type { Battery } from '../roles/roles.ts';
+import type { Outcome } from '../verdicts/outcome.ts';
+import { type Attempt, asModelled, type Obstacle } from './attempt.ts';
+import { circuitAlternative } from './circuit-alternative.ts';
+import { individualAlternative } from './individual-alternative.ts';
+import { type Row, rowOf } from './row.ts';
+import { wetAlternative } from './wet-alternative.ts';
+
+/** A battery under each reading, every one built as piping and sized by the same stages. */
+export interface Weighing {
+  readonly row: Row;
+  /** Wet vent, circuit vent, individual vents, in this order. */
+  readonly alternatives: readonly Alternative[];
+}
+
+export interface Alternative {
+  readonly reading: Reading;
+  readonly holds: boolean;
+  readonly obstacles: readonly Obstacle[];
+  /** As built; null where it cannot be built at all. */
+  readonly attempt: Attempt | null;
+}
+
+const readings: readonly Reading[] = ['wet-vent', 'circuit-vent', 'individual-vent'];
+
+export function weighBattery(outcome: Outcome, battery: Battery): Weighing {
+  const row = rowOf(outcome, battery);
+  return { row, alternatives: readings.map((reading) => alternative(row, reading)) };
+}
+
+function alternative(row: Row, reading: Reading): Alternative {
+  const built = reading === row.battery.reading ? asModelled(row) : builders[reading](row);
+  if ('piping' in built) {
+    const { obstacles } = built;
+    return { reading, holds: obstacles.length === 0, obstacles, attempt: built };
+  }
+  return { reading, holds: false, obstacles: built, attempt: null };
+}
+
+/** Piping, or what stands against it where none can be drawn. */
+const builders: Readonly<Record<Reading, (row: Row) => Attempt | readonly Obstacle[]>> = {
+  'wet-vent': wetAlternative,
+  'circuit-vent': circuitAlternative,
+  'individual-vent': individualAlternative,
+};
