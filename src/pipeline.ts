@@ -60,7 +60,18 @@ export function runNetwork({ findings, ...piping }: Piping): Outcome {
     runs.push({ loads: loads.value, roles: roles.value, sizes: sizePipes(roles.value.uses, code) });
     if (scenario === scenarios.at(-1)) shared.push(...loads.findings, ...roles.findings);
   }
-  return reachVerdicts({ model, identities, network, outline, paths, code, answers, runs, findings: shared });
+  return reachVerdicts({
+    model,
+    identities,
+    network,
+    outline,
+    paths,
+    code,
+    answers,
+    runs,
+    findings: shared,
+    read: findings,
+  });
 }
 
 /** One run where nothing is open; the lightest and the heaviest where a detail is; a closet too where a kind is. */

@@ -48,6 +48,8 @@ export interface Pipe {
   readonly to: Metres;
   /** Water flows from end 0 to end 1 (`forward`) by the ports' word; null where ports say nothing or contradict. */
   readonly portFlow: 'forward' | 'backward' | null;
+  /** Of a changed network: laid anew to this fall from end 0 to end 1, m/m, whatever is drawn; absent: as drawn. */
+  readonly laid?: number;
 }
 
 export interface Joint {

@@ -51,6 +51,10 @@ export function pipeSlopes(
     const climb = from === null ? 0 : climbOf(pipe, from);
     if (climb > 0 && pipe.element !== null) backfalls.push({ element: pipe.element, climb });
     if (vertical[pipe.id] === true) return { slope: null, uncertainty: 0, ground: 'geometry', climb: metres(climb) };
+    if (pipe.laid !== undefined) {
+      const slope = from === null ? Math.abs(pipe.laid) : pipe.ends[0] === from ? pipe.laid : -pipe.laid;
+      return { slope, uncertainty: 0, ground: 'answer', climb: metres(climb) };
+    }
     const run = runOf(pipe);
     const uncertainty = run === null || run.plan === 0 ? 0 : heightUncertainty / run.plan + angleUncertainty;
     const fall = run === null || run.plan === 0 ? 0 : signedFall(pipe, run, from);

@@ -1,5 +1,6 @@
 import type { Finding } from '../findings/finding.ts';
 import { finding } from '../findings/finding.ts';
+import { planDistance } from '../geometry/vector.ts';
 import type { Answers } from '../model/answers.ts';
 import type { Identity } from '../model/identity.ts';
 import type { ElementId, Model } from '../model/model.ts';
@@ -30,10 +31,15 @@ const coordinateUncertainty = 0.001;
 /** Rise in metres along the way from `from`, over what coordinates can tell. */
 export function climbOf(pipe: Pipe, from: JointId): number {
   if (pipe.points === null) return 0;
-  const first = pipe.points[0]!;
-  const last = pipe.points[pipe.points.length - 1]!;
-  const rise = pipe.ends[0] === from ? last[2] - first[2] : first[2] - last[2];
-  return Math.max(0, rise - coordinateUncertainty);
+  const fall = drawnFall(pipe);
+  return Math.max(0, (pipe.ends[0] === from ? -fall : fall) - coordinateUncertainty);
+}
+
+/** Metres from end 0 down to end 1, as drawn or as laid anew. */
+function drawnFall({ points, laid }: Pipe): number {
+  const first = points![0]!;
+  const last = points![points!.length - 1]!;
+  return laid === undefined ? first[2] - last[2] : laid * planDistance(first, last);
 }
 
 export function waterPaths(

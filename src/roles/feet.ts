@@ -3,6 +3,7 @@ import type { Loads } from '../loads/loads.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
 import type { FixtureId, Paths, TrapAir } from '../paths/paths.ts';
 import type { Stream } from '../paths/stream.ts';
+import { fallAlong } from './trap-arms.ts';
 
 /** The traps that breathe through one foot, those with their own vent and those upstream of which it stands. */
 export interface FootTraps {
@@ -49,11 +50,15 @@ export function freeTraps(
     const z = (joint: JointId): number | null => network.joints[joint]!.at?.[2] ?? null;
     const top = first === undefined ? null : z(stream.up(first));
     const bottom = last === undefined ? null : z(stream.down(last));
+    const fall =
+      first === undefined || top === null || bottom === null
+        ? null
+        : fallAlong(network, drain, stream.up(first), top - bottom);
     return code.freeOfVent({
       ...identity(fixture),
       trap: loads.fixtures[fixture]!.trap,
       length: drain.length === 0 ? null : drain.reduce((sum, pipe) => sum + stream.span(pipe), 0),
-      fall: top === null || bottom === null ? null : Math.max(0, top - bottom),
+      fall: fall === null ? null : Math.max(0, fall),
     });
   });
 }

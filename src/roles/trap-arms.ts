@@ -1,5 +1,5 @@
 import { planDistance } from '../geometry/vector.ts';
-import type { Network, PipeId } from '../network/network.ts';
+import type { JointId, Network, PipeId } from '../network/network.ts';
 import type { Paths, TrapAir } from '../paths/paths.ts';
 import type { Stream } from '../paths/stream.ts';
 import { spaceTurn } from '../paths/turns.ts';
@@ -33,10 +33,26 @@ function armOf(network: Network, paths: Paths, stream: Stream, { arm, at, armEnd
       turn: null,
     };
   }
-  const fall = from[2] - to[2];
+  const fall = fallAlong(network, arm, at, from[2] - to[2]);
   const plan = arm.reduce((sum, pipe) => sum + planSpan(network, pipe), 0);
   const slope = plan > 0 ? fall / plan : null;
   return { length, rise: Math.max(0, -fall), fall: Math.max(0, fall), plan, slope, turn: spaceTurn(network, arm, at) };
+}
+
+/** Metres down along pipes in order from a joint: as drawn between its ends, or as those laid anew have it. */
+export function fallAlong(network: Network, pipes: readonly PipeId[], from: JointId, drawn: number): number {
+  if (pipes.every((pipe) => network.pipes[pipe]!.laid === undefined)) return drawn;
+  let fall = 0;
+  let joint = from;
+  for (const pipe of pipes) {
+    const { ends, laid } = network.pipes[pipe]!;
+    const far = ends[0] === joint ? ends[1] : ends[0];
+    const [a, b] = [network.joints[joint]!.at, network.joints[far]!.at];
+    if (laid !== undefined) fall += (ends[0] === joint ? laid : -laid) * planSpan(network, pipe);
+    else if (a !== null && b !== null) fall += a[2] - b[2];
+    joint = far;
+  }
+  return fall;
 }
 
 /** Length of a pipe in plan from joint to joint: a bend keeps its own way, the halves of the fittings follow its ends. */

@@ -38,6 +38,8 @@ export interface Outcome {
   /** By fixture id. */
   readonly fixtureLoads: readonly Range<Load>[];
   readonly findings: readonly Finding[];
+  /** Of these, what reading and joining had to say: it stays when a study changes the piping. */
+  readonly read: readonly Finding[];
 }
 
 export type Verdict = 'undersized' | 'agrees' | 'oversized' | 'unknown';

@@ -25,6 +25,8 @@ export interface VerdictFacts {
   /** The heaviest reading last. */
   readonly runs: readonly Run[];
   readonly findings: readonly Finding[];
+  /** Of these, what reading and joining had to say. */
+  readonly read: readonly Finding[];
 }
 
 /** Sizes against the model, the code's checks, and all findings together: closes the outcome. */
