@@ -136,12 +136,7 @@ describe('3: a file that cannot be used', () => {
           .replace(/FILE_SCHEMA\(\('[^']*'/, "FILE_SCHEMA(('AP214'"),
       /not IFC/,
     ],
-    [
-      'damaged gzip',
-      'bad.ifc.gz',
-      () => Buffer.from(gzipSync(whole()).subarray(0, 5000)),
-      /damaged or cut off|no model/,
-    ],
+    ['damaged gzip', 'bad.ifc.gz', () => Buffer.from(gzipSync(whole()).subarray(0, 5000)), /gzip|unpacked/],
     [
       'UTF-16',
       'wide.ifc',
@@ -149,10 +144,14 @@ describe('3: a file that cannot be used', () => {
       /UTF-16/,
     ],
   ];
+  // All verbs read by the same door: each is tried with the likeliest of the faults, `check` with every one.
+  const likely = new Set(['empty', 'text', 'cut at 50 %']);
   for (const verb of ['check', 'survey', 'size', 'view', 'explain']) {
-    test(`${verb}: ${files.map(([what]) => what).join(', ')}`, { timeout: 120_000 }, () => {
+    const tried = files.filter(([what]) => verb === 'check' || likely.has(what));
+    test(`${verb}: ${tried.map(([what]) => what).join(', ')}`, { timeout: 120_000 }, () => {
+      expect(tried.length).toBeGreaterThanOrEqual(3);
       const cwd = scratch();
-      for (const [what, name, content, says] of files) {
+      for (const [what, name, content, says] of tried) {
         writeFileSync(join(cwd, name), content());
         const more =
           verb === 'size' ? ['-o', 'o.ifc'] : verb === 'view' ? ['-o', 'o.html'] : verb === 'explain' ? ['x'] : [];
