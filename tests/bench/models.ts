@@ -1,0 +1,68 @@
+import { spawnSync } from 'node:child_process';
+import { existsSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { sketch } from '../support/sketch.ts';
+import { type IfcOptions, ifcOf } from '../support/write-ifc.ts';
+
+const folder = 'out/bench/models';
+const generator = '../shared/tools/gen-plumbing-ifc.mjs';
+
+/**
+ * A model of about so many megabytes, kept between runs: half building fabric from the shared generator where that stands
+ * beside the project, else the school sample repeated by our own writer.
+ */
+export function modelOfSize(
+  megabytes: number,
+  options: { readonly ports: boolean } = { ports: true },
+): { path: string; bytes: Uint8Array; from: string } {
+  mkdirSync(folder, { recursive: true });
+  const shared = existsSync(generator);
+  const path = join(folder, `${shared ? 'generated' : 'schools'}-${megabytes}${options.ports ? '' : '-no-ports'}.ifc`);
+  if (!existsSync(path)) {
+    if (shared) {
+      const ports = options.ports ? 'native' : 'none';
+      spawnSync(
+        process.execPath,
+        [
+          generator,
+          '--out',
+          path,
+          '--size-mb',
+          String(megabytes),
+          '--schema',
+          'IFC4',
+          '--ballast',
+          '0.5',
+          '--ports',
+          ports,
+        ],
+        { stdio: 'ignore' },
+      );
+    } else {
+      writeFileSync(path, schools(megabytes, { ports: options.ports }));
+    }
+  }
+  return { path, bytes: new Uint8Array(readFileSync(path)), from: shared ? 'shared generator' : 'our writer' };
+}
+
+/** As many schools side by side, each with a sewer of its own, as make the size. */
+function schools(megabytes: number, options: Partial<IfcOptions>): string {
+  const one = readFileSync('sample-models/school.piping', 'utf8');
+  const single = ifcOf(sketch(one), options).length;
+  const count = Math.max(1, Math.round((megabytes * 1e6) / single));
+  const [head, body] = splitTitle(one);
+  const copies = Array.from(
+    { length: count },
+    (_, at) => `place campus as C${at} at ${(at % 40) * 60} ${Math.floor(at / 40) * 60} 0`,
+  );
+  return ifcOf(sketch(`${head}\ntypical campus\n${body}\nend\n${copies.join('\n')}\n`), options);
+}
+
+const splitTitle = (text: string): [string, string] => {
+  const lines = text.split('\n').filter((line) => !line.startsWith('#'));
+  const building = /^(?:model|storey|slab|roof|wall|space|material|system)\b/;
+  return [
+    lines.filter((line) => building.test(line)).join('\n'),
+    lines.filter((line) => !building.test(line)).join('\n'),
+  ];
+};
