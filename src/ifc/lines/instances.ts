@@ -1,4 +1,4 @@
-import { endOfComment, endOfStatement, type StringWatch } from './end-of-statement.ts';
+import { endOfComment, endOfStatement, isDigit, type StringWatch } from './end-of-statement.ts';
 import { TypeTable } from './type-table.ts';
 
 /** What the scan gathers about instances; arrays longer than `count`. */
@@ -93,8 +93,14 @@ export function instances(b: Uint8Array, view: DataView, from: number, list: Rec
       i += before;
     }
     hash = Math.imul(hash ^ word, 0x9e3779b1);
-    const type = table.code(hash, name, i, word);
-    if (type < 0) break;
+    let type = table.code(hash, name, i, word);
+    if (type < 0) {
+      // Something stands between the name and its bracket: a comment, or no name stands here at all.
+      const nameEnd = pastWord(b, name);
+      i = pastBlanks(b, nameEnd);
+      if (b[i] !== bracket) break;
+      type = table.codeOf(name, nameEnd);
+    }
 
     const opened = watch.openStrings.length;
     const end = endOfStatement(b, view, i + 1, watch);
@@ -136,6 +142,14 @@ function tailBefore(b: Uint8Array, name: number, end: number): number {
   for (let i = end - ((end - name) & 3), shift = 0; i < end; i++, shift += 8) tail |= (b[i] as number) << shift;
   return tail;
 }
+
+function pastWord(b: Uint8Array, from: number): number {
+  let i = from;
+  for (let c = b[i]; c !== undefined && isWord(c); ) c = b[++i];
+  return i;
+}
+
+const isWord = (c: number): boolean => (c >= 65 && c <= 90) || (c >= 97 && c <= 122) || isDigit(c) || c === 95;
 
 function pastBlanks(b: Uint8Array, from: number): number {
   let i = from;

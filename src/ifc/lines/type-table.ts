@@ -43,21 +43,26 @@ export class TypeTable {
     return this.learn(slot, from, to, tail);
   }
 
+  /** Code of the word that stands at [from, to), however it is told from its bracket. */
+  codeOf(from: number, to: number): number {
+    return this.codeOfText(textBetween(this.view, from, to));
+  }
+
+  private codeOfText(text: string): number {
+    const name = text === '' ? '(' : text.toUpperCase();
+    const known = this.codes.get(name);
+    if (known !== undefined) return known;
+    if (this.names.length === mostTypes) return 0;
+    this.names.push(name);
+    this.codes.set(name, this.names.length - 1);
+    return this.names.length - 1;
+  }
+
   private learn(slot: number, from: number, to: number, tail: number): number {
     const { view } = this;
-    const text = textBetween(view, from, to)
-      .replace(/\/\*.*?\*\//gs, ' ')
-      .trim()
-      .toUpperCase();
-    if (!/^[A-Z0-9_]*$/.test(text)) return -1;
-    const name = text === '' ? '(' : text;
-    let code = this.codes.get(name);
-    if (code === undefined) {
-      if (this.names.length === mostTypes) return 0;
-      code = this.names.length;
-      this.names.push(name);
-      this.codes.set(name, code);
-    }
+    const text = textBetween(view, from, to).trim();
+    if (!/^\w*$/.test(text)) return -1;
+    const code = this.codeOfText(text);
     if (this.spellings++ < mostSpellings) {
       const words: number[] = [];
       for (let i = from; i + 4 <= to; i += 4) words.push(view.getInt32(i, true));
