@@ -45,12 +45,11 @@ export const padded = (text: string, columns: number): string =>
   text + ' '.repeat(Math.max(0, columns - columnsOf(text)));
 
 /**
- * Breaks at spaces into lines of at most `columns`; the first begins with `lead`, the others are indented as far.
+ * Breaks at spaces into lines of at most `columns`; the first begins with `lead`, the others with `indent`.
  * A word that is wider than a line is cut across lines, never lost. What `unbroken` joined stays on one line.
  */
-export function wrapped(text: string, columns: number, lead = ''): string[] {
-  const indent = ' '.repeat(columnsOf(lead));
-  const room = Math.max(10, columns - indent.length);
+export function wrapped(text: string, columns: number, lead = '', indent = ' '.repeat(columnsOf(lead))): string[] {
+  const room = Math.max(10, columns - Math.max(indent.length, columnsOf(lead)));
   const lines: string[] = [];
   let line = '';
   for (const word of text.split(' ').flatMap((whole) => pieces(whole, room))) {

@@ -14,11 +14,12 @@ export const blank: TextLine = { text: '', tone: 'plain' };
 export const heading = (text: string): TextLine[] => paragraph(text, '', 'heading');
 
 /**
- * `text` broken to the width of the page, behind `lead` on the first line and as far in on the others. Whatever model
+ * `text` broken to the width of the page, behind `lead` on the first line and as far in, at least two columns, on the others. Whatever model
  * text has got into it stays within these lines and comes out harmless.
  */
 export const paragraph = (text: string, lead = '  ', tone: Tone = 'plain'): TextLine[] =>
-  wrapped(oneLine(text), pageColumns, lead).map((line) => ({ text: line, tone }));
+  // Only what the program says begins a line at the margin: a long name cannot pass for a heading.
+  wrapped(oneLine(text), pageColumns, lead, lead === '' ? '  ' : undefined).map((line) => ({ text: line, tone }));
 
 export const plainText = (lines: readonly TextLine[]): string =>
   lines.map(({ text }) => `${text.trimEnd()}\n`).join('');
