@@ -36,7 +36,8 @@ export interface CheckedStack {
   readonly storeysServed: number;
   readonly height: number;
   readonly hasStackVent: boolean;
-  readonly hasVentStack: boolean;
+  /** Where its vent stack leaves it; null: it has none. Of several the soundest. */
+  readonly ventStack: 'foot' | 'drain' | 'above a branch' | null;
   readonly isWetVent: boolean;
   /** Heights of plumbing storeys, counted from the top, at which a yoke vent joins. */
   readonly yokes: readonly number[];

@@ -48,6 +48,8 @@ export interface PlumbingCode {
   /** Horizontal offsets of a stack shorter than this, metres, count as stack. */
   readonly stackOffset: number;
   readonly batteryLimits: BatteryLimits;
+  /** From how many storeys of fixtures on a vent stack is due, and what may drain into its foot; null: no such foot. */
+  readonly ventStack: { readonly storeys: number; readonly footLoad: Load } | null;
   /** How far a dry vent is measured; null where the code asks nothing of its length. Some count only where traps breathe through. */
   readonly ventLength: (role: Role, breathes: boolean) => VentLengthTo | null;
   /** Load that enters the wet vent table: what the whole wet vent takes, or what passes each section of it. */

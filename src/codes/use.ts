@@ -14,6 +14,8 @@ export interface PipeUse {
   /** Of everything whose water passes, group figures applied. */
   readonly load: Load;
   readonly closets: number;
+  /** What else the code counts of them, by the names it gives. */
+  readonly counts: Readonly<Record<string, number>>;
   /** Fixtures whose water passes. */
   readonly fixtures: number;
   readonly vertical: boolean;
@@ -23,6 +25,10 @@ export interface PipeUse {
   readonly trap: NominalSize | null;
   /** Least fixture outlet pipe that the fixture's own row prints; of portion `outlet` only. */
   readonly outlet: NominalSize | null;
+  /** Part of the arm of one trap: between it and the pipe that vents it. */
+  readonly inArm: boolean;
+  /** Of a branch or fixture drain: what its way downstream comes to first; null on other pipes. */
+  readonly endsAt: 'stack' | 'building-drain' | null;
   /** Wet pipes that flow in at the upstream joint. */
   readonly inflows: readonly PipeId[];
   /** Of a wet pipe: dry vents whose foot stands at its upstream joint. Of a dry one: vents that join at its lower joint. */
@@ -34,6 +40,8 @@ export interface PipeUse {
   readonly vent: VentUse | null;
   /** Set on a drain that stands in for a relief or additional circuit vent. */
   readonly standsIn: StandIn | null;
+  /** Of the wet portion of a vent: everything that drains into the whole of it. */
+  readonly wetPortion: { readonly load: Load; readonly closets: number } | null;
   /** What a wet pipe is as a drain, whatever it also vents; null for dry pipes. */
   readonly drain: DrainRole | null;
   /** Of a stack vent to the sky: what decides whether it must be the large vent of its building drain. */
@@ -59,6 +67,18 @@ export interface StackUse {
   /** Last section before the drain: its size and load stand for the stack. */
   readonly foot: PipeId;
   readonly footLoad: Load;
+  /** Where drains join at or above the head of this section, highest first: height in metres, null without geometry. */
+  readonly joins: readonly StackJoin[];
+  /** The same of the whole stack. */
+  readonly allJoins: readonly StackJoin[];
+  /** Length of its vertical parts together, metres. */
+  readonly rise: number;
+}
+
+/** One height at which drains come into a stack, and what they bring. */
+export interface StackJoin {
+  readonly height: number | null;
+  readonly load: Load;
 }
 
 export interface BatteryUse {
@@ -72,9 +92,16 @@ export interface VentUse {
   readonly load: Load;
   /** Developed length in metres that enters a vent table; null where the code ignores it. */
   readonly length: number | null;
+  /** What of that length is level, metres. */
+  readonly level: number | null;
   readonly largestTrap: NominalSize | null;
+  /** Water closets among the traps that breathe through it, and what else the code counts of them. */
+  readonly closets: number;
+  readonly counts: Readonly<Record<string, number>>;
   /** Stack whose foot selects the row, of stack vents and vent stacks. */
   readonly stack: StackUse | null;
+  /** Stacks whose vents have met in it, by id. */
+  readonly stacks: readonly StackUse[];
   /** Vent whose size this one follows: the circuit vent of a relief vent, the stack vent of an offset relief vent. */
   readonly follows: PipeId | null;
   /** Stack and vent stack that a yoke vent joins. */
@@ -82,6 +109,12 @@ export interface VentUse {
   readonly foot: JointId;
   /** Storeys of the wet vent that a stack vent serves, 0 when it serves none. */
   readonly wetVentStoreys: number;
+  /** Stack that the vent serves, by id: its stack vent, vent stack, yoke vents and offset relief vents. */
+  readonly serves: number | null;
+  /** Of an offset relief vent: which of the stack's offsets it stands beside, from the top. */
+  readonly offset: number | null;
+  /** Of a vent stack: where it leaves the stack. */
+  readonly leaves: 'foot' | 'drain' | 'above a branch' | null;
 }
 
 /** A drain that stands in for a relief or additional circuit vent. */

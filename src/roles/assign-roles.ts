@@ -13,8 +13,8 @@ import type { FixtureId, Paths, TrapAir } from '../paths/paths.ts';
 import { streamOf } from '../paths/stream.ts';
 import { airOfRows } from './battery-air.ts';
 import type { BatteryContext } from './battery-facts.ts';
-import { drainRoles } from './drain-roles.ts';
-import { dryRoles, ventTree } from './dry-roles.ts';
+import { drainEnds, drainRoles } from './drain-roles.ts';
+import { type DryRole, dryRoles, ventTree } from './dry-roles.ts';
 import { freeTraps } from './feet.ts';
 import { findStacks, type Stack, stackUseAt } from './find-stacks.ts';
 import { floorsOf } from './floors.ts';
@@ -22,9 +22,11 @@ import { formBatteries } from './form-batteries.ts';
 import { mainVentUses, onlyWidestVents } from './main-vent.ts';
 import { outsideBuilding } from './outline.ts';
 import type { Battery, Roles, VentFoot } from './roles.ts';
+import { stackJoints } from './stack-joints.ts';
 import { trapArms } from './trap-arms.ts';
 import { ventUses } from './vent-uses.ts';
 import { venting } from './venting.ts';
+import { type WetFoot, wetFeet } from './wet-feet.ts';
 import { wetUses } from './wet-uses.ts';
 
 export interface RoleFacts {
@@ -68,12 +70,14 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
     live: (joint) => liveAt.get(joint) ?? null,
     wordOf: (fixtures, pipes) => designersWord(facts, fixtures, pipes),
   };
-  const batteries = formBatteries(context, (battery) => answeredReading(facts, battery));
+  const places = stackJoints(context);
+  const batteries = formBatteries(context, places, (battery) => answeredReading(facts, battery));
   const air = airOfRows(paths, batteries);
   const feet = ventFeet(network, paths, air);
   const tree = ventTree(feet);
-  const dry = dryRoles(context, tree, batteries);
-  const vents = ventUses(context, tree, dry, batteries);
+  const feetOfVentStacks = wetFeet(context, feet, places);
+  const dry = dryRoles(context, tree, batteries, places, feetOfVentStacks);
+  const vents = ventUses(context, tree, dry, batteries, places, feetOfVentStacks);
   const drains = drainRoles(
     stackContext,
     outlet,
@@ -82,10 +86,12 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
     batteries,
     outsideBuilding(outline, network, paths, code.sewerBegins),
   );
-  const wet = wetUses(context, drains, batteries);
+  const wet = wetUses(context, drains, batteries, feetOfVentStacks);
 
   const mainVents = mainVentUses(context, feet, dry);
   const largest = onlyWidestVents(context, feet);
+  const inArm = new Set(air.flatMap(({ arm, foot }) => (foot === null ? [] : arm)));
+  const ends = drainEnds(paths, drains);
   const stackUses = new Map<PipeId, StackUse>();
   const offsets = new Map<PipeId, number>();
   for (const stack of stacks) {
@@ -93,7 +99,7 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
     for (const { pipes, length } of stack.offsets) for (const pipe of pipes) offsets.set(pipe, length);
   }
   const uses = network.pipes.map(({ id }): PipeUse => {
-    const { load, closets, from, to } = loads.pipes[id]!;
+    const { load, closets, counts, from, to } = loads.pipes[id]!;
     const isWet = paths.wet[id]!;
     const own = wet.get(id);
     const vent = dry.get(id);
@@ -110,16 +116,19 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
         ? outlet[id]
           ? 'outlet'
           : (own?.portion ?? null)
-        : own === undefined && vent !== undefined && hasWetPortion(batteries, vent)
+        : own === undefined && vent !== undefined && hasWetPortion(batteries, feetOfVentStacks, vent)
           ? 'dry'
           : null,
       load,
       closets,
+      counts,
       fixtures: to - from,
       vertical: paths.vertical[id] === true,
       slope: paths.slopes[id]!.slope,
       trap: first === undefined ? null : loads.fixtures[first]!.trap,
       outlet: outlet[id] && fixtures.length > 0 ? largestOutlet(loads, code, fixtures) : null,
+      inArm: inArm.has(id),
+      endsAt: ends[id] ?? null,
       inflows: isWet ? stream.inflows[stream.up(id)]! : [],
       joining: isWet ? stream.dry[stream.up(id)]!.filter((pipe) => dry.has(pipe)) : (tree.below.get(id) ?? []),
       stack: stackUses.get(id) ?? null,
@@ -127,6 +136,7 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
       battery: battery === null ? null : { facts: batteries[battery]!.facts, reading: batteries[battery]!.reading },
       vent: vents.get(id) ?? null,
       standsIn: own?.standsIn ?? null,
+      wetPortion: own?.wetPortion ?? null,
       drain: drain ?? null,
       mainVent: mainVents.get(id) ?? null,
       isMainVent: largest.has(id),
@@ -195,8 +205,11 @@ function stackAbove(paths: Paths, stacks: readonly Stack[]): boolean[] {
 
 const hasWetPortion = (
   batteries: readonly Battery[],
-  { role, battery }: { role: Role; battery: number | null },
-): boolean => role === 'circuit-vent' && battery !== null && batteries[battery]!.facts.circuit.wetPortion.length > 0;
+  wet: ReadonlyMap<JointId, WetFoot>,
+  { role, battery, foot }: DryRole,
+): boolean =>
+  (role === 'vent-stack' && foot !== null && wet.has(foot.joint)) ||
+  (role === 'circuit-vent' && battery !== null && batteries[battery]!.facts.circuit.wetPortion.length > 0);
 
 function largestOutlet(loads: Loads, code: PlumbingCode, fixtures: readonly FixtureId[]) {
   return fixtures.map((fixture) => loads.fixtures[fixture]!.row.leastTrap).reduce((a, b) => code.series.larger(a, b));

@@ -31,6 +31,31 @@ export function drainRoles(
   return roles;
 }
 
+/**
+ * Of branches and fixture drains, what their way downstream comes to first: a stack, or the building drain, which is also
+ * what leaves the building without one. By pipe id.
+ */
+export function drainEnds(
+  { inFlowOrder, next }: Paths,
+  drains: readonly (DrainRole | null)[],
+): ('stack' | 'building-drain' | null)[] {
+  const ends: ('stack' | 'building-drain' | null)[] = drains.map(() => null);
+  const isLine = (pipe: PipeId): boolean => drains[pipe] === 'branch' || drains[pipe] === 'fixture-drain';
+  for (const pipe of [...inFlowOrder].reverse()) {
+    if (!isLine(pipe)) continue;
+    const down = next[pipe];
+    ends[pipe] =
+      down === null || down === undefined
+        ? 'building-drain'
+        : isLine(down)
+          ? ends[down]!
+          : drains[down] === 'stack'
+            ? 'stack'
+            : 'building-drain';
+  }
+  return ends;
+}
+
 /** By pipe id: all water that passes came through one drawn trap, whatever number of fixtures stand over it. */
 function throughOneTrap({ inFlowOrder, entering, traps, next, wet }: Paths): boolean[] {
   const none = -1;

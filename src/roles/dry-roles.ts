@@ -3,7 +3,8 @@ import type { JointId, PipeId } from '../network/network.ts';
 import type { BatteryContext } from './battery-facts.ts';
 import type { Stack } from './find-stacks.ts';
 import type { Battery, VentFoot } from './roles.ts';
-import { stackJoints } from './stack-joints.ts';
+import type { StackPlace } from './stack-joints.ts';
+import { risesOverStorey, type WetFoot } from './wet-feet.ts';
 
 export interface DryRole {
   readonly role: Role;
@@ -54,16 +55,22 @@ export function ventTree(feet: readonly VentFoot[]): VentTree {
 }
 
 /** Role of every used dry pipe, from where it starts and what it meets on the way to the sky. */
-export function dryRoles(context: BatteryContext, tree: VentTree, batteries: readonly Battery[]): Map<PipeId, DryRole> {
+export function dryRoles(
+  context: BatteryContext,
+  tree: VentTree,
+  batteries: readonly Battery[],
+  places: ReadonlyMap<JointId, StackPlace>,
+  wet: ReadonlyMap<JointId, WetFoot>,
+): Map<PipeId, DryRole> {
   const roles = new Map<PipeId, DryRole>();
-  const start = footRoles(context, batteries);
+  const start = footRoles(context, batteries, places, wet);
   for (const pipe of tree.order) {
     const below = (tree.below.get(pipe) ?? []).map((one) => roles.get(one)!).filter(({ role }) => role !== 'idle');
     const foot = tree.footOf.get(pipe);
     if (foot !== undefined && below.length === 0) roles.set(pipe, start(foot));
     else roles.set(pipe, meet(below));
   }
-  nameYokes(tree, roles);
+  nameYokes(context, tree, roles);
   return roles;
 }
 
@@ -83,29 +90,39 @@ function meet(below: readonly DryRole[]): DryRole {
 }
 
 /** A stack's vent that ends in the vent stack between the ends of both is a yoke vent. */
-function nameYokes(tree: VentTree, roles: Map<PipeId, DryRole>): void {
+function nameYokes(context: BatteryContext, tree: VentTree, roles: Map<PipeId, DryRole>): void {
   for (const pipe of tree.order) {
     const it = roles.get(pipe)!;
     if (it.role !== 'yoke-vent') continue;
     const next = tree.above.get(pipe) ?? null;
     const role = next === null ? null : roles.get(next)!.role;
-    if (role !== 'yoke-vent' && role !== 'vent-stack') demote(tree, roles, pipe);
+    if (role !== 'yoke-vent' && role !== 'vent-stack') demote(context, tree, roles, pipe);
   }
 }
 
-/** A foot on a stack whose vent meets no vent stack: what it is then depends on the traps that breathe through it. */
-function demote(tree: VentTree, roles: Map<PipeId, DryRole>, last: PipeId): void {
+/**
+ * A foot on a stack whose vent meets no vent stack: a vent stack itself, though its foot lies too high, where it rises
+ * over a storey and no trap needs it; else what the traps that breathe through it make of it.
+ */
+function demote(context: BatteryContext, tree: VentTree, roles: Map<PipeId, DryRole>, last: PipeId): void {
   for (let pipe: PipeId | undefined = last; pipe !== undefined; pipe = tree.below.get(pipe)?.[0]) {
     const it = roles.get(pipe)!;
     if (it.role !== 'yoke-vent') return;
-    roles.set(pipe, { ...it, role: byTraps(it.foot!.traps.length), stack: null });
+    const { traps, path } = it.foot!;
+    const stands = traps.length === 0 && risesOverStorey(context, path);
+    roles.set(pipe, stands ? { ...it, role: 'vent-stack' } : { ...it, role: byTraps(traps.length), stack: null });
   }
 }
 
 const byTraps = (traps: number): Role =>
   traps === 0 ? 'idle' : traps === 1 ? 'individual-vent' : traps === 2 ? 'dual-vent' : 'continuous-vent';
 
-function footRoles(context: BatteryContext, batteries: readonly Battery[]): (foot: VentFoot) => DryRole {
+function footRoles(
+  context: BatteryContext,
+  batteries: readonly Battery[],
+  onStack: ReadonlyMap<JointId, StackPlace>,
+  wet: ReadonlyMap<JointId, WetFoot>,
+): (foot: VentFoot) => DryRole {
   const { stream, stacks } = context;
   const topOf = new Map<JointId, Stack>(stacks.map((stack) => [stream.up(stack.top), stack]));
   const reliefAt = new Map<JointId, number>();
@@ -118,7 +135,6 @@ function footRoles(context: BatteryContext, batteries: readonly Battery[]): (foo
     if (relief !== null && relief.kind !== 'drain') reliefAt.set(relief.joint, index);
     for (const { joint, dry } of additional) if (dry) additionalAt.set(joint, index);
   });
-  const onStack = stackJoints(context);
   return (foot) => {
     const { joint, traps, path } = foot;
     const of = (role: Role, stack: Stack | null, battery: number | null): DryRole => ({ role, foot, stack, battery });
@@ -126,10 +142,13 @@ function footRoles(context: BatteryContext, batteries: readonly Battery[]): (foo
     if (top !== undefined) return of('stack-vent', top, footOf.get(joint) ?? null);
     const place = onStack.get(joint);
     if (place !== undefined) {
-      if (place.at === 'foot' && passesStorey(context, path)) return of('vent-stack', place.stack, null);
+      if ((place.at === 'foot' || place.at === 'drain') && risesOverStorey(context, path))
+        return of('vent-stack', place.stack, null);
       if (place.at === 'offset') return of('offset-relief-vent', place.stack, null);
       if (place.at === 'between' && !footOf.has(joint)) return of('yoke-vent', place.stack, null);
     }
+    const wetFoot = wet.get(joint);
+    if (wetFoot !== undefined) return of('vent-stack', wetFoot.stack, null);
     const relief = reliefAt.get(joint);
     if (relief !== undefined) return of('relief-vent', null, relief);
     const additional = additionalAt.get(joint);
@@ -141,11 +160,4 @@ function footRoles(context: BatteryContext, batteries: readonly Battery[]): (foo
     }
     return of(byTraps(traps.length), null, null);
   };
-}
-
-function passesStorey({ network, floors }: BatteryContext, path: readonly PipeId[]): boolean {
-  const heights = path.flatMap((pipe) =>
-    network.pipes[pipe]!.ends.flatMap((joint) => network.joints[joint]!.at?.[2] ?? []),
-  );
-  return heights.length > 0 && floors.passes(Math.min(...heights), Math.max(...heights));
 }

@@ -1,4 +1,4 @@
-import type { StackUse } from '../codes/use.ts';
+import type { StackJoin, StackUse } from '../codes/use.ts';
 import type { Loads } from '../loads/loads.ts';
 import type { Network, PipeId } from '../network/network.ts';
 import type { FixtureId, Paths } from '../paths/paths.ts';
@@ -125,7 +125,8 @@ function findLimbs({ network, paths, loads }: StackContext, outlet: readonly boo
 }
 
 /** The stack as a sizing rule sees it from one of its sections. */
-export function stackUseAt({ loads, paths, floors }: StackContext, stack: Stack, section: PipeId): StackUse {
+export function stackUseAt(context: StackContext, stack: Stack, section: PipeId): StackUse {
+  const { loads, paths, floors, stream } = context;
   const { from, to } = loads.pipes[section]!;
   const byStorey = new Map<number, Load>();
   const inside = new Set<FixtureId>(loads.order.slice(from, to));
@@ -146,5 +147,32 @@ export function stackUseAt({ loads, paths, floors }: StackContext, stack: Stack,
   for (const [storey, load] of [...byStorey].sort(([a], [b]) => a - b)) {
     if (load > heaviest.load) heaviest = { storey, load };
   }
-  return { id: stack.id, heaviestStorey: heaviest, foot: stack.foot, footLoad: loads.pipes[stack.foot]!.load };
+  return {
+    id: stack.id,
+    heaviestStorey: heaviest,
+    foot: stack.foot,
+    footLoad: loads.pipes[stack.foot]!.load,
+    joins: stackJoins(context, stack, section),
+    allJoins: stackJoins(context, stack, stack.foot),
+    rise: stack.pipes.reduce((sum, pipe) => (paths.vertical[pipe] === true ? sum + stream.span(pipe) : sum), 0),
+  };
+}
+
+/** Heights at which drains, or fixtures at the joint itself, come into the stack down to the head of a section. */
+function stackJoins(
+  { network, stream, paths, loads }: StackContext,
+  { pipes }: Stack,
+  section: PipeId,
+): readonly StackJoin[] {
+  return pipes.slice(0, pipes.indexOf(section) + 1).flatMap((pipe, at): StackJoin[] => {
+    const joint = stream.up(pipe);
+    const before = pipes[at - 1];
+    const drains = stream.inflows[joint]!.filter((one) => one !== before);
+    const own = paths.entering[pipe]!;
+    if (drains.length === 0 && own.length === 0) return [];
+    const load =
+      drains.reduce((sum, one) => sum + loads.pipes[one]!.load, 0) +
+      own.reduce((sum, fixture) => sum + loads.fixtures[fixture]!.load, 0);
+    return [{ height: network.joints[joint]!.at?.[2] ?? null, load: load as Load }];
+  });
 }

@@ -4,23 +4,26 @@ import type { JointId, PipeId } from '../network/network.ts';
 import { type BatteryContext, batteryFacts, type Draft } from './battery-facts.ts';
 import { trapsByFoot } from './feet.ts';
 import type { Battery, ReadingGround } from './roles.ts';
-import { stackJoints } from './stack-joints.ts';
+import type { StackPlace } from './stack-joints.ts';
 
 /**
  * Rows of traps that breathe through one foot, each judged under every reading of the code. A foot further down the
  * same level line joins its traps to the row above when the longer row holds as circuit vented and ends at a relief vent.
  */
-export function formBatteries(context: BatteryContext, answered: (battery: Battery) => Reading | null): Battery[] {
+export function formBatteries(
+  context: BatteryContext,
+  onStacks: ReadonlyMap<JointId, StackPlace>,
+  answered: (battery: Battery) => Reading | null,
+): Battery[] {
   const drafts = trapsByFoot(context.paths)
     .map(({ foot, traps }): Draft => ({ foot, traps, additional: [] }))
     .filter(({ traps }) => traps.some(({ through }) => through.length > 0));
-  const onStackVents = stackJoints(context);
   const batteries: Battery[] = [];
   for (const row of longestRows(context, drafts)) {
     const judged = withoutFreeTraps(context, row, batteries.length);
     if (judged === null) continue;
     const word = answered(judged);
-    if (word === null && judged.facts.word === null && !isRow(judged, onStackVents.has(row.foot))) continue;
+    if (word === null && judged.facts.word === null && !isRow(judged, onStacks.has(row.foot))) continue;
     batteries.push(word === null || word === judged.reading ? judged : readAs(judged, word));
   }
   return batteries;

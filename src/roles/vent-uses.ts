@@ -1,5 +1,5 @@
 import type { VentUse } from '../codes/use.ts';
-import type { PipeId } from '../network/network.ts';
+import type { JointId, PipeId } from '../network/network.ts';
 import type { FixtureId } from '../paths/paths.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Load } from '../units/quantity.ts';
@@ -7,8 +7,10 @@ import type { BatteryContext } from './battery-facts.ts';
 import type { DryRole, VentTree } from './dry-roles.ts';
 import { type Stack, stackUseAt } from './find-stacks.ts';
 import type { Battery, VentFoot } from './roles.ts';
+import type { StackPlace } from './stack-joints.ts';
+import { footLengths, ventLengths } from './vent-lengths.ts';
+import type { WetFoot } from './wet-feet.ts';
 
-const stackish: ReadonlySet<string> = new Set(['stack-vent', 'vent-stack', 'vent-header']);
 /** Vents that follow another pipe's size: no load, no length, unless traps breathe through them as well. */
 const followers: ReadonlySet<string> = new Set([
   'relief-vent',
@@ -23,11 +25,12 @@ export function ventUses(
   tree: VentTree,
   roles: ReadonlyMap<PipeId, DryRole>,
   batteries: readonly Battery[],
+  places: ReadonlyMap<JointId, StackPlace>,
+  wet: ReadonlyMap<JointId, WetFoot>,
 ): Map<PipeId, VentUse> {
-  const { stream, stacks } = context;
+  const { stream, stacks, loads, code, kindOf } = context;
   const uses = new Map<PipeId, VentUse>();
   const gathered = new Map<PipeId, Gathered>();
-  const ends = footLengths(context, tree, roles, batteries);
   const stackUses = new Map<number, ReturnType<typeof stackUseAt>>(
     stacks.map((stack) => [stack.id, stackUseAt(context, stack, stack.foot)]),
   );
@@ -47,29 +50,34 @@ export function ventUses(
     if (own !== undefined) join(sum, gatheredAt(own, roles.get(pipe)!, batteries));
     gathered.set(pipe, sum);
   }
-  const branchLength = branchVentLengths(tree, roles, gathered, ends);
+  const lengths = ventLengths(
+    context,
+    tree,
+    roles,
+    (pipe) => gathered.get(pipe)!.feet,
+    (pipe) => gathered.get(pipe)!.fixtures.size > 0,
+    footLengths(context, tree, roles, batteries, wet),
+  );
   for (const pipe of tree.order) {
     const it = roles.get(pipe)!;
     const sum = gathered.get(pipe)!;
     const stack = it.stack === null ? null : stackUses.get(it.stack.id)!;
-    const length = (): number | null => {
-      if (it.role === 'branch-vent') return branchLength.get(pipe) ?? null;
-      if (it.role === 'vent-header') return Math.max(...sum.feet.map((foot) => ends.toSky.get(foot)!));
-      if (it.role === 'stack-vent' || it.role === 'vent-stack')
-        return it.foot === null ? null : ends.toSky.get(it.foot)!;
-      if (
-        it.role === 'circuit-vent' ||
-        it.role === 'continuous-vent' ||
-        (followers.has(it.role) && sum.fixtures.size > 0)
-      )
-        return it.foot === null ? null : ends.toStackish.get(it.foot)!;
-      return null;
-    };
+    const length = lengths.get(pipe) ?? null;
+    const traps = [...sum.traps];
     uses.set(pipe, {
       load: loadOf(context, sum, stacks),
-      length: length(),
+      length: length?.total ?? null,
+      level: length?.level ?? null,
+      closets: traps.filter((fixture) => loads.fixtures[fixture]!.row.closet).length,
+      counts: Object.fromEntries(
+        code.counts.map(({ id, takes }) => [
+          id,
+          traps.filter((fixture) => takes({ kind: kindOf(fixture), ...loads.fixtures[fixture]! })).length,
+        ]),
+      ),
       largestTrap: largestTrap(context, sum, it, batteries),
       stack: it.role === 'stack-vent' || it.role === 'vent-stack' ? stack : null,
+      stacks: [...sum.stacks].sort((a, b) => a - b).map((id) => stackUses.get(id)!),
       follows:
         it.role === 'relief-vent' || it.role === 'additional-circuit-vent'
           ? (firstOfBattery.get(it.battery ?? -1) ?? null)
@@ -83,9 +91,18 @@ export function ventUses(
         it.battery !== null && batteries[it.battery]!.reading === 'wet-vent'
           ? batteries[it.battery]!.facts.wet.storeys
           : 0,
+      serves: it.stack?.id ?? null,
+      offset: it.role === 'offset-relief-vent' ? (places.get(it.foot!.joint)?.offset ?? null) : null,
+      leaves: it.role === 'vent-stack' ? leavesAt(it.foot?.joint ?? null, places) : null,
     });
   }
   return uses;
+}
+
+/** Where on its stack a vent stack starts; one whose lower part is wet starts at the stack too. */
+function leavesAt(foot: JointId | null, places: ReadonlyMap<JointId, StackPlace>): VentUse['leaves'] {
+  const at = foot === null ? undefined : places.get(foot)?.at;
+  return at === 'drain' ? 'drain' : at === 'between' ? 'above a branch' : 'foot';
 }
 
 interface Gathered {
@@ -165,59 +182,6 @@ function largestTrap(
   if (battery !== null && followers.has(role)) traps.push(...batteries[battery]!.facts.traps.map(({ size }) => size));
   const [first, ...rest] = traps;
   return first === undefined ? null : rest.reduce((a, b) => code.series.larger(a, b), first);
-}
-
-interface FootLengths {
-  /** From the drainage connection to the next stack vent, vent stack, header or open air. */
-  readonly toStackish: ReadonlyMap<VentFoot, number>;
-  readonly toSky: ReadonlyMap<VentFoot, number>;
-}
-
-function footLengths(
-  { stream }: BatteryContext,
-  tree: VentTree,
-  roles: ReadonlyMap<PipeId, DryRole>,
-  batteries: readonly Battery[],
-): FootLengths {
-  const toStackish = new Map<VentFoot, number>();
-  const toSky = new Map<VentFoot, number>();
-  for (const foot of tree.footOf.values()) {
-    let sky = 0;
-    let near = 0;
-    let arrived = false;
-    const start = roles.get(foot.path[0]!)!;
-    for (const pipe of foot.path) {
-      if (!arrived && stackish.has(roles.get(pipe)!.role) && !stackish.has(start.role)) arrived = true;
-      sky += stream.span(pipe);
-      if (!arrived) near += stream.span(pipe);
-    }
-    // A circuit vent is measured from the branch: its wet portion counts.
-    const row = start.battery === null ? null : batteries[start.battery]!;
-    const wet =
-      start.role === 'circuit-vent' && row !== null
-        ? row.facts.circuit.wetPortion.reduce((sum, pipe) => sum + stream.span(pipe), 0)
-        : 0;
-    toStackish.set(foot, near + wet);
-    toSky.set(foot, sky + wet);
-  }
-  return { toStackish, toSky };
-}
-
-/** The most distant drainage connection of a branch vent, the same for every part of it. */
-function branchVentLengths(
-  tree: VentTree,
-  roles: ReadonlyMap<PipeId, DryRole>,
-  gathered: ReadonlyMap<PipeId, Gathered>,
-  ends: FootLengths,
-): Map<PipeId, number> {
-  const lengths = new Map<PipeId, number>();
-  for (const pipe of [...tree.order].reverse()) {
-    if (roles.get(pipe)!.role !== 'branch-vent') continue;
-    const above = tree.above.get(pipe) ?? null;
-    const known = above === null ? undefined : lengths.get(above);
-    lengths.set(pipe, known ?? Math.max(...gathered.get(pipe)!.feet.map((foot) => ends.toStackish.get(foot)!)));
-  }
-  return lengths;
 }
 
 /** The stack's pipe below a yoke vent's foot, and the vent stack's where it arrives. */

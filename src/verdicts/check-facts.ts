@@ -1,5 +1,6 @@
 import type { CheckedDrain, CheckedPipe, CheckedStack, CheckedTrap, CheckFacts } from '../codes/check.ts';
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
+import type { PipeUse } from '../codes/use.ts';
 import type { ElementId } from '../model/model.ts';
 import type { Network, PipeId } from '../network/network.ts';
 import type { Paths } from '../paths/paths.ts';
@@ -56,25 +57,20 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
     };
   });
 
+  const ofStack = ventsOfStacks(run);
   return { pipes, traps, stacks: roles.stacks.map((stack) => checkedStack(stack)), drains: buildingDrains() };
 
   function checkedStack(stack: Stack): CheckedStack {
-    const vents = roles.uses.filter(({ vent }) => vent?.stack?.id === stack.id);
-    const yokes = roles.uses.filter(
-      ({ role, vent }) =>
-        role === 'yoke-vent' &&
-        vent?.between !== null &&
-        vent?.between !== undefined &&
-        stack.pipes.includes(vent.between[0]),
-    );
-    const heightAt = (use: (typeof yokes)[number]): number => network.joints[use.vent!.foot]!.at?.[2] ?? 0;
+    const vents = ofStack.get(stack.id) ?? [];
+    const yokes = vents.filter(({ role }) => role === 'yoke-vent');
+    const heightAt = (use: PipeUse): number => network.joints[use.vent!.foot]!.at?.[2] ?? 0;
     return {
       elements: elementsOf(stack.pipes),
       footLoad: loads.pipes[stack.foot]!.load,
       storeysServed: stack.served.length,
       height: stack.height,
       hasStackVent: vents.some(({ role }) => role === 'stack-vent'),
-      hasVentStack: vents.some(({ role }) => role === 'vent-stack'),
+      ventStack: soundest(vents.map(({ vent }) => vent!.leaves)),
       isWetVent: roles.batteries.some(
         ({ facts, reading, broken }) =>
           reading === 'wet-vent' &&
@@ -84,7 +80,7 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
       ),
       yokes: [...new Set(yokes.map((use) => roles.floors.at(heightAt(use))))].sort((a, b) => b - a),
       topStorey: stack.served.at(-1) ?? 0,
-      offsets: stack.offsets.map(({ pipes: level, length }) => {
+      offsets: stack.offsets.map(({ pipes: level, length }, offset) => {
         const first = stack.pipes.indexOf(level[0]!);
         const above = stack.pipes.slice(0, first);
         const heights = above.flatMap((pipe) =>
@@ -100,10 +96,7 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
           length,
           storeysAbove: floors.length,
           loadAbove: loads.pipes[above.at(-1) ?? stack.top]!.load,
-          reliefVents: roles.feet.filter(
-            ({ path }) =>
-              roles.uses[path[0]!]!.role === 'offset-relief-vent' && roles.uses[path[0]!]!.vent?.follows !== undefined,
-          ).length,
+          reliefVents: vents.filter(({ vent }) => vent!.offset === offset).length,
         };
       }),
     };
@@ -130,3 +123,21 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
     return (list as NominalSize[]).reduce((a, b) => (code.series.rank(a) <= code.series.rank(b) ? a : b));
   }
 }
+
+/** Dry pipes at the feet of the vents that serve each stack, by the stack's id. */
+function ventsOfStacks({ roles }: Run): Map<number, PipeUse[]> {
+  const found = new Map<number, PipeUse[]>();
+  for (const { path } of roles.feet) {
+    const use = roles.uses[path[0]!]!;
+    const stack = use.vent?.serves ?? null;
+    if (stack === null) continue;
+    const known = found.get(stack);
+    if (known === undefined) found.set(stack, [use]);
+    else known.push(use);
+  }
+  return found;
+}
+
+const soundness: readonly CheckedStack['ventStack'][] = [null, 'above a branch', 'drain', 'foot'];
+const soundest = (places: readonly CheckedStack['ventStack'][]): CheckedStack['ventStack'] =>
+  places.reduce((a, b) => (soundness.indexOf(a) >= soundness.indexOf(b) ? a : b), null);

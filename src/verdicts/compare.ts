@@ -55,9 +55,7 @@ function verdictOf(
 /** What entered a vent table: for a wet vent the whole vent's load, for a dry one its own; null where no vent table is read. */
 function enteringLoad(use: Run['roles']['uses'][number]): Load | null {
   if (use.role === 'wet-vent') return use.battery?.facts.wet.load ?? null;
-  if (use.role === 'circuit-vent' && use.portion === 'wet') {
-    return (use.battery?.facts.circuit.onVent.reduce((sum, { load }) => sum + load, 0) ?? 0) as Load;
-  }
+  if (use.wetPortion !== null) return use.wetPortion.load;
   return use.vent === null || use.role === 'idle' ? null : use.vent.load;
 }
 

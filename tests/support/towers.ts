@@ -11,6 +11,8 @@ export interface Tower {
   readonly offset?: number;
   /** A vent stack from just below the lowest branch, with a foot `VF`, to the stack vent. */
   readonly ventStack?: boolean;
+  /** Storeys with a yoke vent: from `Y<storey>`, just below the storey's branch, to `W<storey>` on the vent stack. */
+  readonly yokes?: readonly number[];
 }
 
 /** Metres from floor to floor. */
@@ -23,7 +25,7 @@ export const floorOf = (storey: number): number => storeyHeight * (storey - 1);
  * without fixtures are passed by. The stack vent is `S<top>-VH`, `VH-VT`; the vent stack comes in at `VH`.
  */
 export function tower(storeys: readonly (readonly string[])[], options: Tower = {}): string {
-  const { more = '', stack = '4 in', stackVent = true, ventStack = false, offset } = options;
+  const { more = '', stack = '4 in', stackVent = true, ventStack = false, yokes = [], offset } = options;
   const top = storeys.findLastIndex((fixtures) => fixtures.length > 0) + 1;
   const used = storeys.flatMap((fixtures, at) => (fixtures.length > 0 ? [at + 1] : [])).reverse();
   const roof = floorOf(storeys.length + 1);
@@ -31,7 +33,13 @@ export function tower(storeys: readonly (readonly string[])[], options: Tower = 
   const joints = used.map((storey) => `node S${storey} at 0 0 ${floorOf(storey) - 0.4}`);
   const foot = ventStack ? ['VF (down 0.3)'] : [];
   const aside = offset === undefined ? [] : ['OA (down 1.2)', `OB (east ${offset} fall 1:50)`];
-  const down = [...used.map((storey) => `S${storey}`), ...foot, ...aside, 'SF (to -1.6)', 'OUT (east 9 fall 1:50)'];
+  const upward = [...yokes].sort((a, b) => a - b);
+  const onStack = used.flatMap((storey) => [
+    `S${storey}`,
+    ...(yokes.includes(storey) ? [`Y${storey} (down 0.2)`] : []),
+  ]);
+  const ties = upward.map((storey) => ` > W${storey} (to ${floorOf(storey) + 1.1})`).join('');
+  const down = [...onStack, ...foot, ...aside, 'SF (to -1.6)', 'OUT (east 9 fall 1:50)'];
   return `model "A stack"
 ${floors.join('\n')}
 ${joints.join('\n')}
@@ -39,7 +47,8 @@ drain ${stack}: ${down.join(' > ')}
 sewer OUT
 ${used.map((storey) => branchOf(storey, storeys[storey - 1]!, roof + 1)).join('\n')}
 ${stackVent ? `vent 3 in: S${top} > VH (to ${roof + 0.2}) > VT (to ${roof + 0.8})\nterminal VT` : ''}
-${ventStack ? `vent 3 in: VF > VB (north 0.5 rise 1:50) > VU (to ${roof + 0.15}) > VH` : ''}
+${ventStack ? `vent 3 in: VF > VB (north 0.5 rise 1:50)${ties} > VU (to ${roof + 0.15}) > VH` : ''}
+${upward.map((storey) => `vent 3 in: Y${storey} > W${storey}`).join('\n')}
 on "Storey 1"
 ${more}
 roof "Roof" from -20 -20 to 20 20 top ${roof} thick 0.3

@@ -194,39 +194,37 @@ function stackVents({ family }: Tools): Check {
   return {
     id: 'NPC-R68',
     run: ({ stacks }) =>
-      stacks.flatMap(
-        ({ elements, hasStackVent, hasVentStack, isWetVent, storeysServed, yokes, topStorey, footLoad }) => {
-          const found: Finding[] = [];
-          if (!hasStackVent)
-            found.push(
-              finding('stack-vent-missing', elements, { loadUnits: unitsOf(footLoad) }, family.rule('NPC-R67').clause),
-            );
-          if (storeysServed > storeys.value && !hasVentStack && !isWetVent) {
+      stacks.flatMap(({ elements, hasStackVent, ventStack, isWetVent, storeysServed, yokes, topStorey, footLoad }) => {
+        const found: Finding[] = [];
+        if (!hasStackVent)
+          found.push(
+            finding('stack-vent-missing', elements, { loadUnits: unitsOf(footLoad) }, family.rule('NPC-R67').clause),
+          );
+        if (storeysServed > storeys.value && ventStack !== 'foot' && !isWetVent) {
+          found.push(
+            finding(
+              ventStack === null ? 'vent-stack-missing' : 'vent-stack-misplaced',
+              elements,
+              { storeys: storeysServed, storeysMost: storeys.value, ...(ventStack === null ? {} : { at: ventStack }) },
+              family.rule('NPC-R68').clause,
+            ),
+          );
+        }
+        if (storeysServed > yokeStoreys.value) {
+          for (let bottom = topStorey - section.value + 1; bottom > 0; bottom -= section.value) {
+            if (yokes.some((storey) => storey >= bottom - 1 && storey <= bottom)) continue;
             found.push(
               finding(
-                'vent-stack-missing',
+                'yoke-vent-missing',
                 elements,
-                { storeys: storeysServed, storeysMost: storeys.value },
-                family.rule('NPC-R68').clause,
+                { storey: bottom, storeys: storeysServed },
+                family.rule('NPC-R71').clause,
               ),
             );
           }
-          if (storeysServed > yokeStoreys.value) {
-            for (let bottom = topStorey - section.value + 1; bottom > 0; bottom -= section.value) {
-              if (yokes.some((storey) => storey >= bottom - 1 && storey <= bottom)) continue;
-              found.push(
-                finding(
-                  'yoke-vent-missing',
-                  elements,
-                  { storey: bottom, storeys: storeysServed },
-                  family.rule('NPC-R71').clause,
-                ),
-              );
-            }
-          }
-          return found;
-        },
-      ),
+        }
+        return found;
+      }),
   };
 }
 

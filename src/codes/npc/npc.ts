@@ -33,6 +33,10 @@ export function npc(tools: Tools): CodeRules {
       additionalAfter: family.number('additional-fixtures', 'count').value,
       turnDegrees: family.number('additional-turn', 'angle').value,
     },
+    ventStack: {
+      storeys: family.number('vent-stack-storeys', 'count').value,
+      footLoad: family.number('vent-stack-foot-load', 'load').value as Load,
+    },
     ventLength,
     wetVentLoad: 'whole',
     islandVents: false,

@@ -28,8 +28,12 @@ const growsToSky: ReadonlySet<Role> = new Set([
 ]);
 
 /** Individual and dual vents carry no length; the vents of a stack are measured to open air (R76, R77). */
-export const ventLength = (role: Role): VentLengthTo | null =>
-  byStack.has(role) || role === 'vent-header' ? 'sky' : byLength.has(role) || followers.has(role) ? 'stack' : null;
+export const ventLength = (role: Role, breathes: boolean): VentLengthTo | null =>
+  byStack.has(role) || role === 'vent-header'
+    ? 'sky'
+    : byLength.has(role) || (followers.has(role) && breathes)
+      ? 'stack'
+      : null;
 
 /** Sizes of dry vents: National Plumbing Code 2.5.7. and 2.5.8., rules R51, R65, R73 to R80. */
 export function ventRules({ family, omit }: Tools): SizingRule[] {
@@ -41,6 +45,7 @@ export function ventRules({ family, omit }: Tools): SizingRule[] {
   const { rank } = series;
   const reliefMost = family.size('relief-most');
   const mainVent = family.size('main-vent');
+  const wetStackStoreys = family.number('wet-stack-storeys', 'count');
 
   const lengthRule = (pipe: PipeUse): string =>
     pipe.role === 'continuous-vent' ? 'NPC-R51' : pipe.role === 'circuit-vent' ? 'NPC-R65' : 'NPC-R76';
@@ -97,6 +102,20 @@ export function ventRules({ family, omit }: Tools): SizingRule[] {
         return size === null
           ? undefined
           : followStep(rule('NPC-R77'), halfOf(size), { stackSize: size, demand: 'half the stack' });
+      },
+    },
+    {
+      // The stack vent of a wet vent over many storeys keeps the wet vent's size to open air (2.5.8.4.(4)).
+      id: 'NPC-R77-wet',
+      reads: 'sizes',
+      ask: (pipe, soFar) => {
+        const wet = pipe.battery?.facts.line[0];
+        if (pipe.role !== 'stack-vent' || wet === undefined) return undefined;
+        const storeysServed = pipe.vent?.wetVentStoreys ?? 0;
+        const size = storeysServed > wetStackStoreys.value ? soFar(wet) : null;
+        return size === null
+          ? undefined
+          : followStep(rule('NPC-R77'), size, { wetVent: size, storeys: storeysServed, demand: 'the wet vent' });
       },
     },
     { id: 'NPC-R73', reads: 'sizes', ask: (pipe, soFar) => relief(pipe, soFar) },

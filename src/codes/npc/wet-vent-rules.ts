@@ -1,7 +1,7 @@
 import { rowAtSize } from '../../tables/find-row.ts';
 import { sizeForLoad } from '../../tables/find-size.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
-import { noLoad, plusLoad, unitsOf } from '../../units/quantity.ts';
+import { unitsOf } from '../../units/quantity.ts';
 import { floorStep, followStep, tableStep } from '../rules/steps.ts';
 import type { SizingRule } from '../sizing-rule.ts';
 import type { Tools } from '../tools.ts';
@@ -101,11 +101,24 @@ export function wetVentRules({ family, omit, settings }: Tools): SizingRule[] {
       id: 'NPC-R69',
       reads: 'use',
       ask: (pipe) => {
-        if (pipe.role !== 'circuit-vent' || pipe.portion !== 'wet' || pipe.battery === null) return undefined;
-        const load = pipe.battery.facts.circuit.onVent.reduce((sum, one) => plusLoad(sum, one.load), noLoad);
+        if (pipe.role !== 'circuit-vent' || pipe.wetPortion === null) return undefined;
+        const { load } = pipe.wetPortion;
         return tableStep(rule('NPC-R69'), sizeForLoad(wetVent, 'noCloset', load, omit), {
           loadUnits: unitsOf(load),
           mayAsk: '2 in',
+        });
+      },
+    },
+    {
+      id: 'NPC-R70',
+      reads: 'use',
+      ask: (pipe) => {
+        if (pipe.role !== 'vent-stack' || pipe.wetPortion === null) return undefined;
+        const { load, closets } = pipe.wetPortion;
+        const column = closets > 0 ? 'withCloset' : 'noCloset';
+        return tableStep(rule('NPC-R70'), sizeForLoad(wetVent, column, load, omit), {
+          loadUnits: unitsOf(load),
+          closets,
         });
       },
     },
