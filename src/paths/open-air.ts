@@ -20,19 +20,13 @@ export function openAirAt(
   identities: readonly Identity[],
   network: Network,
 ): ((joint: JointId) => Mouth | null) & { readonly assumed: () => boolean } {
-  const roofs = [...model.roofs, ...model.slabs.filter(({ predefinedType }) => predefinedType === 'ROOF')];
-  const covers: readonly Fabric[] = [...model.roofs, ...model.slabs];
-  const highest = roofs.length === 0 ? highestFloorWithFixtures(model, identities, network) : null;
+  const sky = openSky(model, identities, network);
   let assumed = false;
 
   const inTheOpen = (at: Vec3): boolean => {
-    if (highest !== null) {
-      const open = at[2] >= highest + aboveHighestFloor;
-      if (open) assumed = true;
-      return open;
-    }
-    const over = covers.filter(({ box }) => box !== null && coversInPlan(box, at));
-    return (over.length > 0 ? over : covers).every(({ box }) => box === null || at[2] > box.max[2]);
+    const open = sky.isOpen(at);
+    if (open && !sky.roofed) assumed = true;
+    return open;
   };
   const judge = (joint: JointId): Mouth | null => {
     const { elements, pipes, at } = network.joints[joint]!;
@@ -44,6 +38,29 @@ export function openAirAt(
     return pointsUp(network, joint) && inTheOpen(at) ? 'highest' : null;
   };
   return Object.assign(judge, { assumed: () => assumed });
+}
+
+export interface OpenSky {
+  /** The model draws a roof. */
+  readonly roofed: boolean;
+  readonly isOpen: (at: Vec3) => boolean;
+  /** Height in metres over which a vent at this place in plan is in open air. */
+  readonly above: (at: Vec3) => number;
+}
+
+/** From which height on a place is in the open: over every floor and roof that covers it, else over the highest floor. */
+export function openSky(model: Model, identities: readonly Identity[], network: Network): OpenSky {
+  const roofed = model.roofs.length > 0 || model.slabs.some(({ predefinedType }) => predefinedType === 'ROOF');
+  if (!roofed) {
+    const level = highestFloorWithFixtures(model, identities, network) + aboveHighestFloor;
+    return { roofed, isOpen: (at) => at[2] >= level, above: () => level };
+  }
+  const covers: readonly Fabric[] = [...model.roofs, ...model.slabs];
+  const above = (at: Vec3): number => {
+    const over = covers.filter(({ box }) => box !== null && coversInPlan(box, at));
+    return Math.max(...(over.length > 0 ? over : covers).map(({ box }) => box?.max[2] ?? Number.NEGATIVE_INFINITY));
+  };
+  return { roofed, isOpen: (at) => at[2] > above(at), above };
 }
 
 const coversInPlan = (box: Box, at: Vec3): boolean =>

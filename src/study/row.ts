@@ -5,6 +5,7 @@ import type { FixtureId } from '../paths/paths.ts';
 import { type Stream, streamOf } from '../paths/stream.ts';
 import type { Battery } from '../roles/roles.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
+import { floodLevel } from './flood-level.ts';
 
 /** A battery and its place in the building: what building its alternatives needs to know. Heights and lengths in metres. */
 export interface Row {
@@ -26,6 +27,8 @@ export interface Row {
   readonly vents: readonly OwnVent[];
   /** Of its vents, else of its line. */
   readonly material: string | null;
+  /** Dry pipes of the whole building through which air reaches the sky: what another vent may join. */
+  readonly live: ReadonlySet<PipeId>;
 }
 
 export interface OwnVent {
@@ -34,8 +37,6 @@ export interface OwnVent {
   readonly pipes: readonly PipeId[];
 }
 
-/** A fixture without a shape floods this high over its floor at most: common practice, no source. */
-const usualRim = 0.9;
 /** A storey without another above it is taken to be this high. */
 const topStorey = 4;
 
@@ -50,13 +51,7 @@ export function rowOf(outcome: Outcome, battery: Battery): Row {
   const ceiling = floors.elevations[highest + 1] ?? (floors.elevations[highest] ?? floor) + topStorey;
   const fixtures = facts.traps.map(({ fixture }) => fixture);
   const drained = [...facts.traps, ...facts.guests];
-  const flood = Math.max(
-    ...drained.map(({ fixture, storey }) => {
-      const { element, outlet } = paths.fixtures[fixture]!;
-      const top = model.elements[element]!.box?.max[2];
-      return top ?? Math.max((floors.elevations[storey] ?? floor) + usualRim, network.joints[outlet]!.at?.[2] ?? 0);
-    }),
-  );
+  const flood = Math.max(...drained.map(({ fixture }) => floodLevel(outcome, fixture)));
   const vents = ownVents(outcome, battery);
   const meets = vents.flatMap(({ pipes, foot }) => {
     const top = endOf(outcome, pipes, foot);
@@ -76,6 +71,7 @@ export function rowOf(outcome: Outcome, battery: Battery): Row {
     meet: meets.length === 0 ? null : Math.max(...meets),
     vents,
     material: materialOf(outcome, [...vents.flatMap(({ pipes }) => pipes), ...facts.line]),
+    live: new Set(shown.roles.feet.flatMap(({ path }) => path)),
   };
 }
 

@@ -38,7 +38,12 @@ export function routeFrom(row: Row, piping: ChangedPiping, from: Vec3, live: Rea
 }
 
 /** Where on a vent another may join: the point nearest in plan among those that are high enough. */
-function joinOn({ flood, meet }: Row, network: Network, pipe: Pipe, from: Vec3): PlaceAt | null {
+export function joinOn(
+  { flood, meet }: Pick<Row, 'flood' | 'meet'>,
+  network: Network,
+  pipe: Pipe,
+  from: Vec3,
+): PlaceAt | null {
   const least = flood + aboveFlood;
   const points = pipe.points!;
   // A vent reaches to the centres of the joints at its ends: another may join there too.
@@ -72,7 +77,7 @@ function shareOn(a: Vec3, b: Vec3, from: Vec3, least: number, meet: number | nul
 }
 
 /** Up, along the row, square to it; legs shorter than a millimetre fall away. */
-function wayTo(along: PlanPoint, from: Vec3, to: Vec3): Vec3[] {
+export function wayTo(along: PlanPoint, from: Vec3, to: Vec3): Vec3[] {
   const [dx, dy] = [to[0] - from[0], to[1] - from[1]];
   const ahead = dx * along[0] + dy * along[1];
   const top: Vec3 = [from[0], from[1], to[2]];
@@ -85,10 +90,6 @@ function wayTo(along: PlanPoint, from: Vec3, to: Vec3): Vec3[] {
   return points;
 }
 
-/** Dry pipes of the first piping through which air reaches the sky. */
-export const liveVents = ({ outcome }: Row): ReadonlySet<PipeId> =>
-  new Set(outcome.shown.roles.feet.flatMap(({ path }) => path));
-
 /** The piping with a vent from the foot to the vent nearest by; null where the foot has no place or finds no vent. */
 export function ventFrom(row: Row, piping: ChangedPiping, foot: Foot, name: string): ChangedPiping | null {
   const start = placeOf(row, piping, foot);
@@ -99,8 +100,7 @@ export function ventFrom(row: Row, piping: ChangedPiping, foot: Foot, name: stri
 }
 
 /** Pipes of the changed piping that a new vent may join: the live ones that are left, and those added before. */
-function liveIn(row: Row, { origin }: ChangedPiping): Set<PipeId> {
-  const live = liveVents(row);
+function liveIn({ live }: Row, { origin }: ChangedPiping): Set<PipeId> {
   return new Set(origin.flatMap((from, id) => (from === null || live.has(from) ? [id as PipeId] : [])));
 }
 
