@@ -14,8 +14,8 @@ export const blank: TextLine = { text: '', tone: 'plain' };
 export const heading = (text: string): TextLine[] => paragraph(text, '', 'heading');
 
 /**
- * `text` broken to the width of the page, behind `lead` on the first line and as far in, at least two columns, on the others. Whatever model
- * text has got into it stays within these lines and comes out harmless.
+ * `text` broken to the width of the page, behind `lead` on the first line and as far in, at least two columns, on the
+ * others. Whatever model text has got into it stays within these lines and comes out harmless.
  */
 export const paragraph = (text: string, lead = '  ', tone: Tone = 'plain'): TextLine[] =>
   // Only what the program says begins a line at the margin: a long name cannot pass for a heading.
