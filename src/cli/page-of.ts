@@ -1,18 +1,11 @@
 import { readFileSync } from 'node:fs';
 import { pageData } from '../deliver/page-data.ts';
 import { pageHtml } from '../deliver/page-html.ts';
-import { risersOf } from '../schedule/riser.ts';
 import type { ModelRun } from './run-model.ts';
 
 /** The page of a run as the bytes of one HTML file. Its script and style are those that the build made. */
-export function pageOf({ result, model, outcome }: ModelRun<unknown>): Uint8Array {
-  const data = pageData(
-    result,
-    model,
-    outcome.network,
-    { ...outcome.paths, traps: outcome.shown.roles.air },
-    risersOf(result, outcome),
-  );
+export function pageOf({ result, outcome, sizes }: ModelRun<unknown>): Uint8Array {
+  const data = pageData(result, { ...outcome, paths: { ...outcome.paths, traps: outcome.shown.roles.air } }, sizes);
   return new TextEncoder().encode(pageHtml(data, { js: built('bundle.js'), css: built('bundle.css') }));
 }
 

@@ -1,9 +1,8 @@
 import type { Vec3 } from '../geometry/vector.ts';
-import type { Model } from '../model/model.ts';
-import type { Network } from '../network/network.ts';
-import type { Paths } from '../paths/paths.ts';
-import type { Result, ResultFixture, ResultPipe } from '../schedule/result.ts';
-import type { Riser } from '../schedule/riser.ts';
+import { leanResult } from '../schedule/lean-result.ts';
+import { type Question, questionsOf } from '../schedule/questions.ts';
+import type { Result, SizeLabel } from '../schedule/result.ts';
+import { type Riser, type RiserSource, risersOf } from '../schedule/riser.ts';
 import { type FabricColumns, fabricColumns } from './page-fabric.ts';
 import { type PathColumns, pathColumns } from './page-paths.ts';
 import { type FixtureColumns, fixtureBoxes, originOf, type PipeColumns, pipeColumns } from './page-pipes.ts';
@@ -14,6 +13,10 @@ export interface PageData {
   readonly version: 1;
   /** Lean: without `elements` and the lists of ids, which the page finds again from the paths in `scene`. */
   readonly result: Result;
+  /** Sizes that the code offers, smallest first. */
+  readonly sizes: readonly SizeLabel[];
+  /** What the model does not say and a person can, most weighty first. */
+  readonly questions: readonly Question[];
   readonly scene: PageScene;
   /** Line drawings, one for each drain system, the one with most fixtures first. */
   readonly risers: readonly Riser[];
@@ -34,14 +37,12 @@ export interface PageScene {
   readonly fittings: readonly { readonly globalId: string; readonly name: string | null; readonly class: string }[];
 }
 
-/** Everything for the page from one run. Sections of `scene` are the pipes of `network`, in the same order. */
-export function pageData(
-  result: Result,
-  model: Model,
-  network: Network,
-  paths: Paths,
-  risers: readonly Riser[] = [],
-): PageData {
+/**
+ * Everything for the page from one run. Sections of `scene` are the pipes of the network, in the same order. `sizes`
+ * are those the code offers, smallest first.
+ */
+export function pageData(result: Result, source: RiserSource, sizes: readonly SizeLabel[] = []): PageData {
+  const { model, network, paths } = source;
   const origin = originOf(model, network);
   const pipeAt = indexOf(result.pipes);
   const fixtureAt = indexOf(result.fixtures);
@@ -50,7 +51,9 @@ export function pageData(
   return {
     format: 'drainwright-page',
     version: 1,
-    result: lean(result),
+    result: { ...leanResult(result), elements: [] },
+    sizes,
+    questions: questionsOf(result),
     scene: {
       origin,
       storeys: model.storeys.map(({ name, elevation }) => ({ name, elevation: millimetres(elevation - origin[2]) })),
@@ -61,7 +64,7 @@ export function pageData(
       fabricNames: fabric.names,
       fittings,
     },
-    risers,
+    risers: risersOf(result, source),
   };
 }
 
@@ -70,17 +73,4 @@ const millimetres = (value: number): number => Math.round(value * 1000);
 /** Where a row of the result stands, by file-independent key; a doubled GlobalId is told apart by its STEP id. */
 function indexOf(rows: readonly { readonly globalId: string; readonly stepId: number }[]): ReadonlyMap<string, number> {
   return new Map(rows.map(({ globalId, stepId }, index) => [`${globalId} ${stepId}`, index]));
-}
-
-function lean(result: Result): Result {
-  return { ...result, elements: [], fixtures: result.fixtures.map(leanFixture), pipes: result.pipes.map(leanPipe) };
-}
-
-function leanFixture({ waterPath: _water, airPath: _air, ...rest }: ResultFixture): ResultFixture {
-  return rest;
-}
-
-function leanPipe({ servesWater: _water, servesAir: _air, sections, ...rest }: ResultPipe): ResultPipe {
-  if (sections === undefined) return rest;
-  return { ...rest, sections: sections.map(({ servesWater: _w, servesAir: _a, ...section }) => section) };
 }

@@ -24,6 +24,8 @@ export function packPage(data: PageData): Uint8Array {
     },
     scene: replaced(data.scene, (value) => (value instanceof Int32Array ? { column: column(value) } : undefined)),
     risers: data.risers,
+    sizes: data.sizes,
+    questions: data.questions,
   };
   const json = new TextEncoder().encode(JSON.stringify(head));
   const plain = new Uint8Array(blocks.reduce((sum, block) => sum + block.length, 4 + json.length));
@@ -54,7 +56,8 @@ export function unpackPage(plain: Uint8Array): PageData {
     findings: unpackRows(head.rows.findings, numbers),
   };
   const scene = replaced(head.scene, (value) => (isColumn(value) ? numbers(value.column) : undefined));
-  return { format: 'drainwright-page', version: 1, result, scene, risers: head.risers } as PageData;
+  const { risers, sizes, questions } = head;
+  return { format: 'drainwright-page', version: 1, result, sizes, questions, scene, risers } as PageData;
 }
 
 interface Column {
@@ -67,6 +70,8 @@ interface Head {
   readonly rows: { readonly pipes: PackedRows; readonly fixtures: PackedRows; readonly findings: PackedRows };
   readonly scene: unknown;
   readonly risers: PageData['risers'];
+  readonly sizes: PageData['sizes'];
+  readonly questions: PageData['questions'];
 }
 
 const isColumn = (value: unknown): value is { readonly column: Column } =>

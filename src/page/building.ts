@@ -123,9 +123,10 @@ export function buildingOf(data: PageData): Building {
     water,
     air,
     servesWater: serves(water),
+    // The arm is the trap's own; a trap that needs no vent is nobody's guest.
     servesAir: serves((fixture) => {
-      const { arm, through, dry } = air(fixture);
-      return [...arm, ...through, ...dry];
+      const { through, dry } = air(fixture);
+      return result.fixtures[fixture]?.ventedBy.how === 'free' ? [] : [...through, ...dry];
     }),
   };
 }

@@ -27,6 +27,10 @@ export function shortLoad(words: Words, { least, most }: LoadRange, unit: string
   return `${range} ${words.shortUnit(unit)}`;
 }
 
+/** A figure of a table as printed: a number, or that a size is not permitted (NP) or without limit (NL). */
+export const limitText = (words: Words, limit: number | string): string =>
+  typeof limit === 'number' ? decimal(words, limit, 2) : (words.limits[limit] ?? limit);
+
 /** Nominal sizes as the trade writes them: `4 in`, in French `4 po`. */
 export const sizeLabel = (words: Words, label: string): string =>
   words.language === 'fr' ? label.replace(/ in$/, ' po') : label;

@@ -12,7 +12,6 @@ import type {
   SizeLabel,
   TrailStep,
 } from '../../src/schedule/result.ts';
-import { risersOf } from '../../src/schedule/riser.ts';
 import { metres } from '../../src/units/quantity.ts';
 
 /** Model, network, paths and result of one small building that agree with each other, for trying the page on. */
@@ -64,7 +63,15 @@ export interface BuildingSpec {
   readonly batteries?: (ids: ReadonlyMap<string, string>) => Result['batteries'];
 }
 
-const dns: Readonly<Record<string, number>> = { '1¼ in': 32, '1½ in': 40, '2 in': 50, '3 in': 80, '4 in': 100 };
+const dns: Readonly<Record<string, number>> = {
+  '1¼ in': 32,
+  '1½ in': 40,
+  '2 in': 50,
+  '2½ in': 65,
+  '3 in': 80,
+  '4 in': 100,
+  '5 in': 125,
+};
 const outers: Readonly<Record<string, number>> = {
   '1¼ in': 0.042,
   '1½ in': 0.048,
@@ -412,8 +419,7 @@ export function examplePage(spec: BuildingSpec): ExamplePage {
 }
 
 export const exampleData = (example: ExamplePage): PageData => {
-  const { result, model, network, paths } = example;
-  return pageData(result, model, network, paths, risersOf(result, example));
+  return pageData(example.result, example, ['1¼ in', '1½ in', '2 in', '2½ in', '3 in', '4 in', '5 in'].map(sized));
 };
 
 const parts: Readonly<Record<string, Identity['part']>> = { segment: 'pipe', fitting: 'fitting', terminal: 'fixture' };

@@ -51,6 +51,7 @@ export function fixtureCard(desk: Desk, row: number): HTMLElement {
         { class: 'banner banner-undersized' },
         make('span', { class: 'mark', 'aria-hidden': 'true' }, '▲'),
         make('strong', {}, `${words.fixture.ventedBy} ${words.fixture.unvented}`),
+        make('p', {}, words.fixture.plainUnvented),
       ),
     make(
       'div',

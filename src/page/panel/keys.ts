@@ -1,6 +1,6 @@
 import { type NamedView, namedViews } from '../scene/orbit.ts';
 import type { Desk } from './desk.ts';
-import { connectedRows, upstreamOf } from './pipe-card.ts';
+import { connectedRows, upstreamOf } from './neighbours.ts';
 
 /** Single keys for what one does often. None of them acts while somebody types. */
 export function keysOn(desk: Desk, parts: { readonly search: HTMLInputElement }): () => void {

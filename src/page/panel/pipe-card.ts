@@ -1,14 +1,15 @@
-import type { PipeState, ResultPipe, TrailStep } from '../../schedule/result.ts';
-import { lengthText, loadText, oneSize, shortLoad, sizeText, slopeText } from '../format.ts';
-import { countedKind, named, phrase, ruleName } from '../words/words.ts';
-import { copyButton, fixtureButton, pipeButton, verdictMarks } from './chips.ts';
+import type { PipeState, ResultPipe } from '../../schedule/result.ts';
+import { lengthText, loadText, oneSize, sizeText, slopeText } from '../format.ts';
+import { named, phrase } from '../words/words.ts';
+import { argument } from './argument.ts';
+import { copyButton, pipeButton, verdictMarks } from './chips.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
-import { factTexts } from './facts.ts';
 import { opener } from './finding-list.ts';
 import { findingSentence } from './finding-sentence.ts';
 import { batteryName, capital, pipeName, shown } from './names.ts';
-import { clauseText } from './reason.ts';
+import { connectedRows, upstreamOf } from './neighbours.ts';
+import { users } from './users.ts';
 
 /** A pipe's case, in the order of an argument: verdict, what it is, why that size, why not smaller, whose it is. */
 export function pipeCard(desk: Desk, row: number): HTMLElement {
@@ -19,7 +20,7 @@ export function pipeCard(desk: Desk, row: number): HTMLElement {
     { class: 'card', 'aria-labelledby': 'card-title' },
     make('h2', { id: 'card-title', tabindex: '-1' }, modelText(pipeName(building, words, row))),
     make('p', { class: 'card-role' }, roleText(desk, pipe)),
-    verdictBanner(desk, pipe),
+    verdictBanner(desk, row, pipe),
     actions(desk, row),
     argument(desk, pipe),
     users(desk, row),
@@ -39,7 +40,8 @@ function roleText({ words }: Desk, pipe: PipeState): string {
   ].join(' · ');
 }
 
-function verdictBanner({ words }: Desk, pipe: ResultPipe): HTMLElement {
+function verdictBanner({ building, words }: Desk, row: number, pipe: ResultPipe): HTMLElement {
+  const [wet, airs] = [building.servesWater(row).length > 0, building.servesAir(row).length > 0];
   const drawn = oneSize(words, pipe.modelled);
   const needed = sizeText(words, pipe.required);
   const text = {
@@ -54,6 +56,8 @@ function verdictBanner({ words }: Desk, pipe: ResultPipe): HTMLElement {
     make('span', { class: 'mark', 'aria-hidden': 'true' }, verdictMarks[pipe.verdict]),
     make('strong', {}, text),
     pipe.reason !== undefined && make('p', {}, modelText(shown(phrase(words, pipe.reason)))),
+    pipe.verdict === 'undersized' &&
+      make('p', {}, words.pipe.plain[wet && airs && pipe.role.includes('vent') ? 'both' : wet ? 'drain' : 'vent']),
     pipe.provisional && make('p', {}, words.pipe.provisional),
   );
 }
@@ -85,163 +89,6 @@ function actions(desk: Desk, row: number): HTMLElement {
     next !== undefined &&
       make('button', { type: 'button', class: 'button', onclick: () => desk.choosePipe(next) }, `↓ ${words.pipe.next}`),
   );
-}
-
-/** The pipe that brings it most; of equal ones the one of the same role, then the last in the result's order. */
-export function upstreamOf({ building }: Desk, row: number): number | undefined {
-  const own = building.result.pipes[row];
-  const id = own?.globalId;
-  let best: number | undefined;
-  building.result.pipes.forEach(({ next, load, role }, index) => {
-    if (next !== id || index === row) return;
-    if (best === undefined || load.most > building.result.pipes[best]!.load.most) best = index;
-    else if (load.most === building.result.pipes[best]!.load.most && role === own?.role) best = index;
-  });
-  return best;
-}
-
-/** A pipe alone says little: its battery comes with it, or the pipes of its whole water and air. */
-export function connectedRows({ building }: Desk, row: number): readonly number[] {
-  const pipe = building.result.pipes[row]!;
-  const battery = building.result.batteries.find(({ id }) => id === pipe.battery);
-  const rows = new Set([row]);
-  const { pipe: rowOf } = building.data.scene.pipes;
-  const addSection = (section: number): void => {
-    const of = rowOf[section] ?? -1;
-    if (of >= 0) rows.add(of);
-  };
-  const fixtures =
-    battery === undefined
-      ? [...building.servesWater(row), ...building.servesAir(row)]
-      : battery.fixtures.flatMap((id) => building.fixtureAt.get(id) ?? []);
-  for (const fixture of fixtures) {
-    for (const section of building.water(fixture)) {
-      addSection(section);
-      if (rowOf[section] === row) break;
-    }
-    const { arm, through, dry } = building.air(fixture);
-    for (const section of [...arm, ...through, ...dry]) addSection(section);
-  }
-  return [...rows].sort((a, b) => a - b);
-}
-
-/** The trail as an argument: what governs and why, then what would be asked without it, then everything. */
-function argument(desk: Desk, pipe: ResultPipe): HTMLElement {
-  const { words } = desk;
-  if (pipe.trail.length === 0) return make('p', { class: 'quiet' }, words.pipe.noTrail);
-  const governing = pipe.trail.filter(({ governs }) => governs);
-  const size = sizeText(words, pipe.required);
-  const rules = [...new Set(governing.map((step) => ruleName(words, step)))].join(` ${words.and} `);
-  const others = pipe.trail.filter(({ governs, asks }) => !governs && asks !== null);
-  const second = others.reduce<TrailStep | null>(
-    (best, step) => (best === null || (step.asks?.dn ?? 0) > (best.asks?.dn ?? 0) ? step : best),
-    null,
-  );
-  return make(
-    'section',
-    { class: 'argument' },
-    make('h3', {}, words.pipe.why(size)),
-    make('ol', { class: 'steps' }, ...governing.map((step) => demand(desk, step))),
-    make('h3', {}, words.pipe.whyNot),
-    make(
-      'p',
-      {},
-      governing.length === 0 ? '' : `${words.pipe.failsBelow(size, rules)} `,
-      second === null || second.asks === null
-        ? words.pipe.onlyDemand
-        : words.pipe.nextDemand(oneSize(words, second.asks), ruleName(words, second)),
-    ),
-    make(
-      'details',
-      {},
-      make('summary', {}, `${words.pipe.demands} (${pipe.trail.length})`),
-      make('ol', { class: 'steps' }, ...pipe.trail.map((step) => demand(desk, step))),
-    ),
-  );
-}
-
-function demand(desk: Desk, step: TrailStep): HTMLElement {
-  const { building, words } = desk;
-  const facts = factTexts(building, words, step.facts);
-  return make(
-    'li',
-    { class: step.governs ? 'step governs' : 'step' },
-    make(
-      'div',
-      { class: 'step-head' },
-      make('span', { class: 'step-rule' }, capital(ruleName(words, step))),
-      make('span', { class: 'step-size' }, oneSize(words, step.asks, words.pipe.noSize)),
-    ),
-    facts.length > 0 &&
-      make(
-        'ul',
-        { class: 'step-facts' },
-        ...facts.map(({ label, value }) => make('li', {}, `${label} `, make('b', {}, modelText(shown(value))))),
-      ),
-    make(
-      'div',
-      { class: 'step-clause' },
-      clauseText(words, step),
-      step.trust === 'memory' && make('span', { class: 'trust' }, ` · ${words.pipe.fromMemory}`),
-    ),
-  );
-}
-
-const mostUsers = 24;
-
-function users(desk: Desk, row: number): HTMLElement {
-  const { building, words } = desk;
-  const { unit } = building.result.code;
-  const list = (title: string, empty: string, rows: readonly number[], total: string): HTMLElement =>
-    make(
-      'section',
-      {},
-      make('h3', {}, title, total !== '' && make('span', { class: 'total' }, total)),
-      rows.length === 0 ? make('p', { class: 'quiet' }, empty) : make('p', { class: 'kinds' }, kindCounts(desk, rows)),
-      make(
-        'ul',
-        { class: 'users' },
-        ...rows
-          .slice(0, mostUsers)
-          .map((fixture) =>
-            make(
-              'li',
-              {},
-              fixtureButton(desk, fixture),
-              make('span', { class: 'amount' }, shortLoad(words, building.result.fixtures[fixture]!.load, unit)),
-            ),
-          ),
-        rows.length > mostUsers && make('li', { class: 'quiet' }, `… ${rows.length - mostUsers}`),
-      ),
-    );
-  const pipe = building.result.pipes[row]!;
-  const water = building.servesWater(row);
-  const air = building.servesAir(row);
-  return make(
-    'div',
-    {},
-    list(
-      words.pipe.water(water.length),
-      words.pipe.noWater,
-      water,
-      water.length === 0 ? '' : shortLoad(words, pipe.load, unit),
-    ),
-    list(
-      words.pipe.air(air.length),
-      words.pipe.noAir,
-      air,
-      pipe.ventLoad === undefined ? '' : shortLoad(words, pipe.ventLoad, unit),
-    ),
-  );
-}
-
-function kindCounts({ building, words }: Desk, rows: readonly number[]): string {
-  const counts = new Map<string | null, number>();
-  for (const row of rows) {
-    const kind = building.result.fixtures[row]?.kind ?? null;
-    counts.set(kind, (counts.get(kind) ?? 0) + 1);
-  }
-  return [...counts].map(([kind, count]) => countedKind(words, kind, count)).join(', ');
 }
 
 function sections({ words, building }: Desk, pipe: ResultPipe): HTMLElement | null {

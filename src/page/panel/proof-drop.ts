@@ -1,4 +1,7 @@
 import { sha256 } from '../../deliver/sha256.ts';
+import { unpack } from '../../ifc/container.ts';
+import { indexLines } from '../../ifc/lines/index-lines.ts';
+import { withoutOurLines } from '../../ifc/write/append-sets.ts';
 import type { Desk } from './desk.ts';
 import { make } from './element.ts';
 import { shown } from './names.ts';
@@ -10,8 +13,12 @@ export function proofDrop({ building, words, announce }: Desk): HTMLElement {
   const check = async (file: File): Promise<void> => {
     answer.textContent = words.model.proofReading;
     answer.className = 'proof-answer';
-    const hash = await hashOf(withoutOurs(new Uint8Array(await file.arrayBuffer())));
-    const same = hashes.includes(hash);
+    let same = false;
+    try {
+      same = hashes.includes(await modelHash(file.name, new Uint8Array(await file.arrayBuffer())));
+    } catch {
+      // What cannot be unpacked or read as STEP is not the file either.
+    }
     answer.className = `proof-answer ${same ? 'same' : 'other'}`;
     answer.textContent = same ? words.model.proofSame(shown(file.name)) : words.model.proofOther(shown(file.name));
     announce(answer.textContent);
@@ -43,33 +50,17 @@ export function proofDrop({ building, words, announce }: Desk): HTMLElement {
   );
 }
 
-const begin = '/* Drainwright 1 begin */';
-const end = '/* Drainwright 1 end */';
-
-/** The hash is taken over the bytes without the block that `size` writes, line break after it included. */
-export function withoutOurs(bytes: Uint8Array<ArrayBuffer>): Uint8Array<ArrayBuffer> {
-  const from = find(bytes, begin, 0);
-  const last = from < 0 ? -1 : find(bytes, end, from);
-  if (last < 0) return bytes;
-  let to = last + end.length;
-  if (bytes[to] === 13) to++;
-  if (bytes[to] === 10) to++;
-  const rest = new Uint8Array(bytes.length - (to - from));
-  rest.set(bytes.subarray(0, from));
-  rest.set(bytes.subarray(to), from);
-  return rest;
-}
-
-function find(bytes: Uint8Array, text: string, from: number): number {
-  const wanted = new TextEncoder().encode(text);
-  const first = wanted[0]!;
-  for (let at = bytes.indexOf(first, from); at >= 0; at = bytes.indexOf(first, at + 1))
-    if (wanted.every((byte, index) => bytes[at + index] === byte)) return at;
-  return -1;
-}
-
-async function hashOf(bytes: Uint8Array<ArrayBuffer>): Promise<string> {
+/** As the program takes it: over the unpacked bytes without what an earlier run of ours wrote into them. */
+export async function modelHash(name: string, bytes: Uint8Array): Promise<string> {
+  const pieces = withoutOurLines(indexLines(unpack(name, bytes).bytes), sha256);
+  const whole = new Uint8Array(pieces.reduce((sum, piece) => sum + piece.length, 0));
+  let at = 0;
+  for (const piece of pieces) {
+    whole.set(piece, at);
+    at += piece.length;
+  }
+  // A page opened from disk is not everywhere trusted with the browser's own digest.
   const digest =
-    crypto.subtle === undefined ? sha256(bytes) : new Uint8Array(await crypto.subtle.digest('SHA-256', bytes));
+    crypto.subtle === undefined ? sha256(whole) : new Uint8Array(await crypto.subtle.digest('SHA-256', whole));
   return [...digest].map((byte) => byte.toString(16).padStart(2, '0')).join('');
 }

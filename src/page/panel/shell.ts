@@ -1,22 +1,17 @@
-import { lengthText, oneSize, shortLoad, sizeText } from '../format.ts';
 import { markChosen, riserOf, riserView } from '../riser/riser-view.ts';
-import type { Hit } from '../scene/pick.ts';
 import { sceneView } from '../scene/scene-view.ts';
-import type { PageState, Tab } from '../state.ts';
-import { named } from '../words/words.ts';
-import { batteryList } from './battery-list.ts';
-import { copyText } from './chips.ts';
+import type { PageState } from '../state.ts';
 import type { Desk } from './desk.ts';
-import { make, modelText } from './element.ts';
-import { findingList } from './finding-list.ts';
+import { make } from './element.ts';
 import { fixtureCard } from './fixture-card.ts';
 import { followDock } from './follow-dock.ts';
+import { header } from './header.ts';
 import { legend } from './legend.ts';
-import { modelCard } from './model-card.ts';
-import { capital, fixtureName, pipeName, shown } from './names.ts';
+import { labelWords, tipText } from './picture-words.ts';
 import { pipeCard } from './pipe-card.ts';
 import { pipeList } from './pipe-list.ts';
 import { summary } from './summary.ts';
+import { tabBar, tabPanel } from './tabs.ts';
 import { toolbar } from './toolbar.ts';
 
 export interface Shell {
@@ -26,8 +21,6 @@ export interface Shell {
   start(): void;
   dispose(): void;
 }
-
-const tabs: readonly Tab[] = ['findings', 'batteries', 'pipes', 'model'];
 
 /** The frame of the page and what redraws in it when something is chosen. */
 export function shell(desk: Desk): Shell {
@@ -164,14 +157,7 @@ export function shell(desk: Desk): Shell {
           tip,
           tipText: (hit) => tipText(desk, hit),
           covered: () => (dockHost.firstElementChild as HTMLElement | null)?.offsetHeight ?? 0,
-          labelText: {
-            pipe: (section) => labelText(desk, section),
-            run: (section) => runText(desk, section),
-            step: (section) => labelText(desk, section),
-            stopped: () => `▲ ${words.follow.stopped}`,
-            measure: ({ length, plan, rise }) =>
-              words.tools.distances(lengthText(words, length), lengthText(words, plan), lengthText(words, rise)),
-          },
+          labelText: labelWords(desk),
         });
         // For the tests and for a look under the hood: what a frame costs.
         Object.assign(canvas, { stats: desk.scene.stats, scene: desk.scene });
@@ -200,179 +186,4 @@ function refocus(host: HTMLElement, build: () => void): void {
   const place = controls().indexOf(document.activeElement as HTMLElement);
   build();
   if (place >= 0) controls()[place]?.focus({ preventScroll: true });
-}
-
-function header(desk: Desk): { readonly root: HTMLElement; show(state: PageState): void } {
-  const { building, store, words } = desk;
-  const { result } = building;
-  const view = (value: PageState['view'], label: string): HTMLElement =>
-    make(
-      'button',
-      { type: 'button', class: 'view', 'data-view': value, onclick: () => store.set({ view: value }) },
-      label,
-    );
-  const views = [view('model', words.page.model), view('riser', words.page.riser)];
-  const theme = make('button', {
-    type: 'button',
-    class: 'tool',
-    onclick: () => store.set({ theme: store.state.theme === 'light' ? 'dark' : 'light' }),
-  });
-  const help = make(
-    'dialog',
-    { class: 'help', 'aria-labelledby': 'help-title' },
-    make('h2', { id: 'help-title' }, words.page.keys),
-    make(
-      'dl',
-      {},
-      ...words.page.keyHelp.map(([keys, what]) =>
-        make('div', {}, make('dt', {}, make('kbd', {}, keys)), make('dd', {}, what)),
-      ),
-    ),
-    make('button', { type: 'button', class: 'button', onclick: () => help.close() }, words.page.close),
-  );
-  const copy: HTMLElement = make(
-    'button',
-    {
-      type: 'button',
-      class: 'tool',
-      onclick: () => {
-        copyText(location.href);
-        copy.textContent = words.page.copied;
-        desk.announce(words.page.copied);
-        window.setTimeout(() => {
-          copy.textContent = words.page.copyLink;
-        }, 1500);
-      },
-    },
-    words.page.copyLink,
-  );
-  const root = make(
-    'header',
-    { class: 'top' },
-    make(
-      'div',
-      { class: 'title' },
-      make('h1', {}, modelText(shown(result.model.file))),
-      make(
-        'p',
-        {},
-        `${words.codeTitle(result.code.id, result.code.title)} ${result.code.edition} `,
-        make('span', { class: 'tag' }, result.code.id),
-      ),
-    ),
-    make('nav', { class: 'views', 'aria-label': words.page.views }, ...views),
-    make(
-      'div',
-      { class: 'top-tools' },
-      copy,
-      make(
-        'button',
-        {
-          type: 'button',
-          class: 'tool',
-          lang: words.language === 'en' ? 'fr' : 'en',
-          onclick: () => store.set({ language: words.language === 'en' ? 'fr' : 'en' }),
-        },
-        words.page.otherLanguage,
-      ),
-      theme,
-      make(
-        'button',
-        { type: 'button', class: 'tool', 'aria-haspopup': 'dialog', onclick: () => help.showModal() },
-        words.page.keys,
-      ),
-    ),
-    help,
-  );
-  return {
-    root,
-    show(state) {
-      for (const button of views) button.setAttribute('aria-pressed', String(button.dataset.view === state.view));
-      theme.textContent = state.theme === 'light' ? words.page.dark : words.page.light;
-    },
-  };
-}
-
-function tabBar({ building, store, words }: Desk): HTMLElement {
-  const { result } = building;
-  const counts: Readonly<Record<Tab, number | null>> = {
-    findings: result.findings.length,
-    batteries: result.batteries.length,
-    pipes: result.pipes.length,
-    model: null,
-  };
-  const bar = make(
-    'div',
-    {
-      class: 'tabs',
-      role: 'tablist',
-      'aria-label': words.page.panel,
-      onkeydown: (event: KeyboardEvent) => {
-        const move = { ArrowRight: 1, ArrowLeft: -1 }[event.key];
-        if (move === undefined) return;
-        event.preventDefault();
-        const at = tabs.indexOf(store.state.tab);
-        store.set({ tab: tabs[(at + move + tabs.length) % tabs.length] ?? 'findings' });
-      },
-    },
-    ...tabs.map((tab) =>
-      make(
-        'button',
-        {
-          type: 'button',
-          role: 'tab',
-          id: `tab-${tab}`,
-          'aria-selected': String(store.state.tab === tab),
-          'aria-controls': 'tab-panel',
-          tabindex: store.state.tab === tab ? 0 : -1,
-          onclick: () => store.set({ tab }),
-        },
-        words.tabs[tab],
-        counts[tab] !== null && make('span', { class: 'chip-count' }, String(counts[tab])),
-      ),
-    ),
-  );
-  return bar;
-}
-
-function tabPanel(desk: Desk, tab: Tab): HTMLElement {
-  const content = {
-    findings: findingList,
-    batteries: batteryList,
-    model: modelCard,
-    pipes: (d: Desk) => pipeList(d, ''),
-  }[tab];
-  return make(
-    'div',
-    { role: 'tabpanel', id: 'tab-panel', 'aria-labelledby': `tab-${tab}`, class: 'tab-panel' },
-    content(desk),
-  );
-}
-
-function tipText({ building, words }: Desk, hit: Hit): string {
-  if (hit.is === 'fixture') return fixtureName(building, words, hit.index);
-  const row = building.data.scene.pipes.pipe[hit.index] ?? -1;
-  if (row < 0) return '';
-  const state = building.state(hit.index);
-  return [
-    pipeName(building, words, row),
-    state === undefined ? '' : capital(named(words.roles, state.role)),
-    oneSize(words, state?.modelled, ''),
-  ]
-    .filter((text) => text !== '')
-    .join(' · ');
-}
-
-function labelText({ building, words }: Desk, section: number): string {
-  const state = building.state(section);
-  if (state === undefined) return '';
-  const load = state.ventLoad !== undefined && state.load.most === 0 ? state.ventLoad : state.load;
-  const drawn = oneSize(words, state.modelled);
-  return `${drawn} · ${shortLoad(words, load, building.result.code.unit)}`;
-}
-
-function runText({ building, words }: Desk, section: number): string {
-  const state = building.state(section);
-  const drawn = oneSize(words, state?.modelled);
-  return `▲ ${drawn} → ${sizeText(words, state?.required ?? null)}`;
 }

@@ -1,4 +1,4 @@
-import { clampPitch, type Eye, fieldOfView, partWay } from './orbit.ts';
+import { clampPitch, type Eye, partWay, spread, withLens } from './orbit.ts';
 
 export interface EyeControl {
   eye: Eye;
@@ -46,9 +46,8 @@ export function eyeControl(canvas: HTMLCanvasElement, first: Eye, still: () => b
     changed();
   };
   const turn = (dx: number, dy: number): void =>
-    move({ ...eye, yaw: eye.yaw - dx * 0.0062, pitch: clampPitch(eye.pitch + dy * 0.0062) });
-  const perPixel = (): number =>
-    (2 * eye.distance * Math.tan((fieldOfView * Math.PI) / 360)) / Math.max(1, canvas.clientHeight);
+    move({ ...withLens(eye, false), yaw: eye.yaw - dx * 0.0062, pitch: clampPitch(eye.pitch + dy * 0.0062) });
+  const perPixel = (): number => (2 * eye.distance * spread(eye)) / Math.max(1, canvas.clientHeight);
   const pan = (dx: number, dy: number): void => {
     const step = perPixel();
     const [cy, sy] = [Math.cos(eye.yaw), Math.sin(eye.yaw)];

@@ -23,7 +23,7 @@ export function collarsOf(building: Building, polylines: readonly (Polyline | nu
   return collars;
 }
 
-/** A ball closes the corner where pipes meet, as wide as the widest of them; it is painted as that one. */
+/** A ball closes the corner where pipes meet, as wide as the widest of them; it is painted as that one, of equals as an undersized one. */
 export function ballsOf(building: Building, polylines: readonly (Polyline | null)[]): Ball[] {
   const { pipes } = building.data.scene;
   const widest = new Map<number, { section: number; radius: number; ends: number }>();
@@ -35,7 +35,8 @@ export function ballsOf(building: Building, polylines: readonly (Polyline | null
       if (known === undefined) widest.set(joint, { section, radius, ends: 1 });
       else {
         known.ends++;
-        if (radius > known.radius) Object.assign(known, { section, radius });
+        const worse = building.state(section)?.verdict === 'undersized' && radius === known.radius;
+        if (radius > known.radius || worse) Object.assign(known, { section, radius });
       }
     }
   });

@@ -9,6 +9,8 @@ export interface Eye {
   readonly yaw: number;
   /** Radians above the horizon; just under a quarter turn looks straight down. */
   readonly pitch: number;
+  /** Seen from so far off that parallel lines stay parallel, as on a plan or an elevation. */
+  readonly flat: boolean;
 }
 
 export interface Bounds {
@@ -16,18 +18,27 @@ export interface Bounds {
   readonly max: Point;
 }
 
-export const fieldOfView = 26;
+const wideLens = 26;
+const flatLens = 1.2;
+/** Opening of the lens, degrees. */
+export const lensOf = ({ flat }: Pick<Eye, 'flat'>): number => (flat ? flatLens : wideLens);
+/** Half the height of the picture for each metre of distance. */
+export const spread = (eye: Pick<Eye, 'flat'>): number => Math.tan((lensOf(eye) * Math.PI) / 360);
+
+/** The same picture through the other lens: what stands at the target keeps its size. */
+export const withLens = (eye: Eye, flat: boolean): Eye =>
+  eye.flat === flat ? eye : { ...eye, flat, distance: (eye.distance * spread(eye)) / spread({ flat }) };
 const steepest = Math.PI / 2 - 0.001;
 
 /** Named views; `home` shows the building as an isometric drawing would. */
 export const namedViews = {
-  home: { yaw: Math.PI / 5, pitch: 0.5 },
-  top: { yaw: 0, pitch: steepest },
-  front: { yaw: 0, pitch: 0.02 },
-  right: { yaw: Math.PI / 2, pitch: 0.02 },
-  back: { yaw: Math.PI, pitch: 0.02 },
-  left: { yaw: -Math.PI / 2, pitch: 0.02 },
-  below: { yaw: Math.PI / 5, pitch: -0.6 },
+  home: { yaw: Math.PI / 5, pitch: 0.5, flat: false },
+  top: { yaw: 0, pitch: steepest, flat: true },
+  front: { yaw: 0, pitch: 0, flat: true },
+  right: { yaw: Math.PI / 2, pitch: 0, flat: true },
+  back: { yaw: Math.PI, pitch: 0, flat: true },
+  left: { yaw: -Math.PI / 2, pitch: 0, flat: true },
+  below: { yaw: Math.PI / 5, pitch: -0.6, flat: false },
 } as const;
 export type NamedView = keyof typeof namedViews;
 
@@ -44,16 +55,23 @@ export function place(camera: PerspectiveCamera, eye: Eye, reach: number): void 
   if (Math.abs(eye.pitch) > steepest - 0.01)
     camera.up.set(-Math.sin(eye.yaw), Math.cos(eye.yaw), 0).multiplyScalar(eye.pitch < 0 ? -1 : 1);
   camera.lookAt(target);
-  camera.near = Math.max(0.02, eye.distance / 200);
+  camera.fov = lensOf(eye);
+  const behind = reach * 2 + 10;
+  camera.near = Math.max(eye.distance / 200, 0.02, eye.flat ? eye.distance - behind : 0);
   camera.far = eye.distance + reach * 4 + 10;
   camera.updateProjectionMatrix();
   camera.updateMatrixWorld();
 }
 
 /** The eye that sees all of `bounds` in a view as wide as `aspect` times its height, its corners evenly about the middle. */
-export function framing(bounds: Bounds, yaw: number, pitch: number, aspect: number, margin = 1.12): Eye {
+export function framing(
+  bounds: Bounds,
+  { yaw, pitch, flat }: Pick<Eye, 'yaw' | 'pitch' | 'flat'>,
+  aspect: number,
+  margin = 1.08,
+): Eye {
   const middle = (axis: 0 | 1 | 2): number => (bounds.min[axis] + bounds.max[axis]) / 2;
-  let eye: Eye = { target: [middle(0), middle(1), middle(2)], distance: 1, yaw, pitch };
+  let eye: Eye = { target: [middle(0), middle(1), middle(2)], distance: 1, yaw, pitch, flat };
   // What is near looks larger, so the middle of the box is not the middle of the picture: a few rounds settle it.
   for (let round = 0; round < 4; round++) {
     const fitted = { ...eye, distance: fittingDistance(bounds, eye, aspect, margin) };
@@ -64,7 +82,7 @@ export function framing(bounds: Bounds, yaw: number, pitch: number, aspect: numb
 
 /** Corners of the box as the eye sees them: right, up and away from it, metres. */
 function corners(bounds: Bounds, eye: Eye): readonly Vector3[] {
-  const camera = new PerspectiveCamera(fieldOfView, 1);
+  const camera = new PerspectiveCamera(wideLens, 1);
   place(camera, eye, 1);
   const toEye = new Matrix4().copy(camera.matrixWorld).invert();
   return [bounds.min[0], bounds.max[0]].flatMap((x) =>
@@ -78,7 +96,7 @@ function corners(bounds: Bounds, eye: Eye): readonly Vector3[] {
 }
 
 function fittingDistance(bounds: Bounds, eye: Eye, aspect: number, margin: number): number {
-  const tall = Math.tan((fieldOfView * Math.PI) / 360) / margin;
+  const tall = spread(eye) / margin;
   return Math.max(
     0.5,
     ...corners(bounds, eye).map(({ x, y, z }) => {
@@ -104,14 +122,16 @@ function seenMiddle(bounds: Bounds, eye: Eye): Point {
 export const clampPitch = (pitch: number): number => Math.max(-steepest, Math.min(steepest, pitch));
 
 /** Part way from one eye to another, the short way round. */
-export function partWay(a: Eye, b: Eye, t: number): Eye {
+export function partWay(from: Eye, b: Eye, t: number): Eye {
+  const a = withLens(from, b.flat);
   const s = t * t * (3 - 2 * t);
   const turn = Math.atan2(Math.sin(b.yaw - a.yaw), Math.cos(b.yaw - a.yaw));
-  const mixed = (from: number, to: number): number => from + (to - from) * s;
+  const mixed = (start: number, end: number): number => start + (end - start) * s;
   return {
     target: [mixed(a.target[0], b.target[0]), mixed(a.target[1], b.target[1]), mixed(a.target[2], b.target[2])],
     distance: Math.exp(mixed(Math.log(a.distance), Math.log(b.distance))),
     yaw: a.yaw + turn * s,
     pitch: mixed(a.pitch, b.pitch),
+    flat: b.flat,
   };
 }

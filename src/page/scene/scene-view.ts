@@ -7,12 +7,13 @@ import { eyeControl } from './eye-control.ts';
 import { type LabelText, labelWishes } from './label-wishes.ts';
 import { labelsIn } from './labels.ts';
 import { type Measure, measureIn } from './measure.ts';
-import { type Bounds, type Eye, framing, type NamedView, namedViews } from './orbit.ts';
+import { type Bounds, type Eye, framing, type NamedView, namedViews, spread } from './orbit.ts';
 import { type Hit, pick } from './pick.ts';
 import { pipingOf } from './piping.ts';
 import type { Point } from './polylines.ts';
 import { routeOf, type Way, wayOf } from './route.ts';
 import { type DrawStats, stageIn } from './stage.ts';
+import { boxOf, fixtureBounds, storeyBox, widened, withFabric, within } from './surroundings.ts';
 import { undersizedRuns } from './undersized-runs.ts';
 
 export interface SceneView {
@@ -99,32 +100,27 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
     measure.move();
     stage.draw();
   };
-  const control = eyeControl(
-    canvas,
-    framing(whole, namedViews.home.yaw, namedViews.home.pitch, 1.5),
-    () => reduced.matches,
-    {
-      moved: moving,
-      settled: still,
-      clicked(x, y) {
-        const hit = hitAt(x, y, 5);
-        if (store.state.measuring) {
-          measure.add(hit);
-          return;
-        }
-        store.set({ chosen: chosenBy(building, hit), follow: null });
-      },
-      hovered(x, y) {
-        const hit = hitAt(x, y, 3);
-        parts.tip.hidden = hit === null;
-        canvas.classList.toggle('over', hit !== null);
-        if (hit === null) return;
-        parts.tip.textContent = parts.tipText(hit);
-        parts.tip.style.transform = `translate(${Math.min(x + 14, canvas.clientWidth - parts.tip.offsetWidth - 8)}px, ${y + 16}px)`;
-      },
-      under: (x, y) => hitAt(x, y, 12)?.at ?? null,
+  const control = eyeControl(canvas, framing(whole, namedViews.home, 1.5), () => reduced.matches, {
+    moved: moving,
+    settled: still,
+    clicked(x, y) {
+      const hit = hitAt(x, y, 5);
+      if (store.state.measuring) {
+        measure.add(hit);
+        return;
+      }
+      store.set({ chosen: chosenBy(building, hit), follow: null });
     },
-  );
+    hovered(x, y) {
+      const hit = hitAt(x, y, 3);
+      parts.tip.hidden = hit === null;
+      canvas.classList.toggle('over', hit !== null);
+      if (hit === null) return;
+      parts.tip.textContent = parts.tipText(hit);
+      parts.tip.style.transform = `translate(${Math.min(x + 14, canvas.clientWidth - parts.tip.offsetWidth - 8)}px, ${y + 16}px)`;
+    },
+    under: (x, y) => hitAt(x, y, 12)?.at ?? null,
+  });
   canvas.addEventListener('pointerleave', () => {
     parts.tip.hidden = true;
   });
@@ -174,10 +170,11 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
     if (now.view === 'model' && now !== before) show(now);
   });
 
-  const fly = (bounds: Bounds | null, turnTo?: { yaw: number; pitch: number }): void => {
+  const fly = (bounds: Bounds | null, turnTo?: Pick<Eye, 'yaw' | 'pitch' | 'flat'>): void => {
     if (bounds === null) return;
-    const { yaw, pitch } = turnTo ?? { yaw: control.eye.yaw, pitch: Math.max(0.2, Math.min(1.1, control.eye.pitch)) };
-    control.fly(clearOf(parts.covered(), framing(bounds, yaw, pitch, aspect())));
+    const { yaw, pitch, flat } = control.eye;
+    const turned = turnTo ?? { yaw, flat, pitch: flat ? pitch : Math.max(0.2, Math.min(1.1, pitch)) };
+    control.fly(clearOf(parts.covered(), framing(bounds, turned, aspect())));
   };
   const sectionsOf = (rows: readonly number[]): number[] => rows.flatMap((row) => building.sectionsOf[row] ?? []);
   /** The same view in the part of the picture that nothing covers. */
@@ -185,10 +182,20 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
     const height = Math.max(1, canvas.clientHeight);
     const free = Math.max(height * 0.3, height - covered);
     const distance = eye.distance * (height / free);
-    const lower = ((height - free) / 2) * stage.shared.pixel.value * distance;
+    const lower = (((height - free) / 2) * 2 * spread(eye) * distance) / height;
     const [cy, sy, cp, sp] = [Math.cos(eye.yaw), Math.sin(eye.yaw), Math.cos(eye.pitch), Math.sin(eye.pitch)];
     const [x, y, z] = eye.target;
     return { ...eye, distance, target: [x + sy * sp * lower, y - cy * sp * lower, z - cp * lower] };
+  };
+  /** What a storey's picture holds: the pipes in it and the building round them. */
+  const seenIn = (box: Bounds): Bounds | null => {
+    const bounds = piping.bounds(
+      all.filter((section) => {
+        const own = piping.bounds([section]);
+        return own !== null && piping.visible[section] === 1 && own.max[2] > box.min[2] && own.min[2] < box.max[2];
+      }),
+    );
+    return bounds === null ? null : within(withFabric(building, within(bounds, box)), box);
   };
   const view: SceneView = {
     stats: stage.stats,
@@ -204,15 +211,11 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
       if (way !== null) fly(piping.bounds(way.sections) && widened(piping.bounds(way.sections)!, 0.6));
     },
     fit() {
-      const shown = all.filter((section) => piping.visible[section] === 1);
-      const bounds = piping.bounds(shown) ?? whole;
-      fly(clip === null ? widened(bounds, 0.3) : within(bounds, clip), {
-        yaw: control.eye.yaw,
-        pitch: control.eye.pitch,
-      });
+      const bounds = piping.bounds(all.filter((section) => piping.visible[section] === 1)) ?? whole;
+      fly(clip === null ? widened(bounds, 0.3) : (seenIn(clip) ?? bounds), control.eye);
     },
     view(name) {
-      fly(clip === null ? whole : within(whole, clip), namedViews[name]);
+      fly(clip === null ? whole : (seenIn(clip) ?? whole), namedViews[name]);
     },
     get eye() {
       return control.eye;
@@ -243,7 +246,7 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
     },
   };
   stage.resize();
-  control.eye = framing(whole, namedViews.home.yaw, namedViews.home.pitch, aspect());
+  control.eye = framing(whole, namedViews.home, aspect());
   show(store.state);
   new ResizeObserver(() => {
     if (canvas.clientWidth > 0) view.resize();
@@ -256,65 +259,4 @@ function chosenBy(building: Building, hit: Hit | null): PageState['chosen'] {
   if (hit.is === 'fixture') return { is: 'fixture', row: hit.index };
   const row = building.data.scene.pipes.pipe[hit.index] ?? -1;
   return row < 0 ? null : { is: 'pipe', row };
-}
-
-function boxOf(building: Building, fixture: number): Bounds | null {
-  const { minX, minY, minZ, maxX, maxY, maxZ } = building.data.scene.fixtures;
-  if (maxX[fixture]! <= minX[fixture]!) return null;
-  return {
-    min: [minX[fixture]! / 1000, minY[fixture]! / 1000, minZ[fixture]! / 1000],
-    max: [maxX[fixture]! / 1000, maxY[fixture]! / 1000, maxZ[fixture]! / 1000],
-  };
-}
-
-function fixtureBounds(building: Building): Bounds | null {
-  const boxes = building.result.fixtures.flatMap((_, row) => boxOf(building, row) ?? []);
-  if (boxes.length === 0) return null;
-  const edge = (end: 'min' | 'max', of: (...values: number[]) => number) => (axis: 0 | 1 | 2) =>
-    of(...boxes.map((box) => box[end][axis]));
-  const [low, high] = [edge('min', Math.min), edge('max', Math.max)];
-  return { min: [low(0), low(1), low(2)], max: [high(0), high(1), high(2)] };
-}
-
-/** The walls round the piping belong to the first picture; a whole site beside it does not. */
-function withFabric(building: Building, piped: Bounds): Bounds {
-  const { fabric } = building.data.scene;
-  const span = Math.max(...([0, 1, 2] as const).map((axis) => piped.max[axis] - piped.min[axis]), 4);
-  const min: [number, number, number] = [...piped.min];
-  const max: [number, number, number] = [...piped.max];
-  const stretch = (axis: 0 | 1 | 2, millimetres: number): void => {
-    const metres = millimetres / 1000;
-    if (metres < piped.min[axis] - span || metres > piped.max[axis] + span) return;
-    min[axis] = Math.min(min[axis], metres);
-    max[axis] = Math.max(max[axis], metres);
-  };
-  for (const x of fabric.x) stretch(0, x);
-  for (const y of fabric.y) stretch(1, y);
-  for (const z of [...fabric.base, ...fabric.top]) stretch(2, z);
-  return { min, max };
-}
-
-const widened = ({ min, max }: Bounds, by: number): Bounds => ({
-  min: [min[0] - by, min[1] - by, min[2] - by],
-  max: [max[0] + by, max[1] + by, max[2] + by],
-});
-
-const within = (a: Bounds, b: Bounds): Bounds => ({
-  min: [Math.max(a.min[0], b.min[0]), Math.max(a.min[1], b.min[1]), Math.max(a.min[2], b.min[2])],
-  max: [Math.min(a.max[0], b.max[0]), Math.min(a.max[1], b.max[1]), Math.min(a.max[2], b.max[2])],
-});
-
-/** How far below a floor the pipes hang that serve it, and so how far below the next one a storey's picture ends. */
-const underFloor = 0.6;
-
-/** What is seen of one storey: from the pipes under its floor to just under those of the next. */
-function storeyBox(building: Building, storey: number | null): Bounds | null {
-  if (storey === null) return null;
-  const { storeys } = building.data.scene;
-  const floor = (index: number): number | undefined => {
-    const elevation = storeys[index]?.elevation;
-    return elevation === undefined ? undefined : elevation / 1000 - underFloor;
-  };
-  const low = storey === 0 ? -1e9 : (floor(storey) ?? -1e9);
-  return { min: [-1e9, -1e9, low], max: [1e9, 1e9, floor(storey + 1) ?? 1e9] };
 }

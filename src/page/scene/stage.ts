@@ -1,6 +1,6 @@
 import { Color, PerspectiveCamera, Scene, Vector3, WebGLRenderer } from 'three';
 import type { Theme } from '../colours.ts';
-import { type Eye, fieldOfView, outward, place } from './orbit.ts';
+import { type Eye, lensOf, outward, place, spread } from './orbit.ts';
 import type { Ray } from './pick.ts';
 import { type SharedUniforms, sharedUniforms } from './pipe-material.ts';
 import type { Detail } from './piping.ts';
@@ -47,7 +47,7 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
   renderer.setPixelRatio(software ? 1 : Math.min(2, window.devicePixelRatio));
   const scene = new Scene();
   scene.background = new Color();
-  const camera = new PerspectiveCamera(fieldOfView, 1);
+  const camera = new PerspectiveCamera(lensOf({ flat: false }), 1);
   const shared = sharedUniforms();
   const stats = { frames: 0, lastMs: 0, firstAt: 0, calls: 0, software };
   const ladder: readonly Detail[] = ['full', 'light', 'lines'];
@@ -75,7 +75,7 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
     },
     look(eye, reach) {
       place(camera, eye, reach);
-      shared.pixel.value = (2 * Math.tan((fieldOfView * Math.PI) / 360)) / Math.max(1, canvas.clientHeight);
+      shared.pixel.value = (2 * spread(eye)) / Math.max(1, canvas.clientHeight);
       // A mark every 26 pixels or so, in steps of two, so that patterns do not crawl while zooming.
       const wished = 26 * shared.pixel.value * eye.distance;
       shared.period.value = 2 ** Math.round(Math.log2(Math.max(0.02, wished)));

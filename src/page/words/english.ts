@@ -1,3 +1,4 @@
+import { englishKinds } from './english-kinds.ts';
 import type { Words } from './words.ts';
 
 const some = (count: number, one: string, many: string): string =>
@@ -61,7 +62,15 @@ export const english: Words = {
     nothing: 'No sanitary drainage in this model',
     share: 'Pipes by verdict',
   },
-  tabs: { findings: 'Findings', batteries: 'Batteries', pipes: 'Pipes', model: 'Model' },
+  tabs: { findings: 'Findings', questions: 'Questions', batteries: 'Batteries', pipes: 'Pipes', model: 'Model' },
+  questions: {
+    lead: 'What the model does not say and a person can. The first answer settles most.',
+    none: 'Nothing is open: the model says all that the rules ask.',
+    weight: (pipes) => (pipes === 0 ? 'settles no size by itself' : `settles ${some(pipes, 'pipe', 'pipes')}`),
+    choices: 'Possible answers',
+    where: 'In the answers file',
+    ask: null,
+  },
   search: {
     label: 'Search',
     hint: 'Name, GlobalId, STEP id, role, clause, room …',
@@ -86,11 +95,22 @@ export const english: Words = {
     provisional:
       'Provisional: a figure of the table could not be read, so the next heavier row that has one was taken.',
     why: (size) => `Why ${size}`,
-    whyNot: 'Why not smaller',
-    failsBelow: (size, rules) => `Anything under ${size} fails “${rules}”.`,
-    nextDemand: (size, rule) => `The next demand after that, “${rule}”, asks for ${size}.`,
+    whyNot: (size) => `Why not ${size}`,
+    smallest: 'It is the smallest size that the code offers.',
+    fails: (rule, asks) => `“${rule}” asks for ${asks}.`,
+    noRoom: (rule) => `“${rule}” finds no size of its table that holds it.`,
+    plain: {
+      drain: 'In plain words: more can come down this pipe than its size carries off.',
+      vent: 'In plain words: air cannot pass fast enough here. Traps could be sucked dry, and sewer gas come in.',
+      both: 'In plain words: this pipe drains and brings air at once, and collects too much for both. Traps could be sucked dry, and sewer gas come in.',
+    },
+    roleWhy: {
+      both: 'Water and other traps’ air share it, so it is a wet pipe that also vents.',
+      water: 'It carries water and no other trap’s air, so it is a drain.',
+      air: 'It carries air and no water, so it is a dry vent.',
+      none: 'Neither water nor a trap’s air passes through it.',
+    },
     holds: (size, load) => `${size} holds ${load}`,
-    onlyDemand: 'No other demand speaks of this pipe.',
     demands: 'Every demand on this pipe',
     demand: 'Demand',
     numbers: 'Numbers',
@@ -146,6 +166,8 @@ export const english: Words = {
     free: 'needs no vent',
     unidentified: 'unidentified fixture',
     path: 'Pipes to the sewer',
+    plainUnvented:
+      'In plain words: nothing keeps the water in this trap when others drain. It could be sucked dry, and sewer gas come in.',
   },
   follow: {
     water: (name) => `Following the flush of ${name}`,
@@ -260,28 +282,7 @@ export const english: Words = {
     'building-sewer': 'building sewer',
     'circuit-vented-branch': 'circuit vented branch',
   },
-  kinds: {
-    'water-closet': ['water closet', 'water closets'],
-    urinal: ['urinal', 'urinals'],
-    lavatory: ['lavatory', 'lavatories'],
-    sink: ['sink', 'sinks'],
-    'kitchen-sink': ['kitchen sink', 'kitchen sinks'],
-    'mop-sink': ['mop sink', 'mop sinks'],
-    'laundry-tray': ['laundry tray', 'laundry trays'],
-    shower: ['shower', 'showers'],
-    bathtub: ['bathtub', 'bathtubs'],
-    bidet: ['bidet', 'bidets'],
-    'floor-drain': ['floor drain', 'floor drains'],
-    'clothes-washer': ['clothes washer', 'clothes washers'],
-    dishwasher: ['dishwasher', 'dishwashers'],
-    'drinking-fountain': ['drinking fountain', 'drinking fountains'],
-    'garbage-grinder': ['garbage grinder', 'garbage grinders'],
-    'wash-fountain': ['wash fountain', 'wash fountains'],
-    'macerating-toilet': ['macerating toilet', 'macerating toilets'],
-    'clinical-sink': ['clinical sink', 'clinical sinks'],
-    'dental-unit': ['dental unit', 'dental units'],
-    'other-fixture': ['other fixture', 'other fixtures'],
-  },
+  kinds: englishKinds,
   codes: {},
   rules: {},
   factWords: {},
@@ -309,5 +310,6 @@ export const english: Words = {
     largest: 'the largest open end',
     first: 'taken, since nothing tells the ends apart',
   },
+  limits: { NP: 'nothing (not permitted)', NL: 'any load', NA: 'what is larger than its pipe' },
   phrases: {},
 };

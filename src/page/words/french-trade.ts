@@ -216,3 +216,21 @@ export const frenchFactWords: Words['factWords'] = {
   role: 'rôle',
   provisional: 'provisoire',
 };
+
+/** A question of the result by where its answer goes. */
+export function frenchAsk(part: string, field: string | null, name: string): string {
+  switch (part) {
+    case 'sewerEnds':
+      return `L’eau sort-elle par ${name} ? Sinon, nommez le tuyau qui va à l’égout.`;
+    case 'fixtures':
+      return field === 'kind'
+        ? `Qu’est-ce que ${name} ? Rien dans la maquette ne le dit.`
+        : `De quelle sorte est ${name} ?`;
+    case 'batteries':
+      return `Comment le groupe de ${name} est-il conçu ? Plus d’une lecture tient.`;
+    case 'settings':
+      return 'À quelle pente pose-t-on les évacuations dessinées de niveau ? En mètres par mètre, par exemple 0,02.';
+    default:
+      return `Quel est le diamètre de ${name} ?`;
+  }
+}

@@ -1,4 +1,12 @@
-import { frenchCodes, frenchFactWords, frenchKinds, frenchPhrases, frenchRoles, frenchRules } from './french-trade.ts';
+import {
+  frenchAsk,
+  frenchCodes,
+  frenchFactWords,
+  frenchKinds,
+  frenchPhrases,
+  frenchRoles,
+  frenchRules,
+} from './french-trade.ts';
 import type { Words } from './words.ts';
 
 const some = (count: number, one: string, many: string): string =>
@@ -64,7 +72,16 @@ export const french: Words = {
     nothing: 'Pas d’évacuation sanitaire dans cette maquette',
     share: 'Tuyaux par verdict',
   },
-  tabs: { findings: 'Constats', batteries: 'Groupes', pipes: 'Tuyaux', model: 'Maquette' },
+  tabs: { findings: 'Constats', questions: 'Questions', batteries: 'Groupes', pipes: 'Tuyaux', model: 'Maquette' },
+  questions: {
+    lead: 'Ce que la maquette ne dit pas et qu’une personne peut dire. La première réponse règle le plus.',
+    none: 'Rien n’est ouvert : la maquette dit tout ce que les règles demandent.',
+    weight: (pipes) =>
+      pipes === 0 ? 'ne règle aucun diamètre à elle seule' : `règle ${some(pipes, 'tuyau', 'tuyaux')}`,
+    choices: 'Réponses possibles',
+    where: 'Dans le fichier de réponses',
+    ask: frenchAsk,
+  },
   search: {
     label: 'Chercher',
     hint: 'Nom, GlobalId, no STEP, rôle, article, local …',
@@ -89,11 +106,22 @@ export const french: Words = {
     provisional:
       'Provisoire : un chiffre du tableau n’a pas pu être lu; la prochaine ligne plus lourde qui en a un a été prise.',
     why: (size) => `Pourquoi ${size}`,
-    whyNot: 'Pourquoi pas plus petit',
-    failsBelow: (size, rules) => `Sous ${size}, « ${rules} » n’est plus satisfait.`,
-    nextDemand: (size, rule) => `L’exigence suivante, « ${rule} », demande ${size}.`,
+    whyNot: (size) => `Pourquoi pas ${size}`,
+    smallest: 'C’est le plus petit diamètre que le code offre.',
+    fails: (rule, asks) => `« ${rule} » demande ${asks}.`,
+    noRoom: (rule) => `« ${rule} » ne trouve aucun diamètre de son tableau qui suffise.`,
+    plain: {
+      drain: 'En clair : il peut arriver dans ce tuyau plus d’eau que son diamètre n’en évacue.',
+      vent: 'En clair : l’air n’y passe pas assez vite. Des siphons pourraient se vider et laisser entrer les gaz d’égout.',
+      both: 'En clair : ce tuyau évacue et amène l’air à la fois, et recueille trop pour les deux. Des siphons pourraient se vider et laisser entrer les gaz d’égout.',
+    },
+    roleWhy: {
+      both: 'L’eau et l’air d’autres siphons le partagent : c’est un tuyau mouillé qui ventile aussi.',
+      water: 'Il porte de l’eau et l’air d’aucun autre siphon : c’est une évacuation.',
+      air: 'Il porte de l’air et pas d’eau : c’est une ventilation sèche.',
+      none: 'Ni eau ni air d’un siphon n’y passe.',
+    },
     holds: (size, load) => `${size} tient ${load}`,
-    onlyDemand: 'Aucune autre exigence ne vise ce tuyau.',
     demands: 'Toutes les exigences pour ce tuyau',
     demand: 'Exigence',
     numbers: 'Chiffres',
@@ -154,6 +182,8 @@ export const french: Words = {
     free: 'n’exige pas de ventilation',
     unidentified: 'appareil non identifié',
     path: 'Tuyaux jusqu’à l’égout',
+    plainUnvented:
+      'En clair : rien ne retient l’eau de ce siphon quand d’autres appareils se vident. Il pourrait se vider et laisser entrer les gaz d’égout.',
   },
   follow: {
     water: (name) => `L’eau de ${name}`,
@@ -309,5 +339,6 @@ export const french: Words = {
     largest: 'le plus grand bout ouvert',
     first: 'retenue faute de mieux',
   },
+  limits: { NP: 'rien (non permis)', NL: 'toute charge', NA: 'plus grand que son tuyau' },
   phrases: frenchPhrases,
 };

@@ -43,7 +43,16 @@ export interface Words {
     readonly nothing: string;
     readonly share: string;
   };
-  readonly tabs: Readonly<Record<'findings' | 'batteries' | 'pipes' | 'model', string>>;
+  readonly tabs: Readonly<Record<'findings' | 'questions' | 'batteries' | 'pipes' | 'model', string>>;
+  readonly questions: {
+    readonly lead: string;
+    readonly none: string;
+    readonly weight: (pipes: number) => string;
+    readonly choices: string;
+    readonly where: string;
+    /** The question in this language; null where its own sentence is in it already. */
+    readonly ask: ((part: string, field: string | null, name: string) => string) | null;
+  };
   readonly search: {
     readonly label: string;
     readonly hint: string;
@@ -67,10 +76,13 @@ export interface Words {
     readonly unknown: (needed: string) => string;
     readonly provisional: string;
     readonly why: (size: string) => string;
-    readonly whyNot: string;
-    readonly failsBelow: (size: string, rules: string) => string;
-    readonly nextDemand: (size: string, rule: string) => string;
-    readonly onlyDemand: string;
+    readonly whyNot: (size: string) => string;
+    readonly smallest: string;
+    readonly fails: (rule: string, asks: string) => string;
+    readonly noRoom: (rule: string) => string;
+    /** What too small a pipe of each kind means, for somebody who reads no code. */
+    readonly plain: Readonly<Record<'drain' | 'vent' | 'both', string>>;
+    readonly roleWhy: Readonly<Record<'both' | 'water' | 'air' | 'none', string>>;
     /** `4 in holds 36 FU` */
     readonly holds: (size: string, load: string) => string;
     readonly demands: string;
@@ -128,6 +140,7 @@ export interface Words {
     readonly free: string;
     readonly unidentified: string;
     readonly path: string;
+    readonly plainUnvented: string;
   };
   readonly follow: {
     readonly water: (name: string) => string;
@@ -239,6 +252,7 @@ export interface Words {
   readonly trapHow: Readonly<Record<string, string>>;
   readonly sewerHow: Readonly<Record<string, string>>;
   /** Sentences of the result that come from a fixed list. */
+  readonly limits: Readonly<Record<string, string>>;
   readonly phrases: Readonly<Record<string, string>>;
 }
 
