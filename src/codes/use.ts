@@ -85,7 +85,15 @@ export interface BatteryUse {
   readonly facts: BatteryFacts;
   readonly reading: Reading;
 }
-export type Reading = 'wet-vent' | 'circuit-vent' | 'individual-vent';
+/** Ways to vent a row that may be drawn in place of one another. */
+export type SharedReading = 'wet-vent' | 'circuit-vent' | 'individual-vent';
+/** Those, and what only some codes know: each has its conditions in the code's own module. */
+export type Reading =
+  | SharedReading
+  | 'common-vent'
+  | 'waste-stack-vent'
+  | 'combination-waste-and-vent'
+  | 'single-stack';
 
 export interface VentUse {
   /** Load that enters a vent table, what the code leaves out left out. */
@@ -111,11 +119,15 @@ export interface VentUse {
   readonly wetVentStoreys: number;
   /** Stack that the vent serves, by id: its stack vent, vent stack, yoke vents and offset relief vents. */
   readonly serves: number | null;
+  /** Sump, interceptor or manhole at the vent's foot, and the drains that empty into it; null: none stands there. */
+  readonly tank: { readonly kind: TankKind; readonly inlets: readonly PipeId[] } | null;
   /** Of an offset relief vent: which of the stack's offsets it stands beside, from the top. */
   readonly offset: number | null;
   /** Of a vent stack: where it leaves the stack. */
   readonly leaves: 'foot' | 'drain' | 'above a branch' | null;
 }
+
+export type TankKind = 'sump' | 'interceptor' | 'manhole';
 
 /** A drain that stands in for a relief or additional circuit vent. */
 export interface StandIn {

@@ -1,9 +1,9 @@
-import type { Broken } from '../codes/battery.ts';
 import type { Reading } from '../codes/use.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import { type BatteryContext, batteryFacts, type Draft } from './battery-facts.ts';
 import { trapsByFoot } from './feet.ts';
-import type { Battery, ReadingGround } from './roles.ts';
+import { brokenUnder, judgeBattery, readAs } from './judge-battery.ts';
+import type { Battery } from './roles.ts';
 import type { StackPlace } from './stack-joints.ts';
 
 /**
@@ -112,9 +112,10 @@ function levelLine({ stream, paths, inStack }: BatteryContext, foot: JointId): P
 function isOneRow(context: BatteryContext, longer: Draft, below: Draft, onLine: boolean): boolean {
   const facts = batteryFacts(context, longer, 0);
   const relief = facts.circuit.relief?.kind;
-  if ((relief === 'dry' || relief === 'shared') && brokenOf(context, 'circuit-vent', facts).length === 0) return true;
+  if ((relief === 'dry' || relief === 'shared') && brokenUnder(context.code, 'circuit-vent', facts)?.length === 0)
+    return true;
   const alone = judge(context, below, 0).broken.length;
-  const together = brokenOf(context, 'wet-vent', facts).length;
+  const together = brokenUnder(context.code, 'wet-vent', facts)?.length ?? Number.POSITIVE_INFINITY;
   return alone > 0 && together <= (onLine ? 0 : alone);
 }
 
@@ -151,48 +152,5 @@ function withoutFreeTraps(context: BatteryContext, draft: Draft, id: number): Ba
   return judge(context, { ...draft, traps }, id);
 }
 
-function brokenOf({ code }: BatteryContext, reading: Reading, facts: Battery['facts']): readonly Broken[] {
-  return code.readings.find((rule) => rule.reading === reading)?.broken(facts) ?? [];
-}
-
-function judge(context: BatteryContext, draft: Draft, id: number): Battery {
-  const facts = batteryFacts(context, draft, id);
-  const judged = context.code.readings.map(({ reading, broken }) => ({ reading, broken: broken(facts) }));
-  const of = (reading: Reading) => judged.find((one) => one.reading === reading) ?? { reading, broken: [] };
-  const wet = of('wet-vent');
-  const circuit = of('circuit-vent');
-  const choose = (reading: Reading, why: ReadingGround): Battery => ({
-    facts,
-    reading,
-    why,
-    broken: of(reading).broken,
-    others: judged.filter((one) => one.reading !== reading),
-  });
-  const word = facts.word;
-  if (word !== null && of(word).broken.length === 0) return choose(word, 'designer-says');
-  const [wetHolds, circuitHolds] = [wet.broken.length === 0, circuit.broken.length === 0];
-  if (wetHolds !== circuitHolds) return choose(wetHolds ? 'wet-vent' : 'circuit-vent', 'only-one-holds');
-  if (wetHolds) {
-    const dry = facts.circuit.relief !== null && facts.circuit.relief.kind !== 'drain';
-    return dry ? choose('circuit-vent', 'dry-relief-vent') : choose('wet-vent', 'no-dry-relief-vent');
-  }
-  if (wet.broken.length !== circuit.broken.length) {
-    return choose(wet.broken.length < circuit.broken.length ? 'wet-vent' : 'circuit-vent', 'fewer-broken');
-  }
-  return choose(context.code.whenNoneHolds(facts), 'tie');
-}
-
-function readAs(battery: Battery, reading: Reading): Battery {
-  const chosen = battery.others.find((one) => one.reading === reading);
-  if (chosen === undefined) return battery;
-  return {
-    facts: battery.facts,
-    reading,
-    why: 'answer',
-    broken: chosen.broken,
-    others: [
-      ...battery.others.filter((one) => one.reading !== reading),
-      { reading: battery.reading, broken: battery.broken },
-    ],
-  };
-}
+const judge = (context: BatteryContext, draft: Draft, id: number): Battery =>
+  judgeBattery(context.code, batteryFacts(context, draft, id));

@@ -35,6 +35,7 @@ export type ReadingGround =
   | 'answer'
   | 'designer-says'
   | 'only-one-holds'
+  | 'first-that-holds'
   | 'dry-relief-vent'
   | 'no-dry-relief-vent'
   | 'fewer-broken'

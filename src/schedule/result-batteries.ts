@@ -38,6 +38,7 @@ const grounds: Readonly<Record<ReadingGround, string>> = {
   answer: 'the answers file says so',
   'designer-says': 'the model says so and it holds',
   'only-one-holds': 'it is the only reading whose conditions hold',
+  'first-that-holds': 'several readings hold and the code comes to it first',
   'dry-relief-vent': 'a dry relief vent joins downstream, which nobody draws for a wet vent',
   'no-dry-relief-vent': 'both readings hold and no dry relief vent is drawn',
   'fewer-broken': 'no reading holds and it breaks the fewest conditions',
