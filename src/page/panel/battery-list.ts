@@ -3,6 +3,7 @@ import { countedKind, named, phrase, ruleName } from '../words/words.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
 import { factsLine } from './facts.ts';
+import { conditionText } from './finding-sentence.ts';
 import { batteryName, capital, shown } from './names.ts';
 
 /** Each battery with all its readings side by side: which one was taken, and what stands against each. */
@@ -92,12 +93,12 @@ export function batteryCard(desk: Desk, battery: ResultBattery): HTMLElement {
 function brokenLine(desk: Desk, broken: BrokenCondition): HTMLElement {
   const { building, words } = desk;
   const { clause, facts } = broken;
-  const numbers = factsLine(building, words, facts);
+  const why = conditionText(desk, facts) ?? factsLine(building, words, facts);
   return make(
     'li',
     {},
     capital(ruleName(words, broken)),
-    numbers === '' ? ' ' : `: ${shown(numbers)} `,
+    why === '' ? ' ' : `${words.colon}${shown(why)} `,
     make('span', { class: 'clause' }, clause),
   );
 }

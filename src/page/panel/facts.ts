@@ -1,6 +1,6 @@
 import type { Building } from '../building.ts';
 import { decimal, lengthText, sizeLabel, slopeText } from '../format.ts';
-import { named, type Words } from '../words/words.ts';
+import { named, phrase, type Words } from '../words/words.ts';
 import { nameOfId } from './names.ts';
 
 type Facts = Readonly<Record<string, unknown>>;
@@ -64,5 +64,5 @@ function otherText(building: Building, words: Words, value: unknown): string {
     return texts.join(', ') + (value.length > mostListed ? ` … (${value.length})` : '');
   }
   if (typeof value !== 'string') return String(JSON.stringify(value));
-  return nameOfId(building, words, / in$/.test(value) ? sizeLabel(words, value) : value);
+  return nameOfId(building, words, / in$/.test(value) ? sizeLabel(words, value) : phrase(words, value));
 }

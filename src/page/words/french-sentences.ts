@@ -1,0 +1,148 @@
+import type { FindingCode } from '../../findings/finding.ts';
+import type { SentenceFacts } from '../../findings/sentences.ts';
+import { frenchCondition } from './french-conditions.ts';
+import { type FrenchFacts, has, num, text } from './french-facts.ts';
+
+type Sentence = (given: FrenchFacts) => string;
+
+const first = ({ about }: SentenceFacts): string => about[0] ?? 'La maquette';
+const many = ({ about }: SentenceFacts, one: string, several: string): string =>
+  about.length < 2
+    ? `${about[0] ?? 'La maquette'} ${one}`
+    : `${about.length} éléments (${about.slice(0, 3).join(', ')}${about.length > 3 ? ', …' : ''}) ${several}`;
+const load = (f: FrenchFacts, key = 'loadUnits'): string => `${f.number(num(f, key))} ${f.unit}`;
+const group = (f: FrenchFacts): string =>
+  `La rangée de ${text(f, 'fixtures')} appareils${has(f, 'battery') ? ` (groupe ${text(f, 'battery').replace(/^battery-/, '')})` : ''}`;
+
+/** The findings' sentences in French, built from the same facts as the English ones. */
+export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
+  undersized: (f) =>
+    `${first(f)} (${f.role(f.facts.role)}) est dessiné en ${text(f, 'modelled')} et doit être de ${has(f, 'requiredLeast') && f.facts.requiredLeast !== f.facts.required ? `${text(f, 'requiredLeast')} à ` : ''}${text(f, 'required')} pour ${load(f)}${f.clause}${f.facts.provisional === true ? '; provisoire, un chiffre du code n’a pas pu être lu' : ''}.`,
+  oversized: (f) =>
+    `${first(f)} (${f.role(f.facts.role)}) est dessiné en ${text(f, 'modelled')}; ${text(f, 'required')} suffit pour sa propre charge${f.clause}${f.facts.mainVent === true ? '; c’est la plus large ventilation du collecteur principal, qui doit en avoir une de son diamètre minimal' : ''}.`,
+  'size-unknown': (f) =>
+    has(f, 'said')
+      ? `${many(f, 'se dit de', 'se disent de')} ${text(f, 'said')} (${text(f, 'from')}), ce qui n’est pas un diamètre du code.`
+      : `${many(f, 'n’a pas de diamètre', 'n’ont pas de diamètre')} dans la maquette : calculé, mais rien à comparer.`,
+  'size-contradicted': (f) =>
+    `${first(f)} est de ${text(f, 'size')} selon ${text(f, 'from')} mais de ${text(f, 'other')} selon ${text(f, 'otherFrom')}; le premier est retenu.`,
+  'smaller-downstream': (f) =>
+    `${first(f)} est dessiné en ${text(f, 'modelled')}, plus petit que ${f.about[1] ?? 'le tuyau'} (${text(f, 'upstream')}) qui s’y vide${f.clause}.`,
+  'unvented-trap': (f) =>
+    `Le siphon de ${first(f)} n’a pas d’accès à l’air : aucune ventilation sur son propre tuyau, et aucune en amont que le code permette${f.clause}.`,
+  'wet-vent-overloaded': (f) =>
+    `${group(f)} : aucun diamètre de ventilation interne ne suffit, ${frenchCondition(f)}${f.clause}.`,
+  'wet-vent-not-allowed': (f) =>
+    `${group(f)} ne peut avoir une ventilation interne : ${frenchCondition(f)}${f.clause}.`,
+  'circuit-vent-not-allowed': (f) =>
+    `${group(f)} ne peut avoir une ventilation terminale : ${frenchCondition(f)}${f.clause}.`,
+  'relief-vent-missing': (f) =>
+    `${group(f)} a une ventilation terminale, et aucune ventilation d’équilibrage, ni évacuation ventilée qui en tienne lieu, ne se raccorde en aval de son dernier appareil${f.clause}.`,
+  'additional-circuit-vent-missing': (f) =>
+    `${group(f)} exige une ventilation terminale supplémentaire : ${frenchCondition(f)}${f.clause}.`,
+  'stack-vent-missing': (f) =>
+    `La colonne de chute ${first(f)} porte ${load(f)} et ne se prolonge pas vers le haut en colonne de ventilation primaire${f.clause}.`,
+  'vent-stack-missing': (f) =>
+    `La colonne de chute ${first(f)} reçoit des appareils de ${text(f, 'storeys')} étages; au-delà de ${text(f, 'storeysMost')} il lui faut une colonne de ventilation secondaire dès son pied${f.clause}.`,
+  'vent-stack-misplaced': (f) =>
+    `La colonne de ventilation secondaire ${first(f)} ne commence pas au raccordement le plus bas de sa colonne de chute ou plus bas${f.clause}.`,
+  'yoke-vent-missing': (f) =>
+    `La colonne de chute ${first(f)} reçoit des appareils de ${text(f, 'storeys')} étages et n’a pas de ventilation de chute à l’étage ${num(f, 'storey') + 1}${f.clause}.`,
+  'yoke-vent-misplaced': (f) =>
+    `La ventilation de chute ${first(f)} ne se raccorde pas où le code le demande${f.clause}.`,
+  'offset-relief-vent-missing': (f) =>
+    `La déviation ${first(f)}, longue de ${f.length(num(f, 'offsetM'))} sous ${text(f, 'storeys')} étages avec ${load(f)}, a ${text(f, 'reliefVents')} des deux ventilations d’équilibrage exigées${f.clause}.`,
+  'frost-enlargement-missing': (f) =>
+    `${first(f)} traverse le toit en ${text(f, 'size')}; sous ${text(f, 'least')} le gel peut le fermer${f.clause}.`,
+  'trap-arm-too-long': (f) =>
+    has(f, 'turnDeg')
+      ? `Le bras de siphon de ${first(f)} tourne de ${f.number(num(f, 'turnDeg'))}°, au plus ${f.number(num(f, 'limitDeg'))}°${f.clause}.`
+      : f.facts.what === 'too short'
+        ? `Le bras de siphon de ${first(f)} mesure ${f.length(num(f, 'lengthM'))}, au moins ${f.length(num(f, 'limitM'))} sur un siphon de ${text(f, 'trap')}${f.clause}.`
+        : `Du siphon de ${first(f)} à sa ventilation il y a ${f.length(num(f, 'lengthM'))}${f.facts.what === 'closet height' ? ' de hauteur' : ''}, au plus ${f.length(num(f, 'limitM'))} sur un siphon de ${text(f, 'trap')}${f.clause}.`,
+  'trap-arm-too-steep': (f) =>
+    `Le bras de siphon de ${first(f)} descend de ${f.length(num(f, 'fallM'))} avant sa ventilation, au plus ${f.length(num(f, 'limitM'))} sur un siphon de ${text(f, 'trap')} : il viderait le siphon${f.clause}.`,
+  'outlet-pipe-too-long': (f) =>
+    `Entre ${first(f)} et son siphon le tuyau mesure ${f.length(num(f, 'lengthM'))}, au plus ${f.length(num(f, 'limitM'))}${f.clause}.`,
+  'slope-too-small': (f) =>
+    `${first(f)} a une pente de ${f.slope(num(f, 'slope'))}; ${text(f, 'size')} exige ${f.slope(num(f, 'least'))}${f.clause}.`,
+  'slope-unknown': (f) =>
+    `${many(f, 'n’a pas de pente', 'n’ont pas de pente')}, ni dessinée ni indiquée : chaque diamètre est lu à sa propre pente minimale. À quelle pente seront-ils posés ?`,
+  backfall: (f) => `${first(f)} remonte de ${f.length(num(f, 'climbM'))} sur le parcours de son eau.`,
+  'vent-joins-too-low': (f) =>
+    `${first(f)} se raccorde à une autre ventilation sous le niveau de débordement d’un appareil qu’il dessert${f.clause}.`,
+  'dry-vent-too-flat': (f) =>
+    `${first(f)} est trop à plat avant de s’élever au-dessus du niveau de débordement${f.clause}.`,
+  'no-open-air': (f) =>
+    `${first(f)} finit ${has(f, 'topM') ? `à l’intérieur, à ${f.length(num(f, 'topM'))},` : 'fermé'} et non à l’air libre : les siphons qui comptent sur lui ne sont pas ventilés.`,
+  'open-air-assumed': () =>
+    'La maquette n’a pas de toit : une ventilation qui finit 2 m au-dessus du plus haut étage avec appareils est réputée à l’air libre.',
+  'storeys-assumed': (f) =>
+    `La maquette n’a pas d’étages : on en compte un par ${f.length(num(f, 'heightM'))} de hauteur.`,
+  'cleanout-missing': (f) => `${first(f)} n’a pas de regard de nettoyage${f.clause}.`,
+  'cleanout-too-small': (f) =>
+    `Le regard de nettoyage ${first(f)} est de ${text(f, 'modelled')}, au moins ${text(f, 'least')}${f.clause}.`,
+  'closet-needs-larger': (f) =>
+    `${first(f)} porte ${text(f, 'closets')} toilettes et exige un plus grand diamètre${f.clause}.`,
+  'branch-too-long': (f) =>
+    `${first(f)} mesure ${f.length(num(f, 'lengthM'))}, au plus ${f.length(num(f, 'limitM'))}${f.clause}.`,
+  'appliance-not-allowed': (f) => `${first(f)} ne peut se vider ici${f.clause}.`,
+  'vent-area-too-small': (f) => `Les ventilations de ${first(f)} ont ensemble une section trop faible${f.clause}.`,
+  'main-vent-missing': (f) =>
+    `Aucune ventilation du collecteur principal n’atteint l’air libre en ${text(f, 'least')} ou plus${has(f, 'widest') ? `; la plus large est de ${text(f, 'widest')}` : ''}${f.clause}.`,
+  'fixture-unidentified': (f) =>
+    has(f, 'kind')
+      ? `${first(f)} : ${f.kind(f.facts.kind)}, mais il manque un détail qui décide de sa charge; les diamètres sont donnés pour les deux cas.`
+      : `${first(f)} se vide, mais rien dans la maquette ne dit ce que c’est : les diamètres vont du plus léger au plus lourd possible.`,
+  'fixture-unconnected': (f) => `${first(f)} n’a pas de tuyau d’évacuation.`,
+  'kind-contradicted': (f) =>
+    `${first(f)} est pris pour : ${f.kind(f.facts.taken)}, selon ${text(f, 'takenFrom')}; mais ${text(f, 'otherFrom')} dit : ${f.kind(f.facts.other)}.`,
+  'open-end': (f) =>
+    `${first(f)} a un bout ouvert${has(f, 'gapM') ? `; la chose la plus proche est à ${f.length(num(f, 'gapM'))}` : ''}.`,
+  'dead-end': (f) =>
+    f.facts.noFixtures === true
+      ? `${many(f, 'appartient', 'appartiennent')} à une évacuation où aucun appareil de la maquette ne se vide : rien à calculer.`
+      : `${first(f)} ne mène nulle part : ni eau ni air n’y passe.`,
+  'joint-inferred': (f) =>
+    `${text(f, 'joints')} raccords sans ports reliés ont été trouvés par géométrie; le plus grand écart est de ${f.length(num(f, 'gapM'))}.`,
+  'joint-contradicted': (f) =>
+    f.facts.what === 'direction'
+      ? `Les ports de ${first(f)} et de ${f.about[1] ?? 'un autre élément'} sont reliés contre leur sens d’écoulement.`
+      : `Des ports relient ${first(f)} à ${f.about[1] ?? 'un autre élément'}, mais ils sont à ${f.length(num(f, 'gapM'))} l’un de l’autre.`,
+  loop: (f) => `${many(f, 'ferme', 'ferment')} une boucle entre évacuations.`,
+  'no-sewer-end': (f) =>
+    `${many(f, 'se vide', 'se vident')} dans une tuyauterie sans sortie : aucun bout vers l’égout n’a été trouvé.`,
+  'sewer-end-assumed': (f) =>
+    `La sortie vers l’égout est supposée à ${first(f)} (${text(f, 'candidates')} bouts ouverts) : dites-le dans le fichier de réponses si c’en est un autre.`,
+  'wrong-system': (f) => `${first(f)} est classé dans un réseau auquel, d’après sa tuyauterie, il n’appartient pas.`,
+  'fit-in-wall': fitInWall,
+  'double-water-path': (f) => `L’eau de ${first(f)} a deux chemins.`,
+  'doubled-element': (f) => `${first(f)} se trouve deux fois au même endroit; un seul est retenu.`,
+  'group-not-applied': (f) =>
+    `${text(f, 'fixtures')} appareils pourraient former des groupes de salle de bains, mais la maquette ne les met dans aucune pièce : leurs charges sont additionnées une à une${f.clause}.`,
+  'file-damaged': (f) =>
+    `${text(f, 'file')} est endommagé : ${text(f, 'problem').replaceAll('-', ' ')}, ${text(f, 'count')} fois, d’abord à la ligne ${text(f, 'line')}.`,
+  'text-damaged': (f) =>
+    `${text(f, 'file')} a ${text(f, 'count')} textes endommagés (${text(f, 'problem').replaceAll('-', ' ')}), d’abord à la ligne ${text(f, 'line')}.`,
+};
+
+function fitInWall(f: FrenchFacts): string {
+  const wall = has(f, 'wall') ? text(f, 'wall') : 'son mur';
+  const stud = has(f, 'stud') ? text(f, 'stud') : null;
+  const lighter = has(f, 'studIfNotLoadbearing') ? text(f, 'studIfNotLoadbearing') : null;
+  const takes =
+    stud !== null
+      ? `des poteaux de ${stud} le reçoivent${lighter === null ? '' : ` (${lighter} si le mur ne porte rien)`}`
+      : lighter !== null
+        ? `des poteaux de ${lighter} le reçoivent si le mur ne porte rien`
+        : 'aucun poteau courant ne le reçoit : une gaine, ou un autre endroit';
+  const mm = (key: string): string => `${f.number(num(f, key))} mm`;
+  if (f.facts.what !== 'hole')
+    return `${first(f)} en ${text(f, 'required')} n’entre pas dans ${wall} : ${f.facts.what === 'fitting' ? 'ses raccords font' : 'il fait'} ${mm('needsMm')} de large, le mur a ${mm('cavityMm')}; ${takes}.`;
+  const bears = f.facts.loadBearing === true ? ' et porte' : f.facts.loadBearing === false ? '' : ' s’il porte';
+  return `${first(f)} en ${text(f, 'required')} court le long de ${wall} à travers ses poteaux : un trou de ${mm('holeMm')}, au plus ${mm('holeMostMm')} dans un poteau de ${mm('cavityMm')} de profondeur${bears} et non renforcé (${text(f, 'holeClause')}); ${takes}.`;
+}
+
+/** The sentence of a finding in French; a code that has none yet says its name and its facts. */
+export const frenchSentence = (code: string, given: FrenchFacts): string | null =>
+  Object.hasOwn(frenchSentences, code) ? frenchSentences[code as FindingCode](given) : null;
