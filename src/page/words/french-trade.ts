@@ -147,6 +147,14 @@ export const frenchRules: Words['rules'] = {
 };
 
 export const frenchPhrases: Words['phrases'] = {
+  'no water closet served': 'aucune toilette desservie',
+  'one or two water closets served': 'une ou deux toilettes desservies',
+  'whole stack': 'toute la colonne',
+  'one storey': 'un étage',
+  'half the stack': 'la moitié de la colonne de chute',
+  trap: 'siphon',
+  outlet: 'tubulure de sortie',
+  larger: 'le plus grand',
   'no water and no air of a trap passes': 'ni eau ni air d’un siphon n’y passe',
   'it is the only reading whose conditions hold': 'c’est la seule lecture dont les conditions tiennent',
   'a dry relief vent joins downstream, which nobody draws for a wet vent':
