@@ -4,14 +4,13 @@ import type { Answers } from '../model/answers.ts';
 import type { Element, ElementId, Model } from '../model/model.ts';
 import type { Network, Pipe } from '../network/network.ts';
 import { metres } from '../units/quantity.ts';
+import { coordinateMetres, directionDegrees } from '../units/uncertainty.ts';
 import type { PipeSlope } from './paths.ts';
 import { climbOf, type Water } from './water.ts';
 
 /** Nominally vertical: at 45 degrees or less to the vertical; an angle within its uncertainty of the limit holds. */
-const verticalLimit = Math.cos(((45 + 0.01) * Math.PI) / 180);
-/** What coordinates can tell: 1 mm between two ends, and 0.01 degrees. */
-const heightUncertainty = 0.001;
-const angleUncertainty = Math.tan((0.01 * Math.PI) / 180);
+const verticalLimit = Math.cos(((45 + directionDegrees) * Math.PI) / 180);
+const slopeUncertainty = Math.tan((directionDegrees * Math.PI) / 180);
 
 /** By pipe: at 45 degrees or less to the vertical; null where the model gives neither geometry nor a property. */
 export function orientations(model: Model, network: Network): (boolean | null)[] {
@@ -56,7 +55,7 @@ export function pipeSlopes(
       return { slope, uncertainty: 0, ground: 'answer', climb: metres(climb) };
     }
     const run = runOf(pipe);
-    const uncertainty = run === null || run.plan === 0 ? 0 : heightUncertainty / run.plan + angleUncertainty;
+    const uncertainty = run === null || run.plan === 0 ? 0 : coordinateMetres / run.plan + slopeUncertainty;
     const fall = run === null || run.plan === 0 ? 0 : signedFall(pipe, run, from);
     if (run !== null && run.plan > 0 && Math.abs(fall) > uncertainty) {
       return { slope: fall, uncertainty, ground: 'geometry', climb: metres(climb) };

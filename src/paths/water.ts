@@ -5,6 +5,7 @@ import type { Answers } from '../model/answers.ts';
 import type { Identity } from '../model/identity.ts';
 import type { ElementId, Model } from '../model/model.ts';
 import type { JointId, Network, Pipe, PipeId } from '../network/network.ts';
+import { coordinateMetres } from '../units/uncertainty.ts';
 import { cheapestWays } from './cheapest-ways.ts';
 import type { DrainSystem, FixtureId, FixturePath } from './paths.ts';
 import { sewerEndOf } from './sewer-end.ts';
@@ -25,14 +26,12 @@ const climbPerMetre = 1000;
 const lengthPerMetre = 0.001;
 const againstPorts = 50;
 const throughVent = 100;
-/** Coordinates carry 1 mm at each end: a smaller climb is not one. */
-const coordinateUncertainty = 0.001;
 
-/** Rise in metres along the way from `from`, over what coordinates can tell. */
+/** Rise in metres along the way from `from`, over what coordinates can tell: a smaller climb is not one. */
 export function climbOf(pipe: Pipe, from: JointId): number {
   if (pipe.points === null) return 0;
   const fall = drawnFall(pipe);
-  return Math.max(0, (pipe.ends[0] === from ? -fall : fall) - coordinateUncertainty);
+  return Math.max(0, (pipe.ends[0] === from ? -fall : fall) - coordinateMetres);
 }
 
 /** Metres from end 0 down to end 1, as drawn or as laid anew. */

@@ -1,6 +1,6 @@
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import type { Role } from '../codes/role.ts';
-import type { PipeUse, Reading, StackUse } from '../codes/use.ts';
+import type { PipeUse, Reading, StackUse, TankKind } from '../codes/use.ts';
 import { type Finding, finding, type WithFindings } from '../findings/finding.ts';
 import type { PlanPoint } from '../geometry/plan-outline.ts';
 import type { Loads } from '../loads/loads.ts';
@@ -66,6 +66,7 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
       const { kind, detail } = identityOf(fixture);
       return { kind, emergency: detail.emergency };
     }),
+    tankAt: (joint) => tankAmong(network.joints[joint]!.elements.map((element) => identities[element])),
     kindOf: (fixture) => identityOf(fixture).kind,
     live: (joint) => liveAt.get(joint) ?? null,
     wordOf: (fixtures, pipes) => designersWord(facts, fixtures, pipes),
@@ -155,6 +156,16 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
     },
     findings,
   };
+}
+
+/** A sump, an interceptor or a manhole among what stands at a joint. */
+function tankAmong(parts: readonly (Identity | undefined)[]): TankKind | null {
+  for (const it of parts) {
+    if (it?.part === 'tank' && it.detail.style === 'interceptor') return 'interceptor';
+    if (it?.part === 'tank' && (it.detail.style === 'sump' || it.detail.style === 'pump')) return 'sump';
+    if (it?.part === 'chamber') return 'manhole';
+  }
+  return null;
 }
 
 /** Pipes between a fixture and its trap. */

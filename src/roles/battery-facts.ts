@@ -1,6 +1,6 @@
 import type { BatteryFacts, BatteryTrap, CircuitLine, Guest, Relief, WetLine } from '../codes/battery.ts';
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
-import type { Reading } from '../codes/use.ts';
+import type { Reading, TankKind } from '../codes/use.ts';
 import type { FixtureKind } from '../model/identity.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import type { FixtureId, TrapAir } from '../paths/paths.ts';
@@ -17,6 +17,8 @@ export interface BatteryContext extends StackContext {
   /** A stack's foot lies upstream of the pipe. By pipe id. */
   readonly stackAbove: readonly boolean[];
   readonly free: readonly (FreeTrap | null)[];
+  /** Tank or manhole that stands at a joint. */
+  readonly tankAt: (joint: JointId) => TankKind | null;
   readonly kindOf: (fixture: FixtureId) => FixtureKind | null;
   /** Joint with a live dry vent standing on it. By joint id. */
   readonly live: (joint: JointId) => PipeId | null;

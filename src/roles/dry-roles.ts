@@ -147,6 +147,7 @@ function footRoles(
       if (place.at === 'offset') return of('offset-relief-vent', place.stack, null);
       if (place.at === 'between' && !footOf.has(joint)) return of('yoke-vent', place.stack, null);
     }
+    if (traps.length === 0 && context.tankAt(joint) !== null) return of('tank-vent', null, null);
     const wetFoot = wet.get(joint);
     if (wetFoot !== undefined) return of('vent-stack', wetFoot.stack, null);
     const relief = reliefAt.get(joint);

@@ -92,11 +92,17 @@ export function ventUses(
           ? batteries[it.battery]!.facts.wet.storeys
           : 0,
       serves: it.stack?.id ?? null,
+      tank: it.role === 'tank-vent' && it.foot !== null ? tankOf(context, it.foot.joint) : null,
       offset: it.role === 'offset-relief-vent' ? (places.get(it.foot!.joint)?.offset ?? null) : null,
       leaves: it.role === 'vent-stack' ? leavesAt(it.foot?.joint ?? null, places) : null,
     });
   }
   return uses;
+}
+
+function tankOf({ tankAt, stream }: BatteryContext, foot: JointId): VentUse['tank'] {
+  const kind = tankAt(foot);
+  return kind === null ? null : { kind, inlets: stream.inflows[foot]! };
 }
 
 /** Where on its stack a vent stack starts; one whose lower part is wet starts at the stack too. */

@@ -2,6 +2,7 @@ import { type Finding, finding } from '../../findings/finding.ts';
 import { rowAtSize } from '../../tables/find-row.ts';
 import { leastSlopeOf, reachesSlope } from '../../tables/find-slope.ts';
 import { unitsOf } from '../../units/quantity.ts';
+import { coordinateMetres, turnDegrees } from '../../units/uncertainty.ts';
 import type { Check, CheckedPipe, CheckedTrap } from '../check.ts';
 import type { Tools } from '../tools.ts';
 
@@ -18,10 +19,6 @@ export function checks(tools: Tools): Check[] {
   ];
 }
 
-/** Lengths and heights from coordinates carry a millimetre; a limit that lies within it holds. */
-const coordinate = 0.001;
-const angle = 0.05;
-
 function outletLength({ family }: Tools): Check {
   const longest = family.number('outlet-pipe-length', 'length');
   const { clause } = family.rule('NPC-R15');
@@ -29,7 +26,7 @@ function outletLength({ family }: Tools): Check {
     id: 'NPC-R15',
     run: ({ traps }) =>
       traps
-        .filter(({ outletLength: length }) => length > longest.value + coordinate)
+        .filter(({ outletLength: length }) => length > longest.value + coordinateMetres)
         .map(({ element, outletLength: length }) =>
           finding('outlet-pipe-too-long', [element], { lengthM: length, limitM: longest.value }, clause),
         ),
@@ -112,7 +109,7 @@ function trapArms({ family }: Tools): Check {
     const longest = row.amount('longest').value;
     const slope = row.amount('slope').value;
     const width = widthOf(size);
-    if (typeof longest === 'number' && arm.length > longest + coordinate) {
+    if (typeof longest === 'number' && arm.length > longest + coordinateMetres) {
       found.push(
         finding(
           'trap-arm-too-long',
@@ -122,7 +119,7 @@ function trapArms({ family }: Tools): Check {
         ),
       );
     }
-    if (arm.length < least.value * width - coordinate) {
+    if (arm.length < least.value * width - coordinateMetres) {
       found.push(
         finding(
           'trap-arm-too-long',
@@ -132,7 +129,7 @@ function trapArms({ family }: Tools): Check {
         ),
       );
     }
-    if (arm.fall !== null && arm.fall > mostFall.value * width + coordinate) {
+    if (arm.fall !== null && arm.fall > mostFall.value * width + coordinateMetres) {
       found.push(
         finding(
           'trap-arm-too-steep',
@@ -150,7 +147,7 @@ function trapArms({ family }: Tools): Check {
     ) {
       found.push(finding('slope-too-small', [element], { slope: arm.slope, least: slope, size }, arms.clause));
     }
-    if (arm.turn !== null && arm.turn > mostTurn.value + angle) {
+    if (arm.turn !== null && arm.turn > mostTurn.value + turnDegrees) {
       found.push(
         finding(
           'trap-arm-too-long',
@@ -169,11 +166,11 @@ function trapArms({ family }: Tools): Check {
     const report = (what: string, facts: Record<string, number | null>): void => {
       found.push(finding('trap-arm-too-long', [element], { ...facts, trap: size, what }, closets.clause));
     };
-    if (far(arm.height, closet.height.value, coordinate))
+    if (far(arm.height, closet.height.value, coordinateMetres))
       report('closet height', { lengthM: arm.height, limitM: closet.height.value });
-    if (far(arm.plan, closet.plan.value, coordinate))
+    if (far(arm.plan, closet.plan.value, coordinateMetres))
       report('closet length', { lengthM: arm.plan, limitM: closet.plan.value });
-    if (far(arm.turn, closet.turn.value, angle))
+    if (far(arm.turn, closet.turn.value, turnDegrees))
       report('closet turn', { turnDeg: arm.turn, limitDeg: closet.turn.value });
     return found;
   };
@@ -240,7 +237,7 @@ function offsetRelief({ family }: Tools): Check {
         offsets
           .filter(
             (one) =>
-              one.length > length.value + coordinate &&
+              one.length > length.value + coordinateMetres &&
               one.storeysAbove > storeys.value &&
               one.loadAbove > load.value &&
               one.reliefVents < 2,

@@ -8,6 +8,7 @@ import {
 } from '../../tables/fixture-rows.ts';
 import type { Cell } from '../../tables/table.ts';
 import type { Load } from '../../units/quantity.ts';
+import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { FixtureRow, FixtureRows, FreeTrapFacts, GroupRule } from '../plumbing-code.ts';
 import type { Tools } from '../tools.ts';
 
@@ -82,7 +83,9 @@ export function freeOfVent({ family }: Tools): (trap: FreeTrapFacts) => { rule: 
     if (kind !== 'floor-drain' || length === null || fall === null) return null;
     const width = series.sizes[series.rank(trap)]!.lengthsMm[0]! / 1000;
     const holds =
-      series.rank(trap) >= series.rank(least.value) && length >= longest.value - 0.001 && fall <= width + 0.001;
+      series.rank(trap) >= series.rank(least.value) &&
+      length >= longest.value - coordinateMetres &&
+      fall <= width + coordinateMetres;
     return holds ? { rule: id, clause } : null;
   };
 }

@@ -1,6 +1,7 @@
 import { sizeForLoad } from '../../tables/find-size.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
 import { noLoad, plusLoad, unitsOf } from '../../units/quantity.ts';
+import { coordinateMetres, turnDegrees } from '../../units/uncertainty.ts';
 import type { BatteryFacts, BatteryTrap, Broken } from '../battery.ts';
 import type { ReadingRule } from '../plumbing-code.ts';
 import type { Tools } from '../tools.ts';
@@ -88,15 +89,12 @@ function wetVentBreaks({ family, omit, settings }: Tools): Breaks {
     const longest =
       found.size !== null && rank(found.size) <= rank(smallOffset.upTo.value) ? smallOffset.length : largeOffset;
     for (const { length, joined } of wet.offsets) {
-      if (length > longest.value + coordinate) breaks('NPC-R48', { offsetM: length, offsetMostM: longest.value });
+      if (length > longest.value + coordinateMetres) breaks('NPC-R48', { offsetM: length, offsetMostM: longest.value });
       if (joined) breaks('NPC-R48', { joinedInOffset: true });
     }
     return broken;
   };
 }
-
-/** Lengths read from coordinates carry a millimetre; a limit that lies within it holds. */
-const coordinate = 0.001;
 
 const closetBeforeOthers = (traps: readonly BatteryTrap[]): boolean => {
   const firstCloset = traps.find(({ closet }) => closet);
@@ -135,7 +133,7 @@ function circuitVentBreaks({ family }: Tools): Breaks {
     for (const stretch of stretches) {
       if (stretch.traps > mostTraps.value)
         breaks('NPC-R60', { traps: stretch.traps, trapsMost: mostTraps.value }, 'additional-circuit-vent-missing');
-      if (stretch.turnDegrees > mostTurn.value + angle)
+      if (stretch.turnDegrees > mostTurn.value + turnDegrees)
         breaks(
           'NPC-R60',
           { turnDeg: stretch.turnDegrees, turnMostDeg: mostTurn.value },
@@ -151,9 +149,6 @@ function circuitVentBreaks({ family }: Tools): Breaks {
     return broken;
   };
 }
-
-/** Angles carry a hundredth of a degree at each bend. */
-const angle = 0.05;
 
 function individualBreaks({ family }: Tools): Breaks {
   const { clause } = family.rule('NPC-R36');

@@ -2,6 +2,7 @@ import { sizeForLength } from '../../tables/find-length.ts';
 import { oneSizeBelow, rowAtSize } from '../../tables/find-row.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
 import { unitsOf } from '../../units/quantity.ts';
+import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { VentLengthTo } from '../plumbing-code.ts';
 import type { Role } from '../role.ts';
 import { followStep, tableStep } from '../rules/steps.ts';
@@ -36,7 +37,7 @@ export const ventLength = (role: Role, breathes: boolean): VentLengthTo | null =
       : null;
 
 /** Sizes of dry vents: National Plumbing Code 2.5.7. and 2.5.8., rules R51, R65, R73 to R80. */
-export function ventRules({ family, omit }: Tools): SizingRule[] {
+export function ventRules({ family, omit, settings }: Tools): SizingRule[] {
   const trapTable = family.table('vent-by-trap');
   const lengthTable = family.table('vent-length');
   const stackTable = family.table('stack-vent');
@@ -45,6 +46,14 @@ export function ventRules({ family, omit }: Tools): SizingRule[] {
   const { rank } = series;
   const reliefMost = family.size('relief-most');
   const mainVent = family.size('main-vent');
+  const tank = {
+    least: family.size('tank-vent-least'),
+    most: family.size('tank-vent-most'),
+    manhole: settings.manholeVent as NominalSize,
+  };
+  const stackSizes = (
+    [...new Set(stackTable.rows.flatMap((row) => row.size('stack').value ?? []))] as NominalSize[]
+  ).sort((a, b) => rank(a) - rank(b));
   const wetStackStoreys = family.number('wet-stack-storeys', 'count');
 
   const lengthRule = (pipe: PipeUse): string =>
@@ -70,7 +79,7 @@ export function ventRules({ family, omit }: Tools): SizingRule[] {
         if (vent === null || vent.length === null || pipe.portion === 'wet') return undefined;
         const asFollower = followers.has(pipe.role) && vent.load > 0;
         if (!byLength.has(pipe.role) && !asFollower) return undefined;
-        const found = sizeForLength(lengthTable, 'load', vent.load, vent.length, { omit });
+        const found = sizeForLength(lengthTable, 'load', vent.load, vent.length - coordinateMetres, { omit });
         const facts = { loadUnits: unitsOf(vent.load), lengthM: vent.length };
         if (found === null) return pastTable(lengthRule(pipe), facts);
         return tableStep(rule(lengthRule(pipe)), found, { ...facts, row: found.row.name }, 'm');
@@ -85,10 +94,7 @@ export function ventRules({ family, omit }: Tools): SizingRule[] {
         const size = soFar(vent.stack.foot);
         if (size === null) return undefined;
         const facts = { stackSize: size, loadUnits: unitsOf(vent.load), lengthM: vent.length };
-        const found = sizeForLength(stackTable, 'load', vent.load, vent.length, {
-          group: { column: 'stack', size: stackRow(size) },
-          omit,
-        });
+        const found = inStackGroup(size, vent.load, vent.length - coordinateMetres);
         if (found === null) return pastTable('NPC-R77', facts);
         return tableStep(rule('NPC-R77'), found, { ...facts, row: found.row.name }, 'm');
       },
@@ -118,6 +124,7 @@ export function ventRules({ family, omit }: Tools): SizingRule[] {
           : followStep(rule('NPC-R77'), size, { wetVent: size, storeys: storeysServed, demand: 'the wet vent' });
       },
     },
+    { id: 'NPC-R82', reads: 'sizes', ask: (pipe, soFar) => ofTank(pipe, soFar) },
     { id: 'NPC-R73', reads: 'sizes', ask: (pipe, soFar) => relief(pipe, soFar) },
     { id: 'NPC-R74', reads: 'sizes', ask: (pipe, soFar) => noStepDown(pipe, soFar) },
     {
@@ -155,6 +162,22 @@ export function ventRules({ family, omit }: Tools): SizingRule[] {
     },
   ];
 
+  /** One size below the largest drain into a sump, within the printed bounds; a manhole has a size of its own (R82). */
+  function ofTank(pipe: PipeUse, soFar: SizesSoFar): Step | undefined {
+    const it = pipe.vent?.tank ?? null;
+    if (it === null || it.kind === 'interceptor') return undefined;
+    if (it.kind === 'manhole')
+      return followStep(rule('NPC-R82'), tank.manhole, { tank: it.kind, setting: 'manholeVent' });
+    const inlets = it.inlets.flatMap((inlet) => soFar(inlet) ?? []);
+    const [first, ...rest] = inlets;
+    if (first === undefined) return undefined;
+    const inlet = rest.reduce((a, b) => series.larger(a, b), first);
+    const below = oneSizeBelow(stackTable, inlet, series, omit) ?? inlet;
+    const raised = series.larger(below, tank.least.value);
+    const asks = rank(raised) > rank(tank.most.value) ? tank.most.value : raised;
+    return followStep(rule('NPC-R82'), asks, { tank: it.kind, inlet, least: tank.least.value, most: tank.most.value });
+  }
+
   /** One size below the circuit vent, never asked above the printed most (2.5.7.3.(1)); the trap's own floor is R75. */
   function relief(pipe: PipeUse, soFar: SizesSoFar): Step | undefined {
     if (pipe.role !== 'relief-vent' && pipe.role !== 'additional-circuit-vent') return undefined;
@@ -181,10 +204,16 @@ export function ventRules({ family, omit }: Tools): SizingRule[] {
     return largest === null ? undefined : followStep(rule('NPC-R74'), largest.size, { fromPipe: largest.from });
   }
 
-  /** A stack between printed sizes takes the next larger row. */
-  function stackRow(size: NominalSize): NominalSize {
-    const printed = [...new Set(stackTable.rows.flatMap((row) => row.size('stack').value ?? []))] as NominalSize[];
-    return printed.filter((one) => rank(one) >= rank(size)).sort((a, b) => rank(a) - rank(b))[0] ?? size;
+  /**
+   * The rows of the stack's size; a stack between printed sizes takes the next larger rows, and so does one whose rows end
+   * below the load: other vents that join may bring more than a stack of that size may carry.
+   */
+  function inStackGroup(size: NominalSize, load: number, length: number): ReturnType<typeof sizeForLength> {
+    for (const stack of stackSizes.filter((one) => rank(one) >= rank(size))) {
+      const found = sizeForLength(stackTable, 'load', load, length, { group: { column: 'stack', size: stack }, omit });
+      if (found !== null) return found;
+    }
+    return null;
   }
 
   function halfOf(size: NominalSize): NominalSize {
