@@ -48,14 +48,20 @@ export function fixtureRowsFor(
     });
 }
 
-/** All rows that any fixture may be: what an unidentified one is measured by. Groups of fixtures are none of them. */
+/**
+ * All rows that any fixture may be: what an unidentified one is measured by. Groups of fixtures are none of them, nor
+ * rows that what is known of the whole building, such as its use, rules out.
+ */
 export function allFixtureRows(
   kinds: FixtureKinds,
   table: Table,
   columns: FixtureColumns = { load: 'load', outlet: 'outlet' },
+  facts: Readonly<Record<string, string>> = {},
 ): readonly (FixtureRow & { readonly kind: string })[] {
+  const ruledOut = ({ where }: KindEntry): boolean =>
+    [...where].some(([fact, test]) => facts[fact] !== undefined && !meets(facts[fact], test));
   return kinds.entries.flatMap((entry) => {
-    const row = joined(entry, table, columns);
+    const row = ruledOut(entry) ? null : joined(entry, table, columns);
     return row === null ? [] : [{ ...row, kind: entry.kind }];
   });
 }
