@@ -2,7 +2,7 @@ import { describe, expect, test } from 'vitest';
 import { armOf, circuitVentedRow, hall, times } from '../support/rows.ts';
 import { runSketch, type SketchRun } from '../support/run-sketch.ts';
 
-// National Plumbing Code, circuit vents: rules R53 to R66. Loads by Table 2.4.9.3., sizes by the tables named.
+// National Plumbing Code, circuit vents: rules R53 to R66, R69. Loads by Table 2.4.9.3., sizes by the tables named.
 const stall = 'urinal, stall, trap 2 in'; // 2
 const drain2 = 'floor-drain, trap 2 in'; // 2
 const drain3 = 'floor-drain, trap 3 in'; // 3
@@ -165,4 +165,42 @@ test('R66 a vented sink of 1.5 in the middle: the branch carries it, the circuit
   expect(rest).toMatchObject(sound);
   expect([run.pipe('J4-RV').load.most, run.pipe('CV-VJ').ventLoad?.most]).toEqual([10.5, 9]);
   expect(run.role('V3-VT3')).toBe('individual-vent');
+});
+
+describe('R69 fixtures on a vertical circuit vent: two of 1½ units at most, at one joint', () => {
+  const onVent = (lines: string) => {
+    const text = circuitVentedRow(times(4, stall), { lavatories: true });
+    const start = text.indexOf('trap TL1');
+    const end = text.indexOf('drain 3 in: LJ > CV');
+    const run = runSketch(`${text.slice(0, start)}${lines}\n${text.slice(end)}`);
+    return run.result.batteries.map(({ reading, broken, others }) => {
+      const circuit =
+        reading === 'circuit-vent' ? broken : others.find((one) => one.reading === 'circuit-vent')!.broken;
+      return circuit.map(({ rule, facts }) => [rule.slice(4), Object.keys(facts)[0]]);
+    })[0];
+  };
+  const at = (name: string, joint: string, side: string, what = 'lavatory', trap = '1 1/4') =>
+    `trap T${name} from ${joint} ${side} 0.4 rise 1:50\n${what} ${name} from T${name} up 0.12, trap ${trap} in\ndrain ${trap} in: ${name} > T${name} > ${joint}`;
+
+  test('two lavatories at a double fitting: allowed; a lavatory of 1.5 is the limit', () => {
+    expect(onVent(`${at('L1', 'LJ', 'west')}\n${at('L2', 'LJ', 'east')}`)).toEqual([]);
+    expect(
+      onVent(`${at('L1', 'LJ', 'west', 'lavatory', '1 1/2')}\n${at('L2', 'LJ', 'east', 'sink', '1 1/2')}`),
+    ).toEqual([]);
+  });
+
+  test('three; two apart; one heavier than 1.5', () => {
+    const three = `${at('L1', 'LJ', 'west')}\n${at('L2', 'LJ', 'east')}\n${at('L3', 'LJ', 'north')}`;
+    expect(onVent(three)).toEqual([['R69', 'fixturesOnVent']]);
+    expect(onVent(at('L1', 'LJ', 'west', 'mop-sink', '2'))).toEqual([['R69', 'loadUnits']]);
+    const apart = `node LK from CV to 0.2\n${at('L1', 'LJ', 'west')}\n${at('L2', 'LK', 'east')}`;
+    expect(onVent(apart)).toEqual([['R69', 'fixturesApart']]);
+  });
+
+  test('the wet portion is 1½ in with 2 units, and 2 in where the user asks British Columbia’s least', () => {
+    const text = circuitVentedRow(times(4, stall), { lavatories: true });
+    expect(runSketch(text).size('LJ-CV')).toBe('1½ in');
+    const settings = { leastWetPortion: '2 in' };
+    expect(runSketch(text, { answers: { settings } }).size('LJ-CV')).toBe('2 in');
+  });
 });
