@@ -107,7 +107,7 @@ function refuseBomb(name: string, packed: number, unpacked: number): void {
   if (unpacked > packed * largestRatio + 65_536) {
     throw new InputError(
       name,
-      `unpacked, the file would be ${Math.round(unpacked / packed)} times as large; that is no model`,
+      `says it unpacks to ${Math.round(unpacked / packed)} times its size: it is damaged, cut off or no model; fetch it again`,
     );
   }
 }

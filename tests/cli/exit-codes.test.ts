@@ -136,7 +136,7 @@ describe('3: a file that cannot be used', () => {
           .replace(/FILE_SCHEMA\(\('[^']*'/, "FILE_SCHEMA(('AP214'"),
       /not IFC/,
     ],
-    ['damaged gzip', 'bad.ifc.gz', () => Buffer.from(gzipSync(whole()).subarray(0, 5000)), /gzip|unpacked/],
+    ['damaged gzip', 'bad.ifc.gz', () => Buffer.from(gzipSync(whole()).subarray(0, 5000)), /damaged/],
     [
       'UTF-16',
       'wide.ifc',
