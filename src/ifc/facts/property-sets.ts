@@ -139,10 +139,7 @@ export class PropertySets {
     const { bytes } = this.cursor;
     let open = this.reader.args[record]! + 1;
     while (bytes[open]! <= 32) open++;
-    if (bytes[open] !== 39) return null;
-    let end = open + 1;
-    while (end < bytes.length && (bytes[end] !== 39 || bytes[end + 1] === 39)) end += bytes[end] === 39 ? 2 : 1;
-    return this.names.at(open + 1, end);
+    return bytes[open] === 39 ? this.names.quoted(open) : null;
   }
 
   private unitFactor(id: number, from: number, quantity: string): number | null {

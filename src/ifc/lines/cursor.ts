@@ -1,6 +1,7 @@
 import { isDigit } from './end-of-statement.ts';
 import { NameTable } from './name-table.ts';
 import { readNumber, readNumbers } from './number.ts';
+import { plainText } from './plain-text.ts';
 import { decodeText, newTextWatch, type TextWatch } from './text.ts';
 
 /** Brackets deeper than this are damage: what stands in them reads as absent. */
@@ -74,8 +75,7 @@ export class Cursor {
     let id = 0;
     let c = b[++i]!;
     for (; c >= 48 && c <= 57; c = b[++i]!) id = id * 10 + c - 48;
-    this.pos = i;
-    this.skip(1);
+    this.leave(i);
     return id;
   }
 
@@ -114,8 +114,7 @@ export class Cursor {
     if (this.next() !== 39) return this.inner(readText);
     const from = this.pos + 1;
     const end = endOfQuoted(this.bytes, this.pos);
-    this.pos = end + 1;
-    this.skip(1);
+    this.leave(end + 1);
     if (end - from > longestRemembered) return decodeText(this.bytes, from, end, this.watch);
     const known = this.remembered.at(from, end);
     return known.isOdd ? decodeText(this.bytes, from, end, this.watch) : known.name;
@@ -126,8 +125,7 @@ export class Cursor {
     if (this.next() !== 39) return this.text();
     const from = this.pos + 1;
     const end = endOfQuoted(this.bytes, this.pos);
-    this.pos = end + 1;
-    this.skip(1);
+    this.leave(end + 1);
     return plainText(this.bytes, from, end) ?? decodeText(this.bytes, from, end, this.watch);
   }
 
@@ -204,8 +202,7 @@ export class Cursor {
     const from = this.pos + 1;
     let i = from;
     while (i < b.length && b[i] !== 46 && b[i] !== 44 && b[i] !== 41 && b[i] !== 59) i++;
-    this.pos = b[i] === 46 ? i + 1 : i;
-    this.skip(1);
+    this.leave(b[i] === 46 ? i + 1 : i);
     if (i - from > longestRemembered) return null;
     const { name } = this.remembered.at(from, i);
     return isUpper(name) ? name : name.toUpperCase();
@@ -262,6 +259,14 @@ export class Cursor {
   get offset(): number {
     this.next();
     return this.pos;
+  }
+
+  /** From right behind an argument that was read to the front of the next. */
+  private leave(end: number): void {
+    this.pos = end;
+    const c = this.bytes[end];
+    if (c === 44) this.pos = end + 1;
+    else if (c !== 41) this.skip(1);
   }
 
   /** What `read` finds within the brackets of a typed value or of a list's first entry; null for anything else. */
@@ -350,19 +355,4 @@ function pastComment(b: Uint8Array, at: number): number {
   if (b[at + 1] !== 42) return at + 1;
   for (let i = b.indexOf(47, at + 3); i > 0; i = b.indexOf(47, i + 1)) if (b[i - 1] === 42) return i + 1;
   return b.length;
-}
-
-/** Arrays of character codes by length, filled anew each time: making them costs more than filling them. */
-const codesOfLength: number[][] = Array.from({ length: 65 }, (_, length) => Array<number>(length).fill(0));
-
-/** Plain short texts as they stand; null where something must be decoded or the text is long. */
-export function plainText(b: Uint8Array, from: number, to: number): string | null {
-  const codes = codesOfLength[to - from];
-  if (codes === undefined) return null;
-  for (let k = 0; k < codes.length; k++) {
-    const c = b[from + k]!;
-    if (c === 92 || c === 39 || c >= 128) return null;
-    codes[k] = c;
-  }
-  return String.fromCharCode.apply(null, codes);
 }

@@ -32,6 +32,25 @@ export class NameTable<T> {
     const b = this.bytes;
     let hash = 0;
     for (let i = from; i < to; i++) hash = (Math.imul(hash, 31) + b[i]!) | 0;
+    return this.hashed(hash, from, to);
+  }
+
+  /** The string that is opened by the quote at `open`. */
+  quoted(open: number): Remembered<T> {
+    const b = this.bytes;
+    const from = open + 1;
+    let hash = 0;
+    let i = from;
+    for (; i < b.length; i++) {
+      const c = b[i]!;
+      if (c === 39 && b[++i] !== 39) return this.hashed(hash, from, i - 1);
+      hash = (Math.imul(hash, 31) + c) | 0;
+    }
+    return this.hashed(hash, from, i);
+  }
+
+  private hashed(hash: number, from: number, to: number): Remembered<T> {
+    const b = this.bytes;
     const slot = (hash ^ (hash >>> 12)) & (slots - 1);
     const length = to - from;
     for (let known = this.table[slot] ?? null; known !== null; known = known.next) {

@@ -1,3 +1,5 @@
+import { plainText } from './plain-text.ts';
+
 const tenTo: readonly number[] = Array.from({ length: 23 }, (_, k) => 10 ** k);
 
 /** Where the last `readNumber` stopped: behind the number. */
@@ -12,22 +14,23 @@ export function readNumber(b: Uint8Array, at: number): number {
   let c = b[i] as number;
   const isNegative = c === 45;
   if (isNegative || c === 43) c = b[++i] as number;
-  let digits = 0;
+  const first = i;
   let mantissa = 0;
   let scale = 0;
   while (c >= 48 && c <= 57) {
-    if (digits > 0 || c !== 48) digits++;
     mantissa = mantissa * 10 + c - 48;
     c = b[++i] as number;
   }
+  let digits = i - first;
   if (c === 46) {
+    const point = i;
     c = b[++i] as number;
     while (c >= 48 && c <= 57) {
-      if (digits > 0 || c !== 48) digits++;
       mantissa = mantissa * 10 + c - 48;
-      scale--;
       c = b[++i] as number;
     }
+    scale = point + 1 - i;
+    digits -= scale;
   }
   if (c === 69 || c === 101) {
     c = b[++i] as number;
@@ -88,7 +91,32 @@ function pastString(b: Uint8Array, open: number): number {
 }
 
 function slowNumber(b: Uint8Array, from: number, to: number): number {
-  let text = '';
-  for (let i = from; i < to; i++) text += String.fromCharCode(b[i] as number);
-  return Number(text);
+  return Number(plainText(b, from, to) ?? '');
+}
+
+const triple = new Float64Array(3);
+
+/** The first three numbers of the argument that begins at `from`, missing ones 0, in one and the same array each time. */
+export function readTriple(b: Uint8Array, from: number): Float64Array {
+  const n = b.length;
+  triple[0] = 0;
+  triple[1] = 0;
+  triple[2] = 0;
+  let depth = 0;
+  let i = from;
+  for (let k = 0; k < 3 && i < n; ) {
+    const c = b[i]!;
+    if ((c >= 48 && c <= 57) || c === 45 || c === 43) {
+      triple[k++] = readNumber(b, i);
+      i = numberEnd > i ? numberEnd : i + 1;
+    } else if (c === 40) {
+      depth++;
+      i++;
+    } else if (c === 41) {
+      if (--depth <= 0) break;
+      i++;
+    } else if (c === 59 || c === 35 || c === 39) break;
+    else i++;
+  }
+  return triple;
 }

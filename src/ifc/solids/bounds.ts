@@ -1,5 +1,17 @@
 import type { Box } from '../../geometry/vector.ts';
-import { boxOf, compose, emptyBox, type Frame, type GrowingBox, include, includeAll, moved, scaleOf } from './frame.ts';
+import {
+  boxOf,
+  compose,
+  emptyBox,
+  type Frame,
+  type GrowingBox,
+  identity,
+  include,
+  includeAll,
+  moved,
+  scaleOf,
+} from './frame.ts';
+import type { Mesh } from './mesh.ts';
 import { type Piece, pieceOf, type Tube } from './piece.ts';
 
 /** Box around parts of a shape; null for none. Round sweeps by their exact extent, all others by their points. */
@@ -9,7 +21,7 @@ export function boundsOf(pieces: readonly Piece[]): Box | null {
   for (let k = 0; k < pieces.length; k++) {
     const { shape, frame } = pieces[k]!;
     if (shape.kind === 'tube') includeTube(box, frame, shape);
-    else if (shape.kind === 'mesh') includeAll(box, frame, shape.points());
+    else if (shape.kind === 'mesh') includeMesh(box, frame, shape);
     else {
       const { base, shift } = shape;
       includeAll(box, frame, base);
@@ -19,6 +31,42 @@ export function boundsOf(pieces: readonly Piece[]): Box | null {
     }
   }
   return boxOf(box);
+}
+
+/** Boxes of meshes in their own coordinates: a fitting's shape stands in a model a hundred times. */
+const ownBoxes = new WeakMap<Mesh, GrowingBox>();
+
+function includeMesh(box: GrowingBox, f: Frame, mesh: Mesh): void {
+  if (!isUpright(f)) {
+    includeAll(box, f, mesh.points());
+    return;
+  }
+  let own = ownBoxes.get(mesh);
+  if (own === undefined) {
+    own = emptyBox();
+    includeAll(own, identity, mesh.points());
+    ownBoxes.set(mesh, own);
+  }
+  const { min, max } = own;
+  if (min[0] > max[0]) return;
+  const a = moved(f, min);
+  const b = moved(f, max);
+  include(box, a[0], a[1], a[2]);
+  include(box, b[0], b[1], b[2]);
+}
+
+/** Smaller than this is the dust of a sine of 180 degrees. */
+const dust = 1e-12;
+
+/** True for a frame that turns axes into axes: then a box stays a box. */
+function isUpright(f: Frame): boolean {
+  for (let k = 0; k < 9; k += 3) {
+    const x = Math.abs(f[k]!) > dust ? 1 : 0;
+    const y = Math.abs(f[k + 1]!) > dust ? 1 : 0;
+    const z = Math.abs(f[k + 2]!) > dust ? 1 : 0;
+    if (x + y + z !== 1) return false;
+  }
+  return true;
 }
 
 /** Parts with frames that carry them into the world. */

@@ -1,6 +1,6 @@
 import type { Vec3 } from '../../geometry/vector.ts';
 import type { Cursor } from '../lines/cursor.ts';
-import { readNumbers } from '../lines/number.ts';
+import { readTriple } from '../lines/number.ts';
 import type { Reader } from '../reader.ts';
 import type { Curves } from './curves.ts';
 import type { Cylinder, Mesh } from './mesh.ts';
@@ -21,7 +21,6 @@ export class FacetedMesh implements Mesh {
   private readonly round: Cylinder[] = [];
   /** Numbers of corners by the records of their points: a corner that many faces share is read once. */
   private readonly corners = new Map<number, number>();
-  private readonly numbers: number[] = [];
 
   constructor(reader: Reader, placements: Placements, curves: Curves, shells: readonly number[]) {
     this.reader = reader;
@@ -98,12 +97,14 @@ export class FacetedMesh implements Mesh {
   private corner(record: number, flat: number[]): number {
     const known = this.corners.get(record);
     if (known !== undefined) return known;
-    const { numbers, reader } = this;
+    const { reader } = this;
     const { metres } = this.placements;
-    numbers.length = 0;
-    if (record >= 0) readNumbers(reader.index.bytes, reader.args[record]! + 1, numbers);
     const number = flat.length / 3;
-    for (let k = 0; k < 3; k++) flat.push(k < numbers.length ? numbers[k]! * metres : 0);
+    if (record < 0) flat.push(0, 0, 0);
+    else {
+      const t = readTriple(reader.index.bytes, reader.args[record]! + 1);
+      flat.push(t[0]! * metres, t[1]! * metres, t[2]! * metres);
+    }
     this.corners.set(record, number);
     return number;
   }

@@ -1,6 +1,6 @@
 import type { Vec3 } from '../../geometry/vector.ts';
 import type { Cursor } from '../lines/cursor.ts';
-import { readNumbers } from '../lines/number.ts';
+import { readTriple } from '../lines/number.ts';
 import type { Reader } from '../reader.ts';
 import { compose, type Frame, identity } from './frame.ts';
 
@@ -13,7 +13,6 @@ export class Placements {
   readonly metres: number;
   private readonly reader: Reader;
   private readonly cursor: Cursor;
-  private readonly numbers: number[] = [];
   private readonly worlds = new Map<number, Frame | null>();
 
   constructor(reader: Reader, metres: number) {
@@ -25,23 +24,18 @@ export class Placements {
   /** Coordinates of a cartesian point, missing ones 0; the origin for a record that is none. */
   point(record: number): Vec3 {
     if (record < 0) return [0, 0, 0];
-    const { numbers, metres } = this;
-    numbers.length = 0;
-    readNumbers(this.cursor.bytes, this.reader.args[record]! + 1, numbers);
-    const n = numbers.length;
-    return [n > 0 ? numbers[0]! * metres : 0, n > 1 ? numbers[1]! * metres : 0, n > 2 ? numbers[2]! * metres : 0];
+    const { metres } = this;
+    const t = readTriple(this.cursor.bytes, this.reader.args[record]! + 1);
+    return [t[0]! * metres, t[1]! * metres, t[2]! * metres];
   }
 
   /** Unit vector of a direction; null for a record that is none and for a direction without length. */
   direction(record: number): Vec3 | null {
     if (record < 0) return null;
-    const { numbers } = this;
-    numbers.length = 0;
-    readNumbers(this.cursor.bytes, this.reader.args[record]! + 1, numbers);
-    const n = numbers.length;
-    const x = n > 0 ? numbers[0]! : 0;
-    const y = n > 1 ? numbers[1]! : 0;
-    const z = n > 2 ? numbers[2]! : 0;
+    const t = readTriple(this.cursor.bytes, this.reader.args[record]! + 1);
+    const x = t[0]!;
+    const y = t[1]!;
+    const z = t[2]!;
     const size = Math.sqrt(x * x + y * y + z * z);
     return size > 0 && size < Infinity ? [x / size, y / size, z / size] : null;
   }
@@ -81,10 +75,13 @@ export class Placements {
     const own = reader.follow(cursor.id(), record);
     const parent = parentId === 0 ? identity : this.world(reader.follow(parentId, record));
     if (parent === null || own < 0) return originIn(parent);
-    const o = this.point(reader.follow(cursor.at(reader.args[own]!).id(), own));
-    const x = o[0];
-    const y = o[1];
-    const z = o[2];
+    const location = reader.follow(cursor.at(reader.args[own]!).id(), own);
+    if (location < 0) return originIn(parent);
+    const { metres } = this;
+    const t = readTriple(cursor.bytes, reader.args[location]! + 1);
+    const x = t[0]! * metres;
+    const y = t[1]! * metres;
+    const z = t[2]! * metres;
     return [
       parent[0] * x + parent[3] * y + parent[6] * z + parent[9],
       parent[1] * x + parent[4] * y + parent[7] * z + parent[10],
