@@ -4,7 +4,7 @@ import type { FixtureId } from '../paths/paths.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Load } from '../units/quantity.ts';
 import type { FixtureRow } from './plumbing-code.ts';
-import type { Reading } from './use.ts';
+import type { Reading, StackUse } from './use.ts';
 
 /** Two or more traps on one wet line that breathe through one foot. Facts only: a code's readings judge them. */
 export interface BatteryFacts {
@@ -21,6 +21,10 @@ export interface BatteryFacts {
   readonly wet: WetLine;
   /** What it looks like when it is circuit vented. */
   readonly circuit: CircuitLine;
+  /** Set where no vent stands upstream and the air comes from where the row's drain ends. */
+  readonly open: OpenLine | null;
+  /** Stack that the line runs through, or that an open row ends at. */
+  readonly stack: StackUse | null;
   /** The designer's own word, from names, systems and properties. */
   readonly word: Reading | null;
 }
@@ -39,6 +43,8 @@ export interface BatteryTrap {
   readonly ownVent: boolean;
   /** Vertical pipes of its own drain between the trap and the line, and their height in metres. */
   readonly drops: { readonly pipes: number; readonly height: number };
+  /** Length of the level pipes of its own drain up to the line, metres. */
+  readonly reach: number;
   /** Joint on the line where its arm ends, and its place: 0 is the foot. */
   readonly joins: JointId;
   readonly place: number;
@@ -73,6 +79,19 @@ export interface WetLine {
   readonly vertical: number;
   readonly level: number;
   readonly length: number;
+  /** Everything that drains through its last pipe; 0 where it has none. */
+  readonly passes: Load;
+}
+
+/** A row of traps none of which has a vent on its drain or upstream. */
+export interface OpenLine {
+  /** What its drain comes to first that has air: a dry vent on it, a stack, a level drain of vented fixtures of its storey. */
+  readonly end: 'vent' | 'stack' | 'vented-drain';
+  readonly joint: JointId;
+  /** Level length from each trap to that joint, metres, in the order of the traps. */
+  readonly reaches: readonly number[];
+  /** What the way comes to past it, as for any branch. */
+  readonly endsAt: 'stack' | 'building-drain';
 }
 
 export interface CircuitLine {
@@ -94,6 +113,8 @@ export interface CircuitLine {
   readonly closets: number;
   /** The branch ends at a stack that carries water from above. */
   readonly soilAbove: boolean;
+  /** Steepest drawn or stated slope between the vent and the last trap, m/m; null where none is known. */
+  readonly steepest: number | null;
   /** Traps whose arms reach the start before any other trap joins. */
   readonly trapsAtStart: number;
   readonly relief: Relief | null;

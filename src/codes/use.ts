@@ -67,6 +67,9 @@ export interface StackUse {
   /** Last section before the drain: its size and load stand for the stack. */
   readonly foot: PipeId;
   readonly footLoad: Load;
+  /** Of everything that the whole stack carries. */
+  readonly footClosets: number;
+  readonly footCounts: Readonly<Record<string, number>>;
   /** Where drains join at or above the head of this section, highest first: height in metres, null without geometry. */
   readonly joins: readonly StackJoin[];
   /** The same of the whole stack. */

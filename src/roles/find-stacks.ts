@@ -152,6 +152,8 @@ export function stackUseAt(context: StackContext, stack: Stack, section: PipeId)
     heaviestStorey: heaviest,
     foot: stack.foot,
     footLoad: loads.pipes[stack.foot]!.load,
+    footClosets: loads.pipes[stack.foot]!.closets,
+    footCounts: loads.pipes[stack.foot]!.counts,
     joins: stackJoins(context, stack, section),
     allJoins: stackJoins(context, stack, stack.foot),
     rise: stack.pipes.reduce((sum, pipe) => (paths.vertical[pipe] === true ? sum + stream.span(pipe) : sum), 0),
