@@ -44,6 +44,8 @@ export function brokenText(given: SentenceFacts): string {
   if (has(given, 'offsetMostM'))
     return `its offset is ${given.length(num(given, 'offsetM'))} long, at most ${given.length(num(given, 'offsetMostM'))}`;
   if (facts.joinedInOffset === true) return 'a drain joins in its horizontal offset';
+  if (has(given, 'levelFixtures'))
+    return `only ${text(given, 'levelFixtures')} of its fixtures drains into a level line: there is none to share a circuit vent with`;
   if (has(given, 'verticalPipes')) return 'the branch has a vertical piece';
   if (has(given, 'storeys')) return `its fixtures stand on ${text(given, 'storeys')} storeys`;
   if (facts.stackUpstream === true) return 'a stack joins upstream of a circuit-vented fixture';
@@ -172,11 +174,12 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
         ? `studs of ${text(f, 'studIfNotLoadbearing')} take it if the wall bears no load`
         : 'no usual stud takes it: a chase, or another place';
     const mm = (key: string): string => `${f.number(num(f, key))} mm`;
+    const at = `${first(f)} at ${text(f, 'required')}${has(f, 'made') ? `, laid as ${text(f, 'made')},` : ''}`;
     if (f.facts.what !== 'hole')
-      return `${first(f)} at ${text(f, 'required')} does not fit in ${wall}: ${f.facts.what === 'fitting' ? 'its fittings are' : 'it is'} ${mm('needsMm')} wide, the wall has room for ${mm('cavityMm')}; ${takes}.`;
+      return `${at} does not fit in ${wall}: ${f.facts.what === 'fitting' ? 'its fittings are' : 'it is'} ${mm('needsMm')} wide, the wall has room for ${mm('cavityMm')}; ${takes}.`;
     const bears =
       f.facts.loadBearing === true ? ' and bears load' : f.facts.loadBearing === false ? '' : ' if it bears load';
-    return `${first(f)} at ${text(f, 'required')} runs along ${wall} through its studs: a hole of ${mm('holeMm')}, at most ${mm('holeMostMm')} in a stud that is ${mm('cavityMm')} deep${bears} and not reinforced (${text(f, 'holeClause')}); ${takes}.`;
+    return `${at} runs along ${wall} through its studs: a hole of ${mm('holeMm')}, at most ${mm('holeMostMm')} in a stud that is ${mm('cavityMm')} deep${bears} and not reinforced (${text(f, 'holeClause')}); ${takes}.`;
   },
   'double-water-path': (f) => `${first(f)} has two ways for its water.`,
   'doubled-element': (f) => `${first(f)} stands twice at one place; one is used.`,

@@ -1,12 +1,13 @@
 import type { Broken } from '../codes/battery.ts';
 import type { Reading } from '../codes/use.ts';
 import type { Finding, FindingCode } from '../findings/finding.ts';
-import type { Answers } from '../model/answers.ts';
 import type { ElementId } from '../model/model.ts';
 import { runNetwork } from '../pipeline.ts';
 import type { Battery } from '../roles/roles.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
 import { type ChangedPiping, unchanged } from './changed-piping.ts';
+import { withReading } from './edits.ts';
+import { pipingOf } from './piping-of.ts';
 import type { Row } from './row.ts';
 
 /** A row's piping carried through every stage with its reading forced, and what stands against it. */
@@ -36,22 +37,11 @@ export function asModelled(row: Row): Attempt {
 export function attempt(row: Row, piping: ChangedPiping, reading: Reading): Attempt {
   const { outcome: first } = row;
   const { model, identities, network } = piping;
-  const { outline, code } = first;
-  const answers = forced(row, reading);
-  const outcome = runNetwork({ model, identities, network, outline, code, answers, findings: [] });
+  const changed = { ...pipingOf(first), model, identities, network, findings: [] };
+  const outcome = runNetwork(withReading(changed, [...elementsOf(row)], reading));
   const battery = batteryOf(row, outcome);
   const obstacles = [...readingObstacles(row, outcome, battery, reading), ...newErrors(first, outcome)];
   return { piping, outcome, battery, obstacles };
-}
-
-/** Said for every fixture of the row, ahead of what the user said. */
-function forced({ outcome, fixtures }: Row, reading: Reading): Answers {
-  const { answers, model, paths } = outcome;
-  const said = fixtures.map((fixture): [string, { reading: string }] => [
-    model.elements[paths.fixtures[fixture]!.element]!.globalId,
-    { reading },
-  ]);
-  return { ...answers, batteries: new Map([...said, ...answers.batteries]) };
 }
 
 const elementsOf = ({ outcome, fixtures }: Row): Set<ElementId> =>

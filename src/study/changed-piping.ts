@@ -18,7 +18,11 @@ export interface ChangedPiping {
   readonly removed: ReadonlySet<PipeId>;
 }
 
-export const unchanged = ({ model, identities, network }: Outcome): ChangedPiping => ({
+export const unchanged = ({
+  model,
+  identities,
+  network,
+}: Pick<Outcome, 'model' | 'identities' | 'network'>): ChangedPiping => ({
   model,
   identities,
   network,

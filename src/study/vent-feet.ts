@@ -76,7 +76,7 @@ function drainOf({ outcome, stream }: Row, { fixture, joins }: BatteryTrap): Pip
 }
 
 /** Nothing rises from the joint: a vent can. */
-export function isFreeAbove({ outcome: { network } }: Row, joint: JointId): boolean {
+export function isFreeAbove({ outcome: { network } }: Pick<Row, 'outcome'>, joint: JointId): boolean {
   return network.joints[joint]!.pipes.every((pipe) => {
     const { points, ends } = network.pipes[pipe]!;
     if (points === null) return false;

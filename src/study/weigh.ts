@@ -1,10 +1,12 @@
-import type { Reading } from '../codes/use.ts';
+import type { Reading, SharedReading } from '../codes/use.ts';
 import type { Battery } from '../roles/roles.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
 import { type Attempt, asModelled, type Obstacle } from './attempt.ts';
 import { circuitAlternative } from './circuit-alternative.ts';
 import { individualAlternative } from './individual-alternative.ts';
+import { type Quantities, quantities } from './quantities.ts';
 import { type Row, rowOf } from './row.ts';
+import { rowScope } from './row-scope.ts';
 import { wetAlternative } from './wet-alternative.ts';
 
 /** A battery under each reading, every one built as piping and sized by the same stages. */
@@ -20,16 +22,30 @@ export interface Alternative {
   readonly obstacles: readonly Obstacle[];
   /** As built; null where it cannot be built at all. */
   readonly attempt: Attempt | null;
+  /** Of what holds, and of what is modelled; null for the rest. */
+  readonly quantities: Quantities | null;
 }
 
-const readings: readonly Reading[] = ['wet-vent', 'circuit-vent', 'individual-vent'];
+const readings: readonly SharedReading[] = ['wet-vent', 'circuit-vent', 'individual-vent'];
 
 export function weighBattery(outcome: Outcome, battery: Battery): Weighing {
   const row = rowOf(outcome, battery);
-  return { row, alternatives: readings.map((reading) => alternative(row, reading)) };
+  const built = readings.map((reading) => alternative(row, reading));
+  const counted = built.filter(({ holds, reading }) => holds || reading === battery.reading);
+  const scope = rowScope(
+    row,
+    counted.flatMap(({ attempt }) => attempt ?? []),
+  );
+  return {
+    row,
+    alternatives: built.map((one) => ({
+      ...one,
+      quantities: one.attempt === null || !counted.includes(one) ? null : quantities(row, one.attempt, scope),
+    })),
+  };
 }
 
-function alternative(row: Row, reading: Reading): Alternative {
+function alternative(row: Row, reading: SharedReading): Omit<Alternative, 'quantities'> {
   const built = reading === row.battery.reading ? asModelled(row) : builders[reading](row);
   if ('piping' in built) {
     const { obstacles } = built;
@@ -39,7 +55,7 @@ function alternative(row: Row, reading: Reading): Alternative {
 }
 
 /** Piping, or what stands against it where none can be drawn. */
-const builders: Readonly<Record<Reading, (row: Row) => Attempt | readonly Obstacle[]>> = {
+const builders: Readonly<Record<SharedReading, (row: Row) => Attempt | readonly Obstacle[]>> = {
   'wet-vent': wetAlternative,
   'circuit-vent': circuitAlternative,
   'individual-vent': individualAlternative,

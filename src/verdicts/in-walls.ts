@@ -1,8 +1,10 @@
 import { boxAround } from '../geometry/box.ts';
 import { boxGrid } from '../geometry/box-grid.ts';
 import { stretchesInside } from '../geometry/prism.ts';
-import type { Network, Pipe } from '../network/network.ts';
-import type { WallBody } from './wall-bodies.ts';
+import type { Model } from '../model/model.ts';
+import type { Pipe } from '../network/network.ts';
+import type { WallRules } from '../tables/wall-rules.ts';
+import { type WallBody, wallBodies } from './wall-bodies.ts';
 
 /** A stretch of a pipe inside a wall. */
 export interface InWall {
@@ -13,9 +15,22 @@ export interface InWall {
   readonly length: number;
 }
 
+type FindWalls = (pipe: Pick<Pipe, 'points'>) => readonly InWall[];
+
+const known = new WeakMap<Model['walls'], WeakMap<WallRules, FindWalls>>();
+
+/** The same for all networks of a building: a study asks it again and again. */
+export function inWallsOf(model: Model, rules: WallRules): FindWalls {
+  const byRules = known.get(model.walls) ?? new WeakMap<WallRules, FindWalls>();
+  known.set(model.walls, byRules);
+  const find = byRules.get(rules) ?? inWalls(wallBodies(model, rules));
+  byRules.set(rules, find);
+  return find;
+}
+
 /** Finds the walls that a pipe runs in, by the order of walls; stretches of one kind in one wall are one. */
-export function inWalls(bodies: readonly (WallBody | null)[]): (pipe: Pick<Pipe, 'points'>) => readonly InWall[] {
-  const grid = boxGrid(bodies.map((body) => body?.wall.box ?? null));
+export function inWalls(bodies: readonly WallBody[]): FindWalls {
+  const grid = boxGrid(bodies.map(({ wall }) => wall.box));
   return ({ points }) => {
     const box = points === null ? null : boxAround(points);
     if (points === null || box === null) return [];
@@ -30,7 +45,7 @@ function stretchesIn(points: NonNullable<Pipe['points']>, body: WallBody): InWal
   for (const { from, to, direction } of stretchesInside(points, body.prism)) {
     const [x, y, z] = direction;
     const along = Math.abs(x * body.along[0] + y * body.along[1]);
-    const run = Math.abs(z) >= uprightFrom ? 'upright' : along >= Math.hypot(x, y) * Math.SQRT1_2 ? 'along' : 'across';
+    const run = Math.abs(z) >= uprightFrom ? 'upright' : along >= Math.hypot(x, y) * alongFrom ? 'along' : 'across';
     lengths.set(run, (lengths.get(run) ?? 0) + to - from);
   }
   return [...lengths].filter(([, length]) => length >= least).map(([run, length]) => ({ body, run, length }));
@@ -38,11 +53,7 @@ function stretchesIn(points: NonNullable<Pipe['points']>, body: WallBody): InWal
 
 /** At 45 degrees to the vertical or less. */
 const uprightFrom = Math.SQRT1_2 - 1e-9;
+/** Within 20 degrees of the wall's length; what stands more askew crosses it. */
+const alongFrom = Math.cos((20 * Math.PI) / 180);
 /** What reaches less far into a wall, metres, does not lie in it. */
 const least = 0.05;
-
-/** By pipe id. */
-export const pipesInWalls = (network: Network, bodies: readonly (WallBody | null)[]): (readonly InWall[])[] => {
-  const find = inWalls(bodies);
-  return network.pipes.map(find);
-};

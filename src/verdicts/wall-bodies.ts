@@ -2,6 +2,7 @@ import type { PlanPoint } from '../geometry/plan-outline.ts';
 import type { Prism } from '../geometry/prism.ts';
 import type { Model, Wall } from '../model/model.ts';
 import type { LayerKind, WallRules } from '../tables/wall-rules.ts';
+import { chasesBetween, spanOf } from './chases.ts';
 
 /** A wall as piping meets it. */
 export interface WallBody {
@@ -23,17 +24,20 @@ export interface Cavity {
   readonly framing: 'wood' | 'steel' | null;
 }
 
-/** By place in `model.walls`; null where the model gives no body that a pipe could be said to lie in. */
-export function wallBodies({ walls }: Pick<Model, 'walls'>, rules: WallRules): (WallBody | null)[] {
-  return walls.map((wall) => {
-    const outline = outlineOf(wall);
-    if (outline === null || wall.box === null) return null;
-    const along = longestEdge(outline);
-    const across = outline.map(([x, y]) => y * along[0] - x * along[1]);
-    const thickness = Math.max(...across) - Math.min(...across);
-    const prism = { outline, low: wall.box.min[2], high: wall.box.max[2] };
-    return { wall, prism, along, thickness, cavity: cavityOf(wall, thickness, rules) };
-  });
+/** Walls in the order of the model, those whose shape nobody can tell left out; then the chases between two of them. */
+export function wallBodies({ walls }: Pick<Model, 'walls'>, rules: WallRules): WallBody[] {
+  const bodies = walls.flatMap((wall) => bodyOf(wall, rules) ?? []);
+  return [...bodies, ...chasesBetween(bodies)];
+}
+
+function bodyOf(wall: Wall, rules: WallRules): WallBody | null {
+  const outline = outlineOf(wall);
+  if (outline === null || wall.box === null) return null;
+  const along = longestEdge(outline);
+  const across = spanOf(outline, along, 'across');
+  const thickness = across.to - across.from;
+  const prism = { outline, low: wall.box.min[2], high: wall.box.max[2] };
+  return { wall, prism, along, thickness, cavity: cavityOf(wall, thickness, rules) };
 }
 
 /** A wall of unknown outline is its box where that is as thin as its layers, or as a wall. */

@@ -3,9 +3,8 @@ import { type Finding, finding } from '../findings/finding.ts';
 import type { ElementId, Model } from '../model/model.ts';
 import type { Network, PipeId } from '../network/network.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
-import { type InWall, inWalls } from './in-walls.ts';
+import { type InWall, inWallsOf } from './in-walls.ts';
 import type { PipeVerdict } from './outcome.ts';
-import { wallBodies } from './wall-bodies.ts';
 import { passesStuds, pipeWidth, smallestStud, type WallFit, wallFit } from './wall-fit.ts';
 
 /** One finding for each pipe element that its wall, as modelled, does not take at the size it needs. */
@@ -16,7 +15,7 @@ export function wallFindings(
   verdicts: readonly PipeVerdict[],
 ): Finding[] {
   if (model.walls.length === 0) return [];
-  const find = inWalls(wallBodies(model, code.walls));
+  const find = inWallsOf(model, code.walls);
   return [...network.pipesOf]
     .sort(([a], [b]) => a - b)
     .flatMap(([element, sections]) => worstOf(sections.flatMap((section) => misfits(element, section))));
@@ -34,7 +33,7 @@ export function wallFindings(
       if (fit === null || fit.fits) return [];
       const stud = smallestStud(code, width, bored, loadBearing ?? true)?.name ?? null;
       const light = loadBearing === null ? (smallestStud(code, width, bored, false)?.name ?? null) : null;
-      return [{ element, size, run, fit, wall: name, loadBearing, stud, light }];
+      return [{ element, made: width.made, size, run, fit, wall: name, loadBearing, stud, light }];
     });
   }
 
@@ -52,6 +51,7 @@ export function wallFindings(
 interface Misfit {
   readonly element: ElementId;
   readonly size: NominalSize;
+  readonly made: NominalSize | null;
   readonly run: InWall['run'];
   readonly fit: WallFit;
   readonly wall: string | null;
@@ -62,7 +62,7 @@ interface Misfit {
 }
 
 function misfitFinding(
-  { element, size, run, fit, wall, loadBearing, stud, light }: Misfit,
+  { element, size, made, run, fit, wall, loadBearing, stud, light }: Misfit,
   code: PlumbingCode,
 ): Finding {
   const hole = fit.holes === null ? null : loadBearing === false ? fit.holes.other : fit.holes.loadbearing;
@@ -71,6 +71,7 @@ function misfitFinding(
   return finding('fit-in-wall', [element], {
     what: bored ? 'hole' : fit.by,
     required: size,
+    ...(made === null || made === size ? {} : { made }),
     wall,
     run,
     needsMm: round(fit.needsMm),

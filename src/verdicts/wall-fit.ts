@@ -6,6 +6,8 @@ import type { Cavity } from './wall-bodies.ts';
 
 /** How wide a pipe is as made of its material. Millimetres; null where no source gives it. */
 export interface PipeWidth {
+  /** Size that is laid: the next larger one where the material is not made in the size that is asked; null: none is. */
+  readonly made: NominalSize | null;
   readonly outerMm: number | null;
   readonly fittingMm: number | null;
   /** Series of pipe it is taken from, and whether the model names its material. */
@@ -15,9 +17,10 @@ export interface PipeWidth {
 
 export function pipeWidth(code: PlumbingCode, size: NominalSize, material: string | null): PipeWidth {
   const { series, assumed } = code.walls.pipeOf(material);
-  const dn = code.series.sizes[code.series.rank(size)]!.dn;
-  const row = series.rows.find((one) => one.dn === dn);
-  return { outerMm: row?.outerMm ?? null, fittingMm: row?.fittingMm ?? null, series: series.title, assumed };
+  const asked = code.series.sizes[code.series.rank(size)]!.dn;
+  const row = series.rows.find(({ dn }) => dn >= asked);
+  const made = code.series.sizes.find(({ dn }) => dn === row?.dn)?.label ?? null;
+  return { made, outerMm: row?.outerMm ?? null, fittingMm: row?.fittingMm ?? null, series: series.title, assumed };
 }
 
 /** What a member of a wall leaves to a level pipe: the hole it needs and the largest it may have. */

@@ -1,0 +1,2 @@
+import type { WeighResult } from './weigh.ts';
+export const cavitySvg = (_: WeighResult): string => '';

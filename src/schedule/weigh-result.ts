@@ -1,0 +1,344 @@
+import { brokenText, sentences } from '../findings/sentences.ts';
+import type { ElementId } from '../model/model.ts';
+import type { PipeId } from '../network/network.ts';
+import type { Obstacle } from '../study/attempt.ts';
+import type { Quantities } from '../study/quantities.ts';
+import type { Alternative, Weighing } from '../study/weigh.ts';
+import type { NominalSize } from '../units/nominal-size.ts';
+import { unitsOf } from '../units/quantity.ts';
+import type { Outcome } from '../verdicts/outcome.ts';
+import { decimal, lengthText, slopeText } from './number-text.ts';
+import { costsOf, type Prices } from './prices.ts';
+import type { Result, SizeLabel } from './result.ts';
+import { type ResultIndex, resultIndex, roundMetres } from './result-index.ts';
+import { printedFacts } from './result-trail.ts';
+import { countedKinds, plainWords } from './trade-words.ts';
+import type {
+  WeighAlternative,
+  WeighBattery,
+  WeighFitting,
+  WeighObstacle,
+  WeighPipes,
+  WeighResult,
+  WeighSection,
+  WeighWall,
+} from './weigh.ts';
+import { weighVerdict } from './weigh-verdict.ts';
+
+/** The published comparison of batteries. `result` is that of the same outcome; prices are the user's own figures. */
+export function weighResult(
+  outcome: Outcome,
+  result: Result,
+  weighings: readonly Weighing[],
+  prices: Prices | null = null,
+): WeighResult {
+  const index = resultIndex(outcome);
+  return {
+    format: 'drainwright-weigh',
+    version: 1,
+    program: result.program,
+    model: result.model,
+    ...(result.models === undefined ? {} : { models: result.models }),
+    code: result.code,
+    settings: result.settings,
+    ...(prices === null ? {} : { currency: prices.currency }),
+    batteries: weighings.map((weighing) => weighBattery(outcome, index, result, weighing, prices)),
+    caution: result.caution,
+  };
+}
+
+function weighBattery(
+  outcome: Outcome,
+  index: ResultIndex,
+  result: Result,
+  { row, alternatives }: Weighing,
+  prices: Prices | null,
+): WeighBattery {
+  const { facts, reading } = row.battery;
+  const id = index.batteryName(facts.id);
+  const { identities, paths } = outcome;
+  const elements = row.fixtures.map((fixture) => paths.fixtures[fixture]!.element);
+  const kinds = elements.map((element) => plainWords(identities[element]!.kind ?? 'unidentified fixture'));
+  const modelled = alternatives.find((one) => one.reading === reading);
+  const printed = alternatives.map((one) => alternativeOf(outcome, index, one, reading, modelled, prices));
+  return {
+    id,
+    fixtures: elements.map(index.idOf),
+    title: countedKinds(kinds),
+    storey: index.storeyOf(elements[0]!),
+    modelled: reading,
+    why: result.batteries.find((one) => one.id === id)?.why ?? '',
+    verdict: weighVerdict(printed),
+    alternatives: printed,
+  };
+}
+
+function alternativeOf(
+  outcome: Outcome,
+  index: ResultIndex,
+  { reading, holds, obstacles, attempt, quantities }: Alternative,
+  modelled: string,
+  base: Alternative | undefined,
+  prices: Prices | null,
+): WeighAlternative {
+  const size = (label: NominalSize | null): SizeLabel | null => (label === null ? null : index.size(label));
+  const broken = obstacles.map((one) => obstacleOf(attempt?.outcome ?? outcome, index, one));
+  const head = { reading, modelled: reading === modelled, holds, broken };
+  if (quantities === null || attempt === null) {
+    const none = {
+      pipes: [],
+      sections: [],
+      fittings: [],
+      cleanouts: [],
+      floorHoles: [],
+      adds: [],
+      leavesOut: [],
+      resizes: [],
+    };
+    return { ...head, largest: null, wall: null, ...none };
+  }
+  const built = attempt.outcome;
+  const nameOf = (element: ElementId): string | null => attempt.piping.model.elements[element]!.name;
+  const leavesOut = [...attempt.piping.removed]
+    .sort((a, b) => a - b)
+    .map((pipe) => ({
+      element: outcome.network.pipes[pipe]!.element,
+      role: outcome.shown.roles.uses[pipe]!.role,
+      length: index.stream.span(pipe),
+    }));
+  const alternative: WeighAlternative = {
+    ...head,
+    largest: { inWall: size(quantities.largest.inWall), underFloor: size(quantities.largest.underFloor) },
+    pipes: pipesOf(quantities, size),
+    sections: sectionsOf(quantities, index, nameOf, size),
+    fittings: fittingsOf(quantities, size),
+    cleanouts: quantities.cleanouts.map(({ size: own, pipe, ...rest }) => ({
+      size: index.size(own),
+      pipe: index.size(pipe),
+      ...rest,
+    })),
+    floorHoles: tallied(
+      quantities.floorHoles.map((hole) => hole.size),
+      (label) => outcome.code.series.rank(label),
+    ).map(([label, count]) => ({ size: size(label), count })),
+    wall: wallOf(outcome, index, quantities),
+    adds: addsOf(quantities, nameOf, size),
+    leavesOut: [...new Set(leavesOut.flatMap(({ element }) => element ?? []))].map((element) => {
+      const own = leavesOut.filter((one) => one.element === element);
+      return {
+        globalId: index.idOf(element),
+        name: nameOf(element),
+        role: own[0]!.role,
+        length: roundMetres(own.reduce((sum, { length }) => sum + length, 0)),
+      };
+    }),
+    resizes:
+      base?.attempt == null || base.reading === reading
+        ? []
+        : resizesOf(outcome, index, base, { attempt, quantities }, size, built),
+  };
+  return prices === null ? alternative : { ...alternative, costs: costsOf(alternative, prices) };
+}
+
+function obstacleOf(
+  outcome: Outcome,
+  index: ResultIndex,
+  { rule, clause, facts, finding, about }: Obstacle,
+): WeighObstacle {
+  const { code, model } = outcome;
+  const given = {
+    facts,
+    about: about.map((element) => model.elements[element]!.name ?? `#${model.elements[element]!.stepId}`),
+    clause: '',
+    unit: code.unit,
+    length: lengthText,
+    slope: slopeText,
+    number: (value: number): string => decimal(value, 2),
+  };
+  const sentence =
+    rule === null
+      ? sentences[finding](given).replace(/\.$/, '')
+      : finding === 'relief-vent-missing'
+        ? 'no relief vent, and no vented drain that may stand in, joins after the last fixture'
+        : brokenText(given);
+  return {
+    rule,
+    title: rule === null ? null : code.ruleTitle(rule),
+    clause,
+    facts: printedFacts(outcome, index, facts),
+    sentence,
+  };
+}
+
+type SizeOf = (label: NominalSize | null) => SizeLabel | null;
+
+function pipesOf({ pieces }: Quantities, size: SizeOf): WeighPipes[] {
+  const groups = new Map<string, { role: string; size: NominalSize | null; length: number }>();
+  for (const piece of pieces) {
+    const key = `${piece.role} ${piece.size}`;
+    const known = groups.get(key);
+    if (known === undefined) groups.set(key, { role: piece.role, size: piece.size, length: piece.length });
+    else known.length += piece.length;
+  }
+  return [...groups.values()].map((one) => ({ role: one.role, size: size(one.size), length: roundMetres(one.length) }));
+}
+
+/** Parts of one element that follow one another alike are one section. */
+function sectionsOf(
+  { pieces }: Quantities,
+  index: ResultIndex,
+  nameOf: (element: ElementId) => string | null,
+  size: SizeOf,
+): WeighSection[] {
+  const sections: (WeighSection & { key: string })[] = [];
+  for (const { element, role, size: label, length, load, place, added } of pieces) {
+    const key = `${element} ${role} ${label} ${place}`;
+    const at = sections.findIndex((one) => one.key === key && element !== null);
+    const known = sections[at];
+    if (known !== undefined) {
+      sections[at] = { ...known, length: known.length + length, load: Math.max(known.load, unitsOf(load)) };
+      continue;
+    }
+    const globalId = element === null || added ? null : index.idOf(element);
+    const name = element === null ? null : nameOf(element);
+    sections.push({ key, globalId, name, role, size: size(label), length, load: unitsOf(load), place, added });
+  }
+  return sections.map(({ key: _, length, ...rest }) => ({ ...rest, length: roundMetres(length) }));
+}
+
+const fittingOrder = ['bend', 'junction', 'double-junction', 'reducer', 'coupling'];
+
+function fittingsOf({ fittings }: Quantities, size: SizeOf): WeighFitting[] {
+  const groups = new Map<string, WeighFitting>();
+  for (const { kind, angle, size: label, branch } of fittings) {
+    const key = `${kind} ${angle} ${label} ${branch}`;
+    const known = groups.get(key);
+    groups.set(key, {
+      kind,
+      ...(angle === null ? {} : { angle }),
+      size: size(label)!,
+      ...(branch === null ? {} : { branch: size(branch)! }),
+      count: (known?.count ?? 0) + 1,
+    });
+  }
+  const rank = ({ kind, angle = 0, size: { dn }, branch }: WeighFitting): number[] => [
+    fittingOrder.indexOf(kind),
+    -dn,
+    -(branch?.dn ?? 0),
+    -angle,
+  ];
+  return [...groups.values()].sort((a, b) => {
+    const [left, right] = [rank(a), rank(b)];
+    return left.map((value, at) => value - right[at]!).find((difference) => difference !== 0) ?? 0;
+  });
+}
+
+/** Largest first, unknown last. */
+function tallied(
+  sizes: readonly (NominalSize | null)[],
+  rank: (size: NominalSize) => number,
+): [NominalSize | null, number][] {
+  const counts = new Map<NominalSize | null, number>();
+  for (const size of sizes) counts.set(size, (counts.get(size) ?? 0) + 1);
+  return [...counts].sort(([a], [b]) => (b === null ? -1 : rank(b)) - (a === null ? -1 : rank(a)));
+}
+
+const millimetres = (mm: number): number => roundMetres(Math.round(mm * 10) / 10000);
+
+function wallOf({ code }: Outcome, index: ResultIndex, { wall }: Quantities): WeighWall | null {
+  if (wall === null) return null;
+  const { bored } = wall;
+  const holes = code.walls.holes;
+  return {
+    depth: millimetres(wall.depthMm),
+    stud: wall.stud,
+    judgedBy: wall.by,
+    size: index.size(wall.size),
+    ...(wall.made === wall.size ? {} : { laidAs: index.size(wall.made) }),
+    outside: millimetres(wall.outerMm),
+    modelled: wall.bodies.map(({ wall: { globalId, name, loadBearing }, cavity }) => ({
+      globalId,
+      name,
+      cavity: cavity === null ? null : millimetres(cavity.depthMm),
+      framing: cavity?.framing ?? null,
+      loadBearing,
+    })),
+    fits: wall.fits,
+    bored:
+      bored === null || holes === null
+        ? null
+        : {
+            size: index.size(bored.size),
+            hole: millimetres(bored.holeMm),
+            source: `${holes.document}, ${holes.stud.clause}`,
+            limits: bored.limits.map(({ stud, loadbearing, other }) => ({
+              stud,
+              loadbearing: millimetres(loadbearing.mostMm),
+              other: millimetres(other.mostMm),
+            })),
+            stud: { loadbearing: bored.loadbearing, other: bored.other },
+          },
+  };
+}
+
+/** A vent of several legs is one. */
+function addsOf(
+  { pieces }: Quantities,
+  nameOf: (element: ElementId) => string | null,
+  size: SizeOf,
+): WeighAlternative['adds'] {
+  const vents = new Map<string, { role: string; size: NominalSize | null; length: number }>();
+  for (const { element, added, role, size: label, length } of pieces) {
+    if (!added || element === null) continue;
+    const what = (nameOf(element) ?? '').replace(/\.\d+$/, '');
+    const known = vents.get(what);
+    if (known === undefined) vents.set(what, { role, size: label, length });
+    else known.length += length;
+  }
+  return [...vents].map(([what, one]) => ({
+    what,
+    role: one.role,
+    size: size(one.size),
+    length: roundMetres(one.length),
+  }));
+}
+
+/** Elements of the model whose largest section needs another size than under the modelled reading. */
+function resizesOf(
+  { network, code }: Outcome,
+  index: ResultIndex,
+  base: Alternative,
+  { attempt, quantities }: { attempt: NonNullable<Alternative['attempt']>; quantities: Quantities },
+  size: SizeOf,
+  built: Outcome,
+): WeighAlternative['resizes'] {
+  const sizesOf = (one: NonNullable<Alternative['attempt']>): Map<ElementId, NominalSize | null> => {
+    const sizes = new Map<ElementId, NominalSize | null>();
+    one.piping.origin.forEach((from, id) => {
+      const element = from === null ? null : network.pipes[from]!.element;
+      if (element === null) return;
+      const own = one.outcome.pipes[id]!.required?.most ?? null;
+      const known = sizes.get(element) ?? null;
+      sizes.set(element, known === null ? own : own === null ? known : code.series.larger(known, own));
+    });
+    return sizes;
+  };
+  const [before, after] = [sizesOf(base.attempt!), sizesOf(attempt)];
+  const seen = new Set<ElementId>();
+  return quantities.pieces.flatMap(({ element, added, pipe }) => {
+    if (element === null || added || seen.has(element)) return [];
+    seen.add(element);
+    const [from, to] = [before.get(element) ?? null, after.get(element) ?? null];
+    if (from === to) return [];
+    const role = built.shown.roles.uses[pipe as PipeId]!.role;
+    return [
+      {
+        globalId: index.idOf(element),
+        name: attempt.piping.model.elements[element]!.name,
+        role,
+        from: size(from),
+        to: size(to),
+      },
+    ];
+  });
+}
