@@ -1,4 +1,4 @@
-import { gunzipSync, unzipSync } from 'fflate';
+import { Gunzip, unzipSync } from 'fflate';
 import { InputError } from '../findings/input-error.ts';
 
 /** Largest model in bytes; offsets stand in 32 bits. */
@@ -34,19 +34,36 @@ function unwrapped(name: string, bytes: Uint8Array): Unpacked {
   return { name, bytes };
 }
 
+/** Sizes that an archive states may lie, and a cut-off one states nothing: what comes out is counted. */
 function gunzipped(name: string, bytes: Uint8Array): Uint8Array {
-  const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
-  const size = bytes.length < 18 ? 0 : view.getUint32(bytes.length - 4, true);
-  refuseBomb(name, bytes.length, size);
+  const chunks: Uint8Array[] = [];
+  let size = 0;
+  let isWhole = false;
+  const stream = new Gunzip((chunk, isLast) => {
+    size += chunk.length;
+    refuseBomb(name, bytes.length, size);
+    chunks.push(chunk);
+    isWhole = isLast;
+  });
   try {
-    // The size that the file states is the room it gets: what claims too little fails, what claims too much is refused.
-    const out = gunzipSync(bytes, { out: new Uint8Array(size) });
-    if (out.length === size) return out;
+    for (let at = 0; at < bytes.length; at += packedAtOnce) {
+      stream.push(bytes.subarray(at, at + packedAtOnce), at + packedAtOnce >= bytes.length);
+    }
   } catch (cause) {
+    if (cause instanceof InputError) throw cause;
     throw new InputError(name, 'the gzip file is damaged or cut off; fetch or export it again', { cause });
   }
-  throw new InputError(name, 'the gzip file is damaged: it does not hold what its end says; fetch or export it again');
+  if (!isWhole) throw new InputError(name, 'the gzip file is damaged or cut off; fetch or export it again');
+  const all = new Uint8Array(size);
+  let at = 0;
+  for (const chunk of chunks) {
+    all.set(chunk, at);
+    at += chunk.length;
+  }
+  return all;
 }
+
+const packedAtOnce = 1 << 18;
 
 function fromZip(name: string, bytes: Uint8Array): Unpacked {
   const models: { readonly name: string; readonly size: number }[] = [];
@@ -102,14 +119,14 @@ const isModel = (entry: string): boolean => /\.ifc$/i.test(entry) && !entry.star
 const baseName = (path: string): string => path.split(/[\\/]/).at(-1) ?? path;
 
 function refuseBomb(name: string, packed: number, unpacked: number): void {
-  if (unpacked > largestUnpacked)
-    throw new InputError(name, 'unpacked, the model would be larger than 2 GiB; unpack it first');
   if (unpacked > packed * largestRatio + 65_536) {
     throw new InputError(
       name,
-      `says it unpacks to ${Math.round(unpacked / packed)} times its size: it is damaged, cut off or no model; fetch it again`,
+      `it unpacks to more than ${largestRatio} times its size: that is no model, or it is damaged; fetch it again`,
     );
   }
+  if (unpacked > largestUnpacked)
+    throw new InputError(name, 'unpacked, the model would be larger than 2 GiB; unpack it first');
 }
 
 function refuseOtherFormats({ name, bytes }: Unpacked): void {
