@@ -1,4 +1,4 @@
-import type { LoadRange, SizeRange } from '../schedule/result.ts';
+import type { LoadRange, PipeState, SizeRange } from '../schedule/result.ts';
 import type { Words } from './words/words.ts';
 
 /** Numbers as the page's language writes them: a point in English, a comma in French; at most `places` decimals. */
@@ -38,6 +38,13 @@ export const sizeLabel = (words: Words, label: string): string =>
 /** The same for a size that may be missing. */
 export const oneSize = (words: Words, size: { readonly label: string } | null | undefined, missing = '?'): string =>
   size == null ? missing : sizeLabel(words, size.label);
+
+/** What is drawn, and beside it what is needed where that differs or nothing is drawn: `3 in`, `▲ 3 in → 4 in`, `? → 4 in`. */
+export function sizesText(words: Words, { modelled, required, verdict }: PipeState): string {
+  const drawn = oneSize(words, modelled);
+  if (verdict === 'undersized') return `▲ ${drawn} → ${sizeText(words, required)}`;
+  return modelled === null && required?.most != null ? `? → ${sizeText(words, required)}` : drawn;
+}
 
 /** `4 in`, `2 in to 3 in`; where no size of the table holds it the words say so. */
 export function sizeText(words: Words, range: SizeRange | null): string {

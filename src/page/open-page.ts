@@ -64,9 +64,9 @@ export function openPage(host: HTMLElement, building: Building): void {
 }
 
 function firstState(building: Building): PageState {
-  const { result } = building;
+  const { result, scene, risers } = building.data;
   return {
-    view: 'model',
+    view: risers.length > 0 && !scene.pipes.points.some((points) => points > 1) ? 'riser' : 'model',
     chosen: null,
     colourBy:
       result.pipes.some(({ verdict }) => verdict !== 'unknown') || result.pipes.length === 0 ? 'verdict' : 'role',

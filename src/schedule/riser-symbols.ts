@@ -1,3 +1,4 @@
+import type { Vec3 } from '../geometry/vector.ts';
 import type { ElementId } from '../model/model.ts';
 import type { JointId } from '../network/network.ts';
 import type { Result } from './result.ts';
@@ -21,6 +22,7 @@ export function riserSymbols(
   result: Result,
   { model, network, paths, identities }: RiserSource,
   inside: ReadonlySet<JointId>,
+  placeOf: (joint: JointId) => Vec3 | null,
   flat: Isometry,
 ): readonly RiserSymbol[] {
   const symbols: RiserSymbol[] = [];
@@ -30,8 +32,9 @@ export function riserSymbols(
     return found === undefined ? -1 : (rowOf.get(`${found.globalId} ${found.stepId}`) ?? -1);
   };
   const put = (joint: JointId, is: RiserSymbol['is'], fixture = -1): void => {
-    const at = network.joints[joint]?.at ?? null;
-    if (at === null || !inside.has(joint)) return;
+    if (!inside.has(joint)) return;
+    const at = placeOf(joint);
+    if (at === null) return;
     symbols.push({ is, kind: result.fixtures[fixture]?.kind ?? null, fixture, at: flat.at(at) });
   };
   for (const { element, outlet } of paths.fixtures) put(outlet, 'fixture', fixtureRow(element));

@@ -4,6 +4,7 @@ import type { Outcome } from '../verdicts/outcome.ts';
 import type { PipeState, Result, Verdict } from './result.ts';
 import { type Flat, isometry } from './riser-isometry.ts';
 import { riserPieces } from './riser-pieces.ts';
+import { riserPlaces } from './riser-places.ts';
 import { labelRuns, type RiserRun } from './riser-runs.ts';
 import { type RiserSymbol, riserSymbols } from './riser-symbols.ts';
 
@@ -57,9 +58,10 @@ export function risersOf(result: Result, source: RiserSource): readonly Riser[] 
     return found === undefined ? -1 : (rowOf.get(`${found.globalId} ${found.stepId}`) ?? -1);
   };
   return riserPieces(source).flatMap(({ system, stack, pipes }) => {
+    const placeOf = riserPlaces(source, pipes);
     const drawn = pipes.flatMap((id) => {
       const pipe = network.pipes[id]!;
-      const points = way(network, pipe);
+      const points = way(placeOf, pipe);
       return points === null ? [] : [{ pipe, points, row: rowOfPipe(pipe) }];
     });
     if (drawn.length === 0) return [];
@@ -78,7 +80,7 @@ export function risersOf(result: Result, source: RiserSource): readonly Riser[] 
     });
     lines.sort((a, b) => a.depth - b.depth || a.section - b.section);
     const inside = new Set<JointId>(drawn.flatMap(({ pipe }) => pipe.ends));
-    const symbols = riserSymbols(result, source, inside, flat);
+    const symbols = riserSymbols(result, source, inside, placeOf, flat);
     return [
       {
         system,
@@ -92,11 +94,10 @@ export function risersOf(result: Result, source: RiserSource): readonly Riser[] 
   });
 }
 
-/** From joint to joint; null where the model gives a pipe no place. */
-function way(network: Network, { ends, points }: Pipe): readonly Vec3[] | null {
-  const [a, b] = [network.joints[ends[0]]?.at ?? null, network.joints[ends[1]]?.at ?? null];
-  const own = points ?? [];
-  const whole = [...(a === null ? [] : [a]), ...own, ...(b === null ? [] : [b])];
+/** From joint to joint; null where neither the model nor the order of the piping gives a place. */
+function way(placeOf: (joint: JointId) => Vec3 | null, { ends, points }: Pipe): readonly Vec3[] | null {
+  const [a, b] = [placeOf(ends[0]), placeOf(ends[1])];
+  const whole = [...(a === null ? [] : [a]), ...(points ?? []), ...(b === null ? [] : [b])];
   return whole.length < 2 ? null : whole;
 }
 

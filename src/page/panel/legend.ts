@@ -20,6 +20,7 @@ export function legend(desk: Desk): HTMLElement {
     { id: 'colour-by', onchange: () => store.set({ colourBy: select.value as ColourBy, hidden: new Set() }) },
     ...switches.map((by) => make('option', { value: by, selected: by === colourBy }, words.legend.by[by])),
   );
+  if (categories.length === 0) return make('section', { hidden: true });
   return make(
     'section',
     { class: 'legend', 'aria-label': words.legend.colourBy },

@@ -1,4 +1,4 @@
-import { lengthText, oneSize, shortLoad, sizeText } from '../format.ts';
+import { lengthText, oneSize, shortLoad, sizesText } from '../format.ts';
 import type { LabelText } from '../scene/label-wishes.ts';
 import type { Hit } from '../scene/pick.ts';
 import { named } from '../words/words.ts';
@@ -37,12 +37,11 @@ function labelText({ building, words }: Desk, section: number): string {
   const state = building.state(section);
   if (state === undefined) return '';
   const load = state.ventLoad !== undefined && state.load.most === 0 ? state.ventLoad : state.load;
-  const drawn = oneSize(words, state.modelled);
-  return `${drawn} · ${shortLoad(words, load, building.result.code.unit)}`;
+  const size = state.verdict === 'undersized' ? oneSize(words, state.modelled) : sizesText(words, state);
+  return `${size} · ${shortLoad(words, load, building.result.code.unit)}`;
 }
 
 function runText({ building, words }: Desk, section: number): string {
   const state = building.state(section);
-  const drawn = oneSize(words, state?.modelled);
-  return `▲ ${drawn} → ${sizeText(words, state?.required ?? null)}`;
+  return state === undefined ? '' : sizesText(words, state);
 }

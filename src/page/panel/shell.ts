@@ -142,13 +142,12 @@ export function shell(desk: Desk): Shell {
     search,
     start() {
       show(store.state, null);
-      const drawn = Array.from(
-        { length: building.sectionCount },
-        (_, section) => building.data.scene.pipes.points[section],
-      ).some((points) => (points ?? 0) > 1);
-      if (!drawn && building.result.pipes.length > 0) {
-        note.textContent = words.page.noShapes;
-        note.hidden = false;
+      const drawn = building.data.scene.pipes.points.some((points) => points > 1);
+      if (!drawn) {
+        const walls = building.data.scene.fabric.kind.length > 0;
+        note.textContent =
+          building.result.pipes.length > 0 ? words.page.noShapes : walls ? '' : words.page.nothingToDraw;
+        note.hidden = note.textContent === '';
       }
       try {
         desk.scene = sceneView(building, store, {

@@ -14,7 +14,7 @@ export function summary(desk: Desk): HTMLElement {
       'section',
       { class: 'summary' },
       make('h2', { class: 'headline' }, words.summary.nothing),
-      leftOutLine(desk),
+      make('ul', { class: 'understood' }, leftOutLine(desk)),
     );
   const kinds = new Map<string | null, number>();
   for (const { kind } of result.fixtures) kinds.set(kind, (kinds.get(kind) ?? 0) + 1);
@@ -32,7 +32,11 @@ export function summary(desk: Desk): HTMLElement {
     make(
       'h2',
       { id: 'headline', class: small > 0 ? 'headline bad' : 'headline' },
-      small > 0 ? words.summary.tooSmall(small, groups.length) : words.summary.noneTooSmall,
+      small > 0
+        ? words.summary.tooSmall(small, groups.length)
+        : result.pipes.every(({ verdict }) => verdict === 'unknown')
+          ? words.summary.noneJudged(result.pipes.length)
+          : words.summary.noneTooSmall,
     ),
     unvented > 0 && make('p', { class: 'headline-also' }, words.summary.unvented(unvented)),
     verdictBar(desk),

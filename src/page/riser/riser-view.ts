@@ -1,8 +1,8 @@
 import type { Riser } from '../../schedule/riser.ts';
 import { riserDrawing } from '../../schedule/riser-drawing.ts';
-import { placeRiserLabels } from '../../schedule/riser-labels.ts';
+import { type LabelBox, placeRiserLabels } from '../../schedule/riser-labels.ts';
 import type { RiserRun } from '../../schedule/riser-runs.ts';
-import { oneSize, shortLoad, sizeText, slopeText } from '../format.ts';
+import { shortLoad, sizesText, slopeText } from '../format.ts';
 import type { Desk } from '../panel/desk.ts';
 import { make, makeSvg } from '../panel/element.ts';
 import { capital, pipeName, shown } from '../panel/names.ts';
@@ -21,11 +21,12 @@ export function riserView(desk: Desk): HTMLElement {
     run: (run) => runTexts(desk, run),
     floor: ({ name, storey }) => shown(name) || `${words.tools.storey} ${storey + 1}`,
   });
-  const { shapes, frame } = riserDrawing(riser, placed, {
+  const { shapes, frame: tight } = riserDrawing(riser, placed, {
     looks: words.riser.looks,
     marks: words.riser.marks,
     kind: (kind) => kindName(words, kind),
   });
+  const frame = atLeast(tight, 820, 560);
   const drawing = makeSvg('svg', {
     class: 'riser-drawing',
     role: 'img',
@@ -49,6 +50,12 @@ export function riserView(desk: Desk): HTMLElement {
     drawing,
   );
   return host;
+}
+
+/** A small drawing is not blown up: it stands in the middle of a sheet of usual size. */
+function atLeast(frame: LabelBox, width: number, height: number): LabelBox {
+  const [w, h] = [Math.max(frame.width, width), Math.max(frame.height, height)];
+  return { x: frame.x - (w - frame.width) / 2, y: frame.y - (h - frame.height) / 2, width: w, height: h };
 }
 
 /** Marks what is chosen without drawing anew. */
@@ -109,8 +116,7 @@ function riserName({ building, words }: Desk, { system, stack }: Riser): string 
 function runTexts({ building, words }: Desk, run: RiserRun): readonly string[] {
   const state = building.state(run.section);
   if (state === undefined) return [];
-  const drawn = oneSize(words, state.modelled);
-  const size = run.undersized ? `▲ ${drawn} → ${sizeText(words, state.required)}` : drawn;
+  const size = sizesText(words, state);
   if (state.role === 'fixture-drain' || state.role === 'idle') return [size];
   const load = state.load.most === 0 && state.ventLoad !== undefined ? state.ventLoad : state.load;
   const slope = state.slope?.value == null || state.load.most === 0 ? null : slopeText(words, state.slope.value);

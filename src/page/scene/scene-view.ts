@@ -13,7 +13,7 @@ import { pipingOf } from './piping.ts';
 import type { Point } from './polylines.ts';
 import { routeOf, type Way, wayOf } from './route.ts';
 import { type DrawStats, stageIn } from './stage.ts';
-import { boxOf, fixtureBounds, storeyBox, widened, withFabric, within } from './surroundings.ts';
+import { boxOf, fabricBounds, fixtureBounds, storeyBox, widened, withFabric, within } from './surroundings.ts';
 import { undersizedRuns } from './undersized-runs.ts';
 
 export interface SceneView {
@@ -57,8 +57,8 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
   const labels = labelsIn(parts.labelLayer);
   stage.scene.add(context.group, piping.group, route.group);
   const all = Array.from({ length: building.sectionCount }, (_, section) => section);
-  const piped = piping.bounds(all) ?? fixtureBounds(building) ?? { min: [-2, -2, 0], max: [2, 2, 3] };
-  const whole = widened(withFabric(building, piped), 0.3);
+  const piped = piping.bounds(all) ?? fixtureBounds(building);
+  const whole = widened(piped === null ? fabricBounds(building) : withFabric(building, piped), 0.3);
   const reach = Math.hypot(...([0, 1, 2] as const).map((axis) => whole.max[axis] - whole.min[axis]));
   const runs = undersizedRuns(building);
   const reduced = window.matchMedia('(prefers-reduced-motion: reduce)');

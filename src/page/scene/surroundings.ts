@@ -19,6 +19,15 @@ export function fixtureBounds(building: Building): Bounds | null {
   return { min: [low(0), low(1), low(2)], max: [high(0), high(1), high(2)] };
 }
 
+/** The whole building where there is no piping in it; a room's worth of nothing where there is no building either. */
+export function fabricBounds(building: Building): Bounds {
+  const { x, y, base, top } = building.data.scene.fabric;
+  if (x.length === 0) return { min: [-2, -2, 0], max: [2, 2, 3] };
+  const least = (values: Int32Array): number => values.reduce((a, b) => Math.min(a, b)) / 1000;
+  const most = (values: Int32Array): number => values.reduce((a, b) => Math.max(a, b)) / 1000;
+  return { min: [least(x), least(y), least(base)], max: [most(x), most(y), most(top)] };
+}
+
 /** The walls round the piping belong to the first picture; a whole site beside it does not. */
 export function withFabric(building: Building, piped: Bounds): Bounds {
   const { fabric } = building.data.scene;

@@ -25,6 +25,7 @@ export const english: Words = {
     more: (count) => `Show ${count} more`,
     noPicture:
       'This browser cannot draw the model (no WebGL 2). The findings, the riser diagram and every trail are here all the same.',
+    nothingToDraw: 'There is nothing to draw: the model holds neither drainage nor a building with shapes.',
     noShapes: 'The model gives its piping no shapes, so there is no picture to draw. Everything else is here.',
     picture:
       'The building in three dimensions. Arrow keys turn it, shift and arrow keys move it, plus and minus zoom. N goes downstream from the chosen pipe, P upstream.',
@@ -57,6 +58,7 @@ export const english: Words = {
     batteries: (count) => some(count, 'battery', 'batteries'),
     tooSmall: (pipes, causes) =>
       `${some(pipes, 'pipe is', 'pipes are')} too small, for ${some(causes, 'cause', 'causes')}`,
+    noneJudged: (pipes) => `${some(pipes, 'pipe', 'pipes')} and no size in the model that could be judged`,
     noneTooSmall: 'No pipe is too small under these rules and assumptions',
     unvented: (count) => `${some(count, 'trap has', 'traps have')} no way to the open air`,
     nothing: 'No sanitary drainage in this model',

@@ -34,6 +34,7 @@ export const french: Words = {
     more: (count) => `En montrer ${count} de plus`,
     noPicture:
       'Ce navigateur ne peut pas dessiner la maquette (pas de WebGL 2). Les constats, le schéma vertical et tous les raisonnements sont là quand même.',
+    nothingToDraw: 'Il n’y a rien à dessiner : la maquette n’a ni évacuation ni bâtiment avec des formes.',
     noShapes:
       'La maquette ne donne aucune forme à sa tuyauterie : il n’y a pas d’image à dessiner. Tout le reste est là.',
     picture:
@@ -67,6 +68,7 @@ export const french: Words = {
     batteries: (count) => some(count, 'groupe d’appareils', 'groupes d’appareils'),
     tooSmall: (pipes, causes) =>
       `${some(pipes, 'tuyau est trop petit', 'tuyaux sont trop petits')}, pour ${some(causes, 'cause', 'causes')}`,
+    noneJudged: (pipes) => `${some(pipes, 'tuyau', 'tuyaux')}, et dans la maquette aucun diamètre qu’on puisse juger`,
     noneTooSmall: 'Aucun tuyau n’est trop petit selon ces règles et hypothèses',
     unvented: (count) => `${some(count, 'siphon n’a', 'siphons n’ont')} pas d’accès à l’air libre`,
     nothing: 'Pas d’évacuation sanitaire dans cette maquette',

@@ -24,6 +24,7 @@ export interface Words {
     readonly more: (count: number) => string;
     readonly noPicture: string;
     readonly noShapes: string;
+    readonly nothingToDraw: string;
     readonly picture: string;
     readonly keyHelp: readonly (readonly [keys: string, what: string])[];
     readonly skip: string;
@@ -39,6 +40,7 @@ export interface Words {
     readonly batteries: (count: number) => string;
     readonly tooSmall: (pipes: number, causes: number) => string;
     readonly noneTooSmall: string;
+    readonly noneJudged: (pipes: number) => string;
     readonly unvented: (count: number) => string;
     readonly nothing: string;
     readonly share: string;
