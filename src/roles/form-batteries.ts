@@ -87,7 +87,7 @@ function lengthen(
     joined.push(other.foot);
     traps = [...traps, ...other.traps.filter(({ through }) => stands || through.length > 0)];
     const longer: Draft = { foot: draft.foot, traps, additional: [...additional] };
-    if (isOneRow(context, longer, other, stands)) best = { row: longer, joined: [...joined] };
+    if (isOneRow(context, longer, best.row, other)) best = { row: longer, joined: [...joined] };
   }
   return best;
 }
@@ -105,18 +105,26 @@ function levelLine({ stream, paths, inStack }: BatteryContext, foot: JointId): P
 }
 
 /**
- * The longer row holds as circuit vented down to a dry relief vent; or it holds as a wet vent, and the row below the
- * further foot does not hold alone. Where that foot is a guest's, its vent stands nearer to the traps below it than
- * their own: they belong to the longer row also where both break as much.
+ * One row where the part below the further foot does not hold alone, and the whole holds as circuit vented down to a dry
+ * relief vent, or as a wet vent. The relief vent of a row that holds is no vent in the middle of a wet vent. Where the
+ * foot is a guest's, its vent stands nearer to the traps below it than their own: they belong to the longer row also
+ * where both break as much.
  */
-function isOneRow(context: BatteryContext, longer: Draft, below: Draft, onLine: boolean): boolean {
-  const facts = batteryFacts(context, longer, 0);
-  const relief = facts.circuit.relief?.kind;
-  if ((relief === 'dry' || relief === 'shared') && brokenUnder(context.code, 'circuit-vent', facts)?.length === 0)
-    return true;
+function isOneRow(context: BatteryContext, longer: Draft, soFar: Draft, below: Draft): boolean {
   const alone = judge(context, below, 0).broken.length;
-  const together = brokenUnder(context.code, 'wet-vent', facts)?.length ?? Number.POSITIVE_INFINITY;
-  return alone > 0 && together <= (onLine ? 0 : alone);
+  if (alone === 0) return false;
+  if (holdsToRelief(context, longer)) return true;
+  const stands = longer.additional.includes(below.foot);
+  if (stands && holdsToRelief(context, soFar)) return false;
+  const together = brokenUnder(context.code, 'wet-vent', batteryFacts(context, longer, 0));
+  return together !== null && together.length <= (stands ? 0 : alone);
+}
+
+/** It holds as circuit vented, and a dry relief vent ends it. */
+function holdsToRelief(context: BatteryContext, row: Draft): boolean {
+  const facts = batteryFacts(context, row, 0);
+  const relief = facts.circuit.relief?.kind;
+  return (relief === 'dry' || relief === 'shared') && brokenUnder(context.code, 'circuit-vent', facts)?.length === 0;
 }
 
 /** A row whose foot stands on a drain of its own that joins this line here, and whose other traps lie on the line. */
