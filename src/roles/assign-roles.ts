@@ -20,6 +20,7 @@ import { findStacks, type Stack, stackUseAt } from './find-stacks.ts';
 import { floorsOf } from './floors.ts';
 import { formBatteries } from './form-batteries.ts';
 import { mainVentUses, onlyWidestVents } from './main-vent.ts';
+import { openRows } from './open-rows.ts';
 import { outsideBuilding } from './outline.ts';
 import type { Battery, Roles, VentFoot } from './roles.ts';
 import { stackJoints } from './stack-joints.ts';
@@ -72,8 +73,9 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
     wordOf: (fixtures, pipes) => designersWord(facts, fixtures, pipes),
   };
   const places = stackJoints(context);
-  const batteries = formBatteries(context, places, (battery) => answeredReading(facts, battery));
-  const air = airOfRows(paths, batteries);
+  const rows = formBatteries(context, places, (battery) => answeredReading(facts, battery));
+  const batteries = [...rows, ...openRows(context, rows)];
+  const air = airOfRows(context, drawn, batteries);
   const feet = ventFeet(network, paths, air);
   const tree = ventTree(feet);
   const feetOfVentStacks = wetFeet(context, feet, places);
@@ -150,7 +152,7 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
       batteries,
       air,
       venting: venting(context, air, feet, dry, batteries),
-      arms: trapArms(network, paths, stream),
+      arms: trapArms(network, paths, stream, air),
       feet,
       floors,
     },

@@ -136,7 +136,8 @@ function guestsOf(
   return guests.sort((a, b) => a.fixture - b.fixture);
 }
 
-function wetLine(
+/** What the row looks like as a wet vent. */
+export function wetLine(
   context: BatteryContext,
   line: readonly PipeId[],
   traps: readonly BatteryTrap[],

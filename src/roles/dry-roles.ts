@@ -1,9 +1,11 @@
 import type { Role } from '../codes/role.ts';
+import type { Reading } from '../codes/use.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import type { BatteryContext } from './battery-facts.ts';
 import type { Stack } from './find-stacks.ts';
 import type { Battery, VentFoot } from './roles.ts';
 import type { StackPlace } from './stack-joints.ts';
+import { descentOf, islandDescent } from './vent-dip.ts';
 import { risesOverStorey, type WetFoot } from './wet-feet.ts';
 
 export interface DryRole {
@@ -114,6 +116,9 @@ function demote(context: BatteryContext, tree: VentTree, roles: Map<PipeId, DryR
   }
 }
 
+/** Dry vent of a row by how the row is read; a continuous vent for the others. */
+const ventOf: Readonly<Partial<Record<Reading, Role>>> = { 'circuit-vent': 'circuit-vent', 'common-vent': 'dual-vent' };
+
 const byTraps = (traps: number): Role =>
   traps === 0 ? 'idle' : traps === 1 ? 'individual-vent' : traps === 2 ? 'dual-vent' : 'continuous-vent';
 
@@ -129,7 +134,8 @@ function footRoles(
   const additionalAt = new Map<JointId, number>();
   const footOf = new Map<JointId, number>();
   batteries.forEach(({ facts, reading }, index) => {
-    footOf.set(facts.foot, index);
+    // A row that breathes from a vent at its lower end leaves the foot to one that begins there.
+    if (facts.open === null || (facts.open.end === 'vent' && !footOf.has(facts.foot))) footOf.set(facts.foot, index);
     if (reading !== 'circuit-vent') return;
     const { relief, additional } = facts.circuit;
     if (relief !== null && relief.kind !== 'drain') reliefAt.set(relief.joint, index);
@@ -156,9 +162,12 @@ function footRoles(
     if (additional !== undefined) return of('additional-circuit-vent', null, additional);
     const battery = footOf.get(joint);
     if (battery !== undefined) {
-      const circuit = batteries[battery]!.reading === 'circuit-vent';
-      return of(circuit ? 'circuit-vent' : 'continuous-vent', null, battery);
+      const { reading, facts } = batteries[battery]!;
+      const alone = facts.open !== null && traps.length === 1;
+      return of(alone ? 'individual-vent' : (ventOf[reading] ?? 'continuous-vent'), null, battery);
     }
+    if (traps.length > 0 && context.code.islandVents && descentOf(context.network, foot) > islandDescent)
+      return of('island-vent', null, null);
     return of(byTraps(traps.length), null, null);
   };
 }

@@ -14,8 +14,8 @@ export interface TrapArm {
   readonly turn: number | null;
 }
 
-export function trapArms(network: Network, paths: Paths, stream: Stream): (TrapArm | null)[] {
-  return paths.traps.map((trap) => (trap.armEnd === null ? null : armOf(network, paths, stream, trap)));
+export function trapArms(network: Network, paths: Paths, stream: Stream, air: readonly TrapAir[]): (TrapArm | null)[] {
+  return air.map((trap) => (trap.armEnd === null ? null : armOf(network, paths, stream, trap)));
 }
 
 function armOf(network: Network, paths: Paths, stream: Stream, { arm, at, armEnd }: TrapAir): TrapArm {

@@ -43,11 +43,14 @@ export function ventUses(
     if (it.role === 'stack-vent' && it.stack !== null && !ventOfStack.has(it.stack.id))
       ventOfStack.set(it.stack.id, pipe);
   }
+  const open = new Set<FixtureId>(
+    batteries.flatMap(({ facts }) => (facts.open === null ? [] : facts.traps.map(({ fixture }) => fixture))),
+  );
   for (const pipe of tree.order) {
     const own = tree.footOf.get(pipe);
     const sum: Gathered = { fixtures: new Set(), stacks: new Set(), traps: new Set(), feet: [] };
     for (const below of tree.below.get(pipe) ?? []) join(sum, gathered.get(below)!);
-    if (own !== undefined) join(sum, gatheredAt(own, roles.get(pipe)!, batteries));
+    if (own !== undefined) join(sum, gatheredAt(own, roles.get(pipe)!, batteries, open));
     gathered.set(pipe, sum);
   }
   const lengths = ventLengths(
@@ -127,13 +130,22 @@ function join(sum: Gathered, other: Gathered): void {
   for (const foot of other.feet) sum.feet.push(foot);
 }
 
-function gatheredAt(foot: VentFoot, { role, stack, battery }: DryRole, batteries: readonly Battery[]): Gathered {
-  const row = battery === null ? null : batteries[battery]!;
+function gatheredAt(
+  foot: VentFoot,
+  { role, stack, battery }: DryRole,
+  batteries: readonly Battery[],
+  open: ReadonlySet<FixtureId>,
+): Gathered {
+  const row = battery === null || batteries[battery]!.facts.open !== null ? null : batteries[battery]!;
   const members = row?.facts.traps.map(({ fixture }) => fixture) ?? [];
   // A battery's own list counts: guests are not in it, and a longer row reaches past its first foot. Vents that follow
   // the circuit vent are sized without the row; only a trap past it that breathes here counts.
   const traps =
-    row === null ? foot.traps : followers.has(role) ? foot.traps.filter((trap) => !members.includes(trap)) : members;
+    row === null
+      ? foot.traps
+      : followers.has(role)
+        ? foot.traps.filter((trap) => !members.includes(trap))
+        : [...members, ...foot.traps.filter((trap) => open.has(trap))];
   const isStack = role === 'stack-vent' || role === 'vent-stack';
   return {
     fixtures: new Set(traps),

@@ -23,6 +23,7 @@ export function venting(
     const vents = foot === null ? [] : (footAt.get(`${foot}/${piece}`)?.path ?? []);
     const row = index === null ? null : batteries[index]!;
     const own = through.length === 0;
+    if (row !== null && row.facts.open !== null) return { how: row.reading, vents, free: null, battery: index };
     if (foot === null || (row === null && !own)) {
       return { how: freed === null ? 'unvented' : 'free', vents: [], free: freed, battery: null };
     }

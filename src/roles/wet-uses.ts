@@ -1,5 +1,5 @@
-import type { DrainRole, Portion, Role } from '../codes/role.ts';
-import type { PipeUse, StandIn } from '../codes/use.ts';
+import type { DrainRole, Portion, Role, WetVentRole } from '../codes/role.ts';
+import type { PipeUse, Reading, StandIn } from '../codes/use.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import { noLoad, plusLoad } from '../units/quantity.ts';
 import type { BatteryContext } from './battery-facts.ts';
@@ -16,23 +16,39 @@ export interface WetUse {
   readonly wetPortion: PipeUse['wetPortion'];
 }
 
+/** What the line of a row is called, by how the row is read. */
+const lineRoles: Readonly<Partial<Record<Reading, WetVentRole>>> = {
+  'wet-vent': 'wet-vent',
+  'common-vent': 'common-vent',
+  'waste-stack-vent': 'waste-stack-vent',
+  'combination-waste-and-vent': 'combination-waste-and-vent',
+  'single-stack': 'single-stack',
+};
+const wholeStack: ReadonlySet<WetVentRole> = new Set(['waste-stack-vent', 'single-stack']);
+
 /** Wet pipes that also vent, and drains that stand in for a vent. Other wet pipes are not in the map. */
 export function wetUses(
-  { code, loads }: BatteryContext,
+  context: BatteryContext,
   drains: readonly (DrainRole | null)[],
   batteries: readonly Battery[],
   feet: ReadonlyMap<JointId, WetFoot>,
 ): Map<PipeId, WetUse> {
+  const { code, loads } = context;
   const uses = new Map<PipeId, WetUse>();
   const drainName = (pipe: PipeId): Role[] => {
     const role = drains[pipe];
     return role === null || role === undefined ? [] : [role];
   };
   batteries.forEach(({ facts, reading }, battery) => {
-    if (reading === 'wet-vent') {
-      for (const pipe of facts.line)
+    // Two drains that run together to their common vent are arms: nobody else's air passes.
+    if (reading === 'common-vent' && facts.open !== null) return;
+    const role = lineRoles[reading];
+    if (role !== undefined) {
+      // All of a stack that is its own vent is of one size, also below its last drain.
+      const stack = facts.stack === null || !wholeStack.has(role) ? null : context.stacks[facts.stack.id]!;
+      for (const pipe of stack?.pipes ?? facts.line)
         uses.set(pipe, {
-          role: 'wet-vent',
+          role,
           also: drainName(pipe),
           portion: null,
           battery,
