@@ -49,6 +49,23 @@ export function addPipe(network: Network, added: NewPipe): { readonly network: N
   return { network: finished(network, draft), pipe: id };
 }
 
+/** The network with a joint at a place: one that was there, or one that cuts a pipe in two. */
+export function jointAt(network: Network, place: Place): { readonly network: Network; readonly joint: JointId } {
+  const draft = draftOf(network);
+  const joint = jointFor(draft, place);
+  return { network: finished(network, draft), joint };
+}
+
+/** The network with an element that made a joint moved to another: a trap set elsewhere. */
+export function moveElement(network: Network, element: ElementId, to: JointId): Network {
+  const joints = network.joints.map((joint) => {
+    const others = joint.elements.filter((one) => one !== element);
+    const elements = joint.id === to ? [...others, element].sort((a, b) => a - b) : others;
+    return elements.length === joint.elements.length && joint.id !== to ? joint : { ...joint, elements };
+  });
+  return { ...network, joints, jointsOf: new Map([...network.jointsOf, [element, [to]]]) };
+}
+
 /**
  * The network without some pipes. Joints keep their ids, pipes are numbered anew in their old order; `numbers` holds the
  * new id of each old pipe, -1 for those removed. An element that lost all its pipes is left out as `removed`.

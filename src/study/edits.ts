@@ -4,6 +4,7 @@ import { fullId } from '../model/answer-keys.ts';
 import type { FixtureAnswer, PipeAnswer } from '../model/answers.ts';
 import { type FixtureDetail, type FixtureKind, noDetail } from '../model/identity.ts';
 import type { ElementId } from '../model/model.ts';
+import { jointAt, moveElement, type Place } from '../network/change.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import type { Piping } from '../pipeline.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
@@ -68,6 +69,12 @@ export function withSlope(
       ),
     },
   };
+}
+
+/** A drawn trap set on another place of the piping. */
+export function withTrapAt(piping: Piping, trap: ElementId, place: Place): Piping {
+  const { network, joint } = jointAt(piping.network, place);
+  return { ...piping, network: moveElement(network, trap, joint) };
 }
 
 /** Metres that the lower end of a pipe comes down, its upper end kept, when it is laid to a fall. */

@@ -1,0 +1,116 @@
+import type { Facts, Finding } from '../../findings/finding.ts';
+import type { ElementId } from '../../model/model.ts';
+import type { NominalSize } from '../../units/nominal-size.ts';
+import type { Outcome } from '../../verdicts/outcome.ts';
+import type { Change } from './change.ts';
+import { costsOf } from './costs.ts';
+import { keyOf } from './items.ts';
+import { firstSizes } from './resize.ts';
+import { search } from './search.ts';
+import type { Weights } from './weights.ts';
+
+/** The least change after which no error is left that a known change settles, and the building as it would be. */
+export interface Plan {
+  readonly first: Outcome;
+  /** The run of the stages on the changed building: the proof. */
+  readonly last: Outcome;
+  /** In the order in which they are made: vents, readings and falls, then sizes with the flow. */
+  readonly steps: readonly PlanStep[];
+  readonly cost: number;
+  readonly weights: Weights;
+  /** No other combination of the known changes costs less. */
+  readonly exact: boolean;
+  /** No combination costs less than this. */
+  readonly least: number;
+  /** Runs of the stages that were made. */
+  readonly runs: number;
+  /** Errors that are left, of the building as it would be. */
+  readonly left: readonly Finding[];
+}
+
+export type PlanStep =
+  | { readonly kind: 'change'; readonly change: Change; readonly why: Finding; readonly cost: number }
+  | {
+      readonly kind: 'size';
+      readonly element: ElementId;
+      readonly from: NominalSize;
+      readonly to: NominalSize;
+      /** The finding on this pipe; null: it follows from another change. */
+      readonly why: Finding | null;
+      /** The demand that governs it in the building as it would be. */
+      readonly governs: { readonly rule: string; readonly clause: string; readonly facts: Facts } | null;
+      readonly cost: number;
+    };
+
+/** Runs of the stages that a search makes at most. */
+export const usualRuns = 600;
+
+export function mend(first: Outcome, weights: Weights, mostRuns = usualRuns): Plan {
+  const costs = costsOf(first, weights);
+  const { options, settled, cost, runs, least, exact } = search(first, costs, mostRuns);
+  const last = settled.outcome;
+  const changes = options.flatMap(({ change, why, cost: points }): PlanStep[] =>
+    change === null ? [] : [{ kind: 'change', change, why, cost: points }],
+  );
+  return {
+    first,
+    last,
+    steps: [...changes, ...sizeSteps(first, last, settled.sizes, costs.resize)],
+    cost,
+    weights,
+    exact,
+    least,
+    runs,
+    left: last.findings.filter(({ severity }) => severity === 'error'),
+  };
+}
+
+/** Drains with the flow, then vents toward the sky. */
+function sizeSteps(
+  first: Outcome,
+  last: Outcome,
+  sizes: ReadonlyMap<ElementId, NominalSize>,
+  costOf: (element: ElementId, from: NominalSize, to: NominalSize) => number,
+): PlanStep[] {
+  const drawn = firstSizes(first);
+  const place = new Map<ElementId, number>();
+  last.paths.inFlowOrder.forEach((pipe, at) => {
+    const { element } = last.network.pipes[pipe]!;
+    if (element !== null) place.set(element, at);
+  });
+  const after = last.paths.inFlowOrder.length;
+  const at = (element: ElementId): number => place.get(element) ?? after + element;
+  return [...sizes]
+    .sort(([a], [b]) => at(a) - at(b))
+    .map(([element, to]): PlanStep => {
+      const from = drawn.get(element)!;
+      const why =
+        first.findings.find(
+          ({ code, about }) => about[0] === element && (code === 'undersized' || code === 'smaller-downstream'),
+        ) ?? null;
+      return {
+        kind: 'size',
+        element,
+        from,
+        to,
+        why,
+        governs: governsOf(last, element),
+        cost: costOf(element, from, to),
+      };
+    });
+}
+
+function governsOf({ network, shown, code }: Outcome, element: ElementId) {
+  const sections = network.pipesOf.get(element) ?? [];
+  const largest = sections
+    .map((section) => shown.sizes[section]!)
+    .sort(
+      (a, b) => (b.size === null ? -1 : code.series.rank(b.size)) - (a.size === null ? -1 : code.series.rank(a.size)),
+    )[0];
+  const step = largest?.governing[0];
+  return step === undefined ? null : { rule: step.rule, clause: step.clause, facts: step.facts };
+}
+
+/** Errors of an outcome by what they are and where. */
+export const errorsOf = (outcome: Outcome): string[] =>
+  outcome.findings.filter(({ severity }) => severity === 'error').map((finding) => keyOf({ outcome }, finding));
