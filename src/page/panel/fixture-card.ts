@@ -111,12 +111,13 @@ export function fixtureCard(desk: Desk, row: number): HTMLElement {
           }),
         ),
       ),
-    make(
-      'section',
-      {},
-      make('h3', {}, words.fixture.path),
-      make('ol', { class: 'path' }, ...pathRows(desk, water).map((pipe) => make('li', {}, pipeButton(desk, pipe)))),
-    ),
+    water.length > 0 &&
+      make(
+        'section',
+        {},
+        make('h3', {}, words.fixture.path),
+        make('ol', { class: 'path' }, ...pathRows(desk, water).map((pipe) => make('li', {}, pipeButton(desk, pipe)))),
+      ),
   );
 }
 
