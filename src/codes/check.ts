@@ -55,6 +55,8 @@ export interface CheckedTrap {
   readonly element: ElementId;
   readonly size: NominalSize;
   readonly siphonic: boolean;
+  /** Its water reaches a sewer end: without one, nothing can be said of its air. */
+  readonly drains: boolean;
   /** Role of the vent, or `unvented`, `free`. */
   readonly how: string;
   readonly arm: {

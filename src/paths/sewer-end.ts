@@ -35,9 +35,9 @@ export function sewerEndOf(
   );
   if (named.length > 0) return { joint: lowestOf(named, facts)[0]!, how: 'named', candidates: named.length };
 
-  const open = piece.joints.filter((joint) => isOpenEnd(joint, facts));
+  const open = piece.joints.filter((joint) => isOpenEnd(joint, facts) || hasFreeOutlet(joint, facts));
   if (open.length === 0) return null;
-  const outward = open.filter((joint) => portsLeave(joint, network));
+  const outward = open.filter((joint) => portsLeave(joint, network) || hasFreeOutlet(joint, facts));
   if (outward.length === 1) return { joint: outward[0]!, how: 'ports', candidates: open.length };
   const pool = outward.length > 1 ? outward : open;
 
@@ -69,7 +69,21 @@ function endsInNamedPipe(joint: JointId, { network, identities }: SewerEndFacts)
   return element !== null && identities[element]!.detail.style === 'building-sewer';
 }
 
+/** A fitting or chamber that is joined by ports lets water out through one that nothing is joined to. */
+function hasFreeOutlet(joint: JointId, { network, identities, model }: SewerEndFacts): boolean {
+  return network.joints[joint]!.elements.some((element) => {
+    const { part, medium } = identities[element]!;
+    if ((part !== 'fitting' && part !== 'chamber') || medium === 'vent') return false;
+    const ports = model.elements[element]!.ports.map((port) => model.ports[port]!);
+    return (
+      ports.some(({ connected }) => connected.length > 0) &&
+      ports.some(({ connected, direction }) => connected.length === 0 && direction === 'source')
+    );
+  });
+}
+
 function portsLeave(joint: JointId, network: Network): boolean {
+  if (network.joints[joint]!.pipes.length !== 1) return false;
   const pipe = network.pipes[network.joints[joint]!.pipes[0]!]!;
   return pipe.portFlow !== null && (pipe.portFlow === 'forward' ? pipe.ends[1] : pipe.ends[0]) === joint;
 }

@@ -39,6 +39,7 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
       element: path.element,
       size: loads.fixtures[fixture]!.trap,
       siphonic: loads.fixtures[fixture]!.row.siphonic,
+      drains: path.water.length > 0,
       how: roles.venting[fixture]!.how,
       arm:
         measured === null

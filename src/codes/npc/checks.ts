@@ -82,7 +82,7 @@ function everyTrapVented({ family }: Tools): Check {
     id: 'NPC-R36',
     run: ({ traps }) =>
       traps
-        .filter(({ how }) => how === 'unvented')
+        .filter(({ drains, how }) => drains && how === 'unvented')
         .map(({ element, kind }) => finding('unvented-trap', [element], { kind }, clause)),
   };
 }
