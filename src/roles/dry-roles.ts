@@ -1,6 +1,7 @@
 import type { Role } from '../codes/role.ts';
 import type { Reading } from '../codes/use.ts';
 import type { JointId, PipeId } from '../network/network.ts';
+import type { FixtureId } from '../paths/paths.ts';
 import type { BatteryContext } from './battery-facts.ts';
 import type { Stack } from './find-stacks.ts';
 import type { Battery, VentFoot } from './roles.ts';
@@ -112,12 +113,27 @@ function demote(context: BatteryContext, tree: VentTree, roles: Map<PipeId, DryR
     if (it.role !== 'yoke-vent') return;
     const { traps, path } = it.foot!;
     const stands = traps.length === 0 && risesOverStorey(context, path);
-    roles.set(pipe, stands ? { ...it, role: 'vent-stack' } : { ...it, role: byTraps(traps.length), stack: null });
+    roles.set(
+      pipe,
+      stands ? { ...it, role: 'vent-stack' } : { ...it, role: byTraps(trapsIn(context, traps)), stack: null },
+    );
   }
 }
 
 /** Dry vent of a row by how the row is read; a continuous vent for the others. */
 const ventOf: Readonly<Partial<Record<Reading, Role>>> = { 'circuit-vent': 'circuit-vent', 'common-vent': 'dual-vent' };
+
+/** Traps, not fixtures: several may stand over one drawn trap. */
+function trapsIn({ paths }: BatteryContext, fixtures: readonly FixtureId[]): number {
+  const shared = new Set<JointId>();
+  let own = 0;
+  for (const fixture of fixtures) {
+    const { how, at } = paths.traps[fixture]!;
+    if (how === 'drawn') shared.add(at);
+    else own++;
+  }
+  return own + shared.size;
+}
 
 const byTraps = (traps: number): Role =>
   traps === 0 ? 'idle' : traps === 1 ? 'individual-vent' : traps === 2 ? 'dual-vent' : 'continuous-vent';
@@ -168,6 +184,6 @@ function footRoles(
     }
     if (traps.length > 0 && context.code.islandVents && descentOf(context.network, foot) > islandDescent)
       return of('island-vent', null, null);
-    return of(byTraps(traps.length), null, null);
+    return of(byTraps(trapsIn(context, traps)), null, null);
   };
 }
