@@ -1,6 +1,6 @@
 import type { Broken } from '../codes/battery.ts';
 import type { Battery, ReadingGround } from '../roles/roles.ts';
-import { unitsOf } from '../units/quantity.ts';
+import { noLoad, plusLoad, unitsOf } from '../units/quantity.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
 import type { BrokenCondition, ResultBattery, ResultJoint, ResultSystem } from './result.ts';
 import { type ResultIndex, roundMetres } from './result-index.ts';
@@ -48,12 +48,12 @@ const grounds: Readonly<Record<ReadingGround, string>> = {
 /** Connected pieces of drainage with their sewer end, in the order they were found. */
 export function systems({ paths, network, pipes }: Outcome, index: ResultIndex): ResultSystem[] {
   return paths.systems.map(({ sewerEnd, how, pipes: own }) => {
-    const last = own.find((pipe) => paths.wet[pipe] && index.stream.down(pipe) === sewerEnd);
+    const lasts = own.filter((pipe) => paths.wet[pipe] && index.stream.down(pipe) === sewerEnd);
+    const last = lasts[0];
     const element = last === undefined ? null : network.pipes[last]!.element;
-    const load =
-      last === undefined
-        ? { least: 0, most: 0 }
-        : { least: unitsOf(pipes[last]!.load.least), most: unitsOf(pipes[last]!.load.most) };
+    const sum = (of: 'least' | 'most'): number =>
+      unitsOf(lasts.reduce((all, pipe) => plusLoad(all, pipes[pipe]!.load[of]), noLoad));
+    const load = { least: sum('least'), most: sum('most') };
     const inside = new Set(own);
     return {
       sewerEnd: { at: network.joints[sewerEnd]!.at, pipe: element === null ? null : index.idOf(element), how },
