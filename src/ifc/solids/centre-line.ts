@@ -2,7 +2,8 @@ import { distance, type Vec3 } from '../../geometry/vector.ts';
 import type { CentreLine } from '../../model/model.ts';
 import { metres } from '../../units/quantity.ts';
 import { radiusAround } from './fit-around.ts';
-import { type FittedTube, fitStraight } from './fit-tube.ts';
+import { fitBend } from './fit-bend.ts';
+import { type FittedTube, fitLoosely, fitStraight } from './fit-tube.ts';
 import { type Frame, moved, scaleOf } from './frame.ts';
 import { type JoinedTube, joinTubes } from './join-tubes.ts';
 import type { Piece } from './piece.ts';
@@ -39,7 +40,7 @@ function largestFit(body: readonly Piece[]): FittedTube | null {
   let best: FittedTube | null = null;
   for (const { shape, frame } of body) {
     if (shape.kind !== 'mesh') continue;
-    const fitted = fitStraight(shape);
+    const fitted = fitStraight(shape) ?? fitBend(shape) ?? fitLoosely(shape);
     if (fitted === null) continue;
     const k = scaleOf(frame);
     const outer = fitted.outer * k;

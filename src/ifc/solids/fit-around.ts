@@ -22,7 +22,7 @@ export function radiusAround(axis: readonly Vec3[], body: readonly Piece[]): Fit
     if (shape.kind !== 'mesh') continue;
     const flat = shape.points();
     for (let i = 0; i + 2 < flat.length; i += 3) {
-      distances.push(fromPath(moved(frame, [flat[i]!, flat[i + 1]!, flat[i + 2]!]), axis));
+      distances.push(distanceToPath(moved(frame, [flat[i]!, flat[i + 1]!, flat[i + 2]!]), axis));
     }
   }
   distances.sort((a, b) => a - b);
@@ -47,7 +47,8 @@ export function radiusAround(axis: readonly Vec3[], body: readonly Piece[]): Fit
   return residual > worstResidual * outer ? null : { outer, residual };
 }
 
-function fromPath(point: Vec3, path: readonly Vec3[]): number {
+/** Metres from a point to a polyline. */
+export function distanceToPath(point: Vec3, path: readonly Vec3[]): number {
   let least = Infinity;
   for (let k = 1; k < path.length; k++) {
     const a = path[k - 1]!;

@@ -1,4 +1,4 @@
-import { cross, unit, type Vec3 } from '../../geometry/vector.ts';
+import { cross, dot, unit, type Vec3 } from '../../geometry/vector.ts';
 import type { Mesh } from './mesh.ts';
 import { principalDirections } from './principal-directions.ts';
 
@@ -15,18 +15,25 @@ export interface FittedTube {
 const goodFit = 1e-4;
 const fewestPoints = 12;
 
-/**
- * Straight tube that the corners of a mesh lie on; null where they lie on none. Where no direction fits well, one is
- * taken that fits loosely, as for coordinates rounded to centimetres: the residual says how loosely.
- */
+/** Straight tube that the corners of a mesh lie on; null where they lie on none. */
 export function fitStraight(mesh: Mesh): FittedTube | null {
   const flat = mesh.points();
   if (flat.length < fewestPoints * 3) return null;
   const named = mesh.cylinders().slice(0, 4);
   const likely = [...named.map(({ along }) => along), ...principalDirections(flat)];
   let fit = best(flat, likely, straightFit);
-  if (!isGood(fit)) fit = better(fit, best(flat, longEdges(mesh, flat), straightFit));
-  fit ??= best(flat, likely, looseFit);
+  if (!isGood(fit)) fit = better(fit, best(flat, [...faceNormals(mesh, flat), ...longEdges(mesh, flat)], straightFit));
+  return fit === null ? null : tubeOf(fit, mesh, flat);
+}
+
+/**
+ * The straight tube that the corners lie near, as for coordinates rounded to centimetres: the residual says how near.
+ * Asked for where no straight and no bent tube fits well.
+ */
+export function fitLoosely(mesh: Mesh): FittedTube | null {
+  const flat = mesh.points();
+  if (flat.length < fewestPoints * 3) return null;
+  const fit = best(flat, principalDirections(flat), looseFit);
   return fit === null ? null : tubeOf(fit, mesh, flat);
 }
 
@@ -45,6 +52,27 @@ const isGood = (fit: StraightFit | null): boolean => fit !== null && fit.residua
 const better = (a: StraightFit | null, b: StraightFit | null): StraightFit | null =>
   a === null || (b !== null && b.residual < a.residual) ? b : a;
 
+const mostNormals = 4;
+
+/** Directions that the largest flat parts face: the ends of a short pipe face along its axis. */
+function faceNormals(mesh: Mesh, flat: readonly number[]): Vec3[] {
+  const found: { along: Vec3; area: number }[] = [];
+  for (const face of mesh.faces()) {
+    const n = areaVector(face, flat);
+    const area = Math.sqrt(n[0] * n[0] + n[1] * n[1] + n[2] * n[2]);
+    if (!(area > 0)) continue;
+    const along: Vec3 = [n[0] / area, n[1] / area, n[2] / area];
+    const same = found.find((one) => Math.abs(dot(one.along, along)) > 1 - 1e-9);
+    if (same !== undefined) same.area += area;
+    else if (found.length < mostDirections) found.push({ along, area });
+  }
+  return found
+    .sort((a, b) => b.area - a.area)
+    .slice(0, mostNormals)
+    .map(({ along }) => along);
+}
+
+const mostDirections = 200;
 const mostEdges = 12;
 
 /** Directions of the longest edges: the sides of a pipe that is cut off askew still run along its axis. */
@@ -271,6 +299,13 @@ function coverage({ along, x, y, u, v, from, to, walls }: StraightFit, mesh: Mes
 
 /** Area of a face seen from the side: faces across the pipe (its ends) count nothing. */
 function sideArea(face: readonly number[], flat: readonly number[], along: Vec3): number {
+  const n = areaVector(face, flat);
+  const lengthwise = dot(n, along);
+  return Math.sqrt(Math.max(0, dot(n, n) - lengthwise * lengthwise));
+}
+
+/** Normal of a face, as long as the face is large. */
+function areaVector(face: readonly number[], flat: readonly number[]): Vec3 {
   let nx = 0;
   let ny = 0;
   let nz = 0;
@@ -278,12 +313,15 @@ function sideArea(face: readonly number[], flat: readonly number[], along: Vec3)
   for (let k = 2; k < face.length; k++) {
     const p = face[k - 1]! * 3;
     const q = face[k]! * 3;
-    const [ax, ay, az] = [flat[p]! - flat[o]!, flat[p + 1]! - flat[o + 1]!, flat[p + 2]! - flat[o + 2]!];
-    const [bx, by, bz] = [flat[q]! - flat[o]!, flat[q + 1]! - flat[o + 1]!, flat[q + 2]! - flat[o + 2]!];
+    const ax = flat[p]! - flat[o]!;
+    const ay = flat[p + 1]! - flat[o + 1]!;
+    const az = flat[p + 2]! - flat[o + 2]!;
+    const bx = flat[q]! - flat[o]!;
+    const by = flat[q + 1]! - flat[o + 1]!;
+    const bz = flat[q + 2]! - flat[o + 2]!;
     nx += ay * bz - az * by;
     ny += az * bx - ax * bz;
     nz += ax * by - ay * bx;
   }
-  const lengthwise = nx * along[0] + ny * along[1] + nz * along[2];
-  return Math.sqrt(Math.max(0, nx * nx + ny * ny + nz * nz - lengthwise * lengthwise)) / 2;
+  return [nx / 2, ny / 2, nz / 2];
 }
