@@ -81,7 +81,7 @@ let made: Promise<PageBundle> | null = null;
 export function bundled(): Promise<PageBundle> {
   made ??= (async () => {
     const root = resolve(import.meta.dirname, '../..');
-    const script = pathToFileURL(join(root, 'scripts/build-page.mjs')).href;
+    const script = pathToFileURL(join(root, 'src/build/build-page.mjs')).href;
     const { bundlePage } = (await import(script)) as { bundlePage: (root: string) => Promise<PageBundle> };
     return bundlePage(root);
   })();

@@ -23,7 +23,7 @@ export function builtProgram(): void {
     }
     try {
       if (isFresh()) return;
-      spawnSync(process.execPath, [join(root, 'scripts/build.mjs')], { cwd: root, stdio: 'ignore' });
+      spawnSync(process.execPath, [join(root, 'src/build/build.mjs')], { cwd: root, stdio: 'ignore' });
       if (statSync(mainFile, { throwIfNoEntry: false }) === undefined) throw new Error('the build made no program');
       return;
     } finally {

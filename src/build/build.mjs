@@ -5,7 +5,7 @@ import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { buildPage } from './build-page.mjs';
 
-const root = fileURLToPath(new URL('..', import.meta.url));
+const root = fileURLToPath(new URL('../..', import.meta.url));
 const src = join(root, 'src');
 const target = join(root, 'dist');
 // Built beside and then moved: whoever runs the program meanwhile has the old one or the new one, never a part.

@@ -33,6 +33,6 @@ export async function bundlePage(root) {
 }
 
 if (process.argv[1] === fileURLToPath(import.meta.url)) {
-  const root = fileURLToPath(new URL('..', import.meta.url));
+  const root = fileURLToPath(new URL('../..', import.meta.url));
   await buildPage({ root, dist: join(root, 'dist') });
 }

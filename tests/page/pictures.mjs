@@ -7,7 +7,7 @@ import { join } from 'node:path';
 import { fileURLToPath, pathToFileURL } from 'node:url';
 import { chromium } from 'playwright-core';
 
-const root = fileURLToPath(new URL('..', import.meta.url));
+const root = fileURLToPath(new URL('../..', import.meta.url));
 const pictures = join(root, 'sample-models/pictures');
 const folder = mkdtempSync(join(tmpdir(), 'pictures-'));
 mkdirSync(pictures, { recursive: true });

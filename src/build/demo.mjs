@@ -3,7 +3,7 @@ import { spawnSync } from 'node:child_process';
 import { mkdirSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 
-const root = fileURLToPath(new URL('..', import.meta.url));
+const root = fileURLToPath(new URL('../..', import.meta.url));
 const model = 'sample-models/hall-wet-vented.ifc';
 const sized = 'out/hall-wet-vented-sized.ifc';
 const page = 'out/hall-wet-vented.html';
@@ -14,7 +14,7 @@ const run = (...args) => {
   return status;
 };
 
-mkdirSync(new URL('../out', import.meta.url), { recursive: true });
+mkdirSync(new URL('../../out', import.meta.url), { recursive: true });
 // The sample is drawn one size too small, so that the check ends with 1: errors were found.
 const codes = [run('check', model), run('size', model, '-o', sized), run('view', model, '-o', page)];
 console.log(`\nThe sized model is in ${root}${sized}\nThe page is in       ${root}${page} (open it in a browser)`);
