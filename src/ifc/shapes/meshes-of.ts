@@ -1,4 +1,4 @@
-import type { FlatMesh, IfcAPI, LocateFileHandlerFn } from 'web-ifc';
+import type { IfcAPI, LocateFileHandlerFn } from 'web-ifc';
 import { type Finding, finding, type WithFindings } from '../../findings/finding.ts';
 import { InputError } from '../../findings/input-error.ts';
 import type { Vec3 } from '../../geometry/vector.ts';
@@ -41,11 +41,12 @@ export async function meshesOf(
     try {
       for (; next < stepIds.length; next++) {
         const stepId = stepIds[next]!;
-        const mesh = elementMesh(api, model, stepId, options.origin);
+        const mesh = triangles(api, model, stepId, options.origin);
         if (mesh === 'not finite') unreadable.push(stepId);
         else if (mesh !== null) meshes.push(mesh);
       }
-    } catch {
+    } catch (error) {
+      if (!isEngineFault(error)) throw error;
       // A shape that the engine breaks on leaves its memory in doubt: the rest goes on in a fresh one.
       unreadable.push(stepIds[next]!);
       next++;
@@ -106,22 +107,13 @@ function close(api: IfcAPI, model: number): void {
   }
 }
 
-function elementMesh(api: IfcAPI, model: number, stepId: number, origin: Vec3): ElementMesh | 'not finite' | null {
-  const flat = api.GetFlatMesh(model, stepId);
-  try {
-    return triangles(api, model, stepId, flat, origin);
-  } finally {
-    flat.delete();
-  }
-}
+/** What web-ifc's compiled code throws when a shape is too much for it; anything else is our own fault. */
+const isEngineFault = (error: unknown): boolean =>
+  error instanceof WebAssembly.RuntimeError || error instanceof WebAssembly.Exception || error instanceof RangeError;
 
-function triangles(
-  api: IfcAPI,
-  model: number,
-  stepId: number,
-  flat: FlatMesh,
-  origin: Vec3,
-): ElementMesh | 'not finite' | null {
+function triangles(api: IfcAPI, model: number, stepId: number, origin: Vec3): ElementMesh | 'not finite' | null {
+  // The list itself is a plain object, whatever its type says: only geometries are to be freed.
+  const flat = api.GetFlatMesh(model, stepId);
   const positions: number[] = [];
   const indices: number[] = [];
   for (let k = 0; k < flat.geometries.size(); k++) {
