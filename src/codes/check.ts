@@ -4,6 +4,7 @@ import type { PipeId } from '../network/network.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Load } from '../units/quantity.ts';
 import type { PipeUse } from './use.ts';
+import type { TrapWay } from './way.ts';
 
 /** A demand of a code that is no size: a vent that must be there, an arm that is too long. */
 export interface Check {
@@ -71,6 +72,12 @@ export interface CheckedTrap {
   /** Developed length between the fixture and its trap. */
   readonly outletLength: number;
   readonly kind: string | null;
+  /** The code does not let the fixture be used. */
+  readonly refused: boolean;
+  /** Row of the fixture table. */
+  readonly row: string;
+  /** Its way to what gives its drain air; null where none was found or the code does not ask. */
+  readonly way: TrapWay | null;
 }
 
 export interface CheckedDrain {

@@ -10,6 +10,7 @@ import type { CleanoutRules } from './cleanouts.ts';
 import type { Role } from './role.ts';
 import type { SizingRule } from './sizing-rule.ts';
 import type { Reading } from './use.ts';
+import type { Carried, StackEntry, TrapWay } from './way.ts';
 
 /** One edition of one code, ready to size with: tables bound to rules. */
 export interface PlumbingCode {
@@ -43,6 +44,15 @@ export interface PlumbingCode {
   readonly armLimit: (trap: NominalSize, row: FixtureRow) => number | null;
   /** The rule that frees a fixture's trap of a vent, or null. */
   readonly freeOfVent: (trap: FreeTrapFacts) => { readonly rule: string; readonly clause: string } | null;
+  /**
+   * The rule by which a trap breathes through its own short branch, no vent standing on it, or null; absent where the
+   * code knows no such branches. Where it is there, `PipeUse.reach` is measured.
+   */
+  readonly shortBranch?: (trap: ShortBranchFacts) => { readonly rule: string; readonly clause: string } | null;
+  /** How drains may come into a stack, where that decides its size; absent where it does not. */
+  readonly entries?: EntryRule;
+  /** Load of a steady or pumped flow, l/s; absent where the code keeps flows apart from loads. */
+  readonly steadyLoad?: (litresASecond: number) => { readonly load: Load; readonly cell: Cell };
   /** The building sewer begins this far outside the wall, metres. */
   readonly sewerBegins: number;
   /** Horizontal offsets of a stack shorter than this, metres, count as stack. */
@@ -120,6 +130,21 @@ export interface FreeTrapFacts {
   readonly fall: number | null;
 }
 
+export interface ShortBranchFacts {
+  readonly way: TrapWay;
+  readonly row: FixtureRow;
+  /** Of the last pipe of the way: what passes it, and the largest turn of a water closet's way through it, degrees. */
+  readonly carried: Carried;
+  readonly closetTurn: number;
+}
+
+export interface EntryRule {
+  /** To the stack's own direction, degrees: flatter entries are swept whatever their radius. */
+  readonly sweptUpTo: number;
+  /** What the user says of those that the model does not tell; null: nothing, and sizes are given for both. */
+  readonly said: StackEntry['shape'] | null;
+}
+
 export interface FixtureRow {
   readonly id: string;
   readonly title: string;
@@ -127,6 +152,8 @@ export interface FixtureRow {
   /** Works by siphonage and carries its trap: the distance to its vent has limits of its own. */
   readonly siphonic: boolean;
   readonly emergency: boolean;
+  /** The code does not let the fixture be used; absent where it does. */
+  readonly refused?: true;
   /** Least and largest trap that the row prints. */
   readonly leastTrap: NominalSize;
   readonly largestTrap: NominalSize;
@@ -163,8 +190,8 @@ export interface FixtureCount {
 
 export interface GroupRule {
   readonly clause: string;
-  /** Part of a group that a row is, or null. */
-  readonly memberOf: (row: FixtureRow, detail: FixtureDetail) => 'closet' | 'lavatory' | 'bath' | null;
+  /** Part of a group that a row is, or null. An `extra` belongs to a whole group of its room and adds nothing to it. */
+  readonly memberOf: (row: FixtureRow, detail: FixtureDetail) => 'closet' | 'lavatory' | 'bath' | 'extra' | null;
   readonly figure: (closet: FixtureRow) => { readonly load: Load; readonly cell: Cell };
 }
 

@@ -4,6 +4,7 @@ import type { NominalSize } from '../units/nominal-size.ts';
 import type { Load } from '../units/quantity.ts';
 import type { BatteryFacts } from './battery.ts';
 import type { DrainRole, Portion, Role } from './role.ts';
+import type { BranchReach, Carried, StackEntry, StatedUses } from './way.ts';
 
 /** Everything a sizing rule may know of one pipe, besides the sizes found so far. */
 export interface PipeUse {
@@ -18,17 +19,27 @@ export interface PipeUse {
   readonly counts: Readonly<Record<string, number>>;
   /** Fixtures whose water passes. */
   readonly fixtures: number;
+  /** Largest load of one of them. */
+  readonly largest: Load;
+  /** Steady and pumped flow that passes, l/s, where the code keeps it apart from loads; else 0. */
+  readonly steady: number;
+  /** Part of the load, where its use is stated apart from the building's. */
+  readonly statedUses: StatedUses;
   readonly vertical: boolean;
   /** Fall downstream in m/m; null when vertical or unknown. */
   readonly slope: number | null;
   /** Largest trap among the fixtures of a fixture drain; null on other pipes. */
   readonly trap: NominalSize | null;
+  /** That trap is drawn, or stated by the model or the user; not taken from the pipe, not assumed. */
+  readonly trapStated: boolean;
   /** Least fixture outlet pipe that the fixture's own row prints; of portion `outlet` only. */
   readonly outlet: NominalSize | null;
   /** Part of the arm of one trap: between it and the pipe that vents it. */
   readonly inArm: boolean;
   /** Of a branch or fixture drain: what its way downstream comes to first; null on other pipes. */
   readonly endsAt: 'stack' | 'building-drain' | null;
+  /** How the branch lies that the pipe is part of; null on other pipes, and where the code does not ask. */
+  readonly reach: BranchReach | null;
   /** Wet pipes that flow in at the upstream joint. */
   readonly inflows: readonly PipeId[];
   /** Of a wet pipe: dry vents whose foot stands at its upstream joint. Of a dry one: vents that join at its lower joint. */
@@ -55,6 +66,8 @@ export interface MainVentUse {
   readonly others: readonly (readonly PipeId[])[];
   /** Some vent of the building drain is drawn this large all the way, by nominal size: the widest such. */
   readonly drawn: NominalSize | null;
+  /** Last pipe of the building drain or sewer; null where nothing leaves. */
+  readonly drain: PipeId | null;
   /** Feet of stacks that come before this one as bearer of the large vent. */
   readonly before: readonly PipeId[];
 }
@@ -69,6 +82,7 @@ export interface StackUse {
   readonly footLoad: Load;
   /** Of everything that the whole stack carries. */
   readonly footClosets: number;
+  readonly carries: Carried;
   readonly footCounts: Readonly<Record<string, number>>;
   /** Where drains join at or above the head of this section, highest first: height in metres, null without geometry. */
   readonly joins: readonly StackJoin[];
@@ -76,6 +90,10 @@ export interface StackUse {
   readonly allJoins: readonly StackJoin[];
   /** Length of its vertical parts together, metres. */
   readonly rise: number;
+  /** How the drains come in, from the top; absent where the code does not ask, and on vents. */
+  readonly entries?: readonly StackEntry[];
+  /** Where its vent stack leaves it, null: it has none; absent as above. */
+  readonly ventStack?: VentUse['leaves'];
 }
 
 /** One height at which drains come into a stack, and what they bring. */
@@ -96,7 +114,8 @@ export type Reading =
   | 'common-vent'
   | 'waste-stack-vent'
   | 'combination-waste-and-vent'
-  | 'single-stack';
+  | 'single-stack'
+  | 'ventilated-branch';
 
 export interface VentUse {
   /** Load that enters a vent table, what the code leaves out left out. */
@@ -105,12 +124,21 @@ export interface VentUse {
   readonly length: number | null;
   /** What of that length is level, metres. */
   readonly level: number | null;
+  /** Turns from its foot to the next vent that carries more, in bends of 90 degrees; null where several have met. */
+  readonly bends: number | null;
+  /** It breathes through an air admittance valve. */
+  readonly valve: boolean;
+  /** Of the fixtures whose traps breathe through it: the largest load of one, and what is stated of their use. */
+  readonly largest: Load;
+  readonly statedUses: StatedUses;
   readonly largestTrap: NominalSize | null;
   /** Water closets among the traps that breathe through it, and what else the code counts of them. */
   readonly closets: number;
   readonly counts: Readonly<Record<string, number>>;
   /** Stack whose foot selects the row, of stack vents and vent stacks. */
   readonly stack: StackUse | null;
+  /** How that stack is read where it is its own vent; null where it is a stack like others. */
+  readonly stackReading: Reading | null;
   /** Stacks whose vents have met in it, by id. */
   readonly stacks: readonly StackUse[];
   /** Vent whose size this one follows: the circuit vent of a relief vent, the stack vent of an offset relief vent. */

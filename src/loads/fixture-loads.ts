@@ -6,6 +6,7 @@ import type { ElementId, Model } from '../model/model.ts';
 import type { Network } from '../network/network.ts';
 import type { FixturePath, Paths } from '../paths/paths.ts';
 import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
+import { noLoad } from '../units/quantity.ts';
 import type { FixtureLoad, Scenario } from './loads.ts';
 import { type ModelledSize, readSize, sizeOfLength } from './read-size.ts';
 import { countSharedTraps } from './shared-traps.ts';
@@ -28,11 +29,12 @@ export function fixtureLoads(facts: FixtureFacts, scenario: Scenario): FixtureLo
     const witnessed = trapWitness(facts, fixture);
     const sized = rows.map((row) => ({ row, ...trapOf(row, witnessed, facts.code.series) }));
     const candidates = sized.map((one) => ({ ...one, ...one.row.loadAt(one.trap) }));
+    if (detail.flow !== undefined) return steadyLoad(facts.code, candidates, detail.flow);
     const chosen = choose(candidates, scenario, kind === null);
     const alike = candidates.every(
       (one) => one.load === chosen.load && one.trap === chosen.trap && one.row.closet === chosen.row.closet,
     );
-    return { ...chosen, settled: kind !== null && alike };
+    return { ...chosen, steady: 0, settled: kind !== null && alike };
   });
   return countSharedTraps(facts, single);
 }
@@ -52,6 +54,13 @@ function choose(rows: readonly Candidate[], scenario: Scenario, unidentified: bo
   if (unidentified && scenario === 'closet') return byLoad.findLast(({ row }) => row.closet) ?? byLoad.at(-1)!;
   if (unidentified) return byLoad.findLast(({ row }) => !row.closet) ?? byLoad.at(-1)!;
   return byLoad.at(-1)!;
+}
+
+/** A stated flow stands for the load: counted as load where the code does so, else kept apart. */
+function steadyLoad({ steadyLoad: counted }: PlumbingCode, rows: readonly Candidate[], flow: number): FixtureLoad {
+  const row = rows.find((one) => !one.row.closet) ?? rows[0]!;
+  const load = counted?.(flow);
+  return { ...row, ...(load ?? { load: noLoad }), steady: load === undefined ? flow : 0, settled: true };
 }
 
 interface TrapWitness {

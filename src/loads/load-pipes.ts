@@ -7,6 +7,7 @@ import { countFixtures } from './count-fixtures.ts';
 import { type FixtureFacts, fixtureLoads } from './fixture-loads.ts';
 import { fixturesInRows } from './fixtures-in-rows.ts';
 import type { BathroomGroup, Bundle, Loads, PipeLoad, Scenario } from './loads.ts';
+import { usesApart } from './uses-apart.ts';
 
 /**
  * The load on every pipe in one scenario: what its fixtures put in, plus what the pipes upstream carry, in one pass
@@ -31,6 +32,8 @@ export function loadPipes(facts: FixtureFacts, scenario: Scenario): WithFindings
 
   const single: Load[] = network.pipes.map(() => noLoad);
   const closets = new Int32Array(network.pipes.length);
+  const largest = new Int32Array(network.pipes.length);
+  const steady = new Float64Array(network.pipes.length);
   const open: (Map<number, { sum: Load; members: number }> | null)[] = network.pipes.map(() => null);
   const loads: Load[] = network.pipes.map(() => noLoad);
   const settle = (pipe: number): void => {
@@ -54,8 +57,10 @@ export function loadPipes(facts: FixtureFacts, scenario: Scenario): WithFindings
   };
   for (const pipe of paths.inFlowOrder) {
     for (const fixture of paths.entering[pipe]!) {
-      const { load, row } = fixtures[fixture]!;
+      const { load, row, steady: own } = fixtures[fixture]!;
       if (row.closet) closets[pipe]!++;
+      largest[pipe] = Math.max(largest[pipe]!, load);
+      steady[pipe]! += own;
       const group = bundleOf[fixture] ?? null;
       if (group === null) single[pipe] = plusLoad(single[pipe]!, load);
       else put(pipe, group, load, 1);
@@ -65,13 +70,19 @@ export function loadPipes(facts: FixtureFacts, scenario: Scenario): WithFindings
     if (next === null || next === undefined) continue;
     single[next] = plusLoad(single[next]!, single[pipe]!);
     closets[next]! += closets[pipe]!;
+    largest[next] = Math.max(largest[next]!, largest[pipe]!);
+    steady[next]! += steady[pipe]!;
     for (const [group, { sum, members }] of open[pipe] ?? []) put(next, group, sum, members);
   }
 
   const { order, from, to } = fixtureOrder(facts);
   const counts = countFixtures(facts, fixtures);
+  const uses = usesApart(facts, fixtures);
   const pipes: PipeLoad[] = network.pipes.map(({ id }) => ({
     load: loads[id]!,
+    largest: largest[id]! as Load,
+    steady: steady[id]!,
+    statedUses: uses[id]!,
     closets: closets[id]!,
     counts: counts[id]!,
     from: from[id]!,

@@ -1,4 +1,5 @@
 import type { FixtureRow } from '../codes/plumbing-code.ts';
+import type { StatedUses } from '../codes/way.ts';
 import type { FixtureId } from '../paths/paths.ts';
 import type { Cell } from '../tables/table.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
@@ -39,6 +40,8 @@ export interface FixtureLoad {
   readonly row: FixtureRow;
   readonly load: Load;
   readonly cell: Cell;
+  /** Steady or pumped flow of the fixture, l/s, beside the load; 0 where the code counts it as load. */
+  readonly steady: number;
   readonly trap: NominalSize;
   readonly trapFrom: 'drawn' | 'property' | 'answer' | 'pipe' | 'assumed';
   /** The kind is known, and every row it may be puts in the same load through the same trap. */
@@ -47,6 +50,11 @@ export interface FixtureLoad {
 
 export interface PipeLoad {
   readonly load: Load;
+  /** Largest load of one fixture whose water passes. */
+  readonly largest: Load;
+  /** Steady and pumped flow, l/s, where the code keeps it apart from loads. */
+  readonly steady: number;
+  readonly statedUses: StatedUses;
   readonly closets: number;
   /** What else the code counts, by the names it gives. */
   readonly counts: Readonly<Record<string, number>>;

@@ -64,7 +64,7 @@ const startOf = (kind: FixtureKind | null, { domestic }: FixtureDetail): Fixture
 });
 
 function answeredDetail(read: FixtureDetail, { detail = {} }: FixtureAnswer): FixtureDetail {
-  const { flush, style, heads, emergency, domestic, flushLitres } = detail;
+  const { flush, style, heads, emergency, domestic, flushLitres, flow, frequency } = detail;
   return {
     ...read,
     ...(flush === 'tank' || flush === 'valve' ? { flush } : {}),
@@ -73,5 +73,7 @@ function answeredDetail(read: FixtureDetail, { detail = {} }: FixtureAnswer): Fi
     ...(typeof emergency === 'boolean' ? { emergency } : {}),
     ...(typeof domestic === 'boolean' ? { domestic } : {}),
     ...(typeof flushLitres === 'number' ? { flushLitres } : {}),
+    ...(typeof flow === 'number' ? { flow } : {}),
+    ...(typeof frequency === 'number' ? { frequency } : {}),
   };
 }

@@ -52,6 +52,10 @@ export interface FixtureDetail {
   readonly domestic: boolean | null;
   /** Litres to a flush of closets and urinals, where a text gives them (`6.1 Lpf`, `1.6 gpf`); absent where none does. */
   readonly flushLitres?: number;
+  /** Steady flow, or that of a pump, which the user states: litres a second. It stands for the fixture's load. */
+  readonly flow?: number;
+  /** Frequency factor of its use where the user states one other than the building's (EN 12056). */
+  readonly frequency?: number;
 }
 
 export const noDetail: FixtureDetail = { flush: null, style: null, heads: null, emergency: null, domestic: null };

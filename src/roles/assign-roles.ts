@@ -1,6 +1,6 @@
-import type { PlumbingCode } from '../codes/plumbing-code.ts';
+import type { EntryRule, PlumbingCode } from '../codes/plumbing-code.ts';
 import type { Role } from '../codes/role.ts';
-import type { PipeUse, Reading, StackUse, TankKind } from '../codes/use.ts';
+import type { PipeUse, Reading, StackUse, TankKind, VentUse } from '../codes/use.ts';
 import { type Finding, finding, type WithFindings } from '../findings/finding.ts';
 import type { PlanPoint } from '../geometry/plan-outline.ts';
 import type { Loads } from '../loads/loads.ts';
@@ -16,15 +16,18 @@ import type { BatteryContext } from './battery-facts.ts';
 import { drainEnds, drainRoles } from './drain-roles.ts';
 import { type DryRole, dryRoles, ventTree } from './dry-roles.ts';
 import { freeTraps } from './feet.ts';
-import { findStacks, type Stack, stackUseAt } from './find-stacks.ts';
+import { findStacks, type Stack, type StackContext, stackUseAt } from './find-stacks.ts';
 import { floorsOf } from './floors.ts';
 import { formBatteries } from './form-batteries.ts';
 import { mainVentUses, onlyWidestVents } from './main-vent.ts';
 import { openRows } from './open-rows.ts';
 import { outsideBuilding } from './outline.ts';
 import type { Battery, Roles, VentFoot } from './roles.ts';
+import { throughShortBranches } from './short-branches.ts';
+import { stackEntries } from './stack-entries.ts';
 import { stackJoints } from './stack-joints.ts';
 import { trapArms } from './trap-arms.ts';
+import { trapWays } from './trap-ways.ts';
 import { ventUses } from './vent-uses.ts';
 import { venting } from './venting.ts';
 import { type WetFoot, wetFeet } from './wet-feet.ts';
@@ -69,6 +72,7 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
     }),
     tankAt: (joint) => tankAmong(network.joints[joint]!.elements.map((element) => identities[element])),
     kindOf: (fixture) => identityOf(fixture).kind,
+    frequencyOf: (fixture) => identityOf(fixture).detail.frequency ?? null,
     live: (joint) => liveAt.get(joint) ?? null,
     wordOf: (fixtures, pipes) => designersWord(facts, fixtures, pipes),
   };
@@ -91,6 +95,7 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
   );
   const wet = wetUses(context, drains, batteries, feetOfVentStacks);
 
+  const ways = code.shortBranch === undefined ? null : trapWays(context, drains);
   const mainVents = mainVentUses(context, feet, dry);
   const largest = onlyWidestVents(context, feet);
   const inArm = new Set(air.flatMap(({ arm, foot }) => (foot === null ? [] : arm)));
@@ -98,7 +103,8 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
   const stackUses = new Map<PipeId, StackUse>();
   const offsets = new Map<PipeId, number>();
   for (const stack of stacks) {
-    for (const pipe of stack.pipes) stackUses.set(pipe, stackUseAt(stackContext, stack, pipe));
+    const more = code.entries === undefined ? {} : entriesOf(facts, stackContext, stack, code.entries, vents);
+    for (const pipe of stack.pipes) stackUses.set(pipe, { ...stackUseAt(stackContext, stack, pipe), ...more });
     for (const { pipes, length } of stack.offsets) for (const pipe of pipes) offsets.set(pipe, length);
   }
   const uses = network.pipes.map(({ id }): PipeUse => {
@@ -126,12 +132,17 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
       closets,
       counts,
       fixtures: to - from,
+      largest: loads.pipes[id]!.largest,
+      steady: loads.pipes[id]!.steady,
+      statedUses: loads.pipes[id]!.statedUses,
       vertical: paths.vertical[id] === true,
       slope: paths.slopes[id]!.slope,
       trap: first === undefined ? null : loads.fixtures[first]!.trap,
+      trapStated: first !== undefined && statedTraps.has(loads.fixtures[first]!.trapFrom),
       outlet: outlet[id] && fixtures.length > 0 ? largestOutlet(loads, code, fixtures) : null,
       inArm: inArm.has(id),
       endsAt: ends[id] ?? null,
+      reach: ways?.reach.get(id) ?? null,
       inflows: isWet ? stream.inflows[stream.up(id)]! : [],
       joining: isWet ? stream.dry[stream.up(id)]!.filter((pipe) => dry.has(pipe)) : (tree.below.get(id) ?? []),
       stack: stackUses.get(id) ?? null,
@@ -151,8 +162,9 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
       stacks,
       batteries,
       air,
-      venting: venting(context, air, feet, dry, batteries),
+      venting: throughShortBranches(context, venting(context, air, feet, dry, batteries), ways),
       arms: trapArms(network, paths, stream, air),
+      ways: ways?.traps ?? [],
       feet,
       floors,
     },
@@ -168,6 +180,22 @@ function tankAmong(parts: readonly (Identity | undefined)[]): TankKind | null {
     if (it?.part === 'chamber') return 'manhole';
   }
   return null;
+}
+
+const statedTraps: ReadonlySet<string> = new Set(['drawn', 'property', 'answer']);
+
+/** How a stack is entered and vented beside its own top. The lightest reading takes entries nobody knows for swept. */
+function entriesOf(
+  { model, loads }: RoleFacts,
+  context: StackContext,
+  stack: Stack,
+  rule: EntryRule,
+  vents: ReadonlyMap<PipeId, VentUse>,
+): Pick<StackUse, 'entries' | 'ventStack'> {
+  const open = loads.scenario === 'lightest' ? 'swept' : 'square';
+  const leaves = [...vents.values()].flatMap((vent) => (vent.serves === stack.id ? (vent.leaves ?? []) : []));
+  const best = (['foot', 'drain', 'above a branch'] as const).find((one) => leaves.includes(one)) ?? null;
+  return { entries: stackEntries(context, model, stack, rule, open), ventStack: best };
 }
 
 /** Pipes between a fixture and its trap. */

@@ -20,6 +20,8 @@ export interface BatteryContext extends StackContext {
   /** Tank or manhole that stands at a joint. */
   readonly tankAt: (joint: JointId) => TankKind | null;
   readonly kindOf: (fixture: FixtureId) => FixtureKind | null;
+  /** Frequency factor of its use, where the user states one apart from the building's. */
+  readonly frequencyOf: (fixture: FixtureId) => number | null;
   /** Joint with a live dry vent standing on it. By joint id. */
   readonly live: (joint: JointId) => PipeId | null;
   readonly wordOf: (fixtures: readonly FixtureId[], pipes: readonly PipeId[]) => Reading | null;

@@ -121,7 +121,11 @@ function demote(context: BatteryContext, tree: VentTree, roles: Map<PipeId, DryR
 }
 
 /** Dry vent of a row by how the row is read; a continuous vent for the others. */
-const ventOf: Readonly<Partial<Record<Reading, Role>>> = { 'circuit-vent': 'circuit-vent', 'common-vent': 'dual-vent' };
+const ventOf: Readonly<Partial<Record<Reading, Role>>> = {
+  'circuit-vent': 'circuit-vent',
+  'common-vent': 'dual-vent',
+  'ventilated-branch': 'branch-vent',
+};
 
 /** Traps, not fixtures: several may stand over one drawn trap. */
 function trapsIn({ paths }: BatteryContext, fixtures: readonly FixtureId[]): number {

@@ -1,4 +1,5 @@
 import type { StackJoin, StackUse } from '../codes/use.ts';
+import { carriedBy } from '../loads/carried.ts';
 import type { Loads } from '../loads/loads.ts';
 import type { Network, PipeId } from '../network/network.ts';
 import type { FixtureId, Paths } from '../paths/paths.ts';
@@ -154,6 +155,7 @@ export function stackUseAt(context: StackContext, stack: Stack, section: PipeId)
     footLoad: loads.pipes[stack.foot]!.load,
     footClosets: loads.pipes[stack.foot]!.closets,
     footCounts: loads.pipes[stack.foot]!.counts,
+    carries: carriedBy(loads, stack.foot),
     joins: stackJoins(context, stack, section),
     allJoins: stackJoins(context, stack, stack.foot),
     rise: stack.pipes.reduce((sum, pipe) => (paths.vertical[pipe] === true ? sum + stream.span(pipe) : sum), 0),

@@ -1,5 +1,6 @@
 import type { BatteryFacts, Broken } from '../codes/battery.ts';
 import type { PipeUse, Reading } from '../codes/use.ts';
+import type { TrapWay } from '../codes/way.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import type { FixtureId, TrapAir } from '../paths/paths.ts';
 import type { Stack } from './find-stacks.ts';
@@ -17,6 +18,8 @@ export interface Roles {
   readonly venting: readonly Venting[];
   /** By fixture id; null for unvented traps. */
   readonly arms: readonly (TrapArm | null)[];
+  /** By fixture id: the way to what gives the trap's drain air; empty where the code does not ask. */
+  readonly ways: readonly (TrapWay | null)[];
   /** Every dry foot with open air above it, in the order of joints. */
   readonly feet: readonly VentFoot[];
   readonly floors: Floors;

@@ -1,6 +1,9 @@
-import type { VentUse } from '../codes/use.ts';
+import type { Reading, VentUse } from '../codes/use.ts';
+import type { StatedUses } from '../codes/way.ts';
+import { statedUses } from '../loads/uses-apart.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import type { FixtureId } from '../paths/paths.ts';
+import { spaceTurn } from '../paths/turns.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Load } from '../units/quantity.ts';
 import type { BatteryContext } from './battery-facts.ts';
@@ -18,6 +21,9 @@ const followers: ReadonlySet<string> = new Set([
   'yoke-vent',
   'offset-relief-vent',
 ]);
+
+/** Readings under which a stack is its own vent. */
+const ownVents: ReadonlySet<Reading> = new Set(['waste-stack-vent', 'single-stack']);
 
 /** Load, length and largest trap that enter the vent tables, for every used dry pipe. */
 export function ventUses(
@@ -71,6 +77,10 @@ export function ventUses(
       load: loadOf(context, sum, stacks),
       length: length?.total ?? null,
       level: length?.level ?? null,
+      bends: it.foot === null ? null : bendsOf(context, roles, it.foot),
+      valve: sum.feet.length > 0 && sum.feet.every(({ piece }) => breathesByValve(context, piece)),
+      largest: Math.max(0, ...[...sum.fixtures].map((fixture) => loads.fixtures[fixture]!.load)) as Load,
+      statedUses: usesOf(context, [...sum.fixtures]),
       closets: traps.filter((fixture) => loads.fixtures[fixture]!.row.closet).length,
       counts: Object.fromEntries(
         code.counts.map(({ id, takes }) => [
@@ -80,6 +90,11 @@ export function ventUses(
       ),
       largestTrap: largestTrap(context, sum, it, batteries),
       stack: it.role === 'stack-vent' || it.role === 'vent-stack' ? stack : null,
+      stackReading:
+        it.stack === null
+          ? null
+          : (batteries.find(({ facts, reading }) => facts.stack?.id === it.stack?.id && ownVents.has(reading))
+              ?.reading ?? null),
       stacks: [...sum.stacks].sort((a, b) => a - b).map((id) => stackUses.get(id)!),
       follows:
         it.role === 'relief-vent' || it.role === 'additional-circuit-vent'
@@ -102,6 +117,23 @@ export function ventUses(
   }
   return uses;
 }
+
+/** Loads of fixtures whose frequency of use is stated, as on a drain that carried them. */
+const usesOf = ({ frequencyOf, loads }: BatteryContext, fixtures: readonly FixtureId[]): StatedUses =>
+  statedUses(fixtures.map((fixture) => ({ frequency: frequencyOf(fixture), load: loads.fixtures[fixture]!.load })));
+
+/** Turns of a vent as long as it is what it starts as. */
+function bendsOf({ network }: BatteryContext, roles: ReadonlyMap<PipeId, DryRole>, { path, joint }: VentFoot): number {
+  const role = roles.get(path[0]!)!.role;
+  const ends = path.findIndex((pipe) => roles.get(pipe)!.role !== role);
+  return spaceTurn(network, ends < 0 ? path : path.slice(0, ends), joint) / quarter;
+}
+
+const quarter = 90;
+
+/** Every way out of the piece is an air admittance valve. */
+const breathesByValve = ({ paths }: BatteryContext, piece: number): boolean =>
+  paths.pieces[piece]!.mouths.every(({ how }) => how === 'valve');
 
 function tankOf({ tankAt, stream }: BatteryContext, foot: JointId): VentUse['tank'] {
   const kind = tankAt(foot);

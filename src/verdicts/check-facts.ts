@@ -55,6 +55,9 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
             },
       outletLength: path.water.slice(0, after).reduce((sum, pipe) => sum + stream.span(pipe), 0),
       kind: loads.fixtures[fixture]!.row.title,
+      refused: loads.fixtures[fixture]!.row.refused === true,
+      row: loads.fixtures[fixture]!.row.id,
+      way: roles.ways[fixture] ?? null,
     };
   });
 

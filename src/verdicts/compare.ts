@@ -20,14 +20,25 @@ export function comparePipes(network: Network, code: PlumbingCode, runs: readonl
       : null;
     const provisional = sizes.some((one) => one.provisional);
     const { size: modelled, reason } = shown.loads.modelled[id]!;
-    return { load, ventLoad, required, provisional, ...verdictOf(modelled, reason, required, shown, id, code) };
+    const open = isOpenByEntries(runs, load) ? byEntries : byFixtures;
+    return { load, ventLoad, required, provisional, ...verdictOf(modelled, reason, required, open, shown, id, code) };
   });
 }
+
+/** Why a size is a range, and what settles it. */
+const byFixtures = 'depends on a fixture that is not identified';
+export const byEntries = 'depends on how the drains enter the stack, square or swept';
+
+/** No fixture is open, or none of them drains here; what is left is the way drains enter a stack. */
+const isOpenByEntries = (runs: readonly Run[], load: Range<Load>): boolean =>
+  load.least === load.most &&
+  runs.some(({ roles }) => roles.uses.some(({ stack }) => stack?.entries?.some(({ known }) => !known) === true));
 
 function verdictOf(
   modelled: NominalSize | null,
   unread: string | null,
   required: Range<NominalSize | null> | null,
+  open: string,
   shown: Run,
   pipe: number,
   { series: { rank } }: PlumbingCode,
@@ -48,7 +59,7 @@ function verdictOf(
   }
   if (modelled === null) return { verdict: 'unknown', reason: unread ?? 'no size in the model' };
   if (rank(modelled) < rank(least)) return { verdict: 'undersized', reason: null };
-  if (rank(modelled) < rank(most)) return { verdict: 'unknown', reason: 'depends on a fixture that is not identified' };
+  if (rank(modelled) < rank(most)) return { verdict: 'unknown', reason: open };
   return { verdict: rank(modelled) === rank(most) ? 'agrees' : 'oversized', reason: null };
 }
 

@@ -1,0 +1,22 @@
+import { carriedBy } from '../loads/carried.ts';
+import type { BatteryContext } from './battery-facts.ts';
+import type { Venting } from './roles.ts';
+import type { TrapWays } from './trap-ways.ts';
+
+/** Traps that no vent serves, but whose own branch is short enough for the code, need none. By fixture id. */
+export function throughShortBranches(
+  { code, loads }: BatteryContext,
+  venting: readonly Venting[],
+  ways: TrapWays | null,
+): readonly Venting[] {
+  const { shortBranch } = code;
+  if (shortBranch === undefined || ways === null) return venting;
+  return venting.map((it, fixture): Venting => {
+    const way = ways.traps[fixture] ?? null;
+    const last = way?.pipes.at(-1);
+    if (it.how !== 'unvented' || way === null || last === undefined) return it;
+    const closetTurn = ways.reach.get(last)?.closetTurn ?? 0;
+    const free = shortBranch({ way, row: loads.fixtures[fixture]!.row, carried: carriedBy(loads, last), closetTurn });
+    return free === null ? it : { ...it, how: 'free', free };
+  });
+}
