@@ -5,7 +5,7 @@ const inches =
   /(?<![\d.,/])(?:\d{1,2}(?:[.,]\d{1,3})?(?:[ -]?(?:\d\/\d|[¼½¾⅜⅝]))?|\d\/\d|[¼½¾⅜⅝])\s{0,2}(?:"|”|″|''|inch(?:es)?\b|in\b)/iu;
 const nominal = /(?<![\p{L}\d])(?:DN|NW)[ _-]?\d{2,4}(?![\d.,])/iu;
 const marked = /[ØøΦφ⌀]\s?\d{2,4}(?:[.,]\d{1,2})?(?!\d)/u;
-const millimetres = /(?<![\d.,xX×/])\d{2,4}(?:[.,]\d{1,2})?\s?mm\b(?!\s?[xX×/])/u;
+const millimetres = /(?<![\d.,/]|[xX×]\s{0,2})\d{2,4}(?:[.,]\d{1,2})?\s?mm\b(?!\s?[xX×/])/u;
 /** `Circ_0.4x0.06`: a round section in metres, bore or outside by wall. */
 const roundSection = /(?<!\p{L})Circ\w{0,10}?_(0?\.\d{1,4})\s?x\s?0?\.\d{1,4}/iu;
 /** Sizes of plastic drains that are written bare in type names: `82.5`, `110`. */
