@@ -2,9 +2,11 @@ import { Command } from 'commander';
 import { addCheck } from './commands/check.ts';
 import { addCodes } from './commands/codes.ts';
 import { addExplain } from './commands/explain.ts';
+import { addReport } from './commands/report.ts';
 import { addSize } from './commands/size.ts';
 import { addSurvey } from './commands/survey.ts';
 import { addView } from './commands/view.ts';
+import { addWeigh } from './commands/weigh.ts';
 import { programVersion } from './program-version.ts';
 
 /** The whole command line. Verbs load what they need when they run, so that `--help` is quick. */
@@ -17,7 +19,7 @@ export function program(): Command {
     .showHelpAfterError('(--help shows what can be asked)')
     .exitOverride()
     .configureHelp({ sortSubcommands: false, helpWidth: 100 });
-  for (const add of [addCheck, addSize, addView, addSurvey, addExplain, addCodes]) add(command);
+  for (const add of [addCheck, addSize, addView, addSurvey, addExplain, addWeigh, addReport, addCodes]) add(command);
   command.addHelpText('after', exitHelp);
   return command;
 }

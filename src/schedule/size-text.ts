@@ -32,6 +32,14 @@ export function viewText(result: Result, file: WrittenFile): TextLine[] {
   return [...titleText(result), ...sumsText(result), ...paragraph(page, '', 'good'), ...caution(result)];
 }
 
+/** What `report` tells: the sums, and where the report is. */
+export const reportText = (result: Result, file: WrittenFile): TextLine[] => [
+  ...titleText(result),
+  ...sumsText(result),
+  ...paragraph(`Written: ${writtenText(file)}.`, '', 'good'),
+  ...caution(result),
+];
+
 const writtenText = ({ path, bytes, sha256 }: WrittenFile): string => `${path} (${bytes} bytes, SHA-256 ${sha256})`;
 
 const caution = ({ caution: words }: Result): TextLine[] => paragraph(words, '', 'quiet');

@@ -253,6 +253,7 @@ function wallOf({ code }: Outcome, index: ResultIndex, { wall }: Quantities): We
     depth: millimetres(wall.depthMm),
     stud: wall.stud,
     judgedBy: wall.by,
+    lies: wall.lies,
     size: index.size(wall.size),
     ...(wall.made === wall.size ? {} : { laidAs: index.size(wall.made) }),
     outside: millimetres(wall.outerMm),
@@ -269,6 +270,7 @@ function wallOf({ code }: Outcome, index: ResultIndex, { wall }: Quantities): We
         ? null
         : {
             size: index.size(bored.size),
+            outside: millimetres(bored.outerMm),
             hole: millimetres(bored.holeMm),
             source: `${holes.document}, ${holes.stud.clause}`,
             limits: bored.limits.map(({ stud, loadbearing, other }) => ({

@@ -18,7 +18,7 @@ export function weighText(result: WeighResult): TextLine[] {
   const groups = alike(batteries);
   return [
     ...paragraph(
-      `${shownText(model.file)}, ${code.id}: ${counted(batteries.length, 'batteries').replace(/ies(es)?$/, batteries.length === 1 ? 'y' : 'ies')} weighed. * as modelled; lengths are developed lengths.`,
+      `${shownText(model.file)}, ${code.id}: ${counted(batteries.length, 'battery')} weighed. * as modelled; lengths are developed lengths.`,
       '',
     ),
     ...groups.flatMap((group) => batteryText(group, result.currency)),
@@ -136,7 +136,7 @@ function rowsOf(alternatives: readonly WeighAlternative[], currency: string | un
         : floorHoles.map(({ size, count }) => unbroken(`${count} × ${size?.label ?? '?'}`)).join(', '),
     ),
     row('vents added', ({ adds }) => addsText(adds)),
-    row('left out', ({ leavesOut }) => addsText(leavesOut)),
+    row('left out', ({ leavesOut }) => leftOutText(leavesOut)),
     row('pipes that change', ({ resizes, modelled }) => (modelled ? '' : resizesText(resizes))),
   ];
   if (currency !== undefined)
@@ -179,6 +179,16 @@ function addsText(list: readonly { readonly role: string; readonly length: numbe
     ([role, { count, length }]) => `${counted(count, plainWords(role))} ${unbroken(`${length.toFixed(2)} m`)}`,
   );
   return told.length === 0 ? 'none' : told.join(', ');
+}
+
+/** `relief vent 7.19 m`: one vent may be several pipes of the model. */
+function leftOutText(list: WeighAlternative['leavesOut']): string {
+  const lengths = new Map<string, number>();
+  for (const { role, length } of list) lengths.set(role, (lengths.get(role) ?? 0) + length);
+  return (
+    [...lengths].map(([role, length]) => `${plainWords(role)} ${unbroken(`${length.toFixed(2)} m`)}`).join(', ') ||
+    'none'
+  );
 }
 
 /** `9 from 4 in to 3 in`: by change, most first. */

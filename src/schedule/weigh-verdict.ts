@@ -30,7 +30,7 @@ function governs(holding: readonly WeighAlternative[]): string {
   const studs = grouped(holding, ({ wall }) => (wall === null ? null : (wall.stud ?? 'none')));
   const takes = (studs ?? []).map(([stud, some]) => {
     const sizes = listed([...new Set(some.map(({ wall }) => laidText(wall!)))]);
-    return `${named(some)} ${stud === 'none' ? `no usual stud takes it (${sizes})` : `it takes studs of ${stud} (${sizes})`}`;
+    return `${named(some)} asks for ${stud === 'none' ? 'more than any usual stud' : `studs of ${stud}`} (${sizes})`;
   });
   if (drawn !== null) {
     const [fits, not] = ['true', 'false'].map((said) => drawn.find(([one]) => one === said)![1]);
@@ -42,9 +42,9 @@ function governs(holding: readonly WeighAlternative[]): string {
   if (bored !== null) {
     const asks = bored.map(([stud, some]) => {
       const sizes = listed([...new Set(some.map(({ wall }) => wall!.bored!.size.label))]);
-      return `${named(some)} ${stud === 'none' ? 'no usual stud may be' : `${stud} may be`} (${sizes})`;
+      return `${named(some)} asks for ${stud === 'none' ? 'more than any usual stud' : stud} (${sizes})`;
     });
-    return `The wall governs, for its studs are bored by level pipes: ${asks.join(', ')}${pipe}`;
+    return `The wall governs, its studs bored by level pipes: ${asks.join(', ')}${pipe}`;
   }
   const below = grouped(holding, ({ largest }) => largest?.underFloor?.label ?? null);
   if (below !== null)

@@ -115,6 +115,8 @@ export interface WeighWall {
   /** Shallowest stud between which it fits; null: none of the usual ones. */
   readonly stud: string | null;
   readonly judgedBy: 'fitting' | 'pipe';
+  /** The widest pipe stands between studs, or runs along the wall. */
+  readonly lies: 'upright' | 'along';
   readonly size: SizeLabel;
   /** Next larger size that is made, where the pipe's material does not come in the size that is asked. */
   readonly laidAs?: SizeLabel;
@@ -139,6 +141,8 @@ export interface WeighModelledWall {
 
 export interface WeighBored {
   readonly size: SizeLabel;
+  /** Of the pipe, metres. */
+  readonly outside: number;
   /** Metres. */
   readonly hole: number;
   readonly source: string;

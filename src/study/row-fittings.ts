@@ -11,6 +11,8 @@ export interface Fitting {
   readonly size: NominalSize;
   /** Of a junction the largest branch, of a reducer the smaller end. */
   readonly branch: NominalSize | null;
+  /** A pipe of that size that ends in it. */
+  readonly pipe: PipeId;
 }
 
 const degrees = 180 / Math.PI;
@@ -41,7 +43,7 @@ export function fittingsOf(
   });
   const corners = pipes.flatMap((pipe) => {
     const size = sizeOf(pipe);
-    return size === null ? [] : cornersOf(network.pipes[pipe]!.points ?? []).map((angle) => bend(angle, size));
+    return size === null ? [] : cornersOf(network.pipes[pipe]!.points ?? []).map((angle) => bend(angle, size, pipe));
   });
   return [...atJoints, ...corners];
 }
@@ -66,23 +68,24 @@ function fittingsAt(
   const ends = network.joints[joint]!.pipes.flatMap((pipe) => {
     const size = sizeOf(pipe);
     const direction = outward(network, pipe, joint);
-    return size === null || direction === null ? [] : [{ size, direction }];
+    return size === null || direction === null ? [] : [{ pipe, size, direction }];
   });
   if (ends.length < 2) return [];
   const [a, b] = run(ends);
   const size = larger(a.size, b.size);
+  const { pipe } = rank(a.size) >= rank(b.size) ? a : b;
   const smaller = rank(a.size) < rank(b.size) ? a.size : b.size;
-  const reducer: Fitting[] = smaller === size ? [] : [{ kind: 'reducer', angle: null, size, branch: smaller }];
+  const reducer: Fitting[] = smaller === size ? [] : [{ kind: 'reducer', angle: null, size, branch: smaller, pipe }];
   if (ends.length > 2) {
     const branch = ends
       .filter((end) => end !== a && end !== b)
       .map((end) => end.size)
       .reduce(larger);
-    return [{ kind: ends.length === 3 ? 'junction' : 'double-junction', angle: null, size, branch }, ...reducer];
+    return [{ kind: ends.length === 3 ? 'junction' : 'double-junction', angle: null, size, branch, pipe }, ...reducer];
   }
   const angle = 180 - angleBetween(a.direction, b.direction);
-  if (angle > straight) return [bend(angle, size), ...reducer];
-  return reducer.length > 0 || !modelled ? reducer : [{ kind: 'coupling', angle: null, size, branch: null }];
+  if (angle > straight) return [bend(angle, size, pipe), ...reducer];
+  return reducer.length > 0 || !modelled ? reducer : [{ kind: 'coupling', angle: null, size, branch: null, pipe }];
 }
 
 /** The two ends that lie most nearly in a line; equal ones by size, then as they stand. */
@@ -102,9 +105,9 @@ function run<T extends { readonly direction: Vec3 }>(ends: readonly T[]): [T, T]
 
 const angleBetween = (a: Vec3, b: Vec3): number => Math.acos(Math.min(1, Math.max(-1, dot(a, b)))) * degrees;
 
-const bend = (angle: number, size: NominalSize): Fitting => {
+const bend = (angle: number, size: NominalSize, pipe: PipeId): Fitting => {
   const made = bends.find((one) => Math.abs(one - angle) <= nearBend / 2);
-  return { kind: 'bend', angle: made ?? Math.round(angle), size, branch: null };
+  return { kind: 'bend', angle: made ?? Math.round(angle), size, branch: null, pipe };
 };
 
 function outward(network: Network, pipe: PipeId, joint: JointId): Vec3 | null {

@@ -11,6 +11,8 @@ export interface WallNeed {
   /** Widest thing in the wall: a fitting, or a pipe whose fittings no source gives. */
   readonly depthMm: number;
   readonly by: 'fitting' | 'pipe';
+  /** It stands between studs, or runs along the wall. */
+  readonly lies: 'upright' | 'along';
   readonly size: NominalSize;
   /** Size that is laid, where its material is not made in the size that is asked. */
   readonly made: NominalSize;
@@ -26,6 +28,7 @@ export interface WallNeed {
 
 export interface BoredNeed {
   readonly size: NominalSize;
+  readonly outerMm: number;
   readonly holeMm: number;
   /** By stud of the list. */
   readonly limits: readonly { readonly stud: string; readonly loadbearing: HoleFit; readonly other: HoleFit }[];
@@ -46,7 +49,10 @@ export function wallNeed({ code }: Outcome, pieces: readonly RowPiece[]): WallNe
       ? []
       : [{ ...piece, size: piece.size, width, needs, outer: width.outerMm }];
   });
-  const [widest] = [...sized].sort((a, b) => b.needs - a.needs || a.pipe - b.pipe);
+  // Of pipes as wide as each other one that stands upright is shown.
+  const [widest] = [...sized].sort(
+    (a, b) => b.needs - a.needs || Number(liesUpright(b)) - Number(liesUpright(a)) || a.pipe - b.pipe,
+  );
   if (widest === undefined) return null;
   const bodies = [...new Set(walled.flatMap(({ walls }) => walls.map(({ body }) => body)))];
   const fits = sized.flatMap(({ walls, width }) =>
@@ -64,6 +70,7 @@ export function wallNeed({ code }: Outcome, pieces: readonly RowPiece[]): WallNe
     bodies,
     depthMm: widest.needs,
     by: widest.width.fittingMm === null ? 'pipe' : 'fitting',
+    lies: liesUpright(widest) ? 'upright' : 'along',
     size: widest.size,
     made: widest.width.made ?? widest.size,
     outerMm: widest.outer,
@@ -72,6 +79,8 @@ export function wallNeed({ code }: Outcome, pieces: readonly RowPiece[]): WallNe
     bored: largest === undefined ? null : boredNeed(code, largest.size, largest.outer, widest.needs),
   };
 }
+
+const liesUpright = ({ walls }: RowPiece): boolean => walls.length === 0 || walls.some(({ run }) => run === 'upright');
 
 function boredNeed(code: Outcome['code'], size: NominalSize, outerMm: number, depth: number): BoredNeed | null {
   const limits = code.walls.studs.flatMap(({ name, depthMm }) => {
@@ -82,6 +91,7 @@ function boredNeed(code: Outcome['code'], size: NominalSize, outerMm: number, de
   if (first === undefined) return null;
   return {
     size,
+    outerMm,
     holeMm: first.other.holeMm,
     limits: limits.map(({ stud, loadbearing, other }) => ({ stud, loadbearing, other })),
     loadbearing: limits.find(({ deep, loadbearing }) => deep && loadbearing.fits)?.stud ?? null,
