@@ -168,7 +168,7 @@ describe.skipIf(chromiumPath === undefined)('the page in Chromium', () => {
       await page.locator('.pipe-list .line').first().click();
       await page.getByRole('button', { name: 'Follow the air' }).click();
       expect(await page.locator('.dock').textContent()).toContain('The air stops here');
-      expect(await page.locator('.label-undersized').first().textContent()).toContain('The air stops here');
+      await page.locator('.label-undersized', { hasText: 'The air stops here' }).waitFor();
       await page.keyboard.press('Escape');
       await page.keyboard.press('Escape');
       await page.fill('#search', '');

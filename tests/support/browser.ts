@@ -65,7 +65,7 @@ export async function testBrowser(): Promise<TestBrowser> {
         void dialog.dismiss();
       });
       await page.goto(`${url}${hash}`);
-      await page.waitForSelector('html[data-ready=yes]');
+      await page.waitForSelector('html[data-ready=yes]', { timeout: 60_000 });
       return { page, requests, complaints, close: () => context.close() };
     },
     async close() {

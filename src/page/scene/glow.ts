@@ -11,6 +11,9 @@ export interface Glow {
   dispose(): void;
 }
 
+/** More lit sections than this are left to the plain lines while the eye moves: they have the same colour there. */
+const mostPlain = 3000;
+
 /** What must be seen: drawn once more over everything, with light around it, never thinner than a few pixels. */
 export function glowOf(
   tubes: readonly Tube[],
@@ -52,7 +55,7 @@ export function glowOf(
   let [shown, cheapNow, litCount, chosenCount] = ['', false, 0, 0];
   const reveal = (): void => {
     for (const mesh of meshes) mesh.visible = !cheapNow && (mesh.material === outline ? chosenCount : litCount) > 0;
-    plain.visible = cheapNow && litCount > 0;
+    plain.visible = cheapNow && litCount > 0 && litCount <= mostPlain;
   };
   const replace = (mesh: Mesh, geometry: BufferGeometry): void => {
     mesh.geometry.dispose();

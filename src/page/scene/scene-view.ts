@@ -231,7 +231,7 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
       return [middle(0), middle(1), middle(2)];
     },
     resize() {
-      stage.resize();
+      if (!stage.resize()) return;
       stage.look(control.eye, reach);
       still();
     },

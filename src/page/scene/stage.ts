@@ -29,7 +29,8 @@ export interface Stage {
   drawStill(): void;
   project(at: Point): { readonly x: number; readonly y: number } | null;
   ray(x: number, y: number): Ray;
-  resize(): void;
+  /** Fits the picture to its place; false where that has not changed. */
+  resize(): boolean;
   /** How much to draw while moving, by what frames have cost so far. */
   readonly detail: Detail;
   dispose(): void;
@@ -39,6 +40,7 @@ export interface Stage {
 const dear = 42;
 /** A picture dearer than this is not drawn eight times only to smooth its edges. */
 const dearStill = 160;
+const coarseRatio = 0.6;
 
 /** The renderer and its camera. Nothing runs while nothing changes. Throws where the browser has no WebGL 2. */
 export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
@@ -52,7 +54,11 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
   const stats = { frames: 0, lastMs: 0, firstAt: 0, calls: 0, software };
   const ladder: readonly Detail[] = ['full', 'light', 'lines'];
   let rung = software && sections > 20_000 ? 2 : software && sections > 3000 ? 1 : 0;
+  // The last resort of a slow machine: fewer pixels while the eye moves.
+  let coarse = false;
+  const isCoarse = (): boolean => renderer.getPixelRatio() === coarseRatio;
   let asked = 0;
+  let size: readonly [number, number] = [0, 0];
   const reading = new Uint8Array(4);
   const paint = (): void => {
     const began = performance.now();
@@ -90,14 +96,18 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
       if (asked !== 0) return;
       asked = requestAnimationFrame(() => {
         asked = 0;
+        if (coarse && !isCoarse()) renderer.setPixelRatio(coarseRatio);
         paint();
-        if (stats.lastMs > dear && rung < ladder.length - 1 && sections > 500) rung++;
+        if (stats.lastMs <= dear || sections <= 500) return;
+        if (rung < ladder.length - 1) rung++;
+        else coarse = software;
       });
     },
     drawStill() {
       cancelAnimationFrame(asked);
       asked = 0;
       smooth?.end();
+      if (isCoarse()) renderer.setPixelRatio(1);
       if (smooth !== null && stats.lastMs < dearStill) smooth.begin();
       else paint();
     },
@@ -118,9 +128,12 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
     },
     resize() {
       const { clientWidth, clientHeight } = canvas;
+      if (clientWidth === size[0] && clientHeight === size[1]) return false;
+      size = [clientWidth, clientHeight];
       renderer.setSize(clientWidth, clientHeight, false);
       camera.aspect = clientWidth / Math.max(1, clientHeight);
       camera.updateProjectionMatrix();
+      return true;
     },
     dispose() {
       cancelAnimationFrame(asked);

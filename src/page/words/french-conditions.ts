@@ -1,8 +1,11 @@
 import { type FrenchFacts, has, num, text } from './french-facts.ts';
+import { frenchAmericanCondition } from './french-more-conditions.ts';
 
 /** The condition of a reading that a group breaks, in French; the same facts as its English words. */
 export function frenchCondition(f: FrenchFacts): string {
   const { facts } = f;
+  const american = frenchAmericanCondition(f);
+  if (american !== null) return american;
   const load = (key: string): string => `${f.number(num(f, key))} ${f.unit}`;
   if (has(f, 'guestUnits'))
     return `des appareils ventilés à part apportent ${load('guestUnits')}, au plus ${f.number(num(f, 'guestUnitsMost'))} peuvent s’y joindre`;

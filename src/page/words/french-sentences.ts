@@ -40,6 +40,22 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
     `${group(f)} a une ventilation terminale, et aucune ventilation d’équilibrage, ni évacuation ventilée qui en tienne lieu, ne se raccorde en aval de son dernier appareil${f.clause}.`,
   'additional-circuit-vent-missing': (f) =>
     `${group(f)} exige une ventilation terminale supplémentaire : ${frenchCondition(f)}${f.clause}.`,
+  'common-vent-not-allowed': (f) =>
+    `${group(f)} ne peut avoir une ventilation commune : ${frenchCondition(f)}${f.clause}.`,
+  'waste-stack-vent-not-allowed': (f) =>
+    `${group(f)} ne peut être ventilée par sa colonne d’eaux usées : ${frenchCondition(f)}${f.clause}.`,
+  'combination-not-allowed': (f) =>
+    `${group(f)} ne peut avoir une évacuation et ventilation combinées : ${frenchCondition(f)}${f.clause}.`,
+  'single-stack-not-allowed': (f) =>
+    `${group(f)} ne peut être ventilée par une colonne unique : ${frenchCondition(f)}${f.clause}.`,
+  'island-vent-not-allowed': (f) =>
+    `La ventilation ${first(f)} redescend avant l’air libre, ce que cet appareil ne permet pas${f.clause}.`,
+  'valve-not-allowed': (f) =>
+    `La ventilation ${first(f)} finit par un clapet d’admission d’air que le code ne permet pas ici${f.clause}.`,
+  'valve-needs-approval': (f) =>
+    `La ventilation ${first(f)} finit par un clapet d’admission d’air : ce code n’en nomme pas, l’autorité compétente décide.`,
+  'branch-near-foot': (f) =>
+    `${first(f)} se raccorde à ${f.length(num(f, 'distanceM'))} en aval du pied d’une colonne, au moins ${f.length(num(f, 'leastM'))}${f.clause}.`,
   'stack-vent-missing': (f) =>
     `La colonne de chute ${first(f)} porte ${load(f)} et ne se prolonge pas vers le haut en colonne de ventilation primaire${f.clause}.`,
   'vent-stack-missing': (f) =>
