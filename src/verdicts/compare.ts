@@ -6,6 +6,7 @@ import type { PipeVerdict, Run } from './outcome.ts';
 
 /** The size each pipe needs, over all runs, against the size the model gives it. By pipe id. */
 export function comparePipes(network: Network, code: PlumbingCode, runs: readonly Run[], shown: Run): PipeVerdict[] {
+  const entriesOpen = runs.some(({ roles }) => roles.uses.some(hasOpenEntry));
   return network.pipes.map(({ id }): PipeVerdict => {
     const load = extremes(runs.map(({ loads }) => loads.pipes[id]!.load));
     const vents = runs.map(({ roles }) => enteringLoad(roles.uses[id]!));
@@ -20,7 +21,8 @@ export function comparePipes(network: Network, code: PlumbingCode, runs: readonl
       : null;
     const provisional = sizes.some((one) => one.provisional);
     const { size: modelled, reason } = shown.loads.modelled[id]!;
-    const open = isOpenByEntries(runs, load) ? byEntries : byFixtures;
+    // No fixture is open, or none of them drains here: what is left is the way drains enter a stack.
+    const open = entriesOpen && load.least === load.most ? byEntries : byFixtures;
     return { load, ventLoad, required, provisional, ...verdictOf(modelled, reason, required, open, shown, id, code) };
   });
 }
@@ -29,10 +31,8 @@ export function comparePipes(network: Network, code: PlumbingCode, runs: readonl
 const byFixtures = 'depends on a fixture that is not identified';
 export const byEntries = 'depends on how the drains enter the stack, square or swept';
 
-/** No fixture is open, or none of them drains here; what is left is the way drains enter a stack. */
-const isOpenByEntries = (runs: readonly Run[], load: Range<Load>): boolean =>
-  load.least === load.most &&
-  runs.some(({ roles }) => roles.uses.some(({ stack }) => stack?.entries?.some(({ known }) => !known) === true));
+const hasOpenEntry = ({ stack }: Run['roles']['uses'][number]): boolean =>
+  stack?.entries?.some(({ known }) => !known) === true;
 
 function verdictOf(
   modelled: NominalSize | null,
