@@ -2,6 +2,7 @@ import type { BatteryTrap } from '../../codes/battery.ts';
 import type { Reading } from '../../codes/use.ts';
 import type { Finding } from '../../findings/finding.ts';
 import type { JointId } from '../../network/network.ts';
+import type { FixtureId } from '../../paths/paths.ts';
 import type { Battery } from '../../roles/roles.ts';
 import { unchanged } from '../changed-piping.ts';
 import { withReading } from '../edits.ts';
@@ -19,15 +20,13 @@ import { elementsAt, jointPlace, ventOptions } from './vent-changes.ts';
  */
 export function batteryOptions(scene: Scene, battery: Battery, why: Finding): Option[] {
   const { facts } = battery;
-  const asked = new Set([...battery.broken, ...circuitOf(battery)].map(({ finding }) => finding));
   return distinct([
     ...readingOptions(scene, battery, why),
-    ...(asked.has('relief-vent-missing') ? reliefOptions(scene, battery, why) : []),
-    ...(asked.has('additional-circuit-vent-missing') ? additionalOptions(scene, battery, why) : []),
+    ...missingVents(scene, battery, why),
     ...facts.traps
       .filter(({ ownVent, free }) => !ownVent && !free)
       .flatMap(({ fixture }) => ownVentOptions(scene, fixture, why, 2)),
-    ...(asked.has('circuit-vent-not-allowed') ? movedFoot(scene, battery, why) : []),
+    ...(battery.reading === 'circuit-vent' && startsWrong(battery) ? movedFoot(scene, battery, why) : []),
   ]);
 }
 
@@ -47,13 +46,38 @@ export function readingOptions({ outcome, costs }: Scene, { facts, reading, othe
     );
 }
 
-/** Circuit venting as another reading that lacks nothing but vents: a relief vent or more. */
-export const lacksVentsOnly = (battery: Battery): boolean => {
+/**
+ * What may take the place of larger pipe in a battery: another reading that holds, or what circuit venting still lacks,
+ * where that is vents or the place of its main one.
+ */
+export function otherwiseOptions(scene: Scene, battery: Battery, why: Finding): Option[] {
+  const readings = readingOptions(scene, battery, why);
   const broken = circuitOf(battery);
-  return broken.length > 0 && broken.every(({ finding }) => byAnotherVent.has(finding));
-};
+  const lacksVents = broken.every((one) => byAnotherVent.has(one.finding) || one.facts.trapsAtStart !== undefined);
+  if (battery.reading === 'circuit-vent' || broken.length === 0 || !lacksVents) return readings;
+  return [
+    ...readings,
+    ...missingVents(scene, battery, why),
+    ...(startsWrong(battery) ? movedFoot(scene, battery, why) : []),
+  ];
+}
+
+/** Relief and additional circuit vents that circuit venting asks for. A relief vent of its own may stand nearer than a drain. */
+function missingVents(scene: Scene, battery: Battery, why: Finding): Option[] {
+  const asked = new Set(circuitOf(battery).map(({ finding }) => finding));
+  const additional = asked.has('additional-circuit-vent-missing');
+  const nearer = additional && battery.facts.circuit.relief?.kind === 'drain';
+  return [
+    ...(asked.has('relief-vent-missing') || nearer ? reliefOptions(scene, battery, why) : []),
+    ...(additional ? additionalOptions(scene, battery, why) : []),
+  ];
+}
 
 const byAnotherVent: ReadonlySet<string> = new Set(['relief-vent-missing', 'additional-circuit-vent-missing']);
+
+/** As circuit vented, its main vent stands where it may not. */
+const startsWrong = (battery: Battery): boolean =>
+  circuitOf(battery).some(({ facts }) => facts.trapsAtStart !== undefined);
 
 const circuitOf = ({ reading, broken, others }: Battery) =>
   reading === ('circuit-vent' satisfies Reading)
@@ -117,6 +141,13 @@ function movedFoot(scene: Scene, { facts }: Battery, why: Finding): Option[] {
       ? []
       : ownPlaces(scene, trap.fixture).flatMap((to) => movedVentOptions(scene, facts.foot, to, why)),
   );
+}
+
+/** A vent that stands too near to its trap, set farther down its drain. */
+export function nearVentMoved(scene: Scene, fixture: FixtureId, why: Finding): Option[] {
+  const { armEnd, foot } = scene.outcome.paths.traps[fixture]!;
+  if (armEnd === null || foot !== armEnd) return [];
+  return ownPlaces(scene, fixture).flatMap((to) => movedVentOptions(scene, armEnd, to, why));
 }
 
 function footOptions(scene: Scene, { facts }: Battery, feet: readonly (PlaceAt | null)[], why: Finding): Option[] {

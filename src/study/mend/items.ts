@@ -1,13 +1,13 @@
 import type { Finding } from '../../findings/finding.ts';
 import type { ElementId } from '../../model/model.ts';
-import type { PipeId } from '../../network/network.ts';
 import type { FixtureId } from '../../paths/paths.ts';
 import type { Stack } from '../../roles/find-stacks.ts';
 import type { Battery } from '../../roles/roles.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
-import { batteryOptions, lacksVentsOnly, readingOptions, reliefOptions } from './battery-options.ts';
+import { batteryOptions, nearVentMoved, otherwiseOptions } from './battery-options.ts';
 import type { Item, Option } from './change.ts';
 import { relayArmOptions, relayPipeOptions, slopeOptions, steeperOptions, trapMoveOptions } from './drain-options.ts';
+import { lineOf, placeOf } from './places.ts';
 import type { Scene } from './scene.ts';
 import { distinct, ownVentOptions, trapOptions } from './trap-items.ts';
 import {
@@ -44,6 +44,7 @@ export const keyOf = ({ outcome }: Pick<Scene, 'outcome'>, { code, about, facts 
 type Settled = Pick<Item, 'options' | 'tier' | 'place'>;
 
 function settled(scene: Scene, finding: Finding): Settled {
+  const { outcome } = scene;
   const { code, facts } = finding;
   const fixture = fixtureOf(scene, finding);
   const at = (place: string, tier: Item['tier'], options: readonly Option[]): Settled => ({ place, tier, options });
@@ -72,7 +73,7 @@ function settled(scene: Scene, finding: Finding): Settled {
       return at(
         keyOf(scene, finding),
         3,
-        scene.outcome.shown.roles.stacks.flatMap((stack) => offsetReliefOptions(scene, stack, finding)),
+        outcome.shown.roles.stacks.flatMap((stack) => offsetReliefOptions(scene, stack, finding)),
       );
     case 'main-vent-missing':
       return at(keyOf(scene, finding), 3, mainVentOptions(scene, facts.least as NominalSize, finding));
@@ -80,21 +81,22 @@ function settled(scene: Scene, finding: Finding): Settled {
       if (typeof facts.battery === 'number') break;
       return fixture === null
         ? at('nowhere', 3, [])
-        : at(lineOf(scene, fixture), 3, trapOptions(scene, fixture, finding));
+        : at(lineOf(outcome, fixture), 3, trapOptions(scene, fixture, finding));
     case 'trap-arm-too-long':
     case 'trap-arm-too-steep':
       return fixture === null
         ? at('nowhere', 3, [])
-        : at(lineOf(scene, fixture), 3, [
+        : at(lineOf(outcome, fixture), 3, [
             ...ownVentOptions(scene, fixture, finding),
+            ...(facts.what === 'too short' ? nearVentMoved(scene, fixture, finding) : []),
             ...(code === 'trap-arm-too-steep' ? relayArmOptions(scene, fixture, finding) : []),
           ]);
     case 'slope-too-small':
-      return at(fixture === null ? keyOf(scene, finding) : lineOf(scene, fixture), 3, slopeOptions(scene, finding));
+      return at(fixture === null ? keyOf(scene, finding) : lineOf(outcome, fixture), 3, slopeOptions(scene, finding));
     case 'backfall':
-      return at(keyOf(scene, finding), 3, relayPipeOptions(scene, finding));
+      return at(placeOf(outcome, finding.about[0]!), 3, relayPipeOptions(scene, finding));
     case 'outlet-pipe-too-long':
-      return at(keyOf(scene, finding), 3, trapMoveOptions(scene, finding));
+      return at(fixture === null ? 'nowhere' : lineOf(outcome, fixture), 3, trapMoveOptions(scene, finding));
     default:
       break;
   }
@@ -102,7 +104,7 @@ function settled(scene: Scene, finding: Finding): Settled {
   const first = battery?.facts.traps[0];
   return battery === undefined || first === undefined
     ? at('nowhere', 3, [])
-    : at(lineOf(scene, first.fixture), 3, batteryOptions(scene, battery, finding));
+    : at(lineOf(outcome, first.fixture), 3, batteryOptions(scene, battery, finding));
 }
 
 const batteryWith = ({ outcome }: Scene, id: number): Battery | undefined =>
@@ -117,18 +119,6 @@ function ofStack({ outcome }: Scene, { about }: Finding, options: (stack: Stack)
     pipes.some((pipe) => outcome.network.pipes[pipe]!.element === about[0]),
   );
   return stack === undefined ? [] : options(stack);
-}
-
-/** Where a fixture's branch ends: at a stack, the building drain, or the sewer. One vent serves traps of one branch. */
-function lineOf({ outcome, stream }: Scene, fixture: FixtureId): string {
-  const { water } = outcome.paths.fixtures[fixture]!;
-  const isTrunk = (pipe: PipeId): boolean => {
-    const { drain } = outcome.shown.roles.uses[pipe]!;
-    return drain === 'stack' || drain === 'building-drain' || drain === 'building-sewer';
-  };
-  const last = water.findIndex(isTrunk);
-  const end = last === 0 ? water[0]! : (water[last < 0 ? water.length - 1 : last - 1] ?? null);
-  return `line ${end === null ? fixture : stream.down(end)} ${end ?? ''}`;
 }
 
 /** Undersized pipes of one cause, where another reading, a relief vent or a steeper fall may take the place of size. */
@@ -147,14 +137,13 @@ function undersizedItems(scene: Scene): Item[] {
     const battery = Number(/ battery (\d+)$/.exec(String(first.facts.cause))?.[1] ?? Number.NaN) - 1;
     const row = Number.isNaN(battery) ? undefined : batteryWith(scene, battery);
     const options = distinct([
-      ...(row === undefined ? [] : readingOptions(scene, row, first)),
-      ...(row !== undefined && row.reading !== 'circuit-vent' && lacksVentsOnly(row)
-        ? reliefOptions(scene, row, first)
-        : []),
+      ...(row === undefined ? [] : otherwiseOptions(scene, row, first)),
       ...steeperOptions(scene, elements, first),
     ]);
     if (options.length === 0) return [];
     const key = `undersized ${elements.map((element) => outcome.model.elements[element]!.globalId).join(' ')}`;
-    return [{ key, finding: first, options, mayStay: true, tier: 3, place: key }];
+    const head = row?.facts.traps[0];
+    const place = head === undefined ? placeOf(outcome, elements[0]!) : lineOf(outcome, head.fixture);
+    return [{ key, finding: first, options, mayStay: true, tier: 3, place }];
   });
 }

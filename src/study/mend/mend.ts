@@ -47,15 +47,15 @@ export const usualRuns = 600;
 
 export function mend(first: Outcome, weights: Weights, mostRuns = usualRuns): Plan {
   const costs = costsOf(first, weights);
-  const { options, settled, cost, runs, least, exact } = search(first, costs, mostRuns);
-  const last = settled.outcome;
-  const changes = options.flatMap(({ change, why, cost: points }): PlanStep[] =>
+  const { state, settled, cost, runs, least, exact } = search(first, costs, mostRuns);
+  const last = settled?.outcome ?? first;
+  const changes = state.made.flatMap(({ option: { change, why, cost: points } }): PlanStep[] =>
     change === null ? [] : [{ kind: 'change', change, why, cost: points }],
   );
   return {
     first,
     last,
-    steps: [...changes, ...sizeSteps(first, last, settled.sizes, costs.resize)],
+    steps: [...changes, ...sizeSteps(first, last, settled?.sizes ?? new Map(), costs.resize)],
     cost,
     weights,
     exact,

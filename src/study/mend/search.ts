@@ -1,235 +1,164 @@
 import type { ElementId } from '../../model/model.ts';
-import { type Piping, runNetwork } from '../../pipeline.ts';
-import type { NominalSize } from '../../units/nominal-size.ts';
 import type { Outcome } from '../../verdicts/outcome.ts';
-import { pipingOf } from '../piping-of.ts';
-import type { Item, Option } from './change.ts';
+import { bestFirst, type Complete, openErrors, type Task } from './best-first.ts';
+import type { Item } from './change.ts';
 import type { Costs } from './costs.ts';
-import { bySizeAlone, itemsOf, keyOf } from './items.ts';
-import { type FirstSizes, firstSizes } from './resize.ts';
-import { sceneOf } from './scene.ts';
-import { type Settled, settleSizes, withSizes } from './settle-sizes.ts';
-import { StateQueue } from './state-queue.ts';
+import { ownPipes } from './places.ts';
+import { firstSizes } from './resize.ts';
+import { settleSizes } from './settle-sizes.ts';
+import { type Budget, lookAt, rootState, type State, stateAfter } from './state.ts';
 
-/** A building some changes into a plan. */
-export interface State {
-  readonly piping: Piping;
-  readonly options: readonly Option[];
-  readonly pins: ReadonlyMap<ElementId, NominalSize>;
-  /** Undersized pipes that larger pipe shall settle, by item. */
-  readonly stay: ReadonlySet<string>;
-  /** Of the changes made, without sizes. */
-  readonly cost: number;
-  /** No plan that goes on from here costs less. */
-  readonly bound: number;
-  /** Known where the piping is that of another state. */
-  readonly outcome: Outcome | null;
-  /** Its pipes have their new sizes already: sizing brought up what more has to be changed. */
-  readonly sized: boolean;
-}
-
-export interface Found {
-  readonly options: readonly Option[];
-  readonly settled: Settled;
-  readonly cost: number;
-  /** Engine runs that were made. */
+export interface Found extends Complete {
+  /** Runs of the stages that were made. */
   readonly runs: number;
   /** No plan of the known changes costs less. */
   readonly least: number;
   /** Every combination that could cost less was tried. */
   readonly exact: boolean;
-  /** Errors that no known change settles, by key. */
-  readonly left: ReadonlySet<string>;
 }
 
-const tiny = 1e-9;
+const tiny = 1e-6;
 
 /**
- * The cheapest combination of changes after which no error is left that a known change can settle. Best first: the state
- * with the lowest bound is looked at next, its first item is settled in every way there is, and a plan is the cheapest
- * when no state is left that could cost less. `mostRuns` of the stages are made; past them the best plan found counts,
- * and it says so.
+ * The cheapest combination of changes after which no error is left that a known change settles. First every place of
+ * the building by itself: what it costs at least, and its cheapest plan; these together are a plan, and the cheapest one
+ * where they share no pipe. Where they do, a search over all of them goes on from there. `mostRuns` of the stages are made.
  */
 export function search(first: Outcome, costs: Costs, mostRuns: number): Found {
-  const sizes = firstSizes(first);
-  const root: State = {
-    piping: pipingOf(first),
-    options: [],
-    pins: new Map(),
-    stay: new Set(),
-    cost: 0,
-    bound: 0,
-    outcome: first,
-    sized: false,
-  };
-  const left = new Set(
-    itemsOf(sceneOf(first, costs))
-      .filter(({ options, mayStay }) => options.length === 0 && !mayStay)
-      .map(({ key }) => key),
-  );
-  const searching = new Searching(sizes, costs, left, mostRuns);
-  searching.dive(root);
-  return searching.run(root);
+  const searching = new Searching(first, costs, { left: mostRuns });
+  const found = searching.run();
+  return { ...found, runs: mostRuns - searching.budget.left };
 }
 
 class Searching {
-  readonly #sizes: FirstSizes;
+  readonly budget: Budget;
   readonly #costs: Costs;
-  readonly #left: ReadonlySet<string>;
-  readonly #most: number;
-  readonly #queue = new StateQueue();
-  readonly #seen = new Set<string>();
-  #runs = 0;
-  #best: { options: readonly Option[]; settled: Settled; cost: number } | null = null;
+  readonly #root: State;
+  readonly #sizes: Task['first'];
+  /** Errors that no known change settles, by key. */
+  readonly #left = new Set<string>();
 
-  constructor(sizes: FirstSizes, costs: Costs, left: ReadonlySet<string>, most: number) {
-    this.#sizes = sizes;
+  constructor(first: Outcome, costs: Costs, budget: Budget) {
+    this.budget = budget;
     this.#costs = costs;
-    this.#left = left;
-    this.#most = most;
+    this.#root = rootState(first);
+    this.#sizes = firstSizes(first);
   }
 
-  /** A first plan: the cheapest option of the first item, again and again. It bounds the search. */
-  dive(root: State): void {
-    let state: State | undefined = root;
-    for (let depth = 0; state !== undefined && depth < this.#most; depth++) {
+  run(): Omit<Found, 'runs'> {
+    const begun = this.#begun();
+    const { plans, least } = this.#eachPlace(begun);
+    const known = this.#together(begun, plans);
+    // What open air and the tops of stacks ask for comes first and bears on all places: their costs are not apart.
+    const bounds = begun.made.length === 0 ? least : new Map<string, number>();
+    const sum = [...bounds.values()].reduce((all, one) => all + one, 0);
+    if (known !== null && known.cost <= sum + tiny) return { ...known, least: known.cost, exact: true };
+    const task: Task = { ...this.#task(this.#root), least: bounds, known };
+    const searched = bestFirst(task);
+    const best = searched.best ?? this.#nothing();
+    return { ...best, least: searched.exact ? best.cost : searched.least, exact: searched.exact };
+  }
+
+  #task = (root: State): Omit<Task, 'least' | 'known'> => ({
+    root,
+    first: this.#sizes,
+    costs: this.#costs,
+    left: this.#left,
+    ours: () => true,
+    counted: null,
+    budget: this.budget,
+  });
+
+  /** Past what bears on all places: the cheapest option of each, one after the other. */
+  #begun(): State {
+    let state = this.#root;
+    for (;;) {
+      const { outcome, must } = this.#look(state);
+      const item = must.find(({ tier }) => tier < 3);
+      const option = item === undefined ? undefined : cheapest(item);
+      if (item === undefined || option === undefined || this.budget.left <= 0) return { ...state, outcome };
+      state = stateAfter(state, outcome, item, option, this.#sizes, this.#costs);
+    }
+  }
+
+  /** What is wrong; an error that no change is known for is let be from here on. */
+  #look(state: State): ReturnType<typeof lookAt> {
+    const looked = lookAt(state, this.#costs, this.#left, this.budget);
+    for (const { key, options } of looked.must) if (options.length === 0) this.#left.add(key);
+    return { ...looked, must: looked.must.filter(({ options }) => options.length > 0) };
+  }
+
+  #eachPlace(begun: State): { plans: Complete[]; least: Map<string, number> } {
+    const { outcome, must, may } = this.#look(begun);
+    const items = [...must, ...may];
+    const known = new Set(items.map(({ key }) => key));
+    const places = [...new Set(items.map(({ place }) => place))];
+    const plans: Complete[] = [];
+    const least = new Map<string, number>();
+    places.forEach((place, at) => {
+      const own = items.filter((item) => item.place === place);
+      const pinned = own.flatMap(({ options }) => options.flatMap(({ pins }) => pins.map(([element]) => element)));
+      const counted = new Set([...ownPipes(outcome, place), ...pinned]);
+      // Each place has its share of what is left, so that one hard one does not starve the others.
+      const share: Budget = { left: Math.ceil(this.budget.left / (places.length - at + 1)) };
+      const before = share.left;
+      const searched = bestFirst({
+        ...this.#task({ ...begun, cost: 0, spent: new Map() }),
+        costs: onlyFor(this.#costs, counted),
+        ours: (item) => item.place === place || !known.has(item.key),
+        counted,
+        least: new Map(),
+        budget: share,
+        known: null,
+      });
+      this.budget.left -= before - share.left;
+      least.set(place, searched.best === null ? 0 : searched.least);
+      if (searched.best !== null) plans.push(searched.best);
+      // No combination of what is known settles these: the other places still get their plan.
+      else for (const { key, mayStay } of own) if (!mayStay) this.#left.add(key);
+    });
+    return { plans, least };
+  }
+
+  /** The plans of all places in one building: each change is found again, since the piping has changed meanwhile. */
+  #together(begun: State, plans: readonly Complete[]): Complete | null {
+    let state = begun;
+    let outcome = begun.outcome!;
+    const steps = plans.flatMap(({ state: planned }) => planned.made.slice(begun.made.length));
+    for (const step of steps) {
       const looked = this.#look(state);
-      const item: Item | undefined = looked.must[0];
-      if (looked.dead) return;
-      if (item === undefined) {
-        this.#complete(state, looked.outcome);
-        return;
-      }
-      const cheapest = [...item.options].sort((a, b) => a.cost - b.cost)[0];
-      state = cheapest === undefined ? undefined : this.#after(state, looked.outcome, cheapest, 0);
+      outcome = looked.outcome;
+      const items = [...looked.must, ...looked.may];
+      const same = items.flatMap((item) =>
+        item.options.filter(({ key }) => key === step.option.key).map((option) => ({ item, option })),
+      )[0];
+      const item = items.find(({ key }) => key === step.item);
+      const option = item === undefined ? undefined : cheapest(item);
+      const chosen = same ?? (item === undefined || option === undefined ? undefined : { item, option });
+      state = { ...state, outcome };
+      if (chosen !== undefined)
+        state = stateAfter(state, outcome, chosen.item, chosen.option, this.#sizes, this.#costs);
     }
+    const looked = this.#look(state);
+    if (looked.must.length > 0) return null;
+    const settled = settleSizes(state.piping, looked.outcome, this.#sizes, state.pins, this.#costs);
+    this.budget.left -= settled.runs;
+    if (openErrors(settled.outcome, this.#left).length > 0) return null;
+    return { state: { ...state, outcome: looked.outcome }, settled, cost: state.cost + settled.cost };
   }
 
-  run(root: State): Found {
-    this.#queue.push(root);
-    let least = 0;
-    let exact = true;
-    for (let state = this.#queue.pop(); state !== null; state = this.#queue.pop()) {
-      least = Math.max(least, Math.min(state.bound, this.#best?.cost ?? Number.POSITIVE_INFINITY));
-      if (this.#best !== null && state.bound >= this.#best.cost - tiny) break;
-      if (this.#runs >= this.#most) {
-        exact = false;
-        break;
-      }
-      this.#expand(state);
-    }
-    const best = this.#best;
-    if (best === null) return this.#nothing(root);
-    return { ...best, runs: this.#runs, least: exact ? best.cost : least, exact, left: this.#left };
-  }
-
-  #nothing(root: State): Found {
-    const settled = settleSizes(root.piping, root.outcome!, this.#sizes, root.pins, this.#costs);
-    this.#runs += settled.runs;
-    const { cost } = settled;
-    return { options: [], settled, cost, runs: this.#runs, least: 0, exact: false, left: this.#left };
-  }
-
-  #expand(state: State): void {
-    const { outcome, must, may, dead, ahead } = this.#look(state);
-    if (dead) return;
-    const bound = Math.max(state.bound, state.cost + this.#pinCost(state.pins) + ahead);
-    if (this.#best !== null && bound >= this.#best.cost - tiny) return;
-    const item = must[0];
-    if (item !== undefined) {
-      for (const option of item.options) this.#push(this.#after(state, outcome, option, bound));
-      return;
-    }
-    if (state.stay.size === 0 || state.outcome === null) this.#complete(state, outcome);
-    const open = may[0];
-    if (open === undefined) return;
-    for (const option of open.options) this.#push(this.#after(state, outcome, option, bound));
-    // The same building, with these pipes left to their sizes: nothing is run again.
-    this.#queue.push({ ...state, bound, outcome, stay: new Set([...state.stay, open.key]) });
-  }
-
-  #look(state: State): { outcome: Outcome; must: Item[]; may: Item[]; dead: boolean; ahead: number } {
-    const outcome = state.outcome ?? runNetwork(state.piping);
-    if (state.outcome === null) this.#runs++;
-    const items = itemsOf(sceneOf(outcome, this.#costs));
-    const used = new Set(state.options.map(({ key }) => key));
-    const must = items
-      .filter(({ key, mayStay }) => !mayStay && !this.#left.has(key))
-      .map((item) => ({ ...item, options: item.options.filter(({ key }) => !used.has(key)) }));
-    const may = items.filter(({ key, mayStay }) => mayStay && !state.stay.has(key));
-    const ahead = costAhead(must, (option) => this.#leastOf(state, option));
-    return { outcome, must, may, dead: must.some(({ options }) => options.length === 0), ahead };
-  }
-
-  #after(state: State, outcome: Outcome, option: Option, bound: number): State {
-    const pins = new Map(state.pins);
-    const { rank } = state.piping.code.series;
-    for (const [element, size] of option.pins) {
-      const known = pins.get(element);
-      if (known === undefined || rank(size) > rank(known)) pins.set(element, size);
-    }
-    const changed = option.change === null ? state.piping : option.change.apply(state.piping);
-    const cost = state.cost + (option.change === null ? 0 : option.cost);
-    return {
-      piping: option.pins.length === 0 ? changed : withSizes(changed, outcome, new Map(option.pins)),
-      options: [...state.options, option],
-      pins,
-      stay: state.stay,
-      cost,
-      bound: Math.max(bound, cost + this.#pinCost(pins)),
-      outcome: null,
-      sized: state.sized,
-    };
-  }
-
-  /** What an option adds at least to the cost of a state: sizes that are pinned already count once. */
-  #leastOf({ pins }: State, { change, cost, pins: own }: Option): number {
-    if (change !== null) return cost;
-    const known = own.reduce((sum, [element]) => {
-      const [size, drawn] = [pins.get(element), this.#sizes.get(element)];
-      return size === undefined || drawn === undefined ? sum : sum + this.#costs.resize(element, drawn, size);
-    }, 0);
-    return Math.max(0, cost - known);
-  }
-
-  /** One set of changes is looked at once, in whatever order they were made. */
-  #push(state: State): void {
-    const key = [...state.options.map((option) => option.key).sort(), '|', ...[...state.stay].sort()].join('\n');
-    if (this.#seen.has(key) || (this.#best !== null && state.bound >= this.#best.cost - tiny)) return;
-    this.#seen.add(key);
-    this.#queue.push(state);
-  }
-
-  #complete(state: State, outcome: Outcome): void {
-    const settled = settleSizes(state.piping, outcome, this.#sizes, state.pins, this.#costs);
-    this.#runs += settled.runs;
-    const open = settled.outcome.findings.filter(
-      (finding) => finding.severity === 'error' && !this.#left.has(keyOf(settled, finding)),
-    );
-    const cost = state.cost + settled.cost;
-    if (open.some(({ code }) => !bySizeAlone.has(code)) && !state.sized)
-      this.#queue.push({ ...state, piping: settled.piping, outcome: settled.outcome, sized: true });
-    if (open.length > 0 || (this.#best !== null && cost >= this.#best.cost - tiny)) return;
-    this.#best = { options: state.options, settled, cost };
-  }
-
-  #pinCost(pins: State['pins']): number {
-    let sum = 0;
-    for (const [element, size] of pins) {
-      const drawn = this.#sizes.get(element);
-      if (drawn !== undefined) sum += this.#costs.resize(element, drawn, size);
-    }
-    return sum;
+  /** No plan was found: larger pipe alone, and the errors that are left. */
+  #nothing(): Complete {
+    const settled = settleSizes(this.#root.piping, this.#root.outcome!, this.#sizes, new Map(), this.#costs);
+    this.budget.left -= settled.runs;
+    return { state: this.#root, settled, cost: settled.cost };
   }
 }
 
-/** What the first items that are open cost at least: one change may settle all of one place, none those of two. */
-export function costAhead(must: readonly Item[], least: (option: Option) => number): number {
-  const tier = Math.min(...must.map((item) => item.tier));
-  const places = new Map<string, number>();
-  for (const { place, options, tier: own } of must) {
-    if (own !== tier || options.length === 0) continue;
-    places.set(place, Math.max(places.get(place) ?? 0, Math.min(...options.map(least))));
-  }
-  return [...places.values()].reduce((sum, one) => sum + one, 0);
-}
+const cheapest = ({ options }: Item) => [...options].sort((a, b) => a.cost - b.cost || (a.key < b.key ? -1 : 1))[0];
+
+/** Costs of a search in one place: sizes of other pipes are free. */
+const onlyFor = (costs: Costs, counted: ReadonlySet<ElementId>): Costs => ({
+  ...costs,
+  resize: (pipe, from, to) => (counted.has(pipe) ? costs.resize(pipe, from, to) : 0),
+});

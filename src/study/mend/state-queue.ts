@@ -1,4 +1,4 @@
-import type { State } from './search.ts';
+import type { State } from './state.ts';
 
 /** States by their bound; of equal ones the one with more changes, then the one that came first. */
 export class StateQueue {
@@ -43,7 +43,7 @@ export class StateQueue {
     const [x, y] = [this.#heap[a]!, this.#heap[b]!];
     const bounds = x.state.bound - y.state.bound;
     if (Math.abs(bounds) > 1e-9) return bounds < 0;
-    const depths = y.state.options.length - x.state.options.length;
+    const depths = y.state.made.length - x.state.made.length;
     return depths === 0 ? x.turn < y.turn : depths < 0;
   }
 

@@ -9,19 +9,21 @@ import { elementsAt, jointPlace, ventOptions } from './vent-changes.ts';
 /** A vent stands this far from the fitting at a joint, metres. */
 const besideJoint = 0.1;
 /** Places on one drain that are tried. */
-const mostPlaces = 4;
+const mostPlaces = 3;
 /** Fixtures upstream whose vents are tried for a trap: the nearest ones, and the farthest. */
 const nearHeads = 4;
 
 /**
  * Ways to vent a trap: a vent on its own drain; one on the drain of a fixture upstream, from which its air comes through
- * the line; each to the nearest vent or through the roof.
+ * the line; each to the nearest vents or, from the first place, through the roof.
  */
 export function trapOptions(scene: Scene, fixture: FixtureId, why: Finding): Option[] {
-  const own = ownVentOptions(scene, fixture, why);
   const heads = headsOf(scene, fixture);
   const some = heads.length <= nearHeads + 1 ? heads : [...heads.slice(0, nearHeads), heads[heads.length - 1]!];
-  return distinct([...own, ...some.flatMap((head) => ownVentOptions(scene, head, why))]);
+  return distinct([
+    ...ownVentOptions(scene, fixture, why),
+    ...some.flatMap((head) => ownVentOptions(scene, head, why, 1)),
+  ]);
 }
 
 /** Vents on a fixture's own drain. `most` places, those nearest to where it joins the line first. */
@@ -30,11 +32,11 @@ export function ownVentOptions(scene: Scene, fixture: FixtureId, why: Finding, m
   return distinct(
     ownPlaces(scene, fixture)
       .slice(0, most)
-      .flatMap((foot) => {
+      .flatMap((foot, at) => {
         const served = 'joint' in foot.place ? scene.through(foot.place.joint) : [];
         const flood = scene.flood([fixture, ...served]);
         const about = [...elementsAt(scene, foot.place), element];
-        return ventOptions(scene, { foot, why, about, flood }, 1);
+        return ventOptions(scene, { foot, why, about, flood, sky: at === 0 }, at === 0 ? 4 : 2);
       }),
   );
 }

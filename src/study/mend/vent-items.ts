@@ -44,25 +44,27 @@ export function stackVentOptions(scene: Scene, stack: Stack, why: Finding): Opti
 
 const stackVents: ReadonlySet<string> = new Set(['stack-vent', 'vent-header', 'vent-stack']);
 
-/** A vent stack beside the stack, from below its lowest connection to a stack vent, a header or open air. */
+/**
+ * A vent stack beside the stack, from below its lowest connection: up to a stack vent or header, into the foot of a vent
+ * that rises from there, or through the roof.
+ */
 export function ventStackOptions(scene: Scene, stack: Stack, why: Finding): Option[] {
   const { stream, outcome } = scene;
+  const { uses } = outcome.shown.roles;
   const joints = stack.pipes.map((pipe) => stream.down(pipe));
   const lowest = joints.findLastIndex((joint, at) => at < joints.length - 1 && stream.inflows[joint]!.length > 1);
   const below = stack.pipes[lowest + 1] ?? stack.foot;
   const flood = scene.flood(scene.through(stream.down(stack.foot)));
   const feet = [alongPipe(scene, below, belowBranch), jointPlace(scene, stream.down(stack.foot))];
-  return feet.flatMap((foot) =>
-    foot === null
-      ? []
-      : ventOptions(scene, {
-          foot,
-          why,
-          about: elementsAt(scene, foot.place),
-          flood,
-          sideways: true,
-          onto: (pipe) => stackVents.has(outcome.shown.roles.uses[pipe]!.role),
-        }),
+  return distinct(
+    feet.flatMap((foot) => {
+      if (foot === null) return [];
+      const wish = { foot, why, about: elementsAt(scene, foot.place), sideways: true };
+      return [
+        ...ventOptions(scene, { ...wish, flood, onto: (pipe) => stackVents.has(uses[pipe]!.role) }),
+        ...ventOptions(scene, { ...wish, flood: Number.NEGATIVE_INFINITY, sky: false }),
+      ];
+    }),
   );
 }
 const belowBranch = 0.3;
