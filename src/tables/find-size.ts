@@ -64,8 +64,23 @@ export function sizeForLoad(
   load: number,
   omit: ReadonlySet<NominalSize> = noneOmitted,
 ): SizeFound {
-  const candidates = sizedRows(table, omit).map(({ size, row }) => ({ size, cell: row.amount(column), instead: null }));
-  return firstThatHolds(candidates, load);
+  return firstThatHolds(candidatesOf(table, column, omit), load);
+}
+
+/** A table is asked thousands of times with the same sizes left out: its candidates are laid out once. */
+const laidOut = new WeakMap<Table, WeakMap<ReadonlySet<NominalSize>, Map<string, readonly Candidate[]>>>();
+
+function candidatesOf(table: Table, column: string, omit: ReadonlySet<NominalSize>): readonly Candidate[] {
+  const byOmit = laidOut.get(table) ?? new WeakMap<ReadonlySet<NominalSize>, Map<string, readonly Candidate[]>>();
+  laidOut.set(table, byOmit);
+  const byColumn = byOmit.get(omit) ?? new Map<string, readonly Candidate[]>();
+  byOmit.set(omit, byColumn);
+  let candidates = byColumn.get(column);
+  if (candidates === undefined) {
+    candidates = sizedRows(table, omit).map(({ size, row }) => ({ size, cell: row.amount(column), instead: null }));
+    byColumn.set(column, candidates);
+  }
+  return candidates;
 }
 
 /** Rows with their size, smallest first, the user's omitted sizes left out. */
