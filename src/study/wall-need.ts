@@ -49,9 +49,13 @@ export function wallNeed({ code }: Outcome, pieces: readonly RowPiece[]): WallNe
       ? []
       : [{ ...piece, size: piece.size, width, needs, outer: width.outerMm }];
   });
-  // Of pipes as wide as each other one that stands upright is shown.
+  // Of pipes as wide as each other the larger is shown, then one that stands upright.
   const [widest] = [...sized].sort(
-    (a, b) => b.needs - a.needs || Number(liesUpright(b)) - Number(liesUpright(a)) || a.pipe - b.pipe,
+    (a, b) =>
+      b.needs - a.needs ||
+      code.series.rank(b.size) - code.series.rank(a.size) ||
+      Number(liesUpright(b)) - Number(liesUpright(a)) ||
+      a.pipe - b.pipe,
   );
   if (widest === undefined) return null;
   const bodies = [...new Set(walled.flatMap(({ walls }) => walls.map(({ body }) => body)))];
@@ -65,7 +69,8 @@ export function wallNeed({ code }: Outcome, pieces: readonly RowPiece[]): WallNe
   const bored = sized.filter(({ walls }) =>
     walls.some((inWall) => inWall.body.cavity?.framing === 'wood' && passesStuds(code, inWall)),
   );
-  const [largest] = [...bored].sort((a, b) => b.outer - a.outer || a.pipe - b.pipe);
+  const { rank } = code.series;
+  const [largest] = [...bored].sort((a, b) => b.outer - a.outer || rank(b.size) - rank(a.size) || a.pipe - b.pipe);
   return {
     bodies,
     depthMm: widest.needs,
