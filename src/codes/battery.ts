@@ -149,5 +149,9 @@ export interface Broken {
     | 'circuit-vent-not-allowed'
     | 'relief-vent-missing'
     | 'additional-circuit-vent-missing'
+    | 'common-vent-not-allowed'
+    | 'waste-stack-vent-not-allowed'
+    | 'combination-not-allowed'
+    | 'single-stack-not-allowed'
     | 'unvented-trap';
 }

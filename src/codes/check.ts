@@ -3,7 +3,8 @@ import type { ElementId } from '../model/model.ts';
 import type { PipeId } from '../network/network.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Load } from '../units/quantity.ts';
-import type { PipeUse } from './use.ts';
+import type { Role } from './role.ts';
+import type { PipeUse, StackJoin } from './use.ts';
 import type { TrapWay } from './way.ts';
 
 /** A demand of a code that is no size: a vent that must be there, an arm that is too long. */
@@ -19,6 +20,8 @@ export interface CheckFacts {
   readonly traps: readonly CheckedTrap[];
   /** Building drains, one for each that leaves the building. */
   readonly drains: readonly CheckedDrain[];
+  /** Dry vents that serve a trap or a stack, one for each foot, in the order of their joints. */
+  readonly vents: readonly CheckedVent[];
 }
 
 export interface CheckedPipe {
@@ -39,7 +42,15 @@ export interface CheckedStack {
   readonly hasStackVent: boolean;
   /** Where its vent stack leaves it; null: it has none. Of several the soundest. */
   readonly ventStack: 'foot' | 'drain' | 'above a branch' | null;
+  /** Metres of the drain between the stack's foot and that of its vent stack; 0 for one on the stack itself. */
+  readonly ventStackBeyond: number;
   readonly isWetVent: boolean;
+  /** Where drains come into it, highest first. */
+  readonly joins: readonly StackJoin[];
+  /** Of its last section, as the load requires it. */
+  readonly footSize: NominalSize | null;
+  /** The first level drain that joins downstream of its foot, and how far along, metres; null where none does soon. */
+  readonly firstBelow: { readonly element: ElementId | null; readonly distance: number } | null;
   /** Heights of plumbing storeys, counted from the top, at which a yoke vent joins. */
   readonly yokes: readonly number[];
   readonly topStorey: number;
@@ -69,8 +80,9 @@ export interface CheckedTrap {
     readonly slopeUncertainty: number;
     readonly turn: number | null;
   } | null;
-  /** Developed length between the fixture and its trap. */
+  /** Developed length between the fixture and its trap, and what of it is level. */
   readonly outletLength: number;
+  readonly outletLevel: number;
   readonly kind: string | null;
   /** The code does not let the fixture be used. */
   readonly refused: boolean;
@@ -85,4 +97,44 @@ export interface CheckedDrain {
   readonly pipes: readonly PipeId[];
   /** Some vent reaches the sky at this size or larger, drawn or sized: the largest such. */
   readonly widestVent: NominalSize | null;
+  /** Of the last pipe that leaves, as the load requires it. */
+  readonly required: NominalSize | null;
+  /** Where its vents reach the air, each once. */
+  readonly mouths: readonly CheckedMouth[];
+}
+
+/** What opens a vent to the air: `highest` is an open end over the roof. */
+export type MouthKind = 'terminal' | 'valve' | 'highest' | 'answer';
+
+export interface CheckedMouth {
+  readonly elements: readonly ElementId[];
+  readonly how: MouthKind;
+  readonly drawn: NominalSize | null;
+  /** The larger of drawn and required. */
+  readonly size: NominalSize | null;
+}
+
+/** A dry vent from its foot on the drainage to the air. */
+export interface CheckedVent {
+  /** Its pipes from the foot up. */
+  readonly elements: readonly ElementId[];
+  readonly role: Role;
+  /** Traps that breathe through the foot. */
+  readonly traps: readonly {
+    readonly element: ElementId;
+    readonly closet: boolean;
+    readonly row: string;
+    readonly storey: number;
+  }[];
+  readonly mouth: MouthKind | null;
+  /** Height of the mouth over the foot, metres. */
+  readonly rise: number | null;
+  /** How far it comes down again on its way, metres. */
+  readonly descent: number;
+  /** The stack that it stands on (`isOwn`) or that the drain it vents comes to: its connections and the height of this one. */
+  readonly stack: {
+    readonly joins: readonly StackJoin[];
+    readonly height: number | null;
+    readonly isOwn: boolean;
+  } | null;
 }

@@ -62,8 +62,10 @@ export interface PipeUse {
 }
 
 export interface MainVentUse {
-  /** Ways to the sky of every other vent of the building drain: pipes from foot to mouth. */
-  readonly others: readonly (readonly PipeId[])[];
+  /** Way to the sky of this stack's own vent. */
+  readonly own: readonly PipeId[];
+  /** Ways to the sky of all vents of the building drain, this one among them: pipes from foot to mouth. */
+  readonly ways: readonly (readonly PipeId[])[];
   /** Some vent of the building drain is drawn this large all the way, by nominal size: the widest such. */
   readonly drawn: NominalSize | null;
   /** Last pipe of the building drain or sewer; null where nothing leaves. */

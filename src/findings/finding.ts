@@ -34,6 +34,14 @@ export type FindingCode =
   | 'appliance-not-allowed'
   | 'vent-area-too-small'
   | 'main-vent-missing'
+  | 'common-vent-not-allowed'
+  | 'waste-stack-vent-not-allowed'
+  | 'combination-not-allowed'
+  | 'single-stack-not-allowed'
+  | 'island-vent-not-allowed'
+  | 'valve-not-allowed'
+  | 'valve-needs-approval'
+  | 'branch-near-foot'
   | 'fixture-unidentified'
   | 'fixture-unconnected'
   | 'open-end'
@@ -130,6 +138,14 @@ export const severityOf: Readonly<Record<FindingCode, Severity>> = {
   'appliance-not-allowed': 'error',
   'vent-area-too-small': 'error',
   'main-vent-missing': 'error',
+  'common-vent-not-allowed': 'error',
+  'waste-stack-vent-not-allowed': 'error',
+  'combination-not-allowed': 'error',
+  'single-stack-not-allowed': 'error',
+  'island-vent-not-allowed': 'error',
+  'valve-not-allowed': 'error',
+  'valve-needs-approval': 'warning',
+  'branch-near-foot': 'error',
   'fixture-unconnected': 'error',
   'no-sewer-end': 'error',
 };

@@ -1,3 +1,4 @@
+import { conditionText } from './condition-text.ts';
 import type { Facts, FindingCode } from './finding.ts';
 
 /** What a sentence is built from. Names and numbers come ready to print; `clause` carries its brackets or is empty. */
@@ -30,6 +31,8 @@ const load = (given: SentenceFacts, key = 'loadUnits'): string => `${given.numbe
 /** The condition of a reading that a battery breaks, in words; the finding adds whose and where. */
 export function brokenText(given: SentenceFacts): string {
   const { facts } = given;
+  const said = conditionText(given);
+  if (said !== null) return said;
   if (has(given, 'guestUnits'))
     return `fixtures with vents of their own bring ${load(given, 'guestUnits')}, at most ${given.number(num(given, 'guestUnitsMost'))} may join`;
   if (has(given, 'closetsMost'))
@@ -93,6 +96,18 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
   'relief-vent-missing': (f) =>
     `${row(f)} is circuit vented and no relief vent, nor a vented drain that may stand in, joins downstream of its last fixture${f.clause}.`,
   'additional-circuit-vent-missing': (f) => `${row(f)} needs an additional circuit vent: ${brokenText(f)}${f.clause}.`,
+  'common-vent-not-allowed': (f) => `${row(f)} may not share a common vent: ${brokenText(f)}${f.clause}.`,
+  'waste-stack-vent-not-allowed': (f) => `${row(f)} may not be vented by its waste stack: ${brokenText(f)}${f.clause}.`,
+  'combination-not-allowed': (f) => `${row(f)} may not have a combination waste and vent: ${brokenText(f)}${f.clause}.`,
+  'single-stack-not-allowed': (f) => `${row(f)} may not be vented by a single stack: ${brokenText(f)}${f.clause}.`,
+  'island-vent-not-allowed': (f) =>
+    `The vent ${first(f)} turns down again before it reaches open air: only ${text(f, 'allowed')} may be vented so, not a ${plain(f.facts.kind)}${f.clause}.`,
+  'valve-not-allowed': (f) =>
+    `The vent ${first(f)} ends in an air admittance valve: ${has(f, 'intervalsMost') ? `its stack has ${text(f, 'intervals')} branch intervals, at most ${text(f, 'intervalsMost')} may end so; lead it to open air` : has(f, 'leastM') ? `the valve stands ${f.length(num(f, 'heightM'))} above the drain it vents, at least ${f.length(num(f, 'leastM'))}` : has(f, 'belowMost') ? `it stands ${text(f, 'below')} branch intervals below the top of the stack, and beyond ${text(f, 'belowMost')} the branch needs a relief vent` : 'no vent of the building drain reaches open air; one must'}${f.clause}.`,
+  'valve-needs-approval': (f) =>
+    `The vent ${first(f)} ends in an air admittance valve: this code names none, so the authority having jurisdiction decides.`,
+  'branch-near-foot': (f) =>
+    `${first(f)} joins ${f.length(num(f, 'distanceM'))} downstream of the foot of a stack, at least ${f.length(num(f, 'leastM'))}${f.clause}.`,
   'stack-vent-missing': (f) =>
     `The stack ${first(f)} carries ${load(f)} and does not go on upward as a stack vent${f.clause}.`,
   'vent-stack-missing': (f) =>

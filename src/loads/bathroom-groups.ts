@@ -7,7 +7,7 @@ import type { FixtureFacts } from './fixture-loads.ts';
 import type { BathroomGroup, FixtureLoad } from './loads.ts';
 
 /**
- * A closet, a lavatory and a bath in one space count as a group. Only where the model puts them into the space, by
+ * A closet, a lavatory and a bath in one space count as a group, with one extra that the code takes in. Only where the model puts them into the space, by
  * relation or because their outlets lie inside it, or the user says so; else they are added one by one, with a note.
  */
 export function bathroomGroups(
@@ -33,11 +33,14 @@ export function bathroomGroups(
       );
     const [closet, lavatory, bath] = [first('closet'), first('lavatory'), first('bath')];
     if (closet === undefined || lavatory === undefined || bath === undefined) continue;
-    groups.push({ members: [closet, lavatory, bath], figure: rule.figure(loads[closet]!.row).load });
+    const extra = first('extra');
+    const group = [closet, lavatory, bath, ...(extra === undefined ? [] : [extra])];
+    groups.push({ members: group, figure: rule.figure(loads[closet]!.row).load });
   }
   const parts = new Set(
     homeless.map((id) => rule.memberOf(loads[id]!.row, facts.identities[facts.paths.fixtures[id]!.element]!.detail)),
   );
+  parts.delete('extra');
   const findings =
     parts.size === 3
       ? [

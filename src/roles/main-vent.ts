@@ -3,9 +3,10 @@ import type { PipeId } from '../network/network.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { BatteryContext } from './battery-facts.ts';
 import type { DryRole } from './dry-roles.ts';
+import type { Stack } from './find-stacks.ts';
 import type { VentFoot } from './roles.ts';
 
-/** For every stack vent to the sky: the other vents of its building drain, and which stacks come first. */
+/** For every stack vent to the sky: the vents of its building drain, and which stacks come first. */
 export function mainVentUses(
   context: BatteryContext,
   feet: readonly VentFoot[],
@@ -13,24 +14,42 @@ export function mainVentUses(
 ): Map<PipeId, MainVentUse> {
   const { stacks, loads } = context;
   const uses = new Map<PipeId, MainVentUse>();
-  const systemOf = systemByFoot(context, feet);
+  const systems = new Map<number | null, { feet: VentFoot[]; before: PipeId[] }>();
+  const stackVents = new Map<Stack, VentFoot>();
+  for (const foot of feet) {
+    const system = systemOfPipe(context, foot.path[0]!);
+    const known = systems.get(system);
+    if (known === undefined) systems.set(system, { feet: [foot], before: [] });
+    else known.feet.push(foot);
+    const it = dry.get(foot.path[0]!);
+    if (it?.role === 'stack-vent' && it.stack !== null && !stackVents.has(it.stack)) stackVents.set(it.stack, foot);
+  }
+  const drawn = new Map([...systems].map(([system, its]) => [system, widestDrawn(context, its.feet)]));
   const ranked = [...stacks].sort((a, b) => loads.pipes[b.foot]!.load - loads.pipes[a.foot]!.load || a.id - b.id);
-  ranked.forEach((stack, place) => {
-    const own = feet.find(({ path }) => dry.get(path[0]!)?.role === 'stack-vent' && dry.get(path[0]!)?.stack === stack);
-    if (own === undefined) return;
-    const system = systemOf.get(own);
-    const rivals = feet.filter((foot) => foot !== own && systemOf.get(foot) === system);
-    const use: MainVentUse = {
-      others: rivals.map(({ path }) => path),
-      drawn: widestDrawn(context, [own, ...rivals]),
-      before: ranked
-        .slice(0, place)
-        .filter(({ top }) => systemOfPipe(context, top) === system)
-        .map(({ foot }) => foot),
-    };
-    for (const pipe of own.path) if (!uses.has(pipe)) uses.set(pipe, use);
-  });
+  for (const stack of ranked) {
+    const system = systemOfPipe(context, stack.top);
+    const its = systems.get(system);
+    if (its === undefined) continue;
+    const own = stackVents.get(stack);
+    if (own !== undefined) {
+      const use: MainVentUse = {
+        own: own.path,
+        ways: its.feet.map(({ path }) => path),
+        drawn: drawn.get(system) ?? null,
+        drain: lastPipe(context, system),
+        before: [...its.before],
+      };
+      for (const pipe of own.path) if (!uses.has(pipe)) uses.set(pipe, use);
+    }
+    its.before.push(stack.foot);
+  }
   return uses;
+}
+
+/** Where the water of a system leaves the building. */
+function lastPipe({ paths }: BatteryContext, system: number | null | undefined): PipeId | null {
+  const own = system === null || system === undefined ? [] : paths.systems[system]!.pipes;
+  return own.find((pipe) => paths.wet[pipe] && paths.next[pipe] === null) ?? null;
 }
 
 /** The widest way to the sky as drawn: each way is as wide as its narrowest pipe; null where sizes are missing. */
@@ -48,16 +67,12 @@ export function widestDrawn(
   return widest;
 }
 
-function systemByFoot(context: BatteryContext, feet: readonly VentFoot[]): Map<VentFoot, number | null> {
-  return new Map(feet.map((foot) => [foot, systemOfPipe(context, foot.path[0]!)]));
-}
-
-const systems = new WeakMap<object, Map<PipeId, number>>();
+const systemsOf = new WeakMap<object, Map<PipeId, number>>();
 function systemOfPipe({ paths }: BatteryContext, pipe: PipeId): number | null {
-  let known = systems.get(paths.systems);
+  let known = systemsOf.get(paths.systems);
   if (known === undefined) {
     known = new Map(paths.systems.flatMap(({ pipes }, index) => pipes.map((one): [PipeId, number] => [one, index])));
-    systems.set(paths.systems, known);
+    systemsOf.set(paths.systems, known);
   }
   return known.get(pipe) ?? null;
 }
@@ -77,8 +92,9 @@ export function onlyWidestVents(context: BatteryContext, feet: readonly VentFoot
   }
   const only = new Set<PipeId>();
   for (const { paths } of best.values()) {
-    const shared = paths[0]!.filter((pipe) => paths.every((path) => path.includes(pipe)));
-    for (const pipe of paths.length === 1 ? paths[0]! : shared) only.add(pipe);
+    const passes = new Map<PipeId, number>();
+    for (const path of paths) for (const pipe of path) passes.set(pipe, (passes.get(pipe) ?? 0) + 1);
+    for (const [pipe, count] of passes) if (count === paths.length) only.add(pipe);
   }
   return only;
 }

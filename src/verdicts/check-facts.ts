@@ -5,9 +5,10 @@ import type { ElementId } from '../model/model.ts';
 import type { Network, PipeId } from '../network/network.ts';
 import type { Paths } from '../paths/paths.ts';
 import { streamOf } from '../paths/stream.ts';
-import type { Stack } from '../roles/find-stacks.ts';
+import { type Stack, stackUseAt } from '../roles/find-stacks.ts';
 import { widestDrawn } from '../roles/main-vent.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
+import { checkedVents, mouthsOf } from './checked-vents.ts';
 import type { Run } from './outcome.ts';
 
 /** What a code's checks look at, gathered from one run. */
@@ -53,7 +54,8 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
               slopeUncertainty: uncertain,
               turn: measured.turn,
             },
-      outletLength: path.water.slice(0, after).reduce((sum, pipe) => sum + stream.span(pipe), 0),
+      outletLength: spanOf(path.water.slice(0, after)),
+      outletLevel: spanOf(path.water.slice(0, after).filter((pipe) => paths.vertical[pipe] !== true)),
       kind: loads.fixtures[fixture]!.row.title,
       refused: loads.fixtures[fixture]!.row.refused === true,
       row: loads.fixtures[fixture]!.row.id,
@@ -62,7 +64,13 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
   });
 
   const ofStack = ventsOfStacks(run);
-  return { pipes, traps, stacks: roles.stacks.map((stack) => checkedStack(stack)), drains: buildingDrains() };
+  return {
+    pipes,
+    traps,
+    stacks: roles.stacks.map((stack) => checkedStack(stack)),
+    drains: buildingDrains(),
+    vents: checkedVents(network, paths, run),
+  };
 
   function checkedStack(stack: Stack): CheckedStack {
     const vents = ofStack.get(stack.id) ?? [];
@@ -75,6 +83,13 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
       height: stack.height,
       hasStackVent: vents.some(({ role }) => role === 'stack-vent'),
       ventStack: soundest(vents.map(({ vent }) => vent!.leaves)),
+      ventStackBeyond: beyondFoot(
+        stack,
+        vents.find(({ vent }) => vent!.leaves === 'drain'),
+      ),
+      joins: stackUseAt({ network, paths, stream, loads, floors: roles.floors }, stack, stack.foot).joins,
+      footSize: sizes[stack.foot]!.size,
+      firstBelow: firstBelow(stack),
       isWetVent: roles.batteries.some(
         ({ facts, reading, broken }) =>
           reading === 'wet-vent' &&
@@ -106,6 +121,36 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
     };
   }
 
+  function spanOf(list: readonly PipeId[]): number {
+    return list.reduce((sum, pipe) => sum + stream.span(pipe), 0);
+  }
+
+  /** Along the drain from the foot of a stack to the vent that stands on it. */
+  function beyondFoot(stack: Stack, use: PipeUse | undefined): number {
+    let walked = 0;
+    for (
+      let pipe = paths.next[stack.foot] ?? null;
+      pipe !== null && use !== undefined;
+      pipe = paths.next[pipe] ?? null
+    ) {
+      walked += stream.span(pipe);
+      if (stream.down(pipe) === use.vent!.foot) return walked;
+    }
+    return 0;
+  }
+
+  function firstBelow(stack: Stack): CheckedStack['firstBelow'] {
+    let walked = 0;
+    for (let pipe = paths.next[stack.foot] ?? null; pipe !== null; pipe = paths.next[pipe] ?? null) {
+      if (paths.vertical[pipe] === true) return null;
+      walked += stream.span(pipe);
+      const own = pipe;
+      const branch = stream.inflows[stream.down(pipe)]!.find((one) => one !== own && paths.vertical[one] !== true);
+      if (branch !== undefined) return { element: network.pipes[branch]!.element, distance: walked };
+    }
+    return null;
+  }
+
   function buildingDrains(): CheckedDrain[] {
     return paths.systems.flatMap(({ pipes: own }) => {
       const drain = own.filter((pipe) => roles.uses[pipe]!.drain === 'building-drain');
@@ -118,7 +163,16 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
         (a, b) => (a === null ? b : b === null ? a : code.series.larger(a, b)),
         null,
       );
-      return [{ elements: elementsOf(drain), pipes: drain, widestVent: widest }];
+      const last = own.find((pipe) => paths.wet[pipe] && paths.next[pipe] === null);
+      return [
+        {
+          elements: elementsOf(drain),
+          pipes: drain,
+          widestVent: widest,
+          required: last === undefined ? null : sizes[last]!.size,
+          mouths: mouthsOf(network, paths, code, run, feet),
+        },
+      ];
     });
   }
 

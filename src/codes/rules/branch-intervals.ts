@@ -23,3 +23,7 @@ export function branchIntervals(joins: readonly StackJoin[], least: number): Bra
   }
   return intervals;
 }
+
+/** Load of the heaviest of them; nothing where there is none. */
+export const heaviestInterval = (joins: readonly StackJoin[], least: number): Load =>
+  Math.max(0, ...branchIntervals(joins, least).map(({ load }) => load)) as Load;
