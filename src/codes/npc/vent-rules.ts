@@ -135,8 +135,8 @@ export function ventRules({ family, omit, settings }: Tools): SizingRule[] {
         const foot = pipe.vent?.stack?.foot;
         if (main === null || foot === undefined) return undefined;
         const holds = (size: NominalSize | null): boolean => size !== null && rank(size) >= rank(mainVent.value);
-        if (holds(main.drawn) || main.others.some((way) => way.every((one) => holds(soFar(one))))) return undefined;
-        if (!holds(soFar(foot)) || main.before.some((one) => holds(soFar(one)))) return undefined;
+        if (holds(main.drawn) || !holds(soFar(foot)) || main.before.some((one) => holds(soFar(one)))) return undefined;
+        if (main.ways.some((way) => way !== main.own && way.every((one) => holds(soFar(one))))) return undefined;
         return { ...followStep(rule('NPC-R78'), mainVent.value, {}), cell: mainVent, trust: mainVent.trust };
       },
     },
