@@ -80,6 +80,8 @@ function firstState(building: Building): PageState {
     tab: 'findings',
     search: '',
     findingFilter: null,
+    findingsBy: 'cause',
+    pipesBy: 'verdict',
     language: /^fr\b/i.test(navigator.language) ? 'fr' : 'en',
     theme: window.matchMedia('(prefers-color-scheme: dark)').matches ? 'dark' : 'light',
     riser: 0,

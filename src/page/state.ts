@@ -18,6 +18,8 @@ export interface PageState {
   readonly search: string;
   /** Severities and codes of findings to list; null: all. */
   readonly findingFilter: string | null;
+  readonly findingsBy: 'cause' | 'place' | 'storey';
+  readonly pipesBy: PipeOrder;
   readonly language: Language;
   readonly theme: 'light' | 'dark';
   readonly riser: number;
@@ -33,6 +35,8 @@ export interface Follow {
   readonly fixture: number;
   readonly step: number;
 }
+
+export type PipeOrder = 'verdict' | 'name' | 'size' | 'load' | 'storey';
 
 export interface Store {
   readonly state: PageState;

@@ -163,6 +163,23 @@ describe.skipIf(chromiumPath === undefined)('the page in Chromium', () => {
       await page.fill('#search', '');
     });
 
+    test('findings are grouped as asked, pipes sorted as asked', async () => {
+      await page.selectOption('#findings-by', 'place');
+      expect((await page.locator('.finding-code').allTextContents()).map((text) => text.replace(/^[▲◆○]/, ''))).toEqual(
+        ['Battery B18', 'Stack Stack low3', 'Elsewhere2'],
+      );
+      await page.selectOption('#findings-by', 'storey');
+      expect(await page.locator('.finding-code').count()).toBe(3);
+      await page.selectOption('#findings-by', 'cause');
+      await page.locator('#tab-pipes').click();
+      await page.selectOption('#pipes-by', 'load');
+      expect(await page.locator('.pipe-list .line-name').first().textContent()).toBe('Stack low');
+      await page.selectOption('#pipes-by', 'name');
+      expect((await page.locator('.pipe-list .line-name').allTextContents()).slice(0, 2)).toEqual(['Arm 1', 'Arm 2']);
+      await page.selectOption('#pipes-by', 'verdict');
+      await page.locator('#tab-findings').click();
+    });
+
     test('the air of an unvented trap stops where the fault is', async () => {
       await page.fill('#search', 'floor drain');
       await page.locator('.pipe-list .line').first().click();

@@ -1,11 +1,13 @@
 import type { ResultFinding } from '../../schedule/result.ts';
 import { type UndersizedGroup, undersizedGroups } from '../../schedule/undersized-text.ts';
 import { oneSize, sizeText } from '../format.ts';
+import type { PageState } from '../state.ts';
 import { named } from '../words/words.ts';
 import { severityMarks } from './chips.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
 import { fill } from './fill.ts';
+import { placeOf } from './finding-places.ts';
 import { findingSentence } from './finding-sentence.ts';
 import { batteryName, capital, pipeName } from './names.ts';
 import { reasonText } from './reason.ts';
@@ -13,7 +15,7 @@ import { reasonText } from './reason.ts';
 const mostShown = 60;
 const mostGroups = 30;
 
-/** Findings by cause: undersized pipes that share one stand together, everything else by its code; errors first. */
+/** All findings, filtered by severity and grouped by cause, by battery and stack, or by storey. */
 export function findingList(desk: Desk): HTMLElement {
   const { building, words, store } = desk;
   const { findings } = building.result;
@@ -34,14 +36,7 @@ export function findingList(desk: Desk): HTMLElement {
     );
   const filter = store.state.findingFilter;
   const wanted = findings.filter(({ severity }) => filter === null || severity === filter);
-  const groups = filter === null || filter === 'error' ? undersizedGroups(building.result) : [];
-  const byCode = new Map<string, ResultFinding[]>();
-  for (const finding of wanted) {
-    if (finding.code === 'undersized') continue;
-    const list = byCode.get(finding.code);
-    if (list === undefined) byCode.set(finding.code, [finding]);
-    else list.push(finding);
-  }
+  const { findingsBy } = store.state;
   return make(
     'div',
     {},
@@ -58,17 +53,67 @@ export function findingList(desk: Desk): HTMLElement {
       ),
     ),
     findings.length === 0 && make('p', { class: 'quiet' }, words.findings.none),
+    findings.length > 0 && groupSelect(desk),
     paged(
       desk,
-      [
-        ...groups.map((group) => () => undersizedGroup(desk, group)),
-        ...[...byCode.values()].map((list) => () => codeGroup(desk, list)),
-      ],
+      findingsBy === 'cause' ? byCause(desk, wanted) : byPlace(desk, wanted, findingsBy),
       mostGroups,
       (more) => more,
     ),
     make('p', { class: 'quiet' }, words.findings.noJudgement),
   );
+}
+
+function groupSelect({ store, words }: Desk): HTMLElement {
+  const select = make(
+    'select',
+    { id: 'findings-by', onchange: () => store.set({ findingsBy: select.value as PageState['findingsBy'] }) },
+    ...(['cause', 'place', 'storey'] as const).map((by) =>
+      make('option', { value: by, selected: by === store.state.findingsBy }, words.findings.by[by]),
+    ),
+  );
+  return make('p', { class: 'list-order' }, make('label', { for: 'findings-by' }, words.findings.groupBy), select);
+}
+
+/** Undersized pipes by what makes them so, then everything else by its code; errors stand first in the result. */
+function byCause(desk: Desk, wanted: readonly ResultFinding[]): readonly (() => HTMLElement)[] {
+  const undersized = wanted.some(({ code }) => code === 'undersized');
+  const groups = undersized ? undersizedGroups(desk.building.result) : [];
+  const rest = grouped(
+    wanted.filter(({ code }) => code !== 'undersized'),
+    ({ code }) => code,
+  );
+  return [
+    ...groups.map((group) => () => undersizedGroup(desk, group)),
+    ...rest.map(
+      ([code, list]) =>
+        () =>
+          listGroup(desk, capital(named(desk.words.codes, code)), list),
+    ),
+  ];
+}
+
+function byPlace(desk: Desk, wanted: readonly ResultFinding[], by: 'place' | 'storey'): readonly (() => HTMLElement)[] {
+  return grouped(wanted, (finding) => placeOf(desk, finding, by)).map(
+    ([place, list]) =>
+      () =>
+        listGroup(desk, place, list),
+  );
+}
+
+/** In the order in which the keys first occur. */
+function grouped(
+  findings: readonly ResultFinding[],
+  keyOf: (finding: ResultFinding) => string,
+): readonly (readonly [string, readonly ResultFinding[]])[] {
+  const groups = new Map<string, ResultFinding[]>();
+  for (const finding of findings) {
+    const key = keyOf(finding);
+    const list = groups.get(key);
+    if (list === undefined) groups.set(key, [finding]);
+    else list.push(finding);
+  }
+  return [...groups];
 }
 
 function undersizedGroup(desk: Desk, group: UndersizedGroup): HTMLElement {
@@ -108,10 +153,8 @@ function undersizedGroup(desk: Desk, group: UndersizedGroup): HTMLElement {
   );
 }
 
-function codeGroup(desk: Desk, list: readonly ResultFinding[]): HTMLElement {
-  const { words } = desk;
-  const { code, severity } = list[0]!;
-  const title = capital(named(words.codes, code));
+function listGroup(desk: Desk, title: string, list: readonly ResultFinding[]): HTMLElement {
+  const { severity } = list[0]!;
   return make(
     'section',
     { class: `finding finding-${severity}` },
@@ -119,7 +162,7 @@ function codeGroup(desk: Desk, list: readonly ResultFinding[]): HTMLElement {
       'h3',
       { class: 'finding-code' },
       make('span', { class: `mark mark-${severity}`, 'aria-hidden': 'true' }, severityMarks[severity]),
-      title,
+      modelText(title),
       list.length > 1 && make('span', { class: 'chip-count' }, String(list.length)),
     ),
     rowsOf(

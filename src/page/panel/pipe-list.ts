@@ -1,4 +1,5 @@
 import { oneSize, sizeText } from '../format.ts';
+import type { PipeOrder } from '../state.ts';
 import { kindName, named } from '../words/words.ts';
 import { verdictMark } from './chips.ts';
 import type { Desk } from './desk.ts';
@@ -13,7 +14,7 @@ const page = 120;
 export function pipeList(desk: Desk, search: string): HTMLElement {
   const { building, words } = desk;
   const wanted = folded(search).trim();
-  const pipes = rankedPipes(desk).filter((row) => wanted === '' || pipeWords(desk, row).includes(wanted));
+  const pipes = orderedPipes(desk).filter((row) => wanted === '' || pipeWords(desk, row).includes(wanted));
   const fixtures =
     wanted === ''
       ? []
@@ -33,15 +34,48 @@ export function pipeList(desk: Desk, search: string): HTMLElement {
         { class: 'quiet', role: 'status' },
         lines.length === 0 ? words.search.none : words.search.found(lines.length),
       ),
+    lines.length > 1 && orderSelect(desk),
     list,
   );
 }
 
 const worst = { undersized: 0, unknown: 1, oversized: 2, agrees: 3 } as const;
 
-function rankedPipes({ building }: Desk): readonly number[] {
+/** In the order asked for; equal ones in the order of the result. */
+function orderedPipes({ building, words, store }: Desk): readonly number[] {
   const { pipes } = building.result;
-  return pipes.map((_, row) => row).sort((a, b) => worst[pipes[a]!.verdict] - worst[pipes[b]!.verdict] || a - b);
+  const { pipesBy } = store.state;
+  const storeys = new Map(building.data.scene.storeys.map(({ name }, at) => [name, at]));
+  const weight = (row: number): number => {
+    const { verdict, modelled, load, ventLoad, storey } = pipes[row]!;
+    switch (pipesBy) {
+      case 'verdict':
+        return worst[verdict];
+      case 'size':
+        return -(modelled?.dn ?? 0);
+      case 'load':
+        return -Math.max(load.most, ventLoad?.most ?? 0);
+      case 'storey':
+        return -(storey === null ? -1 : (storeys.get(storey) ?? -1));
+      case 'name':
+        return 0;
+    }
+  };
+  const names = new Intl.Collator(words.language, { numeric: true });
+  const byName = (a: number, b: number): number =>
+    pipesBy === 'name' ? names.compare(pipes[a]!.name ?? '', pipes[b]!.name ?? '') : 0;
+  return pipes.map((_, row) => row).sort((a, b) => weight(a) - weight(b) || byName(a, b) || a - b);
+}
+
+function orderSelect({ store, words }: Desk): HTMLElement {
+  const select = make(
+    'select',
+    { id: 'pipes-by', onchange: () => store.set({ pipesBy: select.value as PipeOrder }) },
+    ...(['verdict', 'name', 'size', 'load', 'storey'] as const).map((by) =>
+      make('option', { value: by, selected: by === store.state.pipesBy }, words.pipesBy.by[by]),
+    ),
+  );
+  return make('p', { class: 'list-order' }, make('label', { for: 'pipes-by' }, words.pipesBy.label), select);
 }
 
 /** Accents and case make no difference to a search. */

@@ -102,17 +102,23 @@ export function shell(desk: Desk): Shell {
   const show = (now: PageState, before: PageState | null): void => {
     const changed = (...keys: readonly (keyof PageState)[]): boolean =>
       before === null || keys.some((key) => now[key] !== before[key]);
-    if (changed('chosen', 'search', 'tab', 'findingFilter', 'isolated')) {
+    if (changed('chosen', 'search', 'tab', 'findingFilter', 'findingsBy', 'pipesBy', 'isolated')) {
       const focused = before !== null && body.contains(document.activeElement);
       showPanel(now);
       if (changed('chosen', 'tab', 'search')) body.scrollTop = 0;
       // The button that was pressed is gone: whoever works by keyboard goes on at the title of what it opened.
       if (focused && changed('chosen'))
         (body.querySelector<HTMLElement>('#card-title') ?? body).focus({ preventScroll: true });
-      else if (focused && changed('tab', 'findingFilter'))
-        body
-          .querySelector<HTMLElement>(changed('tab') ? '[role=tab][aria-selected=true]' : '.chip[aria-pressed=true]')
-          ?.focus({ preventScroll: true });
+      else if (focused) {
+        const again = changed('tab')
+          ? '[role=tab][aria-selected=true]'
+          : changed('findingsBy')
+            ? '#findings-by'
+            : changed('pipesBy')
+              ? '#pipes-by'
+              : '.chip[aria-pressed=true]';
+        body.querySelector<HTMLElement>(again)?.focus({ preventScroll: true });
+      }
     }
     if (changed('search') && search.value !== now.search) search.value = now.search;
     if (changed('colourBy', 'hidden', 'theme')) refocus(legendHost, () => legendHost.replaceChildren(legend(desk)));

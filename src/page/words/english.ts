@@ -73,6 +73,10 @@ export const english: Words = {
     where: 'In the answers file',
     ask: null,
   },
+  pipesBy: {
+    label: 'Sort by',
+    by: { verdict: 'verdict', name: 'name', size: 'size drawn', load: 'load', storey: 'storey' },
+  },
   search: {
     label: 'Search',
     hint: 'Name, GlobalId, STEP id, role, clause, room …',
@@ -86,6 +90,10 @@ export const english: Words = {
     ofBattery: (battery) => `battery ${battery}`,
     none: 'No finding under these rules and assumptions.',
     filter: 'Which findings',
+    groupBy: 'Group by',
+    by: { cause: 'cause', place: 'battery and stack', storey: 'storey' },
+    stack: (name) => `Stack ${name}`,
+    elsewhere: 'Elsewhere',
     noJudgement: 'Nothing here says that a building is approved.',
   },
   pipe: {

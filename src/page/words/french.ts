@@ -84,6 +84,10 @@ export const french: Words = {
     where: 'Dans le fichier de réponses',
     ask: frenchAsk,
   },
+  pipesBy: {
+    label: 'Trier par',
+    by: { verdict: 'verdict', name: 'nom', size: 'diamètre dessiné', load: 'charge', storey: 'étage' },
+  },
   search: {
     label: 'Chercher',
     hint: 'Nom, GlobalId, no STEP, rôle, article, local …',
@@ -97,6 +101,10 @@ export const french: Words = {
     ofBattery: (battery) => `groupe ${battery}`,
     none: 'Aucun constat selon ces règles et hypothèses.',
     filter: 'Quels constats',
+    groupBy: 'Grouper par',
+    by: { cause: 'cause', place: 'groupe et colonne de chute', storey: 'étage' },
+    stack: (name) => `Colonne de chute ${name}`,
+    elsewhere: 'Ailleurs',
     noJudgement: 'Rien ici ne dit qu’un bâtiment est approuvé.',
   },
   pipe: {

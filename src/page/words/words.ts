@@ -55,6 +55,10 @@ export interface Words {
     /** The question in this language; null where its own sentence is in it already. */
     readonly ask: ((part: string, field: string | null, name: string) => string) | null;
   };
+  readonly pipesBy: {
+    readonly label: string;
+    readonly by: Readonly<Record<'verdict' | 'name' | 'size' | 'load' | 'storey', string>>;
+  };
   readonly search: {
     readonly label: string;
     readonly hint: string;
@@ -69,6 +73,10 @@ export interface Words {
     readonly none: string;
     readonly filter: string;
     readonly noJudgement: string;
+    readonly groupBy: string;
+    readonly by: Readonly<Record<'cause' | 'place' | 'storey', string>>;
+    readonly stack: (name: string) => string;
+    readonly elsewhere: string;
   };
   readonly pipe: {
     readonly one: string;
