@@ -16,8 +16,10 @@ export interface Way {
 /** The way of one trap's water to what gives its drain air: the stack, the building drain, or a pipe that a vent stands on. */
 export interface TrapWay extends Way {
   readonly pipes: readonly PipeId[];
+  /** On to the stack or the building drain: those, then what is ventilated. */
+  readonly line: readonly PipeId[];
   readonly end: 'stack' | 'building-drain' | 'ventilated';
-  /** On to the stack or the building drain, through what is ventilated. */
+  /** How all of the line lies. */
   readonly whole: Way;
 }
 

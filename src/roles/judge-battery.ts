@@ -28,6 +28,7 @@ export function judgeBattery(code: PlumbingCode, facts: BatteryFacts): Battery {
     broken: judged.find((one) => one.reading === reading)?.broken ?? [],
     others: judged.filter((one) => one.reading !== reading),
   });
+  if (code.readings.length === 1 && judged[0] !== undefined) return choose(judged[0].reading, 'only-known');
   const { word } = facts;
   const holding = judged.filter(({ broken }) => broken.length === 0).map(({ reading }) => reading);
   if (word !== null && holding.includes(word)) return choose(word, 'designer-says');

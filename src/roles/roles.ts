@@ -37,6 +37,7 @@ export interface Battery {
 export type ReadingGround =
   | 'answer'
   | 'designer-says'
+  | 'only-known'
   | 'only-one-holds'
   | 'first-that-holds'
   | 'dry-relief-vent'

@@ -5,7 +5,7 @@ import type { TrapWays } from './trap-ways.ts';
 
 /** Traps that no vent serves, but whose own branch is short enough for the code, need none. By fixture id. */
 export function throughShortBranches(
-  { code, loads }: BatteryContext,
+  { code, loads, paths }: BatteryContext,
   venting: readonly Venting[],
   ways: TrapWays | null,
 ): readonly Venting[] {
@@ -13,7 +13,9 @@ export function throughShortBranches(
   if (shortBranch === undefined || ways === null) return venting;
   return venting.map((it, fixture): Venting => {
     const way = ways.traps[fixture] ?? null;
-    const last = way?.pipes.at(-1);
+    const { after } = paths.traps[fixture]!;
+    // A trap on the stack itself has no pipe of its own.
+    const last = way?.pipes.at(-1) ?? paths.fixtures[fixture]!.water[after];
     if (it.how !== 'unvented' || way === null || last === undefined) return it;
     const closetTurn = ways.reach.get(last)?.closetTurn ?? 0;
     const free = shortBranch({ way, row: loads.fixtures[fixture]!.row, carried: carriedBy(loads, last), closetTurn });

@@ -36,7 +36,7 @@ export function trapWays(context: BatteryContext, drains: readonly (DrainRole | 
     const first = leaves < 0 ? undefined : water[leaves];
     const end =
       vented >= 0 ? 'ventilated' : first !== undefined && drains[first] === 'stack' ? 'stack' : 'building-drain';
-    return { ...own, pipes, end, whole };
+    return { ...own, pipes, line, end, whole };
   });
   return { traps, reach };
 }

@@ -37,6 +37,7 @@ export function battery(
 const grounds: Readonly<Record<ReadingGround, string>> = {
   answer: 'the answers file says so',
   'designer-says': 'the model says so and it holds',
+  'only-known': 'the code knows no other: it has neither wet vents nor circuit vents',
   'only-one-holds': 'it is the only reading whose conditions hold',
   'first-that-holds': 'several readings hold and the code comes to it first',
   'dry-relief-vent': 'a dry relief vent joins downstream, which nobody draws for a wet vent',
