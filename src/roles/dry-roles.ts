@@ -1,4 +1,5 @@
 import type { Role } from '../codes/role.ts';
+import { islandDescent } from '../codes/rules/island.ts';
 import type { Reading } from '../codes/use.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import type { FixtureId } from '../paths/paths.ts';
@@ -6,7 +7,7 @@ import type { BatteryContext } from './battery-facts.ts';
 import type { Stack } from './find-stacks.ts';
 import type { Battery, VentFoot } from './roles.ts';
 import type { StackPlace } from './stack-joints.ts';
-import { descentOf, islandDescent } from './vent-dip.ts';
+import { descentOf } from './vent-dip.ts';
 import { risesOverStorey, type WetFoot } from './wet-feet.ts';
 
 export interface DryRole {

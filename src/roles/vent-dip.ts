@@ -16,6 +16,3 @@ export function descentOf(network: Network, { joint, path }: Pick<VentFoot, 'joi
   }
   return descent;
 }
-
-/** A vent that comes down this far, metres, is led so on purpose: less is a sag or a fitting. */
-export const islandDescent = 0.3;

@@ -1,97 +1,48 @@
 import { type Finding, finding } from '../../findings/finding.ts';
 import { rowAtSize } from '../../tables/find-row.ts';
-import { leastSlopeOf, reachesSlope } from '../../tables/find-slope.ts';
+import { leastSlopeOf } from '../../tables/find-slope.ts';
+import type { NominalSize } from '../../units/nominal-size.ts';
 import { unitsOf } from '../../units/quantity.ts';
 import { coordinateMetres, turnDegrees } from '../../units/uncertainty.ts';
-import type { Check, CheckedPipe, CheckedTrap } from '../check.ts';
+import type { Check, CheckedTrap } from '../check.ts';
+import { type ArmLimits, armFaults, everyTrapVented, leastSlope, outletPipe } from '../rules/trap-checks.ts';
+import { mainVentCheck } from '../rules/vent-checks.ts';
+import { widthOf } from '../rules/vent-sizes.ts';
 import type { Tools } from '../tools.ts';
 
 /** Demands that are no size: R15, R26, R36, R39, R40, R67, R68, R71, R72, R78. */
 export function checks(tools: Tools): Check[] {
+  const { family } = tools;
+  const mainVent = family.size('main-vent');
   return [
-    outletLength(tools),
-    leastSlope(tools),
-    everyTrapVented(tools),
+    outletPipe(family.rule('NPC-R15'), { whole: family.number('outlet-pipe-length', 'length').value }),
+    slopes(tools),
+    everyTrapVented(family.rule('NPC-R36')),
     trapArms(tools),
     stackVents(tools),
     offsetRelief(tools),
-    mainVent(tools),
+    mainVentCheck(family.rule('NPC-R78'), family.series, () => mainVent.value),
   ];
 }
 
-function outletLength({ family }: Tools): Check {
-  const longest = family.number('outlet-pipe-length', 'length');
-  const { clause } = family.rule('NPC-R15');
-  return {
-    id: 'NPC-R15',
-    run: ({ traps }) =>
-      traps
-        .filter(({ outletLength: length }) => length > longest.value + coordinateMetres)
-        .map(({ element, outletLength: length }) =>
-          finding('outlet-pipe-too-long', [element], { lengthM: length, limitM: longest.value }, clause),
-        ),
-  };
-}
-
-function leastSlope({ family }: Tools): Check {
+function slopes({ family }: Tools): Check {
   const { rank } = family.series;
   const smallUpTo = family.size('slope-small-up-to');
   const small = family.number('slope-small', 'slope');
   const branchLarge = family.number('slope-branch-large', 'slope');
   const drain = family.table('drain');
-  const { clause } = family.rule('NPC-R26');
-  const leastOf = ({ use, required, modelled }: CheckedPipe): number | null => {
-    const size = modelled ?? required;
-    if (size === null) return null;
+  return leastSlope(family.rule('NPC-R26'), ({ use }, size) => {
     if (rank(size) <= rank(smallUpTo.value)) return small.value;
     if (use.drain === 'building-drain' || use.drain === 'building-sewer')
       return leastSlopeOf(drain, size)?.slope ?? null;
     return branchLarge.value;
-  };
-  return {
-    id: 'NPC-R26',
-    run: ({ pipes }) => {
-      const found: Finding[] = [];
-      for (const pipe of pipes) {
-        const { use, element, slopeGround, slopeUncertainty, length } = pipe;
-        if (element === null || use.drain === null || use.vertical || use.portion === 'outlet' || use.slope === null)
-          continue;
-        // A stub between two fittings says nothing of the slope a pipe is laid to.
-        if (slopeGround === 'geometry' && length < shortest) continue;
-        const least = leastOf(pipe);
-        if (least === null || reachesSlope(use.slope + slopeUncertainty, least)) continue;
-        found.push(
-          finding(
-            'slope-too-small',
-            [element],
-            { slope: use.slope, least, size: pipe.modelled ?? pipe.required },
-            clause,
-          ),
-        );
-      }
-      return found;
-    },
-  };
-}
-
-const shortest = 0.15;
-
-function everyTrapVented({ family }: Tools): Check {
-  const { clause } = family.rule('NPC-R36');
-  return {
-    id: 'NPC-R36',
-    run: ({ traps }) =>
-      traps
-        .filter(({ drains, how }) => drains && how === 'unvented')
-        .map(({ element, kind }) => finding('unvented-trap', [element], { kind }, clause)),
-  };
+  });
 }
 
 function trapArms({ family }: Tools): Check {
   const table = family.table('trap-arm');
   const { series } = family;
   const least = family.number('trap-arm-least', 'factor');
-  const mostFall = family.number('trap-arm-fall', 'factor');
   const mostTurn = family.number('trap-arm-turn', 'angle');
   const closet = {
     height: family.number('closet-vent-vertical', 'length'),
@@ -100,64 +51,17 @@ function trapArms({ family }: Tools): Check {
   };
   const arms = family.rule('NPC-R39');
   const closets = family.rule('NPC-R40');
-  const widthOf = (size: CheckedTrap['size']): number => series.sizes[series.rank(size)]!.lengthsMm[0]! / 1000;
-
-  const ofArm = ({ element, size, arm }: CheckedTrap): Finding[] => {
-    const row = rowAtSize(table, 'trap', size, 'smaller', series);
-    if (arm === null || row === null) return [];
-    const found: Finding[] = [];
-    const longest = row.amount('longest').value;
-    const slope = row.amount('slope').value;
-    const width = widthOf(size);
-    if (typeof longest === 'number' && arm.length > longest + coordinateMetres) {
-      found.push(
-        finding(
-          'trap-arm-too-long',
-          [element],
-          { lengthM: arm.length, limitM: longest, trap: size, what: 'length' },
-          arms.clause,
-        ),
-      );
-    }
-    if (arm.length < least.value * width - coordinateMetres) {
-      found.push(
-        finding(
-          'trap-arm-too-long',
-          [element],
-          { lengthM: arm.length, limitM: least.value * width, trap: size, what: 'too short' },
-          arms.clause,
-        ),
-      );
-    }
-    if (arm.fall !== null && arm.fall > mostFall.value * width + coordinateMetres) {
-      found.push(
-        finding(
-          'trap-arm-too-steep',
-          [element],
-          { fallM: arm.fall, limitM: mostFall.value * width, trap: size },
-          arms.clause,
-        ),
-      );
-    }
-    if (
-      typeof slope === 'number' &&
-      arm.slope !== null &&
-      Math.abs(arm.slope) > arm.slopeUncertainty &&
-      !reachesSlope(arm.slope + arm.slopeUncertainty, slope)
-    ) {
-      found.push(finding('slope-too-small', [element], { slope: arm.slope, least: slope, size }, arms.clause));
-    }
-    if (arm.turn !== null && arm.turn > mostTurn.value + turnDegrees) {
-      found.push(
-        finding(
-          'trap-arm-too-long',
-          [element],
-          { turnDeg: arm.turn, limitDeg: mostTurn.value, trap: size, what: 'turn' },
-          arms.clause,
-        ),
-      );
-    }
-    return found;
+  const printed = (trap: NominalSize, column: string): number | null => {
+    const value = rowAtSize(table, 'trap', trap, 'smaller', series)?.amount(column).value;
+    return typeof value === 'number' ? value : null;
+  };
+  const isListed = (trap: NominalSize): boolean => rowAtSize(table, 'trap', trap, 'smaller', series) !== null;
+  const limits: ArmLimits = {
+    longest: (trap) => printed(trap, 'longest'),
+    shortest: (trap) => (least.value * widthOf(series, trap)) / 1000,
+    fall: family.number('trap-arm-fall', 'factor').value,
+    slope: (trap) => printed(trap, 'slope'),
+    turn: () => mostTurn.value,
   };
   const ofCloset = ({ element, arm, size }: CheckedTrap): Finding[] => {
     if (arm === null) return [];
@@ -179,7 +83,10 @@ function trapArms({ family }: Tools): Check {
     run: ({ traps }) =>
       traps
         .filter(({ how }) => how !== 'unvented' && how !== 'free')
-        .flatMap((trap) => (trap.siphonic ? ofCloset(trap) : ofArm(trap))),
+        .flatMap((trap) => {
+          if (trap.siphonic) return ofCloset(trap);
+          return isListed(trap.size) ? armFaults(trap, limits, series, arms.clause) : [];
+        }),
   };
 }
 
@@ -256,20 +163,5 @@ function offsetRelief({ family }: Tools): Check {
             ),
           ),
       ),
-  };
-}
-
-function mainVent({ family }: Tools): Check {
-  const least = family.size('main-vent');
-  const { rank } = family.series;
-  const { clause } = family.rule('NPC-R78');
-  return {
-    id: 'NPC-R78',
-    run: ({ drains }) =>
-      drains
-        .filter(({ widestVent }) => widestVent === null || rank(widestVent) < rank(least.value))
-        .map(({ elements, widestVent }) =>
-          finding('main-vent-missing', elements, { least: least.value, widest: widestVent }, clause),
-        ),
   };
 }
