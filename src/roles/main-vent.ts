@@ -14,13 +14,16 @@ export function mainVentUses(
 ): Map<PipeId, MainVentUse> {
   const { stacks, loads } = context;
   const uses = new Map<PipeId, MainVentUse>();
-  const systems = new Map<number | null, { feet: VentFoot[]; before: PipeId[] }>();
+  const systems = new Map<number | null, { feet: VentFoot[]; ways: (readonly PipeId[])[]; before: PipeId[] }>();
   const stackVents = new Map<Stack, VentFoot>();
   for (const foot of feet) {
     const system = systemOfPipe(context, foot.path[0]!);
     const known = systems.get(system);
-    if (known === undefined) systems.set(system, { feet: [foot], before: [] });
-    else known.feet.push(foot);
+    if (known === undefined) systems.set(system, { feet: [foot], ways: [foot.path], before: [] });
+    else {
+      known.feet.push(foot);
+      known.ways.push(foot.path);
+    }
     const it = dry.get(foot.path[0]!);
     if (it?.role === 'stack-vent' && it.stack !== null && !stackVents.has(it.stack)) stackVents.set(it.stack, foot);
   }
@@ -34,7 +37,7 @@ export function mainVentUses(
     if (own !== undefined) {
       const use: MainVentUse = {
         own: own.path,
-        ways: its.feet.map(({ path }) => path),
+        ways: its.ways,
         drawn: drawn.get(system) ?? null,
         drain: lastPipe(context, system),
         before: [...its.before],
