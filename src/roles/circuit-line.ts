@@ -168,13 +168,15 @@ function findRelief(context: BatteryContext, from: JointId, draft: Draft): Relie
     if (out !== null && inStack[out] !== null) break;
     for (const one of others) {
       const { from: first, to, load } = loads.pipes[one]!;
+      if (passed.length > 0 || load > code.batteryLimits.reliefDrainLoad) continue;
       const fixtures = loads.order.slice(first, to);
       const vented = fixtures.some(
         (fixture) => paths.traps[fixture]!.foot !== null && paths.traps[fixture]!.foot !== draft.foot,
       );
-      if (passed.length === 0 && vented && load <= code.batteryLimits.reliefDrainLoad)
-        passed.push({ joint, by: one, kind: 'drain', load, fixtures });
+      if (vented) passed.push({ joint, by: one, kind: 'drain', load, fixtures });
     }
+    // Where a line as heavy comes in, the branch has ended: a vent further down is another pipe's.
+    if (others.some((one) => loads.pipes[one]!.load >= loads.pipes[pipe!]!.load)) break;
   }
   return passed[0] ?? null;
 }

@@ -129,6 +129,22 @@ describe('R57 relief vent required', () => {
     expect([run.role('J3-J4'), run.role('J4-RV')]).toEqual(['circuit-vented-branch', 'branch']);
   });
 
+  test('a vent on the drain that the branch joins is none of its own', () => {
+    // A branch of five closets, 20, comes in at M; the vent V9 stands past it on the drain of both.
+    const heavy = [31, 32, 33, 34, 35].map((n) => armOf(n, closet, { vented: true })).join('');
+    const others = `node J35 from M north 1 rise 1:50
+${[34, 33, 32, 31].map((n) => `node J${n} from J${n + 1} north 0.7 rise 1:50`).join('\n')}
+${heavy.replaceAll('south', 'west')}
+drain 4 in: J31 > J32 > J33 > J34 > J35 > M
+vent 3 in: V9 > V9T (to 4.2)
+terminal V9T`;
+    const text = circuitVentedRow(times(4, closet), { relief: '', more: others }).replace(
+      'K (east 0.7 fall 1:50)',
+      'M (east 1 fall 1:50) > V9 (east 1 fall 1:50) > K (east 0.7 fall 1:50)',
+    );
+    expect(asCircuit(text).broken).toEqual(['R57']);
+  });
+
   test('three closets in a row, the first with the vent on its drain: the same', () => {
     const { reading, broken } = asCircuit(circuitVentedRow(times(3, closet), { relief: '' }));
     expect([reading, broken]).toEqual(['circuit-vent', ['R57']]);

@@ -127,7 +127,8 @@ describe('R77 stack vents and vent stacks: Table 2.5.8.4. by size and load at th
     );
     // 0.5 m aside, from -0.69 up to the roof at 15.15, back 0.5 m, and 0.6 m on to 15.8.
     expect(run.pipe('VB-VU').developedLength).toBeCloseTo(0.5 + 15.84 + 0.5 + 0.6, 1);
-    expect(run.pipe('VB-VU').ventLoad?.most).toBe(5);
+    // The stack's load counts once, also where its vent stack has joined its stack vent.
+    expect([run.pipe('VB-VU').ventLoad?.most, run.pipe('VH-VT').ventLoad?.most]).toEqual([5, 5]);
   });
 });
 
