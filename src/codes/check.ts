@@ -53,6 +53,8 @@ export interface CheckedStack {
   readonly firstBelow: { readonly element: ElementId | null; readonly distance: number } | null;
   /** Heights of plumbing storeys, counted from the top, at which a yoke vent joins. */
   readonly yokes: readonly number[];
+  /** Heights at which they leave the stack, metres, highest first. */
+  readonly yokeHeights: readonly number[];
   readonly topStorey: number;
   readonly offsets: readonly {
     readonly elements: readonly ElementId[];

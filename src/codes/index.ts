@@ -8,12 +8,13 @@ import type { NominalSize } from '../units/nominal-size.ts';
 import { cleanoutRules } from './cleanouts.ts';
 import { codeSettings } from './code-settings.ts';
 import { en12056 } from './en12056/en12056.ts';
+import { ipc } from './ipc/ipc.ts';
 import { npc } from './npc/npc.ts';
 import type { CodeRules, PlumbingCode } from './plumbing-code.ts';
 import type { Tools } from './tools.ts';
 
 /** The rule module of each family; its tables stand in `tables/<family>/`. */
-const modules: Readonly<Record<string, (tools: Tools) => CodeRules>> = { npc, en12056 };
+const modules: Readonly<Record<string, (tools: Tools) => CodeRules>> = { npc, ipc, en12056 };
 
 export interface CodeSources {
   readonly tables: TableSource;

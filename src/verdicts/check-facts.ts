@@ -98,6 +98,7 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
           facts.line.some((pipe) => stack.pipes.includes(pipe)),
       ),
       yokes: [...new Set(yokes.map((use) => roles.floors.at(heightAt(use))))].sort((a, b) => b - a),
+      yokeHeights: yokes.map(heightAt).sort((a, b) => b - a),
       topStorey: stack.served.at(-1) ?? 0,
       offsets: stack.offsets.map(({ pipes: level, length }, offset) => {
         const first = stack.pipes.indexOf(level[0]!);

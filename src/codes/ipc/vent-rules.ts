@@ -191,7 +191,8 @@ export function ventRules(tools: Tools): SizingRule[] {
     if (main === null || drain === null || main.before.length > 0) return undefined;
     const asks = series.larger(shareOf(share.value, drain, ladder), least.value);
     const holds = (size: NominalSize | null): boolean => size !== null && series.rank(size) >= series.rank(asks);
-    if (holds(main.drawn) || main.ways.some((way) => way !== main.own && way.every((one) => holds(soFar(one))))) return undefined;
+    if (holds(main.drawn) || main.ways.some((way) => way !== main.own && way.every((one) => holds(soFar(one)))))
+      return undefined;
     return floorStep(
       rule('IPC-R78'),
       { ...least, value: asks, trust: rule('IPC-R78').trust },
