@@ -4,6 +4,7 @@ import { blank, heading, paragraph, type TextLine, type Tone } from './text-line
 import { counted, plainWords, tally } from './trade-words.ts';
 import { undersizedText } from './undersized-text.ts';
 import { isEmpty, understoodText } from './understood-text.ts';
+import { wallFitText } from './wall-fit-text.ts';
 
 /**
  * What a coordinator needs on one screen: what was understood, the undersized pipes by cause, the other errors,
@@ -14,6 +15,7 @@ export function checkText(result: Result): TextLine[] {
     ...understoodText(result),
     ...undersizedText(result),
     ...otherErrors(result.findings),
+    ...wallFitText(result.findings),
     ...(isEmpty(result) ? [] : [blank]),
     ...foldedText(result.findings, 'warning', 'Warnings'),
     ...foldedText(result.findings, 'note', 'Notes'),

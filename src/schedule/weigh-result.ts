@@ -155,18 +155,20 @@ function obstacleOf(
     slope: slopeText,
     number: (value: number): string => decimal(value, 2),
   };
-  const sentence =
-    rule === null
-      ? sentences[finding](given).replace(/\.$/, '')
-      : finding === 'relief-vent-missing'
-        ? 'no relief vent, and no vented drain that may stand in, joins after the last fixture'
-        : brokenText(given);
+  const sentence = (): string => {
+    if (facts.notInCode === true) return 'the code does not know it';
+    if (facts.noPlace === true) return `the drain of ${given.about[0] ?? 'a fixture'} leaves no place for a vent`;
+    if (rule === null) return sentences[finding](given).replace(/\.$/, '');
+    if (finding === 'relief-vent-missing')
+      return 'no relief vent, and no vented drain that may stand in, joins after the last fixture';
+    return brokenText(given);
+  };
   return {
     rule,
     title: rule === null ? null : code.ruleTitle(rule),
     clause,
     facts: printedFacts(outcome, index, facts),
-    sentence,
+    sentence: sentence(),
   };
 }
 

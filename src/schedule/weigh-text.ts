@@ -74,7 +74,7 @@ function rowsOf(alternatives: readonly WeighAlternative[], currency: string | un
     label,
     cells: alternatives.map((one) => (one.largest === null ? '' : of(one))),
   });
-  const isDry = (role: string): boolean => /vent/.test(role) && !/^(wet-vent|circuit-vented-branch)$/.test(role);
+  const isDry = (role: string): boolean => /vent|^idle$/.test(role) && !/^(wet-vent|circuit-vented-branch)$/.test(role);
   const metres = (one: WeighAlternative, dry: boolean): string =>
     `${one.pipes
       .filter(({ role }) => isDry(role) === dry)

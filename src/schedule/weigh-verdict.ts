@@ -2,9 +2,17 @@ import { decimal } from './number-text.ts';
 import { counted, listed } from './trade-words.ts';
 import type { WeighAlternative, WeighObstacle, WeighWall } from './weigh.ts';
 
-/** `wet vented`, `circuit vented`, `individually vented`. */
+/** `wet vented`, `circuit vented`, `individually vented`; `as a waste stack` of readings that only some codes know. */
 export const ventedText = (reading: string): string =>
-  reading === 'individual-vent' ? 'individually vented' : `${reading.replace(/-vent$/, '')} vented`;
+  otherReadings[reading] ?? `${reading.replace(/-vent$/, '')} vented`;
+
+const otherReadings: Readonly<Record<string, string>> = {
+  'individual-vent': 'individually vented',
+  'waste-stack-vent': 'as a waste stack',
+  'combination-waste-and-vent': 'as combination waste and vent',
+  'single-stack': 'as a single stack',
+  'ventilated-branch': 'as a ventilated branch',
+};
 
 /** One sentence: what governs the choice among the alternatives of a battery. */
 export function weighVerdict(alternatives: readonly WeighAlternative[]): string {
@@ -75,7 +83,9 @@ function grouped(
 
 /** `circuit or individually vented`. */
 const named = (some: readonly WeighAlternative[]): string =>
-  `${some.map(({ reading }) => ventedText(reading).replace(/ vented$/, '')).join(' or ')} vented`;
+  some.every(({ reading }) => ventedText(reading).endsWith(' vented'))
+    ? `${some.map(({ reading }) => ventedText(reading).replace(/ vented$/, '')).join(' or ')} vented`
+    : some.map(({ reading }) => ventedText(reading)).join(' or ');
 
 export const totalLength = ({ pipes }: WeighAlternative): number => pipes.reduce((sum, { length }) => sum + length, 0);
 

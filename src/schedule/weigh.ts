@@ -26,7 +26,7 @@ export interface WeighBattery {
   readonly why: string;
   /** One sentence: what governs the choice here. */
   readonly verdict: string;
-  /** Wet vent, circuit vent, individual vents, in this order. */
+  /** Wet vent, circuit vent, individual vents, in this order; then the modelled reading where it is another. */
   readonly alternatives: readonly WeighAlternative[];
 }
 

@@ -12,7 +12,7 @@ import { wetAlternative } from './wet-alternative.ts';
 /** A battery under each reading, every one built as piping and sized by the same stages. */
 export interface Weighing {
   readonly row: Row;
-  /** Wet vent, circuit vent, individual vents, in this order. */
+  /** Wet vent, circuit vent, individual vents, in this order; then the modelled reading where it is another. */
   readonly alternatives: readonly Alternative[];
 }
 
@@ -30,7 +30,9 @@ const readings: readonly SharedReading[] = ['wet-vent', 'circuit-vent', 'individ
 
 export function weighBattery(outcome: Outcome, battery: Battery): Weighing {
   const row = rowOf(outcome, battery);
-  const built = readings.map((reading) => alternative(row, reading));
+  const shared = readings.map((reading) => alternative(row, reading));
+  const other = readings.some((reading) => reading === battery.reading) ? [] : [modelledAlternative(row)];
+  const built = [...shared, ...other];
   const counted = built.filter(({ holds, reading }) => holds || reading === battery.reading);
   const scope = rowScope(
     row,
@@ -45,14 +47,32 @@ export function weighBattery(outcome: Outcome, battery: Battery): Weighing {
   };
 }
 
+/** A reading that only some codes know is told as it stands: nothing is drawn for it. */
+function modelledAlternative(row: Row): Omit<Alternative, 'quantities'> {
+  const attempt = asModelled(row);
+  const { obstacles } = attempt;
+  return { reading: row.battery.reading, holds: obstacles.length === 0, obstacles, attempt };
+}
+
 function alternative(row: Row, reading: SharedReading): Omit<Alternative, 'quantities'> {
-  const built = reading === row.battery.reading ? asModelled(row) : builders[reading](row);
+  if (reading === row.battery.reading) return modelledAlternative(row);
+  if (reading !== 'individual-vent' && !row.outcome.code.readings.some((one) => one.reading === reading))
+    return { reading, holds: false, obstacles: [notInCode], attempt: null };
+  const built = builders[reading](row);
   if ('piping' in built) {
     const { obstacles } = built;
     return { reading, holds: obstacles.length === 0, obstacles, attempt: built };
   }
   return { reading, holds: false, obstacles: built, attempt: null };
 }
+
+const notInCode: Obstacle = {
+  rule: null,
+  clause: null,
+  facts: { notInCode: true },
+  finding: 'wet-vent-not-allowed',
+  about: [],
+};
 
 /** Piping, or what stands against it where none can be drawn. */
 const builders: Readonly<Record<SharedReading, (row: Row) => Attempt | readonly Obstacle[]>> = {

@@ -20,7 +20,7 @@ const told = (walls: string) =>
   ]);
 
 describe('room for pipe', () => {
-  test.each([
+  test.each<[string, number | null, string | null, string]>([
     [
       'layers "gypsum board" 13 "stud 38 x 140" 140 "gypsum board" 13',
       140,
