@@ -55,6 +55,8 @@ export interface CheckedStack {
   readonly yokes: readonly number[];
   /** Heights at which they leave the stack, metres, highest first. */
   readonly yokeHeights: readonly number[];
+  /** Vents that tie each storey it serves to its vent stack, lowest storey first; null: the storey has none. */
+  readonly ties: readonly ({ readonly vent: NominalSize; readonly branch: NominalSize } | null)[];
   readonly topStorey: number;
   readonly offsets: readonly {
     readonly elements: readonly ElementId[];

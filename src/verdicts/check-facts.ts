@@ -10,6 +10,7 @@ import { widestDrawn } from '../roles/main-vent.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import { checkedVents, mouthsOf } from './checked-vents.ts';
 import type { Run } from './outcome.ts';
+import { storeyTies } from './tied-storeys.ts';
 
 /** What a code's checks look at, gathered from one run. */
 export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, run: Run): CheckFacts {
@@ -64,6 +65,7 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
   });
 
   const ofStack = ventsOfStacks(run);
+  const ties = storeyTies(paths, code, run);
   return {
     pipes,
     traps,
@@ -99,6 +101,7 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
       ),
       yokes: [...new Set(yokes.map((use) => roles.floors.at(heightAt(use))))].sort((a, b) => b - a),
       yokeHeights: yokes.map(heightAt).sort((a, b) => b - a),
+      ties: ties.get(stack.id) ?? stack.served.map(() => null),
       topStorey: stack.served.at(-1) ?? 0,
       offsets: stack.offsets.map(({ pipes: level, length }, offset) => {
         const first = stack.pipes.indexOf(level[0]!);

@@ -170,6 +170,28 @@ describe('R71 yoke vents: more than eleven storeys, one for each five counted fr
   });
 });
 
+describe('R71 storeys that are tied to the vent stack already need no yoke vents', () => {
+  /** Twelve storeys; each fixture's vent runs into the vent stack at `W<storey>`. */
+  const tied = (size: string, ...fixtures: string[]) => {
+    const all = Array.from({ length: 12 }, (_, at) => at + 1);
+    const text = all.reduce(
+      (drawn, n) =>
+        drawn.replace(
+          new RegExp(`vent 1 1/2 in: V${n}\\.1 > VT${n}\\.1 .*\\n.*terminal VT${n}\\.1`),
+          `vent ${size}: V${n}.1 > U${n} (to ${floorOf(n) + 1}) > W${n}`,
+        ),
+      tower(storeys(12, fixtures), { ventStack: true }),
+    );
+    const on = all.map((n) => `W${n} (to ${floorOf(n) + 1.1})`).join(' > ');
+    return missing(runSketch(text.replace('VB (north 0.5 rise 1:50) > VU', `VB (north 0.5 rise 1:50) > ${on} > VU`)));
+  };
+
+  test('by vents of 2 in where the branch is larger; smaller ones do not', () => {
+    expect(tied('2 in', closet)).toEqual([]); // 3 in branches
+    expect(tied('1 1/2 in', closet)).toEqual(['yoke-vent-missing', 'yoke-vent-missing']);
+  });
+});
+
 describe('R72 offset relief vents', () => {
   // Storeys 1 to 3 hold the offset and the lower part; the upper part passes those above.
   const stepped = (upper: readonly (readonly string[])[], offset: number, more = '') =>

@@ -4,7 +4,7 @@ import { leastSlopeOf } from '../../tables/find-slope.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
 import { unitsOf } from '../../units/quantity.ts';
 import { coordinateMetres, turnDegrees } from '../../units/uncertainty.ts';
-import type { Check, CheckedTrap } from '../check.ts';
+import type { Check, CheckedStack, CheckedTrap } from '../check.ts';
 import { type ArmLimits, armFaults, everyTrapVented, leastSlope, outletPipe } from '../rules/trap-checks.ts';
 import { mainVentCheck } from '../rules/vent-checks.ts';
 import { widthOf } from '../rules/vent-sizes.ts';
@@ -95,40 +95,51 @@ function stackVents({ family }: Tools): Check {
   const storeys = family.number('vent-stack-storeys', 'count');
   const yokeStoreys = family.number('yoke-storeys', 'count');
   const section = family.number('yoke-section', 'count');
+  const freeVent = family.size('yoke-free-vent');
+  const { rank } = family.series;
+  /** Every storey is tied to the vent stack by a vent as large as its branch, or of the printed size if that is less. */
+  const isTied = (ties: CheckedStack['ties']): boolean =>
+    ties.every((tie) => tie !== null && rank(tie.vent) >= Math.min(rank(tie.branch), rank(freeVent.value)));
   return {
     id: 'NPC-R68',
     run: ({ stacks }) =>
-      stacks.flatMap(({ elements, hasStackVent, ventStack, isWetVent, storeysServed, yokes, topStorey, footLoad }) => {
-        const found: Finding[] = [];
-        if (!hasStackVent)
-          found.push(
-            finding('stack-vent-missing', elements, { loadUnits: unitsOf(footLoad) }, family.rule('NPC-R67').clause),
-          );
-        if (storeysServed > storeys.value && ventStack !== 'foot' && !isWetVent) {
-          found.push(
-            finding(
-              ventStack === null ? 'vent-stack-missing' : 'vent-stack-misplaced',
-              elements,
-              { storeys: storeysServed, storeysMost: storeys.value, ...(ventStack === null ? {} : { at: ventStack }) },
-              family.rule('NPC-R68').clause,
-            ),
-          );
-        }
-        if (storeysServed > yokeStoreys.value) {
-          for (let bottom = topStorey - section.value + 1; bottom > 0; bottom -= section.value) {
-            if (yokes.some((storey) => storey >= bottom - 1 && storey <= bottom)) continue;
+      stacks.flatMap(
+        ({ elements, hasStackVent, ventStack, isWetVent, storeysServed, yokes, ties, topStorey, footLoad }) => {
+          const found: Finding[] = [];
+          if (!hasStackVent)
+            found.push(
+              finding('stack-vent-missing', elements, { loadUnits: unitsOf(footLoad) }, family.rule('NPC-R67').clause),
+            );
+          if (storeysServed > storeys.value && ventStack !== 'foot' && !isWetVent) {
             found.push(
               finding(
-                'yoke-vent-missing',
+                ventStack === null ? 'vent-stack-missing' : 'vent-stack-misplaced',
                 elements,
-                { storey: bottom, storeys: storeysServed },
-                family.rule('NPC-R71').clause,
+                {
+                  storeys: storeysServed,
+                  storeysMost: storeys.value,
+                  ...(ventStack === null ? {} : { at: ventStack }),
+                },
+                family.rule('NPC-R68').clause,
               ),
             );
           }
-        }
-        return found;
-      }),
+          if (storeysServed > yokeStoreys.value && !isTied(ties)) {
+            for (let bottom = topStorey - section.value + 1; bottom > 0; bottom -= section.value) {
+              if (yokes.some((storey) => storey >= bottom - 1 && storey <= bottom)) continue;
+              found.push(
+                finding(
+                  'yoke-vent-missing',
+                  elements,
+                  { storey: bottom, storeys: storeysServed },
+                  family.rule('NPC-R71').clause,
+                ),
+              );
+            }
+          }
+          return found;
+        },
+      ),
   };
 }
 
