@@ -15,6 +15,11 @@ export interface Witnessed {
 
 /** Nothing under a millimetre is a pipe's size: zero and 0.000001 stand for "not known" in many models. */
 const leastSize = 0.001;
+/** Nor is anything of a kilometre, in metres. */
+const largestSize = 1000;
+
+/** Longest pipe that a property may state, in metres. */
+const longestPipe = 1e6;
 
 /** Millionths of a millimetre are the dust of arithmetic. */
 export const roundedMm = (mm: number): number => Math.round(mm * 1e6) / 1e6;
@@ -84,7 +89,7 @@ class Verdict {
         return;
       }
       case 'length':
-        if (typeof reading.value === 'number' && reading.value > 0 && reading.hasUnit) {
+        if (typeof reading.value === 'number' && reading.value > 0 && reading.value < longestPipe && reading.hasUnit) {
           this.statedLength ??= metres(reading.value);
         }
         return;
@@ -119,7 +124,10 @@ function sizeWitness(reading: Reading, means: SizeWitness['means'], from: string
   const ground = isQuantity ? 'quantity' : 'property';
   if (typeof value === 'string') return { means, mm: null, text: value, ground, from };
   if (typeof value !== 'number' || measure === 'angle' || !(value > 0)) return null;
-  if (hasUnit) return value > leastSize ? { means, mm: roundedMm(value * 1000), text: null, ground, from } : null;
+  if (hasUnit)
+    return value > leastSize && value < largestSize
+      ? { means, mm: roundedMm(value * 1000), text: null, ground, from }
+      : null;
   // A bare number: DN and Nennweite are millimetres by their meaning; others are left to whoever knows the sizes.
   const isMillimetres = means === 'nominal' && value >= 15 && value <= 3000;
   return { means, mm: isMillimetres ? value : null, text: isMillimetres ? null : String(value), ground, from };

@@ -68,9 +68,7 @@ export function unitsOf(reader: Reader): Units {
         const value = reader.open(measure);
         const factor = value.number();
         const base = read(reader.follow(value.id(), measure), depth + 1);
-        return factor === null || !(factor > 0)
-          ? named(quantity, name)
-          : { quantity, name, factor: factor * (base?.factor ?? 1) };
+        return factor === null ? named(quantity, name) : sane(quantity, name, factor * (base?.factor ?? 1));
       }
       case 'IFCCONTEXTDEPENDENTUNIT':
         return named(quantity, cursor.text() ?? '');
@@ -103,6 +101,13 @@ export function unitsOf(reader: Reader): Units {
     read: (record) => read(record, 0),
   };
 }
+
+/** Units longer or shorter than this, in metres or radians, are a slip of the pen. */
+const longest = 1e7;
+const shortest = 1e-12;
+
+const sane = (quantity: string, name: string, factor: number): Unit | null =>
+  factor > shortest && factor < longest ? { quantity, name, factor } : named(quantity, name);
 
 function named(quantity: string, name: string): Unit | null {
   const factor = quantity === 'LENGTHUNIT' ? knownLengths[name.toUpperCase()] : undefined;

@@ -3,8 +3,12 @@ import { add, cross, dot, scale, subtract, type Vec3 } from '../../geometry/vect
 /** Largest angle between two neighbouring points of an arc: its length is then right to a thousandth. */
 const arcStep = Math.PI / 24;
 
+/** A full circle takes 48; an angle past many turns is a slip of the pen. */
+const mostSteps = 480;
+
 /** Chords that stand for an arc of so many radians. */
-export const arcSteps = (angle: number): number => Math.max(2, Math.ceil(Math.abs(angle) / arcStep - 1e-9));
+export const arcSteps = (angle: number): number =>
+  Math.min(mostSteps, Math.max(2, Math.ceil(Math.abs(angle) / arcStep - 1e-9)));
 
 /** Points on the arc that begins at `a`, passes `b` and ends at `c`; the three themselves when they stand in a line. */
 export function arcThrough(a: Vec3, b: Vec3, c: Vec3): Vec3[] {

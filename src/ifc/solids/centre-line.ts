@@ -1,10 +1,10 @@
 import { distance, type Vec3 } from '../../geometry/vector.ts';
 import type { CentreLine } from '../../model/model.ts';
-import { metres } from '../../units/quantity.ts';
+import { type Metres, metres } from '../../units/quantity.ts';
 import { radiusAround } from './fit-around.ts';
 import { fitBend } from './fit-bend.ts';
 import { type FittedTube, fitLoosely, fitStraight } from './fit-tube.ts';
-import { type Frame, moved, scaleOf } from './frame.ts';
+import { type Frame, isPlace, moved, scaleOf } from './frame.ts';
 import { type JoinedTube, joinTubes } from './join-tubes.ts';
 import type { Piece } from './piece.ts';
 
@@ -64,16 +64,22 @@ function line(
 ): CentreLine | null {
   const points: Vec3[] = [];
   for (const point of path) {
-    if (!Number.isFinite(point[0] + point[1] + point[2])) return null;
+    if (!isPlace(point[0], point[1], point[2])) return null;
     const last = points.at(-1);
     if (last === undefined || distance(last, point) > alike) points.push(point);
   }
   if (points.length < 2) return null;
   return {
     points,
-    outerDiameter: outer === null ? null : metres(2 * outer),
-    innerDiameter: inner === null ? null : metres(2 * inner),
+    outerDiameter: diameter(outer),
+    innerDiameter: diameter(inner),
     ground,
     residual,
   };
 }
+
+/** Widest radius, in metres, that is a pipe's and no slip of the pen. */
+const widest = 1000;
+
+const diameter = (radius: number | null): Metres | null =>
+  radius === null || !(radius < widest) ? null : metres(2 * radius);

@@ -107,10 +107,17 @@ export function includeAll(box: GrowingBox, f: Frame, flat: readonly number[]): 
   }
 }
 
-/** null when nothing was included, or something that is no number. */
+/** Farthest from zero that anything built can stand, in metres: past it a number is a fault, and squares overflow. */
+const farthest = 1e10;
+
+/** True for coordinates of somewhere: numbers all three, not beyond all measure. */
+export const isPlace = (x: number, y: number, z: number): boolean =>
+  Math.abs(x) < farthest && Math.abs(y) < farthest && Math.abs(z) < farthest;
+
+/** null when nothing was included, or something that is no place. */
 export function boxOf({ min, max }: GrowingBox): Box | null {
-  for (let k = 0; k < 3; k++) if (!Number.isFinite(min[k]!) || !Number.isFinite(max[k]!)) return null;
-  return { min: [...min], max: [...max] };
+  if (!isPlace(min[0], min[1], min[2]) || !isPlace(max[0], max[1], max[2])) return null;
+  return { min: [min[0], min[1], min[2]], max: [max[0], max[1], max[2]] };
 }
 
 /** Coordinates of a world point within a turned frame that does not scale. */

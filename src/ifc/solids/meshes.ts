@@ -66,6 +66,7 @@ export class Meshes {
 }
 
 const noCylinders: readonly Cylinder[] = [];
+const isCorner = (corner: number, count: number): boolean => Number.isInteger(corner) && corner >= 0 && corner < count;
 
 /** Faces over a list of points. */
 class ListedMesh implements Mesh {
@@ -99,25 +100,25 @@ class ListedMesh implements Mesh {
 
   private triangles(): number[][] {
     const flat = this.reader.open(this.record).skip(3).numbers([]);
-    const most = this.points().length / 3;
+    const most = Math.floor(this.points().length / 3);
     const faces: number[][] = [];
     for (let k = 0; k + 2 < flat.length; k += 3) {
       const face = [flat[k]! - 1, flat[k + 1]! - 1, flat[k + 2]! - 1];
-      if (face.every((corner) => corner >= 0 && corner < most)) faces.push(face);
+      if (face.every((corner) => isCorner(corner, most))) faces.push(face);
     }
     return faces;
   }
 
   private polygons(): number[][] {
     const { reader, record } = this;
-    const most = this.points().length / 3;
+    const most = Math.floor(this.points().length / 3);
     const faces: number[][] = [];
     for (const id of reader.open(record).skip(2).ids()) {
       const face = reader.follow(id, record);
       if (face < 0) continue;
       const corners = reader.open(face).numbers([]);
       for (let k = 0; k < corners.length; k++) corners[k] = corners[k]! - 1;
-      if (corners.every((corner) => corner >= 0 && corner < most)) faces.push(corners);
+      if (corners.every((corner) => isCorner(corner, most))) faces.push(corners);
     }
     return faces;
   }

@@ -2,7 +2,7 @@ import type { Vec3 } from '../../geometry/vector.ts';
 import type { Cursor } from '../lines/cursor.ts';
 import { readTriple } from '../lines/number.ts';
 import type { Reader } from '../reader.ts';
-import { compose, type Frame, identity } from './frame.ts';
+import { compose, type Frame, identity, isPlace } from './frame.ts';
 
 /** Longest chain of placements that is followed. */
 export const deepestPlacement = 200;
@@ -82,11 +82,10 @@ export class Placements {
     const x = t[0]! * metres;
     const y = t[1]! * metres;
     const z = t[2]! * metres;
-    return [
-      parent[0] * x + parent[3] * y + parent[6] * z + parent[9],
-      parent[1] * x + parent[4] * y + parent[7] * z + parent[10],
-      parent[2] * x + parent[5] * y + parent[8] * z + parent[11],
-    ];
+    const wx = parent[0] * x + parent[3] * y + parent[6] * z + parent[9];
+    const wy = parent[1] * x + parent[4] * y + parent[7] * z + parent[10];
+    const wz = parent[2] * x + parent[5] * y + parent[8] * z + parent[11];
+    return isPlace(wx, wy, wz) ? [wx, wy, wz] : null;
   }
 
   private climb(record: number): Frame | null {
@@ -113,6 +112,7 @@ export class Placements {
     for (let k = chain.length - 1; k >= 0; k--) {
       const step = chain[k]!;
       frame = frame === null ? null : compose(frame, this.axes(step.axes));
+      if (frame !== null && !isPlace(frame[9], frame[10], frame[11])) frame = null;
       worlds.set(step.record, frame);
     }
     return frame;
