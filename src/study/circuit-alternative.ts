@@ -1,6 +1,7 @@
 import type { BatteryTrap, Broken } from '../codes/battery.ts';
 import { planTurn } from '../paths/turns.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
+import { additionalFeet } from './additional-feet.ts';
 import { type Attempt, asModelled, attempt, type Obstacle, obstacleOf } from './attempt.ts';
 import { type ChangedPiping, unchanged } from './changed-piping.ts';
 import { nameOf } from './fixture-name.ts';
@@ -82,71 +83,54 @@ function ofOneKind({ battery, outcome }: Row, traps: readonly BatteryTrap[]): Ba
   return large.length >= 2 ? large : small.length >= 2 ? small : [];
 }
 
-/** As it is; else with a relief vent; else with additional circuit vents too. The last one tried, where none holds. */
+/**
+ * With a relief vent at once where one is plainly due, else as it is and then with one; at last with additional circuit
+ * vents too. The last one tried, where none holds.
+ */
 function withReliefAndMore(row: Row, piping: ChangedPiping, traps: readonly BatteryTrap[]): Attempt {
-  let tried = attempt(row, piping, 'circuit-vent');
+  const last = traps.at(-1);
+  const foot = last === undefined ? null : footBehind(row, last.joins);
+  const relieve = (): ChangedPiping | null => (foot === null ? null : ventFrom(row, piping, foot, 'Relief vent'));
+  const relieved = isReliefDue(row) ? relieve() : null;
+  let tried = attempt(row, relieved ?? piping, 'circuit-vent');
   const asks = (finding: string): boolean => tried.obstacles.some((one) => one.finding === finding);
-  const reliefAsked = (): boolean => {
-    const relief = tried.battery?.facts.circuit.relief ?? null;
-    return asks('relief-vent-missing') || (asks('additional-circuit-vent-missing') && relief?.kind === 'drain');
-  };
-  if (reliefAsked()) {
-    const last = traps.at(-1);
-    const foot = last === undefined ? null : footBehind(row, last.joins);
-    const relieved = foot === null ? null : ventFrom(row, tried.piping, foot, 'Relief vent');
-    if (relieved !== null) tried = attempt(row, relieved, 'circuit-vent');
+  if (relieved === null && (asks('relief-vent-missing') || (asks(oneMore) && turnsPastItsTraps(row, tried)))) {
+    const later = relieve();
+    if (later !== null) tried = attempt(row, later, 'circuit-vent');
   }
-  if (asks('additional-circuit-vent-missing')) {
-    const feet = additionalFeet(row, tried).map((foot, at) => ({ foot, name: `Additional circuit vent ${at + 1}` }));
+  // Between two fixtures a further vent would leave each with its own: no circuit vent at all.
+  if (asks(oneMore) && traps.length > 2) {
+    const feet = additionalFeet(row, tried).map((one, at) => ({
+      foot: one,
+      name: `Additional circuit vent ${at + 1}`,
+    }));
     const more = feet.length === 0 ? null : ventsFrom(row, tried.piping, feet);
     const vented = more === null ? null : attempt(row, more, 'circuit-vent');
-    // A vent where the first two fixtures meet would leave each with its own: no circuit vent at all.
     if (vented?.battery?.reading === 'circuit-vent') tried = vented;
   }
   return tried;
 }
 
-/** Behind every so many fixtures, evenly; and at the bends beyond which the branch would turn too far. */
-function additionalFeet(row: Row, { battery, outcome }: Attempt): Foot[] {
-  if (battery === null) return [];
-  const { additionalAfter, turnDegrees } = row.outcome.code.batteryLimits;
-  const { branch, start, stretches, traps } = battery.facts.circuit;
-  const { stream } = row;
-  const places = new Map([[start, 0]]);
-  const downOf = (pipe: (typeof branch)[number]) => outcome.paths.toward[pipe]!;
-  branch.forEach((pipe, at) => {
-    places.set(downOf(pipe), at + 1);
-  });
-  const placeAt = (joint: typeof start): number => places.get(joint) ?? branch.length;
-  const feet: Foot[] = [];
-  for (const [index, stretch] of stretches.entries()) {
-    const [from, to] = [placeAt(stretch.from), placeAt(stretch.to)];
-    const inside = traps.filter(({ joins }) => {
-      const place = placeAt(joins);
-      return place <= to && (index === 0 ? place >= from : place > from);
-    });
-    if (inside.length > additionalAfter) {
-      const parts = Math.ceil(inside.length / additionalAfter);
-      for (let part = 1; part < parts; part++) {
-        const behind = inside[Math.ceil((part * inside.length) / parts) - 1]!;
-        const foot = footBehind(row, behind.joins);
-        if (foot !== null) feet.push(foot);
-      }
-    }
-    let turned = 0;
-    for (let at = from; at + 1 < to; at++) {
-      const joint = downOf(branch[at]!);
-      turned += planTurn(
-        outcome.network,
-        [branch[at]!, branch[at + 1]!],
-        at === from ? stretch.from : downOf(branch[at - 1]!),
-      );
-      if (turned <= turnDegrees + angle) continue;
-      turned = 0;
-      if (joint < stream.outflow.length && isFreeAbove(row, joint)) feet.push({ joint });
-    }
-  }
-  return feet;
+const oneMore = 'additional-circuit-vent-missing';
+
+/** As modelled no vent nor drain relieves the row, or one only behind a bend that the code does not let it relieve past. */
+function isReliefDue({ battery, outcome, stream }: Row): boolean {
+  const { relief, branch, toLastTrap } = battery.facts.circuit;
+  const others = battery.others.find(({ reading }) => reading === 'circuit-vent')?.broken ?? [];
+  if (relief === null) return others.some(({ finding }) => finding === 'relief-vent-missing');
+  const last = toLastTrap.at(-1);
+  if (relief.kind !== 'drain' || last === undefined) return false;
+  const beyond = branch.slice(toLastTrap.length);
+  const turn = planTurn(outcome.network, [last, ...beyond], stream.up(last));
+  return turn > outcome.code.batteryLimits.turnDegrees + angle;
+}
+
+/** The branch turns too far only behind its last fixture: a relief vent ahead of the bend mends that. */
+function turnsPastItsTraps(row: Row, { battery, outcome }: Attempt): boolean {
+  if (battery === null) return false;
+  const { relief, toLastTrap, start } = battery.facts.circuit;
+  const turn = planTurn(outcome.network, toLastTrap, start);
+  return relief?.kind === 'drain' && turn <= row.outcome.code.batteryLimits.turnDegrees + angle;
 }
 
 /** Angles carry a hundredth of a degree at each bend. */
