@@ -3,6 +3,7 @@ import { leanResult } from '../schedule/lean-result.ts';
 import { type Question, questionsOf } from '../schedule/questions.ts';
 import type { Result, SizeLabel } from '../schedule/result.ts';
 import { type Riser, type RiserSource, risersOf } from '../schedule/riser.ts';
+import type { WeighBattery } from '../schedule/weigh.ts';
 import { type FabricColumns, fabricColumns } from './page-fabric.ts';
 import { type PathColumns, pathColumns } from './page-paths.ts';
 import { type FixtureColumns, fixtureBoxes, originOf, type PipeColumns, pipeColumns } from './page-pipes.ts';
@@ -17,6 +18,8 @@ export interface PageData {
   readonly sizes: readonly SizeLabel[];
   /** What the model does not say and a person can, most weighty first. */
   readonly questions: readonly Question[];
+  /** Batteries under each reading, side by side; empty where nobody weighed them. */
+  readonly weighed: readonly WeighBattery[];
   readonly scene: PageScene;
   /** Line drawings, one for each drain system, the one with most fixtures first. */
   readonly risers: readonly Riser[];
@@ -39,9 +42,14 @@ export interface PageScene {
 
 /**
  * Everything for the page from one run. Sections of `scene` are the pipes of the network, in the same order. `sizes`
- * are those the code offers, smallest first.
+ * are those the code offers, smallest first; `weighed` compares the readings of its batteries.
  */
-export function pageData(result: Result, source: RiserSource, sizes: readonly SizeLabel[] = []): PageData {
+export function pageData(
+  result: Result,
+  source: RiserSource,
+  sizes: readonly SizeLabel[] = [],
+  weighed: readonly WeighBattery[] = [],
+): PageData {
   const { model, network, paths } = source;
   const origin = originOf(model, network);
   const pipeAt = indexOf(result.pipes);
@@ -54,6 +62,11 @@ export function pageData(result: Result, source: RiserSource, sizes: readonly Si
     result: { ...leanResult(result), elements: [] },
     sizes,
     questions: questionsOf(result),
+    // Pipe by pipe it is in the command's own result; here the sums do.
+    weighed: weighed.map(({ alternatives, ...battery }) => ({
+      ...battery,
+      alternatives: alternatives.map((alternative) => ({ ...alternative, sections: [], fittings: [] })),
+    })),
     scene: {
       origin,
       storeys: model.storeys.map(({ name, elevation }) => ({ name, elevation: millimetres(elevation - origin[2]) })),

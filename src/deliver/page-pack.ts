@@ -26,6 +26,7 @@ export function packPage(data: PageData): Uint8Array {
     risers: data.risers,
     sizes: data.sizes,
     questions: data.questions,
+    weighed: data.weighed,
   };
   const json = new TextEncoder().encode(JSON.stringify(head));
   const plain = new Uint8Array(blocks.reduce((sum, block) => sum + block.length, 4 + json.length));
@@ -56,8 +57,8 @@ export function unpackPage(plain: Uint8Array): PageData {
     findings: unpackRows(head.rows.findings, numbers),
   };
   const scene = replaced(head.scene, (value) => (isColumn(value) ? numbers(value.column) : undefined));
-  const { risers, sizes, questions } = head;
-  return { format: 'drainwright-page', version: 1, result, sizes, questions, scene, risers } as PageData;
+  const { risers, sizes, questions, weighed } = head;
+  return { format: 'drainwright-page', version: 1, result, sizes, questions, weighed, scene, risers } as PageData;
 }
 
 interface Column {
@@ -72,6 +73,7 @@ interface Head {
   readonly risers: PageData['risers'];
   readonly sizes: PageData['sizes'];
   readonly questions: PageData['questions'];
+  readonly weighed: PageData['weighed'];
 }
 
 const isColumn = (value: unknown): value is { readonly column: Column } =>

@@ -5,6 +5,7 @@ import { make, modelText } from './element.ts';
 import { factsLine } from './facts.ts';
 import { conditionText } from './finding-sentence.ts';
 import { batteryName, capital, shown } from './names.ts';
+import { weighTable } from './weigh-table.ts';
 
 /** Each battery with all its readings side by side: which one was taken, and what stands against each. */
 export function batteryList(desk: Desk): HTMLElement {
@@ -23,6 +24,7 @@ export function batteryCard(desk: Desk, battery: ResultBattery): HTMLElement {
     const kind = row === undefined ? null : (building.result.fixtures[row]?.kind ?? null);
     kinds.set(kind, (kinds.get(kind) ?? 0) + 1);
   }
+  const weighed = building.data.weighed.find(({ id }) => id === battery.id);
   const readings = [
     { reading: battery.reading, holds: battery.broken.length === 0, broken: battery.broken, chosen: true },
     ...battery.others.map((other) => ({ ...other, chosen: false })),
@@ -35,6 +37,7 @@ export function batteryCard(desk: Desk, battery: ResultBattery): HTMLElement {
     make(
       'table',
       { class: 'readings' },
+      make('caption', {}, words.weigh.asDrawn),
       make(
         'thead',
         {},
@@ -72,6 +75,7 @@ export function batteryCard(desk: Desk, battery: ResultBattery): HTMLElement {
         ),
       ),
     ),
+    weighed !== undefined && weighTable(desk, weighed),
     battery.why !== '' &&
       make('p', { class: 'quiet' }, `${words.battery.why} `, modelText(shown(phrase(words, battery.why))), '.'),
     rows.length > 0 &&

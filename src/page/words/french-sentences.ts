@@ -54,16 +54,24 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
     `La ventilation ${first(f)} finit par un clapet d’admission d’air que le code ne permet pas ici${f.clause}.`,
   'valve-needs-approval': (f) =>
     `La ventilation ${first(f)} finit par un clapet d’admission d’air : ce code n’en nomme pas, l’autorité compétente décide.`,
+  'suds-zone': (f) =>
+    `La colonne ${first(f)} porte des eaux mousseuses et une évacuation s’y raccorde à ${f.length(num(f, 'distanceM'))} de son pied, au moins ${f.length(num(f, 'leastM'))}${f.clause}.`,
   'branch-near-foot': (f) =>
     `${first(f)} se raccorde à ${f.length(num(f, 'distanceM'))} en aval du pied d’une colonne, au moins ${f.length(num(f, 'leastM'))}${f.clause}.`,
   'stack-vent-missing': (f) =>
     `La colonne de chute ${first(f)} porte ${load(f)} et ne se prolonge pas vers le haut en colonne de ventilation primaire${f.clause}.`,
   'vent-stack-missing': (f) =>
-    `La colonne de chute ${first(f)} reçoit des appareils de ${text(f, 'storeys')} étages; au-delà de ${text(f, 'storeysMost')} il lui faut une colonne de ventilation secondaire dès son pied${f.clause}.`,
+    has(f, 'intervals')
+      ? `La colonne de chute ${first(f)} a ${text(f, 'intervals')} intervalles de branchement; dès ${text(f, 'intervalsFrom')} il lui faut une colonne de ventilation secondaire${f.clause}.`
+      : has(f, 'storeysHigh')
+        ? `La colonne de chute ${first(f)} traverse ${text(f, 'storeysHigh')} étages; dès ${text(f, 'storeysFrom')} il lui faut une colonne de ventilation secondaire${f.clause}.`
+        : `La colonne de chute ${first(f)} reçoit des appareils de ${text(f, 'storeys')} étages; au-delà de ${text(f, 'storeysMost')} il lui faut une colonne de ventilation secondaire dès son pied${f.clause}.`,
   'vent-stack-misplaced': (f) =>
     `La colonne de ventilation secondaire ${first(f)} ne commence pas au raccordement le plus bas de sa colonne de chute ou plus bas${f.clause}.`,
   'yoke-vent-missing': (f) =>
-    `La colonne de chute ${first(f)} reçoit des appareils de ${text(f, 'storeys')} étages et n’a pas de ventilation de chute à l’étage ${num(f, 'storey') + 1}${f.clause}.`,
+    has(f, 'interval')
+      ? `La colonne de chute ${first(f)} a ${text(f, 'intervals')} intervalles de branchement et pas de ventilation vers sa colonne secondaire au ${text(f, 'interval')}e depuis le haut${f.clause}.`
+      : `La colonne de chute ${first(f)} reçoit des appareils de ${text(f, 'storeys')} étages et n’a pas de ventilation de chute à l’étage ${num(f, 'storey') + 1}${f.clause}.`,
   'yoke-vent-misplaced': (f) =>
     `La ventilation de chute ${first(f)} ne se raccorde pas où le code le demande${f.clause}.`,
   'offset-relief-vent-missing': (f) =>

@@ -98,6 +98,7 @@ export const frenchCodes: Words['codes'] = {
   'valve-not-allowed': 'clapet d’admission d’air non permis',
   'valve-needs-approval': 'clapet d’admission d’air : approbation requise',
   'branch-near-foot': 'branchement trop près du pied de colonne',
+  'suds-zone': 'zone de mousse',
   'fixture-unidentified': 'appareil non identifié',
   'fixture-unconnected': 'appareil non raccordé',
   'open-end': 'bout ouvert',

@@ -174,6 +174,23 @@ export interface Words {
     readonly none: string;
     readonly show: string;
   };
+  readonly weigh: Readonly<
+    Record<
+      | 'title'
+      | 'asDrawn'
+      | 'holds'
+      | 'inWall'
+      | 'underFloor'
+      | 'pipe'
+      | 'adds'
+      | 'cleanouts'
+      | 'depth'
+      | 'stud'
+      | 'noStud'
+      | 'cut',
+      string
+    >
+  >;
   readonly model: {
     readonly file: string;
     readonly sha256: string;

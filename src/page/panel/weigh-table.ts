@@ -1,0 +1,116 @@
+import { cavityDrawing } from '../../schedule/cavity.ts';
+import { visible } from '../../schedule/shown-text.ts';
+import type { WeighAlternative, WeighBattery } from '../../schedule/weigh.ts';
+import { totalLength } from '../../schedule/weigh-verdict.ts';
+import { decimal, lengthText, oneSize } from '../format.ts';
+import { shapeElement } from '../riser/shape-element.ts';
+import { named } from '../words/words.ts';
+import type { Desk } from './desk.ts';
+import { make, makeSvg, modelText } from './element.ts';
+import { capital } from './names.ts';
+
+/** What each reading of a battery would cost: sizes, lengths, cleanouts, the wall it asks for; and a cut through it. */
+export function weighTable(desk: Desk, battery: WeighBattery): HTMLElement {
+  const { words } = desk;
+  const { alternatives } = battery;
+  const row = (label: string, value: (one: WeighAlternative) => string): HTMLElement =>
+    make(
+      'tr',
+      {},
+      make('th', { scope: 'row' }, label),
+      ...alternatives.map((one) => make('td', { class: one.modelled ? 'chosen' : '' }, value(one))),
+    );
+  const known =
+    (value: (one: WeighAlternative) => string) =>
+    (one: WeighAlternative): string =>
+      one.largest === null ? '–' : value(one);
+  const drawing = cavityDrawing(battery);
+  return make(
+    'div',
+    { class: 'weighed' },
+    make(
+      'table',
+      { class: 'readings side' },
+      make('caption', {}, words.weigh.title),
+      make(
+        'thead',
+        {},
+        make(
+          'tr',
+          {},
+          make('td', {}),
+          ...alternatives.map((one) =>
+            make(
+              'th',
+              { scope: 'col', class: one.modelled ? 'chosen' : '' },
+              capital(named(words.roles, one.reading)),
+              one.modelled && make('span', { class: 'tag' }, words.battery.chosen),
+            ),
+          ),
+        ),
+      ),
+      make(
+        'tbody',
+        {},
+        row(words.weigh.holds, (one) => (one.holds ? `✓ ${words.yes}` : `✕ ${words.no}`)),
+        row(
+          words.weigh.inWall,
+          known((one) => oneSize(words, one.largest?.inWall, '–')),
+        ),
+        row(
+          words.weigh.underFloor,
+          known((one) => oneSize(words, one.largest?.underFloor, '–')),
+        ),
+        row(
+          words.weigh.pipe,
+          known((one) => `${decimal(words, totalLength(one), 1)} m`),
+        ),
+        row(
+          words.weigh.adds,
+          known((one) => added(desk, one)),
+        ),
+        row(
+          words.weigh.cleanouts,
+          known((one) => one.cleanouts.map(({ size }) => oneSize(words, size)).join(', ') || '0'),
+        ),
+        row(
+          words.weigh.depth,
+          known((one) => (one.wall === null ? '–' : lengthText(words, one.wall.depth))),
+        ),
+        row(
+          words.weigh.stud,
+          known((one) => (one.wall === null ? '–' : (one.wall.stud ?? words.weigh.noStud))),
+        ),
+      ),
+    ),
+    words.language === 'en' && make('p', {}, modelText(visible(battery.verdict))),
+    make(
+      'details',
+      {},
+      make('summary', {}, words.weigh.cut),
+      make(
+        'div',
+        { class: 'cut', tabindex: '0', role: 'group', 'aria-label': words.weigh.cut },
+        makeSvg(
+          'svg',
+          {
+            viewBox: `0 0 ${drawing.width} ${drawing.height}`,
+            width: drawing.width,
+            height: drawing.height,
+            role: 'img',
+            'aria-label': words.weigh.cut,
+            lang: 'en',
+          },
+          makeSvg('rect', { width: drawing.width, height: drawing.height, fill: '#ffffff' }),
+          ...drawing.shapes.map(shapeElement),
+        ),
+      ),
+    ),
+  );
+}
+
+function added({ words }: Desk, { adds }: WeighAlternative): string {
+  if (adds.length === 0) return '0';
+  const length = adds.reduce((sum, one) => sum + one.length, 0);
+  return `${decimal(words, length, 1)} m`;
+}
