@@ -16,9 +16,11 @@ export function throughShortBranches(
     const { after } = paths.traps[fixture]!;
     // A trap on the stack itself has no pipe of its own.
     const last = way?.pipes.at(-1) ?? paths.fixtures[fixture]!.water[after];
-    if (it.how !== 'unvented' || way === null || last === undefined) return it;
+    // At the top of a stack its vent stands on the very joint; what counts is the way there, as on the storeys below.
+    const isOnStack = it.how === 'unvented' || (way?.end === 'stack' && it.how === 'stack-vent');
+    if (!isOnStack || way === null || last === undefined) return it;
     const closetTurn = ways.reach.get(last)?.closetTurn ?? 0;
     const free = shortBranch({ way, row: loads.fixtures[fixture]!.row, carried: carriedBy(loads, last), closetTurn });
-    return free === null ? it : { ...it, how: 'free', free };
+    return { how: free === null ? 'unvented' : 'free', vents: [], free, battery: it.battery };
   });
 }

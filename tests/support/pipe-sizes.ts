@@ -36,9 +36,22 @@ export function sizeOfInches(inches: number): PipeSize | undefined {
   return row && made(row, `${row[1]} in`, Math.round(row[0] * inch * 1e6) / 1e6);
 }
 
+/** Sizes that only Europe has: polyethylene pipe by EN 1519, DN by the least bores of EN 12056-2, Table 1. */
+const europeanRows: readonly (readonly [dn: number, outerMm: number, innerMm: number])[] = [
+  [30, 32, 26],
+  [56, 56, 50],
+  [60, 63, 57],
+  [70, 75, 69],
+  [90, 90, 83],
+];
+
 export function sizeOfDn(dn: number): PipeSize | undefined {
+  const label = `DN ${dn}`;
+  const european = europeanRows.find((each) => each[0] === dn);
+  if (european !== undefined)
+    return { label, nominal: dn / 1000, outer: european[1] / 1000, inner: european[2] / 1000 };
   const row = rows.find((each) => each[2] === dn);
-  return row && made(row, `DN ${dn}`, dn / 1000);
+  return row && made(row, label, dn / 1000);
 }
 
 const made = (row: (typeof rows)[number], label: string, nominal: number): PipeSize => ({
