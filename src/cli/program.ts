@@ -2,6 +2,7 @@ import { Command } from 'commander';
 import { addCheck } from './commands/check.ts';
 import { addCodes } from './commands/codes.ts';
 import { addExplain } from './commands/explain.ts';
+import { addMend } from './commands/mend.ts';
 import { addReport } from './commands/report.ts';
 import { addSize } from './commands/size.ts';
 import { addSurvey } from './commands/survey.ts';
@@ -19,7 +20,8 @@ export function program(): Command {
     .showHelpAfterError('(--help shows what can be asked)')
     .exitOverride()
     .configureHelp({ sortSubcommands: false, helpWidth: 100 });
-  for (const add of [addCheck, addSize, addView, addSurvey, addExplain, addWeigh, addReport, addCodes]) add(command);
+  for (const add of [addCheck, addSize, addView, addSurvey, addExplain, addWeigh, addMend, addReport, addCodes])
+    add(command);
   command.addHelpText('after', exitHelp);
   return command;
 }

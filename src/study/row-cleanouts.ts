@@ -22,7 +22,7 @@ const leastDrop = 0.3;
  * Cleanouts of the row's line, from upstream: in the drop that leads to it; at the head of its branch, unless the one
  * above is large enough for it; and again where one reaches no farther. None where the code has no table of places.
  */
-export function rowCleanouts(row: Row, { piping, outcome }: Attempt): RowCleanout[] {
+export function rowCleanouts(row: Row, { piping, outcome }: Pick<Attempt, 'piping' | 'outcome'>): RowCleanout[] {
   const rules = outcome.code.cleanouts;
   if (rules === null) return [];
   const { rank } = outcome.code.series;

@@ -3,6 +3,16 @@ import { show } from './column-unit.ts';
 
 export type JsonObject = Readonly<Record<string, unknown>>;
 
+/** What a text of JSON holds; `where` is the path of its file. */
+export function jsonOf(text: string, where: string): unknown {
+  try {
+    return JSON.parse(text);
+  } catch (error) {
+    const why = error instanceof Error ? error.message : String(error);
+    throw new InputError(where, `is not JSON: ${why}`, { cause: error });
+  }
+}
+
 /** An object with all the required keys and none beyond the optional ones; anything else is refused at its place. */
 export function fieldsOf(
   value: unknown,

@@ -25,7 +25,7 @@ export const tables: TableSource = {
   read: (path) => JSON.parse(readFileSync(join(root, path), 'utf8')) as unknown,
 };
 const dimensions = readPipeDimensions(tables);
-const names = readNamesTable(tables);
+export const names = readNamesTable(tables);
 
 export interface RunOptions {
   readonly code?: string;

@@ -9,6 +9,7 @@ const schemaFiles = {
   explain: 'schedule/explain.schema.json',
   codes: 'schedule/codes.schema.json',
   weigh: 'schedule/weigh.schema.json',
+  mend: 'schedule/mend.schema.json',
   answers: 'model/answers.schema.json',
 } as const;
 

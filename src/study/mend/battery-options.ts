@@ -154,6 +154,6 @@ function footOptions(scene: Scene, { facts }: Battery, feet: readonly (PlaceAt |
   const flood = scene.flood([...facts.traps, ...facts.guests].map(({ fixture }) => fixture));
   return feet.flatMap((foot) => {
     if (foot === null) return [];
-    return ventOptions(scene, { foot, why, about: elementsAt(scene, foot.place), flood }, 2);
+    return ventOptions(scene, { foot, why, about: elementsAt(scene, foot.place), flood }, 3);
   });
 }

@@ -21,7 +21,11 @@ export interface Task {
   readonly counted: ReadonlySet<ElementId> | null;
   /** What each place costs at least, where that is known. */
   readonly least: ReadonlyMap<string, number>;
+  /** What pipes of no place cost at least. */
+  readonly elsewhere: number;
   readonly budget: Budget;
+  /** What a finished building costs besides its changes and sizes: cleanouts. */
+  readonly besides: (outcome: Outcome) => number;
   /** A plan that is known. */
   readonly known: Complete | null;
 }
@@ -115,16 +119,16 @@ class BestFirst {
   #tooDear = (bound: number): boolean => this.#best !== null && bound >= this.#best.cost - tiny;
 
   #complete(state: State, outcome: Outcome): void {
-    const { first, costs, left, counted, budget } = this.#task;
+    const { first, costs, left, counted, budget, besides } = this.#task;
     if (counted !== null) {
-      const cost = state.cost + resize(outcome, first, state.pins, costs, false).cost;
+      const cost = state.cost + resize(outcome, first, state.pins, costs, false).cost + besides(outcome);
       if (this.#best === null || cost < this.#best.cost - tiny) this.#best = { state, settled: null, cost };
       return;
     }
     const settled = settleSizes(state.piping, outcome, first, state.pins, costs);
     budget.left -= settled.runs;
     const open = openErrors(settled.outcome, left);
-    const cost = state.cost + settled.cost;
+    const cost = state.cost + settled.cost + besides(settled.outcome);
     if (open.some(({ code }) => !bySizeAlone.has(code)) && !state.sized)
       this.#queue.push({ ...state, piping: settled.piping, outcome: settled.outcome, sized: true });
     if (open.length === 0 && (this.#best === null || cost < this.#best.cost - tiny))
@@ -133,14 +137,14 @@ class BestFirst {
 
   /** What a state has cost, with what it costs at least from here on: place by place where that is known. */
   #bounded(state: State, ahead: number): State {
-    const { least } = this.#task;
+    const { least, elsewhere } = this.#task;
     const { spent } = state;
     let sum = 0;
     for (const one of spent.values()) sum += one;
     let byPlace = 0;
     for (const place of new Set([...least.keys(), ...spent.keys()]))
       byPlace += Math.max(least.get(place) ?? 0, spent.get(place) ?? 0);
-    return { ...state, bound: Math.max(state.bound, sum + ahead, byPlace) };
+    return { ...state, bound: Math.max(state.bound, sum + ahead + elsewhere, byPlace + elsewhere) };
   }
 }
 

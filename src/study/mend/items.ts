@@ -92,7 +92,11 @@ function settled(scene: Scene, finding: Finding): Settled {
             ...(code === 'trap-arm-too-steep' ? relayArmOptions(scene, fixture, finding) : []),
           ]);
     case 'slope-too-small':
-      return at(fixture === null ? keyOf(scene, finding) : lineOf(outcome, fixture), 3, slopeOptions(scene, finding));
+      return at(
+        fixture === null ? placeOf(outcome, finding.about[0]!) : lineOf(outcome, fixture),
+        3,
+        slopeOptions(scene, finding),
+      );
     case 'backfall':
       return at(placeOf(outcome, finding.about[0]!), 3, relayPipeOptions(scene, finding));
     case 'outlet-pipe-too-long':

@@ -3,6 +3,7 @@ import type { ElementId } from '../../model/model.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
 import type { Outcome } from '../../verdicts/outcome.ts';
 import type { Change } from './change.ts';
+import { cleanoutWhy, type NewCleanout, newCleanouts } from './cleanouts.ts';
 import { costsOf } from './costs.ts';
 import { keyOf } from './items.ts';
 import { firstSizes } from './resize.ts';
@@ -30,6 +31,7 @@ export interface Plan {
 
 export type PlanStep =
   | { readonly kind: 'change'; readonly change: Change; readonly why: Finding; readonly cost: number }
+  | { readonly kind: 'cleanout'; readonly cleanout: NewCleanout; readonly why: Finding; readonly cost: number }
   | {
       readonly kind: 'size';
       readonly element: ElementId;
@@ -55,7 +57,11 @@ export function mend(first: Outcome, weights: Weights, mostRuns = usualRuns): Pl
   return {
     first,
     last,
-    steps: [...changes, ...sizeSteps(first, last, settled?.sizes ?? new Map(), costs.resize)],
+    steps: [
+      ...changes,
+      ...cleanoutSteps(first, last, weights),
+      ...sizeSteps(first, last, settled?.sizes ?? new Map(), costs.resize),
+    ],
     cost,
     weights,
     exact,
@@ -64,6 +70,9 @@ export function mend(first: Outcome, weights: Weights, mostRuns = usualRuns): Pl
     left: last.findings.filter(({ severity }) => severity === 'error'),
   };
 }
+
+const cleanoutSteps = (first: Outcome, last: Outcome, { cleanout: cost }: Weights): PlanStep[] =>
+  newCleanouts(first, last).map((cleanout) => ({ kind: 'cleanout', cleanout, why: cleanoutWhy(cleanout), cost }));
 
 /** Drains with the flow, then vents toward the sky. */
 function sizeSteps(

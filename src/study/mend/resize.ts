@@ -162,3 +162,27 @@ function inFlow(nodes: ReadonlyMap<ElementId, Node>, upstream: ReadonlyMap<Eleme
   }
   return order.reverse();
 }
+
+/**
+ * What drains of no place cost at least, whatever is changed in the places: their own demands, which hang on what
+ * drains through them, not those that the sizes of other pipes make.
+ */
+export function costElsewhere(
+  { network, paths, shown, code }: Outcome,
+  first: FirstSizes,
+  places: ReadonlySet<ElementId>,
+  costs: Costs,
+): number {
+  const { rank } = code.series;
+  let sum = 0;
+  for (const [element, drawn] of first) {
+    if (places.has(element)) continue;
+    const asks = (network.pipesOf.get(element) ?? [])
+      .filter((section) => paths.wet[section])
+      .flatMap((section) => shown.sizes[section]!.trail)
+      .flatMap(({ asks: size, facts }) => (size === null || facts.fromPipe !== undefined ? [] : [size]));
+    const least = asks.reduce((a, b) => code.series.larger(a, b), drawn);
+    if (rank(least) > rank(drawn)) sum += costs.resize(element, drawn, least);
+  }
+  return sum;
+}

@@ -2,9 +2,10 @@ import type { ElementId } from '../../model/model.ts';
 import type { Outcome } from '../../verdicts/outcome.ts';
 import { bestFirst, type Complete, openErrors, type Task } from './best-first.ts';
 import type { Item } from './change.ts';
+import { newCleanouts } from './cleanouts.ts';
 import type { Costs } from './costs.ts';
 import { ownPipes } from './places.ts';
-import { firstSizes } from './resize.ts';
+import { costElsewhere, firstSizes } from './resize.ts';
 import { settleSizes } from './settle-sizes.ts';
 import { type Budget, lookAt, rootState, type State, stateAfter } from './state.ts';
 
@@ -47,19 +48,20 @@ class Searching {
 
   run(): Omit<Found, 'runs'> {
     const begun = this.#begun();
-    const { plans, least } = this.#eachPlace(begun);
+    const { plans, least, own } = this.#eachPlace(begun);
     const known = this.#together(begun, plans);
     // What open air and the tops of stacks ask for comes first and bears on all places: their costs are not apart.
     const bounds = begun.made.length === 0 ? least : new Map<string, number>();
-    const sum = [...bounds.values()].reduce((all, one) => all + one, 0);
+    const elsewhere = begun.made.length === 0 ? costElsewhere(begun.outcome!, this.#sizes, own, this.#costs) : 0;
+    const sum = [...bounds.values()].reduce((all, one) => all + one, elsewhere);
     if (known !== null && known.cost <= sum + tiny) return { ...known, least: known.cost, exact: true };
-    const task: Task = { ...this.#task(this.#root), least: bounds, known };
+    const task: Task = { ...this.#task(this.#root), least: bounds, elsewhere, known };
     const searched = bestFirst(task);
     const best = searched.best ?? this.#nothing();
     return { ...best, least: searched.exact ? best.cost : searched.least, exact: searched.exact };
   }
 
-  #task = (root: State): Omit<Task, 'least' | 'known'> => ({
+  #task = (root: State): Omit<Task, 'least' | 'elsewhere' | 'known'> => ({
     root,
     first: this.#sizes,
     costs: this.#costs,
@@ -67,7 +69,11 @@ class Searching {
     ours: () => true,
     counted: null,
     budget: this.budget,
+    besides: (outcome) => this.#cleanouts(outcome, () => true),
   });
+
+  #cleanouts = (outcome: Outcome, at: (line: string) => boolean): number =>
+    newCleanouts(this.#root.outcome!, outcome).filter(({ line }) => at(line)).length * this.#costs.weights.cleanout;
 
   /** Past what bears on all places: the cheapest option of each, one after the other. */
   #begun(): State {
@@ -88,17 +94,19 @@ class Searching {
     return { ...looked, must: looked.must.filter(({ options }) => options.length > 0) };
   }
 
-  #eachPlace(begun: State): { plans: Complete[]; least: Map<string, number> } {
+  #eachPlace(begun: State): { plans: Complete[]; least: Map<string, number>; own: Set<ElementId> } {
     const { outcome, must, may } = this.#look(begun);
     const items = [...must, ...may];
     const known = new Set(items.map(({ key }) => key));
     const places = [...new Set(items.map(({ place }) => place))];
     const plans: Complete[] = [];
     const least = new Map<string, number>();
+    const all = new Set<ElementId>();
     places.forEach((place, at) => {
       const own = items.filter((item) => item.place === place);
       const pinned = own.flatMap(({ options }) => options.flatMap(({ pins }) => pins.map(([element]) => element)));
       const counted = new Set([...ownPipes(outcome, place), ...pinned]);
+      for (const element of counted) all.add(element);
       // Each place has its share of what is left, so that one hard one does not starve the others.
       const share: Budget = { left: Math.ceil(this.budget.left / (places.length - at + 1)) };
       const before = share.left;
@@ -107,7 +115,9 @@ class Searching {
         costs: onlyFor(this.#costs, counted),
         ours: (item) => item.place === place || !known.has(item.key),
         counted,
+        besides: (after) => this.#cleanouts(after, (line) => line === place),
         least: new Map(),
+        elsewhere: 0,
         budget: share,
         known: null,
       });
@@ -117,7 +127,7 @@ class Searching {
       // No combination of what is known settles these: the other places still get their plan.
       else for (const { key, mayStay } of own) if (!mayStay) this.#left.add(key);
     });
-    return { plans, least };
+    return { plans, least, own: all };
   }
 
   /** The plans of all places in one building: each change is found again, since the piping has changed meanwhile. */
@@ -144,7 +154,8 @@ class Searching {
     const settled = settleSizes(state.piping, looked.outcome, this.#sizes, state.pins, this.#costs);
     this.budget.left -= settled.runs;
     if (openErrors(settled.outcome, this.#left).length > 0) return null;
-    return { state: { ...state, outcome: looked.outcome }, settled, cost: state.cost + settled.cost };
+    const cost = state.cost + settled.cost + this.#cleanouts(settled.outcome, () => true);
+    return { state: { ...state, outcome: looked.outcome }, settled, cost };
   }
 
   /** No plan was found: larger pipe alone, and the errors that are left. */

@@ -9,6 +9,9 @@ import type { Scene } from './scene.ts';
 import { alongPipe, distinct } from './trap-items.ts';
 import { elementsAt, jointPlace, ventOptions } from './vent-changes.ts';
 
+/** Vents that a new one may join: so many of the nearest are tried. */
+const nearest = 4;
+
 /** A vent that ends inside goes on, from each of its loose ends, to open air or to a live vent. */
 export function extensionOptions(scene: Scene, why: Finding): Option[] {
   const { outcome } = scene;
@@ -21,7 +24,7 @@ export function extensionOptions(scene: Scene, why: Finding): Option[] {
       const foot = jointPlace(scene, joint);
       if (foot === null) return [];
       const about = elementsAt(scene, foot.place);
-      return ventOptions(scene, { foot, why, about, flood, kind: 'extended-vent' }, 2);
+      return ventOptions(scene, { foot, why, about, flood, kind: 'extended-vent' }, nearest);
     }),
   );
 }
@@ -39,7 +42,7 @@ export function stackVentOptions(scene: Scene, stack: Stack, why: Finding): Opti
   const foot = jointPlace(scene, joint);
   if (foot === null) return [];
   const flood = scene.flood(scene.through(joint));
-  return ventOptions(scene, { foot, why, about: elementsAt(scene, foot.place), flood }, 2);
+  return ventOptions(scene, { foot, why, about: elementsAt(scene, foot.place), flood }, nearest);
 }
 
 const stackVents: ReadonlySet<string> = new Set(['stack-vent', 'vent-header', 'vent-stack']);
@@ -61,8 +64,8 @@ export function ventStackOptions(scene: Scene, stack: Stack, why: Finding): Opti
       if (foot === null) return [];
       const wish = { foot, why, about: elementsAt(scene, foot.place), sideways: true };
       return [
-        ...ventOptions(scene, { ...wish, flood, onto: (pipe) => stackVents.has(uses[pipe]!.role) }),
-        ...ventOptions(scene, { ...wish, flood: Number.NEGATIVE_INFINITY, sky: false }),
+        ...ventOptions(scene, { ...wish, flood, onto: (pipe) => stackVents.has(uses[pipe]!.role) }, nearest),
+        ...ventOptions(scene, { ...wish, flood: Number.NEGATIVE_INFINITY, sky: false }, nearest),
       ];
     }),
   );
@@ -112,7 +115,7 @@ export function offsetReliefOptions(scene: Scene, stack: Stack, why: Finding): O
     if (foot === null) return [];
     const served = above === undefined ? [] : scene.through(stream.down(above));
     const about = elementsAt(scene, foot.place);
-    return ventOptions(scene, { foot, why, about, flood: scene.flood(served), sideways: true }, 2);
+    return ventOptions(scene, { foot, why, about, flood: scene.flood(served), sideways: true }, nearest);
   });
 }
 

@@ -1,4 +1,6 @@
 import { InputError } from '../../findings/input-error.ts';
+import { show } from '../../tables/column-unit.ts';
+import { at, fieldsOf, jsonOf, numberAt } from '../../tables/read-json.ts';
 
 /** What a change costs, in points of effort that only compare plans with each other. All are printed with a plan. */
 export interface Weights {
@@ -34,16 +36,18 @@ export const standardWeights: Weights = {
   cleanout: 1,
 };
 
-/** A weights file: a JSON object with any of the names above. What is not there stays as it is. */
-export function readWeights(value: unknown, where: string): Weights {
+const format = 'drainwright-weights';
+
+/** Weights from the text of a weights file. What it does not say stays as it is; what is wrong is named at its place. */
+export function readWeights(text: string, where: string): Weights {
   const names = Object.keys(standardWeights);
-  const expected = `a JSON object with any of ${names.join(', ')}, each a number from 0 on`;
-  if (typeof value !== 'object' || value === null || Array.isArray(value))
-    throw new InputError(where, `is no weights file; expected ${expected}`);
-  for (const [name, weight] of Object.entries(value)) {
-    if (!names.includes(name)) throw new InputError(`${where}: /${name}`, `is no weight; expected ${expected}`);
-    if (typeof weight !== 'number' || !Number.isFinite(weight) || weight < 0)
-      throw new InputError(`${where}: /${name}`, `is ${JSON.stringify(weight)}; expected a number from 0 on`);
-  }
-  return { ...standardWeights, ...(value as Partial<Weights>) };
+  const { format: said, version, ...own } = fieldsOf(jsonOf(text, where), where, ['format', 'version'], names);
+  if (said !== format) throw new InputError(at(where, 'format'), `is ${show(said)}, expected "${format}"`);
+  if (version !== 1) throw new InputError(at(where, 'version'), `is ${show(version)}, expected 1`);
+  const given = Object.entries(own).map(([name, value]): [string, number] => {
+    const weight = numberAt(value, at(where, name));
+    if (weight < 0) throw new InputError(at(where, name), `is ${weight}, expected 0 or more`);
+    return [name, weight];
+  });
+  return { ...standardWeights, ...Object.fromEntries(given) };
 }

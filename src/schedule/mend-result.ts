@@ -1,0 +1,176 @@
+import type { ElementId } from '../model/model.ts';
+import type { Change, VentChange } from '../study/mend/change.ts';
+import type { Plan, PlanStep } from '../study/mend/mend.ts';
+import type { MendChange, MendResult, MendSearch, MendVent } from './mend.ts';
+import { decimal, lengthText, slopeText } from './number-text.ts';
+import type { Result } from './result.ts';
+import { elementName, resultFinding } from './result-findings.ts';
+import { type ResultIndex, resultIndex, roundMetres } from './result-index.ts';
+import { plainWords } from './trade-words.ts';
+
+/** The published plan. `result` is that of the building as it is modelled. */
+export function mendResult(plan: Plan, result: Result): MendResult {
+  const { first, last, steps, cost, weights, left } = plan;
+  const index = resultIndex(last);
+  return {
+    format: 'drainwright-mend',
+    version: 1,
+    program: result.program,
+    model: result.model,
+    ...(result.models === undefined ? {} : { models: result.models }),
+    code: result.code,
+    settings: result.settings,
+    weights,
+    changes: steps.map((step) => mendChange(plan, index, step)),
+    cost: points(cost),
+    search: searchOf(plan),
+    before: { errors: first.findings.filter(({ severity }) => severity === 'error').length },
+    after: { errors: left.length, findings: left.map((finding) => resultFinding(last, index, finding)) },
+    caution: result.caution,
+  };
+}
+
+function searchOf({ exact, least, runs, cost, steps, left }: Plan): MendSearch {
+  const sentence =
+    steps.length === 0
+      ? left.length === 0
+        ? 'No error to mend.'
+        : 'No change that the program knows settles these errors.'
+      : exact
+        ? 'No other combination of the changes that the program knows costs less.'
+        : `The search was broken off after ${runs} runs: a plan may exist that costs less, from ${decimal(least, 1)} on.`;
+  return { exact, least: points(Math.min(least, cost)), runs, sentence };
+}
+
+const points = (cost: number): number => Math.round(cost * 100) / 100;
+
+function mendChange(plan: Plan, index: ResultIndex, step: PlanStep): MendChange {
+  const { first, last } = plan;
+  const ids = (elements: readonly ElementId[]): string[] =>
+    elements.filter((element) => element < first.model.elements.length).map(index.idOf);
+  if (step.kind === 'size') {
+    return {
+      kind: 'size',
+      about: ids([step.element]),
+      from: step.from,
+      to: step.to,
+      why: sizeWhy(plan, index, step),
+      cost: points(step.cost),
+      size: { from: index.size(step.from), to: index.size(step.to) },
+    };
+  }
+  if (step.kind === 'cleanout') {
+    const { pipe, size, place, clause } = step.cleanout;
+    return {
+      kind: 'cleanout',
+      about: ids([pipe]),
+      from: null,
+      to: `cleanout of ${size} (${place})`,
+      why: `The row is read another way, and needs a cleanout there (${last.code.id}, ${clause}).`,
+      cost: points(step.cost),
+      cleanout: { size: index.size(size), place },
+    };
+  }
+  const { change, why, cost } = step;
+  return {
+    kind: change.kind,
+    about: ids(change.about),
+    ...inWords(plan, change),
+    why: resultFinding(last, index, why).sentence,
+    cost: points(cost),
+    ...data(plan, index, change),
+  };
+}
+
+/** The finding that asks for it, else what follows from the other changes. */
+function sizeWhy({ last }: Plan, index: ResultIndex, step: Extract<PlanStep, { kind: 'size' }>): string {
+  if (step.why !== null) return resultFinding(last, index, step.why).sentence;
+  const { code } = last;
+  const grows = code.series.rank(step.to) > code.series.rank(step.from);
+  const name = elementName(last, step.element);
+  const clause = step.governs === null ? '' : ` (${code.id}, ${step.governs.clause})`;
+  return grows
+    ? `With the other changes ${name} needs ${step.to}${clause}.`
+    : `${name} is larger than what it drains into; ${step.to} is enough for it${clause}.`;
+}
+
+function inWords(plan: Plan, change: Change): Pick<MendChange, 'from' | 'to'> {
+  switch (change.kind) {
+    case 'reading':
+      return { from: plainWords(change.from), to: plainWords(change.to) };
+    case 'slope':
+      return {
+        from: change.from === null ? null : slopeText(change.from),
+        to: `${slopeText(change.to)}, ${loweringText(change.lowered)}`,
+      };
+    case 'trap':
+      return { from: `${lengthText(change.from)} from the fixture`, to: `${lengthText(change.to)} from the fixture` };
+    default:
+      return { from: change.kind === 'vent' ? null : ventFrom(change), to: ventTo(plan, change) };
+  }
+}
+
+const loweringText = (lowered: number): string =>
+  Math.abs(lowered) < 0.0005
+    ? 'its ends stay'
+    : `its lower end comes ${lowered > 0 ? 'down' : 'up'} ${lengthText(Math.abs(lowered))}, and what follows with it`;
+
+const ventFrom = ({ kind }: VentChange): string => (kind === 'moved-vent' ? 'where it stands now' : 'its end inside');
+
+/** `relief vent of 1½ in, 960 mm, up to S4.VJ-S4.VE`. */
+function ventTo(plan: Plan, change: VentChange): string {
+  const { last, first } = plan;
+  const { role, size } = madeOf(plan, change);
+  const end =
+    change.joins !== null && change.joins < first.model.elements.length
+      ? `to ${elementName(last, change.joins)}`
+      : change.joins === null && change.kind !== 'moved-vent'
+        ? 'through the roof to open air'
+        : 'to where it goes on';
+  return [`${plainWords(role)} of ${size ?? 'unknown size'}`, lengthText(change.length), end].join(', ');
+}
+
+/** What the new pipe is in the changed building: by its first piece that something breathes through. */
+function madeOf({ last }: Plan, { added }: VentChange): { role: string; size: string | null } {
+  for (const element of added) {
+    for (const pipe of last.network.pipesOf.get(element) ?? []) {
+      const { role } = last.shown.roles.uses[pipe]!;
+      if (role !== 'idle') return { role, size: last.shown.sizes[pipe]!.size };
+    }
+  }
+  return { role: 'vent', size: null };
+}
+
+function data(plan: Plan, index: ResultIndex, change: Change): Pick<MendChange, 'vent' | 'slope' | 'reading'> {
+  const { first } = plan;
+  switch (change.kind) {
+    case 'reading':
+      return { reading: { from: change.from, to: change.to } };
+    case 'slope':
+      return {
+        slope: {
+          from: change.from === null ? null : roundMetres(change.from),
+          to: roundMetres(change.to),
+          lowered: roundMetres(change.lowered),
+        },
+      };
+    case 'trap':
+      return {};
+    default: {
+      const { role, size } = madeOf(plan, change);
+      const joins = change.joins !== null && change.joins < first.model.elements.length ? change.joins : null;
+      const vent: MendVent = {
+        role,
+        size: size === null ? null : index.size(size as Parameters<ResultIndex['size']>[0]),
+        length: roundMetres(change.length),
+        points: change.points.map(([x, y, z]) => [roundMetres(x), roundMetres(y), roundMetres(z)] as const),
+        joins: joins === null ? null : index.idOf(joins),
+      };
+      return { vent };
+    }
+  }
+}
+
+/** What a plan does to one element, for its sets and cards: changes in their order. */
+export const changesOf = ({ changes }: MendResult, globalId: string): readonly MendChange[] =>
+  changes.filter(({ about }) => about.includes(globalId));
