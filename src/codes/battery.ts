@@ -111,6 +111,7 @@ export interface CircuitLine {
   /** Everything that drains through the last pipe of the branch, additional fixtures too, and the closets among it. */
   readonly load: Load;
   readonly closets: number;
+  readonly counts: Readonly<Record<string, number>>;
   /** The branch ends at a stack that carries water from above. */
   readonly soilAbove: boolean;
   /** Steepest drawn or stated slope between the vent and the last trap, m/m; null where none is known. */

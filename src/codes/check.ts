@@ -47,6 +47,9 @@ export interface CheckedStack {
   readonly isWetVent: boolean;
   /** Where drains come into it, highest first. */
   readonly joins: readonly StackJoin[];
+  /** Height of its foot, metres; null without geometry. What the code counts of everything that it carries. */
+  readonly footHeight: number | null;
+  readonly footCounts: Readonly<Record<string, number>>;
   /** Of its last section, as the load requires it. */
   readonly footSize: NominalSize | null;
   /** The first level drain that joins downstream of its foot, and how far along, metres; null where none does soon. */

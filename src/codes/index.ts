@@ -12,9 +12,10 @@ import { ipc } from './ipc/ipc.ts';
 import { npc } from './npc/npc.ts';
 import type { CodeRules, PlumbingCode } from './plumbing-code.ts';
 import type { Tools } from './tools.ts';
+import { upc } from './upc/upc.ts';
 
 /** The rule module of each family; its tables stand in `tables/<family>/`. */
-const modules: Readonly<Record<string, (tools: Tools) => CodeRules>> = { npc, ipc, en12056 };
+const modules: Readonly<Record<string, (tools: Tools) => CodeRules>> = { npc, ipc, upc, en12056 };
 
 export interface CodeSources {
   readonly tables: TableSource;

@@ -51,8 +51,8 @@ export interface PlumbingCode {
   readonly shortBranch?: (trap: ShortBranchFacts) => { readonly rule: string; readonly clause: string } | null;
   /** How drains may come into a stack, where that decides its size; absent where it does not. */
   readonly entries?: EntryRule;
-  /** Load of a steady or pumped flow, l/s; absent where the code keeps flows apart from loads. */
-  readonly steadyLoad?: (litresASecond: number) => { readonly load: Load; readonly cell: Cell };
+  /** Load of a steady or pumped flow, l/s, or of one that comes and goes; absent where the code keeps flows apart from loads. */
+  readonly steadyLoad?: (litresASecond: number, intermittent: boolean) => { readonly load: Load; readonly cell: Cell };
   /** The building sewer begins this far outside the wall, metres. */
   readonly sewerBegins: number;
   /** Horizontal offsets of a stack shorter than this, metres, count as stack. */

@@ -148,6 +148,8 @@ export interface VentUse {
   /** Stack and vent stack that a yoke vent joins. */
   readonly between: readonly [PipeId, PipeId] | null;
   readonly foot: JointId;
+  /** The drain that it joins at its foot; null where several vents have met. */
+  readonly drain: PipeId | null;
   /** Storeys of the wet vent that a stack vent serves, 0 when it serves none. */
   readonly wetVentStoreys: number;
   /** Stack that the vent serves, by id: its stack vent, vent stack, yoke vents and offset relief vents. */

@@ -42,6 +42,7 @@ export type FindingCode =
   | 'valve-not-allowed'
   | 'valve-needs-approval'
   | 'branch-near-foot'
+  | 'suds-zone'
   | 'fixture-unidentified'
   | 'fixture-unconnected'
   | 'open-end'
@@ -146,6 +147,7 @@ export const severityOf: Readonly<Record<FindingCode, Severity>> = {
   'valve-not-allowed': 'error',
   'valve-needs-approval': 'warning',
   'branch-near-foot': 'error',
+  'suds-zone': 'warning',
   'fixture-unconnected': 'error',
   'no-sewer-end': 'error',
 };

@@ -74,6 +74,26 @@ export function brokenText(given: SentenceFacts): string {
 const row = (given: SentenceFacts): string =>
   `The row of ${text(given, 'fixtures')} fixtures (${text(given, 'battery') === '?' ? '' : `battery ${num(given, 'battery') + 1}`})`;
 
+/** What of its way a branch may not have, and whether a vent would cure it. */
+function outOfReach(given: SentenceFacts): string {
+  const { facts } = given;
+  const vented = facts.ventilated === true;
+  const how = vented ? 'with a vent' : 'without a vent';
+  const cure = vented ? '' : ': it needs a vent';
+  switch (facts.what) {
+    case 'bends':
+      return `turns ${given.number(num(given, 'bends'))} bends of 90°, at most ${text(given, 'bendsMost')} ${how}${cure}`;
+    case 'drop':
+      return `drops ${given.length(num(given, 'lengthM'))}, at most ${given.length(num(given, 'limitM'))} ${how}${cure}`;
+    case 'steep':
+      return `falls ${given.slope(num(given, 'slope'))}, at most ${given.slope(num(given, 'slopeMost'))} ${how}`;
+    case 'group':
+      return `takes ${text(given, 'fixtures')} appliances together, which no row of the table lists ${how}${cure}`;
+    default:
+      return `is ${given.length(num(given, 'lengthM'))} long, at most ${given.length(num(given, 'limitM'))} ${how}${cure}`;
+  }
+}
+
 /** One sentence a code, that a designer can act on: the thing, the number, the limit, the clause. */
 export const sentences: Readonly<Record<FindingCode, Sentence>> = {
   undersized: (f) =>
@@ -106,16 +126,26 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
     `The vent ${first(f)} ends in an air admittance valve: ${has(f, 'intervalsMost') ? `its stack has ${text(f, 'intervals')} branch intervals, at most ${text(f, 'intervalsMost')} may end so; lead it to open air` : has(f, 'leastM') ? `the valve stands ${f.length(num(f, 'heightM'))} above the drain it vents, at least ${f.length(num(f, 'leastM'))}` : has(f, 'belowMost') ? `it stands ${text(f, 'below')} branch intervals below the top of the stack, and beyond ${text(f, 'belowMost')} the branch needs a relief vent` : 'no vent of the building drain reaches open air; one must'}${f.clause}.`,
   'valve-needs-approval': (f) =>
     `The vent ${first(f)} ends in an air admittance valve: this code names none, so the authority having jurisdiction decides.`,
+  'suds-zone': (f) =>
+    `The stack ${first(f)} carries suds, and a drain joins ${f.length(num(f, 'distanceM'))} ${f.facts.above === true ? 'above' : 'past'} its foot: within ${f.length(num(f, 'leastM'))} of the turn suds may push back${f.clause}.`,
   'branch-near-foot': (f) =>
     `${first(f)} joins ${f.length(num(f, 'distanceM'))} downstream of the foot of a stack, at least ${f.length(num(f, 'leastM'))}${f.clause}.`,
   'stack-vent-missing': (f) =>
     `The stack ${first(f)} carries ${load(f)} and does not go on upward as a stack vent${f.clause}.`,
   'vent-stack-missing': (f) =>
-    `The stack ${first(f)} takes fixtures from ${text(f, 'storeys')} storeys; beyond ${text(f, 'storeysMost')} it needs a vent stack from its foot${f.clause}.`,
+    has(f, 'intervals')
+      ? `The stack ${first(f)} has ${text(f, 'intervals')} branch intervals; from ${text(f, 'intervalsFrom')} on it needs a vent stack${f.clause}.`
+      : has(f, 'storeysHigh')
+        ? `The stack ${first(f)} rises through ${text(f, 'storeysHigh')} storeys; from ${text(f, 'storeysFrom')} on it needs a vent stack${f.clause}.`
+        : `The stack ${first(f)} takes fixtures from ${text(f, 'storeys')} storeys; beyond ${text(f, 'storeysMost')} it needs a vent stack from its foot${f.clause}.`,
   'vent-stack-misplaced': (f) =>
-    `The vent stack ${first(f)} does not start at or below the lowest connection of its stack${f.clause}.`,
+    has(f, 'distanceMostM')
+      ? `The vent stack of ${first(f)} starts ${f.length(num(f, 'distanceM'))} past the foot of its stack, at most ${f.length(num(f, 'distanceMostM'))}${f.clause}.`
+      : `The vent stack ${first(f)} does not start at or below the lowest connection of its stack${f.clause}.`,
   'yoke-vent-missing': (f) =>
-    `The stack ${first(f)} takes fixtures from ${text(f, 'storeys')} storeys and has no yoke vent at storey ${num(f, 'storey') + 1}${f.clause}.`,
+    has(f, 'interval')
+      ? `The stack ${first(f)} has ${text(f, 'intervals')} branch intervals and no relief vent to its vent stack at the ${text(f, 'interval')}th from the top${f.clause}.`
+      : `The stack ${first(f)} takes fixtures from ${text(f, 'storeys')} storeys and has no yoke vent at storey ${num(f, 'storey') + 1}${f.clause}.`,
   'yoke-vent-misplaced': (f) => `The yoke vent ${first(f)} does not join where the code asks${f.clause}.`,
   'offset-relief-vent-missing': (f) =>
     `The offset ${first(f)} is ${f.length(num(f, 'offsetM'))} long below ${text(f, 'storeys')} storeys with ${load(f)}; it has ${text(f, 'reliefVents')} of two offset relief vents${f.clause}.`,
@@ -145,15 +175,21 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
     'No roof is modelled: vents that end 2 m above the highest floor with fixtures are taken to reach open air.',
   'storeys-assumed': (f) =>
     `The model has no storeys: one is counted for each ${f.length(num(f, 'heightM'))} of height.`,
-  'cleanout-missing': (f) => `${first(f)} has no cleanout${f.clause}.`,
+  'cleanout-missing': (f) =>
+    has(f, 'turnDeg')
+      ? `The trap arm of ${first(f)} turns ${f.number(num(f, 'turnDeg'))}°; beyond ${f.number(num(f, 'limitDeg'))}° it needs a cleanout${f.clause}.`
+      : `${first(f)} has no cleanout${f.clause}.`,
   'cleanout-too-small': (f) =>
     `The cleanout ${first(f)} is ${text(f, 'modelled')}, at least ${text(f, 'least')}${f.clause}.`,
   'closet-needs-larger': (f) =>
     `${first(f)} carries ${text(f, 'closets')} water closets and needs a larger size${f.clause}.`,
-  'branch-too-long': (f) =>
-    `${first(f)} is ${f.length(num(f, 'lengthM'))} long, at most ${f.length(num(f, 'limitM'))}${f.clause}.`,
-  'appliance-not-allowed': (f) => `${first(f)} may not drain here${f.clause}.`,
-  'vent-area-too-small': (f) => `The vents of ${first(f)} have too little area together${f.clause}.`,
+  'branch-too-long': (f) => `The branch of ${first(f)} ${outOfReach(f)}${f.clause}.`,
+  'appliance-not-allowed': (f) =>
+    f.facts.what === 'mixed'
+      ? `The stack ${first(f)} takes ${text(f, 'soil')} closets or urinals and ${text(f, 'others')} other appliances: in this system they have stacks of their own${f.clause}.`
+      : `${first(f)}${has(f, 'kind') ? ` (${text(f, 'kind')})` : ''} may not be used in this system${f.clause}.`,
+  'vent-area-too-small': (f) =>
+    `The ${text(f, 'vents')} vents of the building drain ${first(f)} that reach open air have ${f.number(num(f, 'areaM2') * 10000)} cm² together, less than the ${f.number(num(f, 'leastM2') * 10000)} cm² of the ${text(f, 'required')} sewer that its load requires: one more vent, or a larger one${f.clause}.`,
   'main-vent-missing': (f) =>
     `No vent of the building drain reaches open air at ${text(f, 'least')} or larger${has(f, 'widest') ? `; the widest is ${text(f, 'widest')}` : ''}${f.clause}.`,
   'fixture-unidentified': (f) =>

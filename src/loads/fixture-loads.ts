@@ -29,7 +29,7 @@ export function fixtureLoads(facts: FixtureFacts, scenario: Scenario): FixtureLo
     const witnessed = trapWitness(facts, fixture);
     const sized = rows.map((row) => ({ row, ...trapOf(row, witnessed, facts.code.series) }));
     const candidates = sized.map((one) => ({ ...one, ...one.row.loadAt(one.trap) }));
-    if (detail.flow !== undefined) return steadyLoad(facts.code, candidates, detail.flow);
+    if (detail.flow !== undefined) return steadyLoad(facts.code, candidates, detail.flow, detail.intermittent === true);
     const chosen = choose(candidates, scenario, kind === null);
     const alike = candidates.every(
       (one) => one.load === chosen.load && one.trap === chosen.trap && one.row.closet === chosen.row.closet,
@@ -57,9 +57,14 @@ function choose(rows: readonly Candidate[], scenario: Scenario, unidentified: bo
 }
 
 /** A stated flow stands for the load: counted as load where the code does so, else kept apart. */
-function steadyLoad({ steadyLoad: counted }: PlumbingCode, rows: readonly Candidate[], flow: number): FixtureLoad {
+function steadyLoad(
+  { steadyLoad: counted }: PlumbingCode,
+  rows: readonly Candidate[],
+  flow: number,
+  intermittent: boolean,
+): FixtureLoad {
   const row = rows.find((one) => !one.row.closet) ?? rows[0]!;
-  const load = counted?.(flow);
+  const load = counted?.(flow, intermittent);
   return { ...row, ...(load ?? { load: noLoad }), steady: load === undefined ? flow : 0, settled: true };
 }
 

@@ -64,7 +64,7 @@ const startOf = (kind: FixtureKind | null, { domestic }: FixtureDetail): Fixture
 });
 
 function answeredDetail(read: FixtureDetail, { detail = {} }: FixtureAnswer): FixtureDetail {
-  const { flush, style, heads, emergency, domestic, flushLitres, flow, frequency } = detail;
+  const { flush, style, heads, emergency, domestic, flushLitres, flow, intermittent, frequency } = detail;
   return {
     ...read,
     ...(flush === 'tank' || flush === 'valve' ? { flush } : {}),
@@ -74,6 +74,7 @@ function answeredDetail(read: FixtureDetail, { detail = {} }: FixtureAnswer): Fi
     ...(typeof domestic === 'boolean' ? { domestic } : {}),
     ...(typeof flushLitres === 'number' ? { flushLitres } : {}),
     ...(typeof flow === 'number' ? { flow } : {}),
+    ...(typeof intermittent === 'boolean' ? { intermittent } : {}),
     ...(typeof frequency === 'number' ? { frequency } : {}),
   };
 }

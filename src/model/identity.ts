@@ -54,6 +54,8 @@ export interface FixtureDetail {
   readonly flushLitres?: number;
   /** Steady flow, or that of a pump, which the user states: litres a second. It stands for the fixture's load. */
   readonly flow?: number;
+  /** That flow comes and goes: some codes rate it less. */
+  readonly intermittent?: boolean;
   /** Frequency factor of its use where the user states one other than the building's (EN 12056). */
   readonly frequency?: number;
 }

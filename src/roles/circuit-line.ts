@@ -64,7 +64,7 @@ function carried(
   { stream, loads, inStack, stackAbove, paths }: BatteryContext,
   end: JointId,
   toLastTrap: readonly PipeId[],
-): Pick<CircuitLine, 'load' | 'closets' | 'soilAbove'> {
+): Pick<CircuitLine, 'load' | 'closets' | 'counts' | 'soilAbove'> {
   const goesOn = (pipe: PipeId): boolean => inStack[pipe] === null && !stackAbove[pipe];
   let pipe = stream.outflow[end] ?? null;
   let last = toLastTrap.at(-1) ?? null;
@@ -75,11 +75,11 @@ function carried(
     if (paths.vertical[pipe] === true || others.some((one) => loads.pipes[one]!.to - loads.pipes[one]!.from > 1)) break;
     pipe = stream.outflow[joint] ?? null;
   }
-  const { load, closets } = last === null ? { load: noLoad, closets: 0 } : loads.pipes[last]!;
+  const { load, closets, counts } = last === null ? { load: noLoad, closets: 0, counts: {} } : loads.pipes[last]!;
   let below = stream.outflow[end] ?? null;
   while (below !== null && inStack[below] === null) below = paths.next[below] ?? null;
   const above = below === null ? [] : stream.inflows[stream.up(below)]!;
-  return { load, closets, soilAbove: above.some((one) => inStack[one] !== null) };
+  return { load, closets, counts, soilAbove: above.some((one) => inStack[one] !== null) };
 }
 
 function steepestOf({ paths }: BatteryContext, pipes: readonly PipeId[]): number | null {

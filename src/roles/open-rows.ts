@@ -200,6 +200,7 @@ const noCircuit = (start: JointId, traps: readonly BatteryTrap[]): BatteryFacts[
   stackUpstream: false,
   load: noLoad,
   closets: 0,
+  counts: {},
   soilAbove: false,
   steepest: null,
   trapsAtStart: 0,

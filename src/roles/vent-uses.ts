@@ -77,6 +77,7 @@ export function ventUses(
             : null,
       between:
         it.role === 'yoke-vent' && it.stack !== null ? yokeEnds(context, tree, roles, pipe, it.stack, it.foot!) : null,
+      drain: it.foot === null ? null : (stream.outflow[it.foot.joint] ?? null),
       foot: it.foot?.joint ?? stream.up(pipe),
       wetVentStoreys:
         it.battery !== null && batteries[it.battery]!.reading === 'wet-vent'

@@ -1,3 +1,4 @@
+import type { BatteryFacts } from '../codes/battery.ts';
 import type { DrainRole, Portion, Role, WetVentRole } from '../codes/role.ts';
 import type { PipeUse, Reading, StandIn } from '../codes/use.ts';
 import type { JointId, PipeId } from '../network/network.ts';
@@ -42,6 +43,7 @@ export function wetUses(
   batteries.forEach(({ facts, reading }, battery) => {
     // Two drains that run together to their common vent are arms: nobody else's air passes.
     if (reading === 'common-vent' && facts.open !== null) return;
+    if (reading === 'single-stack') drainsToStack(facts, battery);
     const role = lineRoles[reading];
     if (role !== undefined) {
       // All of a stack that is its own vent is of one size, also below its last drain.
@@ -110,4 +112,16 @@ export function wetUses(
     }
   }
   return uses;
+
+  /** Between each trap and a single stack the code has limits of its own: those drains belong to the row. */
+  function drainsToStack({ traps }: BatteryFacts, battery: number): void {
+    for (const { fixture } of traps) {
+      const { after } = context.paths.traps[fixture]!;
+      for (const pipe of context.paths.fixtures[fixture]!.water.slice(after)) {
+        if (context.inStack[pipe] !== null) break;
+        const role = drains[pipe] ?? 'unknown';
+        uses.set(pipe, { role, also: [], portion: null, battery, standsIn: null, wetPortion: null });
+      }
+    }
+  }
 }

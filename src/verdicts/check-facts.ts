@@ -90,6 +90,8 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
         vents.find(({ vent }) => vent!.leaves === 'drain'),
       ),
       joins: stackUseAt({ network, paths, stream, loads, floors: roles.floors }, stack, stack.foot).joins,
+      footHeight: network.joints[stream.down(stack.foot)]!.at?.[2] ?? null,
+      footCounts: loads.pipes[stack.foot]!.counts,
       footSize: sizes[stack.foot]!.size,
       firstBelow: firstBelow(stack),
       isWetVent: roles.batteries.some(

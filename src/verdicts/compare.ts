@@ -1,4 +1,5 @@
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
+import type { PipeUse } from '../codes/use.ts';
 import type { Network } from '../network/network.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Load, Range } from '../units/quantity.ts';
@@ -9,7 +10,7 @@ export function comparePipes(network: Network, code: PlumbingCode, runs: readonl
   const entriesOpen = runs.some(({ roles }) => roles.uses.some(hasOpenEntry));
   return network.pipes.map(({ id }): PipeVerdict => {
     const load = extremes(runs.map(({ loads }) => loads.pipes[id]!.load));
-    const vents = runs.map(({ roles }) => enteringLoad(roles.uses[id]!));
+    const vents = runs.map(({ roles }) => enteringLoad(roles.uses[id]!, code));
     const ventLoad = vents.some((one) => one === null) ? null : extremes(vents as Load[]);
     const sizes = runs.map((run) => run.sizes[id]!);
     const asked = sizes.some(({ trail }) => trail.length > 0);
@@ -63,9 +64,22 @@ function verdictOf(
   return { verdict: rank(modelled) === rank(most) ? 'agrees' : 'oversized', reason: null };
 }
 
-/** What entered a vent table: for a wet vent the whole vent's load, for a dry one its own; null where no vent table is read. */
-function enteringLoad(use: Run['roles']['uses'][number]): Load | null {
-  if (use.role === 'wet-vent') return use.battery?.facts.wet.load ?? null;
+/**
+ * What entered a vent table: for a wet vent the whole vent's load or what passes the section, as the code has it; for a
+ * dry one its own; null where no vent table is read.
+ */
+function enteringLoad(use: PipeUse, { wetVentLoad }: PlumbingCode): Load | null {
+  switch (use.role) {
+    case 'wet-vent':
+      return wetVentLoad === 'section' ? use.load : (use.battery?.facts.wet.load ?? null);
+    case 'common-vent':
+      return use.battery?.facts.traps[0]?.load ?? null;
+    case 'combination-waste-and-vent':
+      return use.load;
+    case 'waste-stack-vent':
+    case 'single-stack':
+      return use.stack?.footLoad ?? null;
+  }
   if (use.wetPortion !== null) return use.wetPortion.load;
   return use.vent === null || use.role === 'idle' ? null : use.vent.load;
 }

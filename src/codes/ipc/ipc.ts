@@ -1,6 +1,7 @@
 import { rowAtSize } from '../../tables/find-row.ts';
-import { type Load, loadOf } from '../../units/quantity.ts';
+import type { Load } from '../../units/quantity.ts';
 import type { CodeRules } from '../plumbing-code.ts';
+import { steadyLoadBy } from '../rules/steady-load.ts';
 import type { Tools } from '../tools.ts';
 import { checks } from './checks.ts';
 import { drainRules, washers } from './drain-rules.ts';
@@ -13,7 +14,6 @@ import { wetRules } from './wet-rules.ts';
 export function ipc(tools: Tools): CodeRules {
   const { family } = tools;
   const arms = family.table('trap-arm');
-  const flow = family.number('continuous-flow', 'factor');
   const reliefClosets = family.number('relief-closets', 'count');
   return {
     fixtures: fixtures(tools),
@@ -27,10 +27,7 @@ export function ipc(tools: Tools): CodeRules {
       const longest = rowAtSize(arms, 'trap', trap, 'smaller', family.series)?.amount('longest').value;
       return siphonic || typeof longest !== 'number' ? null : longest;
     },
-    steadyLoad: (litresASecond) => {
-      const load = loadOf(flow.value * litresASecond);
-      return { load, cell: { ...flow, value: load } };
-    },
+    steadyLoad: steadyLoadBy(family.number('continuous-flow', 'factor')),
     sewerBegins: family.number('sewer-start', 'length').value,
     stackOffset: 0,
     batteryLimits: {

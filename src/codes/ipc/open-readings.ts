@@ -137,9 +137,6 @@ function singleStack({ family, omit }: Tools): Breaks {
       const most = closet ? closetFar.value : far.value;
       if (length > most + coordinateMetres) breaks('IPC-R96', { toStackM: length, toStackMostM: most, closet });
     });
-    const closets = traps.filter(({ closet }) => closet).length;
-    // More than one water closet on one branch needs a vent of its own, whatever the branch's size.
-    if (open !== null && closets > 1) breaks('IPC-R96', { closets, closetsMost: 1 });
     if (stack === null) return broken;
     const found = sizeForLoad(table, singleStackColumn(stack.rise).id, stack.footLoad, omit);
     if (found.size === null)

@@ -3,8 +3,8 @@ import { unitsOf } from '../../units/quantity.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { VentLengthTo } from '../plumbing-code.ts';
 import type { Role } from '../role.ts';
-import { floorStep, followStep } from '../rules/steps.ts';
-import { byStackTable, leastTrust, nextAbove, noStepDown, pastTable, shareOf } from '../rules/vent-sizes.ts';
+import { floorStep, followStep, pastTableStep } from '../rules/steps.ts';
+import { byStackTable, leastTrust, nextAbove, noStepDown, shareOf } from '../rules/vent-sizes.ts';
 import type { SizesSoFar, SizingRule, Step } from '../sizing-rule.ts';
 import type { Tools } from '../tools.ts';
 import type { PipeUse } from '../use.ts';
@@ -77,7 +77,7 @@ export function ventRules(tools: Tools): SizingRule[] {
         const id = pipe.role === 'branch-vent' ? 'IPC-R74' : 'IPC-R72';
         const facts = { loadUnits: unitsOf(vent.load), ...(vent.closets > 0 ? { closets: vent.closets } : {}) };
         const drain = drainFor(vent.load, vent.closets, vent.largestTrap);
-        return drain === null ? pastTable(rule(id), facts) : halved(id, pipe, drain, facts);
+        return drain === null ? pastTableStep(rule(id), facts) : halved(id, pipe, drain, facts);
       },
     },
     {
@@ -88,7 +88,7 @@ export function ventRules(tools: Tools): SizingRule[] {
         const { load, closets } = pipe.battery.facts.circuit;
         const facts = { loadUnits: unitsOf(load), ...(closets > 0 ? { closets } : {}) };
         const drain = drainFor(load, closets, null);
-        return drain === null ? pastTable(rule('IPC-R70'), facts) : halved('IPC-R70', pipe, drain, facts);
+        return drain === null ? pastTableStep(rule('IPC-R70'), facts) : halved('IPC-R70', pipe, drain, facts);
       },
     },
     {

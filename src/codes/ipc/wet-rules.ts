@@ -1,6 +1,7 @@
 import { type SizeFound, sizeForLoad } from '../../tables/find-size.ts';
 import { sizeAtSlope } from '../../tables/find-slope.ts';
 import { type Load, unitsOf } from '../../units/quantity.ts';
+import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { BatteryFacts } from '../battery.ts';
 import { heaviestInterval } from '../rules/branch-intervals.ts';
 import { floorStep, followStep, tableStep } from '../rules/steps.ts';
@@ -25,6 +26,7 @@ export function wetRules(tools: Tools): SizingRule[] {
   const interval = family.number('interval-least', 'length');
   const closetDrain = family.size('closet-drain');
   const ventShare = family.number('vent-share', 'share');
+  const closetNear = family.number('single-stack-closet-small', 'length');
   const singleClosets = family.number('single-stack-closets', 'count');
   const assumedSlope = typeof settings.assumedSlope === 'number' ? settings.assumedSlope : null;
   const drainFor = requiredDrain(tools);
@@ -145,6 +147,23 @@ export function wetRules(tools: Tools): SizingRule[] {
           heightM: rise,
           column: column.title,
         });
+      },
+    },
+    {
+      // A 3 in branch takes one water closet, close to the stack: what is farther or more needs the next size.
+      id: 'IPC-R96',
+      reads: 'use',
+      ask: (pipe) => {
+        const row = pipe.battery?.reading === 'single-stack' && pipe.drain !== 'stack' ? pipe.battery.facts : null;
+        if (row === null || pipe.closets === 0) return undefined;
+        const reach = Math.max(
+          ...row.traps.map(({ closet, reach: own }, at) => (closet ? (row.open?.reaches[at] ?? own) : 0)),
+        );
+        const near = pipe.closets === 1 && reach <= closetNear.value + coordinateMetres;
+        const larger = singleStack.sizes.find((size) => series.rank(size) > series.rank(closetDrain.value));
+        if (near || larger === undefined) return undefined;
+        const facts = { closets: pipe.closets, toStackM: reach, toStackMostM: closetNear.value };
+        return followStep(rule('IPC-R96'), larger, facts);
       },
     },
     {

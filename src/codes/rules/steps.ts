@@ -43,3 +43,14 @@ export function floorStep(rule: RuleEntry, cell: Cell<NominalSize>, facts: Facts
 export function followStep(rule: RuleEntry, asks: NominalSize, facts: Facts): Step {
   return { rule: rule.id, clause: rule.clause, cell: null, trust: rule.trust, facts, asks, provisional: false };
 }
+
+/** The load is heavier than any row: no size. */
+export const pastTableStep = ({ id, clause, trust }: RuleEntry, facts: Facts): Step => ({
+  rule: id,
+  clause,
+  cell: null,
+  trust,
+  facts: { ...facts, pastTable: true },
+  asks: null,
+  provisional: false,
+});

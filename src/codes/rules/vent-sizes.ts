@@ -6,7 +6,7 @@ import { unitsOf } from '../../units/quantity.ts';
 import type { Role } from '../role.ts';
 import type { SizingRule, Step } from '../sizing-rule.ts';
 import type { PipeUse } from '../use.ts';
-import { followStep, tableStep } from './steps.ts';
+import { followStep, pastTableStep, tableStep } from './steps.ts';
 
 /** Nominal bore in millimetres: inches as printed, or the DN. */
 export const widthOf = ({ sizes, rank }: SizeSeries, size: NominalSize): number => sizes[rank(size)]!.lengthsMm[0]!;
@@ -70,7 +70,7 @@ export function byStackTable(
   const facts = { stackSize, loadUnits: unitsOf(vent.load), lengthM: vent.length };
   const group = { column: 'stack', size: printedStack(table, stackSize, series) };
   const found = sizeForLength(table, 'load', vent.load, vent.length, { group, omit });
-  if (found === null) return pastTable(rule, facts);
+  if (found === null) return pastTableStep(rule, facts);
   return tableStep(rule, found, { ...facts, row: found.row.name }, 'm');
 }
 
@@ -79,14 +79,3 @@ function printedStack(table: Table, size: NominalSize, { rank }: SizeSeries): No
   const printed = [...new Set(table.rows.flatMap((row) => row.size('stack').value ?? []))] as NominalSize[];
   return printed.filter((one) => rank(one) >= rank(size)).sort((a, b) => rank(a) - rank(b))[0] ?? size;
 }
-
-/** The load is heavier than any row: no size. */
-export const pastTable = ({ id, clause, trust }: RuleEntry, facts: Step['facts']): Step => ({
-  rule: id,
-  clause,
-  cell: null,
-  trust,
-  facts: { ...facts, pastTable: true },
-  asks: null,
-  provisional: false,
-});

@@ -14,6 +14,23 @@ const load = (f: FrenchFacts, key = 'loadUnits'): string => `${f.number(num(f, k
 const group = (f: FrenchFacts): string =>
   `La rangée de ${text(f, 'fixtures')} appareils${has(f, 'battery') ? ` (groupe ${text(f, 'battery').replace(/^battery-/, '')})` : ''}`;
 
+/** What of its way a branch may not have. */
+function outOfReach(f: FrenchFacts): string {
+  const how = f.facts.ventilated === true ? 'avec une ventilation' : 'sans ventilation';
+  switch (f.facts.what) {
+    case 'bends':
+      return `a ${f.number(num(f, 'bends'))} coudes de 90°, au plus ${text(f, 'bendsMost')} ${how}`;
+    case 'drop':
+      return `chute de ${f.length(num(f, 'lengthM'))}, au plus ${f.length(num(f, 'limitM'))} ${how}`;
+    case 'steep':
+      return `a une pente de ${f.slope(num(f, 'slope'))}, au plus ${f.slope(num(f, 'slopeMost'))} ${how}`;
+    case 'group':
+      return `reçoit ${text(f, 'fixtures')} appareils ensemble, ce qu’aucune ligne du tableau ne permet ${how}`;
+    default:
+      return `mesure ${f.length(num(f, 'lengthM'))}, au plus ${f.length(num(f, 'limitM'))} ${how}`;
+  }
+}
+
 /** The findings' sentences in French, built from the same facts as the English ones. */
 export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
   undersized: (f) =>
@@ -108,9 +125,11 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
     `Le regard de nettoyage ${first(f)} est de ${text(f, 'modelled')}, au moins ${text(f, 'least')}${f.clause}.`,
   'closet-needs-larger': (f) =>
     `${first(f)} porte ${text(f, 'closets')} toilettes et exige un plus grand diamètre${f.clause}.`,
-  'branch-too-long': (f) =>
-    `${first(f)} mesure ${f.length(num(f, 'lengthM'))}, au plus ${f.length(num(f, 'limitM'))}${f.clause}.`,
-  'appliance-not-allowed': (f) => `${first(f)} ne peut se vider ici${f.clause}.`,
+  'branch-too-long': (f) => `Le branchement de ${first(f)} ${outOfReach(f)}${f.clause}.`,
+  'appliance-not-allowed': (f) =>
+    f.facts.what === 'mixed'
+      ? `La colonne ${first(f)} reçoit ${text(f, 'soil')} toilettes ou urinoirs et ${text(f, 'others')} autres appareils : dans ce système, chacun a sa colonne${f.clause}.`
+      : `${first(f)} n’est pas permis dans ce système${f.clause}.`,
   'vent-area-too-small': (f) => `Les ventilations de ${first(f)} ont ensemble une section trop faible${f.clause}.`,
   'main-vent-missing': (f) =>
     `Aucune ventilation du collecteur principal n’atteint l’air libre en ${text(f, 'least')} ou plus${has(f, 'widest') ? `; la plus large est de ${text(f, 'widest')}` : ''}${f.clause}.`,
