@@ -31,6 +31,10 @@ export interface VentWish {
 
 /** A vent beside an upright pipe stands this far from it, metres. */
 const beside = 0.3;
+/** To a vent no farther than this, in plan, it leads straight, metres. */
+const near = 1;
+/** It leaves the upright pipe at 60 degrees. */
+const sixthBend = Math.sqrt(3);
 /** A vent ends this far over the roof, metres: common practice, no source. */
 const overRoof = 0.3;
 
@@ -75,9 +79,12 @@ function throughRoof(scene: Scene, wish: VentWish): Option[] {
 function wayOf(scene: Scene, { foot, sideways }: VentWish, to: Vec3): Vec3[] {
   const from = foot.at;
   if (sideways !== true) return wayTo(lineAt(scene, foot) ?? toward(from, to), from, to);
+  const plan = planDistance(from, to);
   const [x, y] = toward(from, to);
-  const away = Math.min(beside, planDistance(from, to) || beside);
-  const side: Vec3 = [from[0] + x * away, from[1] + y * away, from[2]];
+  // A vent nearby is met from right below it.
+  const away = plan > 0 && plan <= near ? plan : beside;
+  const rise = Math.min(away * sixthBend, Math.max(0, to[2] - from[2]));
+  const side: Vec3 = [from[0] + x * away, from[1] + y * away, from[2] + rise];
   return [from, ...wayTo(toward(side, to), side, to)];
 }
 
