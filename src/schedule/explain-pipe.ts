@@ -80,12 +80,13 @@ function whose({ fixtures }: Result, ids: readonly string[], names: ElementNames
 }
 const mostNamed = 12;
 
-function roleReason({ servesWater = [], servesAir = [], role }: ResultPipe): string {
+function roleReason({ servesWater = [], servesAir = [], role, ventLoad }: ResultPipe): string {
   const name = plainWords(role);
   if (servesWater.length > 0 && servesAir.length > 0)
     return `Water and other traps' air share it, so it is a wet pipe that also vents: ${name}.`;
   if (servesWater.length > 0) return `It carries water and no other trap's air, so it is a drain: ${name}.`;
   if (servesAir.length > 0) return `It carries air and no water, so it is a dry vent: ${name}.`;
+  if (ventLoad !== undefined) return `It gives air to drains, and to no one trap by itself: ${name}.`;
   return `Nothing uses it: ${name}.`;
 }
 

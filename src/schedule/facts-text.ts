@@ -36,6 +36,7 @@ const measures: Readonly<Record<string, (value: number, unit: string) => string>
   deg: (value) => `${decimal(value, 1)}°`,
   share: (value) => `${decimal(value * 100, 0)} %`,
   slope: slopeText,
+  lps: (value) => `${decimal(value, 2)} l/s`,
 };
 
 function textOf(value: unknown, nameOf: (globalId: string) => string): string {
