@@ -1,7 +1,8 @@
-import { Cursor, textTable } from './lines/cursor.ts';
+import { Cursor } from './lines/cursor.ts';
 import type { LineIndex } from './lines/line-index.ts';
 import type { NameTable } from './lines/name-table.ts';
 import { newTextWatch, type TextWatch } from './lines/text.ts';
+import { textTable } from './lines/text-table.ts';
 
 /** What went wrong while records were followed; the index knows what is wrong with the bytes themselves. */
 export interface Troubles {

@@ -1,8 +1,10 @@
+import { endOfQuoted, isLetter, pastArguments, pastComment, type TypedList, typedListsBetween } from './byte-walk.ts';
 import { isDigit } from './end-of-statement.ts';
-import { NameTable } from './name-table.ts';
+import type { NameTable } from './name-table.ts';
 import { readNumber, readNumbers } from './number.ts';
 import { plainText } from './plain-text.ts';
 import { decodeText, newTextWatch, type TextWatch } from './text.ts';
+import { longestRemembered, textTable } from './text-table.ts';
 
 /** Brackets deeper than this are damage: what stands in them reads as absent. */
 export const deepest = 100;
@@ -34,24 +36,7 @@ export class Cursor {
 
   /** Passes over so many arguments; stays behind the last one where there are fewer. */
   skip(count: number): this {
-    const b = this.bytes;
-    const n = b.length;
-    let i = this.pos;
-    let left = count;
-    let depth = 0;
-    for (; left > 0 && i < n; i++) {
-      const c = b[i]!;
-      if (c === 39) i = endOfQuoted(b, i);
-      else if (c === 44) {
-        if (depth === 0) left--;
-      } else if (c === 40) depth++;
-      else if (c === 41) {
-        if (depth === 0) break;
-        depth--;
-      } else if (c === 47) i = pastComment(b, i) - 1;
-      else if (c === 59) break;
-    }
-    this.pos = i;
+    this.pos = pastArguments(this.bytes, this.pos, count);
     return this;
   }
 
@@ -172,24 +157,9 @@ export class Cursor {
   }
 
   /** Typed lists of numbers, such as `(IFCLINEINDEX((1,2)),IFCARCINDEX((2,3,4)))`; none for `$`. */
-  typedLists(): { readonly type: string; readonly numbers: number[] }[] {
-    const b = this.bytes;
+  typedLists(): TypedList[] {
     const end = this.endOfArgument();
-    const found: { readonly type: string; readonly numbers: number[] }[] = [];
-    let i = this.pos;
-    while (i < end) {
-      if (!isLetter(b[i])) {
-        i++;
-        continue;
-      }
-      const from = i;
-      while (i < end && b[i] !== 40) i++;
-      const numbers: number[] = [];
-      found.push({ type: (plainText(b, from, i) ?? '').trim().toUpperCase(), numbers });
-      i = readNumbers(b, i + 1, numbers);
-      // The list within the brackets has its own: its end is the bracket that closes it.
-      while (i < end && b[i] !== 41) i++;
-    }
+    const found = typedListsBetween(this.bytes, this.pos, end);
     this.pos = end;
     this.skip(1);
     return found;
@@ -322,37 +292,7 @@ const readText = (within: Cursor): string | null => within.text();
 const readOneNumber = (within: Cursor): number | null => within.number();
 const readEnumeration = (within: Cursor): string | null => within.enumeration();
 
-const isLetter = (c: number | undefined): boolean => c !== undefined && ((c >= 65 && c <= 90) || (c >= 97 && c <= 122));
 const isUpper = (text: string): boolean => {
   for (let k = 0; k < text.length; k++) if (text.charCodeAt(k) >= 97) return false;
   return true;
 };
-
-/** Texts longer than this are seldom said twice. */
-const longestRemembered = 64;
-
-/** Short texts of a file by their bytes. A text with escapes is odd: it is decoded each time, so that it is counted. */
-export const textTable = (b: Uint8Array): NameTable<null> =>
-  new NameTable(b, (from, to) => {
-    const plain = plainText(b, from, to);
-    return { name: plain ?? '', meaning: null, isOdd: plain === null };
-  });
-
-/** Offset of the quote that closes a string opened at `open`; a doubled quote is part of the string. */
-function endOfQuoted(b: Uint8Array, open: number): number {
-  const n = b.length;
-  for (let i = open + 1; i < n; i++) {
-    if (b[i] === 39) {
-      if (b[i + 1] !== 39) return i;
-      i++;
-    }
-  }
-  return n;
-}
-
-/** Past a comment that begins here; past the one byte where none does. */
-function pastComment(b: Uint8Array, at: number): number {
-  if (b[at + 1] !== 42) return at + 1;
-  for (let i = b.indexOf(47, at + 3); i > 0; i = b.indexOf(47, i + 1)) if (b[i - 1] === 42) return i + 1;
-  return b.length;
-}

@@ -1,6 +1,8 @@
-import { cross, dot, unit, type Vec3 } from '../../geometry/vector.ts';
+import { dot, type Vec3 } from '../../geometry/vector.ts';
+import { areaVector, faceNormals, longEdges } from './likely-axes.ts';
 import type { Mesh } from './mesh.ts';
 import { principalDirections } from './principal-directions.ts';
+import { goesRound, seenAlong } from './seen-along.ts';
 
 /** A tube that a mesh turned out to be, in the mesh's own coordinates, radii in metres. */
 export interface FittedTube {
@@ -51,52 +53,6 @@ function best(flat: readonly number[], directions: readonly Vec3[], fitter: Fit)
 const isGood = (fit: StraightFit | null): boolean => fit !== null && fit.residual < goodFit * fit.walls.at(-1)!;
 const better = (a: StraightFit | null, b: StraightFit | null): StraightFit | null =>
   a === null || (b !== null && b.residual < a.residual) ? b : a;
-
-const mostNormals = 4;
-
-/** Directions that the largest flat parts face: the ends of a short pipe face along its axis. */
-function faceNormals(mesh: Mesh, flat: readonly number[]): Vec3[] {
-  const found: { along: Vec3; area: number }[] = [];
-  for (const face of mesh.faces()) {
-    const n = areaVector(face, flat);
-    const area = Math.sqrt(n[0] * n[0] + n[1] * n[1] + n[2] * n[2]);
-    if (!(area > 0)) continue;
-    const along: Vec3 = [n[0] / area, n[1] / area, n[2] / area];
-    const same = found.find((one) => Math.abs(dot(one.along, along)) > 1 - 1e-9);
-    if (same !== undefined) same.area += area;
-    else if (found.length < mostDirections) found.push({ along, area });
-  }
-  return found
-    .sort((a, b) => b.area - a.area)
-    .slice(0, mostNormals)
-    .map(({ along }) => along);
-}
-
-const mostDirections = 200;
-const mostEdges = 12;
-
-/** Directions of the longest edges: the sides of a pipe that is cut off askew still run along its axis. */
-function longEdges(mesh: Mesh, flat: readonly number[]): Vec3[] {
-  const found: { readonly along: Vec3; readonly size: number }[] = [];
-  for (const face of mesh.faces()) {
-    for (let k = 0; k < face.length; k++) {
-      const a = face[k]! * 3;
-      const b = face[(k + 1) % face.length]! * 3;
-      const x = flat[b]! - flat[a]!;
-      const y = flat[b + 1]! - flat[a + 1]!;
-      const z = flat[b + 2]! - flat[a + 2]!;
-      const size = Math.sqrt(x * x + y * y + z * z);
-      const shortest = found.length < mostEdges ? 0 : found.at(-1)!.size;
-      if (!(size > shortest)) continue;
-      const same = found.some(({ along }) => Math.abs(along[0] * x + along[1] * y + along[2] * z) > size * (1 - 1e-8));
-      if (same) continue;
-      found.push({ along: [x / size, y / size, z / size], size });
-      found.sort((p, q) => q.size - p.size);
-      if (found.length > mostEdges) found.pop();
-    }
-  }
-  return found.map(({ along }) => along);
-}
 
 interface StraightFit {
   readonly along: Vec3;
@@ -161,104 +117,6 @@ function looseFit(flat: readonly number[], along: Vec3): StraightFit | null {
   return residual > looseTolerance * mean ? null : { along, x, y, u, v, from, to, walls: [mean], residual };
 }
 
-/** Points as seen along a direction, around the centre that fits them best. */
-interface Seen {
-  readonly x: Vec3;
-  readonly y: Vec3;
-  readonly u: number;
-  readonly v: number;
-  readonly from: number;
-  readonly to: number;
-  readonly across: Float64Array;
-  readonly up: Float64Array;
-  readonly radii: Float64Array;
-  readonly largest: number;
-}
-
-function seenAlong(flat: readonly number[], along: Vec3): Seen | null {
-  const n = flat.length / 3;
-  const x = unit(cross(along, Math.abs(along[2]) < 0.9 ? [0, 0, 1] : [1, 0, 0]));
-  const y = cross(along, x);
-  const across = new Float64Array(n);
-  const up = new Float64Array(n);
-  let from = Infinity;
-  let to = -Infinity;
-  let mu = 0;
-  let mv = 0;
-  for (let k = 0, i = 0; k < n; k++, i += 3) {
-    const px = flat[i]!;
-    const py = flat[i + 1]!;
-    const pz = flat[i + 2]!;
-    const t = px * along[0] + py * along[1] + pz * along[2];
-    if (t < from) from = t;
-    if (t > to) to = t;
-    mu += across[k] = px * x[0] + py * x[1] + pz * x[2];
-    mv += up[k] = px * y[0] + py * y[1] + pz * y[2];
-  }
-  const centre = circleCentre(across, up, mu / n, mv / n);
-  if (centre === null || !(to - from > 1e-6)) return null;
-  const { u, v } = centre;
-  const radii = new Float64Array(n);
-  let largest = 0;
-  for (let k = 0; k < n; k++) {
-    const du = across[k]! - u;
-    const dv = up[k]! - v;
-    const radius = Math.sqrt(du * du + dv * dv);
-    radii[k] = radius;
-    if (radius > largest) largest = radius;
-  }
-  return largest > 0 ? { x, y, u, v, from, to, across, up, radii, largest } : null;
-}
-
-const steps = 72;
-/** Widest gap between neighbouring corners of a wall, seen along the axis, in steps of five degrees: a hexagon has 60°. */
-const widestGap = 14;
-const taken = new Uint8Array(steps);
-
-/** True where the corners between two radii stand all around the centre; four of them make a duct. */
-function goesRound({ across, up, radii, u, v }: Seen, least: number, most: number): boolean {
-  taken.fill(0);
-  for (let k = 0; k < radii.length; k++) {
-    if (radii[k]! < least || radii[k]! > most) continue;
-    taken[(Math.round(Math.atan2(up[k]! - v, across[k]! - u) * (steps / 2 / Math.PI)) + steps) % steps] = 1;
-  }
-  const first = taken.indexOf(1);
-  if (first < 0) return false;
-  let gap = 0;
-  for (let k = first + 1; k <= first + steps; k++) {
-    gap = taken[k % steps] === 1 ? 0 : gap + 1;
-    if (gap > widestGap) return false;
-  }
-  return true;
-}
-
-/** Centre of the circle that fits points in a plane best (Kåsa's linear least squares); null for points on a line. */
-function circleCentre(
-  across: Float64Array,
-  up: Float64Array,
-  mu: number,
-  mv: number,
-): { readonly u: number; readonly v: number } | null {
-  let uu = 0;
-  let vv = 0;
-  let uv = 0;
-  let ur = 0;
-  let vr = 0;
-  for (let k = 0; k < across.length; k++) {
-    const a = across[k]! - mu;
-    const b = up[k]! - mv;
-    const rr = a * a + b * b;
-    uu += a * a;
-    vv += b * b;
-    uv += a * b;
-    ur += a * rr;
-    vr += b * rr;
-  }
-  const determinant = uu * vv - uv * uv;
-  if (!(Math.abs(determinant) > 1e-12 * uu * vv)) return null;
-  return { u: mu + (ur * vv - vr * uv) / (2 * determinant), v: mv + (vr * uu - ur * uv) / (2 * determinant) };
-}
-
 /** Part of a tube's length that some wall must cover: a ball and a cone have rings of corners, too. */
 const leastCoverage = 0.4;
 
@@ -302,26 +160,4 @@ function sideArea(face: readonly number[], flat: readonly number[], along: Vec3)
   const n = areaVector(face, flat);
   const lengthwise = dot(n, along);
   return Math.sqrt(Math.max(0, dot(n, n) - lengthwise * lengthwise));
-}
-
-/** Normal of a face, as long as the face is large. */
-function areaVector(face: readonly number[], flat: readonly number[]): Vec3 {
-  let nx = 0;
-  let ny = 0;
-  let nz = 0;
-  const o = face[0]! * 3;
-  for (let k = 2; k < face.length; k++) {
-    const p = face[k - 1]! * 3;
-    const q = face[k]! * 3;
-    const ax = flat[p]! - flat[o]!;
-    const ay = flat[p + 1]! - flat[o + 1]!;
-    const az = flat[p + 2]! - flat[o + 2]!;
-    const bx = flat[q]! - flat[o]!;
-    const by = flat[q + 1]! - flat[o + 1]!;
-    const bz = flat[q + 2]! - flat[o + 2]!;
-    nx += ay * bz - az * by;
-    ny += az * bx - ax * bz;
-    nz += ax * by - ay * bx;
-  }
-  return [nx / 2, ny / 2, nz / 2];
 }
