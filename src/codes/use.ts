@@ -119,6 +119,20 @@ export type Reading =
   | 'single-stack'
   | 'ventilated-branch';
 
+/** Written as a record so that a reading that is added cannot be forgotten. */
+const known: Readonly<Record<Reading, true>> = {
+  'wet-vent': true,
+  'circuit-vent': true,
+  'individual-vent': true,
+  'common-vent': true,
+  'waste-stack-vent': true,
+  'combination-waste-and-vent': true,
+  'single-stack': true,
+  'ventilated-branch': true,
+};
+export const isReading = (word: string | null | undefined): word is Reading =>
+  word !== null && word !== undefined && Object.hasOwn(known, word);
+
 export interface VentUse {
   /** Load that enters a vent table, what the code leaves out left out. */
   readonly load: Load;

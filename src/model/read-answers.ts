@@ -5,7 +5,16 @@ import type { Answers, FixtureAnswer, PipeAnswer, Settings } from './answers.ts'
 import type { FixtureKind } from './identity.ts';
 
 export const answersFormat = 'drainwright-answers';
-const readings = ['wet-vent', 'circuit-vent', 'individual-vent'] as const;
+const readings = [
+  'wet-vent',
+  'circuit-vent',
+  'individual-vent',
+  'common-vent',
+  'waste-stack-vent',
+  'combination-waste-and-vent',
+  'single-stack',
+  'ventilated-branch',
+] as const;
 /** `questions` tells people what to fill in and is not read. */
 const parts = ['questions', 'settings', 'sewerEnds', 'fixtures', 'pipes', 'batteries', 'leaveOut', 'cleanouts'];
 

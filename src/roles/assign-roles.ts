@@ -1,6 +1,6 @@
 import type { EntryRule, PlumbingCode } from '../codes/plumbing-code.ts';
 import type { Role } from '../codes/role.ts';
-import type { PipeUse, Reading, StackUse, TankKind, VentUse } from '../codes/use.ts';
+import { isReading, type PipeUse, type Reading, type StackUse, type TankKind, type VentUse } from '../codes/use.ts';
 import { type Finding, finding, type WithFindings } from '../findings/finding.ts';
 import type { PlanPoint } from '../geometry/plan-outline.ts';
 import type { Loads } from '../loads/loads.ts';
@@ -273,14 +273,12 @@ function designersWord(
     if (reading !== null) words.add(reading);
   }
   const [only] = words;
-  return words.size === 1 && (only === 'wet-vent' || only === 'circuit-vent' || only === 'individual-vent')
-    ? only
-    : null;
+  return words.size === 1 && isReading(only) ? only : null;
 }
 
 function answeredReading({ model, paths, answers }: RoleFacts, { facts }: Battery): Reading | null {
   for (const [key, { reading }] of answers.batteries) {
-    if (reading !== 'wet-vent' && reading !== 'circuit-vent' && reading !== 'individual-vent') continue;
+    if (!isReading(reading)) continue;
     if (facts.traps.some(({ fixture }) => keyMatches(key, model.elements[paths.fixtures[fixture]!.element]!)))
       return reading;
   }

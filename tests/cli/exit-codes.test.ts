@@ -68,7 +68,6 @@ describe('2: wrong usage', () => {
     ['too many models', ['check', wetVented, wetVented], 'too many arguments'],
     ['an unknown option', ['check', wetVented, '--colour'], 'unknown option'],
     ['an unknown code', ['check', wetVented, '--code', 'moon-2020'], 'npc-2020'],
-    ['a code that is not built yet', ['check', wetVented, '--code', 'ipc-2024'], 'code ipc-2024'],
     ['an unknown edition', ['codes', 'npc-1995'], 'npc-2020'],
     ['an unknown table', ['codes', 'npc-2020', 'moon'], 'branch'],
     ['nothing of that name', ['explain', wetVented, 'no such thing'], 'no pipe or fixture'],
