@@ -43,6 +43,8 @@ export interface BatteryTrap {
   readonly ownVent: boolean;
   /** Vertical pipes of its own drain between the trap and the line, and their height in metres. */
   readonly drops: { readonly pipes: number; readonly height: number };
+  /** The last pipe of its own drain runs level into the line. */
+  readonly joinsLevel: boolean;
   /** Length of the level pipes of its own drain up to the line, metres. */
   readonly reach: number;
   /** Joint on the line where its arm ends, and its place: 0 is the foot. */

@@ -104,6 +104,7 @@ function batteryTrap(context: BatteryContext, trap: TrapAir, places: ReadonlyMap
     free: free[trap.fixture] !== null,
     ownVent: trap.through.length === 0,
     drops: { pipes: drops.length, height: drops.reduce((sum, pipe) => sum + stream.span(pipe), 0) },
+    joinsLevel: paths.vertical[trap.arm.at(-1) ?? -1] !== true,
     reach: trap.arm.reduce((sum, pipe) => (paths.vertical[pipe] === true ? sum : sum + stream.span(pipe)), 0),
     joins,
     place: places.get(joins) ?? 0,

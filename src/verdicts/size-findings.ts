@@ -20,7 +20,7 @@ export function sizeFindings(
   for (const [element, sections] of [...network.pipesOf].sort(([a], [b]) => a - b)) {
     const worst = [...sections].sort((a, b) => weight(verdicts[b]!) - weight(verdicts[a]!) || a - b)[0];
     if (worst === undefined) continue;
-    const { verdict, required, load, provisional } = verdicts[worst]!;
+    const { verdict, required, load, ventLoad, provisional } = verdicts[worst]!;
     // An outlet pipe as wide as its trap is what people lay, whatever less its table allows.
     const asTrap = verdict === 'oversized' && run.roles.uses[worst]!.portion === 'outlet';
     if ((verdict === 'undersized' || verdict === 'oversized') && !asTrap) {
@@ -34,7 +34,8 @@ export function sizeFindings(
             modelled: modelled(worst),
             required: required!.most,
             requiredLeast: required!.least,
-            loadUnits: typeof step.facts.loadUnits === 'number' ? step.facts.loadUnits : unitsOf(load.most),
+            loadUnits:
+              typeof step.facts.loadUnits === 'number' ? step.facts.loadUnits : unitsOf((ventLoad ?? load).most),
             rule: step.rule,
             cause: causeOf(run, worst),
             provisional,

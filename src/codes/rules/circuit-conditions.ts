@@ -41,7 +41,8 @@ export function circuitConditions(family: Family, rules: CircuitRules): (facts: 
     if (circuit.vertical > 0) breaks(rules.allowed, { verticalPipes: circuit.vertical });
     const storeys = new Set(traps.map(({ storey }) => storey));
     if (storeys.size > 1) breaks(rules.allowed, { storeys: storeys.size });
-    const dropping = traps.filter(({ drops }) => drops.pipes > 0);
+    // A water closet may drop from its ring, as long as its drain then joins level.
+    const dropping = traps.filter(({ row, drops, joinsLevel }) => !joinsLevel || (!row.siphonic && drops.pipes > 0));
     if (dropping.length > 0) breaks(rules.allowed, { drops: dropping.length });
     if (circuit.stackUpstream) breaks(rules.allowed, { stackUpstream: true });
     if (traps.length < fewest) breaks(rules.allowed, { circuitTraps: traps.length, circuitLeast: fewest });
