@@ -101,7 +101,7 @@ function inWords(plan: Plan, change: Change): Pick<MendChange, 'from' | 'to'> {
     case 'slope':
       return {
         from: change.from === null ? null : slopeText(change.from),
-        to: `${slopeText(change.to)}, ${loweringText(change.lowered)}`,
+        to: `${slopeText(change.to)}: ${loweringText(change.lowered)}`,
       };
     case 'trap':
       return { from: `${lengthText(change.from)} from the fixture`, to: `${lengthText(change.to)} from the fixture` };
@@ -121,13 +121,16 @@ const ventFrom = ({ kind }: VentChange): string => (kind === 'moved-vent' ? 'whe
 function ventTo(plan: Plan, change: VentChange): string {
   const { last, first } = plan;
   const { role, size } = madeOf(plan, change);
-  const end =
-    change.joins !== null && change.joins < first.model.elements.length
-      ? `to ${elementName(last, change.joins)}`
-      : change.joins === null && change.kind !== 'moved-vent'
-        ? 'through the roof to open air'
-        : 'to where it goes on';
+  const end = endOf(change, change.joins !== null && change.joins >= first.model.elements.length, (element) =>
+    elementName(last, element),
+  );
   return [`${plainWords(role)} of ${size ?? 'unknown size'}`, lengthText(change.length), end].join(', ');
+}
+
+function endOf({ kind, joins }: VentChange, onNew: boolean, nameOf: (element: ElementId) => string): string {
+  if (onNew) return 'to the new vent beside it';
+  if (joins !== null) return `to ${nameOf(joins)}`;
+  return kind === 'moved-vent' ? 'to where it goes on' : 'through the roof to open air';
 }
 
 /** What the new pipe is in the changed building: by its first piece that something breathes through. */

@@ -87,7 +87,7 @@ function titleOf(change: MendChange, nameOf: (globalId: string) => string): stri
     case 'reading':
       return `The row of ${counted(about.length, 'fixture')} from ${at} on is read as ${to} instead of ${from}`;
     case 'slope':
-      return `${about.map(nameOf).slice(0, mostNamed).join(', ')} laid to ${to}${from === null ? '' : `, now ${from}`}`;
+      return `${about.map(nameOf).slice(0, mostNamed).join(', ')}${from === null ? '' : `, now ${from},`} laid to ${to}`;
     case 'trap':
       return `${at} set ${to}, now ${from}`;
     case 'cleanout':

@@ -106,7 +106,7 @@ const breakages: readonly Breakage[] = [
       { size: 'CJ-CT', from: '1¼ in', to: '1½ in' },
       { size: 'CT-KV', from: '1¼ in', to: '1½ in' },
     ],
-    says: ['KE-KB laid to 2 % (1:50)'],
+    says: ['KE-KB, now 0.5 % (1:200), laid to 2 % (1:50)'],
   },
   {
     name: 'all vents end under the roof',
@@ -139,7 +139,7 @@ const breakages: readonly Breakage[] = [
       flatBranch,
     ],
     undo: [{ vent: ['PJ', 'PT', 'PR', 'VP', 'VJ'] }, { size: 'S2-S1', from: '2 in', to: '3 in' }, { fall: ['KE-KB'] }],
-    says: ['New continuous vent', 'S2-S1', 'KE-KB'],
+    says: ['New individual vent', 'S2-S1', 'KE-KB, now 0.5 % (1:200), laid to 2 % (1:50)'],
   },
   {
     name: 'the one large vent drawn small',
@@ -153,7 +153,7 @@ const breakages: readonly Breakage[] = [
     sound: dwelling,
     edits: [['node QB from QJ south 0.32 rise 1:50', 'node QB from QJ south 0.32 fall 1:50']],
     undo: [{ fall: ['QB-QJ'] }],
-    says: ['QB-QJ laid to 2 % (1:50)'],
+    says: ['QB-QJ, now -2 %', 'laid to 2 % (1:50)'],
   },
   {
     name: 'circuit vents that start a fixture too late, on every storey',

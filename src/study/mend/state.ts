@@ -98,12 +98,13 @@ export function stateAfter(
   };
 }
 
-/** What an option adds at least to the cost of a state: sizes that are pinned already count once. */
+/** What an option adds at least to the cost of a state: of sizes what they go beyond those that are pinned already. */
 export function leastOf({ pins }: State, { change, cost, pins: own }: Option, first: FirstSizes, costs: Costs): number {
   if (change !== null) return cost;
-  const known = own.reduce((sum, [element]) => {
-    const [size, drawn] = [pins.get(element), first.get(element)];
-    return size === undefined || drawn === undefined ? sum : sum + costs.resize(element, drawn, size);
+  return own.reduce((sum, [element, size]) => {
+    const [known, drawn] = [pins.get(element), first.get(element)];
+    if (drawn === undefined) return sum;
+    const before = known === undefined ? 0 : costs.resize(element, drawn, known);
+    return sum + Math.max(0, costs.resize(element, drawn, size) - before);
   }, 0);
-  return Math.max(0, cost - known);
 }

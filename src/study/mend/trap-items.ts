@@ -22,19 +22,21 @@ export function trapOptions(scene: Scene, fixture: FixtureId, why: Finding): Opt
   const some = heads.length <= nearHeads + 1 ? heads : [...heads.slice(0, nearHeads), heads[heads.length - 1]!];
   return distinct([
     ...ownVentOptions(scene, fixture, why),
-    ...some.flatMap((head) => ownVentOptions(scene, head, why, 1)),
+    ...some.flatMap((head) => ownVentOptions(scene, head, why)),
   ]);
 }
 
 /** Vents on a fixture's own drain. `most` places, those nearest to where it joins the line first. */
 export function ownVentOptions(scene: Scene, fixture: FixtureId, why: Finding, most = mostPlaces): Option[] {
   const { element } = scene.outcome.paths.fixtures[fixture]!;
+  const last = ownDrain(scene, fixture).at(-1);
+  // What joins where the drain meets the line may come to breathe through the vent as well.
+  const served = last === undefined ? [] : scene.through(scene.stream.down(last));
+  const flood = scene.flood([fixture, ...served]);
   return distinct(
     ownPlaces(scene, fixture)
       .slice(0, most)
       .flatMap((foot, at) => {
-        const served = 'joint' in foot.place ? scene.through(foot.place.joint) : [];
-        const flood = scene.flood([fixture, ...served]);
         const about = [...elementsAt(scene, foot.place), element];
         return ventOptions(scene, { foot, why, about, flood, sky: at === 0 }, at === 0 ? 4 : 2);
       }),
