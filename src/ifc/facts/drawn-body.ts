@@ -39,13 +39,38 @@ export function drawnBody(reader: Reader, placements: Placements, solids: Solids
 
 const isOneSweep = ({ body }: ProductShape): boolean => body.length === 1 && body[0]!.shape.kind === 'tube';
 
-/** Adds the drawn diameters as witnesses: exact where the file states a profile, measured where a mesh was fitted. */
-export function addDrawnSizes(into: SizeWitness[], { centreLine }: Drawn): void {
-  if (centreLine === null) return;
-  const { outerDiameter, innerDiameter, ground } = centreLine;
-  const isProfile = ground === 'extrusion' || ground === 'swept-disk';
+const mostRemembered = 20_000;
+
+/** The drawn diameters as witnesses: exact where the file states a profile, measured where a mesh was fitted. */
+export class DrawnSizes {
+  /** By millimetres, for each means and ground. */
+  private readonly outer = new Map<number, SizeWitness>();
+  private readonly inner = new Map<number, SizeWitness>();
+  private readonly measuredOuter = new Map<number, SizeWitness>();
+  private readonly measuredInner = new Map<number, SizeWitness>();
+
+  addTo(into: SizeWitness[], { centreLine }: Drawn): void {
+    if (centreLine === null) return;
+    const { outerDiameter, innerDiameter, ground } = centreLine;
+    const isProfile = ground === 'extrusion' || ground === 'swept-disk';
+    const { outer, inner, measuredOuter, measuredInner } = this;
+    if (outerDiameter !== null) into.push(shared(isProfile ? outer : measuredOuter, outerDiameter, 'outer', isProfile));
+    if (innerDiameter !== null) into.push(shared(isProfile ? inner : measuredInner, innerDiameter, 'inner', isProfile));
+  }
+}
+
+/** Pipes of one size share their witness: it is made once and never changed. */
+function shared(
+  known: Map<number, SizeWitness>,
+  diameter: number,
+  means: 'outer' | 'inner',
+  isProfile: boolean,
+): SizeWitness {
+  const mm = roundedMm(diameter * 1000);
+  const before = known.get(mm);
+  if (before !== undefined) return before;
   const from = isProfile ? 'profile' : 'measured on the body';
-  const told = { text: null, ground: isProfile ? 'profile' : 'measured', from } as const;
-  if (outerDiameter !== null) into.push({ means: 'outer', mm: roundedMm(outerDiameter * 1000), ...told });
-  if (innerDiameter !== null) into.push({ means: 'inner', mm: roundedMm(innerDiameter * 1000), ...told });
+  const witness: SizeWitness = { means, mm, text: null, ground: isProfile ? 'profile' : 'measured', from };
+  if (known.size < mostRemembered) known.set(mm, witness);
+  return witness;
 }

@@ -116,8 +116,15 @@ class Verdict {
   }
 }
 
-const placeOf = ({ set, name }: Reading, isOfType: boolean): string =>
-  isOfType ? `${set}.${name} (type)` : `${set}.${name}`;
+/** The place named last: most elements of a model state the same property in the same set. */
+let lastPlace = { set: '', name: '', isOfType: false, text: '.' };
+
+function placeOf({ set, name }: Reading, isOfType: boolean): string {
+  if (lastPlace.set !== set || lastPlace.name !== name || lastPlace.isOfType !== isOfType) {
+    lastPlace = { set, name, isOfType, text: isOfType ? `${set}.${name} (type)` : `${set}.${name}` };
+  }
+  return lastPlace.text;
+}
 
 function sizeWitness(reading: Reading, means: SizeWitness['means'], from: string): SizeWitness | null {
   const { value, measure, hasUnit, isQuantity } = reading;
@@ -145,24 +152,29 @@ function propertyFact({ set, name, value, measure }: Reading, from: 'own' | 'typ
 
 const mostRemembered = 20_000;
 
-/** Remembers which texts claim a size: the same few stand on every pipe. */
+/** Remembers which texts claim a size, and the witness that comes of it: the same few stand on every pipe. */
 export class NamedSizes {
-  private readonly typeNames = new Map<string, string | null>();
-  private readonly names = new Map<string, string | null>();
+  private readonly witnesses = new Map<string, Map<string, SizeWitness | null>>();
 
-  /** The claim in a text, see `sizeInName`. */
-  of(text: string, isType: boolean): string | null {
-    const memory = isType ? this.typeNames : this.names;
+  /** The witness in a text, see `sizeInName`; null where it claims nothing. */
+  of(text: string, isType: boolean, from: string): SizeWitness | null {
+    let memory = this.witnesses.get(from);
+    if (memory === undefined) {
+      memory = new Map();
+      this.witnesses.set(from, memory);
+    }
     const known = memory.get(text);
     if (known !== undefined) return known;
     const claim = sizeInName(text, isType);
-    if (memory.size < mostRemembered) memory.set(text, claim);
-    return claim;
+    const witness: SizeWitness | null =
+      claim === null ? null : { means: 'unknown', mm: null, text: claim, ground: 'name', from };
+    if (memory.size < mostRemembered) memory.set(text, witness);
+    return witness;
   }
 }
 
-/** Adds the size that a text claims, unless another text claimed the same. */
-export function addNamedSize(into: SizeWitness[], claim: string | null, from: string): void {
-  if (claim === null || into.some((one) => one.ground === 'name' && one.text === claim)) return;
-  into.push({ means: 'unknown', mm: null, text: claim, ground: 'name', from });
+/** Adds the witness of a text, unless another text claimed the same. */
+export function addNamedSize(into: SizeWitness[], witness: SizeWitness | null): void {
+  if (witness === null || into.some((one) => one.ground === 'name' && one.text === witness.text)) return;
+  into.push(witness);
 }

@@ -38,6 +38,8 @@ export class PropertySets {
   private readonly inner: Cursor;
   /** The set read last: one relation often gives it to many things, one after the other. */
   private last = -1;
+  /** Readings of one set are gathered here first, so that the list kept is as long as it must be. */
+  private readonly gathered: Reading[] = [];
   private lastReadings = none;
 
   constructor(reader: Reader, units: Units) {
@@ -62,8 +64,9 @@ export class PropertySets {
       .at(reader.args[record]!)
       .skip(kind === 'IFCPROPERTYSET' ? 4 : 5)
       .ids();
-    let found: Reading[] | null = null;
-    let set = '';
+    const found = this.gathered;
+    found.length = 0;
+    let set: string | null = null;
     for (let k = 0; k < ids.length; k++) {
       const property = reader.follow(ids[k]!, record);
       if (property < 0) continue;
@@ -71,14 +74,13 @@ export class PropertySets {
       if (named === null || (named.meaning.meaning === null && reader.type(property) !== 'IFCCOMPLEXPROPERTY'))
         continue;
       // The set's own name is wanted only where one of its properties is.
-      if (found === null) {
-        found = [];
+      if (set === null) {
         set = cursor.at(reader.args[record]!).skip(2).text() ?? '';
         if (set.startsWith(ownPrefix)) break;
       }
       this.property(property, named, set, 0, found);
     }
-    const result = found === null || found.length === 0 ? none : found;
+    const result = found.length === 0 ? none : found.slice();
     this.last = record;
     this.lastReadings = result;
     return result;

@@ -1,7 +1,7 @@
 import type { Element, ElementId, Fabric, Port, PortId, Space, StoreyId, System, Wall } from '../../model/model.ts';
 import { Solids } from '../solids/solids.ts';
 import { Associations } from './associations.ts';
-import { addDrawnSizes, drawnBody } from './drawn-body.ts';
+import { DrawnSizes, drawnBody } from './drawn-body.ts';
 import { type ElementRecord, elementRecords, readElement } from './elements.ts';
 import { fabricOf, wallRecords } from './fabric.ts';
 import type { JoinedStoreys } from './join-storeys.ts';
@@ -52,11 +52,13 @@ class FactsReader {
   private readonly associations: Associations;
   private readonly spaces: Spaces;
   private readonly claims = new NamedSizes();
+  private readonly drawnSizes = new DrawnSizes();
   private readonly records: readonly ElementRecord[];
   private readonly readings: PropertyReadings;
   /** By record. 0: nobody of ours; k + 1: element at place k; `aWall`: a wall. */
   private readonly places: Uint32Array;
-  private readonly portsOf: PortId[][] = [];
+  /** Ports by the place of their element. */
+  private readonly portsOf: (readonly PortId[])[] = [];
 
   constructor(source: Source, storeys: JoinedStoreys, first: FirstIds) {
     this.source = source;
@@ -109,8 +111,10 @@ class FactsReader {
     if (owner === null) return;
     const place = owner - this.first.elements;
     const list = this.portsOf[place];
+    // Elements have a few ports; one with very many is a fault, and must not be copied each time.
     if (list === undefined) this.portsOf[place] = [id];
-    else list.push(id);
+    else if (list.length < 8) this.portsOf[place] = list.concat(id);
+    else (list as PortId[]).push(id);
   }
 
   private storeyOf(record: number): StoreyId | null {
@@ -137,11 +141,12 @@ class FactsReader {
     const ofType = type === null ? noReadings : type.readings;
     const witnessed = judged(readings.ofElement(place), ofType, readings.ofPorts(record), kind);
     const { sizes } = witnessed;
-    addDrawnSizes(sizes, drawn);
+    const { drawnSizes } = this;
+    drawnSizes.addTo(sizes, drawn);
     if (carriesSize.has(kind)) {
-      if (type !== null && type.name !== null) addNamedSize(sizes, claims.of(type.name, true), 'type name');
-      if (objectType !== null) addNamedSize(sizes, claims.of(objectType, true), 'ObjectType');
-      if (name !== null) addNamedSize(sizes, claims.of(name, false), 'Name');
+      if (type !== null && type.name !== null) addNamedSize(sizes, claims.of(type.name, true, 'type name'));
+      if (objectType !== null) addNamedSize(sizes, claims.of(objectType, true, 'ObjectType'));
+      if (name !== null) addNamedSize(sizes, claims.of(name, false, 'Name'));
     }
     const typeRecord = type === null ? -1 : type.record;
     return {
@@ -168,7 +173,8 @@ class FactsReader {
       origin: drawn.origin,
       centreLine: drawn.centreLine,
       box: drawn.box,
-      sizes,
+      // As long as it must be: there are many of these, and all are kept.
+      sizes: sizes.slice(),
       slopes: witnessed.slopes,
       statedLength: witnessed.statedLength,
       properties: witnessed.properties,
