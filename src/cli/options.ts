@@ -11,7 +11,8 @@ export interface ModelOptions {
   readonly quiet?: boolean;
 }
 
-export const modelArgument = 'IFC file (.ifc, .ifc.gz, .ifczip), or - for standard input';
+export const modelArgument =
+  'IFC file (.ifc, .ifc.gz, .ifczip), or - for standard input; several are read as one building';
 
 /** Made anew for each verb: commander keeps state in them. */
 export const modelOptions = (): Option[] => [

@@ -1,7 +1,7 @@
 import { lstat, realpath, stat } from 'node:fs/promises';
 import { basename, dirname, join, resolve } from 'node:path';
 import { InputError } from '../findings/input-error.ts';
-import { type FileIdentity, identityOf } from './read-input.ts';
+import { type FileIdentity, identityOf, isSameFile } from './read-input.ts';
 import { reasonOf, systemCode } from './system-errors.ts';
 
 export interface OutputPlace {
@@ -12,10 +12,14 @@ export interface OutputPlace {
 }
 
 /**
- * Where an output may go. Refused (exit 2): the input, under this or any other name, unless `inPlace`; and `-`.
+ * Where an output may go. Refused (exit 2): an input, under this or any other name, unless `inPlace`; and `-`.
  * Refused (exit 3): a folder, a device, a link that leads nowhere, a folder that is not there.
  */
-export async function outputPlace(out: string, input: FileIdentity | null, inPlace: boolean): Promise<OutputPlace> {
+export async function outputPlace(
+  out: string,
+  inputs: readonly { readonly identity: FileIdentity | null }[],
+  inPlace: boolean,
+): Promise<OutputPlace> {
   if (out === '-' || out === '')
     throw new InputError(out, 'a file name is needed: the output is written whole or not at all', { exit: 2 });
   const path = await followed(out);
@@ -23,8 +27,7 @@ export async function outputPlace(out: string, input: FileIdentity | null, inPla
   if (found === null) return { path, mode: null };
   if (found.isDirectory()) throw new InputError(out, 'cannot be written: it is a folder');
   if (!found.isFile()) throw new InputError(out, 'cannot be written: it is a pipe, socket or device');
-  const { device, inode } = identityOf(found);
-  if (!inPlace && input !== null && input.device === device && input.inode === inode)
+  if (!inPlace && inputs.some(({ identity }) => isSameFile(identity, identityOf(found))))
     throw new InputError(out, 'is the input itself; give another name, or --in-place to replace it', { exit: 2 });
   return { path, mode: Number(found.mode & 0o777n) };
 }

@@ -38,6 +38,23 @@ export async function readInput(path: string, stdin: NodeJS.ReadStream = process
   }
 }
 
+/** The files of one building, in the order given. One named twice, by whatever path, is wrong usage. */
+export async function readInputs(paths: readonly string[]): Promise<InputFile[]> {
+  if (paths.filter((path) => path === '-').length > 1)
+    throw new InputError('-', 'standard input can be one of the files, not several', { exit: 2 });
+  const inputs: InputFile[] = [];
+  for (const path of paths) {
+    const input = await readInput(path);
+    if (inputs.some(({ identity }) => isSameFile(identity, input.identity)))
+      throw new InputError(path, 'is named twice; name each file of the building once', { exit: 2 });
+    inputs.push(input);
+  }
+  return inputs;
+}
+
+export const isSameFile = (a: FileIdentity | null, b: FileIdentity | null): boolean =>
+  a !== null && b !== null && a.device === b.device && a.inode === b.inode;
+
 /** A UTF-8 text file (answers, tables), a byte order mark taken off. */
 export async function readText(path: string): Promise<string> {
   const { bytes } = await readInput(path);

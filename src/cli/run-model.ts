@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto';
-import { plumbingCode } from '../codes/index.ts';
+import { type CodeSources, plumbingCode } from '../codes/index.ts';
 import { InputError } from '../findings/input-error.ts';
 import { lineNumber } from '../ifc/lines/line-index.ts';
 import { modelOf, type OpenedFile, openFiles } from '../ifc/open.ts';
@@ -16,12 +16,13 @@ import { readPipeDimensions } from '../tables/read-pipe-dimensions.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
 import type { ModelOptions } from './options.ts';
 import { programVersion } from './program-version.ts';
-import { type InputFile, readInput, readText } from './read-input.ts';
+import { type InputFile, readInputs, readText } from './read-input.ts';
 import { localTables, ownTables } from './tables-on-disk.ts';
 import { complain } from './terminal.ts';
 
 export interface ModelRun<P> {
-  readonly file: OpenedFile;
+  /** In the order given; the model counts its files alike. */
+  readonly files: readonly OpenedFile[];
   readonly model: Model;
   readonly outcome: Outcome;
   readonly result: Result;
@@ -32,50 +33,61 @@ export interface ModelRun<P> {
 }
 
 /**
- * Everything from a path and options to a result. `before` sees the input ahead of the long part: a wrong output place
- * is said at once. The code, its tables and the answers are read first for the same reason.
+ * Everything from the paths of one building's files and options to a result. `before` sees the inputs ahead of the long
+ * part: a wrong output place is said at once. The code, its tables and the answers are read first for the same reason.
  */
 export async function runModel<P>(
-  path: string,
+  paths: readonly string[],
   options: ModelOptions,
-  before: (input: InputFile) => P | Promise<P> = () => undefined as P,
+  before: (inputs: readonly InputFile[]) => P | Promise<P> = () => undefined as P,
 ): Promise<ModelRun<P>> {
   const said = await answersOf(options);
-  const tables = ownTables();
-  const local = options.tables === undefined ? {} : { local: localTables(options.tables) };
-  const sources = { tables, dimensions: readPipeDimensions(tables), ...local };
+  const sources = sourcesOf(options);
   const code = plumbingCode(options.code, sources, said.settings, options.answers ?? 'answers');
-  const input = await readInput(path);
-  const place = await before(input);
-  const file = opened(input);
-  const model = modelOf([file]);
+  const inputs = await readInputs(paths);
+  const place = await before(inputs);
+  const files = opened(inputs);
+  const model = modelOf(files);
   const answers = matchAnswers(said, model, code.series, options.answers ?? 'answers');
-  const outcome = run(model, code, answers, readNamesTable(tables));
+  const outcome = run(model, code, answers, readNamesTable(sources.tables));
   const result = resultOf(outcome, programVersion());
   if (options.json === true && options.quiet !== true) warn(result);
   const sizes = code.series.sizes.filter(({ label }) => !code.omitSizes.has(label));
-  return { file, model, outcome, result, sizes: sizes.map(({ label, dn }) => ({ label, dn })), place };
+  return { files, model, outcome, result, sizes: sizes.map(({ label, dn }) => ({ label, dn })), place };
 }
 
 export const sha256 = (bytes: Uint8Array): Uint8Array => createHash('sha256').update(bytes).digest();
 
-const answersOf = async ({ answers }: ModelOptions): Promise<Answers> =>
+/** Our tables, and those the user lays over them. */
+export function sourcesOf(options: ModelOptions): CodeSources {
+  const tables = ownTables();
+  const local = options.tables === undefined ? {} : { local: localTables(options.tables) };
+  return { tables, dimensions: readPipeDimensions(tables), ...local };
+}
+
+export const answersOf = async ({ answers }: ModelOptions): Promise<Answers> =>
   answers === undefined ? noAnswers : readAnswers(await readText(answers), answers);
 
-/** The file with its lines indexed. Its digest leaves out what an earlier run of ours wrote into it. */
-function opened({ name, bytes }: InputFile): OpenedFile {
-  const [file] = openFiles([{ name, bytes }], () => '');
-  if (file === undefined) throw new Error('one file in, none out');
-  const { index } = file;
-  const { cutOff } = index.damage;
-  if (cutOff !== null) {
-    const line = lineNumber(index.bytes, cutOff.offset);
-    const where = `it ends ${cutOff.where} (line ${line}, byte ${cutOff.offset})`;
-    throw new InputError(file.name, `the file is cut off: ${where}; copy or export it again`);
+/** The files with their lines indexed. A digest leaves out what an earlier run of ours wrote into its file. */
+export function opened(inputs: readonly InputFile[]): OpenedFile[] {
+  const files = openFiles(inputs, () => '').map((file) => {
+    const { index } = file;
+    const { cutOff } = index.damage;
+    if (cutOff !== null) {
+      const line = lineNumber(index.bytes, cutOff.offset);
+      const where = `it ends ${cutOff.where} (line ${line}, byte ${cutOff.offset})`;
+      throw new InputError(file.name, `the file is cut off: ${where}; copy or export it again`);
+    }
+    const digest = createHash('sha256');
+    for (const piece of withoutOurLines(index, sha256)) digest.update(piece);
+    return { ...file, sha256: digest.digest('hex') };
+  });
+  for (const [place, { name, sha256: own }] of files.entries()) {
+    const twin = files.find((other, at) => at < place && other.sha256 === own);
+    if (twin !== undefined)
+      throw new InputError(name, `is the same model as ${twin.name}; name each file of the building once`, { exit: 2 });
   }
-  const digest = createHash('sha256');
-  for (const piece of withoutOurLines(index, sha256)) digest.update(piece);
-  return { ...file, sha256: digest.digest('hex') };
+  return files;
 }
 
 /** In text these stand on the first lines; beside JSON they would go unseen. */

@@ -24,7 +24,8 @@ export function pageHtml(data: PageData, { js, css }: PageBundle): string {
     "base-uri 'none'",
     "form-action 'none'",
   ].join('; ');
-  const title = escaped(`${data.result.model.file} · Drainwright`);
+  const { model, models } = data.result;
+  const title = escaped(`${(models ?? [model]).map(({ file }) => file).join(', ')} · Drainwright`);
   return `<!doctype html>
 <html lang="en">
 <head>

@@ -91,6 +91,7 @@ function modelProperties(
     Code: label(code.id),
     Edition: label(code.edition),
     InputSha256: label(sha256),
+    InputFiles: text((models ?? []).map((one) => `${one.file} ${one.sha256}`).join('; ')),
     Errors: integer(count('error')),
     Warnings: integer(count('warning')),
     Undersized: integer(pipes.filter(({ verdict }) => verdict === 'undersized').length),

@@ -61,6 +61,7 @@ export type FindingCode =
   | 'size-contradicted'
   | 'kind-contradicted'
   | 'group-not-applied'
+  | 'files-apart'
   | 'file-damaged'
   | 'text-damaged';
 
@@ -150,6 +151,7 @@ export const severityOf: Readonly<Record<FindingCode, Severity>> = {
   'suds-zone': 'warning',
   'fixture-unconnected': 'error',
   'no-sewer-end': 'error',
+  'files-apart': 'error',
 };
 
 export function finding(code: FindingCode, about: readonly number[], facts: Facts, clause?: string): Finding {

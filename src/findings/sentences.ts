@@ -236,6 +236,8 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
   'doubled-element': (f) => `${first(f)} stands twice at one place; one is used.`,
   'group-not-applied': (f) =>
     `${text(f, 'fixtures')} fixtures may form bathroom groups, but the model puts them in no room: their loads are added one by one${f.clause}.`,
+  'files-apart': (f) =>
+    `${text(f, 'file')} lies ${f.length(num(f, 'distanceM'))} from ${text(f, 'from')}: the two count from different origins, so nothing of ${text(f, 'file')} is joined. Export both with the same origin.`,
   'file-damaged': (f) =>
     `${text(f, 'file')} is damaged: ${plain(f.facts.problem)}, ${text(f, 'count')} times, first at line ${text(f, 'line')}.`,
   'text-damaged': (f) =>

@@ -38,6 +38,8 @@ export interface SourceFile {
   readonly lengthUnit: { readonly name: string; readonly metres: number };
   /** Plain sentences on damage and oddities that concern the whole file (cut off, pre-release schema, bad bytes). */
   readonly remarks: readonly string[];
+  /** Of several files: its coordinates lie elsewhere than the building, so that nothing of it takes part. */
+  readonly isApart?: boolean;
 }
 
 /**

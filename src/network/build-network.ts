@@ -39,9 +39,11 @@ export function buildNetwork(
 ): WithFindings<Network> {
   const maxGap = options.maxGap ?? null;
   const reasons = model.elements.map((element) =>
-    isAnsweredOut(element, model, options.leaveOut ?? [])
-      ? 'answer'
-      : leftOutReason(element, identities[element.id]!, model),
+    model.files[element.file]?.isApart === true
+      ? 'file apart'
+      : isAnsweredOut(element, model, options.leaveOut ?? [])
+        ? 'answer'
+        : leftOutReason(element, identities[element.id]!, model),
   );
   const byPorts = misfiledByPorts(model, identities, reasons);
   let joining = joinAll(model, identities, without(reasons, byPorts), maxGap);
@@ -110,7 +112,8 @@ function misfiledPipes(
   { reasons, piping, welds, reach }: ReturnType<typeof joinAll>,
 ): readonly ElementId[] {
   const suspects = reasons.map(
-    (reason, id) => reason !== null && reason !== 'answer' && identities[id]!.part === 'pipe',
+    (reason, id) =>
+      reason !== null && reason !== 'answer' && reason !== 'file apart' && identities[id]!.part === 'pipe',
   );
   return misfiledByPlace(pipingOf(model, identities, suspects).pipes, piping, welds, reach);
 }

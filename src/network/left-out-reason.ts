@@ -15,6 +15,7 @@ export type LeftOutReason =
   | 'equipment'
   | 'other system'
   | 'answer'
+  | 'file apart'
   | 'double'
   | 'no drainage'
   | 'unknown terminal';

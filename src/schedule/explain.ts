@@ -8,6 +8,8 @@ export interface Explanation {
   readonly format: 'drainwright-explain';
   readonly version: 1;
   readonly model: Result['model'];
+  /** Set when several files were read as one building. */
+  readonly models?: readonly Result['model'][];
   readonly code: Result['code'];
   readonly pipe?: ResultPipe;
   readonly fixture?: ResultFixture;
@@ -25,8 +27,14 @@ export interface NextSmaller {
 
 /** `sizes` are those the code offers, smallest first. */
 export function explain(result: Result, found: Found, sizes: readonly SizeLabel[]): Explanation {
-  const { model, code, caution } = result;
-  const head = { format: 'drainwright-explain', version: 1, model, code } as const;
+  const { model, models, code, caution } = result;
+  const head = {
+    format: 'drainwright-explain',
+    version: 1,
+    model,
+    ...(models === undefined ? {} : { models }),
+    code,
+  } as const;
   if (found.kind === 'fixture') {
     return {
       ...head,

@@ -16,9 +16,11 @@ export function loadText({ least, most }: LoadRange, unit: string): string {
 export const unitsText = (value: number, unit: string): string =>
   `${decimal(value, 2)} ${value === 1 ? unit.replace(/units$/, 'unit') : unit}`;
 
-/** Metres as a person reads them: millimetres below one metre. */
-export const lengthText = (metres: number): string =>
-  Math.abs(metres) < 1 ? `${decimal(metres * 1000, 0)} mm` : `${decimal(metres, 2)} m`;
+/** Metres as a person reads them: millimetres below one metre, kilometres where no building is so long. */
+export function lengthText(metres: number): string {
+  if (Math.abs(metres) >= 10_000) return `${decimal(metres / 1000, 1)} km`;
+  return Math.abs(metres) < 1 ? `${decimal(metres * 1000, 0)} mm` : `${decimal(metres, 2)} m`;
+}
 
 /** `2 % (1:50)`; `level` for zero. */
 export function slopeText(slope: number): string {

@@ -12,8 +12,8 @@ export interface WrittenFile {
   readonly sha256: string;
 }
 
-/** What `size` tells: the undersized pipes, the sums, and what was written where. */
-export function sizeText(result: Result, file: WrittenFile): TextLine[] {
+/** What `size` tells: the undersized pipes, the sums, and what was written where, a file for each that owns something. */
+export function sizeText(result: Result, files: readonly WrittenFile[]): TextLine[] {
   const { pipes, fixtures } = result;
   const sets = `property sets on ${counted(pipes.length, 'pipe')} and ${counted(fixtures.length, 'fixture')}`;
   return [
@@ -21,7 +21,10 @@ export function sizeText(result: Result, file: WrittenFile): TextLine[] {
     ...undersizedText(result),
     blank,
     ...sumsText(result),
-    ...paragraph(`Written: ${writtenText(file)}; ${sets}.`, '', 'good'),
+    ...files.flatMap((file, place) => {
+      const isLast = place === files.length - 1;
+      return paragraph(`Written: ${writtenText(file)}${isLast ? `; ${sets}` : ''}.`, '', 'good');
+    }),
     ...caution(result),
   ];
 }

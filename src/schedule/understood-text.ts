@@ -41,9 +41,11 @@ export function understoodText(result: Result): TextLine[] {
 }
 
 const remarksText = ({ model, models }: Result): TextLine[] =>
-  (models ?? [model])
-    .flatMap(({ remarks }) => remarks ?? [])
-    .flatMap((remark) => paragraph(shownText(remark), row('File'), 'warning'));
+  (models ?? [model]).flatMap(({ file, remarks }) =>
+    (remarks ?? []).flatMap((remark) =>
+      paragraph(`${models === undefined ? '' : `${shownText(file)}: `}${shownText(remark)}`, row('File'), 'warning'),
+    ),
+  );
 
 function notPlaced({ unresolved }: Result): TextLine[] {
   if (unresolved.length === 0) return [];
@@ -54,19 +56,28 @@ function notPlaced({ unresolved }: Result): TextLine[] {
 /** No pipe and no fixture with a drain: there is nothing to size. */
 export const isEmpty = ({ fixtures, pipes }: Result): boolean => fixtures.length + pipes.length === 0;
 
-/** File, schema, unit, code; a model without drainage says so here, on the first line. */
+/** File, schema, unit, code; a model without drainage says so here, on the first line. Of several files each has a line. */
 export function titleText(result: Result): TextLine[] {
   const { model, models, code, counts } = result;
-  const files = listed((models ?? [model]).map(({ file }) => shownText(file)));
-  const about = `${shownText(model.schema)}, ${shownText(model.lengthUnit).toLowerCase()}; ${code.title} ${code.edition} (${code.id})`;
   const local = code.localTables === undefined ? '' : `, with local tables ${listed(code.localTables.map(shownText))}`;
-  if (!isEmpty(result)) return heading(`${files}: ${about}${local}`);
+  const book = `${code.title} ${code.edition} (${code.id})${local}`;
+  const about = models === undefined ? `${writtenIn(model)}; ${book}` : book;
+  const name = models === undefined ? shownText(model.file) : `${models.length} files as one building`;
+  const files = (models ?? []).flatMap((one) =>
+    paragraph(`${shownText(one.file)}: ${writtenIn(one)}; SHA-256 ${one.sha256}`, row('File')),
+  );
+  if (!isEmpty(result)) return [...heading(`${name}: ${about}`), ...files];
   const dry = counts.fixtures === 0 ? '' : `; ${counted(counts.fixtures, 'fixture')}, but no drain at any`;
+  const where = models === undefined ? 'in this model' : 'in them';
   return [
-    ...heading(`${files}: no sanitary drainage in this model (${counted(counts.elements, 'element')} read${dry})`),
-    ...paragraph(`${about}${local}`),
+    ...heading(`${name}: no sanitary drainage ${where} (${counted(counts.elements, 'element')} read${dry})`),
+    ...files,
+    ...paragraph(about),
   ];
 }
+
+const writtenIn = ({ schema, lengthUnit }: Result['model']): string =>
+  `${shownText(schema)}, ${shownText(lengthUnit).toLowerCase()}`;
 
 /** The label that stands before a line of what was understood. */
 export const row = (label: string): string => `  ${padded(label, 11)} `;

@@ -30,7 +30,7 @@ describe(`${models.length} models${missing}`, () => {
 
   for (const { name, path } of models) {
     test(name, async () => {
-      const { result, model, outcome, sizes } = await runModel(path, options);
+      const { result, model, outcome, sizes } = await runModel([path], options);
       expect(faults('result', result)).toEqual([]);
       expect(faults('result', leanResult(result))).toEqual([]);
 
@@ -53,24 +53,24 @@ describe(`${models.length} models${missing}`, () => {
     });
 
     test(`${name}, sized: every byte stays, twice is once, and a packed copy holds the same`, async () => {
-      const run = await runModel(path, options);
-      const once = Buffer.concat(sizedIfc(run, 'out.ifc'));
-      const original = Buffer.from(run.file.index.bytes);
+      const run = await runModel([path], options);
+      const once = Buffer.concat(sizedIfc(run, run.files[0]!, 'out.ifc'));
+      const original = Buffer.from(run.files[0]!.index.bytes);
       expect(Buffer.concat(withoutOurLines(indexLines(new Uint8Array(once)), sha256)).equals(original)).toBe(true);
       expect(run.result.model.sha256).toBe(createHash('sha256').update(original).digest('hex'));
 
       // The name stands in nothing that is written, so that a renamed copy is the same copy.
       const copy = join(scratch(), 'copy.ifc');
       writeFileSync(copy, once);
-      const again = await runModel(copy, options);
+      const again = await runModel([copy], options);
       expect(again.result.model.sha256).toBe(run.result.model.sha256);
       expect(again.result.pipes).toEqual(run.result.pipes);
-      expect(Buffer.concat(sizedIfc(again, 'out.ifc')).equals(once)).toBe(true);
+      expect(Buffer.concat(sizedIfc(again, again.files[0]!, 'out.ifc')).equals(once)).toBe(true);
 
       for (const out of ['out.ifc.gz', 'out.ifczip']) {
         const packed = join(scratch(), out);
-        writeFileSync(packed, Buffer.concat(sizedIfc(run, out)));
-        const { name: inside, index } = (await runModel(packed, options)).file;
+        writeFileSync(packed, Buffer.concat(sizedIfc(run, run.files[0]!, out)));
+        const { name: inside, index } = (await runModel([packed], options)).files[0]!;
         expect(inside).toBe('out.ifc');
         expect(Buffer.from(index.bytes).equals(once)).toBe(true);
       }

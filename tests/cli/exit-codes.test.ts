@@ -65,7 +65,7 @@ describe('2: wrong usage', () => {
     ['no verb', [], 'Usage:'],
     ['an unknown verb', ['paint', wetVented], 'unknown command'],
     ['no model', ['check'], 'missing required argument'],
-    ['too many models', ['check', wetVented, wetVented], 'too many arguments'],
+    ['a model named twice', ['check', wetVented, wetVented], 'named twice'],
     ['an unknown option', ['check', wetVented, '--colour'], 'unknown option'],
     ['an unknown code', ['check', wetVented, '--code', 'moon-2020'], 'npc-2020'],
     ['an unknown edition', ['codes', 'npc-1995'], 'npc-2020'],

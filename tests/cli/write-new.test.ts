@@ -24,7 +24,7 @@ const identity = async (path: string): Promise<FileIdentity | null> => (await re
 test('writes all pieces, tells bytes and digest, leaves nothing else behind', async () => {
   const folder = scratch();
   const out = join(folder, 'out.ifc');
-  const written = await writeNew(await outputPlace(out, null, false), [text('one '), text(''), text('two')], 'out.ifc');
+  const written = await writeNew(await outputPlace(out, [], false), [text('one '), text(''), text('two')], 'out.ifc');
   expect(readFileSync(out, 'utf8')).toBe('one two');
   expect(written).toEqual({ path: 'out.ifc', bytes: 7, sha256: createHash('sha256').update('one two').digest('hex') });
   expect(readdirSync(folder)).toEqual(['out.ifc']);
@@ -34,7 +34,7 @@ test('replaces an old file and keeps its permissions', async () => {
   const out = join(scratch(), 'out.ifc');
   writeFileSync(out, 'old');
   chmodSync(out, 0o640);
-  await writeNew(await outputPlace(out, null, false), [text('new')], out);
+  await writeNew(await outputPlace(out, [], false), [text('new')], out);
   expect(readFileSync(out, 'utf8')).toBe('new');
   expect(statSync(out).mode & 0o777).toBe(0o640);
 });
@@ -43,7 +43,7 @@ test('a failure in the middle leaves the old file and no temporary one', async (
   const folder = scratch();
   const out = join(folder, 'out.ifc');
   writeFileSync(out, 'old');
-  const place = await outputPlace(out, null, false);
+  const place = await outputPlace(out, [], false);
   function* broken(): Generator<Uint8Array> {
     yield text('half');
     throw Object.assign(new Error('ENOSPC: no space left on device'), { code: 'ENOSPC' });
@@ -59,7 +59,7 @@ test('what a killed run left is taken away by the next, what a living one has is
   const dead = join(folder, '.out.ifc.999999999.drainwright-tmp');
   const living = join(folder, `.out.ifc.${process.ppid}.drainwright-tmp`);
   for (const path of [dead, living]) writeFileSync(path, 'half');
-  await writeNew(await outputPlace(out, null, false), [text('new')], out);
+  await writeNew(await outputPlace(out, [], false), [text('new')], out);
   expect(existsSync(dead)).toBe(false);
   expect(existsSync(living)).toBe(true);
 });
@@ -97,8 +97,10 @@ describe('the input is refused as output, whatever it is called', () => {
       const input = join(folder, 'hall.ifc');
       writeFileSync(input, 'model');
       const out = other(folder);
-      await expect(outputPlace(out, await identity(input), false)).rejects.toMatchObject({ exit: 2 });
-      await expect(outputPlace(out, await identity(input), true)).resolves.toMatchObject({ mode: expect.any(Number) });
+      await expect(outputPlace(out, [{ identity: await identity(input) }], false)).rejects.toMatchObject({ exit: 2 });
+      await expect(outputPlace(out, [{ identity: await identity(input) }], true)).resolves.toMatchObject({
+        mode: expect.any(Number),
+      });
     });
   }
 });
@@ -115,7 +117,7 @@ test('a place that cannot be written is said with the reason', async () => {
     ['-', 'a file name is needed', 2],
   ];
   for (const [out, says, exit] of cases) {
-    const refused = outputPlace(out, null, false);
+    const refused = outputPlace(out, [], false);
     await expect(refused).rejects.toThrow(says);
     await expect(refused).rejects.toMatchObject({ exit });
   }
@@ -130,7 +132,7 @@ describe('killed at any moment', () => {
     const { outputPlace } = await import(${JSON.stringify(join(dist, 'output-place.js'))});
     const piece = new Uint8Array(1 << 16).fill(78);
     function* pieces() { for (let i = 0; i < 384; i++) yield piece; }
-    const place = await outputPlace(${JSON.stringify(out)}, null, false);
+    const place = await outputPlace(${JSON.stringify(out)}, [], false);
     process.send('writing');
     await writeNew(place, pieces(), 'out');
   `;

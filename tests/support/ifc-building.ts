@@ -4,6 +4,7 @@ import { type Axes, type IfcSheet, placed, point } from './ifc-sheet.ts';
 import { wallOutline } from './model-of.ts';
 import type { SketchFabric, SketchWall } from './sketch.ts';
 import { type Arg, type Ref, raw, word } from './step-file.ts';
+import type { IfcOptions } from './write-ifc.ts';
 
 /** Where elements hang: their spatial record, its placement, and the placement's origin in the building's frame. */
 export interface Level {
@@ -19,8 +20,12 @@ export interface Building {
   readonly spaces: readonly Ref[];
 }
 
-/** Project, site, building, storeys, spaces. The site is where the model is turned and shifted. */
-export function writeBuilding(sheet: IfcSheet, turn: number, shift: Vec3): Building {
+/** Project, site, building, storeys, and spaces if wanted. The site is where the model is turned and shifted. */
+export function writeBuilding(
+  sheet: IfcSheet,
+  { turn, shift, site = [0, 0, 0] }: Pick<IfcOptions, 'turn' | 'shift' | 'site'>,
+  withSpaces: boolean,
+): Building {
   const { file, sketch, owner, id } = sheet;
   const project = file.add(
     'IFCPROJECT',
@@ -39,9 +44,11 @@ export function writeBuilding(sheet: IfcSheet, turn: number, shift: Vec3): Build
     file.add(keyword, id(...key), owner, name, null, null, placement, ...rest);
   const angle = (turn * Math.PI) / 180;
   const turned: Axes | undefined = turn === 0 ? undefined : { z: [0, 0, 1], x: [Math.cos(angle), Math.sin(angle), 0] };
-  const sitePlacement = placed(sheet, null, shift, turned);
+  const [c, s] = [Math.cos(angle), Math.sin(angle)];
+  const origin: Vec3 = [shift[0] + c * site[0] - s * site[1], shift[1] + s * site[0] + c * site[1], shift[2] + site[2]];
+  const sitePlacement = placed(sheet, null, origin, turned);
   const siteRef = root('IFCSITE', ['site'], 'Site', sitePlacement, null, null, element, null, null, null, null, null);
-  const buildingPlacement = placed(sheet, sitePlacement, [0, 0, 0]);
+  const buildingPlacement = placed(sheet, sitePlacement, [0 - site[0], 0 - site[1], 0 - site[2]]);
   const building: Level = {
     ref: root('IFCBUILDING', ['building'], sketch.title, buildingPlacement, null, null, element, null, null, null),
     placement: buildingPlacement,
@@ -69,7 +76,7 @@ export function writeBuilding(sheet: IfcSheet, turn: number, shift: Vec3): Build
     building.ref,
     storeys.map(({ ref }) => ref),
   );
-  const spaces = sketch.spaces.map(({ name, storey, min, max }, index) => {
+  const spaces = (withSpaces ? sketch.spaces : []).map(({ name, storey, min, max }, index) => {
     const level = storey === null ? building : storeys[storey]!;
     const placement = placed(sheet, level.placement, [0, 0, 0]);
     const shape = shapeOf(sheet, prism(sheet, rectangle({ min, max }), null, { min, max }, level.origin), 'SweptSolid');

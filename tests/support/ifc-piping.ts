@@ -34,7 +34,7 @@ export function writePiping(sheet: IfcSheet, draft: Draft, building: Building): 
   writeSystems(sheet, draft, refs, building.building.ref);
   if (sheet.ports) writePorts(sheet, draft, written);
   return draft.elements.map((element, index) => ({
-    level: element.space === null ? levelOf(element).ref : building.spaces[element.space]!,
+    level: (element.space === null ? undefined : building.spaces[element.space]) ?? levelOf(element).ref,
     ref: refs[index]!,
   }));
 }

@@ -1,5 +1,6 @@
 import type { Vec3 } from '../../src/geometry/vector.ts';
 import { draftOf } from './draft.ts';
+import { draftPart } from './draft-part.ts';
 import { writeBuilding, writeFabric } from './ifc-building.ts';
 import { writePiping } from './ifc-piping.ts';
 import { openSheet } from './ifc-sheet.ts';
@@ -18,9 +19,15 @@ export interface IfcOptions {
   readonly turn: number;
   /** Metres. */
   readonly shift: Vec3;
+  /** Metres of the site's own origin: the building stands back by as much, so that its place in the world is the same. */
+  readonly site?: Vec3;
   /** A seed that shuffles and renumbers the lines; null: in the order written. */
   readonly shuffle: number | null;
+  /** What the file holds, where a building comes in several; absent: all. Each has project, site, building, storeys. */
+  readonly holds?: readonly IfcPart[];
 }
+
+export type IfcPart = 'architecture' | 'fixtures' | 'piping';
 
 export const plainIfc: IfcOptions = {
   schema: 'IFC4',
@@ -32,13 +39,19 @@ export const plainIfc: IfcOptions = {
   shuffle: null,
 };
 
+const everything: readonly IfcPart[] = ['architecture', 'fixtures', 'piping'];
+
 /** The sketch as the text of an IFC file, ASCII only; the same for the same sketch and options. */
 export function ifcOf(sketch: Sketch, options: Partial<IfcOptions> = {}): string {
   const settled = { ...plainIfc, ...options };
   const sheet = openSheet(sketch, settled);
-  const building = writeBuilding(sheet, settled.turn, settled.shift);
-  const fabric = writeFabric(sheet, building).map(({ level, ref }) => ({ level: level.ref, ref }));
-  const piping = writePiping(sheet, draftOf(sketch), building);
+  const { holds = everything } = settled;
+  const hasArchitecture = holds.includes('architecture');
+  const building = writeBuilding(sheet, settled, hasArchitecture);
+  const fabric = hasArchitecture
+    ? writeFabric(sheet, building).map(({ level, ref }) => ({ level: level.ref, ref }))
+    : [];
+  const piping = writePiping(sheet, draftPart(sketch, draftOf(sketch), holds), building);
   const contained = new Map<number, { readonly level: Ref; readonly refs: Ref[] }>();
   for (const { level, ref } of [...fabric, ...piping]) {
     const known = contained.get(level.ref);

@@ -7,12 +7,12 @@ export function addCheck(program: Command): void {
     .command('check')
     .summary('network, roles, sizes, verdicts and findings of a model')
     .description('Rebuilds the drainage of a model, sizes every drain and vent, and compares with what is drawn.')
-    .argument('<model>', modelArgument)
-    .action(async (model: string, options: ModelOptions) => {
+    .argument('<model...>', modelArgument)
+    .action(async (models: readonly string[], options: ModelOptions) => {
       const { runModel } = await import('../run-model.ts');
       const { printResult } = await import('../print-result.ts');
       const { checkText } = await import('../../schedule/check-text.ts');
-      const { result } = await runModel(model, options);
+      const { result } = await runModel(models, options);
       await printResult(result, options, () => checkText(result));
       if (result.findings.some(({ severity }) => severity === 'error')) process.exitCode = doneWithErrors;
     });

@@ -15,17 +15,19 @@ export function addMend(program: Command): void {
     .description(
       'Finds the cheapest changes after which no error is left: larger pipe, vents added, moved or led to open air, rows read another way, falls, traps; then runs all stages on the changed building.',
     )
-    .argument('<model>', modelArgument)
-    .option('-o, --out <file>', 'a copy with sizes and proposals as property sets; nothing that is drawn moves')
+    .argument('<model...>', modelArgument)
+    .option(
+      '-o, --out <file>',
+      'a copy with sizes and proposals as property sets, of several models a folder; nothing that is drawn moves',
+    )
     .option('--weights <file>', 'JSON file with what changes cost, to compare plans by; printed with the plan')
     .option('--runs <count>', 'how long to search: runs of all stages at most')
-    .action(async (model: string, options: MendOptions) => {
-      const { outputPlace } = await import('../output-place.ts');
+    .action(async (models: readonly string[], options: MendOptions) => {
       const { readText } = await import('../read-input.ts');
       const { runModel } = await import('../run-model.ts');
       const { printJson } = await import('../print-result.ts');
       const { printLines } = await import('../terminal.ts');
-      const { writeNew } = await import('../write-new.ts');
+      const { planCopies, writeCopies } = await import('../sized-copies.ts');
       const { mendedIfc } = await import('../sized-ifc.ts');
       const { mendResult } = await import('../../schedule/mend-result.ts');
       const { mendText } = await import('../../schedule/mend-text.ts');
@@ -34,11 +36,12 @@ export function addMend(program: Command): void {
       const { out, weights: file } = options;
       const weights = file === undefined ? standardWeights : readWeights(await readText(file), file);
       const runs = options.runs === undefined ? usualRuns : runsOf(options.runs);
-      const run = await runModel(model, options, (input) =>
-        out === undefined ? null : outputPlace(out, input.identity, false),
+      const run = await runModel(models, options, (inputs) =>
+        out === undefined ? null : planCopies(models, inputs, { out }),
       );
       const plan = mendResult(mend(run.outcome, weights, runs), run.result);
-      if (run.place !== null && out !== undefined) await writeNew(run.place, mendedIfc(run, plan, out), out);
+      const { place } = run;
+      if (place !== null) await writeCopies({ ...run, place }, (file, path) => mendedIfc(run, plan, file, path));
       if (options.json === true) await printJson({ ...plan });
       else await printLines(mendText(plan, run.result));
     });

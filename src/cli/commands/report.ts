@@ -12,9 +12,9 @@ export function addReport(program: Command): void {
     .description(
       'Writes a report of a model. The ending of the file decides: .csv is the take-off (pipes, fittings, cleanouts), .json the whole result.',
     )
-    .argument('<model>', modelArgument)
+    .argument('<model...>', modelArgument)
     .requiredOption('-o, --out <file>', 'the report to write')
-    .action(async (model: string, options: ReportOptions) => {
+    .action(async (models: readonly string[], options: ReportOptions) => {
       const { reportFor } = await import('../report-of.ts');
       const { outputPlace } = await import('../output-place.ts');
       const { runModel } = await import('../run-model.ts');
@@ -22,7 +22,7 @@ export function addReport(program: Command): void {
       const { writeNew } = await import('../write-new.ts');
       const { reportText } = await import('../../schedule/size-text.ts');
       const made = reportFor(options.out);
-      const run = await runModel(model, options, (input) => outputPlace(options.out, input.identity, false));
+      const run = await runModel(models, options, (inputs) => outputPlace(options.out, inputs, false));
       const written = await writeNew(run.place, made(run), options.out);
       await printResult(run.result, options, () => reportText(run.result, written));
     });

@@ -14,28 +14,26 @@ export function addSize(program: Command): void {
     .description(
       'Sizes a model and writes roles, sizes, verdicts and clauses into a copy, as property sets. The input is not touched.',
     )
-    .argument('<model>', modelArgument)
-    .option('-o, --out <file>', 'the copy to write; .ifc.gz and .ifczip are packed')
+    .argument('<model...>', modelArgument)
+    .option('-o, --out <file>', 'the copy to write; .ifc.gz and .ifczip are packed; of several models, the folder')
     .option('--in-place', 'replace the input instead; it stays as it is until the new file is complete')
-    .action(async (model: string, options: SizeOptions) => {
-      const out = outOf(model, options);
-      const { outputPlace } = await import('../output-place.ts');
+    .action(async (models: readonly string[], options: SizeOptions) => {
+      refuseNowhere(models, options);
       const { runModel } = await import('../run-model.ts');
       const { printResult } = await import('../print-result.ts');
+      const { planCopies, writeCopies } = await import('../sized-copies.ts');
       const { sizedIfc } = await import('../sized-ifc.ts');
-      const { writeNew } = await import('../write-new.ts');
       const { sizeText } = await import('../../schedule/size-text.ts');
-      const run = await runModel(model, options, (input) => outputPlace(out, input.identity, options.inPlace === true));
-      const written = await writeNew(run.place, sizedIfc(run, out), out);
+      const run = await runModel(models, options, (inputs) => planCopies(models, inputs, options));
+      const written = await writeCopies(run, (file, out) => sizedIfc(run, file, out));
       await printResult(run.result, options, () => sizeText(run.result, written));
     });
   for (const option of modelOptions()) command.addOption(option);
 }
 
-function outOf(model: string, { out, inPlace }: SizeOptions): string {
-  if (out !== undefined) return out;
+function refuseNowhere(models: readonly string[], { out, inPlace }: SizeOptions): void {
+  if (out !== undefined) return;
   if (inPlace !== true) throw new InputError('size', 'say where the copy goes: -o OUT.ifc, or --in-place', { exit: 2 });
-  if (model === '-')
+  if (models.includes('-'))
     throw new InputError('size', 'standard input cannot be replaced in place: give -o OUT.ifc', { exit: 2 });
-  return model;
 }

@@ -10,9 +10,9 @@ export function addSurvey(program: Command): void {
     .command('survey')
     .summary('what is in a model, what of it can be used, and what to ask the designer')
     .description('Tells what a model holds and what the program can and cannot use of it, before anything is judged.')
-    .argument('<model>', modelArgument)
+    .argument('<model...>', modelArgument)
     .option('--questions <file>', 'write an answers file to fill in, most weighty question first')
-    .action(async (model: string, options: SurveyOptions) => {
+    .action(async (models: readonly string[], options: SurveyOptions) => {
       const { outputPlace } = await import('../output-place.ts');
       const { runModel } = await import('../run-model.ts');
       const { printJson } = await import('../print-result.ts');
@@ -22,8 +22,8 @@ export function addSurvey(program: Command): void {
       const { surveyOf } = await import('../../schedule/survey.ts');
       const { surveyText } = await import('../../schedule/survey-text.ts');
       const { questions: file } = options;
-      const run = await runModel(model, options, (input) =>
-        file === undefined ? null : outputPlace(file, input.identity, false),
+      const run = await runModel(models, options, (inputs) =>
+        file === undefined ? null : outputPlace(file, inputs, false),
       );
       const survey = surveyOf(run.model, run.outcome.identities, run.result);
       if (run.place !== null && file !== undefined) {

@@ -12,16 +12,16 @@ export function addView(program: Command): void {
     .description(
       'Writes one HTML file that shows the drainage in the building, undersized pipes lit, each with its reasons.',
     )
-    .argument('<model>', modelArgument)
+    .argument('<model...>', modelArgument)
     .requiredOption('-o, --out <file>', 'the page to write')
-    .action(async (model: string, options: ViewOptions) => {
+    .action(async (models: readonly string[], options: ViewOptions) => {
       const { outputPlace } = await import('../output-place.ts');
       const { runModel } = await import('../run-model.ts');
       const { printResult } = await import('../print-result.ts');
       const { pageOf } = await import('../page-of.ts');
       const { writeNew } = await import('../write-new.ts');
       const { viewText } = await import('../../schedule/size-text.ts');
-      const run = await runModel(model, options, (input) => outputPlace(options.out, input.identity, false));
+      const run = await runModel(models, options, (inputs) => outputPlace(options.out, inputs, false));
       const written = await writeNew(run.place, [pageOf(run)], options.out);
       await printResult(run.result, options, () => viewText(run.result, written));
     });

@@ -14,11 +14,11 @@ export function addWeigh(program: Command): void {
     .description(
       'Builds each battery of fixtures under every reading in the model’s own geometry, sizes all of them, and lays them side by side.',
     )
-    .argument('<model>', modelArgument)
+    .argument('<model...>', modelArgument)
     .option('--battery <id>', 'only this one, such as battery-2, or the GlobalId of one of its fixtures')
     .option('--prices <file>', 'JSON file with your own prices; quantities alone without it')
     .option('--picture <file>', 'write a cut through the wall under each reading as SVG')
-    .action(async (model: string, options: WeighOptions) => {
+    .action(async (models: readonly string[], options: WeighOptions) => {
       const { outputPlace } = await import('../output-place.ts');
       const { runModel } = await import('../run-model.ts');
       const { readText } = await import('../read-input.ts');
@@ -33,8 +33,8 @@ export function addWeigh(program: Command): void {
       const { weighBattery } = await import('../../study/weigh.ts');
       const priceFile = options.prices === undefined ? null : await readText(options.prices);
       const { picture } = options;
-      const { outcome, result, place } = await runModel(model, options, (input) =>
-        picture === undefined ? null : outputPlace(picture, input.identity, false),
+      const { outcome, result, place } = await runModel(models, options, (inputs) =>
+        picture === undefined ? null : outputPlace(picture, inputs, false),
       );
       const prices = priceFile === null ? null : readPrices(priceFile, options.prices ?? '', outcome.code.series);
       const chosen = batteriesNamed(outcome, result, options.battery);

@@ -11,8 +11,12 @@ export interface JoinedStoreys {
 /** Storeys of different files whose floors are nearer than this are the same floor. */
 const sameFloor = 0.05;
 
-/** Lowest first, then by GlobalId. A floor that several files model is one storey, the first file's. */
-export function joinStoreys(sources: readonly Source[]): JoinedStoreys {
+/**
+ * Lowest first, then by GlobalId. A floor that several files model is one storey, the first file's. Files that lie
+ * `apart` bring none: their floors are not those of the building.
+ */
+export function joinStoreys(all: readonly Source[], apart: (file: number) => boolean): JoinedStoreys {
+  const sources = all.filter(({ file }) => !apart(file));
   const kept: { readonly file: number; readonly storey: StoreyRecord }[] = [];
   const standsFor = new Map<StoreyRecord, StoreyRecord>();
   for (const { file, spatial } of sources) {
@@ -25,8 +29,11 @@ export function joinStoreys(sources: readonly Source[]): JoinedStoreys {
   }
   kept.sort((a, b) => a.storey.elevation - b.storey.elevation || compare(a.storey.globalId, b.storey.globalId));
   const rank = new Map(kept.map(({ storey }, k) => [storey, k as StoreyId]));
-  const byRecord = sources.map(
-    ({ spatial }) => new Map(spatial.storeys.map((storey) => [storey.record, rank.get(standsFor.get(storey)!)!])),
+  const byRecord = new Map(
+    sources.map(({ file, spatial }) => [
+      file,
+      new Map(spatial.storeys.map((storey) => [storey.record, rank.get(standsFor.get(storey)!)!])),
+    ]),
   );
   return {
     storeys: kept.map(({ file, storey: { globalId, name, elevation } }, k) => ({
@@ -36,7 +43,7 @@ export function joinStoreys(sources: readonly Source[]): JoinedStoreys {
       name,
       elevation,
     })),
-    idOf: (file, record) => byRecord[file]!.get(record) ?? null,
+    idOf: (file, record) => byRecord.get(file)?.get(record) ?? null,
   };
 }
 

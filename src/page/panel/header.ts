@@ -55,7 +55,7 @@ export function header(desk: Desk): { readonly root: HTMLElement; show(state: Pa
     make(
       'div',
       { class: 'title' },
-      make('h1', {}, modelText(shown(result.model.file))),
+      make('h1', {}, modelText((result.models ?? [result.model]).map(({ file }) => shown(file)).join(', '))),
       make(
         'p',
         {},

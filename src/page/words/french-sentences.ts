@@ -163,6 +163,8 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
   'doubled-element': (f) => `${first(f)} se trouve deux fois au même endroit; un seul est retenu.`,
   'group-not-applied': (f) =>
     `${text(f, 'fixtures')} appareils pourraient former des groupes de salle de bains, mais la maquette ne les met dans aucune pièce : leurs charges sont additionnées une à une${f.clause}.`,
+  'files-apart': (f) =>
+    `${text(f, 'file')} est à ${f.length(num(f, 'distanceM'))} de ${text(f, 'from')} : les deux comptent depuis des origines différentes, rien de ${text(f, 'file')} n’est raccordé. Exportez les deux avec la même origine.`,
   'file-damaged': (f) =>
     `${text(f, 'file')} est endommagé : ${text(f, 'problem').replaceAll('-', ' ')}, ${text(f, 'count')} fois, d’abord à la ligne ${text(f, 'line')}.`,
   'text-damaged': (f) =>
