@@ -1,9 +1,12 @@
+import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import type { Reading } from '../codes/use.ts';
 import { planDistance } from '../geometry/vector.ts';
 import { fullId } from '../model/answer-keys.ts';
 import type { FixtureAnswer, PipeAnswer } from '../model/answers.ts';
 import { type FixtureDetail, type FixtureKind, noDetail } from '../model/identity.ts';
 import type { ElementId } from '../model/model.ts';
+import { buildNetwork } from '../network/build-network.ts';
+import { cutAtOutline } from '../network/building-outline.ts';
 import { jointAt, moveElement, type Place } from '../network/change.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import type { Piping } from '../pipeline.ts';
@@ -75,6 +78,16 @@ export function withSlope(
 export function withTrapAt(piping: Piping, trap: ElementId, place: Place): Piping {
   const { network, joint } = jointAt(piping.network, place);
   return { ...piping, network: moveElement(network, trap, joint) };
+}
+
+/** By another code. Where its building sewer begins elsewhere, the network is joined and cut anew. */
+export function withCode(piping: Piping, code: PlumbingCode): Piping {
+  if (code.sewerBegins === piping.code.sewerBegins) return { ...piping, code };
+  const { model, identities, outline, answers } = piping;
+  const { maxGap } = answers.settings;
+  const { leaveOut } = answers;
+  const built = buildNetwork(model, identities, typeof maxGap === 'number' ? { maxGap, leaveOut } : { leaveOut });
+  return { ...piping, code, network: cutAtOutline(outline, identities, built.value, code.sewerBegins) };
 }
 
 /** Metres that the lower end of a pipe comes down, its upper end kept, when it is laid to a fall. */
