@@ -1,3 +1,4 @@
+import { rangesText } from './ranges-text.ts';
 import type { Result, ResultFinding } from './result.ts';
 import { shownText } from './shown-text.ts';
 import { blank, heading, paragraph, type TextLine, type Tone } from './text-line.ts';
@@ -15,6 +16,7 @@ export function checkText(result: Result): TextLine[] {
     ...understoodText(result),
     ...undersizedText(result),
     ...otherErrors(result.findings),
+    ...rangesText(result),
     ...wallFitText(result.findings),
     ...(isEmpty(result) ? [] : [blank]),
     ...foldedText(result.findings, 'warning', 'Warnings'),

@@ -2,6 +2,7 @@ import { demandText } from './demand-text.ts';
 import { type ElementNames, elementNames } from './element-names.ts';
 import type { NextSmaller } from './explain.ts';
 import { decimal, lengthText, limitText, loadText, sizeText, slopeText } from './number-text.ts';
+import { rangeStory } from './ranges-text.ts';
 import type { Result, ResultPipe } from './result.ts';
 import { shownText } from './shown-text.ts';
 import { counted, countedKinds, listed, plainWords, sentence } from './trade-words.ts';
@@ -21,6 +22,7 @@ export function explainPipe(result: Result, pipe: ResultPipe, smaller: NextSmall
       : [`Its battery, ${battery.id}, is read as ${plainWords(battery.reading)}, since ${shownText(battery.why)}.`]),
     ...demands(pipe, unit, names),
     verdict(pipe),
+    ...rangeStory(result, pipe),
     ...smallerSize(smaller, unit, names),
     ...(pipe.provisional
       ? ['The size is provisional: a figure of the code that comes before it could not be read.']

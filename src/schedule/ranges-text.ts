@@ -1,0 +1,76 @@
+import { elementNames } from './element-names.ts';
+import { loadText, sizeText } from './number-text.ts';
+import type { Result, ResultFixture, ResultPipe } from './result.ts';
+import { blank, heading, paragraph, type TextLine } from './text-line.ts';
+import { counted, listed } from './trade-words.ts';
+
+/** Fixtures that may be read more than one way, and put in another load by it. In the order of the result. */
+export const openFixtures = ({ fixtures }: Result): readonly ResultFixture[] =>
+  fixtures.filter(({ kind, load }) => kind === null || load.least !== load.most);
+
+/** The lightest and the heaviest reading ask for different sizes. */
+export const isRange = ({ required }: ResultPipe): boolean =>
+  required !== null && required.least?.label !== required.most?.label;
+
+/** Verdicts that hold however the open fixtures are read, and those that hang on them. Nothing where none is open. */
+export function rangesText(result: Result): TextLine[] {
+  const open = openFixtures(result);
+  if (open.length === 0) return [];
+  const names = elementNames(result);
+  const judged = result.pipes.filter(({ modelled, required }) => modelled !== null && required !== null);
+  const undecided = judged.filter((pipe) => isRange(pipe) && pipe.verdict === 'unknown');
+  const firm = judged.filter(({ verdict }) => verdict !== 'unknown');
+  const count = (verdict: string): number => firm.filter((pipe) => pipe.verdict === verdict).length;
+  const larger = firm.filter((pipe) => isRange(pipe) && pipe.verdict === 'agrees').length;
+  const says = [
+    `${count('undersized')} undersized`,
+    `${count('agrees')} as required${larger === 0 ? '' : ` (${larger} of them more than the lightest reading needs)`}`,
+    `${count('oversized')} oversized`,
+  ];
+  const pipes = undecided.slice(0, mostPipes);
+  return [
+    blank,
+    ...heading(`Open: ${counted(open.length, 'fixture')} may be read more than one way`),
+    ...open
+      .slice(0, mostFixtures)
+      .flatMap((fixture) =>
+        paragraph(`${names.of(fixture.globalId)}: ${loadText(fixture.load, result.code.unit)}`, '  - ', 'warning'),
+      ),
+    ...rest(open.length - mostFixtures, 'more'),
+    ...paragraph(`Either way: ${listed(says)}.`),
+    ...paragraph(
+      undecided.length === 0
+        ? 'No verdict hangs on it.'
+        : `${counted(undecided.length, 'verdict')} ${undecided.length === 1 ? 'hangs' : 'hang'} on it:`,
+    ),
+    ...pipes.flatMap((pipe) =>
+      paragraph(
+        `${names.of(pipe.globalId)}: drawn ${pipe.modelled?.label}, needs ${sizeText(pipe.required)}`,
+        '  - ',
+        'warning',
+      ),
+    ),
+    ...rest(undecided.length - mostPipes, 'more'),
+  ];
+}
+
+const mostFixtures = 4;
+const mostPipes = 8;
+
+const rest = (count: number, words: string): TextLine[] =>
+  count > 0 ? paragraph(`and ${count} ${words}`, '    ', 'quiet') : [];
+
+/** Of one pipe: whether its verdict hangs on fixtures that are open, and how far. Empty where none of them uses it. */
+export function rangeStory(result: Result, pipe: ResultPipe): string[] {
+  const users = new Set([...(pipe.servesWater ?? []), ...(pipe.servesAir ?? [])]);
+  const open = openFixtures(result).filter(({ globalId }) => users.has(globalId));
+  if (open.length === 0) return [];
+  const names = elementNames(result);
+  const who = listed(open.slice(0, mostFixtures).map(({ globalId }) => names.short(globalId)));
+  const what = open.length > mostFixtures ? `${who} and ${open.length - mostFixtures} more` : who;
+  const { required, modelled, verdict } = pipe;
+  if (!isRange(pipe) || required === null) return [`This holds whatever ${what} may be: the size is the same.`];
+  const sizes = `at the lightest reading of ${what} it needs ${required.least?.label ?? 'no size'}, at the heaviest ${required.most?.label ?? 'more than any size holds'}`;
+  if (modelled === null) return [`Its size is open: ${sizes}.`];
+  return [verdict === 'unknown' ? `Its verdict is open: ${sizes}.` : `Its verdict holds either way: ${sizes}.`];
+}
