@@ -33,9 +33,12 @@ export function readings(tools: Tools): ReadingRule[] {
   ];
 }
 
-/** Neither holds and both break equally many: whatever is no bathroom fixture speaks for a circuit vent. */
-export const whenNoneHolds = ({ traps }: BatteryFacts): Reading =>
-  traps.some(({ row }) => partOf(row) === null) ? 'circuit-vent' : 'wet-vent';
+/**
+ * Neither holds and both break equally many: a vent over a drop is drawn for a wet vent; on a level branch whatever is no
+ * bathroom fixture speaks for a circuit vent.
+ */
+export const whenNoneHolds = ({ traps, circuit }: BatteryFacts): Reading =>
+  circuit.vertical === 0 && traps.some(({ row }) => partOf(row) === null) ? 'circuit-vent' : 'wet-vent';
 
 const fromUpstream = ({ open }: BatteryFacts): boolean => open === null;
 
