@@ -8,6 +8,7 @@ const schemaFiles = {
   survey: 'schedule/survey.schema.json',
   explain: 'schedule/explain.schema.json',
   codes: 'schedule/codes.schema.json',
+  versus: 'schedule/versus.schema.json',
   weigh: 'schedule/weigh.schema.json',
   mend: 'schedule/mend.schema.json',
   answers: 'model/answers.schema.json',

@@ -8,7 +8,16 @@ export function addCheck(program: Command): void {
     .summary('network, roles, sizes, verdicts and findings of a model')
     .description('Rebuilds the drainage of a model, sizes every drain and vent, and compares with what is drawn.')
     .argument('<model...>', modelArgument)
-    .action(async (models: readonly string[], options: ModelOptions) => {
+    .option(
+      '--versus <id>',
+      'a second code or edition: lists the pipes whose required size or verdict differs, and why',
+    )
+    .action(async (models: readonly string[], options: ModelOptions & { readonly versus?: string }) => {
+      if (options.versus !== undefined) {
+        const { checkVersus } = await import('../check-versus.ts');
+        process.exitCode = (await checkVersus(models, options, options.versus)) ? doneWithErrors : 0;
+        return;
+      }
       const { runModel } = await import('../run-model.ts');
       const { printResult } = await import('../print-result.ts');
       const { checkText } = await import('../../schedule/check-text.ts');
