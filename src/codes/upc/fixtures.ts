@@ -8,13 +8,23 @@ import { countBowlsOnce } from '../rules/one-trap.ts';
 import { steadyLoadBy } from '../rules/steady-load.ts';
 import type { Tools } from '../tools.ts';
 
-/** Loads of Table 702.1 in the column of the use that the user set, else private to public; assembly is never guessed (R03, R07). */
-export const fixtures = (tools: Tools): FixtureRows =>
-  fixtureRows(tools, {
-    columns: usesOf(tools).map((use) => ({ load: use, outlet: 'trap', facts: { use } })),
-    isSiphonic: (_, kind) => kind === 'water-closet',
-    isEmergency: (key) => key === 'floor-drain-emergency',
-  });
+/**
+ * Loads of Table 702.1 in the column of the use that the user set, else private to public; assembly is never guessed (R03,
+ * R07). An emergency floor drain is printed for public use alone, and is nothing in a home either.
+ */
+export function fixtures(tools: Tools): FixtureRows {
+  const rowsOf = (uses: readonly string[]): FixtureRows =>
+    fixtureRows(tools, {
+      columns: uses.map((use) => ({ load: use, outlet: 'trap', facts: { use } })),
+      isSiphonic: (_, kind) => kind === 'water-closet',
+      isEmergency: (key) => key === 'floor-drain-emergency',
+    });
+  const [own, emergency] = [rowsOf(usesOf(tools)), rowsOf(['public'])];
+  return {
+    rowsFor: (kind, detail) =>
+      (kind === 'floor-drain' && detail.emergency === true ? emergency : own).rowsFor(kind, detail),
+  };
+}
 
 const usesOf = ({ settings }: Tools): readonly string[] =>
   typeof settings.use === 'string' ? [settings.use] : ['private', 'public'];
