@@ -1,4 +1,5 @@
 import type { PropertySetToWrite, PropertyToWrite, ValueToWrite } from '../model/property-set.ts';
+import { answerTexts } from '../schedule/answers-text.ts';
 import { demandText, governing, governingClauses } from '../schedule/demand-text.ts';
 import { elementNames } from '../schedule/element-names.ts';
 import { elementRows } from '../schedule/element-rows.ts';
@@ -79,11 +80,16 @@ function fixtureProperties(fixture: ResultFixture, unit: string, metresPerUnit: 
   });
 }
 
-function modelProperties(
-  { program, code, model, models, findings, pipes, caution }: Result,
-  file: string,
-): PropertyToWrite[] {
+const mostAnswers = 100;
+
+function modelProperties(result: Result, file: string): PropertyToWrite[] {
+  const { program, code, model, models, findings, pipes, caution } = result;
   const sha256 = (models ?? [model]).find((one) => one.file === file)?.sha256 ?? model.sha256;
+  const said = answerTexts(result);
+  const answers = [
+    ...said.slice(0, mostAnswers),
+    ...(said.length > mostAnswers ? [`and ${said.length - mostAnswers} more`] : []),
+  ];
   const count = (severity: string): number => findings.filter((finding) => finding.severity === severity).length;
   return present({
     Program: label(program.name),
@@ -92,6 +98,7 @@ function modelProperties(
     Edition: label(code.edition),
     InputSha256: label(sha256),
     InputFiles: text((models ?? []).map((one) => `${one.file} ${one.sha256}`).join('; ')),
+    Answers: text(answers.join('; ')),
     Errors: integer(count('error')),
     Warnings: integer(count('warning')),
     Undersized: integer(pipes.filter(({ verdict }) => verdict === 'undersized').length),

@@ -8,8 +8,9 @@ const namePrefix = 'name:';
  */
 export function keyMatches(key: string, element: Element): boolean {
   if (!key.startsWith(namePrefix)) return key === element.globalId || (key.includes('#') && key === fullId(element));
-  const name = element.name;
-  return name !== null && wildcardMatches(key.slice(namePrefix.length), name);
+  const pattern = key.slice(namePrefix.length);
+  // `name:*` means every one, those without a name too.
+  return element.name === null ? /^\*+$/.test(pattern) : wildcardMatches(pattern, element.name);
 }
 
 export const fullId = ({ globalId, file, stepId }: Element): string => `${globalId}#${file}.${stepId}`;

@@ -113,8 +113,10 @@ function batteryQuestions({ batteries }: Result): Question[] {
 /** An answer names a battery by its first fixture, which stays the same when others come and go. */
 const batteryKey = ({ fixtures, id }: ResultBattery): string => fixtures[0] ?? id;
 
-function slopeQuestion({ pipes, findings }: Result): Question[] {
-  const about = findings.filter(({ code }) => code === 'slope-unknown').flatMap(({ about: [pipe] }) => pipe ?? []);
+/** One question for all of them, however many: an answer for `name:*` reaches every pipe that has no slope of its own. */
+function slopeQuestion({ pipes, findings, settings }: Result): Question[] {
+  if (settings.assumedSlope !== undefined) return [];
+  const about = findings.filter(({ code }) => code === 'slope-unknown').flatMap((finding) => finding.about);
   const open = new Set(about);
   const weight = pipes.filter(({ globalId }) => open.has(globalId)).length;
   if (weight === 0) return [];
@@ -124,7 +126,7 @@ function slopeQuestion({ pipes, findings }: Result): Question[] {
       ask: `At what slope are level-drawn drains laid (${counted(weight, 'pipe')})? Metres a metre, such as 0.02.`,
       weight,
       choices: [],
-      answer: { part: 'settings', key: 'assumedSlope', field: null },
+      answer: { part: 'pipes', key: 'name:*', field: 'slope' },
     },
   ];
 }

@@ -1,5 +1,6 @@
 import type { Outcome } from '../verdicts/outcome.ts';
 import type { Result } from './result.ts';
+import { resultAnswers } from './result-answers.ts';
 import { battery, joints, systems } from './result-batteries.ts';
 import { counts, elements } from './result-elements.ts';
 import { resultFindings } from './result-findings.ts';
@@ -10,6 +11,7 @@ import { resultPipes } from './result-pipes.ts';
 /** The published result of one run. The same outcome gives the same bytes: every list has a stated order. */
 export function resultOf(outcome: Outcome, version: string): Result {
   const index = resultIndex(outcome);
+  const answered = resultAnswers(outcome);
   const { model, code, answers, shown } = outcome;
   const files = model.files.map((file) => ({
     file: file.name,
@@ -32,6 +34,7 @@ export function resultOf(outcome: Outcome, version: string): Result {
       ...(code.localTables.length === 0 ? {} : { localTables: code.localTables }),
     },
     settings: answers.settings,
+    ...(answered.length === 0 ? {} : { answers: answered }),
     counts: counts(outcome),
     elements: elements(outcome),
     fixtures: resultFixtures(outcome, index),

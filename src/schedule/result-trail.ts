@@ -7,13 +7,17 @@ import { type ResultIndex, roundMetres } from './result-index.ts';
 /** Every demand on a pipe, in the order of the code's rules, and which governs. */
 export function resultTrail(outcome: Outcome, index: ResultIndex, pipe: PipeId): TrailStep[] {
   const { trail, governing } = outcome.shown.sizes[pipe]!;
+  const isAnswered = outcome.paths.slopes[pipe]!.ground === 'answer';
   return trail.map((step) => ({
     rule: step.rule,
     title: outcome.code.ruleTitle(step.rule),
     clause: step.clause,
     table: step.cell === null || step.cell.place.table === 'limits' ? null : step.cell.place.table,
     row: step.cell === null || step.cell.place.table === 'limits' ? null : step.cell.place.row,
-    facts: printedFacts(outcome, index, step.facts),
+    facts: {
+      ...printedFacts(outcome, index, step.facts),
+      ...(isAnswered && typeof step.facts.slope === 'number' ? { slopeAnswered: true } : {}),
+    },
     asks: step.asks === null ? null : index.size(step.asks),
     governs: governing.includes(step),
     trust: step.provisional ? 'provisional' : (step.cell?.trust ?? step.trust),

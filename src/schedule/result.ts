@@ -14,6 +14,8 @@ export interface Result {
     readonly localTables?: readonly string[];
   };
   readonly settings: Readonly<Record<string, unknown>>;
+  /** What the user answered beside the settings, one entry a fact; absent where nothing. */
+  readonly answers?: readonly ResultAnswer[];
   readonly counts: ResultCounts;
   /** By file, then STEP id. */
   readonly elements: readonly ResultElement[];
@@ -26,6 +28,17 @@ export interface Result {
   readonly findings: readonly ResultFinding[];
   readonly unresolved: readonly { readonly globalId: string; readonly stepId: number; readonly reason: string }[];
   readonly caution: string;
+}
+
+export interface ResultAnswer {
+  readonly part: 'sewerEnds' | 'fixtures' | 'pipes' | 'batteries' | 'leaveOut' | 'cleanouts';
+  /** GlobalId, or `name:` pattern, as answered; of `leaveOut` the name of the system. */
+  readonly key: string;
+  /** `kind`, `detail.flush`, `size`, `slope` …; null where the key says it all. */
+  readonly field: string | null;
+  readonly value: string | number | boolean;
+  /** How many elements the key meets. */
+  readonly meets: number;
 }
 
 export interface ResultModel {

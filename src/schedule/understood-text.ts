@@ -1,3 +1,4 @@
+import { answerTexts } from './answers-text.ts';
 import { type ElementNames, elementNames } from './element-names.ts';
 import { lengthText, loadText } from './number-text.ts';
 import type { BrokenCondition, Result, ResultBattery, ResultSystem } from './result.ts';
@@ -17,6 +18,7 @@ export function understoodText(result: Result): TextLine[] {
   return [
     ...titleText(result),
     ...remarksText(result),
+    ...answeredText(result),
     ...paragraph(
       fixtures.length === 0 ? 'none' : `${fixtures.length}: ${countedKinds([...kindOf.values()])}`,
       row('Fixtures'),
@@ -46,6 +48,14 @@ const remarksText = ({ model, models }: Result): TextLine[] =>
       paragraph(`${models === undefined ? '' : `${shownText(file)}: `}${shownText(remark)}`, row('File'), 'warning'),
     ),
   );
+
+function answeredText(result: Result): TextLine[] {
+  const said = answerTexts(result);
+  if (said.length === 0) return [];
+  const more = said.length > mostAnswers ? `; and ${said.length - mostAnswers} more` : '';
+  return paragraph(`${said.slice(0, mostAnswers).join('; ')}${more}`, row('Answered'));
+}
+const mostAnswers = 8;
 
 function notPlaced({ unresolved }: Result): TextLine[] {
   if (unresolved.length === 0) return [];
