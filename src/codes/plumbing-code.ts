@@ -1,3 +1,4 @@
+import type { SpeedLaw } from '../hydraulics/friction.ts';
 import type { FixtureDetail, FixtureKind } from '../model/identity.ts';
 import type { PipeDimensions } from '../tables/pipe-dimensions.ts';
 import type { Cell } from '../tables/table.ts';
@@ -49,6 +50,8 @@ export interface PlumbingCode {
    * code knows no such branches. Where it is there, `PipeUse.reach` is measured.
    */
   readonly shortBranch?: (trap: ShortBranchFacts) => { readonly rule: string; readonly clause: string } | null;
+  /** Bores and friction that the code itself reckons drains with; absent where its tables hold loads. */
+  readonly friction?: Friction;
   /** How drains may come into a stack, where that decides its size; absent where it does not. */
   readonly entries?: EntryRule;
   /** Load of a steady or pumped flow, l/s, or of one that comes and goes; absent where the code keeps flows apart from loads. */
@@ -136,6 +139,14 @@ export interface ShortBranchFacts {
   /** Of the last pipe of the way: what passes it, and the largest turn of a water closet's way through it, degrees. */
   readonly carried: Carried;
   readonly closetTurn: number;
+}
+
+export interface Friction {
+  readonly law: SpeedLaw;
+  /** As people name it: `Colebrook-White, roughness 1 mm`. */
+  readonly name: string;
+  /** Metres; null where the code lists no bore for the size. */
+  readonly bore: (size: NominalSize) => number | null;
 }
 
 export interface EntryRule {

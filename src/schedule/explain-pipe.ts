@@ -1,6 +1,7 @@
 import { demandText } from './demand-text.ts';
 import { type ElementNames, elementNames } from './element-names.ts';
 import type { NextSmaller } from './explain.ts';
+import { hydraulicsText } from './hydraulics-text.ts';
 import { decimal, lengthText, limitText, loadText, sizeText, slopeText } from './number-text.ts';
 import { rangeStory } from './ranges-text.ts';
 import type { Result, ResultPipe } from './result.ts';
@@ -27,6 +28,7 @@ export function explainPipe(result: Result, pipe: ResultPipe, smaller: NextSmall
     ...(pipe.provisional
       ? ['The size is provisional: a figure of the code that comes before it could not be read.']
       : []),
+    ...hydraulicsText(pipe),
     ...sections(pipe),
     ...result.findings
       .filter(({ about, code }) => about[0] === pipe.globalId && code !== 'undersized')

@@ -4,6 +4,7 @@ import type { FixtureId } from '../paths/paths.ts';
 import { unitsOf } from '../units/quantity.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
 import type { PipeState, ResultPipe, Verdict } from './result.ts';
+import { resultHydraulics } from './result-hydraulics.ts';
 import { type ResultIndex, roundMetres } from './result-index.ts';
 import { resultTrail } from './result-trail.ts';
 
@@ -126,8 +127,14 @@ function state(
     verdict,
     ...(reason === null ? {} : { reason }),
     ...(battery === null ? {} : { battery: index.batteryName(battery.facts.id) }),
+    ...hydraulicsOf(outcome, section),
     trail: resultTrail(outcome, index, section),
   };
+}
+
+function hydraulicsOf(outcome: Outcome, section: PipeId): Pick<PipeState, 'hydraulics'> {
+  const hydraulics = resultHydraulics(outcome, section);
+  return hydraulics === null ? {} : { hydraulics };
 }
 
 /** Traps whose air passes each pipe: through wet pipes and up the dry ones; their own arms not. By pipe id. */

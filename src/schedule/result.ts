@@ -150,7 +150,38 @@ export interface PipeState {
   /** Of `unknown`, and what settles it. */
   readonly reason?: string;
   readonly battery?: string;
+  /** Of drains at the size required: physics beside the code's size, as information and never instead of it. */
+  readonly hydraulics?: ResultHydraulics;
   readonly trail: readonly TrailStep[];
+}
+
+export type ResultHydraulics = LevelHydraulics | StackHydraulics;
+
+/** Flows in l/s, speeds in m/s, bore in metres, fill as share of the bore. */
+export interface LevelHydraulics {
+  readonly kind: 'level';
+  readonly bore: number;
+  readonly law: string;
+  readonly slope: number;
+  readonly halfFull: { readonly flow: number; readonly speed: number; readonly cleansItself: boolean };
+  /** At the flow that the code reckons with; null: it would run full. Absent where the code knows loads only. */
+  readonly atFlow?: {
+    readonly flow: number;
+    readonly fill: number;
+    readonly speed: number;
+    readonly cleansItself: boolean;
+  } | null;
+}
+
+/** A stack 7/24 full: what it carries, how fast that falls and after how many metres. */
+export interface StackHydraulics {
+  readonly kind: 'stack';
+  readonly bore: number;
+  readonly flow: number;
+  readonly speed: number;
+  readonly terminalLength: number;
+  /** Share of the stack that the code's own flow fills; absent where the code knows loads only. */
+  readonly share?: number;
 }
 
 export interface ResultPipe extends PipeState {

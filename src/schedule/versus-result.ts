@@ -10,6 +10,8 @@ export interface VersusResult {
   readonly format: 'drainwright-versus';
   readonly version: 1;
   readonly model: Result['model'];
+  /** Set when several files were read as one building. */
+  readonly models?: readonly Result['model'][];
   readonly code: Result['code'];
   readonly versus: Result['code'];
   /** What the user set that only one of the two codes knows: it counted for that one alone. */
@@ -62,6 +64,7 @@ export function versusResult(first: VersusInput, second: VersusInput): VersusRes
     format: 'drainwright-versus',
     version: 1,
     model: first.result.model,
+    ...(first.result.models === undefined ? {} : { models: first.result.models }),
     code: first.result.code,
     versus: second.result.code,
     onlyFor: { code: first.only, versus: second.only },

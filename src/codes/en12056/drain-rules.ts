@@ -1,6 +1,7 @@
 import { flowAtFill } from '../../hydraulics/drain-flow.ts';
 import { colebrookWhite } from '../../hydraulics/friction.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
+import type { Friction } from '../plumbing-code.ts';
 import type { SizingRule, Step } from '../sizing-rule.ts';
 import type { Tools } from '../tools.ts';
 import type { PipeUse } from '../use.ts';
@@ -14,7 +15,7 @@ export function drainRules(tools: Tools, beyond: BeyondTables): SizingRule[] {
   const { family, omit, settings } = tools;
   const { rule } = family;
   const flows = flowOf(tools);
-  const law = colebrookWhite(family.number('roughness', 'length').value, family.number('viscosity', 'factor').value);
+  const { law } = friction(tools);
   const bores = boresOf(tools).filter(({ size }) => !omit.has(size));
   const assumedSlope = typeof settings.assumedSlope === 'number' ? settings.assumedSlope : null;
   const leastSlope = leastDrainSlope(tools);
@@ -67,6 +68,17 @@ export function drainRules(tools: Tools, beyond: BeyondTables): SizingRule[] {
       smaller: before === undefined ? null : { size: before.size, limit: hundredths(before.flow) },
     };
   }
+}
+
+/** The formula of the annex with the least bores of Table 1. */
+export function friction({ family }: Pick<Tools, 'family'>): Friction {
+  const roughness = family.number('roughness', 'length').value;
+  const bores = new Map(boresOf({ family }).map(({ size, bore }) => [size, bore]));
+  return {
+    law: colebrookWhite(roughness, family.number('viscosity', 'factor').value),
+    name: `Colebrook-White, roughness ${roughness * 1000} mm`,
+    bore: (size) => bores.get(size) ?? null,
+  };
 }
 
 const hundredths = (flow: number): number => Math.round(flow * 100) / 100;

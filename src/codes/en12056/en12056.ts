@@ -4,7 +4,7 @@ import type { Tools } from '../tools.ts';
 import type { StackEntry } from '../way.ts';
 import { branchRules } from './branch-rules.ts';
 import { checks } from './checks.ts';
-import { drainRules } from './drain-rules.ts';
+import { drainRules, friction } from './drain-rules.ts';
 import { countOnOneTrap, fixtureRows } from './fixtures.ts';
 import { shortBranch } from './reach.ts';
 import { stackRules } from './stack-rules.ts';
@@ -35,6 +35,7 @@ export function en12056(tools: Tools): CodeRules {
       sweptUpTo: family.number('swept-angle', 'angle').value,
       said: said === 'square' || said === 'swept' ? (said as StackEntry['shape']) : null,
     },
+    friction: friction(tools),
     armLimit: () => null,
     sewerBegins: besideWall,
     stackOffset: Number.POSITIVE_INFINITY,
