@@ -1,8 +1,9 @@
 // The library, name by name: from the bytes of a model to a result, property sets, a sized copy and the page.
 export { plumbingCode } from './codes/index.ts';
 export type { PlumbingCode } from './codes/plumbing-code.ts';
+export type { PageBundle } from './deliver/offline-html.ts';
 export { pageData } from './deliver/page-data.ts';
-export { type PageBundle, pageHtml } from './deliver/page-html.ts';
+export { pageHtml } from './deliver/page-html.ts';
 export { propertySets } from './deliver/property-sets.ts';
 export { InputError } from './findings/input-error.ts';
 export { type ModelInput, modelOf, type OpenedFile, openFiles, readModel } from './ifc/open.ts';

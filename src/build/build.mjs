@@ -35,6 +35,12 @@ const page = await buildPage({ root, dist }).then(
 const main = join(dist, 'cli/main.js');
 if (existsSync(main)) chmodSync(main, 0o755);
 
+// The empty page is published ready made.
+if (page && existsSync(main))
+  spawnSync(process.execPath, [main, 'desk', '-o', join(dist, 'desk.html')], {
+    stdio: ['ignore', 'ignore', 'inherit'],
+  });
+
 const old = `${target}.${process.pid}.old.tmp`;
 if (existsSync(target)) renameSync(target, old);
 renameSync(dist, target);

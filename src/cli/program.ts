@@ -1,6 +1,7 @@
 import { Command } from 'commander';
 import { addCheck } from './commands/check.ts';
 import { addCodes } from './commands/codes.ts';
+import { addDesk } from './commands/desk.ts';
 import { addExplain } from './commands/explain.ts';
 import { addMend } from './commands/mend.ts';
 import { addReport } from './commands/report.ts';
@@ -20,7 +21,18 @@ export function program(): Command {
     .showHelpAfterError('(--help shows what can be asked)')
     .exitOverride()
     .configureHelp({ sortSubcommands: false, helpWidth: 100 });
-  for (const add of [addCheck, addSize, addView, addSurvey, addExplain, addWeigh, addMend, addReport, addCodes])
+  for (const add of [
+    addCheck,
+    addSize,
+    addView,
+    addDesk,
+    addSurvey,
+    addExplain,
+    addWeigh,
+    addMend,
+    addReport,
+    addCodes,
+  ])
     add(command);
   command.addHelpText('after', exitHelp);
   return command;

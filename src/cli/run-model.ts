@@ -1,9 +1,7 @@
 import { createHash } from 'node:crypto';
 import { type CodeSources, plumbingCode } from '../codes/index.ts';
-import { InputError } from '../findings/input-error.ts';
-import { lineNumber } from '../ifc/lines/line-index.ts';
-import { modelOf, type OpenedFile, openFiles } from '../ifc/open.ts';
-import { withoutOurLines } from '../ifc/write/append-sets.ts';
+import { modelOf, type OpenedFile } from '../ifc/open.ts';
+import { wholeFiles } from '../ifc/whole-files.ts';
 import { type Answers, noAnswers } from '../model/answers.ts';
 import { matchAnswers } from '../model/match-answers.ts';
 import type { Model } from '../model/model.ts';
@@ -68,27 +66,16 @@ export function sourcesOf(options: ModelOptions): CodeSources {
 export const answersOf = async ({ answers }: ModelOptions): Promise<Answers> =>
   answers === undefined ? noAnswers : readAnswers(await readText(answers), answers);
 
-/** The files with their lines indexed. A digest leaves out what an earlier run of ours wrote into its file. */
-export function opened(inputs: readonly InputFile[]): OpenedFile[] {
-  const files = openFiles(inputs, () => '').map((file) => {
-    const { index } = file;
-    const { cutOff } = index.damage;
-    if (cutOff !== null) {
-      const line = lineNumber(index.bytes, cutOff.offset);
-      const where = `it ends ${cutOff.where} (line ${line}, byte ${cutOff.offset})`;
-      throw new InputError(file.name, `the file is cut off: ${where}; copy or export it again`);
-    }
-    const digest = createHash('sha256');
-    for (const piece of withoutOurLines(index, sha256)) digest.update(piece);
-    return { ...file, sha256: digest.digest('hex') };
+/** The files with their lines indexed, each with its digest. */
+export const opened = (inputs: readonly InputFile[]): OpenedFile[] =>
+  wholeFiles(inputs, {
+    sha256,
+    hexOf(pieces) {
+      const digest = createHash('sha256');
+      for (const piece of pieces) digest.update(piece);
+      return digest.digest('hex');
+    },
   });
-  for (const [place, { name, sha256: own }] of files.entries()) {
-    const twin = files.find((other, at) => at < place && other.sha256 === own);
-    if (twin !== undefined)
-      throw new InputError(name, `is the same model as ${twin.name}; name each file of the building once`, { exit: 2 });
-  }
-  return files;
-}
 
 /** In text these stand on the first lines; beside JSON they would go unseen. */
 function warn({ model, models }: Result): void {

@@ -9,9 +9,19 @@ import { shell } from './panel/shell.ts';
 import { type Language, type PageState, storeOf } from './state.ts';
 import { wordsIn } from './words/words.ts';
 
-/** Opens the page on a building inside `host`. A change of language builds the page's words anew, with the same state. */
-export function openPage(host: HTMLElement, building: Building): void {
-  const store = storeOf({ ...firstState(building), ...stateFromLink(building, location.hash) });
+export interface PageAround {
+  readonly language?: Language;
+  /** A line above the page, made anew for each language. */
+  readonly bar?: (language: Language) => HTMLElement;
+}
+
+/**
+ * Opens the page on a building inside `host`. A change of language builds the page's words anew, with the same state.
+ * Returns what closes it.
+ */
+export function openPage(host: HTMLElement, building: Building, { language, bar }: PageAround = {}): () => void {
+  const first = language === undefined ? firstState(building) : { ...firstState(building), language };
+  const store = storeOf({ ...first, ...stateFromLink(building, location.hash) });
   const live = make('div', { class: 'offscreen', role: 'status', 'aria-live': 'polite' });
   let close = (): void => undefined;
 
@@ -42,7 +52,7 @@ export function openPage(host: HTMLElement, building: Building): void {
       },
     };
     const parts = shell(desk);
-    host.replaceChildren(...parts.roots, live);
+    host.replaceChildren(...(bar === undefined ? [] : [bar(language)]), ...parts.roots, live);
     parts.start();
     const offKeys = keysOn(desk, parts);
     close = () => {
@@ -58,9 +68,14 @@ export function openPage(host: HTMLElement, building: Building): void {
     if (link !== linkOf(building, before))
       history.replaceState(null, '', link === '' ? location.pathname + location.search : link);
   });
-  window.addEventListener('hashchange', () => store.set(stateFromLink(building, location.hash)));
+  const followLink = (): void => store.set(stateFromLink(building, location.hash));
+  window.addEventListener('hashchange', followLink);
   document.documentElement.dataset.theme = store.state.theme;
   build(store.state.language);
+  return () => {
+    window.removeEventListener('hashchange', followLink);
+    close();
+  };
 }
 
 function firstState(building: Building): PageState {

@@ -35,6 +35,14 @@ export function viewText(result: Result, file: WrittenFile): TextLine[] {
   return [...titleText(result), ...sumsText(result), ...paragraph(page, '', 'good'), ...caution(result)];
 }
 
+/** What `desk` tells: where the empty page is and what one does with it. */
+export const deskText = (file: WrittenFile): TextLine[] =>
+  paragraph(
+    `Written: ${writtenText(file)}; open it in a browser and drop a model on it. It needs no network, and the model does not leave the machine.`,
+    '',
+    'good',
+  );
+
 /** What `report` tells: the sums, and where the report is. */
 export const reportText = (result: Result, file: WrittenFile): TextLine[] => [
   ...titleText(result),

@@ -4,8 +4,9 @@ import { join, resolve } from 'node:path';
 import { pathToFileURL } from 'node:url';
 import { type Browser, type BrowserContextOptions, chromium, type Page } from 'playwright-core';
 import { PNG } from 'pngjs';
+import type { PageBundle } from '../../src/deliver/offline-html.ts';
 import type { PageData } from '../../src/deliver/page-data.ts';
-import { type PageBundle, pageHtml } from '../../src/deliver/page-html.ts';
+import { pageHtml } from '../../src/deliver/page-html.ts';
 
 const places = [process.env.CHROMIUM ?? '', '/usr/bin/chromium', '/usr/bin/chromium-browser', '/usr/bin/google-chrome'];
 export const chromiumPath = places.find((path) => path !== '' && existsSync(path));
@@ -20,8 +21,12 @@ export interface OpenedPage {
   close(): Promise<void>;
 }
 
+type PageOptions = BrowserContextOptions & { readonly hash?: string };
+
 export interface TestBrowser {
-  open(data: PageData, options?: BrowserContextOptions & { readonly hash?: string }): Promise<OpenedPage>;
+  open(data: PageData, options?: PageOptions): Promise<OpenedPage>;
+  /** The same with a page that stands on the disk. */
+  openFile(file: string, options?: PageOptions): Promise<OpenedPage>;
   close(): Promise<void>;
 }
 
@@ -35,10 +40,13 @@ export async function testBrowser(): Promise<TestBrowser> {
   const folder = mkdtempSync(join(tmpdir(), 'page-test-'));
   const bundle = await bundled();
   let count = 0;
-  return {
-    async open(data, { hash = '', ...options } = {}) {
+  const opener: TestBrowser = {
+    open(data, options) {
       const file = join(folder, `page-${count++}.html`);
       writeFileSync(file, pageHtml(data, bundle));
+      return opener.openFile(file, options);
+    },
+    async openFile(file, { hash = '', ...options } = {}) {
       const url = pathToFileURL(file).href;
       const context = await browser.newContext({
         viewport: { width: 1100, height: 680 },
@@ -73,6 +81,7 @@ export async function testBrowser(): Promise<TestBrowser> {
       rmSync(folder, { recursive: true, force: true });
     },
   };
+  return opener;
 }
 
 let made: Promise<PageBundle> | null = null;

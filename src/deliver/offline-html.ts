@@ -1,0 +1,59 @@
+import { base64 } from './base64.ts';
+import { sha256 } from './sha256.ts';
+
+/** Script and style of a page as the build made them; both go into the file whole. */
+export interface PageBundle {
+  readonly js: string;
+  readonly css: string;
+}
+
+export interface OfflineHtml extends PageBundle {
+  readonly title: string;
+  /** Shown where scripts are off. */
+  readonly noScript: string;
+  /** What the script unpacks: id of its block, and bytes. */
+  readonly data: { readonly id: string; readonly bytes: Uint8Array };
+  /** What the policy allows beyond this very script, this style and images of its own. */
+  readonly allow?: readonly string[];
+}
+
+/**
+ * One HTML file that needs nothing else: no server, no network, no second file. Its policy lets only this very
+ * script and style run and nothing be fetched; the data travels packed, so no word in it is ever markup.
+ */
+export function offlineHtml({ title, noScript, js, css, data, allow = [] }: OfflineHtml): string {
+  if (/<\/script/i.test(js) || /<\/style/i.test(css)) throw new Error('the page bundle would close its own tag');
+  const hash = (text: string): string => `'sha256-${base64(sha256(text))}'`;
+  const policy = [
+    "default-src 'none'",
+    `script-src ${hash(js)}`,
+    `style-src ${hash(css)}`,
+    'img-src data: blob:',
+    ...allow,
+    "base-uri 'none'",
+    "form-action 'none'",
+  ].join('; ');
+  return `<!doctype html>
+<html lang="en">
+<head>
+<meta charset="utf-8">
+<meta http-equiv="Content-Security-Policy" content="${policy}">
+<meta name="viewport" content="width=device-width, initial-scale=1">
+<meta name="referrer" content="no-referrer">
+<meta name="color-scheme" content="light dark">
+<title>${escaped(title)}</title>
+<style>${css}</style>
+</head>
+<body>
+<noscript><p>${noScript}</p></noscript>
+<div id="page"></div>
+<script type="text/plain" id="${data.id}">${base64(data.bytes)}</script>
+<script>${js}</script>
+</body>
+</html>
+`;
+}
+
+/** The only words from outside that stand beside the packed data are in the title. */
+const escaped = (text: string): string =>
+  text.slice(0, 200).replace(/[&<>"']/g, (character) => `&#${character.charCodeAt(0)};`);

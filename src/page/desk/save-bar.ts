@@ -1,0 +1,39 @@
+import type { DeskParts } from '../../deliver/desk-html.ts';
+import { make } from '../panel/element.ts';
+import type { Language } from '../state.ts';
+import { deskWords } from '../words/desk-words.ts';
+import { codeChooser } from './drop-view.ts';
+import type { SaveKind } from './messages.ts';
+
+export interface SaveActions {
+  save(what: SaveKind): void;
+  another(): void;
+  chooseCode(code: string): void;
+}
+
+/** The line above a page that was made here: check by another code, save, or take another model. */
+export function saveBar(
+  parts: DeskParts,
+  language: Language,
+  code: string,
+  note: HTMLElement,
+  actions: SaveActions,
+): HTMLElement {
+  const words = deskWords[language];
+  const button = (label: string, press: () => void, id: string): HTMLElement =>
+    make('button', { type: 'button', class: 'tool strong', id, onclick: press }, label);
+  return make(
+    'nav',
+    { class: 'save-bar', 'aria-label': words.bar },
+    button(words.another, actions.another, 'another'),
+    codeChooser(parts, language, code, actions.chooseCode),
+    note,
+    make(
+      'div',
+      { class: 'save-files' },
+      ...(['ifc', 'csv', 'json'] as const).map((what) =>
+        button(words.save[what], () => actions.save(what), `save-${what}`),
+      ),
+    ),
+  );
+}

@@ -1,0 +1,56 @@
+import { zipSync } from 'fflate';
+import { propertySets } from '../../deliver/property-sets.ts';
+import { sha256 } from '../../deliver/sha256.ts';
+import type { OpenedFile } from '../../ifc/open.ts';
+import { appendSets } from '../../ifc/write/append-sets.ts';
+import { jsonText } from '../../schedule/json-text.ts';
+import { takeOffCsv } from '../../schedule/take-off.ts';
+import type { DeskBuilding, DeskCheck } from './check-building.ts';
+import { joined } from './joined.ts';
+import type { SaveKind } from './messages.ts';
+
+export interface SavedFile {
+  readonly name: string;
+  readonly bytes: Uint8Array;
+}
+
+/** What the command line would write of this check. Of several models the sized copies come in one archive. */
+export function savedFile(what: SaveKind, building: DeskBuilding, check: DeskCheck, version: string): SavedFile {
+  const base = stem(building.files[0]!.name);
+  switch (what) {
+    case 'json':
+      return { name: `${base}.json`, bytes: encoder.encode([...jsonText({ ...check.result })].join('')) };
+    case 'csv':
+      return { name: `${base}.csv`, bytes: encoder.encode(takeOffCsv(check.outcome)) };
+    case 'ifc': {
+      const copies = owners(building, check).map((file) => ({
+        name: `${stem(file.name)}-sized.ifc`,
+        bytes: sizedCopy(file, building, check, version),
+      }));
+      const [only] = copies;
+      if (only !== undefined && copies.length === 1) return only;
+      const entries = Object.fromEntries(copies.map(({ name, bytes }) => [name, bytes]));
+      return { name: `${base}-sized.zip`, bytes: zipSync(entries, { mtime: firstZipDay }) };
+    }
+  }
+}
+
+function sizedCopy(file: OpenedFile, { files, model }: DeskBuilding, { result }: DeskCheck, version: string) {
+  const { name, lengthUnit } = model.files[files.indexOf(file)]!;
+  const sets = propertySets(result, { file: name, metresPerUnit: lengthUnit.metres });
+  return joined(appendSets(file.index, sets, { name: file.name, digest: sha256, version }));
+}
+
+/** Files that own something of the drainage; all of them where none does. */
+function owners({ files }: DeskBuilding, { result }: DeskCheck): readonly OpenedFile[] {
+  const used = new Set(
+    result.elements.filter(({ use }) => use !== 'left-out' && use !== 'unresolved').map(({ file }) => file),
+  );
+  const found = files.filter(({ name }) => files.length === 1 || used.has(name));
+  return found.length === 0 ? files : found;
+}
+
+const stem = (name: string): string => name.replace(/\.ifc$/i, '');
+/** Zip dates are local times: the same in every zone. */
+const firstZipDay = '1980-01-01T00:00:00';
+const encoder = new TextEncoder();

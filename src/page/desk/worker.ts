@@ -1,0 +1,49 @@
+import type { DeskParts } from '../../deliver/desk-html.ts';
+import { pageDataOf } from '../../deliver/page-data-of.ts';
+import { InputError } from '../../findings/input-error.ts';
+import { checkBuilding, type DeskBuilding, type DeskCheck, openBuilding, readBuilding } from './check-building.ts';
+import type { DeskAnswer, DeskAsk, Stage } from './messages.ts';
+import { savedFile } from './saved-file.ts';
+
+/** The worker: keeps the building and its last check, so that another code or a file to save needs no second reading. */
+let parts: DeskParts | null = null;
+let building: DeskBuilding | null = null;
+let checked: DeskCheck | null = null;
+
+const answer = (message: DeskAnswer): void => self.postMessage(message);
+const stage = (name: Stage): void => answer({ say: 'stage', stage: name });
+
+self.onmessage = ({ data }: MessageEvent<DeskAsk>) => {
+  try {
+    obey(data);
+  } catch (error) {
+    const fault = !(error instanceof InputError);
+    const message = error instanceof Error ? error.message : String(error);
+    answer({ say: 'refused', message: fault && error instanceof Error ? (error.stack ?? message) : message, fault });
+  }
+};
+
+function obey(asked: DeskAsk): void {
+  if (asked.ask === 'begin') {
+    parts = asked.parts;
+    return;
+  }
+  if (parts === null) throw new Error('asked before the beginning');
+  if (asked.ask === 'check') {
+    [building, checked] = [null, null];
+    stage('unpacking');
+    const files = openBuilding(asked.inputs);
+    stage('reading');
+    building = readBuilding(files);
+  }
+  if (building === null) throw new Error('asked before a building was read');
+  if (asked.ask === 'save') {
+    if (checked === null) throw new Error('asked to save before the check was done');
+    answer({ say: 'file', ...savedFile(asked.what, building, checked, parts.version) });
+    return;
+  }
+  stage('sizing');
+  checked = checkBuilding(building, asked.code, parts);
+  stage('drawing');
+  answer({ say: 'page', data: pageDataOf(checked.outcome, checked.result, checked.sizes) });
+}

@@ -1,0 +1,80 @@
+import type { SaveKind, Stage } from '../desk/messages.ts';
+import type { Language } from '../state.ts';
+
+/** Words of the empty page and of the line above a page that was made on it. Messages on files stay as the program says them. */
+export interface DeskWords {
+  readonly lead: string;
+  readonly drop: string;
+  readonly choose: string;
+  readonly formats: string;
+  readonly code: string;
+  readonly private: string;
+  readonly caution: string;
+  readonly stages: Readonly<Record<Stage, string>>;
+  readonly cancel: string;
+  readonly cancelled: string;
+  readonly refused: string;
+  readonly fault: string;
+  readonly otherLanguage: string;
+  readonly bar: string;
+  readonly another: string;
+  readonly save: Readonly<Record<SaveKind, string>>;
+  readonly saved: (file: string) => string;
+}
+
+export const deskWords: Readonly<Record<Language, DeskWords>> = {
+  en: {
+    lead: 'Drop an IFC model. Its drains and vents are sized by the plumbing code and compared with what is drawn.',
+    drop: 'Drop a model here',
+    choose: 'or choose a file',
+    formats: '.ifc, .ifc.gz or .ifczip. Several files are read as one building.',
+    code: 'Plumbing code',
+    private: 'Everything happens in this page. The model does not leave your machine.',
+    caution:
+      'An undersized drain or vent lets sewer gas into the building. Sizes here are a calculation aid: local code, the authority having jurisdiction and a licensed person decide.',
+    stages: {
+      unpacking: 'Opening the file',
+      reading: 'Reading the building',
+      sizing: 'Joining the pipes, sizing drains and vents',
+      drawing: 'Drawing the page',
+    },
+    cancel: 'Cancel',
+    cancelled: 'Cancelled. Nothing of the file is kept.',
+    refused: 'This cannot be checked',
+    fault: 'This is a fault of the program, not of your file. Please report it with these lines:',
+    otherLanguage: 'Français',
+    bar: 'Save and check anew',
+    another: 'Another model',
+    save: { ifc: 'Save sized IFC', csv: 'Save take-off (CSV)', json: 'Save result (JSON)' },
+    saved: (file) => `Saved ${file}`,
+  },
+  fr: {
+    lead: 'Déposez un modèle IFC. Ses évacuations et ses évents sont dimensionnés selon le code de plomberie et comparés au dessin.',
+    drop: 'Déposez un modèle ici',
+    choose: 'ou choisissez un fichier',
+    formats: '.ifc, .ifc.gz ou .ifczip. Plusieurs fichiers sont lus comme un seul bâtiment.',
+    code: 'Code de plomberie',
+    private: 'Tout se passe dans cette page. Le modèle ne quitte pas votre ordinateur.',
+    caution:
+      "Une évacuation ou un évent trop petit laisse entrer les gaz d'égout dans le bâtiment. Ces calculs sont une aide : le code local, l'autorité compétente et une personne qualifiée décident.",
+    stages: {
+      unpacking: 'Ouverture du fichier',
+      reading: 'Lecture du bâtiment',
+      sizing: 'Assemblage des tuyaux, calcul des diamètres',
+      drawing: 'Dessin de la page',
+    },
+    cancel: 'Annuler',
+    cancelled: "Annulé. Rien du fichier n'est conservé.",
+    refused: 'Vérification impossible',
+    fault: "C'est une faute du programme, non de votre fichier. Veuillez la signaler avec ces lignes :",
+    otherLanguage: 'English',
+    bar: 'Enregistrer et vérifier de nouveau',
+    another: 'Autre modèle',
+    save: {
+      ifc: "Enregistrer l'IFC dimensionné",
+      csv: 'Enregistrer le métré (CSV)',
+      json: 'Enregistrer le résultat (JSON)',
+    },
+    saved: (file) => `${file} enregistré`,
+  },
+};

@@ -1,0 +1,144 @@
+import { copyFileSync, readFileSync, writeFileSync } from 'node:fs';
+import { join, resolve } from 'node:path';
+import { gzipSync } from 'fflate';
+import type { Page } from 'playwright-core';
+import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { chromiumPath, type OpenedPage, type TestBrowser, testBrowser } from '../support/browser.ts';
+import { drainwright, scratch } from '../support/program.ts';
+import { violations } from './violations.ts';
+
+if (chromiumPath === undefined)
+  console.log('The tests of the empty page are skipped: no Chromium is installed (set CHROMIUM to its path).');
+
+const sample = (name: string): string => resolve(import.meta.dirname, '../../sample-models', name);
+const hallFile = sample('hall-wet-vented.ifc');
+
+describe.skipIf(chromiumPath === undefined)('the empty page in Chromium', () => {
+  const folder = scratch();
+  const desk = join(folder, 'desk.html');
+  let browser: TestBrowser;
+  beforeAll(async () => {
+    const { code, stdout } = drainwright(['desk', '-o', desk]);
+    expect(code).toBe(0);
+    expect(stdout.replace(/\s+/g, ' ')).toContain('drop a model on it');
+    browser = await testBrowser();
+  }, 120_000);
+  afterAll(async () => {
+    await browser?.close();
+  });
+  const open = (options: Parameters<TestBrowser['openFile']>[1] = {}): Promise<OpenedPage> =>
+    browser.openFile(desk, { acceptDownloads: true, ...options });
+
+  test('a dropped model gives the result, the sized copy and the take-off of the command line, byte for byte', async () => {
+    const { page, requests, complaints, close } = await open();
+    await dropOn(page, 'hall-wet-vented.ifc', readFileSync(hallFile));
+    await page.locator('.headline').waitFor({ timeout: 30_000 });
+    expect(await page.locator('.headline').textContent()).toBe('9 pipes are too small, for 1 cause');
+
+    const result = await saved(page, 'json');
+    expect(result.name).toBe('hall-wet-vented.json');
+    const checked = drainwright(['check', hallFile, '--json']);
+    expect(JSON.parse(checked.stdout).pipes.length).toBeGreaterThan(30);
+    expect(result.bytes.toString()).toBe(checked.stdout);
+
+    const copy = join(folder, 'sized.ifc');
+    expect(drainwright(['size', hallFile, '-o', copy]).code).toBe(0);
+    const sized = await saved(page, 'ifc');
+    expect(sized.name).toBe('hall-wet-vented-sized.ifc');
+    expect(sized.bytes.equals(readFileSync(copy))).toBe(true);
+
+    const takeOff = join(folder, 'take-off.csv');
+    expect(drainwright(['report', hallFile, '-o', takeOff]).code).toBe(0);
+    expect((await saved(page, 'csv')).bytes.equals(readFileSync(takeOff))).toBe(true);
+
+    // What was saved is a model again: read anew it gives the same pipes.
+    await page.locator('#another').click();
+    await page.setInputFiles('#models', { name: 'again.ifc', mimeType: 'text/plain', buffer: sized.bytes });
+    await page.locator('.headline').waitFor({ timeout: 30_000 });
+    const again = JSON.parse((await saved(page, 'json')).bytes.toString());
+    expect(again.pipes).toEqual(JSON.parse(checked.stdout).pipes);
+    expect(again.model.sha256).toBe(JSON.parse(checked.stdout).model.sha256);
+
+    expect(requests.filter((url) => !url.startsWith('blob:'))).toEqual([]);
+    expect(complaints).toEqual([]);
+    await close();
+  });
+
+  test('another code gives at once what the command line gives with it', async () => {
+    const { page, complaints, close } = await open();
+    await dropOn(page, 'hall.ifc.gz', Buffer.from(gzipSync(readFileSync(hallFile))));
+    await page.locator('.headline').waitFor({ timeout: 30_000 });
+    await page.selectOption('#code', 'en12056-2000');
+    await page.locator('.top .tag', { hasText: 'en12056-2000' }).waitFor();
+    const copy = join(folder, 'hall.ifc');
+    copyFileSync(hallFile, copy);
+    const { stdout } = drainwright(['check', copy, '--json', '--code', 'en12056-2000']);
+    expect((await saved(page, 'json')).bytes.toString()).toBe(stdout);
+    expect(await violations(page)).toEqual([]);
+    expect(complaints).toEqual([]);
+    await close();
+  });
+
+  test.each([
+    ['notes.txt', 'Call the plumber on Tuesday.'],
+    ['page.html', '<!doctype html><p>Sign in'],
+    ['blank.ifc', ' \n \n'],
+    ['cut.ifc', readFileSync(hallFile, 'latin1').slice(0, 20_000)],
+    ['half.ifczip', 'PK\u0003\u0004 and no more'],
+  ])('%s is refused in the words of the command line, and the next model goes', async (name, text) => {
+    const { page, complaints, requests, close } = await open();
+    const bytes = Buffer.from(text, 'latin1');
+    await dropOn(page, name, bytes);
+    const refused = page.locator('[role=alert] p');
+    await refused.waitFor();
+    writeFileSync(join(folder, name), bytes);
+    const { code, stderr } = drainwright(['check', name], { cwd: folder });
+    expect(code).toBe(3);
+    expect(`drainwright: ${await refused.textContent()}\n`).toBe(stderr);
+    if (name === 'notes.txt') {
+      expect(stderr).toContain('this is no IFC file');
+      expect(await violations(page)).toEqual([]);
+      await page.setInputFiles('#models', hallFile);
+      await page.locator('.headline').waitFor({ timeout: 30_000 });
+    }
+    expect(complaints).toEqual([]);
+    expect(requests.filter((url) => !url.startsWith('blob:'))).toEqual([]);
+    await close();
+  });
+
+  test('cancelled it forgets the model; in French it speaks French; axe agrees', async () => {
+    const { page, complaints, close } = await open({ locale: 'fr-CA', colorScheme: 'dark' });
+    expect(await page.locator('.drop-zone strong').textContent()).toBe('Déposez un modèle ici');
+    expect(await violations(page)).toEqual([]);
+    // The worker never answers here: what is tested is that Cancel does not wait for it.
+    await page.evaluate(() => {
+      Worker.prototype.postMessage = () => undefined;
+    });
+    await page.setInputFiles('#models', hallFile);
+    await page.getByRole('button', { name: 'Annuler' }).click();
+    expect(await page.locator('.drop-state').textContent()).toContain('Annulé');
+    expect(await page.locator('progress').count()).toBe(0);
+    await page.getByRole('button', { name: 'English' }).click();
+    expect(await page.locator('.drop-zone strong').textContent()).toBe('Drop a model here');
+    expect(complaints).toEqual([]);
+    await close();
+  });
+});
+
+/** Drops a file from outside on the middle of the page. */
+async function dropOn(page: Page, name: string, bytes: Buffer): Promise<void> {
+  const transfer = await page.evaluateHandle(
+    ([file, text]) => {
+      const data = new DataTransfer();
+      data.items.add(new File([Uint8Array.from(atob(text), (character) => character.charCodeAt(0))], file));
+      return data;
+    },
+    [name, bytes.toString('base64')] as const,
+  );
+  await page.dispatchEvent('.drop-zone', 'drop', { dataTransfer: transfer });
+}
+
+async function saved(page: Page, what: string): Promise<{ readonly name: string; readonly bytes: Buffer }> {
+  const [download] = await Promise.all([page.waitForEvent('download'), page.locator(`#save-${what}`).click()]);
+  return { name: download.suggestedFilename(), bytes: readFileSync(await download.path()) };
+}
