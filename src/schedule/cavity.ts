@@ -1,6 +1,7 @@
 import { decimal } from './number-text.ts';
 import { shownText, unbroken, wrapped } from './shown-text.ts';
 import { type SvgShape, shape, svgText, words } from './svg-shape.ts';
+import { listed } from './trade-words.ts';
 import type { WeighAlternative, WeighBattery, WeighResult, WeighWall } from './weigh.ts';
 import { obstacleText, ventedText } from './weigh-verdict.ts';
 
@@ -22,7 +23,7 @@ const fault = '#b00020';
 const quiet = '#5a5a5a';
 
 /** One SVG document: a cut through the wall at every battery, its readings side by side. Black on white, for print. */
-export function cavitySvg({ batteries, model, code }: WeighResult): string {
+export function cavitySvg({ batteries, model, models, code }: WeighResult): string {
   const drawings = batteries.map(cavityDrawing);
   const width = Math.max(2 * panel.margin + panel.width, ...drawings.map((one) => one.width));
   let y = heights.title;
@@ -31,7 +32,8 @@ export function cavitySvg({ batteries, model, code }: WeighResult): string {
     y += height;
     return group;
   });
-  const title = `${shownText(model.file)}, ${code.id}: cut through the wall`;
+  const files = listed((models ?? [model]).map(({ file }) => shownText(file)));
+  const title = `${files}, ${code.id}: cut through the wall`;
   const height = y + 30;
   return svgText(
     [

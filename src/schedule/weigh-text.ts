@@ -9,16 +9,17 @@ import { obstacleText, totalLength, ventedText } from './weigh-verdict.ts';
 
 /** Each battery side by side under every reading; batteries that come out alike are told once. */
 export function weighText(result: WeighResult): TextLine[] {
-  const { batteries, code, model } = result;
+  const { batteries, code, model, models } = result;
+  const files = listed((models ?? [model]).map(({ file }) => shownText(file)));
   if (batteries.length === 0)
     return [
-      ...paragraph(`${shownText(model.file)}: no battery of fixtures shares a vent: there is nothing to weigh.`, ''),
+      ...paragraph(`${files}: no battery of fixtures shares a vent: there is nothing to weigh.`, ''),
       ...paragraph(shownText(result.caution), '', 'quiet'),
     ];
   const groups = alike(batteries);
   return [
     ...paragraph(
-      `${shownText(model.file)}, ${code.id}: ${counted(batteries.length, 'battery')} weighed. * as modelled; lengths are developed lengths.`,
+      `${files}, ${code.id}: ${counted(batteries.length, 'battery')} weighed. * as modelled; lengths are developed lengths.`,
       '',
     ),
     ...groups.flatMap((group) => batteryText(group, result.currency)),

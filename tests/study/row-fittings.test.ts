@@ -8,7 +8,9 @@ const told = (text: string): Record<string, number> => {
   const counts: Record<string, number> = {};
   const all = outcome.network.pipes.map(({ id }) => id);
   for (const { kind, angle, size, branch } of fittingsOf(outcome, all, () => false)) {
-    const name = [kind, angle, branch === null ? size : `${size} x ${branch}`].filter((part) => part !== null).join(' ');
+    const name = [kind, angle, branch === null ? size : `${size} x ${branch}`]
+      .filter((part) => part !== null)
+      .join(' ');
     counts[name] = (counts[name] ?? 0) + 1;
   }
   return counts;
@@ -46,5 +48,9 @@ sewer C`,
   // The lavatory needs 1¼ in all the way but the building drain 3 in; its vent 1¼ in.
   const counts = told(text);
   expect(Object.keys(counts).filter((name) => name.startsWith('bend 22.5'))).toHaveLength(1);
-  expect(Object.entries(counts).filter(([name]) => name.startsWith('coupling')).map(([, count]) => count)).toEqual([1]);
+  expect(
+    Object.entries(counts)
+      .filter(([name]) => name.startsWith('coupling'))
+      .map(([, count]) => count),
+  ).toEqual([1]);
 });
