@@ -1,7 +1,9 @@
 import { explainFixture } from './explain-fixture.ts';
 import { explainPipe } from './explain-pipe.ts';
 import type { Found } from './find-in-result.ts';
+import type { PipeMargin } from './margin.ts';
 import type { Result, ResultFixture, ResultPipe, SizeLabel, TrailStep } from './result.ts';
+import type { WhatIfResult } from './what-if.ts';
 
 /** `format: "drainwright-explain"`: everything about one pipe or fixture, as data and as sentences. */
 export interface Explanation {
@@ -17,6 +19,10 @@ export interface Explanation {
   readonly story: readonly string[];
   /** Of pipes: the next smaller size of the code, and the first demand of the trail that it fails. */
   readonly nextSmaller: NextSmaller | null;
+  /** Of pipes: how much more they take; null where they need no size. */
+  readonly margin?: PipeMargin | null;
+  /** What would be different, where that was asked. */
+  readonly whatIf?: WhatIfResult;
   readonly caution: string;
 }
 

@@ -84,6 +84,15 @@ export function marginResult(outcome: Outcome): MarginResult {
   }
 }
 
+/** The margin of one pipe; null where it needs no size. */
+export function marginOfPipe(outcome: Outcome, globalId: string): { margin: PipeMargin | null; sentences: string[] } {
+  const index = resultIndex(outcome);
+  const element = [...outcome.network.pipesOf.keys()].find((one) => index.idOf(one) === globalId);
+  if (element === undefined) return { margin: null, sentences: [] };
+  const margin = marginResult(outcome).pipes.find((one) => one.globalId === globalId) ?? null;
+  return { margin, sentences: marginSentences(outcome, element) };
+}
+
 /** Of the sections of a pipe the one that takes the least more. */
 function tightest(outcome: Outcome, own: readonly (Margin | null)[], element: ElementId): Margin | null {
   const sections = (outcome.network.pipesOf.get(element) ?? []).flatMap((section) => own[section] ?? []);
@@ -125,13 +134,10 @@ function loadSentence(outcome: Outcome, { load, next }: Margin, element: Element
   if (load === null) return ['No load changes its size.'];
   const { unit } = outcome.code;
   const units = unitsOf(load);
-  const then = next === null ? 'another size' : next.size === null ? 'more than any size holds' : next.size;
   const clause = next === null ? '' : ` (${next.by.clause})`;
+  const then = next?.size == null ? 'no size holds it' : `it needs ${next.size}`;
   const half = load >= 30 ? '' : ' Half a unit more is too much.';
-  const takes =
-    units === 0
-      ? `It takes no more before it needs ${then}${clause}.`
-      : `It takes ${unitsText(units, unit)} more before it needs ${then}${clause}.`;
+  const takes = `It takes ${units === 0 ? 'no' : unitsText(units, unit)} more before ${then}${clause}.`;
   return [`${takes}${half}`, ...(wet ? fixtureSentence(outcome, element) : [])];
 }
 
@@ -161,11 +167,10 @@ function fixtureSentence(outcome: Outcome, element: ElementId): string[] {
 
 const alternatives = (texts: readonly string[]): string => listed(texts).replace(' and ', ' or ');
 
-function lengthSentence({ length, next }: Margin): string[] {
+function lengthSentence({ length }: Margin): string[] {
   if (length === null) return [];
   const half = length >= 0.5 ? 'half a metre more changes nothing' : 'half a metre more is too much';
-  const then = next?.size == null ? '' : ', and would need the next size then';
-  return [`It may be ${lengthText(length)} longer${then}; ${half}.`];
+  return [`It may be ${lengthText(length)} longer at this size; ${half}.`];
 }
 
 function waySentence(outcome: Outcome, own: readonly (Margin | null)[], section: PipeId, margin: Margin): string[] {

@@ -11,7 +11,7 @@ import type { Found } from './find-in-result.ts';
 import { slopeText } from './number-text.ts';
 import { resultIndex } from './result-index.ts';
 import { shownText } from './shown-text.ts';
-import { plainWords } from './trade-words.ts';
+import { counted, plainWords } from './trade-words.ts';
 
 /** An edit, and in what words it was read. */
 export interface Asked {
@@ -62,7 +62,7 @@ function readPart(part: string, found: Found, outcome: Outcome): Asked {
     case 'kind': {
       if (found.kind !== 'fixture') throw refused(part, 'is said of a fixture');
       const { kind, detail, words } = fixtureWords(part, rest);
-      return { edit: { edit: 'kind', fixture: element, kind, detail }, words: `it is a ${words}` };
+      return { edit: { edit: 'kind', fixture: element, kind, detail }, words: `it is a ${plainWords(kind)}${words}` };
     }
     case 'add': {
       const count = /^\d{1,3}$/.test(rest[0] ?? '') ? Number(rest[0]) : 1;
@@ -70,7 +70,7 @@ function readPart(part: string, found: Found, outcome: Outcome): Asked {
       if (count < 1) throw refused(part, 'adds nothing');
       return {
         edit: { edit: 'add', pipe: pipe(), kind, detail, count },
-        words: `${count} more ${words} ${count === 1 ? 'drains' : 'drain'} into it`,
+        words: `${counted(count, `more ${plainWords(kind)}`)}${words} ${count === 1 ? 'drains' : 'drain'} into it`,
       };
     }
     case 'code':
@@ -133,7 +133,7 @@ function fixtureWords(
         `has a detail ${shownText(word)} that is not known; expected ${[...flushes, ...Object.keys(styles)].join(', ')}, emergency`,
       );
   }
-  return { kind, detail, words: [plainWords(kind), ...details].join(' ') };
+  return { kind, detail, words: details.length === 0 ? '' : ` (${details.join(', ')})` };
 }
 
 const plural = (kind: string): string => (kind.endsWith('y') ? `${kind.slice(0, -1)}ies` : `${kind}s`);

@@ -104,7 +104,7 @@ function changeText(from: PipeState, to: PipeState, unit: string): string {
   const verdict =
     from.verdict === to.verdict
       ? ''
-      : `; ${verdicts[to.verdict] ?? to.verdict}, ${verdicts[from.verdict] ?? from.verdict} before`;
+      : `; now ${verdicts[to.verdict] ?? to.verdict}, it was ${verdicts[from.verdict] ?? from.verdict}`;
   return `${needs}${load}${verdict}`;
 }
 

@@ -53,18 +53,16 @@ function loadedStack(stack: StackUse, { load, closets }: Extra): StackUse {
 export function loadedFacts(facts: BatteryFacts, { load, fixtures, closets }: Extra): BatteryFacts {
   const more = (one: Load): Load => Math.max(0, one + load) as Load;
   const { wet, circuit } = facts;
-  const last = circuit.traps.at(-1);
-  const added =
-    last === undefined || fixtures === 0
-      ? []
-      : Array.from({ length: fixtures }, () => ({
-          ...last,
-          place: Math.max(0, last.place - 1) + 0.5,
-          closet: closets > 0,
-        }));
+  const withMore = (traps: BatteryFacts['traps']): BatteryFacts['traps'] => {
+    const last = traps.at(-1);
+    if (last === undefined || fixtures === 0) return traps;
+    const one = { ...last, place: Math.max(0, last.place - 1) + 0.5, closet: closets > 0 };
+    return [...traps.slice(0, -1), ...Array.from({ length: fixtures }, () => one), last];
+  };
   const end = circuit.stretches.length - 1;
   return {
     ...facts,
+    traps: withMore(facts.traps),
     wet: {
       ...wet,
       load: closets > 0 ? wet.load : more(wet.load),
@@ -75,7 +73,7 @@ export function loadedFacts(facts: BatteryFacts, { load, fixtures, closets }: Ex
       ...circuit,
       load: more(circuit.load),
       closets: circuit.closets + closets,
-      traps: [...circuit.traps.slice(0, -1), ...added, ...circuit.traps.slice(-1)],
+      traps: withMore(circuit.traps),
       stretches: circuit.stretches.map((one, at) => (at === end ? { ...one, traps: one.traps + fixtures } : one)),
     },
   };

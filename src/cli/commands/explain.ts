@@ -1,6 +1,13 @@
 import type { Command } from 'commander';
 import { type ModelOptions, modelArgument, modelOptions } from '../options.ts';
 
+interface ExplainOptions extends ModelOptions {
+  readonly if?: string;
+}
+
+const whatIfHelp =
+  'what would change: "size 3 in", "slope 1:50", "reading circuit-vent", "kind urinal stall", "add 2 floor-drain", "code npc-2015"; several with ; between them';
+
 export function addExplain(program: Command): void {
   const command = program
     .command('explain')
@@ -11,17 +18,45 @@ export function addExplain(program: Command): void {
     .usage('[options] <model...> <what>')
     .argument('<model>', modelArgument)
     .argument('<what...>', 'GlobalId, #STEP id or name of a pipe or fixture, behind the last file')
-    .action(async (first: string, rest: readonly string[], options: ModelOptions) => {
-      const { runModel } = await import('../run-model.ts');
+    .option('--if <words>', whatIfHelp)
+    .action(async (first: string, rest: readonly string[], options: ExplainOptions) => {
+      const { plumbingCode } = await import('../../codes/index.ts');
+      const { runModel, sourcesOf } = await import('../run-model.ts');
       const { printJson } = await import('../print-result.ts');
       const { printLines } = await import('../terminal.ts');
       const { explain } = await import('../../schedule/explain.ts');
       const { explainText } = await import('../../schedule/explain-text.ts');
       const { findInResult } = await import('../../schedule/find-in-result.ts');
-      const { result, sizes } = await runModel([first, ...rest.slice(0, -1)], options);
-      const explanation = explain(result, findInResult(result, rest.at(-1) ?? ''), sizes);
-      if (options.json === true) await printJson({ ...explanation });
-      else await printLines(explainText(explanation));
+      const { marginOfPipe } = await import('../../schedule/margin.ts');
+      const { whatIfResult, whatIfText } = await import('../../schedule/what-if.ts');
+      const { readWhatIf } = await import('../../schedule/what-if-words.ts');
+      const { whatIf } = await import('../../study/what-if.ts');
+      const { result, outcome, sizes } = await runModel([first, ...rest.slice(0, -1)], options);
+      const found = findInResult(result, rest.at(-1) ?? '');
+      const asked = options.if === undefined ? [] : readWhatIf(options.if, found, outcome);
+      const different =
+        asked.length === 0
+          ? null
+          : whatIfResult(
+              outcome,
+              whatIf(
+                outcome,
+                asked.map(({ edit }) => edit),
+                (id) => plumbingCode(id, sourcesOf(options), outcome.answers.settings, options.answers ?? 'answers'),
+              ),
+              asked.map(({ words }) => words),
+            );
+      const plain = explain(result, found, sizes);
+      const more = found.kind === 'pipe' ? marginOfPipe(outcome, found.pipe.globalId) : null;
+      const explanation = {
+        ...plain,
+        story: [...plain.story, ...(more?.sentences ?? [])],
+        ...(more === null ? {} : { margin: more.margin }),
+        ...(different === null ? {} : { whatIf: different }),
+      };
+      if (options.json === true) await printJson(explanation);
+      else
+        await printLines([...explainText(explanation), ...(different === null ? [] : whatIfText(different, result))]);
     });
   for (const option of modelOptions()) command.addOption(option);
 }
