@@ -1,5 +1,6 @@
 import { fixtureKinds } from '../model/read-answers.ts';
 import { elementNames } from './element-names.ts';
+import { hangsOnEntries } from './ranges-text.ts';
 import type { Result, ResultBattery, ResultFixture } from './result.ts';
 import { counted, listed, plainWords } from './trade-words.ts';
 
@@ -29,6 +30,7 @@ export function questionsOf(result: Result): Question[] {
     ...fixtureQuestions(result),
     ...batteryQuestions(result),
     ...slopeQuestion(result),
+    ...entryQuestion(result),
     ...sizeQuestions(result),
   ];
   return questions.sort(
@@ -127,6 +129,22 @@ function slopeQuestion({ pipes, findings, settings }: Result): Question[] {
       weight,
       choices: [],
       answer: { part: 'pipes', key: 'name:*', field: 'slope' },
+    },
+  ];
+}
+
+/** Stacks whose size hangs on fittings that the model does not tell. */
+function entryQuestion({ pipes }: Result): Question[] {
+  const open = pipes.filter(hangsOnEntries);
+  const stacks = open.filter(({ trail }) => trail.some(({ facts }) => facts.entriesKnown === false));
+  if (stacks.length === 0) return [];
+  return [
+    {
+      about: stacks.map(({ globalId }) => globalId),
+      ask: `How do the branches enter the stacks (${counted(stacks.length, 'pipe')} of stacks hang on it): swept, at 45 degrees or less or with a radius of at least their bore, or square?`,
+      weight: open.length,
+      choices: ['swept', 'square'],
+      answer: { part: 'settings', key: 'entries', field: null },
     },
   ];
 }

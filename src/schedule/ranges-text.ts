@@ -12,6 +12,9 @@ export const openFixtures = ({ fixtures }: Result): readonly ResultFixture[] =>
 export const isRange = ({ required }: ResultPipe): boolean =>
   required !== null && required.least?.label !== required.most?.label;
 
+/** The fixtures leave nothing open, but the way drains enter a stack does. */
+export const hangsOnEntries = (pipe: ResultPipe): boolean => isRange(pipe) && pipe.load.least === pipe.load.most;
+
 /** Verdicts that hold however the open fixtures are read, and those that hang on them. Nothing where none is open. */
 export function rangesText(result: Result): TextLine[] {
   const open = openFixtures(result);
@@ -60,11 +63,14 @@ const mostPipes = 8;
 const rest = (count: number, words: string): TextLine[] =>
   count > 0 ? paragraph(`and ${count} ${words}`, '    ', 'quiet') : [];
 
+const entryStory = ({ required }: ResultPipe): string =>
+  `Its size hangs on how the drains enter the stack: ${required?.least?.label ?? 'no size'} swept, at 45 degrees or less or with a radius of at least their bore; ${required?.most?.label ?? 'more than any size holds'} square.`;
+
 /** Of one pipe: whether its verdict hangs on fixtures that are open, and how far. Empty where none of them uses it. */
 export function rangeStory(result: Result, pipe: ResultPipe): string[] {
   const users = new Set([...(pipe.servesWater ?? []), ...(pipe.servesAir ?? [])]);
   const open = openFixtures(result).filter(({ globalId }) => users.has(globalId));
-  if (open.length === 0) return [];
+  if (open.length === 0) return hangsOnEntries(pipe) ? [entryStory(pipe)] : [];
   const names = elementNames(result);
   const who = listed(open.slice(0, mostFixtures).map(({ globalId }) => names.short(globalId)));
   const what = open.length > mostFixtures ? `${who} and ${open.length - mostFixtures} more` : who;

@@ -1,5 +1,8 @@
 import { describe, expect, test } from 'vitest';
 import type { FixtureAnswer, Settings } from '../../src/model/answers.ts';
+import { explain } from '../../src/schedule/explain.ts';
+import { findInResult } from '../../src/schedule/find-in-result.ts';
+import { questionsOf } from '../../src/schedule/questions.ts';
 import { sizeForLoad } from '../../src/tables/find-size.ts';
 import { europeanTower, type Floor } from '../support/european.ts';
 import { runSketch, type SketchRun } from '../support/run-sketch.ts';
@@ -137,6 +140,22 @@ describe('Hotel Lindenhof: eight storeys of two bathrooms, K 0.7', () => {
     expect(run(europeanTower(hotel), { K: 0.7, entries: 'swept' }).size('S1-SF')).toBe('DN 100');
     expect(run(europeanTower(hotel), { K: 0.7, entries: 'square' }).size('S1-SF')).toBe('DN 125');
     expect(run(europeanTower(hotel, { ventStack: true }), { K: 0.7, entries: 'square' }).size('S1-VF')).toBe('DN 100');
+  });
+
+  test('one question settles it, and outweighs the others', () => {
+    const [first] = questionsOf(run(europeanTower(hotel), { K: 0.7 }).result);
+    expect(first).toMatchObject({ choices: ['swept', 'square'], answer: { part: 'settings', key: 'entries' } });
+    // Eight pipes of the stack and its vent; the drain takes DN 150 either way (5.09 l/s at 1:100, DN 125 carries 3.87).
+    expect([first?.about.length, first?.weight]).toEqual([8, 9]);
+    const told = questionsOf(run(europeanTower(hotel), { K: 0.7, entries: 'swept' }).result);
+    expect(told.some(({ answer }) => answer.key === 'entries')).toBe(false);
+  });
+
+  test('explain says which size goes with which entry', () => {
+    const { result } = run(europeanTower(hotel), { K: 0.7 });
+    expect(explain(result, findInResult(result, 'S1-SF'), []).story.join(' ')).toContain(
+      'Its size hangs on how the drains enter the stack: DN 100 swept',
+    );
   });
 
   test('the branch of a bathroom: DN 90 without a vent, in reach', () => {
