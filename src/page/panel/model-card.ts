@@ -47,6 +47,13 @@ export function modelCard(desk: Desk): HTMLElement {
       ...(settings.length === 0
         ? []
         : [line(words.model.settings, settings.map(([name, value]) => `${name}: ${String(value)}`).join(', '))]),
+      ...(result.answers ?? []).map(({ key, field, part, value }) =>
+        line(
+          words.model.answered,
+          modelText(`${shown(key.startsWith('name:') ? key.slice(5) : nameOfId(building, words, key))}: `),
+          `${field ?? part}${value === true ? '' : ` ${shown(String(value))}`}`,
+        ),
+      ),
     ),
     make('h3', {}, words.model.counts),
     make(

@@ -108,6 +108,7 @@ export const english: Words = {
     localTables: 'Local tables',
     program: 'Program',
     settings: 'Settings',
+    answered: 'Answered',
     counts: 'Everything read',
     elements: 'elements',
     adds: 'They add up: nothing was dropped.',

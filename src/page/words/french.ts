@@ -119,6 +119,7 @@ export const french: Words = {
     localTables: 'Tableaux locaux',
     program: 'Programme',
     settings: 'Réglages',
+    answered: 'Réponses',
     counts: 'Tout ce qui a été lu',
     elements: 'éléments',
     adds: 'Le compte y est : rien n’a été écarté en silence.',

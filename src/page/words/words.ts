@@ -89,6 +89,7 @@ export interface Words extends PanelWords {
     readonly localTables: string;
     readonly program: string;
     readonly settings: string;
+    readonly answered: string;
     readonly counts: string;
     readonly elements: string;
     readonly adds: string;
