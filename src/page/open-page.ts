@@ -6,20 +6,25 @@ import { make } from './panel/element.ts';
 import { keysOn } from './panel/keys.ts';
 import { fixtureName, pipeName } from './panel/names.ts';
 import { shell } from './panel/shell.ts';
-import { type Language, type PageState, storeOf } from './state.ts';
+import { type Chosen, type Language, type PageState, storeOf } from './state.ts';
 import { wordsIn } from './words/words.ts';
 
 export interface PageAround {
   readonly language?: Language;
   /** A line above the page, made anew for each language. */
   readonly bar?: (language: Language) => HTMLElement;
+  readonly whatIf?: (language: Language, chosen: Chosen) => HTMLElement;
 }
 
 /**
  * Opens the page on a building inside `host`. A change of language builds the page's words anew, with the same state.
  * Returns what closes it.
  */
-export function openPage(host: HTMLElement, building: Building, { language, bar }: PageAround = {}): () => void {
+export function openPage(
+  host: HTMLElement,
+  building: Building,
+  { language, bar, whatIf }: PageAround = {},
+): () => void {
   const first = language === undefined ? firstState(building) : { ...firstState(building), language };
   const store = storeOf({ ...first, ...stateFromLink(building, location.hash) });
   const live = make('div', { class: 'offscreen', role: 'status', 'aria-live': 'polite' });
@@ -34,6 +39,7 @@ export function openPage(host: HTMLElement, building: Building, { language, bar 
       store,
       words,
       scene: null,
+      ...(whatIf === undefined ? {} : { whatIf: (chosen: Chosen) => whatIf(language, chosen) }),
       theme: () => themes[store.state.theme],
       announce(text) {
         live.textContent = text;

@@ -79,6 +79,41 @@ describe.skipIf(chromiumPath === undefined)('the empty page in Chromium', () => 
     await close();
   });
 
+  test('what if: the wet vent drawn 4 in, a urinal that is a floor drain, then the model again', async () => {
+    const { page, complaints, close } = await open();
+    await page.setInputFiles('#models', hallFile);
+    await page.locator('.headline').waitFor({ timeout: 30_000 });
+    await page.locator('.finding-head').first().click();
+    await page.locator('.banner-undersized').first().waitFor();
+    // 14 fixture units wet vented are 4 in (National Plumbing Code 2020, Table 2.5.8.1.): drawn so, the pipe agrees.
+    await page.selectOption('#if-size', '4 in');
+    await page.locator('.banner-agrees').first().waitFor();
+    expect(await page.locator('.save-note').textContent()).toContain('size 4 in');
+    expect(await page.locator('#save-ifc').count()).toBe(0);
+    // Read as a circuit vent the 16 units of the row are 3 in (Table 2.4.10.6.-B): drawn 4 in it is more than enough.
+    await page.selectOption('#if-reading', 'circuit-vent');
+    await page.locator('.banner-oversized').first().waitFor();
+    await page.locator('.back').click();
+    await page.fill('#search', 'urinal');
+    await page
+      .locator('.line', { hasText: /urinal/i })
+      .first()
+      .click();
+    await page.selectOption('#if-kind', 'floor-drain');
+    await page.locator('.card-role', { hasText: 'Floor drain' }).waitFor();
+    expect(await page.locator('.save-note').textContent()).toContain(
+      'size 4 in · reading circuit-vent · kind floor-drain',
+    );
+    expect(await violations(page)).toEqual([]);
+    await page.locator('#back-to-model').click();
+    await page.locator('.card-role', { hasText: 'Urinal' }).waitFor();
+    await page.locator('.back').click();
+    expect(await page.locator('.headline').textContent()).toBe('9 pipes are too small, for 1 cause');
+    expect((await saved(page, 'json')).bytes.toString()).toBe(drainwright(['check', hallFile, '--json']).stdout);
+    expect(complaints).toEqual([]);
+    await close();
+  });
+
   test.each([
     ['notes.txt', 'Call the plumber on Tuesday.'],
     ['page.html', '<!doctype html><p>Sign in'],

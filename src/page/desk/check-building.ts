@@ -1,4 +1,5 @@
 import { plumbingCode } from '../../codes/index.ts';
+import type { PlumbingCode } from '../../codes/plumbing-code.ts';
 import type { DeskParts } from '../../deliver/desk-html.ts';
 import { sha256 } from '../../deliver/sha256.ts';
 import { type ModelInput, modelOf, type OpenedFile } from '../../ifc/open.ts';
@@ -40,7 +41,7 @@ export const readBuilding = (files: readonly OpenedFile[]): DeskBuilding => ({ f
 /** The same as the command line makes of the same files with this code and no answers. */
 export function checkBuilding({ model }: DeskBuilding, codeId: string, parts: DeskParts): DeskCheck {
   const tables = tablesOf(parts);
-  const code = plumbingCode(codeId, { tables, dimensions: readPipeDimensions(tables) }, noAnswers.settings, 'answers');
+  const code = codeOf(codeId, parts);
   const answers = matchAnswers(noAnswers, model, code.series, 'answers');
   const outcome = run(model, code, answers, readNamesTable(tables));
   const sizes = code.series.sizes.filter(({ label }) => !code.omitSizes.has(label));
@@ -49,6 +50,12 @@ export function checkBuilding({ model }: DeskBuilding, codeId: string, parts: De
     result: resultOf(outcome, parts.version),
     sizes: sizes.map(({ label, dn }) => ({ label, dn })),
   };
+}
+
+/** One of the codes that the page carries, as it is without settings. */
+export function codeOf(id: string, parts: DeskParts): PlumbingCode {
+  const tables = tablesOf(parts);
+  return plumbingCode(id, { tables, dimensions: readPipeDimensions(tables) }, noAnswers.settings, 'answers');
 }
 
 function tablesOf({ tables }: DeskParts): TableSource {

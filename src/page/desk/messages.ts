@@ -9,7 +9,15 @@ export type DeskAsk =
   | { readonly ask: 'check'; readonly inputs: readonly ModelInput[]; readonly code: string }
   /** Checks the building that was read last by another code. */
   | { readonly ask: 'code'; readonly code: string }
+  /** The last check with some changes, one after the other; with none, as it is. What is saved stays the check itself. */
+  | { readonly ask: 'what-if'; readonly edits: readonly DeskEdit[] }
   | { readonly ask: 'save'; readonly what: SaveKind };
+
+/** What is changed, by GlobalId, and to what in the words of `explain --if`: `size 4 in`, `kind urinal`. */
+export interface DeskEdit {
+  readonly about: string;
+  readonly words: string;
+}
 
 export type SaveKind = 'ifc' | 'csv' | 'json';
 

@@ -8,8 +8,9 @@ import type { Language } from '../state.ts';
 import { deskWords } from '../words/desk-words.ts';
 import { deskWorker } from './desk-worker.ts';
 import { type DropView, dropView } from './drop-view.ts';
-import type { DeskAsk, SaveKind } from './messages.ts';
+import type { DeskAsk, DeskEdit, SaveKind } from './messages.ts';
 import { saveBar } from './save-bar.ts';
+import { whatIfControls } from './what-if-controls.ts';
 
 /** The empty page inside `host`. A model dropped on it is checked in a worker; then the page opens on the result. */
 export function openDesk(host: HTMLElement, parts: DeskParts): void {
@@ -72,23 +73,28 @@ export function openDesk(host: HTMLElement, parts: DeskParts): void {
     else if (end?.say === 'refused') at.refused(end.message, end.fault);
   };
 
-  const open = (data: PageData): void => {
+  const open = (data: PageData, edits: readonly DeskEdit[] = []): void => {
     close();
     view = null;
     const note = make('span', { class: 'save-note', role: 'status' });
     const { model, models } = data.result;
     document.title = `${(models ?? [model]).map(({ file }) => shown(file)).join(', ')} · Drainwright`;
-    close = openPage(host, buildingOf(data), {
+    const building = buildingOf(data);
+    close = openPage(host, building, {
       language,
       bar(now) {
         language = now;
-        note.textContent = '';
+        note.textContent =
+          edits.length === 0 ? '' : `${deskWords[now].whatIf.now} ${edits.map(({ words }) => words).join(' · ')}`;
         return saveBar(parts, now, code, note, {
           save: (what) => void save(what, note),
           another: () => empty(),
           chooseCode: (chosen) => void recheck(chosen, note),
+          back: edits.length === 0 ? null : () => void suppose([], note),
         });
       },
+      whatIf: (now, chosen) =>
+        whatIfControls(building, now, chosen, (edit) => void suppose(withEdit(edits, edit), note)),
     });
   };
   const recheck = async (chosen: string, note: HTMLElement): Promise<void> => {
@@ -110,6 +116,12 @@ export function openDesk(host: HTMLElement, parts: DeskParts): void {
       note.textContent = end.message;
     }
   };
+  const suppose = async (edits: readonly DeskEdit[], note: HTMLElement): Promise<void> => {
+    const end = await worker.ask({ ask: 'what-if', edits });
+    if (end?.say === 'page') open(end.data, edits);
+    else if (end?.say === 'refused') note.textContent = end.message;
+    host.querySelector<HTMLElement>('#card-title')?.focus({ preventScroll: true });
+  };
   const save = async (what: SaveKind, note: HTMLElement): Promise<void> => {
     const end = await worker.ask({ ask: 'save', what });
     if (end?.say === 'refused') note.textContent = end.message;
@@ -130,4 +142,10 @@ export function openDesk(host: HTMLElement, parts: DeskParts): void {
     if (isIdle && files.length > 0) void check(files);
   });
   drop().idle();
+}
+
+/** One thing is supposed of one element once: a later word on the same takes the place of the earlier. */
+function withEdit(edits: readonly DeskEdit[], edit: DeskEdit): readonly DeskEdit[] {
+  const verb = ({ about, words }: DeskEdit): string => `${about} ${words.split(' ')[0]}`;
+  return [...edits.filter((one) => verb(one) !== verb(edit)), edit];
 }

@@ -9,6 +9,8 @@ export interface SaveActions {
   save(what: SaveKind): void;
   another(): void;
   chooseCode(code: string): void;
+  /** Leaves what was only supposed; null where nothing is. */
+  readonly back: (() => void) | null;
 }
 
 /** The line above a page that was made here: check by another code, save, or take another model. */
@@ -28,12 +30,14 @@ export function saveBar(
     button(words.another, actions.another, 'another'),
     codeChooser(parts, language, code, actions.chooseCode),
     note,
-    make(
-      'div',
-      { class: 'save-files' },
-      ...(['ifc', 'csv', 'json'] as const).map((what) =>
-        button(words.save[what], () => actions.save(what), `save-${what}`),
+    actions.back !== null && button(words.whatIf.back, actions.back, 'back-to-model'),
+    actions.back === null &&
+      make(
+        'div',
+        { class: 'save-files' },
+        ...(['ifc', 'csv', 'json'] as const).map((what) =>
+          button(words.save[what], () => actions.save(what), `save-${what}`),
+        ),
       ),
-    ),
   );
 }

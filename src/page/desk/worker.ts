@@ -1,6 +1,7 @@
 import type { DeskParts } from '../../deliver/desk-html.ts';
 import { pageDataOf } from '../../deliver/page-data-of.ts';
 import { InputError } from '../../findings/input-error.ts';
+import { changedCheck } from './changed-check.ts';
 import { checkBuilding, type DeskBuilding, type DeskCheck, openBuilding, readBuilding } from './check-building.ts';
 import type { DeskAnswer, DeskAsk, Stage } from './messages.ts';
 import { savedFile } from './saved-file.ts';
@@ -40,6 +41,12 @@ function obey(asked: DeskAsk): void {
   if (asked.ask === 'save') {
     if (checked === null) throw new Error('asked to save before the check was done');
     answer({ say: 'file', ...savedFile(asked.what, building, checked, parts.version) });
+    return;
+  }
+  if (asked.ask === 'what-if') {
+    if (checked === null) throw new Error('asked what if before the check was done');
+    const { outcome, result, sizes } = changedCheck(checked, asked.edits, parts);
+    answer({ say: 'page', data: pageDataOf(outcome, result, sizes) });
     return;
   }
   stage('sizing');

@@ -1,7 +1,7 @@
 import type { Building } from '../building.ts';
 import type { Theme } from '../colours.ts';
 import type { SceneView } from '../scene/scene-view.ts';
-import type { Store } from '../state.ts';
+import type { Chosen, Store } from '../state.ts';
 import type { Words } from '../words/words.ts';
 
 /** What every part of the page works with. `scene` is null where the browser or the model gives no picture. */
@@ -15,4 +15,6 @@ export interface Desk {
   announce(text: string): void;
   choosePipe(row: number, frame?: readonly number[]): void;
   chooseFixture(row: number): void;
+  /** Controls under the card of what is chosen; absent where the page cannot check anew. */
+  readonly whatIf?: (chosen: Chosen) => HTMLElement;
 }

@@ -88,6 +88,7 @@ export function shell(desk: Desk): Shell {
           `← ${words.page.back}`,
         ),
         chosen.is === 'pipe' ? pipeCard(desk, chosen.row) : fixtureCard(desk, chosen.row),
+        ...(desk.whatIf === undefined ? [] : [desk.whatIf(chosen)]),
       );
       return;
     }

@@ -20,6 +20,7 @@ export interface DeskWords {
   readonly another: string;
   readonly save: Readonly<Record<SaveKind, string>>;
   readonly saved: (file: string) => string;
+  readonly whatIf: Readonly<Record<'title' | 'asIs' | 'size' | 'kind' | 'reading' | 'now' | 'back', string>>;
 }
 
 export const deskWords: Readonly<Record<Language, DeskWords>> = {
@@ -47,6 +48,15 @@ export const deskWords: Readonly<Record<Language, DeskWords>> = {
     another: 'Another model',
     save: { ifc: 'Save sized IFC', csv: 'Save take-off (CSV)', json: 'Save result (JSON)' },
     saved: (file) => `Saved ${file}`,
+    whatIf: {
+      title: 'What if',
+      asIs: 'as it is',
+      size: 'Size',
+      kind: 'Kind',
+      reading: 'Its battery is read as',
+      now: 'What if, not the model:',
+      back: 'Back to the model',
+    },
   },
   fr: {
     lead: 'Déposez un modèle IFC. Ses évacuations et ses évents sont dimensionnés selon le code de plomberie et comparés au dessin.',
@@ -76,5 +86,14 @@ export const deskWords: Readonly<Record<Language, DeskWords>> = {
       json: 'Enregistrer le résultat (JSON)',
     },
     saved: (file) => `${file} enregistré`,
+    whatIf: {
+      title: 'Et si',
+      asIs: 'tel quel',
+      size: 'Diamètre',
+      kind: 'Appareil',
+      reading: 'Sa batterie est lue comme',
+      now: 'Supposition, non le modèle :',
+      back: 'Retour au modèle',
+    },
   },
 };
