@@ -10,8 +10,9 @@ import { wallFitText } from './wall-fit-text.ts';
 /**
  * What a coordinator needs on one screen: what was understood, the undersized pipes by cause, the other errors,
  * warnings folded to counts, then the sums and how far to trust them. Model text comes out harmless.
+ * `remarks` are notes that are no findings.
  */
-export function checkText(result: Result): TextLine[] {
+export function checkText(result: Result, remarks: readonly TextLine[] = []): TextLine[] {
   return [
     ...understoodText(result),
     ...undersizedText(result),
@@ -21,6 +22,7 @@ export function checkText(result: Result): TextLine[] {
     ...(isEmpty(result) ? [] : [blank]),
     ...foldedText(result.findings, 'warning', 'Warnings'),
     ...foldedText(result.findings, 'note', 'Notes'),
+    ...remarks,
     ...(isEmpty(result) ? [] : [...sumsText(result), ...paragraph(shownText(result.caution), '', 'quiet')]),
   ];
 }

@@ -5,6 +5,7 @@ import type { Survey, SurveySystem } from './survey.ts';
 import { terminalsText } from './terminals-text.ts';
 import { blank, heading, paragraph, type TextLine } from './text-line.ts';
 import { counted, plainWords } from './trade-words.ts';
+import { twinsText } from './twins.ts';
 import { row, understoodText } from './understood-text.ts';
 
 /** A survey for a person: what is in the model, what was understood, what could not be used, what to ask. */
@@ -26,6 +27,7 @@ export function surveyText(survey: Survey, result: Result): TextLine[] {
       'Not placed',
       survey.unresolved.map(({ stepId, reason }) => `#${stepId}: ${shownText(reason)}`),
     ),
+    ...twinsText(survey.twins ?? []),
     ...questionsText(survey.questions),
   ];
 }

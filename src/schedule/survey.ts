@@ -3,6 +3,7 @@ import type { Element, Model } from '../model/model.ts';
 import { elementRows } from './element-rows.ts';
 import { type Question, questionsOf } from './questions.ts';
 import type { Result, ResultElement, ResultFinding, ResultModel } from './result.ts';
+import type { TwinsResult } from './twins.ts';
 
 /** `format: "drainwright-survey"`: what is in a model, and what of it could be used. Lists in the model's order. */
 export interface Survey {
@@ -33,6 +34,8 @@ export interface Survey {
   /** What could not be placed, and other warnings on how the model was understood. */
   readonly unresolved: Result['unresolved'];
   readonly questions: readonly Question[];
+  /** Parts of the building that should be alike and are not; absent where there are none. */
+  readonly twins?: readonly TwinsResult[];
 }
 
 export interface SurveySystem {

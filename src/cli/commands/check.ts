@@ -21,8 +21,9 @@ export function addCheck(program: Command): void {
       const { runModel } = await import('../run-model.ts');
       const { printResult } = await import('../print-result.ts');
       const { checkText } = await import('../../schedule/check-text.ts');
-      const { result } = await runModel(models, options);
-      await printResult(result, options, () => checkText(result));
+      const { twinsResult, twinsText } = await import('../../schedule/twins.ts');
+      const { result, outcome } = await runModel(models, options);
+      await printResult(result, options, () => checkText(result, twinsText(twinsResult(outcome))));
       if (result.findings.some(({ severity }) => severity === 'error')) process.exitCode = doneWithErrors;
     });
   for (const option of modelOptions()) command.addOption(option);

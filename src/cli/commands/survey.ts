@@ -21,11 +21,14 @@ export function addSurvey(program: Command): void {
       const { answersForm } = await import('../../schedule/answers-form.ts');
       const { surveyOf } = await import('../../schedule/survey.ts');
       const { surveyText } = await import('../../schedule/survey-text.ts');
+      const { twinsResult } = await import('../../schedule/twins.ts');
       const { questions: file } = options;
       const run = await runModel(models, options, (inputs) =>
         file === undefined ? null : outputPlace(file, inputs, false),
       );
-      const survey = surveyOf(run.model, run.outcome.identities, run.result);
+      const twins = twinsResult(run.outcome);
+      const surveyed = surveyOf(run.model, run.outcome.identities, run.result);
+      const survey = twins.length === 0 ? surveyed : { ...surveyed, twins };
       if (run.place !== null && file !== undefined) {
         const form = `${JSON.stringify(answersForm(survey.questions), null, 2)}\n`;
         await writeNew(run.place, [new TextEncoder().encode(form)], file);
