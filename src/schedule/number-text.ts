@@ -14,7 +14,7 @@ export function loadText({ least, most }: LoadRange, unit: string): string {
 
 /** `1 fixture unit`, `14 fixture units`, `0.8 l/s`. */
 export const unitsText = (value: number, unit: string): string =>
-  `${decimal(value, 2)} ${value === 1 ? unit.replace(/units$/, 'unit') : unit}`;
+  `${decimal(value, 2)} ${value === 1 && !unit.includes('/') ? unit.replace(/units$/, 'unit') : unit}`;
 
 /** Metres as a person reads them: millimetres below one metre, kilometres where no building is so long. */
 export function lengthText(metres: number): string {

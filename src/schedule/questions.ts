@@ -83,6 +83,7 @@ function openDetail({ kind, detail }: ResultFixture): { readonly field: string; 
   if (kind === 'water-closet' && detail.flush === null) return { field: 'flush', choices: ['tank', 'valve'] };
   if (kind === 'urinal' && detail.style === null)
     return { field: 'style', choices: ['stall', 'wall-washout', 'wall-other', 'pedestal'] };
+  if (kind === 'urinal' && detail.flush === null) return { field: 'flush', choices: ['tank', 'valve'] };
   if (kind === 'shower' && detail.heads === null) return { field: 'heads', choices: [] };
   return { field: 'style', choices: [] };
 }

@@ -40,7 +40,7 @@ const governingOf = ({ trail }: ResultPipe): TrailStep | undefined => trail.find
 
 /** The undersized pipes grouped by cause: modelled size, required size, load, clause, and which pipes they are. */
 export function undersizedText(result: Result): TextLine[] {
-  const groups = undersizedGroups(result);
+  const groups = alikeTogether(undersizedGroups(result));
   if (groups.length === 0) return [];
   const names = elementNames(result);
   const pipes = groups.reduce((sum, group) => sum + group.pipes.length, 0);
@@ -54,6 +54,22 @@ export function undersizedText(result: Result): TextLine[] {
       ? []
       : paragraph(`and ${counted(rest, 'smaller group')}; --json lists every pipe`, '      ', 'quiet')),
   ];
+}
+
+/** Single pipes that fall short alike, by the same row and load, are one line and not a page of them. Most pipes first. */
+function alikeTogether(groups: readonly UndersizedGroup[]): UndersizedGroup[] {
+  const merged = new Map<string, UndersizedGroup>();
+  for (const group of groups) {
+    const { pipes, root, governing, battery, cause } = group;
+    const { role, modelled, required, load } = root;
+    const isAlone = pipes.length === 1 && battery === null && governing !== null;
+    const key = isAlone
+      ? JSON.stringify([role, modelled?.label, required, load, governing.rule, governing.row, governing.asks?.label])
+      : cause;
+    const known = merged.get(key);
+    merged.set(key, known === undefined ? group : { ...known, pipes: [...known.pipes, ...pipes] });
+  }
+  return [...merged.values()].sort((a, b) => b.pipes.length - a.pipes.length);
 }
 
 const mostGroups = 12;

@@ -42,8 +42,14 @@ export function ventRules(tools: Tools): SizingRule[] {
   const mostBends = family.number('branch-vent-III-bends', 'count');
   const share = family.number('joined-vents-share', 'share');
   const bores = boresOf(tools);
+  // The table is one branch's own: where vents of several branches have met, its rows no longer count.
   const isOfBranch = ({ role, vent, drain }: PipeUse): boolean =>
-    vent !== null && drain === null && role !== 'idle' && !ofStack.has(role) && vent.load > noLoad;
+    vent !== null &&
+    vent.bends !== null &&
+    drain === null &&
+    role !== 'idle' &&
+    !ofStack.has(role) &&
+    vent.load > noLoad;
 
   /** A valve must let in so many times the flow; what it is rated for stands in no model, so it is told, not judged. */
   const valveFacts = (pipe: PipeUse, where: 'branch' | 'stack', flow: number) => {
@@ -123,7 +129,7 @@ export function ventRules(tools: Tools): SizingRule[] {
     });
   }
 
-  /** Stack vents that meet: not below the largest; in Germany half the sum of their areas as well. */
+  /** Vents that meet: not below the largest; in Germany half the sum of their areas as well. The standard says no more. */
   function joined(pipe: PipeUse, soFar: SizesSoFar): Step | undefined {
     if (pipe.drain !== null || pipe.role === 'idle') return undefined;
     const sizes = pipe.joining.flatMap((from) => soFar(from) ?? []);
