@@ -30,7 +30,7 @@ export function fixtureLoads(facts: FixtureFacts, scenario: Scenario): FixtureLo
     const sized = rows.map((row) => ({ row, ...trapOf(row, witnessed, facts.code.series) }));
     const candidates = sized.map((one) => ({ ...one, ...one.row.loadAt(one.trap) }));
     if (detail.flow !== undefined) return steadyLoad(facts.code, candidates, detail.flow, detail.intermittent === true);
-    const chosen = choose(candidates, scenario, kind === null);
+    const chosen = choose(candidates, scenario, kind === null, facts.code.series);
     const alike = candidates.every(
       (one) => one.load === chosen.load && one.trap === chosen.trap && one.row.closet === chosen.row.closet,
     );
@@ -48,12 +48,25 @@ interface Candidate {
 }
 
 /** Lightest and heaviest of what the fixture may be; an unidentified one is a closet only where the scenario says so. */
-function choose(rows: readonly Candidate[], scenario: Scenario, unidentified: boolean): Candidate {
+function choose(
+  rows: readonly Candidate[],
+  scenario: Scenario,
+  unidentified: boolean,
+  { rank }: SizeSeries,
+): Candidate {
   const byLoad = [...rows].sort((a, b) => a.load - b.load);
-  if (scenario === 'lightest') return byLoad[0]!;
+  if (scenario === 'lightest') return least(byLoad, rank);
   if (unidentified && scenario === 'closet') return byLoad.findLast(({ row }) => row.closet) ?? byLoad.at(-1)!;
   if (unidentified) return byLoad.findLast(({ row }) => !row.closet) ?? byLoad.at(-1)!;
   return byLoad.at(-1)!;
+}
+
+/** The least of everything it may be: the lightest load is not always the smallest trap (an emergency floor drain). */
+function least(byLoad: readonly Candidate[], rank: SizeSeries['rank']): Candidate {
+  const smallest = (sizes: readonly NominalSize[]): NominalSize => sizes.reduce((a, b) => (rank(b) < rank(a) ? b : a));
+  const first = byLoad[0]!;
+  const leastTrap = smallest(byLoad.map(({ row }) => row.leastTrap));
+  return { ...first, trap: smallest(byLoad.map(({ trap }) => trap)), row: { ...first.row, leastTrap } };
 }
 
 /** A stated flow stands for the load: counted as load where the code does so, else kept apart. */
