@@ -76,10 +76,28 @@ function mendChange(plan: Plan, index: ResultIndex, step: PlanStep): MendChange 
     kind: change.kind,
     about: ids(change.about),
     ...inWords(plan, change),
-    why: resultFinding(last, index, why).sentence,
+    why: [resultFinding(last, index, why).sentence, ...thenRead(plan, change)].join(' '),
     cost: points(cost),
     ...data(plan, index, change),
   };
+}
+
+/** What a vent makes of the row that it serves, where that is read another way with it. */
+function thenRead({ first, last }: Plan, change: Change): string[] {
+  if (!('added' in change)) return [];
+  const rows = change.added
+    .flatMap((element) => last.network.pipesOf.get(element) ?? [])
+    .flatMap((pipe) => last.shown.roles.uses[pipe]!.battery ?? []);
+  const row = rows[0];
+  if (row === undefined) return [];
+  const fixtures = row.facts.traps.map(({ fixture }) => last.paths.fixtures[fixture]!.element);
+  const before = first.shown.roles.batteries.find(({ facts }) =>
+    facts.traps.some(({ fixture }) => fixtures.includes(first.paths.fixtures[fixture]!.element)),
+  );
+  if (before === undefined || before.reading === row.reading) return [];
+  return [
+    `With the vent the row of ${fixtures.length} fixtures is a ${plainWords(row.reading)}, not a ${plainWords(before.reading)}.`,
+  ];
 }
 
 /** The finding that asks for it, else what follows from the other changes. */
@@ -101,7 +119,7 @@ function inWords(plan: Plan, change: Change): Pick<MendChange, 'from' | 'to'> {
     case 'slope':
       return {
         from: change.from === null ? null : slopeText(change.from),
-        to: `${slopeText(change.to)}: ${loweringText(change.lowered)}`,
+        to: `${slopeText(change.to)}${change.lowered === null ? '' : `: ${loweringText(change.lowered)}`}`,
       };
     case 'trap':
       return { from: `${lengthText(change.from)} from the fixture`, to: `${lengthText(change.to)} from the fixture` };
@@ -154,7 +172,7 @@ function data(plan: Plan, index: ResultIndex, change: Change): Pick<MendChange, 
         slope: {
           from: change.from === null ? null : roundMetres(change.from),
           to: roundMetres(change.to),
-          lowered: roundMetres(change.lowered),
+          lowered: change.lowered === null ? null : roundMetres(change.lowered),
         },
       };
     case 'trap':

@@ -105,7 +105,7 @@ function proofText({ before, after }: MendResult): TextLine[] {
           after.findings.map(({ code }) => plainWords(code)),
         )
           .map(([code, count]) => `${count} ${code}`)
-          .join(', ')}).`;
+          .join(', ')}); no change that the program knows settles ${after.errors === 1 ? 'it' : 'them'}.`;
   return paragraph(rest, '', after.errors === 0 ? 'good' : 'error');
 }
 

@@ -43,7 +43,7 @@ export interface MendChange {
   readonly cost: number;
   readonly size?: { readonly from: SizeLabel; readonly to: SizeLabel };
   readonly vent?: MendVent;
-  readonly slope?: { readonly from: number | null; readonly to: number; readonly lowered: number };
+  readonly slope?: { readonly from: number | null; readonly to: number; readonly lowered: number | null };
   readonly reading?: { readonly from: string; readonly to: string };
   readonly cleanout?: { readonly size: SizeLabel; readonly place: string };
 }

@@ -90,10 +90,10 @@ export function withCode(piping: Piping, code: PlumbingCode): Piping {
   return { ...piping, code, network: cutAtOutline(outline, identities, built.value, code.sewerBegins) };
 }
 
-/** Metres that the lower end of a pipe comes down, its upper end kept, when it is laid to a fall. */
-export function lowering(piping: Piping, pipe: PipeId, slope: number, up: JointId): number {
+/** Metres that the lower end of a pipe comes down, its upper end kept, when it is laid to a fall; null without geometry. */
+export function lowering(piping: Piping, pipe: PipeId, slope: number, up: JointId): number | null {
   const { points, ends } = piping.network.pipes[pipe]!;
-  if (points === null) return 0;
+  if (points === null) return null;
   const [first, last] = [points[0]!, points[points.length - 1]!];
   const drawn = ends[0] === up ? first[2] - last[2] : last[2] - first[2];
   return slope * planDistance(first, last) - drawn;

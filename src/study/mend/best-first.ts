@@ -41,7 +41,7 @@ export interface Searched {
   readonly best: Complete | null;
   /** No plan costs less. */
   readonly least: number;
-  /** Every combination that could cost less was tried. */
+  /** Every combination that could cost less was tried; without a plan: there is none. */
   readonly exact: boolean;
 }
 
@@ -75,7 +75,7 @@ class BestFirst {
       if (this.#task.budget.left <= 0) return { best: this.#best, least, exact: false };
       this.#expand(state);
     }
-    return { best: this.#best, least: this.#best?.cost ?? least, exact: this.#best !== null };
+    return { best: this.#best, least: this.#best?.cost ?? least, exact: true };
   }
 
   #expand(state: State): void {

@@ -36,8 +36,8 @@ export interface SlopeChange extends Common {
   readonly kind: 'slope';
   readonly from: number | null;
   readonly to: number;
-  /** Metres that the lower ends come down when the upper ends stay; negative: up. */
-  readonly lowered: number;
+  /** Metres that the lower ends come down when the upper ends stay; negative: up; null where the model has no geometry. */
+  readonly lowered: number | null;
 }
 
 export interface TrapChange extends Common {

@@ -85,7 +85,10 @@ function relayOptions(scene: Scene, pipes: readonly PipeId[], falls: readonly nu
         about,
         from: outcome.paths.slopes[first]!.slope,
         to,
-        lowered: pipes.reduce((sum, pipe) => sum + lowering(piping, pipe, to, up(pipe)), 0),
+        lowered: pipes.reduce<number | null>((sum, pipe) => {
+          const own = lowering(piping, pipe, to, up(pipe));
+          return sum === null || own === null ? null : sum + own;
+        }, 0),
         apply: (given) => withSlope(given, pipes, to, up),
       },
       pins: [],

@@ -38,6 +38,8 @@ class Searching {
   readonly #sizes: Task['first'];
   /** Errors that no known change settles, by key. */
   readonly #left = new Set<string>();
+  /** A place got no plan for want of runs. */
+  #gaveUp = false;
 
   constructor(first: Outcome, costs: Costs, budget: Budget) {
     this.budget = budget;
@@ -54,11 +56,12 @@ class Searching {
     const bounds = begun.made.length === 0 ? least : new Map<string, number>();
     const elsewhere = begun.made.length === 0 ? costElsewhere(begun.outcome!, this.#sizes, own, this.#costs) : 0;
     const sum = [...bounds.values()].reduce((all, one) => all + one, elsewhere);
-    if (known !== null && known.cost <= sum + tiny) return { ...known, least: known.cost, exact: true };
+    if (known !== null && known.cost <= sum + tiny) return { ...known, least: known.cost, exact: !this.#gaveUp };
     const task: Task = { ...this.#task(this.#root), least: bounds, elsewhere, known };
     const searched = bestFirst(task);
     const best = searched.best ?? this.#nothing();
-    return { ...best, least: searched.exact ? best.cost : searched.least, exact: searched.exact };
+    const exact = searched.exact && !this.#gaveUp;
+    return { ...best, least: exact ? best.cost : searched.least, exact };
   }
 
   #task = (root: State): Omit<Task, 'least' | 'elsewhere' | 'known'> => ({
@@ -124,8 +127,9 @@ class Searching {
       this.budget.left -= before - share.left;
       least.set(place, searched.best === null ? 0 : searched.least);
       if (searched.best !== null) plans.push(searched.best);
-      // No combination of what is known settles these: the other places still get their plan.
-      else for (const { key, mayStay } of own) if (!mayStay) this.#left.add(key);
+      // No combination of what is known settles these, or none was found in time: the other places still get their plan.
+      else this.#gaveUp ||= !searched.exact;
+      if (searched.best === null) for (const { key, mayStay } of own) if (!mayStay) this.#left.add(key);
     });
     return { plans, least, own: all };
   }
