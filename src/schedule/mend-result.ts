@@ -7,6 +7,7 @@ import type { Result } from './result.ts';
 import { elementName, resultFinding } from './result-findings.ts';
 import { type ResultIndex, resultIndex, roundMetres } from './result-index.ts';
 import { plainWords } from './trade-words.ts';
+import { ventedText } from './weigh-verdict.ts';
 
 /** The published plan. `result` is that of the building as it is modelled. */
 export function mendResult(plan: Plan, result: Result): MendResult {
@@ -31,14 +32,14 @@ export function mendResult(plan: Plan, result: Result): MendResult {
 }
 
 function searchOf({ exact, least, runs, cost, steps, left }: Plan): MendSearch {
-  const sentence =
-    steps.length === 0
-      ? left.length === 0
+  const open = `The search was broken off after ${runs} runs of all stages: a plan may exist that ${left.length > 0 ? 'settles more' : `costs less, from ${decimal(least, 1)} points on`}.`;
+  const proved =
+    steps.length > 0
+      ? 'No other combination of the changes that the program knows costs less.'
+      : left.length === 0
         ? 'No error to mend.'
-        : 'No change that the program knows settles these errors.'
-      : exact
-        ? 'No other combination of the changes that the program knows costs less.'
-        : `The search was broken off after ${runs} runs: a plan may exist that costs less, from ${decimal(least, 1)} on.`;
+        : 'No change that the program knows settles these errors.';
+  const sentence = exact ? proved : open;
   return { exact, least: points(Math.min(least, cost)), runs, sentence };
 }
 
@@ -96,7 +97,7 @@ function thenRead({ first, last }: Plan, change: Change): string[] {
   );
   if (before === undefined || before.reading === row.reading) return [];
   return [
-    `With the vent the row of ${fixtures.length} fixtures is a ${plainWords(row.reading)}, not a ${plainWords(before.reading)}.`,
+    `With the vent the row of ${fixtures.length} fixtures is ${ventedText(row.reading)}, not ${ventedText(before.reading)}.`,
   ];
 }
 

@@ -97,7 +97,7 @@ function titleOf(change: MendChange, nameOf: (globalId: string) => string): stri
   }
 }
 
-function proofText({ before, after }: MendResult): TextLine[] {
+function proofText({ before, after, search }: MendResult): TextLine[] {
   const rest =
     after.errors === 0
       ? 'The changed building was run through all stages: no error is left.'
@@ -105,7 +105,9 @@ function proofText({ before, after }: MendResult): TextLine[] {
           after.findings.map(({ code }) => plainWords(code)),
         )
           .map(([code, count]) => `${count} ${code}`)
-          .join(', ')}); no change that the program knows settles ${after.errors === 1 ? 'it' : 'them'}.`;
+          .join(
+            ', ',
+          )})${search.exact ? `; no change that the program knows settles ${after.errors === 1 ? 'it' : 'them'}` : ''}.`;
   return paragraph(rest, '', after.errors === 0 ? 'good' : 'error');
 }
 

@@ -42,7 +42,9 @@ describe('proposals on the elements that a plan concerns', () => {
     const { of } = setsOf(sampleText('school'));
     for (const name of ['S4.J8-S4.RV', 'S4.RV-S4.D', 'S4.VJ-S4.VE'])
       expect(of(name).get('ProposedVent'), name).toMatch(/^relief vent of 1 1\/2 in, 9\d\d mm/);
-    expect(of('S4.J8-S4.RV').get('Because')).toContain('With the vent the row of 8 fixtures is a circuit vent');
+    expect(of('S4.J8-S4.RV').get('Because')).toContain(
+      'With the vent the row of 8 fixtures is circuit vented, not wet vented.',
+    );
   });
   test('the building says what the plan does', () => {
     const { sets } = setsOf(sampleText('school'));
