@@ -22,7 +22,13 @@ describe('0 and 1: done', () => {
     expect({ code, stderr }).toEqual({ code: 1, stderr: '' });
     expect(stdout).toContain('Undersized');
   });
-  for (const args of [['size', '-o', 'out.ifc'], ['view', '-o', 'out.html'], ['survey']]) {
+  for (const args of [
+    ['size', '-o', 'out.ifc'],
+    ['mend'],
+    ['mend', '-o', 'mended.ifc'],
+    ['view', '-o', 'out.html'],
+    ['survey'],
+  ]) {
     test(`${args[0]} of the same ends with 0: it has done its work`, () => {
       const cwd = scratch();
       expect(drainwright([args[0] ?? '', wetVented, ...args.slice(1)], { cwd }).code).toBe(0);
