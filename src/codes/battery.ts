@@ -75,8 +75,9 @@ export interface WetLine {
   readonly upperStoreys: readonly { readonly storey: number; readonly load: Load }[];
   /** Level pieces between vertical ones. */
   readonly offsets: readonly { readonly length: number; readonly joined: boolean }[];
-  /** The line runs through a stack. */
+  /** The line runs through a stack; and how many of its pipes lie past or beside one. */
   readonly stack: boolean;
+  readonly offStack: number;
   /** Pipes of the line that are vertical and level, and the length of the whole in metres. */
   readonly vertical: number;
   readonly level: number;

@@ -167,6 +167,7 @@ export function wetLine(
     upperStoreys: upper.map((storey) => ({ storey, load: sum(all.filter((one) => one.storey === storey)) })),
     offsets: offsetsOf(context, line),
     stack: line.some((pipe) => inStack[pipe] !== null),
+    offStack: line.filter((pipe) => inStack[pipe] === null).length,
     vertical: line.filter((pipe) => paths.vertical[pipe] === true).length,
     level: line.filter((pipe) => paths.vertical[pipe] !== true).length,
     length: line.reduce((total, pipe) => total + stream.span(pipe), 0),

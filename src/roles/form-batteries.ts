@@ -20,8 +20,9 @@ export function formBatteries(
     .filter(({ traps }) => traps.some(({ through }) => through.length > 0));
   const batteries: Battery[] = [];
   for (const row of longestRows(context, drafts)) {
-    const judged = withoutFreeTraps(context, row, batteries.length);
-    if (judged === null) continue;
+    const whole = withoutFreeTraps(context, row, batteries.length);
+    if (whole === null) continue;
+    const judged = onStackAlone(context, row, whole);
     const word = answered(judged);
     if (word === null && judged.facts.word === null && !isRow(judged, onStacks.has(row.foot))) continue;
     batteries.push(word === null || word === judged.reading ? judged : readAs(judged, word));
@@ -35,6 +36,21 @@ export function formBatteries(
  */
 const isRow = ({ facts, broken }: Battery, footOnStack: boolean): boolean =>
   broken.length === 0 || (facts.traps.length > 1 && !facts.wet.stack && !footOnStack);
+
+/** Readings under which a stack is its own vent. */
+const ownVents: ReadonlySet<Reading> = new Set(['waste-stack-vent', 'single-stack']);
+
+/** A stack that is its own vent for the traps that join it keeps them, whatever joins the drain past its foot. */
+function onStackAlone(context: BatteryContext, draft: Draft, whole: Battery): Battery {
+  if (whole.broken.length === 0 || !whole.facts.wet.stack) return whole;
+  const traps = draft.traps.filter(({ armEnd }) => {
+    const out = armEnd === null ? null : (context.stream.outflow[armEnd] ?? null);
+    return out !== null && context.inStack[out] !== null;
+  });
+  if (traps.length === draft.traps.length || !traps.some(({ through }) => through.length > 0)) return whole;
+  const alone = judge(context, { ...draft, traps }, whole.facts.id);
+  return alone.broken.length === 0 && ownVents.has(alone.reading) ? alone : whole;
+}
 
 /** Every row as long as it holds; a foot that a longer row takes in makes no row of its own. In flow order. */
 function longestRows(context: BatteryContext, drafts: readonly Draft[]): Draft[] {

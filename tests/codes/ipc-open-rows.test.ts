@@ -113,6 +113,22 @@ describe('single stacks (917, R95, R96)', () => {
   });
 });
 
+test('a floor drain that joins the building drain past the foot stands on no stack: its trap has no vent (901.2.1)', () => {
+  const text = plainStack(times(3, sink)).replace(
+    '> OUT (east 9 fall 1:48)\nsewer OUT',
+    `> B (east 3 fall 1:48) > OUT (east 6 fall 1:48)
+sewer OUT
+on "Storey 1"
+trap TD from B north 0.6 rise 1:48, 2 in
+floor-drain FD from TD up 0.3, untrapped, trap 2 in
+drain 2 in: FD > TD > B`,
+  );
+  const done = run(text);
+  expect(done.fixture('FD').ventedBy.how).toBe('unvented');
+  expect(done.findings('unvented-trap').map(({ clause }) => clause)).toEqual(['901.2.1']);
+  expect(done.result.batteries.map(({ reading }) => reading)).toEqual(['waste-stack-vent']);
+});
+
 describe('combination waste and vent (915, R89 to R93)', () => {
   /** Floor drains on a level pipe whose dry vent stands past the last, which then drops to the building drain. */
   const floorDrains = (count: number, what = 'floor-drain, trap 2 in', slope = '1:48') =>

@@ -14,7 +14,7 @@ type Breaks = (facts: BatteryFacts) => Broken[];
 export function openReadings(tools: Tools): ReadingRule[] {
   return [
     { reading: 'common-vent', applies: isJointAndVent, broken: commonVentBelow(tools) },
-    { reading: 'waste-stack-vent', applies: ({ open, wet }) => open === null && wet.stack, broken: wasteStack(tools) },
+    { reading: 'waste-stack-vent', applies: isOnStack, broken: wasteStack(tools) },
     {
       reading: 'combination-waste-and-vent',
       applies: ({ open, wet }) => (open === null ? !wet.stack : open.end !== 'stack'),
@@ -22,11 +22,14 @@ export function openReadings(tools: Tools): ReadingRule[] {
     },
     {
       reading: 'single-stack',
-      applies: ({ open, wet }) => (open === null ? wet.stack : open.end === 'stack'),
+      applies: (facts) => isOnStack(facts) || facts.open?.end === 'stack',
       broken: singleStack(tools),
     },
   ];
 }
+
+/** Every trap joins the stack itself: one on the drain past its foot does not stand on it. */
+const isOnStack = ({ open, wet }: BatteryFacts): boolean => open === null && wet.stack && wet.offStack === 0;
 
 /** Two drains that run together, and a vent on what they have become. */
 const isJointAndVent = ({ open, traps, guests }: BatteryFacts): boolean =>

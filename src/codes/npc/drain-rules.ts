@@ -3,8 +3,9 @@ import { sizeForLoad } from '../../tables/find-size.ts';
 import { sizeAtSlope } from '../../tables/find-slope.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
 import { unitsOf } from '../../units/quantity.ts';
+import { closetFloor, noReduction, trapFloor } from '../rules/drain-floors.ts';
 import { floorStep, followStep, tableStep } from '../rules/steps.ts';
-import type { SizesSoFar, SizingRule, Step } from '../sizing-rule.ts';
+import type { SizingRule } from '../sizing-rule.ts';
 import type { Tools } from '../tools.ts';
 import type { PipeUse } from '../use.ts';
 
@@ -51,14 +52,7 @@ export function drainRules({ family, omit, settings }: Tools): SizingRule[] {
         });
       },
     },
-    {
-      id: 'NPC-R14-trap',
-      reads: 'use',
-      ask: (pipe) =>
-        pipe.trap === null || pipe.portion === 'outlet'
-          ? undefined
-          : followStep(rule('NPC-R14'), pipe.trap, { trap: pipe.trap, demand: 'trap' }),
-    },
+    trapFloor('NPC-R14-trap', rule('NPC-R14')),
     {
       id: 'NPC-R16',
       reads: 'use',
@@ -126,13 +120,9 @@ export function drainRules({ family, omit, settings }: Tools): SizingRule[] {
         return tableStep(rule('NPC-R19'), found, { ...loadFacts(pipe), ...slopeFacts(pipe), columnSlope: found.slope });
       },
     },
-    { id: 'NPC-R20', reads: 'sizes', ask: (pipe, soFar) => noReduction(pipe, soFar) },
-    {
-      id: 'NPC-R21',
-      reads: 'use',
-      ask: (pipe) =>
-        pipe.closets > 0 ? floorStep(rule('NPC-R21'), closetDrain, { closets: pipe.closets }) : undefined,
-    },
+    // Nor smaller than a vent that joins (2.4.9.1.).
+    noReduction(rule('NPC-R20'), family.series, 'drains and vents'),
+    closetFloor(rule('NPC-R21'), closetDrain),
     {
       id: 'NPC-R22',
       reads: 'use',
@@ -168,20 +158,4 @@ export function drainRules({ family, omit, settings }: Tools): SizingRule[] {
             : undefined,
     },
   ];
-
-  /** Not smaller than any drain that flows in, nor than any vent that joins (2.4.9.1.). */
-  function noReduction(pipe: PipeUse, soFar: SizesSoFar): Step | undefined {
-    let largest: { size: NominalSize; from: number; vent: boolean } | null = null;
-    const consider = (from: PipeUse['pipe'], vent: boolean): void => {
-      const size = soFar(from);
-      if (size !== null && (largest === null || rank(size) > rank(largest.size))) largest = { size, from, vent };
-    };
-    if (pipe.drain === null) return undefined;
-    for (const inflow of pipe.inflows) consider(inflow, false);
-    for (const vent of pipe.joining) consider(vent, true);
-    const found = largest as { size: NominalSize; from: number; vent: boolean } | null;
-    return found === null
-      ? undefined
-      : followStep(rule('NPC-R20'), found.size, { fromPipe: found.from, vent: found.vent });
-  }
 }

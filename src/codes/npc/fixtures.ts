@@ -1,55 +1,17 @@
-import {
-  allFixtureRows,
-  fixtureRowsFor,
-  loadAtTrap,
-  type FixtureRow as PrintedRow,
-  trapRange,
-  unlistedFixture,
-} from '../../tables/fixture-rows.ts';
 import type { Cell } from '../../tables/table.ts';
 import type { Load } from '../../units/quantity.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
-import type { FixtureRow, FixtureRows, FreeTrapFacts, GroupRule } from '../plumbing-code.ts';
+import type { FixtureRows, FreeTrapFacts, GroupRule } from '../plumbing-code.ts';
+import { fixtureRows } from '../rules/fixture-rows.ts';
 import type { Tools } from '../tools.ts';
 
 /** Loads of fixtures: Table 2.4.9.3., and Table 2.4.10.2. by trap where that says nothing (R08, R09, R11). */
-export function fixtureRows({ family }: Tools): FixtureRows {
-  const fixtures = family.table('fixtures');
-  const bind = (row: PrintedRow, kind: string | null): FixtureRow => {
-    const { least, largest } = trapRange(row, family);
-    return {
-      id: row.key,
-      title: row.title,
-      closet: kind === 'water-closet',
-      siphonic: kind === 'water-closet' || row.key === 'urinal-pedestal',
-      emergency: row.key === 'emergency-floor-drain',
-      leastTrap: least,
-      largestTrap: largest,
-      loadAt: (trap) => {
-        const cell = loadAtTrap(row, trap, family) ?? loadAtTrap(row, largest, family);
-        if (cell === null) throw new Error(`${family.code} has no load for ${row.key}`);
-        return { load: cell.value as Load, cell };
-      },
-    };
-  };
-  const unlisted = unlistedFixture(family);
-  const cache = new Map<string, readonly FixtureRow[]>();
-  return {
-    rowsFor: (kind, detail) => {
-      const key = [kind, ...Object.values(detail)].join('|');
-      const known = cache.get(key);
-      if (known !== undefined) return known;
-      const rows =
-        kind === null
-          ? allFixtureRows(family.kinds, fixtures).map((row) => bind(row, row.kind))
-          : fixtureRowsFor(family.kinds, fixtures, { kind, ...detail }).map((row) => bind(row, kind));
-      if (rows.length === 0 && unlisted !== null) rows.push(bind(unlisted, kind));
-      const sorted = rows.sort((a, b) => a.loadAt(a.leastTrap).load - b.loadAt(b.leastTrap).load);
-      cache.set(key, sorted);
-      return sorted;
-    },
-  };
-}
+export const fixtures = (tools: Tools): FixtureRows =>
+  fixtureRows(tools, {
+    columns: [{ load: 'load', outlet: 'outlet', facts: {} }],
+    isSiphonic: (key, kind) => kind === 'water-closet' || key === 'urinal-pedestal',
+    isEmergency: (key) => key === 'emergency-floor-drain',
+  });
 
 /** One closet, one domestic lavatory and one bathtub or single shower in one room (R07). */
 export function bathroomGroup({ family }: Tools): GroupRule {

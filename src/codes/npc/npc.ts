@@ -4,7 +4,7 @@ import type { CodeRules } from '../plumbing-code.ts';
 import type { Tools } from '../tools.ts';
 import { checks } from './checks.ts';
 import { drainRules } from './drain-rules.ts';
-import { bathroomGroup, fixtureRows, freeOfVent } from './fixtures.ts';
+import { bathroomGroup, fixtures, freeOfVent } from './fixtures.ts';
 import { countOnOneTrap } from './one-trap.ts';
 import { readings, whenNoneHolds } from './readings.ts';
 import { ventLength, ventRules } from './vent-rules.ts';
@@ -15,7 +15,7 @@ export function npc(tools: Tools): CodeRules {
   const { family } = tools;
   const arms = family.table('trap-arm');
   return {
-    fixtures: fixtureRows(tools),
+    fixtures: fixtures(tools),
     readings: readings(tools),
     whenNoneHolds: whenNoneHolds(tools),
     rules: [...drainRules(tools), ...wetVentRules(tools), ...ventRules(tools)],

@@ -5,7 +5,8 @@ import { unitsOf } from '../../units/quantity.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { VentLengthTo } from '../plumbing-code.ts';
 import type { Role } from '../role.ts';
-import { followStep, tableStep } from '../rules/steps.ts';
+import { followStep, pastTableStep, tableStep } from '../rules/steps.ts';
+import { noStepDown, shareOf } from '../rules/vent-sizes.ts';
 import type { SizesSoFar, SizingRule, Step } from '../sizing-rule.ts';
 import type { Tools } from '../tools.ts';
 import type { PipeUse } from '../use.ts';
@@ -81,7 +82,7 @@ export function ventRules({ family, omit, settings }: Tools): SizingRule[] {
         if (!byLength.has(pipe.role) && !asFollower) return undefined;
         const found = sizeForLength(lengthTable, 'load', vent.load, vent.length - coordinateMetres, { omit });
         const facts = { loadUnits: unitsOf(vent.load), lengthM: vent.length };
-        if (found === null) return pastTable(lengthRule(pipe), facts);
+        if (found === null) return pastTableStep(rule(lengthRule(pipe)), facts);
         return tableStep(rule(lengthRule(pipe)), found, { ...facts, row: found.row.name }, 'm');
       },
     },
@@ -95,7 +96,7 @@ export function ventRules({ family, omit, settings }: Tools): SizingRule[] {
         if (size === null) return undefined;
         const facts = { stackSize: size, loadUnits: unitsOf(vent.load), lengthM: vent.length };
         const found = inStackGroup(size, vent.load, vent.length - coordinateMetres);
-        if (found === null) return pastTable('NPC-R77', facts);
+        if (found === null) return pastTableStep(rule('NPC-R77'), facts);
         return tableStep(rule('NPC-R77'), found, { ...facts, row: found.row.name }, 'm');
       },
     },
@@ -107,7 +108,10 @@ export function ventRules({ family, omit, settings }: Tools): SizingRule[] {
         const size = soFar(pipe.vent.stack.foot);
         return size === null
           ? undefined
-          : followStep(rule('NPC-R77'), halfOf(size), { stackSize: size, demand: 'half the stack' });
+          : followStep(rule('NPC-R77'), shareOf(0.5, size, { series, sizes: stackTable.sizes, omit }), {
+              stackSize: size,
+              demand: 'half the stack',
+            });
       },
     },
     {
@@ -126,7 +130,7 @@ export function ventRules({ family, omit, settings }: Tools): SizingRule[] {
     },
     { id: 'NPC-R82', reads: 'sizes', ask: (pipe, soFar) => ofTank(pipe, soFar) },
     { id: 'NPC-R73', reads: 'sizes', ask: (pipe, soFar) => relief(pipe, soFar) },
-    { id: 'NPC-R74', reads: 'sizes', ask: (pipe, soFar) => noStepDown(pipe, soFar) },
+    noStepDown(rule('NPC-R74'), series, growsToSky),
     {
       id: 'NPC-R78',
       reads: 'sizes',
@@ -193,17 +197,6 @@ export function ventRules({ family, omit, settings }: Tools): SizingRule[] {
     return followStep(rule(id), oneSizeBelow(stackTable, size, series, omit) ?? size, facts);
   }
 
-  /** Not smaller than any vent that joins it on the way to the sky (2.5.7.2.). */
-  function noStepDown(pipe: PipeUse, soFar: SizesSoFar): Step | undefined {
-    if (!growsToSky.has(pipe.role) || pipe.drain !== null) return undefined;
-    let largest: { size: NominalSize; from: number } | null = null;
-    for (const from of pipe.joining) {
-      const size = soFar(from);
-      if (size !== null && (largest === null || rank(size) > rank(largest.size))) largest = { size, from };
-    }
-    return largest === null ? undefined : followStep(rule('NPC-R74'), largest.size, { fromPipe: largest.from });
-  }
-
   /**
    * The rows of the stack's size; a stack between printed sizes takes the next larger rows, and so does one whose rows end
    * below the load: other vents that join may bring more than a stack of that size may carry.
@@ -214,24 +207,5 @@ export function ventRules({ family, omit, settings }: Tools): SizingRule[] {
       if (found !== null) return found;
     }
     return null;
-  }
-
-  function halfOf(size: NominalSize): NominalSize {
-    const width = (one: NominalSize): number => series.sizes[rank(one)]!.lengthsMm[0]!;
-    const half = width(size) / 2;
-    return stackTable.sizes.find((one) => !omit.has(one) && width(one) >= half - 0.1) ?? size;
-  }
-
-  function pastTable(id: string, facts: Step['facts']): Step {
-    const { clause, trust } = rule(id);
-    return {
-      rule: id,
-      clause,
-      cell: null,
-      trust,
-      facts: { ...facts, pastTable: true },
-      asks: null,
-      provisional: false,
-    };
   }
 }

@@ -3,6 +3,7 @@ import type { RuleEntry } from '../../tables/rule-list.ts';
 import type { Table, Trust } from '../../tables/table.ts';
 import type { NominalSize, SizeSeries } from '../../units/nominal-size.ts';
 import { unitsOf } from '../../units/quantity.ts';
+import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { Role } from '../role.ts';
 import type { SizingRule, Step } from '../sizing-rule.ts';
 import type { PipeUse } from '../use.ts';
@@ -69,7 +70,7 @@ export function byStackTable(
   if (vent === null || vent.length === null) return undefined;
   const facts = { stackSize, loadUnits: unitsOf(vent.load), lengthM: vent.length };
   const group = { column: 'stack', size: printedStack(table, stackSize, series) };
-  const found = sizeForLength(table, 'load', vent.load, vent.length, { group, omit });
+  const found = sizeForLength(table, 'load', vent.load, vent.length - coordinateMetres, { group, omit });
   if (found === null) return pastTableStep(rule, facts);
   return tableStep(rule, found, { ...facts, row: found.row.name }, 'm');
 }

@@ -98,7 +98,8 @@ export function counts({ family }: Tools): FixtureCount[] {
     return rows.find((one) => one.size('trap').value === trap) ?? rows[0];
   };
   return [
-    { id: sixUnitTraps, takes: ({ row, load }) => !row.closet && load >= six.value },
+    // By its row: a flow that is stated for a fixture makes no larger trap of it.
+    { id: sixUnitTraps, takes: ({ row, trap }) => !row.closet && row.loadAt(trap).load >= six.value },
     { id: wideAfterArm, takes: (fixture) => rowOf(fixture)?.size('drain').value === after.value },
     { id: sudsMakers, takes: ({ kind }) => suds.has(kind) },
   ];

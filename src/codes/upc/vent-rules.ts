@@ -49,6 +49,9 @@ export function ventRules({ family, omit }: Tools): SizingRule[] {
   const isVent = (pipe: PipeUse): boolean =>
     pipe.vent !== null && !notByLoad.has(pipe.role) && pipe.drain === null && pipe.portion !== 'wet';
 
+  const groupFacts = ({ battery }: PipeUse): Step['facts'] =>
+    battery === null ? {} : { loadUnits: unitsOf(battery.facts.circuit.load) };
+
   return [
     {
       id: 'UPC-R57',
@@ -81,13 +84,17 @@ export function ventRules({ family, omit }: Tools): SizingRule[] {
       id: 'UPC-R53',
       reads: 'use',
       ask: (pipe) =>
-        isVent(pipe) && pipe.role === 'circuit-vent' ? floorStep(rule('UPC-R53'), circuitLeast, {}) : undefined,
+        isVent(pipe) && pipe.role === 'circuit-vent'
+          ? floorStep(rule('UPC-R53'), circuitLeast, groupFacts(pipe))
+          : undefined,
     },
     {
       id: 'UPC-R55-vent',
       reads: 'use',
       ask: (pipe) =>
-        isVent(pipe) && pipe.role === 'relief-vent' ? floorStep(rule('UPC-R55'), reliefLeast, {}) : undefined,
+        isVent(pipe) && pipe.role === 'relief-vent'
+          ? floorStep(rule('UPC-R55'), reliefLeast, groupFacts(pipe))
+          : undefined,
     },
     {
       // A relief vent is sized for the group of its circuit vent, whose traps breathe elsewhere.
