@@ -2,6 +2,7 @@ import { readdirSync, readFileSync, statSync } from 'node:fs';
 import { join, relative, sep } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { InputError } from '../findings/input-error.ts';
+import { jsonOf } from '../tables/read-json.ts';
 import type { TableSource } from '../tables/table-source.ts';
 import { reasonOf } from './system-errors.ts';
 
@@ -24,7 +25,7 @@ function tablesIn(folder: string, name: string): TableSource {
       paths ??= jsonFilesIn(folder, name);
       return paths;
     },
-    read: (path) => parsed(readTableFile(join(folder, path), `${name}/${path}`), `${name}/${path}`),
+    read: (path) => jsonOf(readTableFile(join(folder, path), `${name}/${path}`), `${name}/${path}`),
   };
 }
 
@@ -48,15 +49,5 @@ function readTableFile(path: string, where: string): string {
   } catch (error) {
     if (error instanceof TypeError) throw new InputError(where, 'is not UTF-8 text', { cause: error });
     throw new InputError(where, `cannot be read: ${reasonOf(error)}`, { cause: error });
-  }
-}
-
-function parsed(text: string, where: string): unknown {
-  try {
-    return JSON.parse(text);
-  } catch (error) {
-    throw new InputError(where, `is not JSON: ${error instanceof Error ? error.message : String(error)}`, {
-      cause: error,
-    });
   }
 }

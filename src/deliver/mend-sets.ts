@@ -1,9 +1,14 @@
-import type { PropertySetToWrite, PropertyToWrite, ValueToWrite } from '../model/property-set.ts';
+import {
+  labelToWrite,
+  type PropertySetToWrite,
+  type PropertyToWrite,
+  propertiesToWrite,
+  textToWrite,
+} from '../model/property-set.ts';
 import { elementRows } from '../schedule/element-rows.ts';
 import type { MendChange, MendResult } from '../schedule/mend.ts';
 import type { Result } from '../schedule/result.ts';
 import { sentence } from '../schedule/trade-words.ts';
-import { plainLabel } from '../tables/column-unit.ts';
 
 /**
  * What a plan writes into one file: a set on every element that a change concerns, with the change, the proposed size
@@ -32,16 +37,16 @@ function elementProperties(
   const slope = changes.find(({ change }) => change.slope !== undefined)?.change.slope;
   const reading = changes.find(({ change }) => change.reading !== undefined)?.change.reading;
   const vents = changes.flatMap(({ change: { vent, to } }) => (vent === undefined ? [] : [to]));
-  return present({
-    Change: text(changes.map(({ change: { kind, from, to } }) => words(kind, from, to)).join(' ')),
-    Step: label(changes.map(({ step }) => `${step} of ${plan.changes.length}`).join(', ')),
-    ModelledSize: size === undefined ? null : label(size.from.label),
-    ProposedSize: size === undefined ? null : label(size.to.label),
+  return propertiesToWrite({
+    Change: textToWrite(changes.map(({ change: { kind, from, to } }) => words(kind, from, to)).join(' ')),
+    Step: labelToWrite(changes.map(({ step }) => `${step} of ${plan.changes.length}`).join(', ')),
+    ModelledSize: size === undefined ? null : labelToWrite(size.from.label),
+    ProposedSize: size === undefined ? null : labelToWrite(size.to.label),
     ProposedSlope: slope === undefined ? null : { as: 'real', value: slope.to },
-    ProposedReading: reading === undefined ? null : label(reading.to),
-    ProposedVent: text(vents.join('; ')),
-    Because: text(changes.map(({ change }) => sentence(change.why)).join(' ')),
-    Code: label(plan.code.id),
+    ProposedReading: reading === undefined ? null : labelToWrite(reading.to),
+    ProposedVent: textToWrite(vents.join('; ')),
+    Because: textToWrite(changes.map(({ change }) => sentence(change.why)).join(' ')),
+    Code: labelToWrite(plan.code.id),
   });
 }
 
@@ -60,21 +65,13 @@ const words = (kind: MendChange['kind'], from: string | null, to: string): strin
   sentence(`${kinds[kind]}: ${from === null ? '' : `from ${from} `}${from === null ? '' : 'to '}${to}`);
 
 function planProperties({ changes, before, after, cost, search, code, caution }: MendResult): PropertyToWrite[] {
-  return present({
+  return propertiesToWrite({
     Changes: { as: 'integer', value: changes.length },
     ErrorsBefore: { as: 'integer', value: before.errors },
     ErrorsAfter: { as: 'integer', value: after.errors },
     Cost: { as: 'real', value: cost },
-    Search: text(search.sentence),
-    Code: label(code.id),
-    Caution: text(caution),
+    Search: textToWrite(search.sentence),
+    Code: labelToWrite(code.id),
+    Caution: textToWrite(caution),
   });
 }
-
-const present = (properties: Readonly<Record<string, ValueToWrite | null>>): PropertyToWrite[] =>
-  Object.entries(properties).flatMap(([name, value]) =>
-    value === null || value.value === '' ? [] : [{ name, value }],
-  );
-
-const label = (value: string): ValueToWrite => ({ as: 'label', value: plainLabel(value) });
-const text = (value: string): ValueToWrite => ({ as: 'text', value: plainLabel(value) });

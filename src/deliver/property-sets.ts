@@ -1,4 +1,11 @@
-import type { PropertySetToWrite, PropertyToWrite, ValueToWrite } from '../model/property-set.ts';
+import {
+  labelToWrite,
+  type PropertySetToWrite,
+  type PropertyToWrite,
+  propertiesToWrite,
+  textToWrite,
+  type ValueToWrite,
+} from '../model/property-set.ts';
 import { answerTexts } from '../schedule/answers-text.ts';
 import { demandText, governing, governingClauses } from '../schedule/demand-text.ts';
 import { elementNames } from '../schedule/element-names.ts';
@@ -47,34 +54,34 @@ function pipeProperties(
   const { least, most } = pipe.required ?? { least: null, most: null };
   const because = governing(pipe).map((step) => demandText(step, code.unit, nameOf));
   const length = (metres: number | undefined): ValueToWrite | null => lengthIn(metres, metresPerUnit);
-  return present({
-    Role: label(pipe.role),
-    AlsoRole: label(pipe.also.join(', ')),
-    Portion: label(pipe.portion ?? ''),
+  return propertiesToWrite({
+    Role: labelToWrite(pipe.role),
+    AlsoRole: labelToWrite(pipe.also.join(', ')),
+    Portion: labelToWrite(pipe.portion ?? ''),
     Load: real(pipe.load.most),
-    LoadUnit: label(code.unit),
+    LoadUnit: labelToWrite(code.unit),
     VentLoad: pipe.ventLoad === undefined ? null : real(pipe.ventLoad.most),
     DevelopedLength: length(pipe.developedLength),
     ModelledSize: sizeLabel(pipe.modelled),
     RequiredSize: sizeLabel(most),
     RequiredSizeLeast: differ(pipe.required) ? sizeLabel(least) : null,
     RequiredNominalDiameter: most === null ? null : nominalDiameter(most, metresPerUnit),
-    Verdict: label(pipe.verdict),
-    GoverningClause: label(governingClauses(pipe).join('; ')),
-    Because: text([...(pipe.reason === undefined ? [] : [pipe.reason]), ...because].join('. ')),
-    Code: label(code.id),
-    Edition: label(code.edition),
+    Verdict: labelToWrite(pipe.verdict),
+    GoverningClause: labelToWrite(governingClauses(pipe).join('; ')),
+    Because: textToWrite([...(pipe.reason === undefined ? [] : [pipe.reason]), ...because].join('. ')),
+    Code: labelToWrite(code.id),
+    Edition: labelToWrite(code.edition),
   });
 }
 
 function fixtureProperties(fixture: ResultFixture, unit: string, metresPerUnit: number): PropertyToWrite[] {
   const { kind, load, trapSize, ventedBy, trapArm } = fixture;
-  return present({
-    Kind: label(plainWords(kind ?? 'unidentified')),
+  return propertiesToWrite({
+    Kind: labelToWrite(plainWords(kind ?? 'unidentified')),
     Load: real(load.most),
-    LoadUnit: label(unit),
+    LoadUnit: labelToWrite(unit),
     TrapSize: sizeLabel(trapSize),
-    VentedBy: label(ventedBy.how),
+    VentedBy: labelToWrite(ventedBy.how),
     TrapArmLength: lengthIn(trapArm?.length, metresPerUnit),
     TrapArmLimit: lengthIn(trapArm?.limit, metresPerUnit),
   });
@@ -91,31 +98,24 @@ function modelProperties(result: Result, file: string): PropertyToWrite[] {
     ...(said.length > mostAnswers ? [`and ${said.length - mostAnswers} more`] : []),
   ];
   const count = (severity: string): number => findings.filter((finding) => finding.severity === severity).length;
-  return present({
-    Program: label(program.name),
-    Version: label(program.version),
-    Code: label(code.id),
-    Edition: label(code.edition),
-    InputSha256: label(sha256),
-    InputFiles: text((models ?? []).map((one) => `${one.file} ${one.sha256}`).join('; ')),
-    Answers: text(answers.join('; ')),
+  return propertiesToWrite({
+    Program: labelToWrite(program.name),
+    Version: labelToWrite(program.version),
+    Code: labelToWrite(code.id),
+    Edition: labelToWrite(code.edition),
+    InputSha256: labelToWrite(sha256),
+    InputFiles: textToWrite((models ?? []).map((one) => `${one.file} ${one.sha256}`).join('; ')),
+    Answers: textToWrite(answers.join('; ')),
     Errors: integer(count('error')),
     Warnings: integer(count('warning')),
     Undersized: integer(pipes.filter(({ verdict }) => verdict === 'undersized').length),
-    Caution: text(caution),
+    Caution: textToWrite(caution),
   });
 }
 
-const present = (properties: Readonly<Record<string, ValueToWrite | null>>): PropertyToWrite[] =>
-  Object.entries(properties).flatMap(([name, value]) =>
-    value === null || value.value === '' ? [] : [{ name, value }],
-  );
-
-const label = (value: string): ValueToWrite => ({ as: 'label', value: plainLabel(value) });
-const text = (value: string): ValueToWrite => ({ as: 'text', value: plainLabel(value) });
 const real = (value: number): ValueToWrite => ({ as: 'real', value });
 const integer = (value: number): ValueToWrite => ({ as: 'integer', value });
-const sizeLabel = (size: SizeLabel | null): ValueToWrite | null => (size === null ? null : label(size.label));
+const sizeLabel = (size: SizeLabel | null): ValueToWrite | null => (size === null ? null : labelToWrite(size.label));
 const differ = (range: SizeRange | null): boolean => range !== null && range.least?.label !== range.most?.label;
 
 function lengthIn(metres: number | null | undefined, metresPerUnit: number): ValueToWrite | null {

@@ -1,5 +1,4 @@
-const inch = 25.4;
-const vulgar: Readonly<Record<string, number>> = { '¼': 0.25, '½': 0.5, '¾': 0.75, '⅜': 0.375, '⅝': 0.625 };
+import { inchesOf, inchMm } from '../units/inches.ts';
 
 /**
  * The length in millimetres that a text such as `3"`, `1 1/2 in`, `DN 80`, `Ø 82,5` or `110 mm` says. `nominal` is true
@@ -23,9 +22,7 @@ function inches(text: string): Said[] {
   const pattern =
     /(?<![\d.,/])(?:(\d{1,2}(?:[.,]\d{1,3})?)(?:[ -]?(?:(\d)\/(\d)|([¼½¾⅜⅝])))?|(\d)\/(\d)|([¼½¾⅜⅝]))\s{0,2}(?:"|”|″|''|inch(?:es)?\b|in\b|po\b)/giu;
   return [...text.matchAll(pattern)].map(([, whole, top, bottom, sign, soloTop, soloBottom, soloSign]) => {
-    const base = whole === undefined ? 0 : decimal(whole);
-    const part = fraction(top ?? soloTop, bottom ?? soloBottom) + (vulgar[sign ?? soloSign ?? ''] ?? 0);
-    return { mm: (base + part) * inch, nominal: true };
+    return { mm: inchesOf(whole, top ?? soloTop, bottom ?? soloBottom, sign ?? soloSign) * inchMm, nominal: true };
   });
 }
 
@@ -45,5 +42,3 @@ function diameters(text: string): Said[] {
 }
 
 const decimal = (text: string): number => Number(text.replace(',', '.'));
-const fraction = (top: string | undefined, bottom: string | undefined): number =>
-  top === undefined || bottom === undefined || bottom === '0' ? 0 : Number(top) / Number(bottom);

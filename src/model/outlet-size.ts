@@ -1,7 +1,7 @@
+import { inchesOf, inchMm } from '../units/inches.ts';
 import type { Element, PropertyFact } from './model.ts';
 import type { NamesTable } from './names-table.ts';
 
-const inch = 25.4;
 /** A trap or outlet outside these is a slip or another quantity. */
 const least = 15;
 const most = 400;
@@ -27,7 +27,7 @@ function millimetres({ name, value, measure }: PropertyFact): number | null {
   if (typeof value !== 'number') return null;
   if (measure === 'length') return within(value * 1000);
   if (/\bmm\b/i.test(name.replaceAll(/[()_[\]]/g, ' '))) return within(value);
-  return within(value <= largestInches ? value * inch : value);
+  return within(value <= largestInches ? value * inchMm : value);
 }
 
 const within = (mm: number | null): number | null =>
@@ -40,15 +40,9 @@ function lengthIn(text: string): number | null {
     /^(?:(\d{1,2}(?:[.,]\d{1,3})?)?[ -]?(?:(\d)\/(\d)|([¼½¾]))?)\s?(?:"|”|″|''|in(?:ch(?:es)?)?|po)\.?$/iu.exec(short);
   if (inches !== null) {
     const [, whole, top, bottom, sign] = inches;
-    const part =
-      top !== undefined && bottom !== undefined && bottom !== '0'
-        ? Number(top) / Number(bottom)
-        : (vulgar[sign ?? ''] ?? 0);
-    const value = Number((whole ?? '0').replace(',', '.')) + part;
-    return value > 0 ? value * inch : null;
+    const value = inchesOf(whole, top, bottom, sign);
+    return value > 0 ? value * inchMm : null;
   }
   const metric = /^(?:DN|NW|Ø|⌀|OD|d)?\s?(\d{2,3}(?:[.,]\d{1,2})?)\s?(?:mm)?(?:\s?[øØ])?$/iu.exec(short);
   return metric === null ? null : Number(metric[1]?.replace(',', '.'));
 }
-
-const vulgar: Readonly<Record<string, number>> = { '¼': 0.25, '½': 0.5, '¾': 0.75 };

@@ -1,6 +1,6 @@
 import { InputError } from '../findings/input-error.ts';
 import { show } from '../tables/column-unit.ts';
-import { at, fieldsOf, numberAt, objectAt, oneOf, textAt, textsAt } from '../tables/read-json.ts';
+import { at, fieldsOf, jsonOf, numberAt, objectAt, oneOf, textAt, textsAt } from '../tables/read-json.ts';
 import type { Answers, FixtureAnswer, PipeAnswer, Settings } from './answers.ts';
 import type { FixtureKind } from './identity.ts';
 
@@ -20,7 +20,7 @@ const parts = ['questions', 'settings', 'sewerEnds', 'fixtures', 'pipes', 'batte
 
 /** Answers from the text of an answers file. `where` is its path; whatever is wrong is named at its place. */
 export function readAnswers(text: string, where: string): Answers {
-  const file = fieldsOf(answered(parsed(text, where)), where, ['format', 'version'], parts);
+  const file = fieldsOf(answered(jsonOf(text, where)), where, ['format', 'version'], parts);
   if (file.format !== answersFormat)
     throw new InputError(at(where, 'format'), `is ${show(file.format)}, expected "${answersFormat}"`);
   if (file.version !== 1) throw new InputError(at(where, 'version'), `is ${show(file.version)}, expected 1`);
@@ -41,16 +41,6 @@ export function readAnswers(text: string, where: string): Answers {
     leaveOut: texts('leaveOut'),
     cleanouts: texts('cleanouts'),
   };
-}
-
-function parsed(text: string, where: string): unknown {
-  try {
-    return JSON.parse(text);
-  } catch (error) {
-    throw new InputError(where, `is not JSON: ${error instanceof Error ? error.message : String(error)}`, {
-      cause: error,
-    });
-  }
 }
 
 /** Without what is still null: a question that nobody answered is as if it were not there. */

@@ -1,6 +1,6 @@
 import { InputError } from '../findings/input-error.ts';
 import { show, sizeIn } from '../tables/column-unit.ts';
-import { at, fieldsOf, numberAt, objectAt, textAt } from '../tables/read-json.ts';
+import { at, fieldsOf, jsonOf, numberAt, objectAt, textAt } from '../tables/read-json.ts';
 import type { SizeSeries } from '../units/nominal-size.ts';
 import type { WeighAlternative, WeighCosts, WeighFitting } from './weigh.ts';
 
@@ -19,7 +19,7 @@ const kinds: readonly WeighFitting['kind'][] = ['bend', 'junction', 'double-junc
 /** Prices from the text of a price file. `where` is its path; whatever is wrong is named at its place. */
 export function readPrices(text: string, where: string, series: SizeSeries): Prices {
   const optional = ['pipes', 'fittings', 'cleanouts', 'floorHoles'];
-  const file = fieldsOf(parsed(text, where), where, ['format', 'version', 'currency'], optional);
+  const file = fieldsOf(jsonOf(text, where), where, ['format', 'version', 'currency'], optional);
   if (file.format !== format)
     throw new InputError(at(where, 'format'), `is ${show(file.format)}, expected "${format}"`);
   if (file.version !== 1) throw new InputError(at(where, 'version'), `is ${show(file.version)}, expected 1`);
@@ -41,15 +41,6 @@ export function readPrices(text: string, where: string, series: SizeSeries): Pri
     cleanouts: bySize(file.cleanouts, at(where, 'cleanouts')),
     floorHoles: bySize(file.floorHoles, at(where, 'floorHoles')),
   };
-}
-
-function parsed(text: string, where: string): unknown {
-  try {
-    return JSON.parse(text);
-  } catch (error) {
-    const why = error instanceof Error ? error.message : String(error);
-    throw new InputError(where, `is not JSON: ${why}`, { cause: error });
-  }
 }
 
 /** Every quantity with a price times that price; the others are named. */

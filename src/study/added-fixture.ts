@@ -1,10 +1,11 @@
 import { pointAlong, polyline } from '../geometry/polyline.ts';
 import { add, type Vec3 } from '../geometry/vector.ts';
-import { type FixtureDetail, type FixtureKind, type Identity, noDetail } from '../model/identity.ts';
-import type { Element, ElementId } from '../model/model.ts';
+import type { FixtureDetail, FixtureKind } from '../model/identity.ts';
+import type { ElementId } from '../model/model.ts';
 import { addPipe } from '../network/change.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import type { Piping } from '../pipeline.ts';
+import { addedElement, addedIdentity } from './added-element.ts';
 
 export interface AddedFixture {
   readonly kind: FixtureKind;
@@ -14,6 +15,7 @@ export interface AddedFixture {
 /** Its arm to the pipe, metres: short enough for every trap, long enough for none to be too near its vent. */
 const arm = 0.45;
 const fall = 0.02;
+const evidence = 'what if';
 
 /** The piping with one more fixture, by a short arm to the middle of a pipe. It brings no vent with it. */
 export function withFixture(piping: Piping, pipe: PipeId, { kind, detail }: AddedFixture): Piping {
@@ -25,38 +27,15 @@ export function withFixture(piping: Piping, pipe: PipeId, { kind, detail }: Adde
   const outlet: Vec3 | null = middle === null ? null : add(middle, [...beside(points!, arm), arm * fall] as const);
   const storey = host === null ? null : model.elements[host]!.storey;
   const line: readonly Vec3[] | null = middle === null || outlet === null ? null : [outlet, middle];
-  const made = (id: ElementId, isPipe: boolean): Element => ({
-    id,
-    file: 0,
-    stepId: 0,
-    globalId: `added-${id}`,
-    ifcClass: isPipe ? 'IfcPipeSegment' : 'IfcSanitaryTerminal',
-    typeClass: null,
-    predefinedType: null,
-    kind: isPipe ? 'segment' : 'terminal',
-    name: isPipe ? `Drain of the added ${kind}` : `Added ${kind}`,
-    objectType: null,
-    description: null,
-    tag: null,
-    typeName: null,
-    typeDescription: null,
-    classifications: [],
-    systems: [],
-    storey,
-    space: null,
-    ports: [],
-    material: null,
-    origin: outlet,
-    centreLine:
-      isPipe && line !== null
-        ? { points: line, outerDiameter: null, innerDiameter: null, ground: 'axis', residual: 0 }
-        : null,
-    box: null,
-    sizes: [],
-    slopes: [],
-    statedLength: null,
-    properties: [],
-  });
+  const of = { storey, material: null, origin: outlet };
+  const elements = [
+    addedElement(fixture, { ...of, kind: 'fixture', name: `Added ${kind}`, axis: null }),
+    addedElement(branch, { ...of, kind: 'pipe', name: `Drain of the added ${kind}`, axis: line }),
+  ];
+  const identities = [
+    addedIdentity('fixture', 'sanitary', evidence, kind, detail),
+    addedIdentity('pipe', 'sanitary', evidence),
+  ];
   const joined = addPipe(network, {
     element: branch,
     ends: [{ open: outlet }, { pipe, at: length / 2 }],
@@ -66,8 +45,8 @@ export function withFixture(piping: Piping, pipe: PipeId, { kind, detail }: Adde
   const start: JointId = joined.network.pipes[joined.pipe]!.ends[0];
   return {
     ...piping,
-    model: { ...model, elements: [...model.elements, made(fixture, false), made(branch, true)] },
-    identities: [...piping.identities, identityOf('fixture', kind, detail), identityOf('pipe', null, {})],
+    model: { ...model, elements: [...model.elements, ...elements] },
+    identities: [...piping.identities, ...identities],
     network: {
       ...joined.network,
       joints: joined.network.joints.map((joint) => (joint.id === start ? { ...joint, elements: [fixture] } : joint)),
@@ -89,14 +68,3 @@ function beside(points: readonly Vec3[], far: number): readonly [number, number]
   const plan = Math.hypot(b[0] - a[0], b[1] - a[1]);
   return plan < 1e-6 ? [far, 0] : [(-(b[1] - a[1]) / plan) * far, ((b[0] - a[0]) / plan) * far];
 }
-
-const identityOf = (part: Identity['part'], kind: FixtureKind | null, detail: Partial<FixtureDetail>): Identity => ({
-  part,
-  kind,
-  detail: { ...noDetail, ...detail },
-  medium: 'sanitary',
-  evidence: 'what if',
-  weak: false,
-  outletMm: null,
-  reading: null,
-});

@@ -1,9 +1,10 @@
 import type { Vec3 } from '../geometry/vector.ts';
-import { type Identity, noDetail } from '../model/identity.ts';
-import { type Element, type ElementId, elementId, type Model, type StoreyId } from '../model/model.ts';
+import type { Identity } from '../model/identity.ts';
+import { type ElementId, elementId, type Model, type StoreyId } from '../model/model.ts';
 import { addPipe, type Place, removePipes } from '../network/change.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
+import { type Added, addedElement, addedIdentity } from './added-element.ts';
 
 /** The piping of a building with pipes taken away and pipes added, and where each of its pipes comes from. */
 export interface ChangedPiping {
@@ -70,7 +71,7 @@ export function withVent(piping: ChangedPiping, vent: NewVent): ChangedPiping {
 
 function withPipe(piping: ChangedPiping, vent: NewVent): { piping: ChangedPiping; joint: JointId } {
   const element = elementId(piping.model.elements.length);
-  const model: Model = { ...piping.model, elements: [...piping.model.elements, addedElement(element, vent)] };
+  const model: Model = { ...piping.model, elements: [...piping.model.elements, addedElement(element, pipeOf(vent))] };
   const { network, pipe } = addPipe(piping.network, {
     element,
     ends: [vent.from, vent.to],
@@ -84,7 +85,7 @@ function withPipe(piping: ChangedPiping, vent: NewVent): { piping: ChangedPiping
     piping: {
       ...piping,
       model,
-      identities: [...piping.identities, addedIdentity],
+      identities: [...piping.identities, addedIdentity('pipe', 'vent', 'added')],
       network,
       origin,
       added: [...piping.added, element],
@@ -100,46 +101,11 @@ function cutFrom(before: Network, after: Network, part: PipeId, { from, to }: Ne
   return cut.find((pipe) => before.pipes[pipe]!.ends[1] === far) ?? cut[0]!;
 }
 
-/** A pipe of no file: its GlobalId says so, and stands once in the model. */
-function addedElement(id: ElementId, { name, material, storey, points }: NewVent): Element {
-  return {
-    id,
-    file: 0,
-    stepId: 0,
-    globalId: `added-${id}`,
-    ifcClass: 'IfcPipeSegment',
-    typeClass: null,
-    predefinedType: null,
-    kind: 'segment',
-    name,
-    objectType: null,
-    description: null,
-    tag: null,
-    typeName: null,
-    typeDescription: null,
-    classifications: [],
-    systems: [],
-    storey,
-    space: null,
-    ports: [],
-    material,
-    origin: points[0]!,
-    centreLine: { points, outerDiameter: null, innerDiameter: null, ground: 'axis', residual: 0 },
-    box: null,
-    sizes: [],
-    slopes: [],
-    statedLength: null,
-    properties: [],
-  };
-}
-
-const addedIdentity: Identity = {
-  part: 'pipe',
-  kind: null,
-  detail: noDetail,
-  medium: 'vent',
-  evidence: 'added',
-  weak: false,
-  outletMm: null,
-  reading: null,
-};
+const pipeOf = ({ name, material, storey, points }: NewVent): Added => ({
+  kind: 'pipe',
+  name,
+  storey,
+  material,
+  origin: points[0]!,
+  axis: points,
+});

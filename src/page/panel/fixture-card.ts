@@ -3,8 +3,7 @@ import { kindName, named } from '../words/words.ts';
 import { copyButton, pipeButton } from './chips.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
-import { opener } from './finding-list.ts';
-import { findingSentence } from './finding-sentence.ts';
+import { findingsAbout } from './findings-about.ts';
 import { fixtureSymbol } from './fixture-symbol.ts';
 import { capital, fixtureName, shown } from './names.ts';
 
@@ -18,7 +17,6 @@ export function fixtureCard(desk: Desk, row: number): HTMLElement {
   const air = building.air(row);
   const hasAir = air.arm.length + air.through.length + air.dry.length > 0;
   const arm = fixture.trapArm;
-  const findings = building.findingsAbout.get(fixture.globalId) ?? [];
   const follow = (what: 'water' | 'air'): void => {
     store.set({ follow: { what, fixture: row, step: 0 }, view: 'model' });
     desk.scene?.frameWay();
@@ -90,27 +88,7 @@ export function fixtureCard(desk: Desk, row: number): HTMLElement {
       ),
       line('STEP', make('code', {}, `#${fixture.stepId}`)),
     ),
-    findings.length > 0 &&
-      make(
-        'section',
-        {},
-        make('h3', {}, words.pipe.about),
-        make(
-          'ul',
-          { class: 'finding-rows' },
-          ...findings.map((finding) => {
-            const open = opener(desk, finding);
-            const text = modelText(findingSentence(desk, finding));
-            return make(
-              'li',
-              {},
-              open === null
-                ? make('span', { class: 'finding-row' }, text)
-                : make('button', { type: 'button', class: 'finding-row', onclick: open }, text),
-            );
-          }),
-        ),
-      ),
+    findingsAbout(desk, fixture.globalId),
     water.length > 0 &&
       make(
         'section',

@@ -5,8 +5,7 @@ import { argument } from './argument.ts';
 import { copyButton, pipeButton, verdictMarks } from './chips.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
-import { opener } from './finding-list.ts';
-import { findingSentence } from './finding-sentence.ts';
+import { findingsAbout } from './findings-about.ts';
 import { batteryName, capital, pipeName, shown } from './names.ts';
 import { connectedRows, upstreamOf } from './neighbours.ts';
 import { users } from './users.ts';
@@ -25,7 +24,7 @@ export function pipeCard(desk: Desk, row: number): HTMLElement {
     argument(desk, pipe),
     users(desk, row),
     sections(desk, pipe),
-    findings(desk, pipe),
+    findingsAbout(desk, pipe.globalId),
     facts(desk, row, pipe),
   );
 }
@@ -114,31 +113,6 @@ function sections({ words, building }: Desk, pipe: ResultPipe): HTMLElement | nu
           ),
         ),
       ),
-    ),
-  );
-}
-
-function findings(desk: Desk, pipe: ResultPipe): HTMLElement | null {
-  const list = desk.building.findingsAbout.get(pipe.globalId) ?? [];
-  if (list.length === 0) return null;
-  return make(
-    'section',
-    {},
-    make('h3', {}, desk.words.pipe.about),
-    make(
-      'ul',
-      { class: 'finding-rows' },
-      ...list.map((finding) => {
-        const open = opener(desk, finding);
-        const text = modelText(findingSentence(desk, finding));
-        return make(
-          'li',
-          {},
-          open === null
-            ? make('span', { class: 'finding-row' }, text)
-            : make('button', { type: 'button', class: 'finding-row', onclick: open }, text),
-        );
-      }),
     ),
   );
 }
