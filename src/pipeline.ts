@@ -1,7 +1,8 @@
 import type { PlumbingCode } from './codes/plumbing-code.ts';
 import type { Finding } from './findings/finding.ts';
 import type { PlanPoint } from './geometry/plan-outline.ts';
-import { type FixtureFacts, fixtureLoads } from './loads/fixture-loads.ts';
+import type { FixtureFacts } from './loads/fixture-facts.ts';
+import { fixtureLoads } from './loads/fixture-loads.ts';
 import { loadPipes } from './loads/load-pipes.ts';
 import type { Scenario } from './loads/loads.ts';
 import { modelledSizes } from './loads/modelled-sizes.ts';

@@ -3,8 +3,9 @@ import type { JointId, PipeId } from '../network/network.ts';
 import type { FixtureId } from '../paths/paths.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Load } from '../units/quantity.ts';
-import type { FixtureRow } from './plumbing-code.ts';
-import type { Reading, StackUse } from './use.ts';
+import type { FixtureRow } from './fixture-row.ts';
+import type { Reading } from './reading.ts';
+import type { StackUse } from './stack-use.ts';
 
 /** Two or more traps on one wet line that breathe through one foot. Facts only: a code's readings judge them. */
 export interface BatteryFacts {

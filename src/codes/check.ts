@@ -4,7 +4,8 @@ import type { PipeId } from '../network/network.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Load } from '../units/quantity.ts';
 import type { Role } from './role.ts';
-import type { PipeUse, StackJoin } from './use.ts';
+import type { StackJoin } from './stack-use.ts';
+import type { PipeUse } from './use.ts';
 import type { TrapWay } from './way.ts';
 
 /** A demand of a code that is no size: a vent that must be there, an arm that is too long. */

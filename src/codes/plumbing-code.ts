@@ -8,9 +8,10 @@ import type { Load } from '../units/quantity.ts';
 import type { BatteryFacts, Broken, CircuitLine } from './battery.ts';
 import type { Check } from './check.ts';
 import type { CleanoutRules } from './cleanouts.ts';
+import type { FixtureRow, FixtureRows } from './fixture-row.ts';
+import type { Reading } from './reading.ts';
 import type { Role } from './role.ts';
 import type { SizingRule } from './sizing-rule.ts';
-import type { Reading } from './use.ts';
 import type { Carried, StackEntry, TrapWay } from './way.ts';
 
 /** One edition of one code, ready to size with: tables bound to rules. */
@@ -154,27 +155,6 @@ export interface EntryRule {
   readonly sweptUpTo: number;
   /** What the user says of those that the model does not tell; null: nothing, and sizes are given for both. */
   readonly said: StackEntry['shape'] | null;
-}
-
-export interface FixtureRow {
-  readonly id: string;
-  readonly title: string;
-  readonly closet: boolean;
-  /** Works by siphonage and carries its trap: the distance to its vent has limits of its own. */
-  readonly siphonic: boolean;
-  readonly emergency: boolean;
-  /** The code does not let the fixture be used; absent where it does. */
-  readonly refused?: true;
-  /** Least and largest trap that the row prints. */
-  readonly leastTrap: NominalSize;
-  readonly largestTrap: NominalSize;
-  /** Load on a trap of this size. */
-  loadAt(trap: NominalSize): { readonly load: Load; readonly cell: Cell };
-}
-
-export interface FixtureRows {
-  /** Rows that fit what is known of a fixture, lightest first; all rows of the code when the kind is null. */
-  rowsFor(kind: FixtureKind | null, detail: FixtureDetail): readonly FixtureRow[];
 }
 
 /** Fixtures of one kind side by side: from `least` of them on, each counts `each` on the drains they share. */

@@ -3,8 +3,10 @@ import type { FixtureId } from '../paths/paths.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Load } from '../units/quantity.ts';
 import type { BatteryFacts } from './battery.ts';
+import type { Reading } from './reading.ts';
 import type { DrainRole, Portion, Role } from './role.ts';
-import type { BranchReach, Carried, StackEntry, StatedUses } from './way.ts';
+import type { StackLeft, StackUse } from './stack-use.ts';
+import type { BranchReach, StatedUses } from './way.ts';
 
 /** Everything a sizing rule may know of one pipe, besides the sizes found so far. */
 export interface PipeUse {
@@ -74,64 +76,10 @@ export interface MainVentUse {
   readonly before: readonly PipeId[];
 }
 
-/** A stack, seen from one of its sections. */
-export interface StackUse {
-  readonly id: number;
-  /** The most that any one storey puts in above the foot of this section. */
-  readonly heaviestStorey: { readonly storey: number; readonly load: Load };
-  /** Last section before the drain: its size and load stand for the stack. */
-  readonly foot: PipeId;
-  readonly footLoad: Load;
-  /** Of everything that the whole stack carries. */
-  readonly footClosets: number;
-  readonly carries: Carried;
-  readonly footCounts: Readonly<Record<string, number>>;
-  /** Where drains join at or above the head of this section, highest first: height in metres, null without geometry. */
-  readonly joins: readonly StackJoin[];
-  /** The same of the whole stack. */
-  readonly allJoins: readonly StackJoin[];
-  /** Length of its vertical parts together, metres. */
-  readonly rise: number;
-  /** How the drains come in, from the top; absent where the code does not ask, and on vents. */
-  readonly entries?: readonly StackEntry[];
-  /** Where its vent stack leaves it, null: it has none; absent as above. */
-  readonly ventStack?: VentUse['leaves'];
-}
-
-/** One height at which drains come into a stack, and what they bring. */
-export interface StackJoin {
-  readonly height: number | null;
-  readonly load: Load;
-}
-
 export interface BatteryUse {
   readonly facts: BatteryFacts;
   readonly reading: Reading;
 }
-/** Ways to vent a row that may be drawn in place of one another. */
-export type SharedReading = 'wet-vent' | 'circuit-vent' | 'individual-vent';
-/** Those, and what only some codes know: each has its conditions in the code's own module. */
-export type Reading =
-  | SharedReading
-  | 'common-vent'
-  | 'waste-stack-vent'
-  | 'combination-waste-and-vent'
-  | 'single-stack'
-  | 'ventilated-branch';
-
-/** Written as a record so that a reading that is added cannot be forgotten. */
-const known: Readonly<Record<Reading, true>> = {
-  'wet-vent': true,
-  'circuit-vent': true,
-  'individual-vent': true,
-  'common-vent': true,
-  'waste-stack-vent': true,
-  'combination-waste-and-vent': true,
-  'single-stack': true,
-  'ventilated-branch': true,
-};
-export const isReading = (word: string | null | undefined): word is Reading =>
-  word !== null && word !== undefined && Object.hasOwn(known, word);
 
 export interface VentUse {
   /** Load that enters a vent table, what the code leaves out left out. */
@@ -173,7 +121,7 @@ export interface VentUse {
   /** Of an offset relief vent: which of the stack's offsets it stands beside, from the top. */
   readonly offset: number | null;
   /** Of a vent stack: where it leaves the stack. */
-  readonly leaves: 'foot' | 'drain' | 'above a branch' | null;
+  readonly leaves: StackLeft;
 }
 
 export type TankKind = 'sump' | 'interceptor' | 'manhole';

@@ -12,7 +12,7 @@ import { elementNames } from '../schedule/element-names.ts';
 import { elementRows } from '../schedule/element-rows.ts';
 import type { Result, ResultFixture, ResultPipe, SizeLabel, SizeRange } from '../schedule/result.ts';
 import { plainWords } from '../schedule/trade-words.ts';
-import { plainLabel } from '../tables/column-unit.ts';
+import { plainLabel } from '../tables/printed-value.ts';
 
 /** The file that the sets are for: its name in the result, and how many metres its length unit is. */
 export interface TargetFile {

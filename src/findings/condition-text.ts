@@ -1,8 +1,5 @@
-import type { SentenceFacts } from './sentences.ts';
+import { has, num, type SentenceFacts } from './sentence-facts.ts';
 
-const num = ({ facts }: SentenceFacts, key: string): number =>
-  typeof facts[key] === 'number' ? (facts[key] as number) : 0;
-const has = ({ facts }: SentenceFacts, key: string): boolean => facts[key] !== undefined && facts[key] !== null;
 const word = ({ facts }: SentenceFacts, key: string): string => String(facts[key] ?? '?').replaceAll('-', ' ');
 const units = (given: SentenceFacts, key: string): string => `${given.number(num(given, key))} ${given.unit}`;
 

@@ -1,26 +1,12 @@
 import { conditionText } from './condition-text.ts';
-import type { Facts, FindingCode } from './finding.ts';
-
-/** What a sentence is built from. Names and numbers come ready to print; `clause` carries its brackets or is empty. */
-export interface SentenceFacts {
-  readonly facts: Facts;
-  /** Names of the elements the finding is about, the thing at fault first. */
-  readonly about: readonly string[];
-  readonly clause: string;
-  readonly unit: string;
-  length(metres: number): string;
-  slope(value: number): string;
-  number(value: number): string;
-}
+import type { FindingCode } from './finding.ts';
+import { has, num, type SentenceFacts } from './sentence-facts.ts';
 
 type Sentence = (given: SentenceFacts) => string;
 
 const plain = (value: unknown): string => String(value).replaceAll('-', ' ');
-const num = ({ facts }: SentenceFacts, key: string): number =>
-  typeof facts[key] === 'number' ? (facts[key] as number) : 0;
 const text = ({ facts }: SentenceFacts, key: string): string =>
   facts[key] === null || facts[key] === undefined ? '?' : String(facts[key]);
-const has = ({ facts }: SentenceFacts, key: string): boolean => facts[key] !== undefined && facts[key] !== null;
 const first = ({ about }: SentenceFacts): string => about[0] ?? 'The model';
 const many = ({ about }: SentenceFacts, one: string, several: string): string =>
   about.length === 1

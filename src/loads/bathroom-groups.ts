@@ -3,7 +3,7 @@ import type { Vec3 } from '../geometry/vector.ts';
 import { keyMatches } from '../model/answer-keys.ts';
 import type { Space } from '../model/model.ts';
 import type { FixtureId, FixturePath } from '../paths/paths.ts';
-import type { FixtureFacts } from './fixture-loads.ts';
+import type { FixtureFacts } from './fixture-facts.ts';
 import type { BathroomGroup, FixtureLoad } from './loads.ts';
 
 /**

@@ -1,4 +1,4 @@
-import type { FixtureFacts } from './fixture-loads.ts';
+import type { FixtureFacts } from './fixture-facts.ts';
 import type { FixtureLoad } from './loads.ts';
 
 type Counts = Readonly<Record<string, number>>;

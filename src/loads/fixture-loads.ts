@@ -1,25 +1,14 @@
-import type { FixtureRow, PlumbingCode } from '../codes/plumbing-code.ts';
+import type { FixtureRow } from '../codes/fixture-row.ts';
+import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import { keyMatches } from '../model/answer-keys.ts';
-import type { Answers } from '../model/answers.ts';
-import type { Identity } from '../model/identity.ts';
-import type { ElementId, Model } from '../model/model.ts';
-import type { Network } from '../network/network.ts';
-import type { FixturePath, Paths } from '../paths/paths.ts';
+import type { ElementId } from '../model/model.ts';
+import type { FixturePath } from '../paths/paths.ts';
 import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
 import { noLoad } from '../units/quantity.ts';
+import type { FixtureFacts } from './fixture-facts.ts';
 import type { FixtureLoad, Scenario } from './loads.ts';
-import { type ModelledSize, readSize, sizeOfLength } from './read-size.ts';
+import { readSize, sizeOfLength } from './read-size.ts';
 import { countSharedTraps } from './shared-traps.ts';
-
-export interface FixtureFacts {
-  readonly model: Model;
-  readonly identities: readonly Identity[];
-  readonly network: Network;
-  readonly paths: Paths;
-  readonly code: PlumbingCode;
-  readonly answers: Answers;
-  readonly modelled: readonly ModelledSize[];
-}
 
 /** Row, trap and load of every fixture in one scenario, by fixture id. */
 export function fixtureLoads(facts: FixtureFacts, scenario: Scenario): FixtureLoad[] {

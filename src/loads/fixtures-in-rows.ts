@@ -1,7 +1,7 @@
 import type { Vec3 } from '../geometry/vector.ts';
 import type { FixtureId } from '../paths/paths.ts';
 import type { Load } from '../units/quantity.ts';
-import type { FixtureFacts } from './fixture-loads.ts';
+import type { FixtureFacts } from './fixture-facts.ts';
 import type { Bundle } from './loads.ts';
 
 /** Outlets this near to one another, metres, stand side by side: common practice, no source. */

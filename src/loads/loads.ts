@@ -1,4 +1,4 @@
-import type { FixtureRow } from '../codes/plumbing-code.ts';
+import type { FixtureRow } from '../codes/fixture-row.ts';
 import type { StatedUses } from '../codes/way.ts';
 import type { FixtureId } from '../paths/paths.ts';
 import type { Cell } from '../tables/table.ts';

@@ -1,7 +1,7 @@
 import type { JointId } from '../network/network.ts';
 import type { FixtureId } from '../paths/paths.ts';
 import { noLoad } from '../units/quantity.ts';
-import type { FixtureFacts } from './fixture-loads.ts';
+import type { FixtureFacts } from './fixture-facts.ts';
 import type { FixtureLoad } from './loads.ts';
 
 /**

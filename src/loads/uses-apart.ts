@@ -1,6 +1,6 @@
 import type { StatedUses } from '../codes/way.ts';
 import { type Load, noLoad, plusLoad } from '../units/quantity.ts';
-import type { FixtureFacts } from './fixture-loads.ts';
+import type { FixtureFacts } from './fixture-facts.ts';
 import type { FixtureLoad } from './loads.ts';
 
 const none: StatedUses = [];

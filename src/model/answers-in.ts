@@ -1,4 +1,4 @@
-import { sizeIn } from '../tables/column-unit.ts';
+import { sizeIn } from '../tables/printed-value.ts';
 import type { SizeSeries } from '../units/nominal-size.ts';
 import type { Answers } from './answers.ts';
 

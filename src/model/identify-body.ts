@@ -1,5 +1,5 @@
 import { type MediumSaid, mediumOfPiping } from './element-medium.ts';
-import type { IdentifyFacts } from './identify.ts';
+import type { IdentifyFacts } from './identify-facts.ts';
 import { type Identity, noDetail } from './identity.ts';
 import { judgeKind } from './judge-kind.ts';
 import { fixtureIdentity, type Identified, leftOut, turned } from './made-identity.ts';

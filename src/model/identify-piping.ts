@@ -1,6 +1,6 @@
 import { type MediumSaid, mediumOfPiping } from './element-medium.ts';
 import { textsOf } from './element-texts.ts';
-import type { IdentifyFacts } from './identify.ts';
+import type { IdentifyFacts } from './identify-facts.ts';
 import { type FixtureDetail, type Identity, noDetail, type Part } from './identity.ts';
 import { type Judgement, judgeKind } from './judge-kind.ts';
 import { fixtureIdentity, type Identified, piping, turned } from './made-identity.ts';

@@ -1,6 +1,6 @@
 import { type MediumSaid, mediumBySystems, mediumOfPiping } from './element-medium.ts';
 import { fixtureDetail } from './fixture-detail.ts';
-import type { IdentifyFacts } from './identify.ts';
+import type { IdentifyFacts } from './identify-facts.ts';
 import { type Identity, noDetail } from './identity.ts';
 import { enumerationOf, type Judgement, judgeKind } from './judge-kind.ts';
 import { fixtureIdentity, type Identified, leftOut, turned } from './made-identity.ts';

@@ -1,9 +1,10 @@
 import { type Finding, finding, type WithFindings } from '../findings/finding.ts';
 import { type AnswerBook, answerBook, answeredIdentity } from './answered-identity.ts';
 import type { Answers } from './answers.ts';
-import { type MediumSaid, mediaOfSystems } from './element-medium.ts';
+import { mediaOfSystems } from './element-medium.ts';
 import { flushFromBeside } from './flush-beside.ts';
 import { identifyBody } from './identify-body.ts';
+import type { IdentifyFacts } from './identify-facts.ts';
 import { identifyPiping } from './identify-piping.ts';
 import { identifyTerminal } from './identify-terminal.ts';
 import type { Identity } from './identity.ts';
@@ -12,14 +13,6 @@ import type { Identified } from './made-identity.ts';
 import type { Element, Model } from './model.ts';
 import type { NamesTable } from './names-table.ts';
 import { ventingOfSystems, ventingWord } from './venting-word.ts';
-
-/** What all elements of a model share while they are identified. */
-export interface IdentifyFacts {
-  readonly names: NamesTable;
-  /** By system id. */
-  readonly media: readonly (MediumSaid | null)[];
-  readonly venting: readonly (string | null)[];
-}
 
 /**
  * What each element is for the trade, by element id. Class before type before name, as the names table says; the user's

@@ -1,5 +1,5 @@
 import { InputError } from '../findings/input-error.ts';
-import { plainLabel, sizeIn } from '../tables/column-unit.ts';
+import { plainLabel, sizeIn } from '../tables/printed-value.ts';
 import { at } from '../tables/read-json.ts';
 import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
 import { keyMatches, wildcardMatches } from './answer-keys.ts';

@@ -1,4 +1,4 @@
-import { plainLabel } from '../tables/column-unit.ts';
+import { plainLabel } from '../tables/printed-value.ts';
 
 /**
  * A property set to be written on one occurrence. Numbers of `length` are in the file's own unit; `integer` is whole.

@@ -1,5 +1,5 @@
 import { InputError } from '../findings/input-error.ts';
-import { show } from '../tables/column-unit.ts';
+import { show } from '../tables/printed-value.ts';
 import { at, fieldsOf, jsonOf, numberAt, objectAt, oneOf, textAt, textsAt } from '../tables/read-json.ts';
 import type { Answers, FixtureAnswer, PipeAnswer, Settings } from './answers.ts';
 import type { FixtureKind } from './identity.ts';

@@ -7,7 +7,7 @@ import { keysOn } from './panel/keys.ts';
 import { fixtureName, pipeName } from './panel/names.ts';
 import { shell } from './panel/shell.ts';
 import { type Chosen, type Language, type PageState, storeOf } from './state.ts';
-import { wordsIn } from './words/words.ts';
+import { wordsIn } from './words/languages.ts';
 
 export interface PageAround {
   readonly language?: Language;

@@ -2,8 +2,8 @@ import type { Answers } from '../model/answers.ts';
 import type { Identity } from '../model/identity.ts';
 import type { Model } from '../model/model.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
+import type { Piece } from './connected-pieces.ts';
 import type { DrainSystem } from './paths.ts';
-import type { Piece } from './water.ts';
 
 export interface SewerEndFacts {
   readonly model: Model;

@@ -1,5 +1,4 @@
-import type { Finding } from '../findings/finding.ts';
-import { finding } from '../findings/finding.ts';
+import { type Finding, finding } from '../findings/finding.ts';
 import { planDistance } from '../geometry/vector.ts';
 import type { Answers } from '../model/answers.ts';
 import type { Identity } from '../model/identity.ts';
@@ -7,6 +6,7 @@ import type { ElementId, Model } from '../model/model.ts';
 import type { JointId, Network, Pipe, PipeId } from '../network/network.ts';
 import { coordinateMetres } from '../units/uncertainty.ts';
 import { cheapestWays } from './cheapest-ways.ts';
+import { connectedPieces } from './connected-pieces.ts';
 import type { DrainSystem, FixtureId, FixturePath } from './paths.ts';
 import { sewerEndOf } from './sewer-end.ts';
 
@@ -163,33 +163,4 @@ export function pipeRanks(model: Model, network: Network): Int32Array {
     rank[id] = place;
   });
   return rank;
-}
-
-export interface Piece {
-  readonly joints: readonly JointId[];
-  readonly pipes: readonly PipeId[];
-}
-
-/** Joints and pipes that hang together, by lowest joint. */
-export function connectedPieces(network: Network): Piece[] {
-  const seen = new Uint8Array(network.joints.length);
-  const pieces: Piece[] = [];
-  for (const { id } of network.joints) {
-    if (seen[id]) continue;
-    const joints: JointId[] = [id];
-    const pipes = new Set<PipeId>();
-    seen[id] = 1;
-    for (let at = 0; at < joints.length; at++) {
-      for (const pipe of network.joints[joints[at]!]!.pipes) {
-        pipes.add(pipe);
-        for (const end of network.pipes[pipe]!.ends) {
-          if (seen[end]) continue;
-          seen[end] = 1;
-          joints.push(end);
-        }
-      }
-    }
-    pieces.push({ joints: joints.sort((a, b) => a - b), pipes: [...pipes].sort((a, b) => a - b) });
-  }
-  return pieces;
 }

@@ -1,6 +1,8 @@
 import type { EntryRule, PlumbingCode } from '../codes/plumbing-code.ts';
+import { isReading, type Reading } from '../codes/reading.ts';
 import type { Role } from '../codes/role.ts';
-import { isReading, type PipeUse, type Reading, type StackUse, type TankKind, type VentUse } from '../codes/use.ts';
+import type { StackUse } from '../codes/stack-use.ts';
+import type { PipeUse, TankKind, VentUse } from '../codes/use.ts';
 import { type Finding, finding, type WithFindings } from '../findings/finding.ts';
 import type { PlanPoint } from '../geometry/plan-outline.ts';
 import type { Loads } from '../loads/loads.ts';
@@ -12,7 +14,7 @@ import type { JointId, Network, PipeId } from '../network/network.ts';
 import type { FixtureId, Paths, TrapAir } from '../paths/paths.ts';
 import { streamOf } from '../paths/stream.ts';
 import { airOfRows } from './battery-air.ts';
-import type { BatteryContext } from './battery-facts.ts';
+import type { BatteryContext } from './battery-context.ts';
 import { drainEnds, drainRoles } from './drain-roles.ts';
 import { type DryRole, dryRoles, ventTree } from './dry-roles.ts';
 import { freeTraps } from './feet.ts';

@@ -1,6 +1,6 @@
 import type { JointId, PipeId } from '../network/network.ts';
 import type { TrapAir } from '../paths/paths.ts';
-import type { BatteryContext } from './battery-facts.ts';
+import type { BatteryContext } from './battery-context.ts';
 import type { Battery, VentFoot } from './roles.ts';
 
 /**

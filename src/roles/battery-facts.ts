@@ -1,39 +1,10 @@
 import type { BatteryFacts, BatteryTrap, Guest, WetLine } from '../codes/battery.ts';
-import type { PlumbingCode } from '../codes/plumbing-code.ts';
-import type { Reading, TankKind } from '../codes/use.ts';
-import type { FixtureKind } from '../model/identity.ts';
 import type { JointId, PipeId } from '../network/network.ts';
-import type { FixtureId, TrapAir } from '../paths/paths.ts';
+import type { TrapAir } from '../paths/paths.ts';
 import { type Load, noLoad, plusLoad } from '../units/quantity.ts';
+import type { BatteryContext, Draft } from './battery-context.ts';
 import { circuitLine } from './circuit-line.ts';
-import type { FreeTrap } from './feet.ts';
-import { type Stack, type StackContext, stackUseAt } from './find-stacks.ts';
-
-export interface BatteryContext extends StackContext {
-  readonly code: PlumbingCode;
-  readonly stacks: readonly Stack[];
-  /** Pipe belongs to a stack, offsets included. By pipe id. */
-  readonly inStack: readonly (Stack | null)[];
-  /** A stack's foot lies upstream of the pipe. By pipe id. */
-  readonly stackAbove: readonly boolean[];
-  readonly free: readonly (FreeTrap | null)[];
-  /** Tank or manhole that stands at a joint. */
-  readonly tankAt: (joint: JointId) => TankKind | null;
-  readonly kindOf: (fixture: FixtureId) => FixtureKind | null;
-  /** Frequency factor of its use, where the user states one apart from the building's. */
-  readonly frequencyOf: (fixture: FixtureId) => number | null;
-  /** Joint with a live dry vent standing on it. By joint id. */
-  readonly live: (joint: JointId) => PipeId | null;
-  readonly wordOf: (fixtures: readonly FixtureId[], pipes: readonly PipeId[]) => Reading | null;
-}
-
-/** A battery as it is about to be judged: its foot, its traps, and feet further down its line that may belong to it. */
-export interface Draft {
-  readonly foot: JointId;
-  readonly traps: readonly TrapAir[];
-  /** Further feet on the line, in flow order: those of additional circuit vents, where it is circuit vented. */
-  readonly additional: readonly JointId[];
-}
+import { stackUseAt } from './find-stacks.ts';
 
 export function batteryFacts(context: BatteryContext, draft: Draft, id: number): BatteryFacts {
   const line = lineOf(context, draft);

@@ -2,7 +2,7 @@ import type { BatteryTrap, CircuitLine, Relief } from '../codes/battery.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import { planTurn } from '../paths/turns.ts';
 import { noLoad } from '../units/quantity.ts';
-import type { BatteryContext, Draft } from './battery-facts.ts';
+import type { BatteryContext, Draft } from './battery-context.ts';
 
 /** What a row looks like when it is circuit vented. */
 export function circuitLine(

@@ -1,9 +1,9 @@
+import type { Reading } from '../codes/reading.ts';
 import type { Role } from '../codes/role.ts';
 import { islandDescent } from '../codes/rules/island.ts';
-import type { Reading } from '../codes/use.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import type { FixtureId } from '../paths/paths.ts';
-import type { BatteryContext } from './battery-facts.ts';
+import type { BatteryContext } from './battery-context.ts';
 import type { Stack } from './find-stacks.ts';
 import type { Battery, VentFoot } from './roles.ts';
 import type { StackPlace } from './stack-joints.ts';

@@ -1,4 +1,4 @@
-import type { StackJoin, StackUse } from '../codes/use.ts';
+import type { StackJoin, StackUse } from '../codes/stack-use.ts';
 import { carriedBy } from '../loads/carried.ts';
 import type { Loads } from '../loads/loads.ts';
 import type { Network, PipeId } from '../network/network.ts';

@@ -1,6 +1,7 @@
-import type { Reading } from '../codes/use.ts';
+import type { Reading } from '../codes/reading.ts';
 import type { JointId, PipeId } from '../network/network.ts';
-import { type BatteryContext, batteryFacts, type Draft } from './battery-facts.ts';
+import type { BatteryContext, Draft } from './battery-context.ts';
+import { batteryFacts } from './battery-facts.ts';
 import { trapsByFoot } from './feet.ts';
 import { brokenUnder, judgeBattery, readAs } from './judge-battery.ts';
 import type { Battery } from './roles.ts';

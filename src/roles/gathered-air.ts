@@ -4,7 +4,7 @@ import type { PipeId } from '../network/network.ts';
 import type { FixtureId } from '../paths/paths.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Load } from '../units/quantity.ts';
-import type { BatteryContext } from './battery-facts.ts';
+import type { BatteryContext } from './battery-context.ts';
 import type { DryRole, VentTree } from './dry-roles.ts';
 import type { Stack } from './find-stacks.ts';
 import type { Battery, VentFoot } from './roles.ts';

@@ -1,6 +1,6 @@
 import type { BatteryFacts, Broken } from '../codes/battery.ts';
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
-import type { Reading } from '../codes/use.ts';
+import type { Reading } from '../codes/reading.ts';
 import type { Battery, ReadingGround } from './roles.ts';
 
 /** What a row breaks under one reading; null where the code knows no such reading of it. */

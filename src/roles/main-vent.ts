@@ -1,7 +1,7 @@
 import type { MainVentUse } from '../codes/use.ts';
 import type { PipeId } from '../network/network.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
-import type { BatteryContext } from './battery-facts.ts';
+import type { BatteryContext } from './battery-context.ts';
 import type { DryRole } from './dry-roles.ts';
 import type { Stack } from './find-stacks.ts';
 import type { VentFoot } from './roles.ts';

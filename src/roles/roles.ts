@@ -1,5 +1,6 @@
 import type { BatteryFacts, Broken } from '../codes/battery.ts';
-import type { PipeUse, Reading } from '../codes/use.ts';
+import type { Reading } from '../codes/reading.ts';
+import type { PipeUse } from '../codes/use.ts';
 import type { TrapWay } from '../codes/way.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import type { FixtureId, TrapAir } from '../paths/paths.ts';

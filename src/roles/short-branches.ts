@@ -1,5 +1,5 @@
 import { carriedBy } from '../loads/carried.ts';
-import type { BatteryContext } from './battery-facts.ts';
+import type { BatteryContext } from './battery-context.ts';
 import type { Venting } from './roles.ts';
 import type { TrapWays } from './trap-ways.ts';
 

@@ -1,5 +1,5 @@
 import type { JointId } from '../network/network.ts';
-import type { BatteryContext } from './battery-facts.ts';
+import type { BatteryContext } from './battery-context.ts';
 import type { Stack } from './find-stacks.ts';
 
 export interface StackPlace {

@@ -3,7 +3,7 @@ import type { BranchReach, TrapWay, Way } from '../codes/way.ts';
 import { dot, subtract, unit, type Vec3 } from '../geometry/vector.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import { pointsFrom } from '../paths/turns.ts';
-import type { BatteryContext } from './battery-facts.ts';
+import type { BatteryContext } from './battery-context.ts';
 
 export interface TrapWays {
   /** By fixture; null where the trap's water reaches nothing. */

@@ -1,6 +1,6 @@
 import type { VentLengthTo } from '../codes/plumbing-code.ts';
 import type { JointId, PipeId } from '../network/network.ts';
-import type { BatteryContext } from './battery-facts.ts';
+import type { BatteryContext } from './battery-context.ts';
 import type { DryRole, VentTree } from './dry-roles.ts';
 import type { Battery, VentFoot } from './roles.ts';
 import type { WetFoot } from './wet-feet.ts';

@@ -1,8 +1,9 @@
-import type { Reading, VentUse } from '../codes/use.ts';
+import type { Reading } from '../codes/reading.ts';
+import type { VentUse } from '../codes/use.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import { spaceTurn } from '../paths/turns.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
-import type { BatteryContext } from './battery-facts.ts';
+import type { BatteryContext } from './battery-context.ts';
 import type { DryRole, VentTree } from './dry-roles.ts';
 import { type Stack, stackUseAt } from './find-stacks.ts';
 import { type AirTotals, airTotals, followers, type Gathered, gatherAir } from './gathered-air.ts';

@@ -1,6 +1,6 @@
 import type { PipeId } from '../network/network.ts';
 import type { TrapAir } from '../paths/paths.ts';
-import type { BatteryContext } from './battery-facts.ts';
+import type { BatteryContext } from './battery-context.ts';
 import type { DryRole } from './dry-roles.ts';
 import type { Battery, VentFoot, Venting } from './roles.ts';
 

@@ -1,5 +1,5 @@
 import type { JointId, PipeId } from '../network/network.ts';
-import type { BatteryContext } from './battery-facts.ts';
+import type { BatteryContext } from './battery-context.ts';
 import type { Stack } from './find-stacks.ts';
 import type { VentFoot } from './roles.ts';
 import type { StackPlace } from './stack-joints.ts';

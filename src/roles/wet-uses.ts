@@ -1,9 +1,10 @@
 import type { BatteryFacts } from '../codes/battery.ts';
+import type { Reading } from '../codes/reading.ts';
 import type { DrainRole, Portion, Role, WetVentRole } from '../codes/role.ts';
-import type { PipeUse, Reading, StandIn } from '../codes/use.ts';
+import type { PipeUse, StandIn } from '../codes/use.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import { noLoad, plusLoad } from '../units/quantity.ts';
-import type { BatteryContext } from './battery-facts.ts';
+import type { BatteryContext } from './battery-context.ts';
 import type { Battery } from './roles.ts';
 import type { WetFoot } from './wet-feet.ts';
 

@@ -1,7 +1,7 @@
 import { demandText } from './demand-text.ts';
 import { type ElementNames, elementNames } from './element-names.ts';
-import type { NextSmaller } from './explain.ts';
 import { hydraulicsText } from './hydraulics-text.ts';
+import type { NextSmaller } from './next-smaller.ts';
 import { decimal, lengthText, limitText, loadText, sizeText, slopeText } from './number-text.ts';
 import { rangeStory } from './ranges-text.ts';
 import type { Result, ResultPipe } from './result.ts';

@@ -2,7 +2,8 @@ import { explainFixture } from './explain-fixture.ts';
 import { explainPipe } from './explain-pipe.ts';
 import type { Found } from './find-in-result.ts';
 import type { PipeMargin } from './margin.ts';
-import type { Result, ResultFixture, ResultPipe, SizeLabel, TrailStep } from './result.ts';
+import { type NextSmaller, nextSmallerOf } from './next-smaller.ts';
+import type { Result, ResultFixture, ResultPipe, SizeLabel } from './result.ts';
 import type { WhatIfResult } from './what-if.ts';
 
 /** `format: "drainwright-explain"`: everything about one pipe or fixture, as data and as sentences. */
@@ -26,11 +27,6 @@ export interface Explanation {
   readonly caution: string;
 }
 
-export interface NextSmaller {
-  readonly size: SizeLabel;
-  readonly fails: TrailStep;
-}
-
 /** `sizes` are those the code offers, smallest first. */
 export function explain(result: Result, found: Found, sizes: readonly SizeLabel[]): Explanation {
   const { model, models, code, caution } = result;
@@ -52,13 +48,4 @@ export function explain(result: Result, found: Found, sizes: readonly SizeLabel[
   }
   const nextSmaller = nextSmallerOf(found.pipe, sizes);
   return { ...head, pipe: found.pipe, story: explainPipe(result, found.pipe, nextSmaller), nextSmaller, caution };
-}
-
-/** null where no size is required, or none is smaller. */
-export function nextSmallerOf({ required, trail }: ResultPipe, sizes: readonly SizeLabel[]): NextSmaller | null {
-  const most = required?.most ?? null;
-  if (most === null) return null;
-  const size = sizes.filter(({ dn }) => dn < most.dn).at(-1);
-  const fails = trail.find(({ asks }) => asks === null || (size !== undefined && asks.dn > size.dn));
-  return size === undefined || fails === undefined ? null : { size, fails };
 }

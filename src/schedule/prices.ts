@@ -1,5 +1,5 @@
 import { InputError } from '../findings/input-error.ts';
-import { show, sizeIn } from '../tables/column-unit.ts';
+import { show, sizeIn } from '../tables/printed-value.ts';
 import { at, fieldsOf, jsonOf, numberAt, objectAt, textAt } from '../tables/read-json.ts';
 import type { SizeSeries } from '../units/nominal-size.ts';
 import type { WeighAlternative, WeighCosts, WeighFitting } from './weigh.ts';

@@ -1,7 +1,8 @@
 import { fixtureSymbolPath } from './fixture-symbols.ts';
-import type { Riser, RiserLine } from './riser.ts';
+import type { Riser } from './riser.ts';
 import type { Flat } from './riser-isometry.ts';
 import { type LabelBox, lineHeight, type PlacedRiser, type RiserLabel } from './riser-labels.ts';
+import type { RiserLine } from './riser-line.ts';
 import { type RiserSymbol, symbolSize } from './riser-symbols.ts';
 import { type SvgShape, shape, words } from './svg-shape.ts';
 

@@ -1,5 +1,5 @@
 import type { PipeId } from '../network/network.ts';
-import type { RiserSource } from './riser.ts';
+import type { RiserSource } from './riser-source.ts';
 
 export interface RiserPiece {
   readonly system: number | null;

@@ -1,6 +1,6 @@
 import type { Vec3 } from '../geometry/vector.ts';
 import type { JointId, PipeId } from '../network/network.ts';
-import type { RiserSource } from './riser.ts';
+import type { RiserSource } from './riser-source.ts';
 
 /**
  * Where each joint of these pipes stands on a drawing. As the model has it; a piece for which the model gives hardly

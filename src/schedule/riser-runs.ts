@@ -1,7 +1,8 @@
 import type { JointId, PipeId } from '../network/network.ts';
 import type { PipeState, Result } from './result.ts';
-import { type RiserLine, type RiserSource, stateOf } from './riser.ts';
 import type { Flat } from './riser-isometry.ts';
+import { type RiserLine, stateOf } from './riser-line.ts';
+import type { RiserSource } from './riser-source.ts';
 
 /** Pipes in a row that one label speaks for. */
 export interface RiserRun {

@@ -2,8 +2,8 @@ import type { Vec3 } from '../geometry/vector.ts';
 import type { ElementId } from '../model/model.ts';
 import type { JointId } from '../network/network.ts';
 import type { Result } from './result.ts';
-import type { RiserSource } from './riser.ts';
 import type { Flat, Isometry } from './riser-isometry.ts';
+import type { RiserSource } from './riser-source.ts';
 
 /** A mark on the drawing; a fixture's stands over its outlet, the others on their joint. */
 export interface RiserSymbol {

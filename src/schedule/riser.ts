@@ -1,30 +1,13 @@
 import type { Vec3 } from '../geometry/vector.ts';
-import type { JointId, Network, Pipe, PipeId } from '../network/network.ts';
-import type { Outcome } from '../verdicts/outcome.ts';
-import type { PipeState, Result, Verdict } from './result.ts';
+import type { JointId, Pipe } from '../network/network.ts';
+import type { PipeState, Result } from './result.ts';
 import { type Flat, isometry } from './riser-isometry.ts';
+import { type RiserLine, type RiserLook, stateOf } from './riser-line.ts';
 import { riserPieces } from './riser-pieces.ts';
 import { riserPlaces } from './riser-places.ts';
 import { labelRuns, type RiserRun } from './riser-runs.ts';
+import type { RiserSource } from './riser-source.ts';
 import { type RiserSymbol, riserSymbols } from './riser-symbols.ts';
-
-/** What a riser is drawn from. */
-export type RiserSource = Pick<Outcome, 'model' | 'network' | 'paths' | 'identities'>;
-
-/** How a line is drawn: drains whole, vents dashed, what is both with both. */
-export type RiserLook = 'drain' | 'vent' | 'both' | 'link';
-
-export interface RiserLine {
-  /** Pipe of the network. */
-  readonly section: PipeId;
-  /** Row of the result's pipes; -1 for a link between fittings. */
-  readonly pipe: number;
-  readonly look: RiserLook;
-  readonly verdict: Verdict | null;
-  /** Line width in drawing units. */
-  readonly width: number;
-  readonly points: readonly Flat[];
-}
 
 /** Where a stack passes a floor. */
 export interface RiserFloor {
@@ -99,18 +82,6 @@ function way(placeOf: (joint: JointId) => Vec3 | null, { ends, points }: Pipe): 
   const [a, b] = [placeOf(ends[0]), placeOf(ends[1])];
   const whole = [...(a === null ? [] : [a]), ...(points ?? []), ...(b === null ? [] : [b])];
   return whole.length < 2 ? null : whole;
-}
-
-/** The section's own state where an element is cut into sections as the network cuts it, else the element's. */
-export function stateOf(result: Result, network: Network, pipe: Pipe, row: number): PipeState | null {
-  const whole = result.pipes[row];
-  if (whole === undefined) return null;
-  const own = pipe.element === null ? [] : (network.pipesOf.get(pipe.element) ?? []);
-  const { sections } = whole;
-  if (sections === undefined) return whole;
-  if (sections.length === own.length) return sections[own.indexOf(pipe.id)] ?? whole;
-  const middle = (pipe.from + pipe.to) / 2;
-  return sections.find(({ from, to }) => middle >= from && middle <= to) ?? whole;
 }
 
 function lookOf({ paths }: RiserSource, pipe: Pipe, state: PipeState | null): RiserLook {

@@ -1,11 +1,11 @@
-import type { Reading } from '../codes/use.ts';
+import type { Reading } from '../codes/reading.ts';
 import { InputError } from '../findings/input-error.ts';
 import type { FixtureDetail, FixtureKind } from '../model/identity.ts';
 import { fixtureKinds } from '../model/identity-words.ts';
 import type { ElementId } from '../model/model.ts';
 import { slopeOfText } from '../model/slope-value.ts';
 import type { Edit } from '../study/what-if.ts';
-import { sizeIn } from '../tables/column-unit.ts';
+import { sizeIn } from '../tables/printed-value.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
 import type { Found } from './find-in-result.ts';
 import { slopeText } from './number-text.ts';

@@ -1,5 +1,5 @@
 import type { Broken } from '../codes/battery.ts';
-import type { Reading } from '../codes/use.ts';
+import type { Reading } from '../codes/reading.ts';
 import type { Finding, FindingCode } from '../findings/finding.ts';
 import type { ElementId } from '../model/model.ts';
 import { runNetwork } from '../pipeline.ts';

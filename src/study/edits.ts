@@ -1,5 +1,5 @@
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
-import type { Reading } from '../codes/use.ts';
+import type { Reading } from '../codes/reading.ts';
 import { planDistance } from '../geometry/vector.ts';
 import { fullId } from '../model/answer-keys.ts';
 import type { FixtureAnswer, PipeAnswer } from '../model/answers.ts';

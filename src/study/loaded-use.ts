@@ -1,5 +1,6 @@
 import type { BatteryFacts } from '../codes/battery.ts';
-import type { PipeUse, StackUse } from '../codes/use.ts';
+import type { StackUse } from '../codes/stack-use.ts';
+import type { PipeUse } from '../codes/use.ts';
 import type { Load } from '../units/quantity.ts';
 
 /** What is put on a pipe besides what it carries: load in sixtieths, fixtures, water closets among them. */

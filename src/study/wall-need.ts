@@ -1,6 +1,6 @@
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
-import type { WallBody } from '../verdicts/wall-bodies.ts';
+import type { WallBody } from '../verdicts/wall-body.ts';
 import { type HoleFit, holesIn, passesStuds, pipeWidth, wallFit } from '../verdicts/wall-fit.ts';
 import type { RowPiece } from './row-pieces.ts';
 

@@ -1,4 +1,4 @@
-import type { Reading, SharedReading } from '../codes/use.ts';
+import type { Reading, SharedReading } from '../codes/reading.ts';
 import type { Battery } from '../roles/roles.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
 import { type Attempt, asModelled, type Obstacle } from './attempt.ts';

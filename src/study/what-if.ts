@@ -1,6 +1,6 @@
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
+import type { Reading } from '../codes/reading.ts';
 import type { Role } from '../codes/role.ts';
-import type { Reading } from '../codes/use.ts';
 import type { Finding } from '../findings/finding.ts';
 import type { FixtureDetail, FixtureKind } from '../model/identity.ts';
 import type { ElementId } from '../model/model.ts';

@@ -1,6 +1,6 @@
 import { InputError } from '../findings/input-error.ts';
 import type { SizeSeries } from '../units/nominal-size.ts';
-import { show } from './column-unit.ts';
+import { show } from './printed-value.ts';
 import { at, fieldsOf, type JsonObject, listAt, objectAt, textAt } from './read-json.ts';
 import { readTable, trustWords } from './read-table.ts';
 

@@ -1,6 +1,6 @@
 import { InputError } from '../findings/input-error.ts';
 import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
-import { show, sizeIn } from './column-unit.ts';
+import { show, sizeIn } from './printed-value.ts';
 import { at, fieldsOf, type JsonObject, listAt, numberAt, objectAt, textAt, textsAt } from './read-json.ts';
 import type { Table } from './table.ts';
 

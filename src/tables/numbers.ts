@@ -1,14 +1,7 @@
 import { InputError } from '../findings/input-error.ts';
 import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
-import {
-  type ColumnUnit,
-  columnUnits,
-  convert,
-  type Dimension,
-  dimensionOf,
-  isColumnUnit,
-  show,
-} from './column-unit.ts';
+import { type ColumnUnit, columnUnits, type Dimension, dimensionOf, isColumnUnit } from './column-unit.ts';
+import { convert, show } from './printed-value.ts';
 import { at, fieldsOf, listAt, oneOf, textAt } from './read-json.ts';
 import { readOrigin, trustWords } from './read-table.ts';
 import type { Cell, TableOrigin } from './table.ts';

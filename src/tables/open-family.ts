@@ -1,10 +1,11 @@
 import { InputError } from '../findings/input-error.ts';
 import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
 import { type CodeFile, readCodeFile } from './code-file.ts';
-import { type Dimension, show } from './column-unit.ts';
+import type { Dimension } from './column-unit.ts';
 import { type Overlay, overList, overTable, readOverlay } from './edition-overlay.ts';
 import { type FixtureKinds, readKinds } from './fixture-kinds.ts';
 import { type LoneNumbers, readNumbers } from './numbers.ts';
+import { show } from './printed-value.ts';
 import { readTable } from './read-table.ts';
 import { type RuleEntry, readRules } from './rule-list.ts';
 import { readSettings, type SettingEntry } from './settings-file.ts';

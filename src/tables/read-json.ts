@@ -1,5 +1,5 @@
 import { InputError } from '../findings/input-error.ts';
-import { show } from './column-unit.ts';
+import { show } from './printed-value.ts';
 
 export type JsonObject = Readonly<Record<string, unknown>>;
 

@@ -2,16 +2,8 @@ import { InputError } from '../findings/input-error.ts';
 import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
 import { loadOf } from '../units/quantity.ts';
 import { checkOrder } from './check-order.ts';
-import {
-  type ColumnUnit,
-  columnUnits,
-  convert,
-  dimensionOf,
-  isColumnUnit,
-  show,
-  sizeIn,
-  slopeRun,
-} from './column-unit.ts';
+import { type ColumnUnit, columnUnits, dimensionOf, isColumnUnit } from './column-unit.ts';
+import { convert, show, sizeIn, slopeRun } from './printed-value.ts';
 import { at, fieldsOf, listAt, numberAt, objectAt, oneOf, textAt, textsAt } from './read-json.ts';
 import type { Amount, Cell, Column, LoadAtTrap, Row, Table, TableOrigin, Trust, Word } from './table.ts';
 

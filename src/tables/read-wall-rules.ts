@@ -1,6 +1,6 @@
 import { InputError } from '../findings/input-error.ts';
-import { show } from './column-unit.ts';
 import type { DimensionSeries, PipeDimensions } from './pipe-dimensions.ts';
+import { show } from './printed-value.ts';
 import { at, fieldsOf, listAt, numberAt, oneOf, textAt, textsAt } from './read-json.ts';
 import { trustWords } from './read-table.ts';
 import { placeOf, type TableSource } from './table-source.ts';

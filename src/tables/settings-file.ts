@@ -1,5 +1,5 @@
 import { InputError } from '../findings/input-error.ts';
-import { show } from './column-unit.ts';
+import { show } from './printed-value.ts';
 import { at, fieldsOf, listAt, oneOf, textAt } from './read-json.ts';
 import { trustWords } from './read-table.ts';
 import type { Trust } from './table.ts';

@@ -1,5 +1,5 @@
 import { InputError } from '../findings/input-error.ts';
-import { show } from './column-unit.ts';
+import { show } from './printed-value.ts';
 import { at, fieldsOf, listAt, numberAt, textAt, textsAt } from './read-json.ts';
 import type { Table } from './table.ts';
 

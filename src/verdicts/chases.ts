@@ -1,7 +1,7 @@
 import { grown } from '../geometry/box.ts';
 import { boxGrid } from '../geometry/box-grid.ts';
 import type { PlanPoint } from '../geometry/plan-outline.ts';
-import type { WallBody } from './wall-bodies.ts';
+import type { WallBody } from './wall-body.ts';
 
 /** Two walls that stand side by side no farther apart than this, metres, have a chase between them, not a room. */
 const widestChase = 0.6;

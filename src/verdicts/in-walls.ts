@@ -4,7 +4,8 @@ import { stretchesInside } from '../geometry/prism.ts';
 import type { Model } from '../model/model.ts';
 import type { Pipe } from '../network/network.ts';
 import type { WallRules } from '../tables/wall-rules.ts';
-import { type WallBody, wallBodies } from './wall-bodies.ts';
+import { wallBodies } from './wall-bodies.ts';
+import type { WallBody } from './wall-body.ts';
 
 /** A stretch of a pipe inside a wall. */
 export interface InWall {

@@ -1,28 +1,8 @@
 import type { PlanPoint } from '../geometry/plan-outline.ts';
-import type { Prism } from '../geometry/prism.ts';
 import type { Model, Wall } from '../model/model.ts';
 import type { LayerKind, WallRules } from '../tables/wall-rules.ts';
 import { chasesBetween, spanOf } from './chases.ts';
-
-/** A wall as piping meets it. */
-export interface WallBody {
-  readonly wall: Wall;
-  readonly prism: Prism;
-  /** Unit direction of its length in plan. */
-  readonly along: PlanPoint;
-  /** Metres. */
-  readonly thickness: number;
-  /** Room for pipe between its faces; null where it is solid. */
-  readonly cavity: Cavity | null;
-}
-
-export interface Cavity {
-  readonly depthMm: number;
-  /** From the wall's layers, or its thickness less a board on each face. */
-  readonly ground: 'layers' | 'thickness';
-  /** Studs that a level pipe has to pass; null where the cavity is clear, or nothing says. */
-  readonly framing: 'wood' | 'steel' | null;
-}
+import type { Cavity, WallBody } from './wall-body.ts';
 
 /** Walls in the order of the model, those whose shape nobody can tell left out; then the chases between two of them. */
 export function wallBodies({ walls }: Pick<Model, 'walls'>, rules: WallRules): WallBody[] {

@@ -2,7 +2,7 @@ import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import type { Stud } from '../tables/wall-rules.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { InWall } from './in-walls.ts';
-import type { Cavity } from './wall-bodies.ts';
+import type { Cavity } from './wall-body.ts';
 
 /** How wide a pipe is as made of its material. Millimetres; null where no source gives it. */
 export interface PipeWidth {

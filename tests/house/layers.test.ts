@@ -92,3 +92,25 @@ test('the core touches no host', () => {
     text.replace(/\/\*[\s\S]*?\*\/|\/\/.*$/gm, '').replace(/'[^'\n]*'|"[^"\n]*"/g, "''");
   expect(pure.filter((file) => impure.test(strip(readFileSync(join(src, file), 'utf8'))))).toEqual([]);
 });
+
+test('no file imports itself by way of others', () => {
+  const targets = new Map(
+    files.map((file) => [
+      file,
+      imports(readFileSync(join(src, file), 'utf8'))
+        .filter((target) => target.startsWith('.') && target.endsWith('.ts'))
+        .map((target) => relative(src, resolve(src, dirname(file), target))),
+    ]),
+  );
+  const done = new Set<string>();
+  const circles: string[] = [];
+  const follow = (file: string, way: readonly string[]): void => {
+    if (way.includes(file)) circles.push([...way.slice(way.indexOf(file)), file].join(' → '));
+    else if (!done.has(file)) {
+      for (const target of targets.get(file) ?? []) follow(target, [...way, file]);
+      done.add(file);
+    }
+  };
+  for (const file of files) follow(file, []);
+  expect(circles).toEqual([]);
+});

@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { nominalSize } from '../../src/units/nominal-size.ts';
-import type { Cavity } from '../../src/verdicts/wall-bodies.ts';
+import type { Cavity } from '../../src/verdicts/wall-body.ts';
 import { holesIn, passesStuds, pipeWidth, smallestStud, wallFit } from '../../src/verdicts/wall-fit.ts';
 import { codeOf, runSketch } from '../support/run-sketch.ts';
 

@@ -4,8 +4,9 @@ import type { PipeId } from '../../network/network.ts';
 import { unitsOf } from '../../units/quantity.ts';
 import type { Check, CheckedPipe, CheckedTrap, CheckFacts } from '../check.ts';
 import type { Tools } from '../tools.ts';
+import type { Breach } from './breach.ts';
 import { leastDrainSlope } from './drain-rules.ts';
-import { type Breach, isSteepEnough, leastGradient, reachOf } from './reach.ts';
+import { isSteepEnough, leastGradient, reachOf } from './reach.ts';
 import { isGerman, isLine, systemOf } from './system.ts';
 import { applianceTables } from './system-three.ts';
 

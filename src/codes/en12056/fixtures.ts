@@ -9,7 +9,8 @@ import {
 } from '../../tables/fixture-rows.ts';
 import type { Cell } from '../../tables/table.ts';
 import type { Load } from '../../units/quantity.ts';
-import type { FixtureRow, FixtureRows, SharedTrapRule } from '../plumbing-code.ts';
+import type { FixtureRow, FixtureRows } from '../fixture-row.ts';
+import type { SharedTrapRule } from '../plumbing-code.ts';
 import type { Tools } from '../tools.ts';
 import { isGerman, systemOf } from './system.ts';
 

@@ -6,16 +6,10 @@ import type { ShortBranchFacts } from '../plumbing-code.ts';
 import type { Tools } from '../tools.ts';
 import type { Way } from '../way.ts';
 import { branchTable } from './branch-tables.ts';
+import type { Breach } from './breach.ts';
 import { flowOf } from './flow.ts';
 import { isGerman, systemOf } from './system.ts';
 import { applianceTables } from './system-three.ts';
-
-/** What of a way its table does not allow. Metres, bends of 90 degrees, m/m. */
-export interface Breach {
-  readonly what: 'length' | 'bends' | 'drop' | 'slope' | 'steep' | 'group';
-  readonly value: number;
-  readonly limit: number;
-}
 
 /** How far a branch may reach: Tables 5 and 8, in Germany by size (R11, R13). Systems I, II and IV. */
 export function reachOf(tools: Tools): (way: Way, ventilated: boolean, size: NominalSize | null) => readonly Breach[] {

@@ -1,8 +1,9 @@
 import { sizeForLoad } from '../../tables/find-size.ts';
 import { followStep } from '../rules/steps.ts';
 import type { SizesSoFar, SizingRule, Step } from '../sizing-rule.ts';
+import type { StackUse } from '../stack-use.ts';
 import type { Tools } from '../tools.ts';
-import type { PipeUse, StackUse } from '../use.ts';
+import type { PipeUse } from '../use.ts';
 import type { StackEntry } from '../way.ts';
 import { flowOf } from './flow.ts';
 import { cellStep, flowStep } from './steps.ts';

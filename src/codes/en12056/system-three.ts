@@ -6,7 +6,7 @@ import type { SizingRule } from '../sizing-rule.ts';
 import type { Tools } from '../tools.ts';
 import type { PipeUse } from '../use.ts';
 import type { Carried, Way } from '../way.ts';
-import type { Breach } from './reach.ts';
+import type { Breach } from './breach.ts';
 import { cellStep } from './steps.ts';
 import { isLine, systemOf } from './system.ts';
 

@@ -1,7 +1,8 @@
 import type { FixtureKind } from '../../model/identity.ts';
 import type { Cell } from '../../tables/table.ts';
 import type { Load } from '../../units/quantity.ts';
-import type { FixtureRow, FixtureRows, GroupRule } from '../plumbing-code.ts';
+import type { FixtureRow, FixtureRows } from '../fixture-row.ts';
+import type { GroupRule } from '../plumbing-code.ts';
 import { type GroupSize, partBy } from '../rules/bathroom-parts.ts';
 import { fixtureRows } from '../rules/fixture-rows.ts';
 import { countBowlsOnce } from '../rules/one-trap.ts';

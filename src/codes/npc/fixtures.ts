@@ -1,7 +1,8 @@
 import type { Cell } from '../../tables/table.ts';
 import type { Load } from '../../units/quantity.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
-import type { FixtureRows, FreeTrapFacts, GroupRule } from '../plumbing-code.ts';
+import type { FixtureRows } from '../fixture-row.ts';
+import type { FreeTrapFacts, GroupRule } from '../plumbing-code.ts';
 import { fixtureRows } from '../rules/fixture-rows.ts';
 import type { Tools } from '../tools.ts';
 

@@ -4,8 +4,8 @@ import { noLoad, plusLoad, unitsOf } from '../../units/quantity.ts';
 import { coordinateMetres, turnDegrees } from '../../units/uncertainty.ts';
 import type { BatteryFacts, BatteryTrap, Broken } from '../battery.ts';
 import type { ReadingRule } from '../plumbing-code.ts';
+import type { Reading } from '../reading.ts';
 import type { Tools } from '../tools.ts';
-import type { Reading } from '../use.ts';
 
 /** Conditions of a wet vent (R43 to R50), a circuit vent (R53 to R63, R69) and individual vents (R36). */
 export function readings(tools: Tools): ReadingRule[] {

@@ -1,5 +1,5 @@
 import type { BatteryFacts, BatteryTrap, Guest } from '../battery.ts';
-import type { FixtureRow } from '../plumbing-code.ts';
+import type { FixtureRow } from '../fixture-row.ts';
 import { type BathroomPart, type GroupSize, groupsNeeded } from './bathroom-parts.ts';
 
 /** What keeps a wet vent to the fixtures of bathroom groups, as far as a row goes beyond it. */

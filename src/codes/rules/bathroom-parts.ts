@@ -1,4 +1,4 @@
-import type { FixtureRow } from '../plumbing-code.ts';
+import type { FixtureRow } from '../fixture-row.ts';
 
 export type BathroomPart = 'closet' | 'lavatory' | 'bath' | 'shower' | 'bidet' | 'emergency-drain';
 

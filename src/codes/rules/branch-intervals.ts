@@ -1,6 +1,6 @@
 import { type Load, plusLoad } from '../../units/quantity.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
-import type { StackJoin } from '../use.ts';
+import type { StackJoin } from '../stack-use.ts';
 
 export interface BranchInterval {
   /** Height of its highest connection, metres; null without geometry. */

@@ -8,7 +8,7 @@ import {
   unlistedFixture,
 } from '../../tables/fixture-rows.ts';
 import type { Load } from '../../units/quantity.ts';
-import type { FixtureRow, FixtureRows } from '../plumbing-code.ts';
+import type { FixtureRow, FixtureRows } from '../fixture-row.ts';
 import type { Tools } from '../tools.ts';
 
 /** Which columns of the fixture table hold, and the facts that go with them: one entry for each use that is open. */

@@ -1,7 +1,8 @@
 import type { FixtureKind } from '../../model/identity.ts';
 import { rowsHolding } from '../../tables/find-row.ts';
 import type { Load } from '../../units/quantity.ts';
-import type { CountedFixture, FixtureCount, FixtureRows, PlumbingCode, RowLoadRule } from '../plumbing-code.ts';
+import type { FixtureRows } from '../fixture-row.ts';
+import type { CountedFixture, FixtureCount, PlumbingCode, RowLoadRule } from '../plumbing-code.ts';
 import { type GroupSize, partBy } from '../rules/bathroom-parts.ts';
 import { fixtureRows } from '../rules/fixture-rows.ts';
 import { countBowlsOnce } from '../rules/one-trap.ts';

@@ -2,10 +2,10 @@ import { type Load, unitsOf } from '../../units/quantity.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { BatteryFacts, Broken } from '../battery.ts';
 import type { ReadingRule } from '../plumbing-code.ts';
+import type { Reading } from '../reading.ts';
 import { bathroomFaults } from '../rules/bathroom-conditions.ts';
 import { circuitConditions } from '../rules/circuit-conditions.ts';
 import type { Tools } from '../tools.ts';
-import type { Reading } from '../use.ts';
 import { groupSize, partOf } from './fixtures.ts';
 
 type Breaks = (facts: BatteryFacts) => Broken[];

@@ -3,7 +3,7 @@ import { make } from '../panel/element.ts';
 import { shown } from '../panel/names.ts';
 import type { Language } from '../state.ts';
 import { type DeskWords, deskWords } from '../words/desk-words.ts';
-import { wordsIn } from '../words/words.ts';
+import { wordsIn } from '../words/languages.ts';
 import { type Stage, stages } from './messages.ts';
 
 export interface DropActions {

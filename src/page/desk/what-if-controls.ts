@@ -3,7 +3,8 @@ import type { Building } from '../building.ts';
 import { make } from '../panel/element.ts';
 import type { Chosen, Language } from '../state.ts';
 import { deskWords } from '../words/desk-words.ts';
-import { kindName, named, wordsIn } from '../words/words.ts';
+import { wordsIn } from '../words/languages.ts';
+import { kindName, named } from '../words/words.ts';
 import type { DeskEdit } from './messages.ts';
 
 const readings = ['wet-vent', 'circuit-vent', 'individual-vent'] as const;

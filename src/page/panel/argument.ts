@@ -1,4 +1,4 @@
-import { type NextSmaller, nextSmallerOf } from '../../schedule/explain.ts';
+import { type NextSmaller, nextSmallerOf } from '../../schedule/next-smaller.ts';
 import type { ResultPipe, TrailStep } from '../../schedule/result.ts';
 import { limitText, oneSize, sizeText } from '../format.ts';
 import { ruleName, type Words } from '../words/words.ts';

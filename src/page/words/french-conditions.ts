@@ -1,4 +1,5 @@
-import { type FrenchFacts, has, num, text } from './french-facts.ts';
+import { has, num } from '../../findings/sentence-facts.ts';
+import { type FrenchFacts, text } from './french-facts.ts';
 import { frenchAmericanCondition } from './french-more-conditions.ts';
 
 /** The condition of a reading that a group breaks, in French; the same facts as its English words. */

@@ -1,4 +1,4 @@
-import type { SentenceFacts } from '../../findings/sentences.ts';
+import type { SentenceFacts } from '../../findings/sentence-facts.ts';
 
 /** What a French sentence is built from: besides numbers also roles and kinds by their French names. */
 export interface FrenchFacts extends SentenceFacts {
@@ -7,13 +7,6 @@ export interface FrenchFacts extends SentenceFacts {
   /** Sizes as `4 po`. */
   size(text: string): string;
 }
-
-export const num = ({ facts }: SentenceFacts, key: string): number => {
-  const value = facts[key];
-  return typeof value === 'number' ? value : 0;
-};
-
-export const has = ({ facts }: SentenceFacts, key: string): boolean => facts[key] !== undefined && facts[key] !== null;
 
 export const text = (given: FrenchFacts, key: string): string => {
   const value = given.facts[key];

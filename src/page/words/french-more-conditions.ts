@@ -1,4 +1,5 @@
-import { type FrenchFacts, has, num, text } from './french-facts.ts';
+import { has, num } from '../../findings/sentence-facts.ts';
+import { type FrenchFacts, text } from './french-facts.ts';
 
 const kinds = (f: FrenchFacts, key: string): string =>
   text(f, key)

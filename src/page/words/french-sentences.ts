@@ -1,7 +1,7 @@
 import type { FindingCode } from '../../findings/finding.ts';
-import type { SentenceFacts } from '../../findings/sentences.ts';
+import { has, num, type SentenceFacts } from '../../findings/sentence-facts.ts';
 import { frenchCondition } from './french-conditions.ts';
-import { type FrenchFacts, has, num, text } from './french-facts.ts';
+import { type FrenchFacts, text } from './french-facts.ts';
 
 type Sentence = (given: FrenchFacts) => string;
 

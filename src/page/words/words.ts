@@ -1,6 +1,4 @@
 import type { Language } from '../state.ts';
-import { english } from './english.ts';
-import { french } from './french.ts';
 import type { PanelWords } from './panel-words.ts';
 
 /** Every word of the page in one language. Names of roles, kinds, findings and rules fall back to the id in plain words. */
@@ -171,8 +169,6 @@ export interface Words extends PanelWords {
   readonly limits: Readonly<Record<string, string>>;
   readonly phrases: Readonly<Record<string, string>>;
 }
-
-export const wordsIn = (language: Language): Words => (language === 'fr' ? french : english);
 
 /** An id as its language names it; unknown ids stand as plain words, so nothing is lost when a code adds its own. */
 export const named = (names: Readonly<Record<string, string>>, id: string): string =>

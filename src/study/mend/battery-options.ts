@@ -1,5 +1,5 @@
 import type { BatteryTrap } from '../../codes/battery.ts';
-import type { Reading } from '../../codes/use.ts';
+import type { Reading } from '../../codes/reading.ts';
 import type { Finding } from '../../findings/finding.ts';
 import type { JointId } from '../../network/network.ts';
 import type { FixtureId } from '../../paths/paths.ts';

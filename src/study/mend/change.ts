@@ -1,4 +1,4 @@
-import type { Reading } from '../../codes/use.ts';
+import type { Reading } from '../../codes/reading.ts';
 import type { Finding } from '../../findings/finding.ts';
 import type { Vec3 } from '../../geometry/vector.ts';
 import type { ElementId } from '../../model/model.ts';

@@ -1,5 +1,5 @@
 import { InputError } from '../../findings/input-error.ts';
-import { show } from '../../tables/column-unit.ts';
+import { show } from '../../tables/printed-value.ts';
 import { at, fieldsOf, jsonOf, numberAt } from '../../tables/read-json.ts';
 
 /** What a change costs, in points of effort that only compare plans with each other. All are printed with a plan. */

@@ -1,0 +1,25 @@
+import type { FixtureDetail, FixtureKind } from '../model/identity.ts';
+import type { Cell } from '../tables/table.ts';
+import type { NominalSize } from '../units/nominal-size.ts';
+import type { Load } from '../units/quantity.ts';
+
+export interface FixtureRow {
+  readonly id: string;
+  readonly title: string;
+  readonly closet: boolean;
+  /** Works by siphonage and carries its trap: the distance to its vent has limits of its own. */
+  readonly siphonic: boolean;
+  readonly emergency: boolean;
+  /** The code does not let the fixture be used; absent where it does. */
+  readonly refused?: true;
+  /** Least and largest trap that the row prints. */
+  readonly leastTrap: NominalSize;
+  readonly largestTrap: NominalSize;
+  /** Load on a trap of this size. */
+  loadAt(trap: NominalSize): { readonly load: Load; readonly cell: Cell };
+}
+
+export interface FixtureRows {
+  /** Rows that fit what is known of a fixture, lightest first; all rows of the code when the kind is null. */
+  rowsFor(kind: FixtureKind | null, detail: FixtureDetail): readonly FixtureRow[];
+}
