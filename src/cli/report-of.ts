@@ -1,5 +1,7 @@
 import { extname } from 'node:path';
+import { bcf } from '../deliver/bcf.ts';
 import { InputError } from '../findings/input-error.ts';
+import { fileOrigin } from '../ifc/file-origin.ts';
 import { jsonText } from '../schedule/json-text.ts';
 import { takeOffCsv } from '../schedule/take-off.ts';
 import type { ModelRun } from './run-model.ts';
@@ -8,6 +10,7 @@ type Report = (run: ModelRun<unknown>) => Iterable<Uint8Array>;
 
 /** What each ending of a file asks for. */
 const reports: Readonly<Record<string, Report>> = {
+  '.bcf': ({ result, model, files }) => [bcf(result, model, files.map(fileOrigin))],
   '.csv': ({ outcome }) => [bytes(takeOffCsv(outcome))],
   '.json': ({ result }) => [bytes([...jsonText({ ...result })].join(''))],
 };

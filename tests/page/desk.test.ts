@@ -29,7 +29,7 @@ describe.skipIf(chromiumPath === undefined)('the empty page in Chromium', () => 
   const open = (options: Parameters<TestBrowser['openFile']>[1] = {}): Promise<OpenedPage> =>
     browser.openFile(desk, { acceptDownloads: true, ...options });
 
-  test('a dropped model gives the result, the sized copy and the take-off of the command line, byte for byte', async () => {
+  test('a dropped model gives the result, the sized copy, the take-off and the issues of the command line, byte for byte', async () => {
     const { page, requests, complaints, close } = await open();
     await dropOn(page, 'hall-wet-vented.ifc', readFileSync(hallFile));
     await page.locator('.headline').waitFor({ timeout: 30_000 });
@@ -50,6 +50,12 @@ describe.skipIf(chromiumPath === undefined)('the empty page in Chromium', () => 
     const takeOff = join(folder, 'take-off.csv');
     expect(drainwright(['report', hallFile, '-o', takeOff]).code).toBe(0);
     expect((await saved(page, 'csv')).bytes.equals(readFileSync(takeOff))).toBe(true);
+
+    const issues = join(folder, 'issues.bcf');
+    expect(drainwright(['report', hallFile, '-o', issues]).code).toBe(0);
+    const bcf = await saved(page, 'bcf');
+    expect(bcf.name).toBe('hall-wet-vented.bcf');
+    expect(bcf.bytes.equals(readFileSync(issues))).toBe(true);
 
     // What was saved is a model again: read anew it gives the same pipes.
     await page.locator('#another').click();

@@ -56,7 +56,8 @@ export async function testBrowser(): Promise<TestBrowser> {
         ...options,
       });
       const page = await context.newPage();
-      page.setDefaultTimeout(6000);
+      // Two cores that draw in software and run other tests beside answer late, not wrongly.
+      page.setDefaultTimeout(20_000);
       const requests: string[] = [];
       const complaints: string[] = [];
       page.on('request', (request) => {

@@ -5,7 +5,7 @@ export function addDesk(program: Command): void {
     .command('desk')
     .summary('the same page, empty: drop a model on it and it is checked in the browser')
     .description(
-      'Writes one HTML file that checks any model dropped on it, with no network: sizes, page, sized IFC, take-off and result.',
+      'Writes one HTML file that checks any model dropped on it, with no network: sizes, page, sized IFC, issues, take-off and result.',
     )
     .requiredOption('-o, --out <file>', 'the page to write')
     .action(async ({ out }: { readonly out: string }) => {

@@ -8,9 +8,9 @@ interface ReportOptions extends ModelOptions {
 export function addReport(program: Command): void {
   const command = program
     .command('report')
-    .summary('schedules by the ending of the file: .csv the take-off, .json the result')
+    .summary('by the ending of the file: .bcf the issues, .csv the take-off, .json the result')
     .description(
-      'Writes a report of a model. The ending of the file decides: .csv is the take-off (pipes, fittings, cleanouts), .json the whole result.',
+      'Writes a report of a model. The ending of the file decides: .bcf is the issues to settle with the designer (BCF 2.1, one topic a cause), .csv is the take-off (pipes, fittings, cleanouts), .json the whole result.',
     )
     .argument('<model...>', modelArgument)
     .requiredOption('-o, --out <file>', 'the report to write')

@@ -19,7 +19,7 @@ export interface DeskEdit {
   readonly words: string;
 }
 
-export type SaveKind = 'ifc' | 'csv' | 'json';
+export type SaveKind = 'ifc' | 'bcf' | 'csv' | 'json';
 
 /** Steps of a check, in the order in which they come. */
 export const stages = ['unpacking', 'reading', 'sizing', 'drawing'] as const;

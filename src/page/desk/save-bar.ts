@@ -35,7 +35,7 @@ export function saveBar(
       make(
         'div',
         { class: 'save-files' },
-        ...(['ifc', 'csv', 'json'] as const).map((what) =>
+        ...(['ifc', 'bcf', 'csv', 'json'] as const).map((what) =>
           button(words.save[what], () => actions.save(what), `save-${what}`),
         ),
       ),

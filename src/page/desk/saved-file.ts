@@ -1,6 +1,9 @@
 import { zipSync } from 'fflate';
+import { bcf } from '../../deliver/bcf.ts';
 import { propertySets } from '../../deliver/property-sets.ts';
 import { sha256 } from '../../deliver/sha256.ts';
+import { firstZipDay } from '../../deliver/zip-day.ts';
+import { fileOrigin } from '../../ifc/file-origin.ts';
 import type { OpenedFile } from '../../ifc/open.ts';
 import { appendSets } from '../../ifc/write/append-sets.ts';
 import { jsonText } from '../../schedule/json-text.ts';
@@ -22,6 +25,8 @@ export function savedFile(what: SaveKind, building: DeskBuilding, check: DeskChe
       return { name: `${base}.json`, bytes: encoder.encode([...jsonText({ ...check.result })].join('')) };
     case 'csv':
       return { name: `${base}.csv`, bytes: encoder.encode(takeOffCsv(check.outcome)) };
+    case 'bcf':
+      return { name: `${base}.bcf`, bytes: bcf(check.result, building.model, building.files.map(fileOrigin)) };
     case 'ifc': {
       const copies = owners(building, check).map((file) => ({
         name: `${stem(file.name)}-sized.ifc`,
@@ -51,6 +56,4 @@ function owners({ files }: DeskBuilding, { result }: DeskCheck): readonly Opened
 }
 
 const stem = (name: string): string => name.replace(/\.ifc$/i, '');
-/** Zip dates are local times: the same in every zone. */
-const firstZipDay = '1980-01-01T00:00:00';
 const encoder = new TextEncoder();

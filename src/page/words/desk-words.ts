@@ -46,7 +46,7 @@ export const deskWords: Readonly<Record<Language, DeskWords>> = {
     otherLanguage: 'Français',
     bar: 'Save and check anew',
     another: 'Another model',
-    save: { ifc: 'Save sized IFC', csv: 'Save take-off (CSV)', json: 'Save result (JSON)' },
+    save: { ifc: 'Sized IFC', bcf: 'Issues (BCF)', csv: 'Take-off (CSV)', json: 'Result (JSON)' },
     saved: (file) => `Saved ${file}`,
     whatIf: {
       title: 'What if',
@@ -81,9 +81,10 @@ export const deskWords: Readonly<Record<Language, DeskWords>> = {
     bar: 'Enregistrer et vérifier de nouveau',
     another: 'Autre modèle',
     save: {
-      ifc: "Enregistrer l'IFC dimensionné",
-      csv: 'Enregistrer le métré (CSV)',
-      json: 'Enregistrer le résultat (JSON)',
+      ifc: 'IFC dimensionné',
+      bcf: 'Problèmes (BCF)',
+      csv: 'Métré (CSV)',
+      json: 'Résultat (JSON)',
     },
     saved: (file) => `${file} enregistré`,
     whatIf: {
