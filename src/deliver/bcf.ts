@@ -58,7 +58,11 @@ interface Around {
 
 function markup(issue: Issue, { id, viewId, at, files, result, last }: Around): XmlElement {
   const { program, code, caution } = result;
-  const date = files.flatMap(({ written }) => written ?? []).sort().at(-1) ?? noDate;
+  const date =
+    files
+      .flatMap(({ written }) => written ?? [])
+      .sort()
+      .at(-1) ?? noDate;
   const text = [issue.text, `${code.title} ${code.edition} (${code.id}).`, ...last, caution].join('\n');
   return xml('Markup', {}, [
     xml('Header', {}, files.map(headerFile)),
