@@ -83,7 +83,7 @@ function outOfReach(given: SentenceFacts): string {
 /** One sentence a code, that a designer can act on: the thing, the number, the limit, the clause. */
 export const sentences: Readonly<Record<FindingCode, Sentence>> = {
   undersized: (f) =>
-    `${first(f)} (${plain(f.facts.role)}) is drawn ${text(f, 'modelled')} and needs ${f.facts.requiredLeast !== f.facts.required && has(f, 'requiredLeast') ? `${text(f, 'requiredLeast')} to ` : ''}${text(f, 'required')} for ${load(f)}${f.clause}${f.facts.provisional === true ? '; provisional, a figure of the code could not be read' : ''}.`,
+    `${first(f)} (${plain(f.facts.role)}) is drawn ${text(f, 'modelled')} and needs ${f.facts.requiredLeast !== f.facts.required && has(f, 'requiredLeast') ? `${text(f, 'requiredLeast')} to ` : ''}${text(f, 'required')} for ${load(f)}${f.clause}${has(f, 'steeperSlope') ? `; laid at ${f.slope(num(f, 'steeperSlope'))} or steeper ${text(f, 'steeperSize')} is enough` : ''}${f.facts.provisional === true ? '; provisional, a figure of the code could not be read' : ''}.`,
   oversized: (f) =>
     `${first(f)} (${plain(f.facts.role)}) is drawn ${text(f, 'modelled')}; ${text(f, 'required')} is enough by its own load${f.clause}${f.facts.mainVent === true ? '; it is the widest vent of the building drain, which must have one of its least size' : ''}.`,
   'size-unknown': (f) =>

@@ -1,6 +1,6 @@
 import { type ElementNames, elementNames } from './element-names.ts';
-import { decimal, lengthText, loadText, sizeText } from './number-text.ts';
-import type { Result, ResultPipe, TrailStep } from './result.ts';
+import { decimal, lengthText, loadText, sizeText, slopeText } from './number-text.ts';
+import type { LoadRange, Result, ResultPipe, TrailStep } from './result.ts';
 import { unbroken } from './shown-text.ts';
 import { blank, heading, paragraph, type TextLine } from './text-line.ts';
 import { counted, countedKinds, plainWords } from './trade-words.ts';
@@ -107,15 +107,33 @@ function reasonText(pipe: ResultPipe, unit: string, names: ElementNames): string
   const { load, ventLoad, developedLength, provisional } = pipe;
   const step = governingOf(pipe);
   const upstream = step?.facts.upstream;
+  const entering = enteringLoad(step, ventLoad ?? load);
   const parts = [
-    `${step === undefined ? '' : `${step.title}: `}${loadText(ventLoad ?? load, unit)}`,
+    [...(step === undefined ? [] : [step.title]), ...(entering === null ? [] : [loadText(entering, unit)])].join(': '),
     ...(developedLength === undefined ? [] : [`${lengthText(developedLength)} developed length`]),
     ...holdsText(step),
+    ...steeperText(step),
     ...(typeof upstream === 'string' ? [`after ${names.of(upstream)}`] : []),
     ...(step === undefined ? [] : [step.clause]),
     ...(provisional ? ['provisional'] : []),
   ];
   return parts.join('; ');
+}
+
+/** A vent that no trap breathes through is sized by a load that its demand names, a relief vent by that of its branch, or by none. */
+function enteringLoad(step: TrailStep | undefined, own: LoadRange): LoadRange | null {
+  if (own.most > 0) return own;
+  const named = step?.facts.loadUnits;
+  return typeof named === 'number' ? { least: named, most: named } : null;
+}
+
+/** Where the slope asks for the size: what would do in a steeper pipe. */
+function steeperText(step: TrailStep | undefined): string[] {
+  const size = step?.facts.steeperSize;
+  const slope = step?.facts.steeperSlope;
+  return typeof size === 'string' && typeof slope === 'number'
+    ? [`laid at ${slopeText(slope)} or steeper ${size} is enough`]
+    : [];
 }
 
 /** `3 in holds 12, 4 in 36`: what the table gives the next smaller size and the one that it asks for. */

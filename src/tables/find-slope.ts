@@ -12,33 +12,71 @@ export interface SizeAtSlope extends SizeFound {
   readonly tooFlat: boolean;
   /** Least slope at which the table has a figure for the size found. */
   readonly leastSlope: number | null;
+  /** A smaller size that would hold the load, laid to this slope; null: none. */
+  readonly steeper: { readonly size: NominalSize; readonly slope: number } | null;
 }
+
+/** How a code reads its table of slopes. */
+export interface SlopeReading {
+  /** A slope this share of a printed one counts as it: codes that print inches a foot take the round percent for it. */
+  readonly share: number;
+  /** A size that may not be laid so flat does not stand, as long as some size may. */
+  readonly asLaid: boolean;
+}
+const ownLeast: SlopeReading = { share: 1, asLaid: false };
 
 /**
  * Smallest drain whose figure holds the load, each size read at the steeper of the drawn slope and its own least slope:
- * a pipe laid too flat is a fault of its slope, not of its size. Between columns the flatter counts; null: not drawn.
+ * a pipe laid too flat is a fault of its slope, not of its size. Where the code reads sizes as they are laid, only those
+ * stand that may be laid so flat; flatter than all of them, the slope is the fault again. Between columns the flatter
+ * counts; null: not drawn.
  */
 export function sizeAtSlope(
   table: Table,
   load: number,
   drawn: number | null,
   omit: ReadonlySet<NominalSize> = noneOmitted,
+  { share, asLaid }: SlopeReading = ownLeast,
 ): SizeAtSlope {
-  const read = sizedRows(table, omit).map(({ size, row }) => ({ size, row, ...columnFor(table, row, drawn) }));
+  // A drawn slope is held against the printed ones as if it were printed in inches a foot itself.
+  const slope = drawn === null ? null : drawn / share;
+  const read = sizedRows(table, omit).map(({ size, row }) => ({ size, row, ...columnFor(table, row, slope) }));
   const candidates: Candidate[] = read.map(({ size, row, column }) => ({
     size,
     cell: column === null ? notPermitted(row, table) : row.amount(column.id),
     instead: null,
   }));
-  const found = firstThatHolds(candidates, load);
+  const isTooFlat = ({ least }: (typeof read)[number]): boolean =>
+    slope !== null && least !== null && !reachesSlope(slope, least);
+  const byLeast = firstThatHolds(candidates, load);
+  const laysAny = slope !== null && sloped(table).some((column) => reachesSlope(slope, column.slope ?? 0));
+  const laid =
+    asLaid && laysAny
+      ? firstThatHolds(
+          candidates.map((one, at) =>
+            isTooFlat(read[at]!) ? { ...one, cell: read[at]!.row.amount(columnAt(table, slope)) } : one,
+          ),
+          load,
+        )
+      : byLeast;
+  const found = laid.size === null ? byLeast : laid;
   const chosen = read.find(({ size }) => size === found.size);
+  const steeper = found.size === byLeast.size ? undefined : read.find(({ size }) => size === byLeast.size);
   return {
     ...found,
-    slope: chosen?.column?.slope ?? null,
-    leastSlope: chosen?.least ?? null,
-    tooFlat: drawn !== null && chosen !== undefined && chosen.least !== null && !reachesSlope(drawn, chosen.least),
+    slope: times(chosen?.column?.slope, share),
+    leastSlope: times(chosen?.least, share),
+    tooFlat: chosen !== undefined && isTooFlat(chosen),
+    steeper: steeper === undefined ? null : { size: steeper.size, slope: times(steeper.least, share)! },
   };
 }
+
+const times = (slope: number | null | undefined, share: number): number | null =>
+  slope === null || slope === undefined ? null : slope * share;
+
+/** The steepest column that a slope reaches, whether the size stands there or not. */
+const columnAt = (table: Table, slope: number): string =>
+  sloped(table).findLast((one) => reachesSlope(slope, one.slope ?? 0))!.id;
 
 /** Flattest slope at which the table has a figure for the size; null where it has none. */
 export function leastSlopeOf(

@@ -1,5 +1,5 @@
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
-import { type Finding, finding } from '../findings/finding.ts';
+import { type Facts, type Finding, finding } from '../findings/finding.ts';
 import type { ElementId } from '../model/model.ts';
 import type { Network, PipeId } from '../network/network.ts';
 import type { Paths } from '../paths/paths.ts';
@@ -39,6 +39,7 @@ export function sizeFindings(
             rule: step.rule,
             cause: causeOf(run, worst),
             provisional,
+            ...(verdict === 'undersized' ? steeperFacts(step.facts) : {}),
             ...(verdict === 'oversized' && run.roles.uses[worst]!.isMainVent ? { mainVent: true } : {}),
           },
           step.clause,
@@ -91,6 +92,10 @@ export function sizeFindings(
     });
   }
 }
+
+/** Where the slope asks for the size: what a steeper pipe would need. */
+const steeperFacts = ({ steeperSize, steeperSlope }: Facts): Facts =>
+  steeperSize === undefined || steeperSlope === undefined ? {} : { steeperSize, steeperSlope };
 
 /** A stub between two fittings says nothing of the slope a pipe is laid to, metres. */
 const shortest = 0.15;

@@ -100,13 +100,15 @@ describe('W03 the same under the slab: Table 710.1(1), since the branch ends at 
   ])('branch at $slope: $size ($why)', ({ slope, size }) => {
     const done = run(hall(slope));
     expect(only(done).reading).toBe('circuit-vent');
-    // At 1/8 each size is read at its own least slope: 2 in holds the load at 1/4, and is laid too flat.
-    if (slope === '1:48') expect(done.size('J4-J5')).toBe(size);
-    else {
-      expect(done.size('J4-J5')).toBe('2 in');
-      const drawn = run(hall(slope).replaceAll('drain 3 in: J1 >', 'drain 2 in: J1 >'));
-      expect(drawn.findings('slope-too-small').map(({ clause }) => clause)).toContain('704.1');
-    }
+    expect(done.size('J4-J5')).toBe(size);
+  });
+
+  test('drawn 2 in at 1/8 it is too flat and too small, and the finding says what a steeper branch would need', () => {
+    const done = run(hall('1:96').replaceAll('drain 3 in: J1 >', 'drain 2 in: J1 >'));
+    expect(done.findings('slope-too-small').map(({ clause }) => clause)).toContain('704.1');
+    const [small] = done.findings('undersized').filter(({ about }) => about[0] === done.pipe('J4-J5').globalId);
+    expect(small?.facts).toMatchObject({ required: '3 in', steeperSize: '2 in', steeperSlope: 0.02 });
+    expect(small?.sentence).toContain('laid at 2 % (1:50) or steeper 2 in is enough');
   });
 
   test('its vent is half of the drain that Table 710.1(2) asks, 3 in: 1½ in', () => {

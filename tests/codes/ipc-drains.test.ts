@@ -22,6 +22,50 @@ const limits = (column: readonly (readonly [string, number])[]) =>
     { load: limit + 1, size: column[at + 1]?.[0] ?? 'none' },
   ]);
 
+describe('R15 least slopes (Table 704.1): 1/4 in per ft is met by 2 %, 1/8 by 1 % (residential code P3005.3 prints both)', () => {
+  const row = (slope: string, bore: string) =>
+    runSketch(ventedRow([drain, drain]).replaceAll('1:50', slope).replace('drain 3 in: J1', `drain ${bore} in: J1`), {
+      code: 'ipc-2021',
+    })
+      .findings('slope-too-small')
+      .some(({ facts }) => facts.size === `${bore} in`);
+
+  test.each([
+    { bore: '2', slope: '1:50', flat: false, why: '2 %' },
+    { bore: '2', slope: '1:51', flat: true, why: 'flatter than 2 %' },
+    { bore: '3', slope: '1:100', flat: false, why: '1 %' },
+    { bore: '3', slope: '1:110', flat: true, why: 'flatter than 1 %' },
+    { bore: '6', slope: '1:100', flat: false, why: '3 to 6 in alike' },
+    { bore: '8', slope: '1:200', flat: false, why: '0.5 %' },
+    { bore: '8', slope: '1:240', flat: true, why: 'flatter than 0.5 %' },
+  ])('$bore in at $slope: $why', ({ bore, slope, flat }) => {
+    expect(row(slope, bore)).toBe(flat);
+  });
+});
+
+describe('R19, R22 at the real slope: a size that may not be laid so flat does not stand (Table 710.1(1))', () => {
+  const at = (slope: string, load: number) =>
+    runSketch(ventedRow([drain, drain]).replaceAll('1:50', slope), {
+      code: 'ipc-2021',
+      answers: bringing({ F1: load - 2 }),
+    }).size('BF-OUT');
+
+  test.each([
+    { slope: '1:50', load: 20, size: '2 in', why: '2 % is 1/4 in per ft: 21' },
+    { slope: '1:50', load: 42, size: '3 in', why: '… 42' },
+    { slope: '1:96', load: 20, size: '3 in', why: '1/8: 2 in may not be laid, 3 in has 36' },
+    { slope: '1:96', load: 38, size: '4 in', why: '… past 36' },
+    { slope: '1:192', load: 20, size: '8 in', why: '1/16: nothing below 8 in' },
+    { slope: '1:300', load: 20, size: '2 in', why: 'flatter than any size may be laid: its slope is the fault' },
+  ])('$load at $slope: $size ($why)', ({ slope, load, size }) => {
+    expect(at(slope, load)).toBe(size);
+  });
+
+  test('the drain of one fixture follows its trap: laid too flat, its slope is the fault', () => {
+    expect(run(ventedRow([drain, drain]).replaceAll('1:50', '1:96')).size('V1-J1')).toBe('2 in');
+  });
+});
+
 describe('R18 a branch to a stack: Table 710.1(2), column branch', () => {
   const upstairs = (load: number) => run(tower([[], [drain, drain]]), bringing({ 'F2.1': load - 2 })).size('J2.2-S2');
 

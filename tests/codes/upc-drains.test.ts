@@ -89,6 +89,27 @@ describe('R16, R24 slope: an eighth only where approved, from 4 in on, with 0.8 
     expect(flat.findings('slope-too-small').length).toBeGreaterThan(0);
     expect(flat.findings('slope-too-small')[0]?.clause).toBe('708.1');
   });
+  test('approved, a branch at 1/8 takes 4 in, the least that may be laid so; the drain of one fixture stays', () => {
+    const flat = row(20, '1:96', { slopeEighth: true });
+    expect([flat.size('BF-OUT'), row(20, '1:48', { slopeEighth: true }).size('BF-OUT')]).toEqual(['4 in', '3 in']);
+    expect(run(ventedRow([drain, drain]).replaceAll('1:50', '1:96'), {}, { slopeEighth: true }).size('V1-J1')).toBe(
+      '2 in',
+    );
+  });
+  test('2 % is 1/4 in per ft, 1 % is 1/8 (708.1 prints both)', () => {
+    const flat = (slope: string, settings = {}) => {
+      const text = ventedRow([drain, drain]).replaceAll('1:50', slope).replace('drain 3 in: J1', 'drain 4 in: J1');
+      const done = runSketch(text, { code: 'upc-2021', answers: { settings } as never });
+      return done.findings('slope-too-small').some(({ about }) => about[0] === done.pipe('BF-OUT').globalId);
+    };
+    expect([flat('1:50'), flat('1:52'), flat('1:100'), flat('1:100', { slopeEighth: true })]).toEqual([
+      false,
+      true,
+      true,
+      false,
+    ]);
+    expect(flat('1:104', { slopeEighth: true })).toBe(true);
+  });
   test('approved, but 3 in stays at 1/4', () => {
     const found = row(20, '1:96', { slopeEighth: true }).findings('slope-too-small');
     expect(found.some(({ facts }) => facts.size === '3 in')).toBe(true);

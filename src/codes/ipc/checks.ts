@@ -51,10 +51,11 @@ export function checks(tools: Tools): Check[] {
 function slopes({ family }: Tools): Check {
   const table = family.table('slope');
   const { rank } = family.series;
+  const share = family.number('slope-percent-share', 'share');
   return leastSlope(family.rule('IPC-R15'), (_, size) => {
     const row = table.rows.findLast((one) => rank(one.size('from').value as NominalSize) <= rank(size));
     const value = row?.amount('slope').value;
-    return typeof value === 'number' ? value : null;
+    return typeof value === 'number' ? value * share.value : null;
   });
 }
 

@@ -1,9 +1,10 @@
 import { sizeForLoad } from '../../tables/find-size.ts';
-import { sizeAtSlope } from '../../tables/find-slope.ts';
+import { type SizeAtSlope, sizeAtSlope } from '../../tables/find-slope.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
 import { unitsOf } from '../../units/quantity.ts';
 import { branchIntervals, heaviestInterval } from '../rules/branch-intervals.ts';
 import { closetFloor, noReduction, trapFloor } from '../rules/drain-floors.ts';
+import { columnFacts, slopeReading } from '../rules/slopes-as-laid.ts';
 import { floorStep, followStep, tableStep } from '../rules/steps.ts';
 import { nextAbove, shareOf } from '../rules/vent-sizes.ts';
 import type { SizingRule } from '../sizing-rule.ts';
@@ -37,8 +38,13 @@ export function drainRules({ family, omit, settings }: Tools): SizingRule[] {
   const loadFacts = ({ load }: PipeUse) => ({ loadUnits: unitsOf(load) });
   const slopeFacts = ({ slope, vertical }: PipeUse) =>
     vertical ? {} : { slope: slope ?? assumedSlope, slopeAssumed: slope === null };
-  const atSlope = (pipe: PipeUse) =>
-    sizeAtSlope(bySlope, pipe.load, pipe.vertical ? steep : (pipe.slope ?? assumedSlope), omit);
+  const asLaid = slopeReading(family);
+  const atSlope = (pipe: PipeUse): SizeAtSlope => {
+    const slope = pipe.vertical ? steep : (pipe.slope ?? assumedSlope);
+    // The drain of one fixture follows its trap: laid too flat, its slope is the fault.
+    const own = pipe.drain === 'fixture-drain';
+    return sizeAtSlope(bySlope, pipe.load, slope, omit, own ? { ...asLaid, asLaid: false } : asLaid);
+  };
   const intervalsOf = (joins: NonNullable<PipeUse['stack']>['joins']) => branchIntervals(joins, interval.value);
 
   return [
@@ -57,7 +63,7 @@ export function drainRules({ family, omit, settings }: Tools): SizingRule[] {
       ask: (pipe) => {
         if (!isLine(pipe) || pipe.endsAt !== 'building-drain') return undefined;
         const found = atSlope(pipe);
-        return tableStep(rule('IPC-R19'), found, { ...loadFacts(pipe), ...slopeFacts(pipe), columnSlope: found.slope });
+        return tableStep(rule('IPC-R19'), found, { ...loadFacts(pipe), ...slopeFacts(pipe), ...columnFacts(found) });
       },
     },
     {
@@ -99,7 +105,7 @@ export function drainRules({ family, omit, settings }: Tools): SizingRule[] {
       ask: (pipe) => {
         if (pipe.drain !== 'stack' || pipe.offset === null || pipe.vertical) return undefined;
         const found = atSlope(pipe);
-        const facts = { ...loadFacts(pipe), ...slopeFacts(pipe), columnSlope: found.slope, offsetM: pipe.offset };
+        const facts = { ...loadFacts(pipe), ...slopeFacts(pipe), ...columnFacts(found), offsetM: pipe.offset };
         return tableStep(rule('IPC-R24'), found, facts);
       },
     },
@@ -110,7 +116,7 @@ export function drainRules({ family, omit, settings }: Tools): SizingRule[] {
         if (pipe.drain !== 'building-drain' && pipe.drain !== 'building-sewer') return undefined;
         if (pipe.vertical) return undefined;
         const found = atSlope(pipe);
-        return tableStep(rule('IPC-R22'), found, { ...loadFacts(pipe), ...slopeFacts(pipe), columnSlope: found.slope });
+        return tableStep(rule('IPC-R22'), found, { ...loadFacts(pipe), ...slopeFacts(pipe), ...columnFacts(found) });
       },
     },
     noReduction(rule('IPC-R16'), series, 'drains'),

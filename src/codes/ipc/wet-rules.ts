@@ -1,9 +1,10 @@
-import { type SizeFound, sizeForLoad } from '../../tables/find-size.ts';
+import { sizeForLoad } from '../../tables/find-size.ts';
 import { sizeAtSlope } from '../../tables/find-slope.ts';
 import { type Load, unitsOf } from '../../units/quantity.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { BatteryFacts } from '../battery.ts';
 import { heaviestInterval } from '../rules/branch-intervals.ts';
+import { columnFacts, slopeReading } from '../rules/slopes-as-laid.ts';
 import { floorStep, followStep, tableStep } from '../rules/steps.ts';
 import { shareOf } from '../rules/vent-sizes.ts';
 import type { SizingRule } from '../sizing-rule.ts';
@@ -30,6 +31,7 @@ export function wetRules(tools: Tools): SizingRule[] {
   const singleClosets = family.number('single-stack-closets', 'count');
   const assumedSlope = typeof settings.assumedSlope === 'number' ? settings.assumedSlope : null;
   const drainFor = requiredDrain(tools);
+  const asLaid = slopeReading(family);
 
   const lineFacts = (load: Load) => ({ loadUnits: unitsOf(load) });
   const circuitOf = (pipe: PipeUse): BatteryFacts['circuit'] | null =>
@@ -93,12 +95,12 @@ export function wetRules(tools: Tools): SizingRule[] {
         if (pipe.endsAt === 'stack')
           return tableStep(rule('IPC-R65'), sizeForLoad(byLoad, 'branch', load, omit), facts);
         const slope = pipe.slope ?? assumedSlope;
-        const found: SizeFound & { slope: number | null } = sizeAtSlope(bySlope, load, slope, omit);
+        const found = sizeAtSlope(bySlope, load, slope, omit, asLaid);
         return tableStep(rule('IPC-R65'), found, {
           ...facts,
           slope,
           slopeAssumed: pipe.slope === null,
-          columnSlope: found.slope,
+          ...columnFacts(found),
         });
       },
     },

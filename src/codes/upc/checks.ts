@@ -40,8 +40,11 @@ function slopes({ family, settings }: Tools): Check {
   const full = family.number('slope-least', 'slope');
   const approved = family.number('slope-least-approved', 'slope');
   const from = family.size('slope-approved-from');
-  return leastSlope(family.rule('UPC-R24'), (_, size) =>
-    settings.slopeEighth === true && rank(size) >= rank(from.value) ? approved.value : full.value,
+  const share = family.number('slope-percent-share', 'share');
+  return leastSlope(
+    family.rule('UPC-R24'),
+    (_, size) =>
+      share.value * (settings.slopeEighth === true && rank(size) >= rank(from.value) ? approved.value : full.value),
   );
 }
 
@@ -59,6 +62,7 @@ function trapArms(tools: Tools): Check {
   const rowOf = armRow(tools);
   const closet = family.number('closet-arm', 'length');
   const slope = family.number('slope-least', 'slope');
+  const share = family.number('slope-percent-share', 'share');
   const printed = (trap: NominalSize, column: string): number | null => {
     const value = rowOf(trap)?.amount(column).value;
     return typeof value === 'number' ? value : null;
@@ -67,7 +71,7 @@ function trapArms(tools: Tools): Check {
     longest: (trap) => printed(trap, 'longest'),
     shortest: (trap) => printed(trap, 'shortest') ?? (2 * widthOf(series, trap)) / 1000,
     fall: 1,
-    slope: () => slope.value,
+    slope: () => slope.value * share.value,
     turn: () => null,
   };
   const none = (): null => null;

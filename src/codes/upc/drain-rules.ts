@@ -5,6 +5,7 @@ import type { NominalSize } from '../../units/nominal-size.ts';
 import { type Load, unitsOf } from '../../units/quantity.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
 import { noReduction, trapFloor } from '../rules/drain-floors.ts';
+import { columnFacts, slopeReading } from '../rules/slopes-as-laid.ts';
 import { floorStep, followStep, tableStep } from '../rules/steps.ts';
 import { leastTrust, nextAbove } from '../rules/vent-sizes.ts';
 import type { SizingRule } from '../sizing-rule.ts';
@@ -21,20 +22,28 @@ export const closetsOf = ({ closets, counts }: Pick<PipeUse, 'closets' | 'counts
   closets + (counts[sixUnitTraps] ?? 0);
 
 /** Sizes a load by Table 703.2: by the pipe's own direction, and by its slope where it is level (R15, R16). */
-export function drainSize(tools: Tools): (load: Load, vertical: boolean, slope: number | null) => SizeFound {
+export function drainSize(
+  tools: Tools,
+): (load: Load, vertical: boolean, slope: number | null, ofOneFixture?: boolean) => SizeFound {
   const { family, omit, settings } = tools;
   const table = family.table('drains-and-vents');
   const { rank } = family.series;
   const share = family.number('slope-factor', 'share');
   const full = family.number('slope-least', 'slope');
   const from = family.size('slope-approved-from');
-  return (load, vertical, slope) => {
+  const approved = family.number('slope-least-approved', 'slope');
+  const { share: percent } = slopeReading(family);
+  return (load, vertical, slope, ofOneFixture = false) => {
     if (vertical) return sizeForLoad(table, 'vertical', load, omit);
-    const flat = settings.slopeEighth === true && (slope === null || !reachesSlope(slope, full.value));
-    const candidates = sizedRows(table, omit).map(({ size, row }) => {
+    const flat = settings.slopeEighth === true && (slope === null || !reachesSlope(slope, full.value * percent));
+    // Laid between the two slopes on approval, only the sizes stand for which it may be approved. The drain of one fixture
+    // follows its trap: laid too flat, its slope is the fault.
+    const asApproved = flat && !ofOneFixture && slope !== null && reachesSlope(slope, approved.value * percent);
+    const candidates = sizedRows(table, omit).flatMap(({ size, row }) => {
       const cell = row.amount('horizontal');
-      const less = flat && rank(size) >= rank(from.value);
-      return { size, cell: less ? scaled(cell, share) : cell, instead: null };
+      const large = rank(size) >= rank(from.value);
+      if (asApproved && !large) return [];
+      return [{ size, cell: flat && large ? scaled(cell, share) : cell, instead: null }];
     });
     return firstThatHolds(candidates, load);
   };
@@ -70,7 +79,7 @@ export function drainRules(tools: Tools): SizingRule[] {
   });
   /** The size that Table 703.2 gives a building sewer; null where that is Table 717.1's to say. */
   const bySmallTable = (pipe: PipeUse): SizeFound | null => {
-    const found = sizeFor(pipe.load, pipe.vertical, slopeOf(pipe));
+    const found = sizeFor(pipe.load, pipe.vertical, slopeOf(pipe), pipe.drain === 'fixture-drain');
     const small = found.size !== null && series.rank(found.size) <= series.rank(largestBySewerTable);
     return pipe.drain !== 'building-sewer' || pipe.vertical || small ? found : null;
   };
@@ -90,8 +99,8 @@ export function drainRules(tools: Tools): SizingRule[] {
       reads: 'use',
       ask: (pipe) => {
         if (pipe.drain !== 'building-sewer' || pipe.vertical || bySmallTable(pipe) !== null) return undefined;
-        const found = sizeAtSlope(sewer, pipe.load, slopeOf(pipe), omit);
-        return tableStep(rule('UPC-R27'), found, { ...loadFacts(pipe), columnSlope: found.slope });
+        const found = sizeAtSlope(sewer, pipe.load, slopeOf(pipe), omit, slopeReading(family));
+        return tableStep(rule('UPC-R27'), found, { ...loadFacts(pipe), ...columnFacts(found) });
       },
     },
     {

@@ -34,7 +34,7 @@ function outOfReach(f: FrenchFacts): string {
 /** The findings' sentences in French, built from the same facts as the English ones. */
 export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
   undersized: (f) =>
-    `${first(f)} (${f.role(f.facts.role)}) est dessiné en ${text(f, 'modelled')} et doit être de ${has(f, 'requiredLeast') && f.facts.requiredLeast !== f.facts.required ? `${text(f, 'requiredLeast')} à ` : ''}${text(f, 'required')} pour ${load(f)}${f.clause}${f.facts.provisional === true ? '; provisoire, un chiffre du code n’a pas pu être lu' : ''}.`,
+    `${first(f)} (${f.role(f.facts.role)}) est dessiné en ${text(f, 'modelled')} et doit être de ${has(f, 'requiredLeast') && f.facts.requiredLeast !== f.facts.required ? `${text(f, 'requiredLeast')} à ` : ''}${text(f, 'required')} pour ${load(f)}${f.clause}${has(f, 'steeperSlope') ? `; posé à ${f.slope(num(f, 'steeperSlope'))} ou plus, ${text(f, 'steeperSize')} suffit` : ''}${f.facts.provisional === true ? '; provisoire, un chiffre du code n’a pas pu être lu' : ''}.`,
   oversized: (f) =>
     `${first(f)} (${f.role(f.facts.role)}) est dessiné en ${text(f, 'modelled')}; ${text(f, 'required')} suffit pour sa propre charge${f.clause}${f.facts.mainVent === true ? '; c’est la plus large ventilation du collecteur principal, qui doit en avoir une de son diamètre minimal' : ''}.`,
   'size-unknown': (f) =>

@@ -187,6 +187,8 @@ export const frenchFactWords: Words['factWords'] = {
   leftOut: 'non comptés',
   columnSlope: 'pente de la colonne du tableau',
   slopeAssumed: 'pente supposée',
+  steeperSize: 'diamètre suffisant si plus pentu',
+  steeperSlope: 'pente à laquelle il suffit',
   stackSize: 'colonne de chute',
   closetsMost: 'toilettes au plus',
   largestTrap: 'plus grand siphon',
