@@ -1,6 +1,10 @@
 import { answersFormat } from '../model/read-answers.ts';
 import type { Question } from './questions.ts';
 
+/** The text of an answers file to fill in. */
+export const answersFormText = (questions: readonly Question[]): string =>
+  `${JSON.stringify(answersForm(questions), null, 2)}\n`;
+
 /**
  * An answers file to fill in: every question with its weight, and behind them a `null` at the place of each answer.
  * It is read as it stands: what is still null counts as not answered.

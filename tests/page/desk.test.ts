@@ -1,10 +1,12 @@
-import { copyFileSync, readFileSync, writeFileSync } from 'node:fs';
+import { copyFileSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join, resolve } from 'node:path';
-import { gzipSync } from 'fflate';
+import { gzipSync, unzipSync } from 'fflate';
 import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { chromiumPath, type OpenedPage, type TestBrowser, testBrowser } from '../support/browser.ts';
 import { drainwright, scratch } from '../support/program.ts';
+import { sketch } from '../support/sketch.ts';
+import { ifcOf } from '../support/write-ifc.ts';
 import { violations } from './violations.ts';
 
 if (chromiumPath === undefined)
@@ -31,7 +33,7 @@ describe.skipIf(chromiumPath === undefined)('the empty page in Chromium', () => 
 
   test('a dropped model gives the result, the sized copy, the take-off and the issues of the command line, byte for byte', async () => {
     const { page, requests, complaints, close } = await open();
-    await dropOn(page, 'hall-wet-vented.ifc', readFileSync(hallFile));
+    await dropOn(page, [{ name: 'hall-wet-vented.ifc', bytes: readFileSync(hallFile) }]);
     await page.locator('.headline').waitFor({ timeout: 30_000 });
     expect(await page.locator('.headline').textContent()).toBe('9 pipes are too small, for 1 cause');
 
@@ -72,7 +74,7 @@ describe.skipIf(chromiumPath === undefined)('the empty page in Chromium', () => 
 
   test('another code gives at once what the command line gives with it', async () => {
     const { page, complaints, close } = await open();
-    await dropOn(page, 'hall.ifc.gz', Buffer.from(gzipSync(readFileSync(hallFile))));
+    await dropOn(page, [{ name: 'hall.ifc.gz', bytes: Buffer.from(gzipSync(readFileSync(hallFile))) }]);
     await page.locator('.headline').waitFor({ timeout: 30_000 });
     await page.selectOption('#code', 'en12056-2000');
     await page.locator('.top .tag', { hasText: 'en12056-2000' }).waitFor();
@@ -82,6 +84,77 @@ describe.skipIf(chromiumPath === undefined)('the empty page in Chromium', () => 
     expect((await saved(page, 'json')).bytes.toString()).toBe(stdout);
     expect(await violations(page)).toEqual([]);
     expect(complaints).toEqual([]);
+    await close();
+  });
+
+  test('three files dropped together are one building: the result and the sized copies of the command line', async () => {
+    const drawn = sketch(readFileSync(sample('hall-wet-vented.piping'), 'utf8'));
+    const parts = (['architecture', 'fixtures', 'piping'] as const).map((holds) => ({
+      name: `${holds}.ifc`,
+      bytes: Buffer.from(ifcOf(drawn, { holds: [holds], schema: 'IFC4', unit: 'mm' })),
+    }));
+    for (const { name, bytes } of parts) writeFileSync(join(folder, name), bytes);
+    const names = parts.map(({ name }) => name);
+    const { page, complaints, close } = await open();
+    await dropOn(page, parts);
+    await page.locator('.headline').waitFor({ timeout: 30_000 });
+    expect(await page.locator('h1').textContent()).toBe(names.join(', '));
+    expect(await page.locator('.headline').textContent()).toBe('9 pipes are too small, for 1 cause');
+    const { stdout } = drainwright(['check', ...names, '--json'], { cwd: folder });
+    expect((await saved(page, 'json')).bytes.toString()).toBe(stdout);
+    const copies = unzipSync((await saved(page, 'ifc')).bytes);
+    expect(drainwright(['size', ...names, '-o', 'sized'], { cwd: folder }).code).toBe(0);
+    expect(Object.keys(copies)).toEqual(['fixtures-sized.ifc', 'piping-sized.ifc']);
+    for (const [name, bytes] of Object.entries(copies))
+      expect(Buffer.from(bytes).equals(readFileSync(join(folder, 'sized', name.replace('-sized', ''))))).toBe(true);
+    expect(complaints).toEqual([]);
+    await close();
+  });
+
+  test('answers and local tables count as on the command line, dropped with the model or on the open page', async () => {
+    // The first pipe of the row is said to be 4 in: of nine pipes drawn too small eight stay.
+    const answers = '{"format":"drainwright-answers","version":1,"pipes":{"name:LJ-CO1":{"size":"4 in"}}}';
+    // A local table made up for this test lets 3 in hold 14 units as a wet vent: then none of the row is too small.
+    const table = readFileSync(resolve(import.meta.dirname, '../../tables/npc/wet-vent.json'), 'utf8');
+    const local = table.replace('"3 in", "noCloset": { "value": 12', '"3 in", "noCloset": { "value": 14');
+    expect(local).not.toBe(table);
+    mkdirSync(join(folder, 'local/npc'), { recursive: true });
+    writeFileSync(join(folder, 'local/npc/wet-vent.json'), local);
+    writeFileSync(join(folder, 'known.json'), answers);
+    copyFileSync(hallFile, join(folder, 'hall.ifc'));
+    const given = (...more: string[]) =>
+      drainwright(['check', 'hall.ifc', '--json', '--answers', 'known.json', ...more], { cwd: folder }).stdout;
+
+    const { page, complaints, requests, close } = await open();
+    await dropOn(page, [
+      { name: 'hall.ifc', bytes: readFileSync(hallFile) },
+      { name: 'known.json', bytes: Buffer.from(answers) },
+    ]);
+    await page.locator('.headline', { hasText: '8 pipes are too small' }).waitFor({ timeout: 30_000 });
+    expect(await page.locator('#own-answers').textContent()).toContain('known.json');
+    expect((await saved(page, 'json')).bytes.toString()).toBe(given());
+    expect(await violations(page)).toEqual([]);
+
+    await page.setInputFiles('#give-tables', join(folder, 'local'));
+    await page.locator('.headline', { hasText: 'No pipe is too small' }).waitFor();
+    expect((await saved(page, 'json')).bytes.toString()).toBe(given('--tables', 'local'));
+    // The same questions as an answers file to fill in.
+    expect(
+      drainwright(['survey', 'hall.ifc', '--questions', 'form.json', '--answers', 'known.json', '--tables', 'local'], {
+        cwd: folder,
+      }).code,
+    ).toBe(0);
+    expect((await saved(page, 'answers')).bytes.equals(readFileSync(join(folder, 'form.json')))).toBe(true);
+
+    // Wrong answers are refused in the program's words, and all stays as it was.
+    await dropOn(page, [{ name: 'wrong.json', bytes: Buffer.from(answers.replace('4 in', 'DN 4')) }]);
+    await page.locator('.save-note', { hasText: 'wrong.json' }).waitFor();
+    expect((await saved(page, 'json')).bytes.toString()).toBe(given('--tables', 'local'));
+    await page.getByRole('button', { name: 'Leave out known.json' }).click();
+    await page.locator('#give-answers').waitFor({ state: 'attached' });
+    await page.getByRole('button', { name: 'Leave out local' }).click();
+    await page.locator('.headline', { hasText: '9 pipes are too small' }).waitFor();
+    expect([...complaints, ...requests.filter((url) => !url.startsWith('blob:'))]).toEqual([]);
     await close();
   });
 
@@ -129,7 +202,7 @@ describe.skipIf(chromiumPath === undefined)('the empty page in Chromium', () => 
   ])('%s is refused in the words of the command line, and the next model goes', async (name, text) => {
     const { page, complaints, requests, close } = await open();
     const bytes = Buffer.from(text, 'latin1');
-    await dropOn(page, name, bytes);
+    await dropOn(page, [{ name, bytes }]);
     const refused = page.locator('[role=alert] p');
     await refused.waitFor();
     writeFileSync(join(folder, name), bytes);
@@ -166,17 +239,18 @@ describe.skipIf(chromiumPath === undefined)('the empty page in Chromium', () => 
   });
 });
 
-/** Drops a file from outside on the middle of the page. */
-async function dropOn(page: Page, name: string, bytes: Buffer): Promise<void> {
+/** Drops files from outside on the page. */
+async function dropOn(page: Page, files: readonly { readonly name: string; readonly bytes: Buffer }[]): Promise<void> {
   const transfer = await page.evaluateHandle(
-    ([file, text]) => {
+    (given) => {
       const data = new DataTransfer();
-      data.items.add(new File([Uint8Array.from(atob(text), (character) => character.charCodeAt(0))], file));
+      for (const { name, text } of given)
+        data.items.add(new File([Uint8Array.from(atob(text), (character) => character.charCodeAt(0))], name));
       return data;
     },
-    [name, bytes.toString('base64')] as const,
+    files.map(({ name, bytes }) => ({ name, text: bytes.toString('base64') })),
   );
-  await page.dispatchEvent('.drop-zone', 'drop', { dataTransfer: transfer });
+  await page.dispatchEvent('body', 'drop', { dataTransfer: transfer });
 }
 
 async function saved(page: Page, what: string): Promise<{ readonly name: string; readonly bytes: Buffer }> {

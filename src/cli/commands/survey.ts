@@ -18,7 +18,7 @@ export function addSurvey(program: Command): void {
       const { printJson } = await import('../print-result.ts');
       const { printLines } = await import('../terminal.ts');
       const { writeNew } = await import('../write-new.ts');
-      const { answersForm } = await import('../../schedule/answers-form.ts');
+      const { answersFormText } = await import('../../schedule/answers-form.ts');
       const { surveyOf } = await import('../../schedule/survey.ts');
       const { surveyText } = await import('../../schedule/survey-text.ts');
       const { twinsResult } = await import('../../schedule/twins.ts');
@@ -30,8 +30,7 @@ export function addSurvey(program: Command): void {
       const surveyed = surveyOf(run.model, run.outcome.identities, run.result);
       const survey = twins.length === 0 ? surveyed : { ...surveyed, twins };
       if (run.place !== null && file !== undefined) {
-        const form = `${JSON.stringify(answersForm(survey.questions), null, 2)}\n`;
-        await writeNew(run.place, [new TextEncoder().encode(form)], file);
+        await writeNew(run.place, [new TextEncoder().encode(answersFormText(survey.questions))], file);
       }
       if (options.json === true) await printJson({ ...survey });
       else await printLines(surveyText(survey, run.result));

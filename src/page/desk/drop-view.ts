@@ -4,10 +4,12 @@ import { shown } from '../panel/names.ts';
 import type { Language } from '../state.ts';
 import { type DeskWords, deskWords } from '../words/desk-words.ts';
 import { wordsIn } from '../words/languages.ts';
-import { type Stage, stages } from './messages.ts';
+import { chosenFiles, type Dropped } from './dropped.ts';
+import { type DeskOwn, type Stage, stages } from './messages.ts';
+import { type OwnActions, ownBar } from './own-bar.ts';
 
-export interface DropActions {
-  check(files: readonly File[]): void;
+export interface DropActions extends OwnActions {
+  check(dropped: Dropped): void;
   cancel(): void;
   chooseCode(code: string): void;
   otherLanguage(): void;
@@ -21,19 +23,25 @@ export interface DropView {
 }
 
 /** The empty page: a place to drop a model, what happens with it, and why it could not be read. */
-export function dropView(parts: DeskParts, language: Language, code: string, actions: DropActions): DropView {
+export function dropView(
+  parts: DeskParts,
+  language: Language,
+  code: string,
+  own: DeskOwn,
+  actions: DropActions,
+): DropView {
   const words = deskWords[language];
   const input = make('input', {
     type: 'file',
     id: 'models',
     class: 'offscreen',
     multiple: true,
-    accept: '.ifc,.ifczip,.gz,.zip',
+    accept: '.ifc,.ifczip,.gz,.zip,.json',
     onchange: () => {
       const files = [...(input.files ?? [])];
       // The same file may be chosen again after it was mended.
       input.value = '';
-      if (files.length > 0) actions.check(files);
+      if (files.length > 0) actions.check(chosenFiles(files));
     },
   });
   const state = make('div', { class: 'drop-state' });
@@ -65,6 +73,7 @@ export function dropView(parts: DeskParts, language: Language, code: string, act
     state,
     live,
     make('p', { class: 'drop-code' }, codeChooser(parts, language, code, actions.chooseCode)),
+    make('p', { class: 'drop-own' }, make('span', {}, words.own.lead), ownBar(language, own, actions)),
     make('p', { class: 'drop-private' }, words.private),
     make('p', { class: 'quiet' }, words.caution),
   );
@@ -93,7 +102,7 @@ export function dropView(parts: DeskParts, language: Language, code: string, act
           'div',
           { class: 'drop-refused', role: 'alert' },
           make('h2', {}, fault ? words.fault : words.refused),
-          make('p', { class: fault ? 'drop-fault' : '' }, shownMessage(message)),
+          make('p', { class: fault ? 'drop-fault' : '', lang: 'en' }, shownMessage(message)),
         ),
       );
       input.focus();

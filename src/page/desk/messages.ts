@@ -6,9 +6,9 @@ import type { ModelInput } from '../../ifc/open.ts';
 export type DeskAsk =
   | { readonly ask: 'begin'; readonly parts: DeskParts }
   /** Reads the files as one building and checks it. */
-  | { readonly ask: 'check'; readonly inputs: readonly ModelInput[]; readonly code: string }
-  /** Checks the building that was read last by another code. */
-  | { readonly ask: 'code'; readonly code: string }
+  | { readonly ask: 'check'; readonly inputs: readonly ModelInput[]; readonly code: string; readonly own: DeskOwn }
+  /** Checks the building that was read last by another code, or with other answers or tables. */
+  | { readonly ask: 'code'; readonly code: string; readonly own: DeskOwn }
   /** The last check with some changes, one after the other; with none, as it is. What is saved stays the check itself. */
   | { readonly ask: 'what-if'; readonly edits: readonly DeskEdit[] }
   | { readonly ask: 'save'; readonly what: SaveKind };
@@ -19,7 +19,20 @@ export interface DeskEdit {
   readonly words: string;
 }
 
-export type SaveKind = 'ifc' | 'bcf' | 'csv' | 'json';
+/** What the reader of the page gives beside the model. */
+export interface DeskOwn {
+  /** The text of an answers file. */
+  readonly answers: { readonly name: string; readonly text: string } | null;
+  readonly tables: OwnTables | null;
+}
+
+/** A folder of local tables, laid over those of the page: texts by path, such as `npc/branch.json`. */
+export interface OwnTables {
+  readonly name: string;
+  readonly files: readonly (readonly [path: string, text: string])[];
+}
+
+export type SaveKind = 'ifc' | 'bcf' | 'csv' | 'json' | 'answers';
 
 /** Steps of a check, in the order in which they come. */
 export const stages = ['unpacking', 'reading', 'sizing', 'drawing'] as const;

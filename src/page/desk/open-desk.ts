@@ -8,7 +8,8 @@ import type { Language } from '../state.ts';
 import { deskWords } from '../words/desk-words.ts';
 import { deskWorker } from './desk-worker.ts';
 import { type DropView, dropView } from './drop-view.ts';
-import type { DeskAsk, DeskEdit, SaveKind } from './messages.ts';
+import { type Dropped, droppedFiles, withDropped } from './dropped.ts';
+import type { DeskAsk, DeskEdit, DeskOwn, SaveKind } from './messages.ts';
 import { saveBar } from './save-bar.ts';
 import { whatIfControls } from './what-if-controls.ts';
 
@@ -17,6 +18,7 @@ export function openDesk(host: HTMLElement, parts: DeskParts): void {
   const worker = deskWorker(parts);
   let language: Language = /^fr\b/i.test(navigator.language) ? 'fr' : 'en';
   let code = parts.standard;
+  let own: DeskOwn = { answers: null, tables: null };
   let view: DropView | null = null;
   let close = (): void => undefined;
 
@@ -33,8 +35,13 @@ export function openDesk(host: HTMLElement, parts: DeskParts): void {
       ? 'dark'
       : 'light';
     document.title = 'Drainwright';
-    view = dropView(parts, language, code, {
-      check: (files) => void check(files),
+    view = dropView(parts, language, code, own, {
+      check: (dropped) => void check(dropped),
+      give: (dropped) => void take(dropped),
+      leaveOut(part) {
+        own = { ...own, [part]: null };
+        empty();
+      },
       cancel: () => empty(deskWords[language].cancelled),
       chooseCode(chosen) {
         code = chosen;
@@ -48,29 +55,46 @@ export function openDesk(host: HTMLElement, parts: DeskParts): void {
     return view;
   };
 
-  const check = async (files: readonly File[]): Promise<void> => {
-    const at = view;
-    if (at === null) return;
-    const names = files.map(({ name }) => name);
+  /** Models start a check; without one, what came is kept for it. */
+  const check = async (dropped: Dropped): Promise<void> => {
+    if (dropped.models.length === 0) {
+      await take(dropped);
+      return;
+    }
+    const at = view ?? drop();
+    const names = dropped.models.map(({ name }) => name);
     at.busy(names, 'unpacking');
     let asked: DeskAsk;
     try {
+      own = await withDropped(own, dropped);
       const inputs = await Promise.all(
-        files.map(async (file) => ({ name: file.name, bytes: new Uint8Array(await file.arrayBuffer()) })),
+        dropped.models.map(async (file) => ({ name: file.name, bytes: new Uint8Array(await file.arrayBuffer()) })),
       );
-      asked = { ask: 'check', inputs, code };
+      asked = { ask: 'check', inputs, code, own };
     } catch (reason) {
-      at.refused(
-        `${names.join(', ')}: cannot be read: ${reason instanceof Error ? reason.message : String(reason)}`,
-        false,
-      );
+      at.refused(unreadable(names, reason), false);
       return;
     }
     // Cancelled while the browser was reading.
     if (view !== at) return;
     const end = await worker.ask(asked, (stage) => at.busy(names, stage));
     if (end?.say === 'page') open(end.data);
-    else if (end?.say === 'refused') at.refused(end.message, end.fault);
+    else if (end?.say === 'refused') drop().refused(end.message, end.fault);
+  };
+  /** Answers or tables without a model: for the model that is open, else for the next one. */
+  const take = async (dropped: Dropped): Promise<void> => {
+    let given: DeskOwn;
+    try {
+      given = await withDropped(own, dropped);
+    } catch (reason) {
+      view?.refused(unreadable([dropped.answers?.name ?? dropped.tables?.name ?? ''], reason), false);
+      return;
+    }
+    if (view === null) await recheck(code, given);
+    else {
+      own = given;
+      empty();
+    }
   };
 
   const open = (data: PageData, edits: readonly DeskEdit[] = []): void => {
@@ -86,10 +110,12 @@ export function openDesk(host: HTMLElement, parts: DeskParts): void {
         language = now;
         note.textContent =
           edits.length === 0 ? '' : `${deskWords[now].whatIf.now} ${edits.map(({ words }) => words).join(' · ')}`;
-        return saveBar(parts, now, code, note, {
+        return saveBar(parts, now, { code, own }, note, {
           save: (what) => void save(what, note),
           another: () => empty(),
-          chooseCode: (chosen) => void recheck(chosen, note),
+          chooseCode: (chosen) => void recheck(chosen, own),
+          give: (dropped) => void take(dropped),
+          leaveOut: (part) => void recheck(code, { ...own, [part]: null }),
           back: edits.length === 0 ? null : () => void suppose([], note),
         });
       },
@@ -97,21 +123,24 @@ export function openDesk(host: HTMLElement, parts: DeskParts): void {
         whatIfControls(building, now, chosen, (edit) => void suppose(withEdit(edits, edit), note)),
     });
   };
-  const recheck = async (chosen: string, note: HTMLElement): Promise<void> => {
+  /** The open building by another code, or with other answers or tables; where they are refused, all stays as it is. */
+  const recheck = async (chosen: string, given: DeskOwn): Promise<void> => {
+    const bar = host.querySelector<HTMLElement>('.save-bar');
+    const note = bar?.querySelector<HTMLElement>('.save-note');
+    if (bar == null || note == null) return;
+    const controls = [...bar.querySelectorAll<HTMLButtonElement | HTMLSelectElement>('button, select, input')];
     note.textContent = deskWords[language].stages.sizing;
-    host.querySelector('.save-bar')?.setAttribute('aria-busy', 'true');
-    for (const control of host.querySelectorAll<HTMLButtonElement | HTMLSelectElement>('.save-files button, #code'))
-      control.disabled = true;
-    const end = await worker.ask({ ask: 'code', code: chosen });
-    if (end === null) return;
-    if (end.say === 'page') {
-      code = chosen;
+    bar.setAttribute('aria-busy', 'true');
+    for (const control of controls) control.disabled = true;
+    const end = await worker.ask({ ask: 'code', code: chosen, own: given });
+    if (end?.say === 'page') {
+      [code, own] = [chosen, given];
       open(end.data);
       host.querySelector<HTMLElement>('#code')?.focus();
-    } else if (end.say === 'refused') {
-      for (const control of host.querySelectorAll<HTMLButtonElement>('.save-files button, #code'))
-        control.disabled = false;
-      const select = host.querySelector<HTMLSelectElement>('#code');
+    } else if (end?.say === 'refused') {
+      bar.removeAttribute('aria-busy');
+      for (const control of controls) control.disabled = false;
+      const select = bar.querySelector<HTMLSelectElement>('#code');
       if (select !== null) select.value = code;
       note.textContent = end.message;
     }
@@ -137,12 +166,14 @@ export function openDesk(host: HTMLElement, parts: DeskParts): void {
   window.addEventListener('dragover', (event) => event.preventDefault());
   window.addEventListener('drop', (event) => {
     event.preventDefault();
-    const files = [...(event.dataTransfer?.files ?? [])];
-    const isIdle = view !== null && host.querySelector('progress') === null;
-    if (isIdle && files.length > 0) void check(files);
+    const isBusy = host.querySelector('progress, .save-bar[aria-busy]') !== null;
+    if (!isBusy && event.dataTransfer !== null) void droppedFiles(event.dataTransfer).then(check);
   });
   drop().idle();
 }
+
+const unreadable = (names: readonly string[], reason: unknown): string =>
+  `${names.join(', ')}: cannot be read: ${reason instanceof Error ? reason.message : String(reason)}`;
 
 /** One thing is supposed of one element once: a later word on the same takes the place of the earlier. */
 function withEdit(edits: readonly DeskEdit[], edit: DeskEdit): readonly DeskEdit[] {

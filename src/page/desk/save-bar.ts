@@ -3,9 +3,10 @@ import { make } from '../panel/element.ts';
 import type { Language } from '../state.ts';
 import { deskWords } from '../words/desk-words.ts';
 import { codeChooser } from './drop-view.ts';
-import type { SaveKind } from './messages.ts';
+import type { DeskOwn, SaveKind } from './messages.ts';
+import { type OwnActions, ownBar } from './own-bar.ts';
 
-export interface SaveActions {
+export interface SaveActions extends OwnActions {
   save(what: SaveKind): void;
   another(): void;
   chooseCode(code: string): void;
@@ -17,7 +18,7 @@ export interface SaveActions {
 export function saveBar(
   parts: DeskParts,
   language: Language,
-  code: string,
+  { code, own }: { readonly code: string; readonly own: DeskOwn },
   note: HTMLElement,
   actions: SaveActions,
 ): HTMLElement {
@@ -29,13 +30,15 @@ export function saveBar(
     { class: 'save-bar', 'aria-label': words.bar },
     button(words.another, actions.another, 'another'),
     codeChooser(parts, language, code, actions.chooseCode),
+    ownBar(language, own, actions),
     note,
     actions.back !== null && button(words.whatIf.back, actions.back, 'back-to-model'),
     actions.back === null &&
       make(
         'div',
-        { class: 'save-files' },
-        ...(['ifc', 'bcf', 'csv', 'json'] as const).map((what) =>
+        { class: 'save-files', role: 'group', 'aria-label': words.saveAs },
+        make('span', { class: 'save-as', 'aria-hidden': 'true' }, words.saveAs),
+        ...(['ifc', 'bcf', 'csv', 'json', 'answers'] as const).map((what) =>
           button(words.save[what], () => actions.save(what), `save-${what}`),
         ),
       ),

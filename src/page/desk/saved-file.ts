@@ -6,7 +6,9 @@ import { firstZipDay } from '../../deliver/zip-day.ts';
 import { fileOrigin } from '../../ifc/file-origin.ts';
 import type { OpenedFile } from '../../ifc/open.ts';
 import { appendSets } from '../../ifc/write/append-sets.ts';
+import { answersFormText } from '../../schedule/answers-form.ts';
 import { jsonText } from '../../schedule/json-text.ts';
+import { questionsOf } from '../../schedule/questions.ts';
 import { takeOffCsv } from '../../schedule/take-off.ts';
 import type { DeskBuilding, DeskCheck } from './check-building.ts';
 import { joined } from './joined.ts';
@@ -25,6 +27,8 @@ export function savedFile(what: SaveKind, building: DeskBuilding, check: DeskChe
       return { name: `${base}.json`, bytes: encoder.encode([...jsonText({ ...check.result })].join('')) };
     case 'csv':
       return { name: `${base}.csv`, bytes: encoder.encode(takeOffCsv(check.outcome)) };
+    case 'answers':
+      return { name: `${base}-answers.json`, bytes: encoder.encode(answersFormText(questionsOf(check.result))) };
     case 'bcf':
       return { name: `${base}.bcf`, bytes: bcf(check.result, building.model, building.files.map(fileOrigin)) };
     case 'ifc': {

@@ -3,6 +3,7 @@ import { pageDataOf } from '../../deliver/page-data-of.ts';
 import { InputError } from '../../findings/input-error.ts';
 import { changedCheck } from './changed-check.ts';
 import { checkBuilding, type DeskBuilding, type DeskCheck, openBuilding, readBuilding } from './check-building.ts';
+import { deskCode } from './desk-code.ts';
 import type { DeskAnswer, DeskAsk, Stage } from './messages.ts';
 import { savedFile } from './saved-file.ts';
 
@@ -30,6 +31,8 @@ function obey(asked: DeskAsk): void {
     return;
   }
   if (parts === null) throw new Error('asked before the beginning');
+  // Wrong answers or tables are said before the long part.
+  const own = asked.ask === 'check' || asked.ask === 'code' ? deskCode(asked.code, asked.own, parts) : null;
   if (asked.ask === 'check') {
     [building, checked] = [null, null];
     stage('unpacking');
@@ -45,12 +48,13 @@ function obey(asked: DeskAsk): void {
   }
   if (asked.ask === 'what-if') {
     if (checked === null) throw new Error('asked what if before the check was done');
-    const { outcome, result, sizes } = changedCheck(checked, asked.edits, parts);
+    const { outcome, result, sizes } = changedCheck(checked, asked.edits, parts.version);
     answer({ say: 'page', data: pageDataOf(outcome, result, sizes) });
     return;
   }
+  if (own === null) throw new Error(`asked ${asked.ask}`);
   stage('sizing');
-  checked = checkBuilding(building, asked.code, parts);
+  checked = checkBuilding(building, own, parts);
   stage('drawing');
   answer({ say: 'page', data: pageDataOf(checked.outcome, checked.result, checked.sizes) });
 }

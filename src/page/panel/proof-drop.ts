@@ -39,6 +39,8 @@ export function proofDrop({ building, words, announce }: Desk): HTMLElement {
       ondragover: (event: DragEvent) => event.preventDefault(),
       ondrop: (event: DragEvent) => {
         event.preventDefault();
+        // Elsewhere on a page that checks models it would be checked.
+        event.stopPropagation();
         const file = event.dataTransfer?.files[0];
         if (file !== undefined) void check(file);
       },

@@ -1,4 +1,4 @@
-import type { SaveKind, Stage } from '../desk/messages.ts';
+import type { DeskOwn, SaveKind, Stage } from '../desk/messages.ts';
 import type { Language } from '../state.ts';
 
 /** Words of the empty page and of the line above a page that was made on it. Messages on files stay as the program says them. */
@@ -18,7 +18,15 @@ export interface DeskWords {
   readonly otherLanguage: string;
   readonly bar: string;
   readonly another: string;
+  readonly saveAs: string;
   readonly save: Readonly<Record<SaveKind, string>>;
+  /** What counts beside the model. */
+  readonly own: {
+    readonly lead: string;
+    readonly give: Readonly<Record<keyof DeskOwn, string>>;
+    readonly given: Readonly<Record<keyof DeskOwn, string>>;
+    readonly leaveOut: (name: string) => string;
+  };
   readonly saved: (file: string) => string;
   readonly whatIf: Readonly<Record<'title' | 'asIs' | 'size' | 'kind' | 'reading' | 'now' | 'back', string>>;
 }
@@ -28,7 +36,7 @@ export const deskWords: Readonly<Record<Language, DeskWords>> = {
     lead: 'Drop an IFC model. Its drains and vents are sized by the plumbing code and compared with what is drawn.',
     drop: 'Drop a model here',
     choose: 'or choose a file',
-    formats: '.ifc, .ifc.gz or .ifczip. Several files are read as one building.',
+    formats: '.ifc, .ifc.gz or .ifczip. Several files dropped together are read as one building.',
     code: 'Plumbing code',
     private: 'Everything happens in this page. The model does not leave your machine.',
     caution:
@@ -46,7 +54,20 @@ export const deskWords: Readonly<Record<Language, DeskWords>> = {
     otherLanguage: 'Français',
     bar: 'Save and check anew',
     another: 'Another model',
-    save: { ifc: 'Sized IFC', bcf: 'Issues (BCF)', csv: 'Take-off (CSV)', json: 'Result (JSON)' },
+    saveAs: 'Save',
+    save: {
+      ifc: 'Sized IFC',
+      bcf: 'Issues (BCF)',
+      csv: 'Take-off (CSV)',
+      json: 'Result (JSON)',
+      answers: 'Questions (JSON)',
+    },
+    own: {
+      lead: 'An answers file, or a folder of local tables; dropped with the model, or chosen here:',
+      give: { answers: 'Answers…', tables: 'Local tables…' },
+      given: { answers: 'Answers:', tables: 'Local tables:' },
+      leaveOut: (name) => `Leave out ${name}`,
+    },
     saved: (file) => `Saved ${file}`,
     whatIf: {
       title: 'What if',
@@ -62,7 +83,7 @@ export const deskWords: Readonly<Record<Language, DeskWords>> = {
     lead: 'Déposez un modèle IFC. Ses évacuations et ses évents sont dimensionnés selon le code de plomberie et comparés au dessin.',
     drop: 'Déposez un modèle ici',
     choose: 'ou choisissez un fichier',
-    formats: '.ifc, .ifc.gz ou .ifczip. Plusieurs fichiers sont lus comme un seul bâtiment.',
+    formats: '.ifc, .ifc.gz ou .ifczip. Plusieurs fichiers déposés ensemble sont lus comme un seul bâtiment.',
     code: 'Code de plomberie',
     private: 'Tout se passe dans cette page. Le modèle ne quitte pas votre ordinateur.',
     caution:
@@ -80,11 +101,19 @@ export const deskWords: Readonly<Record<Language, DeskWords>> = {
     otherLanguage: 'English',
     bar: 'Enregistrer et vérifier de nouveau',
     another: 'Autre modèle',
+    saveAs: 'Enregistrer',
     save: {
       ifc: 'IFC dimensionné',
       bcf: 'Problèmes (BCF)',
       csv: 'Métré (CSV)',
       json: 'Résultat (JSON)',
+      answers: 'Questions (JSON)',
+    },
+    own: {
+      lead: 'Un fichier de réponses ou un dossier de tables locales, déposé avec le modèle ou choisi ici :',
+      give: { answers: 'Réponses…', tables: 'Tables locales…' },
+      given: { answers: 'Réponses :', tables: 'Tables locales :' },
+      leaveOut: (name) => `Laisser de côté ${name}`,
     },
     saved: (file) => `${file} enregistré`,
     whatIf: {
