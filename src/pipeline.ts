@@ -52,7 +52,7 @@ export function runNetwork({ findings, ...piping }: Piping): Outcome {
   const paths = found.value;
   const modelled = modelledSizes(model, network, code, answers);
   const facts: FixtureFacts = { model, identities, network, paths, code, answers, modelled };
-  const shared: Finding[] = [...findings, ...found.findings];
+  const shared: Finding[] = [...findings, ...found.findings.filter((one) => !isToldAsGap(one, findings))];
   const runs: Run[] = [];
   const scenarios = scenariosFor(facts);
   const runAs = (scenario: Scenario): { run: Run; findings: readonly Finding[] } => {
@@ -84,6 +84,10 @@ export function runNetwork({ findings, ...piping }: Piping): Outcome {
     read: findings,
   });
 }
+
+/** An end that stays open before a gap is told with the gap. */
+const isToldAsGap = ({ code, about }: Finding, findings: readonly Finding[]): boolean =>
+  code === 'open-end' && findings.some((known) => known.code === 'open-end' && known.about.includes(about[0]!));
 
 const leavesEntriesOpen = ({ roles }: Run): boolean =>
   roles.uses.some(({ stack }) => stack?.entries?.some(({ known }) => !known) === true);

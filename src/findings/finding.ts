@@ -59,6 +59,7 @@ export type FindingCode =
   | 'double-water-path'
   | 'doubled-element'
   | 'size-contradicted'
+  | 'size-from-name'
   | 'kind-contradicted'
   | 'group-not-applied'
   | 'files-apart'
@@ -97,6 +98,7 @@ export const severityOf: Readonly<Record<FindingCode, Severity>> = {
   'open-air-assumed': 'note',
   'storeys-assumed': 'note',
   'group-not-applied': 'note',
+  'size-from-name': 'note',
   'doubled-element': 'warning',
   'size-contradicted': 'warning',
   'kind-contradicted': 'warning',

@@ -92,6 +92,8 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
       : `${many(f, 'says its size is', 'say their size is')} ${text(f, 'said')} (${text(f, 'from')}), which is no size of the code.`,
   'size-contradicted': (f) =>
     `${first(f)} is ${text(f, 'size')} by ${text(f, 'from')} but ${text(f, 'other')} by ${text(f, 'otherFrom')}; the first is used.`,
+  'size-from-name': (f) =>
+    `${many(f, 'says its size', 'say their sizes')} in ${f.about.length === 1 ? 'its name' : 'their names'} alone${has(f, 'size') ? ` (${text(f, 'size')})` : ''}: nothing drawn or stated confirms it.`,
   'smaller-downstream': (f) =>
     `${first(f)} is drawn ${text(f, 'modelled')}, smaller than ${f.about[1] ?? 'the pipe'} (${text(f, 'upstream')}) that drains into it${f.clause}.`,
   'unvented-trap': (f) =>

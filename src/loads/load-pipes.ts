@@ -1,6 +1,7 @@
 import { type Finding, finding, type WithFindings } from '../findings/finding.ts';
 import type { ElementId } from '../model/model.ts';
 import type { FixtureId } from '../paths/paths.ts';
+import type { NominalSize } from '../units/nominal-size.ts';
 import { type Load, noLoad, plusLoad } from '../units/quantity.ts';
 import { bathroomGroups } from './bathroom-groups.ts';
 import { countFixtures } from './count-fixtures.ts';
@@ -133,11 +134,13 @@ function fixtureOrder({ paths, network }: FixtureFacts): { order: FixtureId[]; f
 function sizeFindings({ network, modelled }: FixtureFacts): Finding[] {
   const findings: Finding[] = [];
   const told = new Set<ElementId>();
+  const named: { readonly element: ElementId; readonly size: NominalSize | null }[] = [];
   const unread = new Map<string, ElementId[]>();
   for (const { id, element } of network.pipes) {
     if (element === null || told.has(element)) continue;
     told.add(element);
-    const { reason, said, from, size, contradictedBy } = modelled[id]!;
+    const { reason, said, from, size, isOnlyNamed, contradictedBy } = modelled[id]!;
+    if (isOnlyNamed) named.push({ element, size });
     if (reason !== null) {
       const key = JSON.stringify([said, from]);
       unread.set(key, [...(unread.get(key) ?? []), element]);
@@ -150,6 +153,11 @@ function sizeFindings({ network, modelled }: FixtureFacts): Finding[] {
   for (const [key, elements] of unread) {
     const [said, from] = JSON.parse(key) as [string | null, string | null];
     findings.push(finding('size-unknown', elements, { said, from, pipes: elements.length }));
+  }
+  if (named.length > 0) {
+    const about = named.map(({ element }) => element);
+    const sizes = new Set(named.map(({ size }) => size));
+    findings.push(finding('size-from-name', about, sizes.size === 1 ? { size: [...sizes][0]! } : {}));
   }
   return findings;
 }

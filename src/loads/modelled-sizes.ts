@@ -4,15 +4,7 @@ import type { Answers } from '../model/answers.ts';
 import type { Element, ElementId, Model } from '../model/model.ts';
 import type { Network } from '../network/network.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
-import { type ModelledSize, readSize } from './read-size.ts';
-
-const noSize: ModelledSize = {
-  size: null,
-  from: null,
-  reason: 'no size in the model',
-  said: null,
-  contradictedBy: null,
-};
+import { type ModelledSize, noSize, readSize } from './read-size.ts';
 
 /** Size the model, or the user for it, gives each pipe. By pipe id; sections of one element share theirs. */
 export function modelledSizes(model: Model, network: Network, code: PlumbingCode, answers: Answers): ModelledSize[] {
@@ -38,7 +30,5 @@ function answeredSize(
   answered: readonly (readonly [string, { readonly size?: string }])[],
 ): ModelledSize | null {
   const hit = answered.find(([key]) => keyMatches(key, element));
-  return hit === undefined
-    ? null
-    : { size: hit[1].size as NominalSize, from: 'answers file', reason: null, said: null, contradictedBy: null };
+  return hit === undefined ? null : { ...noSize, size: hit[1].size as NominalSize, from: 'answers file', reason: null };
 }

@@ -11,6 +11,8 @@ export interface ModelledSize {
   readonly reason: 'no size in the model' | 'size cannot be read' | null;
   /** What could not be read, in millimetres or words. */
   readonly said: string | null;
+  /** A name is all that tells it. */
+  readonly isOnlyNamed: boolean;
   /** Another witness that means a different size. */
   readonly contradictedBy: { readonly size: NominalSize; readonly from: string } | null;
 }
@@ -20,6 +22,15 @@ const nominalTolerance = 0.2;
 const outerTolerance = 0.6;
 
 const trustOrder: readonly SizeWitness['ground'][] = ['property', 'quantity', 'name', 'port', 'profile', 'measured'];
+
+export const noSize: ModelledSize = {
+  size: null,
+  from: null,
+  reason: 'no size in the model',
+  said: null,
+  isOnlyNamed: false,
+  contradictedBy: null,
+};
 
 /** The size that the model gives a pipe, by the first witness the code's series can read. Witnesses that differ are kept. */
 export function readSize(
@@ -32,10 +43,9 @@ export function readSize(
   const first = read.find(({ size }) => size !== null);
   if (first === undefined) {
     const said = ordered[0];
-    if (said === undefined)
-      return { size: null, from: null, reason: 'no size in the model', said: null, contradictedBy: null };
+    if (said === undefined) return noSize;
     const words = said.text ?? (said.mm === null ? null : `${Number(said.mm.toFixed(1))} mm`);
-    return { size: null, from: said.from, reason: 'size cannot be read', said: words, contradictedBy: null };
+    return { ...noSize, from: said.from, reason: 'size cannot be read', said: words };
   }
   const other = read.find(({ size, witness }) => size !== null && size !== first.size && witness.ground !== 'measured');
   return {
@@ -43,6 +53,7 @@ export function readSize(
     from: first.witness.from,
     reason: null,
     said: null,
+    isOnlyNamed: read.every(({ size, witness }) => size === null || witness.ground === 'name'),
     contradictedBy: other === undefined ? null : { size: other.size!, from: other.witness.from },
   };
 }

@@ -13,6 +13,13 @@ export interface SewerEndFacts {
   readonly isVent: readonly boolean[];
 }
 
+export interface SewerEnd extends Pick<DrainSystem, 'how'> {
+  readonly joint: JointId;
+  readonly candidates: number;
+  /** What else is named or answered as an end, lowest first. */
+  readonly others: readonly JointId[];
+}
+
 /** Ends whose heights differ by less count as equally low. */
 const equalHeight = 0.01;
 
@@ -20,37 +27,46 @@ const equalHeight = 0.01;
  * Where one connected piece leaves: the user's answer, an element that says so, the end of the ports' directions, the
  * lowest open end outside vent systems, the largest, the lowest GlobalId. null: the piece has no end to leave by.
  */
-export function sewerEndOf(
-  piece: Piece,
-  facts: SewerEndFacts,
-): { joint: JointId; how: DrainSystem['how']; candidates: number } | null {
+export function sewerEndOf(piece: Piece, facts: SewerEndFacts): SewerEnd | null {
   const { network, identities } = facts;
   const answered = piece.joints.filter((joint) => isAnswered(joint, facts));
-  if (answered.length > 0) return { joint: openFirst(answered, network), how: 'answer', candidates: answered.length };
+  if (answered.length > 0) return firstOf(openFirst(answered, network), 'answer');
 
   const named = piece.joints.filter(
     (joint) =>
       endsInNamedPipe(joint, facts) ||
       network.joints[joint]!.elements.some((element) => identities[element]?.part === 'sewer-connection'),
   );
-  if (named.length > 0) return { joint: lowestOf(named, facts)[0]!, how: 'named', candidates: named.length };
+  if (named.length > 0) return firstOf(lowestFirst(named, network), 'named');
 
   const open = piece.joints.filter((joint) => isOpenEnd(joint, facts) || hasFreeOutlet(joint, facts));
   if (open.length === 0) return null;
   const outward = open.filter((joint) => portsLeave(joint, network) || hasFreeOutlet(joint, facts));
-  if (outward.length === 1) return { joint: outward[0]!, how: 'ports', candidates: open.length };
+  const assumed = (joint: JointId, how: DrainSystem['how']): SewerEnd => ({
+    joint,
+    how,
+    candidates: open.length,
+    others: [],
+  });
+  if (outward.length === 1) return assumed(outward[0]!, 'ports');
   const pool = outward.length > 1 ? outward : open;
 
   const lowest = lowestOf(pool, facts);
-  if (lowest.length === 1)
-    return { joint: lowest[0]!, how: pool === outward ? 'ports' : 'lowest', candidates: open.length };
+  if (lowest.length === 1) return assumed(lowest[0]!, pool === outward ? 'ports' : 'lowest');
   const widths = lowest.map((joint) => widthAt(joint, facts));
   const widest = Math.max(...widths);
   const largest = lowest.filter((_, at) => widths[at] === widest);
-  if (largest.length === 1) return { joint: largest[0]!, how: 'largest', candidates: open.length };
+  if (largest.length === 1) return assumed(largest[0]!, 'largest');
   const first = [...largest].sort((a, b) => (globalIdAt(a, facts) < globalIdAt(b, facts) ? -1 : 1))[0]!;
-  return { joint: first, how: 'first', candidates: open.length };
+  return assumed(first, 'first');
 }
+
+const firstOf = ([joint, ...others]: readonly JointId[], how: DrainSystem['how']): SewerEnd => ({
+  joint: joint!,
+  how,
+  candidates: others.length + 1,
+  others,
+});
 
 /** One pipe ends here, it is no vent, and nothing that drains, closes or vents stands at it. */
 function isOpenEnd(joint: JointId, { network, identities, isVent }: SewerEndFacts): boolean {
@@ -121,13 +137,15 @@ function isAnswered(joint: JointId, { network, model, answers }: SewerEndFacts):
   return elements.some(named) || (pipes.length === 1 && named(network.pipes[pipes[0]!]!.element));
 }
 
-const openFirst = (joints: readonly JointId[], network: Network): JointId =>
-  [...joints].sort(
-    (a, b) =>
-      network.joints[a]!.pipes.length - network.joints[b]!.pipes.length ||
-      endHeight(a, network) - endHeight(b, network) ||
-      a - b,
-  )[0]!;
+const openFirst = (joints: readonly JointId[], network: Network): JointId[] =>
+  lowestFirst(joints, network).sort((a, b) => network.joints[a]!.pipes.length - network.joints[b]!.pipes.length);
+
+/** Heights that differ by less than counts are equal: then the model's own order decides. */
+function lowestFirst(joints: readonly JointId[], network: Network): JointId[] {
+  const floor = Math.min(...joints.map((joint) => endHeight(joint, network)));
+  const level = (joint: JointId): number => Math.floor((endHeight(joint, network) - floor) / equalHeight);
+  return [...joints].sort((a, b) => level(a) - level(b) || a - b);
+}
 
 function globalIdAt(joint: JointId, { network, model }: SewerEndFacts): string {
   const { pipes, elements } = network.joints[joint]!;

@@ -5,10 +5,9 @@ import type { Identity } from '../model/identity.ts';
 import type { ElementId, Model } from '../model/model.ts';
 import type { JointId, Network, Pipe, PipeId } from '../network/network.ts';
 import { coordinateMetres } from '../units/uncertainty.ts';
-import { cheapestWays } from './cheapest-ways.ts';
 import { connectedPieces } from './connected-pieces.ts';
 import type { DrainSystem, FixtureId, FixturePath } from './paths.ts';
-import { sewerEndOf } from './sewer-end.ts';
+import { waysOut } from './ways-out.ts';
 
 export interface Water {
   readonly systems: readonly DrainSystem[];
@@ -55,7 +54,7 @@ export function waterPaths(
   const downJoint: (JointId | null)[] = pipes.map(() => null);
   const wet: boolean[] = pipes.map(() => false);
   const entering: FixtureId[][] = pipes.map(() => []);
-  const systems: DrainSystem[] = [];
+  const ends: Omit<DrainSystem, 'isCutOff'>[] = [];
   const fixtures: FixturePath[] = [];
   const byJoint = new Map<JointId, { element: ElementId; id: FixtureId }[]>();
   drainers.forEach(({ element, outlet }, index) => {
@@ -77,27 +76,23 @@ export function waterPaths(
   /** First pipe of the way to the sewer, by joint. */
   const wayOut: (PipeId | null)[] = joints.map(() => null);
   for (const piece of connectedPieces(network)) {
-    if (!piece.joints.some((joint) => byJoint.has(joint))) continue;
-    const end = sewerEndOf(piece, { model, identities, network, answers, isVent });
-    if (end === null) {
+    const outlets = piece.joints.filter((joint) => byJoint.has(joint));
+    if (outlets.length === 0) continue;
+    const out = waysOut(piece, outlets, { model, identities, network, answers, isVent, cost, rank });
+    if (out === null) {
       const about = piece.joints.flatMap((joint) => (byJoint.get(joint) ?? []).map(({ element }) => element));
       findings.push(finding('no-sewer-end', about, { fixtures: about.length }));
       continue;
     }
-    systems.push({ sewerEnd: end.joint, how: end.how, pipes: piece.pipes });
-    const ways = cheapestWays(network, [end.joint], (pipe, _to, from) => cost(pipe, from), rank);
-    for (const joint of piece.joints) wayOut[joint] = ways.via[joint] ?? null;
-    if (end.how !== 'answer' && end.how !== 'named') {
-      const at = joints[end.joint]!;
+    for (const joint of piece.joints) wayOut[joint] = out.via(joint);
+    for (const { joint, how, candidates, pipes: own } of out.ends) {
+      ends.push({ sewerEnd: joint, how, pipes: own });
+      if (isSaid(how)) continue;
+      const at = joints[joint]!;
       const pipe = at.pipes[0];
       const element = pipe === undefined ? at.elements[0] : (pipes[pipe]!.element ?? at.elements[0]);
-      findings.push(
-        finding('sewer-end-assumed', element === undefined ? [] : [element], {
-          how: end.how,
-          z: at.at?.[2] ?? null,
-          candidates: end.candidates,
-        }),
-      );
+      const about = element === undefined ? [] : [element];
+      findings.push(finding('sewer-end-assumed', about, { how, z: at.at?.[2] ?? null, candidates }));
     }
   }
 
@@ -119,8 +114,12 @@ export function waterPaths(
     fixtures.push({ id: index as FixtureId, element, outlet, water: path });
   });
 
+  const anySaid = ends.some(({ how }) => isSaid(how));
+  const systems = ends.map((end): DrainSystem => ({ ...end, isCutOff: anySaid && !isSaid(end.how) }));
   return { systems, fixtures, next, toward: downJoint, wet, inFlowOrder: flowOrder(network, wet, next), entering };
 }
+
+const isSaid = (how: DrainSystem['how']): boolean => how === 'answer' || how === 'named';
 
 /** Every wet pipe after those that flow into it; ties by pipe id. */
 function flowOrder(network: Network, wet: readonly boolean[], next: readonly (PipeId | null)[]): PipeId[] {

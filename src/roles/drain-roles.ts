@@ -75,7 +75,10 @@ function throughOneTrap({ inFlowOrder, entering, traps, next, wet }: Paths): boo
   return Array.from(trapOf, (trap) => trap >= 0);
 }
 
-/** From the feet of the stacks to the sewer; without stacks from below the last row or drop (DESIGN, roles). */
+/**
+ * From the feet of the stacks to the sewer; without stacks from below the last row or drop (DESIGN, roles), unless the
+ * piping is cut off: nobody knows what it goes on as.
+ */
 function buildingDrain(
   context: StackContext,
   inStack: readonly (Stack | null)[],
@@ -91,7 +94,8 @@ function buildingDrain(
     if (below.some((pipe) => inStack[pipe] !== null)) continue;
     for (const pipe of below) drain.add(pipe);
   }
-  for (const { pipes } of paths.systems) {
+  for (const { pipes, isCutOff } of paths.systems) {
+    if (isCutOff) continue;
     const own = pipes.filter((pipe) => paths.wet[pipe]);
     if (own.some((pipe) => inStack[pipe] !== null)) continue;
     for (const pipe of drainWithoutStack(context, own, batteries)) drain.add(pipe);

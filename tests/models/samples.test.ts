@@ -10,6 +10,17 @@ import { sketch } from '../support/sketch.ts';
 const folder = resolve(import.meta.dirname, '../../sample-models');
 const textOf = (file: string): string => readFileSync(join(folder, file), 'utf8');
 
+/** Faults that a sample plants: what is laid the wrong way, has no body, or whose end meets nothing. */
+const planted: Readonly<
+  Record<string, { readonly uphill: string[]; readonly bare: string[]; readonly open: string[] }>
+> = {
+  'twelve-faults': {
+    uphill: ['F6-P6'],
+    bare: ['P8-Q8', 'P9-Q9'],
+    open: ['J2-F2', 'F2-A2', 'F3-GA', 'GB-A3', 'V13-C13'],
+  },
+};
+
 test('every notation in the folder is a sample, and has its file', () => {
   const files = readdirSync(folder);
   const names = samples.map(({ name }) => name);
@@ -30,6 +41,7 @@ beforeAll(async () => {
 describe.each(samples)('$name', ({ name, options }) => {
   const piping = textOf(`${name}.piping`);
   const drawn = sketch(piping);
+  const { uphill = [], bare = [], open = [] } = planted[name] ?? {};
   const draft = draftOf(drawn);
   let model = -1;
   afterAll(() => {
@@ -40,7 +52,7 @@ describe.each(samples)('$name', ({ name, options }) => {
     expect(ifcOfSample(piping, options)).toBe(textOf(`${name}.ifc`));
   });
 
-  test('web-ifc opens the file and finds a shape for every element', () => {
+  test('web-ifc opens the file and finds a shape for every element that has a body', () => {
     model = api.OpenModel(readFileSync(join(folder, `${name}.ifc`)));
     expect(model).toBeGreaterThanOrEqual(0);
     const shaped = new Set<number>();
@@ -49,7 +61,9 @@ describe.each(samples)('$name', ({ name, options }) => {
     });
     const ids = api.GetLineIDsWithType(model, W.IFCDISTRIBUTIONELEMENT, true);
     expect(ids.size()).toBe(draft.elements.length);
-    for (let at = 0; at < ids.size(); at += 1) expect(shaped).toContain(ids.get(at));
+    let without = 0;
+    for (let at = 0; at < ids.size(); at += 1) if (!shaped.has(ids.get(at))) without += 1;
+    expect(without).toBe(bare.length);
   });
 
   test('drawn as a good designer would: drains fall 1:50 or more, vents never fall toward the sky', () => {
@@ -59,14 +73,15 @@ describe.each(samples)('$name', ({ name, options }) => {
       const plan = planDistance(from, to);
       const fall = from[2] - to[2];
       if (medium === 'vent') return fall > 1e-9 ? [`${pipe} falls toward the sky`] : [];
-      return plan > 0 && fall / plan < 1 / 50 - 1e-9 ? [`${pipe} falls 1:${Math.round(plan / fall)}`] : [];
+      return plan > 0 && fall / plan < 1 / 50 - 1e-9 ? [pipe] : [];
     });
-    expect(wrong).toEqual([]);
+    expect(wrong).toEqual(uphill);
   });
 
   test('every pipe end meets something', () => {
     const joined = new Set(draft.connections.flat());
-    expect(draft.ports.flatMap((_, port) => (joined.has(port) ? [] : [port]))).toEqual([]);
+    const loose = draft.ports.flatMap(({ owner }, port) => (joined.has(port) ? [] : [draft.elements[owner]!.name]));
+    expect(loose).toEqual(open);
   });
 
   test('fixtures stand in a room, with their storey', () => {
@@ -95,5 +110,6 @@ test('what the samples hold, counted by hand', () => {
     // Four storeys with eight urinals, four lavatories, six closets; one mop sink.
     'school: 32 16 24 0 1',
     'sports-hall: 6 0 0 0 0',
+    'twelve-faults: 0 11 1 0 0',
   ]);
 });

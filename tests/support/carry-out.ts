@@ -76,7 +76,7 @@ function nodeAt(draft: Drawing, at: Vec3, cuts: boolean): string {
   const pipe = cuts
     ? draft.pipes.find(({ nodes }) => footOn(polyline(lineOf(draft, nodes)), at).off < 0.002)
     : undefined;
-  draft.nodes.set(name, { name, at, storey: pipe?.storey ?? null, bare: false });
+  draft.nodes.set(name, { name, at, storey: pipe?.storey ?? null, bare: false, missing: false });
   if (pipe !== undefined) cut(draft, pipe, name, at);
   return name;
 }

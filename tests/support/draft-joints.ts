@@ -18,6 +18,8 @@ export interface PipeEnd {
   readonly first: boolean;
   /** Ports know a direction: not on vents. */
   readonly flows: boolean;
+  /** The pipe's own ports tell it the wrong way round. */
+  readonly turned: boolean;
   /** Where the pipe's own body ends, metres from the node. */
   readonly at: Vec3;
   /** From the node into the pipe. */
@@ -57,7 +59,16 @@ export function meetPipes(sketch: Sketch): Joints {
       if (past !== null) reach = Math.min(sketch.pipes[past.pipe]!.size.outer / 2, room * largestShare);
       const end = reach === 0 ? node.at : add(node.at, scale(into, reach));
       trimmed[pipe]![first ? 0 : line.length - 1] = end;
-      return { pipe, drawn, medium: drawn.medium, first, flows: drawn.medium !== 'vent', at: end, into };
+      return {
+        pipe,
+        drawn,
+        medium: drawn.medium,
+        first,
+        flows: drawn.medium !== 'vent',
+        turned: drawn.turned,
+        at: end,
+        into,
+      };
     });
     at.set(node.name, { node, ends, part, past });
   }

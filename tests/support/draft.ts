@@ -32,7 +32,7 @@ export interface DraftElement {
   readonly material: string | null;
   readonly size: PipeSize | null;
   readonly origin: Vec3;
-  /** Centre line of a pipe, cut back to the faces of its fittings. */
+  /** Centre line of a pipe, cut back to the faces of its fittings. Without a size it has no body: an axis is all. */
   readonly line: readonly Vec3[] | null;
   /** Solids of everything else, in world metres: boxes, and round bars from point to point. */
   readonly solids: readonly Solid[];
@@ -73,7 +73,8 @@ function makeDraft(sketch: Sketch): Draft {
   );
   const places = new Map<string, number>();
   for (const joint of joints.at.values()) {
-    if (joint.part !== null || joint.past !== null || joint.ends.length < 2 || joint.node.bare) continue;
+    const { bare, missing } = joint.node;
+    if (joint.part !== null || joint.past !== null || joint.ends.length < 2 || bare || missing) continue;
     places.set(joint.node.name, elements.length);
     elements.push(draftJointFitting(sketch, joint));
   }
@@ -82,6 +83,11 @@ function makeDraft(sketch: Sketch): Draft {
     const joint = joints.at.get(part.name)!;
     elements.push(part.is === 'fixture' ? draftFixture(sketch, part, joint) : draftFitting(sketch, part, joint));
   }
+  for (const [index, pipe] of sketch.pipes.entries())
+    if (pipe.twice) {
+      const name = `${pipe.name} again`;
+      elements.push({ ...elements[index]!, name, globalId: globalIdOf(sketch.title, 'pipe', name) });
+    }
   const { ports, connections } = portsOf(joints, places);
   const owned = elements.map((): number[] => []);
   for (const [index, { owner }] of ports.entries()) owned[owner]!.push(index);
@@ -102,12 +108,12 @@ function draftPipe(sketch: Sketch, pipe: SketchPipe, joints: Joints, index: numb
     ifcClass: 'IfcPipeSegment',
     predefined: 'RIGIDSEGMENT',
     kind: 'segment',
-    typeName: `${pipe.material} pipe`,
+    typeName: `${pipe.material} pipe${pipe.sized === 'by name' ? ` ${pipe.size.label}` : ''}`,
     medium: pipe.medium,
     storey: pipe.storey,
     space: null,
     material: pipe.material,
-    size: pipe.size,
+    size: pipe.sized === 'plainly' ? pipe.size : null,
     origin: first,
     line,
     solids: [],
@@ -145,6 +151,9 @@ export function joined(boxes: readonly Box[]): Box {
   return { min: [least(0), least(1), least(2)], max: [most(0), most(1), most(2)] };
 }
 
+const againstFlow = (direction: DraftPort['direction']): DraftPort['direction'] =>
+  direction === 'sink' ? 'source' : direction === 'source' ? 'sink' : 'unknown';
+
 /** Water leaves fixtures and enters pipes at their first end; vents say nothing of direction. */
 function portsOf(joints: Joints, places: ReadonlyMap<string, number>): Pick<Draft, 'ports' | 'connections'> {
   const ports: DraftPort[] = [];
@@ -152,15 +161,15 @@ function portsOf(joints: Joints, places: ReadonlyMap<string, number>): Pick<Draf
   const add = (owner: number, at: Vec3, direction: DraftPort['direction']): number =>
     ports.push({ owner, at, direction }) - 1;
   for (const joint of joints.at.values()) {
-    const ends = joint.ends.map(({ pipe, first, at, flows }) => {
+    const ends = joint.ends.map(({ pipe, first, at, flows, turned }) => {
       const direction = flows ? (first ? 'sink' : 'source') : 'unknown';
-      return { at, direction, port: add(pipe, at, direction) } as const;
+      return { at, direction, port: add(pipe, at, turned ? againstFlow(direction) : direction) } as const;
     });
+    if (joint.node.missing) continue;
     const owner = joint.past?.pipe ?? places.get(joint.node.name);
     if (owner !== undefined) {
       for (const { at, direction, port } of ends) {
-        const against = direction === 'sink' ? 'source' : direction === 'source' ? 'sink' : 'unknown';
-        connections.push([port, add(owner, at, against)]);
+        connections.push([port, add(owner, at, againstFlow(direction))]);
       }
       const part = places.get(joint.node.name);
       if (joint.past !== null && part !== undefined)

@@ -224,7 +224,7 @@ export function examplePage(spec: BuildingSpec): ExamplePage {
   const last = runNames.findLast((name) => wet(name) && nextOf(name) === null)!;
   const pieces: DryPiece[] = [{ id: 0, pipes: [], feet: [], mouths: [] }];
   const paths: Paths = {
-    systems: [{ sewerEnd: joint.get(run(last).to)!, how: 'lowest', pipes: pipes.map(({ id }) => id) }],
+    systems: [{ sewerEnd: joint.get(run(last).to)!, how: 'lowest', isCutOff: false, pipes: pipes.map(({ id }) => id) }],
     fixtures: spec.fixtures.map((fixture, index) => ({
       id: index as FixtureId,
       element: fixtureElements[index]!.id,

@@ -2,7 +2,7 @@ import { distance, dot, scale, subtract, type Vec3 } from '../../src/geometry/ve
 import type { Draft, DraftElement } from './draft.ts';
 import { type Building, type Level, materialOf } from './ifc-building.ts';
 import { writeSets, writeType } from './ifc-properties.ts';
-import { bentPipe, shapeOf, solidItems, straightPipe } from './ifc-shapes.ts';
+import { axisShape, bentPipe, shapeOf, solidItems, straightPipe } from './ifc-shapes.ts';
 import { axesAlong, type IfcSheet, placed } from './ifc-sheet.ts';
 import type { SketchMedium } from './sketch.ts';
 import { type Ref, word } from './step-file.ts';
@@ -56,7 +56,10 @@ function writeElement(sheet: IfcSheet, element: DraftElement, level: Level): Wri
         ? [straightPipe(sheet, size, distance(line[0]!, line[1]!))]
         : [bentPipe(sheet, size, line.map(local))];
   for (const item of items) colour(sheet, item, element);
-  const shape = shapeOf(sheet, items, line !== null && !straight ? 'AdvancedSweptSolid' : 'SweptSolid');
+  const shape =
+    line !== null && size === null
+      ? axisShape(sheet, line.map(local))
+      : shapeOf(sheet, items, line !== null && !straight ? 'AdvancedSweptSolid' : 'SweptSolid');
   const keyword = sheet.old ? (oldClasses[element.ifcClass] ?? 'IFCFLOWTERMINAL') : element.ifcClass.toUpperCase();
   const objectType = element.predefined === 'USERDEFINED' ? element.typeName : null;
   const root = [element.globalId, sheet.owner, element.name, null, objectType, placement, shape, null];

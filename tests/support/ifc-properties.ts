@@ -11,8 +11,9 @@ export function setsOf(
   const facts: PropertyFact[] = [...element.properties];
   const say = (set: string, name: string, value: number, measure: PropertyFact['measure']) =>
     facts.push({ set, name, value, measure, from: 'own' });
-  if (element.line !== null && element.size !== null) {
-    if (sheet.sizes) say('Pset_PipeSegmentTypeCommon', 'NominalDiameter', element.size.nominal, 'length');
+  if (element.line !== null) {
+    if (sheet.sizes && element.size !== null)
+      say('Pset_PipeSegmentTypeCommon', 'NominalDiameter', element.size.nominal, 'length');
     const occurrence = sheet.old ? 'Pset_FlowSegmentPipeSegment' : 'Pset_PipeSegmentOccurrence';
     if (element.slope !== null) say(occurrence, 'Gradient', element.slope, 'number');
   }

@@ -117,6 +117,14 @@ function frame(sheet: IfcSheet, at: Vec3, axes?: Axes): Ref {
 const flat = (sheet: IfcSheet): Ref =>
   sheet.file.share('IFCAXIS2PLACEMENT2D', sheet.file.share('IFCCARTESIANPOINT', [0, 0]), null);
 
+/** A pipe without a body: its axis alone, through points of its own frame. */
+export function axisShape(sheet: IfcSheet, line: readonly Vec3[]): Ref {
+  const points = line.map((at) => point(sheet, at));
+  const curve = sheet.file.add('IFCPOLYLINE', points);
+  const axis = sheet.file.add('IFCSHAPEREPRESENTATION', sheet.axis, 'Axis', 'Curve3D', [curve]);
+  return sheet.file.add('IFCPRODUCTDEFINITIONSHAPE', null, null, [axis]);
+}
+
 /** One product shape of one representation. */
 export function shapeOf(sheet: IfcSheet, items: readonly Ref[], type: string): Ref {
   const body = sheet.file.add('IFCSHAPEREPRESENTATION', sheet.body, 'Body', type, items);

@@ -3,10 +3,12 @@ import {
   elementId,
   type Model,
   type PortId,
+  type SizeWitness,
   type SpaceId,
   type StoreyId,
   type SystemId,
 } from '../../src/model/model.ts';
+import { sizeInName } from '../../src/model/size-in-name.ts';
 import { metres } from '../../src/units/quantity.ts';
 import { type DraftElement, draftOf } from './draft.ts';
 import type { Sketch, SketchFabric } from './sketch.ts';
@@ -146,19 +148,19 @@ function told(
     material: element.material,
     origin: element.origin,
     centreLine:
-      element.line === null || pipe === null
+      element.line === null
         ? null
         : {
             points: element.line,
-            outerDiameter: metres(pipe.outer),
-            innerDiameter: metres(pipe.inner),
-            ground: element.line.length > 2 ? 'swept-disk' : 'extrusion',
+            outerDiameter: pipe && metres(pipe.outer),
+            innerDiameter: pipe && metres(pipe.inner),
+            ground: pipe === null ? 'axis' : element.line.length > 2 ? 'swept-disk' : 'extrusion',
             residual: 0,
           },
-    box: element.box,
+    box: element.line !== null && pipe === null ? null : element.box,
     sizes:
       pipe === null
-        ? []
+        ? nameWitness(element)
         : [
             ...(sizes
               ? [
@@ -178,6 +180,11 @@ function told(
     statedLength: null,
     properties: element.properties,
   };
+}
+
+function nameWitness({ line, typeName }: DraftElement): readonly SizeWitness[] {
+  const text = line === null ? null : sizeInName(typeName, true);
+  return text === null ? [] : [{ means: 'unknown', mm: null, text, ground: 'name', from: 'type name' }];
 }
 
 type Point = readonly [number, number, number];

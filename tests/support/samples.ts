@@ -10,6 +10,7 @@ export const samples: readonly { readonly name: string; readonly options: Partia
   { name: 'hall-wet-vented', options: { schema: 'IFC4', unit: 'mm' } },
   { name: 'school', options: { schema: 'IFC4', unit: 'mm' } },
   { name: 'sports-hall', options: { schema: 'IFC4', unit: 'm' } },
+  { name: 'twelve-faults', options: { schema: 'IFC4X3_ADD2', unit: 'mm' } },
 ];
 
 export const ifcOfSample = (piping: string, options: Partial<IfcOptions>): string => ifcOf(sketch(piping), options);

@@ -1,7 +1,7 @@
 import { InputError } from '../../src/findings/input-error.ts';
 import type { Vec3 } from '../../src/geometry/vector.ts';
 import type { PipeSize } from './pipe-sizes.ts';
-import type { Sketch, SketchMedium, SketchSystem } from './sketch.ts';
+import type { Sketch, SketchMedium, SketchPipe, SketchSystem } from './sketch.ts';
 import { readFabric, readSpace, readWall } from './sketch-building.ts';
 import { isPartWord, readFitting, readFixture } from './sketch-part-lines.ts';
 import { readPath } from './sketch-path.ts';
@@ -30,6 +30,7 @@ export function readSketch(text: string): Sketch {
     places: new Map(),
     nodeStoreys: new Map(),
     bare: new Set(),
+    missing: new Set(),
     pipes: [],
     parts: [],
   };
@@ -127,6 +128,7 @@ function readLine(statement: Statement, sheet: Sheet, scope: Scope): void {
       const name = scope.nameOf(cursor.name('name of the node'));
       putNode(sheet, cursor, scope, name);
       if (cursor.took('bare')) sheet.bare.add(name);
+      else if (cursor.took('missing')) sheet.missing.add(name);
       break;
     }
     default:
@@ -152,10 +154,17 @@ function readPipes(cursor: Cursor, medium: SketchMedium, sheet: Sheet, scope: Sc
   let material = sheet.material;
   let whole = false;
   let states: number | null = null;
+  let sized: SketchPipe['sized'] = 'plainly';
+  let twice = false;
+  let turned = false;
   while (!cursor.took(':')) {
     if (cursor.took('whole')) whole = true;
     else if (cursor.took('material')) material = cursor.text('material');
     else if (cursor.took('states')) states = cursor.slope('stated slope');
+    else if (cursor.took('unsized')) sized = 'nowhere';
+    else if (cursor.took('name-sized')) sized = 'by name';
+    else if (cursor.took('twice')) twice = true;
+    else if (cursor.took('turned')) turned = true;
     else cursor.fail(`":" expected before the nodes, found "${cursor.peek() ?? 'the end of the line'}"`);
   }
   const path = readPath(cursor, sheet, scope);
@@ -163,7 +172,8 @@ function readPipes(cursor: Cursor, medium: SketchMedium, sheet: Sheet, scope: Sc
   for (const [index, nodes] of legs.entries()) {
     const numbered = legs.length === 1 ? title : `${title}.${index + 1}`;
     const name = title === null ? `${nodes[0]}-${nodes.at(-1)}` : numbered!;
-    sheet.pipes.push({ name, medium, size, material, nodes, storey: sheet.storey, states, line: cursor.line });
+    const drawn = { name, medium, size, material, nodes, storey: sheet.storey, states, sized, twice, turned };
+    sheet.pipes.push({ ...drawn, line: cursor.line });
   }
 }
 
@@ -183,6 +193,7 @@ function closed(sheet: Sheet): Sketch {
     at: point,
     storey: sheet.nodeStoreys.get(name) ?? null,
     bare: sheet.bare.has(name),
+    missing: sheet.missing.has(name),
   });
   const drawn = new Set(sheet.pipes.map(({ medium }) => medium));
   const named = new Set(sheet.systems.map(({ medium }) => medium));

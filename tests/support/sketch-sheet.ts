@@ -17,6 +17,7 @@ export interface Sheet {
   readonly places: Map<string, Place>;
   readonly nodeStoreys: Map<string, number | null>;
   readonly bare: Set<string>;
+  readonly missing: Set<string>;
   readonly pipes: (SketchPipe & { readonly line: number })[];
   readonly parts: SketchPart[];
 }

@@ -212,3 +212,24 @@ for (const [text, where, problem] of faults)
     expect((caught as InputError).where).toBe(where);
     expect((caught as InputError).message).toMatch(problem);
   });
+
+test('planted faults: what is missing, turned, doubled or without a size', () => {
+  const model = modelOf(
+    sketch(`
+  node B at 2 0 0 missing
+  drain 2 in: A (at 0 0 0) > B
+  drain 2 in turned: B > C (east 2 fall 1:50)
+  drain 2 in twice: C > D (east 2 fall 1:50)
+  drain 2 in unsized: D > E (east 2 fall 1:50)
+  drain 2 in name-sized: E > F (east 2 fall 1:50)
+`),
+  );
+  const called = (name: string) => model.elements.find((element) => element.name === name);
+  expect(called('B')).toBeUndefined();
+  expect(called('A-B')!.centreLine!.points[1]![0]).toBeLessThan(2);
+  expect(called('A-B')!.ports.flatMap((port) => model.ports[port]!.connected)).toEqual([]);
+  expect(called('B-C')!.ports.map((port) => model.ports[port]!.direction)).toEqual(['source', 'sink']);
+  expect(called('C-D again')).toMatchObject({ ports: [], centreLine: called('C-D')!.centreLine });
+  expect(called('D-E')).toMatchObject({ sizes: [], centreLine: { outerDiameter: null }, box: null });
+  expect(called('E-F')!.sizes.map(({ text, ground }) => `${text} ${ground}`)).toEqual(['2 in name']);
+});

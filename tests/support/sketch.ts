@@ -27,6 +27,8 @@ export interface SketchNode {
   readonly storey: number | null;
   /** Pipe ends meet here without a fitting. */
   readonly bare: boolean;
+  /** The fitting is left out: pipes end where it would begin, and nothing joins them. */
+  readonly missing: boolean;
 }
 
 export type SketchMedium = 'drain' | 'vent' | 'rain' | 'supply' | 'pipe';
@@ -41,6 +43,12 @@ export interface SketchPipe {
   readonly storey: number | null;
   /** A slope that the designer states against or instead of the drawn one, m/m; null: the drawn one is stated. */
   readonly states: number | null;
+  /** What tells the size: its properties and shape; its type name alone; nothing. Without a shape only the axis is drawn. */
+  readonly sized: 'plainly' | 'by name' | 'nowhere';
+  /** Drawn a second time at the same place, joined to nothing. */
+  readonly twice: boolean;
+  /** Its own ports tell the flow the wrong way round. */
+  readonly turned: boolean;
 }
 
 export type SketchPart = SketchFixture | SketchFitting;

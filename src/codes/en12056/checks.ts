@@ -128,6 +128,7 @@ function slopes(tools: Tools): Check {
         const { use, element, slopeGround, slopeUncertainty, length, required, modelled } = pipe;
         if (element === null || use.drain === null || use.vertical || use.portion === 'outlet' || use.slope === null)
           return [];
+        if (use.slope < 0) return [];
         // A stub between two fittings says nothing of the slope a pipe is laid to.
         if (slopeGround === 'geometry' && length < shortest) return [];
         const demand = demandOn(pipe);

@@ -52,7 +52,7 @@ export function armFaults(
   if (
     slope !== null &&
     arm.slope !== null &&
-    Math.abs(arm.slope) > arm.slopeUncertainty &&
+    arm.slope > arm.slopeUncertainty &&
     !reachesSlope(arm.slope + arm.slopeUncertainty, slope)
   ) {
     found.push(finding('slope-too-small', [element], { slope: arm.slope, least: slope, size }, clause));
@@ -76,6 +76,7 @@ export const leastSlope = (
       const { use, element, slopeGround, slopeUncertainty, length } = pipe;
       const size = pipe.modelled ?? pipe.required;
       if (element === null || size === null || use.drain === null || use.vertical || use.slope === null) return [];
+      if (use.slope < 0) return [];
       if (use.portion === 'outlet' || (slopeGround === 'geometry' && length < shortestPipe)) return [];
       const least = leastOf(pipe, size);
       if (least === null || reachesSlope(use.slope + slopeUncertainty, least)) return [];

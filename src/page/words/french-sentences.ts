@@ -43,6 +43,8 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
       : `${many(f, 'n’a pas de diamètre', 'n’ont pas de diamètre')} dans la maquette : calculé, mais rien à comparer.`,
   'size-contradicted': (f) =>
     `${first(f)} est de ${text(f, 'size')} selon ${text(f, 'from')} mais de ${text(f, 'other')} selon ${text(f, 'otherFrom')}; le premier est retenu.`,
+  'size-from-name': (f) =>
+    `${many(f, 'ne dit son diamètre', 'ne disent leur diamètre')} que par son nom${has(f, 'size') ? ` (${text(f, 'size')})` : ''} : rien de dessiné ni d’indiqué ne le confirme.`,
   'smaller-downstream': (f) =>
     `${first(f)} est dessiné en ${text(f, 'modelled')}, plus petit que ${f.about[1] ?? 'le tuyau'} (${text(f, 'upstream')}) qui s’y vide${f.clause}.`,
   'unvented-trap': (f) =>

@@ -115,6 +115,7 @@ export const frenchCodes: Words['codes'] = {
   'double-water-path': 'double parcours de l’eau',
   'doubled-element': 'élément en double',
   'size-contradicted': 'diamètres contradictoires',
+  'size-from-name': 'diamètre selon le nom seul',
   'kind-contradicted': 'types contradictoires',
   'group-not-applied': 'groupe de salle de bains non appliqué',
   'file-damaged': 'fichier endommagé',
