@@ -136,7 +136,9 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
       : `The stack ${first(f)} takes fixtures from ${text(f, 'storeys')} storeys and has no yoke vent at storey ${num(f, 'storey') + 1}${f.clause}.`,
   'yoke-vent-misplaced': (f) => `The yoke vent ${first(f)} does not join where the code asks${f.clause}.`,
   'offset-relief-vent-missing': (f) =>
-    `The offset ${first(f)} is ${f.length(num(f, 'offsetM'))} long below ${text(f, 'storeys')} storeys with ${load(f)}; it has ${text(f, 'reliefVents')} of two offset relief vents${f.clause}.`,
+    has(f, 'intervals')
+      ? `The offset ${first(f)} is ${f.length(num(f, 'offsetM'))} long below ${text(f, 'intervals')} branch intervals with ${load(f)}; beyond ${text(f, 'intervalsMost')} it needs a vent above it and one below it, and has ${text(f, 'reliefVents')} of the two${has(f, 'larger') ? `; or stack and offset of ${text(f, 'larger')}, as wide as stack and vent together` : ''}${f.clause}.`
+      : `The offset ${first(f)} is ${f.length(num(f, 'offsetM'))} long below ${text(f, 'storeys')} storeys with ${load(f)}; it has ${text(f, 'reliefVents')} of two offset relief vents${f.clause}.`,
   'frost-enlargement-missing': (f) =>
     `${first(f)} goes through the roof at ${text(f, 'size')}; frost may close it below ${text(f, 'least')}${f.clause}.`,
   'trap-arm-too-long': (f) =>

@@ -8,6 +8,7 @@ import { type ArmLimits, armFaults, everyTrapVented, leastSlope, outletPipe } fr
 import { frostCheck, islandVents, mainVentCheck, valveHeight } from '../rules/vent-checks.ts';
 import { shareOf, widthOf } from '../rules/vent-sizes.ts';
 import type { Tools } from '../tools.ts';
+import { offsetVents } from './offset-checks.ts';
 
 /** Demands that are no size: R15, R17, R39 to R43, R45, R47, R75, R76, R78, R79, R81, R85, R94, R97 to R99. */
 export function checks(tools: Tools): Check[] {
@@ -27,6 +28,7 @@ export function checks(tools: Tools): Check[] {
     commonVents(tools),
     ventStacks(tools),
     tallStacks(tools),
+    offsetVents(tools),
     nearFoot(tools),
     mainVentCheck(rule('IPC-R78'), series, ({ required }) =>
       required === null

@@ -94,7 +94,9 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
   'yoke-vent-misplaced': (f) =>
     `La ventilation de chute ${first(f)} ne se raccorde pas où le code le demande${f.clause}.`,
   'offset-relief-vent-missing': (f) =>
-    `La déviation ${first(f)}, longue de ${f.length(num(f, 'offsetM'))} sous ${text(f, 'storeys')} étages avec ${load(f)}, a ${text(f, 'reliefVents')} des deux ventilations d’équilibrage exigées${f.clause}.`,
+    has(f, 'intervals')
+      ? `La déviation ${first(f)}, longue de ${f.length(num(f, 'offsetM'))}, est sous ${text(f, 'intervals')} intervalles de branchement avec ${load(f)}; au-delà de ${text(f, 'intervalsMost')} il lui faut une ventilation au-dessus et une au-dessous, et elle en a ${text(f, 'reliefVents')}${has(f, 'larger') ? `; ou une colonne et une déviation de ${text(f, 'larger')}, aussi larges que la colonne et la ventilation réunies` : ''}${f.clause}.`
+      : `La déviation ${first(f)}, longue de ${f.length(num(f, 'offsetM'))} sous ${text(f, 'storeys')} étages avec ${load(f)}, a ${text(f, 'reliefVents')} des deux ventilations d’équilibrage exigées${f.clause}.`,
   'frost-enlargement-missing': (f) =>
     `${first(f)} traverse le toit en ${text(f, 'size')}; sous ${text(f, 'least')} le gel peut le fermer${f.clause}.`,
   'trap-arm-too-long': (f) =>
