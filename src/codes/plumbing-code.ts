@@ -12,6 +12,7 @@ import type { FixtureRow, FixtureRows } from './fixture-row.ts';
 import type { Reading } from './reading.ts';
 import type { Role } from './role.ts';
 import type { SizingRule } from './sizing-rule.ts';
+import type { PipeUse } from './use.ts';
 import type { Carried, StackEntry, TrapWay } from './way.ts';
 
 /** One edition of one code, ready to size with: tables bound to rules. */
@@ -66,6 +67,8 @@ export interface PlumbingCode {
   readonly ventStack: { readonly storeys: number; readonly footLoad: Load } | null;
   /** How far a dry vent is measured; null where the code asks nothing of its length. Some count only where traps breathe through. */
   readonly ventLength: (role: Role, breathes: boolean) => VentLengthTo | null;
+  /** Why a pipe that no rule sizes has no size, where something that the model does not say would give it one; absent: never. */
+  readonly unsized?: (pipe: PipeUse) => string | null;
   /** Load that enters the wet vent table: what the whole wet vent takes, or what passes each section of it. */
   readonly wetVentLoad: 'whole' | 'section';
   /** A vent that turns down before it goes up is one the code knows, with conditions of its own. */

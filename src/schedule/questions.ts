@@ -31,6 +31,7 @@ export function questionsOf(result: Result): Question[] {
     ...batteryQuestions(result),
     ...slopeQuestion(result),
     ...entryQuestion(result),
+    ...pumpQuestion(result),
     ...sizeQuestions(result),
   ];
   return questions.sort(
@@ -146,6 +147,21 @@ function entryQuestion({ pipes }: Result): Question[] {
       weight: open.length,
       choices: ['swept', 'square'],
       answer: { part: 'settings', key: 'entries', field: null },
+    },
+  ];
+}
+
+/** The vent of a sump is sized by what its pump puts out. */
+function pumpQuestion({ pipes }: Result): Question[] {
+  const vents = pipes.filter(({ reason }) => reason === 'the discharge of the sump’s pump is not stated');
+  if (vents.length === 0) return [];
+  return [
+    {
+      about: vents.map(({ globalId }) => globalId),
+      ask: 'What does the pump of the sump put out, in litres a second? Its vent is sized by that.',
+      weight: vents.length,
+      choices: [],
+      answer: { part: 'settings', key: 'sumpPumpFlow', field: null },
     },
   ];
 }

@@ -42,11 +42,13 @@ function verdictOf(
   open: string,
   shown: Run,
   pipe: number,
-  { series: { rank } }: PlumbingCode,
+  code: PlumbingCode,
 ): Pick<PipeVerdict, 'verdict' | 'reason'> {
+  const { rank } = code.series;
   if (required === null) {
-    const idle = shown.roles.uses[pipe]!.role === 'idle';
-    return { verdict: 'unknown', reason: idle ? 'no water and no air of a trap passes' : 'no rule asks for a size' };
+    const use = shown.roles.uses[pipe]!;
+    const idle = use.role === 'idle' ? 'no water and no air of a trap passes' : null;
+    return { verdict: 'unknown', reason: idle ?? code.unsized?.(use) ?? 'no rule asks for a size' };
   }
   const { least, most } = required;
   if (least === null || most === null) {

@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest';
+import { questionsOf } from '../../src/schedule/questions.ts';
 import { bringing } from '../support/flows.ts';
 import { hall, times } from '../support/rows.ts';
 import { type RunOptions, runSketch } from '../support/run-sketch.ts';
@@ -267,6 +268,52 @@ sewer OUT`,
   });
   test('a shower may not', () => {
     expect(clauses(run(island('shower')), 'island-vent-not-allowed')).toEqual(['916.1 to 916.3']);
+  });
+});
+
+describe('R83 the vent of a sump: by what its pump puts out and the vent’s length (Table 906.5.1)', () => {
+  const gpm = 3.785411784 / 60;
+  /** A sump whose vent rises 4.6 m and runs level for the rest. */
+  const sump = (feet: number, pump?: number) =>
+    run(
+      hall(
+        'A sump',
+        `node J at 0 0 -0.4
+trap T from V south 0.4 rise 1:48
+node V from J south 0.2 rise 1:48
+floor-drain F from T to 0, untrapped, trap 2 in
+drain 2 in: F > T > V > J
+vent 2 in: V > VW (to 4.2)
+terminal VW
+sump S from J east 2 fall 1:48
+drain 4 in: J > S > OUT (east 4 fall 1:48)
+vent 2 in: S > SR (to 4) > SG (north ${feet * ft - 4.642} rise 1:1000) > ST (to 4.2)
+terminal ST
+sewer OUT`,
+      ),
+      {},
+      pump === undefined ? {} : { sumpPumpFlow: pump * gpm },
+    );
+  test.each([
+    { pump: 40, feet: 71, size: '1¼ in', why: '72 ft' },
+    { pump: 40, feet: 73, size: '1½ in', why: '… past it, 160' },
+    { pump: 40, feet: 100, size: '1½ in', why: 'example of RULES' },
+    { pump: 41, feet: 30, size: '1¼ in', why: 'row 60: 31 ft' },
+    { pump: 60, feet: 32, size: '1½ in', why: '… past it, 75' },
+    { pump: 501, feet: 30, size: 'none', why: 'past the last row, 500' },
+  ])('$pump gpm, $feet ft: $size ($why)', ({ pump, feet, size }) => {
+    const done = sump(feet, pump);
+    expect([done.role('S-SR'), done.size('S-SR'), done.size('SG-ST')]).toEqual(['tank-vent', size, size]);
+  });
+  test('nobody says what the pump puts out: no size, the reason, and a question', () => {
+    const done = sump(100);
+    expect(done.pipe('S-SR')).toMatchObject({
+      required: null,
+      verdict: 'unknown',
+      reason: 'the discharge of the sump’s pump is not stated',
+    });
+    const asked = questionsOf(done.result).filter(({ answer }) => answer.key === 'sumpPumpFlow');
+    expect(asked.map(({ about, weight }) => [about[0], weight])).toEqual([[done.pipe('S-SR').globalId, 3]]);
   });
 });
 

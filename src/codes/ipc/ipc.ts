@@ -7,7 +7,7 @@ import { checks } from './checks.ts';
 import { drainRules, washers } from './drain-rules.ts';
 import { bathroomGroup, fixtures, sharedTrap } from './fixtures.ts';
 import { readings, whenNoneHolds } from './readings.ts';
-import { ventLength, ventRules } from './vent-rules.ts';
+import { unsized, ventLength, ventRules } from './vent-rules.ts';
 import { wetRules } from './wet-rules.ts';
 
 /** International Plumbing Code: which rule reads which table, the book's contents page. */
@@ -38,6 +38,7 @@ export function ipc(tools: Tools): CodeRules {
     },
     ventStack: null,
     ventLength,
+    unsized: unsized(tools),
     wetVentLoad: 'section',
     islandVents: true,
     group: bathroomGroup(tools),

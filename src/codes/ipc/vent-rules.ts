@@ -1,9 +1,10 @@
+import { sizeForLength } from '../../tables/find-length.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
 import { unitsOf } from '../../units/quantity.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { VentLengthTo } from '../plumbing-code.ts';
 import type { Role } from '../role.ts';
-import { floorStep, followStep, pastTableStep } from '../rules/steps.ts';
+import { floorStep, followStep, pastTableStep, tableStep } from '../rules/steps.ts';
 import { byStackTable, leastTrust, nextAbove, noStepDown, shareOf } from '../rules/vent-sizes.ts';
 import type { SizesSoFar, SizingRule, Step } from '../sizing-rule.ts';
 import type { Tools } from '../tools.ts';
@@ -34,11 +35,23 @@ const growsToSky: ReadonlySet<Role> = new Set([
 
 /** Vents of a stack are measured to open air, the others to the next of those or to open air (906.1, 906.2, R71, R73). */
 export const ventLength = (role: Role): VentLengthTo | null =>
-  byStack.has(role) || role === 'vent-header' ? 'sky' : byHalf.has(role) ? 'stack' : null;
+  byStack.has(role) || role === 'vent-header' || role === 'tank-vent' ? 'sky' : byHalf.has(role) ? 'stack' : null;
 
-/** Sizes of dry vents: International Plumbing Code 904, 906 to 908, rules R57, R60, R70 to R81. */
+const isSumpVent = ({ vent }: PipeUse): boolean => vent?.tank?.kind === 'sump';
+
+/** What the pump of a sump puts out, l/s; null: nobody has said. */
+const pumpFlow = ({ sumpPumpFlow }: Tools['settings']): number | null =>
+  typeof sumpPumpFlow === 'number' ? sumpPumpFlow : null;
+
+/** The vent of a sump whose pump is unknown has no size (906.5, R83). */
+export const unsized =
+  ({ settings }: Tools) =>
+  (pipe: PipeUse): string | null =>
+    pumpFlow(settings) === null && isSumpVent(pipe) ? 'the discharge of the sump’s pump is not stated' : null;
+
+/** Sizes of dry vents: International Plumbing Code 904, 906 to 908, rules R57, R60, R70 to R83. */
 export function ventRules(tools: Tools): SizingRule[] {
-  const { family, omit } = tools;
+  const { family, omit, settings } = tools;
   const { rule, series } = family;
   const table = family.table('stack-vent');
   const share = family.number('vent-share', 'share');
@@ -47,6 +60,8 @@ export function ventRules(tools: Tools): SizingRule[] {
   const step = family.number('vent-length-step', 'length');
   const closetDrain = family.size('closet-drain');
   const drainFor = requiredDrain(tools);
+  const sumps = family.table('sump-vent');
+  const pumped = pumpFlow(settings);
   const ladder = { series, sizes: table.sizes, omit };
 
   /** Half of a drain, not below the least vent, one size up over its whole length where it is long (906.2). */
@@ -166,6 +181,18 @@ export function ventRules(tools: Tools): SizingRule[] {
         const ventStack = pipe.role === 'yoke-vent' ? (pipe.vent?.between?.[1] ?? null) : null;
         const size = ventStack === null ? null : soFar(ventStack);
         return size === null ? undefined : followStep(rule('IPC-R81'), size, { ventStack: size });
+      },
+    },
+    {
+      id: 'IPC-R83',
+      reads: 'use',
+      ask: (pipe) => {
+        const { vent } = pipe;
+        if (pumped === null || vent?.length == null || !isSumpVent(pipe)) return undefined;
+        const found = sizeForLength(sumps, 'flow', pumped, vent.length - coordinateMetres, { omit });
+        const facts = { pumpLps: pumped, lengthM: vent.length };
+        if (found === null) return pastTableStep(rule('IPC-R83'), facts);
+        return tableStep(rule('IPC-R83'), found, { ...facts, row: found.row.name }, 'm');
       },
     },
     {

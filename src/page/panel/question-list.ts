@@ -29,7 +29,9 @@ function questionItem(desk: Desk, { about, ask, weight, choices, answer }: Quest
   const fixture = building.fixtureAt.get(first);
   const name = nameOfId(building, words, first);
   const text = modelText(
-    words.questions.ask === null ? shown(ask) : words.questions.ask(answer.part, answer.field, name),
+    words.questions.ask === null
+      ? shown(ask)
+      : words.questions.ask(answer.part, answer.part === 'settings' ? answer.key : answer.field, name),
   );
   const open =
     pipe !== undefined

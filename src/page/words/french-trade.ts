@@ -171,6 +171,8 @@ export const frenchPhrases: Words['phrases'] = {
   outlet: 'tubulure de sortie',
   larger: 'le plus grand',
   'no water and no air of a trap passes': 'ni eau ni air d’un siphon n’y passe',
+  'no rule asks for a size': 'aucune règle ne demande de diamètre',
+  'the discharge of the sump’s pump is not stated': 'le débit de la pompe de la fosse n’est pas indiqué',
   'it is the only reading whose conditions hold': 'c’est la seule lecture dont les conditions tiennent',
   'a dry relief vent joins downstream, which nobody draws for a wet vent':
     'une ventilation d’équilibrage sèche se raccorde en aval, ce que personne ne dessine pour une ventilation interne',
@@ -242,7 +244,7 @@ export const frenchFactWords: Words['factWords'] = {
   provisional: 'provisoire',
 };
 
-/** A question of the result by where its answer goes. */
+/** A question of the result by where its answer goes: a field of the thing, or the name of a setting. */
 export function frenchAsk(part: string, field: string | null, name: string): string {
   switch (part) {
     case 'sewerEnds':
@@ -254,6 +256,10 @@ export function frenchAsk(part: string, field: string | null, name: string): str
     case 'batteries':
       return `Comment le groupe de ${name} est-il conçu ? Plus d’une lecture tient.`;
     case 'settings':
+      if (field === 'entries')
+        return 'Comment les branchements entrent-ils dans les colonnes : à 45° ou moins, ou avec un rayon au moins égal à leur diamètre intérieur, ou à l’équerre ?';
+      if (field === 'sumpPumpFlow')
+        return 'Quel est le débit de la pompe de la fosse, en litres par seconde ? Sa ventilation en dépend.';
       return 'À quelle pente pose-t-on les évacuations dessinées de niveau ? En mètres par mètre, par exemple 0,02.';
     default:
       return `Quel est le diamètre de ${name} ?`;
