@@ -9,8 +9,8 @@ import { run } from '../../pipeline.ts';
 import type { Result, SizeLabel } from '../../schedule/result.ts';
 import { resultOf } from '../../schedule/result-of.ts';
 import type { Outcome } from '../../verdicts/outcome.ts';
+import { joined } from '../joined.ts';
 import type { DeskCode } from './desk-code.ts';
-import { joined } from './joined.ts';
 
 /** Files of one building as they were dropped, read. */
 export interface DeskBuilding {

@@ -10,8 +10,8 @@ import { answersFormText } from '../../schedule/answers-form.ts';
 import { jsonText } from '../../schedule/json-text.ts';
 import { questionsOf } from '../../schedule/questions.ts';
 import { takeOffCsv } from '../../schedule/take-off.ts';
+import { joined } from '../joined.ts';
 import type { DeskBuilding, DeskCheck } from './check-building.ts';
-import { joined } from './joined.ts';
 import type { SaveKind } from './messages.ts';
 
 export interface SavedFile {

@@ -4,6 +4,23 @@ const some = (count: number, one: string, many: string): string =>
   `${count.toLocaleString('en-CA')} ${count === 1 ? one : many}`;
 
 export const englishPanel: PanelWords = {
+  proof: {
+    title: 'Is this the file?',
+    hint: 'Choose an IFC file, or drop it here: it is compared with the one this page was made from and goes nowhere.',
+    reading: 'Reading …',
+    same: (file) => `${file} is the very file that this page was made from.`,
+    other: (file) => `${file} is not the file that this page was made from.`,
+    unread: 'It could not be read as an IFC model.',
+    missing: (count, names) =>
+      `${some(count, 'pipe or fixture', 'pipes or fixtures')} of this page are not in it: ${names}`,
+    moved: (count, names) =>
+      `${some(count, 'pipe or fixture lies', 'pipes or fixtures lie')} elsewhere in it: ${names}`,
+    resized: (count, names) => `${some(count, 'pipe is', 'pipes are')} drawn in another diameter: ${names}`,
+    elements: (here, page) =>
+      `It holds ${some(here, 'distribution element', 'distribution elements')}; the model of this page held ${page}.`,
+    alike:
+      'The pipes and fixtures of this page lie in it in the same places and diameters; something else in the file differs.',
+  },
   pipe: {
     one: 'Pipe',
     tooSmall: (drawn, needed) => `Too small: ${drawn} drawn, ${needed} needed`,

@@ -119,12 +119,6 @@ export const english: Words = {
     remarks: 'Remarks on the file',
     caution: 'Caution',
     unresolved: 'Could not be placed',
-    proof: 'Is this the file?',
-    proofHint:
-      'Choose an IFC file, or drop it here: it is compared with the one this page was made from and goes nowhere.',
-    proofSame: (file) => `${file} is the very file that this page was made from.`,
-    proofOther: (file) => `${file} is not the file that this page was made from.`,
-    proofReading: 'Reading …',
     pipes: 'pipes',
     fittings: 'fittings',
     fixtures: 'fixtures',

@@ -4,6 +4,24 @@ const some = (count: number, one: string, many: string): string =>
   `${count.toLocaleString('fr-CA')} ${count < 2 ? one : many}`;
 
 export const frenchPanel: PanelWords = {
+  proof: {
+    title: 'Est-ce le bon fichier ?',
+    hint: 'Choisissez un fichier IFC, ou déposez-le ici : il est comparé à celui dont cette page est tirée, et ne va nulle part.',
+    reading: 'Lecture …',
+    same: (file) => `${file} est exactement le fichier dont cette page est tirée.`,
+    other: (file) => `${file} n’est pas le fichier dont cette page est tirée.`,
+    unread: 'Il n’a pas pu être lu comme un modèle IFC.',
+    missing: (count, names) =>
+      `${some(count, 'tuyau ou appareil', 'tuyaux ou appareils')} de cette page n’y sont pas : ${names}`,
+    moved: (count, names) =>
+      `${some(count, 'tuyau ou appareil y est', 'tuyaux ou appareils y sont')} ailleurs : ${names}`,
+    resized: (count, names) =>
+      `${some(count, 'tuyau est dessiné', 'tuyaux sont dessinés')} avec un autre diamètre : ${names}`,
+    elements: (here, page) =>
+      `Il contient ${some(here, 'élément', 'éléments')} de distribution; le modèle de cette page en contenait ${page}.`,
+    alike:
+      'Les tuyaux et appareils de cette page s’y trouvent aux mêmes endroits et diamètres; autre chose diffère dans le fichier.',
+  },
   pipe: {
     one: 'Tuyau',
     tooSmall: (drawn, needed) => `Trop petit : ${drawn} dessiné, ${needed} exigé`,

@@ -130,12 +130,6 @@ export const french: Words = {
     remarks: 'Remarques sur le fichier',
     caution: 'Mise en garde',
     unresolved: 'N’ont pas pu être placés',
-    proof: 'Est-ce le bon fichier ?',
-    proofHint:
-      'Choisissez un fichier IFC, ou déposez-le ici : il est comparé à celui dont cette page est tirée, et ne va nulle part.',
-    proofSame: (file) => `${file} est exactement le fichier dont cette page est tirée.`,
-    proofOther: (file) => `${file} n’est pas le fichier dont cette page est tirée.`,
-    proofReading: 'Lecture …',
     pipes: 'tuyaux',
     fittings: 'raccords',
     fixtures: 'appareils',

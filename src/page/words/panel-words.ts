@@ -1,5 +1,19 @@
 /** Words of the cards: pipe, fixture, the ride along a way, battery and its readings. */
 export interface PanelWords {
+  /** Whether a file is the one that the page was made from, and what differs. */
+  readonly proof: {
+    readonly title: string;
+    readonly hint: string;
+    readonly reading: string;
+    readonly same: (file: string) => string;
+    readonly other: (file: string) => string;
+    readonly unread: string;
+    readonly missing: (count: number, names: string) => string;
+    readonly moved: (count: number, names: string) => string;
+    readonly resized: (count: number, names: string) => string;
+    readonly elements: (here: number, page: number) => string;
+    readonly alike: string;
+  };
   readonly pipe: {
     readonly one: string;
     readonly tooSmall: (drawn: string, needed: string) => string;

@@ -97,11 +97,6 @@ export interface Words extends PanelWords {
     readonly remarks: string;
     readonly caution: string;
     readonly unresolved: string;
-    readonly proof: string;
-    readonly proofHint: string;
-    readonly proofSame: (file: string) => string;
-    readonly proofOther: (file: string) => string;
-    readonly proofReading: string;
     readonly pipes: string;
     readonly fittings: string;
     readonly fixtures: string;
