@@ -43,7 +43,9 @@ export function brokenText(given: SentenceFacts): string {
       ? 'the vent does not join on the drain of the most upstream fixture'
       : 'more than one fixture joins upstream of the vent';
   if (has(given, 'smallOutlets'))
-    return `${text(given, 'smallOutlets')} outlets below ${text(given, 'smallBelow')} stand beside larger ones`;
+    return num(given, 'smallOutlets') === 1
+      ? `one outlet below ${text(given, 'smallBelow')} stands beside larger ones`
+      : `${text(given, 'smallOutlets')} outlets below ${text(given, 'smallBelow')} stand beside larger ones`;
   if (has(given, 'trapsMost'))
     return `${text(given, 'traps')} fixtures join between two vents, at most ${text(given, 'trapsMost')} may`;
   if (has(given, 'turnMostDeg'))
@@ -129,7 +131,7 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
   'vent-stack-misplaced': (f) =>
     has(f, 'distanceMostM')
       ? `The vent stack of ${first(f)} starts ${f.length(num(f, 'distanceM'))} past the foot of its stack, at most ${f.length(num(f, 'distanceMostM'))}${f.clause}.`
-      : `The vent stack ${first(f)} does not start at or below the lowest connection of its stack${f.clause}.`,
+      : `The vent stack of ${first(f)} does not start on a vertical part of its stack, at or just below the lowest connection${f.clause}.`,
   'yoke-vent-missing': (f) =>
     has(f, 'interval')
       ? `The stack ${first(f)} has ${text(f, 'intervals')} branch intervals and no relief vent to its vent stack at the ${text(f, 'interval')}th from the top${f.clause}.`

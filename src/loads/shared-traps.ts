@@ -19,10 +19,18 @@ export function countSharedTraps(facts: FixtureFacts, loads: readonly FixtureLoa
       return { kind, domestic: detail.domestic, row, load };
     });
     rule(fixtures).forEach((counts, at) => {
-      if (!counts) counted[ids[at]!] = { ...loads[ids[at]!]!, load: noLoad, settled: true };
+      const id = ids[at]!;
+      if (!counts) counted[id] = { ...loads[id]!, row: domesticRow(facts, loads, id), load: noLoad, settled: true };
     });
   }
   return counted;
+}
+
+/** What counts for nothing beside a sink is domestic, or not known to be otherwise: so is the outlet it asks for. */
+function domesticRow({ code, identities, paths }: FixtureFacts, loads: readonly FixtureLoad[], id: FixtureId) {
+  const { row, settled } = loads[id]!;
+  const { kind, detail } = identities[paths.fixtures[id]!.element]!;
+  return settled ? row : (code.fixtures.rowsFor(kind, { ...detail, domestic: true })[0] ?? row);
 }
 
 /** Fixtures that share a drawn trap, two or more, by fixture id. */

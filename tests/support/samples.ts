@@ -1,4 +1,5 @@
 import { sketch } from './sketch.ts';
+import { workedCase, workedText } from './worked-case.ts';
 import { type IfcOptions, ifcOf } from './write-ifc.ts';
 
 /** The models of sample-models/: each is a `.piping` text and the `.ifc` file that the writer makes of it. */
@@ -14,3 +15,9 @@ export const samples: readonly { readonly name: string; readonly options: Partia
 ];
 
 export const ifcOfSample = (piping: string, options: Partial<IfcOptions>): string => ifcOf(sketch(piping), options);
+
+/** The file of a case of the open set, written as the case says. */
+export function ifcOfWorked(name: string): string {
+  const { schema, lengthUnit } = workedCase(name).drawn;
+  return ifcOfSample(workedText(name, 'piping'), { schema, unit: lengthUnit });
+}

@@ -12,6 +12,7 @@ const schemaFiles = {
   weigh: 'schedule/weigh.schema.json',
   mend: 'schedule/mend.schema.json',
   answers: 'model/answers.schema.json',
+  worked: '../tests/support/worked-case.schema.json',
 } as const;
 
 const read = (file: string): object => JSON.parse(readFileSync(resolve(src, file), 'utf8'));

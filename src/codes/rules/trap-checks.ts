@@ -78,6 +78,8 @@ export const leastSlope = (
       if (element === null || size === null || use.drain === null || use.vertical || use.slope === null) return [];
       if (use.slope < 0) return [];
       if (use.portion === 'outlet' || (slopeGround === 'geometry' && length < shortestPipe)) return [];
+      // A pipe that climbs is a backfall, told by itself.
+      if (use.slope + slopeUncertainty < 0) return [];
       const least = leastOf(pipe, size);
       if (least === null || reachesSlope(use.slope + slopeUncertainty, least)) return [];
       return [finding('slope-too-small', [element], { slope: use.slope, least, size }, clause)];

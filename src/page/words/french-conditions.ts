@@ -32,7 +32,9 @@ export function frenchCondition(f: FrenchFacts): string {
       ? 'la ventilation ne se raccorde pas au tuyau de l’appareil le plus en amont'
       : 'plus d’un appareil se raccorde en amont de la ventilation';
   if (has(f, 'smallOutlets'))
-    return `${text(f, 'smallOutlets')} tubulures de moins de ${text(f, 'smallBelow')} voisinent de plus grandes`;
+    return f.facts.smallOutlets === 1
+      ? `une tubulure de moins de ${text(f, 'smallBelow')} en voisine de plus grandes`
+      : `${text(f, 'smallOutlets')} tubulures de moins de ${text(f, 'smallBelow')} en voisinent de plus grandes`;
   if (has(f, 'trapsMost'))
     return `${text(f, 'traps')} appareils se raccordent entre deux ventilations, au plus ${text(f, 'trapsMost')} le peuvent`;
   if (has(f, 'turnMostDeg'))

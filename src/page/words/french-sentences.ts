@@ -86,7 +86,7 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
         ? `La colonne de chute ${first(f)} traverse ${text(f, 'storeysHigh')} étages; dès ${text(f, 'storeysFrom')} il lui faut une colonne de ventilation secondaire${f.clause}.`
         : `La colonne de chute ${first(f)} reçoit des appareils de ${text(f, 'storeys')} étages; au-delà de ${text(f, 'storeysMost')} il lui faut une colonne de ventilation secondaire dès son pied${f.clause}.`,
   'vent-stack-misplaced': (f) =>
-    `La colonne de ventilation secondaire ${first(f)} ne commence pas au raccordement le plus bas de sa colonne de chute ou plus bas${f.clause}.`,
+    `La colonne de ventilation secondaire de ${first(f)} ne part pas d’une partie verticale de sa colonne de chute, au raccordement le plus bas ou juste au-dessous${f.clause}.`,
   'yoke-vent-missing': (f) =>
     has(f, 'interval')
       ? `La colonne de chute ${first(f)} a ${text(f, 'intervals')} intervalles de branchement et pas de ventilation vers sa colonne secondaire au ${text(f, 'interval')}e depuis le haut${f.clause}.`
