@@ -1,7 +1,7 @@
 import type { Result, SizeLabel } from '../schedule/result.ts';
 import type { WeighBattery } from '../schedule/weigh.ts';
 import { weighResult } from '../schedule/weigh-result.ts';
-import { weighBattery } from '../study/weigh.ts';
+import { weighEach } from '../study/weigh.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
 import { type PageData, pageData } from './page-data.ts';
 
@@ -17,9 +17,5 @@ const mostWeighed = 40;
 function weighed(outcome: Outcome, result: Result): readonly WeighBattery[] {
   const { batteries } = outcome.shown.roles;
   if (batteries.length > mostWeighed) return [];
-  return weighResult(
-    outcome,
-    result,
-    batteries.map((battery) => weighBattery(outcome, battery)),
-  ).batteries;
+  return weighResult(outcome, result, weighEach(outcome, batteries)).batteries;
 }

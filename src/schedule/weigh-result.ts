@@ -16,11 +16,14 @@ import type { WeighAlternative, WeighBattery, WeighObstacle, WeighResult } from 
 import { addsOf, fittingsOf, pipesOf, type SizeOf, sectionsOf, tallied, wallOf } from './weigh-quantities.ts';
 import { weighVerdict } from './weigh-verdict.ts';
 
-/** The published comparison of batteries. `result` is that of the same outcome; prices are the user's own figures. */
+/**
+ * The published comparison of batteries. `result` is that of the same outcome; prices are the user's own figures. Each
+ * weighing is printed as it comes and not kept: every one holds several runs of the whole building.
+ */
 export function weighResult(
   outcome: Outcome,
   result: Result,
-  weighings: readonly Weighing[],
+  weighings: Iterable<Weighing>,
   prices: Prices | null = null,
 ): WeighResult {
   const index = resultIndex(outcome);
@@ -33,7 +36,7 @@ export function weighResult(
     code: result.code,
     settings: result.settings,
     ...(prices === null ? {} : { currency: prices.currency }),
-    batteries: weighings.map((weighing) => weighBattery(outcome, index, result, weighing, prices)),
+    batteries: Array.from(weighings, (weighing) => weighBattery(outcome, index, result, weighing, prices)),
     caution: result.caution,
   };
 }

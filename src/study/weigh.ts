@@ -28,7 +28,12 @@ export interface Alternative {
 
 const readings: readonly SharedReading[] = ['wet-vent', 'circuit-vent', 'individual-vent'];
 
-export function weighBattery(outcome: Outcome, battery: Battery): Weighing {
+/** One battery after the other, each when it is asked for. */
+export function* weighEach(outcome: Outcome, batteries: readonly Battery[]): Generator<Weighing> {
+  for (const battery of batteries) yield weighBattery(outcome, battery);
+}
+
+function weighBattery(outcome: Outcome, battery: Battery): Weighing {
   const row = rowOf(outcome, battery);
   const shared = readings.map((reading) => alternative(row, reading));
   const other = readings.some((reading) => reading === battery.reading) ? [] : [modelledAlternative(row)];

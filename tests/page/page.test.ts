@@ -7,7 +7,7 @@ import { indexLines } from '../../src/ifc/lines/index-lines.ts';
 import { appendSets } from '../../src/ifc/write/append-sets.ts';
 import type { PropertySetToWrite } from '../../src/model/property-set.ts';
 import { weighResult } from '../../src/schedule/weigh-result.ts';
-import { weighBattery } from '../../src/study/weigh.ts';
+import { weighEach } from '../../src/study/weigh.ts';
 import { chromiumPath, type OpenedPage, settled, type TestBrowser, testBrowser } from '../support/browser.ts';
 import { sampleOutcome } from '../support/sample-outcomes.ts';
 import { hall, idOf } from './hall.ts';
@@ -37,9 +37,13 @@ describe.skipIf(chromiumPath === undefined)('the page in Chromium', () => {
   test('a real battery, weighed: wet vent 4 in, circuit vent 3 in under the floor; axe agrees', async () => {
     const { outcome, result } = sampleOutcome('hall-wet-vented');
     const source = { ...outcome, paths: { ...outcome.paths, traps: outcome.shown.roles.air } };
-    const batteries = outcome.shown.roles.batteries.map((battery) => weighBattery(outcome, battery));
     const { page, close, complaints } = await open(
-      pageData(result, source, [], weighResult(outcome, result, batteries).batteries),
+      pageData(
+        result,
+        source,
+        [],
+        weighResult(outcome, result, weighEach(outcome, outcome.shown.roles.batteries)).batteries,
+      ),
     );
     expect(await page.locator('.headline').textContent()).toBe('9 pipes are too small, for 1 cause');
     await page.locator('#tab-batteries').click();

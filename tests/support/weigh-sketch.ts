@@ -7,7 +7,7 @@ import type { Prices } from '../../src/schedule/prices.ts';
 import { resultOf } from '../../src/schedule/result-of.ts';
 import type { WeighAlternative, WeighBattery, WeighResult } from '../../src/schedule/weigh.ts';
 import { weighResult } from '../../src/schedule/weigh-result.ts';
-import { weighBattery } from '../../src/study/weigh.ts';
+import { weighEach } from '../../src/study/weigh.ts';
 import type { Outcome } from '../../src/verdicts/outcome.ts';
 import { modelOf } from './model-of.ts';
 import { codeOf, type RunOptions, tables } from './run-sketch.ts';
@@ -33,8 +33,12 @@ export interface Weighed {
 /** A sketch with every battery weighed. Without an id the only battery is meant. */
 export function weighSketch(text: string, options: RunOptions = {}, prices: Prices | null = null): Weighed {
   const outcome = outcomeOf(text, options);
-  const weighed = outcome.shown.roles.batteries.map((battery) => weighBattery(outcome, battery));
-  const result = weighResult(outcome, resultOf(outcome, '0.0.0'), weighed, prices);
+  const result = weighResult(
+    outcome,
+    resultOf(outcome, '0.0.0'),
+    weighEach(outcome, outcome.shown.roles.batteries),
+    prices,
+  );
   const battery = (id?: string): WeighBattery => {
     const found = result.batteries.filter((one) => id === undefined || one.id === id);
     if (found.length !== 1)

@@ -30,7 +30,7 @@ export function addWeigh(program: Command): void {
       const { readPrices } = await import('../../schedule/prices.ts');
       const { weighResult } = await import('../../schedule/weigh-result.ts');
       const { weighText } = await import('../../schedule/weigh-text.ts');
-      const { weighBattery } = await import('../../study/weigh.ts');
+      const { weighEach } = await import('../../study/weigh.ts');
       const priceFile = options.prices === undefined ? null : await readText(options.prices);
       const { picture } = options;
       const { outcome, result, place } = await runModel(models, options, (inputs) =>
@@ -38,12 +38,7 @@ export function addWeigh(program: Command): void {
       );
       const prices = priceFile === null ? null : readPrices(priceFile, options.prices ?? '', outcome.code.series);
       const chosen = batteriesNamed(outcome, result, options.battery);
-      const weighed = weighResult(
-        outcome,
-        result,
-        chosen.map((battery) => weighBattery(outcome, battery)),
-        prices,
-      );
+      const weighed = weighResult(outcome, result, weighEach(outcome, chosen), prices);
       if (place !== null && picture !== undefined)
         await writeNew(place, [new TextEncoder().encode(cavitySvg(weighed))], picture);
       if (options.json === true) await printJson({ ...weighed });
