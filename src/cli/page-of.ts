@@ -1,11 +1,12 @@
 import { readFileSync } from 'node:fs';
 import { pageDataOf } from '../deliver/page-data-of.ts';
 import { pageHtml } from '../deliver/page-html.ts';
+import type { Plan } from '../study/mend/mend.ts';
 import type { ModelRun } from './run-model.ts';
 
-/** The page of a run as the bytes of one HTML file. Its script and style are those that the build made. */
-export function pageOf({ result, outcome, sizes }: ModelRun<unknown>): Uint8Array {
-  const data = pageDataOf(outcome, result, sizes);
+/** The page of a run, and of the plan that mends it, as the bytes of one HTML file. Its script and style are those that the build made. */
+export function pageOf({ result, outcome, sizes }: ModelRun<unknown>, plan: Plan | null): Uint8Array {
+  const data = pageDataOf(outcome, result, sizes, plan);
   return new TextEncoder().encode(pageHtml(data, { js: builtPart('bundle.js'), css: builtPart('bundle.css') }));
 }
 

@@ -1,5 +1,7 @@
 import type { Vec3 } from '../geometry/vector.ts';
 import { leanResult } from '../schedule/lean-result.ts';
+import type { BatteryMargin, MarginResult, PipeMargin } from '../schedule/margin.ts';
+import type { MendResult } from '../schedule/mend.ts';
 import { type Question, questionsOf } from '../schedule/questions.ts';
 import type { Result, SizeLabel } from '../schedule/result.ts';
 import { type Riser, risersOf } from '../schedule/riser.ts';
@@ -21,9 +23,29 @@ export interface PageData {
   readonly questions: readonly Question[];
   /** Batteries under each reading, side by side; empty where nobody weighed them. */
   readonly weighed: readonly WeighBattery[];
+  readonly margins: PageMargins;
+  /** null: nobody looked for a plan, or there is nothing to mend. */
+  readonly mend: PageMend | null;
   readonly scene: PageScene;
   /** Line drawings, one for each drain system, the one with most fixtures first. */
   readonly risers: readonly Riser[];
+}
+
+/** What everything still takes before its size changes. */
+export interface PageMargins {
+  /** A row for each pipe of the result, in its order; empty where nobody asked. */
+  readonly pipes: readonly PageMargin[];
+  readonly batteries: readonly BatteryMargin[];
+}
+
+/** All null for a pipe that needs no size. */
+export type PageMargin = Omit<PipeMargin, 'globalId'>;
+
+/** The least change that mends the model, and the building on which it is made. */
+export interface PageMend {
+  readonly plan: MendResult;
+  /** The changed building in the same place. Its `mend` is null; its building fabric is that of the model. */
+  readonly after: PageData;
 }
 
 export interface PageScene {
@@ -41,18 +63,22 @@ export interface PageScene {
   readonly fittings: readonly { readonly globalId: string; readonly name: string | null; readonly class: string }[];
 }
 
-/**
- * Everything for the page from one run. Sections of `scene` are the pipes of the network, in the same order. `sizes`
- * are those the code offers, smallest first; `weighed` compares the readings of its batteries.
- */
-export function pageData(
-  result: Result,
-  source: RiserSource,
-  sizes: readonly SizeLabel[] = [],
-  weighed: readonly WeighBattery[] = [],
-): PageData {
+/** What the page shows besides the result and its picture; nothing of it where it is absent. */
+export interface PageExtras {
+  /** Sizes that the code offers, smallest first. */
+  readonly sizes?: readonly SizeLabel[];
+  /** Its batteries under each reading. */
+  readonly weighed?: readonly WeighBattery[];
+  readonly margins?: MarginResult;
+  readonly mend?: PageMend | null;
+  /** Of the scene; that of the piping where it is absent. */
+  readonly origin?: Vec3;
+}
+
+/** Everything for the page from one run. Sections of `scene` are the pipes of the network, in the same order. */
+export function pageData(result: Result, source: RiserSource, extras: PageExtras = {}): PageData {
   const { model, network, paths } = source;
-  const origin = originOf(model, network);
+  const { sizes = [], weighed = [], margins, mend = null, origin = originOf(model, network) } = extras;
   const pipeAt = indexOf(result.pipes);
   const fixtureAt = indexOf(result.fixtures);
   const { columns, fittings } = pipeColumns(model, network, result.pipes, pipeAt, origin);
@@ -68,6 +94,8 @@ export function pageData(
       ...battery,
       alternatives: alternatives.map((alternative) => ({ ...alternative, sections: [], fittings: [] })),
     })),
+    margins: pageMargins(result, margins),
+    mend,
     scene: {
       origin,
       storeys: model.storeys.map(({ name, elevation }) => ({ name, elevation: millimetres(elevation - origin[2]) })),
@@ -80,6 +108,13 @@ export function pageData(
     },
     risers: risersOf(result, source),
   };
+}
+
+function pageMargins({ pipes }: Result, margins: MarginResult | undefined): PageMargins {
+  if (margins === undefined) return { pipes: [], batteries: [] };
+  const known = new Map(margins.pipes.map(({ globalId, ...margin }) => [globalId, margin]));
+  const none: PageMargin = { load: null, drawn: null, length: null, next: null };
+  return { pipes: pipes.map(({ globalId }) => known.get(globalId) ?? none), batteries: margins.batteries };
 }
 
 const millimetres = (value: number): number => Math.round(value * 1000);

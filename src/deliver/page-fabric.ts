@@ -15,6 +15,18 @@ export interface FabricColumns {
   readonly y: Int32Array;
 }
 
+const nothing = new Int32Array(0);
+/** Of a building that says nothing of its walls. */
+export const noFabric: FabricColumns = {
+  kind: nothing,
+  storey: nothing,
+  base: nothing,
+  top: nothing,
+  points: nothing,
+  x: nothing,
+  y: nothing,
+};
+
 interface Prism {
   readonly kind: number;
   readonly name: string | null;

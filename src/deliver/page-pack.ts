@@ -1,5 +1,7 @@
 import { deflateSync } from 'fflate';
+import type { MendResult } from '../schedule/mend.ts';
 import type { PageData } from './page-data.ts';
+import { noFabric } from './page-fabric.ts';
 import { type PackedRows, packRows, unpackRows } from './page-rows.ts';
 
 /**
@@ -14,19 +16,9 @@ export function packPage(data: PageData): Uint8Array {
     blocks.push(block);
     return { count: numbers.length, bytes: block.length };
   };
-  const { pipes, fixtures, findings, ...result } = data.result;
   const head: Head = {
-    result: { ...result, elements: [] },
-    rows: {
-      pipes: packRows(pipes, column),
-      fixtures: packRows(fixtures, column),
-      findings: packRows(findings, column),
-    },
-    scene: replaced(data.scene, (value) => (value instanceof Int32Array ? { column: column(value) } : undefined)),
-    risers: data.risers,
-    sizes: data.sizes,
-    questions: data.questions,
-    weighed: data.weighed,
+    ...sideOf(data, column),
+    mend: data.mend === null ? null : { plan: data.mend.plan, after: sideOf(withoutFabric(data.mend.after), column) },
   };
   const json = new TextEncoder().encode(JSON.stringify(head));
   const plain = new Uint8Array(blocks.reduce((sum, block) => sum + block.length, 4 + json.length));
@@ -50,25 +42,69 @@ export function unpackPage(plain: Uint8Array): PageData {
     at += bytes;
     return unpackNumbers(block, count);
   };
-  const result = {
-    ...head.result,
-    pipes: unpackRows(head.rows.pipes, numbers),
-    fixtures: unpackRows(head.rows.fixtures, numbers),
-    findings: unpackRows(head.rows.findings, numbers),
+  const before = unpackSide(head, numbers);
+  if (head.mend === null) return before;
+  const after = unpackSide(head.mend.after, numbers);
+  const { fabric, fabricNames } = before.scene;
+  return {
+    ...before,
+    mend: { plan: head.mend.plan, after: { ...after, scene: { ...after.scene, fabric, fabricNames } } },
   };
-  const scene = replaced(head.scene, (value) => (isColumn(value) ? numbers(value.column) : undefined));
-  const { risers, sizes, questions, weighed } = head;
-  return { format: 'drainwright-page', version: 1, result, sizes, questions, weighed, scene, risers } as PageData;
 }
+
+/** The columns of a building stand in the order in which they are asked for here; `unpackSide` asks in the same. */
+function sideOf(data: PageData, column: (numbers: Int32Array) => Column): Side {
+  const { pipes, fixtures, findings, ...result } = data.result;
+  return {
+    result: { ...result, elements: [] },
+    rows: {
+      pipes: packRows(pipes, column),
+      fixtures: packRows(fixtures, column),
+      findings: packRows(findings, column),
+    },
+    margins: { pipes: packRows(data.margins.pipes, column), batteries: data.margins.batteries },
+    scene: replaced(data.scene, (value) => (value instanceof Int32Array ? { column: column(value) } : undefined)),
+    risers: data.risers,
+    sizes: data.sizes,
+    questions: data.questions,
+    weighed: data.weighed,
+  };
+}
+
+function unpackSide(side: Side, numbers: (column: Column) => Int32Array): PageData {
+  const { rows, risers, sizes, questions, weighed } = side;
+  const result = {
+    ...side.result,
+    pipes: unpackRows(rows.pipes, numbers),
+    fixtures: unpackRows(rows.fixtures, numbers),
+    findings: unpackRows(rows.findings, numbers),
+  };
+  const margins = { pipes: unpackRows(side.margins.pipes, numbers), batteries: side.margins.batteries };
+  const scene = replaced(side.scene, (value) => (isColumn(value) ? numbers(value.column) : undefined));
+  const head = { format: 'drainwright-page', version: 1, result, sizes, questions, weighed, margins, mend: null };
+  return { ...head, scene, risers } as PageData;
+}
+
+/** The changed building stands in the same walls: they are not written twice. */
+const withoutFabric = (data: PageData): PageData => ({
+  ...data,
+  scene: { ...data.scene, fabric: noFabric, fabricNames: [] },
+});
 
 interface Column {
   readonly count: number;
   readonly bytes: number;
 }
 
-interface Head {
+interface Head extends Side {
+  readonly mend: { readonly plan: MendResult; readonly after: Side } | null;
+}
+
+/** One building, as modelled or as mended. */
+interface Side {
   readonly result: object;
   readonly rows: { readonly pipes: PackedRows; readonly fixtures: PackedRows; readonly findings: PackedRows };
+  readonly margins: { readonly pipes: PackedRows; readonly batteries: PageData['margins']['batteries'] };
   readonly scene: unknown;
   readonly risers: PageData['risers'];
   readonly sizes: PageData['sizes'];

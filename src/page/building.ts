@@ -1,6 +1,7 @@
-import type { PageData } from '../deliver/page-data.ts';
+import type { PageData, PageMargin } from '../deliver/page-data.ts';
 import type { PipeState, Result, ResultFinding, ResultPipe } from '../schedule/result.ts';
 import { outsideDiameter } from './outside-diameter.ts';
+import type { PlanSide } from './plan-side.ts';
 
 /**
  * The page's data with what the page looks up again and again. A *section* is one pipe of the network (an index into
@@ -9,6 +10,8 @@ import { outsideDiameter } from './outside-diameter.ts';
 export interface Building {
   readonly data: PageData;
   readonly result: Result;
+  /** The plan that mends it, and whether this is the building before or after; null: there is none. */
+  readonly plan: PlanSide | null;
   readonly sectionCount: number;
   /** Index of each section's first point; one more at the end. */
   readonly pointStart: Int32Array;
@@ -25,6 +28,8 @@ export interface Building {
   /** The state of a section: its own where the pipe is cut, else the pipe's; undefined for links between fittings. */
   state(section: number): PipeState | undefined;
   pipe(section: number): ResultPipe | undefined;
+  /** What a pipe still takes; undefined where nobody asked. */
+  margin(row: number): PageMargin | undefined;
   /** Sections from the fixture to the sewer. */
   water(fixture: number): readonly number[];
   air(fixture: number): AirPath;
@@ -39,7 +44,7 @@ export interface AirPath {
   readonly vented: boolean;
 }
 
-export function buildingOf(data: PageData): Building {
+export function buildingOf(data: PageData, plan: PlanSide | null = null): Building {
   const { result, scene } = data;
   const { pipes, paths } = scene;
   const sectionCount = pipes.pipe.length;
@@ -106,6 +111,7 @@ export function buildingOf(data: PageData): Building {
   return {
     data,
     result,
+    plan,
     sectionCount,
     pointStart,
     sectionsOf,
@@ -120,6 +126,7 @@ export function buildingOf(data: PageData): Building {
     findingsAbout,
     state,
     pipe,
+    margin: (row) => data.margins.pipes[row],
     water,
     air,
     servesWater: serves(water),

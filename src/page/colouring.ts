@@ -1,5 +1,7 @@
 import type { Building } from './building.ts';
 import { mix, type Rgb, type Theme } from './colours.ts';
+import { type MarginStep, marginStep, marginSteps } from './margin-step.ts';
+import { fates, type PipeFate } from './plan-side.ts';
 import type { ColourBy, PageState } from './state.ts';
 
 /** One line of the legend. `pattern` is the second sign beside colour: 0 plain, 1 dashes, 2 rings, 3 dots, 4 long-short. */
@@ -53,8 +55,15 @@ export function categoryKey(building: Building, section: number, by: ColourBy): 
       const step = loadSteps.findIndex((limit) => load <= limit);
       return String(step < 0 ? loadSteps.length : step);
     }
+    case 'margin':
+      return marginStep(pipe, building.margin(building.data.scene.pipes.pipe[section]!));
+    case 'change':
+      return building.plan?.fates.get(pipe.globalId) ?? asItIs;
   }
 }
+
+/** A pipe that a plan leaves alone. */
+export const asItIs = 'same';
 
 /** Upper end of a step of load; null: over the last one, which is `last`. */
 export const loadStepEnd = (key: string): number | null => loadSteps[Number(key)] ?? null;
@@ -83,6 +92,8 @@ function rank(building: Building, by: ColourBy, key: string): number {
   if (by === 'role') return roleOrder.includes(key) ? roleOrder.indexOf(key) : roleOrder.length;
   if (by === 'storey') return key === '-1' ? Number.POSITIVE_INFINITY : -Number(key);
   if (by === 'load') return Number(key);
+  if (by === 'margin') return marginSteps.indexOf(key as MarginStep);
+  if (by === 'change') return key === asItIs ? fates.length : fates.indexOf(key as PipeFate);
   if (by === 'size') return building.result.pipes.find(({ modelled }) => modelled?.label === key)?.modelled?.dn ?? 1e9;
   return 0;
 }
@@ -91,6 +102,8 @@ function look(by: ColourBy, key: string, index: number, of: number, theme: Theme
   if (key === '' || (by === 'storey' && key === '-1')) return { colour: theme.unknown, pattern: 3 };
   if (by === 'verdict') return { colour: theme[key as (typeof verdicts)[number]], pattern: verdictPattern[key] ?? 0 };
   if (by === 'role') return roleLook(key, theme);
+  if (by === 'margin') return marginLook(key, theme);
+  if (by === 'change') return changeLook(key, theme);
   if (by === 'size' || by === 'load') {
     const t = of < 2 ? 1 : index / (of - 1);
     return { colour: along(theme.ramp, t), pattern: 0 };
@@ -119,6 +132,21 @@ function roleLook(role: string, theme: Theme): { colour: Rgb; pattern: number } 
   return { colour: theme.groups[sum % theme.groups.length]!, pattern: 1 };
 }
 
+/** From full to plenty along the ramp; what carries too much has the colour of the undersized. */
+function marginLook(key: string, theme: Theme): { colour: Rgb; pattern: number } {
+  if (key === 'over') return { colour: theme.undersized, pattern: 0 };
+  if (key === 'none') return { colour: theme.unknown, pattern: 3 };
+  const steps = marginSteps.length - 3;
+  const at = marginSteps.indexOf(key as MarginStep) - 1;
+  return { colour: along(theme.ramp, 1 - at / steps), pattern: at === 0 ? 2 : 0 };
+}
+
+function changeLook(key: string, theme: Theme): { colour: Rgb; pattern: number } {
+  const at = fates.indexOf(key as PipeFate);
+  const colour = [theme.air, theme.undersized, theme.wetVent, theme.chosen][at];
+  return { colour: colour ?? theme.idle, pattern: [0, 0, 4, 2][at] ?? 0 };
+}
+
 function along(ramp: readonly Rgb[], t: number): Rgb {
   const at = t * (ramp.length - 1);
   const low = Math.min(ramp.length - 2, Math.floor(at));
@@ -139,6 +167,7 @@ export interface SectionLook {
 export function lookOf(building: Building, state: PageState, theme: Theme): (section: number) => SectionLook {
   const categories = new Map(categoriesOf(building, state.colourBy, theme).map((category) => [category.key, category]));
   const anyUndersized = state.colourBy === 'verdict' && categories.has('undersized');
+  const changes = state.colourBy === 'change';
   const chosen = new Set(state.chosen?.is === 'pipe' ? building.sectionsOf[state.chosen.row] : []);
   const isolated = state.isolated === null ? null : new Set(state.isolated);
   const { pipe } = building.data.scene.pipes;
@@ -148,9 +177,11 @@ export function lookOf(building: Building, state: PageState, theme: Theme): (sec
     const hidden = (key !== null && state.hidden.has(key)) || (isolated !== null && !isolated.has(pipe[section]!));
     const undersized = building.state(section)?.verdict === 'undersized';
     const isChosen = chosen.has(section) && state.follow === null;
-    const lit = state.follow === null && ((state.colourBy === 'verdict' && undersized) || isChosen);
+    const lit =
+      state.follow === null &&
+      ((state.colourBy === 'verdict' && undersized) || (changes && key !== null && key !== asItIs) || isChosen);
     const base = chosen.has(section) && !undersized ? theme.chosen : (category?.colour ?? theme.idle);
-    const fade = lit ? 0 : state.follow !== null ? 0.82 : chosen.size > 0 ? 0.6 : anyUndersized ? 0.42 : 0;
+    const fade = lit ? 0 : state.follow !== null ? 0.82 : chosen.size > 0 ? 0.6 : anyUndersized || changes ? 0.42 : 0;
     return { colour: mix(base, theme.ground, fade), pattern: category?.pattern ?? 0, hidden, lit, chosen: isChosen };
   };
 }

@@ -1,5 +1,5 @@
 import type { Building } from './building.ts';
-import { switches } from './panel/legend.ts';
+import { switchesOf } from './panel/legend.ts';
 import type { PageState } from './state.ts';
 
 /** What the address after `#` says of the state. `#pipe=` or a bare GlobalId chooses; unknown ids choose nothing. */
@@ -10,7 +10,7 @@ export function stateFromLink(building: Building, hash: string): Partial<PageSta
   const id = asked.get('pipe') ?? asked.get('fixture') ?? asked.get('id');
   const pipe = id === null ? undefined : building.pipeAt.get(id);
   const fixture = id === null ? undefined : building.fixtureAt.get(id);
-  const colour = switches.find((by) => by === asked.get('colour'));
+  const colour = switchesOf(building).find((by) => by === asked.get('colour'));
   const storey = Number(asked.get('storey') ?? Number.NaN);
   const language = asked.get('lang');
   return {
@@ -26,6 +26,9 @@ export function stateFromLink(building: Building, hash: string): Partial<PageSta
   };
 }
 
+/** Whether the address asks for the building as mended. */
+export const asksMended = (hash: string): boolean => new URLSearchParams(hash.replace(/^#/, '')).get('mended') === '1';
+
 /** The address that brings another reader to the same place; only what differs from a fresh page stands in it. */
 export function linkOf(building: Building, state: PageState): string {
   const parts = new URLSearchParams();
@@ -35,6 +38,7 @@ export function linkOf(building: Building, state: PageState): string {
   if (chosen !== null && id !== undefined) parts.set(chosen.is, id);
   if (state.view === 'riser') parts.set('view', 'riser');
   if (state.colourBy !== 'verdict') parts.set('colour', state.colourBy);
+  if (building.plan?.side === 'after') parts.set('mended', '1');
   if (state.storey !== null) parts.set('storey', String(state.storey));
   const text = parts.toString();
   return text === '' ? '' : `#${text}`;

@@ -1,7 +1,6 @@
 import { fromBase64 } from '../deliver/base64.ts';
 import { unpackPage } from '../deliver/page-pack.ts';
-import { buildingOf } from './building.ts';
-import { openPage } from './open-page.ts';
+import { openModel } from './open-model.ts';
 
 /** Unpacks what stands in the file and opens the page on it. */
 async function start(): Promise<void> {
@@ -10,7 +9,7 @@ async function start(): Promise<void> {
   if (host === null || packed == null) throw new Error('the page holds no data');
   const plain = new Blob([fromBase64(packed)]).stream().pipeThrough(new DecompressionStream('deflate-raw'));
   const data = unpackPage(new Uint8Array(await new Response(plain).arrayBuffer()));
-  openPage(host, buildingOf(data));
+  openModel(host, data);
   document.documentElement.dataset.ready = 'yes';
 }
 

@@ -6,6 +6,8 @@ import { make } from './panel/element.ts';
 import { keysOn } from './panel/keys.ts';
 import { fixtureName, pipeName } from './panel/names.ts';
 import { shell } from './panel/shell.ts';
+import type { Side } from './plan-side.ts';
+import type { Eye } from './scene/orbit.ts';
 import { type Chosen, type Language, type PageState, storeOf } from './state.ts';
 import { wordsIn } from './words/languages.ts';
 
@@ -14,6 +16,15 @@ export interface PageAround {
   /** A line above the page, made anew for each language. */
   readonly bar?: (language: Language) => HTMLElement;
   readonly whatIf?: (language: Language, chosen: Chosen) => HTMLElement;
+  /** Asked where the reader wants the other building of a plan; told what is to be kept. */
+  readonly showSide?: (side: Side, kept: Kept) => void;
+  readonly kept?: Kept;
+}
+
+/** What stays as it is where one building takes the place of another. */
+export interface Kept {
+  readonly state: Partial<PageState>;
+  readonly eye: Eye | null;
 }
 
 /**
@@ -23,14 +34,14 @@ export interface PageAround {
 export function openPage(
   host: HTMLElement,
   building: Building,
-  { language, bar, whatIf }: PageAround = {},
+  { language, bar, whatIf, showSide, kept }: PageAround = {},
 ): () => void {
   const first = language === undefined ? firstState(building) : { ...firstState(building), language };
-  const store = storeOf({ ...first, ...stateFromLink(building, location.hash) });
+  const store = storeOf({ ...first, ...kept?.state, ...stateFromLink(building, location.hash) });
   const live = make('div', { class: 'offscreen', role: 'status', 'aria-live': 'polite' });
   let close = (): void => undefined;
 
-  const build = (language: Language): void => {
+  const build = (language: Language, eye: Eye | null = null): void => {
     close();
     document.documentElement.lang = language;
     const words = wordsIn(language);
@@ -41,6 +52,7 @@ export function openPage(
       scene: null,
       ...(whatIf === undefined ? {} : { whatIf: (chosen: Chosen) => whatIf(language, chosen) }),
       theme: () => themes[store.state.theme],
+      showSide: (side) => showSide?.(side, { state: store.state, eye: desk.scene?.eye ?? null }),
       announce(text) {
         live.textContent = text;
       },
@@ -60,6 +72,7 @@ export function openPage(
     const parts = shell(desk);
     host.replaceChildren(...(bar === undefined ? [] : [bar(language)]), ...parts.roots, live);
     parts.start();
+    if (eye !== null) desk.scene?.setEye(eye);
     const offKeys = keysOn(desk, parts);
     close = () => {
       offKeys();
@@ -77,7 +90,7 @@ export function openPage(
   const followLink = (): void => store.set(stateFromLink(building, location.hash));
   window.addEventListener('hashchange', followLink);
   document.documentElement.dataset.theme = store.state.theme;
-  build(store.state.language);
+  build(store.state.language, kept?.eye ?? null);
   return () => {
     window.removeEventListener('hashchange', followLink);
     close();

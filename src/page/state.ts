@@ -26,8 +26,8 @@ export interface PageState {
 }
 
 export type Chosen = { readonly is: 'pipe' | 'fixture'; readonly row: number };
-export type ColourBy = 'verdict' | 'role' | 'system' | 'size' | 'storey' | 'load';
-export type Tab = 'findings' | 'questions' | 'batteries' | 'pipes' | 'model';
+export type ColourBy = 'verdict' | 'role' | 'system' | 'size' | 'storey' | 'load' | 'margin' | 'change';
+export type Tab = 'findings' | 'mend' | 'questions' | 'batteries' | 'pipes' | 'model';
 export type Language = 'en' | 'fr';
 /** The water's or the air's way of one fixture; `step` is the section along it that the reader has slid to. */
 export interface Follow {

@@ -56,6 +56,7 @@ function mendChange(plan: Plan, index: ResultIndex, step: PlanStep): MendChange 
       from: step.from,
       to: step.to,
       why: sizeWhy(plan, index, step),
+      finding: step.why === null ? null : resultFinding(last, index, step.why),
       cost: points(step.cost),
       size: { from: index.size(step.from), to: index.size(step.to) },
     };
@@ -68,37 +69,45 @@ function mendChange(plan: Plan, index: ResultIndex, step: PlanStep): MendChange 
       from: null,
       to: `cleanout of ${size} (${place})`,
       why: `The row is read another way, and needs a cleanout there (${last.code.id}, ${clause}).`,
+      finding: null,
       cost: points(step.cost),
       cleanout: { size: index.size(size), place },
     };
   }
   const { change, why, cost } = step;
+  const finding = resultFinding(last, index, why);
+  const row = readAnew(plan, change);
+  const then =
+    row === null || change.kind === 'reading'
+      ? []
+      : [`With the vent the row of ${row.fixtures} fixtures is ${ventedText(row.to)}, not ${ventedText(row.from)}.`];
   return {
     kind: change.kind,
     about: ids(change.about),
     ...inWords(plan, change),
-    why: [resultFinding(last, index, why).sentence, ...thenRead(plan, change)].join(' '),
+    why: [finding.sentence, ...then].join(' '),
+    finding,
     cost: points(cost),
     ...data(plan, index, change),
+    ...(row === null ? {} : { reading: row }),
   };
 }
 
-/** What a vent makes of the row that it serves, where that is read another way with it. */
-function thenRead({ first, last }: Plan, change: Change): string[] {
-  if (!('added' in change)) return [];
+/** The row that a change makes another reading of: its own words, or what a vent makes of the row that it serves. */
+function readAnew({ first, last }: Plan, change: Change): NonNullable<MendChange['reading']> | null {
+  if (change.kind === 'reading') return { from: change.from, to: change.to, fixtures: change.about.length };
+  if (!('added' in change)) return null;
   const rows = change.added
     .flatMap((element) => last.network.pipesOf.get(element) ?? [])
     .flatMap((pipe) => last.shown.roles.uses[pipe]!.battery ?? []);
   const row = rows[0];
-  if (row === undefined) return [];
+  if (row === undefined) return null;
   const fixtures = row.facts.traps.map(({ fixture }) => last.paths.fixtures[fixture]!.element);
   const before = first.shown.roles.batteries.find(({ facts }) =>
     facts.traps.some(({ fixture }) => fixtures.includes(first.paths.fixtures[fixture]!.element)),
   );
-  if (before === undefined || before.reading === row.reading) return [];
-  return [
-    `With the vent the row of ${fixtures.length} fixtures is ${ventedText(row.reading)}, not ${ventedText(before.reading)}.`,
-  ];
+  if (before === undefined || before.reading === row.reading) return null;
+  return { from: before.reading, to: row.reading, fixtures: fixtures.length };
 }
 
 /** The finding that asks for it, else what follows from the other changes. */
@@ -136,20 +145,24 @@ const loweringText = (lowered: number): string =>
 
 const ventFrom = ({ kind }: VentChange): string => (kind === 'moved-vent' ? 'where it stands now' : 'its end inside');
 
-/** `relief vent of 1½ in, 960 mm, up to S4.VJ-S4.VE`. */
+/** `relief vent of 1½ in, 960 mm, to S4.VJ-S4.VE`. */
 function ventTo(plan: Plan, change: VentChange): string {
-  const { last, first } = plan;
   const { role, size } = madeOf(plan, change);
-  const end = endOf(change, change.joins !== null && change.joins >= first.model.elements.length, (element) =>
-    elementName(last, element),
-  );
+  const ends = endsOf(plan, change);
+  const end = change.joins !== null && ends === 'pipe' ? `to ${elementName(plan.last, change.joins)}` : endWords[ends];
   return [`${plainWords(role)} of ${size ?? 'unknown size'}`, lengthText(change.length), end].join(', ');
 }
 
-function endOf({ kind, joins }: VentChange, onNew: boolean, nameOf: (element: ElementId) => string): string {
-  if (onNew) return 'to the new vent beside it';
-  if (joins !== null) return `to ${nameOf(joins)}`;
-  return kind === 'moved-vent' ? 'to where it goes on' : 'through the roof to open air';
+const endWords: Readonly<Record<MendVent['ends'], string>> = {
+  pipe: 'to the vent there',
+  'new-vent': 'to the new vent beside it',
+  'open-air': 'through the roof to open air',
+  'as-before': 'to where it goes on',
+};
+
+function endsOf({ first }: Plan, { kind, joins }: VentChange): MendVent['ends'] {
+  if (joins !== null) return joins >= first.model.elements.length ? 'new-vent' : 'pipe';
+  return kind === 'moved-vent' ? 'as-before' : 'open-air';
 }
 
 /** What the new pipe is in the changed building: by its first piece that something breathes through. */
@@ -163,11 +176,10 @@ function madeOf({ last }: Plan, { added }: VentChange): { role: string; size: st
   return { role: 'vent', size: null };
 }
 
-function data(plan: Plan, index: ResultIndex, change: Change): Pick<MendChange, 'vent' | 'slope' | 'reading'> {
-  const { first } = plan;
+function data(plan: Plan, index: ResultIndex, change: Change): Pick<MendChange, 'vent' | 'slope' | 'trap'> {
   switch (change.kind) {
     case 'reading':
-      return { reading: { from: change.from, to: change.to } };
+      return {};
     case 'slope':
       return {
         slope: {
@@ -177,16 +189,17 @@ function data(plan: Plan, index: ResultIndex, change: Change): Pick<MendChange, 
         },
       };
     case 'trap':
-      return {};
+      return { trap: { from: roundMetres(change.from), to: roundMetres(change.to) } };
     default: {
       const { role, size } = madeOf(plan, change);
-      const joins = change.joins !== null && change.joins < first.model.elements.length ? change.joins : null;
+      const ends = endsOf(plan, change);
       const vent: MendVent = {
         role,
         size: size === null ? null : index.size(size as Parameters<ResultIndex['size']>[0]),
         length: roundMetres(change.length),
         points: change.points.map(([x, y, z]) => [roundMetres(x), roundMetres(y), roundMetres(z)] as const),
-        joins: joins === null ? null : index.idOf(joins),
+        ends,
+        joins: change.joins !== null && ends === 'pipe' ? index.idOf(change.joins) : null,
       };
       return { vent };
     }

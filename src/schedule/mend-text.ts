@@ -1,4 +1,5 @@
 import { elementNames } from './element-names.ts';
+import { groupedChanges } from './grouped-changes.ts';
 import type { MendChange, MendResult } from './mend.ts';
 import { decimal } from './number-text.ts';
 import type { Result } from './result.ts';
@@ -18,7 +19,7 @@ export function mendText(plan: MendResult, result: Result): TextLine[] {
       : `${counted(changes.length, 'change')}, ${decimal(cost, 1)} points`;
   return [
     ...heading(`${head}; ${what}.`),
-    ...grouped(changes).flatMap((group, place) => changeText(group, place + 1, names.short)),
+    ...groupedChanges(changes).flatMap((group, place) => changeText(group, place + 1, names.short)),
     blank,
     ...proofText(plan),
     ...paragraph(search.sentence, '', search.exact ? 'plain' : 'warning'),
@@ -29,25 +30,6 @@ export function mendText(plan: MendResult, result: Result): TextLine[] {
 }
 
 const caution = ({ caution: words }: MendResult): TextLine[] => paragraph(shownText(words), '', 'quiet');
-
-/** Pipes that change alike for one reason stand together; everything else by itself. */
-function grouped(changes: readonly MendChange[]): MendChange[][] {
-  const groups: MendChange[][] = [];
-  for (const change of changes) {
-    const last = groups.at(-1);
-    const like = last?.[0];
-    if (
-      last !== undefined &&
-      like?.kind === 'size' &&
-      change.kind === 'size' &&
-      like.from === change.from &&
-      like.to === change.to
-    )
-      last.push(change);
-    else groups.push([change]);
-  }
-  return groups;
-}
 
 const mostNamed = 8;
 

@@ -40,11 +40,16 @@ export interface MendChange {
   readonly to: string;
   /** Why, in one sentence. */
   readonly why: string;
+  /** What asks for it; null: it follows from another change. */
+  readonly finding: ResultFinding | null;
   readonly cost: number;
   readonly size?: { readonly from: SizeLabel; readonly to: SizeLabel };
   readonly vent?: MendVent;
   readonly slope?: { readonly from: number | null; readonly to: number; readonly lowered: number | null };
-  readonly reading?: { readonly from: string; readonly to: string };
+  /** Of the row that is read another way, by itself or with the vent. */
+  readonly reading?: { readonly from: string; readonly to: string; readonly fixtures: number };
+  /** Metres from the fixture along its outlet pipe. */
+  readonly trap?: { readonly from: number; readonly to: number };
   readonly cleanout?: { readonly size: SizeLabel; readonly place: string };
 }
 
@@ -55,6 +60,8 @@ export interface MendVent {
   readonly length: number;
   /** From its foot to where it ends, world metres. */
   readonly points: readonly (readonly [number, number, number])[];
-  /** GlobalId of the pipe that it joins; null: it ends in open air, or on another new vent. */
+  /** `as-before`: where the vent that was moved ended. */
+  readonly ends: 'pipe' | 'new-vent' | 'open-air' | 'as-before';
+  /** GlobalId of the pipe that it joins; null where it ends elsewhere. */
   readonly joins: string | null;
 }

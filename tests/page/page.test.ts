@@ -37,14 +37,8 @@ describe.skipIf(chromiumPath === undefined)('the page in Chromium', () => {
   test('a real battery, weighed: wet vent 4 in, circuit vent 3 in under the floor; axe agrees', async () => {
     const { outcome, result } = sampleOutcome('hall-wet-vented');
     const source = { ...outcome, paths: { ...outcome.paths, traps: outcome.shown.roles.air } };
-    const { page, close, complaints } = await open(
-      pageData(
-        result,
-        source,
-        [],
-        weighResult(outcome, result, weighEach(outcome, outcome.shown.roles.batteries)).batteries,
-      ),
-    );
+    const weighed = weighResult(outcome, result, weighEach(outcome, outcome.shown.roles.batteries)).batteries;
+    const { page, close, complaints } = await open(pageData(result, source, { weighed }));
     expect(await page.locator('.headline').textContent()).toBe('9 pipes are too small, for 1 cause');
     await page.locator('#tab-batteries').click();
     const row = (label: string): Promise<string[]> =>

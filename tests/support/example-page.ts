@@ -419,7 +419,9 @@ export function examplePage(spec: BuildingSpec): ExamplePage {
 }
 
 export const exampleData = (example: ExamplePage): PageData => {
-  return pageData(example.result, example, ['1¼ in', '1½ in', '2 in', '2½ in', '3 in', '4 in', '5 in'].map(sized));
+  return pageData(example.result, example, {
+    sizes: ['1¼ in', '1½ in', '2 in', '2½ in', '3 in', '4 in', '5 in'].map(sized),
+  });
 };
 
 const parts: Readonly<Record<string, Identity['part']>> = { segment: 'pipe', fitting: 'fitting', terminal: 'fixture' };

@@ -19,10 +19,11 @@ export function addView(program: Command): void {
       const { runModel } = await import('../run-model.ts');
       const { printResult } = await import('../print-result.ts');
       const { pageOf } = await import('../page-of.ts');
+      const { quickPlan } = await import('../../deliver/page-data-of.ts');
       const { writeNew } = await import('../write-new.ts');
       const { viewText } = await import('../../schedule/size-text.ts');
       const run = await runModel(models, options, (inputs) => outputPlace(options.out, inputs, false));
-      const written = await writeNew(run.place, [pageOf(run)], options.out);
+      const written = await writeNew(run.place, [pageOf(run, quickPlan(run.outcome))], options.out);
       await printResult(run.result, options, () => viewText(run.result, written));
     });
   for (const option of modelOptions()) command.addOption(option);

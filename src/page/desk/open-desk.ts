@@ -1,7 +1,7 @@
 import type { DeskParts } from '../../deliver/desk-html.ts';
 import type { PageData } from '../../deliver/page-data.ts';
 import { buildingOf } from '../building.ts';
-import { openPage } from '../open-page.ts';
+import { openModel } from '../open-model.ts';
 import { make } from '../panel/element.ts';
 import { shown } from '../panel/names.ts';
 import type { Language } from '../state.ts';
@@ -104,7 +104,7 @@ export function openDesk(host: HTMLElement, parts: DeskParts): void {
     const { model, models } = data.result;
     document.title = `${(models ?? [model]).map(({ file }) => shown(file)).join(', ')} · Drainwright`;
     const building = buildingOf(data);
-    close = openPage(host, building, {
+    close = openModel(host, data, {
       language,
       bar(now) {
         language = now;

@@ -4,6 +4,7 @@ import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
 import { factsLine } from './facts.ts';
 import { conditionText } from './finding-sentence.ts';
+import { rowTakes } from './margin-facts.ts';
 import { batteryName, capital, shown } from './names.ts';
 import { weighTable } from './weigh-table.ts';
 
@@ -25,6 +26,7 @@ export function batteryCard(desk: Desk, battery: ResultBattery): HTMLElement {
     kinds.set(kind, (kinds.get(kind) ?? 0) + 1);
   }
   const weighed = building.data.weighed.find(({ id }) => id === battery.id);
+  const takes = rowTakes(desk, battery.id);
   const readings = [
     { reading: battery.reading, holds: battery.broken.length === 0, broken: battery.broken, chosen: true },
     ...battery.others.map((other) => ({ ...other, chosen: false })),
@@ -76,6 +78,7 @@ export function batteryCard(desk: Desk, battery: ResultBattery): HTMLElement {
       ),
     ),
     weighed !== undefined && weighTable(desk, weighed),
+    takes !== null && make('p', { class: 'quiet' }, takes),
     battery.why !== '' &&
       make('p', { class: 'quiet' }, `${words.battery.why} `, modelText(shown(phrase(words, battery.why))), '.'),
     rows.length > 0 &&

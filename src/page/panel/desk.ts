@@ -1,5 +1,6 @@
 import type { Building } from '../building.ts';
 import type { Theme } from '../colours.ts';
+import type { Side } from '../plan-side.ts';
 import type { SceneView } from '../scene/scene-view.ts';
 import type { Chosen, Store } from '../state.ts';
 import type { Words } from '../words/words.ts';
@@ -17,4 +18,6 @@ export interface Desk {
   chooseFixture(row: number): void;
   /** Controls under the card of what is chosen; absent where the page cannot check anew. */
   readonly whatIf?: (chosen: Chosen) => HTMLElement;
+  /** Shows the building as modelled or as mended, at the same place; does nothing where there is no plan. */
+  showSide(side: Side): void;
 }

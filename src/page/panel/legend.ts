@@ -1,14 +1,31 @@
+import type { Building } from '../building.ts';
 import { type Category, categoriesOf, lastLoadStep, loadStepEnd } from '../colouring.ts';
 import { hex } from '../colours.ts';
 import { decimal, sizeLabel } from '../format.ts';
+import type { MarginStep } from '../margin-step.ts';
+import type { PipeFate } from '../plan-side.ts';
 import type { ColourBy } from '../state.ts';
+import { planWords } from '../words/plan-words.ts';
 import { named } from '../words/words.ts';
 import { verdictMarks } from './chips.ts';
 import type { Desk } from './desk.ts';
 import { make, makeSvg, modelText } from './element.ts';
 import { capital, shown } from './names.ts';
 
-export const switches: readonly ColourBy[] = ['verdict', 'role', 'system', 'size', 'storey', 'load'];
+export const switches: readonly ColourBy[] = [
+  'verdict',
+  'role',
+  'system',
+  'size',
+  'storey',
+  'load',
+  'margin',
+  'change',
+];
+
+/** Those that this page has something to show for. */
+export const switchesOf = ({ data, plan }: Building): readonly ColourBy[] =>
+  switches.filter((by) => (by === 'change' ? plan !== null : by === 'margin' ? data.margins.pipes.length > 0 : true));
 
 /** Names every colour on the picture; each line switches its pipes off and on. */
 export function legend(desk: Desk): HTMLElement {
@@ -18,7 +35,7 @@ export function legend(desk: Desk): HTMLElement {
   const select = make(
     'select',
     { id: 'colour-by', onchange: () => store.set({ colourBy: select.value as ColourBy, hidden: new Set() }) },
-    ...switches.map((by) => make('option', { value: by, selected: by === colourBy }, words.legend.by[by])),
+    ...switchesOf(building).map((by) => make('option', { value: by, selected: by === colourBy }, words.legend.by[by])),
   );
   if (categories.length === 0) return make('section', { hidden: true });
   return make(
@@ -84,6 +101,10 @@ export function categoryName({ building, words }: Desk, by: ColourBy, key: strin
       if (to === null) return words.legend.loadOver(decimal(words, lastLoadStep, 0), unit);
       return words.legend.loadStep(decimal(words, to, 0), unit);
     }
+    case 'margin':
+      return planWords[words.language].margins[key as MarginStep];
+    case 'change':
+      return planWords[words.language].fates[key as PipeFate | 'same'];
   }
 }
 

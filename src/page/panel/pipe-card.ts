@@ -1,11 +1,13 @@
 import type { PipeState, ResultPipe } from '../../schedule/result.ts';
 import { lengthText, loadText, oneSize, sizeText, slopeText } from '../format.ts';
+import { planWords } from '../words/plan-words.ts';
 import { named, phrase } from '../words/words.ts';
 import { argument } from './argument.ts';
 import { copyButton, pipeButton, verdictMarks } from './chips.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
 import { findingsAbout } from './findings-about.ts';
+import { marginFacts } from './margin-facts.ts';
 import { batteryName, capital, pipeName, shown } from './names.ts';
 import { connectedRows, upstreamOf } from './neighbours.ts';
 import { users } from './users.ts';
@@ -143,6 +145,7 @@ function facts(desk: Desk, row: number, pipe: ResultPipe): HTMLElement {
       ...(pipe.ventLoad === undefined
         ? []
         : [line(words.pipe.ventLoad, loadText(words, pipe.ventLoad, building.result.code.unit))]),
+      ...marginFacts(desk, row).map((text) => line(planWords[words.language].takes, text)),
       ...(pipe.length === null ? [] : [line(words.pipe.length, lengthText(words, pipe.length))]),
       ...(pipe.developedLength === undefined
         ? []

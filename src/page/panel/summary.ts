@@ -1,5 +1,6 @@
 import type { Verdict } from '../../schedule/result.ts';
 import { undersizedGroups } from '../../schedule/undersized-text.ts';
+import { planWords } from '../words/plan-words.ts';
 import { countedKind } from '../words/words.ts';
 import { verdictMark } from './chips.ts';
 import type { Desk } from './desk.ts';
@@ -29,6 +30,7 @@ export function summary(desk: Desk): HTMLElement {
   return make(
     'section',
     { class: 'summary', 'aria-labelledby': 'headline' },
+    building.plan?.side === 'after' && make('p', { class: 'side-note' }, planWords[words.language].afterNote),
     make(
       'h2',
       { id: 'headline', class: small > 0 ? 'headline bad' : 'headline' },

@@ -2,6 +2,7 @@ import { type NamedView, namedViews } from '../scene/orbit.ts';
 import type { Desk } from './desk.ts';
 import { make } from './element.ts';
 import { shown } from './names.ts';
+import { sideSwitch } from './side-switch.ts';
 
 /** What one does with the picture: views, storey, labels, building, measuring. */
 export function toolbar(desk: Desk): HTMLElement {
@@ -40,6 +41,7 @@ export function toolbar(desk: Desk): HTMLElement {
   return make(
     'div',
     { class: 'toolbar', role: 'toolbar', 'aria-label': words.page.tools },
+    sideSwitch(desk),
     make('button', { type: 'button', class: 'tool', onclick: () => desk.scene?.fit() }, words.tools.fit),
     make('label', { class: 'tool-select' }, make('span', { class: 'offscreen' }, words.tools.view), views),
     building.data.scene.storeys.length > 0 &&

@@ -127,7 +127,16 @@ export const english: Words = {
   },
   legend: {
     colourBy: 'Colour by',
-    by: { verdict: 'Verdict', role: 'Role', system: 'System', size: 'Size drawn', storey: 'Storey', load: 'Load' },
+    by: {
+      verdict: 'Verdict',
+      role: 'Role',
+      system: 'System',
+      size: 'Size drawn',
+      storey: 'Storey',
+      load: 'Load',
+      margin: 'Margin',
+      change: 'Change by the plan',
+    },
     noSystem: 'no system',
     noSize: 'no size drawn',
     noStorey: 'no storey',

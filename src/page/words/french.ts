@@ -145,6 +145,8 @@ export const french: Words = {
       size: 'Diamètre dessiné',
       storey: 'Étage',
       load: 'Charge',
+      margin: 'Marge',
+      change: 'Changement du plan',
     },
     noSystem: 'sans réseau',
     noSize: 'sans diamètre dessiné',

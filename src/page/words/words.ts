@@ -1,4 +1,4 @@
-import type { Language } from '../state.ts';
+import type { ColourBy, Language } from '../state.ts';
 import type { PanelWords } from './panel-words.ts';
 
 /** Every word of the page in one language. Names of roles, kinds, findings and rules fall back to the id in plain words. */
@@ -105,7 +105,7 @@ export interface Words extends PanelWords {
   };
   readonly legend: {
     readonly colourBy: string;
-    readonly by: Readonly<Record<'verdict' | 'role' | 'system' | 'size' | 'storey' | 'load', string>>;
+    readonly by: Readonly<Record<ColourBy, string>>;
     readonly noSystem: string;
     readonly noSize: string;
     readonly noStorey: string;

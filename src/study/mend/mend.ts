@@ -1,13 +1,17 @@
 import type { Facts, Finding } from '../../findings/finding.ts';
 import type { ElementId } from '../../model/model.ts';
+import { runNetwork } from '../../pipeline.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
 import type { Outcome } from '../../verdicts/outcome.ts';
+import { withSize } from '../edits.ts';
+import { pipingOf } from '../piping-of.ts';
 import type { Change } from './change.ts';
 import { cleanoutWhy, type NewCleanout, newCleanouts } from './cleanouts.ts';
 import { costsOf } from './costs.ts';
 import { keyOf } from './items.ts';
 import { firstSizes } from './resize.ts';
 import { search } from './search.ts';
+import type { State } from './state.ts';
 import type { Weights } from './weights.ts';
 
 /** The least change after which no error is left that a known change settles, and the building as it would be. */
@@ -50,7 +54,7 @@ export const usualRuns = 600;
 export function mend(first: Outcome, weights: Weights, mostRuns = usualRuns): Plan {
   const costs = costsOf(first, weights);
   const { state, settled, cost, runs, least, exact } = search(first, costs, mostRuns);
-  const last = settled?.outcome ?? first;
+  const last = settled === null ? first : withNewSizes(settled.outcome, state.made);
   const changes = state.made.flatMap(({ option: { change, why, cost: points } }): PlanStep[] =>
     change === null ? [] : [{ kind: 'change', change, why, cost: points }],
   );
@@ -69,6 +73,18 @@ export function mend(first: Outcome, weights: Weights, mostRuns = usualRuns): Pl
     runs,
     left: last.findings.filter(({ severity }) => severity === 'error'),
   };
+}
+
+/** New vents drawn in the sizes that they need, so that the proof judges them as well. */
+function withNewSizes(outcome: Outcome, made: State['made']): Outcome {
+  const { network, shown, code } = outcome;
+  const added = made.flatMap(({ option: { change } }) => (change !== null && 'added' in change ? change.added : []));
+  let piping = pipingOf(outcome);
+  for (const element of added) {
+    const sizes = (network.pipesOf.get(element) ?? []).flatMap((pipe) => shown.sizes[pipe]!.size ?? []);
+    if (sizes.length > 0) piping = withSize(piping, element, sizes.reduce(code.series.larger));
+  }
+  return added.length === 0 ? outcome : runNetwork(piping);
 }
 
 const cleanoutSteps = (first: Outcome, last: Outcome, { cleanout: cost }: Weights): PlanStep[] =>
