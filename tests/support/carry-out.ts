@@ -15,7 +15,7 @@ export function carryOut(sketch: Sketch, { changes }: MendResult): { sketch: Ske
   const draft: Drawing = { nodes: new Map(sketch.nodes), pipes: [...sketch.pipes], added: 0 };
   const batteries = new Map<string, { reading: string }>();
   for (const change of changes) {
-    if (change.reading !== undefined)
+    if (change.kind === 'reading' && change.reading !== undefined)
       for (const fixture of change.about) batteries.set(fixture, { reading: change.reading.to });
     else
       make(
