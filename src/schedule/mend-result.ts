@@ -170,7 +170,8 @@ function madeOf({ last }: Plan, { added }: VentChange): { role: string; size: st
   for (const element of added) {
     for (const pipe of last.network.pipesOf.get(element) ?? []) {
       const { role } = last.shown.roles.uses[pipe]!;
-      if (role !== 'idle') return { role, size: last.shown.sizes[pipe]!.size };
+      // The proof has it drawn in the size that it needs.
+      if (role !== 'idle') return { role, size: last.shown.loads.modelled[pipe]!.size };
     }
   }
   return { role: 'vent', size: null };
