@@ -22,4 +22,9 @@ export interface FixtureRow {
 export interface FixtureRows {
   /** Rows that fit what is known of a fixture, lightest first; all rows of the code when the kind is null. */
   rowsFor(kind: FixtureKind | null, detail: FixtureDetail): readonly FixtureRow[];
+  /**
+   * Uses of the building (setting `use`) any of which alone would settle the row of a fixture that is open; null: its use
+   * is set, or is not all that is open. Absent where the code counts no use.
+   */
+  openUses?(kind: FixtureKind, detail: FixtureDetail): readonly string[] | null;
 }

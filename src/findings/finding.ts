@@ -44,6 +44,7 @@ export type FindingCode =
   | 'branch-near-foot'
   | 'suds-zone'
   | 'fixture-unidentified'
+  | 'use-unknown'
   | 'fixture-unconnected'
   | 'open-end'
   | 'dead-end'
@@ -108,6 +109,7 @@ export const severityOf: Readonly<Record<FindingCode, Severity>> = {
   'size-unknown': 'warning',
   'slope-unknown': 'warning',
   'fixture-unidentified': 'warning',
+  'use-unknown': 'warning',
   'open-end': 'warning',
   loop: 'warning',
   'wrong-system': 'warning',

@@ -188,6 +188,8 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
     f.facts.kind === null || f.facts.kind === undefined
       ? `${first(f)} drains, but nothing in the model says what it is: sizes are given from the lightest to the heaviest it may be.`
       : `${first(f)} is a ${plain(f.facts.kind)}, but a detail that decides its load is missing: sizes are given for both.`,
+  'use-unknown': (f) =>
+    `${many(f, 'counts', 'count')} by the use of the building, which nobody says (setting use: ${text(f, 'uses')}): sizes are given from the lightest to the heaviest${f.facts.uses === 'private, public, assembly' ? ' of private and public use' : ''}.`,
   'fixture-unconnected': (f) => `${first(f)} has no drain pipe.`,
   'kind-contradicted': (f) =>
     `${first(f)} is taken for a ${plain(f.facts.taken)} by ${text(f, 'takenFrom')}, but ${text(f, 'otherFrom')} says ${plain(f.facts.other)}.`,

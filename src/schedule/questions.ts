@@ -1,5 +1,6 @@
 import { fixtureKinds } from '../model/read-answers.ts';
 import { elementNames } from './element-names.ts';
+import { openByUse } from './open-by-use.ts';
 import { hangsOnEntries } from './ranges-text.ts';
 import type { Result, ResultBattery, ResultFixture } from './result.ts';
 import { counted, listed, plainWords } from './trade-words.ts';
@@ -28,6 +29,7 @@ export function questionsOf(result: Result): Question[] {
   const questions = [
     ...sewerQuestions(result),
     ...fixtureQuestions(result),
+    ...useQuestion(result),
     ...batteryQuestions(result),
     ...slopeQuestion(result),
     ...entryQuestion(result),
@@ -63,7 +65,10 @@ function sewerQuestions(result: Result): Question[] {
 
 function fixtureQuestions(result: Result): Question[] {
   const names = elementNames(result);
-  const open = result.fixtures.filter(({ kind, load }) => kind === null || load.least !== load.most);
+  const byUse = openByUse(result);
+  const open = result.fixtures.filter(
+    ({ kind, load, globalId }) => (kind === null || load.least !== load.most) && !byUse.has(globalId),
+  );
   return open.map((fixture) => {
     const name = names.of(fixture.globalId);
     const weight = openPipes(result, fixture);
@@ -79,6 +84,27 @@ function fixtureQuestions(result: Result): Question[] {
   });
 }
 
+/** One question for all of them: the use of the building. */
+function useQuestion(result: Result): Question[] {
+  const { findings, fixtures, pipes } = result;
+  const open = openByUse(result);
+  if (open.size === 0) return [];
+  const said = findings.find(({ code }) => code === 'use-unknown')?.facts.uses;
+  const uses = typeof said === 'string' ? said.split(', ') : [];
+  const hang = new Set(
+    fixtures.filter(({ globalId }) => open.has(globalId)).flatMap((one) => openPipesOf(pipes, one.globalId)),
+  );
+  return [
+    {
+      about: [...open],
+      ask: `What is the use of the building: ${uses.join(', ')}? ${counted(open.size, 'fixture')} ${open.size === 1 ? 'counts' : 'count'} by it.`,
+      weight: hang.size,
+      choices: uses,
+      answer: { part: 'settings', key: 'use', field: null },
+    },
+  ];
+}
+
 /** The detail that tells the rows of a kind apart. */
 function openDetail({ kind, detail }: ResultFixture): { readonly field: string; readonly choices: readonly string[] } {
   if (kind === 'water-closet' && detail.flush === null) return { field: 'flush', choices: ['tank', 'valve'] };
@@ -90,12 +116,14 @@ function openDetail({ kind, detail }: ResultFixture): { readonly field: string; 
 }
 
 /** Pipes downstream of a fixture, and those that carry its air, whose size is open. */
-function openPipes({ pipes }: Result, { globalId }: ResultFixture): number {
+const openPipes = ({ pipes }: Result, { globalId }: ResultFixture): number => openPipesOf(pipes, globalId).length;
+
+function openPipesOf(pipes: Result['pipes'], globalId: string): Result['pipes'] {
   return pipes.filter(
     ({ required, verdict, servesWater, servesAir }) =>
       (verdict === 'unknown' || required?.least?.label !== required?.most?.label) &&
       (servesWater?.includes(globalId) === true || servesAir?.includes(globalId) === true),
-  ).length;
+  );
 }
 
 function batteryQuestions({ batteries }: Result): Question[] {

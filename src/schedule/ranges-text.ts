@@ -1,8 +1,9 @@
 import { elementNames } from './element-names.ts';
 import { loadText, sizeText } from './number-text.ts';
+import { openByUse } from './open-by-use.ts';
 import type { Result, ResultFixture, ResultPipe } from './result.ts';
 import { blank, heading, paragraph, type TextLine } from './text-line.ts';
-import { counted, listed } from './trade-words.ts';
+import { counted, listed, plainWords } from './trade-words.ts';
 
 /** Fixtures that may be read more than one way, and put in another load by it. In the order of the result. */
 export const openFixtures = ({ fixtures }: Result): readonly ResultFixture[] =>
@@ -20,6 +21,8 @@ export function rangesText(result: Result): TextLine[] {
   const open = openFixtures(result);
   if (open.length === 0) return [];
   const names = elementNames(result);
+  const byUse = openByUse(result);
+  const others = open.filter(({ globalId }) => !byUse.has(globalId));
   const judged = result.pipes.filter(({ modelled, required }) => modelled !== null && required !== null);
   const undecided = judged.filter((pipe) => isRange(pipe) && pipe.verdict === 'unknown');
   const firm = judged.filter(({ verdict }) => verdict !== 'unknown');
@@ -34,12 +37,13 @@ export function rangesText(result: Result): TextLine[] {
   return [
     blank,
     ...heading(`Open: ${counted(open.length, 'fixture')} may be read more than one way`),
-    ...open
+    ...byUseText(result, open),
+    ...others
       .slice(0, mostFixtures)
       .flatMap((fixture) =>
         paragraph(`${names.of(fixture.globalId)}: ${loadText(fixture.load, result.code.unit)}`, '  - ', 'warning'),
       ),
-    ...rest(open.length - mostFixtures, 'more'),
+    ...rest(others.length - mostFixtures, 'more'),
     ...paragraph(`Either way: ${listed(says)}.`),
     ...paragraph(
       undecided.length === 0
@@ -55,6 +59,25 @@ export function rangesText(result: Result): TextLine[] {
     ),
     ...rest(undecided.length - mostPipes, 'more'),
   ];
+}
+
+/** What the use of the building leaves open, alike together: `18 water closets by the use of the building: 3 to 4 units each`. */
+function byUseText(result: Result, open: readonly ResultFixture[]): TextLine[] {
+  const byUse = openByUse(result);
+  const alike = new Map<string, number>();
+  for (const { globalId, kind, load } of open) {
+    if (!byUse.has(globalId)) continue;
+    const key = `${plainWords(kind ?? 'fixture')}|${loadText(load, result.code.unit)}`;
+    alike.set(key, (alike.get(key) ?? 0) + 1);
+  }
+  return [...alike].flatMap(([key, count]) => {
+    const [kind = '', load = ''] = key.split('|');
+    return paragraph(
+      `${counted(count, kind)} by the use of the building (setting use): ${load}${count === 1 ? '' : ' each'}`,
+      '  - ',
+      'warning',
+    );
+  });
 }
 
 const mostFixtures = 4;

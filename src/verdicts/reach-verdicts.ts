@@ -3,7 +3,7 @@ import { type Finding, finding } from '../findings/finding.ts';
 import type { PlanPoint } from '../geometry/plan-outline.ts';
 import type { Answers } from '../model/answers.ts';
 import type { Identity } from '../model/identity.ts';
-import type { Model } from '../model/model.ts';
+import type { ElementId, Model } from '../model/model.ts';
 import type { Network } from '../network/network.ts';
 import type { Paths } from '../paths/paths.ts';
 import type { Load } from '../units/quantity.ts';
@@ -46,7 +46,7 @@ export function reachVerdicts({ findings, runs, ...facts }: VerdictFacts): Outco
     }),
     findings: [
       ...findings,
-      ...unidentified(identities, paths, shown),
+      ...unidentified(identities, paths, code, shown),
       ...batteryFindings(network, paths, shown.roles.batteries),
       ...code.checks.flatMap(({ run }) => run(checked)),
       ...sizeFindings(network, paths, code, shown, pipes),
@@ -56,12 +56,24 @@ export function reachVerdicts({ findings, runs, ...facts }: VerdictFacts): Outco
 }
 
 /** Fixtures whose kind or row nobody can settle: they run as a range. */
-function unidentified(identities: readonly Identity[], paths: Paths, { loads }: Run): Finding[] {
-  return paths.fixtures.flatMap(({ id, element }) => {
-    const { kind, evidence } = identities[element]!;
+function unidentified(
+  identities: readonly Identity[],
+  paths: Paths,
+  { fixtures }: PlumbingCode,
+  { loads }: Run,
+): Finding[] {
+  const byUse: ElementId[] = [];
+  const uses = new Set<string>();
+  const each = paths.fixtures.flatMap(({ id, element }) => {
+    const { kind, detail, evidence } = identities[element]!;
     const { settled, row } = loads.fixtures[id]!;
-    return kind === null || !settled
-      ? [finding('fixture-unidentified', [element], { kind, evidence, readAs: row.title })]
-      : [];
+    if (kind !== null && settled) return [];
+    const open = kind === null ? null : (fixtures.openUses?.(kind, detail) ?? null);
+    if (open === null) return [finding('fixture-unidentified', [element], { kind, evidence, readAs: row.title })];
+    byUse.push(element);
+    for (const use of open) uses.add(use);
+    return [];
   });
+  const facts = { fixtures: byUse.length, uses: [...uses].join(', ') };
+  return byUse.length === 0 ? each : [finding('use-unknown', byUse, facts), ...each];
 }

@@ -6,15 +6,22 @@ import type { GroupRule } from '../plumbing-code.ts';
 import { type GroupSize, partBy } from '../rules/bathroom-parts.ts';
 import { fixtureRows } from '../rules/fixture-rows.ts';
 import { countBowlsOnce } from '../rules/one-trap.ts';
+import { openUses } from '../rules/open-uses.ts';
 import type { Tools } from '../tools.ts';
 
 /** Loads of Table 709.1 in the use that the user set, else in private to public use; Table 709.2 by trap (R07, R08). */
-export const fixtures = (tools: Tools): FixtureRows =>
-  fixtureRows(tools, {
-    columns: [{ load: 'load', outlet: 'trap', facts: useOf(tools) }],
-    isSiphonic: (_, kind) => kind === 'water-closet',
-    isEmergency: (key) => key === 'floor-drain-emergency',
-  });
+export function fixtures(tools: Tools): FixtureRows {
+  const rowsOf = (facts: Readonly<Record<string, string>>): FixtureRows =>
+    fixtureRows(tools, {
+      columns: [{ load: 'load', outlet: 'trap', facts }],
+      isSiphonic: (_, kind) => kind === 'water-closet',
+      isEmergency: (key) => key === 'floor-drain-emergency',
+    });
+  const own = useOf(tools);
+  return { ...rowsOf(own), openUses: openUses(own.use ?? null, uses, (use) => rowsOf({ use })) };
+}
+
+const uses = ['private', 'public'];
 
 const useOf = ({ settings }: Tools): Record<string, string> =>
   typeof settings.use === 'string' ? { use: settings.use } : {};

@@ -6,6 +6,7 @@ import type { CountedFixture, FixtureCount, PlumbingCode, RowLoadRule } from '..
 import { type GroupSize, partBy } from '../rules/bathroom-parts.ts';
 import { fixtureRows } from '../rules/fixture-rows.ts';
 import { countBowlsOnce } from '../rules/one-trap.ts';
+import { openUses } from '../rules/open-uses.ts';
 import { steadyLoadBy } from '../rules/steady-load.ts';
 import type { Tools } from '../tools.ts';
 
@@ -20,10 +21,12 @@ export function fixtures(tools: Tools): FixtureRows {
       isSiphonic: (_, kind) => kind === 'water-closet',
       isEmergency: (key) => key === 'floor-drain-emergency',
     });
-  const [own, emergency] = [rowsOf(usesOf(tools)), rowsOf(['public'])];
+  const uses = usesOf(tools);
+  const [own, emergency] = [rowsOf(uses), rowsOf(['public'])];
   return {
     rowsFor: (kind, detail) =>
       (kind === 'floor-drain' && detail.emergency === true ? emergency : own).rowsFor(kind, detail),
+    openUses: openUses(uses.length === 1 ? uses[0]! : null, [...uses, 'assembly'], (use) => rowsOf([use])),
   };
 }
 

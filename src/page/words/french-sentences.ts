@@ -141,6 +141,8 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
     has(f, 'kind')
       ? `${first(f)} : ${f.kind(f.facts.kind)}, mais il manque un détail qui décide de sa charge; les diamètres sont donnés pour les deux cas.`
       : `${first(f)} se vide, mais rien dans la maquette ne dit ce que c’est : les diamètres vont du plus léger au plus lourd possible.`,
+  'use-unknown': (f) =>
+    `${many(f, 'compte', 'comptent')} selon l’usage du bâtiment, que personne n’indique (réglage use : ${text(f, 'uses')}) : les diamètres vont du plus léger au plus lourd.`,
   'fixture-unconnected': (f) => `${first(f)} n’a pas de tuyau d’évacuation.`,
   'kind-contradicted': (f) =>
     `${first(f)} est pris pour : ${f.kind(f.facts.taken)}, selon ${text(f, 'takenFrom')}; mais ${text(f, 'otherFrom')} dit : ${f.kind(f.facts.other)}.`,

@@ -100,6 +100,7 @@ export const frenchCodes: Words['codes'] = {
   'branch-near-foot': 'branchement trop près du pied de colonne',
   'suds-zone': 'zone de mousse',
   'fixture-unidentified': 'appareil non identifié',
+  'use-unknown': 'usage du bâtiment inconnu',
   'fixture-unconnected': 'appareil non raccordé',
   'open-end': 'bout ouvert',
   'dead-end': 'cul-de-sac',
@@ -256,6 +257,8 @@ export function frenchAsk(part: string, field: string | null, name: string): str
     case 'batteries':
       return `Comment le groupe de ${name} est-il conçu ? Plus d’une lecture tient.`;
     case 'settings':
+      if (field === 'use')
+        return 'Les appareils sont-ils à usage privé, public ou de rassemblement ? Leur charge en dépend.';
       if (field === 'entries')
         return 'Comment les branchements entrent-ils dans les colonnes : à 45° ou moins, ou avec un rayon au moins égal à leur diamètre intérieur, ou à l’équerre ?';
       if (field === 'sumpPumpFlow')
