@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest';
+import { questionsOf } from '../../src/schedule/questions.ts';
 import { hall, ventedRow } from '../support/rows.ts';
 import { runSketch, type SketchRun } from '../support/run-sketch.ts';
 
@@ -159,5 +160,33 @@ sewer OUT`,
       { code: 'ipc-2021' },
     );
     expect(run.pipe('T-J').load).toEqual({ least: 2, most: 2 });
+  });
+});
+
+describe('R07 water closets count by private or public use: where nobody says which, that is asked once', () => {
+  const done = (settings: object = {}, code = 'ipc-2021') =>
+    runSketch(ventedRow(['closet, tank', 'closet, tank', 'lavatory, trap 1 1/4 in']), {
+      code,
+      answers: { settings } as never,
+    });
+
+  test('two closets: one finding, one question, loads of 3 to 4', () => {
+    const open = done();
+    expect(open.findings('fixture-unidentified')).toEqual([]);
+    expect(open.findings('use-unknown').map(({ about, facts }) => [about.length, facts.uses])).toEqual([
+      [2, 'private, public'],
+    ]);
+    expect(open.fixture('F1').load).toEqual({ least: 3, most: 4 });
+    const asked = questionsOf(open.result).filter(({ answer }) => answer.part !== 'batteries');
+    expect(asked.map(({ choices, answer }) => [choices, answer.key])).toEqual([[['private', 'public'], 'use']]);
+  });
+  test('the use said, nothing is open', () => {
+    expect(done({ use: 'private' }).findings('use-unknown')).toEqual([]);
+    expect(done({ use: 'private' }).fixture('F1').load).toEqual({ least: 3, most: 3 });
+  });
+  test('the Uniform Plumbing Code has a third use, assembly, which is never guessed', () => {
+    const [found] = done({}, 'upc-2021').findings('use-unknown');
+    expect(found?.facts.uses).toBe('private, public, assembly');
+    expect(found?.sentence).toContain('of private and public use');
   });
 });
