@@ -1,4 +1,5 @@
 import type { Finding } from '../findings/finding.ts';
+import type { FixtureKind } from '../model/identity.ts';
 import type { ElementId } from '../model/model.ts';
 import type { PipeId } from '../network/network.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
@@ -23,6 +24,7 @@ export interface CheckFacts {
   readonly drains: readonly CheckedDrain[];
   /** Dry vents that serve a trap or a stack, one for each foot, in the order of their joints. */
   readonly vents: readonly CheckedVent[];
+  readonly access: CheckedAccess;
 }
 
 export interface CheckedPipe {
@@ -59,6 +61,8 @@ export interface CheckedStack {
   readonly yokes: readonly number[];
   /** Heights at which they leave the stack, metres, highest first. */
   readonly yokeHeights: readonly number[];
+  /** The same vents where they meet the vent stack: how far above the floor below, metres; null without geometry. */
+  readonly yokeTops: readonly { readonly elements: readonly ElementId[]; readonly overFloor: number | null }[];
   /** Vents that tie each storey it serves to its vent stack, lowest storey first; null: the storey has none. */
   readonly ties: readonly ({ readonly vent: NominalSize; readonly branch: NominalSize } | null)[];
   readonly topStorey: number;
@@ -66,9 +70,18 @@ export interface CheckedStack {
     readonly elements: readonly ElementId[];
     readonly length: number;
     readonly storeysAbove: number;
+    /** Storeys of fixtures on the part above. */
+    readonly servedAbove: number;
     readonly loadAbove: Load;
     readonly reliefVents: number;
+    /** Storey of plumbing and height of its upper end; the height null without geometry. */
+    readonly storey: number;
+    readonly height: number | null;
+    /** The first level drain that joins in it, and how far from its upper end, metres. */
+    readonly firstJoin: { readonly element: ElementId | null; readonly distance: number } | null;
   }[];
+  /** Metres from its foot up to the nearest cleanout on the stack; 0 at the foot; null: there is none. */
+  readonly cleanout: number | null;
 }
 
 export interface CheckedTrap {
@@ -88,6 +101,9 @@ export interface CheckedTrap {
     readonly slopeUncertainty: number;
     readonly turn: number | null;
   } | null;
+  /** The model draws the trap as a thing of its own. */
+  readonly isDrawn: boolean;
+  readonly fixture: FixtureKind | null;
   /** Developed length between the fixture and its trap, and what of it is level. */
   readonly outletLength: number;
   readonly outletLevel: number;
@@ -109,6 +125,8 @@ export interface CheckedDrain {
   readonly required: NominalSize | null;
   /** Where its vents reach the air, each once. */
   readonly mouths: readonly CheckedMouth[];
+  /** Some cleanout opens it inside the building. */
+  readonly hasCleanout: boolean;
 }
 
 /** What opens a vent to the air: `highest` is an open end over the roof. */
@@ -120,6 +138,8 @@ export interface CheckedMouth {
   readonly drawn: NominalSize | null;
   /** The larger of drawn and required. */
   readonly size: NominalSize | null;
+  /** Metres over the roof that covers the place; null where no roof is modelled or nothing is drawn. */
+  readonly overRoof: number | null;
 }
 
 /** A dry vent from its foot on the drainage to the air. */
@@ -134,6 +154,12 @@ export interface CheckedVent {
     readonly row: string;
     readonly storey: number;
   }[];
+  /** Fixtures that it serves: those traps, or the row's where it stands by the row's vent. */
+  readonly serves: readonly FloodFacts[];
+  /** Height at which it meets a vent that carries other air as well, metres; null: it goes on alone, or nothing is drawn. */
+  readonly meets: number | null;
+  /** Where it stands on a level drain: the angle to the level at which it leaves, degrees; else null. */
+  readonly leavesAt: number | null;
   readonly mouth: MouthKind | null;
   /** Height of the mouth over the foot, metres. */
   readonly rise: number | null;
@@ -145,4 +171,46 @@ export interface CheckedVent {
     readonly height: number | null;
     readonly isOwn: boolean;
   } | null;
+}
+
+/** What tells how high a fixture fills before it overflows, in metres of the building; null: not drawn. */
+export interface FloodFacts {
+  readonly element: ElementId;
+  readonly closet: boolean;
+  readonly outlet: number | null;
+  /** Top of its body. */
+  readonly top: number | null;
+  readonly floor: number;
+}
+
+/** How the drains can be rodded. */
+export interface CheckedAccess {
+  /** By element. `opens` is the drain it opens, drawn or else required. */
+  readonly cleanouts: readonly {
+    readonly element: ElementId;
+    readonly size: NominalSize | null;
+    readonly opens: NominalSize | null;
+  }[];
+  /** Level drains of more than one fixture: metres of level drain from the nearest cleanout to the far end; null: none. */
+  readonly drains: readonly {
+    readonly element: ElementId;
+    readonly size: NominalSize;
+    readonly distance: number | null;
+  }[];
+  /** Fixture drains of kitchen sinks: their turns together, degrees, and whether a cleanout opens them. */
+  readonly sinks: readonly {
+    readonly element: ElementId;
+    readonly turn: number;
+    readonly hasCleanout: boolean;
+  }[];
+  /**
+   * Traps on the building drain itself: whether a cleanout stands at or before them, and the dry vent nearest upstream.
+   */
+  readonly buildingTraps: readonly {
+    readonly element: ElementId;
+    readonly hasCleanout: boolean;
+    readonly freshAir: { readonly distance: number; readonly size: NominalSize | null } | null;
+  }[];
+  /** Interceptors with drains, and whether a cleanout follows before other water joins. */
+  readonly interceptors: readonly { readonly element: ElementId; readonly hasCleanout: boolean }[];
 }

@@ -27,6 +27,9 @@ export type FindingCode =
   | 'vent-joins-too-low'
   | 'dry-vent-too-flat'
   | 'no-open-air'
+  | 'terminal-too-low'
+  | 'fresh-air-inlet-missing'
+  | 'standpipe-too-short'
   | 'cleanout-missing'
   | 'cleanout-too-small'
   | 'closet-needs-larger'
@@ -115,6 +118,9 @@ export const severityOf: Readonly<Record<FindingCode, Severity>> = {
   'wrong-system': 'warning',
   'double-water-path': 'warning',
   'dry-vent-too-flat': 'warning',
+  'terminal-too-low': 'warning',
+  'fresh-air-inlet-missing': 'warning',
+  'standpipe-too-short': 'warning',
   'cleanout-missing': 'warning',
   'cleanout-too-small': 'warning',
   'fit-in-wall': 'warning',

@@ -1,5 +1,6 @@
 import { conditionText } from './condition-text.ts';
 import type { FindingCode } from './finding.ts';
+import { placeSentences } from './place-sentences.ts';
 import { has, num, type SentenceFacts } from './sentence-facts.ts';
 
 type Sentence = (given: SentenceFacts) => string;
@@ -84,6 +85,7 @@ function outOfReach(given: SentenceFacts): string {
 
 /** One sentence a code, that a designer can act on: the thing, the number, the limit, the clause. */
 export const sentences: Readonly<Record<FindingCode, Sentence>> = {
+  ...placeSentences,
   undersized: (f) =>
     `${first(f)} (${plain(f.facts.role)}) is drawn ${text(f, 'modelled')} and needs ${f.facts.requiredLeast !== f.facts.required && has(f, 'requiredLeast') ? `${text(f, 'requiredLeast')} to ` : ''}${text(f, 'required')} for ${load(f)}${f.clause}${has(f, 'steeperSlope') ? `; laid at ${f.slope(num(f, 'steeperSlope'))} or steeper ${text(f, 'steeperSize')} is enough` : ''}${f.facts.provisional === true ? '; provisional, a figure of the code could not be read' : ''}.`,
   oversized: (f) =>
@@ -115,11 +117,7 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
   'valve-not-allowed': (f) =>
     `The vent ${first(f)} ends in an air admittance valve: ${has(f, 'intervalsMost') ? `its stack has ${text(f, 'intervals')} branch intervals, at most ${text(f, 'intervalsMost')} may end so; lead it to open air` : has(f, 'leastM') ? `the valve stands ${f.length(num(f, 'heightM'))} above the drain it vents, at least ${f.length(num(f, 'leastM'))}` : has(f, 'belowMost') ? `it stands ${text(f, 'below')} branch intervals below the top of the stack, and beyond ${text(f, 'belowMost')} the branch needs a relief vent` : 'no vent of the building drain reaches open air; one must'}${f.clause}.`,
   'valve-needs-approval': (f) =>
-    `The vent ${first(f)} ends in an air admittance valve: this code names none, so the authority having jurisdiction decides.`,
-  'suds-zone': (f) =>
-    `The stack ${first(f)} carries suds, and a drain joins ${f.length(num(f, 'distanceM'))} ${f.facts.above === true ? 'above' : 'past'} its foot: within ${f.length(num(f, 'leastM'))} of the turn suds may push back${f.clause}.`,
-  'branch-near-foot': (f) =>
-    `${first(f)} joins ${f.length(num(f, 'distanceM'))} downstream of the foot of a stack, at least ${f.length(num(f, 'leastM'))}${f.clause}.`,
+    `The vent ${first(f)} ends in an air admittance valve: ${f.facts.listed === true ? 'the code lets one stand only over fixtures in island counters, where frost may close a vent, in houses under renovation, or where no vent can be led out; the model does not say which' : 'this code names none'}, so the authority having jurisdiction decides${f.clause}.`,
   'stack-vent-missing': (f) =>
     `The stack ${first(f)} carries ${load(f)} and does not go on upward as a stack vent${f.clause}.`,
   'vent-stack-missing': (f) =>
@@ -135,14 +133,11 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
   'yoke-vent-missing': (f) =>
     has(f, 'interval')
       ? `The stack ${first(f)} has ${text(f, 'intervals')} branch intervals and no relief vent to its vent stack at the ${text(f, 'interval')}th from the top${f.clause}.`
-      : `The stack ${first(f)} takes fixtures from ${text(f, 'storeys')} storeys and has no yoke vent at storey ${num(f, 'storey') + 1}${f.clause}.`,
-  'yoke-vent-misplaced': (f) => `The yoke vent ${first(f)} does not join where the code asks${f.clause}.`,
+      : `The stack ${first(f)} takes fixtures from ${text(f, 'storeys')} storeys and has no yoke vent at ${f.facts.offset === true ? 'or above its offset at ' : ''}storey ${num(f, 'storey') + 1}${f.clause}.`,
   'offset-relief-vent-missing': (f) =>
     has(f, 'intervals')
       ? `The offset ${first(f)} is ${f.length(num(f, 'offsetM'))} long below ${text(f, 'intervals')} branch intervals with ${load(f)}; beyond ${text(f, 'intervalsMost')} it needs a vent above it and one below it, and has ${text(f, 'reliefVents')} of the two${has(f, 'larger') ? `; or stack and offset of ${text(f, 'larger')}, as wide as stack and vent together` : ''}${f.clause}.`
       : `The offset ${first(f)} is ${f.length(num(f, 'offsetM'))} long below ${text(f, 'storeys')} storeys with ${load(f)}; it has ${text(f, 'reliefVents')} of two offset relief vents${f.clause}.`,
-  'frost-enlargement-missing': (f) =>
-    `${first(f)} goes through the roof at ${text(f, 'size')}; frost may close it below ${text(f, 'least')}${f.clause}.`,
   'trap-arm-too-long': (f) =>
     has(f, 'turnDeg')
       ? `The trap arm of ${first(f)} turns ${f.number(num(f, 'turnDeg'))}°, at most ${f.number(num(f, 'limitDeg'))}°${f.clause}.`
@@ -158,21 +153,12 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
   'slope-unknown': (f) =>
     `${many(f, 'has', 'have')} no slope, neither drawn nor stated: each size is read at its own least slope. What slope are they laid to?`,
   backfall: (f) => `${first(f)} climbs ${f.length(num(f, 'climbM'))} on the way of its water.`,
-  'vent-joins-too-low': (f) =>
-    `${first(f)} joins another vent below the flood level of a fixture it serves${f.clause}.`,
-  'dry-vent-too-flat': (f) => `${first(f)} runs too flat before it has risen above the flood level${f.clause}.`,
   'no-open-air': (f) =>
     `${first(f)} ends ${has(f, 'topM') ? `inside, at ${f.length(num(f, 'topM'))},` : 'closed'} and not in open air: the traps that count on it are not vented.`,
   'open-air-assumed': () =>
     'No roof is modelled: vents that end 2 m above the highest floor with fixtures are taken to reach open air.',
   'storeys-assumed': (f) =>
     `The model has no storeys: one is counted for each ${f.length(num(f, 'heightM'))} of height.`,
-  'cleanout-missing': (f) =>
-    has(f, 'turnDeg')
-      ? `The trap arm of ${first(f)} turns ${f.number(num(f, 'turnDeg'))}°; beyond ${f.number(num(f, 'limitDeg'))}° it needs a cleanout${f.clause}.`
-      : `${first(f)} has no cleanout${f.clause}.`,
-  'cleanout-too-small': (f) =>
-    `The cleanout ${first(f)} is ${text(f, 'modelled')}, at least ${text(f, 'least')}${f.clause}.`,
   'closet-needs-larger': (f) =>
     `${first(f)} carries ${text(f, 'closets')} water closets and needs a larger size${f.clause}.`,
   'branch-too-long': (f) => `The branch of ${first(f)} ${outOfReach(f)}${f.clause}.`,

@@ -1,19 +1,31 @@
 import type { CheckedDrain, CheckedPipe, CheckedStack, CheckedTrap, CheckFacts } from '../codes/check.ts';
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import type { PipeUse } from '../codes/use.ts';
-import type { ElementId } from '../model/model.ts';
+import type { Identity } from '../model/identity.ts';
+import type { ElementId, Model } from '../model/model.ts';
 import type { Network, PipeId } from '../network/network.ts';
+import { openSky } from '../paths/open-air.ts';
 import type { Paths } from '../paths/paths.ts';
 import { streamOf } from '../paths/stream.ts';
 import { type Stack, stackUseAt } from '../roles/find-stacks.ts';
 import { widestDrawn } from '../roles/main-vent.ts';
+import type { VentFoot } from '../roles/roles.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import { checkedVents, mouthsOf } from './checked-vents.ts';
+import { drainAccess } from './drain-access.ts';
 import type { Run } from './outcome.ts';
 import { storeyTies } from './tied-storeys.ts';
 
+export interface Checkable {
+  readonly model: Model;
+  readonly identities: readonly Identity[];
+  readonly network: Network;
+  readonly paths: Paths;
+  readonly code: PlumbingCode;
+}
+
 /** What a code's checks look at, gathered from one run. */
-export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, run: Run): CheckFacts {
+export function checkFacts({ model, identities, network, paths, code }: Checkable, run: Run): CheckFacts {
   const stream = streamOf(network, paths);
   const { roles, loads, sizes } = run;
   const elementsOf = (pipes: readonly PipeId[]): ElementId[] => [
@@ -33,7 +45,7 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
     };
   });
 
-  const traps = paths.traps.map(({ fixture, after, arm }): CheckedTrap => {
+  const traps = paths.traps.map(({ fixture, after, arm, how }): CheckedTrap => {
     const path = paths.fixtures[fixture]!;
     const measured = roles.arms[fixture] ?? null;
     const uncertain = Math.max(0, ...arm.map((pipe) => paths.slopes[pipe]!.uncertainty));
@@ -55,6 +67,8 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
               slopeUncertainty: uncertain,
               turn: measured.turn,
             },
+      isDrawn: how === 'drawn',
+      fixture: identities[path.element]!.kind,
       outletLength: spanOf(path.water.slice(0, after)),
       outletLevel: spanOf(path.water.slice(0, after).filter((pipe) => paths.vertical[pipe] !== true)),
       kind: loads.fixtures[fixture]!.row.title,
@@ -66,12 +80,15 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
 
   const ofStack = ventsOfStacks(run);
   const ties = storeyTies(paths, code, run);
+  const sky = openSky(model, identities, network);
+  const access = drainAccess({ model, identities, network, paths, code, run });
   return {
     pipes,
     traps,
     stacks: roles.stacks.map((stack) => checkedStack(stack)),
     drains: buildingDrains(),
-    vents: checkedVents(network, paths, run),
+    vents: checkedVents(model, network, paths, run),
+    access: access.checked,
   };
 
   function checkedStack(stack: Stack): CheckedStack {
@@ -103,6 +120,8 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
       ),
       yokes: [...new Set(yokes.map((use) => roles.floors.at(heightAt(use))))].sort((a, b) => b - a),
       yokeHeights: yokes.map(heightAt).sort((a, b) => b - a),
+      yokeTops: roles.feet.flatMap((foot) => yokeTop(stack, foot)),
+      cleanout: cleanoutAbove(stack),
       ties: ties.get(stack.id) ?? stack.served.map(() => null),
       topStorey: stack.served.at(-1) ?? 0,
       offsets: stack.offsets.map(({ pipes: level, length }, offset) => {
@@ -120,11 +139,56 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
           elements: elementsOf(level),
           length,
           storeysAbove: floors.length,
+          servedAbove: storeysOf(above.at(-1) ?? stack.top),
+          storey: roles.floors.at(low),
+          height: Number.isFinite(low) ? low : null,
+          // What joins at its lower end enters the part below.
+          firstJoin: firstJoin(level.slice(0, -1)),
           loadAbove: loads.pipes[above.at(-1) ?? stack.top]!.load,
           reliefVents: vents.filter(({ vent }) => vent!.offset === offset).length,
         };
       }),
     };
+  }
+
+  /** Storeys from which fixtures drain through a pipe. */
+  function storeysOf(pipe: PipeId): number {
+    const { from, to } = loads.pipes[pipe]!;
+    return new Set(loads.order.slice(from, to).map((fixture) => roles.floors.of(paths.fixtures[fixture]!))).size;
+  }
+
+  /** From the head of a level drain to the first other one that joins it, along these pipes. */
+  function firstJoin(list: readonly PipeId[]): CheckedStack['firstBelow'] {
+    let walked = 0;
+    for (const pipe of list) {
+      walked += stream.span(pipe);
+      const branch = stream.inflows[stream.down(pipe)]!.find((one) => one !== pipe && paths.vertical[one] !== true);
+      if (branch !== undefined) return { element: network.pipes[branch]!.element, distance: walked };
+    }
+    return null;
+  }
+
+  function cleanoutAbove({ pipes: down }: Stack): number | null {
+    let walked = 0;
+    for (const pipe of [...down].reverse()) {
+      if (access.opens(stream.down(pipe))) return walked;
+      walked += stream.span(pipe);
+    }
+    return access.opens(stream.up(down[0]!)) ? walked : null;
+  }
+
+  function yokeTop(stack: Stack, { joint, path }: VentFoot): CheckedStack['yokeTops'] {
+    const use = roles.uses[path[0]!]!;
+    if (use.role !== 'yoke-vent' || use.vent?.serves !== stack.id) return [];
+    const own = path.filter((pipe) => roles.uses[pipe]!.role === 'yoke-vent');
+    let at = joint;
+    for (const pipe of own) {
+      const [a, b] = network.pipes[pipe]!.ends;
+      at = a === at ? b : a;
+    }
+    const height = network.joints[at]!.at?.[2] ?? null;
+    const floor = height === null ? undefined : roles.floors.elevations.findLast((one) => one <= height);
+    return [{ elements: elementsOf(own), overFloor: height === null || floor === undefined ? null : height - floor }];
   }
 
   function spanOf(list: readonly PipeId[]): number {
@@ -145,16 +209,14 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
     return 0;
   }
 
+  /** The level drain below the foot, as far as it stays level. */
   function firstBelow(stack: Stack): CheckedStack['firstBelow'] {
-    let walked = 0;
+    const level: PipeId[] = [];
     for (let pipe = paths.next[stack.foot] ?? null; pipe !== null; pipe = paths.next[pipe] ?? null) {
-      if (paths.vertical[pipe] === true) return null;
-      walked += stream.span(pipe);
-      const own = pipe;
-      const branch = stream.inflows[stream.down(pipe)]!.find((one) => one !== own && paths.vertical[one] !== true);
-      if (branch !== undefined) return { element: network.pipes[branch]!.element, distance: walked };
+      if (paths.vertical[pipe] === true) break;
+      level.push(pipe);
     }
-    return null;
+    return firstJoin(level);
   }
 
   function buildingDrains(): CheckedDrain[] {
@@ -176,7 +238,8 @@ export function checkFacts(network: Network, paths: Paths, code: PlumbingCode, r
           pipes: drain,
           widestVent: widest,
           required: last === undefined ? null : sizes[last]!.size,
-          mouths: mouthsOf(network, paths, code, run, feet),
+          mouths: mouthsOf(network, paths, code, run, feet, { model, sky }),
+          hasCleanout: drain.some((pipe) => access.opens(stream.up(pipe)) || access.opens(stream.down(pipe))),
         },
       ];
     });

@@ -1,9 +1,11 @@
-import type { CheckedMouth, CheckedVent } from '../codes/check.ts';
+import type { CheckedMouth, CheckedVent, FloodFacts } from '../codes/check.ts';
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
-import type { ElementId } from '../model/model.ts';
+import type { ElementId, Model } from '../model/model.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
-import type { Paths } from '../paths/paths.ts';
+import type { OpenSky } from '../paths/open-air.ts';
+import type { FixtureId, Paths } from '../paths/paths.ts';
 import { streamOf } from '../paths/stream.ts';
+import { pointsFrom } from '../paths/turns.ts';
 import { stackUseAt } from '../roles/find-stacks.ts';
 import type { VentFoot } from '../roles/roles.ts';
 import { descentOf } from '../roles/vent-dip.ts';
@@ -11,7 +13,7 @@ import type { NominalSize } from '../units/nominal-size.ts';
 import type { Run } from './outcome.ts';
 
 /** Dry vents as a code's checks look at them, one for each foot that serves a trap or a stack. */
-export function checkedVents(network: Network, paths: Paths, run: Run): CheckedVent[] {
+export function checkedVents(model: Model, network: Network, paths: Paths, run: Run): CheckedVent[] {
   const { roles, loads } = run;
   const stream = streamOf(network, paths);
   const heightOf = (joint: JointId): number | null => network.joints[joint]!.at?.[2] ?? null;
@@ -30,6 +32,9 @@ export function checkedVents(network: Network, paths: Paths, run: Run): CheckedV
           const path = paths.fixtures[fixture]!;
           return { element: path.element, closet: row.closet, row: row.id, storey: roles.floors.of(path) };
         }),
+        serves: served(foot).map(floodFacts),
+        meets: meets(foot),
+        leavesAt: leavesAt(foot),
         mouth: end?.how ?? null,
         rise: from === null || to === null ? null : to - from,
         descent: descentOf(network, foot),
@@ -37,6 +42,52 @@ export function checkedVents(network: Network, paths: Paths, run: Run): CheckedV
       },
     ];
   });
+
+  /** A relief or further circuit vent has no traps of its own: it serves the row beside which it stands. */
+  function served({ traps, path }: VentFoot): readonly FixtureId[] {
+    const row = roles.uses[path[0]!]!.battery?.facts.traps ?? [];
+    return traps.length > 0 ? traps : row.map(({ fixture }) => fixture);
+  }
+
+  function floodFacts(fixture: FixtureId): FloodFacts {
+    const path = paths.fixtures[fixture]!;
+    return {
+      element: path.element,
+      closet: loads.fixtures[fixture]!.row.closet,
+      outlet: heightOf(path.outlet),
+      top: model.elements[path.element]!.box?.max[2] ?? null,
+      floor: roles.floors.elevations[roles.floors.of(path)] ?? 0,
+    };
+  }
+
+  /** Its name changes where other air joins; the vents of a stack are joined by others and join none themselves. */
+  function meets({ joint, path }: VentFoot): number | null {
+    const { role } = roles.uses[path[0]!]!;
+    if (role === 'stack-vent' || role === 'vent-stack' || role === 'yoke-vent') return null;
+    let at = joint;
+    for (const pipe of path) {
+      if (roles.uses[pipe]!.role !== role) return heightOf(at);
+      const [a, b] = network.pipes[pipe]!.ends;
+      at = a === at ? b : a;
+    }
+    return null;
+  }
+
+  function leavesAt({ joint, path }: VentFoot): number | null {
+    const drains = [...stream.inflows[joint]!, stream.outflow[joint] ?? []].flat();
+    if (drains.length === 0 || drains.some((pipe) => paths.vertical[pipe] !== false)) return null;
+    let at = joint;
+    for (const pipe of path) {
+      const [from, to] = pointsFrom(network, pipe, at);
+      if (from !== undefined && to !== undefined) {
+        const plan = Math.hypot(to[0] - from[0], to[1] - from[1]);
+        return (Math.atan2(to[2] - from[2], plan) * 180) / Math.PI;
+      }
+      const [a, b] = network.pipes[pipe]!.ends;
+      at = a === at ? b : a;
+    }
+    return null;
+  }
 
   /** The stack that the vent stands on, or that the drain it vents comes to, and where. */
   function stackBelow({ joint }: VentFoot): CheckedVent['stack'] {
@@ -62,6 +113,7 @@ export function mouthsOf(
   { series }: PlumbingCode,
   run: Run,
   feet: readonly VentFoot[],
+  { model, sky }: { readonly model: Model; readonly sky: OpenSky },
 ): CheckedMouth[] {
   const mouths = new Map<JointId, CheckedMouth>();
   for (const foot of feet) {
@@ -75,9 +127,22 @@ export function mouthsOf(
       drawn === null ? required : required === null ? drawn : series.larger(drawn, required);
     const known = mouths.get(end.joint);
     if (known === undefined)
-      mouths.set(end.joint, { elements: elementsOf(network, [last]), how: end.how, drawn, size });
+      mouths.set(end.joint, {
+        elements: elementsOf(network, [last]),
+        how: end.how,
+        drawn,
+        size,
+        overRoof: overRoof(end.joint),
+      });
   }
   return [...mouths.values()];
+
+  function overRoof(joint: JointId): number | null {
+    const { at, elements } = network.joints[joint]!;
+    if (at === null || !sky.roofed) return null;
+    const tops = elements.flatMap((element) => model.elements[element]!.box?.max[2] ?? []);
+    return Math.max(at[2], ...tops) - sky.above(at);
+  }
 }
 
 const elementsOf = (network: Network, pipes: readonly PipeId[]): ElementId[] => [

@@ -34,7 +34,7 @@ export function reachVerdicts({ findings, runs, ...facts }: VerdictFacts): Outco
   const { network, paths, code, identities } = facts;
   const shown = runs.at(-1)!;
   const pipes = comparePipes(network, code, runs, shown);
-  const checked = checkFacts(network, paths, code, shown);
+  const checked = checkFacts(facts, shown);
   return {
     ...facts,
     shown,

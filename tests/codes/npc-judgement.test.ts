@@ -182,7 +182,8 @@ describe('who brings the air', () => {
     );
     const run = runSketch(text);
     expect(how(run, 'L1', 'F1', 'F2')).toEqual(['continuous-vent', 'wet-vent', 'wet-vent']);
-    expect(errors(run)).toEqual(['main-vent-missing']);
+    // A valve is no way to open air: neither the vent of 3 in (2.5.8.4.(5)) nor any other (2.5.9.) reaches it.
+    expect(errors(run)).toEqual(['main-vent-missing', 'valve-not-allowed']);
   });
 
   test('water that climbs is a backfall, not another way out', () => {

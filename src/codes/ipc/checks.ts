@@ -4,6 +4,7 @@ import type { NominalSize } from '../../units/nominal-size.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { Check } from '../check.ts';
 import { branchIntervals } from '../rules/branch-intervals.ts';
+import { nearFoot } from '../rules/stack-foot-checks.ts';
 import { type ArmLimits, armFaults, everyTrapVented, leastSlope, outletPipe } from '../rules/trap-checks.ts';
 import { frostCheck, islandVents, mainVentCheck, valveHeight } from '../rules/vent-checks.ts';
 import { shareOf, widthOf } from '../rules/vent-sizes.ts';
@@ -29,7 +30,7 @@ export function checks(tools: Tools): Check[] {
     ventStacks(tools),
     tallStacks(tools),
     offsetVents(tools),
-    nearFoot(tools),
+    nearFootOf(tools),
     mainVentCheck(rule('IPC-R78'), series, ({ required }) =>
       required === null
         ? null
@@ -183,28 +184,12 @@ function tallStacks({ family }: Tools): Check {
 }
 
 /** No level branch joins within ten pipe sizes of a stack's foot (704.3, R17). */
-function nearFoot({ family }: Tools): Check {
+function nearFootOf({ family }: Tools): Check {
   const { series } = family;
   const sizes = family.number('foot-distance', 'factor');
-  const { clause } = family.rule('IPC-R17');
-  return {
-    id: 'IPC-R17',
-    run: ({ stacks }) =>
-      stacks.flatMap(({ elements, footSize, firstBelow }): Finding[] => {
-        if (firstBelow === null || footSize === null) return [];
-        const least = (sizes.value * widthOf(series, footSize)) / 1000;
-        if (firstBelow.distance >= least - coordinateMetres) return [];
-        const branch = firstBelow.element === null ? [] : [firstBelow.element];
-        return [
-          finding(
-            'branch-near-foot',
-            [...branch, ...elements],
-            { distanceM: firstBelow.distance, leastM: least },
-            clause,
-          ),
-        ];
-      }),
-  };
+  return nearFoot(family.rule('IPC-R17'), ({ footSize }) =>
+    footSize === null ? null : (sizes.value * widthOf(series, footSize)) / 1000,
+  );
 }
 
 /** Where air admittance valves may stand: not on tall stacks, with relief far down one, never as the only vent (918, R97 to R99). */

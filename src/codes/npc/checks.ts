@@ -2,26 +2,44 @@ import { type Finding, finding } from '../../findings/finding.ts';
 import { rowAtSize } from '../../tables/find-row.ts';
 import { leastSlopeOf } from '../../tables/find-slope.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
-import { unitsOf } from '../../units/quantity.ts';
 import { coordinateMetres, turnDegrees } from '../../units/uncertainty.ts';
-import type { Check, CheckedStack, CheckedTrap } from '../check.ts';
+import type { Check, CheckedTrap } from '../check.ts';
+import { cleanoutRules } from '../cleanouts.ts';
+import { cleanoutChecks } from '../rules/cleanout-checks.ts';
 import { type ArmLimits, armFaults, everyTrapVented, leastSlope, outletPipe } from '../rules/trap-checks.ts';
-import { mainVentCheck } from '../rules/vent-checks.ts';
+import { frostCheck, mainVentCheck, valveHeight } from '../rules/vent-checks.ts';
+import { endsOverRoof, ventLeavesUpward, ventsMeetHigh } from '../rules/vent-place-checks.ts';
 import { widthOf } from '../rules/vent-sizes.ts';
 import type { Tools } from '../tools.ts';
+import { stackChecks } from './stack-checks.ts';
 
-/** Demands that are no size: R15, R26, R36, R39, R40, R67, R68, R71, R72, R78. */
+/** Demands that are no size: R15, R26 to R36, R39 to R42, R67, R68, R71, R72, R78, R83 to R86. */
 export function checks(tools: Tools): Check[] {
-  const { family } = tools;
+  const { family, settings } = tools;
+  const { rule, series } = family;
   const mainVent = family.size('main-vent');
   return [
-    outletPipe(family.rule('NPC-R15'), { whole: family.number('outlet-pipe-length', 'length').value }),
+    outletPipe(rule('NPC-R15'), { whole: family.number('outlet-pipe-length', 'length').value }),
     slopes(tools),
-    everyTrapVented(family.rule('NPC-R36')),
+    standpipes(tools),
+    cleanouts(tools),
+    everyTrapVented(rule('NPC-R36')),
     trapArms(tools),
-    stackVents(tools),
-    offsetRelief(tools),
-    mainVentCheck(family.rule('NPC-R78'), family.series, () => mainVent.value),
+    ventLeavesUpward(rule('NPC-R41'), family.number('vent-leaves', 'angle').value),
+    ventsMeetHigh(
+      rule('NPC-R42'),
+      { usual: family.number('rim-usual', 'length').value, closet: family.number('rim-closet', 'length').value },
+      0,
+    ),
+    ...stackChecks(tools),
+    mainVentCheck(rule('NPC-R78'), series, () => mainVent.value),
+    endsOverRoof(rule('NPC-R83'), family.number('terminal-above-roof', 'length').value),
+    ...(settings.frostEnlargement === true
+      ? [frostCheck(rule('NPC-R84'), series, family.size('frost-least').value)]
+      : []),
+    valves(tools),
+    valveHeight(rule('NPC-R85'), family.number('valve-above-drain', 'length').value),
+    freshAir(tools),
   ];
 }
 
@@ -90,89 +108,75 @@ function trapArms({ family }: Tools): Check {
   };
 }
 
-/** A stack goes on upward (R67), has a vent stack beyond four storeys (R68) and yoke vents beyond eleven (R71). */
-function stackVents({ family }: Tools): Check {
-  const storeys = family.number('vent-stack-storeys', 'count');
-  const yokeStoreys = family.number('yoke-storeys', 'count');
-  const section = family.number('yoke-section', 'count');
-  const freeVent = family.size('yoke-free-vent');
-  const { rank } = family.series;
-  /** Every storey is tied to the vent stack by a vent as large as its branch, or of the printed size if that is less. */
-  const isTied = (ties: CheckedStack['ties']): boolean =>
-    ties.every((tie) => tie !== null && rank(tie.vent) >= Math.min(rank(tie.branch), rank(freeVent.value)));
+/** A clothes washer's drawn trap lies well below its standpipe's mouth (R29). */
+function standpipes({ family }: Tools): Check {
+  const least = family.number('standpipe-least', 'length');
+  const { clause } = family.rule('NPC-R29');
   return {
-    id: 'NPC-R68',
-    run: ({ stacks }) =>
-      stacks.flatMap(
-        ({ elements, hasStackVent, ventStack, isWetVent, storeysServed, yokes, ties, topStorey, footLoad }) => {
-          const found: Finding[] = [];
-          if (!hasStackVent)
-            found.push(
-              finding('stack-vent-missing', elements, { loadUnits: unitsOf(footLoad) }, family.rule('NPC-R67').clause),
-            );
-          if (storeysServed > storeys.value && ventStack !== 'foot' && !isWetVent) {
-            found.push(
-              finding(
-                ventStack === null ? 'vent-stack-missing' : 'vent-stack-misplaced',
-                elements,
-                {
-                  storeys: storeysServed,
-                  storeysMost: storeys.value,
-                  ...(ventStack === null ? {} : { at: ventStack }),
-                },
-                family.rule('NPC-R68').clause,
-              ),
-            );
-          }
-          if (storeysServed > yokeStoreys.value && !isTied(ties)) {
-            for (let bottom = topStorey - section.value + 1; bottom > 0; bottom -= section.value) {
-              if (yokes.some((storey) => storey >= bottom - 1 && storey <= bottom)) continue;
-              found.push(
-                finding(
-                  'yoke-vent-missing',
-                  elements,
-                  { storey: bottom, storeys: storeysServed },
-                  family.rule('NPC-R71').clause,
-                ),
-              );
-            }
-          }
-          return found;
-        },
-      ),
+    id: 'NPC-R29',
+    run: ({ traps }) =>
+      traps.flatMap(({ element, fixture, isDrawn, outletLength, outletLevel }): Finding[] => {
+        const upright = outletLength - outletLevel;
+        if (fixture !== 'clothes-washer' || !isDrawn || upright >= least.value - coordinateMetres) return [];
+        return [finding('standpipe-too-short', [element], { heightM: upright, leastM: least.value }, clause)];
+      }),
   };
 }
 
-function offsetRelief({ family }: Tools): Check {
-  const length = family.number('offset-relief-length', 'length');
-  const storeys = family.number('offset-relief-storeys', 'count');
-  const load = family.number('offset-relief-load', 'load');
-  const { clause } = family.rule('NPC-R72');
+/** Where drains must open and how wide (R30, R31, R33 to R35); places that a model does not tell are not asked. */
+function cleanouts({ family }: Tools): Check {
+  const { rule, series } = family;
+  const printed = cleanoutRules(family)!;
+  return cleanoutChecks(
+    {
+      spacing: { rule: rule('NPC-R30'), reach: printed.reach },
+      size: { rule: rule('NPC-R31'), least: printed.sizeFor },
+      buildingDrain: rule('NPC-R33'),
+      stackFoot: { rule: rule('NPC-R34'), within: family.number('stack-cleanout-within', 'length').value },
+      sink: { rule: rule('NPC-R35'), turn: family.number('sink-drain-turn', 'angle').value },
+      interceptor: rule('NPC-R35'),
+      buildingTrap: rule('NPC-R35'),
+    },
+    series,
+  );
+}
+
+/** An air admittance valve stands only where the code lists it, and some vent still reaches open air (R85). */
+function valves({ family }: Tools): Check {
+  const { id, clause } = family.rule('NPC-R85');
   return {
-    id: 'NPC-R72',
-    run: ({ stacks }) =>
-      stacks.flatMap(({ offsets }) =>
-        offsets
-          .filter(
-            (one) =>
-              one.length > length.value + coordinateMetres &&
-              one.storeysAbove > storeys.value &&
-              one.loadAbove > load.value &&
-              one.reliefVents < 2,
-          )
-          .map((one) =>
-            finding(
-              'offset-relief-vent-missing',
-              one.elements,
-              {
-                offsetM: one.length,
-                storeys: one.storeysAbove,
-                loadUnits: unitsOf(one.loadAbove),
-                reliefVents: one.reliefVents,
-              },
-              clause,
-            ),
-          ),
+    id,
+    run: ({ vents, drains }) => [
+      ...vents.flatMap(({ elements, mouth }): Finding[] =>
+        mouth === 'valve' ? [finding('valve-needs-approval', elements, { listed: true }, clause)] : [],
       ),
+      ...drains.flatMap(({ elements, mouths }): Finding[] =>
+        mouths.length > 0 && mouths.every(({ how }) => how === 'valve')
+          ? [finding('valve-not-allowed', elements, { onlyValves: true }, clause)]
+          : [],
+      ),
+    ],
+  };
+}
+
+/** A building trap has a fresh air inlet close upstream (R86). */
+function freshAir({ family }: Tools): Check {
+  const within = family.number('fresh-air-within', 'length');
+  const least = family.size('fresh-air-least');
+  const { id, clause } = family.rule('NPC-R86');
+  const { rank } = family.series;
+  return {
+    id,
+    run: ({ access }) =>
+      access.buildingTraps.flatMap(({ element, freshAir: inlet }): Finding[] => {
+        const near = inlet !== null && inlet.distance <= within.value + coordinateMetres;
+        if (near && (inlet.size === null || rank(inlet.size) >= rank(least.value))) return [];
+        const facts = {
+          withinM: within.value,
+          least: least.value,
+          ...(near ? { size: inlet.size } : { distanceM: inlet?.distance ?? null }),
+        };
+        return [finding('fresh-air-inlet-missing', [element], facts, clause)];
+      }),
   };
 }

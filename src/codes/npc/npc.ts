@@ -1,12 +1,14 @@
 import { rowAtSize } from '../../tables/find-row.ts';
 import type { Load } from '../../units/quantity.ts';
 import type { CodeRules } from '../plumbing-code.ts';
+import { steadyLoadBy } from '../rules/steady-load.ts';
 import type { Tools } from '../tools.ts';
 import { checks } from './checks.ts';
 import { drainRules } from './drain-rules.ts';
 import { bathroomGroup, fixtures, freeOfVent } from './fixtures.ts';
 import { countOnOneTrap } from './one-trap.ts';
 import { readings, whenNoneHolds } from './readings.ts';
+import { washers } from './stack-checks.ts';
 import { ventLength, ventRules } from './vent-rules.ts';
 import { wetVentRules } from './wet-vent-rules.ts';
 
@@ -42,7 +44,8 @@ export function npc(tools: Tools): CodeRules {
     islandVents: false,
     group: bathroomGroup(tools),
     row: null,
-    counts: [],
+    counts: [{ id: washers, takes: ({ kind }) => kind === 'clothes-washer' }],
     sharedTrap: countOnOneTrap,
+    steadyLoad: steadyLoadBy(family.number('continuous-flow', 'factor')),
   };
 }

@@ -2,6 +2,7 @@ import type { FindingCode } from '../../findings/finding.ts';
 import { has, num, type SentenceFacts } from '../../findings/sentence-facts.ts';
 import { frenchCondition } from './french-conditions.ts';
 import { type FrenchFacts, text } from './french-facts.ts';
+import { frenchPlaceSentences } from './french-place-sentences.ts';
 
 type Sentence = (given: FrenchFacts) => string;
 
@@ -33,6 +34,7 @@ function outOfReach(f: FrenchFacts): string {
 
 /** The findings' sentences in French, built from the same facts as the English ones. */
 export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
+  ...frenchPlaceSentences,
   undersized: (f) =>
     `${first(f)} (${f.role(f.facts.role)}) est dessiné en ${text(f, 'modelled')} et doit être de ${has(f, 'requiredLeast') && f.facts.requiredLeast !== f.facts.required ? `${text(f, 'requiredLeast')} à ` : ''}${text(f, 'required')} pour ${load(f)}${f.clause}${has(f, 'steeperSlope') ? `; posé à ${f.slope(num(f, 'steeperSlope'))} ou plus, ${text(f, 'steeperSize')} suffit` : ''}${f.facts.provisional === true ? '; provisoire, un chiffre du code n’a pas pu être lu' : ''}.`,
   oversized: (f) =>
@@ -72,11 +74,7 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
   'valve-not-allowed': (f) =>
     `La ventilation ${first(f)} finit par un clapet d’admission d’air que le code ne permet pas ici${f.clause}.`,
   'valve-needs-approval': (f) =>
-    `La ventilation ${first(f)} finit par un clapet d’admission d’air : ce code n’en nomme pas, l’autorité compétente décide.`,
-  'suds-zone': (f) =>
-    `La colonne ${first(f)} porte des eaux mousseuses et une évacuation s’y raccorde à ${f.length(num(f, 'distanceM'))} de son pied, au moins ${f.length(num(f, 'leastM'))}${f.clause}.`,
-  'branch-near-foot': (f) =>
-    `${first(f)} se raccorde à ${f.length(num(f, 'distanceM'))} en aval du pied d’une colonne, au moins ${f.length(num(f, 'leastM'))}${f.clause}.`,
+    `La ventilation ${first(f)} finit par un clapet d’admission d’air : ${f.facts.listed === true ? 'le code ne le permet que pour un appareil d’îlot, où le gel peut fermer une ventilation, dans une maison en rénovation, ou lorsqu’aucune ventilation ne peut sortir; la maquette ne dit pas lequel' : 'ce code n’en nomme pas'}, l’autorité compétente décide${f.clause}.`,
   'stack-vent-missing': (f) =>
     `La colonne de chute ${first(f)} porte ${load(f)} et ne se prolonge pas vers le haut en colonne de ventilation primaire${f.clause}.`,
   'vent-stack-missing': (f) =>
@@ -90,15 +88,11 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
   'yoke-vent-missing': (f) =>
     has(f, 'interval')
       ? `La colonne de chute ${first(f)} a ${text(f, 'intervals')} intervalles de branchement et pas de ventilation vers sa colonne secondaire au ${text(f, 'interval')}e depuis le haut${f.clause}.`
-      : `La colonne de chute ${first(f)} reçoit des appareils de ${text(f, 'storeys')} étages et n’a pas de ventilation de chute à l’étage ${num(f, 'storey') + 1}${f.clause}.`,
-  'yoke-vent-misplaced': (f) =>
-    `La ventilation de chute ${first(f)} ne se raccorde pas où le code le demande${f.clause}.`,
+      : `La colonne de chute ${first(f)} reçoit des appareils de ${text(f, 'storeys')} étages et n’a pas de ventilation de chute ${f.facts.offset === true ? 'à sa déviation ou au-dessus, ' : ''}à l’étage ${num(f, 'storey') + 1}${f.clause}.`,
   'offset-relief-vent-missing': (f) =>
     has(f, 'intervals')
       ? `La déviation ${first(f)}, longue de ${f.length(num(f, 'offsetM'))}, est sous ${text(f, 'intervals')} intervalles de branchement avec ${load(f)}; au-delà de ${text(f, 'intervalsMost')} il lui faut une ventilation au-dessus et une au-dessous, et elle en a ${text(f, 'reliefVents')}${has(f, 'larger') ? `; ou une colonne et une déviation de ${text(f, 'larger')}, aussi larges que la colonne et la ventilation réunies` : ''}${f.clause}.`
       : `La déviation ${first(f)}, longue de ${f.length(num(f, 'offsetM'))} sous ${text(f, 'storeys')} étages avec ${load(f)}, a ${text(f, 'reliefVents')} des deux ventilations d’équilibrage exigées${f.clause}.`,
-  'frost-enlargement-missing': (f) =>
-    `${first(f)} traverse le toit en ${text(f, 'size')}; sous ${text(f, 'least')} le gel peut le fermer${f.clause}.`,
   'trap-arm-too-long': (f) =>
     has(f, 'turnDeg')
       ? `Le bras de siphon de ${first(f)} tourne de ${f.number(num(f, 'turnDeg'))}°, au plus ${f.number(num(f, 'limitDeg'))}°${f.clause}.`
@@ -114,19 +108,12 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
   'slope-unknown': (f) =>
     `${many(f, 'n’a pas de pente', 'n’ont pas de pente')}, ni dessinée ni indiquée : chaque diamètre est lu à sa propre pente minimale. À quelle pente seront-ils posés ?`,
   backfall: (f) => `${first(f)} remonte de ${f.length(num(f, 'climbM'))} sur le parcours de son eau.`,
-  'vent-joins-too-low': (f) =>
-    `${first(f)} se raccorde à une autre ventilation sous le niveau de débordement d’un appareil qu’il dessert${f.clause}.`,
-  'dry-vent-too-flat': (f) =>
-    `${first(f)} est trop à plat avant de s’élever au-dessus du niveau de débordement${f.clause}.`,
   'no-open-air': (f) =>
     `${first(f)} finit ${has(f, 'topM') ? `à l’intérieur, à ${f.length(num(f, 'topM'))},` : 'fermé'} et non à l’air libre : les siphons qui comptent sur lui ne sont pas ventilés.`,
   'open-air-assumed': () =>
     'La maquette n’a pas de toit : une ventilation qui finit 2 m au-dessus du plus haut étage avec appareils est réputée à l’air libre.',
   'storeys-assumed': (f) =>
     `La maquette n’a pas d’étages : on en compte un par ${f.length(num(f, 'heightM'))} de hauteur.`,
-  'cleanout-missing': (f) => `${first(f)} n’a pas de regard de nettoyage${f.clause}.`,
-  'cleanout-too-small': (f) =>
-    `Le regard de nettoyage ${first(f)} est de ${text(f, 'modelled')}, au moins ${text(f, 'least')}${f.clause}.`,
   'closet-needs-larger': (f) =>
     `${first(f)} porte ${text(f, 'closets')} toilettes et exige un plus grand diamètre${f.clause}.`,
   'branch-too-long': (f) => `Le branchement de ${first(f)} ${outOfReach(f)}${f.clause}.`,
