@@ -1,5 +1,6 @@
 import type { ElementId } from '../model/model.ts';
-import { type Difference, type Twins, twins } from '../study/twins.ts';
+import type { Difference } from '../study/twin-differences.ts';
+import { type Twins, twins } from '../study/twins.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
 import { slopeText } from './number-text.ts';
 import { elementName } from './result-findings.ts';
