@@ -47,9 +47,9 @@ test('W13 a tube of 110 x 2.7 carries 3.14 l/s half full at 1 %, the least bore 
   expect(flowAtFill(0.096, 0.01, 0.5, law).flow.toFixed(2)).toBe('2.50');
 });
 
-describe('PE-14 two-family house, drain at the boundary', () => {
+describe('a two-family house at the slopes of its sample sheet', () => {
   // Office sample sheet, annex 1: 4 closets, 5 basins, 2 showers or baths, 2 sinks with dishwasher, 2 washing machines,
-  // one gully DN 70: 16.8; K 0.5: 2.05 l/s. At h/d 0.7: DN 90 at 0.7 %, DN 100 at 0.5 %.
+  // one gully DN 70: 16.8; K 0.5: 2.05 l/s. Filled to 0.7 of its depth it is a case of the open set (pe-14-…).
   const house = (slope: string) =>
     europeanTower(
       [
@@ -62,17 +62,6 @@ describe('PE-14 two-family house, drain at the boundary', () => {
       { slope, more: 'floor-drain G from SF west 1 rise 1:50, trap DN 70\ndrain DN 70: G > SF' },
     );
   const domestic: Record<string, FixtureAnswer> = { 'name:F*': { detail: { domestic: true } } };
-
-  test.each([
-    ['1:143', 'DN 90', 2.07],
-    ['1:200', 'DN 100', 2.95],
-  ])('at %s 0.7 full: %s, which carries %f', (slope, size, carries) => {
-    const it = run(house(slope), { filling: 0.7 }, domestic);
-    expect(it.pipe('SF-OUT').load.most).toBeCloseTo(16.8, 9);
-    const drain = step(it, 'SF-OUT', 'EN-R30');
-    expect(Number(drain?.facts.flowLps)).toBeCloseTo(2.049, 3);
-    expect([drain?.asks?.label, drain?.facts.carriesLps]).toEqual([size, carries]);
-  });
 
   test('half full, as drains inside are, both slopes want more', () => {
     expect(step(run(house('1:143'), {}, domestic), 'SF-OUT', 'EN-R30')?.asks?.label).toBe('DN 100');

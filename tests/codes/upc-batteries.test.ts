@@ -129,7 +129,7 @@ sewer OUT`,
   );
 const tub = 'bathtub, trap 1 1/2 in';
 
-describe('W06 and PE-31 one private bathroom, horizontal wet vent: lavatory 1, tub 2, closet 3 (908.2)', () => {
+describe('W06 one private bathroom, horizontal wet vent: lavatory 1, tub 2, closet 3 (908.2)', () => {
   const done = run(bathroom([tub, closet]), 'private');
 
   test('2 in to 4 units, then 3 in; its dry vent 2 in, for the closet', () => {

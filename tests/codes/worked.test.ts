@@ -1,5 +1,6 @@
 import { createHash } from 'node:crypto';
-import { readdirSync } from 'node:fs';
+import { readdirSync, readFileSync } from 'node:fs';
+import { resolve } from 'node:path';
 import { describe, expect, test } from 'vitest';
 import { readModel } from '../../src/ifc/open.ts';
 import { modelOf } from '../support/model-of.ts';
@@ -23,6 +24,8 @@ test('what the set holds, counted by hand', () => {
   const kinds = names.map((name) => workedCase(name).kind);
   const count = (kind: string) => kinds.filter((one) => one === kind).length;
   expect([count('judgement'), count('battery'), count('published')]).toEqual([38, 13, 35]);
+  const readme = readFileSync(resolve(import.meta.dirname, '../../README.md'), 'utf8');
+  expect(readme).toContain(`an open set of ${names.length} worked vent pipings`);
   expect(new Set(names.map((name) => workedCase(name).title)).size).toBe(names.length);
 });
 

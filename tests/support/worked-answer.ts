@@ -60,7 +60,10 @@ const hundredth = (value: number): number => Math.round(value * 100) / 100;
 /** Each fact that the answer names, in its order. */
 function foundPipe(asked: WorkedPipe, run: SketchRun): WorkedPipe {
   const pipe = run.pipe(asked.pipe);
-  const flow = pipe.trail.find(({ facts }) => typeof facts.flowLps === 'number')?.facts.flowLps;
+  const litres = (name: string): number | undefined => {
+    const told = pipe.trail.find(({ facts }) => typeof facts[name] === 'number')?.facts[name];
+    return typeof told === 'number' ? hundredth(told) : undefined;
+  };
   const facts: { readonly [key in keyof WorkedPipe]-?: () => unknown } = {
     pipe: () => pipe.name,
     role: () => pipe.role,
@@ -71,7 +74,8 @@ function foundPipe(asked: WorkedPipe, run: SketchRun): WorkedPipe {
     ventLoad: () => pipe.ventLoad && rangeOf(pipe.ventLoad),
     developedLength: () => pipe.developedLength && hundredth(pipe.developedLength),
     size: () => run.size(asked.pipe),
-    flow: () => (typeof flow === 'number' ? hundredth(flow) : undefined),
+    flow: () => litres('flowLps'),
+    wastewater: () => litres('wastewaterLps'),
     asks: () =>
       Object.fromEntries(
         Object.keys(asked.asks ?? {}).map((clause) => {

@@ -60,6 +60,8 @@ export interface WorkedPipe {
   readonly size?: string;
   /** l/s that the code reckons with, to a hundredth. */
   readonly flow?: number;
+  /** l/s of wastewater by the code's root, before the largest appliance is held against it. */
+  readonly wastewater?: number;
   /** Size that one demand asks, by its clause: `none` where no size holds. */
   readonly asks?: Readonly<Record<string, string>>;
 }
