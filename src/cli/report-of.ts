@@ -1,5 +1,8 @@
 import { extname } from 'node:path';
 import { bcf } from '../deliver/bcf.ts';
+import { quickPlan } from '../deliver/quick-plan.ts';
+import { reportHtml } from '../deliver/report-html.ts';
+import { reportSource } from '../deliver/report-source.ts';
 import { InputError } from '../findings/input-error.ts';
 import { fileOrigin } from '../ifc/file-origin.ts';
 import { jsonText } from '../schedule/json-text.ts';
@@ -12,6 +15,7 @@ type Report = (run: ModelRun<unknown>) => Iterable<Uint8Array>;
 const reports: Readonly<Record<string, Report>> = {
   '.bcf': ({ result, model, files }) => [bcf(result, model, files.map(fileOrigin))],
   '.csv': ({ outcome }) => [bytes(takeOffCsv(outcome))],
+  '.html': ({ outcome, result }) => [bytes(reportHtml(reportSource(outcome, result, quickPlan(outcome))))],
   '.json': ({ result }) => [bytes([...jsonText({ ...result })].join(''))],
 };
 

@@ -23,11 +23,10 @@ export interface OfflineHtml extends PageBundle {
  */
 export function offlineHtml({ title, noScript, js, css, data, allow = [] }: OfflineHtml): string {
   if (/<\/script/i.test(js) || /<\/style/i.test(css)) throw new Error('the page bundle would close its own tag');
-  const hash = (text: string): string => `'sha256-${base64(sha256(text))}'`;
   const policy = [
     "default-src 'none'",
-    `script-src ${hash(js)}`,
-    `style-src ${hash(css)}`,
+    `script-src ${hashSource(js)}`,
+    `style-src ${hashSource(css)}`,
     'img-src data: blob:',
     ...allow,
     "base-uri 'none'",
@@ -53,6 +52,9 @@ export function offlineHtml({ title, noScript, js, css, data, allow = [] }: Offl
 </html>
 `;
 }
+
+/** What lets this very text run, or style, and no other. */
+export const hashSource = (text: string): string => `'sha256-${base64(sha256(text))}'`;
 
 /** The only words from outside that stand beside the packed data are in the title. */
 const escaped = (text: string): string =>

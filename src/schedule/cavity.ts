@@ -172,9 +172,18 @@ function pipeShapes(wall: WeighWall, middle: number, colour: string): SvgShape[]
     ...(bored === null ? [] : levelPipe(bored.outside * 1000, middle, quiet, true)),
     circle(depth, { fill: '#ffffff', 'stroke-width': 1, 'stroke-dasharray': '4 2' }),
     circle(outside, { fill: '#f2f2f2', 'stroke-width': 2 }),
-    label(cx),
+    // A small pipe has its size beside it.
+    outside * 1000 * scale >= leastForLabel
+      ? label(cx)
+      : words(
+          { x: round(cx + depth * 500 * scale + 5), y: round(middle + 3.5), 'font-size': 10, fill: colour },
+          size.label,
+        ),
   ];
 }
+
+/** Units of the drawing that a size needs to stand inside its circle. */
+const leastForLabel = 36;
 
 /** What a level pipe takes out of the studs. */
 function studHoles(holeMm: number, middle: number): SvgShape[] {
@@ -242,8 +251,15 @@ function captionText(wall: WeighWall): string {
   const hole =
     bored === null
       ? ''
-      : `; level ${bored.size.label}: hole ${decimal(bored.hole * 1000, 1)} mm, ${unbroken(bored.stud.other ?? 'no stud')}${bored.stud.loadbearing === bored.stud.other ? '' : `, loadbearing ${unbroken(bored.stud.loadbearing ?? 'none')}`}`;
+      : `; level ${bored.size.label}: a hole of ${decimal(bored.hole * 1000, 1)} mm, which ${boredStuds(bored)}`;
   return `${thing} ${where}: ${spare}${smallest}${hole}.`;
+}
+
+/** `studs of 38 × 140 take, loadbearing ones of 38 × 184`. */
+function boredStuds({ stud: { other, loadbearing } }: NonNullable<WeighWall['bored']>): string {
+  if (other === null) return 'no usual stud takes';
+  const most = loadbearing === null ? ', no loadbearing one' : `, loadbearing ones of ${unbroken(loadbearing)}`;
+  return `studs of ${unbroken(other)} take${loadbearing === other ? '' : most}`;
 }
 
 const columns = 58;

@@ -28,7 +28,11 @@ export function checkText(result: Result, remarks: readonly TextLine[] = []): Te
 }
 
 /** Errors, warnings and verdicts in two lines, and what the sizes rest on. */
-export function sumsText({ pipes, findings, code }: Result): TextLine[] {
+export const sumsText = (result: Result): TextLine[] =>
+  sums(result).flatMap(({ text, lead, tone }) => paragraph(text, lead, tone));
+
+/** The same as sentences, each by itself. */
+export function sums({ pipes, findings, code }: Result): { text: string; lead: string; tone: Tone }[] {
   const count = (severity: string): number => findings.filter((finding) => finding.severity === severity).length;
   const verdicts = { undersized: 0, agrees: 0, oversized: 0, unknown: 0 };
   for (const { verdict } of pipes) verdicts[verdict]++;
@@ -36,33 +40,29 @@ export function sumsText({ pipes, findings, code }: Result): TextLine[] {
   const unsure = tally(pipes.flatMap(({ reason, verdict }) => (verdict === 'unknown' && reason ? [reason] : [])));
   const provisional = pipes.filter((pipe) => pipe.provisional).length;
   const memory = pipes.filter(({ trail }) => trail.some(({ governs, trust }) => governs && trust === 'memory')).length;
-  const tone: Tone = errors > 0 ? 'error' : 'good';
+  const line = (text: string, tone: Tone, lead = ''): ReturnType<typeof sums>[number] => ({ text, lead, tone });
   return [
-    ...paragraph(
+    line(
       `${counted(errors, 'error')}, ${counted(count('warning'), 'warning')}, ${counted(count('note'), 'note')}. ` +
         `Of ${counted(pipes.length, 'pipe')} ${verdicts.undersized} undersized, ${verdicts.agrees} as required, ` +
         `${verdicts.oversized} oversized, ${verdicts.unknown} unknown.`,
-      '',
-      tone,
+      errors > 0 ? 'error' : 'good',
     ),
     ...unsure
       .slice(0, mostReasons)
-      .flatMap(([reason, times]) => paragraph(`${times} unknown: ${shownText(reason)}`, '  ', 'warning')),
+      .map(([reason, times]) => line(`${times} unknown: ${shownText(reason)}`, 'warning', '  ')),
     ...(provisional === 0
       ? []
-      : paragraph(
-          `${counted(provisional, 'size')} provisional: a figure of the code could not be read.`,
-          '',
-          'warning',
-        )),
+      : [line(`${counted(provisional, 'size')} provisional: a figure of the code could not be read.`, 'warning')]),
     ...(memory === 0
       ? []
-      : paragraph(
-          `${memory} of ${counted(pipes.length, 'size')} rest on figures not yet checked against print ` +
-            `(drainwright codes ${code.id}).`,
-          '',
-          'quiet',
-        )),
+      : [
+          line(
+            `${memory} of ${counted(pipes.length, 'size')} rest on figures not yet checked against print ` +
+              `(drainwright codes ${code.id}).`,
+            'quiet',
+          ),
+        ]),
   ];
 }
 

@@ -1,7 +1,7 @@
 import { elementNames } from './element-names.ts';
-import { groupedChanges } from './grouped-changes.ts';
-import type { MendChange, MendResult } from './mend.ts';
+import type { MendResult } from './mend.ts';
 import { decimal } from './number-text.ts';
+import { type PlanStepText, planSteps } from './plan-steps.ts';
 import type { Result } from './result.ts';
 import { shownText, unbroken } from './shown-text.ts';
 import { blank, heading, paragraph, type TextLine } from './text-line.ts';
@@ -19,11 +19,11 @@ export function mendText(plan: MendResult, result: Result): TextLine[] {
       : `${counted(changes.length, 'change')}, ${decimal(cost, 1)} points`;
   return [
     ...heading(`${head}; ${what}.`),
-    ...groupedChanges(changes).flatMap((group, place) => changeText(group, place + 1, names.short)),
+    ...planSteps(changes, names.short).flatMap((step, place) => stepText(step, place + 1)),
     blank,
-    ...proofText(plan),
+    ...paragraph(proofSentence(plan), '', after.errors === 0 ? 'good' : 'error'),
     ...paragraph(search.sentence, '', search.exact ? 'plain' : 'warning'),
-    ...paragraph(weightsText(plan), '', 'quiet'),
+    ...paragraph(weightsSentence(plan), '', 'quiet'),
     ...after.findings.flatMap(({ sentence }) => paragraph(shownText(sentence), '  - ', 'error')),
     ...caution(plan),
   ];
@@ -33,64 +33,24 @@ const caution = ({ caution: words }: MendResult): TextLine[] => paragraph(shownT
 
 const mostNamed = 8;
 
-function changeText(group: readonly MendChange[], place: number, nameOf: (globalId: string) => string): TextLine[] {
-  const first = group[0]!;
-  const cost = group.reduce((sum, one) => sum + one.cost, 0);
-  const named = group.flatMap(({ about, kind }) => (kind === 'size' ? about : [])).map((id) => unbroken(nameOf(id)));
-  const more = named.length - mostNamed;
-  const lead = `${place}. `.padStart(6);
-  const points = `${decimal(cost, 1)} points`;
-  if (first.kind === 'size') {
-    const what = group.length === 1 ? named[0]! : counted(group.length, 'pipe');
-    return [
-      ...paragraph(`${what} from ${first.from} to ${first.to} (${points})`, lead),
-      ...paragraph(shownText(first.why), '      ', 'quiet'),
-      ...(group.length === 1
-        ? []
-        : paragraph(named.slice(0, mostNamed).join(', ') + (more > 0 ? ` and ${more} more` : ''), '      ', 'quiet')),
-    ];
-  }
+function stepText({ title, why, cost, pipes }: PlanStepText, place: number): TextLine[] {
+  const named = pipes.slice(0, mostNamed).map(unbroken).join(', ');
+  const more = pipes.length - mostNamed;
   return [
-    ...paragraph(`${titleOf(first, nameOf)} (${points})`, lead),
-    ...paragraph(shownText(first.why), '      ', 'quiet'),
+    ...paragraph(`${title} (${decimal(cost, 1)} points)`, `${place}. `.padStart(6)),
+    ...paragraph(shownText(why), '      ', 'quiet'),
+    ...(pipes.length === 0 ? [] : paragraph(named + (more > 0 ? ` and ${more} more` : ''), '      ', 'quiet')),
   ];
 }
 
-function titleOf(change: MendChange, nameOf: (globalId: string) => string): string {
-  const { kind, about, from, to } = change;
-  const at = about[0] === undefined ? '' : nameOf(about[0]);
-  switch (kind) {
-    case 'vent':
-      return `New ${to}, from ${at}`;
-    case 'moved-vent':
-      return `${at} moved: ${to}, from ${about[1] === undefined ? 'its new place' : nameOf(about[1])}`;
-    case 'extended-vent':
-      return `${at} goes on: ${to}`;
-    case 'reading':
-      return `The row of ${counted(about.length, 'fixture')} from ${at} on is read as ${to} instead of ${from}`;
-    case 'slope':
-      return `${about.map(nameOf).slice(0, mostNamed).join(', ')}${from === null ? '' : `, now ${from},`} laid to ${to}`;
-    case 'trap':
-      return `${at} set ${to}, now ${from}`;
-    case 'cleanout':
-      return `New ${to} at ${at}`;
-    case 'size':
-      return `${at} from ${from} to ${to}`;
-  }
-}
-
-function proofText({ before, after, search }: MendResult): TextLine[] {
-  const rest =
-    after.errors === 0
-      ? 'The changed building was run through all stages: no error is left.'
-      : `The changed building was run through all stages: ${after.errors} of ${counted(before.errors, 'error')} ${after.errors === 1 ? 'is' : 'are'} left (${tally(
-          after.findings.map(({ code }) => plainWords(code)),
-        )
-          .map(([code, count]) => `${count} ${code}`)
-          .join(
-            ', ',
-          )})${search.exact ? `; no change that the program knows settles ${after.errors === 1 ? 'it' : 'them'}` : ''}.`;
-  return paragraph(rest, '', after.errors === 0 ? 'good' : 'error');
+/** What the run of all stages on the changed building says. */
+export function proofSentence({ before, after, search }: MendResult): string {
+  if (after.errors === 0) return 'The changed building was run through all stages: no error is left.';
+  const kinds = tally(after.findings.map(({ code }) => plainWords(code))).map(([code, count]) => `${count} ${code}`);
+  const one = after.errors === 1;
+  const unknown = search.exact ? `; no change that the program knows settles ${one ? 'it' : 'them'}` : '';
+  const left = `${after.errors} of ${counted(before.errors, 'error')} ${one ? 'is' : 'are'} left (${kinds.join(', ')})`;
+  return `The changed building was run through all stages: ${left}${unknown}.`;
 }
 
 const weightNames: Readonly<Record<keyof MendResult['weights'], string>> = {
@@ -106,7 +66,7 @@ const weightNames: Readonly<Record<keyof MendResult['weights'], string>> = {
 };
 
 /** Points by the weights, which only compare plans with each other. */
-function weightsText({ weights }: MendResult): string {
+export function weightsSentence({ weights }: MendResult): string {
   const each = (Object.keys(weightNames) as (keyof MendResult['weights'])[]).map(
     (name) => `${weightNames[name]} ${decimal(weights[name], 2)}`,
   );

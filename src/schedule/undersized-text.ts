@@ -40,7 +40,7 @@ const governingOf = ({ trail }: ResultPipe): TrailStep | undefined => trail.find
 
 /** The undersized pipes grouped by cause: modelled size, required size, load, clause, and which pipes they are. */
 export function undersizedText(result: Result): TextLine[] {
-  const groups = alikeTogether(undersizedGroups(result));
+  const groups = undersizedCauses(result);
   if (groups.length === 0) return [];
   const names = elementNames(result);
   const pipes = groups.reduce((sum, group) => sum + group.pipes.length, 0);
@@ -57,7 +57,8 @@ export function undersizedText(result: Result): TextLine[] {
 }
 
 /** Single pipes that fall short alike, by the same row and load, are one line and not a page of them. Most pipes first. */
-function alikeTogether(groups: readonly UndersizedGroup[]): UndersizedGroup[] {
+export function undersizedCauses(result: Result): UndersizedGroup[] {
+  const groups = undersizedGroups(result);
   const merged = new Map<string, UndersizedGroup>();
   for (const group of groups) {
     const { pipes, root, governing, battery, cause } = group;
@@ -103,7 +104,7 @@ function groupText(
 }
 
 /** The rule, the load and length that chose the row, and where it is printed. */
-function reasonText(pipe: ResultPipe, unit: string, names: ElementNames): string {
+export function reasonText(pipe: ResultPipe, unit: string, names: ElementNames): string {
   const { load, ventLoad, developedLength, provisional } = pipe;
   const step = governingOf(pipe);
   const upstream = step?.facts.upstream;

@@ -104,7 +104,12 @@ const reasons = (counts: Readonly<Record<string, number>>): string =>
     .map(([reason, count]) => `${count} ${shownText(reason)}`)
     .join(', ');
 
-function systemText({ pipes, fixtures, load, sewerEnd }: ResultSystem, unit: string, names: ElementNames): string {
+/** `10 fixtures, 40 pipes, 20 fixture units; to the sewer at CB-SEWER #506 (the model names it)`. */
+export function systemText(
+  { pipes, fixtures, load, sewerEnd }: ResultSystem,
+  unit: string,
+  names: ElementNames,
+): string {
   const where = sewerEnd.pipe === null ? 'its only joint' : names.of(sewerEnd.pipe);
   return `${counted(fixtures, 'fixture')}, ${counted(pipes, 'pipe')}, ${loadText(load, unit)}; to the sewer at ${where} (${sewerEnds[sewerEnd.how] ?? shownText(sewerEnd.how)})`;
 }

@@ -4,6 +4,7 @@ import { type ModelOptions, modelArgument, modelOptions } from '../options.ts';
 
 interface MendOptions extends ModelOptions {
   readonly out?: string;
+  readonly page?: string;
   readonly weights?: string;
   readonly runs?: string;
 }
@@ -20,28 +21,35 @@ export function addMend(program: Command): void {
       '-o, --out <file>',
       'a copy with sizes and proposals as property sets, of several models a folder; nothing that is drawn moves',
     )
+    .option('--page <file>', 'the offline page, with the building before and after')
     .option('--weights <file>', 'JSON file with what changes cost, to compare plans by; printed with the plan')
     .option('--runs <count>', 'how long to search: runs of all stages at most')
     .action(async (models: readonly string[], options: MendOptions) => {
       const { readText } = await import('../read-input.ts');
       const { runModel } = await import('../run-model.ts');
       const { printJson } = await import('../print-result.ts');
+      const { outputPlace } = await import('../output-place.ts');
+      const { pageOf } = await import('../page-of.ts');
       const { printLines } = await import('../terminal.ts');
+      const { writeNew } = await import('../write-new.ts');
       const { planCopies, writeCopies } = await import('../sized-copies.ts');
       const { mendedIfc } = await import('../sized-ifc.ts');
       const { mendResult } = await import('../../schedule/mend-result.ts');
       const { mendText } = await import('../../schedule/mend-text.ts');
       const { mend, usualRuns } = await import('../../study/mend/mend.ts');
       const { readWeights, standardWeights } = await import('../../study/mend/weights.ts');
-      const { out, weights: file } = options;
+      const { out, page, weights: file } = options;
       const weights = file === undefined ? standardWeights : readWeights(await readText(file), file);
       const runs = options.runs === undefined ? usualRuns : runsOf(options.runs);
-      const run = await runModel(models, options, (inputs) =>
-        out === undefined ? null : planCopies(models, inputs, { out }),
-      );
-      const plan = mendResult(mend(run.outcome, weights, runs), run.result);
-      const { place } = run;
-      if (place !== null) await writeCopies({ ...run, place }, (file, path) => mendedIfc(run, plan, file, path));
+      const run = await runModel(models, options, async (inputs) => ({
+        copies: out === undefined ? null : await planCopies(models, inputs, { out }),
+        page: page === undefined ? null : await outputPlace(page, inputs, false),
+      }));
+      const found = mend(run.outcome, weights, runs);
+      const plan = mendResult(found, run.result);
+      const { copies, page: pagePlace } = run.place;
+      if (copies !== null) await writeCopies({ ...run, place: copies }, (one, path) => mendedIfc(run, plan, one, path));
+      if (pagePlace !== null && page !== undefined) await writeNew(pagePlace, [pageOf(run, found)], page);
       if (options.json === true) await printJson({ ...plan });
       else await printLines(mendText(plan, run.result));
     });

@@ -8,9 +8,9 @@ interface ReportOptions extends ModelOptions {
 export function addReport(program: Command): void {
   const command = program
     .command('report')
-    .summary('by the ending of the file: .bcf the issues, .csv the take-off, .json the result')
+    .summary('by the ending of the file: .bcf the issues, .csv the take-off, .html to read and print, .json the result')
     .description(
-      'Writes a report of a model. The ending of the file decides: .bcf is the issues to settle with the designer (BCF 2.1, one topic a cause), .csv is the take-off (pipes, fittings, cleanouts), .json the whole result.',
+      'Writes a report of a model. The ending of the file decides: .bcf is the issues to settle with the designer (BCF 2.1, one topic a cause), .csv is the take-off (pipes, fittings, cleanouts), .html is everything for reading and printing (undersized pipes and why, batteries side by side, the plan that mends it, schedules), .json the whole result.',
     )
     .argument('<model...>', modelArgument)
     .requiredOption('-o, --out <file>', 'the report to write')

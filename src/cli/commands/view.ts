@@ -19,7 +19,7 @@ export function addView(program: Command): void {
       const { runModel } = await import('../run-model.ts');
       const { printResult } = await import('../print-result.ts');
       const { pageOf } = await import('../page-of.ts');
-      const { quickPlan } = await import('../../deliver/page-data-of.ts');
+      const { quickPlan } = await import('../../deliver/quick-plan.ts');
       const { writeNew } = await import('../write-new.ts');
       const { viewText } = await import('../../schedule/size-text.ts');
       const run = await runModel(models, options, (inputs) => outputPlace(options.out, inputs, false));
