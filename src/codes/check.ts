@@ -65,7 +65,9 @@ export interface CheckedStack {
   readonly yokeTops: readonly { readonly elements: readonly ElementId[]; readonly overFloor: number | null }[];
   /** Vents that tie each storey it serves to its vent stack, lowest storey first; null: the storey has none. */
   readonly ties: readonly ({ readonly vent: NominalSize; readonly branch: NominalSize } | null)[];
+  /** The highest and the lowest of the storeys it serves. */
   readonly topStorey: number;
+  readonly lowestStorey: number;
   readonly offsets: readonly {
     readonly elements: readonly ElementId[];
     readonly length: number;

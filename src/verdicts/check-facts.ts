@@ -124,6 +124,7 @@ export function checkFacts({ model, identities, network, paths, code }: Checkabl
       cleanout: cleanoutAbove(stack),
       ties: ties.get(stack.id) ?? stack.served.map(() => null),
       topStorey: stack.served.at(-1) ?? 0,
+      lowestStorey: stack.served[0] ?? 0,
       offsets: stack.offsets.map(({ pipes: level, length }, offset) => {
         const first = stack.pipes.indexOf(level[0]!);
         const above = stack.pipes.slice(0, first);

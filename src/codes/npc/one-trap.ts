@@ -1,7 +1,7 @@
 import type { SharedTrapRule } from '../plumbing-code.ts';
 
-const sinks: ReadonlySet<string> = new Set(['sink', 'kitchen-sink']);
-const throughSink: ReadonlySet<string> = new Set(['dishwasher', 'garbage-grinder']);
+const sinks: ReadonlySet<string | null> = new Set(['sink', 'kitchen-sink']);
+const throughSink: ReadonlySet<string | null> = new Set(['dishwasher', 'garbage-grinder']);
 /** Rows of Table 2.4.9.3. that read "single, or two singles on one trap". */
 const pairs: ReadonlySet<string> = new Set(['lavatory-domestic', 'laundry-tray-1-2']);
 
@@ -11,9 +11,9 @@ const pairs: ReadonlySet<string> = new Set(['lavatory-domestic', 'laundry-tray-1
  */
 export const countOnOneTrap: SharedTrapRule = (fixtures) => {
   const domestic = fixtures.map(({ domestic: known }) => known !== false);
-  const isSink = fixtures.map(({ kind }, at) => domestic[at]! && kind !== null && sinks.has(kind));
+  const isSink = fixtures.map(({ kind }, at) => domestic[at]! && sinks.has(kind));
   const hasSink = isSink.includes(true);
-  const counts = fixtures.map(({ kind }, at) => !(hasSink && domestic[at]! && kind !== null && throughSink.has(kind)));
+  const counts = fixtures.map(({ kind }, at) => !(hasSink && domestic[at]! && throughSink.has(kind)));
   const left = fixtures.flatMap((_, at) => (counts[at] ? [at] : []));
   const [first, second] = left;
   if (first === undefined || second === undefined || left.length !== 2) return counts;

@@ -57,14 +57,16 @@ function yokeVents({ family }: Tools): Check {
   return {
     id: 'NPC-R71',
     run: ({ stacks }) =>
-      stacks.flatMap(({ elements, storeysServed, ties, topStorey, yokes, yokeTops, offsets, joins }): Finding[] => {
+      stacks.flatMap((stack): Finding[] => {
+        const { elements, storeysServed, ties, topStorey, lowestStorey, yokes, yokeTops, offsets, joins } = stack;
         const found = yokeTops
           .filter((top) => top.overFloor !== null && top.overFloor < overFloor.value - coordinateMetres)
           .map((top) =>
             finding('yoke-vent-misplaced', top.elements, { heightM: top.overFloor, leastM: overFloor.value }, clause),
           );
         if (storeysServed <= storeys.value || isTied(ties)) return found;
-        for (let bottom = topStorey - section.value + 1; bottom > 0; bottom -= section.value) {
+        // Below the lowest storey of all stands the foot of the vent stack.
+        for (let bottom = topStorey - section.value + 1; bottom > lowestStorey; bottom -= section.value) {
           // Its lower end stands below the branch of the storey, which may be under that floor.
           if (yokes.some((storey) => storey >= bottom - 1 && storey <= bottom)) continue;
           found.push(finding('yoke-vent-missing', elements, { storey: bottom, storeys: storeysServed }, clause));

@@ -137,7 +137,7 @@ function ventStacks({ family }: Tools): Check {
   return {
     id: 'UPC-R62',
     run: ({ stacks }) =>
-      stacks.flatMap(({ elements, height, ventStack, yokes, topStorey }): Finding[] => {
+      stacks.flatMap(({ elements, height, ventStack, yokes, topStorey, lowestStorey }): Finding[] => {
         if (height < storeys.value) return [];
         const found: Finding[] = [];
         if (ventStack === null || ventStack === 'above a branch') {
@@ -148,7 +148,7 @@ function ventStacks({ family }: Tools): Check {
               : finding('vent-stack-misplaced', elements, { ...facts, at: ventStack }, rule('UPC-R62').clause),
           );
         }
-        for (let floor = topStorey - each.value + 1; floor > 0; floor -= each.value) {
+        for (let floor = topStorey - each.value + 1; floor > lowestStorey; floor -= each.value) {
           // Its lower end stands below the branch of the floor, which may be under that floor.
           if (yokes.some((storey) => storey === floor || storey === floor - 1)) continue;
           found.push(
