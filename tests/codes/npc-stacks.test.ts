@@ -167,20 +167,42 @@ describe('R71 yoke vents: more than eleven storeys, one for each five counted fr
     expect(missing(high(12, { yokes: [8] }))).toEqual(['yoke-vent-missing']);
     // At the top of a section it is no vent for the section's foot.
     expect(missing(high(12, { yokes: [8, 6] }))).toEqual(['yoke-vent-missing']);
+    // A storey further down it stands in the next section.
+    expect(missing(high(12, { yokes: [7, 3] }))).toEqual(['yoke-vent-missing']);
+  });
+
+  test('sixteen: 16-12, 11-7, 6-2, 1: the third yoke at storey 2; fifteen: 15-11, 10-6, 5-1 ends at the foot', () => {
+    expect(missing(high(16, { yokes: [12, 7, 2] }))).toEqual([]);
+    expect(missing(high(16, { yokes: [12, 7] }))).toEqual(['yoke-vent-missing']);
+    expect(missing(high(15, { yokes: [11, 6] }))).toEqual([]);
+  });
+
+  test('the foot is that of the lowest storey served: fifteen storeys above three without fixtures', () => {
+    const above = (yokes: readonly number[]) =>
+      missing(runSketch(tower([[], [], [], ...storeys(15)], { ventStack: true, yokes })));
+    expect([above([14, 9]), above([14])]).toEqual([[], ['yoke-vent-missing']]);
+  });
+
+  test('drains that run over the floor: the yoke vent below such a drain stands in the storey itself', () => {
+    const lower = tower(storeys(12), { ventStack: true, yokes: [8, 3] }).replace(
+      /^(storey "Storey \d+" at) (\d+)$/gm,
+      (_, head: string, floor: string) => `${head} ${(Number(floor) - 0.8).toFixed(1)}`,
+    );
+    expect(missing(runSketch(lower))).toEqual([]);
   });
 });
 
 describe('R71 storeys that are tied to the vent stack already need no yoke vents', () => {
   /** Twelve storeys; each fixture's vent runs into the vent stack at `W<storey>`. */
-  const tied = (size: string, ...fixtures: string[]) => {
-    const all = Array.from({ length: 12 }, (_, at) => at + 1);
+  const tied = (size: string, fixture: string, apart = 0) => {
+    const all = Array.from({ length: 12 }, (_, at) => at + 1).filter((storey) => storey !== apart);
     const text = all.reduce(
       (drawn, n) =>
         drawn.replace(
           new RegExp(`vent 1 1/2 in: V${n}\\.1 > VT${n}\\.1 .*\\n.*terminal VT${n}\\.1`),
           `vent ${size}: V${n}.1 > U${n} (to ${floorOf(n) + 1}) > W${n}`,
         ),
-      tower(storeys(12, fixtures), { ventStack: true }),
+      tower(storeys(12, [fixture]), { ventStack: true }),
     );
     const on = all.map((n) => `W${n} (to ${floorOf(n) + 1.1})`).join(' > ');
     return missing(runSketch(text.replace('VB (north 0.5 rise 1:50) > VU', `VB (north 0.5 rise 1:50) > ${on} > VU`)));
@@ -189,6 +211,8 @@ describe('R71 storeys that are tied to the vent stack already need no yoke vents
   test('by vents of 2 in where the branch is larger; smaller ones do not', () => {
     expect(tied('2 in', closet)).toEqual([]); // 3 in branches
     expect(tied('1 1/2 in', closet)).toEqual(['yoke-vent-missing', 'yoke-vent-missing']);
+    // Every storey is to be tied: one that has its own way to the sky is not.
+    expect(tied('2 in', closet, 12)).toEqual(['yoke-vent-missing', 'yoke-vent-missing']);
   });
 });
 
