@@ -9,12 +9,15 @@ import { modelledSizes } from './loads/modelled-sizes.ts';
 import type { Answers } from './model/answers.ts';
 import { identify } from './model/identify.ts';
 import type { Identity } from './model/identity.ts';
+import { fixtureKinds } from './model/identity-words.ts';
 import type { Model } from './model/model.ts';
 import type { NamesTable } from './model/names-table.ts';
+import { usualDetail } from './model/usual-detail.ts';
 import { buildNetwork } from './network/build-network.ts';
 import { buildingOutline, cutAtOutline } from './network/building-outline.ts';
 import type { Network } from './network/network.ts';
 import { findPaths } from './paths/find-paths.ts';
+import type { FixtureId, Paths } from './paths/paths.ts';
 import { assignRoles } from './roles/assign-roles.ts';
 import { sizePipes } from './sizes/size-pipes.ts';
 import type { Outcome, Run } from './verdicts/outcome.ts';
@@ -55,9 +58,13 @@ export function runNetwork({ findings, ...piping }: Piping): Outcome {
   const shared: Finding[] = [...findings, ...found.findings.filter((one) => !isToldAsGap(one, findings))];
   const runs: Run[] = [];
   const scenarios = scenariosFor(facts);
-  const runAs = (scenario: Scenario): { run: Run; findings: readonly Finding[] } => {
-    const loads = loadPipes(facts, scenario);
-    const roles = assignRoles({ model, identities, network, paths, loads: loads.value, code, answers, outline });
+  const runAs = (
+    scenario: Scenario,
+    known: readonly Identity[] = identities,
+  ): { run: Run; findings: readonly Finding[] } => {
+    const loads = loadPipes({ ...facts, identities: known }, scenario);
+    const given = { model, identities: known, network, paths, loads: loads.value, code, answers, outline };
+    const roles = assignRoles(given);
     const sizes = sizePipes(roles.value.uses, code);
     return {
       run: { loads: loads.value, roles: roles.value, sizes },
@@ -69,6 +76,15 @@ export function runNetwork({ findings, ...piping }: Piping): Outcome {
     runs.push(run);
     if (scenario === scenarios.at(-1)) shared.push(...found);
   }
+  if (runs.some((run) => readingsHang(run, paths.fixtures, identities)))
+    for (const known of everyKind(identities)) {
+      const isOpen = fixtureLoads({ ...facts, identities: known }, 'heaviest').some(({ settled }) => !settled);
+      runs.unshift(
+        ...(isOpen ? (['lightest', 'heaviest'] as const) : (['as-modelled'] as const)).map(
+          (one) => runAs(one, known).run,
+        ),
+      );
+    }
   // Where the fixtures leave nothing open, the way drains enter a stack still may.
   if (scenarios.length === 1 && runs.some(leavesEntriesOpen)) runs.unshift(runAs('lightest').run);
   return reachVerdicts({
@@ -91,6 +107,32 @@ const isToldAsGap = ({ code, about }: Finding, findings: readonly Finding[]): bo
 
 const leavesEntriesOpen = ({ roles }: Run): boolean =>
   roles.uses.some(({ stack }) => stack?.entries?.some(({ known }) => !known) === true);
+
+const isUnidentified = ({ part, kind }: Identity): boolean =>
+  kind === null && (part === 'fixture' || part === 'unknown-terminal');
+
+/** The identities with every unidentified fixture as one kind, for each kind there is. */
+const everyKind = (identities: readonly Identity[]): Identity[][] =>
+  fixtureKinds.map((kind) =>
+    identities.map((one) =>
+      isUnidentified(one) ? { ...one, kind, detail: { ...usualDetail(kind), domestic: one.detail.domestic } } : one,
+    ),
+  );
+
+/**
+ * What a fixture is decides whether its row may share a vent: where one that nobody knows stands in a row, or goes without
+ * a vent, its size alone does not tell the extremes, and every kind is tried.
+ */
+const readingsHang = ({ roles }: Run, fixtures: Paths['fixtures'], identities: readonly Identity[]): boolean => {
+  const isOpen = (fixture: FixtureId): boolean => isUnidentified(identities[fixtures[fixture]!.element]!);
+  return (
+    roles.batteries.some(({ facts }) => [...facts.traps, ...facts.guests].some(({ fixture }) => isOpen(fixture))) ||
+    fixtures.some(
+      ({ id }) =>
+        isOpen(id) && roles.venting[id]!.battery === null && ['free', 'unvented'].includes(roles.venting[id]!.how),
+    )
+  );
+};
 
 /** One run where nothing is open; the lightest and the heaviest where a detail is; a closet too where a kind is. */
 function scenariosFor(facts: FixtureFacts): Scenario[] {

@@ -27,4 +27,13 @@ export interface FixtureRows {
    * is set, or is not all that is open. Absent where the code counts no use.
    */
   openUses?(kind: FixtureKind, detail: FixtureDetail): readonly string[] | null;
+  /** What would tell apart the rows that a fixture of this kind may be; empty where one row is left. */
+  openDetails(kind: FixtureKind, detail: FixtureDetail): readonly OpenDetail[];
+}
+
+/** A detail of a fixture that decides what it counts, and what may be said of it. */
+export interface OpenDetail {
+  /** A field of the fixture's detail, or the setting `use`. */
+  readonly field: string;
+  readonly choices: readonly (string | number | boolean)[];
 }

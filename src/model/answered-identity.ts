@@ -1,8 +1,9 @@
 import { fullId, keyMatches } from './answer-keys.ts';
 import type { Answers, FixtureAnswer } from './answers.ts';
-import { type FixtureDetail, type FixtureKind, type Identity, noDetail } from './identity.ts';
-import { fixtureKinds } from './identity-words.ts';
+import { type FixtureDetail, type Identity, noDetail } from './identity.ts';
+import { answerableParts, fixtureKinds } from './identity-words.ts';
 import type { Element } from './model.ts';
+import { usualDetail } from './usual-detail.ts';
 
 /** The user's answers on what things are, ready to be asked for each element. */
 export interface AnswerBook {
@@ -40,13 +41,18 @@ export function answeredIdentity(book: AnswerBook, element: Element, read: Ident
     return { ...read, part: 'cleanout', kind: null, detail: noDetail, evidence, weak: false };
   const answer = book.fixture(element);
   if (answer === null || (read.part === 'fitting' && answer.kind === undefined)) return null;
+  const part = answerableParts.find((one) => one === answer.kind);
+  if (part !== undefined) return { ...read, part, kind: null, detail: noDetail, evidence, weak: false };
   const kind = fixtureKinds.find((one) => one === answer.kind) ?? read.kind;
   if (answer.kind === undefined && read.part !== 'fixture') return null;
   return {
     ...read,
     part: 'fixture',
     kind,
-    detail: answeredDetail(kind === read.kind ? read.detail : startOf(kind, read.detail), answer),
+    detail: answeredDetail(
+      kind === read.kind ? read.detail : { ...usualDetail(kind), domestic: read.detail.domestic },
+      answer,
+    ),
     medium: 'sanitary',
     evidence: answer.kind === undefined ? `${read.evidence}, ${evidence}` : evidence,
     weak: answer.kind === undefined ? read.weak : false,
@@ -55,19 +61,11 @@ export function answeredIdentity(book: AnswerBook, element: Element, read: Ident
 
 const evidence = 'answers file';
 
-/** Of a fixture that turns out to be another kind, only its use is kept. */
-const startOf = (kind: FixtureKind | null, { domestic }: FixtureDetail): FixtureDetail => ({
-  ...noDetail,
-  domestic,
-  heads: kind === 'shower' ? 1 : null,
-  emergency: kind === 'floor-drain' ? false : null,
-});
-
 function answeredDetail(read: FixtureDetail, { detail = {} }: FixtureAnswer): FixtureDetail {
   const { flush, style, heads, emergency, domestic, flushLitres, flow, intermittent, frequency } = detail;
   return {
     ...read,
-    ...(flush === 'tank' || flush === 'valve' ? { flush } : {}),
+    ...(flush === 'tank' || flush === 'valve' || flush === 'flushometer-tank' ? { flush } : {}),
     ...(typeof style === 'string' ? { style } : {}),
     ...(typeof heads === 'number' ? { heads } : {}),
     ...(typeof emergency === 'boolean' ? { emergency } : {}),

@@ -40,7 +40,7 @@ export type FixtureKind =
   | 'other-fixture';
 
 export interface FixtureDetail {
-  readonly flush: 'tank' | 'valve' | null;
+  readonly flush: 'tank' | 'valve' | 'flushometer-tank' | null;
   /**
    * Urinal: `stall`, `wall-washout`, `wall-other`, `pedestal`, `wall` (either of the wall ones), `washout` (stall or wall),
    * `trough`, `waterless`. Lavatory: `multiple`, `dental`, `barber`. Other kinds: as the names table says. Not of fixtures:

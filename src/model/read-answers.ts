@@ -2,7 +2,7 @@ import { InputError } from '../findings/input-error.ts';
 import { show } from '../tables/printed-value.ts';
 import { at, fieldsOf, jsonOf, numberAt, objectAt, oneOf, textAt, textsAt } from '../tables/read-json.ts';
 import type { Answers, FixtureAnswer, PipeAnswer, Settings } from './answers.ts';
-import type { FixtureKind } from './identity.ts';
+import { answerableParts, fixtureKinds } from './identity-words.ts';
 
 export const answersFormat = 'drainwright-answers';
 const readings = [
@@ -66,50 +66,48 @@ function settingAt(value: unknown, place: string): Settings[string] {
 
 function fixtureAt(value: unknown, place: string): FixtureAnswer {
   const fields = fieldsOf(value, place, [], ['kind', 'detail', 'trapSize', 'space']);
-  const detail = fields.detail === undefined ? undefined : objectAt(fields.detail, at(place, 'detail'));
+  const { detail } = fields;
   return {
-    ...(fields.kind === undefined ? {} : { kind: oneOf(fields.kind, at(place, 'kind'), fixtureKinds) }),
-    ...(detail === undefined
+    ...(fields.kind === undefined
       ? {}
-      : {
-          detail: Object.fromEntries(
-            Object.entries(detail).map(([key, fact]) => [key, factAt(fact, at(at(place, 'detail'), key))]),
-          ),
-        }),
+      : { kind: oneOf(fields.kind, at(place, 'kind'), [...fixtureKinds, ...answerableParts]) }),
+    ...(detail === undefined ? {} : { detail: detailAt(detail, at(place, 'detail')) }),
     ...optionalText(fields, 'trapSize', place),
     ...optionalText(fields, 'space', place),
   };
 }
 
-/** Written as a record so that a kind that is added cannot be forgotten here. */
-const kinds: Readonly<Record<FixtureKind, true>> = {
-  'water-closet': true,
-  urinal: true,
-  lavatory: true,
-  sink: true,
-  'kitchen-sink': true,
-  'mop-sink': true,
-  'laundry-tray': true,
-  shower: true,
-  bathtub: true,
-  bidet: true,
-  'floor-drain': true,
-  'clothes-washer': true,
-  dishwasher: true,
-  'drinking-fountain': true,
-  'garbage-grinder': true,
-  'wash-fountain': true,
-  'macerating-toilet': true,
-  'clinical-sink': true,
-  'dental-unit': true,
-  'other-fixture': true,
+/** Details that an answer may give, each with what it must be. */
+const details: Readonly<Record<string, (value: unknown, place: string) => string | number | boolean>> = {
+  flush: (value, place) => oneOf(value, place, ['tank', 'valve', 'flushometer-tank']),
+  style: textAt,
+  heads: (value, place) => numberFrom(value, place, 1),
+  emergency: yesNoAt,
+  domestic: yesNoAt,
+  flushLitres: (value, place) => numberFrom(value, place, 0),
+  flow: (value, place) => numberFrom(value, place, 0),
+  intermittent: yesNoAt,
+  frequency: (value, place) => numberFrom(value, place, 0),
 };
-/** Every kind that an answer may give a fixture. */
-export const fixtureKinds: readonly string[] = Object.keys(kinds);
 
-function factAt(value: unknown, place: string): string | number | boolean {
-  if (typeof value === 'boolean' || typeof value === 'string') return value;
-  return numberAt(value, place);
+function detailAt(value: unknown, place: string): NonNullable<FixtureAnswer['detail']> {
+  const fields = fieldsOf(value, place, [], Object.keys(details));
+  return Object.fromEntries(
+    Object.entries(fields).flatMap(([key, fact]) =>
+      fact === undefined ? [] : [[key, details[key]!(fact, at(place, key))]],
+    ),
+  );
+}
+
+function yesNoAt(value: unknown, place: string): boolean {
+  if (typeof value === 'boolean') return value;
+  throw new InputError(place, `is ${show(value)}, expected true or false`);
+}
+
+function numberFrom(value: unknown, place: string, least: number): number {
+  const number = numberAt(value, place);
+  if (number >= least) return number;
+  throw new InputError(place, `is ${number}, expected ${least} or more`);
 }
 
 function pipeAt(value: unknown, place: string): PipeAnswer {

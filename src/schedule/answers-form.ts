@@ -11,11 +11,13 @@ export const answersFormText = (questions: readonly Question[]): string =>
  */
 export function answersForm(questions: readonly Question[]): Readonly<Record<string, unknown>> {
   const parts: Record<string, Record<string, unknown>> = { settings: {}, fixtures: {}, pipes: {}, batteries: {} };
-  for (const { answer } of questions) {
-    const entries = parts[answer.part];
-    if (entries === undefined || answer.key === null || doubled.test(answer.key)) continue;
-    if (answer.field === null) entries[answer.key] = null;
-    else entries[answer.key] = withNull(entries[answer.key], answer.field.split('.'));
+  for (const { about, answer } of questions) {
+    const { part, key, field } = answer;
+    const entries = parts[part];
+    if (entries === undefined || key === null) continue;
+    // A room is answered for each fixture by itself.
+    for (const one of field === 'space' ? about : [key])
+      entries[one] = field === null ? null : withNull(entries[one], field.split('.'));
   }
   return {
     format: answersFormat,
@@ -30,9 +32,6 @@ export function answersForm(questions: readonly Question[]): Readonly<Record<str
     cleanouts: [],
   };
 }
-
-/** The result's own id of an element whose GlobalId the model doubles or lacks: no key of an answers file meets it. */
-const doubled = /#\d+\.\d+$/;
 
 function withNull(entry: unknown, [field = '', ...deeper]: readonly string[]): Readonly<Record<string, unknown>> {
   const fields: Readonly<Record<string, unknown>> = typeof entry === 'object' && entry !== null ? { ...entry } : {};

@@ -1,8 +1,7 @@
-import { fixtureKinds } from '../model/read-answers.ts';
 import { elementNames } from './element-names.ts';
-import { openByUse } from './open-by-use.ts';
+import { fixtureQuestions } from './fixture-questions.ts';
 import { hangsOnEntries } from './ranges-text.ts';
-import type { Result, ResultBattery, ResultFixture } from './result.ts';
+import type { Result, ResultBattery } from './result.ts';
 import { counted, listed, plainWords } from './trade-words.ts';
 
 /** Something the model does not say and a person can: what to ask, and where the answer goes in an answers file. */
@@ -20,7 +19,7 @@ export interface Question {
 export interface AnswerPlace {
   readonly part: 'settings' | 'sewerEnds' | 'fixtures' | 'pipes' | 'batteries';
   readonly key: string | null;
-  /** `kind`; a dot leads further in: `detail.flush`. */
+  /** `kind`; a dot leads further in: `detail.flush`. `space` is answered for everything the question is about. */
   readonly field: string | null;
 }
 
@@ -29,11 +28,11 @@ export function questionsOf(result: Result): Question[] {
   const questions = [
     ...sewerQuestions(result),
     ...fixtureQuestions(result),
-    ...useQuestion(result),
     ...batteryQuestions(result),
     ...slopeQuestion(result),
     ...entryQuestion(result),
     ...pumpQuestion(result),
+    ...gapQuestion(result),
     ...sizeQuestions(result),
   ];
   return questions.sort(
@@ -61,69 +60,6 @@ function sewerQuestions(result: Result): Question[] {
         } as const,
       ];
     });
-}
-
-function fixtureQuestions(result: Result): Question[] {
-  const names = elementNames(result);
-  const byUse = openByUse(result);
-  const open = result.fixtures.filter(
-    ({ kind, load, globalId }) => (kind === null || load.least !== load.most) && !byUse.has(globalId),
-  );
-  return open.map((fixture) => {
-    const name = names.of(fixture.globalId);
-    const weight = openPipes(result, fixture);
-    const key = fixture.globalId;
-    const about = [fixture.globalId];
-    if (fixture.kind === null) {
-      const ask = `What is ${name}? Nothing in the model tells its kind.`;
-      return { about, ask, weight, choices: fixtureKinds, answer: { part: 'fixtures', key, field: 'kind' } } as const;
-    }
-    const { field, choices } = openDetail(fixture);
-    const ask = `Which ${plainWords(fixture.kind)} is ${name}? The code counts them from ${fixture.load.least} to ${fixture.load.most} ${result.code.unit}.`;
-    return { about, ask, weight, choices, answer: { part: 'fixtures', key, field: `detail.${field}` } } as const;
-  });
-}
-
-/** One question for all of them: the use of the building. */
-function useQuestion(result: Result): Question[] {
-  const { findings, fixtures, pipes } = result;
-  const open = openByUse(result);
-  if (open.size === 0) return [];
-  const said = findings.find(({ code }) => code === 'use-unknown')?.facts.uses;
-  const uses = typeof said === 'string' ? said.split(', ') : [];
-  const hang = new Set(
-    fixtures.filter(({ globalId }) => open.has(globalId)).flatMap((one) => openPipesOf(pipes, one.globalId)),
-  );
-  return [
-    {
-      about: [...open],
-      ask: `What is the use of the building: ${uses.join(', ')}? ${counted(open.size, 'fixture')} ${open.size === 1 ? 'counts' : 'count'} by it.`,
-      weight: hang.size,
-      choices: uses,
-      answer: { part: 'settings', key: 'use', field: null },
-    },
-  ];
-}
-
-/** The detail that tells the rows of a kind apart. */
-function openDetail({ kind, detail }: ResultFixture): { readonly field: string; readonly choices: readonly string[] } {
-  if (kind === 'water-closet' && detail.flush === null) return { field: 'flush', choices: ['tank', 'valve'] };
-  if (kind === 'urinal' && detail.style === null)
-    return { field: 'style', choices: ['stall', 'wall-washout', 'wall-other', 'pedestal'] };
-  if (kind === 'urinal' && detail.flush === null) return { field: 'flush', choices: ['tank', 'valve'] };
-  if (kind === 'shower' && detail.heads === null) return { field: 'heads', choices: [] };
-  return { field: 'style', choices: [] };
-}
-
-/** Pipes downstream of a fixture, and those that carry its air, whose size is open. */
-const openPipes = ({ pipes }: Result, { globalId }: ResultFixture): number => openPipesOf(pipes, globalId).length;
-
-function openPipesOf(pipes: Result['pipes'], globalId: string): Result['pipes'] {
-  return pipes.filter(
-    ({ required, verdict, servesWater, servesAir }) =>
-      (verdict === 'unknown' || required?.least?.label !== required?.most?.label) &&
-      (servesWater?.includes(globalId) === true || servesAir?.includes(globalId) === true),
-  );
 }
 
 function batteryQuestions({ batteries }: Result): Question[] {
@@ -190,6 +126,25 @@ function pumpQuestion({ pipes }: Result): Question[] {
       weight: vents.length,
       choices: [],
       answer: { part: 'settings', key: 'sumpPumpFlow', field: null },
+    },
+  ];
+}
+
+/** Ends that stay open before something: one question, however many gaps. */
+function gapQuestion({ findings, pipes, settings }: Result): Question[] {
+  if (settings.maxGap !== undefined) return [];
+  const gaps = findings.filter(({ code, facts }) => code === 'open-end' && typeof facts.gapM === 'number');
+  const about = [...new Set(gaps.flatMap((gap) => gap.about))];
+  const known = new Set(pipes.map(({ globalId }) => globalId));
+  const widest = Math.max(...gaps.map(({ facts }) => Number(facts.gapM)));
+  if (gaps.length === 0) return [];
+  return [
+    {
+      about,
+      ask: `Does the model leave gaps of up to ${Math.ceil(widest * 1000 - 0.01)} mm where piping is joined (${counted(gaps.length, 'open end')})? If so, say the widest, in metres and more than 0.05.`,
+      weight: about.filter((id) => known.has(id)).length,
+      choices: [],
+      answer: { part: 'settings', key: 'maxGap', field: null },
     },
   ];
 }

@@ -5,9 +5,9 @@ import type { Result, ResultFixture, ResultPipe } from './result.ts';
 import { blank, heading, paragraph, type TextLine } from './text-line.ts';
 import { counted, listed, plainWords } from './trade-words.ts';
 
-/** Fixtures that may be read more than one way, and put in another load by it. In the order of the result. */
+/** Fixtures that may be read more than one way, and ask for something else by it. In the order of the result. */
 export const openFixtures = ({ fixtures }: Result): readonly ResultFixture[] =>
-  fixtures.filter(({ kind, load }) => kind === null || load.least !== load.most);
+  fixtures.filter(({ open }) => open !== undefined);
 
 /** The lightest and the heaviest reading ask for different sizes. */
 export const isRange = ({ required }: ResultPipe): boolean =>

@@ -1,8 +1,25 @@
+import type { PlumbingCode } from '../codes/plumbing-code.ts';
+import type { FixtureDetail, FixtureKind } from '../model/identity.ts';
+import { answerableParts, fixtureKinds } from '../model/identity-words.ts';
 import type { FixtureId } from '../paths/paths.ts';
 import { unitsOf } from '../units/quantity.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
-import type { ResultFixture } from './result.ts';
+import type { OpenFact, ResultFixture } from './result.ts';
 import { type ResultIndex, roundMetres } from './result-index.ts';
+
+/** What a person may say of a fixture whose load is open; what no row of the code tells apart has at least a flow. */
+function openFacts({ fixtures }: PlumbingCode, kind: FixtureKind | null, detail: FixtureDetail): OpenFact[] {
+  if (kind === null) return [{ field: 'kind', choices: [...fixtureKinds, ...answerableParts] }];
+  const uses = fixtures.openUses?.(kind, detail) ?? null;
+  if (uses !== null) return [{ field: 'settings.use', choices: uses }];
+  const facts = fixtures.openDetails(kind, detail).map(
+    ({ field, choices }): OpenFact => ({
+      field: `detail.${field}`,
+      choices: choices.some((choice) => typeof choice === 'number') ? [] : choices.map(String),
+    }),
+  );
+  return facts.length > 0 ? facts : [{ field: 'detail.flow', choices: [] }];
+}
 
 /** Fixtures with an outlet, by file and STEP id. */
 export function resultFixtures(outcome: Outcome, index: ResultIndex): ResultFixture[] {
@@ -21,7 +38,7 @@ function fixture(
   const trap = shown.roles.air[id]!;
   const venting = shown.roles.venting[id]!;
   const arm = shown.roles.arms[id] ?? null;
-  const { row, trap: trapSize } = shown.loads.fixtures[id]!;
+  const { row, trap: trapSize, settled } = shown.loads.fixtures[id]!;
   const { least, most } = fixtureLoads[id]!;
   const limit = arm === null ? null : code.armLimit(trapSize, row);
   return {
@@ -30,6 +47,7 @@ function fixture(
     name: element.name,
     kind,
     detail,
+    ...(settled ? {} : { open: openFacts(code, kind, detail) }),
     row: kind === null ? null : row.id,
     evidence,
     load: { least: unitsOf(least), most: unitsOf(most) },

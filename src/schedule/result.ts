@@ -104,7 +104,13 @@ export interface ResultFixture {
     readonly heads: number | null;
     readonly emergency: boolean | null;
     readonly domestic: boolean | null;
+    readonly flushLitres?: number;
+    readonly flow?: number;
+    readonly intermittent?: boolean;
+    readonly frequency?: number;
   };
+  /** What would settle its load, and what may be answered; no choices: any number. Absent where nothing is open. */
+  readonly open?: readonly OpenFact[];
   /** Row of the code's fixture table; null when unidentified. */
   readonly row: string | null;
   readonly evidence: string;
@@ -122,6 +128,12 @@ export interface ResultFixture {
     readonly turn: number | null;
     readonly limit: number | null;
   } | null;
+}
+
+/** A place in the answers file: `kind`, `detail.flush` … of the fixture, or `settings.use` for all. */
+export interface OpenFact {
+  readonly field: string;
+  readonly choices: readonly string[];
 }
 
 export type Verdict = 'undersized' | 'agrees' | 'oversized' | 'unknown';

@@ -1,13 +1,7 @@
 import type { Vec3 } from '../geometry/vector.ts';
-import {
-  type FixtureDetail,
-  type FixtureKind,
-  type Identity,
-  type Medium,
-  noDetail,
-  type Part,
-} from '../model/identity.ts';
+import type { FixtureDetail, FixtureKind, Identity, Medium, Part } from '../model/identity.ts';
 import type { Element, ElementId, StoreyId } from '../model/model.ts';
+import { usualDetail } from '../model/usual-detail.ts';
 
 /** What a study says of a pipe or a fixture that it adds. */
 export interface Added {
@@ -63,7 +57,7 @@ export const addedIdentity = (
 ): Identity => ({
   part,
   kind,
-  detail: { ...noDetail, ...detail },
+  detail: { ...usualDetail(kind), ...detail },
   medium,
   evidence,
   weak: false,

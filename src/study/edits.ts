@@ -3,8 +3,9 @@ import type { Reading } from '../codes/reading.ts';
 import { planDistance } from '../geometry/vector.ts';
 import { fullId } from '../model/answer-keys.ts';
 import type { FixtureAnswer, PipeAnswer } from '../model/answers.ts';
-import { type FixtureDetail, type FixtureKind, noDetail } from '../model/identity.ts';
+import type { FixtureDetail, FixtureKind } from '../model/identity.ts';
 import type { ElementId } from '../model/model.ts';
+import { usualDetail } from '../model/usual-detail.ts';
 import { buildNetwork } from '../network/build-network.ts';
 import { cutAtOutline } from '../network/building-outline.ts';
 import { jointAt, moveElement, type Place } from '../network/change.ts';
@@ -45,7 +46,7 @@ export function withKind(
           ...identity,
           part: 'fixture' as const,
           kind,
-          detail: { ...noDetail, ...detail },
+          detail: { ...usualDetail(kind), ...detail },
           evidence: 'what if',
           weak: false,
         }

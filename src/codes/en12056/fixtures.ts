@@ -11,6 +11,7 @@ import type { Cell } from '../../tables/table.ts';
 import type { Load } from '../../units/quantity.ts';
 import type { FixtureRow, FixtureRows } from '../fixture-row.ts';
 import type { SharedTrapRule } from '../plumbing-code.ts';
+import { openDetails } from '../rules/open-details.ts';
 import type { Tools } from '../tools.ts';
 import { isGerman, systemOf } from './system.ts';
 
@@ -71,16 +72,15 @@ export function fixtureRows(tools: Tools): FixtureRows {
     return found.length > 0 ? found : all;
   };
   const cache = new Map<string, readonly FixtureRow[]>();
-  return {
-    rowsFor: (kind, detail) => {
-      const key = JSON.stringify([kind, detail]);
-      const known = cache.get(key);
-      if (known !== undefined) return known;
-      const rows = [...rowsOf(kind, detail)].sort((a, b) => units(a) - units(b));
-      cache.set(key, rows);
-      return rows;
-    },
+  const rowsFor: FixtureRows['rowsFor'] = (kind, detail) => {
+    const key = JSON.stringify([kind, detail]);
+    const known = cache.get(key);
+    if (known !== undefined) return known;
+    const rows = [...rowsOf(kind, detail)].sort((a, b) => units(a) - units(b));
+    cache.set(key, rows);
+    return rows;
   };
+  return { rowsFor, openDetails: openDetails(family.kinds, rowsFor) };
 }
 
 /** Discharge units that Germany adds, read only where nothing but their row fits. */

@@ -10,6 +10,7 @@ import {
 import type { Load } from '../../units/quantity.ts';
 import type { FixtureRow, FixtureRows } from '../fixture-row.ts';
 import type { Tools } from '../tools.ts';
+import { openDetails } from './open-details.ts';
 
 /** Which columns of the fixture table hold, and the facts that go with them: one entry for each use that is open. */
 export interface RowColumns extends FixtureColumns {
@@ -49,20 +50,19 @@ export function fixtureRows(
   };
   const unlisted = unlistedFixture(family);
   const cache = new Map<string, readonly FixtureRow[]>();
-  return {
-    rowsFor: (kind, detail) => {
-      const key = [kind, ...Object.entries(detail).flat()].join('|');
-      const known = cache.get(key);
-      if (known !== undefined) return known;
-      const rows = columns.flatMap(({ facts, ...named }) =>
-        kind === null
-          ? allFixtureRows(family.kinds, fixtures, named, facts).map((row) => bind(row, row.kind))
-          : fixtureRowsFor(family.kinds, fixtures, { kind, ...detail, ...facts }, named).map((row) => bind(row, kind)),
-      );
-      if (rows.length === 0 && unlisted !== null) rows.push(bind(unlisted, kind));
-      const sorted = rows.sort((a, b) => a.loadAt(a.leastTrap).load - b.loadAt(b.leastTrap).load);
-      cache.set(key, sorted);
-      return sorted;
-    },
+  const rowsFor: FixtureRows['rowsFor'] = (kind, detail) => {
+    const key = [kind, ...Object.entries(detail).flat()].join('|');
+    const known = cache.get(key);
+    if (known !== undefined) return known;
+    const rows = columns.flatMap(({ facts, ...named }) =>
+      kind === null
+        ? allFixtureRows(family.kinds, fixtures, named, facts).map((row) => bind(row, row.kind))
+        : fixtureRowsFor(family.kinds, fixtures, { kind, ...detail, ...facts }, named).map((row) => bind(row, kind)),
+    );
+    if (rows.length === 0 && unlisted !== null) rows.push(bind(unlisted, kind));
+    const sorted = rows.sort((a, b) => a.loadAt(a.leastTrap).load - b.loadAt(b.leastTrap).load);
+    cache.set(key, sorted);
+    return sorted;
   };
+  return { rowsFor, openDetails: openDetails(family.kinds, rowsFor) };
 }

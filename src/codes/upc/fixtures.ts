@@ -1,4 +1,4 @@
-import type { FixtureKind } from '../../model/identity.ts';
+import type { FixtureDetail, FixtureKind } from '../../model/identity.ts';
 import { rowsHolding } from '../../tables/find-row.ts';
 import type { Load } from '../../units/quantity.ts';
 import type { FixtureRows } from '../fixture-row.ts';
@@ -23,9 +23,11 @@ export function fixtures(tools: Tools): FixtureRows {
     });
   const uses = usesOf(tools);
   const [own, emergency] = [rowsOf(uses), rowsOf(['public'])];
+  const bookFor = (kind: FixtureKind | null, detail: FixtureDetail): FixtureRows =>
+    kind === 'floor-drain' && detail.emergency === true ? emergency : own;
   return {
-    rowsFor: (kind, detail) =>
-      (kind === 'floor-drain' && detail.emergency === true ? emergency : own).rowsFor(kind, detail),
+    rowsFor: (kind, detail) => bookFor(kind, detail).rowsFor(kind, detail),
+    openDetails: (kind, detail) => bookFor(kind, detail).openDetails(kind, detail),
     openUses: openUses(uses.length === 1 ? uses[0]! : null, [...uses, 'assembly'], (use) => rowsOf([use])),
   };
 }

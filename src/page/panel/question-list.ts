@@ -28,11 +28,7 @@ function questionItem(desk: Desk, { about, ask, weight, choices, answer }: Quest
   const pipe = building.pipeAt.get(first);
   const fixture = building.fixtureAt.get(first);
   const name = nameOfId(building, words, first);
-  const text = modelText(
-    words.questions.ask === null
-      ? shown(ask)
-      : words.questions.ask(answer.part, answer.part === 'settings' ? answer.key : answer.field, name),
-  );
+  const text = modelText(words.questions.ask === null ? shown(ask) : words.questions.ask(answer, name));
   const open =
     pipe !== undefined
       ? () =>

@@ -1,3 +1,4 @@
+import type { Question } from '../../schedule/questions.ts';
 import type { Words } from './words.ts';
 
 // Names of vents and pipes: National Plumbing Code of Canada, French edition, as Quebec's Construction Code reprints it
@@ -245,26 +246,29 @@ export const frenchFactWords: Words['factWords'] = {
   provisional: 'provisoire',
 };
 
-/** A question of the result by where its answer goes: a field of the thing, or the name of a setting. */
-export function frenchAsk(part: string, field: string | null, name: string): string {
+/** A question of the result by where its answer goes. */
+export function frenchAsk({ part, key, field }: Question['answer'], name: string): string {
   switch (part) {
     case 'sewerEnds':
       return `L’eau sort-elle par ${name} ? Sinon, nommez le tuyau qui va à l’égout.`;
     case 'fixtures':
-      return field === 'kind'
-        ? `Qu’est-ce que ${name} ? Rien dans la maquette ne le dit.`
+      if (field === 'kind') return `Qu’est-ce que ${name} ? Rien dans la maquette ne le dit.`;
+      return field === 'space'
+        ? 'Lesquels de ces appareils se trouvent dans une même salle de bains ? Donnez à chacun le nom de sa pièce.'
         : `De quelle sorte est ${name} ?`;
     case 'batteries':
       return `Comment le groupe de ${name} est-il conçu ? Plus d’une lecture tient.`;
     case 'settings':
-      if (field === 'use')
+      if (key === 'use')
         return 'Les appareils sont-ils à usage privé, public ou de rassemblement ? Leur charge en dépend.';
-      if (field === 'entries')
+      if (key === 'entries')
         return 'Comment les branchements entrent-ils dans les colonnes : à 45° ou moins, ou avec un rayon au moins égal à leur diamètre intérieur, ou à l’équerre ?';
-      if (field === 'sumpPumpFlow')
+      if (key === 'sumpPumpFlow')
         return 'Quel est le débit de la pompe de la fosse, en litres par seconde ? Sa ventilation en dépend.';
-      return 'À quelle pente pose-t-on les évacuations dessinées de niveau ? En mètres par mètre, par exemple 0,02.';
+      return 'La maquette laisse-t-elle des jeux entre des tuyaux raccordés ? Si oui, donnez le plus large, en mètres, de plus de 0,05.';
     default:
-      return `Quel est le diamètre de ${name} ?`;
+      return field === 'slope'
+        ? 'À quelle pente pose-t-on les évacuations dessinées de niveau ? En mètres par mètre, par exemple 0,02.'
+        : `Quel est le diamètre de ${name} ?`;
   }
 }

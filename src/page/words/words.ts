@@ -1,3 +1,4 @@
+import type { Question } from '../../schedule/questions.ts';
 import type { ColourBy, Language } from '../state.ts';
 import type { PanelWords } from './panel-words.ts';
 
@@ -52,7 +53,7 @@ export interface Words extends PanelWords {
     readonly choices: string;
     readonly where: string;
     /** The question in this language; null where its own sentence is in it already. */
-    readonly ask: ((part: string, field: string | null, name: string) => string) | null;
+    readonly ask: ((place: Question['answer'], name: string) => string) | null;
   };
   readonly pipesBy: {
     readonly label: string;
