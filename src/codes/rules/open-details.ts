@@ -32,7 +32,7 @@ export function openDetails({ entries }: FixtureKinds, rowsFor: RowsFor): Fixtur
 const isKnown = (fact: unknown): boolean => fact !== null && fact !== undefined;
 
 /** Rows as far as they differ in what they ask: nobody need tell apart what counts alike. */
-const signsOf = (rows: readonly FixtureRow[]): ReadonlySet<string> =>
+export const signsOf = (rows: readonly FixtureRow[]): ReadonlySet<string> =>
   new Set(
     rows.map(({ leastTrap, largestTrap, closet, siphonic, loadAt }) =>
       [leastTrap, largestTrap, closet, siphonic, loadAt(leastTrap).load, loadAt(largestTrap).load].join(),

@@ -1,4 +1,5 @@
 import type { FixtureRows } from '../fixture-row.ts';
+import { signsOf } from './open-details.ts';
 
 /** Uses that each settle the row of a fixture: where the setting is open and nothing but it. */
 export const openUses =
@@ -8,4 +9,4 @@ export const openUses =
     rowsOf: (use: string) => FixtureRows,
   ): NonNullable<FixtureRows['openUses']> =>
   (kind, detail) =>
-    set === null && uses.every((use) => rowsOf(use).rowsFor(kind, detail).length === 1) ? uses : null;
+    set === null && uses.every((use) => signsOf(rowsOf(use).rowsFor(kind, detail)).size === 1) ? uses : null;
