@@ -1,5 +1,5 @@
 import { answersFormat } from '../model/read-answers.ts';
-import type { Question } from './questions.ts';
+import type { Question } from './question.ts';
 
 /** The text of an answers file to fill in. */
 export const answersFormText = (questions: readonly Question[]): string =>

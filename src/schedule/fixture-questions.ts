@@ -1,6 +1,6 @@
 import { elementNames } from './element-names.ts';
 import { openByUse } from './open-by-use.ts';
-import type { Question } from './questions.ts';
+import type { Question } from './question.ts';
 import { openFixtures } from './ranges-text.ts';
 import type { OpenFact, Result, ResultFixture } from './result.ts';
 import { counted, plainWords } from './trade-words.ts';

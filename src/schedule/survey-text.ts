@@ -1,4 +1,4 @@
-import type { Question } from './questions.ts';
+import type { Question } from './question.ts';
 import type { Result } from './result.ts';
 import { shownText } from './shown-text.ts';
 import type { Survey, SurveySystem } from './survey.ts';

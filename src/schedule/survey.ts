@@ -1,7 +1,8 @@
 import type { Identity, Part } from '../model/identity.ts';
 import type { Element, Model } from '../model/model.ts';
 import { elementRows } from './element-rows.ts';
-import { type Question, questionsOf } from './questions.ts';
+import type { Question } from './question.ts';
+import { questionsOf } from './questions.ts';
 import type { Result, ResultElement, ResultFinding, ResultModel } from './result.ts';
 import type { TwinsResult } from './twins.ts';
 

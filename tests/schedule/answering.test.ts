@@ -2,7 +2,8 @@ import { describe, expect, test } from 'vitest';
 import type { Answers } from '../../src/model/answers.ts';
 import { readAnswers } from '../../src/model/read-answers.ts';
 import { answersFormText } from '../../src/schedule/answers-form.ts';
-import { type Question, questionsOf } from '../../src/schedule/questions.ts';
+import type { Question } from '../../src/schedule/question.ts';
+import { questionsOf } from '../../src/schedule/questions.ts';
 import type { Result, SizeLabel } from '../../src/schedule/result.ts';
 import { runSketch } from '../support/run-sketch.ts';
 

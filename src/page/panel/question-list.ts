@@ -1,4 +1,4 @@
-import type { Question } from '../../schedule/questions.ts';
+import type { Question } from '../../schedule/question.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
 import { fill } from './fill.ts';

@@ -1,4 +1,4 @@
-import type { Question } from '../../schedule/questions.ts';
+import type { Question } from '../../schedule/question.ts';
 import type { Words } from './words.ts';
 
 // Names of vents and pipes: National Plumbing Code of Canada, French edition, as Quebec's Construction Code reprints it

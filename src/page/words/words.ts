@@ -1,4 +1,4 @@
-import type { Question } from '../../schedule/questions.ts';
+import type { Question } from '../../schedule/question.ts';
 import type { ColourBy, Language } from '../state.ts';
 import type { PanelWords } from './panel-words.ts';
 
