@@ -23,7 +23,7 @@ test('what the set holds, counted by hand', () => {
   );
   const kinds = names.map((name) => workedCase(name).kind);
   const count = (kind: string) => kinds.filter((one) => one === kind).length;
-  expect([count('judgement'), count('battery'), count('published')]).toEqual([38, 13, 35]);
+  expect([count('judgement'), count('battery'), count('published')]).toEqual([40, 13, 35]);
   const readme = readFileSync(resolve(import.meta.dirname, '../../README.md'), 'utf8');
   expect(readme).toContain(`an open set of ${names.length} worked vent pipings`);
   expect(new Set(names.map((name) => workedCase(name).title)).size).toBe(names.length);
