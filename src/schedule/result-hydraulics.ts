@@ -1,5 +1,5 @@
-import { type DrainFlow, flowAtFill, flowInDrain } from '../hydraulics/drain-flow.ts';
-import { manning } from '../hydraulics/friction.ts';
+import { type DrainFlow, fillAtSpeed, flowAtFill, flowInDrain } from '../hydraulics/drain-flow.ts';
+import { colebrookWhite, manning } from '../hydraulics/friction.ts';
 import { fullStack, shareOfStack, stackCapacity, terminalLength, terminalSpeed } from '../hydraulics/stack-flow.ts';
 import type { PipeId } from '../network/network.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
@@ -8,8 +8,10 @@ import type { LevelHydraulics, ResultHydraulics, StackHydraulics } from './resul
 
 /** Water at this speed, m/s, carries solids along: 2 ft/s of American practice. */
 const selfCleansing = 0.6;
-/** Plastic in service and new cast iron (handbooks, from memory). */
-const roughness = 0.012;
+/** Plastic in service and new cast iron: n 0.012 (handbooks, from memory). */
+const byManning = { law: manning(0.012), name: 'Manning, n 0.012' };
+/** Roughness and viscosity of EN 12056-2, 6.6: 1 mm, water at about 10 degrees. */
+const byColebrookWhite = { law: colebrookWhite(0.001, 1.31e-6), name: 'Colebrook-White, roughness 1 mm' };
 
 /** What physics says of a drain at its largest required size; null for vents, and where size, bore or slope is not known. */
 export function resultHydraulics(outcome: Outcome, pipe: PipeId): ResultHydraulics | null {
@@ -38,7 +40,10 @@ function inLevelDrain(
   const { friction } = outcome.code;
   const bore = friction?.bore(size) ?? madeBore(outcome, pipe, size);
   if (bore === null) return null;
-  const law = friction?.law ?? manning(roughness);
+  const { law, name } = friction ?? byManning;
+  const other = friction === undefined ? byColebrookWhite : byManning;
+  const otherwise = flowAtFill(bore, slope, 0.5, other.law);
+  const cleansFrom = fillAtSpeed(bore, slope, selfCleansing, law);
   const told = ({ flow: litres, speed }: DrainFlow) => ({
     flow: rounded(litres),
     speed: rounded(speed),
@@ -48,9 +53,11 @@ function inLevelDrain(
   return {
     kind: 'level',
     bore,
-    law: friction?.name ?? `Manning, n ${roughness}`,
+    law: name,
     slope: Math.round(slope * 1e6) / 1e6,
     halfFull: told(flowAtFill(bore, slope, 0.5, law)),
+    otherLaw: { law: other.name, flow: rounded(otherwise.flow), speed: rounded(otherwise.speed) },
+    cleansFrom: cleansFrom === null ? null : rounded(cleansFrom),
     ...(flow === null ? {} : { atFlow: own === null ? null : { ...told(own), fill: rounded(own.fill) } }),
   };
 }

@@ -176,6 +176,10 @@ export interface LevelHydraulics {
   readonly law: string;
   readonly slope: number;
   readonly halfFull: { readonly flow: number; readonly speed: number; readonly cleansItself: boolean };
+  /** Half full by the other of the two laws, Manning's and Colebrook's and White's. */
+  readonly otherLaw: { readonly law: string; readonly flow: number; readonly speed: number };
+  /** Fill from which on it cleans itself; null: at none. */
+  readonly cleansFrom: number | null;
   /** At the flow that the code reckons with; null: it would run full. Absent where the code knows loads only. */
   readonly atFlow?: {
     readonly flow: number;

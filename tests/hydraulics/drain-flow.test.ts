@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
-import { flowAtFill, flowInDrain, fullestFlow } from '../../src/hydraulics/drain-flow.ts';
+import { fillAtSpeed, flowAtFill, flowInDrain, fullestFlow } from '../../src/hydraulics/drain-flow.ts';
 import { colebrookWhite, manning, manningSlope } from '../../src/hydraulics/friction.ts';
 import { partFull } from '../../src/hydraulics/part-full.ts';
 import { gallonPerMinute, inch } from '../../src/hydraulics/stack-flow.ts';
@@ -116,6 +116,23 @@ describe('HY-F06 slope for 2 ft/s half full', () => {
     ['HY-C24', 6, 0.012, 0.00417],
   ])('%s %i in, n %f', (_, size, n, slope) => {
     within(1e-3)(manningSlope(n, (size * inch) / 4, 2 * foot), slope);
+  });
+
+  test.each([
+    // By the radius of the part-full circle, depth by depth; Colebrook-White by iterating Darcy-Weisbach.
+    ['3 in at 1:48, Manning n 0.012', 0.0779, 1 / 48, manning(0.012), 0.243],
+    ['DN 100 at 1 %, Colebrook-White 1 mm', 0.096, 0.01, colebrookWhite(0.001, 1.31e-6), 0.374],
+    ['DN 100 at 0.5 %, 0.555 m/s at the most', 0.096, 0.005, colebrookWhite(0.001, 1.31e-6), null],
+  ])('fill from which on 0.6 m/s: %s', (_, bore, slope, law, fill) => {
+    const found = fillAtSpeed(bore, slope, 0.6, law);
+    if (fill === null) expect(found).toBeNull();
+    else expect(found).toBeCloseTo(fill, 3);
+  });
+
+  test('HY-F04 the greatest speed, 1.140 of full bore at 0.813: reached at that speed, not past it', () => {
+    const most = 1.14 * flowAtFill(0.1, 0.02, 1, manning(0.012)).speed;
+    expect(fillAtSpeed(0.1, 0.02, most * 0.999, manning(0.012))).toBeGreaterThan(0.75);
+    expect(fillAtSpeed(0.1, 0.02, most * 1.001, manning(0.012))).toBeNull();
   });
 
   test('HY-F04 half full runs as fast as full, and carries half', () => {

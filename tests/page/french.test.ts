@@ -4,6 +4,7 @@ import { english } from '../../src/page/words/english.ts';
 import { french } from '../../src/page/words/french.ts';
 import { frenchCondition } from '../../src/page/words/french-conditions.ts';
 import type { FrenchFacts } from '../../src/page/words/french-facts.ts';
+import { frenchPhysics } from '../../src/page/words/french-physics.ts';
 import { frenchSentences } from '../../src/page/words/french-sentences.ts';
 
 // A word of the other language in a sentence is a fault that no type can find; these are the commonest English ones.
@@ -86,4 +87,30 @@ test.each([
 
 test('both languages know the same kinds', () => {
   expect(Object.keys(french.kinds).sort()).toEqual(Object.keys(english.kinds).sort());
+});
+
+test('what physics says, in French: the figures of its English sentences, commas for points', () => {
+  const level = {
+    kind: 'level',
+    bore: 0.096,
+    law: 'Colebrook-White, roughness 1 mm',
+    slope: 0.01,
+    halfFull: { flow: 2.5, speed: 0.69, cleansItself: true },
+    otherLaw: { law: 'Manning, n 0.012', flow: 2.51, speed: 0.69 },
+    cleansFrom: 0.37,
+    atFlow: { flow: 2, fill: 0.44, speed: 0.65, cleansItself: true },
+  } as const;
+  const stack = { kind: 'stack', bore: 0.1016, flow: 9.07, speed: 3.83, terminalLength: 2.5, share: 0.2 } as const;
+  expect(frenchPhysics(french, level)).toEqual([
+    'À titre indicatif, sans effet sur le diamètre : à demi rempli, un diamètre intérieur de 96 mm à 1 % (1:100) débite 2,5 l/s à 0,69 m/s selon Colebrook-White (rugosité 1 mm), 2,51 l/s à 0,69 m/s selon Manning (n 0,012).',
+    'Il s’autocure, ce qui demande 0,6 m/s, dès qu’il est rempli à 37 %, soit 36 mm de hauteur.',
+    'À son débit de 2 l/s il est rempli à 44 %, soit 42 mm de hauteur, à 0,65 m/s : il s’autocure.',
+  ]);
+  const slow = { ...level, cleansFrom: null, atFlow: null };
+  const all = [...frenchPhysics(french, slow), ...frenchPhysics(french, stack)];
+  expect(all).toHaveLength(5);
+  for (const sentence of all) {
+    expect(sentence).toMatch(/\.$/);
+    expect(sentence).not.toMatch(englishWords);
+  }
 });

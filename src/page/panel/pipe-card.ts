@@ -10,6 +10,7 @@ import { findingsAbout } from './findings-about.ts';
 import { marginFacts } from './margin-facts.ts';
 import { batteryName, capital, pipeName, shown } from './names.ts';
 import { connectedRows, upstreamOf } from './neighbours.ts';
+import { physics } from './physics.ts';
 import { users } from './users.ts';
 
 /** A pipe's case, in the order of an argument: verdict, what it is, why that size, why not smaller, whose it is. */
@@ -26,6 +27,7 @@ export function pipeCard(desk: Desk, row: number): HTMLElement {
     argument(desk, pipe),
     users(desk, row),
     sections(desk, pipe),
+    physics(desk, pipe),
     findingsAbout(desk, pipe.globalId),
     facts(desk, row, pipe),
   );

@@ -57,6 +57,7 @@ export const englishPanel: PanelWords = {
     row: (row) => `row ${row}`,
     table: (table) => `Table ${table}`,
     noTrail: 'No rule of this code speaks of the size of this pipe.',
+    physics: 'Water in this pipe',
     water: (count) => `Whose water (${some(count, 'fixture', 'fixtures')})`,
     air: (count) => `Whose air (${some(count, 'trap', 'traps')})`,
     noWater: 'No fixture drains through it.',

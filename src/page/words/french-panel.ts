@@ -58,6 +58,7 @@ export const frenchPanel: PanelWords = {
     row: (row) => `ligne ${row}`,
     table: (table) => `tableau ${table}`,
     noTrail: 'Aucune règle de ce code ne vise le diamètre de ce tuyau.',
+    physics: 'L’eau dans ce tuyau',
     water: (count) => `L’eau de qui (${some(count, 'appareil', 'appareils')})`,
     air: (count) => `L’air de qui (${some(count, 'siphon', 'siphons')})`,
     noWater: 'Aucun appareil ne s’y vide.',

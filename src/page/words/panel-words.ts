@@ -42,6 +42,8 @@ export interface PanelWords {
     readonly row: (row: string) => string;
     readonly table: (table: string) => string;
     readonly noTrail: string;
+    /** Heading over what physics says beside the code's size. */
+    readonly physics: string;
     readonly water: (count: number) => string;
     readonly air: (count: number) => string;
     readonly noWater: string;
