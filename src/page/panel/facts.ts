@@ -10,10 +10,13 @@ export interface FactText {
   readonly value: string;
 }
 
-/** The numbers behind a demand, each with its own words, in the order of the trail: `load`, `14 FU`. */
+/** The numbers behind a demand, each with its own words, in the order of the trail: `load`, `14 FU`. What is null, false or empty says nothing. */
 export function factTexts(building: Building, words: Words, facts: Facts): FactText[] {
   return Object.entries(facts)
-    .filter(([, value]) => value !== null && value !== undefined && !(Array.isArray(value) && value.length === 0))
+    .filter(
+      ([, value]) =>
+        value !== null && value !== undefined && value !== false && !(Array.isArray(value) && value.length === 0),
+    )
     .map(([key, value]) => factText(building, words, key, value));
 }
 
@@ -29,7 +32,7 @@ function factText(building: Building, words: Words, key: string, value: unknown)
   const whole = Object.hasOwn(words.factWords, key) ? words.factWords[key] : undefined;
   const label = (names: readonly string[]): string =>
     whole ?? names.map((name) => named(words.factWords, name)).join(' ');
-  if (typeof value === 'boolean') return { label: label(parts), value: value ? words.yes : words.no };
+  if (value === true) return { label: label(parts), value: words.yes };
   if (typeof value !== 'number') return { label: label(parts), value: otherText(building, words, value) };
   const measured = measure(building, words, unit, value);
   if (measured === null) return { label: label(parts), value: decimal(words, value, 4) };
@@ -51,6 +54,8 @@ function measure(building: Building, words: Words, unit: string, value: number):
       return `${decimal(words, value * 100, 0)} %`;
     case 'slope':
       return slopeText(words, value);
+    case 'lps':
+      return `${decimal(words, value, 2)} l/s`;
     default:
       return null;
   }
