@@ -195,7 +195,7 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
   'no-sewer-end': (f) =>
     `${many(f, 'drains', 'drain')} into piping that has no end to leave by: no sewer end was found.`,
   'sewer-end-assumed': (f) =>
-    `The sewer end is taken at ${first(f)} (${plain(f.facts.how)}, of ${text(f, 'candidates')} open ends): say so in the answers file if it is another.`,
+    `The sewer end is taken at ${first(f)} (${plain(f.facts.how)}, of ${num(f, 'candidates') === 1 ? 'one open end' : `${text(f, 'candidates')} open ends`}): say so in the answers file if it is another.`,
   'wrong-system': (f) => `${first(f)} is filed under a system it does not belong to by its piping.`,
   'fit-in-wall': (f) => {
     const wall = has(f, 'wall') ? text(f, 'wall') : 'its wall';

@@ -8,8 +8,8 @@ import { isEmpty, understoodText } from './understood-text.ts';
 import { wallFitText } from './wall-fit-text.ts';
 
 /**
- * What a coordinator needs on one screen: what was understood, the undersized pipes by cause, the other errors,
- * warnings folded to counts, then the sums and how far to trust them. Model text comes out harmless.
+ * What a coordinator needs on one screen: what was understood, the undersized pipes by cause, the other errors
+ * and the warnings, notes folded to counts, then the sums and how far to trust them. Model text comes out harmless.
  * `remarks` are notes that are no findings.
  */
 export function checkText(result: Result, remarks: readonly TextLine[] = []): TextLine[] {
@@ -19,9 +19,9 @@ export function checkText(result: Result, remarks: readonly TextLine[] = []): Te
     ...otherErrors(result.findings),
     ...rangesText(result),
     ...wallFitText(result.findings),
+    ...otherWarnings(result.findings),
     ...(isEmpty(result) ? [] : [blank]),
-    ...foldedText(result.findings, 'warning', 'Warnings'),
-    ...foldedText(result.findings, 'note', 'Notes'),
+    ...foldedNotes(result.findings),
     ...remarks,
     ...(isEmpty(result) ? [] : [...sumsText(result), ...paragraph(shownText(result.caution), '', 'quiet')]),
   ];
@@ -68,27 +68,39 @@ export function sums({ pipes, findings, code }: Result): { text: string; lead: s
 
 const mostReasons = 4;
 const mostSentences = 3;
-const mostCodes = 12;
 
 function otherErrors(findings: readonly ResultFinding[]): TextLine[] {
-  const errors = findings.filter(({ severity, code }) => severity === 'error' && code !== 'undersized');
-  if (errors.length === 0) return [];
-  const codes = tally(errors.map(({ code }) => code));
+  const all = findings.filter(({ severity }) => severity === 'error');
+  const errors = all.filter(({ code }) => code !== 'undersized');
+  return listed(errors, errors.length < all.length ? 'Other errors' : 'Errors', 'error', 12);
+}
+
+/** Those of walls have a place of their own. */
+const otherWarnings = (findings: readonly ResultFinding[]): TextLine[] =>
+  listed(
+    findings.filter(({ severity, code }) => severity === 'warning' && code !== 'fit-in-wall'),
+    'Warnings',
+    'warning',
+    8,
+  );
+
+/** Sentences by kind, the most frequent kind first; many of one kind folded. */
+function listed(findings: readonly ResultFinding[], title: string, tone: Tone, mostCodes: number): TextLine[] {
+  if (findings.length === 0) return [];
+  const codes = tally(findings.map(({ code }) => code));
   return [
     blank,
-    ...heading(
-      `${errors.length < findings.filter(({ severity }) => severity === 'error').length ? 'Other errors' : 'Errors'}: ${errors.length}`,
-    ),
+    ...heading(`${title}: ${findings.length}`),
     ...codes.slice(0, mostCodes).flatMap(([code, count]) => {
-      const some = errors.filter((error) => error.code === code).slice(0, mostSentences);
+      const some = findings.filter((one) => one.code === code).slice(0, mostSentences);
       const more = count - some.length;
       return [
-        ...some.flatMap((error) => paragraph(sentenceText(error), '  - ', 'error')),
+        ...some.flatMap((one) => paragraph(sentenceText(one), '  - ', tone)),
         ...(more === 0 ? [] : paragraph(`and ${more} more ${plainWords(code)}`, '    ', 'quiet')),
       ];
     }),
     ...(codes.length > mostCodes
-      ? paragraph(`and ${codes.length - mostCodes} more kinds of error`, '  ', 'quiet')
+      ? paragraph(`and ${codes.length - mostCodes} more kinds of ${tone}`, '  ', 'quiet')
       : []),
   ];
 }
@@ -99,10 +111,9 @@ function sentenceText({ sentence, clause }: ResultFinding): string {
   return clause === null || text.includes(clause) ? text : `${text} (${clause})`;
 }
 
-function foldedText(findings: readonly ResultFinding[], severity: string, title: string): TextLine[] {
-  const some = findings.filter((finding) => finding.severity === severity);
-  if (some.length === 0) return [];
-  const kinds = tally(some.map(({ code }) => code)).map(([code, count]) => `${count} ${plainWords(code)}`);
-  const tone = severity === 'warning' ? 'warning' : 'quiet';
-  return paragraph(`${title}: ${kinds.join(', ')}.`, '', tone);
+function foldedNotes(findings: readonly ResultFinding[]): TextLine[] {
+  const notes = findings.filter(({ severity }) => severity === 'note');
+  if (notes.length === 0) return [];
+  const kinds = tally(notes.map(({ code }) => code)).map(([code, count]) => `${count} ${plainWords(code)}`);
+  return paragraph(`Notes: ${kinds.join(', ')}.`, '', 'quiet');
 }

@@ -28,7 +28,7 @@ test('first what was understood, then the undersized pipes, then the sums and th
     'Undersized: 8 of 19 pipes',
     'Drawn 3 in, needs 4 in: 7 wet vents, 1 branch, battery-1',
     'Wet vent size: 14 fixture units; 3 in holds 12, 4 in 36; Table 2.5.8.1.',
-    'Warnings: 1 cleanout missing.',
+    'Warnings: 1 - ',
     '8 errors, 1 warning, 1 note.',
     'sewer gas',
   ].map((words) => text.replace(/\s+/g, ' ').indexOf(words));

@@ -149,7 +149,7 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
   'no-sewer-end': (f) =>
     `${many(f, 'se vide', 'se vident')} dans une tuyauterie sans sortie : aucun bout vers l’égout n’a été trouvé.`,
   'sewer-end-assumed': (f) =>
-    `La sortie vers l’égout est supposée à ${first(f)} (${text(f, 'candidates')} bouts ouverts) : dites-le dans le fichier de réponses si c’en est un autre.`,
+    `La sortie vers l’égout est supposée à ${first(f)} (${num(f, 'candidates') === 1 ? 'seul bout ouvert' : `${text(f, 'candidates')} bouts ouverts`}) : dites-le dans le fichier de réponses si c’en est un autre.`,
   'wrong-system': (f) => `${first(f)} est classé dans un réseau auquel, d’après sa tuyauterie, il n’appartient pas.`,
   'fit-in-wall': fitInWall,
   'double-water-path': (f) => `L’eau de ${first(f)} a deux chemins.`,
