@@ -8,7 +8,7 @@ import type { Scenario } from './loads/loads.ts';
 import { modelledSizes } from './loads/modelled-sizes.ts';
 import type { Answers } from './model/answers.ts';
 import { identify } from './model/identify.ts';
-import type { Identity } from './model/identity.ts';
+import type { FixtureKind, Identity } from './model/identity.ts';
 import { fixtureKinds } from './model/identity-words.ts';
 import type { Model } from './model/model.ts';
 import type { NamesTable } from './model/names-table.ts';
@@ -60,6 +60,7 @@ export function runNetwork({ findings, ...piping }: Piping): Outcome {
   const scenarios = scenariosFor(facts);
   const runAs = (
     scenario: Scenario,
+    kind: FixtureKind | null = null,
     known: readonly Identity[] = identities,
   ): { run: Run; findings: readonly Finding[] } => {
     const loads = loadPipes({ ...facts, identities: known }, scenario);
@@ -67,7 +68,7 @@ export function runNetwork({ findings, ...piping }: Piping): Outcome {
     const roles = assignRoles(given);
     const sizes = sizePipes(roles.value.uses, code);
     return {
-      run: { loads: loads.value, roles: roles.value, sizes },
+      run: { kind, loads: loads.value, roles: roles.value, sizes },
       findings: [...loads.findings, ...roles.findings],
     };
   };
@@ -77,11 +78,12 @@ export function runNetwork({ findings, ...piping }: Piping): Outcome {
     if (scenario === scenarios.at(-1)) shared.push(...found);
   }
   if (runs.some((run) => readingsHang(run, paths.fixtures, identities)))
-    for (const known of everyKind(identities)) {
+    for (const kind of fixtureKinds) {
+      const known = withKind(identities, kind);
       const isOpen = fixtureLoads({ ...facts, identities: known }, 'heaviest').some(({ settled }) => !settled);
       runs.unshift(
         ...(isOpen ? (['lightest', 'heaviest'] as const) : (['as-modelled'] as const)).map(
-          (one) => runAs(one, known).run,
+          (one) => runAs(one, kind, known).run,
         ),
       );
     }
@@ -111,12 +113,10 @@ const leavesEntriesOpen = ({ roles }: Run): boolean =>
 const isUnidentified = ({ part, kind }: Identity): boolean =>
   kind === null && (part === 'fixture' || part === 'unknown-terminal');
 
-/** The identities with every unidentified fixture as one kind, for each kind there is. */
-const everyKind = (identities: readonly Identity[]): Identity[][] =>
-  fixtureKinds.map((kind) =>
-    identities.map((one) =>
-      isUnidentified(one) ? { ...one, kind, detail: { ...usualDetail(kind), domestic: one.detail.domestic } } : one,
-    ),
+/** The identities with every unidentified fixture as one kind. */
+const withKind = (identities: readonly Identity[], kind: FixtureKind): Identity[] =>
+  identities.map((one) =>
+    isUnidentified(one) ? { ...one, kind, detail: { ...usualDetail(kind), domestic: one.detail.domestic } } : one,
   );
 
 /**

@@ -1,5 +1,5 @@
 import { conditionText } from './condition-text.ts';
-import type { FindingCode } from './finding.ts';
+import type { Facts, FindingCode } from './finding.ts';
 import { placeSentences } from './place-sentences.ts';
 import { has, num, type SentenceFacts } from './sentence-facts.ts';
 
@@ -223,3 +223,16 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
   'text-damaged': (f) =>
     `${text(f, 'file')} has ${text(f, 'count')} damaged texts (${plain(f.facts.problem)}), first at line ${text(f, 'line')}.`,
 };
+
+/** Readings under which alone a finding holds, as a sentence of its own; empty where it holds under all. */
+export function onlyIfText({ onlyIf }: Facts): string {
+  if (!Array.isArray(onlyIf) || onlyIf.length === 0) return '';
+  const words = onlyIf.map(plain);
+  if (words.every((word) => word === 'lightest' || word === 'heaviest'))
+    return ` Only at the ${words.join(' or the ')} reading of what is open.`;
+  const named = words.slice(0, mostKinds).join(', ');
+  const more = words.length > mostKinds ? ` or one of ${words.length - mostKinds} more` : '';
+  return ` Only if what nothing identifies is a ${named}${more}.`;
+}
+
+const mostKinds = 4;

@@ -2,7 +2,7 @@ import { InputError } from '../findings/input-error.ts';
 import { plainLabel, sizeIn } from '../tables/printed-value.ts';
 import { at } from '../tables/read-json.ts';
 import type { NominalSize, SizeSeries } from '../units/nominal-size.ts';
-import { keyMatches, wildcardMatches } from './answer-keys.ts';
+import { fullId, keyMatches, wildcardMatches } from './answer-keys.ts';
 import type { Answers } from './answers.ts';
 import type { Element, Model } from './model.ts';
 import { nearest } from './nearest-words.ts';
@@ -10,7 +10,7 @@ import { nearest } from './nearest-words.ts';
 /**
  * Answers held against the model and the code's sizes. Every key must meet something, every size must be one the code
  * knows; the first that does not is an InputError at its place, with the nearest that would do. What comes back names
- * sewer ends, cleanouts and systems by GlobalId and sizes by the code's labels.
+ * sewer ends, cleanouts and systems by GlobalId (in full where the model doubles it) and sizes by the code's labels.
  */
 export function matchAnswers(answers: Answers, model: Model, series: SizeSeries, where: string): Answers {
   const meet = (key: string, place: string, wanted: Wanted): readonly Element[] =>
@@ -20,7 +20,14 @@ export function matchAnswers(answers: Answers, model: Model, series: SizeSeries,
     return typeof said === 'string' ? { ...answer, [field]: sizeOf(said, at(place, field), series) } : answer;
   };
   const ids = (list: readonly string[], part: string, wanted: Wanted): string[] =>
-    list.flatMap((key, index) => meet(key, `${at(where, part)}[${index}]`, wanted).map(({ globalId }) => globalId));
+    list.flatMap((key, index) =>
+      meet(key, `${at(where, part)}[${index}]`, wanted).map((element) =>
+        timesOf(element.globalId) > 1 ? fullId(element) : element.globalId,
+      ),
+    );
+  const times = new Map<string, number>();
+  for (const { globalId } of model.elements) times.set(globalId, (times.get(globalId) ?? 0) + 1);
+  const timesOf = (globalId: string): number => times.get(globalId) ?? 0;
   const fixtures = [...answers.fixtures].map(([key, answer]) => {
     const place = at(at(where, 'fixtures'), key);
     meet(key, place, notPipes);

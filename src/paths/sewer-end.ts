@@ -1,3 +1,4 @@
+import { keyMatches } from '../model/answer-keys.ts';
 import type { Answers } from '../model/answers.ts';
 import type { Identity } from '../model/identity.ts';
 import type { Model } from '../model/model.ts';
@@ -133,7 +134,7 @@ function isAnswered(joint: JointId, { network, model, answers }: SewerEndFacts):
   if (answers.sewerEnds.length === 0) return false;
   const { elements, pipes } = network.joints[joint]!;
   const named = (element: number | null): boolean =>
-    element !== null && answers.sewerEnds.includes(model.elements[element]!.globalId);
+    element !== null && answers.sewerEnds.some((key) => keyMatches(key, model.elements[element]!));
   return elements.some(named) || (pipes.length === 1 && named(network.pipes[pipes[0]!]!.element));
 }
 

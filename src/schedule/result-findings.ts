@@ -1,5 +1,5 @@
 import type { Finding } from '../findings/finding.ts';
-import { sentences } from '../findings/sentences.ts';
+import { onlyIfText, sentences } from '../findings/sentences.ts';
 import type { ElementId } from '../model/model.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
 import { decimal, lengthText, slopeText } from './number-text.ts';
@@ -41,7 +41,7 @@ export function resultFinding(outcome: Outcome, index: ResultIndex, finding: Fin
     about: finding.about.map((element) => index.idOf(element as ElementId)),
     facts: printedFacts(outcome, index, finding.facts),
     clause: finding.clause ?? null,
-    sentence,
+    sentence: sentence + onlyIfText(finding.facts),
   };
 }
 

@@ -3,7 +3,7 @@ import type { Finding } from '../findings/finding.ts';
 import type { PlanPoint } from '../geometry/plan-outline.ts';
 import type { Loads } from '../loads/loads.ts';
 import type { Answers } from '../model/answers.ts';
-import type { Identity } from '../model/identity.ts';
+import type { FixtureKind, Identity } from '../model/identity.ts';
 import type { Model } from '../model/model.ts';
 import type { Network } from '../network/network.ts';
 import type { Paths } from '../paths/paths.ts';
@@ -14,6 +14,8 @@ import type { Load, Range } from '../units/quantity.ts';
 
 /** Loads, roles and sizes under one way to read what the model leaves open. */
 export interface Run {
+  /** What every unidentified fixture is taken for in this run; null: they are read by their load alone. */
+  readonly kind: FixtureKind | null;
   readonly loads: Loads;
   readonly roles: Roles;
   readonly sizes: readonly Sizing[];

@@ -10,6 +10,7 @@ import type { Load } from '../units/quantity.ts';
 import { batteryFindings } from './battery-findings.ts';
 import { checkFacts } from './check-facts.ts';
 import { comparePipes } from './compare.ts';
+import { findingsOfRuns } from './findings-of-runs.ts';
 import type { Outcome, Run } from './outcome.ts';
 import { sizeFindings } from './size-findings.ts';
 import { wallFindings } from './wall-findings.ts';
@@ -34,7 +35,13 @@ export function reachVerdicts({ findings, runs, ...facts }: VerdictFacts): Outco
   const { network, paths, code, identities } = facts;
   const shown = runs.at(-1)!;
   const pipes = comparePipes(network, code, runs, shown);
-  const checked = checkFacts(facts, shown);
+  const brokenIn = (run: Run): readonly Finding[] => {
+    const checked = checkFacts(facts, run);
+    return [
+      ...batteryFindings(network, paths, run.roles.batteries),
+      ...code.checks.flatMap((check) => check.run(checked)),
+    ];
+  };
   return {
     ...facts,
     shown,
@@ -47,8 +54,7 @@ export function reachVerdicts({ findings, runs, ...facts }: VerdictFacts): Outco
     findings: [
       ...findings,
       ...unidentified(identities, paths, code, shown),
-      ...batteryFindings(network, paths, shown.roles.batteries),
-      ...code.checks.flatMap(({ run }) => run(checked)),
+      ...findingsOfRuns(runs, brokenIn),
       ...sizeFindings(network, paths, code, shown, pipes),
       ...wallFindings(facts.model, network, code, pipes),
     ],

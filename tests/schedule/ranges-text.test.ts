@@ -57,3 +57,51 @@ describe('one fixture that nothing identifies', () => {
     expect(plainText(checkText(known.result))).not.toContain('Open:');
   });
 });
+
+describe('a finding that only one reading has', () => {
+  // UPC 2024, Table 1002.2: a 2 in trap stands at most 5 ft (1.52 m) from its vent, a closet 6 ft (1.83 m).
+  const arm = (metres: number): string =>
+    drawn('thing').replace('node TX from J south 0.4', `node TX from J south ${metres}`);
+  const tooLong = (metres: number, answers = {}) =>
+    runSketch(arm(metres), { code: 'upc-2024', answers })
+      .findings('trap-arm-too-long')
+      .map(({ severity, facts, sentence }) => ({ severity, onlyIf: facts.onlyIf, sentence }));
+
+  test('1.4 m: no reading has it', () => expect(tooLong(1.4)).toEqual([]));
+  test('1.7 m: what is no closet has it; it warns, and says so', () => {
+    const [one, ...more] = tooLong(1.7);
+    expect(more).toEqual([]);
+    expect(one).toMatchObject({ severity: 'warning', onlyIf: ['lightest', 'heaviest'] });
+    expect(one!.sentence).toMatch(/at most 1.52 m .* Only at the lightest or the heaviest reading of what is open\.$/);
+  });
+  test('1.7 m, once it is known: an error, or nothing', () => {
+    const as = (kind: string) => tooLong(1.7, { fixtures: new Map([['name:X', { kind }]]) });
+    expect(as('sink').map(({ severity, onlyIf }) => [severity, onlyIf])).toEqual([['error', undefined]]);
+    expect(as('water-closet')).toEqual([]);
+  });
+  test('2 m: every reading has it, whichever limit it breaks: one error', () => {
+    expect(tooLong(2).map(({ severity, onlyIf }) => [severity, onlyIf])).toEqual([['error', undefined]]);
+  });
+});
+
+describe('the same in the result', () => {
+  const { result } = runSketch(drawn('thing'));
+  const byVerdict = (holds: boolean) =>
+    result.pipes.filter(({ verdict }) => (verdict !== 'unknown') === holds).map(({ name }) => name);
+
+  test('verdicts that hold either way, and those that hang on the thing', () => {
+    expect(byVerdict(true)).toEqual(['L-TL', 'TL-J', 'K-OUT', 'J-TOP']);
+    expect(byVerdict(false)).toEqual(['X-TX', 'TX-J', 'J-K']);
+    for (const { required, modelled, reason, verdict } of result.pipes) {
+      const [least, most, drawnSize] = [required!.least!.dn, required!.most!.dn, modelled!.dn];
+      expect(verdict === 'unknown').toBe(least <= drawnSize && drawnSize < most);
+      if (verdict === 'unknown') expect(reason).toBe('depends on a fixture that is not identified');
+    }
+  });
+  test('what would settle it stands with the fixture', () => {
+    expect(result.fixtures.map(({ name, open }) => [name, open?.[0]?.field])).toEqual([
+      ['L', undefined],
+      ['X', 'kind'],
+    ]);
+  });
+});

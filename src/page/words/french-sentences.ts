@@ -183,4 +183,18 @@ function fitInWall(f: FrenchFacts): string {
 
 /** The sentence of a finding in French; a code that has none yet says its name and its facts. */
 export const frenchSentence = (code: string, given: FrenchFacts): string | null =>
-  Object.hasOwn(frenchSentences, code) ? frenchSentences[code as FindingCode](given) : null;
+  Object.hasOwn(frenchSentences, code) ? frenchSentences[code as FindingCode](given) + frenchOnlyIf(given) : null;
+
+/** Readings under which alone a finding holds; empty where it holds under all. */
+function frenchOnlyIf({ facts, kind }: FrenchFacts): string {
+  const { onlyIf } = facts;
+  if (!Array.isArray(onlyIf) || onlyIf.length === 0) return '';
+  const loads: Readonly<Record<string, string>> = { lightest: 'la plus légère', heaviest: 'la plus lourde' };
+  if (onlyIf.every((word) => loads[word] !== undefined))
+    return ` Seulement selon la lecture ${onlyIf.map((word) => loads[word]).join(' ou ')} de ce qui est ouvert.`;
+  const named = onlyIf.slice(0, mostKinds).map(kind).join(', ');
+  const more = onlyIf.length > mostKinds ? ` ou l’un de ${onlyIf.length - mostKinds} autres` : '';
+  return ` Seulement si ce que rien n’identifie est : ${named}${more}.`;
+}
+
+const mostKinds = 4;
