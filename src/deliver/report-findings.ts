@@ -112,6 +112,7 @@ export function planSection({ plan, names }: ReportSource): Section | null {
       plan.after.findings.length === 0
         ? null
         : tag('ul', ...plan.after.findings.map(({ sentence }) => tag('li', sentence))),
+      ...plan.after.advice.map(({ sentence }) => tag('p', `For you: ${sentence}`)),
       tag('p', plan.search.sentence),
       html('p', { class: 'quiet' }, weightsSentence(plan)),
       tag('p', 'A proposal for the designer: nothing that is drawn in the model is moved.'),

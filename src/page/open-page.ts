@@ -84,18 +84,21 @@ export function openPage(
     document.documentElement.dataset.theme = now.theme;
     if (now.language !== before.language) build(now.language);
     const link = linkOf(building, now);
-    if (link !== linkOf(building, before))
-      history.replaceState(null, '', link === '' ? location.pathname + location.search : link);
+    if (link !== linkOf(building, before)) setLink(link);
   });
   const followLink = (): void => store.set(stateFromLink(building, location.hash));
   window.addEventListener('hashchange', followLink);
   document.documentElement.dataset.theme = store.state.theme;
   build(store.state.language, kept?.eye ?? null);
+  if (kept !== undefined) setLink(linkOf(building, store.state));
   return () => {
     window.removeEventListener('hashchange', followLink);
     close();
   };
 }
+
+const setLink = (link: string): void =>
+  history.replaceState(null, '', link === '' ? location.pathname + location.search : link);
 
 function firstState(building: Building): PageState {
   const { result, scene, risers } = building.data;

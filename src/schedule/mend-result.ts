@@ -2,6 +2,7 @@ import type { ElementId } from '../model/model.ts';
 import type { Change, VentChange } from '../study/mend/change.ts';
 import type { Plan, PlanStep } from '../study/mend/mend.ts';
 import type { MendChange, MendResult, MendSearch, MendVent } from './mend.ts';
+import { adviceOn } from './mend-advice.ts';
 import { decimal, lengthText, slopeText } from './number-text.ts';
 import type { Result } from './result.ts';
 import { elementName, resultFinding } from './result-findings.ts';
@@ -26,7 +27,11 @@ export function mendResult(plan: Plan, result: Result): MendResult {
     cost: points(cost),
     search: searchOf(plan),
     before: { errors: first.findings.filter(({ severity }) => severity === 'error').length },
-    after: { errors: left.length, findings: left.map((finding) => resultFinding(last, index, finding)) },
+    after: {
+      errors: left.length,
+      findings: left.map((finding) => resultFinding(last, index, finding)),
+      advice: adviceOn(left.map(({ code }) => code)),
+    },
     caution: result.caution,
   };
 }
@@ -67,11 +72,14 @@ function mendChange(plan: Plan, index: ResultIndex, step: PlanStep): MendChange 
       kind: 'cleanout',
       about: ids([pipe]),
       from: null,
-      to: `cleanout of ${size} (${place})`,
-      why: `The row is read another way, and needs a cleanout there (${last.code.id}, ${clause}).`,
-      finding: null,
+      to: `cleanout of ${size ?? 'unknown size'} (${place})`,
+      why:
+        step.why === null
+          ? `The row is read another way, and needs a cleanout there (${last.code.id}, ${clause}).`
+          : resultFinding(last, index, step.why).sentence,
+      finding: step.why === null ? null : resultFinding(last, index, step.why),
       cost: points(step.cost),
-      cleanout: { size: index.size(size), place },
+      cleanout: { size: size === null ? null : index.size(size), place },
     };
   }
   const { change, why, cost } = step;

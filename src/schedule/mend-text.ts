@@ -12,7 +12,7 @@ export function mendText(plan: MendResult, result: Result): TextLine[] {
   const { changes, before, after, search, cost, model, code } = plan;
   const names = elementNames(result);
   const head = `${shownText(model.file)}, ${code.id}: ${counted(before.errors, 'error')}`;
-  if (before.errors === 0) return [...heading(`${head}, nothing to mend.`), ...caution(plan)];
+  if (before.errors === 0 && changes.length === 0) return [...heading(`${head}, nothing to mend.`), ...caution(plan)];
   const what =
     changes.length === 0
       ? 'no change is known that mends them'
@@ -24,7 +24,7 @@ export function mendText(plan: MendResult, result: Result): TextLine[] {
     ...paragraph(proofSentence(plan), '', after.errors === 0 ? 'good' : 'error'),
     ...paragraph(search.sentence, '', search.exact ? 'plain' : 'warning'),
     ...paragraph(weightsSentence(plan), '', 'quiet'),
-    ...after.findings.flatMap(({ sentence }) => paragraph(shownText(sentence), '  - ', 'error')),
+    ...leftText(plan),
     ...caution(plan),
   ];
 }
@@ -41,6 +41,21 @@ function stepText({ title, why, cost, pipes }: PlanStepText, place: number): Tex
     ...paragraph(shownText(why), '      ', 'quiet'),
     ...(pipes.length === 0 ? [] : paragraph(named + (more > 0 ? ` and ${more} more` : ''), '      ', 'quiet')),
   ];
+}
+
+const mostLeft = 12;
+
+/** Errors that are left, by kind, each kind with what a person has to do about it. */
+function leftText({ after }: MendResult): TextLine[] {
+  return after.advice.flatMap(({ code, sentence }) => {
+    const own = after.findings.filter((finding) => finding.code === code);
+    const more = own.length - mostLeft;
+    return [
+      ...own.slice(0, mostLeft).flatMap((finding) => paragraph(shownText(finding.sentence), '  - ', 'error')),
+      ...(more > 0 ? paragraph(`and ${more} more ${plainWords(code)}`, '    ', 'quiet') : []),
+      ...paragraph(`For you: ${sentence}`, '    ', 'warning'),
+    ];
+  });
 }
 
 /** What the run of all stages on the changed building says. */

@@ -18,7 +18,12 @@ export interface MendResult {
   readonly search: MendSearch;
   readonly before: { readonly errors: number };
   /** From the run of all stages on the changed building: the proof. */
-  readonly after: { readonly errors: number; readonly findings: readonly ResultFinding[] };
+  readonly after: {
+    readonly errors: number;
+    readonly findings: readonly ResultFinding[];
+    /** What a person has to draw or say, by code of the errors that are left, each once in their order. */
+    readonly advice: readonly { readonly code: string; readonly sentence: string }[];
+  };
   readonly caution: string;
 }
 
@@ -50,7 +55,8 @@ export interface MendChange {
   readonly reading?: { readonly from: string; readonly to: string; readonly fixtures: number };
   /** Metres from the fixture along its outlet pipe. */
   readonly trap?: { readonly from: number; readonly to: number };
-  readonly cleanout?: { readonly size: SizeLabel; readonly place: string };
+  /** `place`: `too small` of one that is drawn. */
+  readonly cleanout?: { readonly size: SizeLabel | null; readonly place: string };
 }
 
 export interface MendVent {

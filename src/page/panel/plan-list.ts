@@ -39,6 +39,9 @@ export function planList(desk: Desk): HTMLElement {
         { class: 'plan-left' },
         ...plan.after.findings.map((finding) => make('li', {}, modelText(findingSentence(desk, finding)))),
       ),
+    ...plan.after.advice.map(({ code, sentence }) =>
+      make('p', { class: 'plan-advice' }, own.advice === null ? sentence : own.advice(code)),
+    ),
     weights(desk, plan),
     make('p', { class: 'quiet' }, own.proposals),
   );

@@ -2,6 +2,7 @@ import type { MendResult } from '../../schedule/mend.ts';
 import type { MarginStep } from '../margin-step.ts';
 import type { PipeFate, Side } from '../plan-side.ts';
 import type { Language } from '../state.ts';
+import { frenchAdvice } from './french-advice.ts';
 
 /** Words of the plan that mends a building, of its two sides, and of what pipes still take. */
 export interface PlanWords {
@@ -37,6 +38,8 @@ export interface PlanWords {
   readonly weights: string;
   readonly weight: Readonly<Record<keyof MendResult['weights'], string>>;
   readonly leftTitle: string;
+  /** What a person has to do about an error that is left, by its code; null: the plan's own sentence stands in this language. */
+  readonly advice: ((code: string) => string) | null;
   readonly proposals: string;
   readonly fates: Readonly<Record<PipeFate | 'same', string>>;
   readonly margins: Readonly<Record<MarginStep, string>>;
@@ -94,6 +97,7 @@ export const planWords: Readonly<Record<Language, PlanWords>> = {
       cleanout: 'a cleanout',
     },
     leftTitle: 'Errors that are left',
+    advice: null,
     proposals: 'A proposal for the designer; nothing that is drawn in the model is moved.',
     fates: {
       added: 'New pipe',
@@ -147,8 +151,14 @@ export const planWords: Readonly<Record<Language, PlanWords>> = {
     places: {
       drop: 'descente',
       'branch head': 'tête du branchement',
-      stack: 'colonne',
+      'along a branch': 'le long du branchement',
       'building drain': 'collecteur principal',
+      'stack foot': 'pied de la colonne',
+      sink: 'évier',
+      interceptor: 'séparateur',
+      'running trap': 'siphon principal',
+      spacing: 'écartement',
+      'too small': 'trop petit',
     },
     follows: 'Cela découle des autres changements.',
     proved: 'Le bâtiment changé a passé toutes les étapes : il ne reste aucune erreur.',
@@ -169,6 +179,7 @@ export const planWords: Readonly<Record<Language, PlanWords>> = {
       cleanout: 'un regard de nettoyage',
     },
     leftTitle: 'Erreurs qui restent',
+    advice: frenchAdvice,
     proposals: 'Une proposition au concepteur ; rien de ce qui est dessiné dans le modèle n’est déplacé.',
     fates: {
       added: 'Tuyau nouveau',

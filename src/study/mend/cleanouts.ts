@@ -8,19 +8,21 @@ import { rowOf } from '../row.ts';
 import { rowCleanouts } from '../row-cleanouts.ts';
 import { lineOf } from './places.ts';
 
-/** A cleanout that a battery needs once it is read another way. */
+/** A cleanout that a plan adds, or makes larger. */
 export interface NewCleanout {
-  /** First pipe of the battery's line. */
+  /** That it is set into: of a battery the first pipe of its line. */
   readonly pipe: ElementId;
-  readonly size: NominalSize;
+  /** null: nothing says how large. */
+  readonly size: NominalSize | null;
   readonly place: string;
   readonly clause: string;
-  /** Place of the building that the battery stands at. */
-  readonly line: string;
 }
 
-/** Cleanouts of batteries whose reading changes: those that they need now and did not need before. */
-export function newCleanouts(first: Outcome, last: Outcome): NewCleanout[] {
+/**
+ * Cleanouts of batteries whose reading changes: those that they need now and did not need before. `line`: the place of
+ * the building that the battery stands at.
+ */
+export function newCleanouts(first: Outcome, last: Outcome): (NewCleanout & { readonly line: string })[] {
   const elementsOf = ({ paths }: Outcome, { facts }: Battery): ElementId[] =>
     facts.traps.map(({ fixture }) => paths.fixtures[fixture]!.element);
   const before = first.shown.roles.batteries.map((battery) => ({
@@ -38,7 +40,7 @@ export function newCleanouts(first: Outcome, last: Outcome): NewCleanout[] {
     const trap = battery.facts.traps[0];
     if (line[0] === undefined || trap === undefined) return [];
     return rowCleanouts(rowOf(last, battery), { piping: unchanged(last), outcome: last }).flatMap(
-      (one): NewCleanout[] => {
+      (one): ReturnType<typeof newCleanouts> => {
         const at = needed.indexOf(one.place);
         if (at >= 0) needed.splice(at, 1);
         const { size, place, clause } = one;
@@ -48,11 +50,26 @@ export function newCleanouts(first: Outcome, last: Outcome): NewCleanout[] {
   });
 }
 
-/** The finding that a new cleanout would otherwise be. */
-export const cleanoutWhy = ({ pipe, clause, place }: NewCleanout): Finding => ({
-  code: 'cleanout-missing',
-  severity: 'warning',
-  about: [pipe],
-  facts: { place },
-  clause,
-});
+/**
+ * Cleanouts that the building as it would be still lacks, and those that are too small for their pipes: nothing else hangs
+ * on them, so each is settled by itself. A model that draws none has left them to another drawing, and none are proposed.
+ */
+export function lackingCleanouts({
+  findings,
+  network,
+  pipes,
+  code,
+}: Outcome): { cleanout: NewCleanout; why: Finding }[] {
+  return findings.flatMap((why) => {
+    const { code: what, about, facts, clause = '' } = why;
+    const pipe = about[0] as ElementId | undefined;
+    if (pipe === undefined || facts.what === 'none drawn') return [];
+    if (what === 'cleanout-too-small')
+      return [{ cleanout: { pipe, size: facts.least as NominalSize, place: 'too small', clause }, why }];
+    if (what !== 'cleanout-missing') return [];
+    const served = (network.pipesOf.get(pipe) ?? []).flatMap((one) => pipes[one]!.required?.most ?? []);
+    const largest = served.length === 0 ? null : served.reduce(code.series.larger);
+    const size = largest === null ? null : (code.cleanouts?.sizeFor(largest) ?? largest);
+    return [{ cleanout: { pipe, size, place: String(facts.what), clause }, why }];
+  });
+}

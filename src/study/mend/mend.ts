@@ -6,7 +6,7 @@ import type { Outcome } from '../../verdicts/outcome.ts';
 import { withSize } from '../edits.ts';
 import { pipingOf } from '../piping-of.ts';
 import type { Change } from './change.ts';
-import { cleanoutWhy, type NewCleanout, newCleanouts } from './cleanouts.ts';
+import { lackingCleanouts, type NewCleanout, newCleanouts } from './cleanouts.ts';
 import { costsOf } from './costs.ts';
 import { keyOf } from './items.ts';
 import { firstSizes } from './resize.ts';
@@ -35,7 +35,13 @@ export interface Plan {
 
 export type PlanStep =
   | { readonly kind: 'change'; readonly change: Change; readonly why: Finding; readonly cost: number }
-  | { readonly kind: 'cleanout'; readonly cleanout: NewCleanout; readonly why: Finding; readonly cost: number }
+  | {
+      readonly kind: 'cleanout';
+      readonly cleanout: NewCleanout;
+      /** null: a row that is read another way needs it. */
+      readonly why: Finding | null;
+      readonly cost: number;
+    }
   | {
       readonly kind: 'size';
       readonly element: ElementId;
@@ -58,18 +64,21 @@ export function mend(first: Outcome, weights: Weights, mostRuns = usualRuns): Pl
   const changes = state.made.flatMap(({ option: { change, why, cost: points } }): PlanStep[] =>
     change === null ? [] : [{ kind: 'change', change, why, cost: points }],
   );
+  const lacking = lackingCleanouts(last).map((one): PlanStep => ({ kind: 'cleanout', ...one, cost: weights.cleanout }));
+  const besides = lacking.reduce((sum, one) => sum + one.cost, 0);
   return {
     first,
     last,
     steps: [
       ...changes,
       ...cleanoutSteps(first, last, weights),
+      ...lacking,
       ...sizeSteps(first, last, settled?.sizes ?? new Map(), costs.resize),
     ],
-    cost,
+    cost: cost + besides,
     weights,
     exact,
-    least,
+    least: least + besides,
     runs,
     left: last.findings.filter(({ severity }) => severity === 'error'),
   };
@@ -88,7 +97,7 @@ function withNewSizes(outcome: Outcome, made: State['made']): Outcome {
 }
 
 const cleanoutSteps = (first: Outcome, last: Outcome, { cleanout: cost }: Weights): PlanStep[] =>
-  newCleanouts(first, last).map((cleanout) => ({ kind: 'cleanout', cleanout, why: cleanoutWhy(cleanout), cost }));
+  newCleanouts(first, last).map((cleanout) => ({ kind: 'cleanout', cleanout, why: null, cost }));
 
 /** Drains with the flow, then vents toward the sky. */
 function sizeSteps(
