@@ -7,6 +7,7 @@ import { ventTraps } from './air.ts';
 import { dryPieces } from './dry-pieces.ts';
 import type { Paths } from './paths.ts';
 import { orientations, pipeSlopes } from './slopes.ts';
+import { streamOf } from './stream.ts';
 import { seatTraps } from './traps.ts';
 import { pipeRanks, waterPaths } from './water.ts';
 
@@ -28,12 +29,14 @@ export function findPaths(
   const seats = seatTraps(model, identities, network, water, vertical);
   const dry = dryPieces(model, identities, network, water.wet, rank, findings);
   const traps = ventTraps(network, water, dry, vertical, seats);
+  const toward = water.toward.map((joint, pipe) => joint ?? dry.skyward[pipe] ?? null);
   return {
     value: {
       ...water,
       traps,
       ...dry,
-      toward: water.toward.map((joint, pipe) => joint ?? dry.skyward[pipe] ?? null),
+      toward,
+      stream: streamOf(network, { wet: water.wet, toward }),
       vertical,
       slopes,
     },

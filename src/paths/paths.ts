@@ -1,6 +1,7 @@
 import type { ElementId } from '../model/model.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import type { Metres } from '../units/quantity.ts';
+import type { Stream } from './stream.ts';
 
 export type FixtureId = number & { readonly __fixture: true };
 export type TrapId = FixtureId;
@@ -14,6 +15,7 @@ export interface Paths {
   /** Joint at the downstream end of a wet pipe; for a dry one the end toward the sky. null: neither. By pipe id. */
   readonly toward: readonly (JointId | null)[];
   readonly wet: readonly boolean[];
+  readonly stream: Stream;
   /** Wet pipes, every pipe after those that flow into it. */
   readonly inFlowOrder: readonly PipeId[];
   /** Fixtures whose water enters at the upstream joint of the pipe, not through another pipe. By pipe id. */

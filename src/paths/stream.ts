@@ -15,7 +15,7 @@ export interface Stream {
   span(pipe: PipeId): number;
 }
 
-export function streamOf(network: Network, paths: Paths): Stream {
+export function streamOf(network: Network, paths: Pick<Paths, 'wet' | 'toward'>): Stream {
   const inflows: PipeId[][] = network.joints.map(() => []);
   const outflow: (PipeId | null)[] = network.joints.map(() => null);
   const dry: PipeId[][] = network.joints.map(() => []);

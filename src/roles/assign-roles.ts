@@ -12,7 +12,6 @@ import type { Identity } from '../model/identity.ts';
 import type { Model } from '../model/model.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
 import type { FixtureId, Paths, TrapAir } from '../paths/paths.ts';
-import { streamOf } from '../paths/stream.ts';
 import { airOfRows } from './battery-air.ts';
 import type { BatteryContext } from './battery-context.ts';
 import { drainEnds, drainRoles } from './drain-roles.ts';
@@ -51,7 +50,7 @@ export interface RoleFacts {
 export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
   const { model, identities, network, paths, loads, code, outline } = facts;
   const findings: Finding[] = [];
-  const stream = streamOf(network, paths);
+  const { stream } = paths;
   const floors = floorsOf(model, network, paths.fixtures);
   const outlet = outletPipes(network, paths);
   const stackContext = { network, paths, stream, loads, floors };
@@ -68,7 +67,7 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
     stacks,
     inStack,
     stackAbove: stackAbove(paths, stacks),
-    free: freeTraps(network, paths, stream, loads, code, (fixture) => {
+    free: freeTraps(network, paths, loads, code, (fixture) => {
       const { kind, detail } = identityOf(fixture);
       return { kind, emergency: detail.emergency };
     }),
@@ -165,7 +164,7 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
       batteries,
       air,
       venting: throughShortBranches(context, venting(context, air, feet, dry, batteries), ways),
-      arms: trapArms(network, paths, stream, air),
+      arms: trapArms(network, paths, air),
       ways: ways?.traps ?? [],
       feet,
       floors,

@@ -2,7 +2,6 @@ import type { FreeTrapFacts, PlumbingCode } from '../codes/plumbing-code.ts';
 import type { Loads } from '../loads/loads.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
 import type { FixtureId, Paths, TrapAir } from '../paths/paths.ts';
-import type { Stream } from '../paths/stream.ts';
 import { fallAlong } from './trap-arms.ts';
 
 /** The traps that breathe through one foot, those with their own vent and those upstream of which it stands. */
@@ -33,11 +32,11 @@ export interface FreeTrap {
 export function freeTraps(
   network: Network,
   paths: Paths,
-  stream: Stream,
   loads: Loads,
   code: PlumbingCode,
   identity: (fixture: FixtureId) => Pick<FreeTrapFacts, 'kind' | 'emergency'>,
 ): (FreeTrap | null)[] {
+  const { stream } = paths;
   return paths.traps.map(({ fixture, after }) => {
     const { water } = paths.fixtures[fixture]!;
     const drain: PipeId[] = [];

@@ -1,7 +1,6 @@
 import { planDistance } from '../geometry/vector.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
 import type { Paths, TrapAir } from '../paths/paths.ts';
-import type { Stream } from '../paths/stream.ts';
 import { spaceTurn } from '../paths/turns.ts';
 
 /** From the trap weir to the joint where the vent meets. Metres, m/m, degrees; null where the model has no geometry. */
@@ -14,12 +13,12 @@ export interface TrapArm {
   readonly turn: number | null;
 }
 
-export function trapArms(network: Network, paths: Paths, stream: Stream, air: readonly TrapAir[]): (TrapArm | null)[] {
-  return air.map((trap) => (trap.armEnd === null ? null : armOf(network, paths, stream, trap)));
+export function trapArms(network: Network, paths: Paths, air: readonly TrapAir[]): (TrapArm | null)[] {
+  return air.map((trap) => (trap.armEnd === null ? null : armOf(network, paths, trap)));
 }
 
-function armOf(network: Network, paths: Paths, stream: Stream, { arm, at, armEnd }: TrapAir): TrapArm {
-  const length = arm.reduce((sum, pipe) => sum + stream.span(pipe), 0);
+function armOf(network: Network, paths: Paths, { arm, at, armEnd }: TrapAir): TrapArm {
+  const length = arm.reduce((sum, pipe) => sum + paths.stream.span(pipe), 0);
   const from = network.joints[at]!.at;
   const to = network.joints[armEnd!]!.at;
   if (from === null || to === null || arm.some((pipe) => network.pipes[pipe]!.points === null)) {

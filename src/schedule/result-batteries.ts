@@ -49,7 +49,7 @@ const grounds: Readonly<Record<ReadingGround, string>> = {
 /** Connected pieces of drainage with their sewer end, in the order they were found. */
 export function systems({ paths, network, pipes }: Outcome, index: ResultIndex): ResultSystem[] {
   return paths.systems.map(({ sewerEnd, how, pipes: own }) => {
-    const lasts = own.filter((pipe) => paths.wet[pipe] && index.stream.down(pipe) === sewerEnd);
+    const lasts = own.filter((pipe) => paths.wet[pipe] && paths.stream.down(pipe) === sewerEnd);
     const last = lasts[0];
     const element = last === undefined ? null : network.pipes[last]!.element;
     const sum = (of: 'least' | 'most'): number =>

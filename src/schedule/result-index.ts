@@ -1,14 +1,12 @@
 import type { ElementId } from '../model/model.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import type { FixtureId } from '../paths/paths.ts';
-import { type Stream, streamOf } from '../paths/stream.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
 import type { SizeLabel, SizeRange } from './result.ts';
 
 /** Look-ups from dense ids to what the result prints. */
 export interface ResultIndex {
-  readonly stream: Stream;
   /** GlobalId of an element; with its file and STEP id where the model doubles or lacks it. */
   idOf(element: ElementId): string;
   /** GlobalIds of the elements of pipes, each once, in the order given; links have none. */
@@ -34,7 +32,6 @@ export function resultIndex(outcome: Outcome): ResultIndex {
   const dn = new Map(code.series.sizes.map((size) => [size.label, size.dn]));
   const size = (label: NominalSize): SizeLabel => ({ label, dn: dn.get(label)! });
   return {
-    stream: streamOf(network, paths),
     idOf,
     idsOf: (pipes) => [...new Set(pipes.flatMap((pipe) => network.pipes[pipe]!.element ?? []))].map(idOf),
     fixtureId: (fixture) => idOf(paths.fixtures[fixture]!.element),

@@ -26,7 +26,7 @@ export function resultTrail(outcome: Outcome, index: ResultIndex, pipe: PipeId):
 }
 
 /** Pipes that facts name become GlobalIds, lengths are rounded to what coordinates can tell. */
-export function printedFacts({ network }: Outcome, index: ResultIndex, facts: Facts): Record<string, unknown> {
+export function printedFacts({ network, paths }: Outcome, index: ResultIndex, facts: Facts): Record<string, unknown> {
   return Object.fromEntries(
     Object.entries(facts).map(([key, value]): [string, unknown] => {
       if (key === 'fromPipe' && typeof value === 'number') return ['upstream', elementBehind(value as PipeId)];
@@ -38,7 +38,7 @@ export function printedFacts({ network }: Outcome, index: ResultIndex, facts: Fa
   function elementBehind(pipe: PipeId): string | null {
     const { element } = network.pipes[pipe]!;
     if (element !== null) return index.idOf(element);
-    const joint = network.joints[index.stream.up(pipe)]!;
+    const joint = network.joints[paths.stream.up(pipe)]!;
     return joint.elements[0] === undefined ? null : index.idOf(joint.elements[0]);
   }
 }

@@ -75,7 +75,7 @@ export function takeOff(outcome: Outcome): TakeOffRow[] {
         elements,
         count: elements.size,
         length: (known?.length ?? 0) + length,
-        developedLength: (known?.developedLength ?? 0) + index.stream.span(id),
+        developedLength: (known?.developedLength ?? 0) + outcome.paths.stream.span(id),
       });
     }
     return [...groups.values()].map(({ elements: _, ...row }) => row);

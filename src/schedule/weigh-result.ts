@@ -98,7 +98,7 @@ function alternativeOf(
     .map((pipe) => ({
       element: outcome.network.pipes[pipe]!.element,
       role: outcome.shown.roles.uses[pipe]!.role,
-      length: index.stream.span(pipe),
+      length: outcome.paths.stream.span(pipe),
     }));
   const alternative: WeighAlternative = {
     ...head,

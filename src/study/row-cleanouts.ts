@@ -1,6 +1,5 @@
 import type { CleanoutRules } from '../codes/cleanouts.ts';
 import type { PipeId } from '../network/network.ts';
-import { streamOf } from '../paths/stream.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Attempt } from './attempt.ts';
 import type { Row } from './row.ts';
@@ -26,7 +25,7 @@ export function rowCleanouts(row: Row, { piping, outcome }: Pick<Attempt, 'pipin
   const rules = outcome.code.cleanouts;
   if (rules === null) return [];
   const { rank } = outcome.code.series;
-  const stream = streamOf(outcome.network, outcome.paths);
+  const { stream } = outcome.paths;
   const line = linePieces(row, { piping, outcome });
   const takesTrap = new Set(row.battery.facts.traps.filter(({ place }) => place > 0).map(({ joins }) => joins));
   const found: RowCleanout[] = [];

@@ -1,7 +1,6 @@
 import type { Role } from '../codes/role.ts';
 import type { ElementId } from '../model/model.ts';
 import type { PipeId } from '../network/network.ts';
-import { streamOf } from '../paths/stream.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Load } from '../units/quantity.ts';
 import { type InWall, inWallsOf } from '../verdicts/in-walls.ts';
@@ -36,7 +35,7 @@ const leastBelow = 0.05;
 /** Pipes in the scope and those added: wet ones in the order of their water, then vents by id. */
 export function rowPieces(row: Row, { piping, outcome }: Attempt, scope: ReadonlySet<PipeId>): RowPiece[] {
   const { network, paths, shown, pipes, model, code } = outcome;
-  const stream = streamOf(network, paths);
+  const { stream } = paths;
   const find = inWallsOf(model, code.walls);
   const chosen = network.pipes.filter(({ id, element }) => {
     const from = piping.origin[id] ?? null;

@@ -2,7 +2,7 @@ import type { PlanPoint } from '../geometry/plan-outline.ts';
 import type { StoreyId } from '../model/model.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import type { FixtureId } from '../paths/paths.ts';
-import { type Stream, streamOf } from '../paths/stream.ts';
+import type { Stream } from '../paths/stream.ts';
 import type { Battery } from '../roles/roles.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
 import { floodLevel } from './flood-level.ts';
@@ -61,7 +61,7 @@ export function rowOf(outcome: Outcome, battery: Battery): Row {
   const first = paths.fixtures[fixtures[0]!]!.element;
   return {
     outcome,
-    stream: streamOf(network, paths),
+    stream: paths.stream,
     battery,
     fixtures,
     along: directionOf(outcome, facts.line),

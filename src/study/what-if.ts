@@ -5,7 +5,6 @@ import type { Finding } from '../findings/finding.ts';
 import type { FixtureDetail, FixtureKind } from '../model/identity.ts';
 import type { ElementId } from '../model/model.ts';
 import type { PipeId } from '../network/network.ts';
-import { streamOf } from '../paths/stream.ts';
 import { type Piping, runNetwork } from '../pipeline.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Load, Range } from '../units/quantity.ts';
@@ -72,7 +71,7 @@ function edited(before: Outcome, piping: Piping, edit: Edit, codeOf: (id: string
     case 'size':
       return withSize(piping, edit.pipe, edit.size);
     case 'slope': {
-      const stream = streamOf(before.network, before.paths);
+      const { stream } = before.paths;
       return withSlope(piping, levelSections(before, piping, edit.pipe), edit.slope, (pipe) => stream.up(pipe));
     }
     case 'reading':

@@ -6,7 +6,6 @@ import type { ElementId, Model } from '../model/model.ts';
 import type { Network, PipeId } from '../network/network.ts';
 import { openSky } from '../paths/open-air.ts';
 import type { Paths } from '../paths/paths.ts';
-import { streamOf } from '../paths/stream.ts';
 import { type Stack, stackUseAt } from '../roles/find-stacks.ts';
 import { widestDrawn } from '../roles/main-vent.ts';
 import type { VentFoot } from '../roles/roles.ts';
@@ -26,7 +25,7 @@ export interface Checkable {
 
 /** What a code's checks look at, gathered from one run. */
 export function checkFacts({ model, identities, network, paths, code }: Checkable, run: Run): CheckFacts {
-  const stream = streamOf(network, paths);
+  const { stream } = paths;
   const { roles, loads, sizes } = run;
   const elementsOf = (pipes: readonly PipeId[]): ElementId[] => [
     ...new Set(pipes.flatMap((pipe) => network.pipes[pipe]!.element ?? [])),

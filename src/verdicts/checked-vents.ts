@@ -4,7 +4,6 @@ import type { ElementId, Model } from '../model/model.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
 import type { OpenSky } from '../paths/open-air.ts';
 import type { FixtureId, Paths } from '../paths/paths.ts';
-import { streamOf } from '../paths/stream.ts';
 import { pointsFrom } from '../paths/turns.ts';
 import { stackUseAt } from '../roles/find-stacks.ts';
 import type { VentFoot } from '../roles/roles.ts';
@@ -15,7 +14,7 @@ import type { Run } from './outcome.ts';
 /** Dry vents as a code's checks look at them, one for each foot that serves a trap or a stack. */
 export function checkedVents(model: Model, network: Network, paths: Paths, run: Run): CheckedVent[] {
   const { roles, loads } = run;
-  const stream = streamOf(network, paths);
+  const { stream } = paths;
   const heightOf = (joint: JointId): number | null => network.joints[joint]!.at?.[2] ?? null;
   return roles.feet.flatMap((foot): CheckedVent[] => {
     const first = roles.uses[foot.path[0]!]!;

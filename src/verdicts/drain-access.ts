@@ -5,7 +5,7 @@ import type { Identity } from '../model/identity.ts';
 import type { Model } from '../model/model.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
 import type { Paths } from '../paths/paths.ts';
-import { type Stream, streamOf } from '../paths/stream.ts';
+import type { Stream } from '../paths/stream.ts';
 import { spaceTurn } from '../paths/turns.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Run } from './outcome.ts';
@@ -29,7 +29,7 @@ export interface DrainAccess {
 /** Cleanouts on wet joints and at the ends of dry extensions, and how far each drain lies from the nearest. */
 export function drainAccess(facts: AccessFacts): DrainAccess {
   const { network, paths, run } = facts;
-  const stream = streamOf(network, paths);
+  const { stream } = paths;
   const { cleanouts, joints } = openings(facts, stream);
   const opens = (joint: JointId): boolean => joints.has(joint);
   const distance = distances(facts, stream, joints);

@@ -4,6 +4,7 @@ import { type Identity, noDetail } from '../../src/model/identity.ts';
 import type { Element, ElementId, Fabric, Model, Space, Storey, Wall } from '../../src/model/model.ts';
 import type { Joint, JointId, Network, Pipe, PipeId } from '../../src/network/network.ts';
 import type { DryPiece, FixtureId, Paths, TrapAir } from '../../src/paths/paths.ts';
+import { streamOf } from '../../src/paths/stream.ts';
 import type {
   Result,
   ResultFinding,
@@ -223,6 +224,23 @@ export function examplePage(spec: BuildingSpec): ExamplePage {
   }));
   const last = runNames.findLast((name) => wet(name) && nextOf(name) === null)!;
   const pieces: DryPiece[] = [{ id: 0, pipes: [], feet: [], mouths: [] }];
+  const network: Network = {
+    joints,
+    pipes,
+    pipesOf: new Map(runNames.map((name) => [runElement.get(name)!.id, [pipe.get(name)!]])),
+    jointsOf: new Map(
+      nodeNames.flatMap((node) => (jointElements.get(node) ?? []).map((id) => [id, [joint.get(node)!]] as const)),
+    ),
+    fates: elements.map(({ kind }) => ({
+      use: kind === 'segment' ? 'pipe' : kind === 'terminal' ? 'fixture' : 'fitting',
+      reason: null,
+    })),
+    joined: { ports: 2 * pipes.length, geometry: 0 },
+  };
+  const ways = {
+    toward: runNames.map((name) => joint.get(run(name).to)!),
+    wet: runNames.map(wet),
+  };
   const paths: Paths = {
     systems: [{ sewerEnd: joint.get(run(last).to)!, how: 'lowest', isCutOff: false, pipes: pipes.map(({ id }) => id) }],
     fixtures: spec.fixtures.map((fixture, index) => ({
@@ -232,8 +250,8 @@ export function examplePage(spec: BuildingSpec): ExamplePage {
       water: waters[index]!.map((name) => pipe.get(name)!),
     })),
     next: runNames.map((name) => (nextOf(name) === null ? null : pipe.get(nextOf(name)!)!)),
-    toward: runNames.map((name) => joint.get(run(name).to)!),
-    wet: runNames.map(wet),
+    ...ways,
+    stream: streamOf(network, ways),
     inFlowOrder: [],
     entering: [],
     traps,
@@ -359,19 +377,6 @@ export function examplePage(spec: BuildingSpec): ExamplePage {
     slabs: spec.slabs.map((box, index) => fabric(box, index, 'Slab')),
     roofs: [],
     findings: [],
-  };
-  const network: Network = {
-    joints,
-    pipes,
-    pipesOf: new Map(runNames.map((name) => [runElement.get(name)!.id, [pipe.get(name)!]])),
-    jointsOf: new Map(
-      nodeNames.flatMap((node) => (jointElements.get(node) ?? []).map((id) => [id, [joint.get(node)!]] as const)),
-    ),
-    fates: elements.map(({ kind }) => ({
-      use: kind === 'segment' ? 'pipe' : kind === 'terminal' ? 'fixture' : 'fitting',
-      reason: null,
-    })),
-    joined: { ports: 2 * pipes.length, geometry: 0 },
   };
   const result: Result = {
     format: 'drainwright-result',

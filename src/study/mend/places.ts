@@ -1,7 +1,6 @@
 import type { ElementId } from '../../model/model.ts';
 import type { PipeId } from '../../network/network.ts';
 import type { FixtureId } from '../../paths/paths.ts';
-import { streamOf } from '../../paths/stream.ts';
 import type { Outcome } from '../../verdicts/outcome.ts';
 
 /**
@@ -32,7 +31,7 @@ function isTrunk(pipe: PipeId, { roles }: Outcome['shown']): boolean {
 /** Pipes that belong to one place alone, by element: its drains, and vents that only they stand under. */
 export function ownPipes(outcome: Outcome, place: string): ReadonlySet<ElementId> {
   const { network, paths, shown } = outcome;
-  const stream = streamOf(network, paths);
+  const { stream } = paths;
   const own = new Set<ElementId>();
   const foreign = new Set<ElementId>();
   const put = (pipe: PipeId, mine: boolean): void => {

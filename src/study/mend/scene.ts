@@ -2,7 +2,7 @@ import type { Vec3 } from '../../geometry/vector.ts';
 import type { JointId, PipeId } from '../../network/network.ts';
 import { type OpenSky, openSky } from '../../paths/open-air.ts';
 import type { FixtureId } from '../../paths/paths.ts';
-import { type Stream, streamOf } from '../../paths/stream.ts';
+import type { Stream } from '../../paths/stream.ts';
 import type { Outcome } from '../../verdicts/outcome.ts';
 import { floodLevel } from '../flood-level.ts';
 import type { Costs } from './costs.ts';
@@ -24,7 +24,7 @@ export interface Scene {
 
 export function sceneOf(outcome: Outcome, costs: Costs): Scene {
   const { network, paths, shown, model, identities } = outcome;
-  const stream = streamOf(network, paths);
+  const { stream } = paths;
   const levels = paths.fixtures.map(({ id }) => floodLevel(outcome, id));
   const flood = (fixtures: readonly FixtureId[]): number =>
     fixtures.reduce((most, fixture) => Math.max(most, levels[fixture]!), Number.NEGATIVE_INFINITY);
