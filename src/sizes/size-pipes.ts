@@ -1,5 +1,5 @@
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
-import type { SizesSoFar, Step } from '../codes/sizing-rule.ts';
+import type { SizesSoFar, SizingRule, Step } from '../codes/sizing-rule.ts';
 import type { PipeUse } from '../codes/use.ts';
 import type { PipeId } from '../network/network.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
@@ -25,20 +25,32 @@ export function sizePipes(uses: readonly PipeUse[], code: PlumbingCode): Sizing[
   const fixed = code.rules.filter(({ reads }) => reads === 'use');
   const following = code.rules.filter(({ reads }) => reads === 'sizes');
   const none: SizesSoFar = () => null;
-  const steady = uses.map((use) => (isSized(use) ? fixed.flatMap((rule) => named(rule.id, rule.ask(use, none))) : []));
+  const steady = uses.map((use) => (isSized(use) ? demands(fixed, use, none) : []));
   const sizes: (NominalSize | null)[] = steady.map((steps) => largestAsked(steps, code));
-  const soFar: SizesSoFar = (pipe) => sizes[pipe] ?? null;
   const moving: Step[][] = uses.map(() => []);
   const order = orderOf(uses);
 
+  // A rule looks at nothing but its pipe and the sizes that it reads: only where one of these has grown is it asked again.
+  const readers: PipeId[][] = uses.map(() => []);
+  const isDue = new Uint8Array(uses.length).fill(1);
+  let asking: PipeId | null = null;
+  const soFar: SizesSoFar = (pipe) => {
+    const known = readers[pipe];
+    if (known !== undefined && asking !== null && known.at(-1) !== asking) known.push(asking);
+    return sizes[pipe] ?? null;
+  };
   for (let changed = true; changed; ) {
     changed = false;
     for (const pipe of order) {
-      moving[pipe] = following.flatMap((rule) => named(rule.id, rule.ask(uses[pipe]!, soFar)));
+      if (isDue[pipe] === 0) continue;
+      isDue[pipe] = 0;
+      asking = pipe;
+      moving[pipe] = demands(following, uses[pipe]!, soFar);
       const asked = largestAsked(moving[pipe]!, code);
       const known = sizes[pipe] ?? null;
       if (asked !== null && (known === null || rank(asked) > rank(known))) {
         sizes[pipe] = asked;
+        for (const reader of readers[pipe]!) isDue[reader] = 1;
         changed = true;
       }
     }
@@ -89,13 +101,21 @@ function orderOf(uses: readonly PipeUse[]): PipeId[] {
 
 const isSized = ({ role }: PipeUse): boolean => role !== 'idle' && role !== 'unknown';
 
-/** The rule's own id tells two demands of one clause apart. */
-const named = (id: string, step: Step | undefined): Step[] => (step === undefined ? [] : [{ ...step, rule: id }]);
+/** What rules ask of a pipe, in their order. The rule's own id tells two demands of one clause apart. */
+function demands(rules: readonly SizingRule[], use: PipeUse, soFar: SizesSoFar): Step[] {
+  const steps: Step[] = [];
+  for (const rule of rules) {
+    const step = rule.ask(use, soFar);
+    if (step !== undefined) steps.push({ ...step, rule: rule.id });
+  }
+  return steps;
+}
 
 /** A size that the user omits is not offered: the next larger one is. */
 function largestAsked(steps: readonly Step[], { series, omitSizes }: PlumbingCode): NominalSize | null {
   let top = -1;
   for (const { asks } of steps) if (asks !== null) top = Math.max(top, series.rank(asks));
   if (top < 0) return null;
-  return series.sizes.slice(top).find(({ label }) => !omitSizes.has(label))?.label ?? series.sizes[top]!.label;
+  const offered = series.sizes.findIndex(({ label }, at) => at >= top && !omitSizes.has(label));
+  return series.sizes[Math.max(top, offered)]!.label;
 }
