@@ -1,8 +1,8 @@
 import type { EntryRule, PlumbingCode } from '../codes/plumbing-code.ts';
 import { isReading, type Reading } from '../codes/reading.ts';
 import type { Role } from '../codes/role.ts';
-import type { StackUse } from '../codes/stack-use.ts';
-import type { PipeUse, TankKind, VentUse } from '../codes/use.ts';
+import type { StackLeft, StackUse } from '../codes/stack-use.ts';
+import type { PipeUse, TankKind } from '../codes/use.ts';
 import { type Finding, finding, type WithFindings } from '../findings/finding.ts';
 import type { PlanPoint } from '../geometry/plan-outline.ts';
 import type { Loads } from '../loads/loads.ts';
@@ -17,7 +17,7 @@ import type { BatteryContext } from './battery-context.ts';
 import { drainEnds, drainRoles } from './drain-roles.ts';
 import { type DryRole, dryRoles, ventTree } from './dry-roles.ts';
 import { freeTraps } from './feet.ts';
-import { findStacks, type Stack, type StackContext, stackUseAt } from './find-stacks.ts';
+import { findStacks, type Stack, type StackContext } from './find-stacks.ts';
 import { floorsOf } from './floors.ts';
 import { formBatteries } from './form-batteries.ts';
 import { mainVentUses, onlyWidestVents } from './main-vent.ts';
@@ -27,6 +27,7 @@ import type { Battery, Roles, VentFoot } from './roles.ts';
 import { throughShortBranches } from './short-branches.ts';
 import { stackEntries } from './stack-entries.ts';
 import { stackJoints } from './stack-joints.ts';
+import { stackUses } from './stack-uses.ts';
 import { trapArms } from './trap-arms.ts';
 import { trapWays } from './trap-ways.ts';
 import { ventUses } from './vent-uses.ts';
@@ -66,6 +67,7 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
     code,
     stacks,
     inStack,
+    stackUses: stackUses(stackContext, stacks),
     stackAbove: stackAbove(paths, stacks),
     free: freeTraps(network, paths, loads, code, (fixture) => {
       const { kind, detail } = identityOf(fixture);
@@ -101,11 +103,16 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
   const largest = onlyWidestVents(context, feet);
   const inArm = new Set(air.flatMap(({ arm, foot }) => (foot === null ? [] : arm)));
   const ends = drainEnds(paths, drains);
-  const stackUses = new Map<PipeId, StackUse>();
+  const entered = new Map<PipeId, StackUse>();
+  const leaves = new Map<number, StackLeft[]>();
+  for (const { serves, leaves: at } of vents.values())
+    if (serves !== null && at !== null) leaves.set(serves, [...(leaves.get(serves) ?? []), at]);
   const offsets = new Map<PipeId, number>();
   for (const stack of stacks) {
-    const more = code.entries === undefined ? {} : entriesOf(facts, stackContext, stack, code.entries, vents);
-    for (const pipe of stack.pipes) stackUses.set(pipe, { ...stackUseAt(stackContext, stack, pipe), ...more });
+    if (code.entries !== undefined) {
+      const entries = entriesOf(facts, stackContext, stack, code.entries, leaves);
+      for (const pipe of stack.pipes) entered.set(pipe, { ...context.stackUses[pipe]!, ...entries });
+    }
     for (const { pipes, length } of stack.offsets) for (const pipe of pipes) offsets.set(pipe, length);
   }
   const uses = network.pipes.map(({ id }): PipeUse => {
@@ -146,7 +153,7 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
       reach: ways?.reach.get(id) ?? null,
       inflows: isWet ? stream.inflows[stream.up(id)]! : [],
       joining: isWet ? stream.dry[stream.up(id)]!.filter((pipe) => dry.has(pipe)) : (tree.below.get(id) ?? []),
-      stack: stackUses.get(id) ?? null,
+      stack: entered.get(id) ?? context.stackUses[id]!,
       offset: offsets.get(id) ?? null,
       battery: battery === null ? null : { facts: batteries[battery]!.facts, reading: batteries[battery]!.reading },
       vent: vents.get(id) ?? null,
@@ -191,10 +198,10 @@ function entriesOf(
   context: StackContext,
   stack: Stack,
   rule: EntryRule,
-  vents: ReadonlyMap<PipeId, VentUse>,
+  leavesOf: ReadonlyMap<number, readonly StackLeft[]>,
 ): Pick<StackUse, 'entries' | 'ventStack'> {
   const open = loads.scenario === 'lightest' ? 'swept' : 'square';
-  const leaves = [...vents.values()].flatMap((vent) => (vent.serves === stack.id ? (vent.leaves ?? []) : []));
+  const leaves = leavesOf.get(stack.id) ?? [];
   const best = (['foot', 'drain', 'above a branch'] as const).find((one) => leaves.includes(one)) ?? null;
   return { entries: stackEntries(context, model, stack, rule, open), ventStack: best };
 }

@@ -1,5 +1,6 @@
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import type { Reading } from '../codes/reading.ts';
+import type { StackUse } from '../codes/stack-use.ts';
 import type { TankKind } from '../codes/use.ts';
 import type { FixtureKind } from '../model/identity.ts';
 import type { JointId, PipeId } from '../network/network.ts';
@@ -12,6 +13,8 @@ export interface BatteryContext extends StackContext {
   readonly stacks: readonly Stack[];
   /** Pipe belongs to a stack, offsets included. By pipe id. */
   readonly inStack: readonly (Stack | null)[];
+  /** That stack as it is seen from the pipe. By pipe id. */
+  readonly stackUses: readonly (StackUse | null)[];
   /** A stack's foot lies upstream of the pipe. By pipe id. */
   readonly stackAbove: readonly boolean[];
   readonly free: readonly (FreeTrap | null)[];

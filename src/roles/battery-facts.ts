@@ -4,7 +4,6 @@ import type { TrapAir } from '../paths/paths.ts';
 import { type Load, noLoad, plusLoad } from '../units/quantity.ts';
 import type { BatteryContext, Draft } from './battery-context.ts';
 import { circuitLine } from './circuit-line.ts';
-import { stackUseAt } from './find-stacks.ts';
 
 export function batteryFacts(context: BatteryContext, draft: Draft, id: number): BatteryFacts {
   const line = lineOf(context, draft);
@@ -32,9 +31,9 @@ export function batteryFacts(context: BatteryContext, draft: Draft, id: number):
 }
 
 /** The stack that the line runs through, seen from its last section on it. */
-function stackOfLine(context: BatteryContext, line: readonly PipeId[]): BatteryFacts['stack'] {
-  const last = line.findLast((pipe) => context.inStack[pipe] !== null);
-  return last === undefined ? null : stackUseAt(context, context.inStack[last]!, last);
+function stackOfLine({ stackUses }: BatteryContext, line: readonly PipeId[]): BatteryFacts['stack'] {
+  const last = line.findLast((pipe) => stackUses[pipe] !== null);
+  return last === undefined ? null : stackUses[last]!;
 }
 
 /** The way of water from the foot to the joint of the last trap. */

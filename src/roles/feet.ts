@@ -40,7 +40,8 @@ export function freeTraps(
   return paths.traps.map(({ fixture, after }) => {
     const { water } = paths.fixtures[fixture]!;
     const drain: PipeId[] = [];
-    for (const pipe of water.slice(after)) {
+    for (let at = after; at < water.length; at++) {
+      const pipe = water[at]!;
       drain.push(pipe);
       if (stream.inflows[stream.down(pipe)]!.length > 1) break;
     }

@@ -1,10 +1,7 @@
-import type { StackJoin, StackUse } from '../codes/stack-use.ts';
-import { carriedBy } from '../loads/carried.ts';
 import type { Loads } from '../loads/loads.ts';
 import type { Network, PipeId } from '../network/network.ts';
-import type { FixtureId, Paths } from '../paths/paths.ts';
+import type { Paths } from '../paths/paths.ts';
 import type { Stream } from '../paths/stream.ts';
-import { type Load, noLoad, plusLoad } from '../units/quantity.ts';
 import type { Floors } from './floors.ts';
 
 /** A vertical chain, offsets included, that passes at least one storey and takes two or more fixtures. */
@@ -123,60 +120,4 @@ function findLimbs({ network, paths, loads }: StackContext, outlet: readonly boo
     limbs.push({ pipes, low: Math.min(...heights), high: Math.max(...heights) });
   }
   return limbs.sort((a, b) => a.pipes[0]! - b.pipes[0]!);
-}
-
-/** The stack as a sizing rule sees it from one of its sections. */
-export function stackUseAt(context: StackContext, stack: Stack, section: PipeId): StackUse {
-  const { loads, paths, floors, stream } = context;
-  const { from, to } = loads.pipes[section]!;
-  const byStorey = new Map<number, Load>();
-  const inside = new Set<FixtureId>(loads.order.slice(from, to));
-  for (const fixture of inside) {
-    const storey = floors.of(paths.fixtures[fixture]!);
-    byStorey.set(storey, plusLoad(byStorey.get(storey) ?? noLoad, loads.fixtures[fixture]!.load));
-  }
-  const groups = new Set([...inside].flatMap((fixture) => loads.groupOf[fixture] ?? []));
-  for (const group of groups) {
-    const { members, figure } = loads.groups[group]!;
-    const first = members[0]!;
-    const storey = floors.of(paths.fixtures[first]!);
-    if (!members.every((member) => inside.has(member) && floors.of(paths.fixtures[member]!) === storey)) continue;
-    const sum = members.reduce((total, member) => total + loads.fixtures[member]!.load, 0);
-    byStorey.set(storey, (byStorey.get(storey)! - Math.max(0, sum - figure)) as Load);
-  }
-  let heaviest = { storey: 0, load: noLoad };
-  for (const [storey, load] of [...byStorey].sort(([a], [b]) => a - b)) {
-    if (load > heaviest.load) heaviest = { storey, load };
-  }
-  return {
-    id: stack.id,
-    heaviestStorey: heaviest,
-    foot: stack.foot,
-    footLoad: loads.pipes[stack.foot]!.load,
-    footClosets: loads.pipes[stack.foot]!.closets,
-    footCounts: loads.pipes[stack.foot]!.counts,
-    carries: carriedBy(loads, stack.foot),
-    joins: stackJoins(context, stack, section),
-    allJoins: stackJoins(context, stack, stack.foot),
-    rise: stack.pipes.reduce((sum, pipe) => (paths.vertical[pipe] === true ? sum + stream.span(pipe) : sum), 0),
-  };
-}
-
-/** Heights at which drains, or fixtures at the joint itself, come into the stack down to the head of a section. */
-function stackJoins(
-  { network, stream, paths, loads }: StackContext,
-  { pipes }: Stack,
-  section: PipeId,
-): readonly StackJoin[] {
-  return pipes.slice(0, pipes.indexOf(section) + 1).flatMap((pipe, at): StackJoin[] => {
-    const joint = stream.up(pipe);
-    const before = pipes[at - 1];
-    const drains = stream.inflows[joint]!.filter((one) => one !== before);
-    const own = paths.entering[pipe]!;
-    if (drains.length === 0 && own.length === 0) return [];
-    const load =
-      drains.reduce((sum, one) => sum + loads.pipes[one]!.load, 0) +
-      own.reduce((sum, fixture) => sum + loads.fixtures[fixture]!.load, 0);
-    return [{ height: network.joints[joint]!.at?.[2] ?? null, load: load as Load }];
-  });
 }

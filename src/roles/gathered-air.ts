@@ -3,7 +3,7 @@ import { statedUses } from '../loads/uses-apart.ts';
 import type { PipeId } from '../network/network.ts';
 import type { FixtureId } from '../paths/paths.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
-import type { Load } from '../units/quantity.ts';
+import { type Load, noLoad } from '../units/quantity.ts';
 import type { BatteryContext } from './battery-context.ts';
 import type { DryRole, VentTree } from './dry-roles.ts';
 import type { Stack } from './find-stacks.ts';
@@ -83,26 +83,22 @@ export type AirTotals = Pick<VentUse, 'load' | 'largest' | 'statedUses' | 'close
 /** What the traps that breathe through a pipe come to. */
 export function airTotals(context: BatteryContext, sum: Gathered): AirTotals {
   const { loads, code, kindOf, frequencyOf } = context;
-  const traps = [...sum.traps].map((fixture) => ({ fixture, ...loads.fixtures[fixture]! }));
-  let largest = 0;
+  const counts: Record<string, number> = {};
+  for (const { id } of code.counts) counts[id] = 0;
+  const stated: { frequency: number | null; load: Load }[] = [];
+  let largest = noLoad;
   let largestTrap: NominalSize | null = null;
-  for (const { load, trap } of traps) {
-    largest = Math.max(largest, load);
+  let closets = 0;
+  for (const fixture of sum.traps) {
+    const { row, trap, load } = loads.fixtures[fixture]!;
+    if (load > largest) largest = load;
     largestTrap = largestTrap === null ? trap : code.series.larger(largestTrap, trap);
+    if (row.closet) closets++;
+    stated.push({ frequency: frequencyOf(fixture), load });
+    const kind = kindOf(fixture);
+    for (const { id, takes } of code.counts) if (takes({ kind, row, trap, load })) counts[id]!++;
   }
-  return {
-    load: loadOf(context, sum),
-    largest: largest as Load,
-    statedUses: statedUses(traps.map(({ fixture, load }) => ({ frequency: frequencyOf(fixture), load }))),
-    closets: traps.filter(({ row }) => row.closet).length,
-    counts: Object.fromEntries(
-      code.counts.map(({ id, takes }) => [
-        id,
-        traps.filter(({ fixture, ...one }) => takes({ kind: kindOf(fixture), ...one })).length,
-      ]),
-    ),
-    largestTrap,
-  };
+  return { load: loadOf(context, sum), largest, statedUses: statedUses(stated), closets, counts, largestTrap };
 }
 
 /**

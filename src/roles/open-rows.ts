@@ -4,7 +4,6 @@ import type { FixtureId } from '../paths/paths.ts';
 import { noLoad } from '../units/quantity.ts';
 import type { BatteryContext } from './battery-context.ts';
 import { wetLine } from './battery-facts.ts';
-import { stackUseAt } from './find-stacks.ts';
 import { judgeBattery } from './judge-battery.ts';
 import type { Battery } from './roles.ts';
 
@@ -151,7 +150,7 @@ function openFacts(context: BatteryContext, { fixtures, last, end }: OpenDraft, 
       }),
       endsAt: comesToStack(context, joint) ? 'stack' : 'building-drain',
     },
-    stack: stack === null || out === null ? null : stackUseAt(context, stack, stack.foot),
+    stack: stack === null || out === null ? null : context.stackUses[stack.foot]!,
     word: context.wordOf(fixtures, line),
   };
 }

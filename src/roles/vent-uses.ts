@@ -1,11 +1,12 @@
 import type { Reading } from '../codes/reading.ts';
+import type { StackUse } from '../codes/stack-use.ts';
 import type { VentUse } from '../codes/use.ts';
 import type { JointId, PipeId } from '../network/network.ts';
 import { spaceTurn } from '../paths/turns.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { BatteryContext } from './battery-context.ts';
 import type { DryRole, VentTree } from './dry-roles.ts';
-import { type Stack, stackUseAt } from './find-stacks.ts';
+import type { Stack } from './find-stacks.ts';
 import { type AirTotals, airTotals, followers, type Gathered, gatherAir } from './gathered-air.ts';
 import type { Battery, VentFoot } from './roles.ts';
 import type { StackPlace } from './stack-joints.ts';
@@ -27,10 +28,10 @@ export function ventUses(
   const { stream, stacks } = context;
   const uses = new Map<PipeId, VentUse>();
   const gathered = gatherAir(tree, roles, batteries);
-  const totals = new Map<Gathered, AirTotals>();
-  const stackUses = new Map<number, ReturnType<typeof stackUseAt>>(
-    stacks.map((stack) => [stack.id, stackUseAt(context, stack, stack.foot)]),
-  );
+  const stackUses = stacks.map(({ foot }) => context.stackUses[foot]!);
+  // What holds for a whole run of pipes, or for all pipes of one foot, is found once.
+  const runs = new Map<Gathered, VentRun>();
+  const bends = new Map<VentFoot, number>();
   const firstOfBattery = new Map<number, PipeId>();
   const ventOfStack = new Map<number, PipeId>();
   for (const pipe of tree.order) {
@@ -56,20 +57,29 @@ export function ventUses(
   for (const pipe of tree.order) {
     const it = roles.get(pipe)!;
     const sum = gathered.get(pipe)!;
-    const stack = it.stack === null ? null : stackUses.get(it.stack.id)!;
     const length = lengths.get(pipe) ?? null;
-    const total = totals.get(sum) ?? airTotals(context, sum);
-    totals.set(sum, total);
+    let run = runs.get(sum);
+    if (run === undefined) {
+      run = ventRun(context, sum, stackUses);
+      runs.set(sum, run);
+    }
+    if (it.foot !== null && !bends.has(it.foot)) bends.set(it.foot, bendsOf(context, roles, it.foot));
+    const { load, largest, statedUses, closets, counts, largestTrap } = run.air;
     uses.set(pipe, {
-      ...total,
+      load,
+      largest,
+      statedUses,
+      closets,
+      counts,
       length: length?.total ?? null,
       level: length?.level ?? null,
-      bends: it.foot === null ? null : bendsOf(context, roles, it.foot),
-      valve: sum.feet.length > 0 && sum.feet.every(({ piece }) => breathesByValve(context, piece)),
-      largestTrap: withRow(context, total.largestTrap, it, batteries),
-      stack: it.role === 'stack-vent' || it.role === 'vent-stack' ? stack : null,
+      bends: it.foot === null ? null : bends.get(it.foot)!,
+      valve: run.valve,
+      largestTrap: withRow(context, largestTrap, it, batteries),
+      stack:
+        (it.role === 'stack-vent' || it.role === 'vent-stack') && it.stack !== null ? stackUses[it.stack.id]! : null,
       stackReading: it.stack === null ? null : (ownVented.get(it.stack.id) ?? null),
-      stacks: [...sum.stacks].sort((a, b) => a - b).map((id) => stackUses.get(id)!),
+      stacks: run.stacks,
       follows:
         it.role === 'relief-vent' || it.role === 'additional-circuit-vent'
           ? (firstOfBattery.get(it.battery ?? -1) ?? null)
@@ -92,6 +102,19 @@ export function ventUses(
   }
   return uses;
 }
+
+/** What the pipes of a run in which nothing joins have in common. */
+interface VentRun {
+  readonly air: AirTotals;
+  readonly stacks: readonly StackUse[];
+  readonly valve: boolean;
+}
+
+const ventRun = (context: BatteryContext, sum: Gathered, stackUses: readonly StackUse[]): VentRun => ({
+  air: airTotals(context, sum),
+  stacks: [...sum.stacks].sort((a, b) => a - b).map((id) => stackUses[id]!),
+  valve: sum.feet.length > 0 && sum.feet.every(({ piece }) => breathesByValve(context, piece)),
+});
 
 /** Turns of a vent as long as it is what it starts as. */
 function bendsOf({ network }: BatteryContext, roles: ReadonlyMap<PipeId, DryRole>, { path, joint }: VentFoot): number {

@@ -6,7 +6,7 @@ import type { ElementId, Model } from '../model/model.ts';
 import type { Network, PipeId } from '../network/network.ts';
 import { openSky } from '../paths/open-air.ts';
 import type { Paths } from '../paths/paths.ts';
-import { type Stack, stackUseAt } from '../roles/find-stacks.ts';
+import type { Stack } from '../roles/find-stacks.ts';
 import { widestDrawn } from '../roles/main-vent.ts';
 import type { VentFoot } from '../roles/roles.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
@@ -105,7 +105,7 @@ export function checkFacts({ model, identities, network, paths, code }: Checkabl
         stack,
         vents.find(({ vent }) => vent!.leaves === 'drain'),
       ),
-      joins: stackUseAt({ network, paths, stream, loads, floors: roles.floors }, stack, stack.foot).joins,
+      joins: roles.uses[stack.foot]!.stack!.joins,
       footHeight: network.joints[stream.down(stack.foot)]!.at?.[2] ?? null,
       footCounts: loads.pipes[stack.foot]!.counts,
       footSize: sizes[stack.foot]!.size,

@@ -5,7 +5,6 @@ import type { JointId, Network, PipeId } from '../network/network.ts';
 import type { OpenSky } from '../paths/open-air.ts';
 import type { FixtureId, Paths } from '../paths/paths.ts';
 import { pointsFrom } from '../paths/turns.ts';
-import { stackUseAt } from '../roles/find-stacks.ts';
 import type { VentFoot } from '../roles/roles.ts';
 import { descentOf } from '../roles/vent-dip.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
@@ -92,13 +91,10 @@ export function checkedVents(model: Model, network: Network, paths: Paths, run: 
   function stackBelow({ joint }: VentFoot): CheckedVent['stack'] {
     let below: PipeId | null = stream.outflow[joint] ?? null;
     while (below !== null && roles.uses[below]!.stack === null) below = paths.next[below] ?? null;
-    const id = below === null ? null : (roles.uses[below]!.stack?.id ?? null);
-    if (below === null || id === null) return null;
-    const stack = roles.stacks[id]!;
-    const context = { network, paths, stream, loads, floors: roles.floors };
-    const { allJoins } = stackUseAt(context, stack, stack.foot);
+    const stack = below === null ? null : roles.uses[below]!.stack;
+    if (below === null || stack === null) return null;
     return {
-      joins: allJoins,
+      joins: stack.allJoins,
       height: heightOf(stream.up(below)),
       isOwn: roles.uses[below]!.pipe === stream.outflow[joint],
     };
