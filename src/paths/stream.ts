@@ -1,5 +1,4 @@
 import type { JointId, Network, PipeId } from '../network/network.ts';
-import type { Paths } from './paths.ts';
 
 /** Who flows in and out at each joint, and the ends of each pipe seen with the flow. */
 export interface Stream {
@@ -15,7 +14,13 @@ export interface Stream {
   span(pipe: PipeId): number;
 }
 
-export function streamOf(network: Network, paths: Pick<Paths, 'wet' | 'toward'>): Stream {
+/** By pipe id: which pipes carry water, and the joint downstream of a wet one, skyward of a dry one. */
+interface Flow {
+  readonly wet: readonly boolean[];
+  readonly toward: readonly (JointId | null)[];
+}
+
+export function streamOf(network: Network, { wet, toward }: Flow): Stream {
   const inflows: PipeId[][] = network.joints.map(() => []);
   const outflow: (PipeId | null)[] = network.joints.map(() => null);
   const dry: PipeId[][] = network.joints.map(() => []);
@@ -23,10 +28,10 @@ export function streamOf(network: Network, paths: Pick<Paths, 'wet' | 'toward'>)
     const [a, b] = network.pipes[pipe]!.ends;
     return a === joint ? b : a;
   };
-  const down = (pipe: PipeId): JointId => paths.toward[pipe] ?? network.pipes[pipe]!.ends[1];
+  const down = (pipe: PipeId): JointId => toward[pipe] ?? network.pipes[pipe]!.ends[1];
   const up = (pipe: PipeId): JointId => other(pipe, down(pipe));
   for (const { id, ends } of network.pipes) {
-    if (paths.wet[id]) {
+    if (wet[id]) {
       inflows[down(id)]!.push(id);
       outflow[up(id)] = id;
     } else {
