@@ -44,9 +44,7 @@ function identity(pipe: ResultPipe, names: ElementNames): string {
     ...(portion === undefined ? [] : [`its ${portion} portion`]),
     ...(orientation === 'unknown' ? [] : [orientation]),
     ...(length === null ? ['of unknown length'] : [`${lengthText(length)} long`]),
-    ...(slope?.value === null || slope === null
-      ? []
-      : [`falling ${slopeText(slope.value)} ${slopeGround[slope.ground] ?? ''}`]),
+    ...(slope?.value === null || slope === null ? [] : [`${fallText(slope.value)} ${slopeGround[slope.ground] ?? ''}`]),
     ...(storey === null ? [] : [`on ${shownText(storey)}`]),
     ...(system === null ? [] : [`in ${shownText(system)}`]),
   ];
@@ -130,3 +128,6 @@ function sections({ sections: parts }: ResultPipe): string[] {
 }
 
 const article = (thing: string): string => `${/^[aeiou]/.test(thing) && !/^un/.test(thing) ? 'an' : 'a'} ${thing}`;
+
+const fallText = (slope: number): string =>
+  slope === 0 ? 'level' : `${slope < 0 ? 'climbing' : 'falling'} ${slopeText(Math.abs(slope))}`;

@@ -68,7 +68,7 @@ describe('weigh', () => {
       expect(faults('weigh', JSON.parse(drainwright(['weigh', join(samples, name), '--json']).stdout)), name).toEqual(
         [],
       );
-  }, 60_000);
+  });
 });
 
 describe('report', () => {
