@@ -3,7 +3,7 @@ import { decimal, sizeText } from '../schedule/number-text.ts';
 import { planSteps } from '../schedule/plan-steps.ts';
 import type { ResultFinding, ResultPipe } from '../schedule/result.ts';
 import { counted, countedKinds, listed, plainWords } from '../schedule/trade-words.ts';
-import { reasonText, undersizedCauses } from '../schedule/undersized-text.ts';
+import { batteriesText, reasonText, undersizedCauses } from '../schedule/undersized-text.ts';
 import { type Html, html, table, tag } from './html-element.ts';
 import type { Section } from './report-section.ts';
 import type { ReportSource } from './report-source.ts';
@@ -24,8 +24,8 @@ export function undersizedSection({ result, names }: ReportSource): Section | nu
           { head: 'Pipes', cell: ({ pipes }) => countedKinds(pipes.map(({ role }) => plainWords(role))), as: 'word' },
           { head: 'Drawn', cell: ({ pipes }) => sizes(pipes, ({ modelled }) => modelled?.label ?? '?'), as: 'word' },
           { head: 'Needed', cell: ({ pipes }) => sizes(pipes, ({ required }) => sizeText(required)), as: 'word' },
-          { head: 'Why', cell: ({ root }) => reasonText(root, result.code.unit, names) },
-          { head: 'Battery', cell: ({ battery }) => battery ?? '', as: 'word' },
+          { head: 'Why', cell: (group) => reasonText(group, result.code.unit, names) },
+          { head: 'Battery', cell: batteriesText, as: 'word' },
           { head: 'Which', cell: ({ pipes }) => pipes.map(({ globalId }) => names.of(globalId)).join(', ') },
         ],
         groups,

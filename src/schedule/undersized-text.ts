@@ -56,19 +56,44 @@ export function undersizedText(result: Result): TextLine[] {
   ];
 }
 
-/** Single pipes that fall short alike, by the same row and load, are one line and not a page of them. Most pipes first. */
-export function undersizedCauses(result: Result): UndersizedGroup[] {
+/** Groups as they are told: alike ones together, with the batteries that they come from. */
+export interface UndersizedCause extends UndersizedGroup {
+  readonly batteries: readonly string[];
+  /** Of each group among them. */
+  readonly roots: readonly ResultPipe[];
+}
+
+/** Single pipes, and rows, that fall short alike, by the same row and load, are one line and not a page of them. Most pipes first. */
+export function undersizedCauses(result: Result): UndersizedCause[] {
   const groups = undersizedGroups(result);
-  const merged = new Map<string, UndersizedGroup>();
+  const merged = new Map<string, UndersizedCause>();
   for (const group of groups) {
     const { pipes, root, governing, battery, cause } = group;
     const { role, modelled, required, load } = root;
-    const isAlone = pipes.length === 1 && battery === null && governing !== null;
-    const key = isAlone
-      ? JSON.stringify([role, modelled?.label, required, load, governing.rule, governing.row, governing.asks?.label])
+    const told = governing !== null && (battery !== null || pipes.length === 1);
+    const each = pipes.map((pipe) => [pipe.role, pipe.modelled?.label, pipe.required]);
+    const key = told
+      ? JSON.stringify([
+          role,
+          modelled?.label,
+          required,
+          load,
+          root.ventLoad,
+          battery === null,
+          each,
+          governing.rule,
+          governing.row,
+          governing.asks?.label,
+        ])
       : cause;
     const known = merged.get(key);
-    merged.set(key, known === undefined ? group : { ...known, pipes: [...known.pipes, ...pipes] });
+    const batteries = [...(known?.batteries ?? []), ...(battery === null ? [] : [battery])];
+    merged.set(
+      key,
+      known === undefined
+        ? { ...group, batteries, roots: [root] }
+        : { ...known, pipes: [...known.pipes, ...pipes], batteries, roots: [...known.roots, root] },
+    );
   }
   return [...merged.values()].sort((a, b) => b.pipes.length - a.pipes.length);
 }
@@ -76,18 +101,15 @@ export function undersizedCauses(result: Result): UndersizedGroup[] {
 const mostGroups = 12;
 const mostPipes = 8;
 
-function groupText(
-  { pipes, root, battery }: UndersizedGroup,
-  place: number,
-  unit: string,
-  names: ElementNames,
-): TextLine[] {
+function groupText(group: UndersizedCause, place: number, unit: string, names: ElementNames): TextLine[] {
+  const { pipes } = group;
   const bySizes = new Map<string, ResultPipe[]>();
   for (const pipe of pipes) {
     const sizes = `Drawn ${pipe.modelled?.label ?? '?'}, needs ${sizeText(pipe.required)}`;
     bySizes.set(sizes, [...(bySizes.get(sizes) ?? []), pipe]);
   }
-  const whose = battery === null ? '' : `, ${battery}`;
+  const battery = batteriesText(group);
+  const whose = battery === '' ? '' : `, ${battery}`;
   const named = pipes.slice(0, mostPipes).map(({ globalId }) => unbroken(names.of(globalId)));
   const more = pipes.length - named.length;
   return [
@@ -98,21 +120,35 @@ function groupText(
         'error',
       ),
     ),
-    ...paragraph(reasonText(root, unit, names), '      '),
+    ...paragraph(reasonText(group, unit, names), '      '),
     ...paragraph(named.join(', ') + (more > 0 ? ` and ${more} more` : ''), '      ', 'quiet'),
   ];
 }
 
+/** `battery-1 and 4 alike`; empty where the cause lies in no row. */
+export const batteriesText = ({ batteries: [first, ...alike] }: UndersizedCause): string =>
+  first === undefined ? '' : `${first}${alike.length === 0 ? '' : ` and ${alike.length} alike`}`;
+
+/** The developed length that entered a table, or the shortest and longest of several; null: none did. */
+function lengthsOf(roots: readonly ResultPipe[]): string | null {
+  const lengths = roots.flatMap(({ developedLength }) => developedLength ?? []);
+  if (lengths.length === 0) return null;
+  const [least, most] = [lengthText(Math.min(...lengths)), lengthText(Math.max(...lengths))];
+  return least === most ? most : `${least} to ${most}`;
+}
+
 /** The rule, the load and length that chose the row, and where it is printed. */
-export function reasonText(pipe: ResultPipe, unit: string, names: ElementNames): string {
-  const { load, ventLoad, developedLength, provisional } = pipe;
+export function reasonText({ root: pipe, roots }: UndersizedCause, unit: string, names: ElementNames): string {
+  const { load, ventLoad, provisional } = pipe;
+  const lengths = lengthsOf(roots);
   const step = governingOf(pipe);
   const upstream = step?.facts.upstream;
   const entering = enteringLoad(step, ventLoad ?? load);
   const parts = [
     [...(step === undefined ? [] : [step.title]), ...(entering === null ? [] : [loadText(entering, unit)])].join(': '),
-    ...(developedLength === undefined ? [] : [`${lengthText(developedLength)} developed length`]),
+    ...(lengths === null ? [] : [`${lengths} developed length`]),
     ...holdsText(step),
+    ...closetsText(step),
     ...steeperText(step),
     ...(typeof upstream === 'string' ? [`after ${names.of(upstream)}`] : []),
     ...(step === undefined ? [] : [step.clause]),
@@ -126,6 +162,14 @@ function enteringLoad(step: TrailStep | undefined, own: LoadRange): LoadRange | 
   if (own.most > 0) return own;
   const named = step?.facts.loadUnits;
   return typeof named === 'number' ? { least: named, most: named } : null;
+}
+
+/** Where the number of water closets asks for the size: how many there are, and how many a smaller pipe takes. */
+function closetsText(step: TrailStep | undefined): string[] {
+  const { closets, closetsMost } = step?.facts ?? {};
+  return typeof closets === 'number' && typeof closetsMost === 'number'
+    ? [`${counted(closets, 'water closet')}, at most ${closetsMost}`]
+    : [];
 }
 
 /** Where the slope asks for the size: what would do in a steeper pipe. */

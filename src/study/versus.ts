@@ -87,15 +87,20 @@ const weight = ({ verdict }: PipeVerdict): number => weights[verdict];
 /** The demand that governs; where it hands on another pipe's size, that pipe's, up to where it starts. */
 function rootOf({ shown }: Outcome, section: PipeId): Side['because'] {
   let at = section;
+  let step = ownFirst(shown.sizes[at]!.governing);
   for (const seen = new Set<PipeId>(); ; ) {
-    const step =
-      shown.sizes[at]!.governing.find(({ facts }) => typeof facts.fromPipe !== 'number') ??
-      shown.sizes[at]!.governing[0];
     if (step === undefined) return null;
     const before = step.facts.fromPipe;
     seen.add(at);
     if (typeof before !== 'number' || shown.sizes[before] === undefined || seen.has(before as PipeId))
       return { step, at };
     at = before as PipeId;
+    // Where no size holds a load, the size handed on is still the one that another demand asks for.
+    const handed: NominalSize | null = step.asks;
+    step = ownFirst(shown.sizes[at]!.trail.filter(({ asks }) => asks === handed));
   }
 }
+
+/** A demand of the pipe itself before one that another pipe hands on. */
+const ownFirst = (steps: readonly Step[]): Step | undefined =>
+  steps.find(({ facts }) => typeof facts.fromPipe !== 'number') ?? steps[0];

@@ -74,8 +74,7 @@ export function ventRules(tools: Tools): SizingRule[] {
       ...followStep(rule(id), asks, {
         ...facts,
         requiredDrain: drain.size,
-        ...(length === null ? {} : { lengthM: length, stepAboveM: step.value }),
-        ...(long ? { oneSizeUp: true } : {}),
+        ...(length === null ? {} : { lengthM: length, ...(long ? { oneSizeUpPastM: step.value } : {}) }),
       }),
       trust: leastTrust(drain.trust, share.trust),
     };

@@ -33,10 +33,11 @@ export function wetRules(tools: Tools): SizingRule[] {
       reads: 'use',
       ask: (pipe) => {
         if (pipe.role !== 'wet-vent' || pipe.battery === null || pipe.battery.facts.wet.level === 0) return undefined;
-        const cell = pipe.load <= small.load.value ? small.size : large;
-        return floorStep(rule('UPC-R47'), cell, {
+        const isSmall = pipe.load <= small.load.value;
+        const limit = unitsOf(small.load.value as PipeUse['load']);
+        return floorStep(rule('UPC-R47'), isSmall ? small.size : large, {
           loadUnits: unitsOf(pipe.load),
-          smallUpToUnits: unitsOf(small.load.value as PipeUse['load']),
+          ...(isSmall ? { limitUnits: limit } : { pastUnits: limit }),
         });
       },
     },

@@ -192,6 +192,8 @@ export const frenchFactWords: Words['factWords'] = {
   leftOut: 'non comptés',
   columnSlope: 'pente de la colonne du tableau',
   slopeAssumed: 'pente supposée',
+  oneSizeUpPastM: 'un diamètre de plus au-delà de',
+  pastUnits: 'au-delà de',
   steeperSize: 'diamètre suffisant si plus pentu',
   steeperSlope: 'pente à laquelle il suffit',
   stackSize: 'colonne de chute',
