@@ -160,6 +160,8 @@ export interface CheckedVent {
   readonly serves: readonly FloodFacts[];
   /** Height at which it meets a vent that carries other air as well, metres; null: it goes on alone, or nothing is drawn. */
   readonly meets: number | null;
+  /** Height at which it first runs level while it carries its own air alone, metres; null: it does not, or nothing is drawn. */
+  readonly runsLevelAt: number | null;
   /** Where it stands on a level drain: the angle to the level at which it leaves, degrees; else null. */
   readonly leavesAt: number | null;
   readonly mouth: MouthKind | null;
@@ -198,7 +200,28 @@ export interface CheckedAccess {
     readonly element: ElementId;
     readonly size: NominalSize;
     readonly distance: number | null;
+    /** That place lies between two cleanouts; else beyond the last one. */
+    readonly isBetween: boolean;
   }[];
+  /** Level drains that turn in one fitting, no other water joining: the turn, degrees, and metres to the nearest cleanout. */
+  readonly bends: readonly {
+    readonly element: ElementId;
+    readonly turn: number;
+    readonly distance: number | null;
+  }[];
+  /**
+   * Level drains of more than one fixture, each from its upper end to where it drops or leaves: where it drains to, its
+   * length, metres from its upper end to the nearest cleanout, and the most that it turns with no cleanout between, degrees.
+   */
+  readonly runs: readonly {
+    readonly element: ElementId;
+    readonly endsAt: 'stack' | 'building-drain' | null;
+    readonly length: number;
+    readonly head: number | null;
+    readonly turn: number;
+  }[];
+  /** Urinals, and whether a cleanout opens the drain of each. */
+  readonly urinals: readonly { readonly element: ElementId; readonly hasCleanout: boolean }[];
   /** Fixture drains of kitchen sinks: their turns together, degrees, and whether a cleanout opens them. */
   readonly sinks: readonly {
     readonly element: ElementId;

@@ -29,7 +29,7 @@ export const placeSentences: Readonly<Record<PlaceCode, (given: SentenceFacts) =
   'dry-vent-too-flat': (f) =>
     has(f, 'angleDeg')
       ? `The vent ${first(f)} leaves the side of a level drain: let it leave above the drain’s centre line${f.clause}.`
-      : `${first(f)} runs too flat before it has risen above the flood level${f.clause}.`,
+      : `The vent ${first(f)} runs level ${metres(f, 'levelM')} above the floor, and ${f.about[1] ?? 'a fixture it serves'} floods at ${metres(f, 'floodsM')}: let it rise ${metres(f, 'aboveM')} above that first, else what backs up stands in it${f.clause}.`,
   'terminal-too-low': (f) =>
     `The vent ${first(f)} ends ${num(f, 'overRoofM') < 0 ? 'under the roof' : `${metres(f, 'overRoofM')} above the roof`}, at least ${metres(f, 'leastM')} above it${f.clause}.`,
   'frost-enlargement-missing': (f) =>
@@ -73,6 +73,16 @@ function missingCleanout(f: SentenceFacts): string {
       return `No cleanout stands before the trap ${first(f)} on the building drain`;
     case 'spacing':
       return `${several(num(f, 'pipes'), 'drain lies', 'drains lie')} beyond the reach of any cleanout, the farthest ${first(f)}: ${metres(f, 'distanceM')}, at most ${metres(f, 'limitM')}`;
+    case 'bend':
+      return `${several(num(f, 'pipes'), 'level drain turns', 'level drains turn')} more than ${f.number(num(f, 'limitDeg'))}° in one fitting (${first(f)}: up to ${f.number(num(f, 'turnDeg'))}°) with no cleanout within ${metres(f, 'withinM')}`;
+    case 'upper end':
+      return `${several(num(f, 'pipes'), 'level drain has', 'level drains have')} no cleanout at the upper end (${first(f)}): longer than ${metres(f, 'limitM')} one needs it`;
+    case 'turns':
+      return `${several(num(f, 'pipes'), 'level drain turns', 'level drains turn')} up to ${f.number(num(f, 'turnDeg'))}° in all since the last cleanout (${first(f)}): each ${f.number(num(f, 'limitDeg'))}° needs one more`;
+    case 'urinal':
+      return `${several(num(f, 'pipes'), 'urinal has', 'urinals have')} no cleanout (${first(f)}): each needs one above the fitting that takes it`;
+    case 'kitchen sink':
+      return `${several(num(f, 'pipes'), 'kitchen sink has', 'kitchen sinks have')} no cleanout on the drain (${first(f)}): each needs one, on the upper floors too`;
     case 'trap arm':
       return `The trap arm of ${first(f)} turns ${f.number(num(f, 'turnDeg'))}°; beyond ${f.number(num(f, 'limitDeg'))}° it needs a cleanout`;
     default:
@@ -90,6 +100,8 @@ function wanted(f: SentenceFacts): string {
   add('buildingDrains', 'on the building drain', (count) => `on each of ${count} building drains`);
   add('stacks', 'at the foot of the stack', (count) => `at the foot of ${count} stacks`);
   add('sinks', 'on the drain of a kitchen sink', (count) => `on the drains of ${count} kitchen sinks`);
+  add('upperEnds', 'at the upper end of the level drain', (count) => `at the upper ends of ${count} level drains`);
+  add('urinals', 'at the urinal', (count) => `at each of ${count} urinals`);
   add('interceptors', 'after the interceptor', (count) => `after ${count} interceptors`);
   return at.length === 0 ? 'where drains begin' : at.join(', ');
 }

@@ -32,6 +32,7 @@ export function checkedVents(model: Model, network: Network, paths: Paths, run: 
         }),
         serves: served(foot).map(floodFacts),
         meets: meets(foot),
+        runsLevelAt: runsLevelAt(foot),
         leavesAt: leavesAt(foot),
         mouth: end?.how ?? null,
         rise: from === null || to === null ? null : to - from,
@@ -71,6 +72,20 @@ export function checkedVents(model: Model, network: Network, paths: Paths, run: 
     return null;
   }
 
+  function runsLevelAt({ joint, path }: VentFoot): number | null {
+    const { role } = roles.uses[path[0]!]!;
+    let at = joint;
+    for (const pipe of path) {
+      if (roles.uses[pipe]!.role !== role) return null;
+      const from = pointsFrom(network, pipe, at)[0];
+      if (from !== undefined && paths.vertical[pipe] === false && network.pipes[pipe]!.length > shortestLevel)
+        return from[2];
+      const [a, b] = network.pipes[pipe]!.ends;
+      at = a === at ? b : a;
+    }
+    return null;
+  }
+
   function leavesAt({ joint, path }: VentFoot): number | null {
     const drains = [...stream.inflows[joint]!, stream.outflow[joint] ?? []].flat();
     if (drains.length === 0 || drains.some((pipe) => paths.vertical[pipe] !== false)) return null;
@@ -100,6 +115,9 @@ export function checkedVents(model: Model, network: Network, paths: Paths, run: 
     };
   }
 }
+
+/** A shorter level piece is a fitting that brings the vent into its wall, metres. Common practice, no source. */
+const shortestLevel = 0.3;
 
 /** Where the vents of one building drain reach the air: each mouth once, as wide as its last pipe. */
 export function mouthsOf(

@@ -2,11 +2,11 @@ import type { CheckedAccess } from '../codes/check.ts';
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import { readSize } from '../loads/read-size.ts';
 import type { Identity } from '../model/identity.ts';
-import type { Model } from '../model/model.ts';
+import type { ElementId, Model } from '../model/model.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
 import type { Paths } from '../paths/paths.ts';
 import type { Stream } from '../paths/stream.ts';
-import { spaceTurn } from '../paths/turns.ts';
+import { planTurn, spaceTurn } from '../paths/turns.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Run } from './outcome.ts';
 
@@ -43,17 +43,68 @@ export function drainAccess(facts: AccessFacts): DrainAccess {
     const down = distance.get(stream.down(id));
     // Where both ends are reached, the farthest place lies between them.
     const far = up === undefined || down === undefined ? null : (up + down + stream.span(id)) / 2;
-    return [{ element, size, distance: far }];
+    const isBetween = up !== undefined && down !== undefined && Math.abs(up - down) < stream.span(id) - nearly;
+    return [{ element, size, distance: far, isBetween }];
   });
-  return { checked: { cleanouts, drains, ...ofParts(facts, stream, opens) }, opens };
+  return {
+    checked: {
+      cleanouts,
+      drains,
+      ...levelRuns(facts, stream, opens, (joint) => distance.get(joint) ?? null),
+      ...ofParts(facts, stream, opens),
+    },
+    opens,
+  };
 }
 
-/** Sinks whose drains may need a cleanout, interceptors, and traps of the building drain. */
+/** Rounding of sums of lengths, metres. */
+const nearly = 1e-6;
+
+/** Level drains of several fixtures: where they turn, and each from its upper end on. */
+function levelRuns(
+  { network, paths, run }: AccessFacts,
+  stream: Stream,
+  opens: (joint: JointId) => boolean,
+  distance: (joint: JointId) => number | null,
+): Pick<CheckedAccess, 'bends' | 'runs'> {
+  const isLevel = (pipe: PipeId): boolean => {
+    const { drain, vertical } = run.roles.uses[pipe]!;
+    return !vertical && (drain === 'branch' || drain === 'building-drain');
+  };
+  const turnAfter = (pipe: PipeId, next: PipeId): number => planTurn(network, [pipe, next], stream.up(pipe));
+  const level = network.pipes.flatMap(({ id }) => (paths.wet[id] && isLevel(id) ? [id] : []));
+  const bends = level.flatMap((pipe): CheckedAccess['bends'][number][] => {
+    const { element } = network.pipes[pipe]!;
+    const next = paths.next[pipe] ?? null;
+    const joint = stream.down(pipe);
+    if (element === null || next === null || !isLevel(next) || stream.inflows[joint]!.length > 1) return [];
+    return [{ element, turn: turnAfter(pipe, next), distance: distance(joint) }];
+  });
+  const runs = level.flatMap((head): CheckedAccess['runs'][number][] => {
+    if (stream.inflows[stream.up(head)]!.some(isLevel)) return [];
+    let element: ElementId | null = null;
+    let [length, turn, most] = [0, 0, 0];
+    for (let pipe: PipeId | null = head; pipe !== null && isLevel(pipe); pipe = paths.next[pipe] ?? null) {
+      element ??= network.pipes[pipe]!.element;
+      length += stream.span(pipe);
+      const next: PipeId | null = paths.next[pipe] ?? null;
+      if (next === null || !isLevel(next)) break;
+      turn = opens(stream.down(pipe)) ? 0 : turn + turnAfter(pipe, next);
+      most = Math.max(most, turn);
+    }
+    const { endsAt, drain } = run.roles.uses[head]!;
+    const end = drain === 'building-drain' ? 'building-drain' : endsAt;
+    return element === null ? [] : [{ element, endsAt: end, length, head: distance(stream.up(head)), turn: most }];
+  });
+  return { bends, runs };
+}
+
+/** Sinks and urinals whose drains may need a cleanout, interceptors, and traps of the building drain. */
 function ofParts(
   { identities, network, paths, run }: AccessFacts,
   stream: Stream,
   opens: (joint: JointId) => boolean,
-): Pick<CheckedAccess, 'sinks' | 'interceptors' | 'buildingTraps'> {
+): Pick<CheckedAccess, 'sinks' | 'urinals' | 'interceptors' | 'buildingTraps'> {
   /** The pipes down to where other water joins, from the first on. */
   const alone = (start: PipeId | null): PipeId[] => {
     const list: PipeId[] = [];
@@ -72,6 +123,11 @@ function ofParts(
     if (identities[element]!.kind !== 'kitchen-sink' || first === undefined) return [];
     return [{ element, turn: spaceTurn(network, drain, stream.up(first)), hasCleanout: opened(drain) }];
   });
+  const urinals = paths.traps.flatMap(({ fixture, after }) => {
+    const { element, water } = paths.fixtures[fixture]!;
+    const drain = alone(water[after] ?? null);
+    return identities[element]!.kind === 'urinal' && drain.length > 0 ? [{ element, hasCleanout: opened(drain) }] : [];
+  });
   const interceptors = network.joints.flatMap(({ id, elements }) => {
     const element = elements.find((one) => identities[one]?.detail.style === 'interceptor');
     const drain = alone(stream.outflow[id] ?? null);
@@ -87,7 +143,7 @@ function ofParts(
     const hasCleanout = opens(id) || before.some((pipe) => opens(stream.up(pipe)));
     return [{ element, hasCleanout, freshAir: ventUpstream(id) }];
   });
-  return { sinks, interceptors, buildingTraps };
+  return { sinks, urinals, interceptors, buildingTraps };
 
   /** The first dry vent against the water along the heaviest drain. */
   function ventUpstream(trap: JointId): CheckedAccess['buildingTraps'][number]['freshAir'] {

@@ -198,7 +198,7 @@ sewer OUT`,
     const turned = (fixture: string, path: string) =>
       arm(fixture, 0.3, path)
         .findings('cleanout-missing')
-        .map(({ clause }) => clause);
+        .flatMap(({ clause, facts }) => (facts.what === 'trap arm' ? [clause] : []));
     expect(turned('urinal, washout, trap 2 in', '(south 0.3 fall 1:48) > ')).toEqual([]);
     expect(turned('urinal, washout, trap 2 in', bends)).toContain('1002.3');
   });

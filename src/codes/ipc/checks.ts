@@ -4,11 +4,13 @@ import type { NominalSize } from '../../units/nominal-size.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { Check } from '../check.ts';
 import { branchIntervals } from '../rules/branch-intervals.ts';
-import { nearFoot } from '../rules/stack-foot-checks.ts';
+import { nearFoot, yokesTooLow } from '../rules/stack-foot-checks.ts';
 import { type ArmLimits, armFaults, everyTrapVented, leastSlope, outletPipe } from '../rules/trap-checks.ts';
 import { frostCheck, islandVents, mainVentCheck, valveHeight } from '../rules/vent-checks.ts';
+import { endsOverRoof, ventLeavesUpward, ventsMeetHigh, ventsRiseFirst } from '../rules/vent-place-checks.ts';
 import { shareOf, widthOf } from '../rules/vent-sizes.ts';
 import type { Tools } from '../tools.ts';
+import { cleanouts } from './cleanouts.ts';
 import { offsetVents } from './offset-checks.ts';
 
 /** Demands that are no size: R15, R17, R39 to R43, R45, R47, R75, R76, R78, R79, R81, R85, R94, R97 to R99. */
@@ -17,6 +19,11 @@ export function checks(tools: Tools): Check[] {
   const { series, rule } = family;
   const vents = family.table('stack-vent');
   const share = family.number('vent-share', 'share');
+  const rims = {
+    usual: family.number('rim-usual', 'length').value,
+    closet: family.number('rim-closet', 'length').value,
+  };
+  const rise = family.number('vent-rise', 'length').value;
   const islands = new Set(['sink', 'kitchen-sink', 'kitchen-sink-disposer', 'lavatory']);
   return [
     slopes(tools),
@@ -24,6 +31,7 @@ export function checks(tools: Tools): Check[] {
       vertical: family.number('tailpiece-vertical', 'length').value,
       level: family.number('tailpiece-horizontal', 'length').value,
     }),
+    cleanouts(tools),
     everyTrapVented(rule('IPC-R39')),
     trapArms(tools),
     commonVents(tools),
@@ -39,6 +47,10 @@ export function checks(tools: Tools): Check[] {
             family.size('vent-least').value,
           ),
     ),
+    ventLeavesUpward(rule('IPC-R82'), family.number('vent-leaves', 'angle').value),
+    ventsRiseFirst(rule('IPC-R82'), rims, rise),
+    ventsMeetHigh(rule('IPC-R82'), rims, rise),
+    endsOverRoof(rule('IPC-R84'), family.number('terminal-above-roof', 'length').value),
     islandVents(rule('IPC-R94'), {
       allows: (row) => islands.has(row),
       allowed: 'sinks and lavatories',
@@ -160,14 +172,15 @@ function ventStacks({ family }: Tools): Check {
 function tallStacks({ family }: Tools): Check {
   const least = family.number('interval-least', 'length');
   const each = family.number('tall-stack-intervals', 'count');
+  const height = family.number('yoke-height', 'length');
   const { clause } = family.rule('IPC-R81');
   return {
     id: 'IPC-R81',
     run: ({ stacks }) =>
-      stacks.flatMap(({ elements, joins, yokeHeights }): Finding[] => {
+      stacks.flatMap(({ elements, joins, yokeHeights, yokeTops }): Finding[] => {
+        const found = yokesTooLow(yokeTops, height.value, { clause });
         const intervals = branchIntervals(joins, least.value);
-        if (intervals.length <= each.value) return [];
-        const found: Finding[] = [];
+        if (intervals.length <= each.value) return found;
         for (let at = each.value; at < intervals.length; at += each.value) {
           // Its lower end stands below the branch of the tenth interval and above that of the next.
           const above = intervals[at - 1]!.top;

@@ -2,7 +2,7 @@ import { type Finding, finding } from '../../findings/finding.ts';
 import { unitsOf } from '../../units/quantity.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { Check, CheckedStack } from '../check.ts';
-import { nearFoot } from '../rules/stack-foot-checks.ts';
+import { nearFoot, yokesTooLow } from '../rules/stack-foot-checks.ts';
 import { widthOf } from '../rules/vent-sizes.ts';
 import type { Tools } from '../tools.ts';
 
@@ -59,11 +59,7 @@ function yokeVents({ family }: Tools): Check {
     run: ({ stacks }) =>
       stacks.flatMap((stack): Finding[] => {
         const { elements, storeysServed, ties, topStorey, lowestStorey, yokes, yokeTops, offsets, joins } = stack;
-        const found = yokeTops
-          .filter((top) => top.overFloor !== null && top.overFloor < overFloor.value - coordinateMetres)
-          .map((top) =>
-            finding('yoke-vent-misplaced', top.elements, { heightM: top.overFloor, leastM: overFloor.value }, clause),
-          );
+        const found = yokesTooLow(yokeTops, overFloor.value, { clause });
         if (storeysServed <= storeys.value || isTied(ties)) return found;
         // Below the lowest storey of all stands the foot of the vent stack.
         for (let bottom = topStorey - section.value + 1; bottom > lowestStorey; bottom -= section.value) {

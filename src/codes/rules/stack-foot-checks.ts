@@ -17,6 +17,18 @@ export const nearFoot = (
     ]),
 });
 
+/** Yoke vents that join their vent stack nearer to the floor below than this, metres. */
+export const yokesTooLow = (
+  yokeTops: CheckedStack['yokeTops'],
+  least: number,
+  { clause }: Pick<RuleEntry, 'clause'>,
+): Finding[] =>
+  yokeTops
+    .filter(({ overFloor }) => overFloor !== null && overFloor < least - coordinateMetres)
+    .map(({ elements, overFloor }) =>
+      finding('yoke-vent-misplaced', elements, { heightM: overFloor, leastM: least }, clause),
+    );
+
 function tooNear(
   join: CheckedStack['firstBelow'],
   least: number | null,

@@ -2,6 +2,7 @@ import { type Finding, finding } from '../../findings/finding.ts';
 import type { RuleEntry } from '../../tables/rule-list.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { Check, CheckedVent, FloodFacts } from '../check.ts';
+import { islandDescent } from './island.ts';
 
 /** How high fixtures fill over their floor where the drawing does not say less, metres. */
 export interface RimLimits {
@@ -44,6 +45,20 @@ export const ventsMeetHigh = ({ id, clause }: RuleEntry, rims: RimLimits, above:
       const { element, floor } = flood.fixture;
       const facts = { meetsM: vent.meets - floor, floodsM: flood.height - floor, aboveM: above };
       return [finding('vent-joins-too-low', [vent.elements[0]!, element, ...vent.elements.slice(1)], facts, clause)];
+    }),
+});
+
+/** A dry vent of traps rises so far above the flood level of every fixture it serves before it runs level, metres. */
+export const ventsRiseFirst = ({ id, clause }: RuleEntry, rims: RimLimits, above: number): Check => ({
+  id,
+  run: ({ vents }) =>
+    vents.flatMap((vent): Finding[] => {
+      const { elements, traps, runsLevelAt, descent } = vent;
+      const flood = traps.length === 0 || descent >= islandDescent ? null : highestFlood(vent, rims);
+      if (flood === null || runsLevelAt === null || runsLevelAt >= flood.height + above - coordinateMetres) return [];
+      const { element, floor } = flood.fixture;
+      const facts = { levelM: runsLevelAt - floor, floodsM: flood.height - floor, aboveM: above };
+      return [finding('dry-vent-too-flat', [elements[0]!, element, ...elements.slice(1)], facts, clause)];
     }),
 });
 

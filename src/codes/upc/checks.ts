@@ -3,10 +3,13 @@ import type { Row } from '../../tables/table.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
 import { coordinateMetres, turnDegrees } from '../../units/uncertainty.ts';
 import type { Check, CheckedTrap } from '../check.ts';
+import { yokesTooLow } from '../rules/stack-foot-checks.ts';
 import { type ArmLimits, armFaults, everyTrapVented, leastSlope, outletPipe } from '../rules/trap-checks.ts';
 import { frostCheck, islandVents } from '../rules/vent-checks.ts';
+import { endsOverRoof, ventLeavesUpward, ventsMeetHigh } from '../rules/vent-place-checks.ts';
 import { widthOf } from '../rules/vent-sizes.ts';
 import type { Tools } from '../tools.ts';
+import { cleanouts } from './cleanouts.ts';
 import { sudsMakers } from './fixtures.ts';
 
 /** Demands that are no size: R22, R24, R26, R34 to R39, R61 to R63, R70, R71, R73. */
@@ -16,6 +19,7 @@ export function checks(tools: Tools): Check[] {
   return [
     slopes(tools),
     outletPipe(rule('UPC-R39'), { vertical: family.number('tailpiece-vertical', 'length').value }),
+    cleanouts(tools),
     everyTrapVented(rule('UPC-R34')),
     trapArms(tools),
     armTurns(tools),
@@ -23,6 +27,13 @@ export function checks(tools: Tools): Check[] {
     ventStacks(tools),
     ventAreas(tools),
     sudsZones(tools),
+    ventLeavesUpward(rule('UPC-R65'), family.number('vent-leaves', 'angle').value),
+    ventsMeetHigh(
+      rule('UPC-R64'),
+      { usual: family.number('rim-usual', 'length').value, closet: family.number('rim-closet', 'length').value },
+      family.number('vent-rise', 'length').value,
+    ),
+    endsOverRoof(rule('UPC-R67'), family.number('terminal-above-roof', 'length').value),
     islandVents(rule('UPC-R71'), {
       allows: (row) => row.startsWith('sink-') || row === 'lavatory',
       allowed: 'sinks and lavatories',
@@ -133,13 +144,14 @@ function commonVents({ family }: Tools): Check {
 function ventStacks({ family }: Tools): Check {
   const storeys = family.number('vent-stack-storeys', 'count');
   const each = family.number('yoke-floors', 'count');
+  const overFloor = family.number('yoke-height', 'length');
   const { rule } = family;
   return {
     id: 'UPC-R62',
     run: ({ stacks }) =>
-      stacks.flatMap(({ elements, height, ventStack, yokes, topStorey, lowestStorey }): Finding[] => {
-        if (height < storeys.value) return [];
-        const found: Finding[] = [];
+      stacks.flatMap(({ elements, height, ventStack, yokes, yokeTops, topStorey, lowestStorey }): Finding[] => {
+        const found = yokesTooLow(yokeTops, overFloor.value, rule('UPC-R63'));
+        if (height < storeys.value) return found;
         if (ventStack === null || ventStack === 'above a branch') {
           const facts = { storeysHigh: height, storeysFrom: storeys.value };
           found.push(

@@ -12,7 +12,7 @@ export const frenchPlaceSentences: Readonly<Record<PlaceCode, (given: FrenchFact
   'dry-vent-too-flat': (f) =>
     has(f, 'angleDeg')
       ? `La ventilation ${first(f)} part du côté d’une évacuation horizontale : faites-la partir au-dessus de l’axe du tuyau${f.clause}.`
-      : `${first(f)} est trop à plat avant de s’élever au-dessus du niveau de débordement${f.clause}.`,
+      : `La ventilation ${first(f)} est horizontale à ${metres(f, 'levelM')} du plancher, et ${f.about[1] ?? 'un appareil qu’elle sert'} déborde à ${metres(f, 'floodsM')} : faites-la d’abord monter de ${metres(f, 'aboveM')} au-dessus${f.clause}.`,
   'terminal-too-low': (f) =>
     `La ventilation ${first(f)} finit ${num(f, 'overRoofM') < 0 ? 'sous le toit' : `à ${metres(f, 'overRoofM')} au-dessus du toit`}, au moins ${metres(f, 'leastM')} au-dessus${f.clause}.`,
   'frost-enlargement-missing': (f) =>
@@ -38,6 +38,9 @@ export const frenchPlaceSentences: Readonly<Record<PlaceCode, (given: FrenchFact
     `Le regard de nettoyage ${first(f)} est de ${text(f, 'modelled')}, au moins ${text(f, 'least')}${has(f, 'pipe') ? ` sur un tuyau de ${text(f, 'pipe')}` : ''}${f.clause}.`,
 };
 
+const drains = (f: FrenchFacts, one: string, many: string): string =>
+  f.facts.pipes === 1 ? `1 évacuation horizontale ${one}` : `${text(f, 'pipes')} évacuations horizontales ${many}`;
+
 function missingCleanout(f: FrenchFacts): string {
   switch (f.facts.what) {
     case 'none drawn':
@@ -56,6 +59,16 @@ function missingCleanout(f: FrenchFacts): string {
       return `Aucun regard de nettoyage ne précède le siphon ${first(f)} du collecteur principal`;
     case 'spacing':
       return `${f.facts.pipes === 1 ? '1 évacuation est' : `${text(f, 'pipes')} évacuations sont`} hors d’atteinte de tout regard de nettoyage, la plus lointaine ${first(f)} : ${metres(f, 'distanceM')}, au plus ${metres(f, 'limitM')}`;
+    case 'bend':
+      return `${drains(f, 'tourne', 'tournent')} de plus de ${f.number(num(f, 'limitDeg'))}° en un raccord (${first(f)} : jusqu’à ${f.number(num(f, 'turnDeg'))}°) sans regard de nettoyage à ${metres(f, 'withinM')} ou moins`;
+    case 'upper end':
+      return `${drains(f, 'n’a pas', 'n’ont pas')} de regard de nettoyage à l’extrémité amont (${first(f)}) : au-delà de ${metres(f, 'limitM')} il en faut un`;
+    case 'turns':
+      return `${drains(f, 'tourne', 'tournent')} jusqu’à ${f.number(num(f, 'turnDeg'))}° en tout depuis le dernier regard de nettoyage (${first(f)}) : chaque ${f.number(num(f, 'limitDeg'))}° en demande un de plus`;
+    case 'urinal':
+      return `${f.facts.pipes === 1 ? '1 urinoir n’a pas' : `${text(f, 'pipes')} urinoirs n’ont pas`} de regard de nettoyage (${first(f)}) : il en faut un au-dessus du raccord de chacun`;
+    case 'kitchen sink':
+      return `${f.facts.pipes === 1 ? '1 évier de cuisine n’a pas' : `${text(f, 'pipes')} éviers de cuisine n’ont pas`} de regard de nettoyage sur l’évacuation (${first(f)}) : il en faut un à chacun, aux étages aussi`;
     case 'trap arm':
       return `Le bras de siphon de ${first(f)} tourne de ${f.number(num(f, 'turnDeg'))}°; au-delà de ${f.number(num(f, 'limitDeg'))}° il faut un regard de nettoyage`;
     default:
@@ -72,6 +85,12 @@ function wanted(f: FrenchFacts): string {
   add('buildingDrains', 'sur le collecteur principal', (count) => `sur chacun des ${count} collecteurs principaux`);
   add('stacks', 'au pied de la colonne', (count) => `au pied de ${count} colonnes`);
   add('sinks', 'sur l’évacuation d’un évier de cuisine', (count) => `sur l’évacuation de ${count} éviers de cuisine`);
+  add(
+    'upperEnds',
+    'à l’extrémité amont de l’évacuation horizontale',
+    (count) => `à l’extrémité amont de ${count} évacuations horizontales`,
+  );
+  add('urinals', 'à l’urinoir', (count) => `à chacun des ${count} urinoirs`);
   add('interceptors', 'après le séparateur', (count) => `après ${count} séparateurs`);
   return at.length === 0 ? 'où les évacuations commencent' : at.join(', ');
 }
