@@ -52,6 +52,7 @@ export function plumbingCode(
     omitSizes: omit,
     settings: chosen,
     localTables: family.localTables,
+    unchecked: [...family.rules.values()].flatMap(({ unchecked }) => unchecked ?? []),
     ruleTitle: (rule) => family.rules.get(rule.replace(/^([A-Z]+-R\d+).*$/, '$1'))?.title ?? rule,
     ...bind({ family, omit, settings: chosen }),
   };

@@ -34,6 +34,8 @@ export interface PlumbingCode {
   readonly omitSizes: ReadonlySet<NominalSize>;
   /** What the user set, defaults filled in: shown on every deliverable. */
   readonly settings: Readonly<Record<string, string | number | boolean | readonly string[]>>;
+  /** What its rules ask that no model tells, in the order of the rules. */
+  readonly unchecked: readonly string[];
   /** Local table files laid over ours. */
   readonly localTables: readonly string[];
   readonly readings: readonly ReadingRule[];
@@ -96,6 +98,7 @@ export type CodeRules = Omit<
   | 'omitSizes'
   | 'settings'
   | 'localTables'
+  | 'unchecked'
   | 'ruleTitle'
   | 'walls'
   | 'cleanouts'
@@ -129,6 +132,8 @@ export type SharedTrapRule = (
 ) => readonly boolean[];
 
 export interface FreeTrapFacts {
+  /** The largest stack, as drawn, whose water passes where the fixture drain joins; null: none, or of no known size. */
+  readonly stackAbove: NominalSize | null;
   readonly kind: FixtureKind | null;
   readonly emergency: boolean | null;
   readonly trap: NominalSize;

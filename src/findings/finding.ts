@@ -11,6 +11,7 @@ export type FindingCode =
   | 'circuit-vent-not-allowed'
   | 'relief-vent-missing'
   | 'additional-circuit-vent-missing'
+  | 'one-vent-short'
   | 'stack-vent-missing'
   | 'vent-stack-missing'
   | 'vent-stack-misplaced'
@@ -95,6 +96,7 @@ export interface WithFindings<T> {
 /** Every code has one severity. A code that CONTRACT does not list states its severity here. */
 export const severityOf: Readonly<Record<FindingCode, Severity>> = {
   oversized: 'note',
+  'one-vent-short': 'note',
   'dead-end': 'note',
   'joint-inferred': 'note',
   'frost-enlargement-missing': 'note',

@@ -108,6 +108,8 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
   'relief-vent-missing': (f) =>
     `${row(f)} is circuit vented and no relief vent, nor a vented drain that may stand in, joins downstream of its last fixture${f.clause}.`,
   'additional-circuit-vent-missing': (f) => `${row(f)} needs an additional circuit vent: ${brokenText(f)}${f.clause}.`,
+  'one-vent-short': (f) =>
+    `${row(f)} is read as ${plain(f.facts.reading)} and ${num(f, 'undersized')} of its pipes are too small for that; as ${plain(f.facts.instead)} it lacks one thing only, ${f.facts.lacks === 'relief-vent-missing' ? 'a relief vent downstream of its last fixture' : 'an additional circuit vent'}${f.clause}: draw that vent, or lay the larger pipes.`,
   'common-vent-not-allowed': (f) => `${row(f)} may not share a common vent: ${brokenText(f)}${f.clause}.`,
   'waste-stack-vent-not-allowed': (f) => `${row(f)} may not be vented by its waste stack: ${brokenText(f)}${f.clause}.`,
   'combination-not-allowed': (f) => `${row(f)} may not have a combination waste and vent: ${brokenText(f)}${f.clause}.`,
@@ -115,7 +117,9 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
   'island-vent-not-allowed': (f) =>
     `The vent ${first(f)} turns down again before it reaches open air: only ${text(f, 'allowed')} may be vented so, not a ${plain(f.facts.kind)}${f.clause}.`,
   'valve-not-allowed': (f) =>
-    `The vent ${first(f)} ends in an air admittance valve: ${has(f, 'intervalsMost') ? `its stack has ${text(f, 'intervals')} branch intervals, at most ${text(f, 'intervalsMost')} may end so; lead it to open air` : has(f, 'leastM') ? `the valve stands ${f.length(num(f, 'heightM'))} above the drain it vents, at least ${f.length(num(f, 'leastM'))}` : has(f, 'belowMost') ? `it stands ${text(f, 'below')} branch intervals below the top of the stack, and beyond ${text(f, 'belowMost')} the branch needs a relief vent` : 'no vent of the building drain reaches open air; one must'}${f.clause}.`,
+    f.facts.onlyValves === true
+      ? `Every vent of the building drain ${first(f)} ends in an air admittance valve; one must reach open air${f.clause}.`
+      : `The vent ${first(f)} ends in an air admittance valve: ${has(f, 'intervalsMost') ? `its stack has ${text(f, 'intervals')} branch intervals, at most ${text(f, 'intervalsMost')} may end so; lead it to open air` : has(f, 'leastM') ? `the valve stands ${f.length(num(f, 'heightM'))} above the drain it vents, at least ${f.length(num(f, 'leastM'))}` : has(f, 'belowMost') ? `it stands ${text(f, 'below')} branch intervals below the top of the stack, and beyond ${text(f, 'belowMost')} the branch needs a relief vent` : 'the code does not let it stand here'}${f.clause}.`,
   'valve-needs-approval': (f) =>
     `The vent ${first(f)} ends in an air admittance valve: ${f.facts.listed === true ? 'the code lets one stand only over fixtures in island counters, where frost may close a vent, in houses under renovation, or where no vent can be led out; the model does not say which' : 'this code names none'}, so the authority having jurisdiction decides${f.clause}.`,
   'stack-vent-missing': (f) =>

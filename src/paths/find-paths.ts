@@ -6,6 +6,7 @@ import type { Network } from '../network/network.ts';
 import { ventTraps } from './air.ts';
 import { dryPieces } from './dry-pieces.ts';
 import type { Paths } from './paths.ts';
+import { pumpedPipes } from './pumped.ts';
 import { orientations, pipeSlopes } from './slopes.ts';
 import { streamOf } from './stream.ts';
 import { seatTraps } from './traps.ts';
@@ -25,7 +26,7 @@ export function findPaths(
   const rank = pipeRanks(model, network);
   const vertical = orientations(model, network);
   const water = waterPaths(model, identities, network, answers, rank, findings);
-  const slopes = pipeSlopes(model, network, water, vertical, answers, findings);
+  const slopes = pipeSlopes(model, network, water, vertical, answers, pumpedPipes(identities, water), findings);
   const seats = seatTraps(model, identities, network, water, vertical);
   const dry = dryPieces(model, identities, network, water.wet, rank, findings);
   const traps = ventTraps(network, water, dry, vertical, seats);

@@ -2,7 +2,7 @@ import { type Finding, finding } from '../findings/finding.ts';
 import { keyMatches } from '../model/answer-keys.ts';
 import type { Answers } from '../model/answers.ts';
 import type { Element, ElementId, Model } from '../model/model.ts';
-import type { Network, Pipe } from '../network/network.ts';
+import type { Network, Pipe, PipeId } from '../network/network.ts';
 import { metres } from '../units/quantity.ts';
 import { coordinateMetres, directionDegrees } from '../units/uncertainty.ts';
 import type { PipeSlope } from './paths.ts';
@@ -41,6 +41,7 @@ export function pipeSlopes(
   water: Water,
   vertical: readonly (boolean | null)[],
   answers: Answers,
+  pumped: ReadonlySet<PipeId>,
   findings: Finding[],
 ): PipeSlope[] {
   const backfalls: { element: ElementId; climb: number }[] = [];
@@ -48,7 +49,7 @@ export function pipeSlopes(
     const down = water.toward[pipe.id] ?? null;
     const from = down === null ? null : down === pipe.ends[0] ? pipe.ends[1] : pipe.ends[0];
     const climb = from === null ? 0 : climbOf(pipe, from);
-    if (climb > 0 && pipe.element !== null) backfalls.push({ element: pipe.element, climb });
+    if (climb > 0 && pipe.element !== null && !pumped.has(pipe.id)) backfalls.push({ element: pipe.element, climb });
     if (vertical[pipe.id] === true) return { slope: null, uncertainty: 0, ground: 'geometry', climb: metres(climb) };
     if (pipe.laid !== undefined) {
       const slope = from === null ? Math.abs(pipe.laid) : pipe.ends[0] === from ? pipe.laid : -pipe.laid;

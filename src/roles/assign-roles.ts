@@ -69,7 +69,7 @@ export function assignRoles(facts: RoleFacts): WithFindings<Roles> {
     inStack,
     stackUses: stackUses(stackContext, stacks),
     stackAbove: stackAbove(paths, stacks),
-    free: freeTraps(network, paths, loads, code, (fixture) => {
+    free: freeTraps(network, paths, loads, code, stacks, (fixture) => {
       const { kind, detail } = identityOf(fixture);
       return { kind, emergency: detail.emergency };
     }),

@@ -2,6 +2,8 @@ import type { FreeTrapFacts, PlumbingCode } from '../codes/plumbing-code.ts';
 import type { Loads } from '../loads/loads.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
 import type { FixtureId, Paths, TrapAir } from '../paths/paths.ts';
+import type { NominalSize } from '../units/nominal-size.ts';
+import type { Stack } from './find-stacks.ts';
 import { fallAlong } from './trap-arms.ts';
 
 /** The traps that breathe through one foot, those with their own vent and those upstream of which it stands. */
@@ -34,9 +36,11 @@ export function freeTraps(
   paths: Paths,
   loads: Loads,
   code: PlumbingCode,
+  stacks: readonly Stack[],
   identity: (fixture: FixtureId) => Pick<FreeTrapFacts, 'kind' | 'emergency'>,
 ): (FreeTrap | null)[] {
   const { stream } = paths;
+  const fed = stackSizes(paths, loads, code, stacks);
   return paths.traps.map(({ fixture, after }) => {
     const { water } = paths.fixtures[fixture]!;
     const drain: PipeId[] = [];
@@ -59,6 +63,27 @@ export function freeTraps(
       trap: loads.fixtures[fixture]!.trap,
       length: drain.length === 0 ? null : drain.reduce((sum, pipe) => sum + stream.span(pipe), 0),
       fall: fall === null ? null : Math.max(0, fall),
+      stackAbove: fed.get(water[after + drain.length] ?? null) ?? null,
     });
   });
+}
+
+/** The largest stack, as drawn, whose water passes each pipe below its foot. */
+function stackSizes(
+  paths: Paths,
+  loads: Loads,
+  { series }: PlumbingCode,
+  stacks: readonly Stack[],
+): ReadonlyMap<PipeId | null, NominalSize> {
+  const found = new Map<PipeId, NominalSize>();
+  for (const { foot } of stacks) {
+    const { size } = loads.modelled[foot]!;
+    if (size === null) continue;
+    for (let pipe = paths.next[foot] ?? null; pipe !== null; pipe = paths.next[pipe] ?? null) {
+      const known = found.get(pipe);
+      if (known !== undefined && series.rank(known) >= series.rank(size)) break;
+      found.set(pipe, size);
+    }
+  }
+  return found;
 }

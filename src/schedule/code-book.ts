@@ -14,6 +14,8 @@ export interface CodeBook {
   /** Of the one code that was asked for, in the order of the book; then limits and rules. */
   readonly tables?: readonly TableEntry[];
   readonly settings?: readonly SettingEntry[];
+  /** What its rules ask that no model tells; absent where there is nothing. */
+  readonly unchecked?: readonly UncheckedRule[];
   readonly table?: ShownTable;
 }
 
@@ -27,6 +29,12 @@ export interface CodeEntry {
   readonly tables: number;
   readonly cells: TrustCount;
   readonly localTables: readonly string[];
+}
+
+export interface UncheckedRule {
+  readonly rule: string;
+  readonly clause: string;
+  readonly what: string;
 }
 
 export interface TableEntry {
@@ -50,16 +58,22 @@ export const codeList = (families: readonly Family[]): CodeBook => ({
 });
 
 /** One code: its tables with how far each is to be trusted, and what the answers file may set with it. */
-export const codeTables = (family: Family): CodeBook => ({
-  format: 'drainwright-codes',
-  version: 1,
-  code: codeEntry(family),
-  tables: allTables(family).map((table) => {
-    const { id, title, clause, rows } = table;
-    return { id, title, clause, rows: rows.length, cells: trustCount(figuresOf(table)) };
-  }),
-  settings: family.settings,
-});
+export function codeTables(family: Family): CodeBook {
+  const unchecked = [...family.rules.values()].flatMap(({ id, clause, unchecked: what }) =>
+    what === null ? [] : [{ rule: id, clause, what }],
+  );
+  return {
+    format: 'drainwright-codes',
+    version: 1,
+    code: codeEntry(family),
+    tables: allTables(family).map((table) => {
+      const { id, title, clause, rows } = table;
+      return { id, title, clause, rows: rows.length, cells: trustCount(figuresOf(table)) };
+    }),
+    settings: family.settings,
+    ...(unchecked.length === 0 ? {} : { unchecked }),
+  };
+}
 
 /** One table, every cell with value, trust and source. `name` is its id or the number it is printed under. */
 export const codeTable = (family: Family, name: string): CodeBook => ({

@@ -22,7 +22,7 @@ export function codeText(book: CodeBook): TextLine[] {
   ];
 }
 
-function oneCode({ tables = [], settings = [] }: CodeBook, code: CodeEntry): TextLine[] {
+function oneCode({ tables = [], settings = [], unchecked = [] }: CodeBook, code: CodeEntry): TextLine[] {
   const widest = Math.max(...tables.map(({ id }) => columnsOf(id))) + 2;
   const local =
     code.localTables.length === 0 ? [] : paragraph(`Local tables: ${code.localTables.join(', ')}`, '  ', 'warning');
@@ -37,11 +37,19 @@ function oneCode({ tables = [], settings = [] }: CodeBook, code: CodeEntry): Tex
     ),
     blank,
     ...heading('Settings of the answers file'),
-    ...settings.flatMap(({ id, what, values, standard, kind }) => {
+    ...settings.flatMap(({ id, what, values, standard, kind, clause, note }) => {
       const choice = values.length === 0 ? kind : values.join(' or ');
       const given = standard === null || (Array.isArray(standard) && standard.length === 0) ? 'none' : String(standard);
-      return paragraph(`${what} (${choice}; ${given} unless set)`, `  ${padded(id, 22)}`);
+      const said = note === null ? '' : `; ${note}`;
+      return paragraph(`${what} (${choice}; ${given} unless set); ${clause}${said}`, `  ${padded(id, 22)}`);
     }),
+    ...(unchecked.length === 0
+      ? []
+      : [
+          blank,
+          ...heading('Not checked, since a model does not tell it'),
+          ...unchecked.flatMap(({ clause, what }) => paragraph(`${what} (${clause})`, '  - ')),
+        ]),
   ];
 }
 

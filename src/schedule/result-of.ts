@@ -1,3 +1,4 @@
+import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
 import type { Result } from './result.ts';
 import { resultAnswers } from './result-answers.ts';
@@ -44,7 +45,7 @@ export function resultOf(outcome: Outcome, version: string): Result {
     systems: systems(outcome, index),
     findings: resultFindings(outcome, index),
     unresolved: unresolved(outcome),
-    caution,
+    caution: cautionFor(code),
   };
 }
 
@@ -55,7 +56,9 @@ function unresolved({ model, network }: Outcome): Result['unresolved'] {
   });
 }
 
-/** Shown on every deliverable. */
-export const caution =
-  'Sizes follow from the model and from tables that are not all checked against print. Undersized drains and vents let ' +
-  'sewer gas in: have a licensed person check every size, and ask the authority having jurisdiction; the local code decides.';
+/** Shown on every deliverable: what is not checked, and who decides. */
+export const cautionFor = ({ unchecked }: Pick<PlumbingCode, 'unchecked'>): string =>
+  'Sizes follow from the model and from tables that are not all checked against print. ' +
+  (unchecked.length === 0 ? '' : `Not checked, since a model does not tell it: ${unchecked.join('; ')}. `) +
+  'Undersized drains and vents let sewer gas in: have a licensed person check every size, and ask the authority having ' +
+  'jurisdiction; the local code decides.';

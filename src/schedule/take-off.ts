@@ -6,7 +6,7 @@ import type { NominalSize } from '../units/nominal-size.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
 import { csvText } from './csv-text.ts';
 import { resultIndex } from './result-index.ts';
-import { caution } from './result-of.ts';
+import { cautionFor } from './result-of.ts';
 import { plainWords } from './trade-words.ts';
 
 /** One line of the take-off: pipe of one kind, fittings or cleanouts of one kind. */
@@ -169,5 +169,5 @@ export function takeOffCsv(outcome: Outcome): string {
     metres(row.length),
     metres(row.developedLength),
   ]);
-  return csvText([head, ...rows, ['note', `${code.title}, ${code.edition} (${code.id})`], ['note', caution]]);
+  return csvText([head, ...rows, ['note', `${code.title}, ${code.edition} (${code.id})`], ['note', cautionFor(code)]]);
 }

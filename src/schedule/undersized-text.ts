@@ -1,7 +1,7 @@
 import { type ElementNames, elementNames } from './element-names.ts';
 import { decimal, lengthText, loadText, sizeText, slopeText } from './number-text.ts';
 import type { LoadRange, Result, ResultPipe, TrailStep } from './result.ts';
-import { unbroken } from './shown-text.ts';
+import { shownText, unbroken } from './shown-text.ts';
 import { blank, heading, paragraph, type TextLine } from './text-line.ts';
 import { counted, countedKinds, plainWords } from './trade-words.ts';
 
@@ -15,12 +15,19 @@ export interface UndersizedGroup {
   /** Of the root: the demand that governs, and its battery. */
   readonly governing: TrailStep | null;
   readonly battery: string | null;
+  /** What one vent would spare, in a sentence; null where it would not. */
+  readonly remedy: string | null;
 }
 
 /** Groups of the undersized pipes: most pipes first, then by the first pipe. */
 export function undersizedGroups({ findings, pipes }: Result): UndersizedGroup[] {
   const causes = new Map(
     findings.flatMap(({ code, about, facts }) => (code === 'undersized' ? [[about[0], String(facts.cause)]] : [])),
+  );
+  const remedies = new Map(
+    findings.flatMap(({ code, facts, sentence }) =>
+      code === 'one-vent-short' ? [[String(facts.battery), sentence]] : [],
+    ),
   );
   const groups = new Map<string, ResultPipe[]>();
   for (const pipe of pipes) {
@@ -31,7 +38,9 @@ export function undersizedGroups({ findings, pipes }: Result): UndersizedGroup[]
     .flatMap(([cause, group]) => {
       const root = group.find((pipe) => cause.startsWith(`${governingOf(pipe)?.rule} `)) ?? group[0];
       if (root === undefined) return [];
-      return [{ cause, pipes: group, root, governing: governingOf(root) ?? null, battery: root.battery ?? null }];
+      const battery = root.battery ?? null;
+      const remedy = battery === null ? null : (remedies.get(battery) ?? null);
+      return [{ cause, pipes: group, root, governing: governingOf(root) ?? null, battery, remedy }];
     })
     .sort((a, b) => b.pipes.length - a.pipes.length);
 }
@@ -80,6 +89,7 @@ export function undersizedCauses(result: Result): UndersizedCause[] {
           load,
           root.ventLoad,
           battery === null,
+          group.remedy === null,
           each,
           governing.rule,
           governing.row,
@@ -102,7 +112,7 @@ const mostGroups = 12;
 const mostPipes = 8;
 
 function groupText(group: UndersizedCause, place: number, unit: string, names: ElementNames): TextLine[] {
-  const { pipes } = group;
+  const { pipes, remedy } = group;
   const bySizes = new Map<string, ResultPipe[]>();
   for (const pipe of pipes) {
     const sizes = `Drawn ${pipe.modelled?.label ?? '?'}, needs ${sizeText(pipe.required)}`;
@@ -121,6 +131,7 @@ function groupText(group: UndersizedCause, place: number, unit: string, names: E
       ),
     ),
     ...paragraph(reasonText(group, unit, names), '      '),
+    ...(remedy === null ? [] : paragraph(shownText(remedy), '      ')),
     ...paragraph(named.join(', ') + (more > 0 ? ` and ${more} more` : ''), '      ', 'quiet'),
   ];
 }

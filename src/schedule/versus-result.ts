@@ -2,7 +2,6 @@ import { type Side, versus } from '../study/versus.ts';
 import type { Outcome } from '../verdicts/outcome.ts';
 import type { Result, SizeLabel, SizeRange, TrailStep, Verdict } from './result.ts';
 import { type ResultIndex, resultIndex } from './result-index.ts';
-import { caution } from './result-of.ts';
 import { resultTrail } from './result-trail.ts';
 
 /** `format: "drainwright-versus"`: the pipes of one model whose required size or verdict differs under two codes. */
@@ -83,7 +82,7 @@ export function versusResult(first: VersusInput, second: VersusInput): VersusRes
       from: sideOf(first.outcome, indices[0], from),
       to: sideOf(second.outcome, indices[1], to),
     })),
-    caution,
+    caution: first.result.caution,
   };
 }
 

@@ -75,7 +75,8 @@ export function overList(json: unknown, list: 'numbers' | 'rules', where: string
   for (const id of Object.keys(changes))
     if (!entries.some((entry) => entry.id === id))
       throw new InputError(`${overlay.where}: ${list}.${id}`, `is not in ${where}`);
-  const allowed = list === 'numbers' ? ['value', 'clause', 'trust', 'note'] : ['clause', 'trust', 'note', 'title'];
+  const allowed =
+    list === 'numbers' ? ['value', 'clause', 'trust', 'note'] : ['clause', 'trust', 'note', 'title', 'unchecked'];
   const changed = entries.map((entry) => {
     const change = changes[String(entry.id)];
     const place = `${overlay.where}: ${list}.${String(entry.id)}`;

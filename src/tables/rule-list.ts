@@ -11,6 +11,8 @@ export interface RuleEntry {
   readonly clause: string;
   readonly trust: Trust;
   readonly note: string | null;
+  /** What of it is not checked, since a model does not tell it; null where nothing is left out. */
+  readonly unchecked: string | null;
 }
 
 export function readRules(json: unknown, where: string): ReadonlyMap<string, RuleEntry> {
@@ -18,7 +20,7 @@ export function readRules(json: unknown, where: string): ReadonlyMap<string, Rul
   const rules = new Map<string, RuleEntry>();
   for (const [index, entry] of listAt(file.rules, at(where, 'rules')).entries()) {
     const place = `${where}: rules[${index}]`;
-    const fields = fieldsOf(entry, place, ['id', 'title', 'clause', 'trust'], ['note']);
+    const fields = fieldsOf(entry, place, ['id', 'title', 'clause', 'trust'], ['note', 'unchecked']);
     const text = (key: string): string => textAt(fields[key], at(place, key));
     const id = text('id');
     if (rules.has(id)) throw new InputError(at(place, 'id'), `${show(id)} stands twice`);
@@ -28,6 +30,7 @@ export function readRules(json: unknown, where: string): ReadonlyMap<string, Rul
       clause: text('clause'),
       trust: oneOf(fields.trust, at(place, 'trust'), trustWords),
       note: fields.note === undefined ? null : text('note'),
+      unchecked: fields.unchecked === undefined ? null : text('unchecked'),
     });
   }
   return rules;

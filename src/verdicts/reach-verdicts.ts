@@ -7,7 +7,7 @@ import type { ElementId, Model } from '../model/model.ts';
 import type { Network } from '../network/network.ts';
 import type { Paths } from '../paths/paths.ts';
 import type { Load } from '../units/quantity.ts';
-import { batteryFindings } from './battery-findings.ts';
+import { batteryFindings, oneVentShort } from './battery-findings.ts';
 import { checkFacts } from './check-facts.ts';
 import { comparePipes } from './compare.ts';
 import { findingsOfRuns } from './findings-of-runs.ts';
@@ -55,6 +55,7 @@ export function reachVerdicts({ findings, runs, ...facts }: VerdictFacts): Outco
       ...findings,
       ...unidentified(identities, paths, code, shown),
       ...findingsOfRuns(runs, brokenIn),
+      ...oneVentShort(network, paths, shown, pipes),
       ...sizeFindings(network, paths, code, shown, pipes),
       ...wallFindings(facts.model, network, code, pipes),
     ],

@@ -1,9 +1,9 @@
 import { describe, expect, test } from 'vitest';
-import { circuitVentedRow, times, ventedRow } from '../support/rows.ts';
+import { armOf, circuitVentedRow, hall, times, ventedRow } from '../support/rows.ts';
 import { runSketch, type SketchRun } from '../support/run-sketch.ts';
 import { tower } from '../support/towers.ts';
 
-// National Plumbing Code, drains: rules R16 to R23. Loads by Table 2.4.9.3., sizes read off the tables named.
+// National Plumbing Code, drains: rules R16 to R24. Loads by Table 2.4.9.3., sizes read off the tables named.
 const lavatory = 'lavatory, trap 1 1/4 in'; // 1
 const mop = 'mop-sink, trap 2 in'; // 2
 const drain3 = 'floor-drain, trap 3 in'; // 3
@@ -160,5 +160,41 @@ describe('R21 to R23 water closets', () => {
     expect([run.size('S3-S2'), run.size('S2-S1'), run.size('S1-SF')]).toEqual(['3 in', '3 in', '4 in']);
     // A stack is no branch: three closets do not make it 4 in, but the building drain below is.
     expect(run.size('SF-OUT')).toBe('4 in');
+  });
+});
+describe('R24 the pumped discharge of a macerating toilet: ¾ in at least, whatever its load (2.4.9.2.)', () => {
+  // It pumps up and along to a branch that a vented mop sink drains into.
+  const run = runSketch(
+    hall(
+      'A pumped toilet',
+      `closet M at 0 0 0, tank, named "Macerating toilet"
+node J1 at 3 0 0.4
+drain 3/4 in: M > U (up 0.8) > U1 (east 2.6 fall 1:200) > J1
+${armOf(1, mop, { floor: 0.6, vented: true })}
+drain 3 in: J1 > K (east 1 fall 1:50) > BF (to -1) > OUT (east 5 fall 1:50)
+sewer OUT`,
+    ),
+  );
+  test('¾ in holds, upward and almost flat too', () => {
+    expect(run.fixture('M')).toMatchObject({ kind: 'macerating-toilet', load: { most: 4 } });
+    expect([run.size('M-U'), run.size('U-U1'), run.pipe('U-U1').verdict]).toEqual(['¾ in', '¾ in', 'agrees']);
+    expect(['backfall', 'slope-too-small'].flatMap((code) => run.findings(code))).toEqual([]);
+  });
+
+  test('its vent is 1½ in (2.5.7.7.), though the table by trap would let a ¾ in outlet have 1¼ in', () => {
+    const text = hall(
+      'A pumped toilet, vented',
+      `closet M at 0 0 0.5, tank, named "Macerating toilet"
+drain 3/4 in: M > V (east 0.3 fall 1:50) > F (to -1) > OUT (east 4 fall 1:50)
+vent 1 1/4 in: V > VT (to 4.2)
+terminal VT
+sewer OUT`,
+    );
+    const vented = runSketch(text);
+    expect([vented.size('V-VT'), vented.pipe('V-VT').verdict]).toEqual(['1½ in', 'undersized']);
+  });
+
+  test('past the joint it is a load like another: 4 + 2 = 6, 2 in, no 3 in for a closet', () => {
+    expect([run.role('J1-K'), run.pipe('J1-K').load.most, run.size('J1-K')]).toEqual(['branch', 6, '2 in']);
   });
 });

@@ -101,6 +101,19 @@ sewer OUT`,
     ),
   );
 
+describe('R10 steady flow, stated by the user: 31.7 units for each litre a second (2.4.10.3.(1))', () => {
+  test.each([
+    { flow: 0.5, load: 15.85, branch: '3 in', why: 'RULES: 0.5 l/s: 15.85; more than the 12 of 2½ in' },
+    { flow: 0.1, load: 3.17, branch: '2 in', why: 'more than the 3 of 1½ in' },
+  ])('$flow l/s: $load ($why)', ({ flow, load, branch }) => {
+    const run = runSketch(ventedRow(['floor-drain, trap 2 in']), {
+      answers: { fixtures: new Map([['name:F1', { detail: { flow } }]]) },
+    });
+    expect(run.fixture('F1').load.most).toBeCloseTo(load, 1); // loads are counted in sixtieths, upward
+    expect(run.size('V1-J1')).toBe(branch);
+  });
+});
+
 describe('R11 fixtures that count zero', () => {
   test('sink 1.5 and its dishwasher 0: 1.5', () => {
     const run = onOneTrap('kitchen-sink, trap 1 1/2 in', ['dishwasher']);

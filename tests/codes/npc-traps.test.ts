@@ -111,6 +111,20 @@ drain ${trap} in: FD > FT > FJ`);
     expect(run.findings('unvented-trap')).toHaveLength(how === 'free' ? 0 : 1);
   });
 
+  test('where the setting asks it, only on a drain that ends upstream in a stack of 3 in (Ontario 2012)', () => {
+    const text = (stack: string) =>
+      tower([[], times(5, lavatory)], {
+        stack,
+        more: `node FJ from SF east 3 fall 1:50
+trap FT from FJ south 0.6 rise 1:50, 3 in
+floor-drain FD from FT to 0, untrapped
+drain 3 in: FD > FT > FJ`,
+      }).replace('OUT (east 9 fall 1:50)', 'FJ > OUT (east 9 fall 1:50)');
+    const how = (stack: string, floorDrainAtStack: boolean) =>
+      runSketch(text(stack), { answers: { settings: { floorDrainAtStack } } }).fixture('FD').ventedBy.how;
+    expect([how('3 in', true), how('2 in', true), how('2 in', false)]).toEqual(['free', 'unvented', 'free']);
+  });
+
   test('an emergency floor drain follows the same rule', () => {
     const text = `trap FT from FJ south 0.6 rise 1:50, 3 in
 floor-drain FD from FT to 0, emergency, untrapped

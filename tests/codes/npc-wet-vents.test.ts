@@ -161,6 +161,14 @@ describe('R48 offsets of a vertical wet vent', () => {
   });
 });
 
+test('R49 one size throughout: 4 units ask 2 in, also where one lavatory of 1 drains through', () => {
+  const run = runSketch(wetVentedRow(times(2, 'urinal, stall, trap 2 in'), { lavatories: 1 }));
+  // 1 + 2, the last one left out: 3, within the 4 of 2 in; a lavatory by itself would do with 1½ in.
+  expect(['LJ-LF', 'LF-J1', 'J1-J2'].map((pipe) => [run.role(pipe), run.size(pipe)])).toEqual(
+    times(3, '').map(() => ['wet-vent', '2 in']),
+  );
+});
+
 describe('R50 the load that sizes a wet vent', () => {
   test('urinals 2 + 2 + 2 behind the first one’s vent: 4 counted, 2 in', () => {
     const { run } = asWet(rowBehindVent(times(3, stall)));

@@ -2,7 +2,7 @@ import { describe, expect, test } from 'vitest';
 import { codeList, codeTable, codeTables, tableNamed } from '../../src/schedule/code-book.ts';
 import { codeText, trustText, verifyText } from '../../src/schedule/code-text.ts';
 import { columnsOf } from '../../src/schedule/shown-text.ts';
-import { pageColumns } from '../../src/schedule/text-line.ts';
+import { pageColumns, plainText } from '../../src/schedule/text-line.ts';
 import { verifyBook } from '../../src/schedule/verify-book.ts';
 import { codesOf, openCode } from '../../src/tables/open-family.ts';
 import { faults } from '../support/schemas.ts';
@@ -38,6 +38,18 @@ describe('one code', () => {
     expect(book.settings?.map(({ id }) => id)).toEqual(
       expect.arrayContaining(['omitSizes', 'assumedSlope', 'maxGap', 'sewerFloor', 'leastWetPortion', 'wetVentArms']),
     );
+  });
+  test('what its rules ask that no model tells, with the clause', () => {
+    expect(book.unchecked?.map(({ rule, clause }) => [rule, clause])).toEqual([
+      ['NPC-R13', '2.4.10.4., 2.4.10.5., 2.4.10.9.'],
+      ['NPC-R32', '2.4.7.1.'],
+      ['NPC-R35', '2.4.7.1., 2.4.7.3., 2.4.7.4.'],
+      ['NPC-R83', '2.5.6.5.(1)-(5)'],
+      ['NPC-R84', '2.5.6.5.(6)'],
+    ]);
+    const printed = plainText(codeText(book)).replace(/\s+/g, ' ');
+    expect(printed).toContain('drains that also take rain (2.4.10.4., 2.4.10.5., 2.4.10.9.)');
+    expect(printed).toContain('least building sewer (4 in or 3 in; 4 in unless set); 2.4.9.4.');
   });
   test('local tables are named', () => {
     const cells = [{ row: '15 in', column: 'load', value: 7000, trust: 'published' }];

@@ -11,6 +11,7 @@ import { frostCheck, mainVentCheck, valveHeight } from '../rules/vent-checks.ts'
 import { endsOverRoof, ventLeavesUpward, ventsMeetHigh } from '../rules/vent-place-checks.ts';
 import { widthOf } from '../rules/vent-sizes.ts';
 import type { Tools } from '../tools.ts';
+import { isPumped } from './fixtures.ts';
 import { stackChecks } from './stack-checks.ts';
 
 /** Demands that are no size: R15, R26 to R36, R39 to R42, R67, R68, R71, R72, R78, R83 to R86. */
@@ -50,6 +51,7 @@ function slopes({ family }: Tools): Check {
   const branchLarge = family.number('slope-branch-large', 'slope');
   const drain = family.table('drain');
   return leastSlope(family.rule('NPC-R26'), ({ use }, size) => {
+    if (isPumped(use)) return null;
     if (rank(size) <= rank(smallUpTo.value)) return small.value;
     if (use.drain === 'building-drain' || use.drain === 'building-sewer')
       return leastSlopeOf(drain, size)?.slope ?? null;

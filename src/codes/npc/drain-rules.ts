@@ -8,6 +8,7 @@ import { floorStep, followStep, tableStep } from '../rules/steps.ts';
 import type { SizingRule } from '../sizing-rule.ts';
 import type { Tools } from '../tools.ts';
 import type { PipeUse } from '../use.ts';
+import { isPumped } from './fixtures.ts';
 
 /** A sink of three compartments: the pipe that takes its outlets is one size larger (2.4.9.3.(2)). */
 const compartments = 3;
@@ -27,11 +28,13 @@ export function drainRules({ family, omit, settings }: Tools): SizingRule[] {
     size: family.size('closets-branch-size'),
   };
   const closetsStack = { most: family.number('closets-stack-most', 'count'), size: family.size('closets-stack-size') };
+  const discharge = family.size('macerator-discharge');
   const drainFloor = family.size('building-drain-least');
   const sewerFloor = { ...family.size('building-sewer-least'), value: settings.sewerFloor as NominalSize };
 
-  const isLevelDrain = ({ drain: role, portion, vertical }: PipeUse): boolean =>
-    role === 'branch' || (role === 'fixture-drain' && portion !== 'outlet' && !vertical);
+  const isLevelDrain = (pipe: PipeUse): boolean =>
+    pipe.drain === 'branch' ||
+    (pipe.drain === 'fixture-drain' && pipe.portion !== 'outlet' && !pipe.vertical && !isPumped(pipe));
   const isOffset = (pipe: PipeUse): boolean => pipe.offset !== null && pipe.offset >= offsetLength.value;
   const loadFacts = (pipe: PipeUse) => ({ loadUnits: unitsOf(pipe.load) });
   const slopeFacts = (pipe: PipeUse) => ({ slope: pipe.slope ?? assumedSlope, slopeAssumed: pipe.slope === null });
@@ -146,6 +149,11 @@ export function drainRules({ family, omit, settings }: Tools): SizingRule[] {
               closetsMost: closetsStack.most.value,
             })
           : undefined,
+    },
+    {
+      id: 'NPC-R24',
+      reads: 'use',
+      ask: (pipe) => (isPumped(pipe) ? floorStep(rule('NPC-R24'), discharge, {}) : undefined),
     },
     {
       id: 'NPC-R25',

@@ -5,7 +5,7 @@ import { steadyLoadBy } from '../rules/steady-load.ts';
 import type { Tools } from '../tools.ts';
 import { checks } from './checks.ts';
 import { drainRules } from './drain-rules.ts';
-import { bathroomGroup, fixtures, freeOfVent } from './fixtures.ts';
+import { bathroomGroup, fixtures, freeOfVent, macerators } from './fixtures.ts';
 import { countOnOneTrap } from './one-trap.ts';
 import { readings, whenNoneHolds } from './readings.ts';
 import { washers } from './stack-checks.ts';
@@ -44,7 +44,10 @@ export function npc(tools: Tools): CodeRules {
     islandVents: false,
     group: bathroomGroup(tools),
     row: null,
-    counts: [{ id: washers, takes: ({ kind }) => kind === 'clothes-washer' }],
+    counts: [
+      { id: washers, takes: ({ kind }) => kind === 'clothes-washer' },
+      { id: macerators, takes: ({ kind }) => kind === 'macerating-toilet' },
+    ],
     sharedTrap: countOnOneTrap,
     steadyLoad: steadyLoadBy(family.number('continuous-flow', 'factor')),
   };

@@ -5,11 +5,12 @@ import { unitsOf } from '../../units/quantity.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { VentLengthTo } from '../plumbing-code.ts';
 import type { Role } from '../role.ts';
-import { followStep, pastTableStep, tableStep } from '../rules/steps.ts';
+import { floorStep, followStep, pastTableStep, tableStep } from '../rules/steps.ts';
 import { noStepDown, shareOf } from '../rules/vent-sizes.ts';
 import type { SizesSoFar, SizingRule, Step } from '../sizing-rule.ts';
 import type { Tools } from '../tools.ts';
 import type { PipeUse } from '../use.ts';
+import { macerators } from './fixtures.ts';
 
 const byLength: ReadonlySet<Role> = new Set(['branch-vent', 'vent-header', 'circuit-vent', 'continuous-vent']);
 const byStack: ReadonlySet<Role> = new Set(['stack-vent', 'vent-stack']);
@@ -45,6 +46,7 @@ export function ventRules({ family, omit, settings }: Tools): SizingRule[] {
   const rule = family.rule;
   const { series } = family;
   const { rank } = series;
+  const pumpedVent = family.size('macerator-vent');
   const reliefMost = family.size('relief-most');
   const mainVent = family.size('main-vent');
   const tank = {
@@ -129,6 +131,15 @@ export function ventRules({ family, omit, settings }: Tools): SizingRule[] {
       },
     },
     { id: 'NPC-R82', reads: 'sizes', ask: (pipe, soFar) => ofTank(pipe, soFar) },
+    {
+      // The sump of a macerating toilet is vented by 1½ in, however small its outlet.
+      id: 'NPC-R82-pumped',
+      reads: 'use',
+      ask: ({ vent, role, portion }) =>
+        vent === null || role === 'idle' || portion === 'wet' || (vent.counts[macerators] ?? 0) === 0
+          ? undefined
+          : floorStep(rule('NPC-R82'), pumpedVent, { tank: 'macerating toilet' }),
+    },
     { id: 'NPC-R73', reads: 'sizes', ask: (pipe, soFar) => relief(pipe, soFar) },
     noStepDown(rule('NPC-R74'), series, growsToSky),
     {

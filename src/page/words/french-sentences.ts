@@ -61,6 +61,8 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
     `${group(f)} a une ventilation terminale, et aucune ventilation d’équilibrage, ni évacuation ventilée qui en tienne lieu, ne se raccorde en aval de son dernier appareil${f.clause}.`,
   'additional-circuit-vent-missing': (f) =>
     `${group(f)} exige une ventilation terminale supplémentaire : ${frenchCondition(f)}${f.clause}.`,
+  'one-vent-short': (f) =>
+    `${group(f)} est lue comme ${f.role(f.facts.reading)} et ${text(f, 'undersized')} de ses tuyaux sont trop petits pour cela; comme ${f.role(f.facts.instead)}, il ne lui manque qu’une chose, ${f.facts.lacks === 'relief-vent-missing' ? 'une ventilation d’équilibrage en aval de son dernier appareil' : 'une ventilation terminale supplémentaire'}${f.clause} : dessinez-la, ou posez les tuyaux plus grands.`,
   'common-vent-not-allowed': (f) =>
     `${group(f)} ne peut avoir une ventilation commune : ${frenchCondition(f)}${f.clause}.`,
   'waste-stack-vent-not-allowed': (f) =>
@@ -72,7 +74,9 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
   'island-vent-not-allowed': (f) =>
     `La ventilation ${first(f)} redescend avant l’air libre, ce que cet appareil ne permet pas${f.clause}.`,
   'valve-not-allowed': (f) =>
-    `La ventilation ${first(f)} finit par un clapet d’admission d’air que le code ne permet pas ici${f.clause}.`,
+    f.facts.onlyValves === true
+      ? `Toutes les ventilations du collecteur principal ${first(f)} finissent par un clapet d’admission d’air; une au moins doit atteindre l’air libre${f.clause}.`
+      : `La ventilation ${first(f)} finit par un clapet d’admission d’air que le code ne permet pas ici${f.clause}.`,
   'valve-needs-approval': (f) =>
     `La ventilation ${first(f)} finit par un clapet d’admission d’air : ${f.facts.listed === true ? 'le code ne le permet que pour un appareil d’îlot, où le gel peut fermer une ventilation, dans une maison en rénovation, ou lorsqu’aucune ventilation ne peut sortir; la maquette ne dit pas lequel' : 'ce code n’en nomme pas'}, l’autorité compétente décide${f.clause}.`,
   'stack-vent-missing': (f) =>

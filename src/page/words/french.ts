@@ -216,7 +216,7 @@ export const french: Words = {
   unit: (unit) => (unit === 'fixture units' ? 'facteurs d’évacuation' : unit),
   shortUnit: (unit) => (unit === 'fixture units' ? 'f.é.' : unit),
   caution:
-    'Une évacuation ou une ventilation trop petite laisse entrer les gaz d’égout dans le bâtiment. Les diamètres donnés ici sont une aide au calcul : le code local, l’autorité compétente et une personne titulaire d’une licence décident.',
+    'Une évacuation ou une ventilation trop petite laisse entrer les gaz d’égout dans le bâtiment. Ce qu’une maquette ne dit pas n’est pas vérifié (la commande codes l’énumère). Les diamètres donnés ici sont une aide au calcul : le code local, l’autorité compétente et une personne titulaire d’une licence décident.',
   yes: 'oui',
   no: 'non',
   and: 'et',
