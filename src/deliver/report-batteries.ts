@@ -6,6 +6,7 @@ import { conditionsText } from '../schedule/understood-text.ts';
 import type { WeighBattery } from '../schedule/weigh.ts';
 import { weighRows } from '../schedule/weigh-rows.ts';
 import { ventedText } from '../schedule/weigh-verdict.ts';
+import { englishWeigh } from '../schedule/weigh-words.ts';
 import { drawing, type Html, html, tag } from './html-element.ts';
 import type { Section } from './report-section.ts';
 import type { ReportSource } from './report-source.ts';
@@ -38,7 +39,7 @@ function comparison({ why }: ResultBattery, battery: WeighBattery): Html[] {
   const [head, ...rows] = weighRows(alternatives, undefined);
   const chosen = alternatives.findIndex((one) => one.modelled);
   const mark = (at: number): Readonly<Record<string, string>> => (at === chosen ? { class: 'chosen' } : {});
-  const cut = cavityDrawing(battery);
+  const cut = cavityDrawing(battery, englishWeigh);
   const name = `${id}: ${title}${storey === null ? '' : `, ${storey}`}`;
   return [
     tag('h3', name),

@@ -1,4 +1,5 @@
 import type { LoadRange, PipeState, SizeRange } from '../schedule/result.ts';
+import { frenchPlace } from './words/french-place.ts';
 import type { Words } from './words/words.ts';
 
 /** Numbers as the page's language writes them: a point in English, a comma in French; at most `places` decimals. */
@@ -55,3 +56,6 @@ export function sizeText(words: Words, range: SizeRange | null): string {
   if (most === undefined) return least === undefined ? words.pipe.noSize : `${least} …`;
   return least === undefined || least === most ? most : `${least} ${words.to} ${most}`;
 }
+
+/** Where something is printed, in the page's language: `Table 2.4.9.3., row 3 in`. */
+export const placeIn = (words: Words, place: string): string => (words.language === 'fr' ? frenchPlace(place) : place);

@@ -3,7 +3,7 @@ import { shownText, unbroken, wrapped } from './shown-text.ts';
 import { type SvgShape, shape, svgText, words } from './svg-shape.ts';
 import { listed } from './trade-words.ts';
 import type { WeighAlternative, WeighBattery, WeighResult, WeighWall } from './weigh.ts';
-import { obstacleText, ventedText } from './weigh-verdict.ts';
+import { englishWeigh, type WeighWords } from './weigh-words.ts';
 
 /** A drawing and the room it takes, in its own units. */
 export interface Drawing {
@@ -24,7 +24,7 @@ const quiet = '#5a5a5a';
 
 /** One SVG document: a cut through the wall at every battery, its readings side by side. Black on white, for print. */
 export function cavitySvg({ batteries, model, models, code }: WeighResult): string {
-  const drawings = batteries.map(cavityDrawing);
+  const drawings = batteries.map((battery) => cavityDrawing(battery, englishWeigh));
   const width = Math.max(2 * panel.margin + panel.width, ...drawings.map((one) => one.width));
   let y = heights.title;
   const placed = drawings.map(({ shapes, height }) => {
@@ -48,18 +48,19 @@ export function cavitySvg({ batteries, model, models, code }: WeighResult): stri
 }
 
 /** A battery's wall, cut level, under each reading: studs, pipe and fitting to scale, and the room that is left. */
-export function cavityDrawing({ id, title, storey, alternatives }: WeighBattery): Drawing {
+export function cavityDrawing(battery: WeighBattery, said: WeighWords): Drawing {
+  const { alternatives } = battery;
   const deepest = Math.max(
     89,
     ...alternatives.flatMap(({ wall }) => (wall === null ? [] : [drawnDepth(wall), wall.depth * 1000])),
   );
   const wallHeight = (deepest + 2 * shown.board) * scale + 30;
-  const name = `${id}: ${shownText(title)}${storey === null ? '' : `, ${shownText(storey)}`}`;
+  const name = shownText(said.battery(battery));
   const panels = alternatives.map((one, at) =>
     shape(
       'g',
       { transform: `translate(${panel.margin + at * (panel.width + panel.gap)} ${heights.battery})` },
-      ...panelShapes(one, wallHeight),
+      ...panelShapes(one, wallHeight, said),
     ),
   );
   return {
@@ -69,14 +70,12 @@ export function cavityDrawing({ id, title, storey, alternatives }: WeighBattery)
   };
 }
 
-function panelShapes(one: WeighAlternative, wallHeight: number): SvgShape[] {
+function panelShapes(one: WeighAlternative, wallHeight: number, said: WeighWords): SvgShape[] {
   const { reading, modelled, wall, holds, broken } = one;
-  const heading = `${ventedText(reading)}${modelled ? ', as modelled' : ''}`;
+  const heading = `${said.vented(reading)}${modelled ? `, ${said.asModelled}` : ''}`;
   const head = words({ x: 0, y: 14, 'font-size': 12, fill: ink }, heading);
   if (wall === null) {
-    const why = holds
-      ? 'No pipe of known width in the wall.'
-      : `Cannot be: ${broken.map(obstacleText).join('; ') || 'no vent finds a place'}.`;
+    const why = holds ? said.noWidth : said.cannotBe(broken.map(said.obstacle).join('; ') || said.noPlace);
     return [head, ...note(shownText(why), heights.heading + 16, holds ? quiet : fault)];
   }
   const middle = heights.heading + wallHeight / 2;
@@ -84,9 +83,9 @@ function panelShapes(one: WeighAlternative, wallHeight: number): SvgShape[] {
   return [
     head,
     ...wallShapes(wall, middle),
-    ...pipeShapes(wall, middle, fits ? ink : fault),
+    ...pipeShapes(wall, middle, fits ? ink : fault, said),
     ...dimensions(wall, middle, fits),
-    ...note(captionText(wall), heights.heading + wallHeight + 14, fits ? ink : fault),
+    ...note(captionText(wall, said), heights.heading + wallHeight + 14, fits ? ink : fault),
   ];
 }
 
@@ -142,11 +141,11 @@ function wallShapes(wall: WeighWall, middle: number): SvgShape[] {
 }
 
 /** The widest pipe, upright as a circle or along the wall as a band; beside an upright one the level pipe dashed. */
-function pipeShapes(wall: WeighWall, middle: number, colour: string): SvgShape[] {
+function pipeShapes(wall: WeighWall, middle: number, colour: string, said: WeighWords): SvgShape[] {
   const { bored, lies, outside, depth, size } = wall;
   const holes = bored === null || !hasStuds(wall) ? [] : studHoles(bored.hole * 1000, middle);
   const label = (x: number): SvgShape =>
-    words({ x, y: round(middle + 3.5), 'font-size': 10, 'text-anchor': 'middle', fill: colour }, size.label);
+    words({ x, y: round(middle + 3.5), 'font-size': 10, 'text-anchor': 'middle', fill: colour }, said.size(size.label));
   if (lies === 'along') {
     const hub = depth * 1000 * scale;
     return [
@@ -240,27 +239,30 @@ function dimensions(wall: WeighWall, middle: number, fits: boolean): SvgShape[] 
   ];
 }
 
-function captionText(wall: WeighWall): string {
+function captionText(wall: WeighWall, said: WeighWords): string {
   const { depth, judgedBy, size, laidAs, bored, stud, modelled } = wall;
   const room = drawnDepth(wall) - depth * 1000;
-  const thing = `${laidAs === undefined ? size.label : `${size.label}, laid as ${laidAs.label},`} ${judgedBy} ${decimal(depth * 1000, 1)} mm`;
-  const spare =
-    room >= -0.05 ? `${decimal(Math.max(0, room) / 2, 1)} mm left on each side` : `${decimal(-room, 1)} mm too wide`;
-  const where = modelled.length === 0 ? `in ${unbroken(stud ?? 'a chase')}` : 'in the wall as modelled';
-  const smallest = room < -0.05 ? `; smallest stud ${unbroken(stud ?? 'none')}` : '';
-  const hole =
-    bored === null
-      ? ''
-      : `; level ${bored.size.label}: a hole of ${decimal(bored.hole * 1000, 1)} mm, which ${boredStuds(bored)}`;
-  return `${thing} ${where}: ${spare}${smallest}${hole}.`;
+  return said.cut({
+    size: said.size(size.label),
+    laidAs: laidAs === undefined ? null : said.size(laidAs.label),
+    judgedBy,
+    depth: depth * 1000,
+    room: room < -0.05 ? room : Math.max(0, room),
+    isModelled: modelled.length > 0,
+    stud: joined(stud),
+    level:
+      bored === null
+        ? null
+        : {
+            size: said.size(bored.size.label),
+            hole: bored.hole * 1000,
+            stud: joined(bored.stud.other),
+            loadbearing: joined(bored.stud.loadbearing),
+          },
+  });
 }
 
-/** `studs of 38 × 140 take, loadbearing ones of 38 × 184`. */
-function boredStuds({ stud: { other, loadbearing } }: NonNullable<WeighWall['bored']>): string {
-  if (other === null) return 'no usual stud takes';
-  const most = loadbearing === null ? ', no loadbearing one' : `, loadbearing ones of ${unbroken(loadbearing)}`;
-  return `studs of ${unbroken(other)} take${loadbearing === other ? '' : most}`;
-}
+const joined = (stud: string | null): string | null => (stud === null ? null : unbroken(stud));
 
 const columns = 58;
 const note = (text: string, y: number, fill: string): SvgShape[] =>

@@ -15,6 +15,7 @@ import { countedKinds, plainWords } from './trade-words.ts';
 import type { WeighAlternative, WeighBattery, WeighObstacle, WeighResult } from './weigh.ts';
 import { addsOf, fittingsOf, pipesOf, type SizeOf, sectionsOf, tallied, wallOf } from './weigh-quantities.ts';
 import { weighVerdict } from './weigh-verdict.ts';
+import { englishWeigh } from './weigh-words.ts';
 
 /**
  * The published comparison of batteries. `result` is that of the same outcome; prices are the user's own figures. Each
@@ -62,7 +63,7 @@ function weighBattery(
     storey: index.storeyOf(elements[0]!),
     modelled: reading,
     why: result.batteries.find((one) => one.id === id)?.why ?? '',
-    verdict: weighVerdict(printed),
+    verdict: weighVerdict(printed, englishWeigh),
     alternatives: printed,
   };
 }

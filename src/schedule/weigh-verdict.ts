@@ -1,6 +1,5 @@
-import { decimal } from './number-text.ts';
-import { counted, listed } from './trade-words.ts';
 import type { WeighAlternative, WeighObstacle, WeighWall } from './weigh.ts';
+import type { WeighWords } from './weigh-words.ts';
 
 /** `wet vented`, `circuit vented`, `individually vented`; `as a waste stack` of readings that only some codes know. */
 export const ventedText = (reading: string): string =>
@@ -15,53 +14,58 @@ const otherReadings: Readonly<Record<string, string>> = {
 };
 
 /** One sentence: what governs the choice among the alternatives of a battery. */
-export function weighVerdict(alternatives: readonly WeighAlternative[]): string {
+export function weighVerdict(alternatives: readonly WeighAlternative[], words: WeighWords): string {
   const holding = alternatives.filter(({ holds }) => holds);
-  const failing = alternatives.filter(({ holds }) => !holds);
+  const failing = alternatives
+    .filter(({ holds }) => !holds)
+    .map(({ reading, broken }) => words.fails(words.vented(reading), whyNot(broken, words)))
+    .join('; ');
   const [only] = holding;
-  if (only === undefined) return `No reading holds: ${failing.map(failText).join('; ')}.`;
-  const against = failing.length === 0 ? '' : `; ${failing.map(failText).join('; ')}`;
-  if (holding.length === 1) return `It can only be ${ventedText(only.reading)}${against}.`;
-  return `${governs(holding)}${against}.`;
+  if (only === undefined) return words.noneHolds(failing);
+  const against = failing === '' ? '' : `; ${failing}`;
+  return `${holding.length === 1 ? words.only(words.vented(only.reading)) : governs(holding, words)}${against}.`;
 }
 
-/** `circuit vented it cannot be: 2 outlets below 2 in stand beside larger ones (2.5.3.1.(2))`. */
-const failText = ({ reading, broken }: WeighAlternative): string =>
-  `${ventedText(reading)} it cannot be: ${listed(broken.map(obstacleText)) || 'no vent finds a place'}`;
+/** `2 outlets below 2 in stand beside larger ones (2.5.3.1.(2))`. */
+const whyNot = (broken: readonly WeighObstacle[], words: WeighWords): string =>
+  words.list(broken.map(words.obstacle)) || words.noPlace;
 
 export const obstacleText = ({ sentence, clause }: WeighObstacle): string =>
   clause === null ? sentence : `${sentence} (${clause})`;
 
-function governs(holding: readonly WeighAlternative[]): string {
-  const pipe = `; ${pipeText(holding)}`;
+function governs(holding: readonly WeighAlternative[], words: WeighWords): string {
+  const pipe = `; ${pipeText(holding, words)}`;
+  const named = (some: readonly WeighAlternative[]): string => words.named(some.map(({ reading }) => reading));
+  const asks = (stud: string, some: readonly WeighAlternative[], size: (wall: WeighWall) => string): string =>
+    words.asks(
+      named(some),
+      stud === 'none' ? null : stud,
+      words.list([...new Set(some.map(({ wall }) => size(wall!)))]),
+    );
   const drawn = grouped(holding, ({ wall }) => (wall?.fits == null ? null : String(wall.fits)));
   const studs = grouped(holding, ({ wall }) => (wall === null ? null : (wall.stud ?? 'none')));
-  const takes = (studs ?? []).map(([stud, some]) => {
-    const sizes = listed([...new Set(some.map(({ wall }) => laidText(wall!)))]);
-    return `${named(some)} asks for ${stud === 'none' ? 'more than any usual stud' : `studs of ${stud}`} (${sizes})`;
-  });
+  const takes = (studs ?? []).map(([stud, some]) =>
+    asks(stud === 'none' ? stud : words.studsOf(stud), some, (wall) => laidText(wall, words)),
+  );
   if (drawn !== null) {
     const [fits, not] = ['true', 'false'].map((said) => drawn.find(([one]) => one === said)![1]);
     const more = takes.length === 0 ? '' : `; ${takes.join(', ')}`;
-    return `The wall as modelled governs: ${named(fits!)} the pipes fit it, ${named(not!)} they do not${more}${pipe}`;
+    return `${words.modelledWall(named(fits!), named(not!))}${more}${pipe}`;
   }
-  if (studs !== null) return `The wall governs: ${takes.join(', ')}${pipe}`;
+  if (studs !== null) return `${words.wall(takes.join(', '))}${pipe}`;
   const bored = grouped(holding, ({ wall }) => (wall?.bored == null ? null : (boredStud(wall) ?? 'none')));
   if (bored !== null) {
-    const asks = bored.map(([stud, some]) => {
-      const sizes = listed([...new Set(some.map(({ wall }) => wall!.bored!.size.label))]);
-      return `${named(some)} asks for ${stud === 'none' ? 'more than any usual stud' : stud} (${sizes})`;
-    });
-    return `The wall governs, its studs bored by level pipes: ${asks.join(', ')}${pipe}`;
+    const each = bored.map(([stud, some]) => asks(stud, some, (wall) => words.size(wall.bored!.size.label)));
+    return `${words.bored(each.join(', '))}${pipe}`;
   }
   const below = grouped(holding, ({ largest }) => largest?.underFloor?.label ?? null);
   if (below !== null)
-    return `The pipe under the floor governs: ${below.map(([size, some]) => `${size} ${named(some)}`).join(', ')}${pipe}`;
-  return `The largest pipes are the same either way: the amount of pipe governs${pipe}`;
+    return `${words.floor(below.map(([size, some]) => `${words.size(size)} ${named(some)}`).join(', '))}${pipe}`;
+  return `${words.onlyPipe}${pipe}`;
 }
 
-const laidText = ({ size, laidAs }: WeighWall): string =>
-  laidAs === undefined ? size.label : `${size.label}, laid as ${laidAs.label}`;
+const laidText = ({ size, laidAs }: WeighWall, words: WeighWords): string =>
+  laidAs === undefined ? words.size(size.label) : words.laidAs(words.size(size.label), words.size(laidAs.label));
 
 /** As the modelled walls bear load or not; as if they bore none where nobody says. */
 const boredStud = ({ bored, modelled }: WeighWall): string | null =>
@@ -81,22 +85,17 @@ function grouped(
   return groups.size > 1 ? [...groups] : null;
 }
 
-/** `circuit or individually vented`. */
-const named = (some: readonly WeighAlternative[]): string =>
-  some.every(({ reading }) => ventedText(reading).endsWith(' vented'))
-    ? `${some.map(({ reading }) => ventedText(reading).replace(/ vented$/, '')).join(' or ')} vented`
-    : some.map(({ reading }) => ventedText(reading)).join(' or ');
-
 export const totalLength = ({ pipes }: WeighAlternative): number => pipes.reduce((sum, { length }) => sum + length, 0);
 
-/** `wet vented needs the least pipe; circuit vented 5.7 m and 1 cleanout more`. */
-function pipeText(holding: readonly WeighAlternative[]): string {
+/** `wet vented needs the least pipe, circuit vented 5.7 m and 1 cleanout more`. */
+function pipeText(holding: readonly WeighAlternative[], words: WeighWords): string {
   const [least, ...others] = [...holding].sort((a, b) => totalLength(a) - totalLength(b));
-  const more = others.map((one) => {
-    const rods = one.cleanouts.length - least!.cleanouts.length;
-    const length = decimal(totalLength(one) - totalLength(least!), 1);
-    const fewer = rods < 0 ? `, ${counted(-rods, 'cleanout')} fewer` : '';
-    return `${ventedText(one.reading)} ${length} m${rods > 0 ? ` and ${counted(rods, 'cleanout')}` : ''} more${fewer}`;
-  });
-  return `${ventedText(least!.reading)} needs the least pipe, ${more.join(', ')}`;
+  const more = others.map((one) =>
+    words.more(
+      words.vented(one.reading),
+      totalLength(one) - totalLength(least!),
+      one.cleanouts.length - least!.cleanouts.length,
+    ),
+  );
+  return words.leastPipe(words.vented(least!.reading), more);
 }

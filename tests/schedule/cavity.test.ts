@@ -1,6 +1,7 @@
 import { expect, test } from 'vitest';
 import { cavityDrawing, cavitySvg } from '../../src/schedule/cavity.ts';
 import type { SvgShape } from '../../src/schedule/svg-shape.ts';
+import { englishWeigh } from '../../src/schedule/weigh-words.ts';
 import { sampleText, weighSketch } from '../support/weigh-sketch.ts';
 
 const flat = (shapes: readonly SvgShape[]): SvgShape[] => shapes.flatMap((one) => [one, ...flat(one.children ?? [])]);
@@ -8,7 +9,7 @@ const circles = (shapes: readonly SvgShape[]): number[] =>
   flat(shapes).flatMap(({ tag, attributes }) => (tag === 'circle' ? [Number(attributes.r)] : []));
 
 test('pipe and fitting to one scale: half a unit for a millimetre of the wall', () => {
-  const { shapes } = cavityDrawing(weighSketch(sampleText('hall-wet-vented')).battery());
+  const { shapes } = cavityDrawing(weighSketch(sampleText('hall-wet-vented')).battery(), englishWeigh);
   // Wet vented 4 in: fitting 127.5, pipe 114.3 mm (ASTM D2665); circuit and individual 1½ in: 56.6 and 48.3 mm.
   expect(circles(shapes)).toEqual([127.5, 114.3, 56.6, 48.3, 56.6, 48.3].map((mm) => Math.round(mm * 25) / 100));
   // The modelled wall has studs of 38 × 140: two a panel.
@@ -26,7 +27,7 @@ test('what does not fit says by how much, in words as well as in colour', () => 
 });
 
 test('a reading that cannot be has its reason in place of a picture', () => {
-  const { shapes } = cavityDrawing(weighSketch(sampleText('bathroom-group')).battery());
+  const { shapes } = cavityDrawing(weighSketch(sampleText('bathroom-group')).battery(), englishWeigh);
   const said = flat(shapes)
     .flatMap(({ text }) => text ?? [])
     .join(' ');

@@ -1,4 +1,5 @@
 import type { BrokenCondition, ResultBattery } from '../../schedule/result.ts';
+import { placeIn } from '../format.ts';
 import { countedKind, named, phrase, ruleName } from '../words/words.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
@@ -106,6 +107,6 @@ function brokenLine(desk: Desk, broken: BrokenCondition): HTMLElement {
     {},
     capital(ruleName(words, broken)),
     why === '' ? ' ' : `${words.colon}${shown(why)} `,
-    make('span', { class: 'clause' }, clause),
+    make('span', { class: 'clause' }, placeIn(words, clause)),
   );
 }

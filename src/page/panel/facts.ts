@@ -1,5 +1,5 @@
 import type { Building } from '../building.ts';
-import { decimal, lengthText, sizeLabel, slopeText } from '../format.ts';
+import { decimal, lengthText, placeIn, slopeText } from '../format.ts';
 import { named, phrase, type Words } from '../words/words.ts';
 import { nameOfId } from './names.ts';
 
@@ -69,5 +69,5 @@ function otherText(building: Building, words: Words, value: unknown): string {
     return texts.join(', ') + (value.length > mostListed ? ` … (${value.length})` : '');
   }
   if (typeof value !== 'string') return String(JSON.stringify(value));
-  return nameOfId(building, words, / in$/.test(value) ? sizeLabel(words, value) : phrase(words, value));
+  return nameOfId(building, words, /^up to | in\b/.test(value) ? placeIn(words, value) : phrase(words, value));
 }

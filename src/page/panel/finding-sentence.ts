@@ -2,7 +2,7 @@ import type { Facts } from '../../findings/finding.ts';
 import { brokenText } from '../../findings/sentences.ts';
 import type { ResultFinding } from '../../schedule/result.ts';
 import { visible } from '../../schedule/shown-text.ts';
-import { decimal, lengthText, sizeLabel, slopeText } from '../format.ts';
+import { decimal, lengthText, placeIn, sizeLabel, slopeText } from '../format.ts';
 import { frenchCondition } from '../words/french-conditions.ts';
 import type { FrenchFacts } from '../words/french-facts.ts';
 import { frenchSentence } from '../words/french-sentences.ts';
@@ -16,7 +16,7 @@ export function findingSentence(desk: Desk, finding: ResultFinding): string {
   const { building, words } = desk;
   if (words.language === 'en') return visible(finding.sentence);
   const about = finding.about.map((id) => nameOfId(building, words, id));
-  const clause = finding.clause === null ? '' : ` (${building.result.code.id}, ${finding.clause})`;
+  const clause = finding.clause === null ? '' : ` (${building.result.code.id}, ${placeIn(words, finding.clause)})`;
   const sentence = frenchSentence(finding.code, { ...wordedFacts(desk, finding.facts), about, clause });
   if (sentence !== null) return visible(sentence);
   const facts = factsLine(building, words, finding.facts);

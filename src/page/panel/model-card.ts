@@ -1,5 +1,5 @@
 import { lengthText } from '../format.ts';
-import { named } from '../words/words.ts';
+import { named, phrase } from '../words/words.ts';
 import { copyButton, pipeButton } from './chips.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
@@ -26,7 +26,7 @@ export function modelCard(desk: Desk): HTMLElement {
         { class: 'facts' },
         line(words.model.file, modelText(shown(model.file))),
         line(words.model.schema, shown(model.schema)),
-        line(words.model.unit, shown(model.lengthUnit)),
+        line(words.model.unit, shown(phrase(words, model.lengthUnit))),
         line(
           words.model.sha256,
           make('code', { class: 'hash' }, model.sha256),
@@ -68,7 +68,9 @@ export function modelCard(desk: Desk): HTMLElement {
             [words.model.fittings, counts.fittings],
             [words.model.fixtures, counts.fixtures],
             [words.model.terminals, counts.terminals],
-            ...leftOut.map(([reason, of]) => [`${words.model.leftOut}: ${reason}`, of] as const),
+            ...leftOut.map(
+              ([reason, of]) => [`${words.model.leftOut}${words.colon}${phrase(words, reason)}`, of] as const,
+            ),
             [words.model.unresolved.toLowerCase(), counts.unresolved],
           ] as const
         ).map(([label, count]) => make('tr', {}, make('th', { scope: 'row' }, label), make('td', {}, String(count)))),
@@ -116,7 +118,7 @@ export function modelCard(desk: Desk): HTMLElement {
                 make(
                   'li',
                   { class: 'finding-row' },
-                  modelText(`${nameOfId(building, words, globalId)} #${stepId}: ${shown(reason)}`),
+                  modelText(`${nameOfId(building, words, globalId)} #${stepId}: ${shown(phrase(words, reason))}`),
                 ),
               ),
           ),

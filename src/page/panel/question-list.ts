@@ -1,4 +1,5 @@
 import type { Question } from '../../schedule/question.ts';
+import { kindName, named, phrase } from '../words/words.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
 import { fill } from './fill.ts';
@@ -39,6 +40,12 @@ function questionItem(desk: Desk, { about, ask, weight, choices, answer }: Quest
       : fixture !== undefined
         ? () => desk.chooseFixture(fixture)
         : null;
+  const choice = (one: string): string =>
+    answer.field === 'kind'
+      ? kindName(words, one)
+      : answer.part === 'batteries'
+        ? named(words.roles, one)
+        : shown(phrase(words, one));
   const place = [answer.part, answer.key, answer.field].filter((part) => part !== null).join(' › ');
   return make(
     'li',
@@ -48,7 +55,7 @@ function questionItem(desk: Desk, { about, ask, weight, choices, answer }: Quest
       : make('button', { type: 'button', class: 'question-text', onclick: open }, text),
     make('p', { class: 'question-weight' }, words.questions.weight(weight)),
     choices.length > 0 &&
-      make('p', { class: 'quiet' }, `${words.questions.choices}${words.colon}${choices.join(', ')}`),
+      make('p', { class: 'quiet' }, `${words.questions.choices}${words.colon}${choices.map(choice).join(', ')}`),
     make('p', { class: 'quiet' }, `${words.questions.where}${words.colon}`, make('code', {}, modelText(shown(place)))),
   );
 }

@@ -1,6 +1,6 @@
 import { placeText } from '../../schedule/demand-text.ts';
 import type { PipeState, TrailStep } from '../../schedule/result.ts';
-import { decimal, lengthText, oneSize, shortLoad, sizeLabel } from '../format.ts';
+import { decimal, lengthText, oneSize, placeIn, shortLoad } from '../format.ts';
 import { ruleName } from '../words/words.ts';
 import type { Desk } from './desk.ts';
 import { nameOfId } from './names.ts';
@@ -22,7 +22,5 @@ export function reasonText({ building, words }: Desk, pipe: PipeState, step: Tra
 
 /** `2.4.10.6., Table 2.4.10.6.-B, row 3 in` in the page's language. */
 export function clauseText(words: Desk['words'], step: TrailStep): string {
-  if (words.language === 'en') return placeText(step);
-  const place = placeText(step).replace(/Table /g, 'tableau ');
-  return place.replace(/, row (.*)$/, (_, row: string) => `, ligne ${sizeLabel(words, row)}`);
+  return placeIn(words, placeText(step));
 }

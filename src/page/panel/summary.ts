@@ -1,7 +1,7 @@
 import type { Verdict } from '../../schedule/result.ts';
 import { undersizedGroups } from '../../schedule/undersized-text.ts';
 import { planWords } from '../words/plan-words.ts';
-import { countedKind } from '../words/words.ts';
+import { countedKind, phrase } from '../words/words.ts';
 import { verdictMark } from './chips.ts';
 import type { Desk } from './desk.ts';
 import { make } from './element.ts';
@@ -72,7 +72,11 @@ function leftOutLine({ building, words }: Desk): HTMLElement | null {
   const left = Object.entries(building.result.counts.leftOut).sort(([a, m], [b, n]) => n - m || (a < b ? -1 : 1));
   const count = left.reduce((sum, [, of]) => sum + of, 0);
   if (count === 0) return null;
-  return make('li', {}, words.summary.leftOut(count, left.map(([reason, of]) => `${of} ${reason}`).join(', ')));
+  return make(
+    'li',
+    {},
+    words.summary.leftOut(count, left.map(([reason, of]) => `${of} ${phrase(words, reason)}`).join(', ')),
+  );
 }
 
 const order: readonly Verdict[] = ['undersized', 'unknown', 'oversized', 'agrees'];

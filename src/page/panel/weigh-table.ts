@@ -1,13 +1,16 @@
 import { cavityDrawing } from '../../schedule/cavity.ts';
 import { visible } from '../../schedule/shown-text.ts';
 import type { WeighAlternative, WeighBattery } from '../../schedule/weigh.ts';
-import { totalLength } from '../../schedule/weigh-verdict.ts';
-import { decimal, lengthText, oneSize } from '../format.ts';
+import { totalLength, weighVerdict } from '../../schedule/weigh-verdict.ts';
+import { englishWeigh, type WeighWords } from '../../schedule/weigh-words.ts';
+import { decimal, lengthText, oneSize, placeIn, sizeLabel } from '../format.ts';
 import { shapeElement } from '../riser/shape-element.ts';
-import { named } from '../words/words.ts';
+import { frenchWeigh } from '../words/french-weigh.ts';
+import { countedKind, named, ruleName } from '../words/words.ts';
 import type { Desk } from './desk.ts';
 import { make, makeSvg, modelText } from './element.ts';
-import { capital } from './names.ts';
+import { conditionText } from './finding-sentence.ts';
+import { batteryName, capital } from './names.ts';
 
 /** What each reading of a battery would cost: sizes, lengths, cleanouts, the wall it asks for; and a cut through it. */
 export function weighTable(desk: Desk, battery: WeighBattery): HTMLElement {
@@ -24,7 +27,8 @@ export function weighTable(desk: Desk, battery: WeighBattery): HTMLElement {
     (value: (one: WeighAlternative) => string) =>
     (one: WeighAlternative): string =>
       one.largest === null ? '–' : value(one);
-  const drawing = cavityDrawing(battery);
+  const said = weighWords(desk);
+  const drawing = cavityDrawing(battery, said);
   return make(
     'div',
     { class: 'weighed' },
@@ -83,7 +87,11 @@ export function weighTable(desk: Desk, battery: WeighBattery): HTMLElement {
         ),
       ),
     ),
-    words.language === 'en' && make('p', {}, modelText(visible(battery.verdict))),
+    make(
+      'p',
+      {},
+      modelText(visible(words.language === 'en' ? battery.verdict : capital(weighVerdict(alternatives, said)))),
+    ),
     make(
       'details',
       {},
@@ -99,7 +107,6 @@ export function weighTable(desk: Desk, battery: WeighBattery): HTMLElement {
             height: drawing.height,
             role: 'img',
             'aria-label': words.weigh.cut,
-            lang: 'en',
           },
           makeSvg('rect', { width: drawing.width, height: drawing.height, fill: '#ffffff' }),
           ...drawing.shapes.map(shapeElement),
@@ -107,6 +114,29 @@ export function weighTable(desk: Desk, battery: WeighBattery): HTMLElement {
       ),
     ),
   );
+}
+
+function weighWords(desk: Desk): WeighWords {
+  const { building, words } = desk;
+  if (words.language === 'en') return englishWeigh;
+  const obstacle: WeighWords['obstacle'] = ({ rule, title, facts, clause }) => {
+    const what =
+      conditionText(desk, facts) ?? (rule === null || title === null ? '' : ruleName(words, { rule, title }));
+    const reason = what === '' ? words.weigh.unnamed : what;
+    return clause === null ? reason : `${reason} (${placeIn(words, clause)})`;
+  };
+  const battery: WeighWords['battery'] = ({ id, fixtures, storey }) => {
+    const kinds = new Map<string | null, number>();
+    for (const fixture of fixtures) {
+      const kind = building.result.fixtures[building.fixtureAt.get(fixture) ?? -1]?.kind ?? null;
+      kinds.set(kind, (kinds.get(kind) ?? 0) + 1);
+    }
+    const counted = [...kinds].map(([kind, count]) => countedKind(words, kind, count)).join(', ');
+    return [`${capital(words.findings.ofBattery(batteryName(id)))}${words.colon}${counted}`, storey]
+      .filter((part) => part !== null)
+      .join(', ');
+  };
+  return frenchWeigh(obstacle, battery, (label) => sizeLabel(words, label));
 }
 
 function added({ words }: Desk, { adds }: WeighAlternative): string {

@@ -139,6 +139,7 @@ export const englishPanel: PanelWords = {
     depth: 'Wall depth needed',
     stud: 'Studs that take it',
     noStud: 'none usual',
+    unnamed: 'a condition is not met',
     cut: 'Cut through the wall, to scale',
   },
 };

@@ -5,6 +5,12 @@ import type { Words } from './words.ts';
 const some = (count: number, one: string, many: string): string =>
   `${count.toLocaleString('en-CA')} ${count === 1 ? one : many}`;
 
+const shortUnits: Readonly<Record<string, string>> = {
+  'fixture units': 'FU',
+  'drainage fixture units': 'DFU',
+  'l/s of discharge units': 'l/s',
+};
+
 export const english: Words = {
   language: 'en',
   page: {
@@ -198,7 +204,7 @@ export const english: Words = {
   rules: {},
   factWords: {},
   unit: (unit) => unit,
-  shortUnit: (unit) => (unit === 'fixture units' ? 'FU' : unit),
+  shortUnit: (unit) => shortUnits[unit] ?? unit,
   caution: '',
   yes: 'yes',
   no: 'no',

@@ -145,6 +145,7 @@ export const frenchPanel: PanelWords = {
     depth: 'Profondeur de mur exigée',
     stud: 'Poteaux qui le reçoivent',
     noStud: 'aucun courant',
+    unnamed: 'une condition n’est pas tenue',
     cut: 'Coupe à travers le mur, à l’échelle',
   },
 };

@@ -14,6 +14,13 @@ const some = (count: number, one: string, many: string): string =>
   `${count.toLocaleString('fr-CA')} ${count < 2 ? one : many}`;
 
 /** Trade words as the National Plumbing Code's own French edition has them. */
+/** Whole and short. */
+const frenchUnits: Readonly<Record<string, readonly [whole: string, short: string]>> = {
+  'fixture units': ['facteurs d’évacuation', 'f.é.'],
+  'drainage fixture units': ['facteurs d’évacuation', 'f.é.'],
+  'l/s of discharge units': ['l/s d’unités d’évacuation', 'l/s'],
+};
+
 export const french: Words = {
   language: 'fr',
   page: {
@@ -213,8 +220,8 @@ export const french: Words = {
   codes: frenchCodes,
   rules: frenchRules,
   factWords: frenchFactWords,
-  unit: (unit) => (unit === 'fixture units' ? 'facteurs d’évacuation' : unit),
-  shortUnit: (unit) => (unit === 'fixture units' ? 'f.é.' : unit),
+  unit: (unit) => frenchUnits[unit]?.[0] ?? unit,
+  shortUnit: (unit) => frenchUnits[unit]?.[1] ?? unit,
   caution:
     'Une évacuation ou une ventilation trop petite laisse entrer les gaz d’égout dans le bâtiment. Ce qu’une maquette ne dit pas n’est pas vérifié (la commande codes l’énumère). Les diamètres donnés ici sont une aide au calcul : le code local, l’autorité compétente et une personne titulaire d’une licence décident.',
   yes: 'oui',

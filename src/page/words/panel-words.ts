@@ -125,6 +125,7 @@ export interface PanelWords {
       | 'depth'
       | 'stud'
       | 'noStud'
+      | 'unnamed'
       | 'cut',
       string
     >

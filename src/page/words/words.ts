@@ -184,7 +184,8 @@ export function kindName(words: Words, kind: string | null): string {
 
 /** What a rule is about: its own title, or the language's name for it where it has one. */
 export function ruleName(words: Words, { rule, title }: { readonly rule: string; readonly title: string }): string {
-  return (Object.hasOwn(words.rules, rule) ? words.rules[rule] : undefined) ?? title;
+  const own = (id: string): string | undefined => (Object.hasOwn(words.rules, id) ? words.rules[id] : undefined);
+  return own(rule) ?? own(rule.replace(/^([A-Z]+-R\d+).*$/, '$1')) ?? title;
 }
 
 /** A sentence of the result that its maker took from a fixed list, in the page's language where the list is known. */
