@@ -115,7 +115,7 @@ describe.skipIf(chromiumPath === undefined)('the page in French', () => {
         row.storey,
         'system' in row ? row.system : null,
       ]),
-      ...outcome.model.walls.map((wall) => wall.name),
+      ...[...outcome.model.storeys, ...outcome.model.walls, ...outcome.model.slabs].map((part) => part.name),
       ...outcome.model.spaces.flatMap((space) => [space.name, space.longName]),
       ...outcome.model.elements.map((element) => element.name),
       ...outcome.model.systems.map((system) => system.name),
