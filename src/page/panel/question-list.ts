@@ -41,7 +41,7 @@ function questionItem(desk: Desk, { about, ask, weight, choices, answer }: Quest
         ? () => desk.chooseFixture(fixture)
         : null;
   const choice = (one: string): string =>
-    answer.field === 'kind'
+    answer.field === 'kind' && Object.hasOwn(words.kinds, one)
       ? kindName(words, one)
       : answer.part === 'batteries'
         ? named(words.roles, one)

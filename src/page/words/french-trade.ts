@@ -170,6 +170,13 @@ export const frenchPhrases: Words['phrases'] = {
     'aucune lecture ne tient et c’est elle qui enfreint le moins de conditions',
   'no reading holds, and what it breaks speaks for it':
     'aucune lecture ne tient, et ce qu’elle enfreint parle pour elle',
+  cleanout: 'regard de nettoyage',
+  'vent-terminal': 'débouché de ventilation',
+  'air-admittance-valve': 'clapet d’admission d’air',
+  'not-drainage': 'hors évacuation',
+  private: 'privé',
+  public: 'public',
+  assembly: 'réunion',
   rainwater: 'eau de pluie',
   supply: 'alimentation',
   heating: 'chauffage',
