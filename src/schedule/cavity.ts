@@ -3,7 +3,8 @@ import { shownText, unbroken, wrapped } from './shown-text.ts';
 import { type SvgShape, shape, svgText, words } from './svg-shape.ts';
 import { listed } from './trade-words.ts';
 import type { WeighAlternative, WeighBattery, WeighResult, WeighWall } from './weigh.ts';
-import { englishWeigh, type WeighWords } from './weigh-words.ts';
+import { englishWeigh } from './weigh-english.ts';
+import type { WeighWords } from './weigh-words.ts';
 
 /** A drawing and the room it takes, in its own units. */
 export interface Drawing {

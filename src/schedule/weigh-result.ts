@@ -13,9 +13,9 @@ import { type ResultIndex, resultIndex, roundMetres } from './result-index.ts';
 import { printedFacts } from './result-trail.ts';
 import { countedKinds, plainWords } from './trade-words.ts';
 import type { WeighAlternative, WeighBattery, WeighObstacle, WeighResult } from './weigh.ts';
+import { englishWeigh } from './weigh-english.ts';
 import { addsOf, fittingsOf, pipesOf, type SizeOf, sectionsOf, tallied, wallOf } from './weigh-quantities.ts';
 import { weighVerdict } from './weigh-verdict.ts';
-import { englishWeigh } from './weigh-words.ts';
 
 /**
  * The published comparison of batteries. `result` is that of the same outcome; prices are the user's own figures. Each

@@ -1,7 +1,7 @@
 import { expect, test } from 'vitest';
 import { cavityDrawing, cavitySvg } from '../../src/schedule/cavity.ts';
 import type { SvgShape } from '../../src/schedule/svg-shape.ts';
-import { englishWeigh } from '../../src/schedule/weigh-words.ts';
+import { englishWeigh } from '../../src/schedule/weigh-english.ts';
 import { sampleText, weighSketch } from '../support/weigh-sketch.ts';
 
 const flat = (shapes: readonly SvgShape[]): SvgShape[] => shapes.flatMap((one) => [one, ...flat(one.children ?? [])]);

@@ -1,8 +1,9 @@
 import { cavityDrawing } from '../../schedule/cavity.ts';
 import { visible } from '../../schedule/shown-text.ts';
 import type { WeighAlternative, WeighBattery } from '../../schedule/weigh.ts';
+import { englishWeigh } from '../../schedule/weigh-english.ts';
 import { totalLength, weighVerdict } from '../../schedule/weigh-verdict.ts';
-import { englishWeigh, type WeighWords } from '../../schedule/weigh-words.ts';
+import type { WeighWords } from '../../schedule/weigh-words.ts';
 import { decimal, lengthText, oneSize, placeIn, sizeLabel } from '../format.ts';
 import { shapeElement } from '../riser/shape-element.ts';
 import { frenchWeigh } from '../words/french-weigh.ts';
