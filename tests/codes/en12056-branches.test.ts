@@ -380,6 +380,8 @@ describe('system III: each appliance by itself', () => {
   test('a closet and a basin on one branch stand in no row: they need a vent', () => {
     const it = run(europeanTower([{ east: ['lavatory'] }, { west: ['lavatory', 'closet'] }]), { system: 'III' });
     expect(outOfReach(it)).toMatchObject([{ what: 'group', fixtures: 2, fixturesMost: 1 }]);
+    // The larger of both by their own rows (Table 6): the closet's, whose outlet is above 80 mm.
+    expect(asks(it, 'J2.w2-S2', 'EN-R12')).toBe('DN 100');
   });
 
   test('R41 branch vent: DN 25 up to 15 m (14.87 here), DN 30 past it (15.37)', () => {

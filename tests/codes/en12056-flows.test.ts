@@ -141,7 +141,8 @@ describe('settings', () => {
     [{ system: 'V' }, 'expected one of I, II, III, IV'],
     [{ filling: 0.6 }, 'expected one of 0.5, 0.7'],
     [{ entries: 'round' }, 'expected one of square, swept'],
-    [{ use: 'private' }, 'is no setting of en12056-2000'],
+    [{ use: 'private' }, 'is no setting of en12056-2000; expected one of '],
+    [{ use: 'private' }, 'filling'],
     [{ omitSizes: ['2 in'] }, 'expected sizes of DN'],
   ])('%o is refused: %s', (settings, message) => {
     expect(() => codeOf('en12056-2000', settings as Settings)).toThrow(message);

@@ -84,6 +84,24 @@ describe('waste stack vents (913, R59 to R61)', () => {
       'IPC-R59',
     ]);
   });
+
+  test('nor may one with a vent of its own drain into it (913.2)', () => {
+    const vented = plainStack(times(3, sink)).replace(
+      'vent 4 in: S3',
+      `node Q from S2 north 0.8 rise 1:48
+trap TU from Q north 0.4 rise 1:48
+urinal U from TU up 0.3, washout, trap 2 in
+drain 2 in: U > TU > Q > S2
+vent 1 1/2 in: Q > QV (to 12)
+terminal QV
+vent 4 in: S3`,
+    );
+    const [row] = run(vented).result.batteries;
+    const asWaste = [{ reading: row!.reading, broken: row!.broken }, ...row!.others].find(
+      ({ reading }) => reading === 'waste-stack-vent',
+    );
+    expect(asWaste?.broken.map(({ rule }) => rule)).toEqual(['IPC-R59']);
+  });
 });
 
 describe('single stacks (917, R95, R96)', () => {

@@ -217,6 +217,18 @@ sewer OUT`,
   test('only fixtures of one and two units drain into it; the lowest may be heavier', () => {
     expect(broken(run(column(['clothes-washer, trap 2 in', lavatory])))).toEqual([['UPC-R42', 'wetUnits']]);
     expect(broken(run(column([lavatory, 'clothes-washer, trap 2 in'])))).toEqual([]);
+    // Nor one of more units that has a vent of its own.
+    const guest = column(times(3, lavatory)).replace(
+      'sewer OUT',
+      `node Q from C2 west 0.6 rise 1:48
+trap TQ from Q west 0.4 rise 1:48
+clothes-washer FQ from TQ up 0.2, trap 2 in
+drain 2 in: FQ > TQ > Q > C2
+vent 1 1/2 in: Q > QT (to 4.2)
+terminal QT
+sewer OUT`,
+    );
+    expect(broken(run(guest))).toEqual([['UPC-R42', 'wetUnits']]);
   });
 });
 

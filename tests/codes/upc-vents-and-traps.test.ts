@@ -282,3 +282,10 @@ sewer OUT`,
   expect([joint(2).role('J-VT'), joint(2).findings('common-vent-not-allowed')]).toEqual(['dual-vent', []]);
   expect(clauses(joint(3), 'common-vent-not-allowed')).toEqual(['704.2, 905.6']);
 });
+
+test('R70 where frost may close a vent, one below 2 in through the roof is noted (906.7, setting)', () => {
+  const text = tower([[closet], [closet]]).replaceAll('vent 3 in: S2', 'vent 1 1/2 in: S2');
+  const noted = (settings: Record<string, unknown>) => clauses(run(text, {}, settings), 'frost-enlargement-missing');
+  expect(new Set(noted({ frostEnlargement: true }))).toEqual(new Set(['906.7']));
+  expect(noted({})).toEqual([]);
+});

@@ -12,6 +12,8 @@ import { openTrials, type Suite } from './trials.ts';
 // Switches one small fault on after another and asks for a test that fails. Lists the faults that no test notices.
 //   npm run mutants                       all, going on from where an earlier run stopped
 //   npm run mutants -- src/codes/npc      those of one folder or file
+//   --kind "not in the list"   of one kind: rules that are left out
+//   --tests codes/npc   asks only tests whose path holds this
 //   --minutes 10    stops after so many minutes of processor time; the next run goes on
 //   --whole         tries every test that reaches a fault; else tests of rules, the likeliest, as many as a second holds
 //   --afresh        asks again about those that a test is known to notice, that test first
@@ -21,6 +23,8 @@ const { values, positionals } = parseArgs({
     minutes: { type: 'string' },
     afresh: { type: 'boolean' },
     whole: { type: 'boolean' },
+    tests: { type: 'string' },
+    kind: { type: 'string' },
     results: { type: 'string' },
   },
 });
@@ -42,6 +46,7 @@ const results = openResults(values.results);
 const asked = mutants.flatMap((mutant, number) =>
   !excused.has(mutant.key) &&
   (positionals.length === 0 || positionals.some((place) => mutant.file.startsWith(place))) &&
+  mutant.what.includes(values.kind ?? '') &&
   (values.afresh === true || results.killer(mutant.key) === null)
     ? [{ ...mutant, number }]
     : [],
@@ -57,7 +62,7 @@ say(`${mutants.length} mutants, ${excused.size} of them equivalent; asking about
 const { record, fails } = ground(mutants.length);
 const suites: Suite[] = [];
 for (const file of filesUnder('tests', '.test.ts').filter(
-  (name) => isPlain(name) && (values.whole === true || isQuick(name)),
+  (name) => isPlain(name) && (values.whole === true || isQuick(name)) && name.includes(values.tests ?? ''),
 )) {
   const body = await bundle(file, changed);
   const tests = results.recorded(body, () => record(body));
