@@ -1,10 +1,15 @@
+import { toCleanout } from '../verdicts/compare.ts';
 import { answerTexts } from './answers-text.ts';
 import { type ElementNames, elementNames } from './element-names.ts';
 import { lengthText, loadText } from './number-text.ts';
-import type { BrokenCondition, Result, ResultBattery, ResultSystem } from './result.ts';
+import type { BrokenCondition, Result, ResultBattery, ResultPipe, ResultSystem } from './result.ts';
 import { padded, shownText } from './shown-text.ts';
 import { heading, paragraph, type TextLine } from './text-line.ts';
 import { counted, countedKinds, listed, plainWords, sentence, tally } from './trade-words.ts';
+
+/** A role as people say it; of idle pipes those that lead to a cleanout have a name of their own. */
+const calledBy = ({ role, reason }: ResultPipe): string =>
+  role === 'idle' && reason === toCleanout ? 'cleanout extension' : plainWords(role);
 
 /** What the program took the model to be, before any judgement: fixtures, systems, batteries, joints, what it left out. */
 export function understoodText(result: Result): TextLine[] {
@@ -23,7 +28,7 @@ export function understoodText(result: Result): TextLine[] {
       fixtures.length === 0 ? 'none' : `${fixtures.length}: ${countedKinds([...kindOf.values()])}`,
       row('Fixtures'),
     ),
-    ...paragraph(`${counts.pipes}: ${countedKinds(result.pipes.map(({ role }) => plainWords(role)))}`, row('Pipes')),
+    ...paragraph(`${counts.pipes}: ${countedKinds(result.pipes.map(calledBy))}`, row('Pipes')),
     ...folded(systems, mostSystems, 'more systems').flatMap((system, place) =>
       typeof system === 'string'
         ? paragraph(system, row(''))

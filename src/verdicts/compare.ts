@@ -1,12 +1,18 @@
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import type { PipeUse } from '../codes/use.ts';
-import type { Network } from '../network/network.ts';
+import type { Network, PipeId } from '../network/network.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import type { Load, Range } from '../units/quantity.ts';
 import type { PipeVerdict, Run } from './outcome.ts';
 
 /** The size each pipe needs, over all runs, against the size the model gives it. By pipe id. */
-export function comparePipes(network: Network, code: PlumbingCode, runs: readonly Run[], shown: Run): PipeVerdict[] {
+export function comparePipes(
+  network: Network,
+  code: PlumbingCode,
+  runs: readonly Run[],
+  shown: Run,
+  extensions: ReadonlySet<PipeId>,
+): PipeVerdict[] {
   const entriesOpen = runs.some(({ roles }) => roles.uses.some(hasOpenEntry));
   return network.pipes.map(({ id }): PipeVerdict => {
     const load = extremes(runs.map(({ loads }) => loads.pipes[id]!.load));
@@ -24,9 +30,15 @@ export function comparePipes(network: Network, code: PlumbingCode, runs: readonl
     const { size: modelled, reason } = shown.loads.modelled[id]!;
     // No fixture is open, or none of them drains here: what is left is the way drains enter a stack.
     const open = entriesOpen && load.least === load.most ? byEntries : byFixtures;
-    return { load, ventLoad, required, provisional, ...verdictOf(modelled, reason, required, open, shown, id, code) };
+    const idle = extensions.has(id) ? toCleanout : unused;
+    const verdict = verdictOf(modelled, reason, required, open, idle, shown, id, code);
+    return { load, ventLoad, required, provisional, ...verdict };
   });
 }
+
+/** Why an idle pipe has no size. */
+const unused = 'no water and no air of a trap passes';
+export const toCleanout = 'it extends to a cleanout: nothing drains or vents through it';
 
 /** Why a size is a range, and what settles it. */
 const byFixtures = 'depends on a fixture that is not identified';
@@ -40,6 +52,7 @@ function verdictOf(
   unread: string | null,
   required: Range<NominalSize | null> | null,
   open: string,
+  idle: string,
   shown: Run,
   pipe: number,
   code: PlumbingCode,
@@ -47,8 +60,8 @@ function verdictOf(
   const { rank } = code.series;
   if (required === null) {
     const use = shown.roles.uses[pipe]!;
-    const idle = use.role === 'idle' ? 'no water and no air of a trap passes' : null;
-    return { verdict: 'unknown', reason: idle ?? code.unsized?.(use) ?? 'no rule asks for a size' };
+    const reason = use.role === 'idle' ? idle : (code.unsized?.(use) ?? 'no rule asks for a size');
+    return { verdict: 'unknown', reason };
   }
   const { least, most } = required;
   if (least === null || most === null) {

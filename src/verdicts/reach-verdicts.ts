@@ -9,6 +9,7 @@ import type { Paths } from '../paths/paths.ts';
 import type { Load } from '../units/quantity.ts';
 import { batteryFindings, oneVentShort } from './battery-findings.ts';
 import { checkFacts } from './check-facts.ts';
+import { cleanoutExtensions } from './cleanout-extensions.ts';
 import { comparePipes } from './compare.ts';
 import { findingsOfRuns } from './findings-of-runs.ts';
 import type { Outcome, Run } from './outcome.ts';
@@ -34,7 +35,7 @@ export interface VerdictFacts {
 export function reachVerdicts({ findings, runs, ...facts }: VerdictFacts): Outcome {
   const { network, paths, code, identities } = facts;
   const shown = runs.at(-1)!;
-  const pipes = comparePipes(network, code, runs, shown);
+  const pipes = comparePipes(network, code, runs, shown, cleanoutExtensions(network, identities, paths));
   const brokenIn = (run: Run): readonly Finding[] => {
     const checked = checkFacts(facts, run);
     return [

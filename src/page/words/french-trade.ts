@@ -226,6 +226,8 @@ export const frenchPhrases: Words['phrases'] = {
   outlet: 'tubulure de sortie',
   larger: 'le plus grand',
   'no water and no air of a trap passes': 'ni eau ni air d’un siphon n’y passe',
+  'it extends to a cleanout: nothing drains or vents through it':
+    'il mène à un regard de nettoyage : rien ne s’y vide ni ne s’y ventile',
   'no rule asks for a size': 'aucune règle ne demande de diamètre',
   'the discharge of the sump’s pump is not stated': 'le débit de la pompe de la fosse n’est pas indiqué',
   'it is the only reading whose conditions hold': 'c’est la seule lecture dont les conditions tiennent',
