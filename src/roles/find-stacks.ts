@@ -36,6 +36,10 @@ interface Limb {
   readonly high: number;
 }
 
+/** A level drain that drops on its way to the top of a stack is a branch of it: no storey is passed before the stack begins. */
+const isDropAbove = (limb: Limb, below: Limb, floors: Floors): boolean =>
+  floors.passes(below.low, below.high) && !floors.passes(limb.low, limb.high);
+
 export function findStacks(context: StackContext, outlet: readonly boolean[]): Stack[] {
   const { paths, loads, floors } = context;
   const limbs = findLimbs(context, outlet);
@@ -52,6 +56,7 @@ export function findStacks(context: StackContext, outlet: readonly boolean[]): S
     }
     const below = pipe === null ? undefined : limbOfTop.get(pipe);
     if (way.length === 0 || below === undefined || below.high - below.low < leastLimb) continue;
+    if (isDropAbove(limb, below, floors)) continue;
     follower.set(limb, { way, limb: below });
     feeders.set(below, (feeders.get(below) ?? 0) + 1);
   }
