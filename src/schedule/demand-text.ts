@@ -1,13 +1,16 @@
-import { factsText } from './facts-text.ts';
+import { demandWords } from './demand-facts.ts';
 import type { ResultPipe, TrailStep } from './result.ts';
+import { listed } from './trade-words.ts';
 
-/** One demand of a trail: `Wet vent size (load 14 fixture units, limit 36 fixture units): 4 in, by Table 2.5.8.1., row 4 in`. */
+/** One demand of a trail: `Wet vent size: 4 in, which holds 36, for 14 fixture units (Table 2.5.8.1., row 4 in)`. */
 export function demandText(step: TrailStep, unit: string, nameOf: (globalId: string) => string): string {
   const { title, facts, asks } = step;
-  const numbers = factsText(facts, unit, nameOf);
+  const { basis, holds, asides } = demandWords(facts, unit, nameOf);
   const size = asks === null ? 'no size of the table' : asks.label;
-  const rest = doubts[step.trust] ?? '';
-  return `${title}${numbers === '' ? '' : ` (${numbers})`}: ${size}, by ${placeText(step)}${rest}`;
+  const held = holds === null ? '' : asks === null ? `, whose last size ${holds},` : `, which ${holds},`;
+  const why = basis.length === 0 ? '' : ` for ${listed(basis)}`;
+  const more = asides.map((aside) => `; ${aside}`).join('');
+  return `${title}: ${size}${basis.length === 0 ? held.replace(/,$/, '') : held}${why}${more} (${placeText(step)}${doubts[step.trust] ?? ''})`;
 }
 
 /** Where the demand is printed: `Table 2.4.10.6.-B, row 3 in`. */

@@ -1,4 +1,4 @@
-import { demandText } from './demand-text.ts';
+import { demandText, placeText } from './demand-text.ts';
 import { type ElementNames, elementNames } from './element-names.ts';
 import { hydraulicsText } from './hydraulics-text.ts';
 import type { NextSmaller } from './next-smaller.ts';
@@ -24,7 +24,7 @@ export function explainPipe(result: Result, pipe: ResultPipe, smaller: NextSmall
     ...demands(pipe, unit, names),
     verdict(pipe),
     ...rangeStory(result, pipe),
-    ...smallerSize(smaller, unit, names),
+    ...smallerSize(smaller),
     ...(pipe.provisional
       ? ['The size is provisional: a figure of the code that comes before it could not be read.']
       : []),
@@ -68,9 +68,9 @@ function air(result: Result, { servesAir = [], ventLoad, developedLength }: Resu
   if (servesAir.length === 0) return 'No trap breathes through it.';
   const measures = [
     ...(ventLoad === undefined ? [] : [`${loadText(ventLoad, result.code.unit)} enter its vent table`]),
-    ...(developedLength === undefined ? [] : [`${lengthText(developedLength)} developed length`]),
+    ...(developedLength === undefined ? [] : [`its developed length is ${lengthText(developedLength)}`]),
   ];
-  return `Air: for ${whose(result, servesAir, names)}${measures.length === 0 ? '' : `; ${listed(measures)}`}.`;
+  return `Air: for ${whose(result, servesAir, names)}${measures.map((one) => `; ${one}`).join('')}.`;
 }
 
 function whose({ fixtures }: Result, ids: readonly string[], names: ElementNames): string {
@@ -110,12 +110,14 @@ const verdicts = {
   unknown: 'no verdict',
 } as const;
 
-function smallerSize(next: NextSmaller | null, unit: string, names: ElementNames): string[] {
+/** In the words of the page: what the smaller size holds, which demand it fails, and where that stands. */
+function smallerSize(next: NextSmaller | null): string[] {
   if (next === null) return [];
   const { size, fails } = next;
   const limit = fails.smaller?.size.dn === size.dn ? fails.smaller.limit : null;
   const holds = limit === null ? '' : ` ${size.label} holds ${limitText(limit)}.`;
-  return [`Why not ${size.label}?${holds} It fails this demand: ${sentence(demandText(fails, unit, names.short))}`];
+  const asks = fails.asks === null ? 'has no size that is large enough' : `asks for ${fails.asks.label}`;
+  return [`Why not ${size.label}?${holds} “${fails.title}” ${asks} (${placeText(fails)}).`];
 }
 
 function sections({ sections: parts }: ResultPipe): string[] {

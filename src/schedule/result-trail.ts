@@ -16,6 +16,7 @@ export function resultTrail(outcome: Outcome, index: ResultIndex, pipe: PipeId):
     row: step.cell === null || step.cell.place.table === 'limits' ? null : step.cell.place.row,
     facts: {
       ...printedFacts(outcome, index, step.facts),
+      ...(typeof step.facts.storey === 'number' ? { storey: storeyName(outcome, step.facts.storey) } : {}),
       ...(isAnswered && typeof step.facts.slope === 'number' ? { slopeAnswered: true } : {}),
     },
     asks: step.asks === null ? null : index.size(step.asks),
@@ -23,6 +24,12 @@ export function resultTrail(outcome: Outcome, index: ResultIndex, pipe: PipeId):
     trust: step.provisional ? 'provisional' : (step.cell?.trust ?? step.trust),
     ...(step.smaller == null ? {} : { smaller: { size: index.size(step.smaller.size), limit: step.smaller.limit } }),
   }));
+}
+
+/** The model's own name of a storey of plumbing; where it has none they are counted from the lowest. */
+function storeyName({ model, shown }: Outcome, storey: number): string {
+  const elevation = shown.roles.floors.elevations[storey];
+  return model.storeys.find((one) => one.elevation === elevation)?.name ?? `storey ${storey + 1}`;
 }
 
 /** Pipes that facts name become GlobalIds, lengths are rounded to what coordinates can tell. */

@@ -19,7 +19,7 @@ const wetTrail = (load: number): readonly TrailStep[] => [
     clause: '2.5.8.1.',
     table: '2.5.8.1.',
     row: '4 in',
-    facts: { loadUnits: 14, limitUnits: 36, leftOut: 'Urinal 7' },
+    facts: { loadUnits: 14, limitUnits: 36, leftOut: 1 },
     asks: sized('4 in'),
     governs: true,
     trust: 'memory',

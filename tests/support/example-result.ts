@@ -31,7 +31,7 @@ const step = (over: Partial<TrailStep>): TrailStep => ({
   clause: 'Table 2.5.8.1.',
   table: 'wet-vent',
   row: '4 in',
-  facts: { loadUnits: 14, limitUnits: 36, leftOut: id(3009) },
+  facts: { loadUnits: 14, limitUnits: 36, leftOut: 1 },
   asks: in4,
   governs: true,
   trust: 'memory',
