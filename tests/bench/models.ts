@@ -6,6 +6,7 @@ import { sketch } from '../support/sketch.ts';
 import { type IfcOptions, ifcOf } from '../support/write-ifc.ts';
 
 const folder = 'out/bench/models';
+const school = 'sample-models/school.piping';
 /** `BENCH_MODELS=schools` takes our own writer also where the shared generator stands. */
 const generator = process.env.BENCH_MODELS === 'schools' ? '' : '../shared/tools/gen-plumbing-ifc.mjs';
 
@@ -47,9 +48,21 @@ export function modelOfSize(
   return { path, bytes: new Uint8Array(readFileSync(path)), from: shared ? 'shared generator' : 'our writer' };
 }
 
+/** About so many elements of distribution, by our own writer: schools side by side. Kept between runs. */
+export function modelOfElements(elements: number): { path: string; bytes: Uint8Array } {
+  mkdirSync(folder, { recursive: true });
+  const path = join(folder, `schools-of-${elements}.ifc`);
+  if (!existsSync(path)) {
+    const one = sketch(readFileSync(school, 'utf8'));
+    const each = ifcOf(one).match(/^#\d+=IFC(?:PIPE|SANITARY|WASTE|STACK|FLOW)\w*\(/gm)!.length;
+    writeFileSync(path, ifcOf(repeatedSketch(one, Math.max(1, Math.round(elements / each)))));
+  }
+  return { path, bytes: new Uint8Array(readFileSync(path)) };
+}
+
 /** As many schools side by side as make the size. */
 function schools(megabytes: number, options: Partial<IfcOptions>): string {
-  const one = sketch(readFileSync('sample-models/school.piping', 'utf8'));
+  const one = sketch(readFileSync(school, 'utf8'));
   const few = 8;
   const each = ifcOf(repeatedSketch(one, few), options).length / few;
   return ifcOf(repeatedSketch(one, Math.max(1, Math.round((megabytes * 1e6) / each))), options);

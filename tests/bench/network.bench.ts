@@ -13,7 +13,7 @@ import { plainIdentities } from '../support/plain-identities.ts';
 import { sampleModels, sharedModels } from '../support/real-models.ts';
 import { tables } from '../support/run-sketch.ts';
 import { ratio } from './measure.ts';
-import { modelOfSize } from './models.ts';
+import { modelOfElements } from './models.ts';
 
 // Joints by geometry against joints by ports, and the speed of reading and network against web-ifc opening the same bytes.
 const names = readNamesTable(tables);
@@ -53,10 +53,9 @@ api.SetLogLevel(WebIfc.LogLevel.LOG_LEVEL_OFF);
 
 console.log('\nReading and network, warm, against web-ifc opening the same bytes (processor seconds, medians)');
 console.log('elements  MB      ours    web-ifc  ratio (least to most)');
-const perMegabyte = read(modelOfSize(1).bytes).elements.length;
 const points: { readonly elements: number; readonly seconds: number }[] = [];
 for (const wanted of [1_000, 10_000, 100_000]) {
-  const { bytes } = modelOfSize(Math.max(0.1, Math.round((10 * wanted) / perMegabyte) / 10));
+  const { bytes } = modelOfElements(wanted);
   const ours = () => {
     const model = read(bytes);
     buildNetwork(model, identify(model, noAnswers, names).value);
@@ -74,8 +73,12 @@ for (const wanted of [1_000, 10_000, 100_000]) {
       `${both.theirs.toFixed(3).padEnd(8)} ${both.ratio.toFixed(2)} (${both.least.toFixed(2)} to ${both.most.toFixed(2)})`,
   );
 }
+// Linear within 15 %: no more than 1.15 times the time an element takes in the model before.
 for (const [at, to] of points.slice(1).entries()) {
   const from = points[at]!;
   const exponent = Math.log(to.seconds / from.seconds) / Math.log(to.elements / from.elements);
-  console.log(`growth from ${from.elements} to ${to.elements} elements: exponent ${exponent.toFixed(3)}`);
+  const each = to.seconds / to.elements / (from.seconds / from.elements);
+  console.log(
+    `growth from ${from.elements} to ${to.elements} elements: exponent ${exponent.toFixed(3)}, time for one element x ${each.toFixed(2)}`,
+  );
 }
