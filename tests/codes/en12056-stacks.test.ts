@@ -246,3 +246,18 @@ roof "Roof" from -5 -5 to 20 20 top 3 thick 0.3`;
     ]).toEqual([1, 1, 0]);
   });
 });
+
+describe('kitchen stacks in Germany (DIN 1986-100): at most four sinks on DN 70', () => {
+  const asked = (sinks: number, settings: Settings) =>
+    run(europeanTower(floors(sinks, { west: ['kitchen-sink'] })), settings)
+      .pipe('S1-SF')
+      .trail.find(({ facts }) => facts.kitchenSinks !== undefined);
+  test('four may be, five ask DN 80; elsewhere no such limit is known', () => {
+    expect(asked(4, { national: 'din' })).toBeUndefined();
+    expect(asked(5, { national: 'din' })).toMatchObject({
+      asks: { label: 'DN 80' },
+      facts: { kitchenSinks: 5, kitchenSinksMost: 4 },
+    });
+    expect(asked(5, {})).toBeUndefined();
+  });
+});

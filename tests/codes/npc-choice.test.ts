@@ -23,6 +23,7 @@ describe('neither reading holds and both break one condition', () => {
     { row: times(8, shower('2')), wet: 'NPC-R43', reading: 'wet-vent', why: 'arms of 2 in' },
     // 2 x 6 = 12 is within it; the arms are too large (R45).
     { row: times(3, shower('2 1/2')), wet: 'NPC-R45', reading: 'circuit-vent', why: 'arms of 2½ in' },
+    { row: [...times(2, shower('2')), shower('3')], wet: 'NPC-R45', reading: 'circuit-vent', why: 'one arm of 3 in' },
     { row: times(3, shower('3')), wet: 'NPC-R45', reading: 'circuit-vent', why: 'arms of 3 in' },
     {
       row: [...times(7, shower('2')), 'closet, tank'],
@@ -43,4 +44,15 @@ test('read as individually vented, each trap of a row without a vent of its own 
   const alone = others.find(({ reading }) => reading === 'individual-vent');
   // Three urinals; the lavatories' own arms end at the vent.
   expect(alone?.broken.map(({ rule, facts }) => [rule, facts])).toEqual([['NPC-R36', { traps: 3 }]]);
+});
+
+test('what a wet vent may carry is said beside its load: nothing where the last cell is unread, else the last limit (R43)', () => {
+  const overloaded = (row: readonly string[]) => {
+    const { reading, broken, others } = runSketch(circuitVentedRow(row, { relief: '' })).result.batteries[0]!;
+    const wet = [{ reading, broken }, ...others].find((one) => one.reading === 'wet-vent');
+    return wet?.broken.find(({ rule }) => rule === 'NPC-R43')?.facts;
+  };
+  expect(overloaded(times(8, shower('2')))).toEqual({ loadUnits: 42, limitUnits: null });
+  // With a closet 23 in 6 in (Table 2.5.8.1.); the closet, most downstream, is left out.
+  expect(overloaded([...times(7, shower('2')), 'closet, tank'])).toEqual({ loadUnits: 42, limitUnits: 23 });
 });

@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest';
+import { bringing } from '../support/flows.ts';
 import { armOf, circuitVentedRow, hall, times, ventedRow } from '../support/rows.ts';
 import { runSketch, type SketchRun } from '../support/run-sketch.ts';
 import { tower } from '../support/towers.ts';
@@ -110,6 +111,14 @@ describe('R18 horizontal offset of a stack', () => {
     const run = runSketch(text);
     expect([run.size('OA-OB'), run.size('OB-SF')]).toEqual(['5 in', '5 in']); // the part below is not smaller
     expect(runSketch(text, { answers: { settings: { stackOffset: 'lesser' } } }).size('OA-OB')).toBe('4 in');
+  });
+
+  test('4000 is past the last cell of Table -B that could be read: no size, though Table -C has one', () => {
+    const text = tower([...none(3), [lavatory], ...times(2, '').map(() => storey37)], { offset: 2 });
+    const run = runSketch(text, { answers: bringing({ 'F4.1': 4000 }) });
+    const step = run.pipe('OA-OB').trail.find(({ rule }) => rule === 'NPC-R18');
+    expect([step?.asks ?? null, step?.facts.byBranchTable, step?.facts.byDrainTable]).toEqual([null, null, '10 in']);
+    expect(run.size('OA-OB')).toBe('none');
   });
 
   test('1.4 m counts as stack: 200 takes 4 in (540); 1.5 m is an offset', () => {

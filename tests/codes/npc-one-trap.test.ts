@@ -37,6 +37,7 @@ const cases: readonly [what: string, on: readonly OnTrap[], units: number][] = [
   ['a commercial sink on 2 in and a dishwasher', [{ ...sink, domestic: false, trap: '2' }, dishwasher], 3.5],
   ['a lavatory and a dishwasher: no sink', [lavatory, dishwasher], 3],
   ['a sink and a lavatory: two rows', [sink, lavatory], 3],
+  ['a lavatory and a sink', [lavatory, sink], 3],
   ['two sinks', [sink, sink], 1.5],
   ['two sinks by two names', [{ kind: 'sink' }, sink], 1.5],
   ['two sinks, one of them commercial on 2 in', [sink, { ...sink, domestic: false, trap: '2' }], 3.5],

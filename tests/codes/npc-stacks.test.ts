@@ -266,5 +266,12 @@ terminal RB2`;
     expect(missing(stepped(upper, 1.5))).not.toContain('offset-relief-vent-missing'); // not above 1.5 m
     const two = times(2, '').map(() => times(9, shower6)); // 108 from two storeys
     expect(missing(stepped(two, offset))).not.toContain('offset-relief-vent-missing');
+    const three = times(3, '').map(() => times(6, shower6)); // 108 from three storeys
+    expect(missing(stepped(three, offset))).toContain('offset-relief-vent-missing');
+    expect(missing(stepped(upper, 1.6))).toContain('offset-relief-vent-missing');
+    // 4 x 17 + 2 x 16 = 100, the limit itself; 5 x 17 + 16 = 101.
+    const some = (more: number) => [...upper.slice(0, more), ...sixteen.slice(more)];
+    expect(missing(stepped(some(4), offset))).not.toContain('offset-relief-vent-missing');
+    expect(missing(stepped(some(5), offset))).toContain('offset-relief-vent-missing');
   });
 });

@@ -59,6 +59,12 @@ describe('R44 closets in a wet vent', () => {
     expect([broken, wetLoad(run, 'J1-J2')]).toEqual([[], ['wet-vent', 2.5, '2 in']]);
   });
 
+  test('a closet and a urinal by a double fitting: the closet joins before neither', () => {
+    const beside =
+      'trap TN from J2 north 0.3 rise 1:50\nurinal FN from TN to 0, stall, trap 2 in\ndrain 2 in: FN > TN > J2';
+    expect(asWet(wetVentedRow([tub, closet], { lavatories: 1, more: beside })).broken).toEqual([]);
+  });
+
   test('two, one after the other: not at one level', () => {
     const { broken, facts } = asWet(wetVentedRow([tub, closet, closet], { lavatories: 1 }));
     expect([broken, facts]).toEqual([['R44'], [{ closetsApart: true }]]);
@@ -99,6 +105,12 @@ describe('R45 arms into a wet vent: 2 in at most', () => {
       text.replace('trap T2 from J2 south 0.6 rise 1:50', 'trap T2 from J2 south 0.6 rise 1:50, 3 in'),
     );
     expect([reading, broken]).toEqual(['wet-vent', []]);
+  });
+
+  test('one whose drain is too short to go without a vent is not', () => {
+    const text = wetVentedRow([stall, 'floor-drain, emergency, trap 3 in', stall]);
+    const { broken, facts } = asWet(text);
+    expect([broken, facts]).toEqual([['R45'], [{ arm: '3 in', armMost: '2 in', arms: 1 }]]);
   });
 
   test('by Quebec’s 2010 wording (a setting) only over several storeys', () => {

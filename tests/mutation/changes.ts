@@ -32,7 +32,9 @@ export function changesOf(node: Node, above: readonly Node[], textOf: (node: Nod
       const operator = wordOf(node, 'operator');
       const other = neighbours[operator];
       const isText = [left, right].some((side) => side.type === 'TemplateLiteral' || typeof side.value === 'string');
-      if (other === undefined || isText) return [];
+      // What is measured has room for its uncertainty beyond the limit: nothing lies exactly on the far edge of that room.
+      const hasRoom = /\b(coordinateMetres|turnDegrees|room)\b/.test(textOf(node));
+      if (other === undefined || isText || (hasRoom && /[<>]/.test(operator))) return [];
       return [{ what: `${operator} as ${other}`, text: `(${textOf(left)})${other}(${textOf(right)})` }];
     }
     case 'LogicalExpression':
