@@ -20,16 +20,16 @@ export interface SizeAtSlope extends SizeFound {
 export interface SlopeReading {
   /** A slope this share of a printed one counts as it: codes that print inches a foot take the round percent for it. */
   readonly share: number;
-  /** A size that may not be laid so flat does not stand, as long as some size may. */
+  /** A size that may not be laid so flat gives way to the next that may, by the next flatter of the least slopes. */
   readonly asLaid: boolean;
 }
 const ownLeast: SlopeReading = { share: 1, asLaid: false };
 
 /**
  * Smallest drain whose figure holds the load, each size read at the steeper of the drawn slope and its own least slope:
- * a pipe laid too flat is a fault of its slope, not of its size. Where the code reads sizes as they are laid, only those
- * stand that may be laid so flat; flatter than all of them, the slope is the fault again. Between columns the flatter
- * counts; null: not drawn.
+ * a pipe laid too flat is a fault of its slope, not of its size. Where the code reads sizes as they are laid, the next size
+ * that may be laid so flat stands instead, as long as it is of the next flatter sort: nobody lays 8 in for the slope of a
+ * 2 in branch. Between columns the flatter counts; null: not drawn.
  */
 export function sizeAtSlope(
   table: Table,
@@ -59,7 +59,9 @@ export function sizeAtSlope(
           load,
         )
       : byLeast;
-  const found = laid.size === null ? byLeast : laid;
+  const sorts = [...new Set(read.flatMap(({ least }) => least ?? []))].sort((a, b) => b - a);
+  const sortOf = (one: SizeFound): number => sorts.indexOf(read.find(({ size }) => size === one.size)?.least ?? 0);
+  const found = laid.size === null || sortOf(laid) - sortOf(byLeast) > 1 ? byLeast : laid;
   const chosen = read.find(({ size }) => size === found.size);
   const steeper = found.size === byLeast.size ? undefined : read.find(({ size }) => size === byLeast.size);
   return {

@@ -55,7 +55,13 @@ describe('R19, R22 at the real slope: a size that may not be laid so flat does n
     { slope: '1:50', load: 42, size: '3 in', why: '… 42' },
     { slope: '1:96', load: 20, size: '3 in', why: '1/8: 2 in may not be laid, 3 in has 36' },
     { slope: '1:96', load: 38, size: '4 in', why: '… past 36' },
-    { slope: '1:192', load: 20, size: '8 in', why: '1/16: nothing below 8 in' },
+    { slope: '1:192', load: 100, size: '8 in', why: '1/16: 4 in may not be laid, 8 in has 1400' },
+    {
+      slope: '1:192',
+      load: 20,
+      size: '2 in',
+      why: '1/16: two sorts flatter than 2 in may be laid: its slope is the fault',
+    },
     { slope: '1:300', load: 20, size: '2 in', why: 'flatter than any size may be laid: its slope is the fault' },
   ])('$load at $slope: $size ($why)', ({ slope, load, size }) => {
     expect(at(slope, load)).toBe(size);
