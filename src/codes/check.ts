@@ -82,6 +82,12 @@ export interface CheckedStack {
     /** The first level drain that joins in it, and how far from its upper end, metres. */
     readonly firstJoin: { readonly element: ElementId | null; readonly distance: number } | null;
   }[];
+  /** Where it steps aside inclined, but not level, from the top; heights in metres. */
+  readonly inclined: readonly {
+    readonly elements: readonly ElementId[];
+    readonly top: number;
+    readonly bottom: number;
+  }[];
   /** Metres from its foot up to the nearest cleanout on the stack; 0 at the foot; null: there is none. */
   readonly cleanout: number | null;
 }

@@ -49,6 +49,7 @@ export type FindingCode =
   | 'suds-zone'
   | 'fixture-unidentified'
   | 'use-unknown'
+  | 'sewer-too-large'
   | 'fixture-unconnected'
   | 'open-end'
   | 'dead-end'
@@ -115,6 +116,7 @@ export const severityOf: Readonly<Record<FindingCode, Severity>> = {
   'slope-unknown': 'warning',
   'fixture-unidentified': 'warning',
   'use-unknown': 'warning',
+  'sewer-too-large': 'warning',
   'open-end': 'warning',
   loop: 'warning',
   'wrong-system': 'warning',

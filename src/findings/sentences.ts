@@ -139,9 +139,11 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
       ? `The stack ${first(f)} has ${text(f, 'intervals')} branch intervals and no relief vent to its vent stack at the ${text(f, 'interval')}th from the top${f.clause}.`
       : `The stack ${first(f)} takes fixtures from ${text(f, 'storeys')} storeys and has no yoke vent at ${f.facts.offset === true ? 'or above its offset at ' : ''}storey ${num(f, 'storey') + 1}${f.clause}.`,
   'offset-relief-vent-missing': (f) =>
-    has(f, 'intervals')
-      ? `The offset ${first(f)} is ${f.length(num(f, 'offsetM'))} long below ${text(f, 'intervals')} branch intervals with ${load(f)}; beyond ${text(f, 'intervalsMost')} it needs a vent above it and one below it, and has ${text(f, 'reliefVents')} of the two${has(f, 'larger') ? `; or stack and offset of ${text(f, 'larger')}, as wide as stack and vent together` : ''}${f.clause}.`
-      : `The offset ${first(f)} is ${f.length(num(f, 'offsetM'))} long below ${text(f, 'storeys')} storeys with ${load(f)}; it has ${text(f, 'reliefVents')} of two offset relief vents${f.clause}.`,
+    has(f, 'leastM')
+      ? `A branch joins the stack ${f.length(num(f, 'distanceM'))} from its inclined offset ${first(f)}, below ${text(f, 'intervals')} branch intervals: nearer than ${f.length(num(f, 'leastM'))} the offset needs a vent to the vent stack beside it${f.clause}.`
+      : has(f, 'intervals')
+        ? `The offset ${first(f)} is ${f.length(num(f, 'offsetM'))} long below ${text(f, 'intervals')} branch intervals with ${load(f)}; beyond ${text(f, 'intervalsMost')} it needs a vent above it and one below it, and has ${text(f, 'reliefVents')} of the two${has(f, 'larger') ? `; or stack and offset of ${text(f, 'larger')}, as wide as stack and vent together` : ''}${f.clause}.`
+        : `The offset ${first(f)} is ${f.length(num(f, 'offsetM'))} long below ${text(f, 'storeys')} storeys with ${load(f)}; it has ${text(f, 'reliefVents')} of two offset relief vents${f.clause}.`,
   'trap-arm-too-long': (f) =>
     has(f, 'turnDeg')
       ? `The trap arm of ${first(f)} turns ${f.number(num(f, 'turnDeg'))}°, at most ${f.number(num(f, 'limitDeg'))}°${f.clause}.`
@@ -178,6 +180,8 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
     f.facts.kind === null || f.facts.kind === undefined
       ? `${first(f)} drains, but nothing in the model says what it is: sizes are given from the lightest to the heaviest it may be.`
       : `${first(f)} is a ${plain(f.facts.kind)}, but a detail that decides its load is missing: sizes are given for both.`,
+  'sewer-too-large': (f) =>
+    `The building sewer ${first(f)} is drawn ${text(f, 'modelled')} and carries ${load(f)}: at its slope it wants at least ${f.number(num(f, 'leastUnits'))} to keep itself clean; a smaller sewer, or a steeper one${f.clause}.`,
   'use-unknown': (f) =>
     `${many(f, 'counts', 'count')} by the use of the building, which nobody says (setting use: ${text(f, 'uses')}): sizes are given from the lightest to the heaviest${f.facts.uses === 'private, public, assembly' ? ' of private and public use' : ''}.`,
   'fixture-unconnected': (f) => `${first(f)} has no drain pipe.`,

@@ -12,6 +12,7 @@ import type { VentFoot } from '../roles/roles.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
 import { checkedVents, mouthsOf } from './checked-vents.ts';
 import { drainAccess } from './drain-access.ts';
+import { inclinedOffsets } from './inclined-offsets.ts';
 import type { Run } from './outcome.ts';
 import { storeyTies } from './tied-storeys.ts';
 
@@ -120,6 +121,7 @@ export function checkFacts({ model, identities, network, paths, code }: Checkabl
       yokes: [...new Set(yokes.map((use) => roles.floors.at(heightAt(use))))].sort((a, b) => b - a),
       yokeHeights: yokes.map(heightAt).sort((a, b) => b - a),
       yokeTops: roles.feet.flatMap((foot) => yokeTop(stack, foot)),
+      inclined: inclinedOffsets(network, paths, stack),
       cleanout: cleanoutAbove(stack),
       ties: ties.get(stack.id) ?? stack.served.map(() => null),
       topStorey: stack.served.at(-1) ?? 0,

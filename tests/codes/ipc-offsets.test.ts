@@ -58,3 +58,64 @@ describe('R27 the vents may be left out where stack and offset are one size larg
     expect(missing(stepped(5, '2 in')).map(({ facts }) => facts.larger)).toEqual(['2½ in']);
   });
 });
+
+describe('R28 a branch within 2 ft of an inclined offset below more than four branch intervals (711.1)', () => {
+  /** Storeys of 4 units above an offset at 45°, whose foot lies so far above the branch of the lowest storey. */
+  const inclined = (above: number, gap: number, more = '') =>
+    run(
+      tower(
+        times(above + 1, '').map(() => [drain, drain]),
+        { stack: '2 in', more },
+      )
+        .replace('node S1 at 0 0 -0.4', 'node S1 at 0.8 0 -0.4')
+        .replace('S2 > S1', `S2 > OA (to ${0.4 + gap}) > OB (east 0.8 down 0.8) > S1`),
+    ).findings('offset-relief-vent-missing');
+  test.each([
+    { above: 5, gap: 0.6, found: 1, why: '0.60 m, less than 2 ft' },
+    { above: 5, gap: 0.62, found: 0, why: '0.62 m' },
+    { above: 4, gap: 0.3, found: 0, why: 'four intervals above' },
+  ])('$above above, a branch $gap m below: $why', ({ above, gap, found }) => {
+    expect(inclined(above, gap).map(({ clause }) => clause)).toEqual(times(found, '711.1'));
+  });
+  test('a vent to the vent stack beside it settles it', () => {
+    const yoke =
+      'vent 2 in: OA > YU (north 0.5 rise 1:50) > VQ (to 18.15)\nvent 2 in: VF > VB (north 0.6 rise 1:50) > VQ > VH';
+    const text = tower(
+      times(6, '').map(() => [drain, drain]),
+      { stack: '2 in', more: yoke },
+    )
+      .replace('node S1 at 0 0 -0.4', 'node S1 at 0.8 0 -0.4')
+      .replace('S2 > S1', 'S2 > OA (to 0.9) > OB (east 0.8 down 0.8) > S1')
+      .replace('S1 > SF', 'S1 > VF (down 0.3) > SF');
+    const done = run(text);
+    expect(done.role('OA-YU')).toBe('yoke-vent');
+    expect(done.findings('offset-relief-vent-missing')).toEqual([]);
+  });
+});
+
+test('R17 nothing joins a level offset within ten stack sizes of its head: 25 in, 0.635 m, of a 2½ in stack for 14 (704.3)', () => {
+  const joined = (distance: number) =>
+    run(
+      tower(
+        times(3, '').map(() => [drain, drain]),
+        {
+          stack: '2 in',
+          more: `node Q from M north 2 rise 1:48
+trap TQ from Q north 0.3 rise 1:48
+floor-drain FQ from TQ to 3, untrapped, trap 2 in
+drain 2 in: FQ > TQ > Q > M
+vent 2 in: Q > QT (to 9.8)
+terminal QT`,
+        },
+      )
+        .replace('node S1 at 0 0 -0.4', 'node S1 at 2 0 -0.4')
+        .replace(
+          'S2 > S1',
+          `S2 > OA (to 1.4) > M (east ${distance} fall 1:48) > OB (east ${2 - distance} fall 1:48) > S1`,
+        ),
+    )
+      .findings('branch-near-foot')
+      .map(({ clause, facts }) => [clause, facts.offset]);
+  expect(joined(0.62)).toEqual([['704.3', true]]);
+  expect(joined(0.65)).toEqual([]);
+});

@@ -175,14 +175,11 @@ roof "Roof" from -20 -20 to 20 20 top ${height} thick 0.3`;
 });
 
 describe('R27 building sewers from 8 in on by Table 717.1', () => {
-  const sewer = (load: number, slope: string) =>
-    run(
-      `${ventedRow([drain, drain]).replaceAll('1:50', slope)}
-slab "Floor" from -2 -2 to 8 2 top 0 thick 0.2
+  const walls = `slab "Floor" from -2 -2 to 8 2 top 0 thick 0.2
 wall "East" from 8 -2 to 8 2 height 3 layers "brick" 200 external loadbearing
-wall "West" from -2 2 to -2 -2 height 3 layers "brick" 200 external loadbearing`,
-      bringing({ F1: load - 2 }),
-    );
+wall "West" from -2 2 to -2 -2 height 3 layers "brick" 200 external loadbearing`;
+  const sewer = (load: number, slope: string) =>
+    run(`${ventedRow([drain, drain]).replaceAll('1:50', slope)}\n${walls}`, bringing({ F1: load - 2 }));
   const step = (load: number, slope: string) => {
     const pipes = sewer(load, slope).result.pipes.flatMap(({ trail, sections = [] }) => [
       ...trail,
@@ -192,6 +189,22 @@ wall "West" from -2 2 to -2 -2 height 3 layers "brick" 200 external loadbearing`
   };
   test('up to 720 by Table 703.2; 721 is 8 in', () => {
     expect([step(720, '1:48'), step(721, '1:48')]).toEqual(['none', '8 in']);
+  });
+  test('an 8 in sewer carries at least 275 at 1/4 and 625 at 1/8, a 10 in one 300', () => {
+    const drawn = (load: number, slope: string, size: string) =>
+      runSketch(
+        `${ventedRow([drain, drain]).replaceAll('1:50', slope).replace('drain 3 in: J1', `drain ${size} in: J1`)}
+${walls}`,
+        { code: 'upc-2021', answers: { ...bringing({ F1: load - 2 }), settings: { use: 'private' } as never } },
+      )
+        .findings('sewer-too-large')
+        .map(({ clause, facts, severity }) => [clause, facts.leastUnits, severity]);
+    const short = (least: number) => [['717.1, Table 717.1', least, 'warning']];
+    expect([drawn(274, '1:48', '8'), drawn(275, '1:48', '8')]).toEqual([short(275), []]);
+    expect([drawn(624, '1:96', '8'), drawn(625, '1:96', '8')]).toEqual([short(625), []]);
+    expect([drawn(299, '1:48', '10'), drawn(300, '1:48', '10')]).toEqual([short(300), []]);
+    // Up to 6 in Table 703.2 says no least load.
+    expect(drawn(10, '1:48', '6')).toEqual([]);
   });
   test('at 1/4 8 in takes 3900, 10 in 6800', () => {
     expect([3900, 3901, 6800, 6801].map((load) => step(load, '1:48'))).toEqual(['8 in', '10 in', '10 in', '12 in']);

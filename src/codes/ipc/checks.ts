@@ -2,7 +2,7 @@ import { type Finding, finding } from '../../findings/finding.ts';
 import { rowAtSize } from '../../tables/find-row.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
-import type { Check } from '../check.ts';
+import type { Check, CheckedStack } from '../check.ts';
 import { branchIntervals } from '../rules/branch-intervals.ts';
 import { nearFoot, yokesTooLow } from '../rules/stack-foot-checks.ts';
 import { type ArmLimits, armFaults, everyTrapVented, leastSlope, outletPipe } from '../rules/trap-checks.ts';
@@ -11,7 +11,7 @@ import { endsOverRoof, ventLeavesUpward, ventsMeetHigh, ventsRiseFirst } from '.
 import { shareOf, widthOf } from '../rules/vent-sizes.ts';
 import type { Tools } from '../tools.ts';
 import { cleanouts } from './cleanouts.ts';
-import { offsetVents } from './offset-checks.ts';
+import { inclinedOffsetVents, offsetVents } from './offset-checks.ts';
 
 /** Demands that are no size: R15, R17, R39 to R43, R45, R47, R75, R76, R78, R79, R81, R85, R94, R97 to R99. */
 export function checks(tools: Tools): Check[] {
@@ -38,6 +38,7 @@ export function checks(tools: Tools): Check[] {
     ventStacks(tools),
     tallStacks(tools),
     offsetVents(tools),
+    inclinedOffsetVents(tools),
     nearFootOf(tools),
     mainVentCheck(rule('IPC-R78'), series, ({ required }) =>
       required === null
@@ -196,13 +197,13 @@ function tallStacks({ family }: Tools): Check {
   };
 }
 
-/** No level branch joins within ten pipe sizes of a stack's foot (704.3, R17). */
+/** No level branch joins within ten pipe sizes of a stack's foot, nor of the head of an offset (704.3, R17). */
 function nearFootOf({ family }: Tools): Check {
   const { series } = family;
   const sizes = family.number('foot-distance', 'factor');
-  return nearFoot(family.rule('IPC-R17'), ({ footSize }) =>
-    footSize === null ? null : (sizes.value * widthOf(series, footSize)) / 1000,
-  );
+  const least = ({ footSize }: CheckedStack): number | null =>
+    footSize === null ? null : (sizes.value * widthOf(series, footSize)) / 1000;
+  return nearFoot(family.rule('IPC-R17'), least, (_, stack) => least(stack));
 }
 
 /** Where air admittance valves may stand: not on tall stacks, with relief far down one, never as the only vent (918, R97 to R99). */

@@ -1,6 +1,7 @@
 import { type Finding, finding } from '../../findings/finding.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
 import { unitsOf } from '../../units/quantity.ts';
+import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { Check, CheckedPipe, CheckedStack } from '../check.ts';
 import { branchIntervals } from '../rules/branch-intervals.ts';
 import { nextAbove, shareOf, widthOf } from '../rules/vent-sizes.ts';
@@ -78,6 +79,40 @@ export function offsetVents(tools: Tools): Check {
         area(modelled) >= (stack === null ? 0 : area(stack)) + area(vent),
     );
   }
+}
+
+/**
+ * An inclined offset with more than four branch intervals above is vented as a level one is where a branch joins within
+ * 2 ft of it (711.1, R28): a yoke vent between its neighbouring branches.
+ */
+export function inclinedOffsetVents({ family }: Tools): Check {
+  const least = family.number('interval-least', 'length');
+  const most = family.number('offset-intervals', 'count');
+  const distance = family.number('offset-branch-distance', 'length');
+  const { clause } = family.rule('IPC-R28');
+  return {
+    id: 'IPC-R28',
+    run: ({ stacks }) =>
+      stacks.flatMap(({ inclined, joins, yokeHeights, elements }): Finding[] =>
+        inclined.flatMap(({ elements: own, top, bottom }) => {
+          const above = joins.filter(({ height }) => height !== null && height >= top - coordinateMetres);
+          const below = joins.flatMap(({ height }) =>
+            height !== null && height < top - coordinateMetres ? [height] : [],
+          );
+          const intervals = branchIntervals(above, least.value).length;
+          const near = joins.flatMap(({ height }) =>
+            height === null ? [] : [Math.max(0, height - top, bottom - height)],
+          );
+          const nearest = Math.min(...near);
+          if (intervals <= most.value || nearest >= distance.value - coordinateMetres) return [];
+          const next = Math.max(Number.NEGATIVE_INFINITY, ...below);
+          const last = Math.min(Number.POSITIVE_INFINITY, ...above.flatMap(({ height }) => height ?? []));
+          if (yokeHeights.some((height) => height > next && height <= last)) return [];
+          const facts = { intervals, intervalsMost: most.value, distanceM: nearest, leastM: distance.value };
+          return [finding('offset-relief-vent-missing', [...own, ...elements.slice(0, 1)], facts, clause)];
+        }),
+      ),
+  };
 }
 
 /** Size that the stack's vent stack requires, else its stack vent. */

@@ -7,13 +7,15 @@ import type { Check, CheckedStack } from '../check.ts';
 export const nearFoot = (
   { id, clause }: RuleEntry,
   leastOf: (stack: CheckedStack) => number | null,
-  inOffsets: (offset: CheckedStack['offsets'][number]) => number | null = () => null,
+  inOffsets: (offset: CheckedStack['offsets'][number], stack: CheckedStack) => number | null = () => null,
 ): Check => ({
   id,
   run: ({ stacks }) =>
     stacks.flatMap((stack): Finding[] => [
       ...tooNear(stack.firstBelow, leastOf(stack), stack.elements, false, clause),
-      ...stack.offsets.flatMap((offset) => tooNear(offset.firstJoin, inOffsets(offset), offset.elements, true, clause)),
+      ...stack.offsets.flatMap((offset) =>
+        tooNear(offset.firstJoin, inOffsets(offset, stack), offset.elements, true, clause),
+      ),
     ]),
 });
 

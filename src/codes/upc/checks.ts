@@ -1,8 +1,11 @@
 import { type Finding, finding } from '../../findings/finding.ts';
+import { reachesSlope } from '../../tables/find-slope.ts';
 import type { Row } from '../../tables/table.ts';
 import type { NominalSize } from '../../units/nominal-size.ts';
+import { type Load, unitsOf } from '../../units/quantity.ts';
 import { coordinateMetres, turnDegrees } from '../../units/uncertainty.ts';
 import type { Check, CheckedTrap } from '../check.ts';
+import { slopeReading } from '../rules/slopes-as-laid.ts';
 import { yokesTooLow } from '../rules/stack-foot-checks.ts';
 import { type ArmLimits, armFaults, everyTrapVented, leastSlope, outletPipe } from '../rules/trap-checks.ts';
 import { frostCheck, islandVents } from '../rules/vent-checks.ts';
@@ -27,6 +30,7 @@ export function checks(tools: Tools): Check[] {
     ventStacks(tools),
     ventAreas(tools),
     sudsZones(tools),
+    sewerLoads(tools),
     ventLeavesUpward(rule('UPC-R65'), family.number('vent-leaves', 'angle').value),
     ventsMeetHigh(
       rule('UPC-R64'),
@@ -195,6 +199,29 @@ function ventAreas({ family }: Tools): Check {
             clause,
           ),
         ];
+      }),
+  };
+}
+
+/** A large building sewer carries the least load that its size and slope want (717.1, R27). */
+function sewerLoads({ family }: Tools): Check {
+  const table = family.table('sewer');
+  const { share } = slopeReading(family);
+  const { clause } = family.rule('UPC-R27');
+  return {
+    id: 'UPC-R27',
+    run: ({ pipes }) =>
+      pipes.flatMap(({ use, element, modelled }): Finding[] => {
+        if (use.drain !== 'building-sewer' || use.vertical || element === null || modelled === null) return [];
+        const row = table.rows.find((one) => one.size('size').value === modelled);
+        const column =
+          use.slope === null
+            ? undefined
+            : table.columns.findLast(({ slope }) => slope !== null && reachesSlope(use.slope!, slope * share));
+        const least = column === undefined ? undefined : row?.amount(`least ${column.id}`).value;
+        if (typeof least !== 'number' || use.load >= least) return [];
+        const facts = { modelled, loadUnits: unitsOf(use.load), leastUnits: unitsOf(least as Load), slope: use.slope };
+        return [finding('sewer-too-large', [element], facts, clause)];
       }),
   };
 }

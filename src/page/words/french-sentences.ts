@@ -94,9 +94,11 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
       ? `La colonne de chute ${first(f)} a ${text(f, 'intervals')} intervalles de branchement et pas de ventilation vers sa colonne secondaire au ${text(f, 'interval')}e depuis le haut${f.clause}.`
       : `La colonne de chute ${first(f)} reçoit des appareils de ${text(f, 'storeys')} étages et n’a pas de ventilation de chute ${f.facts.offset === true ? 'à sa déviation ou au-dessus, ' : ''}à l’étage ${num(f, 'storey') + 1}${f.clause}.`,
   'offset-relief-vent-missing': (f) =>
-    has(f, 'intervals')
-      ? `La déviation ${first(f)}, longue de ${f.length(num(f, 'offsetM'))}, est sous ${text(f, 'intervals')} intervalles de branchement avec ${load(f)}; au-delà de ${text(f, 'intervalsMost')} il lui faut une ventilation au-dessus et une au-dessous, et elle en a ${text(f, 'reliefVents')}${has(f, 'larger') ? `; ou une colonne et une déviation de ${text(f, 'larger')}, aussi larges que la colonne et la ventilation réunies` : ''}${f.clause}.`
-      : `La déviation ${first(f)}, longue de ${f.length(num(f, 'offsetM'))} sous ${text(f, 'storeys')} étages avec ${load(f)}, a ${text(f, 'reliefVents')} des deux ventilations d’équilibrage exigées${f.clause}.`,
+    has(f, 'leastM')
+      ? `Un branchement rejoint la colonne à ${f.length(num(f, 'distanceM'))} de sa déviation inclinée ${first(f)}, sous ${text(f, 'intervals')} intervalles de branchement : à moins de ${f.length(num(f, 'leastM'))} il faut à côté une ventilation vers la colonne de ventilation secondaire${f.clause}.`
+      : has(f, 'intervals')
+        ? `La déviation ${first(f)}, longue de ${f.length(num(f, 'offsetM'))}, est sous ${text(f, 'intervals')} intervalles de branchement avec ${load(f)}; au-delà de ${text(f, 'intervalsMost')} il lui faut une ventilation au-dessus et une au-dessous, et elle en a ${text(f, 'reliefVents')}${has(f, 'larger') ? `; ou une colonne et une déviation de ${text(f, 'larger')}, aussi larges que la colonne et la ventilation réunies` : ''}${f.clause}.`
+        : `La déviation ${first(f)}, longue de ${f.length(num(f, 'offsetM'))} sous ${text(f, 'storeys')} étages avec ${load(f)}, a ${text(f, 'reliefVents')} des deux ventilations d’équilibrage exigées${f.clause}.`,
   'trap-arm-too-long': (f) =>
     has(f, 'turnDeg')
       ? `Le bras de siphon de ${first(f)} tourne de ${f.number(num(f, 'turnDeg'))}°, au plus ${f.number(num(f, 'limitDeg'))}°${f.clause}.`
@@ -132,6 +134,8 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
     has(f, 'kind')
       ? `${first(f)} : ${f.kind(f.facts.kind)}, mais il manque un détail qui décide de sa charge; les diamètres sont donnés pour les deux cas.`
       : `${first(f)} se vide, mais rien dans la maquette ne dit ce que c’est : les diamètres vont du plus léger au plus lourd possible.`,
+  'sewer-too-large': (f) =>
+    `L’égout du bâtiment ${first(f)} est dessiné en ${text(f, 'modelled')} et porte ${load(f)} : à sa pente il lui en faut au moins ${f.number(num(f, 'leastUnits'))} pour se curer; un égout plus petit ou plus pentu${f.clause}.`,
   'use-unknown': (f) =>
     `${many(f, 'compte', 'comptent')} selon l’usage du bâtiment, que personne n’indique (réglage use : ${text(f, 'uses')}) : les diamètres vont du plus léger au plus lourd.`,
   'fixture-unconnected': (f) => `${first(f)} n’a pas de tuyau d’évacuation.`,

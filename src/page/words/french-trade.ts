@@ -108,6 +108,7 @@ export const frenchCodes: Words['codes'] = {
   'suds-zone': 'zone de mousse',
   'fixture-unidentified': 'appareil non identifié',
   'use-unknown': 'usage du bâtiment inconnu',
+  'sewer-too-large': 'égout trop grand',
   'fixture-unconnected': 'appareil non raccordé',
   'open-end': 'bout ouvert',
   'dead-end': 'cul-de-sac',
