@@ -122,5 +122,6 @@ function firstState(building: Building): PageState {
     language: /^fr\b/i.test(navigator.language) ? 'fr' : 'en',
     theme: window.matchMedia('(prefers-color-scheme: dark)').matches ? 'dark' : 'light',
     riser: 0,
+    unfolded: false,
   };
 }

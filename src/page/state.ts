@@ -23,6 +23,8 @@ export interface PageState {
   readonly language: Language;
   readonly theme: 'light' | 'dark';
   readonly riser: number;
+  /** Alike storeys of a riser each drawn for itself. */
+  readonly unfolded: boolean;
 }
 
 export type Chosen = { readonly is: 'pipe' | 'fixture'; readonly row: number };

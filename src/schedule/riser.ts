@@ -1,6 +1,7 @@
 import type { Vec3 } from '../geometry/vector.ts';
 import type { JointId, Pipe } from '../network/network.ts';
-import type { PipeState, Result } from './result.ts';
+import type { PipeState, Result, ResultFixture } from './result.ts';
+import { type Folded, foldedStoreys, type RiserFold } from './riser-fold.ts';
 import { type Flat, isometry } from './riser-isometry.ts';
 import { type RiserLine, type RiserLook, stateOf } from './riser-line.ts';
 import { riserPieces } from './riser-pieces.ts';
@@ -14,6 +15,10 @@ export interface RiserFloor {
   readonly storey: number;
   readonly name: string | null;
   readonly at: Flat;
+  /** Of a folded storey: the storey that is drawn in its place. */
+  readonly like?: number;
+  /** Of a drawn storey: those that are alike and folded away. */
+  readonly also?: readonly number[];
 }
 
 /**
@@ -30,6 +35,8 @@ export interface Riser {
   readonly floors: readonly RiserFloor[];
   /** What asks for words, most important first. */
   readonly runs: readonly RiserRun[];
+  /** The same with storeys that are alike drawn once; absent where no two are. */
+  readonly folded?: Riser;
 }
 
 /** Line drawings of all drain systems in their order, then of pieces with fixtures that reach no sewer. */
@@ -48,33 +55,65 @@ export function risersOf(result: Result, source: RiserSource): readonly Riser[] 
       return points === null ? [] : [{ pipe, points, row: rowOfPipe(pipe) }];
     });
     if (drawn.length === 0) return [];
-    const flat = isometry(drawn.map(({ points }) => points));
-    const lines = drawn.map(({ pipe, points, row }): RiserLine & { readonly depth: number } => {
-      const state = stateOf(result, network, pipe, row);
+    const name = stack === null ? null : rowOfPipe(network.pipes[stack]!);
+    const draw = (some: readonly Drawn[], folds: readonly RiserFold[]): Riser => {
+      const flat = isometry(some.map(({ points }) => points));
+      const lines = some.map(({ pipe, points, row }): RiserLine & { readonly depth: number } => {
+        const state = stateOf(result, network, pipe, row);
+        return {
+          section: pipe.id,
+          pipe: row,
+          look: lookOf(source, pipe, state),
+          verdict: state?.verdict ?? null,
+          width: widthOf(state),
+          points: points.map((point) => flat.at(point)),
+          depth: Math.min(...points.map((point) => flat.depth(point))),
+        };
+      });
+      lines.sort((a, b) => a.depth - b.depth || a.section - b.section);
+      const inside = new Set<JointId>(some.flatMap(({ pipe }) => pipe.ends));
       return {
-        section: pipe.id,
-        pipe: row,
-        look: lookOf(source, pipe, state),
-        verdict: state?.verdict ?? null,
-        width: widthOf(state),
-        points: points.map((point) => flat.at(point)),
-        depth: Math.min(...points.map((point) => flat.depth(point))),
-      };
-    });
-    lines.sort((a, b) => a.depth - b.depth || a.section - b.section);
-    const inside = new Set<JointId>(drawn.flatMap(({ pipe }) => pipe.ends));
-    const symbols = riserSymbols(result, source, inside, placeOf, flat);
-    return [
-      {
         system,
-        stack: stack === null ? null : rowOfPipe(network.pipes[stack]!),
+        stack: name,
         lines: lines.map(({ depth: _, ...line }) => line),
-        symbols,
-        floors: floorsOf(source, drawn, flat),
+        symbols: riserSymbols(result, source, inside, placeOf, flat),
+        floors: floorsOf(source, some, flat, folds),
         runs: labelRuns(result, source, lines),
-      },
-    ];
+      };
+    };
+    const folded = fold(result, source, drawn);
+    const whole = draw(drawn, []);
+    if (folded === null) return [whole];
+    const left = drawn.filter(({ pipe }) => !folded.hidden.has(pipe.id));
+    return [{ ...whole, folded: draw(left, folded.folds) }];
   });
+}
+
+interface Drawn {
+  readonly pipe: Pipe;
+  readonly points: readonly Vec3[];
+  readonly row: number;
+}
+
+function fold(result: Result, { model, network, paths }: RiserSource, drawn: readonly Drawn[]): Folded | null {
+  const storeys = new Map(model.storeys.map(({ name }, storey) => [name, storey]));
+  const storeyOf = (name: string | null | undefined): number | null =>
+    name == null ? null : (storeys.get(name) ?? null);
+  const joints = new Set<JointId>(drawn.flatMap(({ pipe }) => pipe.ends));
+  const rows = new Map(result.fixtures.map((fixture) => [`${fixture.globalId} ${fixture.stepId}`, fixture]));
+  const fixtures = new Map<number, ResultFixture[]>();
+  for (const { element, outlet } of paths.fixtures) {
+    const found = model.elements[element];
+    const fixture = found === undefined ? undefined : rows.get(`${found.globalId} ${found.stepId}`);
+    const storey = storeyOf(fixture?.storey);
+    if (fixture === undefined || storey === null || !joints.has(outlet)) continue;
+    fixtures.set(storey, [...(fixtures.get(storey) ?? []), fixture]);
+  }
+  const pipes = drawn.map(({ pipe, row }) => {
+    const state = stateOf(result, network, pipe, row);
+    return { pipe, state, storey: storeyOf(state?.storey) };
+  });
+  return foldedStoreys(pipes, fixtures);
 }
 
 /** From joint to joint; null where neither the model nor the order of the piping gives a place. */
@@ -101,7 +140,13 @@ function floorsOf(
   { model }: RiserSource,
   drawn: readonly { readonly points: readonly Vec3[] }[],
   flat: ReturnType<typeof isometry>,
+  folds: readonly RiserFold[],
 ): readonly RiserFloor[] {
+  const foldOf = (storey: number): Pick<RiserFloor, 'like' | 'also'> => {
+    const own = folds.find(({ drawn: shown, alike }) => shown === storey || alike.includes(storey));
+    if (own === undefined) return {};
+    return own.drawn === storey ? { also: own.alike } : { like: own.drawn };
+  };
   const floors: RiserFloor[] = [];
   const seen = new Set<string>();
   model.storeys.forEach(({ name, elevation }, storey) => {
@@ -114,7 +159,7 @@ function floorsOf(
         const key = `${storey} ${a[0].toFixed(1)} ${a[1].toFixed(1)}`;
         if (seen.has(key)) continue;
         seen.add(key);
-        floors.push({ storey, name, at: flat.at([a[0], a[1], elevation]) });
+        floors.push({ storey, name, at: flat.at([a[0], a[1], elevation]), ...foldOf(storey) });
       }
     }
   });

@@ -43,6 +43,40 @@ function collisions(riser: Riser, { labels }: PlacedRiser): readonly string[] {
   ]);
 }
 
+// The school's own heading: storeys 2 and 3 are drawn alike; 1 has the mop sink's line beside it, 4 no relief vent.
+test('the school folded: storey 3 is named on storey 2, nothing of it but what runs through is drawn', () => {
+  const { outcome, result } = sampleOutcome('school');
+  const [whole, ...others] = risersOf(result, outcome);
+  expect(others).toEqual([]);
+  const folded = whole!.folded!;
+  const names = new Map(folded.floors.map(({ name, like, also }) => [name, { like, also }]));
+  expect(Object.fromEntries(names)).toEqual({
+    'Storey 1': { like: undefined, also: undefined },
+    'Storey 2': { like: undefined, also: [2] },
+    'Storey 3': { like: 1, also: undefined },
+    'Storey 4': { like: undefined, also: undefined },
+  });
+  const drawn = new Set(folded.lines.map(({ pipe }) => pipe));
+  const gone = whole!.lines.flatMap(({ pipe }) => (pipe < 0 || drawn.has(pipe) ? [] : [result.pipes[pipe]!]));
+  expect(gone.length).toBeGreaterThan(50);
+  expect(new Set(gone.map(({ storey }) => storey))).toEqual(new Set(['Storey 3']));
+  expect(gone.filter(({ role }) => role === 'stack' || role === 'vent-stack')).toEqual([]);
+  // A storey of the school: eight urinals, four lavatories, six closets.
+  const fixtures = ({ symbols }: Riser): number => symbols.filter(({ is }) => is === 'fixture').length;
+  expect(fixtures(whole!) - fixtures(folded)).toBe(18);
+});
+
+test('one pipe more, one size other, and the storeys are not alike', () => {
+  const { outcome, result } = sampleOutcome('school');
+  const pipes = result.pipes.map((pipe) =>
+    pipe.name === 'S3.J2-S3.J3' ? { ...pipe, verdict: 'oversized' as const } : pipe,
+  );
+  expect(pipes.filter(({ verdict }) => verdict === 'oversized').length).toBe(
+    result.pipes.filter(({ verdict }) => verdict === 'oversized').length + 1,
+  );
+  expect(risersOf({ ...result, pipes }, outcome)[0]!.folded).toBeUndefined();
+});
+
 describe('risers of the sample models', () => {
   test.each(samples)('$name: every pipe and fixture drawn, no label on anything', ({ name }) => {
     const { outcome, result } = sampleOutcome(name);
@@ -54,7 +88,7 @@ describe('risers of the sample models', () => {
     expect(drains.filter(({ id }) => !drawn.has(id))).toEqual([]);
     const fixtures = risers.flatMap(({ symbols }) => symbols.filter(({ is }) => is === 'fixture'));
     expect(fixtures).toHaveLength(result.fixtures.length);
-    for (const riser of risers) {
+    for (const riser of risers.flatMap((whole) => [whole, ...(whole.folded === undefined ? [] : [whole.folded])])) {
       const placed = place(riser);
       expect(placed.labels.length).toBeGreaterThanOrEqual(riser.runs.length);
       expect(collisions(riser, placed)).toEqual([]);

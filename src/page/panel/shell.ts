@@ -136,9 +136,9 @@ export function shell(desk: Desk): Shell {
       top.show(now);
     }
     if (now.view === 'riser') {
-      if (changed('view', 'riser')) riserHost.replaceChildren(riserView(desk));
+      if (changed('view', 'riser', 'unfolded')) refocus(riserHost, () => riserHost.replaceChildren(riserView(desk)));
       const other = changed('view', 'chosen') ? riserOf(desk) : null;
-      if (other !== null) store.set({ riser: other });
+      if (other !== null) store.set(other);
       else markChosen(desk, riserHost);
     }
     canvas.classList.toggle('measuring', now.measuring);

@@ -6,6 +6,7 @@ import { shortLoad, sizesText, slopeText } from '../format.ts';
 import type { Desk } from '../panel/desk.ts';
 import { make, makeSvg } from '../panel/element.ts';
 import { capital, pipeName, shown } from '../panel/names.ts';
+import type { PageState } from '../state.ts';
 import { kindName, named } from '../words/words.ts';
 import { panZoom } from './pan-zoom.ts';
 import { shapeElement } from './shape-element.ts';
@@ -14,12 +15,19 @@ import { shapeElement } from './shape-element.ts';
 export function riserView(desk: Desk): HTMLElement {
   const { building, store, words } = desk;
   const { risers } = building.data;
-  const riser = risers[store.state.riser] ?? risers[0];
-  if (riser === undefined)
+  const whole = risers[store.state.riser] ?? risers[0];
+  if (whole === undefined)
     return make('div', { class: 'riser' }, make('p', { class: 'riser-none quiet' }, words.riser.none));
+  const riser = store.state.unfolded ? whole : (whole.folded ?? whole);
+  const storeyName = (storey: number): string =>
+    shown(building.data.scene.storeys[storey]?.name) || `${words.tools.storey} ${storey + 1}`;
   const placed = placeRiserLabels(riser, {
     run: (run) => runTexts(desk, run),
-    floor: ({ name, storey }) => shown(name) || `${words.tools.storey} ${storey + 1}`,
+    floor: ({ storey, like, also }) => {
+      if (like !== undefined) return words.riser.like(storeyName(storey), storeyName(like));
+      if (also === undefined) return storeyName(storey);
+      return words.riser.also(storeyName(storey), also.length + 1, also.map(storeyName).join(', '));
+    },
   });
   const { shapes, frame: tight } = riserDrawing(riser, placed, {
     looks: words.riser.looks,
@@ -46,7 +54,7 @@ export function riserView(desk: Desk): HTMLElement {
   const host = make(
     'div',
     { class: 'riser' },
-    make('div', { class: 'tool-host' }, riserTools(desk, risers, view)),
+    make('div', { class: 'tool-host' }, riserTools(desk, whole, view)),
     drawing,
   );
   return host;
@@ -67,21 +75,26 @@ export function markChosen(desk: Desk, host: HTMLElement): void {
   for (const element of host.querySelectorAll(`[${name}="${chosen.row}"]`)) element.classList.add('chosen');
 }
 
-/** The drawing on which something chosen stands; null where it stands on the one that is open, or on none. */
-export function riserOf(desk: Desk): number | null {
-  const { chosen, riser } = desk.store.state;
+/**
+ * What to open so that what is chosen is seen: its drawing, unfolded where it stands on a storey that is folded away;
+ * null where it is seen already, or on none.
+ */
+export function riserOf(desk: Desk): Pick<PageState, 'riser' | 'unfolded'> | null {
+  const { chosen, riser, unfolded } = desk.store.state;
   const { risers } = desk.building.data;
   const has = (drawing: Riser | undefined): boolean =>
     chosen?.is === 'pipe'
       ? (drawing?.lines.some(({ pipe }) => pipe === chosen.row) ?? false)
       : (drawing?.symbols.some(({ fixture }) => fixture === chosen?.row) ?? false);
-  if (chosen === null || has(risers[riser])) return null;
-  const found = risers.findIndex(has);
-  return found < 0 ? null : found;
+  const seen = (drawing: Riser | undefined): boolean => has(unfolded ? drawing : (drawing?.folded ?? drawing));
+  if (chosen === null || seen(risers[riser])) return null;
+  const found = has(risers[riser]) ? riser : risers.findIndex(has);
+  return found < 0 ? null : { riser: found, unfolded: unfolded || !seen(risers[found]) };
 }
 
-function riserTools(desk: Desk, risers: readonly Riser[], view: ReturnType<typeof panZoom>): HTMLElement {
-  const { store, words } = desk;
+function riserTools(desk: Desk, open: Riser, view: ReturnType<typeof panZoom>): HTMLElement {
+  const { store, words, building } = desk;
+  const { risers } = building.data;
   const tool = (label: string, press: () => void): HTMLElement =>
     make('button', { type: 'button', class: 'tool', onclick: press }, label);
   const select = make(
@@ -96,6 +109,18 @@ function riserTools(desk: Desk, risers: readonly Riser[], view: ReturnType<typeo
     { class: 'toolbar', role: 'toolbar', 'aria-label': words.page.tools },
     risers.length > 1 &&
       make('label', { class: 'tool-select' }, make('span', { class: 'offscreen' }, words.riser.which), select),
+    open.folded !== undefined &&
+      make(
+        'button',
+        {
+          type: 'button',
+          class: 'tool',
+          id: 'riser-fold',
+          'aria-pressed': String(!store.state.unfolded),
+          onclick: () => store.set({ unfolded: !store.state.unfolded }),
+        },
+        words.riser.fold,
+      ),
     tool(words.riser.fit, () => view.fit()),
     tool(words.riser.zoomIn, () => view.zoom(0.8)),
     tool(words.riser.zoomOut, () => view.zoom(1.25)),

@@ -191,6 +191,9 @@ export const english: Words = {
     which: 'Drain system',
     zoomIn: 'Larger',
     zoomOut: 'Smaller',
+    fold: 'Alike storeys once',
+    like: (storey, other) => `${storey}: as ${other}`,
+    also: (storey, count, others) => `${storey} (×${count}: ${others})`,
   },
   verdict: { undersized: 'Too small', agrees: 'Agrees', oversized: 'Larger than needed', unknown: 'Cannot be judged' },
   roles: {

@@ -208,6 +208,9 @@ export const french: Words = {
     which: 'Réseau d’évacuation',
     zoomIn: 'Agrandir',
     zoomOut: 'Réduire',
+    fold: 'Étages semblables une fois',
+    like: (storey, other) => `${storey} : comme ${other}`,
+    also: (storey, count, others) => `${storey} (×${count} : ${others})`,
   },
   verdict: {
     undersized: 'Trop petit',

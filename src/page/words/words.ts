@@ -140,6 +140,9 @@ export interface Words extends PanelWords {
     readonly which: string;
     readonly zoomIn: string;
     readonly zoomOut: string;
+    readonly fold: string;
+    readonly like: (storey: string, other: string) => string;
+    readonly also: (storey: string, count: number, others: string) => string;
   };
   readonly verdict: Readonly<Record<'undersized' | 'agrees' | 'oversized' | 'unknown', string>>;
   readonly roles: Readonly<Record<string, string>>;
