@@ -45,6 +45,8 @@ export interface SceneParts {
 }
 
 const margin = 0.9;
+/** Pixels at the top that the tools cover. */
+const underTools = 56;
 /** A model of more sections than this is drawn in lines first. */
 const firstInLines = 4000;
 
@@ -180,9 +182,9 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
   /** The same view in the part of the picture that nothing covers. */
   const clearOf = (covered: number, eye: Eye): Eye => {
     const height = Math.max(1, canvas.clientHeight);
-    const free = Math.max(height * 0.3, height - covered);
+    const free = Math.max(height * 0.3, height - covered - underTools);
     const distance = eye.distance * (height / free);
-    const lower = (((height - free) / 2) * 2 * spread(eye) * distance) / height;
+    const lower = ((covered - underTools) * spread(eye) * distance) / height;
     const [cy, sy, cp, sp] = [Math.cos(eye.yaw), Math.sin(eye.yaw), Math.cos(eye.pitch), Math.sin(eye.pitch)];
     const [x, y, z] = eye.target;
     return { ...eye, distance, target: [x + sy * sp * lower, y - cy * sp * lower, z - cp * lower] };

@@ -36,8 +36,11 @@ export interface Stage {
   dispose(): void;
 }
 
-/** Milliseconds: a frame dearer than this while moving asks for less detail. */
-const dear = 42;
+/**
+ * Milliseconds: a frame dearer than this while moving asks for less detail. A screen shows a new picture every 16.7 ms,
+ * so that what takes two of these is seen 30 times a second and what takes a little more only 20 times.
+ */
+const dear = 32;
 /** A picture dearer than this is not drawn eight times only to smooth its edges. */
 const dearStill = 160;
 const coarseRatio = 0.6;
