@@ -220,7 +220,8 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
       f.facts.loadBearing === true ? ' and bears load' : f.facts.loadBearing === false ? '' : ' if it bears load';
     return `${at} runs along ${wall} through its studs: a hole of ${mm('holeMm')}, at most ${mm('holeMostMm')} in a stud that is ${mm('cavityMm')} deep${bears} and not reinforced (${text(f, 'holeClause')}); ${takes}.`;
   },
-  'double-water-path': (f) => `${first(f)} has two ways for its water.`,
+  'double-water-path': (f) =>
+    `${first(f)} has ${text(f, 'ways')} ways for its water: sized by one of them, what leaves by ${f.about.slice(1).join(', ') || 'the other'} is not counted there.`,
   'doubled-element': (f) => `${first(f)} stands twice at one place; one is used.`,
   'group-not-applied': (f) =>
     `${text(f, 'fixtures')} fixtures may form bathroom groups, but the model puts them in no room: their loads are added one by one${f.clause}.`,

@@ -80,10 +80,13 @@ const without = (reasons: Reasons, readmitted: readonly ElementId[]): Reasons =>
 };
 
 /** Ports first, then geometry, from what lies in a fitting to what lies under a fixture. */
-function joinAll(model: Model, identities: readonly Identity[], reasons: Reasons, maxGap: number | null) {
+function joinAll(model: Model, identities: readonly Identity[], given: Reasons, maxGap: number | null) {
   let reach = reachOf(maxGap);
+  const taking = given.map((reason) => reason === null);
+  const { keeper, findings: doubles, sleeves } = findDoubles(model, identities, taking);
+  const isSleeve = new Set<number>(sleeves);
+  const reasons = given.map((reason, id) => (isSleeve.has(id) ? ('sleeve or insulation' as const) : reason));
   const candidates = reasons.map((reason) => reason === null);
-  const { keeper, findings: doubles } = findDoubles(model, identities, candidates);
   const piping = pipingOf(
     model,
     identities,
@@ -113,7 +116,11 @@ function misfiledPipes(
 ): readonly ElementId[] {
   const suspects = reasons.map(
     (reason, id) =>
-      reason !== null && reason !== 'answer' && reason !== 'file apart' && identities[id]!.part === 'pipe',
+      reason !== null &&
+      reason !== 'answer' &&
+      reason !== 'sleeve or insulation' &&
+      reason !== 'file apart' &&
+      identities[id]!.part === 'pipe',
   );
   return misfiledByPlace(pipingOf(model, identities, suspects).pipes, piping, welds, reach);
 }

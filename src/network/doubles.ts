@@ -4,24 +4,26 @@ import { boxGrid } from '../geometry/box-grid.ts';
 import { footOn, polyline } from '../geometry/polyline.ts';
 import { type Box, distance } from '../geometry/vector.ts';
 import type { Identity } from '../model/identity.ts';
-import type { Element, Model } from '../model/model.ts';
+import type { Element, ElementId, Model } from '../model/model.ts';
 import { doubled } from './tolerance.ts';
 
 /**
  * Elements drawn twice at one place. Returns by element id the one that stands for it: itself, or the one it doubles.
- * Kept is the one with more connected ports, then the one whose system says drainage, then the lowest GlobalId.
+ * Kept is the one with more connected ports, then the one whose system says drainage, then the lowest GlobalId. Sleeves and
+ * insulation, drawn as pipes round a pipe, are told apart: they stand for nothing.
  */
 export function findDoubles(
   model: Model,
   identities: readonly Identity[],
   takesPart: readonly boolean[],
-): { keeper: Int32Array; findings: readonly Finding[] } {
+): { keeper: Int32Array; findings: readonly Finding[]; sleeves: readonly ElementId[] } {
   const keeper = Int32Array.from(model.elements, (_, id) => id);
   const findings: Finding[] = [];
   const marks = model.elements.map((element) => (takesPart[element.id] ? markOf(element, identities) : null));
   const grid = boxGrid(model.elements.map((element) => (takesPart[element.id] ? wholeOf(element, identities) : null)));
   const pairs: [Element, Element][] = [];
   const parts: [Element, Element][] = [];
+  const sleeves = new Set<ElementId>();
   for (const [id, mark] of marks.entries()) {
     if (mark === null) continue;
     const element = model.elements[id]!;
@@ -29,6 +31,7 @@ export function findDoubles(
       const it = model.elements[other]!;
       if (other > id && isDouble(element, it, identities, model)) pairs.push([element, it]);
       else if (other !== id && isPartOf(element, it, identities, model)) parts.push([it, element]);
+      else if (other !== id && isSleeveOf(element, it, identities, model)) sleeves.add(element.id);
     });
   }
   const better = preference(model, identities);
@@ -40,7 +43,11 @@ export function findDoubles(
     keeper[other.id] = kept.id;
     findings.push(finding('doubled-element', [other.id, kept.id], { part: identities[other.id]!.part }));
   }
-  return { keeper, findings: findings.sort((a, b) => a.about[0]! - b.about[0]!) };
+  return {
+    keeper,
+    findings: findings.sort((a, b) => a.about[0]! - b.about[0]!),
+    sleeves: [...sleeves].sort((a, b) => a - b),
+  };
 }
 
 /** The small region in which a double's own must lie: the middle of a pipe or body; a fixture's whole box. */
@@ -80,6 +87,17 @@ function isPartOf(short: Element, long: Element, identities: readonly Identity[]
     p.points.length === 2 &&
     q.points.length === 2
   );
+}
+
+/** A wider pipe round another, no farther than that reaches, with no ports joined to it: a sleeve, or its insulation. */
+function isSleeveOf(wide: Element, inner: Element, identities: readonly Identity[], model: Model): boolean {
+  if (identities[wide.id]!.part !== 'pipe' || identities[inner.id]!.part !== 'pipe') return false;
+  const [p, q] = [wide.centreLine!, inner.centreLine!];
+  const [outer, own] = [p.outerDiameter, q.outerDiameter];
+  if (outer === null || own === null || outer <= own || alike(outer, own) || connections(wide, model) > 0) return false;
+  const line = polyline(q.points);
+  if (line.length === 0 || polyline(p.points).length > line.length + doubled) return false;
+  return p.points.every((point) => footOn(line, point).off <= doubled);
 }
 
 const alike = (a: number | null, b: number | null): boolean => {

@@ -4,7 +4,7 @@ import { type Box, distance, planDistance, type Vec3 } from '../geometry/vector.
 import type { Identity, Medium } from '../model/identity.ts';
 import type { Model } from '../model/model.ts';
 import { wanted } from './join-touching.ts';
-import { type BodyPart, bodyNode, endPoint, type Piping } from './piping.ts';
+import { type BodyPart, bodyNode, endNode, endPoint, type Piping } from './piping.ts';
 import { takesEnds } from './propose-joins.ts';
 import { freeEnds } from './settle-joins.ts';
 import { type Pair, settlePairs } from './settle-pairs.ts';
@@ -30,7 +30,8 @@ const sharedReach = 0.01;
 /**
  * Outlets of fixtures: the free end in, at or just under the body; the lowest, and the one whose system says drainage,
  * where several offer. A trap or fitting that touches the fixture serves as well as an end. What is left of sanitary ends
- * inside a fixture are its further outlets; a fixture that found none shares the end in its body with the one that did.
+ * inside a fixture are its further outlets; a fixture that found none shares the end in its body with the one that did,
+ * or drains where two pipes meet in it without a fitting.
  */
 export function joinFixtures(
   model: Model,
@@ -100,6 +101,45 @@ export function joinFixtures(
   settlePairs(first);
   settlePairs(further);
   settlePairs(shared);
+  const left = askers.filter((body) => !welds.isHeld(bodyNode(piping, body)));
+  if (left.length > 0) joinToCorners(left, model, identities, piping, welds);
+}
+
+/** A fixture that found no end of its own stands on one where pipes meet without a fitting: both drain it. */
+function joinToCorners(
+  fixtures: readonly number[],
+  model: Model,
+  identities: readonly Identity[],
+  piping: Piping,
+  welds: Welds,
+): void {
+  const { bodies, pipes } = piping;
+  const ends = pipes.flatMap(({ element, axis }, pipe) =>
+    axis === null || identities[element]!.medium !== 'sanitary'
+      ? []
+      : ([0, 1] as const).map((side) => ({ node: endNode(pipe, side), at: endPoint(axis, side) })),
+  );
+  const grid = boxGrid(ends.map(({ at }) => ({ min: at, max: at })));
+  const name = (node: number): string => model.elements[welds.elementOf(node)]!.globalId;
+  const pairs: Pair[] = [];
+  for (const index of fixtures) {
+    const box = outletBox(bodies[index]!, model);
+    if (box === null) continue;
+    const self = bodyNode(piping, index);
+    grid.touching(grown(box, sharedReach), (i) => {
+      const { node, at } = ends[i]!;
+      const gap = distanceToBox(at, box);
+      if (gap > sharedReach || welds.bodyOf(node) >= 0) return;
+      pairs.push({
+        cost: gap + perMetreUp * Math.max(0, at[2] - box.min[2]),
+        names: [name(self), name(node)],
+        settle: () => {
+          if (!welds.isHeld(self) && welds.bodyOf(node) < 0) welds.join(node, self, 'outlet', gap);
+        },
+      });
+    });
+  }
+  settlePairs(pairs);
 }
 
 function outletBox(fixture: BodyPart, model: Model): Box | null {

@@ -17,6 +17,7 @@ export type LeftOutReason =
   | 'answer'
   | 'file apart'
   | 'double'
+  | 'sleeve or insulation'
   | 'no drainage'
   | 'unknown terminal';
 

@@ -50,7 +50,11 @@ export function misfiledByPorts(
 
 const isPiping = (part: Part): boolean => part === 'pipe' || part === 'fitting' || part === 'valve';
 const bySystem = (reason: LeftOutReason | null): boolean =>
-  reason !== null && reason !== 'answer' && reason !== 'double' && reason !== 'file apart';
+  reason !== null &&
+  reason !== 'answer' &&
+  reason !== 'double' &&
+  reason !== 'sleeve or insulation' &&
+  reason !== 'file apart';
 
 /** Elements at the other side of each port; null when a port leads nowhere or there are fewer than two. */
 function neighboursOf({ ports }: Element, model: Model): readonly number[] | null {

@@ -112,11 +112,30 @@ export function waterPaths(
     }
     if (path[0] !== undefined) entering[path[0]]!.push(index as FixtureId);
     fixtures.push({ id: index as FixtureId, element, outlet, water: path });
+    const others = otherOutlets(network, outlet, wayOut, isVent);
+    if (others.length > 0)
+      findings.push(finding('double-water-path', [element, ...others], { ways: others.length + 1 }));
   });
 
   const anySaid = ends.some(({ how }) => isSaid(how));
   const systems = ends.map((end): DrainSystem => ({ ...end, isCutOff: anySaid && !isSaid(end.how) }));
   return { systems, fixtures, next, toward: downJoint, wet, inFlowOrder: flowOrder(network, wet, next), entering };
+}
+
+/** Pipes by which water of a fixture might leave as well: they lead away from it, and not upward as a vent does. */
+function otherOutlets(
+  network: Network,
+  outlet: JointId,
+  wayOut: readonly (PipeId | null)[],
+  isVent: readonly boolean[],
+): ElementId[] {
+  return network.joints[outlet]!.pipes.flatMap((id) => {
+    const pipe = network.pipes[id]!;
+    const [a, b] = pipe.ends;
+    const far = a === outlet ? b : a;
+    const leaves = id !== wayOut[outlet] && far !== outlet && wayOut[far] !== id && wayOut[far] != null;
+    return leaves && pipe.element !== null && !isVent[id] && climbOf(pipe, outlet) === 0 ? [pipe.element] : [];
+  });
 }
 
 const isSaid = (how: DrainSystem['how']): boolean => how === 'answer' || how === 'named';

@@ -168,6 +168,35 @@ const cases: readonly Case[] = [
     joints: ['overflow', 'overflow+waste@bath', 'waste'],
   },
   {
+    name: 'a sink drains where two wastes meet in it without a fitting',
+    parts: [
+      pipe('one', '0 0 0 > 0 0 -1', { diameter: 0.05 }),
+      pipe('other', '0 0 0 > 1 0 -1', { diameter: 0.05 }),
+      body('sink', 'fixture', [0, 0, 0.1], 0.3, { kind: 'sink' }),
+    ],
+    joints: ['one', 'one+other@sink', 'other'],
+  },
+  {
+    name: 'a sleeve round a pipe, drawn as a pipe, is nothing to it',
+    parts: [pipe('A', '0 0 0 > 4 0 0'), pipe('sleeve', '1.9 0 0 > 2.1 0 0', { diameter: 0.16 })],
+    joints: ['A', 'A'],
+  },
+  {
+    name: 'nor is insulation from end to end, or short of both ends',
+    parts: [
+      pipe('A', '0 0 0 > 4 0 0'),
+      pipe('round A', '0 0 0 > 4 0 0', { diameter: 0.15 }),
+      pipe('B', '4 0 0 > 8 0 0'),
+      pipe('round B', '4.05 0 0 > 7.95 0 0', { diameter: 0.15 }),
+    ],
+    joints: ['A', 'A+B', 'B'],
+  },
+  {
+    name: 'a wide pipe after a thin one is no sleeve',
+    parts: [pipe('A', '0 0 0 > 2 0 0', { diameter: 0.08 }), pipe('B', '2 0 0 > 3 0 0', { diameter: 0.11 })],
+    joints: ['A', 'A+B', 'B'],
+  },
+  {
     name: 'fittings that touch are linked',
     parts: [
       pipe('A', '0 0 0 > 1.9 0 0'),

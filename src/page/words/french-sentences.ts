@@ -160,7 +160,8 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
     `La sortie vers l’égout est supposée à ${first(f)} (${num(f, 'candidates') === 1 ? 'seul bout ouvert' : `${text(f, 'candidates')} bouts ouverts`}) : dites-le dans le fichier de réponses si c’en est un autre.`,
   'wrong-system': (f) => `${first(f)} est classé dans un réseau auquel, d’après sa tuyauterie, il n’appartient pas.`,
   'fit-in-wall': fitInWall,
-  'double-water-path': (f) => `L’eau de ${first(f)} a deux chemins.`,
+  'double-water-path': (f) =>
+    `L’eau de ${first(f)} a ${text(f, 'ways')} chemins : le calcul suit l’un d’eux; ce qui sort par ${f.about.slice(1).join(', ') || 'l’autre'} n’y est pas compté.`,
   'doubled-element': (f) => `${first(f)} se trouve deux fois au même endroit; un seul est retenu.`,
   'group-not-applied': (f) =>
     `${text(f, 'fixtures')} appareils pourraient former des groupes de salle de bains, mais la maquette ne les met dans aucune pièce : leurs charges sont additionnées une à une${f.clause}.`,

@@ -193,6 +193,7 @@ export const frenchPhrases: Words['phrases'] = {
   'file apart': 'fichier à part',
   double: 'en double',
   'no drainage': 'hors évacuation',
+  'sleeve or insulation': 'fourreau ou isolation',
   'unknown terminal': 'terminal inconnu',
   'no position': 'sans position',
   'no shape': 'sans forme',
