@@ -173,7 +173,7 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
       ? `The stack ${first(f)} takes ${text(f, 'soil')} closets or urinals and ${text(f, 'others')} other appliances: in this system they have stacks of their own${f.clause}.`
       : `${first(f)}${has(f, 'kind') ? ` (${text(f, 'kind')})` : ''} may not be used in this system${f.clause}.`,
   'vent-area-too-small': (f) =>
-    `The ${text(f, 'vents')} vents of the building drain ${first(f)} that reach open air have ${f.number(num(f, 'areaM2') * 10000)} cm² together, less than the ${f.number(num(f, 'leastM2') * 10000)} cm² of the ${text(f, 'required')} sewer that its load requires: one more vent, or a larger one${f.clause}.`,
+    `${f.facts.vents === 1 ? `The one vent of the building drain ${first(f)} that reaches open air has ${f.number(num(f, 'areaM2') * 10000)} cm²` : `The ${text(f, 'vents')} vents of the building drain ${first(f)} that reach open air have ${f.number(num(f, 'areaM2') * 10000)} cm² together`}, less than the ${f.number(num(f, 'leastM2') * 10000)} cm² of the ${text(f, 'required')} sewer that its load requires: one more vent, or a larger one${f.clause}.`,
   'main-vent-missing': (f) =>
     `No vent of the building drain reaches open air at ${text(f, 'least')} or larger${has(f, 'widest') ? `; the widest is ${text(f, 'widest')}` : ''}${f.clause}.`,
   'fixture-unidentified': (f) =>

@@ -275,3 +275,39 @@ sewer OUT`,
     ).toEqual(['911.1, 911.2']);
   });
 });
+
+describe('R54 one wet-vented fixture drain may join upstream of the dry vent (912.2.1; UPC 908.2.1, R46)', () => {
+  /** Showers on the branch before the lavatory, whose vent it is, comes in at `LF`; a closet after it. */
+  const upstream = (showers: number, code: string) => {
+    const heads = Array.from({ length: showers }, (_, n) => `U${n + 1}`);
+    return runSketch(
+      hall(
+        'Showers before the vent',
+        `node LJ at 0 0 0.5
+trap TL from LJ south 0.4 rise 1:48
+lavatory L from TL up 0.12, trap 1 1/4 in
+drain 1 1/2 in: L > TL > LJ
+node LF from LJ to -0.4
+${heads.map((head, n) => `node ${head} from LF west ${(showers - n) * 0.7} rise 1:48`).join('\n')}
+drain 2 in: ${heads.join(' > ')} > LF
+${heads.map((head, n) => armOf(`s${n}`, 'shower, trap 2 in').replaceAll(`Js${n}`, head)).join('')}
+drain 3 in: LJ > LF > J1 (east 0.7 fall 1:48) > K (east 0.7 fall 1:48) > BF (to -1.2) > OUT (east 9 fall 1:48)
+${armOf(1, closet)}
+vent 3 in: LJ > VT (to 4.2)
+terminal VT
+sewer OUT`,
+      ),
+      { code, answers: { settings: { use: 'private' } } },
+    );
+  };
+  test.each(['ipc-2021', 'upc-2021'])(
+    '%s: one shower breathes through the lavatory’s drain, of two neither does',
+    (code) => {
+      const one = upstream(1, code);
+      expect([one.fixture('Fs0').ventedBy.how, one.findings('unvented-trap')]).toEqual(['wet-vent', []]);
+      expect(only(one).fixtures).toHaveLength(3);
+      const two = upstream(2, code);
+      expect(two.findings('unvented-trap')).toHaveLength(2);
+    },
+  );
+});

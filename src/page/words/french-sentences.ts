@@ -72,11 +72,19 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
   'single-stack-not-allowed': (f) =>
     `${group(f)} ne peut être ventilée par une colonne unique : ${frenchCondition(f)}${f.clause}.`,
   'island-vent-not-allowed': (f) =>
-    `La ventilation ${first(f)} redescend avant l’air libre, ce que cet appareil ne permet pas${f.clause}.`,
+    `La ventilation ${first(f)} redescend avant l’air libre : seuls les éviers et les lavabos peuvent être ventilés ainsi${f.clause}.`,
   'valve-not-allowed': (f) =>
     f.facts.onlyValves === true
       ? `Toutes les ventilations du collecteur principal ${first(f)} finissent par un clapet d’admission d’air; une au moins doit atteindre l’air libre${f.clause}.`
-      : `La ventilation ${first(f)} finit par un clapet d’admission d’air que le code ne permet pas ici${f.clause}.`,
+      : `La ventilation ${first(f)} finit par un clapet d’admission d’air : ${
+          has(f, 'intervalsMost')
+            ? `sa colonne a ${text(f, 'intervals')} intervalles de branchement, au plus ${text(f, 'intervalsMost')} peuvent finir ainsi; menez-la à l’air libre`
+            : has(f, 'leastM')
+              ? `il est à ${f.length(num(f, 'heightM'))} au-dessus de l’évacuation qu’il ventile, au moins ${f.length(num(f, 'leastM'))}`
+              : has(f, 'belowMost')
+                ? `il est à ${text(f, 'below')} intervalles de branchement sous le haut de la colonne; au-delà de ${text(f, 'belowMost')} le branchement exige une ventilation d’équilibrage`
+                : 'le code ne le permet pas ici'
+        }${f.clause}.`,
   'valve-needs-approval': (f) =>
     `La ventilation ${first(f)} finit par un clapet d’admission d’air : ${f.facts.listed === true ? 'le code ne le permet que pour un appareil d’îlot, où le gel peut fermer une ventilation, dans une maison en rénovation, ou lorsqu’aucune ventilation ne peut sortir; la maquette ne dit pas lequel' : 'ce code n’en nomme pas'}, l’autorité compétente décide${f.clause}.`,
   'stack-vent-missing': (f) =>
@@ -88,7 +96,9 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
         ? `La colonne de chute ${first(f)} traverse ${text(f, 'storeysHigh')} étages; dès ${text(f, 'storeysFrom')} il lui faut une colonne de ventilation secondaire${f.clause}.`
         : `La colonne de chute ${first(f)} reçoit des appareils de ${text(f, 'storeys')} étages; au-delà de ${text(f, 'storeysMost')} il lui faut une colonne de ventilation secondaire dès son pied${f.clause}.`,
   'vent-stack-misplaced': (f) =>
-    `La colonne de ventilation secondaire de ${first(f)} ne part pas d’une partie verticale de sa colonne de chute, au raccordement le plus bas ou juste au-dessous${f.clause}.`,
+    has(f, 'distanceMostM')
+      ? `La colonne de ventilation secondaire de ${first(f)} part à ${f.length(num(f, 'distanceM'))} du pied de sa colonne de chute, au plus ${f.length(num(f, 'distanceMostM'))}${f.clause}.`
+      : `La colonne de ventilation secondaire de ${first(f)} ne part pas d’une partie verticale de sa colonne de chute, au raccordement le plus bas ou juste au-dessous${f.clause}.`,
   'yoke-vent-missing': (f) =>
     has(f, 'interval')
       ? `La colonne de chute ${first(f)} a ${text(f, 'intervals')} intervalles de branchement et pas de ventilation vers sa colonne secondaire au ${text(f, 'interval')}e depuis le haut${f.clause}.`
@@ -127,7 +137,14 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
     f.facts.what === 'mixed'
       ? `La colonne ${first(f)} reçoit ${text(f, 'soil')} toilettes ou urinoirs et ${text(f, 'others')} autres appareils : dans ce système, chacun a sa colonne${f.clause}.`
       : `${first(f)} n’est pas permis dans ce système${f.clause}.`,
-  'vent-area-too-small': (f) => `Les ventilations de ${first(f)} ont ensemble une section trop faible${f.clause}.`,
+  'vent-area-too-small': (f) => {
+    const area = (key: string): string => `${f.number(num(f, key) * 10000)} cm²`;
+    const whose =
+      f.facts.vents === 1
+        ? `La seule ventilation du collecteur principal ${first(f)} qui atteint l’air libre a ${area('areaM2')}`
+        : `Les ${text(f, 'vents')} ventilations du collecteur principal ${first(f)} qui atteignent l’air libre ont ensemble ${area('areaM2')}`;
+    return `${whose}, moins que les ${area('leastM2')} de l’égout de ${text(f, 'required')} que sa charge exige : une ventilation de plus, ou une plus grande${f.clause}.`;
+  },
   'main-vent-missing': (f) =>
     `Aucune ventilation du collecteur principal n’atteint l’air libre en ${text(f, 'least')} ou plus${has(f, 'widest') ? `; la plus large est de ${text(f, 'widest')}` : ''}${f.clause}.`,
   'fixture-unidentified': (f) =>
