@@ -242,6 +242,16 @@ export interface CheckedAccess {
     readonly hasCleanout: boolean;
     readonly freshAir: { readonly distance: number; readonly size: NominalSize | null } | null;
   }[];
+  /**
+   * Building sewers outside: metres from the building, or from the manhole last passed, to the lower end of each, and
+   * whether one has been passed.
+   */
+  readonly sewers: readonly {
+    readonly element: ElementId;
+    readonly size: NominalSize;
+    readonly since: number;
+    readonly pastManhole: boolean;
+  }[];
   /** Interceptors with drains, and whether a cleanout follows before other water joins. */
   readonly interceptors: readonly { readonly element: ElementId; readonly hasCleanout: boolean }[];
 }

@@ -69,6 +69,8 @@ function missingCleanout(f: SentenceFacts): string {
       return `The drain of ${first(f)} turns ${f.number(num(f, 'turnDeg'))}° in all and has no cleanout; beyond ${f.number(num(f, 'limitDeg'))}° it needs one`;
     case 'interceptor':
       return `No cleanout follows the interceptor ${first(f)}`;
+    case 'manhole':
+      return `The sewer ${first(f)} ends ${metres(f, 'distanceM')} from the building or the last manhole; it needs one within ${metres(f, 'limitM')}`;
     case 'running trap':
       return `No cleanout stands before the trap ${first(f)} on the building drain`;
     case 'spacing':

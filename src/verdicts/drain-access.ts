@@ -52,6 +52,7 @@ export function drainAccess(facts: AccessFacts): DrainAccess {
       drains,
       ...levelRuns(facts, stream, opens, (joint) => distance.get(joint) ?? null),
       ...ofParts(facts, stream, opens),
+      sewers: sewerRuns(facts, stream, sizeOf),
     },
     opens,
   };
@@ -97,6 +98,26 @@ function levelRuns(
     return element === null ? [] : [{ element, endsAt: end, length, head: distance(stream.up(head)), turn: most }];
   });
   return { bends, runs };
+}
+
+/** Building sewers with the water: how far each has run since the building, or since the manhole last passed. */
+function sewerRuns(
+  { identities, network, paths, run }: AccessFacts,
+  stream: Stream,
+  sizeOf: (pipe: PipeId) => NominalSize | null,
+): CheckedAccess['sewers'] {
+  const reached = new Map<JointId, { since: number; pastManhole: boolean }>();
+  return paths.inFlowOrder.flatMap((pipe) => {
+    if (run.roles.uses[pipe]!.drain !== 'building-sewer') return [];
+    const start = reached.get(stream.up(pipe)) ?? { since: 0, pastManhole: false };
+    const since = start.since + stream.span(pipe);
+    const end = stream.down(pipe);
+    const isManhole = network.joints[end]!.elements.some((element) => identities[element]?.part === 'chamber');
+    reached.set(end, isManhole ? { since: 0, pastManhole: true } : { since, pastManhole: start.pastManhole });
+    const { element } = network.pipes[pipe]!;
+    const size = sizeOf(pipe);
+    return element === null || size === null ? [] : [{ element, size, since, pastManhole: start.pastManhole }];
+  });
 }
 
 /** Sinks and urinals whose drains may need a cleanout, interceptors, and traps of the building drain. */

@@ -3,7 +3,7 @@ import { hall, times, ventedRow } from '../support/rows.ts';
 import { runSketch, type SketchRun } from '../support/run-sketch.ts';
 import { tower } from '../support/towers.ts';
 
-// National Plumbing Code, cleanouts and standpipes: rules R29 to R31 and R33 to R35. Spacing and sizes by Table 2.4.7.2.
+// National Plumbing Code, cleanouts and standpipes: rules R29 to R35. Spacing and sizes by Table 2.4.7.2.
 const lavatory = 'lavatory, trap 1 1/4 in';
 const missing = (run: SketchRun, what?: string) =>
   run.findings('cleanout-missing').flatMap(({ facts }) => (what === undefined || facts.what === what ? [facts] : []));
@@ -95,6 +95,37 @@ describe('R33 a cleanout on the building drain, near where it leaves the buildin
   test('one there: none missing; none: missing', () => {
     expect(missing(stack('drain'), 'building drain')).toEqual([]);
     expect(missing(stack(0.6), 'building drain')).toHaveLength(1);
+  });
+});
+
+describe('R32 a sewer of 8 in or more has manholes: the first within 75 m, the next within 90 m (recalled; 2.4.7.1.)', () => {
+  /** The slab ends 6 m from the stack, the sewer begins 1 m farther out; lengths run from there. */
+  const sewer = (size: string, lengths: readonly number[]): string[] => {
+    const ends = lengths.map(
+      (length, at) => `${at === lengths.length - 1 ? 'OUT' : `M${at}`} (east ${length} fall 1:50)`,
+    );
+    const run = runSketch(
+      `${tower([[lavatory], [lavatory]], { stack: `${size} in` })
+        .replace('OUT (east 9 fall 1:50)', `B (east 7 fall 1:50) > ${ends.join(' > ')}`)
+        .replace(/roof "Roof" from -20 -20 to 20 20/, 'roof "Roof" from -5 -5 to 6 5')}
+slab "Slab" from -5 -5 to 6 5 top 0 thick 0.2
+${lengths
+  .slice(1)
+  .map((_, at) => `manhole M${at}`)
+  .join('\n')}`,
+    );
+    return run
+      .findings('cleanout-missing')
+      .flatMap(({ facts }) => (facts.what === 'manhole' ? [`${facts.limitM}`] : []));
+  };
+  test.each([
+    { size: '8', lengths: [74.9], found: [], why: 'within 75 m' },
+    { size: '8', lengths: [75.2], found: ['75'], why: 'past it' },
+    { size: '8', lengths: [70, 89.9], found: [], why: 'the next within 90 m' },
+    { size: '8', lengths: [70, 90.2], found: ['90'], why: 'past it' },
+    { size: '6', lengths: [80], found: [], why: 'a smaller sewer has cleanouts' },
+  ])('$size in, $lengths m: $why', ({ size, lengths, found }) => {
+    expect(sewer(size, lengths)).toEqual(found);
   });
 });
 

@@ -24,6 +24,7 @@ export function checks(tools: Tools): Check[] {
     slopes(tools),
     standpipes(tools),
     cleanouts(tools),
+    manholes(tools),
     everyTrapVented(rule('NPC-R36')),
     trapArms(tools),
     ventLeavesUpward(rule('NPC-R41'), family.number('vent-leaves', 'angle').value),
@@ -141,6 +142,24 @@ function cleanouts({ family }: Tools): Check {
     },
     series,
   );
+}
+
+/** A large sewer has a manhole soon after the building, and further ones along its run (R32). */
+function manholes({ family }: Tools): Check {
+  const from = family.size('manhole-sewer');
+  const first = family.number('manhole-first', 'length');
+  const next = family.number('manhole-spacing', 'length');
+  const { id, clause } = family.rule('NPC-R32');
+  const { rank } = family.series;
+  return {
+    id,
+    run: ({ access }) =>
+      access.sewers.flatMap(({ element, size, since, pastManhole }): Finding[] => {
+        const most = pastManhole ? next.value : first.value;
+        if (rank(size) < rank(from.value) || since <= most + coordinateMetres) return [];
+        return [finding('cleanout-missing', [element], { what: 'manhole', distanceM: since, limitM: most }, clause)];
+      }),
+  };
 }
 
 /** An air admittance valve stands only where the code lists it, and some vent still reaches open air (R85). */

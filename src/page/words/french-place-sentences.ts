@@ -55,6 +55,8 @@ function missingCleanout(f: FrenchFacts): string {
       return `L’évacuation de ${first(f)} tourne de ${f.number(num(f, 'turnDeg'))}° en tout et n’a pas de regard de nettoyage; au-delà de ${f.number(num(f, 'limitDeg'))}° il en faut un`;
     case 'interceptor':
       return `Aucun regard de nettoyage ne suit le séparateur ${first(f)}`;
+    case 'manhole':
+      return `L’égout ${first(f)} finit à ${metres(f, 'distanceM')} du bâtiment ou du dernier regard de visite; il en faut un à ${metres(f, 'limitM')} au plus`;
     case 'running trap':
       return `Aucun regard de nettoyage ne précède le siphon ${first(f)} du collecteur principal`;
     case 'spacing':
