@@ -36,8 +36,8 @@ export function mendResult(plan: Plan, result: Result): MendResult {
   };
 }
 
-function searchOf({ exact, least, runs, cost, steps, left }: Plan): MendSearch {
-  const open = `The search was broken off after ${runs} runs of all stages: a plan may exist that ${left.length > 0 ? 'settles more' : `costs less, from ${decimal(least, 1)} points on`}.`;
+function searchOf({ exact, least, runs, cost, steps, left, hopeless }: Plan): MendSearch {
+  const open = `The search was broken off after ${runs} runs of all stages: a plan may exist that ${hopeless ? `costs less, from ${decimal(least, 1)} points on` : 'settles more'}.`;
   const proved =
     steps.length > 0
       ? 'No other combination of the changes that the program knows costs less.'
@@ -45,7 +45,7 @@ function searchOf({ exact, least, runs, cost, steps, left }: Plan): MendSearch {
         ? 'No error to mend.'
         : 'No change that the program knows settles these errors.';
   const sentence = exact ? proved : open;
-  return { exact, least: points(Math.min(least, cost)), runs, sentence };
+  return { exact, least: points(Math.min(least, cost)), runs, hopeless: left.length > 0 && hopeless, sentence };
 }
 
 const points = (cost: number): number => Math.round(cost * 100) / 100;

@@ -63,7 +63,7 @@ export function proofSentence({ before, after, search }: MendResult): string {
   if (after.errors === 0) return 'The changed building was run through all stages: no error is left.';
   const kinds = tally(after.findings.map(({ code }) => plainWords(code))).map(([code, count]) => `${count} ${code}`);
   const one = after.errors === 1;
-  const unknown = search.exact ? `; no change that the program knows settles ${one ? 'it' : 'them'}` : '';
+  const unknown = search.hopeless ? `; no change that the program knows settles ${one ? 'it' : 'them'}` : '';
   const left = `${after.errors} of ${counted(before.errors, 'error')} ${one ? 'is' : 'are'} left (${kinds.join(', ')})`;
   return `The changed building was run through all stages: ${left}${unknown}.`;
 }

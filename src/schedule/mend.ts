@@ -34,6 +34,8 @@ export interface MendSearch {
   readonly least: number;
   /** Runs of all stages. */
   readonly runs: number;
+  /** Errors are left that no change known to the program settles, however long it searches. */
+  readonly hopeless: boolean;
   readonly sentence: string;
 }
 

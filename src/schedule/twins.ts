@@ -52,6 +52,9 @@ function elementsOf(difference: Difference): ElementId[] {
   return [...difference.fixtures];
 }
 
+/** `a relief vent`, `an individual vent`. */
+const article = (thing: string): string => `${/^[aeiou]/.test(thing) ? 'an' : 'a'} ${thing}`;
+
 const mostTold = 3;
 
 /** Fixtures first, then pipes that are missing or too many, then sizes, falls and readings; alike ones together. */
@@ -66,7 +69,7 @@ function inWords(outcome: Outcome, differences: readonly Difference[]): string[]
   const extra = differences.flatMap((one) => ('has' in one ? [one] : []));
   const told = (list: readonly { role: string; element: ElementId }[]): string =>
     list.length <= mostTold
-      ? listed(list.map(({ role, element }) => `a ${plainWords(role)} (${name(element)})`))
+      ? listed(list.map(({ role, element }) => `${article(role === 'idle' ? 'idle pipe' : plainWords(role))} (${name(element)})`))
       : countedKinds(list.map(({ role }) => plainWords(role)));
   return [
     ...(more.length === 0 ? [] : [`it has ${countedKinds(more)} more`]),

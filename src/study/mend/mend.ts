@@ -31,6 +31,8 @@ export interface Plan {
   readonly runs: number;
   /** Errors that are left, of the building as it would be. */
   readonly left: readonly Finding[];
+  /** None of them is settled by a change that is known: a longer search would leave them too. */
+  readonly hopeless: boolean;
 }
 
 export type PlanStep =
@@ -59,12 +61,13 @@ export const usualRuns = 600;
 
 export function mend(first: Outcome, weights: Weights, mostRuns = usualRuns): Plan {
   const costs = costsOf(first, weights);
-  const { state, settled, cost, runs, least, exact } = search(first, costs, mostRuns);
+  const { state, settled, cost, runs, least, exact, unsettled } = search(first, costs, mostRuns);
   const last = settled === null ? first : withNewSizes(settled.outcome, state.made);
   const changes = state.made.flatMap(({ option: { change, why, cost: points } }): PlanStep[] =>
     change === null ? [] : [{ kind: 'change', change, why, cost: points }],
   );
   const lacking = lackingCleanouts(last).map((one): PlanStep => ({ kind: 'cleanout', ...one, cost: weights.cleanout }));
+  const left = last.findings.filter(({ severity }) => severity === 'error');
   const besides = lacking.reduce((sum, one) => sum + one.cost, 0);
   return {
     first,
@@ -80,7 +83,8 @@ export function mend(first: Outcome, weights: Weights, mostRuns = usualRuns): Pl
     exact,
     least: least + besides,
     runs,
-    left: last.findings.filter(({ severity }) => severity === 'error'),
+    left,
+    hopeless: left.every((finding) => unsettled.has(keyOf({ outcome: last }, finding))),
   };
 }
 

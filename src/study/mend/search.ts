@@ -16,6 +16,8 @@ export interface Found extends Complete {
   readonly least: number;
   /** Every combination that could cost less was tried. */
   readonly exact: boolean;
+  /** Errors that no known change settles, by key. */
+  readonly unsettled: ReadonlySet<string>;
 }
 
 const tiny = 1e-6;
@@ -28,7 +30,7 @@ const tiny = 1e-6;
 export function search(first: Outcome, costs: Costs, mostRuns: number): Found {
   const searching = new Searching(first, costs, { left: mostRuns });
   const found = searching.run();
-  return { ...found, runs: mostRuns - searching.budget.left };
+  return { ...found, runs: mostRuns - searching.budget.left, unsettled: searching.unsettled };
 }
 
 class Searching {
@@ -37,7 +39,7 @@ class Searching {
   readonly #root: State;
   readonly #sizes: Task['first'];
   /** Errors that no known change settles, by key. */
-  readonly #left = new Set<string>();
+  readonly unsettled = new Set<string>();
   /** A place got no plan for want of runs. */
   #gaveUp = false;
 
@@ -48,7 +50,7 @@ class Searching {
     this.#sizes = firstSizes(first);
   }
 
-  run(): Omit<Found, 'runs'> {
+  run(): Omit<Found, 'runs' | 'unsettled'> {
     const begun = this.#begun();
     const { plans, least, own } = this.#eachPlace(begun);
     const known = this.#together(begun, plans);
@@ -68,7 +70,7 @@ class Searching {
     root,
     first: this.#sizes,
     costs: this.#costs,
-    left: this.#left,
+    left: this.unsettled,
     ours: () => true,
     counted: null,
     budget: this.budget,
@@ -92,8 +94,8 @@ class Searching {
 
   /** What is wrong; an error that no change is known for is let be from here on. */
   #look(state: State): ReturnType<typeof lookAt> {
-    const looked = lookAt(state, this.#costs, this.#left, this.budget);
-    for (const { key, options } of looked.must) if (options.length === 0) this.#left.add(key);
+    const looked = lookAt(state, this.#costs, this.unsettled, this.budget);
+    for (const { key, options } of looked.must) if (options.length === 0) this.unsettled.add(key);
     return { ...looked, must: looked.must.filter(({ options }) => options.length > 0) };
   }
 
@@ -129,7 +131,7 @@ class Searching {
       if (searched.best !== null) plans.push(searched.best);
       // No combination of what is known settles these, or none was found in time: the other places still get their plan.
       else this.#gaveUp ||= !searched.exact;
-      if (searched.best === null) for (const { key, mayStay } of own) if (!mayStay) this.#left.add(key);
+      if (searched.best === null) for (const { key, mayStay } of own) if (!mayStay) this.unsettled.add(key);
     });
     return { plans, least, own: all };
   }
@@ -157,7 +159,7 @@ class Searching {
     if (looked.must.length > 0) return null;
     const settled = settleSizes(state.piping, looked.outcome, this.#sizes, state.pins, this.#costs);
     this.budget.left -= settled.runs;
-    if (openErrors(settled.outcome, this.#left).length > 0) return null;
+    if (openErrors(settled.outcome, this.unsettled).length > 0) return null;
     const cost = state.cost + settled.cost + this.#cleanouts(settled.outcome, () => true);
     return { state: { ...state, outcome: looked.outcome }, settled, cost };
   }
