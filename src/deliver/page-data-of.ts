@@ -22,7 +22,7 @@ export function pageDataOf(
     weighed: weighedBatteries(outcome, result),
     margins: marginResult(outcome),
   });
-  return plan === null || plan.steps.length === 0 ? data : { ...data, mend: pageMend(plan, data) };
+  return plan === null ? data : { ...data, mend: pageMend(plan, data) };
 }
 
 const sourceOf = (outcome: Outcome) => ({ ...outcome, paths: { ...outcome.paths, traps: outcome.shown.roles.air } });

@@ -86,7 +86,7 @@ function findingTable({ names }: ReportSource, caption: string, findings: readon
 
 /** The least change that mends the model; null where nobody looked for one, or none is known. */
 export function planSection({ plan, names }: ReportSource): Section | null {
-  if (plan === null || plan.changes.length === 0) return null;
+  if (plan === null) return null;
   const steps = planSteps(plan.changes, names.short);
   return {
     id: 'plan',
@@ -96,26 +96,30 @@ export function planSection({ plan, names }: ReportSource): Section | null {
         'p',
         `${counted(plan.before.errors, 'error')}; ${counted(plan.changes.length, 'change')}, ${decimal(plan.cost, 1)} points.`,
       ),
-      html(
-        'ol',
-        { class: 'steps' },
-        ...steps.map(({ title, why, cost, pipes }) =>
-          tag(
-            'li',
-            tag('b', `${title} (${decimal(cost, 1)} points)`),
-            html('div', { class: 'quiet' }, why),
-            pipes.length > 0 && html('div', { class: 'quiet' }, listed(pipes)),
+      steps.length === 0
+        ? null
+        : html(
+            'ol',
+            { class: 'steps' },
+            ...steps.map(({ title, why, cost, pipes }) =>
+              tag(
+                'li',
+                tag('b', `${title} (${decimal(cost, 1)} points)`),
+                html('div', { class: 'quiet' }, why),
+                pipes.length > 0 && html('div', { class: 'quiet' }, listed(pipes)),
+              ),
+            ),
           ),
-        ),
-      ),
       tag('p', proofSentence(plan)),
       plan.after.findings.length === 0
         ? null
         : tag('ul', ...plan.after.findings.map(({ sentence }) => tag('li', sentence))),
       ...plan.after.advice.map(({ sentence }) => tag('p', `For you: ${sentence}`)),
       tag('p', plan.search.sentence),
-      html('p', { class: 'quiet' }, weightsSentence(plan)),
-      tag('p', 'A proposal for the designer: nothing that is drawn in the model is moved.'),
+      plan.changes.length === 0 ? null : html('p', { class: 'quiet' }, weightsSentence(plan)),
+      plan.changes.length === 0
+        ? null
+        : tag('p', 'A proposal for the designer: nothing that is drawn in the model is moved.'),
     ],
   };
 }

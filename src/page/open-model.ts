@@ -32,7 +32,7 @@ export function openModel(host: HTMLElement, data: PageData, around: PageAround 
       },
     });
   };
-  open(mend !== null && asksMended(location.hash) ? 'after' : 'before');
+  open(mend !== null && asksMended(location.hash) ? 'after' : 'before', around.kept);
   return () => close();
 }
 

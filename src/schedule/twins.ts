@@ -69,7 +69,11 @@ function inWords(outcome: Outcome, differences: readonly Difference[]): string[]
   const extra = differences.flatMap((one) => ('has' in one ? [one] : []));
   const told = (list: readonly { role: string; element: ElementId }[]): string =>
     list.length <= mostTold
-      ? listed(list.map(({ role, element }) => `${article(role === 'idle' ? 'idle pipe' : plainWords(role))} (${name(element)})`))
+      ? listed(
+          list.map(
+            ({ role, element }) => `${article(role === 'idle' ? 'idle pipe' : plainWords(role))} (${name(element)})`,
+          ),
+        )
       : countedKinds(list.map(({ role }) => plainWords(role)));
   return [
     ...(more.length === 0 ? [] : [`it has ${countedKinds(more)} more`]),

@@ -11,6 +11,8 @@ export type DeskAsk =
   | { readonly ask: 'code'; readonly code: string; readonly own: DeskOwn }
   /** The last check with some changes, one after the other; with none, as it is. What is saved stays the check itself. */
   | { readonly ask: 'what-if'; readonly edits: readonly DeskEdit[] }
+  /** The last check with the least change that mends it. */
+  | { readonly ask: 'mend' }
   | { readonly ask: 'save'; readonly what: SaveKind };
 
 /** What is changed, by GlobalId, and to what in the words of `explain --if`: `size 4 in`, `kind urinal`. */
@@ -32,7 +34,7 @@ export interface OwnTables {
   readonly files: readonly (readonly [path: string, text: string])[];
 }
 
-export type SaveKind = 'ifc' | 'bcf' | 'csv' | 'json' | 'answers';
+export type SaveKind = 'ifc' | 'bcf' | 'csv' | 'html' | 'json' | 'answers';
 
 /** Steps of a check, in the order in which they come. */
 export const stages = ['unpacking', 'reading', 'sizing', 'drawing'] as const;

@@ -4,7 +4,7 @@ import { buildingOf } from '../building.ts';
 import { openModel } from '../open-model.ts';
 import { make } from '../panel/element.ts';
 import { shown } from '../panel/names.ts';
-import type { Language } from '../state.ts';
+import type { Language, PageState } from '../state.ts';
 import { deskWords } from '../words/desk-words.ts';
 import { deskWorker } from './desk-worker.ts';
 import { type DropView, dropView } from './drop-view.ts';
@@ -97,15 +97,17 @@ export function openDesk(host: HTMLElement, parts: DeskParts): void {
     }
   };
 
-  const open = (data: PageData, edits: readonly DeskEdit[] = []): void => {
+  const open = (data: PageData, edits: readonly DeskEdit[] = [], state: Partial<PageState> = {}): void => {
     close();
     view = null;
     const note = make('span', { class: 'save-note', role: 'status' });
     const { model, models } = data.result;
     document.title = `${(models ?? [model]).map(({ file }) => shown(file)).join(', ')} · Drainwright`;
     const building = buildingOf(data);
+    const wrong = data.result.findings.some(({ severity }) => severity === 'error');
     close = openModel(host, data, {
       language,
+      ...(data.mend === null ? {} : { kept: { state, eye: null } }),
       bar(now) {
         language = now;
         note.textContent =
@@ -117,6 +119,7 @@ export function openDesk(host: HTMLElement, parts: DeskParts): void {
           give: (dropped) => void take(dropped),
           leaveOut: (part) => void recheck(code, { ...own, [part]: null }),
           back: edits.length === 0 ? null : () => void suppose([], note),
+          mend: !wrong || data.mend !== null || edits.length > 0 ? null : () => void mend(note),
         });
       },
       whatIf: (now, chosen) =>
@@ -144,6 +147,15 @@ export function openDesk(host: HTMLElement, parts: DeskParts): void {
       if (select !== null) select.value = code;
       note.textContent = end.message;
     }
+  };
+  /** The same model with its plan, told first. */
+  const mend = async (note: HTMLElement): Promise<void> => {
+    note.textContent = deskWords[language].mending;
+    host.querySelector('.save-bar')?.setAttribute('aria-busy', 'true');
+    const end = await worker.ask({ ask: 'mend' });
+    if (end?.say === 'page') open(end.data, [], { tab: 'mend', colourBy: 'change' });
+    else if (end?.say === 'refused') note.textContent = end.message;
+    host.querySelector<HTMLElement>('#tab-mend')?.focus();
   };
   const suppose = async (edits: readonly DeskEdit[], note: HTMLElement): Promise<void> => {
     const end = await worker.ask({ ask: 'what-if', edits });

@@ -12,6 +12,8 @@ export interface SaveActions extends OwnActions {
   chooseCode(code: string): void;
   /** Leaves what was only supposed; null where nothing is. */
   readonly back: (() => void) | null;
+  /** Looks for the least change that mends the model; null where nothing is wrong, or where it is on the page. */
+  readonly mend: (() => void) | null;
 }
 
 /** The line above a page that was made here: check by another code, save, or take another model. */
@@ -32,13 +34,14 @@ export function saveBar(
     codeChooser(parts, language, code, actions.chooseCode),
     ownBar(language, own, actions),
     note,
+    actions.mend !== null && button(words.mend, actions.mend, 'mend'),
     actions.back !== null && button(words.whatIf.back, actions.back, 'back-to-model'),
     actions.back === null &&
       make(
         'div',
         { class: 'save-files', role: 'group', 'aria-label': words.saveAs },
         make('span', { class: 'save-as', 'aria-hidden': 'true' }, words.saveAs),
-        ...(['ifc', 'bcf', 'csv', 'json', 'answers'] as const).map((what) =>
+        ...(['ifc', 'bcf', 'csv', 'html', 'json', 'answers'] as const).map((what) =>
           button(words.save[what], () => actions.save(what), `save-${what}`),
         ),
       ),

@@ -1,6 +1,9 @@
 import { zipSync } from 'fflate';
 import { bcf } from '../../deliver/bcf.ts';
 import { propertySets } from '../../deliver/property-sets.ts';
+import { quickPlan } from '../../deliver/quick-plan.ts';
+import { reportHtml } from '../../deliver/report-html.ts';
+import { reportSource } from '../../deliver/report-source.ts';
 import { sha256 } from '../../deliver/sha256.ts';
 import { firstZipDay } from '../../deliver/zip-day.ts';
 import { fileOrigin } from '../../ifc/file-origin.ts';
@@ -27,6 +30,13 @@ export function savedFile(what: SaveKind, building: DeskBuilding, check: DeskChe
       return { name: `${base}.json`, bytes: encoder.encode([...jsonText({ ...check.result })].join('')) };
     case 'csv':
       return { name: `${base}.csv`, bytes: encoder.encode(takeOffCsv(check.outcome)) };
+    case 'html': {
+      const { outcome, result } = check;
+      return {
+        name: `${base}-report.html`,
+        bytes: encoder.encode(reportHtml(reportSource(outcome, result, quickPlan(outcome)))),
+      };
+    }
     case 'answers':
       return { name: `${base}-answers.json`, bytes: encoder.encode(answersFormText(questionsOf(check.result))) };
     case 'bcf':

@@ -1,5 +1,6 @@
 import type { DeskParts } from '../../deliver/desk-html.ts';
 import { pageDataOf } from '../../deliver/page-data-of.ts';
+import { quickPlan, shortPlan } from '../../deliver/quick-plan.ts';
 import { InputError } from '../../findings/input-error.ts';
 import { changedCheck } from './changed-check.ts';
 import { checkBuilding, type DeskBuilding, type DeskCheck, openBuilding, readBuilding } from './check-building.ts';
@@ -50,6 +51,12 @@ function obey(asked: DeskAsk): void {
     if (checked === null) throw new Error('asked what if before the check was done');
     const { outcome, result, sizes } = changedCheck(checked, asked.edits, parts.version);
     answer({ say: 'page', data: pageDataOf(outcome, result, sizes) });
+    return;
+  }
+  if (asked.ask === 'mend') {
+    if (checked === null) throw new Error('asked to mend before the check was done');
+    const { outcome, result, sizes } = checked;
+    answer({ say: 'page', data: pageDataOf(outcome, result, sizes, quickPlan(outcome) ?? shortPlan(outcome)) });
     return;
   }
   if (own === null) throw new Error(`asked ${asked.ask}`);

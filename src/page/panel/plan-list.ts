@@ -2,7 +2,7 @@ import { groupedChanges } from '../../schedule/grouped-changes.ts';
 import type { MendChange, MendResult } from '../../schedule/mend.ts';
 import { decimal } from '../format.ts';
 import { isNew } from '../plan-side.ts';
-import { planWords } from '../words/plan-words.ts';
+import { type PlanWords, planWords } from '../words/plan-words.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
 import { findingSentence } from './finding-sentence.ts';
@@ -31,7 +31,7 @@ export function planList(desk: Desk): HTMLElement {
       { class: plan.after.errors === 0 ? 'plan-proof good' : 'plan-proof bad' },
       plan.after.errors === 0 ? own.proved : own.left(plan.after.errors, plan.before.errors),
     ),
-    make('p', { class: 'quiet' }, plan.search.exact ? own.cheapest : own.brokenOff(plan.search.runs)),
+    make('p', { class: 'quiet' }, searchText(own, plan)),
     plan.after.findings.length > 0 && make('h3', {}, own.leftTitle),
     plan.after.findings.length > 0 &&
       make(
@@ -43,8 +43,13 @@ export function planList(desk: Desk): HTMLElement {
       make('p', { class: 'plan-advice' }, own.advice === null ? sentence : own.advice(code)),
     ),
     weights(desk, plan),
-    make('p', { class: 'quiet' }, own.proposals),
+    plan.changes.length > 0 && make('p', { class: 'quiet' }, own.proposals),
   );
+}
+
+function searchText(own: PlanWords, { search, changes }: MendResult): string {
+  if (!search.exact) return own.brokenOff(search.runs);
+  return changes.length === 0 ? own.noChange : own.cheapest;
 }
 
 /** Brings its pipes into the picture: on the mended side those that are new as well. */

@@ -9,7 +9,7 @@ const sides: readonly Side[] = ['before', 'after'];
 export function sideSwitch(desk: Desk): HTMLElement | null {
   const { building, words } = desk;
   const { plan } = building;
-  if (plan === null) return null;
+  if (plan === null || plan.plan.changes.length === 0) return null;
   const own = planWords[words.language];
   return make(
     'div',

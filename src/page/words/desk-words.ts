@@ -27,6 +27,8 @@ export interface DeskWords {
     readonly given: Readonly<Record<keyof DeskOwn, string>>;
     readonly leaveOut: (name: string) => string;
   };
+  readonly mend: string;
+  readonly mending: string;
   readonly saved: (file: string) => string;
   readonly whatIf: Readonly<Record<'title' | 'asIs' | 'size' | 'kind' | 'reading' | 'now' | 'back', string>>;
 }
@@ -59,6 +61,7 @@ export const deskWords: Readonly<Record<Language, DeskWords>> = {
       ifc: 'Sized IFC',
       bcf: 'Issues (BCF)',
       csv: 'Take-off (CSV)',
+      html: 'Report (HTML)',
       json: 'Result (JSON)',
       answers: 'Questions (JSON)',
     },
@@ -68,6 +71,8 @@ export const deskWords: Readonly<Record<Language, DeskWords>> = {
       given: { answers: 'Answers:', tables: 'Local tables:' },
       leaveOut: (name) => `Leave out ${name}`,
     },
+    mend: 'Find what mends it',
+    mending: 'Looking for the least change …',
     saved: (file) => `Saved ${file}`,
     whatIf: {
       title: 'What if',
@@ -106,6 +111,7 @@ export const deskWords: Readonly<Record<Language, DeskWords>> = {
       ifc: 'IFC dimensionné',
       bcf: 'Problèmes (BCF)',
       csv: 'Métré (CSV)',
+      html: 'Rapport (HTML)',
       json: 'Résultat (JSON)',
       answers: 'Questions (JSON)',
     },
@@ -115,6 +121,8 @@ export const deskWords: Readonly<Record<Language, DeskWords>> = {
       given: { answers: 'Réponses :', tables: 'Tables locales :' },
       leaveOut: (name) => `Laisser de côté ${name}`,
     },
+    mend: 'Chercher le remède',
+    mending: 'Recherche du moindre changement…',
     saved: (file) => `${file} enregistré`,
     whatIf: {
       title: 'Et si',

@@ -34,6 +34,7 @@ export interface PlanWords {
   readonly proved: string;
   readonly left: (left: number, of: number) => string;
   readonly cheapest: string;
+  readonly noChange: string;
   readonly brokenOff: (runs: number) => string;
   readonly weights: string;
   readonly weight: Readonly<Record<keyof MendResult['weights'], string>>;
@@ -82,6 +83,7 @@ export const planWords: Readonly<Record<Language, PlanWords>> = {
     proved: 'The changed building was run through all stages: no error is left.',
     left: (left, of) => `The changed building was run through all stages: ${left} of ${of} errors are left.`,
     cheapest: 'No other combination of the changes that the program knows costs less.',
+    noChange: 'No change that the program knows settles these errors.',
     brokenOff: (runs) =>
       `The search was broken off after ${runs} runs of all stages: a better plan may exist. The command mend searches longer.`,
     weights: 'What a point is',
@@ -155,6 +157,10 @@ export const planWords: Readonly<Record<Language, PlanWords>> = {
       'building drain': 'collecteur principal',
       'stack foot': 'pied de la colonne',
       sink: 'évier',
+      'kitchen sink': 'évier de cuisine',
+      urinal: 'urinoir',
+      'upper end': 'extrémité amont',
+      turns: 'changements de direction',
       interceptor: 'séparateur',
       'running trap': 'siphon principal',
       spacing: 'écartement',
@@ -164,6 +170,7 @@ export const planWords: Readonly<Record<Language, PlanWords>> = {
     proved: 'Le bâtiment changé a passé toutes les étapes : il ne reste aucune erreur.',
     left: (left, of) => `Le bâtiment changé a passé toutes les étapes : il reste ${left} erreurs sur ${of}.`,
     cheapest: 'Aucune autre combinaison des changements connus du programme ne coûte moins.',
+    noChange: 'Aucun changement connu du programme ne remédie à ces erreurs.',
     brokenOff: (runs) =>
       `La recherche a été arrêtée après ${runs} passages par toutes les étapes : un meilleur plan peut exister. La commande mend cherche plus longtemps.`,
     weights: 'Ce qu’est un point',

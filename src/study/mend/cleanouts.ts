@@ -62,14 +62,16 @@ export function lackingCleanouts({
 }: Outcome): { cleanout: NewCleanout; why: Finding }[] {
   return findings.flatMap((why) => {
     const { code: what, about, facts, clause = '' } = why;
-    const pipe = about[0] as ElementId | undefined;
-    if (pipe === undefined || facts.what === 'none drawn') return [];
-    if (what === 'cleanout-too-small')
-      return [{ cleanout: { pipe, size: facts.least as NominalSize, place: 'too small', clause }, why }];
-    if (what !== 'cleanout-missing') return [];
-    const served = (network.pipesOf.get(pipe) ?? []).flatMap((one) => pipes[one]!.required?.most ?? []);
-    const largest = served.length === 0 ? null : served.reduce(code.series.larger);
-    const size = largest === null ? null : (code.cleanouts?.sizeFor(largest) ?? largest);
-    return [{ cleanout: { pipe, size, place: String(facts.what), clause }, why }];
+    if (facts.what === 'none drawn' || (what !== 'cleanout-missing' && what !== 'cleanout-too-small')) return [];
+    const place = what === 'cleanout-too-small' ? 'too small' : String(facts.what);
+    // One finding may name many pipes of one kind, each of which needs its own; along a run one is set at a time.
+    const each = typeof facts.pipes === 'number' && place !== 'spacing' ? about : about.slice(0, 1);
+    return (each as readonly ElementId[]).map((pipe) => {
+      const served = (network.pipesOf.get(pipe) ?? []).flatMap((one) => pipes[one]!.required?.most ?? []);
+      const largest = served.length === 0 ? null : served.reduce(code.series.larger);
+      const asked = largest === null ? null : (code.cleanouts?.sizeFor(largest) ?? largest);
+      const size = place === 'too small' ? (facts.least as NominalSize) : asked;
+      return { cleanout: { pipe, size, place, clause }, why };
+    });
   });
 }
