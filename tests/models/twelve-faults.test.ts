@@ -1,21 +1,26 @@
 import { describe, expect, test } from 'vitest';
 import type { FindingCode } from '../../src/findings/finding.ts';
+import type { Result } from '../../src/schedule/result.ts';
+import { withoutPorts } from '../support/model-twins.ts';
+import { runModel } from '../support/run-sketch.ts';
 import { sampleOutcome } from '../support/sample-outcomes.ts';
 
 const { outcome, result } = sampleOutcome('twelve-faults');
 const nameOf = new Map(outcome.model.elements.map(({ globalId, name }) => [globalId, name ?? '?']));
-const told = result.findings.map(({ code, severity, about }) => ({
-  code,
-  severity,
-  about: about.map((id) => nameOf.get(id) ?? id).sort(),
-}));
+const toldBy = ({ findings }: Result) =>
+  findings.map(({ code, severity, about }) => ({
+    code,
+    severity,
+    about: about.map((id) => nameOf.get(id) ?? id).sort(),
+  }));
+const told = toldBy(result);
 
 // The faults as sample-models/twelve-faults.piping plants them, with all the elements that each is about.
 const planted: readonly (readonly [string, FindingCode, readonly string[]])[] = [
   ['the bend that is missing', 'open-end', ['F2-A2', 'J2-F2']],
   ['the gap', 'open-end', ['F3-GA', 'GB-A3']],
   ['the ports the wrong way', 'joint-contradicted', ['A4', 'F4', 'F4-A4']],
-  ['the pipe drawn twice', 'doubled-element', ['F5-A5', 'F5-A5 again']],
+  ['the pipe drawn twice', 'doubled-element', ['F5-A5', 'F5-A5 double']],
   ['the pipe laid uphill', 'backfall', ['F6-P6']],
   ['the wrong system', 'wrong-system', ['P7-Q7']],
   ['the pipe without a size', 'size-unknown', ['P8-Q8']],
@@ -51,5 +56,13 @@ describe('twelve planted faults', () => {
   test('what lies round the faults is whole: all fixtures drain, and eleven of them to the sewer', () => {
     expect(result.systems.map(({ fixtures }) => fixtures)).toEqual([11, 1, 1]);
     expect(result.fixtures.filter(({ ventedBy }) => ventedBy.how === 'unvented')).toEqual([]);
+  });
+
+  test('without any port geometry finds the same, but for the ports that stood the wrong way', () => {
+    const bare = toldBy(runModel(withoutPorts(outcome.model)).result);
+    expect(bare.filter(isPlanted).map(({ code }) => code)).toEqual(
+      told.filter((one) => isPlanted(one) && one.code !== 'joint-contradicted').map(({ code }) => code),
+    );
+    expect(bare.filter((one) => !isPlanted(one) && one.severity !== 'note')).toEqual([]);
   });
 });

@@ -85,7 +85,7 @@ function makeDraft(sketch: Sketch): Draft {
   }
   for (const [index, pipe] of sketch.pipes.entries())
     if (pipe.twice) {
-      const name = `${pipe.name} again`;
+      const name = `${pipe.name} double`;
       elements.push({ ...elements[index]!, name, globalId: globalIdOf(sketch.title, 'pipe', name) });
     }
   const { ports, connections } = portsOf(joints, places);

@@ -229,7 +229,7 @@ test('planted faults: what is missing, turned, doubled or without a size', () =>
   expect(called('A-B')!.centreLine!.points[1]![0]).toBeLessThan(2);
   expect(called('A-B')!.ports.flatMap((port) => model.ports[port]!.connected)).toEqual([]);
   expect(called('B-C')!.ports.map((port) => model.ports[port]!.direction)).toEqual(['source', 'sink']);
-  expect(called('C-D again')).toMatchObject({ ports: [], centreLine: called('C-D')!.centreLine });
+  expect(called('C-D double')).toMatchObject({ ports: [], centreLine: called('C-D')!.centreLine });
   expect(called('D-E')).toMatchObject({ sizes: [], centreLine: { outerDiameter: null }, box: null });
   expect(called('E-F')!.sizes.map(({ text, ground }) => `${text} ${ground}`)).toEqual(['2 in name']);
 });
