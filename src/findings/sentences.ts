@@ -188,7 +188,9 @@ export const sentences: Readonly<Record<FindingCode, Sentence>> = {
   'kind-contradicted': (f) =>
     `${first(f)} is taken for a ${plain(f.facts.taken)} by ${text(f, 'takenFrom')}, but ${text(f, 'otherFrom')} says ${plain(f.facts.other)}.`,
   'open-end': (f) =>
-    `${first(f)} has an open end${has(f, 'gapM') ? `; the nearest thing is ${f.length(num(f, 'gapM'))} away` : ''}.`,
+    f.facts.cutOff === true
+      ? `${first(f)} is broken off: what drains into it (${num(f, 'fixtures') === 1 ? 'one fixture' : `${text(f, 'fixtures')} fixtures`}) goes no farther, and no size beyond counts it.`
+      : `${first(f)} has an open end${has(f, 'gapM') ? `; the nearest thing is ${f.length(num(f, 'gapM'))} away` : ''}.`,
   'dead-end': (f) =>
     f.facts.noFixtures === true
       ? `${many(f, 'belongs', 'belong')} to drainage that no fixture of the model drains into: nothing to size.`

@@ -34,7 +34,7 @@ export interface Paths {
 export interface DrainSystem {
   readonly sewerEnd: JointId;
   readonly how: 'answer' | 'named' | 'ports' | 'lowest' | 'largest' | 'first';
-  /** Nobody said that it ends there, and of other piping somebody did: rather broken off than led out of the building. */
+  /** It ends inside the building, and of other piping somebody said where: rather broken off than led out. */
   readonly isCutOff: boolean;
   readonly pipes: readonly PipeId[];
 }

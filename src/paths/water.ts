@@ -1,8 +1,10 @@
 import { type Finding, finding } from '../findings/finding.ts';
+import { distanceFromHull } from '../geometry/plan-outline.ts';
 import { planDistance } from '../geometry/vector.ts';
 import type { Answers } from '../model/answers.ts';
 import type { Identity } from '../model/identity.ts';
 import type { ElementId, Model } from '../model/model.ts';
+import { buildingOutline } from '../network/building-outline.ts';
 import type { JointId, Network, Pipe, PipeId } from '../network/network.ts';
 import { coordinateMetres } from '../units/uncertainty.ts';
 import { connectedPieces } from './connected-pieces.ts';
@@ -54,7 +56,7 @@ export function waterPaths(
   const downJoint: (JointId | null)[] = pipes.map(() => null);
   const wet: boolean[] = pipes.map(() => false);
   const entering: FixtureId[][] = pipes.map(() => []);
-  const ends: Omit<DrainSystem, 'isCutOff'>[] = [];
+  const ends: FoundEnd[] = [];
   const fixtures: FixturePath[] = [];
   const byJoint = new Map<JointId, { element: ElementId; id: FixtureId }[]>();
   drainers.forEach(({ element, outlet }, index) => {
@@ -85,16 +87,10 @@ export function waterPaths(
       continue;
     }
     for (const joint of piece.joints) wayOut[joint] = out.via(joint);
-    for (const { joint, how, candidates, pipes: own } of out.ends) {
-      ends.push({ sewerEnd: joint, how, pipes: own });
-      if (isSaid(how)) continue;
-      const at = joints[joint]!;
-      const pipe = at.pipes[0];
-      const element = pipe === undefined ? at.elements[0] : (pipes[pipe]!.element ?? at.elements[0]);
-      const about = element === undefined ? [] : [element];
-      findings.push(finding('sewer-end-assumed', about, { how, z: at.at?.[2] ?? null, candidates }));
-    }
+    for (const { joint, how, candidates, pipes: own } of out.ends)
+      ends.push({ sewerEnd: joint, how, pipes: own, candidates });
   }
+  const systems = drainSystems(model, network, ends);
 
   const otherEnd = (pipe: PipeId, joint: JointId): JointId => {
     const [a, b] = pipes[pipe]!.ends;
@@ -117,9 +113,35 @@ export function waterPaths(
       findings.push(finding('double-water-path', [element, ...others], { ways: others.length + 1 }));
   });
 
-  const anySaid = ends.some(({ how }) => isSaid(how));
-  const systems = ends.map((end): DrainSystem => ({ ...end, isCutOff: anySaid && !isSaid(end.how) }));
+  for (const [place, { sewerEnd, how, candidates }] of ends.entries()) {
+    if (isSaid(how)) continue;
+    const at = joints[sewerEnd]!;
+    const pipe = at.pipes[0];
+    const element = pipe === undefined ? at.elements[0] : (pipes[pipe]!.element ?? at.elements[0]);
+    const about = element === undefined ? [] : [element];
+    findings.push(finding('sewer-end-assumed', about, { how, z: at.at?.[2] ?? null, candidates }));
+    if (!systems[place]!.isCutOff) continue;
+    const own = new Set(systems[place]!.pipes);
+    const lost = fixtures.filter(({ water }) => water[0] !== undefined && own.has(water[0])).length;
+    findings.push(finding('open-end', about, { cutOff: true, fixtures: lost }));
+  }
   return { systems, fixtures, next, toward: downJoint, wet, inFlowOrder: flowOrder(network, wet, next), entering };
+}
+
+type FoundEnd = Omit<DrainSystem, 'isCutOff'> & { readonly candidates: number };
+
+/**
+ * Piping that ends inside the building, where nobody said that it does though of other piping somebody did, is rather
+ * broken off. Where no outline tells inside from outside it is taken for a way out, which asks for no less.
+ */
+function drainSystems(model: Model, { joints }: Network, ends: readonly FoundEnd[]): DrainSystem[] {
+  const anySaid = ends.some(({ how }) => isSaid(how));
+  const outline = anySaid && ends.some(({ how }) => !isSaid(how)) ? buildingOutline(model) : null;
+  return ends.map(({ candidates: _, ...end }): DrainSystem => {
+    const at = joints[end.sewerEnd]!.at;
+    const isInside = outline !== null && at !== null && distanceFromHull(outline, at) === 0;
+    return { ...end, isCutOff: isInside && !isSaid(end.how) };
+  });
 }
 
 /** Pipes by which water of a fixture might leave as well: they lead away from it, and not upward as a vent does. */

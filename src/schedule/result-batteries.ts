@@ -48,7 +48,7 @@ const grounds: Readonly<Record<ReadingGround, string>> = {
 
 /** Connected pieces of drainage with their sewer end, in the order they were found. */
 export function systems({ paths, network, pipes }: Outcome, index: ResultIndex): ResultSystem[] {
-  return paths.systems.map(({ sewerEnd, how, pipes: own }) => {
+  return paths.systems.map(({ sewerEnd, how, isCutOff, pipes: own }) => {
     const lasts = own.filter((pipe) => paths.wet[pipe] && paths.stream.down(pipe) === sewerEnd);
     const last = lasts[0];
     const element = last === undefined ? null : network.pipes[last]!.element;
@@ -58,6 +58,7 @@ export function systems({ paths, network, pipes }: Outcome, index: ResultIndex):
     const inside = new Set(own);
     return {
       sewerEnd: { at: network.joints[sewerEnd]!.at, pipe: element === null ? null : index.idOf(element), how },
+      ...(isCutOff ? { isCutOff } : {}),
       pipes: new Set(own.flatMap((pipe) => network.pipes[pipe]!.element ?? [])).size,
       fixtures: paths.fixtures.filter(({ water }) => water[0] !== undefined && inside.has(water[0])).length,
       load,

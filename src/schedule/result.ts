@@ -75,6 +75,8 @@ export interface ResultSystem {
     readonly pipe: string | null;
     readonly how: string;
   };
+  /** Broken off rather than led out: it ends inside the building, and of other piping somebody said where. Absent otherwise. */
+  readonly isCutOff?: true;
   readonly pipes: number;
   readonly fixtures: number;
   readonly load: LoadRange;

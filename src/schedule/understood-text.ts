@@ -111,12 +111,14 @@ const reasons = (counts: Readonly<Record<string, number>>): string =>
 
 /** `10 fixtures, 40 pipes, 20 fixture units; to the sewer at CB-SEWER #506 (the model names it)`. */
 export function systemText(
-  { pipes, fixtures, load, sewerEnd }: ResultSystem,
+  { pipes, fixtures, load, sewerEnd, isCutOff }: ResultSystem,
   unit: string,
   names: ElementNames,
 ): string {
   const where = sewerEnd.pipe === null ? 'its only joint' : names.of(sewerEnd.pipe);
-  return `${counted(fixtures, 'fixture')}, ${counted(pipes, 'pipe')}, ${loadText(load, unit)}; to the sewer at ${where} (${sewerEnds[sewerEnd.how] ?? shownText(sewerEnd.how)})`;
+  const has = `${counted(fixtures, 'fixture')}, ${counted(pipes, 'pipe')}, ${loadText(load, unit)}`;
+  if (isCutOff === true) return `${has}; broken off at ${where}, short of a sewer end`;
+  return `${has}; to the sewer at ${where} (${sewerEnds[sewerEnd.how] ?? shownText(sewerEnd.how)})`;
 }
 
 const sewerEnds: Readonly<Record<string, string>> = {

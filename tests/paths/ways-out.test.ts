@@ -56,7 +56,9 @@ ${ends}`;
 
 describe('a drain that is broken off', () => {
   // 0.3 m lie between B1 and B2: too far for a joint, so the lavatory upstream has only its vent in common with the rest.
-  const broken = `${lavatory(1, 0)}${lavatory(2, 3)}
+  const broken = `storey "Ground floor" at 0
+slab "Slab" from -1 -2 to 6 1 top 0 thick 0.2
+${lavatory(1, 0)}${lavatory(2, 3)}
 ${roof}
 drain 3 in: F1 > B1 (east 1 fall 1:50)
 node B2 from B1 east 0.3 fall 1:50
@@ -71,6 +73,23 @@ sewer S`;
     expect(endsOf(run)).toEqual(['C-S named 1', 'F1-B1 ports 1']);
     expect(run.findings('backfall')).toEqual([]);
     expect(run.findings('unvented-trap')).toEqual([]);
+  });
+
+  test('is told, with what it leaves uncounted', () => {
+    const run = runSketch(broken);
+    const told = run.findings('open-end').filter(({ facts }) => facts.cutOff === true);
+    expect(told.map(({ about, facts }) => [about, facts.fixtures])).toEqual([[[run.pipe('F1-B1').globalId], 1]]);
+    expect(told[0]!.sentence).toBe(
+      'F1-B1 is broken off: what drains into it (one fixture) goes no farther, and no size beyond counts it.',
+    );
+    expect(run.result.systems.map(({ isCutOff }) => isCutOff)).toEqual([undefined, true]);
+  });
+
+  test('is a way out of its own where it ends outside, or where nothing tells inside from outside', () => {
+    for (const slab of ['slab "Slab" from 1.5 -2 to 6 1 top 0 thick 0.2', '']) {
+      const run = runSketch(broken.replace(/slab .*/, slab));
+      expect(run.result.systems.map(({ isCutOff }) => isCutOff)).toEqual([undefined, undefined]);
+    }
   });
 
   test('is no building drain, which every code sizes and vents by rules of its own', () => {

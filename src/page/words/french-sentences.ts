@@ -159,7 +159,9 @@ export const frenchSentences: Readonly<Record<FindingCode, Sentence>> = {
   'kind-contradicted': (f) =>
     `${first(f)} est pris pour : ${f.kind(f.facts.taken)}, selon ${text(f, 'takenFrom')}; mais ${text(f, 'otherFrom')} dit : ${f.kind(f.facts.other)}.`,
   'open-end': (f) =>
-    `${first(f)} a un bout ouvert${has(f, 'gapM') ? `; la chose la plus proche est à ${f.length(num(f, 'gapM'))}` : ''}.`,
+    f.facts.cutOff === true
+      ? `${first(f)} s’interrompt : ce qui s’y vide (${num(f, 'fixtures') === 1 ? 'un appareil' : `${text(f, 'fixtures')} appareils`}) ne va pas plus loin, et aucun diamètre au-delà ne le compte.`
+      : `${first(f)} a un bout ouvert${has(f, 'gapM') ? `; la chose la plus proche est à ${f.length(num(f, 'gapM'))}` : ''}.`,
   'dead-end': (f) =>
     f.facts.noFixtures === true
       ? `${many(f, 'appartient', 'appartiennent')} à une évacuation où aucun appareil de la maquette ne se vide : rien à calculer.`
