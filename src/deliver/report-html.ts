@@ -2,6 +2,7 @@ import { type Html, html, tag } from './html-element.ts';
 import { hashSource } from './offline-html.ts';
 import { batterySections } from './report-batteries.ts';
 import { errorsSection, otherFindingsSection, planSection, undersizedSection } from './report-findings.ts';
+import { hydraulicsSection } from './report-hydraulics.ts';
 import { pipeSection, takeOffSection } from './report-schedules.ts';
 import type { Section } from './report-section.ts';
 import type { ReportSource } from './report-source.ts';
@@ -23,6 +24,7 @@ export function reportHtml(source: ReportSource): string {
     otherFindingsSection(source),
     takeOffSection(source),
     pipeSection(source),
+    hydraulicsSection(source),
     basisSection(source),
   ].filter((section): section is Section => section !== null);
   const files = (result.models ?? [result.model]).map(({ file }) => file).join(', ');

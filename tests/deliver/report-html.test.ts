@@ -47,6 +47,17 @@ describe('the hall, wet vented: seven stall urinals and two lavatories drawn 3 i
     expect(rowsOf(report, 'take-off').find(([item]) => item === 'cleanout')?.[6]).toBe('2');
     expect(rowsOf(report, 'pipes').length - 1).toBe(40);
   });
+  test('water in its level drains for information: 4 in of 102.3 mm at 1:50, half full 4.20 l/s at 1.02 m/s by hand', () => {
+    // Radius 25.575 mm, Manning n 0.012: 1.023 m/s over 41.1 cm2.
+    const [, ...rows] = rowsOf(report, 'water');
+    const drain = rows.find(([name]) => name?.startsWith('BF-CB'));
+    expect(drain?.slice(1, 5)).toEqual(['4 in', '102.3 mm', '2 % (1:50)', '4.2 l/s at 1.02 m/s, Manning, n 0.012']);
+    expect(drain?.[7]).toBe('the code knows loads only');
+    expect(rows.length).toBe(
+      resultOf(sampleOutcome('hall-wet-vented').outcome, '0.0.0').pipes.filter(({ hydraulics }) => hydraulics).length,
+    );
+    expect(report).toContain('none of them follows from it');
+  });
   test('cautions at both ends, no date, the same bytes again', () => {
     expect(report.match(/class="caution"/g)?.length).toBe(2);
     expect(report).toContain('have a licensed person check every size');

@@ -163,7 +163,13 @@ describe.skipIf(chromiumPath === undefined)('the page in Chromium', () => {
     expect(card).toContain('3 po dessiné, 4 po exigé');
     expect(card).toContain('Ventilation interne');
     expect(card).not.toMatch(/\b(Too small|wet vent|drawn|needed|Why)\b/);
+    expect(card).toContain('débite 4,2 l/s à 1,02 m/s selon Manning (n 0,012)');
+    expect(card).toContain('dès qu’il est rempli à 18 %, soit 18 mm de hauteur');
     await page.getByRole('button', { name: 'English' }).click();
+    // The same sentences as in `explain`, beside the size and never for it.
+    expect(await page.locator('.card').textContent()).toContain(
+      'For information, not for its size: half full, a bore of 102.3 mm at 2 % (1:50) carries 4.2 l/s at 1.02 m/s by Manning (n 0.012)',
+    );
     expect(await page.locator('#card-title').textContent()).toBe('Line 1');
     expect(await page.locator('.banner').textContent()).toContain('3 in drawn');
     expect(complaints).toEqual([]);

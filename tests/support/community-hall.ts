@@ -61,6 +61,17 @@ const nodes: Record<string, Vec3> = {
   gullyTurn: [8.6, 3.6, 3.23],
 };
 
+/** 4 in of 102.3 mm at 1:50: Manning and Colebrook-White by hand, half full. */
+const waterIn4in: RunSpec['hydraulics'] = {
+  kind: 'level',
+  bore: 0.1023,
+  law: 'Manning, n 0.012',
+  slope: 0.02,
+  halfFull: { flow: 4.2, speed: 1.02, cleansItself: true },
+  otherLaw: { law: 'Colebrook-White, roughness 1 mm', flow: 4.2, speed: 1.02 },
+  cleansFrom: 0.18,
+};
+
 const runs: Record<string, RunSpec> = {
   ...Object.fromEntries(
     places.map((place) => [
@@ -85,6 +96,7 @@ const runs: Record<string, RunSpec> = {
         required: '4 in',
         battery: 'B1',
         trail: wetTrail(loadTo(place)),
+        hydraulics: waterIn4in,
       },
     ]),
   ),

@@ -9,6 +9,7 @@ import type {
   Result,
   ResultFinding,
   ResultFixture,
+  ResultHydraulics,
   ResultPipe,
   SizeLabel,
   TrailStep,
@@ -35,6 +36,7 @@ export interface RunSpec {
   readonly name?: string;
   readonly battery?: string;
   readonly trail?: readonly TrailStep[];
+  readonly hydraulics?: ResultHydraulics;
 }
 
 export interface FixtureSpec {
@@ -263,7 +265,7 @@ export function examplePage(spec: BuildingSpec): ExamplePage {
   };
 
   const rows: ResultPipe[] = runNames.map((name) => {
-    const { from, to, role, size, required, also = [], system, battery, trail } = run(name);
+    const { from, to, role, size, required, also = [], system, battery, trail, hydraulics } = run(name);
     const [a, b] = [at(from), at(to)];
     const vertical = isVertical(a, b);
     const drains = spec.fixtures.filter((_, index) => waters[index]!.includes(name));
@@ -299,6 +301,7 @@ export function examplePage(spec: BuildingSpec): ExamplePage {
       verdict: verdictOf(size, required),
       ...(size === null ? { reason: 'the model gives no size' } : {}),
       ...(battery === undefined ? {} : { battery }),
+      ...(hydraulics === undefined ? {} : { hydraulics }),
       trail: trail ?? [
         {
           rule: wet(name) ? 'branch-load' : 'vent-load',
