@@ -103,7 +103,7 @@ function alternativeOf(
     }));
   const alternative: WeighAlternative = {
     ...head,
-    largest: { inWall: size(quantities.largest.inWall), underFloor: size(quantities.largest.underFloor) },
+    largest: largestOf(quantities, size),
     pipes: pipesOf(quantities, size),
     sections: sectionsOf(quantities, index, nameOf, size),
     fittings: fittingsOf(quantities, size),
@@ -133,6 +133,12 @@ function alternativeOf(
         : resizesOf(outcome, index, base, { attempt, quantities }, size, built),
   };
   return prices === null ? alternative : { ...alternative, costs: costsOf(alternative, prices) };
+}
+
+function largestOf({ largest }: Quantities, size: SizeOf): NonNullable<WeighAlternative['largest']> {
+  const { inWall, underFloor, laidUnderFloor } = largest;
+  const laid = laidUnderFloor === underFloor ? null : size(laidUnderFloor);
+  return { inWall: size(inWall), underFloor: size(underFloor), ...(laid === null ? {} : { laidUnderFloor: laid }) };
 }
 
 function obstacleOf(

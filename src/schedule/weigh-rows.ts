@@ -42,7 +42,11 @@ export function weighRows(alternatives: readonly WeighAlternative[], currency: s
       ),
     },
     row('largest in the wall', ({ largest }) => largest!.inWall?.label ?? 'none'),
-    row('largest under floor', ({ largest }) => largest!.underFloor?.label ?? 'none'),
+    row('largest under floor', ({ largest }) => {
+      const { underFloor, laidUnderFloor } = largest!;
+      const laid = laidUnderFloor === undefined ? '' : `, laid as ${laidUnderFloor.label}`;
+      return underFloor === null ? 'none' : `${underFloor.label}${laid}`;
+    }),
     row('room it needs', ({ wall }) => studText(wall)),
     row('bored along the wall', ({ wall }) => boredText(wall)),
     row('wall as modelled', ({ wall }) =>

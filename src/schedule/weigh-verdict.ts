@@ -58,7 +58,8 @@ function governs(holding: readonly WeighAlternative[], words: WeighWords): strin
     const each = bored.map(([stud, some]) => asks(stud, some, (wall) => words.size(wall.bored!.size.label)));
     return `${words.bored(each.join(', '))}${pipe}`;
   }
-  const below = grouped(holding, ({ largest }) => largest?.underFloor?.label ?? null);
+  // What is not made in a size is laid in the next: two sizes that come out of one pipe are no choice.
+  const below = grouped(holding, ({ largest }) => (largest?.laidUnderFloor ?? largest?.underFloor)?.label ?? null);
   if (below !== null)
     return `${words.floor(below.map(([size, some]) => `${words.size(size)} ${named(some)}`).join(', '))}${pipe}`;
   return `${words.onlyPipe}${pipe}`;

@@ -40,7 +40,12 @@ export interface WeighAlternative {
    * Largest required size in the wall, or above the floor where no wall is modelled, and under the floor. Like all that
    * follows null or empty for a reading that does not hold and is not the modelled one.
    */
-  readonly largest: { readonly inWall: SizeLabel | null; readonly underFloor: SizeLabel | null } | null;
+  readonly largest: {
+    readonly inWall: SizeLabel | null;
+    readonly underFloor: SizeLabel | null;
+    /** Next larger size that is made, where the material does not come in what is asked under the floor. */
+    readonly laidUnderFloor?: SizeLabel;
+  } | null;
   /** Developed length by role and size, in the order of the water, then of the air. */
   readonly pipes: readonly WeighPipes[];
   /** The same pipe by pipe. */

@@ -1,5 +1,6 @@
 import type { PipeId } from '../network/network.ts';
 import type { NominalSize } from '../units/nominal-size.ts';
+import { pipeWidth } from '../verdicts/wall-fit.ts';
 import type { Attempt } from './attempt.ts';
 import { type FloorHole, floorHoles } from './floor-holes.ts';
 import type { Row } from './row.ts';
@@ -15,7 +16,12 @@ export interface Quantities {
   readonly cleanouts: readonly RowCleanout[];
   readonly floorHoles: readonly FloorHole[];
   readonly wall: WallNeed | null;
-  readonly largest: { readonly inWall: NominalSize | null; readonly underFloor: NominalSize | null };
+  /** `laidUnderFloor`: the size in which the largest under the floor is made in its material. */
+  readonly largest: {
+    readonly inWall: NominalSize | null;
+    readonly underFloor: NominalSize | null;
+    readonly laidUnderFloor: NominalSize | null;
+  };
 }
 
 export function quantities(row: Row, attempt: Attempt, scope: ReadonlySet<PipeId>): Quantities {
@@ -26,6 +32,10 @@ export function quantities(row: Row, attempt: Attempt, scope: ReadonlySet<PipeId
     const sizes = list.flatMap(({ size }) => size ?? []);
     return sizes.length === 0 ? null : sizes.reduce(outcome.code.series.larger);
   };
+  const buried = pieces.filter(({ underFloor }) => underFloor);
+  const laid = buried.flatMap(({ size, material }) =>
+    size === null ? [] : (pipeWidth(outcome.code, size, material).made ?? size),
+  );
   const walled = pieces.filter(({ walls }) => walls.length > 0);
   const changed = (joint: number): boolean =>
     network.joints[joint]?.pipes.length !== outcome.network.joints[joint]!.pipes.length;
@@ -41,7 +51,8 @@ export function quantities(row: Row, attempt: Attempt, scope: ReadonlySet<PipeId
     wall: wallNeed(outcome, pieces),
     largest: {
       inWall: largestOf(walled.length > 0 ? walled : pieces.filter(({ place }) => place === 'room')),
-      underFloor: largestOf(pieces.filter(({ underFloor }) => underFloor)),
+      underFloor: largestOf(buried),
+      laidUnderFloor: laid.length === 0 ? null : laid.reduce(outcome.code.series.larger),
     },
   };
 }

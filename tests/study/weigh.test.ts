@@ -153,6 +153,17 @@ describe('the wall-thickness fight: a row of urinals in the wall', () => {
     expect(wall?.fits).toBe(false);
   });
 
+  test('the sports hall: 2½ in under the floor is laid as 3 in as well, so that the pipe under the floor decides nothing', () => {
+    const { of, battery } = weighed('sports-hall');
+    expect([label(of('wet-vent').largest?.underFloor), label(of('circuit-vent').largest?.underFloor)]).toEqual([
+      '3 in',
+      '2½ in',
+    ]);
+    expect(label(of('circuit-vent').largest?.laidUnderFloor)).toBe('3 in');
+    expect(of('wet-vent').largest?.laidUnderFloor).toBeUndefined();
+    expect(battery().verdict).toMatch(/^The largest pipes are the same either way/);
+  });
+
   test('four: circuit vented 2 in fits between studs of 89 (68.6 mm), wet vented 3 in does not', () => {
     const { of, battery } = weighSketch(inWall(4, washout, '3 in'));
     expect([of('wet-vent').wall?.stud, of('circuit-vent').wall?.stud]).toEqual(['38 × 140', '38 × 89']);

@@ -7,6 +7,7 @@ import type { WeighWords } from '../../schedule/weigh-words.ts';
 import { decimal, lengthText, oneSize, placeIn, sizeLabel } from '../format.ts';
 import { shapeElement } from '../riser/shape-element.ts';
 import { frenchWeigh } from '../words/french-weigh.ts';
+import { planWords } from '../words/plan-words.ts';
 import { countedKind, named, ruleName } from '../words/words.ts';
 import type { Desk } from './desk.ts';
 import { make, makeSvg, modelText } from './element.ts';
@@ -64,7 +65,7 @@ export function weighTable(desk: Desk, battery: WeighBattery): HTMLElement {
         ),
         row(
           words.weigh.underFloor,
-          known((one) => oneSize(words, one.largest?.underFloor, '–')),
+          known((one) => underFloor(desk, one)),
         ),
         row(
           words.weigh.pipe,
@@ -138,6 +139,13 @@ function weighWords(desk: Desk): WeighWords {
       .join(', ');
   };
   return frenchWeigh(obstacle, battery, (label) => sizeLabel(words, label));
+}
+
+/** In the size that is asked, and in which it is laid where it is not made so. */
+function underFloor({ words }: Desk, { largest }: WeighAlternative): string {
+  const asked = oneSize(words, largest?.underFloor, '–');
+  const laid = largest?.laidUnderFloor;
+  return laid === undefined ? asked : `${asked} (${planWords[words.language].laid} ${oneSize(words, laid)})`;
 }
 
 function added({ words }: Desk, { adds }: WeighAlternative): string {

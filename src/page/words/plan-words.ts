@@ -51,6 +51,7 @@ export interface PlanWords {
   readonly takesNothing: (next: string | null) => string;
   readonly rowTakes: (load: string, more: string) => string;
   readonly or: string;
+  readonly laid: string;
 }
 
 export const planWords: Readonly<Record<Language, PlanWords>> = {
@@ -124,6 +125,7 @@ export const planWords: Readonly<Record<Language, PlanWords>> = {
     takesNothing: (next) => (next === null ? 'nothing more' : `nothing more; then it needs ${next}`),
     rowTakes: (load, more) => `The row takes ${load} more${more === '' ? '' : `: ${more}`}.`,
     or: 'or',
+    laid: 'laid as',
   },
   fr: {
     tab: 'Remède',
@@ -211,5 +213,6 @@ export const planWords: Readonly<Record<Language, PlanWords>> = {
     takesNothing: (next) => (next === null ? 'rien de plus' : `rien de plus ; ensuite ${next}`),
     rowTakes: (load, more) => `La rangée accepte encore ${load}${more === '' ? '' : ` : ${more}`}.`,
     or: 'ou',
+    laid: 'posé en',
   },
 };
