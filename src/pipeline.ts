@@ -1,6 +1,6 @@
 import type { PlumbingCode } from './codes/plumbing-code.ts';
 import type { Finding } from './findings/finding.ts';
-import type { PlanPoint } from './geometry/plan-outline.ts';
+import type { Building } from './loads/building.ts';
 import type { FixtureFacts } from './loads/fixture-facts.ts';
 import { fixtureLoads } from './loads/fixture-loads.ts';
 import { loadPipes } from './loads/load-pipes.ts';
@@ -15,7 +15,6 @@ import type { NamesTable } from './model/names-table.ts';
 import { usualDetail } from './model/usual-detail.ts';
 import { buildNetwork } from './network/build-network.ts';
 import { buildingOutline, cutAtOutline } from './network/building-outline.ts';
-import type { Network } from './network/network.ts';
 import { findPaths } from './paths/find-paths.ts';
 import type { FixtureId, Paths } from './paths/paths.ts';
 import { assignRoles } from './roles/assign-roles.ts';
@@ -36,25 +35,18 @@ export function run(model: Model, code: PlumbingCode, answers: Answers, names: N
 }
 
 /** A building whose network stands: as read from files, or changed by a study. */
-export interface Piping {
-  readonly model: Model;
-  readonly identities: readonly Identity[];
-  readonly network: Network;
-  /** Of the building in plan; null where the model draws none. */
-  readonly outline: readonly PlanPoint[] | null;
-  readonly code: PlumbingCode;
-  readonly answers: Answers;
+export interface Piping extends Building {
   /** What reading and joining had to say. */
   readonly findings: readonly Finding[];
 }
 
 /** The stages from a network on. */
-export function runNetwork({ findings, ...piping }: Piping): Outcome {
-  const { model, identities, network, outline, code, answers } = piping;
+export function runNetwork({ findings, ...building }: Piping): Outcome {
+  const { model, identities, network, code, answers } = building;
   const found = findPaths(model, identities, network, answers);
   const paths = found.value;
   const modelled = modelledSizes(model, network, code, answers);
-  const facts: FixtureFacts = { model, identities, network, paths, code, answers, modelled };
+  const facts: FixtureFacts = { ...building, paths, modelled };
   const shared: Finding[] = [...findings, ...found.findings.filter((one) => !isToldAsGap(one, findings))];
   const runs: Run[] = [];
   const scenarios = scenariosFor(facts);
@@ -64,8 +56,7 @@ export function runNetwork({ findings, ...piping }: Piping): Outcome {
     known: readonly Identity[] = identities,
   ): { run: Run; findings: readonly Finding[] } => {
     const loads = loadPipes({ ...facts, identities: known }, scenario);
-    const given = { model, identities: known, network, paths, loads: loads.value, code, answers, outline };
-    const roles = assignRoles(given);
+    const roles = assignRoles({ ...building, identities: known, paths, loads: loads.value });
     const sizes = sizePipes(roles.value.uses, code);
     return {
       run: { kind, loads: loads.value, roles: roles.value, sizes },
@@ -89,18 +80,7 @@ export function runNetwork({ findings, ...piping }: Piping): Outcome {
     }
   // Where the fixtures leave nothing open, the way drains enter a stack still may.
   if (scenarios.length === 1 && runs.some(leavesEntriesOpen)) runs.unshift(runAs('lightest').run);
-  return reachVerdicts({
-    model,
-    identities,
-    network,
-    outline,
-    paths,
-    code,
-    answers,
-    runs,
-    findings: shared,
-    read: findings,
-  });
+  return reachVerdicts({ ...building, paths, runs, findings: shared, read: findings });
 }
 
 /** An end that stays open before a gap is told with the gap. */

@@ -1,6 +1,7 @@
 import type { JointId, Network, PipeId } from '../network/network.ts';
+import { otherEnd } from '../network/other-end.ts';
 import type { Dry } from './dry-pieces.ts';
-import type { TrapAir } from './paths.ts';
+import type { Paths, TrapAir } from './paths.ts';
 import type { TrapSeat } from './traps.ts';
 import type { Water } from './water.ts';
 
@@ -15,7 +16,7 @@ export function ventTraps(
   vertical: readonly (boolean | null)[],
   seats: readonly TrapSeat[],
 ): TrapAir[] {
-  const live = liveFeet(network, water, dry);
+  const live = liveFeet(network, dry);
   const up = nearestFootUpstream(network, water, vertical, live);
   const inflows = inflowCounts(network, water);
   return seats.map((seat): TrapAir => {
@@ -52,24 +53,25 @@ const vented = (seat: TrapSeat, armEnd: JointId, arm: readonly PipeId[], through
   through,
 });
 
-function airFrom(
-  network: Network,
-  dry: Dry,
-  foot: JointId,
-  piece: number,
-): { foot: JointId; piece: number; dry: PipeId[] } {
+const airFrom = (network: Network, dry: Dry, foot: JointId, piece: number) => ({
+  foot,
+  piece,
+  dry: wayToSky(network, dry, foot, piece),
+});
+
+/** Dry pipes from a foot of the piece to open air; empty where there is none. */
+export function wayToSky(network: Network, { wayUp }: Pick<Paths, 'wayUp'>, foot: JointId, piece: number): PipeId[] {
   const pipes: PipeId[] = [];
   let joint = foot;
-  for (let pipe = dry.wayUp(joint, piece); pipe !== null; pipe = dry.wayUp(joint, piece)) {
+  for (let pipe = wayUp(joint, piece); pipe !== null; pipe = wayUp(joint, piece)) {
     pipes.push(pipe);
-    const [a, b] = network.pipes[pipe]!.ends;
-    joint = a === joint ? b : a;
+    joint = otherEnd(network, pipe, joint);
   }
-  return { foot, piece, dry: pipes };
+  return pipes;
 }
 
 /** Piece with open air whose foot stands at a joint; null elsewhere. Several: the one with the lowest number. */
-function liveFeet(network: Network, _water: Water, dry: Dry): (number | null)[] {
+function liveFeet(network: Network, dry: Dry): (number | null)[] {
   const live: (number | null)[] = network.joints.map(() => null);
   for (const { id, feet, mouths } of dry.pieces) {
     if (mouths.length === 0) continue;

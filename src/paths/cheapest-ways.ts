@@ -1,4 +1,5 @@
 import type { JointId, Network, PipeId } from '../network/network.ts';
+import { otherEnd } from '../network/other-end.ts';
 
 export interface Ways {
   /** Pipe to take from a joint toward the nearest goal; null at goals and where none is reached. By joint id. */
@@ -28,8 +29,7 @@ export function cheapestWays(
     const { joint, key } = top;
     if (key > cost[joint]!) continue;
     for (const pipe of network.joints[joint]!.pipes) {
-      const [a, b] = network.pipes[pipe]!.ends;
-      const from = a === joint ? b : a;
+      const from = otherEnd(network, pipe, joint);
       if (from === joint) continue;
       const total = key + costOf(pipe, joint, from);
       const known = cost[from]!;

@@ -2,19 +2,15 @@ import type { Finding } from '../findings/finding.ts';
 import type { Identity } from '../model/identity.ts';
 import type { Model } from '../model/model.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
+import { otherEnd } from '../network/other-end.ts';
 import { cheapestWays } from './cheapest-ways.ts';
 import { reportClosedPieces } from './closed-pieces.ts';
 import { openAirAt } from './open-air.ts';
-import type { DryPiece } from './paths.ts';
+import type { DryPiece, Paths } from './paths.ts';
 
-export interface Dry {
-  readonly pieces: readonly DryPiece[];
-  /** Piece of a dry pipe; null for wet ones. By pipe id. */
-  readonly pieceOf: readonly (number | null)[];
+export interface Dry extends Pick<Paths, 'pieces' | 'pieceOf' | 'wayUp'> {
   /** Joint of a dry pipe toward the sky; null where its piece has no mouth. By pipe id. */
   readonly skyward: readonly (JointId | null)[];
-  /** Pipe to take from a dry joint, or from a foot of the piece, toward open air; null at mouths and where there is none. */
-  readonly wayUp: (joint: JointId, piece: number) => PipeId | null;
 }
 
 /** A metre down on the way to the sky costs as much as 100 m of pipe: air is led upward where there is a choice. */
@@ -52,8 +48,7 @@ export function dryPieces(
       let best: { pipe: PipeId; cost: number } | null = null;
       for (const pipe of joints[foot]!.pipes) {
         if (pieceOf[pipe] !== id) continue;
-        const [a, b] = pipes[pipe]!.ends;
-        const far = a === foot ? b : a;
+        const far = otherEnd(network, pipe, foot);
         const cost = costAt(far) + moveCost(network, pipe, far, foot);
         if (cost === Number.POSITIVE_INFINITY) continue;
         if (best === null || cost < best.cost || (cost === best.cost && rank[pipe]! < rank[best.pipe]!))

@@ -1,4 +1,5 @@
 import type { JointId, Network, PipeId } from '../network/network.ts';
+import { otherEnd } from '../network/other-end.ts';
 
 /** Who flows in and out at each joint, and the ends of each pipe seen with the flow. */
 export interface Stream {
@@ -24,12 +25,8 @@ export function streamOf(network: Network, { wet, toward }: Flow): Stream {
   const inflows: PipeId[][] = network.joints.map(() => []);
   const outflow: (PipeId | null)[] = network.joints.map(() => null);
   const dry: PipeId[][] = network.joints.map(() => []);
-  const other = (pipe: PipeId, joint: JointId): JointId => {
-    const [a, b] = network.pipes[pipe]!.ends;
-    return a === joint ? b : a;
-  };
   const down = (pipe: PipeId): JointId => toward[pipe] ?? network.pipes[pipe]!.ends[1];
-  const up = (pipe: PipeId): JointId => other(pipe, down(pipe));
+  const up = (pipe: PipeId): JointId => otherEnd(network, pipe, down(pipe));
   for (const { id, ends } of network.pipes) {
     if (wet[id]) {
       inflows[down(id)]!.push(id);

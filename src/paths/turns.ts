@@ -1,5 +1,6 @@
 import { dot, subtract, unit, type Vec3 } from '../geometry/vector.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
+import { otherEnd } from '../network/other-end.ts';
 
 const degrees = 180 / Math.PI;
 /** A direction with less of itself in plan belongs to a vertical pipe. */
@@ -30,8 +31,7 @@ function directionsAlong(network: Network, pipes: readonly PipeId[], from: Joint
   for (const pipe of pipes) {
     const points = pointsFrom(network, pipe, joint);
     for (let at = 1; at < points.length; at++) directions.push(unit(subtract(points[at]!, points[at - 1]!)));
-    const [a, b] = network.pipes[pipe]!.ends;
-    joint = a === joint ? b : a;
+    joint = otherEnd(network, pipe, joint);
   }
   return directions;
 }

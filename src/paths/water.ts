@@ -6,21 +6,14 @@ import type { Identity } from '../model/identity.ts';
 import type { ElementId, Model } from '../model/model.ts';
 import { buildingOutline } from '../network/building-outline.ts';
 import type { JointId, Network, Pipe, PipeId } from '../network/network.ts';
+import { otherEnd } from '../network/other-end.ts';
 import { coordinateMetres } from '../units/uncertainty.ts';
 import { connectedPieces } from './connected-pieces.ts';
-import type { DrainSystem, FixtureId, FixturePath } from './paths.ts';
+import type { DrainSystem, FixtureId, FixturePath, Paths } from './paths.ts';
 import { waysOut } from './ways-out.ts';
 
-export interface Water {
-  readonly systems: readonly DrainSystem[];
-  readonly fixtures: readonly FixturePath[];
-  readonly next: readonly (PipeId | null)[];
-  /** Downstream joint of wet pipes; null for dry ones. */
-  readonly toward: readonly (JointId | null)[];
-  readonly wet: readonly boolean[];
-  readonly inFlowOrder: readonly PipeId[];
-  readonly entering: readonly (readonly FixtureId[])[];
-}
+/** What the water of the fixtures makes of the pipes; `toward` is null for dry ones. */
+export type Water = Pick<Paths, 'systems' | 'fixtures' | 'next' | 'toward' | 'wet' | 'inFlowOrder' | 'entering'>;
 
 /** Costs that order the ways of water: a metre of climb outweighs any length; ports and vent systems are dear. */
 const climbPerMetre = 1000;
@@ -92,17 +85,13 @@ export function waterPaths(
   }
   const systems = drainSystems(model, network, ends);
 
-  const otherEnd = (pipe: PipeId, joint: JointId): JointId => {
-    const [a, b] = pipes[pipe]!.ends;
-    return a === joint ? b : a;
-  };
   drainers.forEach(({ element, outlet }, index) => {
     const path: PipeId[] = [];
     let joint = outlet;
     for (let pipe = wayOut[joint] ?? null; pipe !== null; pipe = wayOut[joint] ?? null) {
       path.push(pipe);
       wet[pipe] = true;
-      joint = otherEnd(pipe, joint);
+      joint = otherEnd(network, pipe, joint);
       downJoint[pipe] = joint;
       next[pipe] = wayOut[joint] ?? null;
     }

@@ -1,5 +1,6 @@
 import { planDistance } from '../geometry/vector.ts';
 import type { JointId, Pipe, PipeId } from '../network/network.ts';
+import { otherEnd } from '../network/other-end.ts';
 import { coordinateMetres } from '../units/uncertainty.ts';
 import { cheapestWays, type Ways } from './cheapest-ways.ts';
 import type { Piece } from './connected-pieces.ts';
@@ -93,8 +94,7 @@ function partsOf(
     const reached = new Set<JointId>([outlet]);
     for (const joint of reached)
       for (const pipe of network.joints[joint]!.pipes) {
-        const [a, b] = network.pipes[pipe]!.ends;
-        const to = a === joint ? b : a;
+        const to = otherEnd(network, pipe, joint);
         if (cost(pipe, to, joint) !== Number.POSITIVE_INFINITY) reached.add(to);
       }
     const merged = new Set([...reached].flatMap((joint) => [joint, ...(partOf.get(joint) ?? [])]));
@@ -129,8 +129,7 @@ function withPipes(
       places.set(joint, 0);
       const pipe = via(joint);
       if (pipe === null) break;
-      const [a, b] = network.pipes[pipe]!.ends;
-      joint = a === joint ? b : a;
+      joint = otherEnd(network, pipe, joint);
     }
     for (const one of walked) places.set(one, places.get(joint)!);
   }
@@ -140,8 +139,7 @@ function withPipes(
       wet.add(joint);
       const pipe = via(joint);
       if (pipe === null) break;
-      const [a, b] = network.pipes[pipe]!.ends;
-      joint = a === joint ? b : a;
+      joint = otherEnd(network, pipe, joint);
     }
   const upper = (pipe: PipeId): JointId => {
     const [a, b] = network.pipes[pipe]!.ends;

@@ -4,13 +4,12 @@ import type { Role } from '../codes/role.ts';
 import type { StackLeft, StackUse } from '../codes/stack-use.ts';
 import type { PipeUse, TankKind } from '../codes/use.ts';
 import { type Finding, finding, type WithFindings } from '../findings/finding.ts';
-import type { PlanPoint } from '../geometry/plan-outline.ts';
+import type { Building } from '../loads/building.ts';
 import type { Loads } from '../loads/loads.ts';
 import { keyMatches } from '../model/answer-keys.ts';
-import type { Answers } from '../model/answers.ts';
 import type { Identity } from '../model/identity.ts';
-import type { Model } from '../model/model.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
+import { wayToSky } from '../paths/air.ts';
 import type { FixtureId, Paths, TrapAir } from '../paths/paths.ts';
 import { airOfRows } from './battery-air.ts';
 import type { BatteryContext } from './battery-context.ts';
@@ -35,16 +34,9 @@ import { venting } from './venting.ts';
 import { type WetFoot, wetFeet } from './wet-feet.ts';
 import { wetUses } from './wet-uses.ts';
 
-export interface RoleFacts {
-  readonly model: Model;
-  readonly identities: readonly Identity[];
-  readonly network: Network;
+export interface RoleFacts extends Building {
   readonly paths: Paths;
   readonly loads: Loads;
-  readonly code: PlumbingCode;
-  readonly answers: Answers;
-  /** Of the building in plan; null where the model draws none. */
-  readonly outline: readonly PlanPoint[] | null;
 }
 
 /** What each pipe is, who uses it, and how each row of fixtures is read, in one scenario. */
@@ -225,22 +217,11 @@ function ventFeet(network: Network, paths: Paths, air: readonly TrapAir[]): Vent
   for (const { id, feet: joints, mouths } of paths.pieces) {
     if (mouths.length === 0) continue;
     for (const joint of joints) {
-      const path = pathUp(network, paths, joint, id);
+      const path = wayToSky(network, paths, joint, id);
       if (path.length > 0) feet.push({ joint, piece: id, path, traps: traps.get(joint) ?? [] });
     }
   }
   return feet.sort((a, b) => a.joint - b.joint || a.piece - b.piece);
-}
-
-function pathUp(network: Network, paths: Paths, foot: JointId, piece: number): PipeId[] {
-  const path: PipeId[] = [];
-  let joint = foot;
-  for (let pipe = paths.wayUp(joint, piece); pipe !== null; pipe = paths.wayUp(joint, piece)) {
-    path.push(pipe);
-    const [a, b] = network.pipes[pipe]!.ends;
-    joint = a === joint ? b : a;
-  }
-  return path;
 }
 
 function stackAbove(paths: Paths, stacks: readonly Stack[]): boolean[] {

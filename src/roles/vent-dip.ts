@@ -1,4 +1,5 @@
 import type { Network } from '../network/network.ts';
+import { otherEnd } from '../network/other-end.ts';
 import type { VentFoot } from './roles.ts';
 
 /** How far a vent comes down again on its way from the foot to the sky, metres: its deepest descent from a height reached. */
@@ -7,8 +8,7 @@ export function descentOf(network: Network, { joint, path }: Pick<VentFoot, 'joi
   let top = network.joints[joint]!.at?.[2] ?? null;
   let descent = 0;
   for (const pipe of path) {
-    const [a, b] = network.pipes[pipe]!.ends;
-    at = a === at ? b : a;
+    at = otherEnd(network, pipe, at);
     const height = network.joints[at]!.at?.[2] ?? null;
     if (height === null) continue;
     if (top === null || height > top) top = height;

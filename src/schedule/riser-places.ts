@@ -1,5 +1,6 @@
 import type { Vec3 } from '../geometry/vector.ts';
 import type { JointId, PipeId } from '../network/network.ts';
+import { otherEnd } from '../network/other-end.ts';
 import type { RiserSource } from './riser-source.ts';
 
 /**
@@ -21,17 +22,13 @@ function laidOut({ network, paths }: RiserSource, pipes: readonly PipeId[]): Rea
   const inside = new Set(pipes);
   const places = new Map<JointId, Vec3>();
   let leaf = 0;
-  const other = (pipe: PipeId, joint: JointId): JointId => {
-    const [a, b] = network.pipes[pipe]!.ends;
-    return a === joint ? b : a;
-  };
   /** Places what lies beyond a joint, away from the sewer; the joint itself stands in the middle of its branches. */
   const place = (joint: JointId, depth: number, up: number, from: PipeId | null): number => {
     places.set(joint, [0, 0, 0]);
     const rows: number[] = [];
     for (const pipe of network.joints[joint]!.pipes) {
       if (pipe === from || !inside.has(pipe)) continue;
-      const beyond = other(pipe, joint);
+      const beyond = otherEnd(network, pipe, joint);
       if (places.has(beyond)) continue;
       const dry = paths.wet[pipe] !== true;
       rows.push(place(beyond, dry ? depth : depth + step, dry ? up + step : up, pipe));

@@ -1,6 +1,7 @@
 import type { PlanPoint } from '../geometry/plan-outline.ts';
 import type { StoreyId } from '../model/model.ts';
 import type { JointId, PipeId } from '../network/network.ts';
+import { otherEnd } from '../network/other-end.ts';
 import type { FixtureId } from '../paths/paths.ts';
 import type { Stream } from '../paths/stream.ts';
 import type { Battery } from '../roles/roles.ts';
@@ -96,10 +97,7 @@ function ownVents({ shown }: Outcome, { facts }: Battery): OwnVent[] {
 
 /** The joint at the far end of pipes that follow one another from `start`. */
 export function endOf({ network }: Pick<Outcome, 'network'>, pipes: readonly PipeId[], start: JointId): JointId {
-  return pipes.reduce((joint, pipe) => {
-    const [a, b] = network.pipes[pipe]!.ends;
-    return a === joint ? b : a;
-  }, start);
+  return pipes.reduce((joint, pipe) => otherEnd(network, pipe, joint), start);
 }
 
 /** Of the longest level piece; to the east where there is none. */

@@ -4,6 +4,7 @@ import type { PipeUse } from '../codes/use.ts';
 import type { Identity } from '../model/identity.ts';
 import type { ElementId, Model } from '../model/model.ts';
 import type { Network, PipeId } from '../network/network.ts';
+import { otherEnd } from '../network/other-end.ts';
 import { openSky } from '../paths/open-air.ts';
 import type { Paths } from '../paths/paths.ts';
 import type { Stack } from '../roles/find-stacks.ts';
@@ -185,8 +186,7 @@ export function checkFacts({ model, identities, network, paths, code }: Checkabl
     const own = path.filter((pipe) => roles.uses[pipe]!.role === 'yoke-vent');
     let at = joint;
     for (const pipe of own) {
-      const [a, b] = network.pipes[pipe]!.ends;
-      at = a === at ? b : a;
+      at = otherEnd(network, pipe, at);
     }
     const height = network.joints[at]!.at?.[2] ?? null;
     const floor = height === null ? undefined : roles.floors.elevations.findLast((one) => one <= height);

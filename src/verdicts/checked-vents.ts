@@ -2,6 +2,7 @@ import type { CheckedMouth, CheckedVent, FloodFacts } from '../codes/check.ts';
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import type { ElementId, Model } from '../model/model.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
+import { otherEnd } from '../network/other-end.ts';
 import type { OpenSky } from '../paths/open-air.ts';
 import type { FixtureId, Paths } from '../paths/paths.ts';
 import { pointsFrom } from '../paths/turns.ts';
@@ -66,8 +67,7 @@ export function checkedVents(model: Model, network: Network, paths: Paths, run: 
     let at = joint;
     for (const pipe of path) {
       if (roles.uses[pipe]!.role !== role) return heightOf(at);
-      const [a, b] = network.pipes[pipe]!.ends;
-      at = a === at ? b : a;
+      at = otherEnd(network, pipe, at);
     }
     return null;
   }
@@ -80,8 +80,7 @@ export function checkedVents(model: Model, network: Network, paths: Paths, run: 
       const from = pointsFrom(network, pipe, at)[0];
       if (from !== undefined && paths.vertical[pipe] === false && network.pipes[pipe]!.length > shortestLevel)
         return from[2];
-      const [a, b] = network.pipes[pipe]!.ends;
-      at = a === at ? b : a;
+      at = otherEnd(network, pipe, at);
     }
     return null;
   }
@@ -96,8 +95,7 @@ export function checkedVents(model: Model, network: Network, paths: Paths, run: 
         const plan = Math.hypot(to[0] - from[0], to[1] - from[1]);
         return (Math.atan2(to[2] - from[2], plan) * 180) / Math.PI;
       }
-      const [a, b] = network.pipes[pipe]!.ends;
-      at = a === at ? b : a;
+      at = otherEnd(network, pipe, at);
     }
     return null;
   }
@@ -169,8 +167,7 @@ function mouthOf(
 ): { joint: JointId; how: CheckedMouth['how'] } | null {
   let at = joint;
   for (const pipe of path) {
-    const [a, b] = network.pipes[pipe]!.ends;
-    at = a === at ? b : a;
+    at = otherEnd(network, pipe, at);
   }
   return paths.pieces[piece]!.mouths.find((mouth) => mouth.joint === at) ?? null;
 }

@@ -4,6 +4,7 @@ import { readSize } from '../loads/read-size.ts';
 import type { Identity } from '../model/identity.ts';
 import type { ElementId, Model } from '../model/model.ts';
 import type { JointId, Network, PipeId } from '../network/network.ts';
+import { otherEnd } from '../network/other-end.ts';
 import type { Paths } from '../paths/paths.ts';
 import type { Stream } from '../paths/stream.ts';
 import { planTurn, spaceTurn } from '../paths/turns.ts';
@@ -236,8 +237,7 @@ function distances(
     const joint = waiting[at]!;
     for (const pipe of network.joints[joint]!.pipes) {
       if (!paths.wet[pipe]) continue;
-      const [a, b] = network.pipes[pipe]!.ends;
-      const next = a === joint ? b : a;
+      const next = otherEnd(network, pipe, joint);
       const far = found.get(joint)! + (paths.vertical[pipe] === true ? 0 : stream.span(pipe));
       if (far >= (found.get(next) ?? Number.POSITIVE_INFINITY) - 1e-9) continue;
       found.set(next, far);

@@ -1,11 +1,7 @@
-import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import type { Finding } from '../findings/finding.ts';
-import type { PlanPoint } from '../geometry/plan-outline.ts';
+import type { Building } from '../loads/building.ts';
 import type { Loads } from '../loads/loads.ts';
-import type { Answers } from '../model/answers.ts';
-import type { FixtureKind, Identity } from '../model/identity.ts';
-import type { Model } from '../model/model.ts';
-import type { Network } from '../network/network.ts';
+import type { FixtureKind } from '../model/identity.ts';
 import type { Paths } from '../paths/paths.ts';
 import type { Roles } from '../roles/roles.ts';
 import type { Sizing } from '../sizes/size-pipes.ts';
@@ -22,15 +18,8 @@ export interface Run {
 }
 
 /** Everything of one run of the program over one building. */
-export interface Outcome {
-  readonly model: Model;
-  readonly identities: readonly Identity[];
-  readonly network: Network;
-  /** Of the building in plan; null where the model draws none. */
-  readonly outline: readonly PlanPoint[] | null;
+export interface Outcome extends Building {
   readonly paths: Paths;
-  readonly code: PlumbingCode;
-  readonly answers: Answers;
   /** The run with the heaviest reading: its roles and trails are shown. */
   readonly shown: Run;
   /** All runs; one where the model leaves nothing open. */

@@ -1,10 +1,8 @@
 import type { PlumbingCode } from '../codes/plumbing-code.ts';
 import { type Finding, finding } from '../findings/finding.ts';
-import type { PlanPoint } from '../geometry/plan-outline.ts';
-import type { Answers } from '../model/answers.ts';
+import type { Building } from '../loads/building.ts';
 import type { Identity } from '../model/identity.ts';
-import type { ElementId, Model } from '../model/model.ts';
-import type { Network } from '../network/network.ts';
+import type { ElementId } from '../model/model.ts';
 import type { Paths } from '../paths/paths.ts';
 import type { Load } from '../units/quantity.ts';
 import { batteryFindings, oneVentShort } from './battery-findings.ts';
@@ -16,14 +14,8 @@ import type { Outcome, Run } from './outcome.ts';
 import { sizeFindings } from './size-findings.ts';
 import { wallFindings } from './wall-findings.ts';
 
-export interface VerdictFacts {
-  readonly model: Model;
-  readonly identities: readonly Identity[];
-  readonly network: Network;
-  readonly outline: readonly PlanPoint[] | null;
+export interface VerdictFacts extends Building {
   readonly paths: Paths;
-  readonly code: PlumbingCode;
-  readonly answers: Answers;
   /** The heaviest reading last. */
   readonly runs: readonly Run[];
   readonly findings: readonly Finding[];

@@ -4,6 +4,7 @@ import { distance, type Vec3 } from '../../geometry/vector.ts';
 import type { ElementId } from '../../model/model.ts';
 import { type Place, removePipes } from '../../network/change.ts';
 import type { JointId, PipeId } from '../../network/network.ts';
+import { otherEnd } from '../../network/other-end.ts';
 import type { Piping } from '../../pipeline.ts';
 import type { PlaceAt } from '../vent-feet.ts';
 import { wayTo } from '../vent-route.ts';
@@ -16,12 +17,12 @@ import { elementsAt, spot, withNewVent } from './vent-changes.ts';
  * that one ended; a vent that went straight to open air does so from its new place.
  */
 export function movedVentOptions(scene: Scene, from: JointId, to: PlaceAt, why: Finding): Option[] {
-  const { outcome, stream, costs } = scene;
+  const { outcome, costs } = scene;
   const foot = outcome.shown.roles.feet.find(({ joint }) => joint === from);
   const first = foot?.path[0];
   if (first === undefined || ('joint' in to.place && to.place.joint === from)) return [];
-  const { element, ends } = outcome.network.pipes[first]!;
-  const top = stream.up(first) === from ? stream.down(first) : otherEnd(ends, from);
+  const { element } = outcome.network.pipes[first]!;
+  const top = otherEnd(outcome.network, first, from);
   const there = scene.at(top);
   if (there === null || element === null || there[2] < to.at[2]) return [];
   const opens = foot!.path.length === 1;
@@ -54,8 +55,6 @@ function moved(piping: Piping, first: PipeId, from: Place, to: Place, points: re
   const added = withNewVent(piping, from, to, points);
   return { ...added, network: removePipes(added.network, new Set([first])).network };
 }
-
-const otherEnd = ([a, b]: readonly [JointId, JointId], joint: JointId): JointId => (a === joint ? b : a);
 
 function directionOf(from: Vec3, to: Vec3): readonly [number, number] {
   const plan = distance([from[0], from[1], 0], [to[0], to[1], 0]);
