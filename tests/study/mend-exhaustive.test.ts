@@ -106,6 +106,12 @@ const networks: readonly Small[] = [
     pipes: ['J1-J2', 'V1-VX', 'V2-VT'],
     depth: 2,
   },
+  {
+    name: 'up to eight changes: six pipes, one of them too small, a vent left out and a flat drain',
+    text: pair('1 1/4 in', 'vent 1 1/4 in: V2 > VT (to 3.6)\nterminal VT', '1:150'),
+    pipes: ['J1-J2', 'V1-J1', 'V2-J2', 'T2-V2', 'J2-M', 'V2-VT'],
+    depth: 2,
+  },
 ];
 
 const sizes = ['1¼ in', '1½ in', '2 in', '2½ in', '3 in', '4 in'].map(nominalSize);
