@@ -256,6 +256,18 @@ describe('R30 a washer’s standpipe: 2 in, on a branch of 3 in (406.2)', () => 
     const done = run(washers);
     expect([done.size('T1-V1'), done.size('J2-K')]).toEqual(['2 in', '3 in']);
   });
+  test('whether 2021 and 2024 keep the 3 in branch is not known: the size says that it rests on memory', () => {
+    const trust = (code: string) =>
+      runSketch(at48(washers), { code })
+        .pipe('J2-K')
+        .trail.find(({ rule }) => rule === 'IPC-R30')?.trust;
+    expect(['ipc-2015', 'ipc-2018', 'ipc-2021', 'ipc-2024'].map(trust)).toEqual([
+      'cross-checked',
+      'cross-checked',
+      'memory',
+      'memory',
+    ]);
+  });
   test('where a place does not ask it', () => {
     expect(run(washers, {}, { washerBranch: false }).size('J2-K')).toBe('2 in');
   });
