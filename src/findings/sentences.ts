@@ -21,28 +21,32 @@ export function brokenText(given: SentenceFacts): string {
   const said = conditionText(given);
   if (said !== null) return said;
   if (has(given, 'guestUnits'))
-    return `fixtures with vents of their own bring ${load(given, 'guestUnits')}, at most ${given.number(num(given, 'guestUnitsMost'))} may join`;
+    return `fixtures with vents of their own bring ${load(given, 'guestUnits')}, at most ${given.number(num(given, 'guestUnitsMost'))} may join; let the others join downstream of it`;
   if (has(given, 'closetsMost'))
-    return `${text(given, 'closets')} water closets are served, at most ${text(given, 'closetsMost')} may be`;
-  if (facts.closetsApart === true) return 'its two water closets do not join at one level by a double fitting';
-  if (facts.closetUpstream === true) return 'a water closet joins upstream of another wet-vented fixture';
-  if (has(given, 'armMost')) return `an arm of ${text(given, 'arm')} joins, at most ${text(given, 'armMost')} may`;
+    return `${text(given, 'closets')} water closets are served, at most ${text(given, 'closetsMost')} may be; vent the others by themselves`;
+  if (facts.closetsApart === true)
+    return 'its two water closets do not join at one level by a double fitting; let them';
+  if (facts.closetUpstream === true)
+    return 'a water closet joins upstream of another wet-vented fixture; let it join last';
+  if (has(given, 'armMost'))
+    return `an arm of ${text(given, 'arm')} joins, at most ${text(given, 'armMost')} may; vent that fixture by itself`;
   if (has(given, 'storey') && has(given, 'limitUnits'))
-    return `storey ${num(given, 'storey') + 1} brings ${load(given)}, at most ${given.number(num(given, 'limitUnits'))} may come from one above the lowest`;
+    return `storey ${num(given, 'storey') + 1} brings ${load(given)}, at most ${given.number(num(given, 'limitUnits'))} may come from one above the lowest; vent the others by themselves`;
   if (has(given, 'offsetsMost'))
-    return `it has ${text(given, 'offsets')} horizontal offsets, at most ${text(given, 'offsetsMost')}`;
+    return `it has ${text(given, 'offsets')} horizontal offsets, at most ${text(given, 'offsetsMost')}; lead it straight, or vent what lies below by itself`;
   if (has(given, 'offsetMostM'))
-    return `its offset is ${given.length(num(given, 'offsetM'))} long, at most ${given.length(num(given, 'offsetMostM'))}`;
-  if (facts.joinedInOffset === true) return 'a drain joins in its horizontal offset';
+    return `its offset is ${given.length(num(given, 'offsetM'))} long, at most ${given.length(num(given, 'offsetMostM'))}; make it shorter, or vent what lies below by itself`;
+  if (facts.joinedInOffset === true) return 'a drain joins in its horizontal offset; let it join above or below';
   if (has(given, 'levelFixtures'))
     return `only ${text(given, 'levelFixtures')} of its fixtures drains into a level line: there is none to share a circuit vent with`;
-  if (has(given, 'verticalPipes')) return 'the branch has a vertical piece';
-  if (has(given, 'storeys')) return `its fixtures stand on ${text(given, 'storeys')} storeys`;
-  if (facts.stackUpstream === true) return 'a stack joins upstream of a circuit-vented fixture';
+  if (has(given, 'verticalPipes')) return 'the branch has a vertical piece; lead it level, or end it there';
+  if (has(given, 'storeys'))
+    return `its fixtures stand on ${text(given, 'storeys')} storeys; vent each storey by itself`;
+  if (facts.stackUpstream === true) return 'a stack joins upstream of a circuit-vented fixture; lead it past the row';
   if (has(given, 'trapsAtStart'))
     return num(given, 'trapsAtStart') === 0
-      ? 'the vent does not join on the drain of the most upstream fixture'
-      : 'more than one fixture joins upstream of the vent';
+      ? 'the vent does not join on the drain of the most upstream fixture; let it'
+      : 'more than one fixture joins upstream of the vent; let the vent join after the first';
   if (has(given, 'smallOutlets'))
     return num(given, 'smallOutlets') === 1
       ? `one outlet below ${text(given, 'smallBelow')} stands beside larger ones`
@@ -52,10 +56,10 @@ export function brokenText(given: SentenceFacts): string {
   if (has(given, 'turnMostDeg'))
     return `the branch turns ${given.number(num(given, 'turnDeg'))}° in plan between two vents, at most ${text(given, 'turnMostDeg')}°`;
   if (has(given, 'fixturesMost'))
-    return `${text(given, 'fixturesOnVent')} fixtures drain into the vent, at most ${text(given, 'fixturesMost')} may`;
-  if (facts.fixturesApart === true) return 'the two fixtures on the vent do not join by one double fitting';
+    return `${text(given, 'fixturesOnVent')} fixtures drain into the vent, at most ${text(given, 'fixturesMost')} may; lead the others to the branch`;
+  if (facts.fixturesApart === true) return 'the two fixtures on the vent do not join by one double fitting; let them';
   if (has(given, 'limitUnits'))
-    return `${load(given)} are counted, the limit is ${given.number(num(given, 'limitUnits'))}`;
+    return `${load(given)} are counted, the limit is ${given.number(num(given, 'limitUnits'))}; vent some of them by themselves`;
   if (has(given, 'loadUnits')) return `${load(given)} are more than any size holds`;
   return 'a condition is broken';
 }

@@ -38,18 +38,21 @@ const texts: Readonly<Record<string, (f: FrenchFacts) => string>> = {
   closetAbove: () => 'le plus haut de ses deux appareils est une toilette; qu’elle soit le plus bas',
   drops: (f) =>
     `${num(f, 'drops')} de ses tuyaux descendent avant de s’y raccorder, ce qui viderait les siphons; menez-les de niveau ou ventilez-les à part`,
-  circuitLeast: (f) => `${num(f, 'circuitTraps')} appareil s’y raccorde, au moins ${num(f, 'circuitLeast')} le doivent`,
+  circuitLeast: (f) =>
+    `${num(f, 'circuitTraps')} appareil s’y raccorde, au moins ${num(f, 'circuitLeast')} le doivent; donnez-lui sa propre ventilation`,
   circuitMost: (f) =>
     `${num(f, 'circuitTraps')} appareils respirent par une ventilation terminale, au plus ${num(f, 'circuitMost')}; faites-en des groupes, chacun avec la sienne`,
   furtherVents: () => 'une autre ventilation s’y trouve; faites-en des groupes, chacun avec une ventilation terminale',
   ventDry: (f) => `${num(f, 'fixturesOnVent')} appareils se vident dans sa ventilation; elle doit rester sèche`,
   slopeMost: (f) =>
     `sa pente est de ${f.slope(num(f, 'slope'))}, au plus ${f.slope(num(f, 'slopeMost'))} là où il ventile`,
-  othersElsewhere: (f) => `${num(f, 'othersElsewhere')} appareils d’un autre étage s’y vident`,
+  othersElsewhere: (f) =>
+    `${num(f, 'othersElsewhere')} appareils d’un autre étage s’y vident; menez-les à part à la colonne`,
   barred: (f) => `${kinds(f, 'barredKinds')} (${num(f, 'barred')}) ne peuvent s’y vider; ventilez-les autrement`,
-  dropMostM: (f) => `un appareil y descend de ${f.length(num(f, 'dropM'))}, au plus ${f.length(num(f, 'dropMostM'))}`,
+  dropMostM: (f) =>
+    `un appareil y descend de ${f.length(num(f, 'dropM'))}, au plus ${f.length(num(f, 'dropMostM'))}; ventilez-le à part`,
   armMostM: (f) =>
-    `un tuyau de vidange mesure ${f.length(num(f, 'armM'))} jusqu’à lui, au plus ${f.length(num(f, 'armMostM'))}`,
+    `un tuyau de vidange mesure ${f.length(num(f, 'armM'))} jusqu’à lui, au plus ${f.length(num(f, 'armMostM'))}; rapprochez-le ou ventilez-le à part`,
   toStackMostM: (f) =>
     `un appareil est à ${f.length(num(f, 'toStackM'))} de la colonne, au plus ${f.length(num(f, 'toStackMostM'))}; ventilez-le`,
   wetFixturesMost: (f) =>
@@ -57,7 +60,7 @@ const texts: Readonly<Record<string, (f: FrenchFacts) => string>> = {
   wetUnitsMost: (f) =>
     `un appareil de ${f.number(num(f, 'wetUnits'))} ${f.unit} s’y vide, au plus ${f.number(num(f, 'wetUnitsMost'))}; qu’il soit le plus bas, ou ventilé à part`,
   wetLengthMostM: (f) =>
-    `sa partie humide mesure ${f.length(num(f, 'wetLengthM'))}, au plus ${f.length(num(f, 'wetLengthMostM'))}`,
+    `sa partie humide mesure ${f.length(num(f, 'wetLengthM'))}, au plus ${f.length(num(f, 'wetLengthMostM'))}; ventilez à part ce qui est plus bas`,
   approval: () =>
     'le code ne le permet que là où la structure empêche d’autres ventilations et avec l’accord de l’autorité',
 };
