@@ -104,6 +104,14 @@ describe('R71 yoke vents at offsets, and clear of the floor (2.5.4.3.)', () => {
     expect(atOffset(stepped(12, [11, 6]))).toHaveLength(1);
     expect(atOffset(stepped(12, [11, 6, 4]))).toEqual([]);
   });
+  test('below the lowest drain the foot of the vent stack stands at the offset: none is asked there', () => {
+    const none = [[], [], []];
+    const run = runSketch(
+      tower([...none, ...times(12, '').map(() => [lavatory])], { ventStack: true, offset: 1, yokes: [11, 6] }),
+    );
+    expect(run.role('VF-VB')).toBe('vent-stack');
+    expect(atOffset(run)).toEqual([]);
+  });
   test('eleven storeys in all need none', () => {
     expect(missing(stepped(10, []))).toEqual([]);
   });
