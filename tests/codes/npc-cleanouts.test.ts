@@ -10,7 +10,7 @@ const missing = (run: SketchRun, what?: string) =>
 
 describe('R30 all of the drainage can be rodded: 15 m one way at 3 and 4 in, 7.5 m below', () => {
   /** A branch of 3 in with a cleanout at its head, and so much drain before the next one. */
-  const long = (length: number, size = '3'): SketchRun =>
+  const long = (length: number, size = '3', more = ''): SketchRun =>
     runSketch(
       hall(
         'A long drain',
@@ -29,9 +29,15 @@ drain ${size} in: CO > J1
 drain ${size} in: J1 > J2 > K > E > OUT (down 1)
 vent 3 in: J1 > VT (to 4.2)
 terminal VT
-sewer OUT`,
+sewer OUT
+${more}`,
       ),
     );
+  test('between two cleanouts each reaches half way: 30 m at 3 in', () => {
+    const between = (length: number) => missing(long(length, '3', 'cleanout E, 3 in'), 'spacing').length;
+    expect([between(29.9), between(30.2)]).toEqual([0, 1]);
+  });
+
   test.each([
     { size: '3', length: 14.9, found: 0, why: 'within 15 m' },
     { size: '3', length: 15.1, found: 1, why: 'past it' },

@@ -42,6 +42,12 @@ describe('R27 nothing joins within 1.5 m of the foot of a stack of 30 units, or 
     expect(near.map(({ facts }) => facts)).toEqual([{ distanceM: expect.closeTo(1, 1), leastM: 1.5, offset: true }]);
     expect(inOffset(1.6).findings('branch-near-foot')).toEqual([]);
   });
+
+  test('what joins at the lower end of a short offset joins the upright part below', () => {
+    const arm = armOf(90, lavatory, { vented: true, length: 0.5, floor: floorOf(3) - 1, sky: 14 });
+    const run = runSketch(tower([[], [], [lavatory], [lavatory]], { offset: 1, more: arm.replaceAll('J90', 'OB') }));
+    expect([run.role('OA-OB'), run.findings('branch-near-foot')]).toEqual(['stack', []]);
+  });
 });
 
 describe('R28 suds: near the turn of a pipe of several washers nothing joins (2.4.2.1.)', () => {
