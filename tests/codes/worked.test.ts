@@ -26,6 +26,9 @@ test('what the set holds, counted by hand', () => {
   expect([count('judgement'), count('battery'), count('published')]).toEqual([40, 13, 35]);
   const readme = readFileSync(resolve(import.meta.dirname, '../../README.md'), 'utf8');
   expect(readme).toContain(`an open set of ${names.length} worked vent pipings`);
+  const index = readFileSync(resolve(workedFolder, 'README.md'), 'utf8');
+  for (const name of names) expect(index).toContain(`- [${name}](${name}.json): ${workedCase(name).title} (`);
+  expect(index.match(/^- \[/gm)).toHaveLength(names.length);
   expect(new Set(names.map((name) => workedCase(name).title)).size).toBe(names.length);
 });
 
