@@ -1,7 +1,7 @@
 import { demandText, placeText } from './demand-text.ts';
 import { type ElementNames, elementNames } from './element-names.ts';
 import { hydraulicsText } from './hydraulics-text.ts';
-import type { NextSmaller } from './next-smaller.ts';
+import { limitCounts, type NextSmaller } from './next-smaller.ts';
 import { decimal, lengthText, limitText, loadText, sizeText, slopeText } from './number-text.ts';
 import { rangeStory } from './ranges-text.ts';
 import type { Result, ResultPipe } from './result.ts';
@@ -115,9 +115,14 @@ function smallerSize(next: NextSmaller | null): string[] {
   if (next === null) return [];
   const { size, fails } = next;
   const limit = fails.smaller?.size.dn === size.dn ? fails.smaller.limit : null;
-  const holds = limit === null ? '' : ` ${size.label} holds ${limitText(limit)}.`;
+  const holds = limit === null ? '' : ` ${size.label} ${heldText(limit, limitCounts(fails))}.`;
   const asks = fails.asks === null ? 'has no size that is large enough' : `asks for ${fails.asks.label}`;
   return [`Why not ${size.label}?${holds} “${fails.title}” ${asks} (${placeText(fails)}).`];
+}
+
+function heldText(limit: number | string, counts: 'load' | 'm' | 'l/s'): string {
+  if (counts === 'm' && typeof limit === 'number') return `reaches ${lengthText(limit)}`;
+  return `holds ${limitText(limit)}${counts === 'l/s' ? ' l/s' : ''}`;
 }
 
 function sections({ sections: parts }: ResultPipe): string[] {

@@ -1,8 +1,11 @@
 import { describe, expect, test } from 'vitest';
 import { demandText } from '../../src/schedule/demand-text.ts';
+import { explain } from '../../src/schedule/explain.ts';
+import { findInResult } from '../../src/schedule/find-in-result.ts';
 import type { TrailStep } from '../../src/schedule/result.ts';
-import { times } from '../support/rows.ts';
-import { runSketch } from '../support/run-sketch.ts';
+import { europeanTower } from '../support/european.ts';
+import { circuitVentedRow, times, wetVentedRow } from '../support/rows.ts';
+import { codeOf, runSketch } from '../support/run-sketch.ts';
 import { tower } from '../support/towers.ts';
 
 const said = (facts: TrailStep['facts'], step: Partial<TrailStep> = {}, unit = 'fixture units'): string =>
@@ -90,4 +93,31 @@ test('a storey goes by the name that the model gives it', () => {
   const it = runSketch(tower([[], times(6, 'shower, heads 2, trap 2 in')]));
   const step = it.pipe('S2-SF').trail.find(({ rule }) => rule === 'NPC-R17-storey');
   expect([step?.facts.loadUnits, step?.facts.storey]).toEqual([18, 'Storey 2']);
+});
+
+describe('why not smaller: what the smaller size holds, in what its table counts', () => {
+  const why = (text: string, pipe: string, code = 'npc-2020'): string => {
+    const { result } = runSketch(text, { code });
+    const sizes = codeOf(code).series.sizes.map(({ label, dn }) => ({ label, dn }));
+    return explain(result, findInResult(result, pipe), sizes).story.find((line) => line.startsWith('Why not'))!;
+  };
+
+  test('a length of vent: eight pedestal urinals, 32, 16.6 m: row 42, 1½ in reaches 9 m', () => {
+    const row = circuitVentedRow(times(8, 'urinal, pedestal, trap 2 in'), { run: 12 });
+    expect(why(row, 'CV-VJ')).toBe(
+      'Why not 1½ in? 1½ in reaches 9 m. “Vent by load and length” asks for 2 in (2.5.3.1.(11); 2.5.8.3.(1),(4), row up to 42).',
+    );
+  });
+
+  test('a load: seven stall urinals wet vented, 14: 3 in holds 12', () => {
+    const row = wetVentedRow(times(7, 'urinal, stall, trap 2 in'));
+    expect(why(row, 'J5-J6')).toContain('3 in holds 12. “Load that sizes a wet vent” asks for 4 in');
+  });
+
+  test('a flow: sixteen closets, K 0.5, 2.83 l/s at 1 %: DN 100 half full carries 2.50', () => {
+    const floors = times(4, '').map(() => ({ west: times(2, 'closet'), east: times(2, 'closet') }));
+    expect(why(europeanTower(floors, { slope: '1:100' }), 'SF-OUT', 'en12056-2000')).toMatch(
+      /^Why not DN 100\? DN 100 holds 2\.5 l\/s\. .* asks for DN 125 \(6\.6\)\.$/,
+    );
+  });
 });

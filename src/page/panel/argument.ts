@@ -1,6 +1,6 @@
-import { type NextSmaller, nextSmallerOf } from '../../schedule/next-smaller.ts';
+import { limitCounts, type NextSmaller, nextSmallerOf } from '../../schedule/next-smaller.ts';
 import type { ResultPipe, TrailStep } from '../../schedule/result.ts';
-import { limitText, oneSize, sizeText } from '../format.ts';
+import { lengthText, limitText, oneSize, sizeText } from '../format.ts';
 import { ruleName, type Words } from '../words/words.ts';
 import type { Desk } from './desk.ts';
 import { make, modelText } from './element.ts';
@@ -38,12 +38,18 @@ function whyNotSmaller(
   const { size, fails } = next;
   const rule = ruleName(words, fails);
   const limit = fails.smaller?.size.dn === size.dn ? fails.smaller.limit : null;
-  const holds = limit === null ? '' : `${words.pipe.holds(oneSize(words, size), limitText(words, limit))}. `;
+  const holds = limit === null ? '' : `${held(words, oneSize(words, size), limit, fails)}. `;
   const asks = fails.asks === null ? words.pipe.noRoom(rule) : words.pipe.fails(rule, oneSize(words, fails.asks));
   return [
     make('h3', {}, words.pipe.whyNot(oneSize(words, size))),
     make('p', {}, `${holds}${asks} `, make('span', { class: 'clause' }, clauseText(words, fails))),
   ];
+}
+
+function held(words: Words, size: string, limit: number | string, fails: TrailStep): string {
+  const counts = limitCounts(fails);
+  if (counts === 'm' && typeof limit === 'number') return words.pipe.reaches(size, lengthText(words, limit));
+  return words.pipe.holds(size, `${limitText(words, limit)}${counts === 'l/s' ? ' l/s' : ''}`);
 }
 
 function demand(desk: Desk, step: TrailStep): HTMLElement {

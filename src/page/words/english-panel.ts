@@ -46,6 +46,7 @@ export const englishPanel: PanelWords = {
       none: 'Neither water nor a trap’s air passes through it.',
     },
     holds: (size, load) => `${size} holds ${load}`,
+    reaches: (size, length) => `${size} reaches ${length}`,
     demands: 'Every demand on this pipe',
     demand: 'Demand',
     numbers: 'Numbers',

@@ -47,6 +47,7 @@ export const frenchPanel: PanelWords = {
       none: 'Ni eau ni air d’un siphon n’y passe.',
     },
     holds: (size, load) => `${size} tient ${load}`,
+    reaches: (size, length) => `${size} va jusqu’à ${length}`,
     demands: 'Toutes les exigences pour ce tuyau',
     demand: 'Exigence',
     numbers: 'Chiffres',

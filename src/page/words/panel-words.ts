@@ -31,6 +31,8 @@ export interface PanelWords {
     readonly roleWhy: Readonly<Record<'both' | 'water' | 'air' | 'none', string>>;
     /** `4 in holds 36 FU` */
     readonly holds: (size: string, load: string) => string;
+    /** `1½ in reaches 9 m` */
+    readonly reaches: (size: string, length: string) => string;
     readonly demands: string;
     readonly demand: string;
     readonly numbers: string;
