@@ -182,7 +182,8 @@ function madeOf({ last }: Plan, { added }: VentChange): { role: string; size: st
       if (role !== 'idle') return { role, size: last.shown.loads.modelled[pipe]!.size };
     }
   }
-  return { role: 'vent', size: null };
+  const drawn = added.flatMap((element) => last.network.pipesOf.get(element) ?? []);
+  return { role: 'vent', size: drawn.flatMap((pipe) => last.shown.loads.modelled[pipe]!.size ?? [])[0] ?? null };
 }
 
 function data(plan: Plan, index: ResultIndex, change: Change): Pick<MendChange, 'vent' | 'slope' | 'trap'> {

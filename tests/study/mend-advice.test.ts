@@ -72,3 +72,17 @@ describe('cleanouts', () => {
     expect(faults('mend', after)).toEqual([]);
   });
 });
+
+test('what is open and no error stays as it is drawn: only the two errors are mended', () => {
+  // X10 is a fixture that nobody could name: its drain is drawn 1¼ in, and needs 1¼ to 3 in.
+  const outcome = outcomeOf(sampleText('twelve-faults'));
+  const open = resultOf(outcome, '0.0.0').pipes.filter(
+    ({ required }) => required?.least?.label !== required?.most?.label,
+  );
+  expect(open.length).toBeGreaterThan(2);
+  const plan = planOf(outcome);
+  expect(plan.before.errors).toBe(2);
+  expect(plan.changes.map(({ kind }) => kind)).toEqual(['extended-vent', 'slope']);
+  expect(plan.changes[0]?.vent?.size).not.toBeNull();
+  expect(plan.after.errors).toBe(0);
+});

@@ -91,10 +91,14 @@ export function mend(first: Outcome, weights: Weights, mostRuns = usualRuns): Pl
 /** New vents drawn in the sizes that they need, so that the proof judges them as well. */
 function withNewSizes(outcome: Outcome, made: State['made']): Outcome {
   const { network, shown, code } = outcome;
-  const added = made.flatMap(({ option: { change } }) => (change !== null && 'added' in change ? change.added : []));
+  const vents = made.flatMap(({ option: { change } }) => (change !== null && 'added' in change ? [change] : []));
+  const added = vents.flatMap((vent) => vent.added.map((element) => ({ element, vent })));
   let piping = pipingOf(outcome);
-  for (const element of added) {
-    const sizes = (network.pipesOf.get(element) ?? []).flatMap((pipe) => shown.sizes[pipe]!.size ?? []);
+  for (const { element, vent } of added) {
+    const asked = (network.pipesOf.get(element) ?? []).flatMap((pipe) => shown.sizes[pipe]!.size ?? []);
+    // A vent that goes on and that nothing asks of keeps the size that it has.
+    const own = vent.kind !== 'extended-vent' ? [] : (network.pipesOf.get(vent.about[0]!) ?? []);
+    const sizes = asked.length > 0 ? asked : own.flatMap((pipe) => shown.loads.modelled[pipe]!.size ?? []);
     if (sizes.length > 0) piping = withSize(piping, element, sizes.reduce(code.series.larger));
   }
   return added.length === 0 ? outcome : runNetwork(piping);

@@ -41,8 +41,11 @@ export function resize(
     const needs = needsOf(outcome, element, pins);
     if (needs === null) continue;
     const drawn = rank(size);
-    // What nothing asks of stays as it is drawn.
-    const least = needs.least === null ? drawn : rank(needs.least);
+    // What nothing asks of stays as it is drawn; so does what is no error as long as something is open. What is an error
+    // is made large enough for the heaviest that it may be.
+    const [from, to] = [needs.least, needs.most].map((asked) => (asked === null ? drawn : rank(asked)));
+    const asked = drawn < from! ? to! : Math.min(drawn, to!);
+    const least = needs.pin === null ? asked : Math.max(asked, rank(needs.pin));
     const floor = grow ? Math.max(least, drawn) : least;
     nodes.set(element, { element, drawn, least: floor, drain: needs.drain, below: null });
   }
@@ -110,22 +113,35 @@ interface Choice {
   readonly cost: number;
 }
 
+/** Sizes that a pipe needs at its lightest and its heaviest, null: nothing asks; and what it must have besides. */
+interface Needs {
+  readonly least: NominalSize | null;
+  readonly most: NominalSize | null;
+  readonly pin: NominalSize | null;
+  readonly drain: boolean;
+}
+
 /** What a pipe needs, over its sections; null where it is no longer there. */
 function needsOf(
   { network, pipes, shown, code }: Outcome,
   element: ElementId,
   pins: ReadonlyMap<ElementId, NominalSize>,
-): { least: NominalSize | null; drain: boolean } | null {
+): Needs | null {
   const sections = network.pipesOf.get(element);
   if (sections === undefined || sections.length === 0) return null;
-  const asked = sections.flatMap((section) => {
-    const { required } = pipes[section]!;
-    return required?.most ?? required?.least ?? [];
-  });
-  const pin = pins.get(element);
-  const all = pin === undefined ? asked : [...asked, pin];
-  const least = all.length === 0 ? null : all.reduce((a, b) => code.series.larger(a, b));
-  return { least, drain: sections.some((section) => shown.roles.uses[section]!.drain !== null) };
+  const largest = (end: 'least' | 'most'): NominalSize | null => {
+    const all = sections.flatMap((section) => {
+      const { required } = pipes[section]!;
+      return required?.[end] ?? required?.least ?? [];
+    });
+    return all.length === 0 ? null : all.reduce(code.series.larger);
+  };
+  return {
+    least: largest('least'),
+    most: largest('most'),
+    pin: pins.get(element) ?? null,
+    drain: sections.some((section) => shown.roles.uses[section]!.drain !== null),
+  };
 }
 
 /** Who flows into whom, by the pipes that a drawn reduction is told of: upstream nodes of each. */
