@@ -62,6 +62,15 @@ export function drainAccess(facts: AccessFacts): DrainAccess {
 /** Rounding of sums of lengths, metres. */
 const nearly = 1e-6;
 
+/** What a level drain does from a pipe on, to where it drops or leaves. */
+interface Ahead {
+  readonly element: ElementId | null;
+  readonly length: number;
+  /** To the next cleanout, and the most between two, degrees. */
+  readonly turn: number;
+  readonly most: number;
+}
+
 /** Level drains of several fixtures: where they turn, and each from its upper end on. */
 function levelRuns(
   { network, paths, run }: AccessFacts,
@@ -82,18 +91,24 @@ function levelRuns(
     if (element === null || next === null || !isLevel(next) || stream.inflows[joint]!.length > 1) return [];
     return [{ element, turn: turnAfter(pipe, next), distance: distance(joint) }];
   });
+  // Against the flow: what lies ahead of a pipe is known before the pipe itself.
+  const ahead = new Map<PipeId, Ahead>();
+  for (const pipe of [...paths.inFlowOrder].reverse()) {
+    if (!isLevel(pipe)) continue;
+    const next = paths.next[pipe] ?? null;
+    const after = next === null ? undefined : ahead.get(next);
+    const opened = after === undefined || next === null || opens(stream.down(pipe));
+    const turn = opened ? 0 : turnAfter(pipe, next) + after.turn;
+    ahead.set(pipe, {
+      element: network.pipes[pipe]!.element ?? after?.element ?? null,
+      length: stream.span(pipe) + (after?.length ?? 0),
+      turn,
+      most: Math.max(turn, after?.most ?? 0),
+    });
+  }
   const runs = level.flatMap((head): CheckedAccess['runs'][number][] => {
     if (stream.inflows[stream.up(head)]!.some(isLevel)) return [];
-    let element: ElementId | null = null;
-    let [length, turn, most] = [0, 0, 0];
-    for (let pipe: PipeId | null = head; pipe !== null && isLevel(pipe); pipe = paths.next[pipe] ?? null) {
-      element ??= network.pipes[pipe]!.element;
-      length += stream.span(pipe);
-      const next: PipeId | null = paths.next[pipe] ?? null;
-      if (next === null || !isLevel(next)) break;
-      turn = opens(stream.down(pipe)) ? 0 : turn + turnAfter(pipe, next);
-      most = Math.max(most, turn);
-    }
+    const { element, length, most } = ahead.get(head)!;
     const { endsAt, drain } = run.roles.uses[head]!;
     const end = drain === 'building-drain' ? 'building-drain' : endsAt;
     return element === null ? [] : [{ element, endsAt: end, length, head: distance(stream.up(head)), turn: most }];

@@ -113,6 +113,27 @@ describe('International Plumbing Code', () => {
     expect(leaving(2.9, true)).toEqual([]);
     expect(leaving(2.9, false)).toEqual(['708.1.3']);
   });
+  test.each([
+    { size: '8', lengths: [60.9], found: [], why: 'the first within 200 ft' },
+    { size: '8', lengths: [61.2], found: ['708.1.2'], why: 'past it' },
+    { size: '8', lengths: [50, 121.8], found: [], why: 'the next within 400 ft' },
+    { size: '8', lengths: [50, 122.2], found: ['708.1.2'], why: 'past it' },
+    { size: '6', lengths: [70], found: [], why: 'a smaller sewer has cleanouts' },
+  ])('R33 manholes of a sewer of 8 in or more: $size in, $lengths m, $why (708.1.2)', ({ size, lengths, found }) => {
+    // The slab ends 6 m from the stack, the sewer begins 30 in, 0.762 m, farther out: lengths run from there.
+    const ends = lengths.map(
+      (length, at) => `${at === lengths.length - 1 ? 'OUT' : `M${at}`} (east ${length} fall 1:48)`,
+    );
+    const text = `${tower([[lavatory], [lavatory]], { stack: `${size} in` })
+      .replace('OUT (east 9 fall 1:50)', `B (east 6.762 fall 1:48) > ${ends.join(' > ')}`)
+      .replace(/roof "Roof" from -20 -20 to 20 20/, 'roof "Roof" from -5 -5 to 6 5')}
+slab "Slab" from -5 -5 to 6 5 top 0 thick 0.2
+${lengths
+  .slice(1)
+  .map((_, at) => `manhole M${at}`)
+  .join('\n')}`;
+    expect(missing(run(text, 'ipc-2021'), 'manhole').map(({ clause }) => clause)).toEqual(found);
+  });
   test('R37 at the foot of a stack, where the place still asks for it (setting)', () => {
     const text = tower([[lavatory], [lavatory]], { more: 'cleanout CO at 9.3 0 -1, 4 in\ndrain 4 in: CO > OUT' });
     const feet = (settings: object) => missing(run(text, 'ipc-2021', settings), 'stack foot').length;

@@ -4,6 +4,7 @@ import type { NominalSize } from '../../units/nominal-size.ts';
 import { coordinateMetres } from '../../units/uncertainty.ts';
 import type { Check, CheckedStack } from '../check.ts';
 import { branchIntervals } from '../rules/branch-intervals.ts';
+import { manholes } from '../rules/cleanout-checks.ts';
 import { nearFoot, yokesTooLow } from '../rules/stack-foot-checks.ts';
 import { type ArmLimits, armFaults, everyTrapVented, leastSlope, outletPipe } from '../rules/trap-checks.ts';
 import { frostCheck, islandVents, mainVentCheck, valveHeight } from '../rules/vent-checks.ts';
@@ -32,6 +33,11 @@ export function checks(tools: Tools): Check[] {
       level: family.number('tailpiece-horizontal', 'length').value,
     }),
     cleanouts(tools),
+    manholes(rule('IPC-R33'), series, {
+      from: family.size('manhole-sewer').value,
+      first: family.number('manhole-first', 'length').value,
+      next: family.number('sewer-manhole-spacing', 'length').value,
+    }),
     everyTrapVented(rule('IPC-R39')),
     trapArms(tools),
     commonVents(tools),

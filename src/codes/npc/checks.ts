@@ -5,7 +5,7 @@ import type { NominalSize } from '../../units/nominal-size.ts';
 import { coordinateMetres, turnDegrees } from '../../units/uncertainty.ts';
 import type { Check, CheckedTrap } from '../check.ts';
 import { cleanoutRules } from '../cleanouts.ts';
-import { cleanoutChecks } from '../rules/cleanout-checks.ts';
+import { cleanoutChecks, manholes } from '../rules/cleanout-checks.ts';
 import { type ArmLimits, armFaults, everyTrapVented, leastSlope, outletPipe } from '../rules/trap-checks.ts';
 import { frostCheck, mainVentCheck, valveHeight } from '../rules/vent-checks.ts';
 import { endsOverRoof, ventLeavesUpward, ventsMeetHigh } from '../rules/vent-place-checks.ts';
@@ -24,7 +24,11 @@ export function checks(tools: Tools): Check[] {
     slopes(tools),
     standpipes(tools),
     cleanouts(tools),
-    manholes(tools),
+    manholes(rule('NPC-R32'), series, {
+      from: family.size('manhole-sewer').value,
+      first: family.number('manhole-first', 'length').value,
+      next: family.number('manhole-spacing', 'length').value,
+    }),
     everyTrapVented(rule('NPC-R36')),
     trapArms(tools),
     ventLeavesUpward(rule('NPC-R41'), family.number('vent-leaves', 'angle').value),
@@ -142,24 +146,6 @@ function cleanouts({ family }: Tools): Check {
     },
     series,
   );
-}
-
-/** A large sewer has a manhole soon after the building, and further ones along its run (R32). */
-function manholes({ family }: Tools): Check {
-  const from = family.size('manhole-sewer');
-  const first = family.number('manhole-first', 'length');
-  const next = family.number('manhole-spacing', 'length');
-  const { id, clause } = family.rule('NPC-R32');
-  const { rank } = family.series;
-  return {
-    id,
-    run: ({ access }) =>
-      access.sewers.flatMap(({ element, size, since, pastManhole }): Finding[] => {
-        const most = pastManhole ? next.value : first.value;
-        if (rank(size) < rank(from.value) || since <= most + coordinateMetres) return [];
-        return [finding('cleanout-missing', [element], { what: 'manhole', distanceM: since, limitM: most }, clause)];
-      }),
-  };
 }
 
 /** An air admittance valve stands only where the code lists it, and some vent still reaches open air (R85). */

@@ -92,6 +92,21 @@ export function cleanoutChecks(demands: CleanoutDemands, { larger, rank }: SizeS
   };
 }
 
+/** A large sewer has a manhole soon after the building, and further ones along its run, metres. */
+export const manholes = (
+  { id, clause }: RuleEntry,
+  { rank }: SizeSeries,
+  { from, first, next }: { readonly from: NominalSize; readonly first: number; readonly next: number },
+): Check => ({
+  id,
+  run: ({ access }) =>
+    access.sewers.flatMap(({ element, size, since, pastManhole }): Finding[] => {
+      const most = pastManhole ? next : first;
+      if (rank(size) < rank(from) || since <= most + coordinateMetres) return [];
+      return [finding('cleanout-missing', [element], { what: 'manhole', distanceM: since, limitM: most }, clause)];
+    }),
+});
+
 /** A stack's cleanout at its foot serves a short building drain as well. */
 function footServes({ stacks, pipes }: CheckFacts, drain: readonly PipeId[], { footServes: within }: CleanoutDemands) {
   const length = drain.reduce<number>((sum, pipe) => sum + pipes[pipe]!.length, 0);
