@@ -105,3 +105,17 @@ sewer OUT`,
   // 15 m one way at 3 in (Table 2.4.7.2.): the ends of M and N lie 16 and 18 m away.
   expect(about(long, 'npc-2020', 'cleanout-missing', { what: 'spacing' })).toEqual(['M-N', 'K-M']);
 });
+
+test('a vent that runs level too low: the pipe from the drain, the fixture that floods, the rest of the vent', () => {
+  const low = hall(
+    'A level vent',
+    `sink S at 0 0 0.6, trap 1 1/2 in, rim 0.9
+trap T from S down 0.15
+drain 1 1/2 in: S > T > J (east 0.5 fall 1:48) > F (to -0.6) > OUT (east 5 fall 1:48)
+vent 1 1/2 in: J > A (to 0.7) > B (south 2 rise 1:48) > VT (to 4.2)
+terminal VT
+sewer OUT`,
+  );
+  // 6 in above the flood level at 0.9 m before it runs level (905.4).
+  expect(about(low, 'ipc-2021', 'dry-vent-too-flat')).toEqual(['J-A', 'S', 'A-B', 'B-VT']);
+});
