@@ -52,6 +52,9 @@ describe('a stack by its flow and the way it is entered', () => {
   test('W04 with a vent stack: DN 100 and DN 50 carry 5.6 square', () => {
     const it = run(europeanTower(floors(12, { west: flat }), { ventStack: true }), {}, domestic);
     expect([step(it, 'S1-VF', 'EN-R21')?.asks?.label, it.size('S1-VF')]).toEqual(['DN 100', 'DN 100']);
+    // Table 12 alone asks, not Table 11 beside it.
+    expect(step(it, 'S1-VF', 'EN-R20')).toBeUndefined();
+    expect(step(it, 'S1-VF', 'EN-R21')?.clause).toBe(family.rule('EN-R21').clause);
     expect([it.role('VB-VU'), it.size('VB-VU'), step(it, 'VB-VU', 'EN-R42')?.asks?.label]).toEqual([
       'vent-stack',
       'DN 50',
@@ -259,5 +262,7 @@ describe('kitchen stacks in Germany (DIN 1986-100): at most four sinks on DN 70'
       facts: { kitchenSinks: 5, kitchenSinksMost: 4 },
     });
     expect(asked(5, {})).toBeUndefined();
+    // System III tells appliances apart, and knows no such limit either.
+    expect(asked(5, { system: 'III' })).toBeUndefined();
   });
 });
