@@ -12,7 +12,7 @@ export interface Glow {
 }
 
 /** More lit sections than this are left to the plain lines while the eye moves: they have the same colour there. */
-const mostPlain = 3000;
+const mostPlain = 600;
 
 /** What must be seen: drawn once more over everything, with light around it, never thinner than a few pixels. */
 export function glowOf(

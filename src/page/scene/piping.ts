@@ -7,7 +7,7 @@ import { ballsOf, collarsOf } from './hubs.ts';
 import { lineGeometry } from './mesh-draft.ts';
 import type { Bounds } from './orbit.ts';
 import { type Paint, paintOf, pipeLineMaterial, pipeMaterial, type SharedUniforms } from './pipe-material.ts';
-import { type Polyline, polylineOf } from './polylines.ts';
+import { lengthOf, type Polyline, polylineOf } from './polylines.ts';
 import { type Tube, tubeGeometry } from './tubes.ts';
 
 /** How much of the piping is drawn while the eye moves: everything, thin tubes without fittings, or plain lines. */
@@ -22,6 +22,8 @@ export interface Piping {
   /** Repaints all sections; what is lit is drawn again over everything else. */
   show(look: (section: number) => SectionLook, outline: Rgb): void;
   setDetail(detail: Detail): void;
+  /** Of the plain lines, which share is drawn, the longest pipes first; 1: all. */
+  setShare(share: number): void;
   /** Whether this detail is built already. */
   has(detail: Detail): boolean;
   bounds(sections: Iterable<number>): Bounds | null;
@@ -91,6 +93,11 @@ export function pipingOf(building: Building, shared: SharedUniforms): Piping {
       for (const [of, mesh] of made) mesh.visible = of === detail;
       glow.setCheap(detail !== 'full');
     },
+    setShare(share) {
+      const lines = made.get('lines')?.geometry;
+      const corners = lines?.getAttribute('position').count ?? 0;
+      lines?.setDrawRange(0, share >= 1 ? corners : 2 * Math.ceil((corners / 2) * share));
+    },
     has: (detail) => made.has(detail),
     bounds: (sections) => boundsOf(polylines, sections),
     dispose() {
@@ -124,13 +131,20 @@ export function boundsOf(polylines: readonly (Polyline | null)[], sections: Iter
   return min[0] > max[0] ? null : { min, max };
 }
 
+/** The longest pipes first, so that a part of them still shows the building; without the stubs into their fittings. */
 function segmentLines(polylines: readonly (Polyline | null)[]): BufferGeometry {
   const positions: number[] = [];
   const sections: number[] = [];
-  for (const line of polylines)
-    for (let at = 1; line !== null && at < line.points.length; at++) {
-      positions.push(...line.points[at - 1]!, ...line.points[at]!);
-      sections.push(line.section, line.section);
+  const bodies = polylines.flatMap((line) => {
+    if (line === null) return [];
+    const points = line.points.slice(line.bodyFrom, line.bodyTo + 1);
+    return [{ section: line.section, points, length: lengthOf(points) }];
+  });
+  bodies.sort((a, b) => b.length - a.length);
+  for (const { section, points } of bodies)
+    for (let at = 1; at < points.length; at++) {
+      positions.push(...points[at - 1]!, ...points[at]!);
+      sections.push(section, section);
     }
   const geometry = lineGeometry(positions);
   geometry.setAttribute('section', new BufferAttribute(new Float32Array(sections), 1));

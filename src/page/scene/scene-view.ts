@@ -80,6 +80,7 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
     if (building.sectionCount > firstInLines && !piping.has('full')) {
       // The first picture of a large model comes at once, in lines; the tubes are built behind it.
       piping.setDetail('lines');
+      piping.setShare(1);
       context.setCheap(true);
       stage.draw();
       finishing = window.setTimeout(finish, 60);
@@ -96,6 +97,7 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
   const moving = (): void => {
     window.clearTimeout(finishing);
     piping.setDetail(stage.detail);
+    piping.setShare(stage.share);
     context.setCheap(stage.detail !== 'full');
     stage.look(control.eye, reach);
     labels.hide();

@@ -33,6 +33,8 @@ export interface Stage {
   resize(): boolean;
   /** How much to draw while moving, by what frames have cost so far. */
   readonly detail: Detail;
+  /** Share of the plainest detail that this machine draws in time while moving. */
+  readonly share: number;
   dispose(): void;
 }
 
@@ -44,6 +46,8 @@ const dear = 32;
 /** A picture dearer than this is not drawn eight times only to smooth its edges. */
 const dearStill = 160;
 const coarseRatio = 0.6;
+/** Fewer of the longest pipes than this no longer show what is turned. */
+const leastShare = 0.05;
 
 /** The renderer and its camera. Nothing runs while nothing changes. Throws where the browser has no WebGL 2. */
 export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
@@ -59,6 +63,7 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
   let rung = software && sections > 20_000 ? 2 : software && sections > 3000 ? 1 : 0;
   // The last resort of a slow machine: fewer pixels while the eye moves.
   let coarse = false;
+  let share = 1;
   const isCoarse = (): boolean => renderer.getPixelRatio() === coarseRatio;
   let asked = 0;
   let size: readonly [number, number] = [0, 0];
@@ -73,6 +78,15 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
     stats.calls = renderer.info.render.calls;
     stats.lastMs = performance.now() - began;
   };
+  /** The next frame draws less where this one was too dear, and again more where there is time to spare. */
+  const settle = (milliseconds: number): void => {
+    if (sections <= 500) return;
+    if (milliseconds <= dear) {
+      if (milliseconds < dear / 2) share = Math.min(1, share * 1.1);
+    } else if (rung < ladder.length - 1) rung++;
+    else if (software && !coarse) coarse = true;
+    else share = Math.max(leastShare, share * 0.75);
+  };
   const smooth = software ? smoothStill(canvas, camera, paint) : null;
   const stage: Stage = {
     scene,
@@ -81,6 +95,9 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
     stats,
     get detail() {
       return ladder[rung] ?? 'full';
+    },
+    get share() {
+      return share;
     },
     look(eye, reach) {
       place(camera, eye, reach);
@@ -101,9 +118,7 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
         asked = 0;
         if (coarse && !isCoarse()) renderer.setPixelRatio(coarseRatio);
         paint();
-        if (stats.lastMs <= dear || sections <= 500) return;
-        if (rung < ladder.length - 1) rung++;
-        else coarse = software;
+        settle(stats.lastMs);
       });
     },
     drawStill() {
