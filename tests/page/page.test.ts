@@ -92,6 +92,28 @@ describe.skipIf(chromiumPath === undefined)('the page in Chromium', () => {
     await close();
   });
 
+  test('alike storeys of a riser are drawn once, until somebody asks for one of them', async () => {
+    const { outcome, result } = sampleOutcome('school');
+    const source = { ...outcome, paths: { ...outcome.paths, traps: outcome.shown.roles.air } };
+    const { page, close, complaints } = await open(pageData(result, source), { hash: '#view=riser' });
+    const labels = page.locator('.riser-drawing .riser-label.floor');
+    const fold = page.locator('#riser-fold');
+    // The school's own heading: storeys 2 and 3 are drawn alike.
+    expect(await labels.allTextContents()).toContain('Storey 3: as Storey 2');
+    expect(await labels.allTextContents()).toContain('Storey 2 (×2: Storey 3)');
+    await fold.click();
+    expect(await fold.getAttribute('aria-pressed')).toBe('false');
+    expect(await labels.allTextContents()).toContain('Storey 3');
+    await fold.click();
+    await page.fill('#search', 'S3.J2-S3.J3');
+    await page.locator('.pipe-list .line').first().click();
+    expect(await fold.getAttribute('aria-pressed')).toBe('false');
+    expect(await page.locator('.riser-drawing .reach.chosen').count()).toBeGreaterThan(0);
+    expect(await violations(page)).toEqual([]);
+    expect(complaints).toEqual([]);
+    await close();
+  });
+
   test('a link opens the page at its pipe, its view and its colours', async () => {
     const { page, close } = await open(hall, { hash: `#pipe=${idOf('Stack low')}&colour=role` });
     expect(await page.locator('#card-title').textContent()).toBe('Stack low');
