@@ -1,7 +1,8 @@
-import { cutOut, polyline } from '../geometry/polyline.ts';
+import { polyline } from '../geometry/polyline.ts';
 import type { Vec3 } from '../geometry/vector.ts';
 import type { ElementId } from '../model/model.ts';
 import { metres } from '../units/quantity.ts';
+import { halves } from './halves.ts';
 import type { Fate, Joint, JointId, Network, Pipe, PipeId } from './network.ts';
 
 /** Where an added pipe ends: at a joint, on a pipe's wall so many metres from that pipe's end 0, or in the open. */
@@ -127,35 +128,15 @@ function newJoint(draft: Draft, at: Vec3 | null): JointId {
 function cut(draft: Draft, pipe: Pipe, at: number): JointId {
   if (at <= 0) return pipe.ends[0];
   if (at >= pipe.length) return pipe.ends[1];
-  const line = pipe.points === null ? null : polyline(pipe.points);
-  const first = line === null ? null : cutOut(line, 0, at);
-  const second = line === null ? null : cutOut(line, at, line.length);
-  const joint = newJoint(draft, second?.[0] ?? null);
-  const zero = metres(0);
-  const border = metres(pipe.from + at);
-  const rest: Pipe = {
-    ...pipe,
-    id: draft.pipes.length as PipeId,
-    ends: [joint, pipe.ends[1]],
-    length: metres(pipe.length - at),
-    reach: [zero, pipe.reach[1]],
-    points: second,
-    from: border,
-  };
-  draft.pipes[pipe.id] = {
-    ...pipe,
-    ends: [pipe.ends[0], joint],
-    length: metres(at),
-    reach: [pipe.reach[0], zero],
-    points: first,
-    to: border,
-  };
+  const joint = newJoint(draft, null);
+  const { place, parts } = halves(pipe, at, joint);
+  draft.pipes[pipe.id] = { ...parts[0], id: pipe.id };
   const far = draft.joints[pipe.ends[1]]!;
   // A pipe that leads back to its own joint still ends there with its other part.
   if (pipe.ends[0] !== pipe.ends[1])
     draft.joints[far.id] = { ...far, pipes: far.pipes.filter((other) => other !== pipe.id) };
-  draft.joints[joint] = { ...draft.joints[joint]!, pipes: [pipe.id] };
-  push(draft, rest);
+  draft.joints[joint] = { ...draft.joints[joint]!, at: place, pipes: [pipe.id] };
+  push(draft, { ...parts[1], id: draft.pipes.length as PipeId });
   return joint;
 }
 

@@ -1,5 +1,5 @@
 import { directionOf, type Polyline } from '../geometry/polyline.ts';
-import type { Vec3 } from '../geometry/vector.ts';
+import { isVertical } from '../geometry/vertical.ts';
 import { noLength } from './tolerance.ts';
 
 /** Between two borders along an axis: metres from the axis's first point. */
@@ -8,14 +8,6 @@ export interface Border {
   /** Node that stands there; null where only the orientation changes. */
   readonly node: number | null;
 }
-
-const cosineOf45 = Math.cos(Math.PI / 4);
-/** 0.01 degrees: what coordinates can tell. */
-const angleUncertainty = (0.01 * Math.PI) / 180;
-
-/** A direction at 45 degrees or less to the vertical counts as vertical. */
-export const isVertical = (direction: Vec3): boolean =>
-  Math.abs(direction[2]) >= cosineOf45 - angleUncertainty * Math.sin(Math.PI / 4);
 
 /**
  * Borders along a pipe, its two ends included: where something stands on the wall, and where vertical and horizontal
@@ -29,7 +21,7 @@ export function bordersOf(
   const turns: Border[] = [];
   for (let leg = 1; leg + 1 < axis.points.length; leg++) {
     const at = axis.along[leg]!;
-    const turnsHere = isVertical(directionOf(axis, leg - 1)) !== isVertical(directionOf(axis, leg));
+    const turnsHere = isVertical(directionOf(axis, leg - 1)[2]) !== isVertical(directionOf(axis, leg)[2]);
     if (turnsHere && !walls.some((wall) => Math.abs(wall.at - at) <= noLength)) turns.push({ at, node: null });
   }
   const between = [...walls, ...turns].sort((a, b) => a.at - b.at || (a.node ?? -1) - (b.node ?? -1));

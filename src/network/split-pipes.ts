@@ -1,5 +1,4 @@
-import { distance, type Vec3 } from '../geometry/vector.ts';
-import { metres } from '../units/quantity.ts';
+import { halves } from './halves.ts';
 import type { JointId, Network, Pipe, PipeId } from './network.ts';
 
 /** Where a pipe is to be cut: metres along it from its end 0, strictly inside. */
@@ -26,7 +25,7 @@ export function splitPipes(network: Network, cuts: readonly Cut[]): Network {
   const sections = new Map<NonNullable<Pipe['element']>, PipeId[]>();
   for (const pipe of network.pipes) {
     const at = cutOf.get(pipe.id);
-    const parts = at === undefined || pipe.points === null ? [pipe] : halves(pipe, pipe.points, at);
+    const parts = at === undefined || pipe.points === null ? [pipe] : cutAt(pipe, at);
     for (const part of parts) {
       const id = add(part);
       if (part.element !== null) sections.set(part.element, [...(sections.get(part.element) ?? []), id]);
@@ -34,38 +33,10 @@ export function splitPipes(network: Network, cuts: readonly Cut[]): Network {
   }
   return { ...network, joints, pipes, pipesOf: sections };
 
-  function halves(pipe: Pipe, points: readonly Vec3[], at: number): Omit<Pipe, 'id'>[] {
-    const { place, before, after } = cutLine(points, at);
+  function cutAt(pipe: Pipe, at: number): readonly Omit<Pipe, 'id'>[] {
     const joint = joints.length as JointId;
+    const { place, parts } = halves(pipe, at, joint);
     joints.push({ id: joint, at: place, elements: [], pipes: [], inferred: null });
-    const [a, b] = pipe.ends;
-    const middle = metres(pipe.from + at * Math.sign(pipe.to - pipe.from || 1));
-    const none = metres(0);
-    return [
-      { ...pipe, ends: [a, joint], points: before, length: metres(at), reach: [pipe.reach[0], none], to: middle },
-      {
-        ...pipe,
-        ends: [joint, b],
-        points: after,
-        length: metres(pipe.length - at),
-        reach: [none, pipe.reach[1]],
-        from: middle,
-      },
-    ];
+    return parts;
   }
-}
-
-function cutLine(points: readonly Vec3[], at: number): { place: Vec3; before: Vec3[]; after: Vec3[] } {
-  let walked = 0;
-  for (let index = 1; index < points.length; index++) {
-    const [a, b] = [points[index - 1]!, points[index]!];
-    const step = distance(a, b);
-    if (walked + step >= at) {
-      const share = step === 0 ? 0 : (at - walked) / step;
-      const place: Vec3 = [a[0] + (b[0] - a[0]) * share, a[1] + (b[1] - a[1]) * share, a[2] + (b[2] - a[2]) * share];
-      return { place, before: [...points.slice(0, index), place], after: [place, ...points.slice(index)] };
-    }
-    walked += step;
-  }
-  return { place: points.at(-1)!, before: [...points], after: [points.at(-1)!] };
 }

@@ -1,4 +1,5 @@
 import { type Finding, finding } from '../findings/finding.ts';
+import { isVertical } from '../geometry/vertical.ts';
 import { keyMatches } from '../model/answer-keys.ts';
 import type { Answers } from '../model/answers.ts';
 import type { Element, ElementId, Model } from '../model/model.ts';
@@ -8,15 +9,13 @@ import { coordinateMetres, directionDegrees } from '../units/uncertainty.ts';
 import type { PipeSlope } from './paths.ts';
 import { climbOf, type Water } from './water.ts';
 
-/** Nominally vertical: at 45 degrees or less to the vertical; an angle within its uncertainty of the limit holds. */
-const verticalLimit = Math.cos(((45 + directionDegrees) * Math.PI) / 180);
 const slopeUncertainty = Math.tan((directionDegrees * Math.PI) / 180);
 
 /** By pipe: at 45 degrees or less to the vertical; null where the model gives neither geometry nor a property. */
 export function orientations(model: Model, network: Network): (boolean | null)[] {
   return network.pipes.map((pipe) => {
     const run = runOf(pipe);
-    if (run !== null && run.length > 0) return Math.abs(run.rise) / run.length >= verticalLimit;
+    if (run !== null && run.length > 0) return isVertical(run.rise, run.length);
     if (pipe.element === null) return false;
     const element = model.elements[pipe.element]!;
     const flag = element.properties.find(({ name, measure }) => measure === 'flag' && /vertica/i.test(name));

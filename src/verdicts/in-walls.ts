@@ -1,6 +1,7 @@
 import { boxAround } from '../geometry/box.ts';
 import { boxGrid } from '../geometry/box-grid.ts';
 import { stretchesInside } from '../geometry/prism.ts';
+import { isVertical } from '../geometry/vertical.ts';
 import type { Model } from '../model/model.ts';
 import type { Pipe } from '../network/network.ts';
 import type { WallRules } from '../tables/wall-rules.ts';
@@ -46,14 +47,12 @@ function stretchesIn(points: NonNullable<Pipe['points']>, body: WallBody): InWal
   for (const { from, to, direction } of stretchesInside(points, body.prism)) {
     const [x, y, z] = direction;
     const along = Math.abs(x * body.along[0] + y * body.along[1]);
-    const run = Math.abs(z) >= uprightFrom ? 'upright' : along >= Math.hypot(x, y) * alongFrom ? 'along' : 'across';
+    const run = isVertical(z) ? 'upright' : along >= Math.hypot(x, y) * alongFrom ? 'along' : 'across';
     lengths.set(run, (lengths.get(run) ?? 0) + to - from);
   }
   return [...lengths].filter(([, length]) => length >= least).map(([run, length]) => ({ body, run, length }));
 }
 
-/** At 45 degrees to the vertical or less. */
-const uprightFrom = Math.SQRT1_2 - 1e-9;
 /** Within 20 degrees of the wall's length; what stands more askew crosses it. */
 const alongFrom = Math.cos((20 * Math.PI) / 180);
 /** What reaches less far into a wall, metres, does not lie in it. */
