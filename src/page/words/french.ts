@@ -1,13 +1,6 @@
 import { frenchPanel } from './french-panel.ts';
-import {
-  frenchAsk,
-  frenchCodes,
-  frenchFactWords,
-  frenchKinds,
-  frenchPhrases,
-  frenchRoles,
-  frenchRules,
-} from './french-trade.ts';
+import { frenchAsk } from './french-questions.ts';
+import { frenchCodes, frenchFactWords, frenchKinds, frenchPhrases, frenchRoles, frenchRules } from './french-trade.ts';
 import type { Words } from './words.ts';
 
 const some = (count: number, one: string, many: string): string =>
