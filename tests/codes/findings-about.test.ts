@@ -119,3 +119,10 @@ sewer OUT`,
   // 6 in above the flood level at 0.9 m before it runs level (905.4).
   expect(about(low, 'ipc-2021', 'dry-vent-too-flat')).toEqual(['J-A', 'S', 'A-B', 'B-VT']);
 });
+
+test('a branch near an inclined offset that has no vent: the offset, and the top of its stack', () => {
+  const inclined = tower(times(6), { stack: '2 in' })
+    .replace('node S1 at 0 0 -0.4', 'node S1 at 0.8 0 -0.4')
+    .replace('S2 > S1', 'S2 > OA (to 0.7) > OB (east 0.8 down 0.8) > S1');
+  expect(about(inclined, 'ipc-2021', 'offset-relief-vent-missing')).toEqual(['OA-OB', 'S6-S5']);
+});
