@@ -6,11 +6,10 @@ export function median(values: readonly number[]): number {
 }
 
 /**
- * Processor seconds of this process that a call takes: steadier than the clock on a busy machine. What earlier calls have
- * left behind is cleared away first, so that nobody pays for another's litter.
+ * Processor seconds of this process that a call takes: steadier than the clock on a busy machine. Memory is not swept
+ * before it: a full sweep forgets the shapes that the compiled code is made for, and the next call would be a cold one.
  */
 export function cpuSeconds(call: () => void): number {
-  globalThis.gc?.();
   const before = process.cpuUsage();
   call();
   const { user, system } = process.cpuUsage(before);
