@@ -68,7 +68,8 @@ export function proofSentence({ before, after, search }: MendResult): string {
   return `The changed building was run through all stages: ${left}${unknown}.`;
 }
 
-const weightNames: Readonly<Record<keyof MendResult['weights'], string>> = {
+/** What each weight is about. */
+export const weightNames: Readonly<Record<keyof MendResult['weights'], string>> = {
   sizeStep: 'a metre of pipe one size step larger or smaller',
   newVent: 'a metre of new vent',
   ventJoint: 'each end of it',

@@ -1,6 +1,7 @@
 import { frenchPanel } from './french-panel.ts';
+import { frenchPhrases } from './french-phrases.ts';
 import { frenchAsk } from './french-questions.ts';
-import { frenchCodes, frenchFactWords, frenchKinds, frenchPhrases, frenchRoles, frenchRules } from './french-trade.ts';
+import { frenchCodes, frenchFactWords, frenchKinds, frenchRoles, frenchRules } from './french-trade.ts';
 import type { Words } from './words.ts';
 
 const some = (count: number, one: string, many: string): string =>

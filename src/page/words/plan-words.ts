@@ -1,4 +1,5 @@
 import type { MendResult } from '../../schedule/mend.ts';
+import { weightNames } from '../../schedule/mend-text.ts';
 import type { MarginStep } from '../margin-step.ts';
 import type { PipeFate, Side } from '../plan-side.ts';
 import type { Language } from '../state.ts';
@@ -88,17 +89,7 @@ export const planWords: Readonly<Record<Language, PlanWords>> = {
     brokenOff: (runs) =>
       `The search was broken off after ${runs} runs of all stages: a better plan may exist. The command mend searches longer.`,
     weights: 'What a point is',
-    weight: {
-      sizeStep: 'a metre of pipe one size step larger or smaller',
-      newVent: 'a metre of new vent',
-      ventJoint: 'each end of it',
-      throughRoof: 'a way through the roof',
-      openedWall: 'a metre inside a wall',
-      reading: 'a row read another way',
-      relaying: 'a metre laid to another fall',
-      trap: 'a trap set elsewhere',
-      cleanout: 'a cleanout',
-    },
+    weight: weightNames,
     leftTitle: 'Errors that are left',
     advice: null,
     proposals: 'A proposal for the designer; nothing that is drawn in the model is moved.',
