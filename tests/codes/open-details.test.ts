@@ -17,6 +17,13 @@ const cases: readonly [code: string, kind: FixtureKind, field: string, choices: 
     'Table 2.4.9.3.: 4, 2, 1.5 and 3; "wall" or "washout" would leave two of them',
   ],
   ['npc-2020', 'dishwasher', 'domestic', [true, false], 'Table 2.4.9.3.: 1.5 and 3'],
+  [
+    'en12056-2000',
+    'urinal',
+    'flush',
+    ['tank', 'valve'],
+    'Table 2: 0.8 and 0.5; a slab urinal counts by the person and is taken only where it is said, so "trough" settles nothing',
+  ],
 ];
 test.each(cases)('%s, %s: %s', (code, kind, field, choices) => {
   expect(open(code, kind)).toEqual([{ field, choices }]);
