@@ -95,6 +95,20 @@ describe('a stack by its flow and the way it is entered', () => {
     expect(step(it, 'S1-SF', 'EN-R20')?.facts).toMatchObject({ entries: 'swept' });
   });
 
+  test('R24 one of the largest branches at a fitting that is called square makes the stack square, and known to be', () => {
+    const named = europeanTower(floors(12, { west: flat }), { flat: false }).replace(/\bS6\b/g, 'S6square');
+    const it = run(named, {}, domestic);
+    expect(step(it, 'S1-SF', 'EN-R20')?.facts).toMatchObject({ entries: 'square', entriesKnown: true, limitLps: 5.8 });
+    expect([it.size('S1-SF'), it.pipe('S1-SF').required?.least?.label]).toEqual(['DN 125', 'DN 125']);
+  });
+
+  test('R24 of swept largest branches one that nobody knows leaves the stack open', () => {
+    const named = europeanTower(floors(12, { west: flat })).replace(/\bS(?!6\b)(\d+)\b/g, 'S$1swept');
+    const it = run(named, {}, domestic);
+    expect(step(it, 'S1swept-SF', 'EN-R20')?.facts).toMatchObject({ entriesKnown: false });
+    expect(it.pipe('S1swept-SF').required).toMatchObject({ least: { label: 'DN 100' }, most: { label: 'DN 125' } });
+  });
+
   test('R22 one size from foot to sky; R23 a closet wants DN 100, in system II DN 80', () => {
     const it = run(europeanTower(floors(3, { west: ['closet'] })));
     expect(it.size('S3-S2')).toBe('DN 100');
