@@ -34,6 +34,21 @@ export function oneVisit(open: Opener): void {
       expect(strongHot / strong).toBeGreaterThan(0.97);
     });
 
+    test('back from the riser the picture is as it was, labels and all', async () => {
+      const before = await picture(page);
+      await page.keyboard.press('r');
+      await page.locator('.riser-drawing').waitFor({ state: 'visible' });
+      await page.keyboard.press('r');
+      await page.locator('.picture').waitFor({ state: 'visible' });
+      await settled(page);
+      const after = await picture(page);
+      expect([after.width, after.height]).toEqual([before.width, before.height]);
+      let other = 0;
+      for (let at = 0; at < after.data.length; at += 4)
+        if ([0, 1, 2].some((part) => Math.abs(after.data[at + part]! - before.data[at + part]!) > 40)) other++;
+      expect(other / (after.width * after.height)).toBeLessThan(0.001);
+    });
+
     test('a finding brings its pipe: framed, chosen, with its trail as an argument', async () => {
       await page.locator('.finding-head').first().click();
       await settled(page);

@@ -69,7 +69,7 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
   let ticking = 0;
   const inside = (at: Point): boolean =>
     clip === null || ([0, 1, 2] as const).every((axis) => at[axis] >= clip!.min[axis] && at[axis] <= clip!.max[axis]);
-  const aspect = (): number => canvas.clientWidth / Math.max(1, canvas.clientHeight);
+  const aspect = (): number => Math.max(1, stage.size[0]) / Math.max(1, stage.size[1]);
   const hitAt = (x: number, y: number, slackPixels: number): Hit | null =>
     pick(building, piping.polylines, stage.ray(x, y), slackPixels * stage.shared.pixel.value, inside, piping.visible);
   const theme = (): Theme => themes[store.state.theme];
@@ -171,7 +171,7 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
     ticking = requestAnimationFrame(tick);
   };
   store.watch((now, before) => {
-    if (now.view === 'model' && now !== before) show(now);
+    if (now.view === 'model' && now !== before && canvas.clientWidth > 0) show(now);
   });
 
   const fly = (bounds: Bounds | null, turnTo?: Pick<Eye, 'yaw' | 'pitch' | 'flat'>): void => {
@@ -183,7 +183,7 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
   const sectionsOf = (rows: readonly number[]): number[] => rows.flatMap((row) => building.sectionsOf[row] ?? []);
   /** The same view in the part of the picture that nothing covers. */
   const clearOf = (covered: number, eye: Eye): Eye => {
-    const height = Math.max(1, canvas.clientHeight);
+    const height = Math.max(1, stage.size[1]);
     const free = Math.max(height * 0.3, height - covered - underTools);
     const distance = eye.distance * (height / free);
     const lower = ((covered - underTools) * spread(eye) * distance) / height;
@@ -252,8 +252,17 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
   stage.resize();
   control.eye = framing(whole, namedViews.home, aspect());
   show(store.state);
+  let hidden = canvas.clientWidth === 0;
   new ResizeObserver(() => {
-    if (canvas.clientWidth > 0) view.resize();
+    const wasHidden = hidden;
+    hidden = canvas.clientWidth === 0;
+    if (hidden) return;
+    // Whatever changed while nobody saw it is drawn now, when its place is known again.
+    if (!wasHidden) view.resize();
+    else {
+      stage.resize();
+      show(store.state);
+    }
   }).observe(canvas);
   return view;
 }

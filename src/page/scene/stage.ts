@@ -29,7 +29,9 @@ export interface Stage {
   drawStill(): void;
   project(at: Point): { readonly x: number; readonly y: number } | null;
   ray(x: number, y: number): Ray;
-  /** Fits the picture to its place; false where that has not changed. */
+  /** Width and height of its place, in CSS pixels, as last seen: while the picture is hidden it has none of its own. */
+  readonly size: readonly [number, number];
+  /** Fits the picture to its place; false where that has not changed, or is hidden. */
   resize(): boolean;
   /** How much to draw while moving, by what frames have cost so far. */
   readonly detail: Detail;
@@ -101,7 +103,7 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
     },
     look(eye, reach) {
       place(camera, eye, reach);
-      shared.pixel.value = (2 * spread(eye)) / Math.max(1, canvas.clientHeight);
+      shared.pixel.value = (2 * spread(eye)) / Math.max(1, size[1]);
       // A mark every 26 pixels or so, in steps of two, so that patterns do not crawl while zooming.
       const wished = 26 * shared.pixel.value * eye.distance;
       shared.period.value = 2 ** Math.round(Math.log2(Math.max(0.02, wished)));
@@ -144,9 +146,12 @@ export function stageIn(canvas: HTMLCanvasElement, sections: number): Stage {
         toward: toward.toArray() as [number, number, number],
       };
     },
+    get size() {
+      return size;
+    },
     resize() {
       const { clientWidth, clientHeight } = canvas;
-      if (clientWidth === size[0] && clientHeight === size[1]) return false;
+      if (clientWidth === 0 || (clientWidth === size[0] && clientHeight === size[1])) return false;
       size = [clientWidth, clientHeight];
       renderer.setSize(clientWidth, clientHeight, false);
       camera.aspect = clientWidth / Math.max(1, clientHeight);
