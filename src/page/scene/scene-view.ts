@@ -249,8 +249,11 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
       stage.dispose();
     },
   };
+  const frameHome = (): void => {
+    control.eye = framing(whole, namedViews.home, aspect());
+  };
   stage.resize();
-  control.eye = framing(whole, namedViews.home, aspect());
+  frameHome();
   show(store.state);
   let hidden = canvas.clientWidth === 0;
   new ResizeObserver(() => {
@@ -260,7 +263,9 @@ export function sceneView(building: Building, store: Store, parts: SceneParts): 
     // Whatever changed while nobody saw it is drawn now, when its place is known again.
     if (!wasHidden) view.resize();
     else {
+      const isFirst = stage.size[0] === 0;
       stage.resize();
+      if (isFirst) frameHome();
       show(store.state);
     }
   }).observe(canvas);
