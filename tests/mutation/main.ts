@@ -10,7 +10,8 @@ import { openResults } from './results.ts';
 import { openTrials, type Suite } from './trials.ts';
 
 // Switches one small fault on after another and asks for a test that fails. Lists the faults that no test notices.
-//   npm run mutants                       all, going on from where an earlier run stopped
+//   npm run mutants                       each rule of a code left out, each printed limit moved, going on where a run stopped
+//   --fine          each condition, comparison, lookup and sum as well, in every stage from loads to verdicts
 //   npm run mutants -- src/codes/npc      those of one folder or file
 //   --kind "not in the list"   of one kind: rules that are left out
 //   --tests codes/npc   asks only tests whose path holds this
@@ -21,6 +22,7 @@ const { values, positionals } = parseArgs({
   allowPositionals: true,
   options: {
     minutes: { type: 'string' },
+    fine: { type: 'boolean' },
     afresh: { type: 'boolean' },
     whole: { type: 'boolean' },
     tests: { type: 'string' },
@@ -28,6 +30,10 @@ const { values, positionals } = parseArgs({
     results: { type: 'string' },
   },
 });
+
+const isFine = values.fine === true || values.kind !== undefined;
+const isRule = ({ file, what }: Mutant): boolean =>
+  file.startsWith('src/codes/') && /^(not in the list|limit )/.test(what);
 
 /** Calls of `__mutant` after which a fault that no test noticed counts as a survivor. */
 const enough = 2e6;
@@ -46,7 +52,7 @@ const results = openResults(values.results);
 const asked = mutants.flatMap((mutant, number) =>
   !excused.has(mutant.key) &&
   (positionals.length === 0 || positionals.some((place) => mutant.file.startsWith(place))) &&
-  mutant.what.includes(values.kind ?? '') &&
+  (isFine ? mutant.what.includes(values.kind ?? '') : isRule(mutant)) &&
   (values.afresh === true || results.killer(mutant.key) === null)
     ? [{ ...mutant, number }]
     : [],
@@ -76,7 +82,7 @@ say(
 const survivors: (Pick<Mutant, 'key' | 'file' | 'line'> & { readonly passed: number; readonly reaching: number })[] =
   [];
 const trials = openTrials(suites, mutants);
-const most = values.whole === true ? Number.POSITIVE_INFINITY : enough;
+const most = values.whole === true || !isFine ? Number.POSITIVE_INFINITY : enough;
 let done = 0;
 for (const { number, key, file, line } of asked) {
   if (values.minutes !== undefined && seconds() > 60 * Number(values.minutes)) break;
