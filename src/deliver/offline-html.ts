@@ -1,4 +1,5 @@
 import { base64 } from './base64.ts';
+import { htmlHead } from './html-head.ts';
 import { sha256 } from './sha256.ts';
 
 /** Script and style of a page as the build made them; both go into the file whole. */
@@ -32,17 +33,7 @@ export function offlineHtml({ title, noScript, js, css, data, allow = [] }: Offl
     "base-uri 'none'",
     "form-action 'none'",
   ].join('; ');
-  return `<!doctype html>
-<html lang="en">
-<head>
-<meta charset="utf-8">
-<meta http-equiv="Content-Security-Policy" content="${policy}">
-<meta name="viewport" content="width=device-width, initial-scale=1">
-<meta name="referrer" content="no-referrer">
-<meta name="color-scheme" content="light dark">
-<title>${escaped(title)}</title>
-<style>${css}</style>
-</head>
+  return `${htmlHead({ policy, title: `<title>${escaped(title)}</title>`, style: css, darkAndLight: true })}
 <body>
 <noscript><p>${noScript}</p></noscript>
 <div id="page"></div>

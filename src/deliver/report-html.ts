@@ -1,4 +1,5 @@
 import { type Html, html, tag } from './html-element.ts';
+import { htmlHead } from './html-head.ts';
 import { hashSource } from './offline-html.ts';
 import { batterySections } from './report-batteries.ts';
 import { errorsSection, otherFindingsSection, planSection, undersizedSection } from './report-findings.ts';
@@ -41,16 +42,8 @@ export function reportHtml(source: ReportSource): string {
     tag('footer', caution(result.caution)),
   );
   const policy = `default-src 'none'; style-src ${hashSource(reportStyle)}; base-uri 'none'; form-action 'none'`;
-  return `<!doctype html>
-<html lang="en">
-<head>
-<meta charset="utf-8">
-<meta http-equiv="Content-Security-Policy" content="${policy}">
-<meta name="viewport" content="width=device-width, initial-scale=1">
-<meta name="referrer" content="no-referrer">
-${tag('title', `${files} · sanitary drainage and vents`).markup}
-<style>${reportStyle}</style>
-</head>
+  const title = tag('title', `${files} · sanitary drainage and vents`).markup;
+  return `${htmlHead({ policy, title, style: reportStyle, darkAndLight: false })}
 ${body.markup}
 </html>
 `;
